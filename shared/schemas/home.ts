@@ -1,0 +1,72 @@
+import { z } from 'zod';
+import { idSchema, timestampSchema } from './common';
+import { plateSchema } from './cabinet';
+import { runSummarySchema } from './runs';
+
+/** One thing that waits for the person who asks; people before data before dates. */
+export const waitingItemSchema = z.discriminatedUnion('kind', [
+  z.strictObject({ kind: z.literal('run-stands'), run: runSummarySchema }),
+  z.strictObject({
+    kind: z.literal('draft-ahead'),
+    protocolId: idSchema,
+    protocolName: z.string(),
+    targetCount: z.int(),
+    savedAt: timestampSchema,
+    savedBy: z.string(),
+    /** The version it stands after; null when none was saved yet. */
+    afterVersion: z.int().nullable(),
+  }),
+  z.strictObject({
+    kind: z.literal('dialled-not-within'),
+    run: runSummarySchema,
+    label: z.string(),
+    dialledInfidelity: z.number(),
+    toleranceInfidelity: z.number(),
+  }),
+  z.strictObject({
+    kind: z.literal('calibration-due'),
+    plateId: idSchema,
+    plateName: z.string(),
+    measuredAt: timestampSchema,
+    /** Days until it falls due; below 0 when it is overdue. */
+    daysLeft: z.int(),
+    benchNames: z.array(z.string()),
+  }),
+  z.strictObject({
+    kind: z.literal('calibrated-elsewhere'),
+    plateId: idSchema,
+    plateName: z.string(),
+    benchName: z.string(),
+    calibratedAtNm: z.number(),
+    benchNm: z.number(),
+  }),
+  z.strictObject({ kind: z.literal('no-plates') }),
+  z.strictObject({ kind: z.literal('no-bench') }),
+  z.strictObject({ kind: z.literal('no-protocol') }),
+]);
+export type WaitingItem = z.infer<typeof waitingItemSchema>;
+
+/** The worst target of a protocol's last run, from what its dials really said. */
+export const lastMadeSchema = z.strictObject({
+  protocolId: idSchema,
+  protocolName: z.string(),
+  versionNumber: z.int(),
+  benchName: z.string(),
+  runId: idSchema,
+  runNumber: z.int(),
+  recordedAt: timestampSchema,
+  label: z.string(),
+  dialledInfidelity: z.number(),
+  expectedInfidelity: z.number(),
+  expectedLow: z.number(),
+  expectedHigh: z.number(),
+  toleranceInfidelity: z.number(),
+});
+export type LastMade = z.infer<typeof lastMadeSchema>;
+
+export const homeSchema = z.strictObject({
+  waiting: z.array(waitingItemSchema),
+  lastMade: z.array(lastMadeSchema),
+  cabinet: z.array(plateSchema),
+});
+export type Home = z.infer<typeof homeSchema>;

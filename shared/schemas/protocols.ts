@@ -1,0 +1,88 @@
+import { z } from 'zod';
+import { idSchema, lineSchema, noteSchema, numberSchema, timestampSchema } from './common';
+
+export const maxTargets = 200;
+
+/** A row of the targets' table. `id` is made by the client and holds through edits and reorderings. */
+export const draftTargetSchema = z.strictObject({
+  id: idSchema,
+  /** May be empty, and an expression may not parse: a draft keeps what was typed. */
+  label: z.string().max(24, 'A label has at most 24 characters.'),
+  expression: z.string().max(4096, 'An expression has at most 4096 characters.'),
+  /** Table angles of a solution that a person holds, one a plate; null follows the ranking. */
+  heldFastAxesDeg: z.array(z.number().min(0).max(180)).max(6).nullable(),
+});
+export type DraftTarget = z.infer<typeof draftTargetSchema>;
+
+export const draftContentSchema = z.strictObject({
+  name: lineSchema(80, "protocol's name"),
+  purpose: noteSchema(1000, 'purpose'),
+  benchId: idSchema,
+  /** The largest 1 − F that is within. */
+  toleranceInfidelity: numberSchema('A tolerance', 1e-9, 0.5, ''),
+  targets: z.array(draftTargetSchema).max(maxTargets, `A protocol has at most ${maxTargets} targets.`),
+});
+export type DraftContent = z.infer<typeof draftContentSchema>;
+
+export const draftSchema = z.strictObject({
+  revision: z.int(),
+  content: draftContentSchema,
+  savedAt: timestampSchema,
+  savedBy: z.string(),
+});
+export type Draft = z.infer<typeof draftSchema>;
+
+/** A version as a list shows it. */
+export const versionSummarySchema = z.strictObject({
+  id: idSchema,
+  protocolId: idSchema,
+  protocolName: z.string(),
+  number: z.int(),
+  message: z.string(),
+  contentHash: z.string(),
+  targetCount: z.int(),
+  savedAt: timestampSchema,
+  savedBy: z.string(),
+});
+export type VersionSummary = z.infer<typeof versionSummarySchema>;
+
+export const protocolSummarySchema = z.strictObject({
+  id: idSchema,
+  name: z.string(),
+  purpose: z.string(),
+  benchName: z.string(),
+  targetCount: z.int(),
+  draftSavedAt: timestampSchema,
+  draftSavedBy: z.string(),
+  latestVersion: versionSummarySchema.nullable(),
+});
+export type ProtocolSummary = z.infer<typeof protocolSummarySchema>;
+export const protocolListSchema = z.strictObject({ items: z.array(protocolSummarySchema) });
+
+export const protocolSchema = z.strictObject({
+  id: idSchema,
+  draft: draftSchema,
+  latestVersion: versionSummarySchema.nullable(),
+});
+export type Protocol = z.infer<typeof protocolSchema>;
+
+export const createProtocolSchema = draftContentSchema;
+/** Needs If-Match with the draft's ETag, `"r<revision>"`. */
+export const saveDraftSchema = draftContentSchema;
+
+/** What the page showed for one target when the person saved; the server solves again and refuses what differs. */
+export const shownSolutionSchema = z.strictObject({
+  targetId: idSchema,
+  fastAxesDeg: z.array(z.number()).max(6),
+  dialsDeg: z.array(z.number()).max(6),
+  infidelity: z.number(),
+  dialledInfidelity: z.number(),
+});
+export type ShownSolution = z.infer<typeof shownSolutionSchema>;
+
+/** Needs If-Match with the draft's ETag. */
+export const saveVersionSchema = z.strictObject({
+  message: lineSchema(200, 'message: what changed, and why'),
+  shown: z.array(shownSolutionSchema).min(1, 'A version holds at least one target.').max(maxTargets),
+});
+export type SaveVersion = z.infer<typeof saveVersionSchema>;
