@@ -1,0 +1,2 @@
+export { LabContext, useLab } from './lab-context';
+export { labQuery } from './queries';

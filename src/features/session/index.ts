@@ -1,0 +1,1 @@
+export { sessionQuery, signInHref, signOut } from './queries';
