@@ -1,0 +1,110 @@
+import type { QueryClient } from '@tanstack/react-query';
+import { createBrowserRouter, type LoaderFunctionArgs, redirect, type RouteObject } from 'react-router-dom';
+import { labQuery } from '../features/labs';
+import { sessionQuery } from '../features/session';
+import { ApiError } from '../lib/api';
+import { LabShell } from './LabShell';
+import { PlainShell } from './PlainShell';
+import { RouteFault } from './RouteFault';
+import { Starting } from './Starting';
+
+function ownPath(request: Request): string {
+  const { pathname, search } = new URL(request.url);
+  return pathname + search;
+}
+
+/** Sends a stranger to sign in, and a person without a lab to make or join one. */
+function entry(queryClient: QueryClient) {
+  return async () => {
+    const session = await queryClient.ensureQueryData(sessionQuery);
+    if (session.user === null) return redirect('/sign-in');
+    const [first] = session.labs;
+    return redirect(first === undefined ? '/welcome' : `/labs/${first.id}`);
+  };
+}
+
+function signedIn(queryClient: QueryClient) {
+  return async ({ request }: LoaderFunctionArgs) => {
+    const session = await queryClient.ensureQueryData(sessionQuery);
+    if (session.user === null) return redirect(`/sign-in?returnTo=${encodeURIComponent(ownPath(request))}`);
+    return null;
+  };
+}
+
+/** A lab's pages: its name and convention are known before any of them is drawn. */
+function inLab(queryClient: QueryClient) {
+  const requireUser = signedIn(queryClient);
+  return async (args: LoaderFunctionArgs) => {
+    const away = await requireUser(args);
+    if (away !== null) return away;
+    const { labId } = args.params;
+    const session = await queryClient.ensureQueryData(sessionQuery);
+    if (labId === undefined || !session.labs.some(({ id }) => id === labId)) {
+      // The same answer as for a lab that does not exist.
+      throw new ApiError(404, null, 'There is no such page, or it is not yours to see.');
+    }
+    await queryClient.ensureQueryData(labQuery(labId));
+    return null;
+  };
+}
+
+const labPages: RouteObject[] = [
+  { index: true, lazy: () => import('../features/home/HomePage') },
+  { path: 'plan', lazy: () => import('../features/protocols/ProtocolsPage') },
+  { path: 'plan/new', lazy: () => import('../features/protocols/NewProtocolPage') },
+  { path: 'plan/:protocolId', lazy: () => import('../features/protocols/DesignerPage') },
+  { path: 'plan/:protocolId/versions', lazy: () => import('../features/versions/ProtocolVersionsPage') },
+  { path: 'plan/:protocolId/versions/:number', lazy: () => import('../features/versions/VersionPage') },
+  { path: 'review', lazy: () => import('../features/versions/VersionsPage') },
+  { path: 'bench', lazy: () => import('../features/benches/BenchesPage') },
+  { path: 'bench/new', lazy: () => import('../features/benches/NewBenchPage') },
+  { path: 'bench/:benchId/edit', lazy: () => import('../features/benches/EditBenchPage') },
+  { path: 'bench/start', lazy: () => import('../features/runs/StartRunPage') },
+  { path: 'results', lazy: () => import('../features/results/ResultsPage') },
+  { path: 'cabinet', lazy: () => import('../features/cabinet/CabinetPage') },
+  { path: 'cabinet/:plateId', lazy: () => import('../features/cabinet/CabinetPage') },
+  { path: 'lab', lazy: () => import('../features/labs/LabPage') },
+];
+
+export function createRouter(queryClient: QueryClient) {
+  return createBrowserRouter([
+    {
+      ErrorBoundary: RouteFault,
+      HydrateFallback: Starting,
+      children: [
+        { path: '/', loader: entry(queryClient) },
+        { path: '/sign-in', lazy: () => import('../features/session/SignInPage') },
+        {
+          Component: PlainShell,
+          children: [
+            { path: '/quick-angles', lazy: () => import('../features/quick-angles/QuickAnglesPage') },
+            { path: '/how-numbers-are-made', lazy: () => import('../features/about/NumbersPage') },
+            { path: '/privacy', lazy: () => import('../features/about/PrivacyPage') },
+            { path: '/developer/parts', lazy: () => import('../features/parts/PartsPage') },
+            {
+              loader: signedIn(queryClient),
+              children: [
+                { path: '/welcome', lazy: () => import('../features/welcome/WelcomePage') },
+                { path: '/invitations/:token', lazy: () => import('../features/welcome/InvitationPage') },
+              ],
+            },
+          ],
+        },
+        {
+          path: '/labs/:labId',
+          loader: inLab(queryClient),
+          children: [
+            {
+              Component: LabShell,
+              children: [{ ErrorBoundary: RouteFault, children: labPages }],
+            },
+            // The bench fills the screen and brings its own navigation.
+            { path: 'bench/runs/:runId', lazy: () => import('../features/runs/RunPage') },
+            { path: 'bench/runs/:runId/record', lazy: () => import('../features/runs/RunRecordPage') },
+          ],
+        },
+        { path: '*', loader: () => Promise.reject(new ApiError(404, null, 'There is no such page.')) },
+      ],
+    },
+  ]);
+}

@@ -1,0 +1,80 @@
+import { v7 as newId } from 'uuid';
+import { type DraftContent, type DraftTarget, maxTargets } from '../../../shared/schemas/protocols';
+
+/** One change of a draft, as data: what it does to the content, and which typing it continues. */
+export interface DraftEdit {
+  /** Edits in a row with the same key are undone as one; null never joins. */
+  readonly typing: string | null;
+  readonly apply: (content: DraftContent) => DraftContent;
+}
+
+function withTargets(
+  typing: string | null,
+  change: (targets: readonly DraftTarget[]) => readonly DraftTarget[],
+): DraftEdit {
+  return { typing, apply: (content) => ({ ...content, targets: [...change(content.targets)] }) };
+}
+
+function changeTarget(typing: string | null, id: string, change: Partial<DraftTarget>): DraftEdit {
+  return withTargets(typing, (targets) =>
+    targets.map((target) => (target.id === id ? { ...target, ...change } : target)),
+  );
+}
+
+/** A held solution belongs to the state that was written; another state starts unheld. */
+export const writeExpression = (id: string, expression: string): DraftEdit =>
+  changeTarget(`expression ${id}`, id, { expression, heldFastAxesDeg: null });
+
+export const writeLabel = (id: string, label: string): DraftEdit => changeTarget(`label ${id}`, id, { label });
+
+export const holdSolution = (id: string, fastAxesDeg: readonly number[] | null): DraftEdit =>
+  changeTarget(null, id, { heldFastAxesDeg: fastAxesDeg === null ? null : [...fastAxesDeg] });
+
+export function newTarget(targets: readonly DraftTarget[], expression: string): DraftTarget {
+  return { id: newId(), label: freeLabel(targets), expression, heldFastAxesDeg: null };
+}
+
+/** t0, t1, … the first that no row has. */
+function freeLabel(targets: readonly DraftTarget[]): string {
+  const taken = new Set(targets.map(({ label }) => label));
+  let number = 0;
+  while (taken.has(`t${number}`)) number += 1;
+  return `t${number}`;
+}
+
+export const addTarget = (target: DraftTarget): DraftEdit =>
+  withTargets(`expression ${target.id}`, (targets) => (targets.length < maxTargets ? [...targets, target] : targets));
+
+export const removeTarget = (id: string): DraftEdit =>
+  withTargets(null, (targets) => targets.filter((target) => target.id !== id));
+
+/** Moves a row by `by` places, as far as the table goes. */
+export const moveTarget = (id: string, by: number): DraftEdit =>
+  withTargets(null, (targets) => {
+    const from = targets.findIndex((target) => target.id === id);
+    const moved = targets[from];
+    const to = Math.min(Math.max(from + by, 0), targets.length - 1);
+    if (moved === undefined || to === from) return targets;
+    const rest = targets.filter((target) => target.id !== id);
+    return [...rest.slice(0, to), moved, ...rest.slice(to)];
+  });
+
+export const rename = (name: string): DraftEdit => ({
+  typing: 'name',
+  apply: (content) => ({ ...content, name }),
+});
+
+export const describePurpose = (purpose: string): DraftEdit => ({
+  typing: 'purpose',
+  apply: (content) => ({ ...content, purpose }),
+});
+
+export const setTolerance = (toleranceInfidelity: number): DraftEdit => ({
+  typing: 'tolerance',
+  apply: (content) => ({ ...content, toleranceInfidelity }),
+});
+
+export const chooseBench = (benchId: string): DraftEdit => ({
+  typing: null,
+  apply: (content) => ({ ...content, benchId }),
+});
