@@ -49,7 +49,8 @@ function keep({ choice, benchTheme, lamp, lampInk }: Appearance, onBench: boolea
 export const useTheme = create<ThemeState>()((set) => ({
   ...read(),
   onBench: false,
-  systemIsDark: typeof window.matchMedia === 'function' && window.matchMedia('(prefers-color-scheme: dark)').matches,
+  systemIsDark:
+    typeof window.matchMedia === 'function' && window.matchMedia('(prefers-color-scheme: dark)').matches,
   choose: (choice) => {
     set({ choice });
   },
