@@ -1,0 +1,114 @@
+import type { Factor, FunctionName, KetLabel, Node, Term } from './tree';
+
+/** The tree as TeX for the math renderer. Every letter of it comes from here, none from the source. */
+export function toLatex(node: Node): string {
+  switch (node.kind) {
+    case 'number':
+      return latexNumber(node.value);
+    case 'constant':
+      return node.name === 'pi' ? '\\pi' : node.name;
+    case 'unit':
+      return node.name === 'deg' ? '^{\\circ}' : '\\,\\mathrm{rad}';
+    case 'state':
+      return ket(node.name);
+    case 'ket':
+      return ket(node.label);
+    case 'sum':
+      return node.terms.map(latexTerm).join('');
+    case 'product':
+      return latexProduct(node.factors);
+    case 'power':
+      return `{${tight(node.base)}}^{${toLatex(node.exponent)}}`;
+    case 'call':
+      return latexCall(node.name, node.args);
+    case 'column':
+      return `\\begin{pmatrix}${toLatex(node.entries[0])}\\\\${toLatex(node.entries[1])}\\end{pmatrix}`;
+  }
+}
+
+function ket(label: KetLabel): string {
+  return `|${label}\\rangle`;
+}
+
+function latexNumber(value: number): string {
+  const text = String(value);
+  const [mantissa, exponent] = text.split('e');
+  if (mantissa === undefined || exponent === undefined) return text;
+  return `${mantissa}\\times 10^{${exponent.replace('+', '')}}`;
+}
+
+function latexTerm({ negative, node }: Term, index: number): string {
+  const body = node.kind === 'sum' ? brackets(toLatex(node)) : toLatex(node);
+  if (index === 0) return negative ? `-${body}` : body;
+  return `${negative ? '-' : '+'}${body}`;
+}
+
+// (H + iV)/√2 reads best with its factor in front: 1/√2 (|H⟩ + i|V⟩); a quotient of numbers as a fraction.
+function latexProduct(factors: readonly Factor[]): string {
+  const last = factors.at(-1);
+  if (last?.join !== '/') return factors.reduce(latexFactor, '');
+  const before = factors.slice(0, -1);
+  const [only] = before;
+  const den = toLatex(last.node);
+  if (only !== undefined && before.length === 1) {
+    return holdsState(only.node)
+      ? `\\frac{1}{${den}}${isSum(only.node) ? brackets(toLatex(only.node)) : toLatex(only.node)}`
+      : `\\frac{${toLatex(only.node)}}{${den}}`;
+  }
+  return before.some(({ node }) => holdsState(node))
+    ? `\\frac{1}{${den}}${latexProduct(before)}`
+    : `\\frac{${latexProduct(before)}}{${den}}`;
+}
+
+function latexFactor(left: string, { join, node }: Factor): string {
+  const body = isSum(node) || node.kind === 'product' ? brackets(toLatex(node)) : toLatex(node);
+  if (left === '') return body;
+  if (join === '/') return `\\frac{${left}}{${toLatex(node)}}`;
+  if (join === '*') return `${left}\\cdot ${body}`;
+  return node.kind === 'unit' ? `${left}${body}` : `${left}\\,${body}`;
+}
+
+function isSum(node: Node): boolean {
+  return node.kind === 'sum';
+}
+
+function holdsState(node: Node): boolean {
+  switch (node.kind) {
+    case 'state':
+    case 'ket':
+    case 'column':
+      return true;
+    case 'sum':
+      return node.terms.some((term) => holdsState(term.node));
+    case 'product':
+      return node.factors.some((factor) => holdsState(factor.node));
+    case 'call':
+      return (
+        node.name === 'bloch' || node.name === 'stokes' || node.name === 'ellipse' || node.name === 'linear'
+      );
+    default:
+      return false;
+  }
+}
+
+function latexCall(name: FunctionName, args: readonly Node[]): string {
+  const [first] = args;
+  if (name === 'sqrt' && first !== undefined) return `\\sqrt{${toLatex(first)}}`;
+  if (name === 'exp' && first !== undefined) return `e^{${toLatex(first)}}`;
+  const inner = args.map(toLatex).join(',\\ ');
+  if (name === 'cos' || name === 'sin') {
+    // cos 22.5° needs no brackets; cos(a + b) does.
+    return first !== undefined && !isSum(first) ? `\\${name} ${inner}` : `\\${name}${brackets(inner)}`;
+  }
+  return `\\mathrm{${name}}${brackets(inner)}`;
+}
+
+function brackets(inner: string): string {
+  return `\\left(${inner}\\right)`;
+}
+
+function tight(node: Node): string {
+  return node.kind === 'sum' || node.kind === 'product' || node.kind === 'power'
+    ? brackets(toLatex(node))
+    : toLatex(node);
+}

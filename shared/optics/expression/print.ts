@@ -1,0 +1,47 @@
+import type { Factor, Node, Term } from './tree';
+
+/** The canonical text of a tree: one way to write each tree, which parses back to the same value. */
+export function print(node: Node): string {
+  switch (node.kind) {
+    case 'number':
+      return String(node.value);
+    case 'constant':
+    case 'unit':
+    case 'state':
+      return node.name;
+    case 'ket':
+      return `|${node.label}>`;
+    case 'sum':
+      return node.terms.map(printTerm).join('');
+    case 'product':
+      return node.factors.map(printFactor).join('');
+    case 'power':
+      return `${printTight(node.base)}^${printTight(node.exponent)}`;
+    case 'call':
+      return `${node.name}(${node.args.map(print).join(', ')})`;
+    case 'column':
+      return `[${print(node.entries[0])}, ${print(node.entries[1])}]`;
+  }
+}
+
+function printTerm({ negative, node }: Term, index: number): string {
+  const body = node.kind === 'sum' ? `(${print(node)})` : print(node);
+  if (index === 0) return negative ? `-${body}` : body;
+  return `${negative ? ' - ' : ' + '}${body}`;
+}
+
+function printFactor({ join, node }: Factor, index: number, all: readonly Factor[]): string {
+  const bracketed = node.kind === 'sum' || node.kind === 'product';
+  const body = bracketed ? `(${print(node)})` : print(node);
+  if (index === 0) return body;
+  if (join !== 'implied') return `${join}${body}`;
+  // A unit stands close to its number: 22.5deg.
+  const close = node.kind === 'unit' && all[index - 1]?.node.kind === 'number';
+  return close ? body : ` ${body}`;
+}
+
+function printTight(node: Node): string {
+  return node.kind === 'sum' || node.kind === 'product' || node.kind === 'power'
+    ? `(${print(node)})`
+    : print(node);
+}

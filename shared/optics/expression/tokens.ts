@@ -1,0 +1,238 @@
+import type { ConstantName, FunctionName, KetLabel, StateName, UnitName } from './tree';
+import { ExpressionError, type Span } from './span';
+
+export type Symbol = '+' | '-' | '*' | '/' | '^' | '(' | ')' | '[' | ']' | ',' | '√';
+
+export type Token = { readonly span: Span } & (
+  | { readonly kind: 'number'; readonly value: number }
+  | { readonly kind: 'symbol'; readonly symbol: Symbol }
+  | { readonly kind: 'constant'; readonly name: ConstantName }
+  | { readonly kind: 'unit'; readonly name: UnitName }
+  | { readonly kind: 'state'; readonly name: StateName }
+  | { readonly kind: 'ket'; readonly label: KetLabel }
+  | { readonly kind: 'function'; readonly name: FunctionName }
+);
+
+type Word =
+  | { readonly kind: 'constant'; readonly name: ConstantName }
+  | { readonly kind: 'unit'; readonly name: UnitName }
+  | { readonly kind: 'state'; readonly name: StateName }
+  | { readonly kind: 'function'; readonly name: FunctionName };
+
+// Longest first, so that "ellipse" is never read as e and then "llipse".
+const WORDS: readonly (readonly [string, Word])[] = [
+  ['ellipse', { kind: 'function', name: 'ellipse' }],
+  ['stokes', { kind: 'function', name: 'stokes' }],
+  ['linear', { kind: 'function', name: 'linear' }],
+  ['bloch', { kind: 'function', name: 'bloch' }],
+  ['sqrt', { kind: 'function', name: 'sqrt' }],
+  ['exp', { kind: 'function', name: 'exp' }],
+  ['cos', { kind: 'function', name: 'cos' }],
+  ['sin', { kind: 'function', name: 'sin' }],
+  ['deg', { kind: 'unit', name: 'deg' }],
+  ['rad', { kind: 'unit', name: 'rad' }],
+  ['pi', { kind: 'constant', name: 'pi' }],
+  ['π', { kind: 'constant', name: 'pi' }],
+  ['i', { kind: 'constant', name: 'i' }],
+  ['e', { kind: 'constant', name: 'e' }],
+  ['H', { kind: 'state', name: 'H' }],
+  ['V', { kind: 'state', name: 'V' }],
+  ['D', { kind: 'state', name: 'D' }],
+  ['A', { kind: 'state', name: 'A' }],
+  ['L', { kind: 'state', name: 'L' }],
+  ['R', { kind: 'state', name: 'R' }],
+];
+
+const SPACES = ' \t\n\r\u00a0\u2002\u2003\u2009\u200a\u202f\u2060\ufeff';
+
+function symbolOf(character: string): Symbol | null {
+  switch (character) {
+    case '+':
+    case '*':
+    case '/':
+    case '^':
+    case '(':
+    case ')':
+    case '[':
+    case ']':
+    case ',':
+    case '√':
+      return character;
+    case '-':
+    case '−':
+    case '–':
+      return '-';
+    case '·':
+    case '⋅':
+    case '×':
+    case '∙':
+      return '*';
+    case '÷':
+    case '∕':
+    case '⁄':
+      return '/';
+    default:
+      return null;
+  }
+}
+
+function isDigit(character: string | undefined): boolean {
+  return character !== undefined && character >= '0' && character <= '9';
+}
+
+function isLetter(character: string | undefined): boolean {
+  return (
+    character !== undefined &&
+    ((character >= 'a' && character <= 'z') || (character >= 'A' && character <= 'Z') || character === 'π')
+  );
+}
+
+/** Splits a source into tokens in one pass. @throws ExpressionError at the first character that isn't of the grammar. */
+export function tokenise(source: string): readonly Token[] {
+  const tokens: Token[] = [];
+  let at = 0;
+  while (at < source.length) {
+    const character = source.charAt(at);
+    if (SPACES.includes(character)) {
+      at += 1;
+      continue;
+    }
+    const symbol = symbolOf(character);
+    if (symbol !== null) {
+      tokens.push({ kind: 'symbol', symbol, span: { start: at, end: at + 1 } });
+      at += 1;
+    } else if (character === '°' || character === 'º') {
+      tokens.push({ kind: 'unit', name: 'deg', span: { start: at, end: at + 1 } });
+      at += 1;
+    } else if (isDigit(character) || (character === '.' && isDigit(source[at + 1]))) {
+      const token = readNumber(source, at);
+      tokens.push(token);
+      at = token.span.end;
+    } else if (isLetter(character)) {
+      at = readWords(source, at, tokens);
+    } else if (character === '|') {
+      const token = readKet(source, at);
+      tokens.push(token);
+      at = token.span.end;
+    } else {
+      throw unexpected(source, at);
+    }
+  }
+  return tokens;
+}
+
+function unexpected(source: string, at: number): ExpressionError {
+  const code = source.codePointAt(at) ?? 0;
+  const end = at + (code > 0xffff ? 2 : 1);
+  const span = { start: at, end };
+  const shown =
+    code < 0x20 || (code >= 0x7f && code < 0xa0) ? 'A control character' : `"${source.slice(at, end)}"`;
+  return new ExpressionError(
+    span,
+    `${shown} has no meaning here. Write states, numbers, + − * / ^ and brackets.`,
+  );
+}
+
+// By hand rather than by a regular expression: one look at each character, whatever the input.
+function readNumber(source: string, start: number): Token & { kind: 'number' } {
+  let at = start;
+  while (isDigit(source[at])) at += 1;
+  if (source[at] === '.') {
+    at += 1;
+    while (isDigit(source[at])) at += 1;
+  }
+  const mark = source[at];
+  if (mark === 'e' || mark === 'E') {
+    const sign = source[at + 1];
+    const digits = sign === '+' || sign === '-' ? at + 2 : at + 1;
+    // "2e^(i…)" is twice e to a power; only digits behind the e make an exponent.
+    if (isDigit(source[digits])) {
+      at = digits;
+      while (isDigit(source[at])) at += 1;
+    }
+  }
+  const span = { start, end: at };
+  const value = Number(source.slice(start, at));
+  if (!Number.isFinite(value)) {
+    throw new ExpressionError(span, 'This number is too large. Numbers reach to 1.8e308.');
+  }
+  return { kind: 'number', value, span };
+}
+
+// "iV" and "2piH" are products without a space: take the longest word that fits, again and again.
+function readWords(source: string, start: number, tokens: Token[]): number {
+  let end = start;
+  while (isLetter(source[end])) end += 1;
+  const found: Token[] = [];
+  let at = start;
+  while (at < end) {
+    const here = at;
+    const match = WORDS.find(([text]) => here + text.length <= end && source.startsWith(text, here));
+    if (match === undefined) throw unknownWord(source, start, end);
+    const [text, word] = match;
+    found.push({ ...word, span: { start: here, end: here + text.length } });
+    at += text.length;
+  }
+  tokens.push(...found);
+  return end;
+}
+
+function unknownWord(source: string, start: number, end: number): ExpressionError {
+  const text = source.slice(start, end);
+  const shown = text.length > 24 ? `${text.slice(0, 24)}…` : text;
+  const span = { start, end };
+  if (text === 'j') return new ExpressionError(span, 'The imaginary unit is written i here.', 'i');
+  const upper = text.toUpperCase();
+  if (text.length === 1 && 'HVDALR'.includes(upper)) {
+    return new ExpressionError(span, `"${text}" is no name here. Write the state as ${upper}.`, upper);
+  }
+  const lower = text.toLowerCase();
+  const known = WORDS.find(([word, { kind }]) => word === lower && kind !== 'state');
+  if (known !== undefined) {
+    return new ExpressionError(span, `"${text}" is no name here. Write ${known[0]}.`, known[0]);
+  }
+  const unit = lower.startsWith('degree') ? 'deg' : lower.startsWith('radian') ? 'rad' : null;
+  if (unit !== null) return new ExpressionError(span, `"${shown}" is written ${unit} here.`, unit);
+  return new ExpressionError(
+    span,
+    `"${shown}" is no name here. Write H, V, D, A, L or R, a ket such as |+i>, or bloch, stokes, ellipse, linear.`,
+  );
+}
+
+const KETS = new Map<string, KetLabel>([
+  ['H', 'H'],
+  ['V', 'V'],
+  ['D', 'D'],
+  ['A', 'A'],
+  ['L', 'L'],
+  ['R', 'R'],
+  ['0', '0'],
+  ['1', '1'],
+  ['+', '+'],
+  ['-', '-'],
+  ['+i', '+i'],
+  ['-i', '-i'],
+]);
+
+function readKet(source: string, start: number): Token {
+  let at = start + 1;
+  let label = '';
+  // No ket is longer than this; a missing ">" must not make us look at the rest again and again.
+  const limit = Math.min(source.length, start + 12);
+  while (at < limit) {
+    const character = source.charAt(at);
+    at += 1;
+    if (character === '>' || character === '⟩' || character === '〉' || character === '›') {
+      const ket = KETS.get(label);
+      const span = { start, end: at };
+      if (ket !== undefined) return { kind: 'ket', label: ket, span };
+      throw new ExpressionError(
+        span,
+        `There is no ket named "${label}". Write |H>, |V>, |D>, |A>, |L>, |R>, |0>, |1>, |+>, |->, |+i> or |-i>.`,
+      );
+    }
+    if (character === '−' || character === '–') label += '-';
+    else if (!SPACES.includes(character)) label += character;
+  }
+  throw new ExpressionError({ start, end: start + 1 }, 'This ket is not closed. Write it as |H> or |+i>.');
+}

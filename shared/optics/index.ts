@@ -1,0 +1,22 @@
+export * from './convention';
+export { CONVENTION_SETS, type ConventionSet } from './convention-sets';
+export * from './dial';
+export * from './ellipse';
+export * from './expression';
+export { type JonesVector, jonesNorm, normaliseJones, orthogonalJones } from './jones';
+export { compose, conjugate, IDENTITY, type Quaternion, rotate } from './quaternion';
+export {
+  type JonesMatrix,
+  path,
+  type Path,
+  quaternionMatrix,
+  type Retarder,
+  retarderMatrix,
+  retarderQuaternion,
+  retardJones,
+  retardStokes,
+  stackQuaternion,
+  type Turn,
+} from './retarder';
+export * from './stokes';
+export * from './units';
