@@ -1,0 +1,54 @@
+import { queryOptions } from '@tanstack/react-query';
+import type { RecordReading, Run, StartRun } from '../../../shared/schemas/runs';
+import type { Version } from '../../../shared/schemas/versions';
+import type { VersionSummary } from '../../../shared/schemas/protocols';
+import { request } from '../../lib/api';
+
+export const runQuery = (labId: string, runId: string) =>
+  queryOptions({
+    queryKey: ['labs', labId, 'runs', runId],
+    queryFn: ({ signal }) => request<Run>(`/labs/${labId}/runs/${runId}`, { signal }),
+  });
+
+/** A version never changes, so that it is asked for once. */
+export const versionQuery = (labId: string, protocolId: string, number: number) =>
+  queryOptions({
+    queryKey: ['labs', labId, 'protocols', protocolId, 'versions', number],
+    queryFn: ({ signal }) =>
+      request<Version>(`/labs/${labId}/protocols/${protocolId}/versions/${number}`, { signal }),
+    staleTime: Infinity,
+  });
+
+export const startableVersionsQuery = (labId: string) =>
+  queryOptions({
+    queryKey: ['labs', labId, 'versions', 'startable'],
+    queryFn: ({ signal }) =>
+      request<{ items: VersionSummary[]; nextCursor: string | null }>(`/labs/${labId}/versions?limit=100`, {
+        signal,
+      }),
+  });
+
+export function startRun(labId: string, body: StartRun, idempotencyKey: string): Promise<Run> {
+  return request<Run>(`/labs/${labId}/runs`, { method: 'POST', body, idempotencyKey });
+}
+
+export function recordReading(
+  labId: string,
+  runId: string,
+  body: RecordReading,
+  idempotencyKey: string,
+): Promise<Run> {
+  return request<Run>(`/labs/${labId}/runs/${runId}/readings`, { method: 'POST', body, idempotencyKey });
+}
+
+export function pauseRun(labId: string, runId: string, note: string): Promise<Run> {
+  return request<Run>(`/labs/${labId}/runs/${runId}/pause`, { method: 'POST', body: { note } });
+}
+
+export function resumeRun(labId: string, runId: string): Promise<Run> {
+  return request<Run>(`/labs/${labId}/runs/${runId}/resume`, { method: 'POST' });
+}
+
+export function finishRun(labId: string, runId: string): Promise<Run> {
+  return request<Run>(`/labs/${labId}/runs/${runId}/finish`, { method: 'POST' });
+}
