@@ -23,7 +23,7 @@ export interface BeamNavigationProps {
 
 /**
  * The beam runs from the mark through four plates to the person, and a splitter sends a side arm along the top edge.
- * From 1 100 px the side arm lies open; below that the splitter opens it, and on a phone the names go under the plates.
+ * From 1 216 px the side arm lies open; below that the splitter opens it, and on a phone the names go under the plates.
  */
 export function BeamNavigation({
   current,
@@ -131,7 +131,7 @@ function HomeLink({ href, lit, beamLit, labName }: HomeLinkProps) {
           <MarkLines />
           {lit && <circle r="6" strokeWidth="1.5" className="fill-lit stroke-ink" />}
         </svg>
-        <span className="block pt-3.5 text-[1.125rem] leading-6 font-section text-ink max-desk:sr-only">
+        <span className="block pt-4 text-[1.125rem] leading-6 font-section text-ink max-desk:sr-only">
           Quarterturn
         </span>
         {labName !== undefined && (

@@ -20,7 +20,7 @@ export function BenchNavigation({ homeHref, targets, aside }: BenchNavigationPro
   return (
     <nav
       aria-label="Quarterturn"
-      className="relative grid h-16 grid-cols-[81fr_66fr_66fr_66fr_52fr_auto] px-5 sm:grid-cols-[180fr_120fr_144fr_120fr_100fr_auto] sm:px-7"
+      className="relative grid h-16 auto-rows-[4rem] grid-cols-[81fr_66fr_66fr_66fr_52fr_auto] px-5 max-sm:h-auto sm:grid-cols-[180fr_120fr_144fr_120fr_100fr_auto] sm:px-7"
     >
       <div className="relative -mt-2.5 h-full max-sm:mt-0">
         <BeamPiece lit className="right-0 left-0" />
@@ -50,9 +50,9 @@ export function BenchNavigation({ homeHref, targets, aside }: BenchNavigationPro
           );
         })}
       </ul>
-      <div className="relative -mt-2.5 flex h-full items-start gap-8 pt-1.5 max-sm:mt-0 max-sm:hidden">
-        <BeamPiece lit={false} className="inset-x-0" />
-        {aside}
+      <div className="relative -mt-2.5 h-full max-sm:col-span-full max-sm:mt-0 max-sm:h-12">
+        <BeamPiece lit={false} className="inset-x-0 max-sm:hidden" />
+        <div className="flex h-14 items-center justify-end gap-8 max-sm:h-12">{aside}</div>
       </div>
     </nav>
   );

@@ -51,7 +51,7 @@ export function CompactSideArm({ current, targets, person, actions, signInHref }
         </svg>
         <span
           className={classNames(
-            'absolute top-[3.25rem] left-1/2 -translate-x-1/2 text-xs whitespace-nowrap max-sm:top-11',
+            'absolute top-[3.25rem] left-1/2 -translate-x-1/2 text-xs whitespace-nowrap max-sm:top-11.5',
             here === undefined ? 'text-ink-2' : 'font-strong text-ink',
           )}
         >

@@ -37,7 +37,7 @@ export function SideArm({ current, targets }: SideArmProps) {
       >
         <path d="M-6 6L6 -6" strokeWidth="2.6" className="stroke-ink" />
       </svg>
-      <ul className="absolute top-0 left-[5.625rem] m-0 flex list-none gap-9 p-0">
+      <ul className="absolute top-0 left-[5.625rem] m-0 flex list-none gap-8 p-0">
         {shown.map(({ key, name, goKey }, index) => {
           const target = targets[key];
           if (target === undefined) return null;
@@ -50,7 +50,7 @@ export function SideArm({ current, targets }: SideArmProps) {
                 className={classNames(
                   'motion-beam absolute top-[22px] left-1',
                   index < at ? 'h-[2.6px] -translate-y-px bg-beam' : 'h-px bg-rule',
-                  index === shown.length - 1 ? '-right-4' : '-right-10',
+                  index === shown.length - 1 ? '-right-3' : '-right-9',
                 )}
               />
               <Link

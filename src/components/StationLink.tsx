@@ -28,11 +28,11 @@ export function StationLink({ name, axisDeg, goKey, target, current, litAfter, o
         onClick={onFollow}
         aria-current={current ? 'page' : undefined}
         aria-keyshortcuts={`g ${goKey}`}
-        className="absolute top-3 -left-3.25 block h-13 min-w-11 no-underline max-sm:top-4 max-sm:h-15"
+        className="absolute top-3.5 -left-3.25 block h-12.5 min-w-11 no-underline max-sm:top-4 max-sm:h-15"
       >
         <span
           className={classNames(
-            'block pr-2 pl-3.5 whitespace-nowrap max-sm:absolute max-sm:top-9 max-sm:left-5.5 max-sm:-translate-x-1/2 max-sm:px-0 max-sm:text-xs',
+            'block pr-2 pl-3.5 whitespace-nowrap max-sm:absolute max-sm:top-8.5 max-sm:left-5.5 max-sm:-translate-x-1/2 max-sm:px-0 max-sm:text-xs',
             'text-[0.96875rem] leading-6',
             current ? 'font-strong text-ink' : 'text-ink-2',
           )}
@@ -52,7 +52,7 @@ export function StationLink({ name, axisDeg, goKey, target, current, litAfter, o
           width="24"
           height="24"
           aria-hidden="true"
-          className="absolute top-[1.625rem] left-2.5 max-sm:top-3.5"
+          className="absolute top-6 left-2.5 max-sm:top-3.5"
         >
           <circle
             r={reach}
