@@ -1,3 +1,11 @@
+export {
+  type Budget,
+  type Contribution,
+  errorBudget,
+  gainFromSigma,
+  type ParameterKind,
+  type UncertainPlate,
+} from './budget';
 export * from './convention';
 export { CONVENTION_SETS, type ConventionSet } from './convention-sets';
 export * from './dial';
@@ -20,3 +28,15 @@ export {
 } from './retarder';
 export * from './stokes';
 export * from './units';
+export { prepare, type Preparation, type PreparedSetting, type PrepareProblem } from './solver/prepare';
+export {
+  type DialledState,
+  evaluateDials,
+  PlateCountError,
+  type SettingSolution,
+  SOLVER_VERSION,
+  type SolvedTarget,
+  solveTarget,
+  type TargetPlate,
+  type TargetProblem,
+} from './solve-target';
