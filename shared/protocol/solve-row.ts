@@ -1,6 +1,6 @@
 import type { Convention } from '../optics/convention';
 import { parseState, type StateReading } from '../optics/expression';
-import { type SolvedTarget, solveTarget, type TargetProblem } from '../optics/solve-target';
+import { type SolvedTarget, solveTarget, type TargetPlate, type TargetProblem } from '../optics/solve-target';
 import type { Stokes } from '../optics/stokes';
 import { wrapSigned } from '../optics/units';
 import type { Calibration } from '../schemas/cabinet';
@@ -30,6 +30,17 @@ export type RowResult =
       readonly solved: SolvedTarget;
     };
 
+/** Plates as the solver takes them, in beam order. */
+export function targetPlates(plates: readonly SolvingPlate[]): TargetPlate[] {
+  return plates.map(({ mount, calibration }) => ({
+    retardanceDeg: calibration.retardanceDeg,
+    retardanceSigmaDeg: calibration.retardanceSigmaDeg,
+    offsetSigmaDeg: calibration.offsetSigmaDeg,
+    repeatabilityDeg: mount.repeatabilityDeg,
+    scale: { offsetDeg: calibration.offsetDeg, direction: mount.direction, resolutionDeg: mount.resolutionDeg },
+  }));
+}
+
 /** The bench's side of a problem, read once for all rows. */
 export function benchProblem(
   bench: SolvingBench,
@@ -43,17 +54,7 @@ export function benchProblem(
       input: input.stokes,
       polariserSigmaDeg: bench.polariserSigmaDeg,
       objective: 'least-expected-infidelity',
-      plates: bench.plates.map(({ mount, calibration }) => ({
-        retardanceDeg: calibration.retardanceDeg,
-        retardanceSigmaDeg: calibration.retardanceSigmaDeg,
-        offsetSigmaDeg: calibration.offsetSigmaDeg,
-        repeatabilityDeg: mount.repeatabilityDeg,
-        scale: {
-          offsetDeg: calibration.offsetDeg,
-          direction: mount.direction,
-          resolutionDeg: mount.resolutionDeg,
-        },
-      })),
+      plates: targetPlates(bench.plates),
     },
   };
 }

@@ -3,6 +3,7 @@ import { useState } from 'react';
 import { RouterProvider } from 'react-router-dom';
 import { createQueryClient } from '../lib/query-client';
 import { createRouter } from './router';
+import { useThemeOnPage } from './theme';
 
 /** One query client and one router for the page's life. */
 export function App() {
@@ -10,6 +11,7 @@ export function App() {
     const client = createQueryClient();
     return { queryClient: client, router: createRouter(client) };
   });
+  useThemeOnPage();
   return (
     <QueryClientProvider client={queryClient}>
       <RouterProvider router={router} />

@@ -3,6 +3,7 @@ import { createBrowserRouter, type LoaderFunctionArgs, redirect, type RouteObjec
 import { labQuery } from '../features/labs';
 import { sessionQuery } from '../features/session';
 import { ApiError } from '../lib/api';
+import { LabProvider } from './LabProvider';
 import { LabShell } from './LabShell';
 import { PlainShell } from './PlainShell';
 import { RouteFault } from './RouteFault';
@@ -93,11 +94,9 @@ export function createRouter(queryClient: QueryClient) {
         {
           path: '/labs/:labId',
           loader: inLab(queryClient),
+          Component: LabProvider,
           children: [
-            {
-              Component: LabShell,
-              children: [{ ErrorBoundary: RouteFault, children: labPages }],
-            },
+            { Component: LabShell, children: [{ ErrorBoundary: RouteFault, children: labPages }] },
             // The bench fills the screen and brings its own navigation.
             { path: 'bench/runs/:runId', lazy: () => import('../features/runs/RunPage') },
             { path: 'bench/runs/:runId/record', lazy: () => import('../features/runs/RunRecordPage') },

@@ -1,5 +1,4 @@
 import { queryOptions } from '@tanstack/react-query';
-import type { Bench } from '../../../shared/schemas/benches';
 import type {
   Draft,
   DraftContent,
@@ -24,13 +23,6 @@ export const protocolQuery = (labId: string, protocolId: string) =>
   queryOptions({
     queryKey: ['labs', labId, 'protocols', protocolId],
     queryFn: ({ signal }) => request<Protocol>(`/labs/${labId}/protocols/${protocolId}`, { signal }),
-  });
-
-/** The benches that a protocol can be written for. */
-export const benchChoicesQuery = (labId: string) =>
-  queryOptions({
-    queryKey: ['labs', labId, 'benches'],
-    queryFn: ({ signal }) => request<Items<Bench>>(`/labs/${labId}/benches`, { signal }),
   });
 
 export function createProtocol(labId: string, content: DraftContent, idempotencyKey: string): Promise<Protocol> {

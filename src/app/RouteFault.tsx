@@ -1,0 +1,56 @@
+import { useEffect } from 'react';
+import { useRouteError } from 'react-router-dom';
+import { ApiError } from '../lib/api';
+import { BeamState } from '../components/BeamState';
+import { TextLink } from '../components/TextLink';
+
+interface Words {
+  readonly title: string;
+  readonly text: string;
+}
+
+function inWords(error: unknown): Words {
+  if (error instanceof ApiError) {
+    if (error.status === 404) {
+      return { title: 'There is no such page', text: 'Either it never was, or it is not yours to see.' };
+    }
+    if (error.status === 403) return { title: 'This is not yours to do', text: error.message };
+    if (error.status === 401) return { title: 'You are signed out', text: 'Sign in again to go on.' };
+    return { title: 'This page could not be fetched', text: error.message };
+  }
+  // A script of an older build that the server no longer has.
+  if (error instanceof TypeError && /dynamically imported|module script/iu.test(error.message)) {
+    return { title: 'Quarterturn was renewed', text: 'Load the page again to go on with the new one.' };
+  }
+  return {
+    title: 'This page broke',
+    text: 'What you typed into a draft is kept on this device. Load the page again to go on.',
+  };
+}
+
+/** What stands in a page's place when it can't be shown: what, why, and one way on. */
+export function RouteFault() {
+  const error = useRouteError();
+  const { title, text } = inWords(error);
+  useEffect(() => {
+    document.title = `${title} – Quarterturn`;
+  }, [title]);
+  return (
+    <main className="px-5 pt-12 sm:px-10">
+      <BeamState
+        state="wrong"
+        title={title}
+        action={
+          <p className="mt-4 flex gap-6">
+            <TextLink to="/">Go home</TextLink>
+            <a className="beam-link" href={window.location.href}>
+              Load it again
+            </a>
+          </p>
+        }
+      >
+        {text}
+      </BeamState>
+    </main>
+  );
+}

@@ -1,0 +1,1 @@
+export { homeQuery } from './queries';

@@ -1,0 +1,42 @@
+import { useQuery } from '@tanstack/react-query';
+import { useParams } from 'react-router-dom';
+import { BeamState } from '../../components/BeamState';
+import { TextLink } from '../../components/TextLink';
+import { useTitle } from '../../lib/use-title';
+import { benchesQuery } from '../benches';
+import { useLab } from '../labs';
+import { Designer } from './designer/Designer';
+import { protocolQuery } from './queries';
+
+/** A protocol's draft under edit: the draft and the lab's benches are fetched before anything is drawn. */
+export function Component() {
+  const { lab } = useLab();
+  const { protocolId = '' } = useParams();
+  const protocol = useQuery({ ...protocolQuery(lab.id, protocolId), staleTime: 0 });
+  const benches = useQuery(benchesQuery(lab.id));
+  useTitle(protocol.data?.draft.content.name ?? 'Protocol');
+
+  if (protocol.isError) {
+    return (
+      <BeamState
+        state="wrong"
+        title="This protocol could not be fetched"
+        action={<TextLink to={`/labs/${lab.id}/plan`}>See all protocols</TextLink>}
+      >
+        {protocol.error.message}
+      </BeamState>
+    );
+  }
+  if (benches.isError) {
+    return (
+      <BeamState state="wrong" title="The benches could not be fetched">
+        {benches.error.message}
+      </BeamState>
+    );
+  }
+  // A draft that was fetched before may be older than what somebody saved since: wait for the fresh one.
+  if (protocol.isPending || benches.isPending || (protocol.isFetching && !protocol.isFetchedAfterMount)) {
+    return <BeamState state="working" title="Fetching the protocol" />;
+  }
+  return <Designer key={protocolId} protocol={protocol.data} benches={benches.data.items} />;
+}

@@ -1,0 +1,154 @@
+import { useEffect, useState } from 'react';
+import { parseState } from '../../../../shared/optics/expression';
+import type { Bench } from '../../../../shared/schemas/benches';
+import type { Protocol } from '../../../../shared/schemas/protocols';
+import { BeamState } from '../../../components/BeamState';
+import { KeyList } from '../../../components/KeyList';
+import { TextLink } from '../../../components/TextLink';
+import { UndoSentence } from '../../../components/UndoSentence';
+import { useLab } from '../../labs';
+import { useDraft } from '../use-draft';
+import { useSolvedRows } from '../use-solved-rows';
+import { ConflictDialog } from './ConflictDialog';
+import { DesignerHead } from './DesignerHead';
+import { Limits } from './Limits';
+import { shownSolutions, viewOf, whatHoldsUp } from './row-view';
+import { SaveVersionDialog } from './SaveVersionDialog';
+import { SelectedFigures } from './SelectedFigures';
+import { SelectedStage } from './SelectedStage';
+import { TargetsTable } from './TargetsTable';
+import { useDesignerCommands } from './use-designer-commands';
+import { useRemovedRow } from './use-removed-row';
+import { useDesignerView } from './view-store';
+import './designer.css';
+
+interface DesignerProps {
+  readonly protocol: Protocol;
+  readonly benches: readonly Bench[];
+}
+
+/** The designer: every keystroke is read, solved and drawn; the draft saves itself; a version is saved by hand. */
+export function Designer({ protocol, benches }: DesignerProps) {
+  const { lab, user, may } = useLab();
+  const mayWrite = may('protocols.write');
+  const draft = useDraft(lab.id, user.id, protocol, mayWrite);
+  const [saving, setSaving] = useState(false);
+  const { selectedId, select, listSolutions } = useDesignerView();
+
+  const { content } = draft;
+  const bench = benches.find(({ id }) => id === content.benchId);
+  const solved = useSolvedRows(content.targets, bench ?? null, lab.convention);
+  const views = content.targets.map((target) => viewOf(target, solved.rows.get(target.id)));
+  const commands = useDesignerCommands({ draft, views, mayWrite });
+  const removed = useRemovedRow(content.targets);
+
+  // Some row is always looked at: the first, until a person chooses another.
+  const place = content.targets.findIndex(({ id }) => id === selectedId);
+  const first = content.targets[0]?.id ?? null;
+  useEffect(() => {
+    if (place < 0 && first !== selectedId) select(first);
+  }, [place, first, selectedId, select]);
+
+  const target = content.targets[place];
+  const view = views[place];
+  const input = bench === undefined ? null : parseState(bench.inputExpression, lab.convention);
+  const looked =
+    bench !== undefined && input?.ok === true && target !== undefined && view?.status === 'solved'
+      ? { bench, input: input.stokes, target, view }
+      : null;
+
+  return (
+    <>
+      <DesignerHead
+        lab={lab}
+        protocolId={protocol.id}
+        content={content}
+        latest={protocol.latestVersion}
+        saving={draft.saving}
+        bench={bench}
+        benches={benches}
+        mayWrite={mayWrite}
+        maySave={may('versions.save')}
+        holdUp={whatHoldsUp(content.targets, views)}
+        edit={draft.edit}
+        onSaveVersion={() => setSaving(true)}
+      />
+      {bench === undefined && (
+        <BeamState
+          state="wrong"
+          title="The bench of this draft is not there"
+          action={<TextLink to={`/labs/${lab.id}/bench`}>See the benches</TextLink>}
+        >
+          Choose another one above; the targets stay as they are.
+        </BeamState>
+      )}
+      {solved.benchFault !== null && (
+        <BeamState state="wrong" title="The bench’s input state can’t be read">
+          {solved.benchFault}
+        </BeamState>
+      )}
+      {looked !== null && (
+        <SelectedStage
+          {...looked}
+          toleranceInfidelity={content.toleranceInfidelity}
+          convention={lab.convention}
+          onListSolutions={() => listSolutions(looked.target.id)}
+        />
+      )}
+      <div className="designer-body">
+        <div className="min-w-0">
+          <div className="targets-scroll">
+            <TargetsTable
+              targets={content.targets}
+              views={views}
+              plates={bench?.plates ?? []}
+              toleranceInfidelity={content.toleranceInfidelity}
+              mayWrite={mayWrite}
+              edit={draft.edit}
+              undo={draft.undo}
+            />
+          </div>
+          {solved.progress !== null && (
+            <BeamState
+              state="working"
+              title={`Solving, row ${solved.progress.done + 1} of ${solved.progress.total}`}
+              progress={solved.progress}
+            >
+              The rows done already can be read.
+            </BeamState>
+          )}
+          {content.targets.length === 0 && (
+            <BeamState state="empty" title="No targets yet">
+              {mayWrite ? 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).' : 'Its writer has only begun.'}
+            </BeamState>
+          )}
+          {looked !== null && (
+            <Limits label={looked.target.label} solution={looked.view.solution} plates={looked.bench.plates} />
+          )}
+        </div>
+        {looked !== null && <SelectedFigures {...looked} convention={lab.convention} />}
+      </div>
+      {removed !== null && <UndoSentence key={removed.id} text={removed.text} onUndo={draft.undo} />}
+      <KeyList commands={commands} />
+      {saving && (
+        <SaveVersionDialog
+          labId={lab.id}
+          protocolId={protocol.id}
+          number={(protocol.latestVersion?.number ?? 0) + 1}
+          revision={draft.revision}
+          draftIsSaved={draft.saving.state === 'saved'}
+          shown={shownSolutions(content.targets, views)}
+          onClose={() => setSaving(false)}
+        />
+      )}
+      {draft.conflict !== null && (
+        <ConflictDialog
+          mine={content}
+          theirs={draft.conflict}
+          onKeepMine={draft.keepMine}
+          onTakeTheirs={draft.takeTheirs}
+        />
+      )}
+    </>
+  );
+}

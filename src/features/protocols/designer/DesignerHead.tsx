@@ -1,0 +1,182 @@
+import { useState } from 'react';
+import { describeConvention } from '../../../../shared/optics/convention';
+import type { Bench } from '../../../../shared/schemas/benches';
+import { numberSchema } from '../../../../shared/schemas/common';
+import type { Lab } from '../../../../shared/schemas/labs';
+import type { DraftContent, VersionSummary } from '../../../../shared/schemas/protocols';
+import { Button } from '../../../components/Button';
+import { SaveState } from '../../../components/SaveState';
+import { Scientific } from '../../../components/Scientific';
+import { TextLink } from '../../../components/TextLink';
+import { VersionSeal } from '../../../components/VersionSeal';
+import { parseTypedNumber } from '../../../lib/format';
+import { chooseBench, type DraftEdit, rename, setTolerance } from '../draft-edits';
+import type { Saving } from '../use-draft';
+
+interface DesignerHeadProps {
+  readonly lab: Lab;
+  readonly protocolId: string;
+  readonly content: DraftContent;
+  readonly latest: VersionSummary | null;
+  readonly saving: Saving;
+  readonly bench: Bench | undefined;
+  readonly benches: readonly Bench[];
+  readonly mayWrite: boolean;
+  readonly maySave: boolean;
+  readonly holdUp: string | null;
+  readonly edit: (edit: DraftEdit) => void;
+  readonly onSaveVersion: () => void;
+}
+
+/** What the protocol is, how safely it is kept, and what it is solved for. */
+export function DesignerHead(props: DesignerHeadProps) {
+  const { lab, protocolId, content, latest, saving, bench, benches, mayWrite, maySave, holdUp, edit } = props;
+  const versionsHref = `/labs/${lab.id}/plan/${protocolId}/versions`;
+  const next = (latest?.number ?? 0) + 1;
+  return (
+    <header className="designer-head">
+      <VersionSeal state="draft" />
+      <div className="min-w-0">
+        <div className="flex flex-wrap items-baseline gap-x-4">
+          <h1 className="m-0 min-w-0 text-title">
+            {mayWrite ? <NameField name={content.name} onChange={(name) => edit(rename(name))} /> : content.name}
+          </h1>
+          <p className="m-0 text-body text-ink-2">
+            {latest === null ? (
+              'draft before the first version'
+            ) : (
+              <>
+                draft after <TextLink to={versionsHref}>version {latest.number}</TextLink>
+              </>
+            )}
+            , <SaveState saving={saving} />
+          </p>
+        </div>
+        <div className="designer-facts">
+          <BenchChoice {...{ bench, benches, mayWrite }} onChoose={(id) => edit(chooseBench(id))} />
+          <Tolerance
+            value={content.toleranceInfidelity}
+            mayWrite={mayWrite}
+            onChange={(value) => edit(setTolerance(value))}
+          />
+          <span className="fold-first">
+            ranked by <b>least expected infidelity</b>
+          </span>
+          <span className="fold-first">{describeConvention(lab.convention)}</span>
+        </div>
+      </div>
+      {maySave && (
+        <div className="text-right">
+          <Button kind="filled" waitsFor={holdUp ?? undefined} onClick={props.onSaveVersion}>
+            Save version {next}
+          </Button>
+          {holdUp !== null && <p className="mt-1 text-s font-strong text-fault">{holdUp}</p>}
+        </div>
+      )}
+    </header>
+  );
+}
+
+function NameField({ name, onChange }: { readonly name: string; readonly onChange: (name: string) => void }) {
+  return (
+    <input
+      type="text"
+      aria-label="Protocol’s name"
+      className="title-input"
+      size={Math.max(name.length, 8)}
+      maxLength={80}
+      value={name}
+      onChange={(event) => onChange(event.target.value)}
+    />
+  );
+}
+
+interface BenchChoiceProps {
+  readonly bench: Bench | undefined;
+  readonly benches: readonly Bench[];
+  readonly mayWrite: boolean;
+  readonly onChoose: (benchId: string) => void;
+}
+
+function BenchChoice({ bench, benches, mayWrite, onChoose }: BenchChoiceProps) {
+  const facts = bench === undefined ? '' : `, ${bench.wavelengthNm} nm, from ${bench.inputExpression}`;
+  if (!mayWrite) return <span>{(bench?.name ?? 'no bench') + facts}</span>;
+  const choices = benches.filter(({ retiredAt, id }) => retiredAt === null || id === bench?.id);
+  return (
+    <label>
+      <span className="sr-only">Bench </span>
+      <select className="fact-select" value={bench?.id ?? ''} onChange={(event) => onChoose(event.target.value)}>
+        {bench === undefined && <option value="">choose a bench</option>}
+        {choices.map(({ id, name }) => (
+          <option key={id} value={id}>
+            {name}
+          </option>
+        ))}
+      </select>
+      {facts}
+    </label>
+  );
+}
+
+const toleranceSchema = numberSchema('A tolerance', 1e-9, 0.5, '');
+
+interface ToleranceProps {
+  readonly value: number;
+  readonly mayWrite: boolean;
+  readonly onChange: (value: number) => void;
+}
+
+/** A fact until it is pressed, then a field; what can't be read stays in the field with its fault. */
+function Tolerance({ value, mayWrite, onChange }: ToleranceProps) {
+  const [typed, setTyped] = useState<string | null>(null);
+  const fault = typed === null ? null : faultOf(typed);
+  const shown = (
+    <>
+      tolerance 1 − F ≤ <Scientific value={value} />
+    </>
+  );
+  if (!mayWrite) return <span>{shown}</span>;
+  if (typed === null) {
+    return (
+      <button type="button" className="fact-button" onClick={() => setTyped(value.toExponential())}>
+        {shown}
+      </button>
+    );
+  }
+  const done = () => {
+    const read = parseTypedNumber(typed);
+    if (fault !== null || !read.ok) return;
+    onChange(read.value);
+    setTyped(null);
+  };
+  return (
+    <label>
+      tolerance 1 − F ≤{' '}
+      <input
+        type="text"
+        inputMode="decimal"
+        autoFocus
+        className="fact-input font-mono"
+        aria-invalid={fault !== null}
+        aria-describedby="tolerance-fault"
+        value={typed}
+        onChange={(event) => setTyped(event.target.value)}
+        onBlur={done}
+        onKeyDown={(event) => {
+          if (event.key === 'Enter') done();
+          if (event.key === 'Escape') setTyped(null);
+        }}
+      />
+      <span id="tolerance-fault" role="status" className="ml-2 font-strong text-fault">
+        {fault}
+      </span>
+    </label>
+  );
+}
+
+function faultOf(typed: string): string | null {
+  const read = parseTypedNumber(typed);
+  if (!read.ok) return 'A tolerance is a number, like 1e−3.';
+  const parsed = toleranceSchema.safeParse(read.value);
+  return parsed.success ? null : (parsed.error.issues[0]?.message ?? 'A tolerance is from 1e−9 to 0.5.');
+}

@@ -1,0 +1,77 @@
+import type { Contribution } from '../../../../shared/optics/budget';
+import { toDegrees } from '../../../../shared/optics/units';
+import type { Plate } from '../../../../shared/schemas/cabinet';
+import type { SettingSolution } from './row-view';
+
+interface LimitsProps {
+  readonly label: string;
+  readonly solution: SettingSolution;
+  readonly plates: readonly Plate[];
+}
+
+const kindWords = { retardance: 'retardance', zero: 'zero', dial: 'dial', polariser: 'polariser' } as const;
+
+function nameOf({ kind, plate }: Contribution, plates: readonly Plate[]): string {
+  return plate === null ? kindWords[kind] : `${plates[plate]?.name ?? ''} ${kindWords[kind]}`;
+}
+
+/** Two figures, as an uncertainty is written. */
+function sigmaText(contribution: Contribution): string {
+  const sigmaDeg = toDegrees(contribution.sigmaRad);
+  return `${sigmaDeg >= 0.1 ? sigmaDeg.toFixed(1) : Number(sigmaDeg.toPrecision(1)).toString()}°`;
+}
+
+function gainText(contribution: Contribution, plates: readonly Plate[]): string {
+  const gain = Math.round(contribution.gainIfHalved * 100);
+  return `Half the σ of ${nameOf(contribution, plates)} would gain ${gain} %.`;
+}
+
+/** What makes the selected target worse than perfect, largest first, and what an improvement would gain. */
+export function Limits({ label, solution, plates }: LimitsProps) {
+  const { contributions } = solution;
+  const [first] = contributions;
+  const largest = first?.share ?? 0;
+  return (
+    <section aria-label={`What limits ${label}`} className="limits">
+      <div>
+        <h2 className="m-0 text-body font-section">What limits {label}</h2>
+        <p className="mt-1 mb-0 text-s text-ink-2">
+          {first === undefined || first.infidelity === 0
+            ? 'Nothing that has a σ: the plates and dials are taken as exact.'
+            : gainText(first, plates)}
+        </p>
+      </div>
+      <table className="limits-table">
+        <thead className="sr-only">
+          <tr>
+            <th scope="col">parameter</th>
+            <th scope="col">σ</th>
+            <th scope="col">share of the expected 1 − F</th>
+          </tr>
+        </thead>
+        <tbody>
+          {contributions.map((contribution) => (
+            <tr key={`${contribution.kind} ${String(contribution.plate)}`}>
+              <th scope="row" className="text-left text-s font-words">
+                {nameOf(contribution, plates)}
+              </th>
+              <td className="text-right font-mono text-s text-ink-2">{sigmaText(contribution)}</td>
+              <td>
+                <span className="limits-share">
+                  <svg aria-hidden="true" className="limits-bar" viewBox="0 0 100 10" preserveAspectRatio="none">
+                    <rect
+                      width={largest > 0 ? (100 * contribution.share) / largest : 0}
+                      height="10"
+                      fill="var(--ink)"
+                    />
+                  </svg>
+                  <span className="font-mono text-s">{Math.round(contribution.share * 100)} %</span>
+                </span>
+              </td>
+            </tr>
+          ))}
+        </tbody>
+      </table>
+    </section>
+  );
+}

@@ -1,0 +1,46 @@
+import type { Plate } from '../../../../shared/schemas/cabinet';
+import { Scientific } from '../../../components/Scientific';
+import { TextButton } from '../../../components/TextLink';
+import { formatFidelity } from '../../../lib/format';
+import { toleranceVerdict } from './verdict';
+import type { RowView } from './row-view';
+import { travelDeg } from './SolutionsList';
+
+interface ReadoutProps {
+  readonly label: string;
+  readonly view: Extract<RowView, { status: 'solved' }>;
+  readonly plates: readonly Plate[];
+  readonly toleranceInfidelity: number;
+  readonly onListSolutions: () => void;
+}
+
+/** The one number that the page is about, and what it is made of. */
+export function Readout({ label, view, plates, toleranceInfidelity, onListSolutions }: ReadoutProps) {
+  const { solution, solved, chosen } = view;
+  const others = solved.solutions.filter((_, index) => index !== chosen);
+  const nearest = Math.min(...others.map((other) => travelDeg(solution, other)));
+  const steps = [...new Set(plates.map(({ mount }) => mount.resolutionDeg))];
+  const rounding = solution.dialledInfidelity - solution.infidelity;
+  return (
+    <aside aria-label={`Expected fidelity of ${label}`} className="readout">
+      <p className="m-0 font-mono text-readout">{formatFidelity(1 - solution.expectedInfidelity)}</p>
+      <p className="mt-2 mb-0">
+        expected fidelity, 1 − F <Scientific value={solution.expectedInfidelity} />; nineteen in twenty below{' '}
+        <Scientific value={solution.expectedHigh} />
+        {toleranceVerdict(solution, toleranceInfidelity)}
+      </p>
+      <p className="mt-2 mb-0">
+        {rounding > 0 ? 'Rounding' : 'Rounding, which helps here,'} to the {steps.map((step) => `${step}°`).join(' and ')}{' '}
+        dials {rounding > 0 ? 'costs' : 'changes it by'} <Scientific value={Math.abs(rounding)} />.
+      </p>
+      {others.length > 0 && (
+        <p className="mt-2 mb-0">
+          <TextButton onClick={onListSolutions}>
+            {others.length === 1 ? '1 other solution' : `${others.length} other solutions`}
+          </TextButton>
+          , the nearest by {Math.round(nearest)}° of travel
+        </p>
+      )}
+    </aside>
+  );
+}

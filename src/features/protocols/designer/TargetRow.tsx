@@ -1,0 +1,200 @@
+import { useEffect, useRef, type KeyboardEvent } from 'react';
+import type { Plate } from '../../../../shared/schemas/cabinet';
+import type { DraftTarget } from '../../../../shared/schemas/protocols';
+import { classNames } from '../../../components/class-names';
+import { FidelityChip } from '../../../components/FidelityChip';
+import { Formula } from '../../../components/Formula';
+import { Scientific } from '../../../components/Scientific';
+import { HeldSign } from '../../../components/signs/HeldSign';
+import { formatDial, formatTheta } from '../../../lib/format';
+import { RowNote } from './RowNote';
+import type { RowView } from './row-view';
+import { SolutionsList } from './SolutionsList';
+import { SourceField } from './SourceField';
+
+export interface RowHandlers {
+  readonly onSelect: () => void;
+  readonly onOpenSource: () => void;
+  readonly onWrite: (expression: string) => void;
+  readonly onLabel: (label: string) => void;
+  readonly onDone: () => void;
+  readonly onCancel: () => void;
+  readonly onHold: (fastAxesDeg: readonly number[] | null) => void;
+  readonly onListSolutions: (open: boolean) => void;
+}
+
+interface TargetRowProps extends RowHandlers {
+  readonly place: number;
+  readonly target: DraftTarget;
+  readonly view: RowView;
+  readonly plates: readonly Plate[];
+  readonly toleranceInfidelity: number;
+  readonly selected: boolean;
+  readonly editing: boolean;
+  readonly solutionsOpen: boolean;
+  /** The last, empty row: it becomes a target with its first letter. */
+  readonly blank: boolean;
+  readonly mayWrite: boolean;
+}
+
+/** One target: what it is, where each plate must stand for it, and how well that does. At most one note below. */
+export function TargetRow(props: TargetRowProps) {
+  const { place, target, view, plates, toleranceInfidelity, selected, editing, blank, mayWrite } = props;
+  const row = useRef<HTMLTableRowElement>(null);
+  const solved = view.status === 'solved' ? view : null;
+  const showsSource = mayWrite && (editing || blank || view.status === 'unreadable');
+  const name = blank ? 'a new target' : `target ${target.label}`;
+
+  // The selection moves by keys: the row that has it has the focus, unless somebody types.
+  useEffect(() => {
+    const active = document.activeElement;
+    if (selected && !editing && !blank && active instanceof HTMLTableRowElement) row.current?.focus();
+  }, [selected, editing, blank]);
+
+  const numbers = classNames('text-right whitespace-nowrap', solved?.stale === true && 'text-ink-3');
+
+  return (
+    <>
+      <tr
+        ref={row}
+        tabIndex={selected && !blank ? 0 : -1}
+        aria-selected={selected}
+        onClick={props.onSelect}
+        onKeyDown={(event: KeyboardEvent) => {
+          if (event.key === 'Enter' && event.target === event.currentTarget && mayWrite) {
+            event.preventDefault();
+            props.onOpenSource();
+          }
+        }}
+        className={classNames('target-row', selected && !blank && 'target-row-lit')}
+      >
+        <td className="w-8 pl-3 font-mono text-s text-ink-3">{place + 1}</td>
+        <td className="w-14 font-strong">
+          {showsSource && !blank ? (
+            <input
+              type="text"
+              aria-label={`Label of row ${place + 1}`}
+              className="label-input"
+              maxLength={24}
+              value={target.label}
+              onChange={(event) => props.onLabel(event.target.value)}
+              onKeyDown={(event) => {
+                if (event.key === 'Enter') props.onDone();
+                if (event.key === 'Escape') props.onCancel();
+              }}
+            />
+          ) : (
+            target.label
+          )}
+        </td>
+        <td className="min-w-56 py-1" colSpan={view.status === 'unreadable' || blank ? 3 + plates.length : 1}>
+          {showsSource ? (
+            <SourceField
+              label={blank ? 'New target' : `Expression of ${name}`}
+              value={target.expression}
+              fault={view.status === 'unreadable' ? view.error : null}
+              autoFocus={editing}
+              placeholder={blank ? 'write a state, like (H + i V)/sqrt(2)' : ''}
+              onChange={props.onWrite}
+              onDone={props.onDone}
+              onCancel={props.onCancel}
+              onFocus={blank ? undefined : props.onSelect}
+            />
+          ) : (
+            <ExpressionText {...{ target, solved, mayWrite }} onOpen={props.onOpenSource} />
+          )}
+        </td>
+        {view.status !== 'unreadable' && !blank && (
+          <>
+            {plates.map((plate, index) => (
+              <td key={plate.id} className={numbers}>
+                {solved !== null && (
+                  <>
+                    <span className="font-mono text-dial">
+                      {formatDial(solved.solution.dialsDeg[index] ?? 0, plate.mount.resolutionDeg)}
+                    </span>
+                    <span className="theta">{formatTheta(solved.solution.fastAxesDeg[index] ?? 0)}</span>
+                  </>
+                )}
+              </td>
+            ))}
+            <td className={classNames(numbers, 'chip-cell')}>
+              {solved !== null && (
+                <>
+                  <FidelityChip
+                    value={solved.solution.expectedInfidelity}
+                    low={solved.solution.expectedLow}
+                    high={solved.solution.expectedHigh}
+                    tolerance={toleranceInfidelity}
+                    predicted
+                  />
+                  <Scientific value={solved.solution.expectedInfidelity} />
+                </>
+              )}
+            </td>
+            <td className={classNames(numbers, 'pr-1 font-mono text-s')}>
+              {solved !== null && (
+                <SolutionCount {...{ solved, name }} open={props.solutionsOpen} onOpen={props.onListSolutions} />
+              )}
+            </td>
+          </>
+        )}
+      </tr>
+      {solved !== null && <RowNote view={solved} columns={plates.length + 5} />}
+      {solved !== null && props.solutionsOpen && (
+        <SolutionsList {...{ view: solved, plates, mayWrite }} onHold={props.onHold} label={target.label} />
+      )}
+    </>
+  );
+}
+
+interface ExpressionTextProps {
+  readonly target: DraftTarget;
+  readonly solved: Extract<RowView, { status: 'solved' }> | null;
+  readonly mayWrite: boolean;
+  readonly onOpen: () => void;
+}
+
+/** The expression typeset; pressing it opens the source. */
+function ExpressionText({ target, solved, mayWrite, onOpen }: ExpressionTextProps) {
+  const text =
+    solved === null ? (
+      <span className="font-mono text-s text-ink-3">{target.expression || 'nothing written'}</span>
+    ) : (
+      <Formula latex={solved.reading.latex} source={target.expression} />
+    );
+  if (!mayWrite) return text;
+  return (
+    <button type="button" className="min-h-6 w-full text-left" onClick={onOpen} aria-label={`Edit ${target.label}: ${target.expression}`}>
+      {text}
+    </button>
+  );
+}
+
+interface SolutionCountProps {
+  readonly solved: Extract<RowView, { status: 'solved' }>;
+  readonly name: string;
+  readonly open: boolean;
+  readonly onOpen: (open: boolean) => void;
+}
+
+function SolutionCount({ solved, name, open, onOpen }: SolutionCountProps) {
+  const count = solved.solved.solutions.length;
+  const words =
+    solved.solved.kind === 'nearest' && count === 1 ? 'closest' : `${solved.chosen + 1} of ${count}`;
+  return (
+    <button
+      type="button"
+      aria-expanded={open}
+      aria-label={`Solution ${words} for ${name}${solved.held ? ', held' : ''}`}
+      className="inline-flex min-h-6 items-center gap-2"
+      onClick={(event) => {
+        event.stopPropagation();
+        onOpen(!open);
+      }}
+    >
+      {solved.held && <HeldSign />}
+      {words}
+    </button>
+  );
+}

@@ -1,0 +1,96 @@
+import type { DraftTarget } from '../../../../shared/schemas/protocols';
+import { type Command, useCommands } from '../../../lib/commands';
+import { holdSolution, moveTarget, removeTarget } from '../draft-edits';
+import type { DraftControl } from '../use-draft';
+import type { RowView } from './row-view';
+import { useDesignerView } from './view-store';
+
+interface Situation {
+  readonly draft: DraftControl;
+  readonly views: readonly RowView[];
+  readonly mayWrite: boolean;
+}
+
+/** What the keys of the designer do; the list behind `?` shows the same commands. */
+export function useDesignerCommands({ draft, views, mayWrite }: Situation): readonly Command[] {
+  const { selectedId, editingId, select, openSource, listSolutions } = useDesignerView();
+  const { targets } = draft.content;
+  const place = targets.findIndex(({ id }) => id === selectedId);
+  const selected: DraftTarget | undefined = targets[place];
+  const view = views[place];
+  const resting = () => editingId === null;
+  const onRow = () => mayWrite && resting() && selected !== undefined;
+
+  const step = (by: number) => {
+    const next = targets[place < 0 ? 0 : Math.min(Math.max(place + by, 0), targets.length - 1)];
+    if (next !== undefined) select(next.id);
+  };
+  const otherSolution = (by: number) => {
+    if (selected === undefined || view?.status !== 'solved') return;
+    const { solutions } = view.solved;
+    const other = solutions[(view.chosen + by + solutions.length) % solutions.length];
+    if (other !== undefined) draft.edit(holdSolution(selected.id, other.fastAxesDeg));
+  };
+  const hold = () => {
+    if (selected === undefined || view?.status !== 'solved') return;
+    draft.edit(holdSolution(selected.id, view.held ? null : view.solution.fastAxesDeg));
+  };
+
+  const commands: readonly Command[] = [
+    { id: 'row-up', label: 'Select the row above', keys: ['ArrowUp', 'k'], when: resting, run: () => step(-1) },
+    { id: 'row-down', label: 'Select the row below', keys: ['ArrowDown', 'j'], when: resting, run: () => step(1) },
+    {
+      id: 'edit',
+      label: 'Edit the row',
+      keys: ['Enter', 'F2'],
+      when: onRow,
+      run: () => openSource(selectedId),
+    },
+    {
+      id: 'move-up',
+      label: 'Move the row up',
+      keys: ['Alt+ArrowUp'],
+      when: onRow,
+      run: () => selected !== undefined && draft.edit(moveTarget(selected.id, -1)),
+    },
+    {
+      id: 'move-down',
+      label: 'Move the row down',
+      keys: ['Alt+ArrowDown'],
+      when: onRow,
+      run: () => selected !== undefined && draft.edit(moveTarget(selected.id, 1)),
+    },
+    {
+      id: 'remove',
+      label: 'Take the row out',
+      keys: ['Delete'],
+      when: onRow,
+      run: () => {
+        if (selected === undefined) return;
+        const neighbour = targets[place + 1] ?? targets[place - 1];
+        draft.edit(removeTarget(selected.id));
+        select(neighbour?.id ?? null);
+      },
+    },
+    { id: 'previous', label: 'Hold the solution before', keys: ['['], when: onRow, run: () => otherSolution(-1) },
+    { id: 'next', label: 'Hold the next solution', keys: [']'], when: onRow, run: () => otherSolution(1) },
+    { id: 'hold', label: 'Hold this solution, or let it go', keys: ['p'], when: onRow, run: hold },
+    {
+      id: 'solutions',
+      label: 'List the other solutions',
+      keys: ['o'],
+      when: () => resting() && selected !== undefined,
+      run: () => listSolutions(selectedId),
+    },
+    { id: 'undo', label: 'Undo', keys: ['Ctrl+z'], when: () => mayWrite, run: draft.undo },
+    {
+      id: 'redo',
+      label: 'Do it again',
+      keys: ['Ctrl+Shift+z', 'Ctrl+y'],
+      when: () => mayWrite,
+      run: draft.redo,
+    },
+  ];
+  useCommands(commands);
+  return commands;
+}

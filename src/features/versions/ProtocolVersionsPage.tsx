@@ -1,0 +1,39 @@
+import { useQuery } from '@tanstack/react-query';
+import { useParams } from 'react-router-dom';
+import { BeamState } from '../../components/BeamState';
+import { TextLink } from '../../components/TextLink';
+import { useTitle } from '../../lib/use-title';
+import { useLab } from '../labs';
+import { protocolVersionsQuery } from './queries';
+import { VersionsTable } from './VersionsTable';
+
+/** The versions of one protocol. */
+export function Component() {
+  const { lab } = useLab();
+  const { protocolId = '' } = useParams();
+  const versions = useQuery(protocolVersionsQuery(lab.id, protocolId));
+  const all = versions.data?.items ?? [];
+  const name = all[0]?.protocolName ?? 'this protocol';
+  useTitle(`Versions of ${name}`);
+  const draftHref = `/labs/${lab.id}/plan/${protocolId}`;
+  return (
+    <>
+      <div className="flex flex-wrap items-baseline gap-x-6 pt-3">
+        <h1 className="m-0 text-title">Versions of {name}</h1>
+        <TextLink to={draftHref}>Open the draft</TextLink>
+      </div>
+      {versions.isPending && <BeamState state="working" title="Fetching the versions" />}
+      {versions.isError && (
+        <BeamState state="wrong" title="The versions could not be fetched">
+          {versions.error.message}
+        </BeamState>
+      )}
+      {versions.isSuccess && all.length === 0 && (
+        <BeamState state="empty" title="No versions yet" action={<TextLink to={draftHref}>Open the draft</TextLink>}>
+          Saving one freezes its targets, plates, angles and dials for good.
+        </BeamState>
+      )}
+      {all.length > 0 && <VersionsTable labId={lab.id} versions={all} namesProtocol={false} />}
+    </>
+  );
+}

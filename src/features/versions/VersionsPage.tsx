@@ -1,0 +1,46 @@
+import { useInfiniteQuery } from '@tanstack/react-query';
+import { BeamState } from '../../components/BeamState';
+import { Button } from '../../components/Button';
+import { TextLink } from '../../components/TextLink';
+import { useTitle } from '../../lib/use-title';
+import { useLab } from '../labs';
+import { labVersionsQuery } from './queries';
+import { VersionsTable } from './VersionsTable';
+
+/** Everything that was frozen in this lab, newest first. */
+export function Component() {
+  const { lab } = useLab();
+  const versions = useInfiniteQuery(labVersionsQuery(lab.id));
+  useTitle('Versions');
+  const all = versions.data?.pages.flatMap(({ items }) => items) ?? [];
+  return (
+    <>
+      <h1 className="m-0 pt-3 text-title">Versions</h1>
+      {versions.isPending && <BeamState state="working" title="Fetching the versions" />}
+      {versions.isError && (
+        <BeamState state="wrong" title="The versions could not be fetched">
+          {versions.error.message}
+        </BeamState>
+      )}
+      {versions.isSuccess && all.length === 0 && (
+        <BeamState
+          state="empty"
+          title="No versions yet"
+          action={<TextLink to={`/labs/${lab.id}/plan`}>Open a protocol</TextLink>}
+        >
+          A version is saved from a protocol’s draft, and never changes after that.
+        </BeamState>
+      )}
+      {all.length > 0 && <VersionsTable labId={lab.id} versions={all} namesProtocol />}
+      {versions.hasNextPage && (
+        <Button
+          className="mt-6"
+          waitsFor={versions.isFetchingNextPage ? 'the server' : undefined}
+          onClick={() => void versions.fetchNextPage()}
+        >
+          Show older versions
+        </Button>
+      )}
+    </>
+  );
+}

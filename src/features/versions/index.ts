@@ -1,0 +1,2 @@
+export { ShortHash } from './ShortHash';
+export { labVersionsQuery, versionQuery } from './queries';

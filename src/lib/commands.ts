@@ -1,0 +1,66 @@
+import { useEffect, useRef } from 'react';
+
+/** What a key, a button and the list of keys share, so that they can't disagree. */
+export interface Command {
+  readonly id: string;
+  /** A verb with its object, as the list of keys says it. */
+  readonly label: string;
+  /** As in `KeyboardEvent.key`, with modifiers before it: "Alt+ArrowUp", "Ctrl+z", "p". Any of them serves. */
+  readonly keys: readonly string[];
+  /** Absent: always. */
+  readonly when?: () => boolean;
+  readonly run: () => void;
+}
+
+const offKey = 'quarterturn.single-letter-keys';
+
+/** Single letters can be switched off (WCAG 2.1.4). */
+export function singleLettersAreOn(): boolean {
+  return localStorage.getItem(offKey) !== 'off';
+}
+
+export function switchSingleLetters(on: boolean): void {
+  localStorage.setItem(offKey, on ? 'on' : 'off');
+}
+
+function isField(target: EventTarget | null): boolean {
+  return (
+    target instanceof HTMLElement &&
+    (target.isContentEditable || ['INPUT', 'TEXTAREA', 'SELECT'].includes(target.tagName))
+  );
+}
+
+/** "Ctrl+z" stands for the command key of a Mac as well. */
+function nameOf(event: KeyboardEvent): string {
+  const single = event.key.length === 1;
+  const parts = [
+    event.ctrlKey || event.metaKey ? 'Ctrl' : null,
+    event.altKey ? 'Alt' : null,
+    // A letter's case and a sign's shift are in the key itself.
+    event.shiftKey && (!single || event.ctrlKey || event.metaKey) ? 'Shift' : null,
+    single && (event.ctrlKey || event.metaKey) ? event.key.toLowerCase() : event.key,
+  ];
+  return parts.filter((part) => part !== null).join('+');
+}
+
+/** Runs the commands of a page on their keys while it is shown. Fields keep their keys, all but Ctrl combinations. */
+export function useCommands(commands: readonly Command[]): void {
+  const current = useRef(commands);
+  useEffect(() => {
+    current.current = commands;
+  });
+  useEffect(() => {
+    const listen = (event: KeyboardEvent) => {
+      if (event.defaultPrevented || document.querySelector('dialog[open]') !== null) return;
+      const name = nameOf(event);
+      if (isField(event.target) && !name.startsWith('Ctrl+')) return;
+      if (name.length === 1 && !singleLettersAreOn()) return;
+      const command = current.current.find(({ keys, when }) => keys.includes(name) && (when?.() ?? true));
+      if (command === undefined) return;
+      event.preventDefault();
+      command.run();
+    };
+    document.addEventListener('keydown', listen);
+    return () => document.removeEventListener('keydown', listen);
+  }, []);
+}
