@@ -1,6 +1,9 @@
 import { readFileSync } from 'node:fs';
 
-/** Somebody who can be chosen on the page; the id is what the real service would call the account's number. */
+/**
+ * Somebody who can be chosen on the page. The id stands for an account's number at the real service, and is far above any that
+ * the service has given out: a demo person in a database must never turn out to be a real account.
+ */
 export interface Person {
   readonly id: number;
   readonly login: string;

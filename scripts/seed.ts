@@ -1,20 +1,12 @@
 /**
- * Puts the demo labs into a database that has none: node --import tsx scripts/seed.ts
+ * Migrates, then puts the demo labs into a database that has no lab: node --import tsx scripts/seed.ts
  */
-import knex from 'knex';
-import config from '../knexfile';
-import { requireOwnerUrl } from './lib/owner-url';
+import { migrateToLatest, withOwnersDatabase } from './lib/owners-database';
 
-requireOwnerUrl();
-const database = knex(config);
-try {
+await withOwnersDatabase(async (database) => {
+  await migrateToLatest(database);
   const lab: unknown = await database('labs').first('id');
-  if (lab === undefined) {
-    await database.seed.run();
-    process.stdout.write('Seeded the demo labs.\n');
-  } else {
-    process.stdout.write('There are labs already; nothing to seed.\n');
-  }
-} finally {
-  await database.destroy();
-}
+  if (lab !== undefined) return;
+  await database.seed.run();
+  process.stdout.write('Demo labs put in.\n');
+});

@@ -40,7 +40,7 @@ const READY_LIMIT_MS = 60_000;
  * @property {string} directory holds the data, the log and nothing else; made when missing
  * @property {Passwords} passwords
  * @property {boolean} durable false lets a throwaway cluster skip waiting for the disk; a killed process still loses nothing
- * @property {boolean} removeWhenStopped
+ * @property {string} [removeWhenStopped] a folder that goes with the cluster: its own or one around it
  * @property {number} [preferredPort]
  */
 
@@ -157,7 +157,7 @@ function startKeeper(program, port, logFile, options) {
     logFile,
     settings: Object.entries(settings).flatMap(([name, value]) => ['-c', `${name}=${value}`]),
     ...databaseIdentity(options.directory),
-    ...(options.removeWhenStopped ? { removeAfter: options.directory } : {}),
+    ...(options.removeWhenStopped === undefined ? {} : { removeAfter: options.removeWhenStopped }),
   };
   // Its own process group: Ctrl-C in the terminal must not reach the database before the server has finished with it.
   const child = spawn(process.execPath, [KEEPER, JSON.stringify(config)], {

@@ -152,7 +152,7 @@ describe('the exchange', () => {
     const user = z
       .object({ id: z.number(), login: z.string(), name: z.string() })
       .parse(await (await get('/user', answer.access_token ?? '')).json());
-    expect(user).toEqual({ id: 710402, login: 'ines-varga', name: 'Ines Varga' });
+    expect(user).toEqual({ id: 990_000_000_402, login: 'ines-varga', name: 'Ines Varga' });
     expect((await exchange({ code })).error).toBe('bad_verification_code');
   });
 
@@ -254,7 +254,10 @@ describe('faults on demand', () => {
     await setFault('emails', 'unverifiedEmail');
     expect(await (await get('/user/emails', token)).json()).toMatchObject([{ verified: false }]);
     await setFault('user', 'otherId');
-    expect(await (await get('/user', token)).json()).toMatchObject({ id: 1_710_402, login: 'ines-varga' });
+    expect(await (await get('/user', token)).json()).toMatchObject({
+      id: 990_001_000_402,
+      login: 'ines-varga',
+    });
     await setFault('user', 'hang');
     await expect(
       fetch(`${fake.url}/user`, {
@@ -263,7 +266,7 @@ describe('faults on demand', () => {
       }),
     ).rejects.toThrow('aborted due to timeout');
     await fetch(`${fake.url}/faults`, { method: 'DELETE' });
-    expect(await (await get('/user', token)).json()).toMatchObject({ id: 710_402 });
+    expect(await (await get('/user', token)).json()).toMatchObject({ id: 990_000_000_402 });
     expect(await setFault('user', 'nothing such')).toBe(422);
   });
 
