@@ -1,0 +1,2 @@
+export { findLab, type StoredLab } from './lab-store';
+export { labRoutes } from './routes';

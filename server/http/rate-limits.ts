@@ -1,0 +1,74 @@
+import type { Request, RequestHandler } from 'express';
+import type pg from 'pg';
+import { RateLimiterPostgres, RateLimiterRes } from 'rate-limiter-flexible';
+import type { Config } from '../config';
+import { ProblemError } from '../errors';
+
+const minute = 60;
+
+function limiterOf(pool: pg.Pool, keyPrefix: string, points: number): RateLimiterPostgres {
+  return new RateLimiterPostgres({
+    storeClient: pool,
+    tableName: 'rate_limits',
+    // By migration: the server's role makes no tables.
+    tableCreated: true,
+    clearExpiredByTimeout: false,
+    keyPrefix,
+    points,
+    duration: minute,
+  });
+}
+
+async function spend(limiter: RateLimiterPostgres, key: string, points: number): Promise<void> {
+  try {
+    await limiter.consume(key, points);
+  } catch (error) {
+    if (!(error instanceof RateLimiterRes)) throw error;
+    throw new ProblemError(
+      'too-many-requests',
+      429,
+      'Too many requests in one minute. Wait a little, then go on.',
+      {
+        headers: { 'Retry-After': String(Math.max(1, Math.ceil(error.msBeforeNext / 1000))) },
+      },
+    );
+  }
+}
+
+/** Sign-ins by address: before signing in nothing else is known of anyone. */
+export function limitSignIns(pool: pg.Pool, config: Pick<Config, 'signInsPerMinute'>): RequestHandler {
+  const limiter = limiterOf(pool, 'sign-in', config.signInsPerMinute);
+  return async (request, _response, next) => {
+    await spend(limiter, request.ip ?? 'unknown', 1);
+    next();
+  };
+}
+
+/**
+ * Calls of the API by person, so that a lab behind one address does not share a limit. Counted in the database, which
+ * all servers share, but a handful at a time: a write for each read would halve the speed of reading.
+ */
+export function limitCalls(pool: pg.Pool, config: Pick<Config, 'apiCallsPerMinute'>): RequestHandler {
+  const step = Math.max(1, Math.floor(config.apiCallsPerMinute / 30));
+  const limiter = limiterOf(pool, 'api', config.apiCallsPerMinute);
+  // What is left of the calls that this process has already spent in the database: a cache that need not agree.
+  const prepaid = new Map<string, { left: number; until: number }>();
+  return async (request, _response, next) => {
+    const key = callerOf(request);
+    const now = Date.now();
+    const known = prepaid.get(key);
+    if (known !== undefined && known.left > 0 && known.until > now) known.left -= 1;
+    else {
+      if (prepaid.size > 10_000) prepaid.clear();
+      prepaid.delete(key);
+      await spend(limiter, key, step);
+      prepaid.set(key, { left: step - 1, until: now + minute * 1000 });
+    }
+    next();
+  };
+}
+
+function callerOf(request: Request): string {
+  const { userId } = request.session;
+  return userId === undefined ? `ip ${request.ip ?? 'unknown'}` : `user ${userId}`;
+}
