@@ -1,5 +1,6 @@
-import { type DialDirection, dialDecimals, type DialMove, dialMove } from '../../../shared/optics/dial';
-import { degrees, wrapSigned } from '../../../shared/optics/units';
+import { type DialDirection, dialDecimals } from '../../../shared/optics/dial';
+import { wrapSigned } from '../../../shared/optics/units';
+import { type SeenMove, seenMove, type ViewedFrom } from '../../components/dial-words';
 
 /** What a step needs of a plate's mount. */
 export interface StepMount {
@@ -7,9 +8,6 @@ export interface StepMount {
   readonly direction: DialDirection;
   readonly resolutionDeg: number;
 }
-
-/** From which side of the plates the hand sees them. */
-export type StandingSide = 'receiver' | 'source';
 
 /**
  * What one plate has to do at one setting.
@@ -24,20 +22,7 @@ export interface PlateStep {
   /** What the dial says now, as far as anyone has said. */
   readonly standsDeg: number | null;
   /** The turn as the person sees it from where they stand; null where nobody has said how the dial stands. */
-  readonly move: DialMove | null;
-}
-
-/** The way from one reading to another for someone on that side: from behind, a mount turns the other way round. */
-export function moveFrom(side: StandingSide, fromDeg: number, toDeg: number, mount: StepMount): DialMove {
-  return dialMove(
-    degrees(fromDeg),
-    degrees(toDeg),
-    side === 'receiver' ? mount.direction : reversed(mount.direction),
-  );
-}
-
-function reversed(direction: DialDirection): DialDirection {
-  return direction === 1 ? -1 : 1;
+  readonly move: SeenMove | null;
 }
 
 /** Does a dial that says this already show the wanted mark, to half the finest step it can be set to? */
@@ -63,7 +48,7 @@ export interface SettingInput {
   readonly standingDeg: readonly (number | null)[];
   /** What has been confirmed at this setting; null for a plate that has not. */
   readonly confirmedDeg: readonly (number | null)[];
-  readonly side: StandingSide;
+  readonly side: ViewedFrom;
 }
 
 /** The steps of one setting: each plate that must turn, in beam order, then nothing left but to record. */
@@ -82,7 +67,7 @@ export function settingSteps({
     const stood = standingDeg[plateIndex] ?? null;
     const base = { plateIndex, wantedDeg: wanted };
     if (confirmed !== null) return { ...base, state: 'dialled', standsDeg: confirmed, move: null };
-    const move = stood === null ? null : moveFrom(side, stood, wanted, mount);
+    const move = stood === null ? null : seenMove(stood, wanted, mount.direction, side);
     if (stood !== null && alreadyReads(stood, wanted, mount.resolutionDeg)) {
       return { ...base, state: 'stays', standsDeg: stood, move: null };
     }

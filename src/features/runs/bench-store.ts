@@ -1,6 +1,6 @@
 import { createStore } from 'zustand';
 import type { RecordReading } from '../../../shared/schemas/runs';
-import type { StandingSide } from './bench-steps';
+import type { ViewedFrom } from '../../components/dial-words';
 import { emptyEntry, type KeptEntry, type WaitingReading } from './kept-entry';
 import type { TurnedSince } from './standing-dials';
 
@@ -20,7 +20,7 @@ export interface BenchState extends KeptEntry {
   /** Takes the last confirmation of the open setting back. False when there is none. */
   readonly takeBack: () => boolean;
   readonly setNote: (note: string) => void;
-  readonly stand: (side: StandingSide) => void;
+  readonly stand: (side: ViewedFrom) => void;
   /** Puts a reading in the queue to the server and opens the next setting. */
   readonly record: (waiting: WaitingReading, nextSetting: number, turnedSince: TurnedSince | null) => void;
   readonly acknowledged: (key: string) => void;

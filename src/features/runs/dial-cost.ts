@@ -1,7 +1,21 @@
-import { degrees, wrapSigned } from '../../../shared/optics/units';
-import { evaluateDials } from '../../../shared/optics/solve-target';
+import { degrees, toRadians, wrapSigned } from '../../../shared/optics/units';
+import { fastAxisFromDial } from '../../../shared/optics/dial';
+import { errorBudget } from '../../../shared/optics/budget';
+import { evaluateDials, type TargetProblem } from '../../../shared/optics/solve-target';
 import { benchProblem } from '../../../shared/protocol/solve-row';
 import type { VersionContent } from '../../../shared/schemas/versions';
+
+/** One setting of a version as the solver sees it: target, input and the plates as they were frozen. */
+function frozenProblem(content: VersionContent, settingIndex: number): TargetProblem | null {
+  const target = content.targets[settingIndex];
+  const { input, plates } = content.bench;
+  if (target === undefined) return null;
+  const read = benchProblem(
+    { inputExpression: input.expression, polariserSigmaDeg: input.polariserSigmaDeg, plates },
+    content.convention,
+  );
+  return read.ok ? { ...read.problem, target: target.stokes } : null;
+}
 
 /** 1 − F that these dials make of one target, with the plates as the version froze them; null when that can't be worked out. */
 export function dialledInfidelity(
@@ -9,19 +23,49 @@ export function dialledInfidelity(
   settingIndex: number,
   dialsDeg: readonly number[],
 ): number | null {
-  const target = content.targets[settingIndex];
-  const { bench } = content;
-  if (target === undefined || dialsDeg.length !== bench.plates.length) return null;
-  const read = benchProblem(
-    {
-      inputExpression: bench.input.expression,
-      polariserSigmaDeg: bench.input.polariserSigmaDeg,
-      plates: bench.plates,
-    },
-    content.convention,
+  const problem = frozenProblem(content, settingIndex);
+  if (problem?.plates.length !== dialsDeg.length) return null;
+  return evaluateDials(problem, dialsDeg).infidelity;
+}
+
+export interface DialledExpectation {
+  /** 1 − F of these dials with the plates exactly as calibrated. */
+  readonly infidelity: number;
+  /** First-order expectation under every σ that the version froze, with its 5 % and 95 % points. */
+  readonly expected: number;
+  readonly low: number;
+  readonly high: number;
+}
+
+/** What these dials are expected to make of one target under the frozen σ; null when that can't be worked out. */
+export function dialledExpectation(
+  content: VersionContent,
+  settingIndex: number,
+  dialsDeg: readonly number[],
+): DialledExpectation | null {
+  const problem = frozenProblem(content, settingIndex);
+  const infidelity = dialledInfidelity(content, settingIndex, dialsDeg);
+  if (problem === null || infidelity === null) return null;
+  const inRadians = (angleDeg: number) => toRadians(degrees(angleDeg));
+  const budget = errorBudget(
+    problem.input,
+    problem.target,
+    problem.plates.map((plate, index) => ({
+      retardanceRad: inRadians(plate.retardanceDeg),
+      sigmaRetardanceRad: inRadians(plate.retardanceSigmaDeg),
+      fastAxisRad: toRadians(fastAxisFromDial(degrees(dialsDeg[index] ?? 0), plate.scale)),
+      sigmaOffsetRad: inRadians(plate.offsetSigmaDeg),
+      dialResolutionRad: inRadians(plate.scale.resolutionDeg),
+      dialRepeatabilityRad: inRadians(plate.repeatabilityDeg),
+    })),
+    inRadians(problem.polariserSigmaDeg),
   );
-  if (!read.ok) return null;
-  return evaluateDials({ ...read.problem, target: target.stokes }, dialsDeg.map(degrees)).infidelity;
+  return {
+    infidelity,
+    expected: budget.expectedInfidelity,
+    low: budget.expectedLow,
+    high: budget.expectedHigh,
+  };
 }
 
 /** What a reading other than the wanted one does to the setting. */

@@ -1,5 +1,5 @@
-import type { DialMove } from '../../../shared/optics/dial';
-import { decimalsOf, type PlateStep, type StandingSide, type StepMount } from './bench-steps';
+import type { SeenMove, ViewedFrom } from '../../components/dial-words';
+import { decimalsOf, type PlateStep, type StepMount } from './bench-steps';
 
 /** One dial's number at its mount's resolution, always with that many decimals. */
 export function dialText(dialDeg: number, resolutionDeg: number): string {
@@ -9,7 +9,7 @@ export function dialText(dialDeg: number, resolutionDeg: number): string {
 export interface MoveWords {
   /** The reading it starts at. */
   readonly from: string;
-  readonly sense: DialMove['sense'];
+  readonly sense: SeenMove['sense'];
   /** How far, in degrees, with as many decimals as both readings need. */
   readonly amount: string;
   /** What the engraved numbers do under the index. */
@@ -29,12 +29,7 @@ export function moveWords(step: PlateStep, mount: StepMount): MoveWords | null {
 }
 
 /** What a screen reader says when a plate's turn comes. */
-export function announcement(
-  plateName: string,
-  step: PlateStep,
-  mount: StepMount,
-  side: StandingSide,
-): string {
+export function announcement(plateName: string, step: PlateStep, mount: StepMount, side: ViewedFrom): string {
   const words = moveWords(step, mount);
   const wanted = dialText(step.wantedDeg, mount.resolutionDeg);
   const seen = side === 'source' ? ', seen from the source side' : '';

@@ -1,0 +1,30 @@
+import { useQuery } from '@tanstack/react-query';
+import { useParams } from 'react-router-dom';
+import { useLab } from '../labs';
+import './bench.css';
+import { BenchNotice } from './BenchNotice';
+import { BenchScreen } from './BenchScreen';
+import { runQuery, versionQuery } from './queries';
+import { RunRecord } from './RunRecord';
+
+/** A run at its own address: the bench while it goes on, its record once it is finished. */
+export function RunPage() {
+  const { lab } = useLab();
+  const { runId = '' } = useParams();
+  const run = useQuery(runQuery(lab.id, runId));
+  const summary = run.data?.summary;
+  const version = useQuery({
+    ...versionQuery(lab.id, summary?.protocolId ?? '', summary?.versionNumber ?? 0),
+    enabled: summary !== undefined,
+  });
+  if (run.data !== undefined && version.data !== undefined) {
+    return run.data.summary.state === 'finished' ? (
+      <RunRecord run={run.data} version={version.data} />
+    ) : (
+      <BenchScreen key={runId} run={run.data} version={version.data} />
+    );
+  }
+  return <BenchNotice failed={run.error ?? version.error} atBench />;
+}
+
+export { RunPage as Component };
