@@ -1,0 +1,143 @@
+import { type KeyboardEvent, type PointerEvent, useId, useRef, useState } from 'react';
+import { type DialScale, fastAxisFromDial, roundDial } from '../../shared/optics/dial';
+import { degrees, wrapSigned } from '../../shared/optics/units';
+import { formatDial } from '../lib/format/angle';
+import { parseTypedNumber } from '../lib/format/parse-number';
+import { Button } from './Button';
+import { dialName } from './dial-words';
+import { NumberField } from './NumberField';
+import { type PlateKind, RingDial, type RingDialProps } from './RingDial';
+
+export interface RingDialControlProps extends Omit<RingDialProps, 'scale' | 'label' | 'toDeg'> {
+  readonly name: string;
+  readonly kind: PlateKind;
+  readonly scale: DialScale;
+  readonly onChange: (readingDeg: number) => void;
+}
+
+/** How far a key turns the dial, in degrees; null for a key that doesn't. */
+export function keyStep(key: string, shift: boolean): number | null {
+  switch (key) {
+    case 'ArrowUp':
+    case 'ArrowRight':
+      return shift ? 1 : 0.1;
+    case 'ArrowDown':
+    case 'ArrowLeft':
+      return shift ? -1 : -0.1;
+    case 'PageUp':
+      return 10;
+    case 'PageDown':
+      return -10;
+    default:
+      return null;
+  }
+}
+
+/** A ring that can be turned: by hand, by the arrow keys, by − and + buttons, or by writing the number. */
+export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: RingDialControlProps) {
+  const [typed, setTyped] = useState<string | null>(null);
+  const grip = useRef<{ readonly pointerDeg: number; readonly readingDeg: number } | null>(null);
+  const fieldId = useId();
+  const resolution = scale.resolutionDeg;
+  const turnTo = (next: number): void => {
+    onChange(roundDial(degrees(next), resolution));
+  };
+  // A step below what the dial can be set to would be rounded away and the key would seem dead.
+  const turnBy = (step: number): void => {
+    turnTo(readingDeg + Math.sign(step) * Math.max(Math.abs(step), resolution));
+  };
+
+  const pointerAngle = (event: PointerEvent<HTMLDivElement>): number => {
+    const box = event.currentTarget.getBoundingClientRect();
+    return (
+      (Math.atan2(box.top + box.height / 2 - event.clientY, event.clientX - box.left - box.width / 2) * 180) /
+      Math.PI
+    );
+  };
+  const drag = (event: PointerEvent<HTMLDivElement>): void => {
+    if (grip.current === null) return;
+    const seen = wrapSigned(pointerAngle(event) - grip.current.pointerDeg, 360);
+    const turn = ring.viewedFrom === 'source' ? -seen : seen;
+    turnTo(grip.current.readingDeg + scale.direction * turn);
+  };
+  const press = (event: KeyboardEvent<HTMLDivElement>): void => {
+    const step = keyStep(event.key, event.shiftKey);
+    if (step === null || event.ctrlKey || event.metaKey || event.altKey) return;
+    event.preventDefault();
+    turnBy(step);
+  };
+  const write = (text: string): void => {
+    setTyped(text);
+    const number = parseTypedNumber(text);
+    if (number.ok && number.value >= 0 && number.value < 360) turnTo(number.value);
+  };
+  const parsed = typed === null ? null : parseTypedNumber(typed);
+  const outside = parsed?.ok === true && (parsed.value < 0 || parsed.value >= 360);
+  const fault =
+    parsed === null || (parsed.ok && !outside)
+      ? undefined
+      : outside
+        ? 'A dial reads from 0 up to 360. Write a number in that range.'
+        : 'This is no number. Write the reading in degrees, like 187.0.';
+
+  const fastAxis = fastAxisFromDial(degrees(readingDeg), scale);
+  return (
+    <div className="inline-flex flex-col items-center gap-2">
+      <div
+        role="slider"
+        tabIndex={0}
+        aria-label={dialName(name, readingDeg, fastAxis, resolution)}
+        aria-valuemin={0}
+        aria-valuemax={360}
+        aria-valuenow={readingDeg}
+        aria-valuetext={`${formatDial(readingDeg, resolution)} degrees`}
+        className="cursor-grab touch-none active:cursor-grabbing"
+        onKeyDown={press}
+        onPointerDown={(event) => {
+          event.currentTarget.setPointerCapture(event.pointerId);
+          grip.current = { pointerDeg: pointerAngle(event), readingDeg };
+        }}
+        onPointerMove={drag}
+        onPointerUp={() => {
+          grip.current = null;
+        }}
+        onPointerCancel={() => {
+          grip.current = null;
+        }}
+      >
+        <RingDial {...ring} scale={scale} readingDeg={readingDeg} />
+      </div>
+      <div className="flex items-end gap-2">
+        <Button
+          aria-label={`${name} dial ${formatDial(resolution, resolution)}° less`}
+          onClick={() => {
+            turnBy(-resolution);
+          }}
+        >
+          −
+        </Button>
+        <NumberField
+          id={fieldId}
+          label={`${name} dial, degrees`}
+          className="w-32"
+          value={typed ?? formatDial(readingDeg, resolution)}
+          fault={fault}
+          onChange={(event) => {
+            write(event.currentTarget.value);
+          }}
+          onBlur={() => {
+            setTyped(null);
+          }}
+        />
+        <Button
+          aria-label={`${name} dial ${formatDial(resolution, resolution)}° more`}
+          onClick={() => {
+            turnBy(resolution);
+          }}
+        >
+          +
+        </Button>
+      </div>
+    </div>
+  );
+}

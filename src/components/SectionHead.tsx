@@ -1,0 +1,42 @@
+import type { ReactNode } from 'react';
+import { classNames } from './class-names';
+
+export interface SectionHeadProps {
+  readonly children: ReactNode;
+  /** Second words beside the head. */
+  readonly note?: ReactNode;
+  /** A way on, at the right end. */
+  readonly action?: ReactNode;
+  readonly level?: 2 | 3;
+  /** Larger, for the two or three parts of a page like home. */
+  readonly large?: boolean;
+  readonly id?: string | undefined;
+  readonly className?: string | undefined;
+}
+
+/** A section opens with an ink rule above its head, never a box. */
+export function SectionHead({
+  children,
+  note,
+  action,
+  level = 2,
+  large = false,
+  id,
+  className,
+}: SectionHeadProps) {
+  const Head = level === 2 ? 'h2' : 'h3';
+  return (
+    <div
+      className={classNames(
+        'flex flex-wrap items-baseline gap-x-4 gap-y-1 border-t-[1.5px] border-ink pt-2.5',
+        className,
+      )}
+    >
+      <Head id={id} className={large ? 'text-[1.375rem] leading-7 font-title' : 'text-section'}>
+        {children}
+      </Head>
+      {note !== undefined && <span className="text-s text-ink-2">{note}</span>}
+      {action !== undefined && <span className="ml-auto">{action}</span>}
+    </div>
+  );
+}
