@@ -35,9 +35,15 @@ function printFactor({ join, node }: Factor, index: number, all: readonly Factor
   const body = bracketed ? `(${print(node)})` : print(node);
   if (index === 0) return body;
   if (join !== 'implied') return `${join}${body}`;
-  // A unit stands close to its number: 22.5deg.
-  const close = node.kind === 'unit' && all[index - 1]?.node.kind === 'number';
-  return close ? body : ` ${body}`;
+  const afterNumber = all[index - 1]?.node.kind === 'number';
+  // A unit stands close to its number: 22.5deg. A number beside a number needs brackets to stay apart from it.
+  if (afterNumber && node.kind === 'unit') return body;
+  return afterNumber && startsWithDigit(body) ? ` (${body})` : ` ${body}`;
+}
+
+function startsWithDigit(text: string): boolean {
+  const first = text.charAt(0);
+  return first >= '0' && first <= '9';
 }
 
 function printTight(node: Node): string {

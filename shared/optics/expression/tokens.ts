@@ -43,6 +43,10 @@ const WORDS: readonly (readonly [string, Word])[] = [
   ['R', { kind: 'state', name: 'R' }],
 ];
 
+const WORDS_BY_LETTER = new Map<string, readonly (readonly [string, Word])[]>(
+  WORDS.map(([text]) => [text.charAt(0), WORDS.filter(([other]) => other.startsWith(text.charAt(0)))]),
+);
+
 const SPACES = ' \t\n\r\u00a0\u2002\u2003\u2009\u200a\u202f\u2060\ufeff';
 
 function symbolOf(character: string): Symbol | null {
@@ -163,18 +167,22 @@ function readNumber(source: string, start: number): Token & { kind: 'number' } {
 function readWords(source: string, start: number, tokens: Token[]): number {
   let end = start;
   while (isLetter(source[end])) end += 1;
-  const found: Token[] = [];
   let at = start;
   while (at < end) {
-    const here = at;
-    const match = WORDS.find(([text]) => here + text.length <= end && source.startsWith(text, here));
-    if (match === undefined) throw unknownWord(source, start, end);
+    const match = longestWord(source, at, end);
+    if (match === null) throw unknownWord(source, start, end);
     const [text, word] = match;
-    found.push({ ...word, span: { start: here, end: here + text.length } });
+    tokens.push({ ...word, span: { start: at, end: at + text.length } });
     at += text.length;
   }
-  tokens.push(...found);
   return end;
+}
+
+function longestWord(source: string, at: number, end: number): readonly [string, Word] | null {
+  for (const entry of WORDS_BY_LETTER.get(source.charAt(at)) ?? []) {
+    if (at + entry[0].length <= end && source.startsWith(entry[0], at)) return entry;
+  }
+  return null;
 }
 
 function unknownWord(source: string, start: number, end: number): ExpressionError {
