@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import { existsSync, readFileSync, readdirSync, statSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
+import util from 'node:util';
 import { run, tail } from './run.mjs';
 import { Failure } from './say.mjs';
 
@@ -37,7 +38,7 @@ export async function ensureClient(root, dataDirectory, signal) {
   });
   if (built.code !== 0) {
     throw new Failure(
-      `The client could not be built:\n${tail(built.output)}`,
+      `The client could not be built:\n${tail(readable(built.output), 40)}`,
       'To see it all: npm run build',
     );
   }
@@ -59,4 +60,16 @@ function addToHash(hash, root, relative) {
     const content = readFileSync(full);
     hash.update(`${relative}\0${content.length}\0`).update(content);
   }
+}
+
+/**
+ * Without colours, which the builder writes even when nobody can see them, and without its own stack, which tells nothing about our sources.
+ * @param {string} output
+ */
+function readable(output) {
+  return util
+    .stripVTControlCharacters(output)
+    .split('\n')
+    .filter((line) => !/^ +at /.test(line))
+    .join('\n');
 }

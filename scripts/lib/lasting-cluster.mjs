@@ -1,3 +1,4 @@
+import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
 import { newPasswords, startCluster } from './postgres.mjs';
 import { placeForCluster } from './postgres-place.mjs';
@@ -13,11 +14,12 @@ const PREFERRED_PORT = 4620;
  */
 export async function startLastingCluster(dataDirectory) {
   const file = path.join(dataDirectory, 'database.json');
-  const directory = await placeForCluster(dataDirectory);
-  const { place, passwords } = readRecord(
-    file,
-    keepSecret(file, () => JSON.stringify({ place: directory, passwords: newPasswords() })),
-  );
+  // Decided once: a later start must find the data where the first one put it.
+  if (!existsSync(file)) {
+    const place = await placeForCluster(dataDirectory);
+    keepSecret(file, () => JSON.stringify({ place, passwords: newPasswords() }));
+  }
+  const { place, passwords } = readRecord(file, readFileSync(file, 'utf8'));
   return startCluster({
     directory: place,
     passwords,

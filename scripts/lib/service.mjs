@@ -8,7 +8,8 @@ import { tail } from './run.mjs';
 
 const STOP_WITH_PARENT = fileURLToPath(new URL('stop-with-parent.mjs', import.meta.url));
 const READY_LIMIT_MS = 60_000;
-const STOP_LIMIT_MS = 10_000;
+// The server gives itself ten seconds to finish what is under way.
+const STOP_LIMIT_MS = 12_000;
 const MOST_RESTARTS_A_MINUTE = 5;
 const LARGEST_LOG_BYTES = 20_000_000;
 

@@ -66,6 +66,7 @@ async function bringUp(root, stoppers, giveUp) {
   }
   stoppers.add(() => rmSync(runningFile, { force: true }));
 
+  const port = await choosePort(settings);
   const { signal } = stoppers;
   await step(
     'packages',
@@ -76,7 +77,6 @@ async function bringUp(root, stoppers, giveUp) {
 
   const isProduction = settings['NODE_ENV'] === 'production';
   const usesFake = settings['GITHUB_CLIENT_ID'] === undefined;
-  const port = await choosePort(settings);
   const publicUrl = settings['PUBLIC_URL'] ?? `http://localhost:${port}`;
   const place = { root, dataDirectory, settings, publicUrl, stoppers, onGivenUp: giveUp };
   const [fake] = await Promise.all([

@@ -4,7 +4,7 @@
  */
 import { isMainThread } from 'node:worker_threads';
 
-const LIMIT_MS = 10_000;
+const LIMIT_MS = 12_000;
 
 if (isMainThread) {
   process.stdin.once('close', () => {

@@ -103,7 +103,7 @@ async function runAll(root, filters, stoppers) {
   const outcomes =
     filters.length === 0
       ? await everything(surroundings, dataDirectory, browser)
-      : await matching(surroundings, dataDirectory, browser, filters);
+      : await matching(surroundings, dataDirectory, needsBrowser, browser, filters);
   say(`All done after ${secondsSince(began)}.`);
   return outcomes;
 }
@@ -136,11 +136,13 @@ async function everything(surroundings, dataDirectory, browser) {
 /**
  * @param {Surroundings} surroundings
  * @param {string} dataDirectory
+ * @param {boolean} needsBrowser
  * @param {Promise<Outcome | null>} browser
  * @param {readonly string[]} filters
  */
-async function matching(surroundings, dataDirectory, browser, filters) {
-  const ready = await Promise.all([buildClient(surroundings, dataDirectory), browser]);
+async function matching(surroundings, dataDirectory, needsBrowser, browser, filters) {
+  const built = needsBrowser ? buildClient(surroundings, dataDirectory) : null;
+  const ready = await Promise.all([built, browser]);
   return [
     ...withoutNull(ready),
     await vitest(`tests that match ${filters.join(' or ')}`, filters, surroundings, true),
