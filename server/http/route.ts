@@ -147,8 +147,8 @@ export interface Route {
 export function route<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType>(
   definition: PublicDefinition<P, Q, B>,
 ): Route;
-// eslint-disable-next-line @typescript-eslint/unified-signatures -- one signature for both would leave the handler's context without a type
 export function route<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType>(
+  // eslint-disable-next-line @typescript-eslint/unified-signatures -- one signature for both would leave the handler's context without a type
   definition: SignedInDefinition<P, Q, B>,
 ): Route;
 export function route<

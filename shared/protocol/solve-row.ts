@@ -7,7 +7,11 @@ import type { Calibration } from '../schemas/cabinet';
 
 /** What a solver needs of a plate: its calibration and its mount. */
 export interface SolvingPlate {
-  readonly mount: { readonly direction: 1 | -1; readonly resolutionDeg: number; readonly repeatabilityDeg: number };
+  readonly mount: {
+    readonly direction: 1 | -1;
+    readonly resolutionDeg: number;
+    readonly repeatabilityDeg: number;
+  };
   readonly calibration: Pick<
     Calibration,
     'retardanceDeg' | 'retardanceSigmaDeg' | 'offsetDeg' | 'offsetSigmaDeg'
@@ -37,7 +41,11 @@ export function targetPlates(plates: readonly SolvingPlate[]): TargetPlate[] {
     retardanceSigmaDeg: calibration.retardanceSigmaDeg,
     offsetSigmaDeg: calibration.offsetSigmaDeg,
     repeatabilityDeg: mount.repeatabilityDeg,
-    scale: { offsetDeg: calibration.offsetDeg, direction: mount.direction, resolutionDeg: mount.resolutionDeg },
+    scale: {
+      offsetDeg: calibration.offsetDeg,
+      direction: mount.direction,
+      resolutionDeg: mount.resolutionDeg,
+    },
   }));
 }
 
@@ -45,7 +53,9 @@ export function targetPlates(plates: readonly SolvingPlate[]): TargetPlate[] {
 export function benchProblem(
   bench: SolvingBench,
   convention: Convention,
-): { readonly ok: true; readonly problem: Omit<TargetProblem, 'target'> } | Extract<StateReading, { ok: false }> {
+):
+  | { readonly ok: true; readonly problem: Omit<TargetProblem, 'target'> }
+  | Extract<StateReading, { ok: false }> {
   const input = parseState(bench.inputExpression, convention);
   if (!input.ok) return input;
   return {
@@ -82,7 +92,8 @@ export function chooseSolution(
   if (heldFastAxesDeg === null) return { index: 0, held: false };
   const distances = solved.solutions.map(({ fastAxesDeg }) =>
     fastAxesDeg.reduce(
-      (worst, angle, plate) => Math.max(worst, Math.abs(wrapSigned(angle - (heldFastAxesDeg[plate] ?? Infinity), 180))),
+      (worst, angle, plate) =>
+        Math.max(worst, Math.abs(wrapSigned(angle - (heldFastAxesDeg[plate] ?? Infinity), 180))),
       0,
     ),
   );

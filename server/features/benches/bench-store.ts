@@ -1,0 +1,171 @@
+import { z } from 'zod';
+import type { Thing } from '../../../shared/permissions';
+import { type Bench, type CreateBench, laserClassSchema } from '../../../shared/schemas';
+import type { Transaction } from '../../db/database';
+import { newId } from '../../db/new-id';
+import { asPlate, listPlates } from '../cabinet';
+
+const benchRow = z.object({
+  id: z.string(),
+  lab_id: z.string(),
+  name: z.string(),
+  wavelength_nm: z.number(),
+  input_expression: z.string(),
+  polariser_sigma_deg: z.number(),
+  laser_class: laserClassSchema,
+  hazard_wavelengths_nm: z.array(z.number()),
+  retired_at: z.date().nullable(),
+  revision: z.number(),
+});
+const placeRow = z.object({ bench_id: z.string(), plate_id: z.string() });
+const holderRow = z.object({ plate_id: z.string(), plate_name: z.string(), bench_name: z.string() });
+
+export type StoredBench = Bench & Thing;
+
+/** What the API shows of a bench. */
+export function asBench({ labId: _labId, ...bench }: StoredBench): Bench {
+  return bench;
+}
+
+async function withPlates(
+  transaction: Transaction,
+  labId: string,
+  unread: readonly unknown[],
+): Promise<StoredBench[]> {
+  const rows = z.array(benchRow).parse(unread);
+  const plates = new Map((await listPlates(transaction, labId)).map((plate) => [plate.id, asPlate(plate)]));
+  const places = z
+    .array(placeRow)
+    .parse(
+      await transaction('bench_plates')
+        .where({ lab_id: labId })
+        .orderBy('position')
+        .select('bench_id', 'plate_id'),
+    );
+  return rows.map((row) => ({
+    id: row.id,
+    labId: row.lab_id,
+    name: row.name,
+    wavelengthNm: row.wavelength_nm,
+    inputExpression: row.input_expression,
+    polariserSigmaDeg: row.polariser_sigma_deg,
+    laserClass: row.laser_class,
+    hazardWavelengthsNm: row.hazard_wavelengths_nm,
+    plates: places
+      .filter(({ bench_id }) => bench_id === row.id)
+      .flatMap(({ plate_id }) => plates.get(plate_id) ?? []),
+    retiredAt: row.retired_at?.toISOString() ?? null,
+    revision: row.revision,
+  }));
+}
+
+/** Every bench of a lab, those in use first, by name. */
+export async function listBenches(transaction: Transaction, labId: string): Promise<StoredBench[]> {
+  const rows: unknown[] = await transaction('benches')
+    .where({ lab_id: labId })
+    .orderByRaw('retired_at is not null, name, id')
+    .select();
+  return withPlates(transaction, labId, rows);
+}
+
+export async function findBench(
+  transaction: Transaction,
+  { labId, benchId }: { readonly labId: string; readonly benchId: string },
+): Promise<StoredBench | null> {
+  const rows: unknown[] = await transaction('benches').where({ lab_id: labId, id: benchId }).select();
+  const [bench] = await withPlates(transaction, labId, rows);
+  return bench ?? null;
+}
+
+/** As `findBench`, and nobody else changes the bench until the transaction ends. */
+export async function findBenchToChange(
+  transaction: Transaction,
+  key: { readonly labId: string; readonly benchId: string },
+): Promise<StoredBench | null> {
+  await transaction('benches').where({ lab_id: key.labId, id: key.benchId }).forUpdate().select('id');
+  return findBench(transaction, key);
+}
+
+/** Which other bench in use has which of these plates. */
+export async function findHolders(
+  transaction: Transaction,
+  labId: string,
+  plateIds: readonly string[],
+  butBenchId: string,
+): Promise<z.infer<typeof holderRow>[]> {
+  const rows: unknown[] = await transaction('bench_plates')
+    .join('benches', 'benches.id', 'bench_plates.bench_id')
+    .join('plates', 'plates.id', 'bench_plates.plate_id')
+    .where({ 'bench_plates.lab_id': labId, 'bench_plates.live': true })
+    .whereIn('bench_plates.plate_id', plateIds)
+    .whereNot({ 'bench_plates.bench_id': butBenchId })
+    .select({
+      plate_id: 'bench_plates.plate_id',
+      plate_name: 'plates.name',
+      bench_name: 'benches.name',
+    });
+  return z.array(holderRow).parse(rows);
+}
+
+export async function insertBench(
+  transaction: Transaction,
+  place: { readonly labId: string; readonly now: Date },
+  bench: CreateBench,
+  id = newId(),
+): Promise<string> {
+  await transaction('benches').insert({
+    id,
+    lab_id: place.labId,
+    created_at: place.now,
+    ...columnsOf(bench),
+  });
+  await placePlates(transaction, place.labId, id, bench.plateIds);
+  return id;
+}
+
+export async function updateBench(
+  transaction: Transaction,
+  stored: StoredBench,
+  bench: CreateBench,
+): Promise<void> {
+  await transaction('benches')
+    .where({ lab_id: stored.labId, id: stored.id })
+    .update({ ...columnsOf(bench), revision: stored.revision + 1 });
+  await transaction('bench_plates').where({ lab_id: stored.labId, bench_id: stored.id }).delete();
+  await placePlates(transaction, stored.labId, stored.id, bench.plateIds);
+}
+
+export async function setRetired(
+  transaction: Transaction,
+  stored: StoredBench,
+  at: Date | null,
+): Promise<void> {
+  await transaction('benches')
+    .where({ lab_id: stored.labId, id: stored.id })
+    .update({ retired_at: at, revision: stored.revision + 1 });
+  await transaction('bench_plates')
+    .where({ lab_id: stored.labId, bench_id: stored.id })
+    .update({ live: at === null });
+}
+
+async function placePlates(
+  transaction: Transaction,
+  labId: string,
+  benchId: string,
+  plateIds: readonly string[],
+): Promise<void> {
+  await transaction('bench_plates').insert(
+    plateIds.map((plateId, position) => ({ lab_id: labId, bench_id: benchId, position, plate_id: plateId })),
+  );
+}
+
+function columnsOf(bench: CreateBench) {
+  return {
+    name: bench.name,
+    wavelength_nm: bench.wavelengthNm,
+    input_expression: bench.inputExpression,
+    polariser_sigma_deg: bench.polariserSigmaDeg,
+    laser_class: bench.laserClass,
+    hazard_wavelengths_nm: bench.hazardWavelengthsNm,
+  };
+}

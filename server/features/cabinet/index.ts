@@ -1,0 +1,2 @@
+export { findPlate, insertPlate, listPlates, asPlate, type StoredPlate } from './plate-store';
+export { plateRoutes } from './routes';

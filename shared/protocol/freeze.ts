@@ -1,0 +1,138 @@
+import type { Bench } from '../schemas/benches';
+import type { Lab } from '../schemas/labs';
+import type { DraftContent } from '../schemas/protocols';
+import type { VersionContent } from '../schemas/versions';
+import { SOLVER_VERSION } from '../optics/solve-target';
+import { canonicalJson, contentHash } from './canonical-json';
+import { benchProblem, chooseSolution, solveRow } from './solve-row';
+
+/** Everything that a version is made of, as it stands at this moment. */
+export interface FreezeInput {
+  readonly lab: Pick<Lab, 'id' | 'name' | 'convention'>;
+  readonly protocolId: string;
+  readonly draft: DraftContent;
+  readonly bench: Bench;
+  readonly number: number;
+  /** The content hash of the version before this one; null for the first. */
+  readonly parentHash: string | null;
+  readonly message: string;
+  readonly savedAt: Date;
+  readonly savedBy: { readonly id: string; readonly name: string };
+}
+
+/** What keeps a draft from being frozen: where, and one sentence. */
+export interface FreezeFault {
+  /** Dotted, as in `targets.2.expression`. */
+  readonly path: string;
+  readonly message: string;
+}
+
+export type Frozen =
+  | {
+      readonly ok: true;
+      readonly content: VersionContent;
+      /** RFC 8785: the text that the hash covers. */
+      readonly canonicalJson: string;
+      /** SHA-256 of that text; since the text holds the parent's hash, it covers the whole chain. */
+      readonly contentHash: string;
+    }
+  | { readonly ok: false; readonly faults: readonly FreezeFault[] };
+
+/** A row as a person finds it: its number from 1, and its label if it has one. */
+export function rowName(index: number, label: string): string {
+  return label.trim() === '' ? `Row ${index + 1}` : `Row ${index + 1} (${label.trim()})`;
+}
+
+/** A draft solved for its bench and frozen with all that the numbers depend on, or every row that cannot be. */
+export function freeze(input: FreezeInput): Frozen {
+  const { lab, draft, bench } = input;
+  const faults: FreezeFault[] = [];
+  if (draft.targets.length === 0) {
+    return { ok: false, faults: [{ path: 'targets', message: 'The protocol has no target. Write one first.' }] };
+  }
+  const faced = benchProblem(bench, lab.convention);
+  if (!faced.ok) {
+    const message = `The input of ${bench.name} cannot be read. Column ${faced.error.column}: ${faced.error.message}`;
+    return { ok: false, faults: [{ path: 'benchId', message }] };
+  }
+  const targets: VersionContent['targets'] = [];
+  for (const [index, row] of draft.targets.entries()) {
+    const name = rowName(index, row.label);
+    if (!row.label.isWellFormed() || !row.expression.isWellFormed()) {
+      faults.push({
+        path: `targets.${index}.expression`,
+        message: `${name} holds half of a character. Write it again.`,
+      });
+      continue;
+    }
+    const result = solveRow(row.expression, faced.problem, lab.convention);
+    if (result.status === 'unreadable') {
+      faults.push({
+        path: `targets.${index}.expression`,
+        message: `${name}, column ${result.error.column}: ${result.error.message}`,
+      });
+      continue;
+    }
+    const { reading, solved } = result;
+    const chosen = chooseSolution(solved, row.heldFastAxesDeg);
+    targets.push({
+      id: row.id,
+      label: row.label.trim(),
+      expression: row.expression,
+      canonicalExpression: reading.canonical,
+      stokes: [...reading.stokes],
+      reach: solved.kind,
+      shortfallDeg: solved.shortfallDeg,
+      solutions: solved.solutions.map((solution) => ({
+        fastAxesDeg: [...solution.fastAxesDeg],
+        dialsDeg: [...solution.dialsDeg],
+        infidelity: solution.infidelity,
+        dialledInfidelity: solution.dialledInfidelity,
+        expectedInfidelity: solution.expectedInfidelity,
+        expectedLow: solution.expectedLow,
+        expectedHigh: solution.expectedHigh,
+      })),
+      chosenSolution: chosen.index,
+      held: chosen.held,
+    });
+  }
+  if (faults.length > 0) return { ok: false, faults };
+
+  const content: VersionContent = {
+    format: 'quarterturn.version/1',
+    lab: { id: lab.id, name: lab.name },
+    protocol: { id: input.protocolId, name: draft.name, purpose: draft.purpose },
+    number: input.number,
+    parentHash: input.parentHash,
+    message: input.message,
+    savedAt: input.savedAt.toISOString(),
+    savedBy: { id: input.savedBy.id, name: input.savedBy.name },
+    convention: lab.convention,
+    solverVersion: SOLVER_VERSION,
+    objective: 'least-expected-infidelity',
+    toleranceInfidelity: draft.toleranceInfidelity,
+    bench: {
+      id: bench.id,
+      name: bench.name,
+      wavelengthNm: bench.wavelengthNm,
+      laserClass: bench.laserClass,
+      hazardWavelengthsNm: [...bench.hazardWavelengthsNm],
+      input: {
+        expression: bench.inputExpression,
+        stokes: [...faced.problem.input],
+        polariserSigmaDeg: bench.polariserSigmaDeg,
+      },
+      plates: bench.plates.map(({ id, name, kind, designWavelengthNm, mount, calibration }) => ({
+        id,
+        name,
+        kind,
+        designWavelengthNm,
+        mount,
+        calibration,
+      })),
+    },
+    targets,
+  };
+  const text = canonicalJson(content);
+  return { ok: true, content, canonicalJson: text, contentHash: contentHash(text) };
+}
