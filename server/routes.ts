@@ -2,10 +2,21 @@ import type { Config } from './config';
 import { sessionRoutes } from './features/auth';
 import { benchRoutes } from './features/benches';
 import { plateRoutes } from './features/cabinet';
+import { homeRoutes } from './features/home';
 import { labRoutes } from './features/labs';
+import { protocolRoutes } from './features/protocols';
+import { runRoutes } from './features/runs';
 import type { Route } from './http/route';
 
 /** Every route of the API: the router is made from this list, and so is the permission table of the tests. */
 export function allRoutes(config: Pick<Config, 'secure' | 'sessionSecret'>): readonly Route[] {
-  return [...sessionRoutes(config), ...labRoutes(config), ...plateRoutes(), ...benchRoutes()];
+  return [
+    ...sessionRoutes(config),
+    ...labRoutes(config),
+    ...plateRoutes(),
+    ...benchRoutes(),
+    ...protocolRoutes(),
+    ...runRoutes(),
+    ...homeRoutes(),
+  ];
 }

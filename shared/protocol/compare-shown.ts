@@ -9,7 +9,10 @@ const reload =
  * Holds what a page showed against what is about to be frozen, number for number and without a tolerance: both come
  * from the same solver, so any difference means that the person agreed to something else.
  */
-export function compareShown(content: VersionContent, shown: readonly ShownSolution[]): readonly FreezeFault[] {
+export function compareShown(
+  content: VersionContent,
+  shown: readonly ShownSolution[],
+): readonly FreezeFault[] {
   const faults: FreezeFault[] = [];
   for (const [index, target] of content.targets.entries()) {
     const name = rowName(index, target.label);
@@ -17,11 +20,17 @@ export function compareShown(content: VersionContent, shown: readonly ShownSolut
     const seen = shown[place];
     const solution = target.solutions[target.chosenSolution];
     if (seen === undefined || solution === undefined) {
-      faults.push({ path: `targets.${index}`, message: `${name} was not on the page that was saved. ${reload}` });
+      faults.push({
+        path: `targets.${index}`,
+        message: `${name} was not on the page that was saved. ${reload}`,
+      });
       continue;
     }
     for (const [plate, { name: plateName }] of content.bench.plates.entries()) {
-      if (seen.dialsDeg[plate] === solution.dialsDeg[plate] && seen.fastAxesDeg[plate] === solution.fastAxesDeg[plate]) {
+      if (
+        seen.dialsDeg[plate] === solution.dialsDeg[plate] &&
+        seen.fastAxesDeg[plate] === solution.fastAxesDeg[plate]
+      ) {
         continue;
       }
       faults.push({
@@ -44,7 +53,10 @@ export function compareShown(content: VersionContent, shown: readonly ShownSolut
   const known = new Set(content.targets.map(({ id }) => id));
   for (const [place, { targetId }] of shown.entries()) {
     if (!known.has(targetId)) {
-      faults.push({ path: `shown.${place}.targetId`, message: `The page showed a row that the draft does not have. ${reload}` });
+      faults.push({
+        path: `shown.${place}.targetId`,
+        message: `The page showed a row that the draft does not have. ${reload}`,
+      });
     }
   }
   if (faults.length === 0 && shown.length !== content.targets.length) {

@@ -48,7 +48,10 @@ export function freeze(input: FreezeInput): Frozen {
   const { lab, draft, bench } = input;
   const faults: FreezeFault[] = [];
   if (draft.targets.length === 0) {
-    return { ok: false, faults: [{ path: 'targets', message: 'The protocol has no target. Write one first.' }] };
+    return {
+      ok: false,
+      faults: [{ path: 'targets', message: 'The protocol has no target. Write one first.' }],
+    };
   }
   const faced = benchProblem(bench, lab.convention);
   if (!faced.ok) {

@@ -10,8 +10,7 @@ export type RunEvent =
   | { readonly kind: 'finish'; readonly open: number };
 
 export type Transition =
-  | { readonly ok: true; readonly state: RunState }
-  | { readonly ok: false; readonly reason: string };
+  { readonly ok: true; readonly state: RunState } | { readonly ok: false; readonly reason: string };
 
 const to = (state: RunState): Transition => ({ ok: true, state });
 const not = (reason: string): Transition => ({ ok: false, reason });

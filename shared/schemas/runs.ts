@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { idSchema, lineSchema, noteSchema, timestampSchema } from './common';
+import { idSchema, lineSchema, noteSchema, pageSchema, timestampSchema } from './common';
 
 export const runStates = ['running', 'paused', 'finished'] as const;
 
@@ -39,6 +39,8 @@ export const runSummarySchema = z.strictObject({
   finishedAt: timestampSchema.nullable(),
 });
 export type RunSummary = z.infer<typeof runSummarySchema>;
+/** Newest first. */
+export const runPageSchema = pageSchema(runSummarySchema);
 
 export const runSchema = z.strictObject({
   summary: runSummarySchema,
@@ -49,7 +51,10 @@ export const runSchema = z.strictObject({
 });
 export type Run = z.infer<typeof runSchema>;
 
-const dialSchema = z.number().min(0, 'A dial reads from 0 to below 360.').lt(360, 'A dial reads from 0 to below 360.');
+const dialSchema = z
+  .number()
+  .min(0, 'A dial reads from 0 to below 360.')
+  .lt(360, 'A dial reads from 0 to below 360.');
 
 export const startRunSchema = z.strictObject({
   versionId: idSchema,

@@ -1,0 +1,38 @@
+import { z } from 'zod';
+import { homeSchema, idSchema } from '../../../shared/schemas';
+import { noBody, nothing, type Route, route } from '../../http/route';
+import { asPlate, listPlates } from '../cabinet';
+import { listBenches } from '../benches';
+import { findLab } from '../labs';
+import { lastMadeOf, lastRuns } from './last-made';
+import { draftsAhead } from './drafts-ahead';
+import { waitingFor } from './waiting';
+
+const labParams = z.strictObject({ labId: idSchema });
+
+export function homeRoutes(): readonly Route[] {
+  return [
+    route({
+      method: 'get',
+      path: '/labs/:labId/home',
+      access: { kind: 'member', action: 'lab.read', thing: findLab },
+      params: labParams,
+      query: nothing,
+      body: noBody,
+      response: homeSchema,
+      handler: async ({ thing, member, labId, transaction, now }) => {
+        const plates = (await listPlates(transaction, labId)).filter(({ retiredAt }) => retiredAt === null);
+        const benches = (await listBenches(transaction, labId)).filter(({ retiredAt }) => retiredAt === null);
+        const runs = await lastRuns(transaction, labId);
+        const drafts = await draftsAhead(transaction, labId);
+        return {
+          body: {
+            waiting: waitingFor({ lab: thing, member, plates, benches, ...runs, ...drafts, now }),
+            lastMade: lastMadeOf(runs.worst),
+            cabinet: plates.map(asPlate),
+          },
+        };
+      },
+    }),
+  ];
+}

@@ -1,0 +1,85 @@
+import { can, type Member } from '../../../shared/permissions';
+import type { Bench, Lab, Plate, RunSummary, WaitingItem } from '../../../shared/schemas';
+import type { DraftAhead } from './drafts-ahead';
+import type { WorstSetting } from './last-made';
+
+const dayMs = 24 * 3600 * 1000;
+/** A calibration is named this many days before it falls due. */
+const warnedDays = 7;
+/** A retardance measured this far from the bench's light is another retardance. */
+const sameWavelengthNm = 0.5;
+
+export interface HomeFacts {
+  readonly lab: Lab;
+  readonly member: Member;
+  /** In use. */
+  readonly plates: readonly Plate[];
+  /** In use. */
+  readonly benches: readonly Bench[];
+  readonly unfinished: readonly RunSummary[];
+  readonly worst: readonly WorstSetting[];
+  readonly drafts: readonly DraftAhead[];
+  readonly protocolCount: number;
+  readonly now: Date;
+}
+
+/** What waits for this person, and for nobody who could do nothing about it: people before data before dates. */
+export function waitingFor(facts: HomeFacts): WaitingItem[] {
+  const { lab, member, plates, benches, unfinished, worst, drafts, protocolCount } = facts;
+  const may = (action: Parameters<typeof can>[1]) => can(member, action, { labId: lab.id });
+  const items: WaitingItem[] = [];
+  if (may('runs.record')) items.push(...unfinished.map((run) => ({ kind: 'run-stands' as const, run })));
+  if (may('protocols.write'))
+    items.push(...drafts.map((draft) => ({ kind: 'draft-ahead' as const, ...draft })));
+  if (may('protocols.write') || may('runs.record')) items.push(...notWithin(worst));
+  if (may('calibrations.record')) items.push(...elsewhere(benches), ...due(facts));
+  if (plates.length === 0 && may('cabinet.write')) items.push({ kind: 'no-plates' });
+  if (benches.length === 0 && may('benches.write')) items.push({ kind: 'no-bench' });
+  if (protocolCount === 0 && may('protocols.write')) items.push({ kind: 'no-protocol' });
+  return items;
+}
+
+function notWithin(worst: readonly WorstSetting[]): WaitingItem[] {
+  return worst
+    .filter((made) => made.dialledInfidelity > made.toleranceInfidelity)
+    .map(({ run, label, dialledInfidelity, toleranceInfidelity }) => ({
+      kind: 'dialled-not-within',
+      run,
+      label,
+      dialledInfidelity,
+      toleranceInfidelity,
+    }));
+}
+
+function elsewhere(benches: readonly Bench[]): WaitingItem[] {
+  return benches.flatMap((bench) =>
+    bench.plates
+      .filter(({ calibration }) => Math.abs(calibration.wavelengthNm - bench.wavelengthNm) > sameWavelengthNm)
+      .map((plate) => ({
+        kind: 'calibrated-elsewhere' as const,
+        plateId: plate.id,
+        plateName: plate.name,
+        benchName: bench.name,
+        calibratedAtNm: plate.calibration.wavelengthNm,
+        benchNm: bench.wavelengthNm,
+      })),
+  );
+}
+
+function due({ lab, plates, now }: HomeFacts): WaitingItem[] {
+  return plates
+    .filter(({ benches }) => benches.length > 0)
+    .map((plate) => {
+      const dueAt = Date.parse(plate.calibration.measuredAt) + lab.calibrationDueDays * dayMs;
+      return {
+        kind: 'calibration-due' as const,
+        plateId: plate.id,
+        plateName: plate.name,
+        measuredAt: plate.calibration.measuredAt,
+        daysLeft: Math.floor((dueAt - now.getTime()) / dayMs),
+        benchNames: plate.benches.map(({ name }) => name),
+      };
+    })
+    .filter(({ daysLeft }) => daysLeft <= warnedDays)
+    .sort((a, b) => a.daysLeft - b.daysLeft);
+}

@@ -1,0 +1,2 @@
+export { protocolRoutes } from './routes';
+export { findVersionById, type StoredVersion } from './version-store';

@@ -1,0 +1,159 @@
+import { z } from 'zod';
+import { dialledInfidelity } from '../../../shared/protocol/dialled';
+import { type RunEvent, type RunState, transition } from '../../../shared/protocol/run-life';
+import type { RecordReading, StartRun, Version } from '../../../shared/schemas';
+import type { Transaction } from '../../db/database';
+import { newId } from '../../db/new-id';
+import { conflict, refused } from '../../errors';
+import type { RunRow } from './run-store';
+
+/** Who does it and when; the seeds say another time than now. */
+export interface Doing {
+  readonly labId: string;
+  readonly userId: string;
+  readonly at: Date;
+}
+
+const numberRow = z.object({ runs_started: z.number() });
+
+/** Begins a run of a version. @throws ProblemError 422 where the dials do not fit its bench. */
+export async function startRun(
+  transaction: Transaction,
+  { labId, userId, at }: Doing,
+  version: Version,
+  input: Pick<StartRun, 'startDialsDeg'>,
+): Promise<string> {
+  const plates = version.content.bench.plates.length;
+  if (input.startDialsDeg.length !== plates) {
+    throw refused([
+      {
+        path: 'startDialsDeg',
+        message: `The bench has ${plates} dials. Give a reading, or nothing, for each.`,
+      },
+    ]);
+  }
+  const [counted] = z
+    .array(numberRow)
+    .parse(
+      await transaction('labs').where({ id: labId }).increment('runs_started', 1).returning('runs_started'),
+    );
+  if (counted === undefined) throw new Error('the lab of a run is not there');
+  const id = newId(at);
+  await transaction('runs').insert({
+    id,
+    lab_id: labId,
+    number: counted.runs_started,
+    version_id: version.summary.id,
+    state: 'running',
+    setting_count: version.content.targets.length,
+    start_dials_deg: input.startDialsDeg,
+    events_recorded: 1,
+    started_at: at,
+    started_by: userId,
+  });
+  await insertEvent(transaction, { labId, userId, at }, id, 1, 'started', '');
+  return id;
+}
+
+/** What a transition allows. @throws ProblemError 409 with the reason where it does not. */
+function nextState(run: RunRow, event: RunEvent): RunState {
+  const next = transition(run.summary.state, event);
+  if (!next.ok) throw conflict('run-state', next.reason);
+  return next.state;
+}
+
+/** One reading, the next of its run; the last of a setting counts. */
+export async function recordReading(
+  transaction: Transaction,
+  { labId, userId, at }: Doing,
+  run: RunRow,
+  version: Version,
+  reading: RecordReading,
+): Promise<string> {
+  nextState(run, { kind: 'record' });
+  const target = version.content.targets[reading.settingIndex];
+  if (target === undefined) {
+    throw refused([
+      {
+        path: 'settingIndex',
+        message: `The version has ${version.content.targets.length} settings. Choose one of them.`,
+      },
+    ]);
+  }
+  const plates = version.content.bench.plates.length;
+  if (reading.outcome === 'done' && reading.dialledDeg.length !== plates) {
+    throw refused([
+      { path: 'dialledDeg', message: `The bench has ${plates} dials. Give what each of them says.` },
+    ]);
+  }
+  const id = newId(at);
+  const sequence = run.readingsRecorded + 1;
+  await transaction('readings').insert({
+    id,
+    lab_id: labId,
+    run_id: run.summary.id,
+    sequence,
+    setting_index: reading.settingIndex,
+    outcome: reading.outcome,
+    dialled_deg: reading.outcome === 'done' ? reading.dialledDeg : [],
+    dialled_infidelity:
+      reading.outcome === 'done'
+        ? dialledInfidelity(version.content, reading.settingIndex, reading.dialledDeg)
+        : null,
+    note: reading.note,
+    recorded_at: at,
+    recorded_by: userId,
+  });
+  await transaction('runs')
+    .where({ lab_id: labId, id: run.summary.id })
+    .update({ readings_recorded: sequence });
+  return id;
+}
+
+const eventKinds = { pause: 'paused', resume: 'resumed', finish: 'finished' } as const;
+
+/** Pauses, resumes or finishes a run. */
+export async function changeState(
+  transaction: Transaction,
+  doing: Doing,
+  run: RunRow,
+  event: { readonly kind: 'pause' | 'resume' | 'finish'; readonly note: string },
+): Promise<void> {
+  const { settingCount, doneCount, skippedCount, id } = run.summary;
+  const state = nextState(
+    run,
+    event.kind === 'finish'
+      ? { kind: 'finish', open: settingCount - doneCount - skippedCount }
+      : { kind: event.kind },
+  );
+  const sequence = run.eventsRecorded + 1;
+  await transaction('runs')
+    .where({ lab_id: doing.labId, id })
+    .update({
+      state,
+      pause_note: event.kind === 'pause' ? event.note : '',
+      events_recorded: sequence,
+      finished_at: state === 'finished' ? doing.at : null,
+    });
+  await insertEvent(transaction, doing, id, sequence, eventKinds[event.kind], event.note);
+}
+
+async function insertEvent(
+  transaction: Transaction,
+  { labId, userId, at }: Doing,
+  runId: string,
+  sequence: number,
+  kind: 'started' | 'paused' | 'resumed' | 'finished',
+  note: string,
+): Promise<void> {
+  await transaction('run_events').insert({
+    id: newId(at),
+    lab_id: labId,
+    run_id: runId,
+    sequence,
+    kind,
+    note,
+    at,
+    by_user: userId,
+  });
+}

@@ -1,0 +1,34 @@
+import { evaluateDials, type TargetProblem } from '../optics/solve-target';
+import type { VersionContent } from '../schemas/versions';
+
+/** The problem that a version froze for one of its targets: its own plates, not what the cabinet says today. */
+export function frozenProblem(content: VersionContent, settingIndex: number): TargetProblem {
+  const target = content.targets[settingIndex];
+  if (target === undefined) throw new RangeError(`the version has no setting ${settingIndex}`);
+  return {
+    target: target.stokes,
+    input: content.bench.input.stokes,
+    polariserSigmaDeg: content.bench.input.polariserSigmaDeg,
+    objective: content.objective,
+    plates: content.bench.plates.map(({ mount, calibration }) => ({
+      retardanceDeg: calibration.retardanceDeg,
+      retardanceSigmaDeg: calibration.retardanceSigmaDeg,
+      offsetSigmaDeg: calibration.offsetSigmaDeg,
+      repeatabilityDeg: mount.repeatabilityDeg,
+      scale: {
+        offsetDeg: calibration.offsetDeg,
+        direction: mount.direction,
+        resolutionDeg: mount.resolutionDeg,
+      },
+    })),
+  };
+}
+
+/** 1 − F of what the dials really said, with the plates exactly as the version froze them. @throws RangeError for another number of dials. */
+export function dialledInfidelity(
+  content: VersionContent,
+  settingIndex: number,
+  dialledDeg: readonly number[],
+): number {
+  return evaluateDials(frozenProblem(content, settingIndex), dialledDeg).infidelity;
+}
