@@ -1,0 +1,12 @@
+import { parseTypedNumber, withTrueMinus } from '../format';
+
+/** The number that was typed, or NaN where there is none, which the schema's sentence then explains. */
+export function readTypedNumber(text: string): number {
+  const typed = parseTypedNumber(text);
+  return typed.ok ? typed.value : NaN;
+}
+
+/** A stored number as it stands in a field to begin with: its shortest digits, a true minus. */
+export function typedFromNumber(value: number): string {
+  return withTrueMinus(String(value));
+}
