@@ -1,0 +1,110 @@
+import type { LastMade } from '../../../shared/schemas/home';
+import { FidelityChip } from '../../components/FidelityChip';
+import { fidelityVerdict } from '../../components/fidelity-verdict';
+import { Scientific } from '../../components/Scientific';
+import { formatDate } from '../../lib/format';
+import { TextLink } from '../../components/TextLink';
+import { useLab } from '../labs';
+import { sharedAxis } from './shared-axis';
+
+const axisWidth = 234;
+
+/** The worst target of each protocol's last run on one axis, so that the protocols can be compared. */
+export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] }) {
+  const { lab } = useLab();
+  const axis = sharedAxis(items);
+  const [worst, best] = axis;
+  const decades = Array.from({ length: worst - best }, (_, k) => worst - k);
+  return (
+    <div>
+      <div className="border-hair flex items-end justify-between gap-4 border-b pb-2">
+        <p className="text-xs text-ink-2">
+          worst target as dialled, 1 − F;
+          <br />
+          <BracketSign /> is the tolerance
+        </p>
+        <p
+          className="text-xs text-ink-2 relative h-4 shrink-0"
+          style={{ width: axisWidth }}
+          aria-hidden="true"
+        >
+          {decades.map((power, k) => (
+            <span
+              key={power}
+              className="absolute -translate-x-1/2"
+              style={{ left: (k / (worst - best)) * axisWidth }}
+            >
+              <PowerOfTen power={power} />
+            </span>
+          ))}
+          <span className="absolute right-0">better →</span>
+        </p>
+      </div>
+      <ul>
+        {items.map((item) => {
+          // What the dials make with the plates as calibrated: one number, with no interval of its own.
+          const infidelity = {
+            value: item.dialledInfidelity,
+            low: item.dialledInfidelity,
+            high: item.dialledInfidelity,
+          };
+          const verdict = fidelityVerdict(infidelity, item.toleranceInfidelity);
+          return (
+            <li
+              key={item.protocolId}
+              className="border-hair flex flex-wrap items-start justify-between gap-x-4 border-b py-2"
+            >
+              <div className="min-w-0">
+                <p className="font-strong">
+                  <TextLink to={`/labs/${lab.id}/bench/runs/${item.runId}/record`} className="border-b-0!">
+                    {item.protocolName} {item.versionNumber}
+                  </TextLink>
+                </p>
+                <p className="text-s text-ink-2">
+                  {item.benchName}, run {item.runNumber}, {formatDate(new Date(item.recordedAt))}
+                </p>
+              </div>
+              <div>
+                <FidelityChip
+                  infidelity={infidelity}
+                  tolerance={item.toleranceInfidelity}
+                  kind="measured"
+                  axis={axis}
+                  width={axisWidth}
+                  className="-mr-0.75"
+                />
+                <p className="text-s text-right">
+                  <b>{item.label}</b> <Scientific value={item.dialledInfidelity} />
+                  {verdict !== 'within' && <span className="text-fault font-strong"> {verdict}</span>}
+                </p>
+              </div>
+            </li>
+          );
+        })}
+      </ul>
+    </div>
+  );
+}
+
+function PowerOfTen({ power }: { readonly power: number }) {
+  return (
+    <span className="font-mono">
+      10<sup>{String(power).replace('-', '\u2212')}</sup>
+    </span>
+  );
+}
+
+function BracketSign() {
+  return (
+    <svg
+      viewBox="0 0 6 14"
+      width={6}
+      height={13}
+      role="img"
+      aria-label="the bracket"
+      className="inline-block align-[-2px]"
+    >
+      <path d="M5 1H1V13H5" fill="none" className="stroke-ink" strokeWidth={1.6} />
+    </svg>
+  );
+}

@@ -1,0 +1,179 @@
+import type { ReactNode } from 'react';
+import type { Action } from '../../../shared/permissions';
+import type { WaitingItem } from '../../../shared/schemas/home';
+import { Quantity } from '../../components/NumberText';
+import { Scientific } from '../../components/Scientific';
+import { daysBetween, formatDate, formatMoment } from '../../lib/format';
+import { runHref } from '../results';
+
+/** One waiting thing in words: what, why, and the one way on. */
+export interface WaitingWords {
+  readonly title: ReactNode;
+  readonly reason: ReactNode;
+  readonly way: { readonly label: string; readonly to: string } | null;
+}
+
+export interface WaitingContext {
+  readonly labId: string;
+  readonly now: Date;
+  readonly may: (action: Action) => boolean;
+}
+
+const weekdays = ['Sunday', 'Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday', 'Saturday'] as const;
+
+function days(count: number): string {
+  return count === 1 ? '1 day' : `${count} days`;
+}
+
+/** "signal arm", "signal arm and diode table". */
+function listed(names: readonly string[]): string {
+  const last = names.at(-1) ?? '';
+  return names.length < 2 ? last : `${names.slice(0, -1).join(', ')} and ${last}`;
+}
+
+function dueTitle(plateName: string, daysLeft: number, now: Date): string {
+  if (daysLeft < 0) return `${plateName} is ${days(-daysLeft)} past its calibration`;
+  if (daysLeft === 0) return `${plateName} is due for calibration today`;
+  if (daysLeft >= 7) return `${plateName} is due for calibration in ${days(daysLeft)}`;
+  const due = new Date(now.getFullYear(), now.getMonth(), now.getDate() + daysLeft);
+  return `${plateName} is due for calibration on ${weekdays[due.getDay()] ?? ''}`;
+}
+
+function measuredWhen(measuredAt: string, now: Date): string {
+  const date = new Date(measuredAt);
+  return daysBetween(date, now) < 2 ? formatMoment(date, now) : `on ${formatDate(date)}`;
+}
+
+/** The words of one item for one person. Where the person may not act, the way on leads to where it can be read. */
+export function waitingWords(item: WaitingItem, { labId, now, may }: WaitingContext): WaitingWords {
+  const base = `/labs/${labId}`;
+  switch (item.kind) {
+    case 'run-stands': {
+      const { run } = item;
+      const gone = run.doneCount + run.skippedCount;
+      const when = formatMoment(new Date(run.startedAt), now);
+      return {
+        title: (
+          <>
+            Run {run.number} stands {run.state === 'paused' ? 'paused' : 'open'} at setting{' '}
+            {Math.min(gone + 1, run.settingCount)} of {run.settingCount} on the <b>{run.benchName}</b>
+          </>
+        ),
+        reason: (
+          <>
+            {run.protocolName} {run.versionNumber}, started by {run.startedBy} {when}
+            {run.pauseNote === '' ? '.' : `: “${run.pauseNote}”.`}
+            {gone > 0 && (
+              <>
+                <br />
+                The dials stand where setting {gone} left them.
+              </>
+            )}
+          </>
+        ),
+        way: {
+          label: may('runs.record') ? 'Open the run' : 'See the run',
+          to: runHref(labId, run, may('runs.record')),
+        },
+      };
+    }
+    case 'draft-ahead':
+      return {
+        title:
+          item.afterVersion === null ? (
+            <>
+              <b>{item.protocolName}</b> has no version yet
+            </>
+          ) : (
+            <>
+              The draft of <b>{item.protocolName}</b> has moved on since version {item.afterVersion}
+            </>
+          ),
+        reason: (
+          <>
+            {item.targetCount === 1 ? 'One target' : `${item.targetCount} targets`}, last written by{' '}
+            {item.savedBy} {formatMoment(new Date(item.savedAt), now)}.
+            <br />
+            The bench runs versions only.
+          </>
+        ),
+        way: {
+          label: may('protocols.write') ? 'Open the draft' : 'Read the draft',
+          to: `${base}/plan/${item.protocolId}`,
+        },
+      };
+    case 'dialled-not-within':
+      return {
+        title: (
+          <>
+            Run {item.run.number} of <b>{item.run.protocolName}</b>: {item.label} was not dialled within
+            tolerance
+          </>
+        ),
+        reason: (
+          <>
+            What the dials said gives 1 − F <Scientific value={item.dialledInfidelity} />, against{' '}
+            <Scientific value={item.toleranceInfidelity} />.
+          </>
+        ),
+        way: { label: 'See the run', to: `${base}/bench/runs/${item.run.id}/record` },
+      };
+    case 'calibration-due':
+      return {
+        title: dueTitle(item.plateName, item.daysLeft, now),
+        reason: (
+          <>
+            It was last measured {measuredWhen(item.measuredAt, now)}.
+            <br />
+            {item.benchNames.length === 0
+              ? 'No bench has it in its beam.'
+              : `It stands in the beam of the ${listed(item.benchNames)}.`}
+          </>
+        ),
+        way: {
+          label: may('calibrations.record') ? `Calibrate ${item.plateName}` : `Open ${item.plateName}`,
+          to: `${base}/cabinet/${item.plateId}${may('calibrations.record') ? '?do=calibrate' : ''}`,
+        },
+      };
+    case 'calibrated-elsewhere':
+      return {
+        title: (
+          <>
+            {item.plateName} stands at <Quantity text={String(item.benchNm)} unit="nm" /> and was measured at{' '}
+            <Quantity text={String(item.calibratedAtNm)} unit="nm" />
+          </>
+        ),
+        reason: (
+          <>
+            Its retardance on the {item.benchName} is another one, so every angle solved there is off by an
+            amount that nobody has measured.
+          </>
+        ),
+        way: { label: `Open ${item.plateName}`, to: `${base}/cabinet/${item.plateId}` },
+      };
+    case 'no-plates':
+      return {
+        title: 'The cabinet is empty',
+        reason: may('cabinet.write')
+          ? 'Angles are worked out for the plates you have. Begin with two, and with what was measured of them.'
+          : 'A designer or the lead adds the plates; then angles can be worked out.',
+        way: may('cabinet.write') ? { label: 'Add a plate', to: `${base}/cabinet?do=add` } : null,
+      };
+    case 'no-bench':
+      return {
+        title: 'No bench is set up',
+        reason: may('benches.write')
+          ? 'A bench says what light goes in and which two plates it meets, in order.'
+          : 'A designer or the lead sets it up; then there is something to run at.',
+        way: may('benches.write') ? { label: 'Add a bench', to: `${base}/bench/new` } : null,
+      };
+    case 'no-protocol':
+      return {
+        title: 'No protocol is written',
+        reason: may('protocols.write')
+          ? 'Write the states that an experiment needs; their dials stand beside them as you type.'
+          : 'A designer or the lead writes the first one.',
+        way: may('protocols.write') ? { label: 'Write a protocol', to: `${base}/plan/new` } : null,
+      };
+  }
+}
