@@ -1,0 +1,48 @@
+import type { Calibration } from '../../../shared/schemas/cabinet';
+import { DataCell, DataRow, DataTable, HeadCell, RowHead } from '../../components/DataTable';
+import { formatMoment, formatUncertain } from '../../lib/format';
+
+/** Calibrations of one plate, newest first. A wrong one is corrected by a later one, so nothing here can be changed. */
+export function CalibrationTable(props: {
+  readonly id: string;
+  readonly calibrations: readonly Calibration[];
+  readonly now: Date;
+}) {
+  const { id, calibrations, now } = props;
+  return (
+    <div id={id}>
+      <DataTable caption="Calibrations, newest first; the figures in brackets are σ">
+        <thead>
+          <tr>
+            <HeadCell>measured</HeadCell>
+            <HeadCell numeric>retardance(σ), degrees</HeadCell>
+            <HeadCell numeric>zero(σ), degrees</HeadCell>
+            <HeadCell numeric>at, nm</HeadCell>
+          </tr>
+        </thead>
+        <tbody>
+          {calibrations.map((calibration) => (
+            <DataRow key={calibration.id}>
+              <RowHead className="py-2">
+                {formatMoment(new Date(calibration.measuredAt), now)}
+                <span className="text-s text-ink-2 font-words block">
+                  {calibration.method}; {calibration.recordedBy}
+                  {calibration.note !== '' && `. ${calibration.note}`}
+                </span>
+              </RowHead>
+              <DataCell numeric className="align-top! py-2">
+                {formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}
+              </DataCell>
+              <DataCell numeric className="align-top! py-2">
+                {formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg)}
+              </DataCell>
+              <DataCell numeric className="align-top! py-2">
+                {calibration.wavelengthNm}
+              </DataCell>
+            </DataRow>
+          ))}
+        </tbody>
+      </DataTable>
+    </div>
+  );
+}

@@ -1,0 +1,80 @@
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useState } from 'react';
+import { useForm, useWatch } from 'react-hook-form';
+import { type Plate, type UpdatePlate, updatePlateSchema } from '../../../shared/schemas/cabinet';
+import { Button } from '../../components/Button';
+import { conflictingState, EditConflict, FormProblem, schemaResolver } from '../../lib/forms';
+import { plateConflict, plateDifferences } from './plate-conflict';
+import { plateFault } from './plate-fault';
+import { type PlateValues, readPlate, valuesOfPlate } from './plate-form-values';
+import { PlateFields } from './PlateFields';
+import { updatePlate } from './queries';
+
+/** A plate's own facts and its mount's. What was measured is not among them: that is another calibration. */
+export function EditPlateForm(props: {
+  readonly labId: string;
+  readonly plate: Plate;
+  readonly onDone: () => void;
+}) {
+  const { labId, plate, onDone } = props;
+  const queryClient = useQueryClient();
+  // What this form was filled from. A refetch behind it must not make an old form look new.
+  const [baseRevision, setBaseRevision] = useState(plate.revision);
+  const { register, control, formState, handleSubmit, setValue, getValues, reset } = useForm<
+    PlateValues,
+    unknown,
+    UpdatePlate
+  >({
+    defaultValues: valuesOfPlate(plate),
+    resolver: schemaResolver(updatePlateSchema, readPlate),
+    mode: 'onTouched',
+  });
+  const direction = useWatch({ control, name: 'mount.direction' });
+  const saving = useMutation({
+    mutationFn: ({ body, revision }: { body: UpdatePlate; revision: number }) =>
+      updatePlate(labId, plate.id, body, revision),
+    onSuccess: async () => {
+      await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
+      onDone();
+    },
+  });
+  const submit = (revision: number) => handleSubmit((body) => saving.mutate({ body, revision }));
+  const theirs = plateConflict(conflictingState(saving.error));
+  const turned = direction !== valuesOfPlate(plate).mount.direction;
+  return (
+    <form noValidate onSubmit={(event) => void submit(baseRevision)(event)} className="space-y-4">
+      <PlateFields
+        field={(name) => ({ ...register(name), fault: plateFault(formState.errors, name) })}
+        direction={direction}
+        onDirection={(chosen) => setValue('mount.direction', chosen, { shouldDirty: true })}
+      />
+      {turned && (
+        <p role="status">
+          Every dial of {plate.name} changes with this: drafts are solved anew, and versions saved before keep
+          what they say.
+        </p>
+      )}
+      {theirs === null ? (
+        <FormProblem error={saving.error} />
+      ) : (
+        <EditConflict
+          name={theirs.name}
+          differences={plateDifferences(theirs, getValues())}
+          onKeepYours={() => void submit(theirs.revision)()}
+          onTakeTheirs={() => {
+            reset(valuesOfPlate(theirs));
+            setBaseRevision(theirs.revision);
+            saving.reset();
+            void queryClient.invalidateQueries({ queryKey: ['labs', labId] });
+          }}
+        />
+      )}
+      <div className="flex flex-wrap gap-3">
+        <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
+          Save {plate.name}
+        </Button>
+        <Button onClick={onDone}>Leave it as it was</Button>
+      </div>
+    </form>
+  );
+}

@@ -1,0 +1,92 @@
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useForm, useWatch } from 'react-hook-form';
+import type { z } from 'zod';
+import { type CreatePlate, createPlateSchema, type Plate } from '../../../shared/schemas/cabinet';
+import { Button } from '../../components/Button';
+import { FormProblem, schemaResolver, useIdempotencyKey } from '../../lib/forms';
+import { CalibrationFields } from './CalibrationFields';
+import {
+  calibrationFormSchema,
+  type CalibrationValues,
+  emptyCalibration,
+  emptyPlate,
+  type PlateValues,
+  readCalibration,
+  readPlate,
+} from './plate-form-values';
+import { PlateFields } from './PlateFields';
+import { plateFault } from './plate-fault';
+import { createPlate } from './queries';
+
+interface NewPlateValues extends PlateValues {
+  readonly calibration: CalibrationValues;
+}
+
+const newPlateSchema: z.ZodType<CreatePlate> = createPlateSchema.extend({
+  calibration: calibrationFormSchema,
+});
+
+/** A plate that comes into the cabinet: what it is, the mount it sits in, and its first calibration, without which no angle is known. */
+export function NewPlateForm(props: {
+  readonly labId: string;
+  readonly now: Date;
+  readonly onCreated: (plate: Plate) => void;
+  readonly onLeave: () => void;
+}) {
+  const { labId, now, onCreated, onLeave } = props;
+  const queryClient = useQueryClient();
+  const keyFor = useIdempotencyKey();
+  const { register, control, formState, handleSubmit, setValue } = useForm<
+    NewPlateValues,
+    unknown,
+    CreatePlate
+  >({
+    defaultValues: { ...emptyPlate, calibration: emptyCalibration(null, now) },
+    resolver: schemaResolver(newPlateSchema, (values) => ({
+      ...readPlate(values),
+      calibration: readCalibration(values.calibration),
+    })),
+    mode: 'onTouched',
+  });
+  const direction = useWatch({ control, name: 'mount.direction' });
+  const creating = useMutation({
+    mutationFn: (body: CreatePlate) => createPlate(labId, body, keyFor(body)),
+    onSuccess: async (plate) => {
+      await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
+      onCreated(plate);
+    },
+  });
+  const { errors } = formState;
+  return (
+    <form noValidate onSubmit={(event) => void handleSubmit((body) => creating.mutate(body))(event)}>
+      <div className="grid gap-x-14 gap-y-8 lg:grid-cols-2">
+        <fieldset>
+          <legend className="text-section mb-3">The plate and its mount</legend>
+          <PlateFields
+            field={(name) => ({ ...register(name), fault: plateFault(errors, name) })}
+            direction={direction}
+            onDirection={(chosen) => setValue('mount.direction', chosen, { shouldDirty: true })}
+          />
+        </fieldset>
+        <fieldset>
+          <legend className="text-section mb-3">Its first calibration</legend>
+          <CalibrationFields
+            field={(name) => ({
+              ...register(`calibration.${name}`),
+              fault: errors.calibration?.[name]?.message,
+            })}
+          />
+        </fieldset>
+      </div>
+      <div className="mt-6 space-y-3">
+        <FormProblem error={creating.error} />
+        <div className="flex flex-wrap gap-3">
+          <Button kind="filled" type="submit" waitsFor={creating.isPending ? 'the server' : undefined}>
+            Add the plate
+          </Button>
+          <Button onClick={onLeave}>Leave it as it was</Button>
+        </div>
+      </div>
+    </form>
+  );
+}

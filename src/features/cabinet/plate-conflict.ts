@@ -1,0 +1,29 @@
+import { type Plate, plateSchema } from '../../../shared/schemas/cabinet';
+import type { EditDifference } from '../../lib/forms';
+import { type PlateValues, valuesOfPlate } from './plate-form-values';
+
+/** The plate as the server holds it, out of a refusal; null when the refusal was another. */
+export function plateConflict(current: unknown): Plate | null {
+  const parsed = plateSchema.safeParse(current);
+  return parsed.success ? parsed.data : null;
+}
+
+const shown = (values: PlateValues): readonly (readonly [field: string, value: string])[] => [
+  ['name', values.name],
+  ['kind', values.kind],
+  ['made for, nm', values.designWavelengthNm],
+  ['mount', values.mount.name],
+  ['numbers rise', values.mount.direction === '1' ? 'counter-clockwise' : 'clockwise'],
+  ['finest step, degrees', values.mount.resolutionDeg],
+  ['repeats within, degrees', values.mount.repeatabilityDeg],
+  ['note', values.note],
+];
+
+/** Where what was typed differs from what the server holds, in words. */
+export function plateDifferences(theirs: Plate, yours: PlateValues): readonly EditDifference[] {
+  const stored = shown(valuesOfPlate(theirs));
+  return shown(yours).flatMap(([field, value], index) => {
+    const other = stored[index]?.[1] ?? '';
+    return other === value ? [] : [{ field, theirs: other, yours: value }];
+  });
+}

@@ -1,0 +1,76 @@
+import { describe, expect, it } from 'vitest';
+import { plateDifferences } from '../../../src/features/cabinet/plate-conflict';
+import {
+  calibrationFormSchema,
+  emptyCalibration,
+  readCalibration,
+  readPlate,
+  valuesOfPlate,
+} from '../../../src/features/cabinet/plate-form-values';
+import { updatePlateSchema } from '../../../shared/schemas/cabinet';
+import { plateFixture } from './plate-fixture';
+
+const typed = {
+  ...emptyCalibration(plateFixture().calibration, new Date(2026, 3, 30, 10, 52)),
+  retardanceDeg: '86.9',
+  retardanceSigmaDeg: '0.4',
+  offsetDeg: '301.73',
+  offsetSigmaDeg: '9e-2',
+};
+
+function sentences(change: Partial<typeof typed>): readonly string[] {
+  const result = calibrationFormSchema.safeParse(readCalibration({ ...typed, ...change }));
+  return result.success ? [] : result.error.issues.map(({ message }) => message);
+}
+
+describe('a calibration as it is typed', () => {
+  it('is read with a point, an exponent or a true minus, and never with a comma', () => {
+    expect(sentences({})).toEqual([]);
+    expect(readCalibration(typed)).toMatchObject({
+      offsetSigmaDeg: 0.09,
+      retardanceDeg: 86.9,
+      wavelengthNm: 810,
+    });
+    expect(readCalibration({ ...typed, offsetDeg: '\u22121.5' }).offsetDeg).toBe(-1.5);
+    expect(sentences({ retardanceDeg: '86,9' })).toEqual(['A retardance is a number, like 0.1.']);
+  });
+
+  it('starts from the last wavelength and method, and from no value', () => {
+    expect(emptyCalibration(plateFixture().calibration, new Date(2026, 3, 30, 10, 52))).toMatchObject({
+      wavelengthNm: '810',
+      method: 'between crossed polarisers, 31 points',
+      retardanceDeg: '',
+      offsetDeg: '',
+      measuredAt: '2026-04-30T10:52',
+    });
+  });
+
+  it('is refused with what is right, for a number that is out of range or missing', () => {
+    expect(sentences({ retardanceDeg: '400' })).toEqual(['A retardance is from 0.1 to 359.9°.']);
+    expect(sentences({ offsetDeg: '' })).toEqual(['A zero is a number, like 0.']);
+    expect(sentences({ measuredAt: '' })).toEqual(['Say when it was measured: the day and the time.']);
+    expect(sentences({ method: '  ' })).toEqual(['Write the way it was measured.']);
+  });
+});
+
+describe('a plate that is edited', () => {
+  it('comes back from its form as it went in', () => {
+    const plate = plateFixture();
+    const read = updatePlateSchema.parse(readPlate(valuesOfPlate(plate)));
+    expect(read).toEqual({
+      name: plate.name,
+      kind: plate.kind,
+      designWavelengthNm: plate.designWavelengthNm,
+      note: plate.note,
+      mount: plate.mount,
+    });
+  });
+
+  it('shows both sides of what two people changed, and nothing else', () => {
+    const theirs = plateFixture({ name: 'Q-B2', revision: 4 });
+    expect(plateDifferences(theirs, { ...valuesOfPlate(plateFixture()), note: 'scratched' })).toEqual([
+      { field: 'name', theirs: 'Q-B2', yours: 'Q-B' },
+      { field: 'note', theirs: '', yours: 'scratched' },
+    ]);
+  });
+});
