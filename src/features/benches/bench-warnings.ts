@@ -1,0 +1,39 @@
+import type { Plate } from '../../../shared/schemas/cabinet';
+
+const gap = '\u202f';
+
+/** Calibrated within this is calibrated at the bench's wavelength: a lab writes 810 for 809.6. */
+export const sameWavelengthNm = 0.5;
+
+export function calibratedElsewhere(plate: Plate, benchNm: number): boolean {
+  return Math.abs(plate.calibration.wavelengthNm - benchNm) > sameWavelengthNm;
+}
+
+/**
+ * What a person should know before these plates stand in this bench. None of it stops the bench: a plate may be moved,
+ * and a calibration recorded, afterwards.
+ */
+export function benchWarnings(
+  plates: readonly Plate[],
+  wavelengthNm: number,
+  benchId: string | null,
+): readonly string[] {
+  return plates.flatMap((plate) => {
+    const warnings: string[] = [];
+    if (Number.isFinite(wavelengthNm) && calibratedElsewhere(plate, wavelengthNm)) {
+      warnings.push(
+        `${plate.name} is calibrated at ${plate.calibration.wavelengthNm}${gap}nm, not at ${wavelengthNm}${gap}nm. Its retardance there is another one: record a calibration at ${wavelengthNm}${gap}nm.`,
+      );
+    }
+    const others = plate.benches.filter(({ id }) => id !== benchId).map(({ name }) => name);
+    if (others.length > 0) {
+      warnings.push(
+        `${plate.name} already stands at ${others.join(' and ')}. Only one of the benches can have it in the beam at a time, and a new seat needs a new zero.`,
+      );
+    }
+    if (plate.retiredAt !== null) {
+      warnings.push(`${plate.name} is retired. Return it in the cabinet, or choose another.`);
+    }
+    return warnings;
+  });
+}

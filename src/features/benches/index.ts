@@ -1,0 +1,3 @@
+export { LaserCaution, type LaserCautionProps } from './LaserCaution';
+export { needsCaution } from './laser-caution-words';
+export { benchesQuery, benchQuery } from './queries';

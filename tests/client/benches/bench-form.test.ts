@@ -1,0 +1,62 @@
+import { describe, expect, it } from 'vitest';
+import { createBenchSchema } from '../../../shared/schemas/benches';
+import { emptyBench, readBench } from '../../../src/features/benches/bench-form-values';
+import { benchWarnings } from '../../../src/features/benches/bench-warnings';
+import { inputFault } from '../../../src/features/benches/InputReading';
+import { plateFixture } from '../cabinet/plate-fixture';
+
+const typed = {
+  ...emptyBench,
+  name: 'signal arm',
+  wavelengthNm: '810',
+  polariserSigmaDeg: '0.05',
+  hazardWavelengthsNm: '405 nm, 810',
+  firstPlateId: '0190a000-0000-7000-8000-000000000001',
+  secondPlateId: '0190a000-0000-7000-8000-000000000004',
+};
+
+function faults(change: Partial<typeof typed>) {
+  const result = createBenchSchema.safeParse(readBench({ ...typed, ...change }));
+  return result.success ? [] : result.error.issues.map(({ path, message }) => [path.join('.'), message]);
+}
+
+describe('a bench as it is typed', () => {
+  it('reads several wavelengths, and a class that is not stated as none', () => {
+    expect(faults({})).toEqual([]);
+    expect(readBench(typed)).toMatchObject({ hazardWavelengthsNm: [405, 810], laserClass: null });
+  });
+
+  it('asks for two plates, and for two different ones', () => {
+    expect(faults({ secondPlateId: '' })).toEqual([
+      ['plateIds', 'A bench has two plates: the one that light meets first, then the second.'],
+    ]);
+    expect(faults({ secondPlateId: typed.firstPlateId })).toEqual([
+      ['plateIds', 'One plate cannot stand in two places. Choose another.'],
+    ]);
+  });
+
+  it('asks what eyewear is for, and points at a wavelength that is none', () => {
+    expect(faults({ hazardWavelengthsNm: '' })).toEqual([
+      ['hazardWavelengthsNm', 'Name at least one wavelength that eyewear is for.'],
+    ]);
+    expect(faults({ hazardWavelengthsNm: '405, red' })[0]?.[0]).toBe('hazardWavelengthsNm.1');
+  });
+
+  it('says at which column an input state stops making sense', () => {
+    const convention = { phase: 'kz-wt', handedness: 'receiver', s3Sign: 'L' } as const;
+    expect(inputFault('H', convention)).toBeNull();
+    expect(inputFault('H + ', convention)).toMatch(/^Column \d+: /);
+  });
+});
+
+describe('what a person should know before plates stand in a bench', () => {
+  it('warns of another wavelength and of another bench, by name', () => {
+    const [elsewhere, taken] = benchWarnings([plateFixture()], 780, null);
+    expect(elsewhere).toMatch(/Q-B is calibrated at 810\u202fnm, not at 780\u202fnm/);
+    expect(taken).toMatch(/Q-B already stands at signal arm/);
+  });
+
+  it('is silent about the bench itself at its own wavelength', () => {
+    expect(benchWarnings([plateFixture()], 810, plateFixture().benches[0]?.id ?? '')).toEqual([]);
+  });
+});
