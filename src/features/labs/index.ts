@@ -1,2 +1,3 @@
-export { LabContext, useLab } from './lab-context';
+export { LabContext, type LabContextValue, useLab } from './lab-context';
 export { labQuery } from './queries';
+export { roleWithArticle } from './role-words';
