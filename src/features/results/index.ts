@@ -1,0 +1,2 @@
+export { runsQuery } from './queries';
+export { runHref, runProgressWords } from './run-words';
