@@ -1,0 +1,172 @@
+import { useState } from 'react';
+import type { SettingSolution, SolvedTarget } from '../../../shared/optics/solve-target';
+import type { SolvingPlate } from '../../../shared/protocol/solve-row';
+import { RingDial } from '../../components/RingDial';
+import { Scientific } from '../../components/Scientific';
+import { TextButton } from '../../components/TextLink';
+import { formatDial, formatTheta } from '../../lib/format';
+
+/** A plate as this page names it. */
+export interface NamedPlate {
+  readonly name: string;
+  readonly kind: 'half' | 'quarter' | 'other';
+  readonly plate: SolvingPlate;
+}
+
+const countWords = ['No', 'One', 'Two', 'Three'] as const;
+
+function PlateSetting(props: {
+  readonly named: NamedPlate;
+  readonly dialDeg: number;
+  readonly fastAxisDeg: number;
+  readonly ideal: boolean;
+}) {
+  const { named, dialDeg, fastAxisDeg, ideal } = props;
+  const { mount, calibration } = named.plate;
+  const dial = formatDial(dialDeg, mount.resolutionDeg);
+  const theta = formatTheta(fastAxisDeg);
+  return (
+    <div className="flex min-w-0 flex-col items-center">
+      <RingDial
+        radius={70}
+        kind={named.kind}
+        scale={{ offsetDeg: calibration.offsetDeg, direction: mount.direction }}
+        readingDeg={dialDeg}
+        className="max-w-full"
+      />
+      <p className="flex flex-wrap items-baseline justify-center gap-x-3">
+        <span className="font-strong">{named.name}</span>
+        <span className="text-dial-large font-mono">{ideal ? `${theta}°` : dial}</span>
+      </p>
+      <p className="text-ink-2">
+        {ideal ? (
+          'its fast axis on the table'
+        ) : (
+          <>
+            θ <span className="font-mono">{theta}°</span>
+          </>
+        )}
+      </p>
+    </div>
+  );
+}
+
+/** The settings of two plates for a state: the best one drawn, the others a press away. */
+export function Dials(props: {
+  readonly solved: SolvedTarget;
+  readonly plates: readonly NamedPlate[];
+  readonly ideal: boolean;
+  readonly idealInfidelityHere: number | null;
+}) {
+  const { solved, plates, ideal, idealInfidelityHere } = props;
+  const [chosen, setChosen] = useState(0);
+  const [listed, setListed] = useState(false);
+  const shown = solved.solutions[chosen] ?? solved.solutions[0];
+  if (shown === undefined) return <p>No setting of these plates was found for this state.</p>;
+  const others = solved.solutions.length - 1;
+  return (
+    <>
+      <div className="mt-4 grid grid-cols-2 gap-4">
+        {plates.map((named, k) => (
+          <PlateSetting
+            key={named.name}
+            named={named}
+            dialDeg={shown.dialsDeg[k] ?? 0}
+            fastAxisDeg={shown.fastAxesDeg[k] ?? 0}
+            ideal={ideal}
+          />
+        ))}
+      </div>
+      <p className="text-ink-2 mt-4">
+        {ideal ? (
+          'Exact plates make it exactly.'
+        ) : (
+          <>
+            1 − F expected <Scientific value={shown.expectedInfidelity} />.
+            {idealInfidelityHere !== null && (
+              <>
+                {' '}
+                The angles for ideal plates would give <Scientific value={idealInfidelityHere} /> here.
+              </>
+            )}
+          </>
+        )}{' '}
+        {solved.kind === 'family' && 'Here the plates have a whole family of settings; these stand for it. '}
+        {solved.kind === 'nearest' &&
+          `Out of reach: the closest state that these plates make is ${solved.shortfallDeg.toFixed(2)}° away on the sphere. `}
+        {others > 0 && (
+          <TextButton aria-expanded={listed} onClick={() => setListed(!listed)}>
+            {countWords[others] ?? String(others)} other {others === 1 ? 'solution' : 'solutions'}
+          </TextButton>
+        )}
+      </p>
+      {listed && (
+        <OtherSolutions
+          solutions={solved.solutions}
+          plates={plates}
+          ideal={ideal}
+          chosen={chosen}
+          onChoose={setChosen}
+        />
+      )}
+    </>
+  );
+}
+
+function OtherSolutions(props: {
+  readonly solutions: readonly SettingSolution[];
+  readonly plates: readonly NamedPlate[];
+  readonly ideal: boolean;
+  readonly chosen: number;
+  readonly onChoose: (index: number) => void;
+}) {
+  const { solutions, plates, ideal, chosen, onChoose } = props;
+  return (
+    <table className="mt-3 w-full text-right">
+      <thead className="text-s text-ink-2">
+        <tr className="border-hair border-b">
+          {plates.map(({ name }) => (
+            <th key={name} scope="col" className="py-1 pr-4 font-normal">
+              {name}, {ideal ? 'θ' : 'dial'}
+            </th>
+          ))}
+          {!ideal && (
+            <th scope="col" className="py-1 pr-4 font-normal">
+              1 − F expected
+            </th>
+          )}
+          <th scope="col" className="py-1 font-normal">
+            <span className="sr-only">show</span>
+          </th>
+        </tr>
+      </thead>
+      <tbody>
+        {solutions.map((solution, index) => (
+          <tr key={solution.fastAxesDeg.join(' ')} className="border-hair border-b">
+            {plates.map(({ name, plate }, k) => (
+              <td key={name} className="text-dial py-1.5 pr-4 font-mono">
+                {ideal
+                  ? `${formatTheta(solution.fastAxesDeg[k] ?? 0)}°`
+                  : formatDial(solution.dialsDeg[k] ?? 0, plate.mount.resolutionDeg)}
+              </td>
+            ))}
+            {!ideal && (
+              <td className="py-1.5 pr-4">
+                <Scientific value={solution.expectedInfidelity} />
+              </td>
+            )}
+            <td className="py-1.5">
+              {index === chosen ? (
+                'drawn'
+              ) : (
+                <TextButton onClick={() => onChoose(index)}>
+                  Draw it<span className="sr-only">, solution {index + 1}</span>
+                </TextButton>
+              )}
+            </td>
+          </tr>
+        ))}
+      </tbody>
+    </table>
+  );
+}

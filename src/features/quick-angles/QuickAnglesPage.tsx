@@ -1,0 +1,151 @@
+import { skipToken, useQuery } from '@tanstack/react-query';
+import { useDeferredValue, useMemo, useState } from 'react';
+import { useSearchParams } from 'react-router-dom';
+import { type Convention, CONVENTION_SETS, DEFAULT_CONVENTION, parseState } from '../../../shared/optics';
+import type { Bench } from '../../../shared/schemas/benches';
+import { SelectField } from '../../components/SelectField';
+import { TextField } from '../../components/TextField';
+import { benchesQuery } from '../benches';
+import { labQuery } from '../labs';
+import { sessionQuery } from '../session';
+import { Dials, type NamedPlate } from './Dials';
+import { idealBench } from './ideal-plates';
+import { quickSettings } from './quick-settings';
+import { flagWords } from './same-light';
+import { SameLight } from './SameLight';
+import { StateRead } from './StateRead';
+
+const idealPlates: readonly NamedPlate[] = idealBench.plates.map((plate, k) => ({
+  name: k === 0 ? 'half-wave' : 'quarter-wave',
+  kind: k === 0 ? 'half' : 'quarter',
+  plate,
+}));
+
+function namedPlates(bench: Bench): readonly NamedPlate[] {
+  return bench.plates.map((plate) => ({ name: plate.name, kind: plate.kind, plate }));
+}
+
+/** What the first of a person's labs brings to this page: its convention and its benches. Nothing for a stranger. */
+function useOwnLab(): { readonly convention: Convention | null; readonly benches: readonly Bench[] } {
+  const { data: session } = useQuery(sessionQuery);
+  const labId = session?.labs[0]?.id;
+  const lab = useQuery({
+    ...labQuery(labId ?? ''),
+    ...(labId === undefined ? { queryFn: skipToken } : {}),
+  });
+  const benches = useQuery({
+    ...benchesQuery(labId ?? ''),
+    ...(labId === undefined ? { queryFn: skipToken } : {}),
+  });
+  return {
+    convention: lab.data?.convention ?? null,
+    benches:
+      benches.data?.items.filter(({ retiredAt, plates }) => retiredAt === null && plates.length === 2) ?? [],
+  };
+}
+
+/** Angles for one state, with ideal plates or one's own, and how others write the same light. Nothing here is kept. */
+export function Component() {
+  const [search] = useSearchParams();
+  const [expression, setExpression] = useState(search.get('state') ?? 'ellipse(30deg, 20deg)');
+  const [setId, setSetId] = useState('own');
+  const [benchId, setBenchId] = useState<string | null>(null);
+  const own = useOwnLab();
+  const convention =
+    CONVENTION_SETS.find(({ id }) => id === setId)?.convention ?? own.convention ?? DEFAULT_CONVENTION;
+  const bench =
+    benchId === 'ideal' ? undefined : (own.benches.find(({ id }) => id === benchId) ?? own.benches[0]);
+  const written = useDeferredValue(expression);
+  const reading = useMemo(() => parseState(written, convention), [written, convention]);
+  const settings = useMemo(
+    () => quickSettings(written, bench ?? idealBench, convention),
+    [written, bench, convention],
+  );
+  const plates = bench === undefined ? idealPlates : namedPlates(bench);
+  const empty = expression.trim() === '';
+  return (
+    <div className="pt-4 pb-10">
+      <title>Quick angles · Quarterturn</title>
+      <header className="mb-4 flex items-baseline justify-between gap-4">
+        <h1 className="text-title">Quick angles</h1>
+        <p className="text-ink-2">nothing here is kept</p>
+      </header>
+      <div className="grid gap-x-14 gap-y-8 lg:grid-cols-2">
+        <div className="space-y-5">
+          <TextField
+            label="state"
+            mono
+            autoCapitalize="off"
+            autoCorrect="off"
+            spellCheck={false}
+            autoComplete="off"
+            value={expression}
+            onChange={(event) => setExpression(event.target.value)}
+            help="A name (H V D A L R), a sum like (H + i V)/sqrt(2), a column [1, i], or bloch, stokes, ellipse, linear."
+            fault={
+              empty || reading.ok ? undefined : `Column ${reading.error.column}: ${reading.error.message}`
+            }
+          />
+          {reading.ok && <StateRead reading={reading} convention={convention} />}
+          <SelectField
+            label="written in the convention of"
+            value={setId}
+            onChange={(event) => setSetId(event.target.value)}
+            options={[
+              {
+                value: 'own',
+                label: `${own.convention === null ? 'this page' : 'your lab'}: ${flagWords(own.convention ?? DEFAULT_CONVENTION)}`,
+              },
+              ...CONVENTION_SETS.map(({ id, name, convention: flags }) => ({
+                value: id,
+                label: `${name}: ${flagWords(flags)}`,
+              })),
+            ]}
+          />
+          <section aria-labelledby="dials" className="border-ink border-t-[1.5px] pt-4">
+            <div className="flex flex-wrap items-end justify-between gap-4">
+              <h2 id="dials" className="text-section">
+                {bench === undefined ? 'Angles' : 'Dials'}
+              </h2>
+              {own.benches.length > 0 && (
+                <SelectField
+                  label="with the plates of"
+                  className="w-72 max-w-full"
+                  value={bench?.id ?? 'ideal'}
+                  onChange={(event) => setBenchId(event.target.value)}
+                  options={[
+                    ...own.benches.map(({ id, name, plates: two }) => ({
+                      value: id,
+                      label: `${name}: ${two.map((plate) => plate.name).join(', ')}`,
+                    })),
+                    { value: 'ideal', label: 'ideal half- and quarter-wave plates' },
+                  ]}
+                />
+              )}
+            </div>
+            {settings === null ? (
+              <p className="text-ink-2 mt-3">They stand here as soon as the state can be read.</p>
+            ) : settings.ok ? (
+              <Dials
+                key={`${bench?.id ?? 'ideal'} ${written} ${setId}`}
+                solved={settings.solved}
+                plates={plates}
+                ideal={bench === undefined}
+                idealInfidelityHere={settings.idealInfidelityHere}
+              />
+            ) : (
+              <p className="mt-3">{settings.sentence}</p>
+            )}
+            {bench === undefined && (
+              <p className="text-s text-ink-2 mt-3">
+                Level light in, a half-wave plate, then a quarter-wave plate, as exact as no plate is. Angles
+                of the fast axes, counter-clockwise from level as the receiver sees them.
+              </p>
+            )}
+          </section>
+        </div>
+        {reading.ok && <SameLight jones={reading.jones} own={convention} />}
+      </div>
+    </div>
+  );
+}
