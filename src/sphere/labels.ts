@@ -34,8 +34,8 @@ export const LABEL_TYPE: Readonly<
 const CLEARANCE_PX: Readonly<Record<LabelRole, number>> = {
   basis: 8,
   target: 14,
-  turn: 7,
-  'last-turn': 7,
+  turn: 9,
+  'last-turn': 9,
   axis: 11,
   degrees: 0,
 };

@@ -1,0 +1,89 @@
+import { type ReactNode, useRef } from 'react';
+import { Button } from '../components/Button';
+import { useBoxWidth } from '../sphere/use-box-width';
+import { OutputLight } from './OutputLight';
+import { PlateOnBeam } from './PlateOnBeam';
+import { Source, StagePolariser } from './SourceAndPolariser';
+import { type StageData, turnedByHand } from './stage-data';
+import { fittingStage } from './stage-layout';
+import { StateBetween } from './StateBetween';
+import './stage.css';
+
+interface Props {
+  readonly stage: StageData;
+  /** Turns a plate by hand, to see what it does; without it the rings only show. */
+  readonly onDial?: ((plateIndex: number, dialDeg: number) => void) | undefined;
+  readonly onBackToSolution?: (() => void) | undefined;
+  /** Someone who stands on the source side sees every ring mirrored; each says so. */
+  readonly viewedFrom?: 'receiver' | 'source';
+  /** The readout: what this setting is expected to make. */
+  readonly children?: ReactNode;
+}
+
+const WIDTH_BEFORE = 1140;
+
+/** The bench in a line, as the hand meets it: source, polariser, plates in beam order with the light between them, output. */
+export function BeamLineStage({ stage, onDial, onBackToSolution, viewedFrom = 'receiver', children }: Props) {
+  const line = useRef<HTMLDivElement>(null);
+  const width = useBoxWidth(line, WIDTH_BEFORE);
+  const sizes = fittingStage(width, stage.plates.length);
+  const turned = turnedByHand(stage.plates);
+  const scrolls = sizes.leastWidth > width;
+  return (
+    <div className="stage">
+      <div
+        ref={line}
+        className={scrolls ? 'stage-line stage-line-scrolls' : 'stage-line'}
+        // What scrolls has to take the keys too.
+        {...(scrolls
+          ? { tabIndex: 0, role: 'region', 'aria-label': 'Beam line, scrolls along the beam' }
+          : {})}
+      >
+        <ol
+          className="stage-items"
+          aria-label="Beam line from the source to the output"
+          style={{ minWidth: sizes.leastWidth }}
+        >
+          <li className="stage-beam" aria-hidden="true" style={{ top: sizes.zoneHeight / 2 - 1.3 }} />
+          <Source wavelengthNm={stage.wavelengthNm} zoneHeight={sizes.zoneHeight} />
+          <StagePolariser {...stage.polariser} sizes={sizes} viewedFrom={viewedFrom} />
+          {stage.plates.map((plate, index) => {
+            const state = stage.before[index];
+            return (
+              <PlateOnBeam
+                key={plate.id}
+                plate={plate}
+                sizes={sizes}
+                viewedFrom={viewedFrom}
+                onDial={onDial === undefined ? undefined : (dialDeg) => onDial(index, dialDeg)}
+                before={
+                  state === undefined ? null : (
+                    <StateBetween
+                      state={state}
+                      convention={stage.convention}
+                      sizes={sizes}
+                      viewedFrom={viewedFrom}
+                    />
+                  )
+                }
+              />
+            );
+          })}
+          <OutputLight
+            output={stage.output}
+            convention={stage.convention}
+            sizes={sizes}
+            viewedFrom={viewedFrom}
+          />
+        </ol>
+        {turned.length > 0 && onBackToSolution !== undefined && (
+          <p className="stage-by-hand">
+            <span>{turned.map(({ name }) => name).join(' and ')} turned by hand</span>
+            <Button onClick={onBackToSolution}>Back to the solution</Button>
+          </p>
+        )}
+      </div>
+      {children !== undefined && <div className="stage-readout">{children}</div>}
+    </div>
+  );
+}

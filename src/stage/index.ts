@@ -1,0 +1,2 @@
+export { BeamLineStage } from './BeamLineStage';
+export { type StageData, type StagePlate, turnedByHand } from './stage-data';
