@@ -1,2 +1,9 @@
-export { findPlate, insertPlate, listPlates, asPlate, type StoredPlate } from './plate-store';
+export {
+  findPlate,
+  insertCalibration,
+  insertPlate,
+  listPlates,
+  asPlate,
+  type StoredPlate,
+} from './plate-store';
 export { plateRoutes } from './routes';

@@ -1,3 +1,3 @@
-export { listRuns, type RunRow } from './run-store';
-export { startRun, recordReading, changeState } from './run-work';
+export { findRun, listRuns, type RunRow } from './run-store';
+export { changeState, recordReading, startRun } from './run-work';
 export { runRoutes } from './routes';

@@ -1,0 +1,192 @@
+import { freeze } from '../../shared/protocol/freeze';
+import type {
+  CalibrationInput,
+  CreateBench,
+  CreatePlate,
+  DraftContent,
+  Lab,
+  RecordReading,
+  Version,
+} from '../../shared/schemas';
+import { recordEvent } from '../../server/audit/record-event';
+import type { Transaction } from '../../server/db/database';
+import { newId } from '../../server/db/new-id';
+import { findBench, insertBench } from '../../server/features/benches';
+import { findPlate, insertCalibration, insertPlate } from '../../server/features/cabinet';
+import {
+  findProtocol,
+  findVersion,
+  insertProtocol,
+  insertVersion,
+  updateDraft,
+} from '../../server/features/protocols';
+import { changeState, findRun, recordReading, startRun } from '../../server/features/runs';
+import type { Person } from './people';
+
+interface Step {
+  readonly at: Date;
+  readonly tell: () => Promise<void>;
+}
+
+/**
+ * What happened in a lab, told in any order and then done in the order of its times, by the server's own stores: a
+ * version freezes the calibrations of its day, and the record's chain is in the order of time.
+ */
+export class LabStory {
+  readonly #steps: Step[] = [];
+  constructor(
+    readonly transaction: Transaction,
+    readonly lab: Lab,
+  ) {}
+
+  async tell(): Promise<void> {
+    for (const { tell } of this.#steps.toSorted((a, b) => a.at.getTime() - b.at.getTime())) await tell();
+  }
+
+  plate(at: Date, by: Person, plate: CreatePlate): string {
+    const id = newId(at);
+    this.#happened(at, by, async () => {
+      await insertPlate(this.transaction, this.#place(at, by), plate, id);
+      return { kind: 'plate.added', subjectId: id, details: { plate } };
+    });
+    return id;
+  }
+
+  calibration(at: Date, by: Person, plateId: string, calibration: CalibrationInput): void {
+    this.#happened(at, by, async () => {
+      const plate = await findPlate(this.transaction, { labId: this.lab.id, plateId });
+      if (plate === null) throw new Error('a plate is calibrated after it is added');
+      const id = await insertCalibration(this.transaction, this.#place(at, by), plate.seatId, calibration);
+      return { kind: 'plate.calibrated', subjectId: plateId, details: { calibrationId: id, calibration } };
+    });
+  }
+
+  bench(at: Date, by: Person, bench: CreateBench): string {
+    const id = newId(at);
+    this.#happened(at, by, async () => {
+      await insertBench(this.transaction, { labId: this.lab.id, now: at }, bench, id);
+      return { kind: 'bench.added', subjectId: id, details: { bench } };
+    });
+    return id;
+  }
+
+  protocol(at: Date, by: Person, content: DraftContent): string {
+    const id = newId(at);
+    this.#happened(at, by, async () => {
+      await insertProtocol(this.transaction, { labId: this.lab.id, user: by, now: at }, id, content);
+      return { kind: 'protocol.begun', subjectId: id, details: { name: content.name } };
+    });
+    return id;
+  }
+
+  draft(at: Date, by: Person, protocolId: string, content: DraftContent): void {
+    this.#happened(at, by, async () => {
+      const stored = await this.#protocol(protocolId);
+      const saving = { labId: this.lab.id, user: by, now: at };
+      const draft = await updateDraft(this.transaction, saving, stored, content);
+      return {
+        kind: 'draft.saved',
+        subjectId: protocolId,
+        details: { revision: draft.revision, targetCount: content.targets.length },
+      };
+    });
+  }
+
+  version(at: Date, by: Person, protocolId: string, message: string): void {
+    this.#happened(at, by, async () => {
+      const { draft, latestVersion } = await this.#protocol(protocolId);
+      const bench = await findBench(this.transaction, { labId: this.lab.id, benchId: draft.content.benchId });
+      if (bench === null) throw new Error('a version is saved after its bench is there');
+      const frozen = freeze({
+        lab: this.lab,
+        protocolId,
+        draft: draft.content,
+        bench,
+        number: (latestVersion?.number ?? 0) + 1,
+        parentHash: latestVersion?.contentHash ?? null,
+        message,
+        savedAt: at,
+        savedBy: by,
+      });
+      if (!frozen.ok) throw new Error(frozen.faults.map((fault) => fault.message).join(' '));
+      const summary = await insertVersion(this.transaction, newId(at), frozen, draft.revision);
+      return {
+        kind: 'version.saved',
+        subjectId: summary.id,
+        details: { protocolId, number: summary.number, contentHash: summary.contentHash, message },
+      };
+    });
+  }
+
+  /** A run of a version, a setting each few minutes; `readings` says what was done at each. */
+  run(
+    at: Date,
+    by: Person,
+    run: {
+      readonly protocolId: string;
+      readonly number: number;
+      readonly readings: (version: Version) => readonly RecordReading[];
+      readonly end: { readonly kind: 'pause'; readonly note: string } | { readonly kind: 'finish' };
+    },
+  ): void {
+    this.#happened(at, by, async () => {
+      const key = { labId: this.lab.id, protocolId: run.protocolId, number: run.number };
+      const version = await findVersion(this.transaction, key);
+      if (version === null) throw new Error('a run follows its version');
+      const dials = version.content.bench.plates.map(() => null);
+      const runId = await startRun(this.transaction, this.#doing(at, by), version, { startDialsDeg: dials });
+      let time = at.getTime();
+      for (const reading of run.readings(version)) {
+        time += 4 * 60_000 + 7_000;
+        const row = await this.#run(runId);
+        await recordReading(this.transaction, this.#doing(new Date(time), by), row, version, reading);
+      }
+      const ended = this.#doing(new Date(time + 60_000), by);
+      const note = run.end.kind === 'pause' ? run.end.note : '';
+      await changeState(this.transaction, ended, await this.#run(runId), { kind: run.end.kind, note });
+      return {
+        kind: 'run.started',
+        subjectId: runId,
+        details: { versionId: version.summary.id, cautionAcknowledged: true },
+      };
+    });
+  }
+
+  #happened(
+    at: Date,
+    by: Person,
+    work: () => Promise<{ kind: string; subjectId: string; details: Record<string, unknown> }>,
+  ): void {
+    this.#steps.push({
+      at,
+      tell: async () => {
+        const entry = await work();
+        await recordEvent(
+          this.transaction,
+          { labId: this.lab.id, actor: { id: by.id, name: by.name }, at },
+          entry,
+        );
+      },
+    });
+  }
+
+  #place(at: Date, by: Person) {
+    return { labId: this.lab.id, userId: by.id, now: at };
+  }
+
+  #doing(at: Date, by: Person) {
+    return { labId: this.lab.id, userId: by.id, at };
+  }
+
+  async #protocol(protocolId: string) {
+    const stored = await findProtocol(this.transaction, { labId: this.lab.id, protocolId });
+    if (stored === null) throw new Error('a draft is saved after its protocol is begun');
+    return stored;
+  }
+
+  async #run(runId: string) {
+    const run = await findRun(this.transaction, { labId: this.lab.id, runId });
+    if (run === null) throw new Error('a run that was just started is not there');
+    return run;
+  }
+}

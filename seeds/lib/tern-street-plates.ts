@@ -1,0 +1,177 @@
+import type { CalibrationInput, CreatePlate, PlateKind } from '../../shared/schemas';
+import type { LabStory } from './lab-story';
+import type { Person } from './people';
+
+type At = (daysAgo: number, time: string) => Date;
+
+/** [days ago, wavelength nm, retardance °, its σ, zero °, its σ], oldest first. Invented. */
+type Measured = readonly [number, number, number, number, number, number];
+
+interface PlateFacts {
+  readonly name: string;
+  readonly kind: PlateKind;
+  readonly designWavelengthNm: number;
+  readonly note: string;
+  readonly mount: readonly [name: string, direction: 1 | -1, resolutionDeg: number, repeatabilityDeg: number];
+  readonly measured: readonly Measured[];
+}
+
+const quartz = 'Compound zero order, quartz.';
+
+const plates: readonly PlateFacts[] = [
+  {
+    name: 'H-1',
+    kind: 'half',
+    designWavelengthNm: 780,
+    note: quartz,
+    mount: ['M01', 1, 0.1, 0.05],
+    measured: [
+      [240, 780, 180.6, 0.3, 77.86, 0.05],
+      [86, 780, 180.4, 0.3, 77.9, 0.06],
+    ],
+  },
+  {
+    name: 'H-2',
+    kind: 'half',
+    designWavelengthNm: 780,
+    note: quartz,
+    mount: ['M02', -1, 0.2, 0.1],
+    measured: [[38, 780, 178.8, 0.5, 110.24, 0.09]],
+  },
+  {
+    name: 'H-3',
+    kind: 'half',
+    designWavelengthNm: 808,
+    note: quartz,
+    mount: ['M03', 1, 0.1, 0.06],
+    measured: [
+      [300, 810, 179.3, 0.4, 12.31, 0.06],
+      [150, 810, 179.2, 0.3, 12.34, 0.05],
+      [9, 810, 179.2, 0.3, 12.4, 0.05],
+    ],
+  },
+  {
+    name: 'H-4',
+    kind: 'half',
+    designWavelengthNm: 808,
+    note: 'Polymer, cemented.',
+    mount: ['M04', -1, 0.1, 0.06],
+    measured: [[46, 810, 181.7, 0.6, 264.18, 0.07]],
+  },
+  {
+    name: 'H-5',
+    kind: 'half',
+    designWavelengthNm: 808,
+    note: quartz,
+    mount: ['M07', 1, 0.05, 0.02],
+    measured: [[30, 810, 179.6, 0.2, 355.07, 0.03]],
+  },
+  {
+    name: 'Q-A',
+    kind: 'quarter',
+    designWavelengthNm: 808,
+    note: quartz,
+    mount: ['M06', 1, 0.1, 0.06],
+    measured: [[20, 810, 89.8, 0.3, 44.62, 0.06]],
+  },
+  {
+    name: 'Q-B',
+    kind: 'quarter',
+    designWavelengthNm: 808,
+    note: quartz,
+    mount: ['M05', -1, 0.1, 0.06],
+    measured: [
+      [310, 810, 88.7, 0.5, 301.78, 0.1],
+      [170, 810, 88.9, 0.5, 301.7, 0.1],
+      [47, 810, 86.9, 0.4, 301.73, 0.09],
+    ],
+  },
+  {
+    name: 'Q-C',
+    kind: 'quarter',
+    designWavelengthNm: 780,
+    note: quartz,
+    mount: ['M08', -1, 0.1, 0.05],
+    measured: [[58, 785, 90.9, 0.4, 151.36, 0.08]],
+  },
+  {
+    name: 'Q-D',
+    kind: 'quarter',
+    designWavelengthNm: 808,
+    note: 'Polymer, cemented.',
+    mount: ['M09', 1, 0.1, 0.06],
+    measured: [[102, 810, 92.3, 0.6, 60.41, 0.1]],
+  },
+  {
+    name: 'Q-E',
+    kind: 'quarter',
+    designWavelengthNm: 780,
+    note: quartz,
+    mount: ['M10', 1, 0.2, 0.1],
+    measured: [[16, 780, 89.2, 0.5, 8.95, 0.12]],
+  },
+  {
+    name: 'Q-F',
+    kind: 'quarter',
+    designWavelengthNm: 780,
+    note: 'Spare.',
+    mount: ['M11', -1, 0.5, 0.2],
+    measured: [[190, 780, 91.6, 0.8, 233.5, 0.3]],
+  },
+  {
+    name: 'T-1',
+    kind: 'other',
+    designWavelengthNm: 780,
+    note: 'Near a third of a wave, from a broken stack.',
+    mount: ['M12', -1, 0.1, 0.06],
+    measured: [[63, 780, 118.6, 0.5, 199.27, 0.08]],
+  },
+];
+
+/** The dozen plates of the lab, with what was measured of each over the year; answers each plate's id by its name. */
+export function tellPlates(
+  story: LabStory,
+  at: At,
+  people: { readonly designer: Person; readonly operator: Person },
+): (name: string) => string {
+  const ids = new Map<string, string>();
+  for (const facts of plates) {
+    const [first, ...later] = facts.measured;
+    if (first === undefined) throw new Error('a plate is measured before it is used');
+    const [name, direction, resolutionDeg, repeatabilityDeg] = facts.mount;
+    const plate: CreatePlate = {
+      name: facts.name,
+      kind: facts.kind,
+      designWavelengthNm: facts.designWavelengthNm,
+      note: facts.note,
+      mount: { name, direction, resolutionDeg, repeatabilityDeg },
+      calibration: calibration(first, at),
+    };
+    const id = story.plate(at(first[0], '11:15'), people.designer, plate);
+    for (const measured of later) {
+      story.calibration(at(measured[0], '11:15'), people.operator, id, calibration(measured, at));
+    }
+    ids.set(facts.name, id);
+  }
+  return (name) => {
+    const id = ids.get(name);
+    if (id === undefined) throw new Error(`${name} is not in the cabinet`);
+    return id;
+  };
+}
+
+function calibration(
+  [daysAgo, wavelengthNm, retardanceDeg, retardanceSigmaDeg, offsetDeg, offsetSigmaDeg]: Measured,
+  at: At,
+): CalibrationInput {
+  return {
+    wavelengthNm,
+    retardanceDeg,
+    retardanceSigmaDeg,
+    offsetDeg,
+    offsetSigmaDeg,
+    method: 'Turned between crossed polarisers',
+    note: '',
+    measuredAt: at(daysAgo, '10:52').toISOString(),
+  };
+}
