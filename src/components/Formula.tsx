@@ -1,0 +1,43 @@
+import { useEffect, useRef, useState } from 'react';
+import { classNames } from './class-names';
+
+export interface FormulaProps {
+  readonly latex: string;
+  /** What stands there until KaTeX has come, and what is copied: the expression as it was typed. */
+  readonly source?: string | undefined;
+  readonly className?: string | undefined;
+}
+
+/**
+ * An expression typeset by KaTeX, which is fetched with the first formula. `render` builds its nodes through the DOM, so that the
+ * styles it sets pass a policy that forbids inline ones; MathML stays in for screen readers.
+ */
+export function Formula({ latex, source, className }: FormulaProps) {
+  const target = useRef<HTMLSpanElement>(null);
+  const [drawn, setDrawn] = useState<string | null>(null);
+
+  useEffect(() => {
+    let gone = false;
+    const draw = async (): Promise<void> => {
+      const [{ default: katex }] = await Promise.all([import('katex'), import('katex/dist/katex.min.css')]);
+      if (gone || target.current === null) return;
+      katex.render(latex, target.current, { throwOnError: true, output: 'htmlAndMathml', strict: 'ignore' });
+      setDrawn(latex);
+    };
+    draw().catch(() => {
+      // No network, or an expression KaTeX can't set: the source text says the same.
+      if (!gone) setDrawn(null);
+    });
+    return () => {
+      gone = true;
+    };
+  }, [latex]);
+
+  const ready = drawn === latex;
+  return (
+    <span className={classNames('whitespace-nowrap', className)}>
+      <span ref={target} className={ready ? undefined : 'hidden'} />
+      {!ready && <span className="font-mono">{source ?? latex}</span>}
+    </span>
+  );
+}
