@@ -77,14 +77,19 @@ describe('what may import what', () => {
   });
 
   it('keeps the fakes strangers: they import nothing of ours', () => {
-    const wrong = from('fake-oauth').filter(({ target, isOurs }) => isOurs && !target.startsWith('fake-oauth/'));
+    const wrong = from('fake-oauth').filter(
+      ({ target, isOurs }) => isOurs && !target.startsWith('fake-oauth/'),
+    );
     expect(wrong.map(say)).toEqual([]);
   });
 
   it('lets nothing import tests or seeds', () => {
     const wrong = imports.filter(
       ({ file, target, isOurs }) =>
-        isOurs && ['tests', 'seeds'].some((folder) => target.startsWith(`${folder}/`) && !file.startsWith(`${folder}/`)),
+        isOurs &&
+        ['tests', 'seeds'].some(
+          (folder) => target.startsWith(`${folder}/`) && !file.startsWith(`${folder}/`),
+        ),
     );
     expect(wrong.map(say)).toEqual([]);
   });

@@ -1,7 +1,7 @@
 import { useEffect } from 'react';
 import { useRouteError } from 'react-router-dom';
 import { ApiError } from '../lib/api';
-import { BeamState } from '../components/BeamState';
+import { BeamWrong } from '../components/BeamState';
 import { TextLink } from '../components/TextLink';
 
 interface Words {
@@ -37,20 +37,15 @@ export function RouteFault() {
   }, [title]);
   return (
     <main className="px-5 pt-12 sm:px-10">
-      <BeamState
-        state="wrong"
-        title={title}
-        action={
-          <p className="mt-4 flex gap-6">
-            <TextLink to="/">Go home</TextLink>
-            <a className="beam-link" href={window.location.href}>
-              Load it again
-            </a>
-          </p>
-        }
-      >
+      <BeamWrong title={title}>
         {text}
-      </BeamState>
+        <span className="mt-4 flex gap-6">
+          <TextLink to="/">Go home</TextLink>
+          <a className="beam-link" href={window.location.href}>
+            Load it again
+          </a>
+        </span>
+      </BeamWrong>
     </main>
   );
 }

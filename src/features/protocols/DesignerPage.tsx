@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
-import { BeamState } from '../../components/BeamState';
+import { BeamWorking, BeamWrong } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
 import { useTitle } from '../../lib/use-title';
 import { benchesQuery } from '../benches';
@@ -18,25 +18,17 @@ export function Component() {
 
   if (protocol.isError) {
     return (
-      <BeamState
-        state="wrong"
-        title="This protocol could not be fetched"
-        action={<TextLink to={`/labs/${lab.id}/plan`}>See all protocols</TextLink>}
-      >
-        {protocol.error.message}
-      </BeamState>
+      <BeamWrong title="This protocol could not be fetched">
+        {protocol.error.message} <TextLink to={`/labs/${lab.id}/plan`}>See all protocols</TextLink>
+      </BeamWrong>
     );
   }
   if (benches.isError) {
-    return (
-      <BeamState state="wrong" title="The benches could not be fetched">
-        {benches.error.message}
-      </BeamState>
-    );
+    return <BeamWrong title="The benches could not be fetched">{benches.error.message}</BeamWrong>;
   }
   // A draft that was fetched before may be older than what somebody saved since: wait for the fresh one.
   if (protocol.isPending || benches.isPending || (protocol.isFetching && !protocol.isFetchedAfterMount)) {
-    return <BeamState state="working" title="Fetching the protocol" />;
+    return <BeamWorking doing="Fetching the protocol" />;
   }
   return <Designer key={protocolId} protocol={protocol.data} benches={benches.data.items} />;
 }

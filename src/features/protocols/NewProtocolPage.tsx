@@ -3,7 +3,7 @@ import { useForm } from 'react-hook-form';
 import { useNavigate } from 'react-router-dom';
 import { v7 as newId } from 'uuid';
 import { createProtocolSchema, type DraftContent, type DraftTarget } from '../../../shared/schemas/protocols';
-import { BeamState } from '../../components/BeamState';
+import { BeamEmpty, BeamWrong } from '../../components/BeamState';
 import { Button } from '../../components/Button';
 import { ErrorNote } from '../../components/ErrorNote';
 import { NumberField } from '../../components/NumberField';
@@ -70,24 +70,24 @@ export function Component() {
 
   if (!may('protocols.write')) {
     return (
-      <BeamState state="wrong" title="Protocols are written by designers and leads">
+      <BeamWrong title="Protocols are written by designers and leads">
         Ask the lab’s lead for that role.
-      </BeamState>
+      </BeamWrong>
     );
   }
   if (benches.isSuccess && live.length === 0) {
     return (
-      <BeamState
-        state="empty"
-        title="A protocol needs a bench"
-        action={<TextLink to={`/labs/${lab.id}/bench/new`}>Set up a bench</TextLink>}
-      >
-        The angles are worked out for the plates that stand on it.
-      </BeamState>
+      <BeamEmpty title="A protocol needs a bench">
+        The angles are worked out for the plates that stand on it.{' '}
+        <TextLink to={`/labs/${lab.id}/bench/new`}>Set up a bench</TextLink>
+      </BeamEmpty>
     );
   }
   return (
-    <form className="max-w-xl pt-3" onSubmit={(event) => void form.handleSubmit((content) => create.mutate(content))(event)}>
+    <form
+      className="max-w-xl pt-3"
+      onSubmit={(event) => void form.handleSubmit((content) => create.mutate(content))(event)}
+    >
       <h1 className="m-0 text-title">Write a protocol</h1>
       <div className="mt-5 grid gap-5">
         <TextField label="name" autoFocus fault={errors.name?.message} {...form.register('name')} />
@@ -100,7 +100,10 @@ export function Component() {
         <SelectField
           label="bench"
           placeholder="choose a bench"
-          options={live.map(({ id, name, wavelengthNm }) => ({ value: id, label: `${name}, ${wavelengthNm} nm` }))}
+          options={live.map(({ id, name, wavelengthNm }) => ({
+            value: id,
+            label: `${name}, ${wavelengthNm} nm`,
+          }))}
           fault={errors.benchId === undefined ? undefined : 'Choose the bench that makes these states.'}
           {...form.register('benchId')}
         />
@@ -110,7 +113,9 @@ export function Component() {
           className="max-w-48"
           fault={
             form.formState.errors.tolerance?.message ??
-            (Object.hasOwn(errors, 'toleranceInfidelity') ? 'A tolerance is a number from 1e−9 to 0.5.' : undefined)
+            (Object.hasOwn(errors, 'toleranceInfidelity')
+              ? 'A tolerance is a number from 1e−9 to 0.5.'
+              : undefined)
           }
           {...form.register('tolerance')}
         />

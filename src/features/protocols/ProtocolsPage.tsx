@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { ProtocolSummary } from '../../../shared/schemas/protocols';
-import { BeamState } from '../../components/BeamState';
+import { BeamEmpty, BeamWorking, BeamWrong } from '../../components/BeamState';
 import { ButtonLink } from '../../components/Button';
 import { TextField } from '../../components/TextField';
 import { TextLink } from '../../components/TextLink';
@@ -47,22 +47,15 @@ export function Component() {
           </ButtonLink>
         )}
       </div>
-      {protocols.isPending && <BeamState state="working" title="Fetching the protocols" />}
+      {protocols.isPending && <BeamWorking doing="Fetching the protocols" />}
       {protocols.isError && (
-        <BeamState state="wrong" title="The protocols could not be fetched">
-          {protocols.error.message}
-        </BeamState>
+        <BeamWrong title="The protocols could not be fetched">{protocols.error.message}</BeamWrong>
       )}
       {protocols.isSuccess && all.length === 0 && (
-        <BeamState
-          state="empty"
-          title="No protocols yet"
-          action={
-            may('protocols.write') ? <TextLink to={`/labs/${lab.id}/plan/new`}>Write the first one</TextLink> : undefined
-          }
-        >
-          A protocol says which states an experiment needs, and how well they must be made.
-        </BeamState>
+        <BeamEmpty title="No protocols yet">
+          A protocol says which states an experiment needs, and how well they must be made.{' '}
+          {may('protocols.write') && <TextLink to={`/labs/${lab.id}/plan/new`}>Write the first one</TextLink>}
+        </BeamEmpty>
       )}
       {all.length > 0 && (
         <>
@@ -100,7 +93,9 @@ export function Component() {
             </tbody>
           </table>
           {shown.length === 0 && (
-            <p className="mt-4 text-ink-2">No protocol holds all of these words. Take one out of the search.</p>
+            <p className="mt-4 text-ink-2">
+              No protocol holds all of these words. Take one out of the search.
+            </p>
           )}
         </>
       )}
@@ -124,7 +119,11 @@ function SortHead({ order, current, onSort, hideOnPhone = false, children }: Sor
       aria-sort={sorted ? (order === 'name' ? 'ascending' : 'descending') : 'none'}
       className={`font-words ${hideOnPhone ? 'max-sm:hidden' : ''}`}
     >
-      <button type="button" className={`min-h-8 ${sorted ? 'text-ink underline' : ''}`} onClick={() => onSort(order)}>
+      <button
+        type="button"
+        className={`min-h-8 ${sorted ? 'text-ink underline' : ''}`}
+        onClick={() => onSort(order)}
+      >
         {children}
       </button>
     </th>
@@ -155,7 +154,7 @@ function ProtocolRow({ labId, protocol }: { readonly labId: string; readonly pro
         )}
       </td>
       <td className="text-s text-ink-2 max-sm:hidden">
-        {formatMoment(protocol.draftSavedAt)}, {protocol.draftSavedBy}
+        {formatMoment(new Date(protocol.draftSavedAt), new Date())}, {protocol.draftSavedBy}
       </td>
     </tr>
   );

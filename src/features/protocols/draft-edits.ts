@@ -25,7 +25,8 @@ function changeTarget(typing: string | null, id: string, change: Partial<DraftTa
 export const writeExpression = (id: string, expression: string): DraftEdit =>
   changeTarget(`expression ${id}`, id, { expression, heldFastAxesDeg: null });
 
-export const writeLabel = (id: string, label: string): DraftEdit => changeTarget(`label ${id}`, id, { label });
+export const writeLabel = (id: string, label: string): DraftEdit =>
+  changeTarget(`label ${id}`, id, { label });
 
 export const holdSolution = (id: string, fastAxesDeg: readonly number[] | null): DraftEdit =>
   changeTarget(null, id, { heldFastAxesDeg: fastAxesDeg === null ? null : [...fastAxesDeg] });
@@ -43,7 +44,9 @@ function freeLabel(targets: readonly DraftTarget[]): string {
 }
 
 export const addTarget = (target: DraftTarget): DraftEdit =>
-  withTargets(`expression ${target.id}`, (targets) => (targets.length < maxTargets ? [...targets, target] : targets));
+  withTargets(`expression ${target.id}`, (targets) =>
+    targets.length < maxTargets ? [...targets, target] : targets,
+  );
 
 export const removeTarget = (id: string): DraftEdit =>
   withTargets(null, (targets) => targets.filter((target) => target.id !== id));

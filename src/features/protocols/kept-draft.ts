@@ -30,7 +30,8 @@ export function forgetDraft(userId: string, protocolId: string): void {
 export function keptDraft(userId: string, protocolId: string): KeptDraft | null {
   try {
     const value: unknown = JSON.parse(localStorage.getItem(keyOf(userId, protocolId)) ?? 'null');
-    if (typeof value !== 'object' || value === null || !('revision' in value) || !('content' in value)) return null;
+    if (typeof value !== 'object' || value === null || !('revision' in value) || !('content' in value))
+      return null;
     const content = draftContentSchema.safeParse(value.content);
     return typeof value.revision === 'number' && content.success
       ? { revision: value.revision, content: content.data }

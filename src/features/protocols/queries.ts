@@ -25,7 +25,11 @@ export const protocolQuery = (labId: string, protocolId: string) =>
     queryFn: ({ signal }) => request<Protocol>(`/labs/${labId}/protocols/${protocolId}`, { signal }),
   });
 
-export function createProtocol(labId: string, content: DraftContent, idempotencyKey: string): Promise<Protocol> {
+export function createProtocol(
+  labId: string,
+  content: DraftContent,
+  idempotencyKey: string,
+): Promise<Protocol> {
   return request<Protocol>(`/labs/${labId}/protocols`, { method: 'POST', body: content, idempotencyKey });
 }
 

@@ -1,6 +1,11 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
-import { type Draft, draftContentSchema, draftSchema, type Protocol } from '../../../shared/schemas/protocols';
+import {
+  type Draft,
+  draftContentSchema,
+  draftSchema,
+  type Protocol,
+} from '../../../shared/schemas/protocols';
 import { ApiError } from '../../lib/api';
 import type { DraftEdit } from './draft-edits';
 import { applyEdit, type DraftHistory, redo, startHistory, undo } from './draft-history';
@@ -41,7 +46,12 @@ const retryMs = 5000;
 function open(protocol: Protocol, userId: string): State {
   const { draft } = protocol;
   const kept = keptDraft(userId, protocol.id);
-  const state: State = { history: startHistory(draft.content), base: draft, conflict: null, keptReason: null };
+  const state: State = {
+    history: startHistory(draft.content),
+    base: draft,
+    conflict: null,
+    keptReason: null,
+  };
   if (kept === null || JSON.stringify(kept.content) === JSON.stringify(draft.content)) return state;
   const history = { ...startHistory(draft.content), content: kept.content, past: [draft.content] };
   return { ...state, history, conflict: kept.revision === draft.revision ? null : draft };
@@ -91,10 +101,22 @@ export function useDraft(labId: string, userId: string, protocol: Protocol, mayW
     };
     const timer = setTimeout(() => void save(), quietMs);
     return () => clearTimeout(timer);
-  }, [labId, userId, protocolId, history.content, base.revision, changed, conflict, attempt, mayWrite, queryClient]);
+  }, [
+    labId,
+    userId,
+    protocolId,
+    history.content,
+    base.revision,
+    changed,
+    conflict,
+    attempt,
+    mayWrite,
+    queryClient,
+  ]);
 
   const change = useCallback(
-    (next: (history: DraftHistory) => DraftHistory) => setState((now) => ({ ...now, history: next(now.history) })),
+    (next: (history: DraftHistory) => DraftHistory) =>
+      setState((now) => ({ ...now, history: next(now.history) })),
     [],
   );
 

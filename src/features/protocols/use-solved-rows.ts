@@ -52,7 +52,9 @@ export function useSolvedRows(
     const job = jobNumber.current;
     const ids = written.map(({ id }) => id);
     setSolved((before) => ({
-      rows: new Map([...before.rows].filter(([id]) => ids.includes(id)).map(([id, row]) => [id, { ...row, stale: true }])),
+      rows: new Map(
+        [...before.rows].filter(([id]) => ids.includes(id)).map(([id, row]) => [id, { ...row, stale: true }]),
+      ),
       progress: ids.length === 0 ? null : { done: 0, total: ids.length },
       benchFault: null,
     }));
@@ -61,7 +63,12 @@ export function useSolvedRows(
       setSolved((before) => merge(before, data, ids));
     };
     current.addEventListener('message', take);
-    const question: SolverJob = { job, bench, convention, expressions: written.map(({ expression }) => expression) };
+    const question: SolverJob = {
+      job,
+      bench,
+      convention,
+      expressions: written.map(({ expression }) => expression),
+    };
     current.postMessage(question);
     return () => current.removeEventListener('message', take);
     // eslint-disable-next-line react-hooks/exhaustive-deps -- `question` is the text of all that the job depends on; the arrays are new at every render

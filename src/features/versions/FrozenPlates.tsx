@@ -45,11 +45,14 @@ export function FrozenPlates({ content }: { readonly content: VersionContent }) 
               <td className="text-right font-mono">
                 {formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}
               </td>
-              <td className="text-right font-mono">{formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg)}</td>
+              <td className="text-right font-mono">
+                {formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg)}
+              </td>
               <td className="pl-8">{mount.direction === 1 ? 'counter-clockwise' : 'clockwise'}</td>
               <td className="text-right font-mono">{mount.resolutionDeg}</td>
               <td className="pl-8">
-                {formatDate(calibration.measuredAt)} at {calibration.wavelengthNm} nm, {calibration.method}
+                {formatDate(new Date(calibration.measuredAt))} at {calibration.wavelengthNm} nm,{' '}
+                {calibration.method}
               </td>
             </tr>
           ))}

@@ -3,7 +3,7 @@ import type { FrozenTarget, VersionContent } from '../../../shared/schemas/versi
 import { FidelityChip } from '../../components/FidelityChip';
 import { Formula } from '../../components/Formula';
 import { Scientific } from '../../components/Scientific';
-import { HeldSign } from '../../components/signs/HeldSign';
+import { HeldSign } from '../../components/SmallSigns';
 import { formatDial, formatTheta } from '../../lib/format';
 
 /** Every target as it was frozen: the dials are those that a run dials. */
@@ -72,7 +72,9 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
           <span className="font-mono text-s">{target.expression}</span>
         )}
         {target.reach === 'nearest' && (
-          <span className="ml-3 text-s text-ink-2">closest, out of reach by {target.shortfallDeg.toFixed(1)}°</span>
+          <span className="ml-3 text-s text-ink-2">
+            closest, out of reach by {target.shortfallDeg.toFixed(1)}°
+          </span>
         )}
       </td>
       {content.bench.plates.map((plate, index) => (
@@ -89,11 +91,13 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
         {solution !== undefined && (
           <span className="inline-flex items-center gap-3">
             <FidelityChip
-              value={solution.expectedInfidelity}
-              low={solution.expectedLow}
-              high={solution.expectedHigh}
+              infidelity={{
+                value: solution.expectedInfidelity,
+                low: solution.expectedLow,
+                high: solution.expectedHigh,
+              }}
               tolerance={content.toleranceInfidelity}
-              predicted
+              kind="predicted"
             />
             <Scientific value={solution.expectedInfidelity} />
           </span>

@@ -15,7 +15,8 @@ export function HashCheck({ version }: { readonly version: Version }) {
           'the first of its chain.'
         ) : (
           <>
-            on <span className="font-mono break-all text-ink">{parentHash}</span> of version {content.number - 1}.
+            on <span className="font-mono break-all text-ink">{parentHash}</span> of version{' '}
+            {content.number - 1}.
           </>
         )}
       </p>
@@ -25,8 +26,8 @@ export function HashCheck({ version }: { readonly version: Version }) {
           'Hashed again on this page from the text of the version: it agrees.'
         ) : (
           <strong className="text-fault">
-            Hashed again on this page the text gives {own}: this version is not what was saved. Tell the lab’s lead before
-            anything is run from it.
+            Hashed again on this page the text gives {own}: this version is not what was saved. Tell the lab’s
+            lead before anything is run from it.
           </strong>
         )}
       </p>

@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
-import { BeamState } from '../../components/BeamState';
+import { BeamEmpty, BeamWorking, BeamWrong } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
 import { useTitle } from '../../lib/use-title';
 import { useLab } from '../labs';
@@ -22,16 +22,15 @@ export function Component() {
         <h1 className="m-0 text-title">Versions of {name}</h1>
         <TextLink to={draftHref}>Open the draft</TextLink>
       </div>
-      {versions.isPending && <BeamState state="working" title="Fetching the versions" />}
+      {versions.isPending && <BeamWorking doing="Fetching the versions" />}
       {versions.isError && (
-        <BeamState state="wrong" title="The versions could not be fetched">
-          {versions.error.message}
-        </BeamState>
+        <BeamWrong title="The versions could not be fetched">{versions.error.message}</BeamWrong>
       )}
       {versions.isSuccess && all.length === 0 && (
-        <BeamState state="empty" title="No versions yet" action={<TextLink to={draftHref}>Open the draft</TextLink>}>
-          Saving one freezes its targets, plates, angles and dials for good.
-        </BeamState>
+        <BeamEmpty title="No versions yet">
+          Saving one freezes its targets, plates, angles and dials for good.{' '}
+          <TextLink to={draftHref}>Open the draft</TextLink>
+        </BeamEmpty>
       )}
       {all.length > 0 && <VersionsTable labId={lab.id} versions={all} namesProtocol={false} />}
     </>

@@ -3,7 +3,7 @@ import { useState } from 'react';
 import { useParams } from 'react-router-dom';
 import { describeConvention } from '../../../shared/optics/convention';
 import type { Version } from '../../../shared/schemas/versions';
-import { BeamState } from '../../components/BeamState';
+import { BeamWorking, BeamWrong } from '../../components/BeamState';
 import { ButtonLink } from '../../components/Button';
 import { Scientific } from '../../components/Scientific';
 import { SectionHead } from '../../components/SectionHead';
@@ -22,17 +22,15 @@ export function Component() {
   const { lab } = useLab();
   const { protocolId = '', number = '' } = useParams();
   const version = useQuery(versionQuery(lab.id, protocolId, number));
-  useTitle(version.isSuccess ? `${version.data.content.protocol.name}, version ${number}` : `Version ${number}`);
-  if (version.isPending) return <BeamState state="working" title={`Fetching version ${number}`} />;
+  useTitle(
+    version.isSuccess ? `${version.data.content.protocol.name}, version ${number}` : `Version ${number}`,
+  );
+  if (version.isPending) return <BeamWorking doing={`Fetching version ${number}`} />;
   if (version.isError) {
     return (
-      <BeamState
-        state="wrong"
-        title={`Version ${number} could not be fetched`}
-        action={<TextLink to={`/labs/${lab.id}/review`}>See all versions</TextLink>}
-      >
-        {version.error.message}
-      </BeamState>
+      <BeamWrong title={`Version ${number} could not be fetched`}>
+        {version.error.message} <TextLink to={`/labs/${lab.id}/review`}>See all versions</TextLink>
+      </BeamWrong>
     );
   }
   return <VersionSheet version={version.data} protocolId={protocolId} />;
@@ -56,13 +54,16 @@ function VersionSheet({ version, protocolId }: VersionSheetProps) {
             {content.protocol.name}, version {summary.number}
           </h1>
           <p className="mt-2 mb-0">
-            “{content.message}” {content.savedBy.name}, {formatMoment(content.savedAt)}.
+            “{content.message}” {content.savedBy.name}, {formatMoment(new Date(content.savedAt), new Date())}.
           </p>
           <p className="mt-1 mb-0 text-s text-ink-2">
-            {content.bench.name}, {content.bench.wavelengthNm} nm, from {content.bench.input.expression}; tolerance 1 − F ≤{' '}
-            <Scientific value={content.toleranceInfidelity} />; {describeConvention(content.convention)}.
+            {content.bench.name}, {content.bench.wavelengthNm} nm, from {content.bench.input.expression};
+            tolerance 1 − F ≤ <Scientific value={content.toleranceInfidelity} />;{' '}
+            {describeConvention(content.convention)}.
           </p>
-          {content.protocol.purpose !== '' && <p className="mt-1 mb-0 text-s text-ink-2">{content.protocol.purpose}</p>}
+          {content.protocol.purpose !== '' && (
+            <p className="mt-1 mb-0 text-s text-ink-2">{content.protocol.purpose}</p>
+          )}
         </div>
         <div className="flex flex-wrap items-center gap-6">
           <TextLink to={href}>Open the draft</TextLink>

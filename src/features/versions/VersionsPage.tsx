@@ -1,5 +1,5 @@
 import { useInfiniteQuery } from '@tanstack/react-query';
-import { BeamState } from '../../components/BeamState';
+import { BeamEmpty, BeamWorking, BeamWrong } from '../../components/BeamState';
 import { Button } from '../../components/Button';
 import { TextLink } from '../../components/TextLink';
 import { useTitle } from '../../lib/use-title';
@@ -16,20 +16,15 @@ export function Component() {
   return (
     <>
       <h1 className="m-0 pt-3 text-title">Versions</h1>
-      {versions.isPending && <BeamState state="working" title="Fetching the versions" />}
+      {versions.isPending && <BeamWorking doing="Fetching the versions" />}
       {versions.isError && (
-        <BeamState state="wrong" title="The versions could not be fetched">
-          {versions.error.message}
-        </BeamState>
+        <BeamWrong title="The versions could not be fetched">{versions.error.message}</BeamWrong>
       )}
       {versions.isSuccess && all.length === 0 && (
-        <BeamState
-          state="empty"
-          title="No versions yet"
-          action={<TextLink to={`/labs/${lab.id}/plan`}>Open a protocol</TextLink>}
-        >
-          A version is saved from a protocol’s draft, and never changes after that.
-        </BeamState>
+        <BeamEmpty title="No versions yet">
+          A version is saved from a protocol’s draft, and never changes after that.{' '}
+          <TextLink to={`/labs/${lab.id}/plan`}>Open a protocol</TextLink>
+        </BeamEmpty>
       )}
       {all.length > 0 && <VersionsTable labId={lab.id} versions={all} namesProtocol />}
       {versions.hasNextPage && (

@@ -45,7 +45,11 @@ export function VersionsTable({ labId, versions, namesProtocol }: VersionsTableP
             <td>
               <VersionSeal state="saved" number={version.number} />
             </td>
-            {namesProtocol && <th scope="row" className="pr-6 text-left font-strong">{version.protocolName}</th>}
+            {namesProtocol && (
+              <th scope="row" className="pr-6 text-left font-strong">
+                {version.protocolName}
+              </th>
+            )}
             <td className="pr-6">
               <TextLink to={`/labs/${labId}/plan/${version.protocolId}/versions/${version.number}`}>
                 {version.message}
@@ -53,7 +57,7 @@ export function VersionsTable({ labId, versions, namesProtocol }: VersionsTableP
             </td>
             <td className="pr-6 text-right font-mono max-sm:hidden">{version.targetCount}</td>
             <td className="pr-6 text-s text-ink-2 max-md:hidden">
-              {formatMoment(version.savedAt)}, {version.savedBy}
+              {formatMoment(new Date(version.savedAt), new Date())}, {version.savedBy}
             </td>
             <td className="max-md:hidden">
               <ShortHash hash={version.contentHash} />

@@ -13,9 +13,12 @@ export const labVersionsQuery = (labId: string) =>
   infiniteQueryOptions({
     queryKey: ['labs', labId, 'versions'],
     queryFn: ({ signal, pageParam }) =>
-      request<Page>(`/labs/${labId}/versions${pageParam === null ? '' : `?cursor=${encodeURIComponent(pageParam)}`}`, {
-        signal,
-      }),
+      request<Page>(
+        `/labs/${labId}/versions${pageParam === null ? '' : `?cursor=${encodeURIComponent(pageParam)}`}`,
+        {
+          signal,
+        },
+      ),
     initialPageParam: firstPage(),
     getNextPageParam: (page) => page.nextCursor,
   });
@@ -28,7 +31,10 @@ export const protocolVersionsQuery = (labId: string, protocolId: string) =>
   queryOptions({
     queryKey: ['labs', labId, 'protocols', protocolId, 'versions'],
     queryFn: ({ signal }) =>
-      request<{ readonly items: readonly VersionSummary[] }>(`/labs/${labId}/protocols/${protocolId}/versions`, { signal }),
+      request<{ readonly items: readonly VersionSummary[] }>(
+        `/labs/${labId}/protocols/${protocolId}/versions`,
+        { signal },
+      ),
   });
 
 /** A version never changes, so it is never fetched twice. */
@@ -36,6 +42,8 @@ export const versionQuery = (labId: string, protocolId: string, number: string) 
   queryOptions({
     queryKey: ['labs', labId, 'protocols', protocolId, 'versions', number],
     queryFn: ({ signal }) =>
-      request<Version>(`/labs/${labId}/protocols/${protocolId}/versions/${encodeURIComponent(number)}`, { signal }),
+      request<Version>(`/labs/${labId}/protocols/${protocolId}/versions/${encodeURIComponent(number)}`, {
+        signal,
+      }),
     staleTime: Infinity,
   });

@@ -5,3 +5,4 @@ export { useIdempotencyKey } from './use-idempotency-key';
 export { conflictingState, problemSentences } from './form-problem';
 export { FormProblem } from './FormProblem';
 export { EditConflict, type EditDifference } from './EditConflict';
+export { showServerFaults } from './server-faults';

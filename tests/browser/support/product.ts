@@ -26,7 +26,10 @@ async function freePort(): Promise<number> {
   return address.port;
 }
 
-function run(args: readonly string[], env: Record<string, string>): { child: ChildProcess; output: () => string } {
+function run(
+  args: readonly string[],
+  env: Record<string, string>,
+): { child: ChildProcess; output: () => string } {
   const child = spawn(process.execPath, ['--import', 'tsx', ...args], {
     cwd: root,
     env: { PATH: process.env['PATH'] ?? '', NODE_ENV: 'development', ...env },
@@ -79,7 +82,10 @@ export async function startProduct(): Promise<Product> {
     PUBLIC_URL: url,
     LOG_LEVEL: 'info',
   });
-  await Promise.all([ready(`${fakeGitHubUrl}/demo-people`, fake.output), ready(`${url}/readyz`, server.output)]);
+  await Promise.all([
+    ready(`${fakeGitHubUrl}/demo-people`, fake.output),
+    ready(`${url}/readyz`, server.output),
+  ]);
   return {
     url,
     fakeGitHubUrl,

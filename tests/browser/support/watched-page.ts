@@ -52,7 +52,8 @@ export async function openPage(
   page.on('request', (request) => {
     const { origin, protocol } = new URL(request.url());
     if (!/^https?:$/u.test(protocol)) return;
-    if (origin !== product.url && origin !== product.fakeGitHubUrl) faults.push(`other origin: ${request.url()}`);
+    if (origin !== product.url && origin !== product.fakeGitHubUrl)
+      faults.push(`other origin: ${request.url()}`);
   });
   return { page, context, faults: () => faults };
 }

@@ -44,9 +44,8 @@ export function ConflictDialog({ mine, theirs, onKeepMine, onTakeTheirs }: Confl
   return (
     <Dialog
       open
-      title="Which draft stands?"
+      question="Which draft stands?"
       onClose={onTakeTheirs}
-      closeOnEscape={false}
       actions={
         <>
           <Button kind="filled" onClick={onTakeTheirs}>
@@ -57,8 +56,8 @@ export function ConflictDialog({ mine, theirs, onKeepMine, onTakeTheirs }: Confl
       }
     >
       <p>
-        {theirs.savedBy} saved this draft {formatMoment(theirs.savedAt)}, while you were typing. After taking theirs, Ctrl+Z
-        brings yours back.
+        {theirs.savedBy} saved this draft {formatMoment(new Date(theirs.savedAt), new Date())}, while you were
+        typing. After taking theirs, Ctrl+Z brings yours back.
       </p>
       {rows.length === 0 ? (
         <p>Both say the same, in another order.</p>

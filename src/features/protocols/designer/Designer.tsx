@@ -2,7 +2,7 @@ import { useEffect, useState } from 'react';
 import { parseState } from '../../../../shared/optics/expression';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
-import { BeamState } from '../../../components/BeamState';
+import { BeamEmpty, BeamWrong } from '../../../components/BeamState';
 import { KeyList } from '../../../components/KeyList';
 import { TextLink } from '../../../components/TextLink';
 import { UndoSentence } from '../../../components/UndoSentence';
@@ -74,18 +74,13 @@ export function Designer({ protocol, benches }: DesignerProps) {
         onSaveVersion={() => setSaving(true)}
       />
       {bench === undefined && (
-        <BeamState
-          state="wrong"
-          title="The bench of this draft is not there"
-          action={<TextLink to={`/labs/${lab.id}/bench`}>See the benches</TextLink>}
-        >
-          Choose another one above; the targets stay as they are.
-        </BeamState>
+        <BeamWrong title="The bench of this draft is not there">
+          Choose another one above; the targets stay as they are.{' '}
+          <TextLink to={`/labs/${lab.id}/bench`}>See the benches</TextLink>
+        </BeamWrong>
       )}
       {solved.benchFault !== null && (
-        <BeamState state="wrong" title="The bench’s input state can’t be read">
-          {solved.benchFault}
-        </BeamState>
+        <BeamWrong title="The bench’s input state can’t be read">{solved.benchFault}</BeamWrong>
       )}
       {looked !== null && (
         <SelectedStage
@@ -118,17 +113,30 @@ export function Designer({ protocol, benches }: DesignerProps) {
             </BeamState>
           )}
           {content.targets.length === 0 && (
-            <BeamState state="empty" title="No targets yet">
-              {mayWrite ? 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).' : 'Its writer has only begun.'}
-            </BeamState>
+            <BeamEmpty title="No targets yet">
+              {mayWrite
+                ? 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).'
+                : 'Its writer has only begun.'}
+            </BeamEmpty>
           )}
           {looked !== null && (
-            <Limits label={looked.target.label} solution={looked.view.solution} plates={looked.bench.plates} />
+            <Limits
+              label={looked.target.label}
+              solution={looked.view.solution}
+              plates={looked.bench.plates}
+            />
           )}
         </div>
         {looked !== null && <SelectedFigures {...looked} convention={lab.convention} />}
       </div>
-      {removed !== null && <UndoSentence key={removed.id} text={removed.text} onUndo={draft.undo} />}
+      {removed.row !== null && (
+        <UndoSentence
+          key={removed.row.id}
+          sentence={removed.row.text}
+          onUndo={draft.undo}
+          onGone={removed.forget}
+        />
+      )}
       <KeyList commands={commands} />
       {saving && (
         <SaveVersionDialog

@@ -35,11 +35,15 @@ export function DesignerHead(props: DesignerHeadProps) {
   const next = (latest?.number ?? 0) + 1;
   return (
     <header className="designer-head">
-      <VersionSeal state="draft" />
+      <VersionSeal state="draft" number={null} decorative />
       <div className="min-w-0">
         <div className="flex flex-wrap items-baseline gap-x-4">
           <h1 className="m-0 min-w-0 text-title">
-            {mayWrite ? <NameField name={content.name} onChange={(name) => edit(rename(name))} /> : content.name}
+            {mayWrite ? (
+              <NameField name={content.name} onChange={(name) => edit(rename(name))} />
+            ) : (
+              content.name
+            )}
           </h1>
           <p className="m-0 text-body text-ink-2">
             {latest === null ? (
@@ -49,7 +53,7 @@ export function DesignerHead(props: DesignerHeadProps) {
                 draft after <TextLink to={versionsHref}>version {latest.number}</TextLink>
               </>
             )}
-            , <SaveState saving={saving} />
+            , <SavedWords saving={saving} />
           </p>
         </div>
         <div className="designer-facts">
@@ -74,6 +78,17 @@ export function DesignerHead(props: DesignerHeadProps) {
         </div>
       )}
     </header>
+  );
+}
+
+/** What could not be saved says why; the rest is a word. */
+function SavedWords({ saving }: { readonly saving: Saving }) {
+  if (saving.state === 'saved') return <SaveState saving={{ kind: 'saved', at: new Date(saving.at) }} />;
+  if (saving.state === 'typed') return <SaveState saving={{ kind: 'typed' }} />;
+  return (
+    <>
+      <SaveState saving={{ kind: 'kept' }} />. <span className="text-fault">{saving.reason}</span>
+    </>
   );
 }
 
@@ -105,7 +120,11 @@ function BenchChoice({ bench, benches, mayWrite, onChoose }: BenchChoiceProps) {
   return (
     <label>
       <span className="sr-only">Bench </span>
-      <select className="fact-select" value={bench?.id ?? ''} onChange={(event) => onChoose(event.target.value)}>
+      <select
+        className="fact-select"
+        value={bench?.id ?? ''}
+        onChange={(event) => onChoose(event.target.value)}
+      >
         {bench === undefined && <option value="">choose a bench</option>}
         {choices.map(({ id, name }) => (
           <option key={id} value={id}>

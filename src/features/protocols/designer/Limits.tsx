@@ -58,7 +58,12 @@ export function Limits({ label, solution, plates }: LimitsProps) {
               <td className="text-right font-mono text-s text-ink-2">{sigmaText(contribution)}</td>
               <td>
                 <span className="limits-share">
-                  <svg aria-hidden="true" className="limits-bar" viewBox="0 0 100 10" preserveAspectRatio="none">
+                  <svg
+                    aria-hidden="true"
+                    className="limits-bar"
+                    viewBox="0 0 100 10"
+                    preserveAspectRatio="none"
+                  >
                     <rect
                       width={largest > 0 ? (100 * contribution.share) / largest : 0}
                       height="10"

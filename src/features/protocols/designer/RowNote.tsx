@@ -1,4 +1,4 @@
-import { OutOfReachSign } from '../../../components/signs/OutOfReachSign';
+import { OutOfReachSign } from '../../../components/SmallSigns';
 import { Scientific } from '../../../components/Scientific';
 import type { RowView } from './row-view';
 
@@ -28,7 +28,8 @@ export function RowNote({ view, columns }: RowNoteProps) {
   if (reading.normalised) {
     return (
       <NoteLine columns={columns}>
-        Written with length {Number(reading.norm.toPrecision(4))}; taken as the state in that direction, length 1.
+        Written with length {Number(reading.norm.toPrecision(4))}; taken as the state in that direction,
+        length 1.
       </NoteLine>
     );
   }

@@ -44,7 +44,7 @@ export function SaveVersionDialog(props: SaveVersionDialogProps) {
   return (
     <Dialog
       open
-      title={`Save version ${number}?`}
+      question={`Save version ${number}?`}
       onClose={onClose}
       actions={
         <>
@@ -68,9 +68,9 @@ export function SaveVersionDialog(props: SaveVersionDialogProps) {
       }
     >
       <p>
-        A version never changes. It freezes {shown.length === 1 ? 'one target' : `${shown.length} targets`}, the plates with
-        their calibrations, the convention, the tolerance, and every solution with its dials, under a hash that covers the
-        version before it.
+        A version never changes. It freezes {shown.length === 1 ? 'one target' : `${shown.length} targets`},
+        the plates with their calibrations, the convention, the tolerance, and every solution with its dials,
+        under a hash that covers the version before it.
       </p>
       <form
         className="mt-4"

@@ -14,7 +14,7 @@ interface SourceFieldProps {
   readonly onDone: () => void;
   /** Esc: what stood before stands again. */
   readonly onCancel: () => void;
-  readonly onFocus?: () => void;
+  readonly onFocus?: (() => void) | undefined;
 }
 
 /** An expression as typed. Where it can't be read, the part is underlined and a leader from its column leads to one sentence. */
@@ -39,7 +39,9 @@ export function SourceField(props: SourceFieldProps) {
         {fault !== null && (
           <div ref={marks} aria-hidden="true" className="source-marks font-mono">
             {value.slice(0, fault.column - 1)}
-            <mark>{value.slice(fault.column - 1, fault.column - 1 + Math.max(fault.length, 1)) || '\u00a0'}</mark>
+            <mark>
+              {value.slice(fault.column - 1, fault.column - 1 + Math.max(fault.length, 1)) || '\u00a0'}
+            </mark>
             {value.slice(fault.column - 1 + Math.max(fault.length, 1))}
           </div>
         )}
@@ -91,7 +93,11 @@ function FaultLeader({ column }: { readonly column: number }) {
   // Columns are as wide as a numeral of the field's type; past the middle of the field the sentence keeps its place.
   const shown = Math.min(column, 28);
   return (
-    <span aria-hidden="true" className="source-leader font-mono" style={{ marginInlineStart: `calc(${shown - 1} * 1ch + 0.2ch)` }}>
+    <span
+      aria-hidden="true"
+      className="source-leader font-mono"
+      style={{ marginInlineStart: `calc(${shown - 1} * 1ch + 0.2ch)` }}
+    >
       <svg width="22" height="16" viewBox="0 0 22 16">
         <path d="M4 2 V11 H20" fill="none" stroke="currentColor" strokeWidth="1.4" />
         <path d="M4 0 l-3.4 5 h6.8 z" fill="currentColor" />

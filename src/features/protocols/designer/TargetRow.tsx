@@ -5,7 +5,7 @@ import { classNames } from '../../../components/class-names';
 import { FidelityChip } from '../../../components/FidelityChip';
 import { Formula } from '../../../components/Formula';
 import { Scientific } from '../../../components/Scientific';
-import { HeldSign } from '../../../components/signs/HeldSign';
+import { HeldSign } from '../../../components/SmallSigns';
 import { formatDial, formatTheta } from '../../../lib/format';
 import { RowNote } from './RowNote';
 import type { RowView } from './row-view';
@@ -122,11 +122,13 @@ export function TargetRow(props: TargetRowProps) {
               {solved !== null && (
                 <>
                   <FidelityChip
-                    value={solved.solution.expectedInfidelity}
-                    low={solved.solution.expectedLow}
-                    high={solved.solution.expectedHigh}
+                    infidelity={{
+                      value: solved.solution.expectedInfidelity,
+                      low: solved.solution.expectedLow,
+                      high: solved.solution.expectedHigh,
+                    }}
                     tolerance={toleranceInfidelity}
-                    predicted
+                    kind="predicted"
                   />
                   <Scientific value={solved.solution.expectedInfidelity} />
                 </>
@@ -134,7 +136,11 @@ export function TargetRow(props: TargetRowProps) {
             </td>
             <td className={classNames(numbers, 'pr-1 font-mono text-s')}>
               {solved !== null && (
-                <SolutionCount {...{ solved, name }} open={props.solutionsOpen} onOpen={props.onListSolutions} />
+                <SolutionCount
+                  {...{ solved, name }}
+                  open={props.solutionsOpen}
+                  onOpen={props.onListSolutions}
+                />
               )}
             </td>
           </>
@@ -165,7 +171,12 @@ function ExpressionText({ target, solved, mayWrite, onOpen }: ExpressionTextProp
     );
   if (!mayWrite) return text;
   return (
-    <button type="button" className="min-h-6 w-full text-left" onClick={onOpen} aria-label={`Edit ${target.label}: ${target.expression}`}>
+    <button
+      type="button"
+      className="min-h-6 w-full text-left"
+      onClick={onOpen}
+      aria-label={`Edit ${target.label}: ${target.expression}`}
+    >
       {text}
     </button>
   );

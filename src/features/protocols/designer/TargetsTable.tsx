@@ -1,7 +1,14 @@
 import { useMemo, useState } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
-import { type DraftEdit, addTarget, holdSolution, newTarget, writeExpression, writeLabel } from '../draft-edits';
+import {
+  type DraftEdit,
+  addTarget,
+  holdSolution,
+  newTarget,
+  writeExpression,
+  writeLabel,
+} from '../draft-edits';
 import type { RowView } from './row-view';
 import { TargetRow } from './TargetRow';
 import { useDesignerView } from './view-store';
@@ -18,7 +25,15 @@ interface TargetsTableProps {
 }
 
 /** The targets in order, and below them an empty row to write the next one in. */
-export function TargetsTable({ targets, views, plates, toleranceInfidelity, mayWrite, edit, undo }: TargetsTableProps) {
+export function TargetsTable({
+  targets,
+  views,
+  plates,
+  toleranceInfidelity,
+  mayWrite,
+  edit,
+  undo,
+}: TargetsTableProps) {
   const { selectedId, editingId, solutionsOfId, select, openSource, listSolutions } = useDesignerView();
   const blank = useBlankTarget(targets);
   const before = useState(new Map<string, string>())[0];
@@ -87,7 +102,8 @@ export function TargetsTable({ targets, views, plates, toleranceInfidelity, mayW
               onLabel={(label) => edit(writeLabel(target.id, label))}
               onDone={() => openSource(null)}
               onCancel={() => {
-                if (before.get(target.id) !== undefined && before.get(target.id) !== target.expression) undo();
+                if (before.get(target.id) !== undefined && before.get(target.id) !== target.expression)
+                  undo();
                 openSource(null);
               }}
               onHold={(fastAxesDeg) => edit(holdSolution(target.id, fastAxesDeg))}

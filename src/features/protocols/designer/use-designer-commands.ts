@@ -37,8 +37,20 @@ export function useDesignerCommands({ draft, views, mayWrite }: Situation): read
   };
 
   const commands: readonly Command[] = [
-    { id: 'row-up', label: 'Select the row above', keys: ['ArrowUp', 'k'], when: resting, run: () => step(-1) },
-    { id: 'row-down', label: 'Select the row below', keys: ['ArrowDown', 'j'], when: resting, run: () => step(1) },
+    {
+      id: 'row-up',
+      label: 'Select the row above',
+      keys: ['ArrowUp', 'k'],
+      when: resting,
+      run: () => step(-1),
+    },
+    {
+      id: 'row-down',
+      label: 'Select the row below',
+      keys: ['ArrowDown', 'j'],
+      when: resting,
+      run: () => step(1),
+    },
     {
       id: 'edit',
       label: 'Edit the row',
@@ -72,7 +84,13 @@ export function useDesignerCommands({ draft, views, mayWrite }: Situation): read
         select(neighbour?.id ?? null);
       },
     },
-    { id: 'previous', label: 'Hold the solution before', keys: ['['], when: onRow, run: () => otherSolution(-1) },
+    {
+      id: 'previous',
+      label: 'Hold the solution before',
+      keys: ['['],
+      when: onRow,
+      run: () => otherSolution(-1),
+    },
     { id: 'next', label: 'Hold the next solution', keys: [']'], when: onRow, run: () => otherSolution(1) },
     { id: 'hold', label: 'Hold this solution, or let it go', keys: ['p'], when: onRow, run: hold },
     {

@@ -2,7 +2,10 @@ import { useState } from 'react';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
 
 /** The row that was last taken out, as the sentence at the foot says it; null once it is back. */
-export function useRemovedRow(targets: readonly DraftTarget[]): { readonly id: string; readonly text: string } | null {
+export function useRemovedRow(targets: readonly DraftTarget[]): {
+  readonly row: { readonly id: string; readonly text: string } | null;
+  readonly forget: () => void;
+} {
   const [before, setBefore] = useState(targets);
   const [removed, setRemoved] = useState<{ readonly id: string; readonly text: string } | null>(null);
   if (before !== targets) {
@@ -15,5 +18,5 @@ export function useRemovedRow(targets: readonly DraftTarget[]): { readonly id: s
       setRemoved(null);
     }
   }
-  return removed;
+  return { row: removed, forget: () => setRemoved(null) };
 }

@@ -1,7 +1,10 @@
 import type { SettingSolution } from './row-view';
 
 /** How the prediction stands to the tolerance, where that is worth a word. */
-export function toleranceVerdict({ expectedLow, expectedHigh }: SettingSolution, toleranceInfidelity: number): string {
+export function toleranceVerdict(
+  { expectedLow, expectedHigh }: SettingSolution,
+  toleranceInfidelity: number,
+): string {
   if (expectedHigh <= toleranceInfidelity) return '.';
   return expectedLow > toleranceInfidelity
     ? ': not within the tolerance.'

@@ -31,7 +31,8 @@ export const useDesignerView = create<DesignerView>((set) => ({
             editingId: editingId === id ? id : null,
           },
     ),
-  openSource: (id) => set(id === null ? { editingId: null } : { editingId: id, selectedId: id, handDialsDeg: null }),
+  openSource: (id) =>
+    set(id === null ? { editingId: null } : { editingId: id, selectedId: id, handDialsDeg: null }),
   listSolutions: (id) => set({ solutionsOfId: id }),
   turnByHand: (dialsDeg) => set({ handDialsDeg: dialsDeg }),
 }));

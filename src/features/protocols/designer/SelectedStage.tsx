@@ -1,0 +1,81 @@
+import type { Convention } from '../../../../shared/optics/convention';
+import { fastAxisFromDial } from '../../../../shared/optics/dial';
+import type { Stokes } from '../../../../shared/optics/stokes';
+import { ellipseOf } from '../../../../shared/optics/ellipse';
+import { degrees, toDegrees } from '../../../../shared/optics/units';
+import type { Bench } from '../../../../shared/schemas/benches';
+import type { Plate } from '../../../../shared/schemas/cabinet';
+import type { DraftTarget } from '../../../../shared/schemas/protocols';
+import { BeamLineStage, type StagePlate } from '../../../stage';
+import { reachedState } from './dialled-problem';
+import { Readout } from './Readout';
+import type { RowView } from './row-view';
+import { useDesignerView } from './view-store';
+
+interface SelectedStageProps {
+  readonly bench: Bench;
+  readonly input: Stokes;
+  readonly target: DraftTarget;
+  readonly view: Extract<RowView, { status: 'solved' }>;
+  readonly toleranceInfidelity: number;
+  readonly convention: Convention;
+  readonly onListSolutions: () => void;
+}
+
+function stagePlate(plate: Plate, dialDeg: number, solutionDialDeg: number): StagePlate {
+  const scale = {
+    offsetDeg: plate.calibration.offsetDeg,
+    direction: plate.mount.direction,
+    resolutionDeg: plate.mount.resolutionDeg,
+  };
+  return {
+    id: plate.id,
+    name: plate.name,
+    kind: plate.kind,
+    scale,
+    retardanceDeg: plate.calibration.retardanceDeg,
+    retardanceSigmaDeg: plate.calibration.retardanceSigmaDeg,
+    dialDeg,
+    fastAxisDeg: fastAxisFromDial(degrees(dialDeg), scale),
+    solutionDialDeg,
+  };
+}
+
+/** The bench with the selected row's angles on it, or with a plate turned by hand to see what that does. */
+export function SelectedStage(props: SelectedStageProps) {
+  const { bench, input, target, view, toleranceInfidelity, convention, onListSolutions } = props;
+  const { handDialsDeg, turnByHand } = useDesignerView();
+  const solutionDials = view.solution.dialsDeg;
+  const dialsDeg = handDialsDeg ?? solutionDials;
+  const reached = reachedState({ bench, input, target: view.reading.stokes, dialsDeg });
+  return (
+    <BeamLineStage
+      stage={{
+        wavelengthNm: bench.wavelengthNm,
+        polariser: {
+          axisDeg: toDegrees(ellipseOf(input).azimuthRad),
+          axisSigmaDeg: bench.polariserSigmaDeg,
+        },
+        plates: bench.plates.map((plate, index) =>
+          stagePlate(plate, dialsDeg[index] ?? 0, solutionDials[index] ?? 0),
+        ),
+        before: [input, ...reached.statesAfter.slice(0, -1)],
+        output: { label: target.label, state: reached.stokes },
+        convention,
+      }}
+      onDial={(index, dialDeg) =>
+        turnByHand(dialsDeg.map((dial, place) => (place === index ? dialDeg : dial)))
+      }
+      onBackToSolution={() => turnByHand(null)}
+    >
+      <Readout
+        label={target.label}
+        view={view}
+        plates={bench.plates}
+        toleranceInfidelity={toleranceInfidelity}
+        byHandInfidelity={handDialsDeg === null ? null : reached.infidelity}
+        onListSolutions={onListSolutions}
+      />
+    </BeamLineStage>
+  );
+}

@@ -1,0 +1,82 @@
+import { describe, expect, it } from 'vitest';
+import { DEFAULT_CONVENTION } from '../../../shared/optics/convention';
+import { benchProblem, solveRow, type SolvingBench } from '../../../shared/protocol/solve-row';
+import type { DraftTarget } from '../../../shared/schemas/protocols';
+import {
+  type RowView,
+  shownSolutions,
+  viewOf,
+  whatHoldsUp,
+} from '../../../src/features/protocols/designer/row-view';
+
+const plate = (retardanceDeg: number) => ({
+  mount: { direction: 1 as const, resolutionDeg: 0.1, repeatabilityDeg: 0.05 },
+  calibration: { retardanceDeg, retardanceSigmaDeg: 0.3, offsetDeg: 12.4, offsetSigmaDeg: 0.05 },
+});
+const bench: SolvingBench = {
+  inputExpression: 'H',
+  polariserSigmaDeg: 0.05,
+  plates: [plate(179.2), plate(88.9)],
+};
+
+function target(label: string, expression: string, heldFastAxesDeg: number[] | null = null): DraftTarget {
+  return { id: `0193a000-0000-7000-8000-00000000000${label.length}`, label, expression, heldFastAxesDeg };
+}
+
+function solvedView(row: DraftTarget): RowView {
+  const read = benchProblem(bench, DEFAULT_CONVENTION);
+  if (!read.ok) throw new Error(read.error.message);
+  return viewOf(row, { result: solveRow(row.expression, read.problem, DEFAULT_CONVENTION), stale: false });
+}
+
+function holdUp(...rows: readonly DraftTarget[]): string | null {
+  return whatHoldsUp(rows, rows.map(solvedView));
+}
+
+describe('what holds a version up', () => {
+  it('is nothing when every row is read, solved and labelled', () => {
+    expect(holdUp(target('a', 'D'), target('bb', 'bloch(109.47deg, 120deg)'))).toBeNull();
+  });
+
+  it('names the one row that cannot be read', () => {
+    expect(holdUp(target('a', 'D'), target('bb', 'cos(22.5) H'))).toBe(
+      'Row 2 can’t be read and holds this up.',
+    );
+  });
+
+  it('says that nothing is written yet', () => {
+    expect(holdUp()).toBe('No target is written yet.');
+  });
+
+  it('names the row whose label another row has', () => {
+    expect(holdUp(target('a', 'D'), target('a', 'A'))).toBe('Two rows are called a. Rename row 2.');
+  });
+
+  it('waits for rows whose numbers are of the text before', () => {
+    const row = target('a', 'D');
+    const view = solvedView(row);
+    expect(view.status).toBe('solved');
+    const stale = view.status === 'solved' ? { ...view, stale: true } : view;
+    expect(whatHoldsUp([row], [stale])).toBe('The last rows are still being solved.');
+  });
+});
+
+describe('a held solution', () => {
+  it('stands where its branch still exists, and is what the page shows the server', () => {
+    const free = solvedView(target('a', 'bloch(109.47deg, 120deg)'));
+    if (free.status !== 'solved') throw new Error('the row was not solved');
+    const other = free.solved.solutions[1];
+    if (other === undefined) throw new Error('there is one solution only');
+    const row = target('a', 'bloch(109.47deg, 120deg)', [...other.fastAxesDeg]);
+    const held = solvedView(row);
+    expect(held).toMatchObject({ held: true, chosen: 1 });
+    expect(shownSolutions([row], [held])[0]?.dialsDeg).toEqual(other.dialsDeg);
+  });
+
+  it('gives way to the ranking when no solution is near it', () => {
+    const free = solvedView(target('a', 'D'));
+    if (free.status !== 'solved') throw new Error('the row was not solved');
+    const far = free.solved.solutions[0]?.fastAxesDeg.map((angle) => (angle + 20) % 180) ?? [];
+    expect(solvedView(target('a', 'D', far))).toMatchObject({ held: false, chosen: 0 });
+  });
+});
