@@ -14,6 +14,7 @@ import {
   FormProblem,
   readTypedNumber,
   schemaResolver,
+  showServerFaults,
 } from '../../lib/forms';
 import { useLab } from '../labs';
 import { GapText } from '../../lib/GapText';
@@ -35,6 +36,7 @@ import { PlateOrder } from './PlateOrder';
 
 /** A part of the request whose field has another name in the form. */
 function fieldOf(path: string): keyof BenchValues | null {
+  if (path === 'name' || path === 'inputExpression') return path;
   if (path.startsWith('hazardWavelengthsNm')) return 'hazardWavelengthsNm';
   if (path === 'plateIds.1') return 'secondPlateId';
   return path.startsWith('plateIds') ? 'firstPlateId' : null;
@@ -68,6 +70,7 @@ export function BenchForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
       onSaved(saved);
     },
+    onError: (error) => void showServerFaults(error, setError, fieldOf),
   });
   const submit = (revision: number) => (body: CreateBench) => {
     const fault = inputFault(body.inputExpression, lab.convention);

@@ -9,6 +9,7 @@ import { GapText } from '../../lib/GapText';
 import { benchWarnings } from './bench-warnings';
 import { InputReading } from './InputReading';
 import { LaserCaution } from './LaserCaution';
+import { RetireBench } from './RetireBench';
 
 /** The plates as the light meets them, each with its age. */
 function PlatesInOrder({ bench, now }: { readonly bench: Bench; readonly now: Date }) {
@@ -59,9 +60,12 @@ export function BenchSection({ bench, now = new Date() }: { readonly bench: Benc
           <InputReading expression={bench.inputExpression} convention={lab.convention} /> behind the polariser
         </p>
         {may('benches.write') && (
-          <TextLink to={`/labs/${lab.id}/bench/${bench.id}/edit`} className="ml-auto">
-            Edit<span className="sr-only"> {bench.name}</span>
-          </TextLink>
+          <span className="ml-auto flex gap-5">
+            <TextLink to={`/labs/${lab.id}/bench/${bench.id}/edit`}>
+              Edit<span className="sr-only"> {bench.name}</span>
+            </TextLink>
+            <RetireBench bench={bench} />
+          </span>
         )}
       </div>
       <PlatesInOrder bench={bench} now={now} />

@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import type { Bench } from '../../../shared/schemas/benches';
 import { BeamEmpty } from '../../components/BeamState';
 import { ButtonLink } from '../../components/Button';
 import { TextLink } from '../../components/TextLink';
@@ -6,6 +7,7 @@ import { QueryState } from '../../lib/QueryState';
 import { useLab } from '../labs';
 import { BenchSection } from './BenchSection';
 import { benchesQuery } from './queries';
+import { RetireBench } from './RetireBench';
 import { RunList } from './RunList';
 
 /** The lab's optical set-ups, and the runs at them. */
@@ -13,6 +15,7 @@ export function Component() {
   const { lab, may } = useLab();
   const benches = useQuery(benchesQuery(lab.id));
   const items = benches.data?.items.filter(({ retiredAt }) => retiredAt === null);
+  const retired = benches.data?.items.filter(({ retiredAt }) => retiredAt !== null) ?? [];
   return (
     <>
       <title>Bench · Quarterturn</title>
@@ -43,9 +46,30 @@ export function Component() {
           ) : (
             items.map((bench) => <BenchSection key={bench.id} bench={bench} />)
           )}
+          {retired.length > 0 && <RetiredBenches benches={retired} />}
         </div>
         <RunList />
       </div>
     </>
+  );
+}
+
+/** Benches out of use, each with the way back for those who may take it. */
+function RetiredBenches({ benches }: { readonly benches: readonly Bench[] }) {
+  const { may } = useLab();
+  return (
+    <section aria-labelledby="retired-benches" className="border-ink border-t-[1.5px] pt-4">
+      <h2 id="retired-benches" className="text-section mb-1">
+        Retired
+      </h2>
+      <ul>
+        {benches.map((bench) => (
+          <li key={bench.id} className="border-hair flex items-baseline justify-between gap-4 border-b py-2">
+            {bench.name}
+            {may('benches.write') && <RetireBench bench={bench} />}
+          </li>
+        ))}
+      </ul>
+    </section>
   );
 }

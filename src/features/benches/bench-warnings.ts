@@ -9,10 +9,7 @@ export function calibratedElsewhere(plate: Plate, benchNm: number): boolean {
   return Math.abs(plate.calibration.wavelengthNm - benchNm) > sameWavelengthNm;
 }
 
-/**
- * What a person should know before these plates stand in this bench. None of it stops the bench: a plate may be moved,
- * and a calibration recorded, afterwards.
- */
+/** What a person should know before these plates stand in this bench; the server refuses a plate that stands elsewhere. */
 export function benchWarnings(
   plates: readonly Plate[],
   wavelengthNm: number,
@@ -28,7 +25,7 @@ export function benchWarnings(
     const others = plate.benches.filter(({ id }) => id !== benchId).map(({ name }) => name);
     if (others.length > 0) {
       warnings.push(
-        `${plate.name} already stands at ${others.join(' and ')}. Only one of the benches can have it in the beam at a time, and a new seat needs a new zero.`,
+        `${plate.name} stands in the beam of ${others.join(' and ')}. Choose another, or take it out there first.`,
       );
     }
     if (plate.retiredAt !== null) {

@@ -22,3 +22,11 @@ export function createBench(labId: string, body: CreateBench, idempotencyKey: st
 export function updateBench(labId: string, benchId: string, body: CreateBench, ifMatch: number) {
   return request<Bench>(`/labs/${labId}/benches/${benchId}`, { method: 'PUT', body, ifMatch });
 }
+
+export function retireBench(labId: string, benchId: string, ifMatch: number) {
+  return request<Bench>(`/labs/${labId}/benches/${benchId}/retire`, { method: 'POST', ifMatch });
+}
+
+export function returnBench(labId: string, benchId: string, ifMatch: number) {
+  return request<Bench>(`/labs/${labId}/benches/${benchId}/return`, { method: 'POST', ifMatch });
+}

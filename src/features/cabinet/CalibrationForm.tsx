@@ -2,7 +2,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useForm } from 'react-hook-form';
 import type { CalibrationInput, Plate } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
-import { FormProblem, schemaResolver, useIdempotencyKey } from '../../lib/forms';
+import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
 import { CalibrationFields } from './CalibrationFields';
 import {
   calibrationFormSchema,
@@ -22,7 +22,11 @@ export function CalibrationForm(props: {
   const { labId, plate, now, onDone } = props;
   const queryClient = useQueryClient();
   const keyFor = useIdempotencyKey();
-  const { register, formState, handleSubmit } = useForm<CalibrationValues, unknown, CalibrationInput>({
+  const { register, formState, handleSubmit, setError } = useForm<
+    CalibrationValues,
+    unknown,
+    CalibrationInput
+  >({
     defaultValues: emptyCalibration(plate.calibration, now),
     resolver: schemaResolver(calibrationFormSchema, readCalibration),
     mode: 'onTouched',
@@ -33,6 +37,8 @@ export function CalibrationForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
     },
+    onError: (error) =>
+      void showServerFaults(error, setError, (path) => (path === 'measuredAt' ? path : null)),
   });
   const relying = plate.benches.map(({ name }) => name).join(' and ');
   return (

@@ -3,7 +3,13 @@ import { useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { type Plate, type UpdatePlate, updatePlateSchema } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
-import { conflictingState, EditConflict, FormProblem, schemaResolver } from '../../lib/forms';
+import {
+  conflictingState,
+  EditConflict,
+  FormProblem,
+  schemaResolver,
+  showServerFaults,
+} from '../../lib/forms';
 import { plateConflict, plateDifferences } from './plate-conflict';
 import { plateFault } from './plate-fault';
 import { type PlateValues, readPlate, valuesOfPlate } from './plate-form-values';
@@ -20,7 +26,7 @@ export function EditPlateForm(props: {
   const queryClient = useQueryClient();
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [baseRevision, setBaseRevision] = useState(plate.revision);
-  const { register, control, formState, handleSubmit, setValue, getValues, reset } = useForm<
+  const { register, control, formState, handleSubmit, setValue, setError, getValues, reset } = useForm<
     PlateValues,
     unknown,
     UpdatePlate
@@ -37,6 +43,7 @@ export function EditPlateForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
     },
+    onError: (error) => void showServerFaults(error, setError, (path) => (path === 'name' ? path : null)),
   });
   const submit = (revision: number) => handleSubmit((body) => saving.mutate({ body, revision }));
   const theirs = plateConflict(conflictingState(saving.error));

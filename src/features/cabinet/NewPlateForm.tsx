@@ -3,7 +3,7 @@ import { useForm, useWatch } from 'react-hook-form';
 import type { z } from 'zod';
 import { type CreatePlate, createPlateSchema, type Plate } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
-import { FormProblem, schemaResolver, useIdempotencyKey } from '../../lib/forms';
+import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
 import { CalibrationFields } from './CalibrationFields';
 import {
   calibrationFormSchema,
@@ -26,6 +26,11 @@ const newPlateSchema: z.ZodType<CreatePlate> = createPlateSchema.extend({
   calibration: calibrationFormSchema,
 });
 
+/** The two things that only the server can see. */
+function fieldOf(path: string): 'name' | 'calibration.measuredAt' | null {
+  return path === 'name' || path === 'calibration.measuredAt' ? path : null;
+}
+
 /** A plate that comes into the cabinet: what it is, the mount it sits in, and its first calibration, without which no angle is known. */
 export function NewPlateForm(props: {
   readonly labId: string;
@@ -36,7 +41,7 @@ export function NewPlateForm(props: {
   const { labId, now, onCreated, onLeave } = props;
   const queryClient = useQueryClient();
   const keyFor = useIdempotencyKey();
-  const { register, control, formState, handleSubmit, setValue } = useForm<
+  const { register, control, formState, handleSubmit, setValue, setError } = useForm<
     NewPlateValues,
     unknown,
     CreatePlate
@@ -55,6 +60,7 @@ export function NewPlateForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onCreated(plate);
     },
+    onError: (error) => void showServerFaults(error, setError, fieldOf),
   });
   const { errors } = formState;
   return (

@@ -37,7 +37,13 @@ export function RetirePlate({ plate }: { readonly plate: Plate }) {
             <Button
               kind={retired ? 'filled' : 'danger'}
               onClick={() => changing.mutate()}
-              waitsFor={changing.isPending ? 'the server' : undefined}
+              waitsFor={
+                changing.isPending
+                  ? 'the server'
+                  : !retired && benches !== ''
+                    ? `another plate at ${benches}`
+                    : undefined
+              }
             >
               {retired ? 'Return' : 'Retire'} {plate.name}
             </Button>
@@ -55,7 +61,7 @@ export function RetirePlate({ plate }: { readonly plate: Plate }) {
             It leaves the tray and cannot be chosen for a bench.{' '}
             {benches === ''
               ? 'No bench has it in its beam now.'
-              : `It stands at ${benches}: choose another plate there.`}{' '}
+              : `It stands in the beam of ${benches}: put another plate there first.`}{' '}
             Versions and runs that used it keep it. It can be returned.
           </p>
         )}

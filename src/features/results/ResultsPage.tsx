@@ -1,8 +1,9 @@
-import { useQuery } from '@tanstack/react-query';
+import { useInfiniteQuery, useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { LastMade } from '../../../shared/schemas/home';
 import type { RunSummary } from '../../../shared/schemas/runs';
 import { BeamEmpty } from '../../components/BeamState';
+import { Button } from '../../components/Button';
 import { DataCell, DataRow, DataTable, HeadCell, RowHead, TableHead } from '../../components/DataTable';
 import { FidelityChip } from '../../components/FidelityChip';
 import { fidelityVerdict } from '../../components/fidelity-verdict';
@@ -12,7 +13,7 @@ import { formatMoment } from '../../lib/format';
 import { QueryState } from '../../lib/QueryState';
 import { homeQuery } from '../home';
 import { useLab } from '../labs';
-import { runsQuery } from './queries';
+import { runPagesQuery } from './queries';
 import { runHref, runProgressWords } from './run-words';
 
 /** The worst target of a run as its dials really said, against the tolerance of its version. */
@@ -72,9 +73,9 @@ function RunRow(props: {
 export function Component() {
   const { lab, may } = useLab();
   const [now] = useState(() => new Date());
-  const runs = useQuery(runsQuery(lab.id));
+  const runs = useInfiniteQuery(runPagesQuery(lab.id));
   const home = useQuery(homeQuery(lab.id));
-  const items = runs.data?.items;
+  const items = runs.data?.pages.flatMap((page) => page.items);
   return (
     <>
       <title>Results · Quarterturn</title>
@@ -94,26 +95,38 @@ export function Component() {
           )}
         </BeamEmpty>
       ) : (
-        <DataTable caption="Runs, the newest first">
-          <TableHead>
-            <tr>
-              <HeadCell>run</HeadCell>
-              <HeadCell>version and bench</HeadCell>
-              <HeadCell>when and who</HeadCell>
-              <HeadCell>worst target as dialled, 1 − F; [ is the tolerance, better to the right</HeadCell>
-            </tr>
-          </TableHead>
-          <tbody>
-            {items.map((run) => (
-              <RunRow
-                key={run.id}
-                run={run}
-                made={home.data?.lastMade.find(({ runId }) => runId === run.id)}
-                now={now}
-              />
-            ))}
-          </tbody>
-        </DataTable>
+        <>
+          <DataTable caption="Runs, the newest first">
+            <TableHead>
+              <tr>
+                <HeadCell>run</HeadCell>
+                <HeadCell>version and bench</HeadCell>
+                <HeadCell>when and who</HeadCell>
+                <HeadCell>worst target as dialled, 1 − F; [ is the tolerance, better to the right</HeadCell>
+              </tr>
+            </TableHead>
+            <tbody>
+              {items.map((run) => (
+                <RunRow
+                  key={run.id}
+                  run={run}
+                  made={home.data?.lastMade.find(({ runId }) => runId === run.id)}
+                  now={now}
+                />
+              ))}
+            </tbody>
+          </DataTable>
+          {runs.hasNextPage && (
+            <p className="mt-5">
+              <Button
+                onClick={() => void runs.fetchNextPage()}
+                waitsFor={runs.isFetchingNextPage ? 'the server' : undefined}
+              >
+                Show older runs
+              </Button>
+            </p>
+          )}
+        </>
       )}
     </>
   );

@@ -4,6 +4,7 @@ import { TextLink } from '../../components/TextLink';
 import { SignInDrawing } from '../../sign-in-drawing/SignInDrawing';
 import { sessionQuery, signInHref } from './queries';
 import { safeReturnTo, signInProblem } from './sign-in-problem';
+import './sign-in-page.css';
 
 /** The one page for who is not signed in: a true drawing, two lines, one button. */
 export function Component() {
@@ -13,37 +14,32 @@ export function Component() {
   const { data: session } = useQuery(sessionQuery);
   if (session !== undefined && session.user !== null) return <Navigate to={returnTo} replace />;
   return (
-    <main id="page" className="relative flex min-h-dvh flex-col overflow-x-clip">
+    <main id="page" className="sign-in-page">
       <title>Quarterturn</title>
-      <SignInDrawing />
-      <div className="relative px-5 pt-12 sm:px-10 lg:ml-[61.5vw] lg:px-0 lg:pt-[19.4dvh] lg:pr-10">
-        <h1 className="text-[2.75rem] leading-none font-[720] tracking-[-0.02em] sm:text-[3.75rem]">
-          Quarterturn
-        </h1>
-        <p className="mt-8 text-[1.3125rem] leading-[1.9375rem]">
+      <div className="sign-in-words">
+        <h1 className="sign-in-name">Quarterturn</h1>
+        <p className="sign-in-lines">
           From a state on paper to the angles of your own plates.
           <br />A week later, whether the table still makes it.
         </p>
         {problem !== null && (
-          <p role="alert" className="text-fault font-strong mt-6 max-w-md">
+          <p role="alert" className="text-fault font-strong mt-5 max-w-md">
             {problem}
           </p>
         )}
-        <a
-          href={signInHref(returnTo)}
-          className="border-ink bg-ink text-paper hover:bg-ink-2 mt-9 inline-flex min-h-[3.375rem] items-center rounded border px-7 text-[1.1875rem] font-strong"
-        >
+        <a href={signInHref(returnTo)} className="sign-in-button">
           Sign in with GitHub
         </a>
-        <p className="text-s text-ink-2 mt-4 max-w-[25rem]">
+        <p className="text-s text-ink-2 mt-4 max-w-[25.5rem]">
           Quarterturn reads your GitHub name and e-mail address and nothing else. A lab opens to you when its
           lead has invited you.
         </p>
-        <p className="mt-8">
+        <p className="mt-7">
           <TextLink to="/quick-angles">Angles for one state, without signing in</TextLink>
         </p>
       </div>
-      <footer className="text-s relative mt-auto flex gap-7 px-5 pt-16 pb-9 sm:px-10 lg:ml-[61.5vw] lg:px-0">
+      <SignInDrawing />
+      <footer className="sign-in-foot text-s">
         <TextLink to="/how-numbers-are-made">How the numbers are made</TextLink>
         <TextLink to="/privacy">Privacy</TextLink>
       </footer>

@@ -53,7 +53,7 @@ describe('what a person should know before plates stand in a bench', () => {
   it('warns of another wavelength and of another bench, by name', () => {
     const [elsewhere, taken] = benchWarnings([plateFixture()], 780, null);
     expect(elsewhere).toMatch(/Q-B is calibrated at 810\u202fnm, not at 780\u202fnm/);
-    expect(taken).toMatch(/Q-B already stands at signal arm/);
+    expect(taken).toMatch(/Q-B stands in the beam of signal arm\. Choose another/);
   });
 
   it('is silent about the bench itself at its own wavelength', () => {
