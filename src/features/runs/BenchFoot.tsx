@@ -1,13 +1,19 @@
 import type { VersionContent } from '../../../shared/schemas/versions';
 import { Button } from '../../components/Button';
-import { ProgressRule } from '../../components/ProgressRule';
+import { ProgressRule, type RuleDivision } from '../../components/ProgressRule';
 import { minutesLeft } from './run-progress';
 import type { Bench } from './use-bench';
+import type { BenchShape } from './use-bench-shape';
 import { useLongPress } from './use-long-press';
+
+/** About how wide the rule is, and a character under it: labels that would run into each other are left out. */
+const ruleWidthPx: Readonly<Record<BenchShape, number>> = { landscape: 520, portrait: 752, phone: 350 };
+const labelCharacterPx = 9;
 
 interface BenchFootProps {
   readonly bench: Bench;
   readonly content: VersionContent;
+  readonly shape: BenchShape;
   /** What the one button says; null when there is nothing to confirm. */
   readonly mainLabel: string | null;
   readonly onMain: () => void;
@@ -20,6 +26,7 @@ interface BenchFootProps {
 export function BenchFoot({
   bench,
   content,
+  shape,
   mainLabel,
   onMain,
   onOther,
@@ -27,19 +34,31 @@ export function BenchFoot({
   onSettings,
 }: BenchFootProps) {
   const press = useLongPress(onMain, onOther ?? onMain);
+  const labelsFit =
+    Math.max(...content.targets.map(({ label }) => label.length)) * labelCharacterPx + 6 <
+    ruleWidthPx[shape] / bench.settingCount;
+  const divisions = content.targets.map(({ label }, index): RuleDivision => {
+    const outcome = bench.outcomes[index];
+    const state =
+      index === bench.setting ? 'current' : outcome === 'open' || outcome === undefined ? 'ahead' : outcome;
+    // The index stands under the present one, and its label is at the head of the page.
+    return { group: labelsFit && state !== 'current' ? label : '', state };
+  });
   return (
     <footer className="bench-foot">
       <button type="button" className="bench-rule" aria-haspopup="dialog" onClick={onSettings}>
         <ProgressRule
-          divisions={content.targets.map(({ label }, index) => ({
-            label,
-            state: bench.outcomes[index] ?? 'open',
-          }))}
-          current={bench.setting}
+          divisions={divisions}
+          label={
+            bench.setting < bench.settingCount
+              ? `setting ${bench.setting + 1} of ${bench.settingCount}`
+              : 'all settings passed'
+          }
+          showGroups={labelsFit}
         />
         <span className="bench-rule-words">
           <RunWords bench={bench} />
-          <u>Settings and more</u>
+          <u>all settings</u>
         </span>
       </button>
       <Button
@@ -63,9 +82,11 @@ export function BenchFoot({
         </Button>
       )}
       {mainLabel !== null && (
-        <Button size="far" kind="filled" className="bench-main" aria-keyshortcuts="Space" {...press}>
-          {mainLabel}
-        </Button>
+        <div className="bench-main-place">
+          <Button size="far" kind="filled" className="bench-main" aria-keyshortcuts="Space" {...press}>
+            {mainLabel}
+          </Button>
+        </div>
       )}
     </footer>
   );

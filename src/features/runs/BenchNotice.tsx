@@ -1,5 +1,5 @@
 import { useBenchTheme } from '../../app/theme';
-import { BeamState } from '../../components/BeamState';
+import { BeamWorking, BeamWrong } from '../../components/BeamState';
 import { BenchNavigation } from '../../components/BenchNavigation';
 import { TextLink } from '../../components/TextLink';
 import { useLab } from '../labs';
@@ -26,15 +26,11 @@ export function BenchNotice({ failed, atBench }: BenchNoticeProps) {
       <BenchNavigation homeHref={`/labs/${lab.id}`} targets={benchTargets(lab.id)} />
       <main id="page" tabIndex={-1} className="px-5 pt-12 sm:px-10">
         {failed === null ? (
-          <BeamState state="working" title="Fetching the run" />
+          <BeamWorking doing="Fetching the run" />
         ) : (
-          <BeamState
-            state="wrong"
-            title="The run could not be fetched"
-            action={<TextLink to={`/labs/${lab.id}/bench`}>Go to the bench</TextLink>}
-          >
-            {failed.message}
-          </BeamState>
+          <BeamWrong title="The run could not be fetched">
+            {failed.message} <TextLink to={`/labs/${lab.id}/bench`}>Go to the bench</TextLink>
+          </BeamWrong>
         )}
       </main>
     </>

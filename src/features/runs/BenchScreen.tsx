@@ -28,6 +28,11 @@ import { useRunState } from './use-run-state';
 import { useSending } from './use-sending';
 import { WaitingBand } from './WaitingBand';
 
+/** A touch that is felt, where the device has one to give. */
+function vibrate(pattern: number | number[]): void {
+  if ('vibrate' in navigator) navigator.vibrate(pattern);
+}
+
 type Sheet = 'none' | 'trouble' | 'other' | 'settings';
 
 interface BenchScreenProps {
@@ -57,7 +62,7 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
   const running = run.summary.state === 'running' && mayRecord;
   const now = running ? (steps?.now ?? null) : null;
   const nowPlate = now === null ? undefined : plates[now.plateIndex];
-  const ready = running && steps?.dialledDeg != null;
+  const ready = running && steps !== null && steps.dialledDeg !== null;
   const waitingCount = bench.entry.waiting.length;
   const waitsForReadings =
     waitingCount === 0
@@ -67,10 +72,10 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
   const main = (): void => {
     if (now !== null) {
       bench.confirm(now.plateIndex, now.wantedDeg);
-      navigator.vibrate?.(40);
+      vibrate(40);
     } else if (ready) {
       bench.record();
-      navigator.vibrate?.([40, 60, 40]);
+      vibrate([40, 60, 40]);
     }
   };
   // A press too many, a key held down, a glove that rests on the button: none of them confirms the next plate unseen.
@@ -122,7 +127,6 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
           aside={<BenchAside savedAt={sending.savedAt} waiting={waitingCount} kept={bench.entry.kept} />}
         />
         <WaitingBand
-          content={content}
           waiting={bench.entry.waiting}
           kept={bench.entry.kept}
           sending={sending}
@@ -191,6 +195,7 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
         <BenchFoot
           bench={bench}
           content={content}
+          shape={shape}
           mainLabel={mainLabel}
           onMain={onMain}
           onOther={onOther}

@@ -1,5 +1,5 @@
 import type { VersionSummary } from '../../../shared/schemas/protocols';
-import { BeamState } from '../../components/BeamState';
+import { BeamEmpty } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
 import { VersionSeal } from '../../components/VersionSeal';
 import { formatMoment } from '../../lib/format';
@@ -16,13 +16,10 @@ export function ChooseVersion({ labId, versions, unknownId }: ChooseVersionProps
   const now = new Date();
   if (versions.length === 0) {
     return (
-      <BeamState
-        state="empty"
-        title="No version to run yet"
-        action={<TextLink to={`/labs/${labId}/plan`}>Go to the protocols</TextLink>}
-      >
-        A run goes through a saved version. Save one in a protocol first.
-      </BeamState>
+      <BeamEmpty title="No version to run yet">
+        A run goes through a saved version. Save one in a protocol first.{' '}
+        <TextLink to={`/labs/${labId}/plan`}>Go to the protocols</TextLink>
+      </BeamEmpty>
     );
   }
   return (

@@ -54,13 +54,18 @@ export function PlateStation({ plate, step, side, shape }: PlateStationProps) {
       </div>
       <p className="bench-name">
         {plate.name}
-        {isNow && <span className="bench-place">{place}</span>}
+        {(isNow || side === 'source') && (
+          <span className="bench-place">
+            {[isNow ? place : null, side === 'source' ? 'seen from the source side' : null]
+              .filter((part) => part !== null)
+              .join(', ')}
+          </span>
+        )}
       </p>
       <p className="bench-dial font-mono">{shown}</p>
       <div className="bench-said">
         <Said {...{ plate, step }} shown={shown} />
       </div>
-      {side === 'source' && <p className="bench-mirrored">mirrored: seen from the source side</p>}
     </li>
   );
 }

@@ -6,7 +6,7 @@ import type { Command } from '../../lib/commands';
 import { formatTime } from '../../lib/format';
 import { BenchSheet } from './BenchSheet';
 import { KeyList } from './KeyList';
-import type { Bench } from './use-bench';
+import type { Bench, BenchReading } from './use-bench';
 
 interface SettingsSheetProps {
   readonly bench: Bench;
@@ -45,7 +45,7 @@ export function SettingsSheet({ bench, content, commands, onGo, onBlank, onClose
                     ? index === bench.setting
                       ? 'open now'
                       : 'open'
-                    : `${reading.outcome === 'done' ? 'recorded' : 'skipped'} ${formatTime(new Date(reading.recordedAt))}`}
+                    : outcomeWords(reading)}
                 </span>
                 {reading?.outcome === 'skipped' && <span className="bench-setting-note">{reading.note}</span>}
               </button>
@@ -86,4 +86,10 @@ export function SettingsSheet({ bench, content, commands, onGo, onBlank, onClose
       </div>
     </BenchSheet>
   );
+}
+
+function outcomeWords(reading: BenchReading): string {
+  const time = formatTime(new Date(reading.recordedAt));
+  const done = reading.outcome === 'done' ? 'recorded' : 'skipped';
+  return reading.recordedBy === null ? `${done} ${time}, waits here` : `${done} ${time}`;
 }

@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useEffect } from 'react';
 import { useSearchParams } from 'react-router-dom';
-import { BeamState } from '../../components/BeamState';
+import { BeamEmpty, BeamWorking, BeamWrong } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
 import { useLab } from '../labs';
 import { ChooseVersion } from './ChooseVersion';
@@ -25,24 +25,17 @@ export function StartRunPage() {
 
   const failed = versions.error ?? version.error;
   if (failed !== null) {
-    return (
-      <BeamState state="wrong" title="The version could not be fetched">
-        {failed.message}
-      </BeamState>
-    );
+    return <BeamWrong title="The version could not be fetched">{failed.message}</BeamWrong>;
   }
   if (versions.data === undefined || (summary !== undefined && version.data === undefined)) {
-    return <BeamState state="working" title="Fetching the version" />;
+    return <BeamWorking doing="Fetching the version" />;
   }
   if (!may('runs.record')) {
     return (
-      <BeamState
-        state="empty"
-        title="A guest reads runs and does not start them"
-        action={<TextLink to={`/labs/${lab.id}/bench`}>Go to the bench</TextLink>}
-      >
-        Ask an operator, a designer or the lead of {lab.name}.
-      </BeamState>
+      <BeamEmpty title="A guest reads runs and does not start them">
+        Ask an operator, a designer or the lead of {lab.name}.{' '}
+        <TextLink to={`/labs/${lab.id}/bench`}>Go to the bench</TextLink>
+      </BeamEmpty>
     );
   }
   return version.data === undefined ? (

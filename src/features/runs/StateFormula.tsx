@@ -12,5 +12,9 @@ interface StateFormulaProps {
 /** A state as its version wrote it, typeset; as typed where this page's parser no longer reads it. */
 export function StateFormula({ expression, convention }: StateFormulaProps) {
   const reading = useMemo(() => parseState(expression, convention), [expression, convention]);
-  return reading.ok ? <Formula tex={reading.latex} /> : <code className="font-mono">{expression}</code>;
+  return reading.ok ? (
+    <Formula latex={reading.latex} source={expression} />
+  ) : (
+    <code className="font-mono">{expression}</code>
+  );
 }

@@ -1,11 +1,9 @@
-import type { VersionContent } from '../../../shared/schemas/versions';
 import { TextButton } from '../../components/TextLink';
 import { formatTime } from '../../lib/format';
 import type { WaitingReading } from './kept-entry';
 import type { Sending } from './use-sending';
 
 interface WaitingBandProps {
-  readonly content: VersionContent;
   readonly waiting: readonly WaitingReading[];
   /** Whether they outlive this page. */
   readonly kept: boolean;
@@ -22,7 +20,7 @@ function readingsWait(count: number): string {
 }
 
 /** Says why readings are still on this device, that they are not lost, and what can be done. Nothing while all is well. */
-export function WaitingBand({ content, waiting, kept, sending, onDiscard }: WaitingBandProps) {
+export function WaitingBand({ waiting, kept, sending, onDiscard }: WaitingBandProps) {
   const { trouble, sendAgain } = sending;
   const [oldest] = waiting;
   if (oldest === undefined) return null;
@@ -30,17 +28,6 @@ export function WaitingBand({ content, waiting, kept, sending, onDiscard }: Wait
   const place = kept
     ? 'on this device'
     : 'in this page only, since the browser keeps nothing: do not close it';
-  const list = (
-    <ul className="bench-band-list">
-      {waiting.map(({ key, body, typedAt }) => (
-        <li key={key}>
-          Setting {body.settingIndex + 1} {content.targets[body.settingIndex]?.label},{' '}
-          {body.outcome === 'done' ? body.dialledDeg.join(', ') : `skipped: “${body.note}”`},{' '}
-          {formatTime(new Date(typedAt))}
-        </li>
-      ))}
-    </ul>
-  );
   if (trouble.kind === 'cut-off') {
     return (
       <section role="status" className="bench-band hatched">
@@ -51,7 +38,6 @@ export function WaitingBand({ content, waiting, kept, sending, onDiscard }: Wait
           {waiting.length === 1 ? 'itself' : 'themselves'}.
         </p>
         <TextButton onClick={sendAgain}>Send now</TextButton>
-        {list}
       </section>
     );
   }
@@ -68,7 +54,6 @@ export function WaitingBand({ content, waiting, kept, sending, onDiscard }: Wait
           Drop setting {oldest.body.settingIndex + 1}’s reading
         </TextButton>
       </span>
-      {list}
     </section>
   );
 }

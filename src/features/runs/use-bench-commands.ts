@@ -13,7 +13,8 @@ interface BenchCommandsInput {
 
 /** A button or link that has the focus takes Space for itself. */
 function focusTakesSpace(): boolean {
-  return document.activeElement?.closest('button, a, summary, input') != null;
+  const focused = document.activeElement;
+  return focused !== null && focused.closest('button, a, summary, input') !== null;
 }
 
 /** The keys of the bench, the same list that `?` shows. */

@@ -127,7 +127,8 @@ export function useBench(run: Run, content: VersionContent, store: BenchStore): 
       entry.confirm(plateIndex, dialDeg);
     },
     record: () => {
-      if (steps?.dialledDeg != null) put(readingBody(setting, steps.dialledDeg, note), null);
+      if (steps !== null && steps.dialledDeg !== null)
+        put(readingBody(setting, steps.dialledDeg, note), null);
     },
     skip: (reason) => put({ outcome: 'skipped', settingIndex: setting, note: reason.trim() }, turned()),
     goTo,
