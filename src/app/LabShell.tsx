@@ -1,6 +1,7 @@
 import { useQuery, useSuspenseQuery } from '@tanstack/react-query';
 import { Outlet, ScrollRestoration, useLocation, useNavigate } from 'react-router-dom';
 import { BeamNavigation } from '../components/BeamNavigation';
+import { LiveRegions } from '../components/LiveRegions';
 import { useGoKeys } from '../components/use-go-keys';
 import { homeQuery } from '../features/home';
 import { useLab } from '../features/labs';
@@ -37,6 +38,7 @@ export function LabShell() {
       <main id="page" tabIndex={-1} className="px-5 pb-10 sm:px-10">
         <Outlet />
       </main>
+      <LiveRegions />
       <ScrollRestoration />
     </>
   );

@@ -17,7 +17,7 @@ function ownPath(request: Request): string {
 /** Sends a stranger to sign in, and a person without a lab to make or join one. */
 function entry(queryClient: QueryClient) {
   return async () => {
-    const session = await queryClient.ensureQueryData(sessionQuery);
+    const session = await queryClient.query({ ...sessionQuery, staleTime: 'static' });
     if (session.user === null) return redirect('/sign-in');
     const [first] = session.labs;
     return redirect(first === undefined ? '/welcome' : `/labs/${first.id}`);
@@ -26,7 +26,7 @@ function entry(queryClient: QueryClient) {
 
 function signedIn(queryClient: QueryClient) {
   return async ({ request }: LoaderFunctionArgs) => {
-    const session = await queryClient.ensureQueryData(sessionQuery);
+    const session = await queryClient.query({ ...sessionQuery, staleTime: 'static' });
     if (session.user === null) return redirect(`/sign-in?returnTo=${encodeURIComponent(ownPath(request))}`);
     return null;
   };
@@ -39,12 +39,12 @@ function inLab(queryClient: QueryClient) {
     const away = await requireUser(args);
     if (away !== null) return away;
     const { labId } = args.params;
-    const session = await queryClient.ensureQueryData(sessionQuery);
+    const session = await queryClient.query({ ...sessionQuery, staleTime: 'static' });
     if (labId === undefined || !session.labs.some(({ id }) => id === labId)) {
       // The same answer as for a lab that does not exist.
       throw new ApiError(404, null, 'There is no such page, or it is not yours to see.');
     }
-    await queryClient.ensureQueryData(labQuery(labId));
+    await queryClient.query({ ...labQuery(labId), staleTime: 'static' });
     return null;
   };
 }

@@ -1,5 +1,5 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
-import { useForm } from 'react-hook-form';
+import { useForm, useWatch } from 'react-hook-form';
 import { useNavigate } from 'react-router-dom';
 import { v7 as newId } from 'uuid';
 import { createProtocolSchema, type DraftContent, type DraftTarget } from '../../../shared/schemas/protocols';
@@ -66,6 +66,7 @@ export function Component() {
       await navigate(`/labs/${lab.id}/plan/${protocol.id}`);
     },
   });
+  const start = useWatch({ control: form.control, name: 'start' });
   const { errors } = form.formState;
 
   if (!may('protocols.write')) {
@@ -121,8 +122,8 @@ export function Component() {
         />
         <SegmentedChoice
           label="targets to begin with"
-          value={form.watch('start')}
-          onChange={(start) => form.setValue('start', start)}
+          value={start}
+          onChange={(chosen) => form.setValue('start', chosen)}
           segments={[
             { value: 'empty', label: 'none' },
             { value: 'six-states', label: 'the six Pauli states' },

@@ -24,13 +24,13 @@ export function EditConflict(props: {
         <table className="w-full text-left">
           <thead className="text-s text-ink-2">
             <tr className="border-hair border-b">
-              <th scope="col" className="py-1 pr-4 font-normal">
+              <th scope="col" className="py-1 pr-4 font-words">
                 field
               </th>
-              <th scope="col" className="py-1 pr-4 font-normal">
+              <th scope="col" className="py-1 pr-4 font-words">
                 as it stands now
               </th>
-              <th scope="col" className="py-1 font-normal">
+              <th scope="col" className="py-1 font-words">
                 as you typed it
               </th>
             </tr>
@@ -38,7 +38,7 @@ export function EditConflict(props: {
           <tbody>
             {differences.map(({ field, theirs, yours }) => (
               <tr key={field} className="border-hair border-b">
-                <th scope="row" className="py-1.5 pr-4 font-normal">
+                <th scope="row" className="py-1.5 pr-4 font-words">
                   {field}
                 </th>
                 <td className="py-1.5 pr-4">{theirs === '' ? '—' : theirs}</td>

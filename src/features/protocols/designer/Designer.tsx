@@ -2,7 +2,7 @@ import { useEffect, useState } from 'react';
 import { parseState } from '../../../../shared/optics/expression';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
-import { BeamEmpty, BeamWrong } from '../../../components/BeamState';
+import { BeamEmpty, BeamWorking, BeamWrong } from '../../../components/BeamState';
 import { KeyList } from '../../../components/KeyList';
 import { TextLink } from '../../../components/TextLink';
 import { UndoSentence } from '../../../components/UndoSentence';
@@ -104,13 +104,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
             />
           </div>
           {solved.progress !== null && (
-            <BeamState
-              state="working"
-              title={`Solving, row ${solved.progress.done + 1} of ${solved.progress.total}`}
-              progress={solved.progress}
-            >
+            <BeamWorking doing="Solving" unit="row" done={solved.progress.done} total={solved.progress.total}>
               The rows done already can be read.
-            </BeamState>
+            </BeamWorking>
           )}
           {content.targets.length === 0 && (
             <BeamEmpty title="No targets yet">
