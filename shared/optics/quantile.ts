@@ -23,13 +23,13 @@ export function chiSquareQuantile(spread: PlaneSpread, probability: number): num
     high *= 2;
   let belowLow = -probability;
   let belowHigh = probabilityBelow(spread, rays, high) - probability;
-  for (let step = 0; step < 200 && high - low > 1e-9 * high; step += 1) {
+  for (let step = 0; step < 200 && high - low > 1e-7 * high; step += 1) {
     // Secant when it falls well inside, halving otherwise: neither end can stand still for long.
     const secant = low - (belowLow * (high - low)) / (belowHigh - belowLow);
     const margin = 0.02 * (high - low);
     const x = step % 3 !== 2 && secant > low + margin && secant < high - margin ? secant : (low + high) / 2;
     const below = probabilityBelow(spread, rays, x) - probability;
-    if (Math.abs(below) < 1e-10) return x;
+    if (Math.abs(below) < 1e-8) return x;
     if (below < 0) {
       low = x;
       belowLow = below;

@@ -11,7 +11,7 @@ export type Vector = readonly [C, C];
 export type Matrix = readonly [readonly [C, C], readonly [C, C]];
 
 export const complex = (re: number, im = 0): C => ({ re, im });
-const times = (a: C, b: C): C => complex(a.re * b.re - a.im * b.im, a.re * b.im + a.im * b.re);
+export const times = (a: C, b: C): C => complex(a.re * b.re - a.im * b.im, a.re * b.im + a.im * b.re);
 const plus = (a: C, b: C): C => complex(a.re + b.re, a.im + b.im);
 const conj = (a: C): C => complex(a.re, -a.im);
 
