@@ -81,7 +81,13 @@ export async function check(name, args, surroundings) {
   const { code, output } = await runGroup(args, surroundings, false);
   const isFine = code === 0;
   if (!isFine && !surroundings.signal.aborted) console.log(`\n${name} found this:\n${output.trimEnd()}\n`);
-  return report(name, isFine, started, { passed: 0, failed: isFine ? 0 : 1, skipped: 0 });
+  return report(
+    name,
+    isFine,
+    started,
+    { passed: 0, failed: isFine ? 0 : 1, skipped: 0 },
+    surroundings.signal,
+  );
 }
 
 /**
@@ -105,7 +111,7 @@ export async function vitest(name, args, surroundings, show = false) {
   if (code !== 0 && counts.failed === 0) counts.failed = 1;
   const isFine = counts.failed === 0;
   if (!isFine && !show && !surroundings.signal.aborted) console.log(`\n${name}:\n${output.trimEnd()}\n`);
-  return report(name, isFine, started, counts);
+  return report(name, isFine, started, counts, surroundings.signal);
 }
 
 /**
@@ -137,11 +143,13 @@ function readCounts(file) {
  * @param {boolean} isFine
  * @param {number} started
  * @param {Counts} counts
+ * @param {AbortSignal} signal
  * @returns {Outcome}
  */
-function report(name, isFine, started, counts) {
+function report(name, isFine, started, counts, signal) {
   const outcome = { name, isFine, seconds: (performance.now() - started) / 1000, counts };
-  console.log(describe(outcome));
+  // What ends because the run was interrupted has not failed.
+  if (!signal.aborted) console.log(describe(outcome));
   return outcome;
 }
 

@@ -92,7 +92,7 @@ async function bringUp(root, stoppers, giveUp) {
   await step(
     'server',
     () => startServer(place, { port, databaseUrl: urls.appUrl, fake }),
-    () => 'Server ready.',
+    () => (stoppers.isStopping ? null : 'Server ready.'),
   );
   if (stoppers.isStopping) return true;
   announce(runningFile, publicUrl);

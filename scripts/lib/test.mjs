@@ -104,7 +104,7 @@ async function runAll(root, filters, stoppers) {
     filters.length === 0
       ? await everything(surroundings, dataDirectory, browser)
       : await matching(surroundings, dataDirectory, needsBrowser, browser, filters);
-  say(`All done after ${secondsSince(began)}.`);
+  if (!signal.aborted) say(`All done after ${secondsSince(began)}.`);
   return outcomes;
 }
 
