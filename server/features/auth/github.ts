@@ -1,6 +1,6 @@
 import { Strategy } from 'passport-github2';
 import { z } from 'zod';
-import type { Config } from '../../config';
+import type { Config, GitHubEndpoints } from '../../config';
 import { PendingSignIns } from './pending-sign-ins';
 
 /** What we take from the provider. The subject is the identity; name, login and e-mail may change under it. */
@@ -32,6 +32,7 @@ export class ProviderError extends Error {
 }
 
 type Known = (error: null, person: GitHubPerson) => void;
+type Profiled = (error: ProviderError | null, person?: GitHubPerson) => void;
 type Exchanged = (
   error: ProviderError | null,
   token?: string,
@@ -44,8 +45,6 @@ type Exchanged = (
  * of the e-mail list ends the process.
  */
 export class GitHubStrategy extends Strategy {
-  readonly #config: Config;
-
   constructor(config: Config) {
     const { clientId, clientSecret, endpoints } = config.github;
     const options = {
@@ -62,61 +61,63 @@ export class GitHubStrategy extends Strategy {
     super(options, (_accessToken: string, _refreshToken: string, person: GitHubPerson, done: Known) => {
       done(null, person);
     });
-    this.#config = config;
-    // Set here because the types of the packages know only their older, shorter store, and an exchange without a limit.
-    Object.assign(this, { _stateStore: new PendingSignIns() });
+    // Set here because the types of the packages know only their older, shorter store, and an exchange without a limit;
+    // and as plain properties, because passport works on a clone of this for each request.
+    Object.assign(this, {
+      _stateStore: new PendingSignIns(),
+      userProfile: (accessToken: string, done: Profiled) => {
+        personOf(endpoints, accessToken).then(
+          (person) => done(null, person),
+          (error: unknown) => done(asProviderError(error)),
+        );
+      },
+    });
     Object.assign(this._oauth2, {
       getOAuthAccessToken: (code: string, parameters: unknown, done: Exchanged) => {
-        const deadline = AbortSignal.timeout(exchangeMs * 0.6);
-        this.#exchange(code, z.record(z.string(), z.string()).parse(parameters), deadline).then(
+        exchange(config.github, code, parameters).then(
           (token) => done(null, token, '', {}),
           (error: unknown) => done(asProviderError(error)),
         );
       },
     });
   }
+}
 
-  async #exchange(code: string, parameters: Record<string, string>, signal: AbortSignal): Promise<string> {
-    const { clientId, clientSecret, endpoints } = this.#config.github;
-    const answer = await ask(endpoints.token, signal, {
-      method: 'POST',
-      body: new URLSearchParams({ ...parameters, code, client_id: clientId, client_secret: clientSecret }),
-    });
-    return tokenAnswer.parse(answer).access_token;
-  }
+async function exchange(
+  { clientId, clientSecret, endpoints }: Config['github'],
+  code: string,
+  parameters: unknown,
+): Promise<string> {
+  const body = new URLSearchParams({
+    ...z.record(z.string(), z.string()).parse(parameters),
+    code,
+    client_id: clientId,
+    client_secret: clientSecret,
+  });
+  const answer = await ask(endpoints.token, AbortSignal.timeout(exchangeMs * 0.6), { method: 'POST', body });
+  return tokenAnswer.parse(answer).access_token;
+}
 
-  override userProfile(
-    accessToken: string,
-    done: (error?: Error | null, profile?: GitHubPerson) => void,
-  ): void {
-    this.#person(accessToken).then(
-      (person) => done(null, person),
-      (error: unknown) => done(asProviderError(error)),
-    );
-  }
-
-  async #person(accessToken: string): Promise<GitHubPerson> {
-    const signal = AbortSignal.timeout(exchangeMs * 0.4);
-    const { endpoints } = this.#config.github;
-    const init = { headers: { Authorization: `Bearer ${accessToken}` } };
-    const [userText, emailsText] = await Promise.all([
-      ask(endpoints.user, signal, init),
-      // Nobody needs an e-mail address to sign in.
-      ask(endpoints.emails, signal, init).catch(() => []),
-    ]);
-    const user = userAnswer.parse(userText);
-    const emails = emailsAnswer.safeParse(emailsText);
-    const chosen = emails.success
-      ? emails.data.find(({ primary, verified }) => primary && verified)
-      : undefined;
-    const name = (user.name ?? '').trim();
-    return {
-      subject: String(user.id),
-      login: user.login,
-      name: name === '' ? user.login : name,
-      email: chosen?.email ?? null,
-    };
-  }
+async function personOf(endpoints: GitHubEndpoints, accessToken: string): Promise<GitHubPerson> {
+  const signal = AbortSignal.timeout(exchangeMs * 0.4);
+  const asking = { headers: { Authorization: `Bearer ${accessToken}` } };
+  const [userText, emailsText] = await Promise.all([
+    ask(endpoints.user, signal, asking),
+    // Nobody needs an e-mail address to sign in.
+    ask(endpoints.emails, signal, asking).catch(() => []),
+  ]);
+  const user = userAnswer.parse(userText);
+  const emails = emailsAnswer.safeParse(emailsText);
+  const chosen = emails.success
+    ? emails.data.find(({ primary, verified }) => primary && verified)
+    : undefined;
+  const name = (user.name ?? '').trim();
+  return {
+    subject: String(user.id),
+    login: user.login,
+    name: name === '' ? user.login : name,
+    email: chosen?.email ?? null,
+  };
 }
 
 interface Asking {

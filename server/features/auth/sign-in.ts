@@ -1,6 +1,6 @@
 import { type Request, type RequestHandler, type Response, Router } from 'express';
 import type { Knex } from 'knex';
-import passport from 'passport';
+import passport, { type Authenticator } from 'passport';
 import type { Logger } from 'pino';
 import { z } from 'zod';
 import { recordAccountEvent } from '../../audit/record-account-event';
@@ -28,10 +28,13 @@ export function toSignIn(response: Response, problem: SignInProblem): void {
 
 /** Sends a browser to the provider and takes it back. */
 export function signInRoutes(config: Config, database: Knex, logger: Logger): Router {
-  const strategy = new GitHubStrategy(config);
+  // By name and never as an instance: passport clones a named strategy for each request, and hangs the answers of two
+  // requests at once on one instance.
+  const authenticator = new passport.Passport();
+  authenticator.use('github', new GitHubStrategy(config));
   const router = Router();
   router.get('/auth/github', onOwnHost(config.publicOrigin), (request, response, next) => {
-    const start = asHandler(passport.authenticate(strategy, { session: false }));
+    const start = asHandler(authenticator.authenticate('github', { session: false }));
     start(request, response, next);
   });
 
@@ -50,7 +53,7 @@ export function signInRoutes(config: Config, database: Knex, logger: Logger): Ro
       await fail(request.query['error'] === 'access_denied' ? 'declined' : 'stale');
       return;
     }
-    const outcome = await askProvider(strategy, request, response, next);
+    const outcome = await askProvider(authenticator, request, response, next);
     if (outcome.kind === 'refused') return fail('stale');
     if (outcome.kind === 'broken') {
       logger.warn(
@@ -98,15 +101,15 @@ type Outcome =
   | { readonly kind: 'broken'; readonly reason: string };
 
 function askProvider(
-  strategy: GitHubStrategy,
+  authenticator: Authenticator,
   request: Request,
   response: Response,
   next: (error?: unknown) => void,
 ): Promise<Outcome> {
   return new Promise((resolve) => {
     const finish = asHandler(
-      passport.authenticate(
-        strategy,
+      authenticator.authenticate(
+        'github',
         { session: false },
         (error: unknown, person: unknown, info: unknown) => {
           if (error !== null && error !== undefined) {

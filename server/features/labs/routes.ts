@@ -15,6 +15,7 @@ import { conflict } from '../../errors';
 import { noBody, nothing, type Route, route } from '../../http/route';
 import { invitationRoutes } from './invitation-routes';
 import { asLab, findLab, insertLab, updateLab } from './lab-store';
+import { translateLab } from './translate-convention';
 import { addMember, asMember, countOtherLeads, findMember, listMembers } from './member-store';
 
 const labParams = z.strictObject({ labId: idSchema });
@@ -68,7 +69,7 @@ export function labRoutes(config: { readonly sessionSecret: string }): readonly 
       query: nothing,
       body: updateLabSchema,
       response: labSchema,
-      handler: async ({ body, thing, transaction, audit }) => {
+      handler: async ({ body, thing, user, transaction, audit, now }) => {
         const lab = {
           id: thing.id,
           name: body.name ?? thing.name,
@@ -76,10 +77,12 @@ export function labRoutes(config: { readonly sessionSecret: string }): readonly 
           calibrationDueDays: body.calibrationDueDays ?? thing.calibrationDueDays,
         };
         await updateLab(transaction, lab);
+        const change = { labId: thing.id, userId: user.id, now };
+        const translated = await translateLab(transaction, change, thing.convention, lab.convention);
         await audit({
           kind: 'lab.settings-changed',
           subjectId: lab.id,
-          details: { before: asLab(thing), after: lab },
+          details: { before: asLab(thing), after: lab, translated },
         });
         return { body: lab };
       },

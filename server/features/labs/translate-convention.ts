@@ -1,0 +1,67 @@
+import { z } from 'zod';
+import type { Convention } from '../../../shared/optics/convention';
+import { formatState, parseState } from '../../../shared/optics/expression';
+import { infidelityBetween } from '../../../shared/optics/stokes';
+import { draftContentSchema } from '../../../shared/schemas';
+import type { Transaction } from '../../db/database';
+
+const draftRow = z.object({ protocol_id: z.string(), content: z.string(), revision: z.number() });
+const benchRow = z.object({ id: z.string(), input_expression: z.string(), revision: z.number() });
+
+/** Two readings closer than this are one state that a convention does not touch. */
+const sameState = 1e-24;
+
+/** The same light in the words of another convention; what cannot be read stays as it was typed. */
+export function translateExpression(expression: string, from: Convention, to: Convention): string {
+  const before = parseState(expression, from);
+  if (!before.ok) return expression;
+  const after = parseState(expression, to);
+  if (after.ok && infidelityBetween(before.stokes, after.stokes) < sameState) return expression;
+  return formatState(before.jones, to);
+}
+
+/**
+ * Rewrites what a lab has written so far when it changes its convention: the change is in what is shown, never in what
+ * light the plates make. Versions keep the convention they were frozen with.
+ */
+export async function translateLab(
+  transaction: Transaction,
+  change: { readonly labId: string; readonly userId: string; readonly now: Date },
+  from: Convention,
+  to: Convention,
+): Promise<{ readonly drafts: number; readonly benches: number }> {
+  const { labId } = change;
+  const changed = { drafts: 0, benches: 0 };
+  const drafts = z
+    .array(draftRow)
+    .parse(await transaction('drafts').where({ lab_id: labId }).orderBy('protocol_id').forUpdate().select());
+  for (const { protocol_id, content, revision } of drafts) {
+    const draft = draftContentSchema.parse(JSON.parse(content));
+    const targets = draft.targets.map((target) => ({
+      ...target,
+      expression: translateExpression(target.expression, from, to),
+    }));
+    if (targets.every(({ expression }, index) => expression === draft.targets[index]?.expression)) continue;
+    changed.drafts += 1;
+    await transaction('drafts')
+      .where({ lab_id: labId, protocol_id })
+      .update({
+        content: JSON.stringify({ ...draft, targets }),
+        revision: revision + 1,
+        saved_at: change.now,
+        saved_by: change.userId,
+      });
+  }
+  const benches = z
+    .array(benchRow)
+    .parse(await transaction('benches').where({ lab_id: labId }).orderBy('id').forUpdate().select());
+  for (const { id, input_expression, revision } of benches) {
+    const translated = translateExpression(input_expression, from, to);
+    if (translated === input_expression) continue;
+    changed.benches += 1;
+    await transaction('benches')
+      .where({ lab_id: labId, id })
+      .update({ input_expression: translated, revision: revision + 1 });
+  }
+  return changed;
+}

@@ -1,0 +1,185 @@
+import { randomUUID } from 'node:crypto';
+import { z } from 'zod';
+import type { Role } from '../../../shared/permissions';
+import {
+  acceptedInvitationSchema,
+  benchSchema,
+  type CreatePlate,
+  createdInvitationSchema,
+  type DraftContent,
+  labSchema,
+  plateSchema,
+  type Protocol,
+  protocolSchema,
+  runSchema,
+  type ShownSolution,
+  type VersionSummary,
+  versionSummarySchema,
+} from '../../../shared/schemas';
+import { benchProblem, chooseSolution, solveRow } from '../../../shared/protocol/solve-row';
+import { answered, call } from './calls';
+import type { Agent, Harness } from './harness';
+
+export function plateBody(name: string, change: Partial<CreatePlate> = {}): CreatePlate {
+  return {
+    name,
+    kind: 'half',
+    designWavelengthNm: 808,
+    note: '',
+    mount: { name: `M ${name}`, direction: 1, resolutionDeg: 0.1, repeatabilityDeg: 0.06 },
+    calibration: {
+      wavelengthNm: 810,
+      retardanceDeg: 179.2,
+      retardanceSigmaDeg: 0.3,
+      offsetDeg: 12.4,
+      offsetSigmaDeg: 0.05,
+      method: 'Turned between crossed polarisers',
+      note: '',
+      measuredAt: '2026-06-01T10:00:00Z',
+    },
+    ...change,
+  };
+}
+
+export const quarterBody = (name: string): CreatePlate =>
+  plateBody(name, {
+    kind: 'quarter',
+    mount: { name: `M ${name}`, direction: -1, resolutionDeg: 0.1, repeatabilityDeg: 0.06 },
+    calibration: { ...plateBody(name).calibration, retardanceDeg: 86.9, offsetDeg: 301.73 },
+  });
+
+export function benchBody(plateIds: readonly string[], name = 'signal arm') {
+  return {
+    name,
+    wavelengthNm: 810,
+    inputExpression: 'H',
+    polariserSigmaDeg: 0.05,
+    laserClass: '3B' as const,
+    hazardWavelengthsNm: [405, 810],
+    plateIds: [...plateIds],
+  };
+}
+
+export const target = (label: string, expression: string): DraftContent['targets'][number] => ({
+  id: randomUUID(),
+  label,
+  expression,
+  heldFastAxesDeg: null,
+});
+
+/** A lab with something of everything, made through the API. */
+export interface TestLab {
+  readonly labId: string;
+  readonly plateIds: readonly [string, string];
+  readonly sparePlateId: string;
+  readonly benchId: string;
+  readonly protocolId: string;
+  readonly version: VersionSummary;
+  readonly runId: string;
+  readonly invitationId: string;
+  readonly invitationToken: string;
+}
+
+export async function makeLab(harness: Harness, lead: Agent, name: string): Promise<TestLab> {
+  const post = <S extends z.ZodType>(path: string, body: unknown, schema: S) =>
+    answered(call(harness, lead, 'post', path, { body }), schema);
+  const { id: labId } = await post('/labs', { name }, labSchema);
+  const first = await post(`/labs/${labId}/plates`, plateBody('H-3'), plateSchema);
+  const second = await post(`/labs/${labId}/plates`, quarterBody('Q-B'), plateSchema);
+  const spare = await post(`/labs/${labId}/plates`, plateBody('H-9'), plateSchema);
+  const bench = await post(`/labs/${labId}/benches`, benchBody([first.id, second.id]), benchSchema);
+  const protocol = await post(
+    `/labs/${labId}/protocols`,
+    {
+      name: 'Two states',
+      purpose: '',
+      benchId: bench.id,
+      toleranceInfidelity: 1e-3,
+      targets: [target('t1', 'H'), target('t2', '(H + i V)/sqrt(2)')],
+    },
+    protocolSchema,
+  );
+  const version = await saveVersion(harness, lead, labId, protocol);
+  const run = await post(
+    `/labs/${labId}/runs`,
+    { versionId: version.id, startDialsDeg: [null, 12.5], cautionAcknowledged: true },
+    runSchema,
+  );
+  const created = await post(
+    `/labs/${labId}/invitations`,
+    { role: 'guest', note: 'nobody yet' },
+    createdInvitationSchema,
+  );
+  return {
+    labId,
+    plateIds: [first.id, second.id],
+    sparePlateId: spare.id,
+    benchId: bench.id,
+    protocolId: protocol.id,
+    version,
+    runId: run.summary.id,
+    invitationId: created.invitation.id,
+    invitationToken: created.token,
+  };
+}
+
+/** Invites someone and lets them accept. */
+export async function join(
+  harness: Harness,
+  lead: Agent,
+  labId: string,
+  person: Agent,
+  role: Role,
+): Promise<void> {
+  const { token } = await answered(
+    call(harness, lead, 'post', `/labs/${labId}/invitations`, { body: { role, note: 'by the tests' } }),
+    createdInvitationSchema,
+  );
+  await answered(call(harness, person, 'post', `/invitations/${token}/accept`), acceptedInvitationSchema);
+}
+
+/** What the page would have shown: the same solver on the same bench. */
+export async function shownFor(
+  harness: Harness,
+  agent: Agent,
+  labId: string,
+  content: DraftContent,
+): Promise<ShownSolution[]> {
+  const lab = await answered(call(harness, agent, 'get', `/labs/${labId}`), labSchema);
+  const bench = await answered(
+    call(harness, agent, 'get', `/labs/${labId}/benches/${content.benchId}`),
+    benchSchema,
+  );
+  const faced = benchProblem(bench, lab.convention);
+  if (!faced.ok) throw new Error(faced.error.message);
+  return content.targets.map((row) => {
+    const result = solveRow(row.expression, faced.problem, lab.convention);
+    if (result.status === 'unreadable') throw new Error(result.error.message);
+    const solution = result.solved.solutions[chooseSolution(result.solved, row.heldFastAxesDeg).index];
+    if (solution === undefined) throw new Error('a solved row has a solution');
+    return {
+      targetId: row.id,
+      fastAxesDeg: [...solution.fastAxesDeg],
+      dialsDeg: [...solution.dialsDeg],
+      infidelity: solution.infidelity,
+      dialledInfidelity: solution.dialledInfidelity,
+    };
+  });
+}
+
+export async function saveVersion(
+  harness: Harness,
+  agent: Agent,
+  labId: string,
+  protocol: Protocol,
+  message = 'As measured today.',
+): Promise<VersionSummary> {
+  const shown = await shownFor(harness, agent, labId, protocol.draft.content);
+  return answered(
+    call(harness, agent, 'post', `/labs/${labId}/protocols/${protocol.id}/versions`, {
+      body: { message, shown },
+      ifMatch: `"r${protocol.draft.revision}"`,
+    }),
+    versionSummarySchema,
+  );
+}
