@@ -17,7 +17,7 @@ const size = {
   desk: 'min-h-10 px-4 py-2 text-[0.9375rem] leading-5',
   phone: 'min-h-11 px-4 py-2 text-[0.9375rem] leading-5',
   // A sleeve or a glove at the bench: 84 px at least, and the caller keeps 16 px between two.
-  far: 'min-h-21 px-6 py-3 text-2xl leading-7',
+  far: 'min-h-21 px-6 py-3 text-[1.125rem] leading-6',
 } as const;
 
 const shape =
@@ -65,7 +65,9 @@ export function Button({
         'disabled:cursor-default disabled:border-dashed disabled:border-rule disabled:bg-transparent disabled:text-ink-3',
         chosen === 'far' &&
           !waits &&
-          (kind === 'filled' ? 'border-[3px]' : 'border-2 border-rule text-[1.25rem]'),
+          (kind === 'filled'
+            ? 'border-[3px]! text-[1.375rem] font-section'
+            : 'border-2 border-rule text-ink-2'),
         className,
       )}
     >

@@ -59,7 +59,7 @@ export function FidelityChip({
       viewBox={`-3 -13 ${width + 6} 26`}
       width={width + 6}
       height="26"
-      className={classNames('shrink-0 overflow-visible', className)}
+      className={classNames('-ml-[3px] shrink-0 overflow-visible', className)}
     >
       <title>{words}</title>
       <path d={`M0 0H${width}`} className="stroke-rule" strokeWidth="0.6" />

@@ -73,7 +73,7 @@ export function LampInkSwitch() {
     <label className="flex min-h-11 cursor-pointer items-center gap-3">
       <input
         type="checkbox"
-        className="size-5 accent-act"
+        className="size-5.5 appearance-none border border-ink bg-glass checked:border-[7px] checked:border-act"
         checked={lampInk === 'red'}
         onChange={(event) => {
           setLampInk(event.currentTarget.checked ? 'red' : 'amber');

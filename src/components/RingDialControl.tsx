@@ -114,7 +114,7 @@ export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: 
             turnBy(-resolution);
           }}
         >
-          −
+          <StepSign />
         </Button>
         <NumberField
           id={fieldId}
@@ -135,9 +135,18 @@ export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: 
             turnBy(resolution);
           }}
         >
-          +
+          <StepSign more />
         </Button>
       </div>
     </div>
+  );
+}
+
+/** Drawn like the other signs: the words are the button's name. */
+function StepSign({ more = false }: { readonly more?: boolean }) {
+  return (
+    <svg aria-hidden="true" viewBox="-6 -6 12 12" width="12" height="12">
+      <path d={more ? 'M-5 0H5M0 -5V5' : 'M-5 0H5'} className="stroke-ink" strokeWidth="1.6" />
+    </svg>
   );
 }

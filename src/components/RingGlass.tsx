@@ -85,7 +85,7 @@ export function RingGlass({ radius, kind, seenTurn, viewedFrom, quiet, state }: 
             y={signY}
             textAnchor="middle"
             dominantBaseline="central"
-            fontSize={Math.max(10, glass * 0.34)}
+            fontSize={Math.max(11, glass * 0.3)}
             className={`${fill} font-strong`}
           >
             {kind === 'half' ? '½' : '¼'}

@@ -48,8 +48,8 @@ const Engraving = memo(function Engraving({
     numbersEveryDeg === null
       ? []
       : Array.from({ length: 360 / numbersEveryDeg }, (_, index) => index * numbersEveryDeg);
-  // The numerals keep their size in the eye: a little smaller on a small ring, never below what can be read.
-  const type = Math.min(17, Math.max(8.5, radius * (radius >= 90 ? 0.12 : 0.16)));
+  // The numerals keep their size in the eye: never below 11 px, whatever the ring's size.
+  const type = Math.min(17, Math.max(11, radius * 0.12));
   return (
     <>
       <g fill="none" className={quiet ? 'stroke-ink-3' : 'stroke-ink'}>

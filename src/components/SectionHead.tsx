@@ -8,11 +8,17 @@ export interface SectionHeadProps {
   /** A way on, at the right end. */
   readonly action?: ReactNode;
   readonly level?: 2 | 3;
-  /** Larger, for the two or three parts of a page like home. */
-  readonly large?: boolean;
+  /** Large for the two or three parts of a page like home, small for many heads on one page. */
+  readonly size?: 'small' | 'section' | 'large';
   readonly id?: string | undefined;
   readonly className?: string | undefined;
 }
+
+const sizes = {
+  small: 'text-[0.9375rem] leading-5.5 font-section',
+  section: 'text-section',
+  large: 'text-[1.375rem] leading-7 font-title',
+} as const;
 
 /** A section opens with an ink rule above its head, never a box. */
 export function SectionHead({
@@ -20,7 +26,7 @@ export function SectionHead({
   note,
   action,
   level = 2,
-  large = false,
+  size = 'section',
   id,
   className,
 }: SectionHeadProps) {
@@ -28,11 +34,11 @@ export function SectionHead({
   return (
     <div
       className={classNames(
-        'flex flex-wrap items-baseline gap-x-4 gap-y-1 border-t-[1.5px] border-ink pt-2.5',
+        'flex flex-wrap items-baseline gap-x-4 gap-y-1 border-t-[1.5px] border-ink pt-1.5',
         className,
       )}
     >
-      <Head id={id} className={large ? 'text-[1.375rem] leading-7 font-title' : 'text-section'}>
+      <Head id={id} className={sizes[size]}>
         {children}
       </Head>
       {note !== undefined && <span className="text-s text-ink-2">{note}</span>}

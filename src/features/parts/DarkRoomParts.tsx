@@ -31,7 +31,7 @@ export function DarkRoomParts() {
       data-lamp="mid"
       className="p-10 max-sm:px-5"
     >
-      <div className="-mt-12.5 flex justify-center">
+      <div className="-mt-4 flex justify-center">
         <RingDial
           radius={108}
           kind="half"
@@ -45,8 +45,8 @@ export function DarkRoomParts() {
         <b className="text-[1.375rem] text-act">H-3</b>{' '}
         <span className="ml-1 text-ink-2">first after the polariser</span>
       </p>
-      <p className="mt-7 text-center font-mono text-dial-far text-act">{formatDial(toDeg)}</p>
-      <p className="mt-7 text-center text-[1.1875rem]">
+      <p className="mt-4.5 text-center font-mono text-dial-far text-act">{formatDial(toDeg)}</p>
+      <p className="mt-4.5 text-center text-[1.1875rem]">
         {dialled ? (
           'dialled 83.5'
         ) : (
@@ -55,7 +55,7 @@ export function DarkRoomParts() {
           </>
         )}
       </p>
-      <div className="mt-9 grid grid-cols-[120fr_270fr] gap-4">
+      <div className="mt-7 grid grid-cols-[120fr_270fr] gap-4">
         <Button
           size="far"
           className="px-3"

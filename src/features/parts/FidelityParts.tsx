@@ -29,7 +29,7 @@ function Line({
 export function FidelityParts() {
   return (
     <section aria-labelledby="fidelity">
-      <SectionHead id="fidelity">
+      <SectionHead size="small" id="fidelity">
         Fidelity: <Formula latex="1-F" source="1 − F" /> on a log scale, better to the right, the bracket is
         the tolerance
       </SectionHead>

@@ -23,6 +23,7 @@ export function FormParts() {
   return (
     <section aria-labelledby="forms">
       <SectionHead
+        size="small"
         id="forms"
         note={<span role="status">{pressed === null ? '' : `Pressed: ${pressed}`}</span>}
       >
@@ -33,7 +34,9 @@ export function FormParts() {
           Release version 15
         </Button>
         <Button onClick={say('Ask for changes')}>Ask for changes</Button>
-        <Button onClick={say('in focus')}>in focus</Button>
+        <Button className="outline-3 outline-offset-2 outline-beam" onClick={say('in focus')}>
+          in focus
+        </Button>
         <Button waitsFor="row 8 can’t be read">waits for row 8</Button>
         <Button kind="danger" onClick={say('Withdraw version 12')}>
           Withdraw version 12

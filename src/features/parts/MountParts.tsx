@@ -19,8 +19,10 @@ function Shown({ children, words }: { readonly children: ReactNode; readonly wor
 export function MountParts() {
   return (
     <section aria-labelledby="mounts">
-      <SectionHead id="mounts">A mount, as the receiver sees it</SectionHead>
-      <div className="-mt-2 flex flex-wrap justify-between max-sm:justify-center">
+      <SectionHead size="small" id="mounts">
+        A mount, as the receiver sees it
+      </SectionHead>
+      <div className="mt-2 flex flex-wrap justify-between max-sm:justify-center">
         <Shown words="stands at 83.5">
           <RingDial radius={radius} kind="half" scale={half} readingDeg={83.5} label="H-3 stands at 83.5" />
         </Shown>

@@ -14,14 +14,16 @@ export default function PartsPage() {
     <main>
       <h1 className="sr-only">Parts: every component in its states</h1>
       <div className="grid desk:grid-cols-[minmax(0,1fr)_484px]">
-        <div className="flex flex-col gap-6 px-5 py-7 sm:px-10">
+        <div className="flex flex-col gap-5.5 px-5 py-7 sm:px-10">
           <MountParts />
           <VersionParts />
           <FidelityParts />
           <SignParts />
           <FormParts />
           <StateParts />
-          <TokenParts />
+          <div className="mt-4">
+            <TokenParts />
+          </div>
         </div>
         <DarkRoomParts />
       </div>

@@ -27,7 +27,9 @@ const signs: readonly { readonly sign: ReactNode; readonly words: string }[] = [
 export function SignParts() {
   return (
     <section aria-labelledby="signs">
-      <SectionHead id="signs">Small signs</SectionHead>
+      <SectionHead size="small" id="signs">
+        Small signs
+      </SectionHead>
       <ul className="m-0 mt-2 flex list-none flex-wrap justify-between p-0">
         {signs.map(({ sign, words }) => (
           <li key={words} className="flex w-24 flex-col items-center">

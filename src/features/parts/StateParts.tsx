@@ -5,7 +5,9 @@ import { SectionHead } from '../../components/SectionHead';
 export function StateParts() {
   return (
     <section aria-labelledby="states">
-      <SectionHead id="states">Nothing yet, working, gone wrong, cut off</SectionHead>
+      <SectionHead size="small" id="states">
+        Nothing yet, working, gone wrong, cut off
+      </SectionHead>
       <div className="mt-1 grid gap-x-4 gap-y-6 sm:grid-cols-4">
         <BeamEmpty title="No targets yet">Write one, paste a list, or take the six Pauli states.</BeamEmpty>
         <BeamWorking doing="Solving" unit="row" done={3} total={8} atOnce>

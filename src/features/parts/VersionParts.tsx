@@ -16,10 +16,12 @@ const letters: readonly BasisLetter[] = ['H', 'V', 'D', 'A', 'R', 'L'];
 /** Version seals and basis marks. */
 export function VersionParts() {
   return (
-    <div className="grid gap-x-9 gap-y-6 sm:grid-cols-[540fr_300fr]">
+    <div className="grid -mb-2 gap-x-9 gap-y-6 sm:grid-cols-[540fr_300fr]">
       <section aria-labelledby="versions">
-        <SectionHead id="versions">Versions</SectionHead>
-        <ul className="m-0 mt-3 flex list-none flex-wrap justify-between p-0">
+        <SectionHead size="small" id="versions">
+          Versions
+        </SectionHead>
+        <ul className="m-0 mt-1 flex list-none flex-wrap justify-between p-0">
           {seals.map(({ state, number }) => (
             <li key={state} className="flex w-19 flex-col items-center">
               <VersionSeal state={state} number={number} decorative />
@@ -29,8 +31,10 @@ export function VersionParts() {
         </ul>
       </section>
       <section aria-labelledby="basis">
-        <SectionHead id="basis">Basis: shape, then colour</SectionHead>
-        <ul className="m-0 mt-5 flex list-none p-0">
+        <SectionHead size="small" id="basis">
+          Basis: shape, then colour
+        </SectionHead>
+        <ul className="m-0 mt-3 flex list-none p-0">
           {letters.map((letter) => (
             <li key={letter} className="flex w-1/6 max-w-13 flex-col items-center">
               <BasisMark letter={letter} decorative />
