@@ -14,8 +14,8 @@ export function brokenUnique(error: unknown): string | null {
   return parsed.success && parsed.data.code === '23505' ? (parsed.data.constraint ?? null) : null;
 }
 
-/** 08 connection, 53 resources, 55P03 lock, 57 shutdown or timeout, 40 gave up after retries. */
-const passing = /^(?:08|53|57|40|55P03)/;
+/** 08 connection, 3D no such database (being restored), 53 resources, 55P03 lock, 57 shutdown or timeout, 40 gave up after retries. */
+const passing = /^(?:08|3D|53|57|40|55P03)/;
 const unreachable = new Set([
   'ECONNREFUSED',
   'ECONNRESET',
