@@ -18,7 +18,8 @@ interface BenchFootProps {
   readonly mainLabel: string | null;
   readonly onMain: () => void;
   readonly onOther: (() => void) | null;
-  readonly onTrouble: () => void;
+  /** Null where nothing can be recorded: a guest, or a paused run. */
+  readonly onTrouble: (() => void) | null;
   readonly onSettings: () => void;
 }
 
@@ -61,15 +62,17 @@ export function BenchFoot({
           <u>all settings</u>
         </span>
       </button>
-      <Button
-        size="far"
-        className="bench-trouble"
-        aria-haspopup="dialog"
-        aria-keyshortcuts="t"
-        onClick={onTrouble}
-      >
-        Note trouble
-      </Button>
+      {onTrouble !== null && (
+        <Button
+          size="far"
+          className="bench-trouble"
+          aria-haspopup="dialog"
+          aria-keyshortcuts="t"
+          onClick={onTrouble}
+        >
+          Note trouble
+        </Button>
+      )}
       {onOther !== null && (
         <Button
           size="far"

@@ -199,7 +199,7 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
           mainLabel={mainLabel}
           onMain={onMain}
           onOther={onOther}
-          onTrouble={() => setSheet('trouble')}
+          onTrouble={running ? () => setSheet('trouble') : null}
           onSettings={() => setSheet('settings')}
         />
       </div>

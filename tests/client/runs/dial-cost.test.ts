@@ -18,7 +18,14 @@ describe('what a reading costs', () => {
   test('a step short in the turn is short, a step beyond is past, whichever way the numbers run', () => {
     const [, wanted = 0] = wantedDials(content, 2);
     const cost = (typedDeg: number, fromDeg: number | null) =>
-      dialCost({ content, settingIndex: 2, plateIndex: 1, typedDeg, fromDeg, dialsDeg: wantedDials(content, 2) });
+      dialCost({
+        content,
+        settingIndex: 2,
+        plateIndex: 1,
+        typedDeg,
+        fromDeg,
+        dialsDeg: wantedDials(content, 2),
+      });
     expect(cost(wanted - 0.1, wanted - 30)?.side).toBe('short of');
     expect(cost(wanted + 0.1, wanted - 30)?.side).toBe('past');
     expect(cost(wanted + 0.1, wanted + 30)?.side).toBe('short of');
@@ -30,7 +37,14 @@ describe('what a reading costs', () => {
   test('one step hardly costs anything, ten degrees are not within', () => {
     const [first = 0] = wantedDials(content, 2);
     const cost = (typedDeg: number) =>
-      dialCost({ content, settingIndex: 2, plateIndex: 0, typedDeg, fromDeg: null, dialsDeg: wantedDials(content, 2) });
+      dialCost({
+        content,
+        settingIndex: 2,
+        plateIndex: 0,
+        typedDeg,
+        fromDeg: null,
+        dialsDeg: wantedDials(content, 2),
+      });
     const small = cost(first + 0.1);
     const large = cost(first + 10);
     expect(small?.within).toBe(true);

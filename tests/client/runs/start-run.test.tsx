@@ -1,0 +1,78 @@
+// @vitest-environment jsdom
+import { cleanup, screen, waitFor } from '@testing-library/react';
+import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
+import { startRunSchema } from '../../../shared/schemas/runs';
+import { FakeApi, openBench } from './bench-harness';
+import { labId, makeRun, makeVersion } from './fixture';
+
+const version = makeVersion();
+const path = `/labs/${labId}/bench/start?versionId=${version.summary.id}`;
+
+beforeEach(() => {
+  localStorage.clear();
+});
+afterEach(() => {
+  cleanup();
+  vi.unstubAllGlobals();
+});
+
+describe('the start of a run', () => {
+  test('says that nobody reviewed the version, and which plate was calibrated anew since', async () => {
+    openBench(new FakeApi(makeRun(version), version), { path });
+    expect(
+      await screen.findByText('Version 14 is saved, not released: nobody has reviewed it.'),
+    ).toBeTruthy();
+    expect(await screen.findByText(/^Q-B has a newer calibration/u)).toBeTruthy();
+    expect(screen.queryByText(/^H-3 has a newer calibration/u)).toBeNull();
+  });
+
+  test('shows the caution in full and starts nothing before it is acknowledged', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    const { user } = openBench(api, { path });
+    expect(await screen.findByText(/Wear eyewear made for 405 and 810/u)).toBeTruthy();
+    expect(screen.getByText(/IEC 60825-1/u)).toBeTruthy();
+    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    expect(screen.getByText('Read the caution and acknowledge it before the run starts.')).toBeTruthy();
+    expect(api.posts('/runs')).toHaveLength(0);
+  });
+
+  test('takes where the dials stand, an empty field as unknown, and explains a wrong one', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    const { user, router } = openBench(api, { path });
+    await user.click(await screen.findByRole('checkbox'));
+    const first = screen.getByRole('textbox', { name: 'H-3 says, degrees' });
+    await user.type(first, '83,5');
+    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    expect(screen.getByText('Write a point for decimals, as in 83.4.')).toBeTruthy();
+    expect(api.posts('/runs')).toHaveLength(0);
+    await user.clear(first);
+    await user.type(first, '83.5');
+    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    await waitFor(() => expect(api.posts('/runs')).toHaveLength(1));
+    const [asked] = api.posts('/runs');
+    expect(startRunSchema.parse(asked?.body).startDialsDeg).toEqual([83.5, null]);
+    expect(asked?.key).toMatch(/^[0-9a-f]{32}$/u);
+    await waitFor(() => expect(router.state.location.pathname).toMatch(/\/bench\/runs\//u));
+  });
+
+  test('says why the server would not start it, and a second try carries the same key', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    const { user } = openBench(api, { path });
+    await user.click(await screen.findByRole('checkbox'));
+    api.failWith = 'network';
+    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    expect(await screen.findByText(/The run did not start\. The server cannot be reached/u)).toBeTruthy();
+    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    await waitFor(() => expect(api.posts('/runs')).toHaveLength(2));
+    expect(new Set(api.posts('/runs').map(({ key }) => key)).size).toBe(1);
+  });
+
+  test('lists the versions when none is named, and a guest starts none', async () => {
+    openBench(new FakeApi(makeRun(version), version), { path: `/labs/${labId}/bench/start` });
+    const link = await screen.findByRole('link', { name: 'Tetrahedron, signal arm, version 14' });
+    expect(link.getAttribute('href')).toBe(path);
+    cleanup();
+    openBench(new FakeApi(makeRun(version), version), { path, role: 'guest' });
+    expect(await screen.findByText('A guest reads runs and does not start them')).toBeTruthy();
+  });
+});
