@@ -11,7 +11,7 @@ import { run, tail } from './run.mjs';
 import { announce, claim } from './running.mjs';
 import { Failure, say, sayFailure, secondsSince, step } from './say.mjs';
 import { choosePort, startFake, startServer } from './servers.mjs';
-import { ensureDataDirectory, readSettings } from './settings.mjs';
+import { ensureDataDirectory, readPort, readSettings } from './settings.mjs';
 import { createStoppers } from './stoppers.mjs';
 
 /** @typedef {import('./settings.mjs').Environment} Environment */
@@ -103,6 +103,7 @@ async function bringUp(root, stoppers, giveUp) {
 
 /** @param {Environment} settings */
 function checkSettings(settings) {
+  readPort(settings['PORT'], 'PORT');
   const isSet = (/** @type {string} */ name) => settings[name] !== undefined;
   if (isSet('GITHUB_CLIENT_ID') !== isSet('GITHUB_CLIENT_SECRET')) {
     throw new Failure(
