@@ -233,12 +233,15 @@ test('any state is written in any convention and reads back as itself', () => {
   expect(formatState(read('linear(22.5deg)').jones, DEFAULT_CONVENTION)).toBe('linear(22.5deg)');
 });
 
+/** Without the empty delimiters that only set the gap beside a bracket. */
+function latexOf(source: string): string {
+  return read(source).latex.replaceAll('\\mathopen{}', '').replaceAll('\\mathclose{}', '');
+}
+
 test('the TeX of an expression carries the factor in front and nothing of the source', () => {
-  expect(read('(H + i V)/sqrt(2)').latex).toBe(
-    '\\frac{1}{\\sqrt{2}}\\left(|H\\rangle+i\\,|V\\rangle\\right)',
-  );
-  expect(read('bloch(109.47deg, 120deg)').latex).toBe(
+  expect(latexOf('(H + i V)/sqrt(2)')).toBe('\\frac{1}{\\sqrt{2}}\\left(|H\\rangle+i\\,|V\\rangle\\right)');
+  expect(latexOf('bloch(109.47deg, 120deg)')).toBe(
     '\\mathrm{bloch}\\left(109.47^{\\circ},\\ 120^{\\circ}\\right)',
   );
-  expect(read('cos(22.5deg) H').latex).toBe('\\cos 22.5^{\\circ}\\,|H\\rangle');
+  expect(latexOf('cos(22.5deg) H')).toBe('\\cos 22.5^{\\circ}\\,|H\\rangle');
 });
