@@ -92,7 +92,7 @@ export function BenchForm(props: {
     <form
       noValidate
       onSubmit={(event) => void handleSubmit(submit(baseRevision))(event)}
-      className="grid gap-x-12 gap-y-8 lg:grid-cols-2"
+      className="grid grid-cols-1 gap-x-12 gap-y-8 lg:grid-cols-2"
     >
       <div className="space-y-4">
         <TextField label="bench’s name" {...field('name')} required />

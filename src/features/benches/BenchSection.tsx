@@ -30,7 +30,7 @@ function PlatesInOrder({ bench, now }: { readonly bench: Bench; readonly now: Da
               <TextLink to={`/labs/${lab.id}/cabinet/${plate.id}`} className="font-strong">
                 {plate.name}
               </TextLink>
-              <p className="text-s text-ink-2">
+              <p className="text-s text-ink-2 mt-1">
                 {formatUncertain(plate.calibration.retardanceDeg, plate.calibration.retardanceSigmaDeg)}° at{' '}
                 <Quantity text={String(plate.calibration.wavelengthNm)} unit="nm" />
               </p>

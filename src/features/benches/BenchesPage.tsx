@@ -30,7 +30,7 @@ export function Component() {
           )}
         </div>
       </header>
-      <div className="grid gap-x-14 gap-y-10 lg:grid-cols-[1fr_27rem]">
+      <div className="grid grid-cols-1 gap-x-14 gap-y-10 lg:grid-cols-[1fr_27rem]">
         <div className="space-y-10">
           {items === undefined ? (
             <QueryState query={benches} what="the benches" />

@@ -18,7 +18,7 @@ export function Component() {
   return (
     <>
       <title>{`${loaded?.name ?? 'Bench'} · Quarterturn`}</title>
-      <h1 className="text-title mb-1">{loaded?.name ?? 'Bench'}</h1>
+      <h1 className="text-title pt-2 mb-1">{loaded?.name ?? 'Bench'}</h1>
       <p className="text-ink-2 mb-6">
         Drafts solve for the bench as you save it. Versions and runs keep the bench they were made for.
       </p>

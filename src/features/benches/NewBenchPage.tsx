@@ -18,7 +18,7 @@ export function Component() {
   return (
     <>
       <title>New bench · Quarterturn</title>
-      <h1 className="text-title mb-6">A new bench</h1>
+      <h1 className="text-title pt-2 mb-6">A new bench</h1>
       {!may('benches.write') ? (
         <p>
           A designer or the lead sets up benches.{' '}

@@ -1,6 +1,11 @@
 import type { Calibration } from '../../../shared/schemas/cabinet';
 import { DataCell, DataRow, DataTable, HeadCell, RowHead } from '../../components/DataTable';
 import { formatMoment, formatUncertain } from '../../lib/format';
+import { OnPoint, widestFraction } from './OnPoint';
+
+const retardance = (calibration: Calibration) =>
+  formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg);
+const zero = (calibration: Calibration) => formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg);
 
 /** Calibrations of one plate, newest first. A wrong one is corrected by a later one, so nothing here can be changed. */
 export function CalibrationTable(props: {
@@ -17,7 +22,9 @@ export function CalibrationTable(props: {
             <HeadCell>measured</HeadCell>
             <HeadCell numeric>retardance(σ), degrees</HeadCell>
             <HeadCell numeric>zero(σ), degrees</HeadCell>
-            <HeadCell numeric>at, nm</HeadCell>
+            <HeadCell numeric className="whitespace-nowrap">
+              at, nm
+            </HeadCell>
           </tr>
         </thead>
         <tbody>
@@ -31,10 +38,13 @@ export function CalibrationTable(props: {
                 </span>
               </RowHead>
               <DataCell numeric className="align-top! py-2">
-                {formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}
+                <OnPoint
+                  text={retardance(calibration)}
+                  widest={widestFraction(calibrations.map(retardance))}
+                />
               </DataCell>
               <DataCell numeric className="align-top! py-2">
-                {formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg)}
+                <OnPoint text={zero(calibration)} widest={widestFraction(calibrations.map(zero))} />
               </DataCell>
               <DataCell numeric className="align-top! py-2">
                 {calibration.wavelengthNm}

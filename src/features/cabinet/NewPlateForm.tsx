@@ -65,7 +65,7 @@ export function NewPlateForm(props: {
   const { errors } = formState;
   return (
     <form noValidate onSubmit={(event) => void handleSubmit((body) => creating.mutate(body))(event)}>
-      <div className="grid gap-x-14 gap-y-8 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-14 gap-y-8 lg:grid-cols-2">
         <fieldset>
           <legend className="text-section mb-3">The plate and its mount</legend>
           <PlateFields

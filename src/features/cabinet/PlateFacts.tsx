@@ -41,13 +41,13 @@ export function PlateFacts(props: { readonly plate: Plate; readonly dueDays: num
           {kindNames[plate.kind]} in mount {mount.name}
         </p>
       </div>
-      <figure className="mt-2 flex flex-col items-center">
+      <figure className="flex flex-col items-center">
         <RingDial
           radius={95}
           kind={plate.kind}
           scale={{ offsetDeg: calibration.offsetDeg, direction: mount.direction }}
           readingDeg={calibration.offsetDeg}
-          className="max-w-full"
+          className="-my-3 max-w-full"
         />
         <figcaption className="text-ink-2 text-center">
           reads <b className="text-ink font-mono">{formatDial(calibration.offsetDeg, 0.01)}</b> when its fast

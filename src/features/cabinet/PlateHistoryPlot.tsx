@@ -10,11 +10,11 @@ interface Point {
   readonly sigma: number;
 }
 
-const height = 276;
+const height = 312;
 const left = 48;
 const right = 12;
-const upper = { from: 128, to: 16 } as const;
-const lower = { from: 232, to: 168 } as const;
+const upper = { from: 136, to: 28 } as const;
+const lower = { from: 268, to: 184 } as const;
 
 function bandScale(
   points: readonly Point[],
@@ -117,14 +117,14 @@ export function PlateHistoryPlot(props: {
         aria-describedby={tableId}
         className="block"
       >
-        <text x={left + 6} y={upper.to - 4} className="fill-ink-2 text-s">
+        <text x={left + 6} y={13} className="fill-ink-2 text-s">
           retardance, degrees, ± σ
         </text>
         <Band points={retardances} scale={bandScale(retardances, upper, 1)} time={time} width={width} />
-        <text x={left + 6} y={lower.to - 8} className="fill-ink-2 text-s">
+        <text x={left + 6} y={lower.to - 12} className="fill-ink-2 text-s">
           zero since the first one, degrees, ± σ
         </text>
-        <Band points={zeros} scale={bandScale(zeros, lower, 0.4)} time={time} width={width} />
+        <Band points={zeros} scale={bandScale(zeros, lower, 0.5)} time={time} width={width} />
         <line x1={left} x2={width - right} y1={lower.from + 8} y2={lower.from + 8} className="stroke-ink" />
         {monthMarks(from, to, Math.max(2, Math.floor(width / 76))).map(({ at, label }) => (
           <g key={at}>

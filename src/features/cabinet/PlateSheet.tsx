@@ -74,7 +74,7 @@ export function PlateSheet({ plate, now }: { readonly plate: Plate; readonly now
   return (
     <article
       aria-label={plate.name}
-      className="grid gap-x-10 gap-y-8 pt-5 md:grid-cols-2 xl:grid-cols-[19rem_1fr_28.5rem]"
+      className="grid grid-cols-1 gap-x-10 gap-y-8 pt-5 md:grid-cols-2 xl:grid-cols-[19rem_1fr_28.5rem]"
     >
       <div>
         <PlateFacts plate={plate} dueDays={lab.calibrationDueDays} now={now} />

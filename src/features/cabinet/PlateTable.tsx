@@ -4,6 +4,7 @@ import { DataCell, DataRow, DataTable, HeadCell, RowHead, TableHead } from '../.
 import { TextField } from '../../components/TextField';
 import { TextLink } from '../../components/TextLink';
 import { formatUncertain } from '../../lib/format';
+import { OnPoint, widestFraction } from './OnPoint';
 import { calibrationAge } from './calibration-age';
 import { type PlateColumn, plateRows } from './plate-rows';
 import { kindNames } from './plate-words';
@@ -48,6 +49,10 @@ function SortHead(props: {
   );
 }
 
+const retardance = ({ calibration }: Plate) =>
+  formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg);
+const zero = ({ calibration }: Plate) => formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg);
+
 /** The cabinet as rows: the same plates, sorted and searched. */
 export function PlateTable(props: {
   readonly plates: readonly Plate[];
@@ -60,6 +65,8 @@ export function PlateTable(props: {
   const [withRetired, setWithRetired] = useState(false);
   const [sort, setSort] = useState<Sort>({ column: 'name', descending: false });
   const rows = plateRows(plates, { text, withRetired }, sort, dueDays, now);
+  const widestRetardance = widestFraction(rows.map(retardance));
+  const widestZero = widestFraction(rows.map(zero));
   const retired = plates.filter(({ retiredAt }) => retiredAt !== null).length;
   return (
     <>
@@ -108,11 +115,11 @@ export function PlateTable(props: {
                 <DataCell>{kindNames[plate.kind]}</DataCell>
                 <DataCell>{plate.mount.name}</DataCell>
                 <DataCell numeric>
-                  {formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}
+                  <OnPoint text={retardance(plate)} widest={widestRetardance} />
                 </DataCell>
                 <DataCell numeric>{calibration.wavelengthNm}</DataCell>
                 <DataCell numeric>
-                  {formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg)}
+                  <OnPoint text={zero(plate)} widest={widestZero} />
                 </DataCell>
                 <DataCell className={age.overdue ? 'text-fault font-strong' : ''}>{age.words}</DataCell>
                 <DataCell>{benches.length === 0 ? '—' : benches.map(({ name }) => name).join(', ')}</DataCell>

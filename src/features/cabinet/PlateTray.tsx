@@ -15,7 +15,7 @@ export function PlateTray(props: {
 }) {
   const { plates, openId, base, dueDays, now } = props;
   return (
-    <nav aria-label="Plates" className="overflow-x-auto">
+    <nav aria-label="Plates" className="relative overflow-x-auto">
       <ul className="flex min-w-full">
         {plates.map((plate) => {
           const age = calibrationAge(plate.calibration.measuredAt, dueDays, now);

@@ -13,7 +13,7 @@ export function CabinetByAge({ plates, now }: { readonly plates: readonly Plate[
     <section aria-labelledby="cabinet-by-age" className="mt-8">
       <SectionHead
         id="cabinet-by-age"
-        large
+        size="large"
         note="the outer arc is the time since calibration; a full quarter turn means due"
         action={<TextLink to={`/labs/${lab.id}/cabinet`}>All plates and mounts</TextLink>}
       >

@@ -19,7 +19,7 @@ export function Component() {
   return (
     <>
       <title>{`${data === undefined ? 'Home' : waitingTitle(data.waiting.length)} · Quarterturn`}</title>
-      <div className="grid gap-x-14 gap-y-8 pt-2 lg:grid-cols-[minmax(0,1.86fr)_minmax(0,1fr)]">
+      <div className="grid grid-cols-1 gap-x-14 gap-y-8 pt-2 lg:grid-cols-[minmax(0,1.86fr)_minmax(0,1fr)]">
         <div>
           <header className="mb-4 flex flex-wrap items-baseline gap-x-5">
             <h1 className="text-title">{data === undefined ? 'Home' : waitingTitle(data.waiting.length)}</h1>

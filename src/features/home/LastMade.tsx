@@ -2,10 +2,10 @@ import type { LastMade } from '../../../shared/schemas/home';
 import { FidelityChip } from '../../components/FidelityChip';
 import { fidelityVerdict } from '../../components/fidelity-verdict';
 import { Scientific } from '../../components/Scientific';
-import { formatDate } from '../../lib/format';
 import { TextLink } from '../../components/TextLink';
 import { useLab } from '../labs';
 import { sharedAxis } from './shared-axis';
+import { shortDate } from './short-date';
 
 const axisWidth = 234;
 
@@ -14,10 +14,13 @@ export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] })
   const { lab } = useLab();
   const axis = sharedAxis(items);
   const [worst, best] = axis;
-  const decades = Array.from({ length: worst - best }, (_, k) => worst - k);
+  // The last mark's place belongs to the word that says which way is better.
+  const marks = Array.from({ length: worst - best }, (_, k) => worst - k).filter(
+    (power) => ((worst - power) / (worst - best)) * axisWidth < axisWidth - 70,
+  );
   return (
     <div>
-      <div className="border-hair flex items-end justify-between gap-4 border-b pb-2">
+      <div className="border-hair flex items-end justify-between gap-4 border-b pb-2 max-sm:flex-wrap">
         <p className="text-xs text-ink-2">
           worst target as dialled, 1 − F;
           <br />
@@ -28,11 +31,11 @@ export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] })
           style={{ width: axisWidth }}
           aria-hidden="true"
         >
-          {decades.map((power, k) => (
+          {marks.map((power) => (
             <span
               key={power}
               className="absolute -translate-x-1/2"
-              style={{ left: (k / (worst - best)) * axisWidth }}
+              style={{ left: ((worst - power) / (worst - best)) * axisWidth }}
             >
               <PowerOfTen power={power} />
             </span>
@@ -52,7 +55,7 @@ export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] })
           return (
             <li
               key={item.protocolId}
-              className="border-hair flex flex-wrap items-start justify-between gap-x-4 border-b py-2"
+              className="border-hair flex items-start justify-between gap-x-4 border-b py-2 max-sm:flex-wrap"
             >
               <div className="min-w-0">
                 <p className="font-strong">
@@ -61,10 +64,10 @@ export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] })
                   </TextLink>
                 </p>
                 <p className="text-s text-ink-2">
-                  {item.benchName}, run {item.runNumber}, {formatDate(new Date(item.recordedAt))}
+                  {item.benchName}, run {item.runNumber}, {shortDate(new Date(item.recordedAt))}
                 </p>
               </div>
-              <div>
+              <div className="shrink-0">
                 <FidelityChip
                   infidelity={infidelity}
                   tolerance={item.toleranceInfidelity}

@@ -36,7 +36,9 @@ export function WaitingList(props: {
   const navigate = useNavigate();
   const rows = useRef<HTMLOListElement>(null);
   const [current, setCurrent] = useState<number | null>(null);
-  const words = items.map((item) => waitingWords(item, { labId: lab.id, now, may }));
+  const words = items.map((item) =>
+    waitingWords(item, { labId: lab.id, now, dueDays: lab.calibrationDueDays, may }),
+  );
 
   const move = (step: 1 | -1) => {
     const next = Math.min(
@@ -91,7 +93,7 @@ export function WaitingList(props: {
             }`}
           >
             <div className="flex justify-center self-start pt-1.5 sm:self-center sm:pt-0">
-              <WaitingSign item={item} cabinet={cabinet} dueDays={lab.calibrationDueDays} />
+              <WaitingSign item={item} cabinet={cabinet} dueDays={lab.calibrationDueDays} now={now} />
             </div>
             <div className="min-w-0">
               <p className="text-home">{title}</p>

@@ -4,7 +4,7 @@ import { AgeRing } from '../../components/AgeRing';
 import { RingDial } from '../../components/RingDial';
 import { PausedRunSign, VernierStale } from '../../components/SmallSigns';
 import { VersionSeal } from '../../components/VersionSeal';
-import { restingAxisDeg } from '../cabinet';
+import { calibrationAge, restingAxisDeg } from '../cabinet';
 
 /** A point that is not within: the cross beside the bracket, on its axis. */
 function NotWithinSign() {
@@ -22,8 +22,9 @@ export function WaitingSign(props: {
   readonly item: WaitingItem;
   readonly cabinet: readonly Plate[];
   readonly dueDays: number;
+  readonly now: Date;
 }) {
-  const { item, cabinet, dueDays } = props;
+  const { item, cabinet, dueDays, now } = props;
   switch (item.kind) {
     case 'run-stands':
       return <PausedRunSign />;
@@ -37,7 +38,7 @@ export function WaitingSign(props: {
         <AgeRing
           radius={13}
           fastAxisDeg={plate === undefined ? 0 : restingAxisDeg(plate)}
-          ageDays={dueDays - item.daysLeft}
+          ageDays={calibrationAge(item.measuredAt, dueDays, now).ageDays}
           dueDays={dueDays}
         />
       );

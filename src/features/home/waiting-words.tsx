@@ -4,6 +4,7 @@ import type { WaitingItem } from '../../../shared/schemas/home';
 import { Quantity } from '../../components/NumberText';
 import { Scientific } from '../../components/Scientific';
 import { daysBetween, formatDate, formatMoment } from '../../lib/format';
+import { type CalibrationAge, calibrationAge } from '../cabinet';
 import { runHref } from '../results';
 
 /** One waiting thing in words: what, why, and the one way on. */
@@ -16,6 +17,8 @@ export interface WaitingWords {
 export interface WaitingContext {
   readonly labId: string;
   readonly now: Date;
+  /** The lab's own: a calibration falls due this many days after it was measured. */
+  readonly dueDays: number;
   readonly may: (action: Action) => boolean;
 }
 
@@ -31,12 +34,12 @@ function listed(names: readonly string[]): string {
   return names.length < 2 ? last : `${names.slice(0, -1).join(', ')} and ${last}`;
 }
 
-function dueTitle(plateName: string, daysLeft: number, now: Date): string {
+/** Counted as under the cabinet's rings, so that both name the same day. */
+function dueTitle(plateName: string, { daysLeft, dueAt }: CalibrationAge): string {
   if (daysLeft < 0) return `${plateName} is ${days(-daysLeft)} past its calibration`;
   if (daysLeft === 0) return `${plateName} is due for calibration today`;
   if (daysLeft >= 7) return `${plateName} is due for calibration in ${days(daysLeft)}`;
-  const due = new Date(now.getFullYear(), now.getMonth(), now.getDate() + daysLeft);
-  return `${plateName} is due for calibration on ${weekdays[due.getDay()] ?? ''}`;
+  return `${plateName} is due for calibration on ${weekdays[dueAt.getDay()] ?? ''}`;
 }
 
 function measuredWhen(measuredAt: string, now: Date): string {
@@ -45,7 +48,7 @@ function measuredWhen(measuredAt: string, now: Date): string {
 }
 
 /** The words of one item for one person. Where the person may not act, the way on leads to where it can be read. */
-export function waitingWords(item: WaitingItem, { labId, now, may }: WaitingContext): WaitingWords {
+export function waitingWords(item: WaitingItem, { labId, now, dueDays, may }: WaitingContext): WaitingWords {
   const base = `/labs/${labId}`;
   switch (item.kind) {
     case 'run-stands': {
@@ -120,7 +123,7 @@ export function waitingWords(item: WaitingItem, { labId, now, may }: WaitingCont
       };
     case 'calibration-due':
       return {
-        title: dueTitle(item.plateName, item.daysLeft, now),
+        title: dueTitle(item.plateName, calibrationAge(item.measuredAt, dueDays, now)),
         reason: (
           <>
             It was last measured {measuredWhen(item.measuredAt, now)}.

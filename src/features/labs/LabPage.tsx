@@ -12,14 +12,14 @@ export function Component() {
   return (
     <>
       <title>{`Lab · ${lab.name} · Quarterturn`}</title>
-      <header className="mb-6 flex flex-wrap items-baseline gap-x-4">
+      <header className="mb-6 flex flex-wrap items-baseline gap-x-4 pt-2">
         <h1 className="text-title">{lab.name}</h1>
         <p className="text-ink-2">
-          You are {roleWithArticle(member.role)} here.
+          {member.role === 'lead' ? 'You lead it.' : `You are ${roleWithArticle(member.role)} here.`}
           {may('lab.settings') ? '' : ' A lead changes what is on this page.'}
         </p>
       </header>
-      <div className="grid gap-x-14 gap-y-10 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-14 gap-y-10 lg:grid-cols-2">
         <div className="space-y-10">
           <MembersSection />
           {may('invitations.manage') && <InvitationsSection />}

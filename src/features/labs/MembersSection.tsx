@@ -81,13 +81,13 @@ export function MembersSection() {
         <table className="w-full text-left">
           <thead className="text-s text-ink-2">
             <tr className="border-hair border-b">
-              <th scope="col" className="py-2 pr-4 font-normal">
+              <th scope="col" className="py-2 pr-4 font-words">
                 name
               </th>
-              <th scope="col" className="py-2 pr-4 font-normal">
+              <th scope="col" className="py-2 pr-4 font-words">
                 role
               </th>
-              <th scope="col" className="py-2 pr-4 font-normal max-sm:hidden">
+              <th scope="col" className="py-2 pr-4 font-words max-sm:hidden">
                 since
               </th>
               {manages && <th scope="col" aria-label="way out" />}
@@ -96,7 +96,7 @@ export function MembersSection() {
           <tbody>
             {items.map((member) => (
               <tr key={member.userId} className="border-hair border-b align-top">
-                <th scope="row" className="py-2 pr-4 font-normal">
+                <th scope="row" className="py-2 pr-4 font-words">
                   <span className="font-strong">{member.name}</span>
                   {member.userId === user.id && ' (you)'}
                   <span className="text-s text-ink-2 block">{member.login}</span>
@@ -116,7 +116,7 @@ export function MembersSection() {
                 {manages && (
                   <td className="py-2 text-right">
                     {!isLastLead(member, items) && (
-                      <TextButton onClick={() => setLeaving(member)}>
+                      <TextButton className="whitespace-nowrap" onClick={() => setLeaving(member)}>
                         Take out<span className="sr-only"> {member.name}</span>
                       </TextButton>
                     )}

@@ -126,16 +126,16 @@ function OtherSolutions(props: {
       <thead className="text-s text-ink-2">
         <tr className="border-hair border-b">
           {plates.map(({ name }) => (
-            <th key={name} scope="col" className="py-1 pr-4 font-normal">
+            <th key={name} scope="col" className="py-1 pr-4 font-words">
               {name}, {ideal ? 'θ' : 'dial'}
             </th>
           ))}
           {!ideal && (
-            <th scope="col" className="py-1 pr-4 font-normal">
+            <th scope="col" className="py-1 pr-4 font-words">
               1 − F expected
             </th>
           )}
-          <th scope="col" className="py-1 font-normal">
+          <th scope="col" className="py-1 font-words">
             <span className="sr-only">show</span>
           </th>
         </tr>

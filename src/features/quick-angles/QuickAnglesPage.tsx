@@ -70,7 +70,7 @@ export function Component() {
         <h1 className="text-title">Quick angles</h1>
         <p className="text-ink-2">nothing here is kept</p>
       </header>
-      <div className="grid gap-x-14 gap-y-8 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-14 gap-y-8 lg:grid-cols-2">
         <div className="space-y-5">
           <TextField
             label="state"

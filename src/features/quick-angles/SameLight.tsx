@@ -26,7 +26,7 @@ export function SameLight({ jones, own }: { readonly jones: JonesVector; readonl
                   : 'border-hair border-b'
               }
             >
-              <th scope="row" className="py-2 pr-3 font-normal">
+              <th scope="row" className="py-2 pr-3 font-words">
                 <span className="font-strong">{row.name}</span>
                 <span className="text-s text-ink-2 block">{row.flags}</span>
               </th>

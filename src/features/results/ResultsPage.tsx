@@ -52,7 +52,7 @@ function RunRow(props: {
     <DataRow>
       <RowHead>
         <TextLink to={runHref(lab.id, run, may('runs.record'))}>Run {run.number}</TextLink>
-        <span className="text-s text-ink-2 font-words block">{runProgressWords(run)}</span>
+        <span className="text-s text-ink-2 font-words mt-0.5 block">{runProgressWords(run)}</span>
       </RowHead>
       <DataCell>
         <b>{run.protocolName}</b> {run.versionNumber}
@@ -99,10 +99,12 @@ export function Component() {
           <DataTable caption="Runs, the newest first">
             <TableHead>
               <tr>
-                <HeadCell>run</HeadCell>
-                <HeadCell>version and bench</HeadCell>
-                <HeadCell>when and who</HeadCell>
-                <HeadCell>worst target as dialled, 1 − F; [ is the tolerance, better to the right</HeadCell>
+                <HeadCell className="max-sm:min-w-40">run</HeadCell>
+                <HeadCell className="max-sm:min-w-40">version and bench</HeadCell>
+                <HeadCell className="max-sm:min-w-40">when and who</HeadCell>
+                <HeadCell className="max-sm:min-w-40">
+                  worst target as dialled, 1 − F; [ is the tolerance, better to the right
+                </HeadCell>
               </tr>
             </TableHead>
             <tbody>

@@ -34,7 +34,7 @@ export function Component() {
           Quarterturn reads your GitHub name and e-mail address and nothing else. A lab opens to you when its
           lead has invited you.
         </p>
-        <p className="mt-7">
+        <p className="mt-7 text-[1rem]">
           <TextLink to="/quick-angles">Angles for one state, without signing in</TextLink>
         </p>
       </div>

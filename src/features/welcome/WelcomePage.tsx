@@ -85,7 +85,7 @@ export function Component() {
         {session?.user === null || session === undefined ? '' : `Signed in as ${session.user.name}. `}A lab’s
         plates, protocols and runs are seen by its members only.
       </p>
-      <div className="grid gap-x-14 gap-y-10 md:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-14 gap-y-10 md:grid-cols-2">
         <section aria-labelledby="join">
           <SectionHead id="join" className="mb-3">
             Join one that has invited you

@@ -16,6 +16,7 @@ function words(item: unknown, role: Role = 'lead') {
   const { title, reason, way } = waitingWords(parsed, {
     labId,
     now,
+    dueDays: 90,
     may: (action) => can({ userId: 'u', labId, role }, action, { labId }),
   });
   return {
@@ -24,6 +25,8 @@ function words(item: unknown, role: Role = 'lead') {
     way,
   };
 }
+
+const daysAgo = (days: number) => new Date(now.getTime() - days * 86_400_000).toISOString();
 
 const run = {
   id: '0190a000-0000-7000-8000-000000000011',
@@ -46,7 +49,7 @@ const due = {
   kind: 'calibration-due',
   plateId: '0190a000-0000-7000-8000-000000000001',
   plateName: 'Q-D',
-  measuredAt: new Date(2026, 2, 6, 9, 0).toISOString(),
+  measuredAt: daysAgo(102),
   daysLeft: -12,
   benchNames: ['signal arm', 'diode table'],
 };
@@ -82,11 +85,11 @@ describe('what waits, in sentences', () => {
 
   it('counts the days of a calibration past, on the day, and ahead', () => {
     expect(words(due).title).toBe('Q-D is 12 days past its calibration');
-    expect(words({ ...due, daysLeft: -1 }).title).toBe('Q-D is 1 day past its calibration');
-    expect(words({ ...due, daysLeft: 0 }).title).toBe('Q-D is due for calibration today');
+    expect(words({ ...due, measuredAt: daysAgo(91) }).title).toBe('Q-D is 1 day past its calibration');
+    expect(words({ ...due, measuredAt: daysAgo(90) }).title).toBe('Q-D is due for calibration today');
     // 16 June 2026 is a Tuesday.
-    expect(words({ ...due, daysLeft: 3 }).title).toBe('Q-D is due for calibration on Friday');
-    expect(words({ ...due, daysLeft: 10 }).title).toBe('Q-D is due for calibration in 10 days');
+    expect(words({ ...due, measuredAt: daysAgo(87) }).title).toBe('Q-D is due for calibration on Friday');
+    expect(words({ ...due, measuredAt: daysAgo(80) }).title).toBe('Q-D is due for calibration in 10 days');
     expect(words(due).reason).toContain('It stands in the beam of the signal arm and diode table.');
   });
 
