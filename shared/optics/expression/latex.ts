@@ -104,7 +104,8 @@ function latexCall(name: FunctionName, args: readonly Node[]): string {
 }
 
 function brackets(inner: string): string {
-  return `\\left(${inner}\\right)`;
+  // Without the empty delimiters TeX sets a gap between a function's name and its bracket.
+  return `\\mathopen{}\\left(${inner}\\right)\\mathclose{}`;
 }
 
 function tight(node: Node): string {
