@@ -61,7 +61,8 @@ export function SegmentedChoice<Value extends string>({
                 onChange(segment.value);
               }}
             />
-            <span>{segment.label}</span>
+            {/* Positioned, so that it lies over the input and stays plain text on its ground. */}
+            <span className="pointer-events-none relative">{segment.label}</span>
           </label>
         ))}
       </div>

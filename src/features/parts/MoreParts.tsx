@@ -77,7 +77,7 @@ export function MoreParts() {
   const [asked, setAsked] = useState(false);
   const [undo, setUndo] = useState(false);
   return (
-    <div className="grid gap-10 px-5 pt-4 pb-20 sm:px-10 desk:grid-cols-2">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-10 px-5 pt-4 pb-20 sm:px-10 desk:grid-cols-[repeat(2,minmax(0,1fr))]">
       <section aria-labelledby="control" className="space-y-4">
         <SectionHead id="control" note="drag, arrow keys, buttons or the number">
           A ring that can be turned

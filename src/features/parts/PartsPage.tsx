@@ -13,7 +13,7 @@ export default function PartsPage() {
   return (
     <main>
       <h1 className="sr-only">Parts: every component in its states</h1>
-      <div className="grid desk:grid-cols-[minmax(0,1fr)_484px]">
+      <div className="grid grid-cols-[minmax(0,1fr)] desk:grid-cols-[minmax(0,1fr)_484px]">
         <div className="flex flex-col gap-5.5 px-5 py-7 sm:px-10">
           <MountParts />
           <VersionParts />

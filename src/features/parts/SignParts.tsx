@@ -32,9 +32,9 @@ export function SignParts() {
       </SectionHead>
       <ul className="m-0 mt-2 flex list-none flex-wrap justify-between p-0">
         {signs.map(({ sign, words }) => (
-          <li key={words} className="flex w-24 flex-col items-center">
+          <li key={words} className="flex w-23 flex-col items-center">
             <span className="flex h-11 items-center justify-center">{sign}</span>
-            <span className="mt-1.5 text-center text-s whitespace-nowrap text-ink-2">{words}</span>
+            <span className="mt-1.5 text-center text-s text-ink-2">{words}</span>
           </li>
         ))}
       </ul>

@@ -23,7 +23,7 @@ export function VersionParts() {
         </SectionHead>
         <ul className="m-0 mt-1 flex list-none flex-wrap justify-between p-0">
           {seals.map(({ state, number }) => (
-            <li key={state} className="flex w-19 flex-col items-center">
+            <li key={state} className="flex w-19 flex-col dark-room:w-24 items-center">
               <VersionSeal state={state} number={number} decorative />
               <span className="mt-1 text-center text-s text-ink-2">{sealWords[state]}</span>
             </li>
