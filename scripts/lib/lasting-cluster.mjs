@@ -1,6 +1,7 @@
 import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
 import { newPasswords, startCluster } from './postgres.mjs';
+import { ensurePostgres } from './postgres-binaries.mjs';
 import { placeForCluster } from './postgres-place.mjs';
 import { Failure } from './say.mjs';
 import { keepSecret } from './settings.mjs';
@@ -16,6 +17,8 @@ export async function startLastingCluster(dataDirectory) {
   const file = path.join(dataDirectory, 'database.json');
   // Decided once: a later start must find the data where the first one put it.
   if (!existsSync(file)) {
+    // First the package, which brings the user that root's cluster belongs to.
+    await ensurePostgres(path.join(dataDirectory, 'postgres', 'data'));
     const place = await placeForCluster(dataDirectory);
     keepSecret(file, () => JSON.stringify({ place, passwords: newPasswords() }));
   }
