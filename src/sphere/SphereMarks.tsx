@@ -143,7 +143,7 @@ function Label({ label, place }: { readonly label: PlacedLabel; readonly place: 
       y={label.y.toFixed(2)}
       dy="0.35em"
       textAnchor="middle"
-      className={label.role === 'degrees' ? 'font-mono' : undefined}
+      className={label.role === 'degrees' ? 'sphere-label font-mono' : 'sphere-label'}
       fontSize={LABEL_TYPE[label.role].sizePx}
       fontWeight={LABEL_WEIGHT[label.role]}
       fill={labelColour(label)}

@@ -62,6 +62,15 @@ const DIRECTIONS_DEG: Readonly<Record<LabelRole, readonly number[]>> = {
   degrees: [0],
 };
 
+/** What a label would rather not lie on, by how much; the graticule is faint enough. */
+const INK_WEIGHT = { turn: 12, 'last-turn': 12, equator: 3 } as const;
+
+interface InkPoint {
+  readonly x: number;
+  readonly y: number;
+  readonly weight: number;
+}
+
 /** Who chooses a place first. An engraved number gives way to everything and is left out rather than moved. */
 const ORDER: readonly LabelRole[] = ['basis', 'target', 'last-turn', 'turn', 'axis', 'degrees'];
 
@@ -70,9 +79,13 @@ export function placeLabels(scene: SphereScene, frame: ViewFrame, place: Placeme
     const half = MARK_HALF_PX[kind] ?? 7;
     return { ...onPage(project(at, frame), place), halfWidth: half, halfHeight: half };
   });
-  const inkPoints = scene.lines
-    .filter(({ role }) => role === 'turn' || role === 'last-turn')
-    .flatMap(({ points }) => points.map((point) => onPage(project(point, frame), place)));
+  const inkPoints = scene.lines.flatMap(({ role, points }) => {
+    if (role !== 'turn' && role !== 'last-turn' && role !== 'equator') return [];
+    return points.map((point): InkPoint => ({
+      ...onPage(project(point, frame), place),
+      weight: INK_WEIGHT[role],
+    }));
+  });
 
   const placed: PlacedLabel[] = [];
   for (const role of ORDER) {
@@ -102,9 +115,11 @@ function bestPlace(
   frame: ViewFrame,
   place: Placement,
   taken: readonly Box[],
-  inkPoints: readonly { x: number; y: number }[],
+  inkPoints: readonly InkPoint[],
 ): { box: Box; front: boolean } | undefined {
   const type = LABEL_TYPE[label.role];
+  // The engraved numbers stand close under the equator on purpose.
+  const turnPoints = inkPoints.filter(({ weight }) => weight > INK_WEIGHT.equator);
   const halfWidth = (label.text.length * type.perCharacterPx) / 2;
   const halfHeight = type.sizePx * 0.55;
   let best: { box: Box; front: boolean; cost: number } | undefined;
@@ -116,7 +131,7 @@ function bestPlace(
       const box = boxAt(anchor, directionDeg, CLEARANCE_PX[label.role], halfWidth, halfHeight);
       const blocked =
         taken.reduce((sum, other) => sum + overlap(box, other), 0) +
-        12 * inkPoints.filter((ink) => covers(box, ink)).length +
+        inkUnder(box, label.role === 'degrees' ? turnPoints : inkPoints) +
         outside(box, place);
       if (label.role === 'degrees' && blocked > 0) return undefined;
       // Behind the body a name is faint: prefer another place along the turn.
@@ -151,6 +166,10 @@ function overlap(one: Box, other: Box): number {
   const width = one.halfWidth + other.halfWidth - Math.abs(one.x - other.x);
   const height = one.halfHeight + other.halfHeight - Math.abs(one.y - other.y);
   return width > 0 && height > 0 ? 10 + width * height : 0;
+}
+
+function inkUnder(box: Box, inkPoints: readonly InkPoint[]): number {
+  return inkPoints.reduce((sum, ink) => sum + (covers(box, ink) ? ink.weight : 0), 0);
 }
 
 function covers(box: Box, point: { x: number; y: number }): boolean {

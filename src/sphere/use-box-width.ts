@@ -10,6 +10,8 @@ export function useBoxWidth(element: RefObject<HTMLElement | null>, widthBefore:
       if (box.clientWidth > 0) setWidth(box.clientWidth);
     };
     measure();
+    // Without an observer the first width has to do.
+    if (!('ResizeObserver' in window)) return undefined;
     const resize = new ResizeObserver(measure);
     resize.observe(box);
     return () => resize.disconnect();

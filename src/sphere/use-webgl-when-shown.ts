@@ -6,7 +6,8 @@ export function useWebGlWhenShown(element: RefObject<HTMLElement | null>): WebGl
   const [support, setSupport] = useState<WebGlSupport>('none');
   useEffect(() => {
     const box = element.current;
-    if (box === null) return undefined;
+    // Where it can't be told whether it is on the screen, the SVG does.
+    if (box === null || !('IntersectionObserver' in window)) return undefined;
     const seen = new IntersectionObserver((entries) => {
       if (!entries.some(({ isIntersecting }) => isIntersecting)) return;
       seen.disconnect();

@@ -1,5 +1,6 @@
 import { type ReactNode, useRef } from 'react';
 import { Button } from '../components/Button';
+import { classNames } from '../components/class-names';
 import { useBoxWidth } from '../sphere/use-box-width';
 import { OutputLight } from './OutputLight';
 import { PlateOnBeam } from './PlateOnBeam';
@@ -33,7 +34,11 @@ export function BeamLineStage({ stage, onDial, onBackToSolution, viewedFrom = 'r
     <div className="stage">
       <div
         ref={line}
-        className={scrolls ? 'stage-line stage-line-scrolls' : 'stage-line'}
+        className={classNames(
+          'stage-line',
+          scrolls && 'stage-line-scrolls',
+          scrolls && onDial !== undefined && 'stage-line-turnable',
+        )}
         // What scrolls has to take the keys too.
         {...(scrolls
           ? { tabIndex: 0, role: 'region', 'aria-label': 'Beam line, scrolls along the beam' }
