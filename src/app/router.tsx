@@ -73,7 +73,7 @@ export function createRouter(queryClient: QueryClient) {
       ErrorBoundary: RouteFault,
       HydrateFallback: Starting,
       children: [
-        { path: '/', loader: entry(queryClient) },
+        { path: '/', loader: entry(queryClient), Component: Starting },
         { path: '/sign-in', lazy: () => import('../features/session/SignInPage') },
         {
           Component: PlainShell,
@@ -102,7 +102,11 @@ export function createRouter(queryClient: QueryClient) {
             { path: 'bench/runs/:runId/record', lazy: () => import('../features/runs/RunRecordPage') },
           ],
         },
-        { path: '*', loader: () => Promise.reject(new ApiError(404, null, 'There is no such page.')) },
+        {
+          path: '*',
+          loader: () => Promise.reject(new ApiError(404, null, 'There is no such page.')),
+          Component: Starting,
+        },
       ],
     },
   ]);

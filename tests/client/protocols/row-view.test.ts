@@ -30,7 +30,7 @@ function solvedView(row: DraftTarget): RowView {
 }
 
 function holdUp(...rows: readonly DraftTarget[]): string | null {
-  return whatHoldsUp(rows, rows.map(solvedView));
+  return whatHoldsUp(rows, rows.map(solvedView))?.text ?? null;
 }
 
 describe('what holds a version up', () => {
@@ -57,7 +57,10 @@ describe('what holds a version up', () => {
     const view = solvedView(row);
     expect(view.status).toBe('solved');
     const stale = view.status === 'solved' ? { ...view, stale: true } : view;
-    expect(whatHoldsUp([row], [stale])).toBe('The last rows are still being solved.');
+    expect(whatHoldsUp([row], [stale])).toEqual({
+      text: 'The last rows are still being solved.',
+      isFault: false,
+    });
   });
 });
 

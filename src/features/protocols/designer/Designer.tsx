@@ -82,6 +82,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
       {solved.benchFault !== null && (
         <BeamWrong title="The bench’s input state can’t be read">{solved.benchFault}</BeamWrong>
       )}
+      {looked === null && target !== undefined && <div className="stage-waits" />}
       {looked !== null && (
         <SelectedStage
           {...looked}

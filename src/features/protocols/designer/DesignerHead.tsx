@@ -12,6 +12,7 @@ import { VersionSeal } from '../../../components/VersionSeal';
 import { parseTypedNumber } from '../../../lib/format';
 import { chooseBench, type DraftEdit, rename, setTolerance } from '../draft-edits';
 import type { Saving } from '../use-draft';
+import type { HoldUp } from './row-view';
 
 interface DesignerHeadProps {
   readonly lab: Lab;
@@ -23,7 +24,7 @@ interface DesignerHeadProps {
   readonly benches: readonly Bench[];
   readonly mayWrite: boolean;
   readonly maySave: boolean;
-  readonly holdUp: string | null;
+  readonly holdUp: HoldUp | null;
   readonly edit: (edit: DraftEdit) => void;
   readonly onSaveVersion: () => void;
 }
@@ -71,10 +72,14 @@ export function DesignerHead(props: DesignerHeadProps) {
       </div>
       {maySave && (
         <div className="text-right">
-          <Button kind="filled" waitsFor={holdUp ?? undefined} onClick={props.onSaveVersion}>
+          <Button kind="filled" waitsFor={holdUp?.text} onClick={props.onSaveVersion}>
             Save version {next}
           </Button>
-          {holdUp !== null && <p className="mt-1 text-s font-strong text-fault">{holdUp}</p>}
+          {holdUp !== null && (
+            <p className={`mt-1 mb-0 text-s ${holdUp.isFault ? 'font-strong text-fault' : 'text-ink-2'}`}>
+              {holdUp.text}
+            </p>
+          )}
         </div>
       )}
     </header>

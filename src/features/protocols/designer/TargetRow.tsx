@@ -23,6 +23,8 @@ export interface RowHandlers {
   readonly onListSolutions: (open: boolean) => void;
 }
 
+const chipWidthPx = 100;
+
 interface TargetRowProps extends RowHandlers {
   readonly place: number;
   readonly target: DraftTarget;
@@ -66,10 +68,14 @@ export function TargetRow(props: TargetRowProps) {
             props.onOpenSource();
           }
         }}
-        className={classNames('target-row', selected && !blank && 'target-row-lit')}
+        className={classNames(
+          'target-row',
+          selected && !blank && 'target-row-lit',
+          view.status === 'unreadable' && 'target-row-unread',
+        )}
       >
         <td className="w-8 pl-3 font-mono text-s text-ink-3">{place + 1}</td>
-        <td className="w-14 font-strong">
+        <td className="label-cell">
           {showsSource && !blank ? (
             <input
               type="text"
@@ -87,7 +93,10 @@ export function TargetRow(props: TargetRowProps) {
             target.label
           )}
         </td>
-        <td className="min-w-56 py-1" colSpan={view.status === 'unreadable' || blank ? 3 + plates.length : 1}>
+        <td
+          className="expression-cell"
+          colSpan={view.status === 'unreadable' || blank ? 3 + plates.length : 1}
+        >
           {showsSource ? (
             <SourceField
               label={blank ? 'New target' : `Expression of ${name}`}
@@ -120,8 +129,9 @@ export function TargetRow(props: TargetRowProps) {
             ))}
             <td className={classNames(numbers, 'chip-cell')}>
               {solved !== null && (
-                <>
+                <span className="chip-line">
                   <FidelityChip
+                    width={chipWidthPx}
                     infidelity={{
                       value: solved.solution.expectedInfidelity,
                       low: solved.solution.expectedLow,
@@ -131,7 +141,7 @@ export function TargetRow(props: TargetRowProps) {
                     kind="predicted"
                   />
                   <Scientific value={solved.solution.expectedInfidelity} />
-                </>
+                </span>
               )}
             </td>
             <td className={classNames(numbers, 'pr-1 font-mono text-s')}>

@@ -40,8 +40,18 @@ export function TargetsTable({
   const rows = mayWrite ? [...targets, blank] : targets;
 
   return (
-    <table className="w-full border-collapse">
+    <table className="targets-table">
       <caption className="sr-only">Targets, the dials that make them, and the expected infidelity</caption>
+      <colgroup>
+        <col className="w-8" />
+        <col className="label-column" />
+        <col />
+        {plates.map(({ id }) => (
+          <col key={id} className="dial-column" />
+        ))}
+        <col className="chip-column" />
+        <col className="solution-column" />
+      </colgroup>
       <thead>
         <tr className="border-y border-ink text-left text-s text-ink-2">
           <th scope="col" className="h-8 w-8">

@@ -36,25 +36,33 @@ export function viewOf(target: DraftTarget, row: SolvedRow | undefined): RowView
   return { status: 'solved', reading, solved, solution, chosen: index, held, stale };
 }
 
-/** Why a version can't be saved now; null when it can. Names the row, so that one knows where to look. */
-export function whatHoldsUp(targets: readonly DraftTarget[], views: readonly RowView[]): string | null {
-  const written = targets.flatMap((target, place) => {
-    const view = views[place];
-    return view === undefined || view.status === 'empty' ? [] : [{ place, target, view }];
-  });
-  if (written.length === 0) return 'No target is written yet.';
-  const unread = written.filter(({ view }) => view.status === 'unreadable').map(({ place }) => place + 1);
-  if (unread.length === 1) return `Row ${String(unread[0])} can’t be read and holds this up.`;
+/** Why a version can't be saved now. */
+export interface HoldUp {
+  readonly text: string;
+  /** Whether a person has to mend it, or it passes by itself. */
+  readonly isFault: boolean;
+}
+
+/** What holds a version up; null when nothing does. Names the row, so that one knows where to look. */
+export function whatHoldsUp(targets: readonly DraftTarget[], views: readonly RowView[]): HoldUp | null {
+  const fault = faultIn(targets, views);
+  if (fault !== null) return { text: fault, isFault: true };
+  const isNew = (view: RowView) => view.status === 'solved' && !view.stale;
+  return views.every(isNew) ? null : { text: 'The last rows are still being solved.', isFault: false };
+}
+
+function faultIn(targets: readonly DraftTarget[], views: readonly RowView[]): string | null {
+  if (views.every(({ status }) => status === 'empty')) return 'No target is written yet.';
+  const unread = views.flatMap(({ status }, place) => (status === 'unreadable' ? [place + 1] : []));
+  if (unread.length === 1) return `Row ${unread.join()} can’t be read and holds this up.`;
   if (unread.length > 1) return `Rows ${unread.join(', ')} can’t be read and hold this up.`;
-  const empty = targets.findIndex(({ expression }) => expression.trim() === '');
+  const empty = views.findIndex(({ status }) => status === 'empty');
   if (empty >= 0) return `Row ${empty + 1} has no state. Write one, or take the row out.`;
-  const unlabelled = targets.findIndex(({ label }) => label.trim() === '');
-  if (unlabelled >= 0) return `Row ${unlabelled + 1} has no label.`;
   const labels = targets.map(({ label }) => label.trim());
+  const unlabelled = labels.indexOf('');
+  if (unlabelled >= 0) return `Row ${unlabelled + 1} has no label.`;
   const twice = labels.findIndex((label, place) => labels.indexOf(label) !== place);
-  if (twice >= 0) return `Two rows are called ${String(labels[twice])}. Rename row ${twice + 1}.`;
-  const isNew = ({ view }: (typeof written)[number]) => view.status === 'solved' && !view.stale;
-  return written.every(isNew) ? null : 'The last rows are still being solved.';
+  return twice < 0 ? null : `Two rows are called ${labels[twice] ?? ''}. Rename row ${twice + 1}.`;
 }
 
 /** What the page shows, for the server to hold its own solution against. */
