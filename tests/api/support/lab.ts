@@ -18,7 +18,10 @@ import {
 } from '../../../shared/schemas';
 import { benchProblem, chooseSolution, solveRow } from '../../../shared/protocol/solve-row';
 import { answered, call } from './calls';
-import type { Agent, Harness } from './harness';
+import type { Agent } from './harness';
+
+/** Where our own page would be: all that a call needs to know of the server. */
+type Us = Parameters<typeof call>[0];
 
 export function plateBody(name: string, change: Partial<CreatePlate> = {}): CreatePlate {
   return {
@@ -80,7 +83,7 @@ export interface TestLab {
   readonly invitationToken: string;
 }
 
-export async function makeLab(harness: Harness, lead: Agent, name: string): Promise<TestLab> {
+export async function makeLab(harness: Us, lead: Agent, name: string): Promise<TestLab> {
   const post = <S extends z.ZodType>(path: string, body: unknown, schema: S) =>
     answered(call(harness, lead, 'post', path, { body }), schema);
   const { id: labId } = await post('/labs', { name }, labSchema);
@@ -125,7 +128,7 @@ export async function makeLab(harness: Harness, lead: Agent, name: string): Prom
 
 /** Invites someone and lets them accept. */
 export async function join(
-  harness: Harness,
+  harness: Us,
   lead: Agent,
   labId: string,
   person: Agent,
@@ -140,7 +143,7 @@ export async function join(
 
 /** What the page would have shown: the same solver on the same bench. */
 export async function shownFor(
-  harness: Harness,
+  harness: Us,
   agent: Agent,
   labId: string,
   content: DraftContent,
@@ -168,7 +171,7 @@ export async function shownFor(
 }
 
 export async function saveVersion(
-  harness: Harness,
+  harness: Us,
   agent: Agent,
   labId: string,
   protocol: Protocol,
