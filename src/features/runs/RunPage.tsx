@@ -2,6 +2,8 @@ import { useQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
 import { useLab } from '../labs';
 import './bench.css';
+import './bench-narrow.css';
+import './bench-sheets.css';
 import { BenchNotice } from './BenchNotice';
 import { BenchScreen } from './BenchScreen';
 import { runQuery, versionQuery } from './queries';

@@ -1,31 +1,17 @@
 import { degrees, toRadians, wrapSigned } from '../../../shared/optics/units';
 import { fastAxisFromDial } from '../../../shared/optics/dial';
 import { errorBudget } from '../../../shared/optics/budget';
-import { evaluateDials, type TargetProblem } from '../../../shared/optics/solve-target';
-import { benchProblem } from '../../../shared/protocol/solve-row';
+import { dialledInfidelity, frozenProblem } from '../../../shared/protocol/dialled';
 import type { VersionContent } from '../../../shared/schemas/versions';
 
-/** One setting of a version as the solver sees it: target, input and the plates as they were frozen. */
-function frozenProblem(content: VersionContent, settingIndex: number): TargetProblem | null {
-  const target = content.targets[settingIndex];
-  const { input, plates } = content.bench;
-  if (target === undefined) return null;
-  const read = benchProblem(
-    { inputExpression: input.expression, polariserSigmaDeg: input.polariserSigmaDeg, plates },
-    content.convention,
-  );
-  return read.ok ? { ...read.problem, target: target.stokes } : null;
-}
-
-/** 1 − F that these dials make of one target, with the plates as the version froze them; null when that can't be worked out. */
-export function dialledInfidelity(
+/** 1 − F that these dials make of one target, with the plates as the version froze them; null where they are no set of dials. */
+export function madeOf(
   content: VersionContent,
   settingIndex: number,
   dialsDeg: readonly number[],
 ): number | null {
-  const problem = frozenProblem(content, settingIndex);
-  if (problem?.plates.length !== dialsDeg.length) return null;
-  return evaluateDials(problem, dialsDeg).infidelity;
+  const fits = content.targets[settingIndex] !== undefined && dialsDeg.length === content.bench.plates.length;
+  return fits ? dialledInfidelity(content, settingIndex, dialsDeg) : null;
 }
 
 export interface DialledExpectation {
@@ -43,9 +29,9 @@ export function dialledExpectation(
   settingIndex: number,
   dialsDeg: readonly number[],
 ): DialledExpectation | null {
+  const infidelity = madeOf(content, settingIndex, dialsDeg);
+  if (infidelity === null) return null;
   const problem = frozenProblem(content, settingIndex);
-  const infidelity = dialledInfidelity(content, settingIndex, dialsDeg);
-  if (problem === null || infidelity === null) return null;
   const inRadians = (angleDeg: number) => toRadians(degrees(angleDeg));
   const budget = errorBudget(
     problem.input,
@@ -105,8 +91,8 @@ export function dialCost({
   if (wantedDeg === undefined) return null;
   const withDial = (dialDeg: number) =>
     dialsDeg.map((other, plate) => (plate === plateIndex ? dialDeg : other));
-  const wantedInfidelity = dialledInfidelity(content, settingIndex, withDial(wantedDeg));
-  const typedInfidelity = dialledInfidelity(content, settingIndex, withDial(typedDeg));
+  const wantedInfidelity = madeOf(content, settingIndex, withDial(wantedDeg));
+  const typedInfidelity = madeOf(content, settingIndex, withDial(typedDeg));
   if (wantedInfidelity === null || typedInfidelity === null) return null;
   const missing = wrapSigned(wantedDeg - typedDeg, 360);
   return {

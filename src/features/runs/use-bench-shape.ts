@@ -29,5 +29,5 @@ export function useBenchShape(): BenchShape {
 export const ringRadii: Readonly<Record<BenchShape, { readonly now: number; readonly other: number }>> = {
   landscape: { now: 128, other: 95 },
   portrait: { now: 138, other: 58 },
-  phone: { now: 66, other: 34 },
+  phone: { now: 58, other: 34 },
 };

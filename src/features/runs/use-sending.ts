@@ -23,6 +23,8 @@ const retryAfterMs = 5_000;
 /** Answers that say nothing against the reading itself: the same request is worth making again. */
 function isPassing(error: unknown): boolean {
   if (!(error instanceof ApiError)) return true;
+  // The first try of this very reading is still being worked on.
+  if (error.problem?.type.endsWith('still-working') === true) return true;
   return error.status === 0 || error.status >= 500 || [408, 425, 429].includes(error.status);
 }
 

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { dialCost, dialledInfidelity, wantedDials } from '../../../src/features/runs/dial-cost';
+import { dialCost, madeOf, wantedDials } from '../../../src/features/runs/dial-cost';
 import { makeVersion } from './fixture';
 
 const { content } = makeVersion();
@@ -9,7 +9,7 @@ describe('what a reading costs', () => {
   test('the wanted dials make exactly the infidelity that the version froze for them', () => {
     for (const setting of settings) {
       const target = content.targets[setting];
-      expect(dialledInfidelity(content, setting, wantedDials(content, setting))).toBe(
+      expect(madeOf(content, setting, wantedDials(content, setting))).toBe(
         target?.solutions[target.chosenSolution]?.dialledInfidelity,
       );
     }
@@ -53,7 +53,7 @@ describe('what a reading costs', () => {
   });
 
   test('too few dials have no fidelity rather than a wrong one', () => {
-    expect(dialledInfidelity(content, 0, [10])).toBeNull();
-    expect(dialledInfidelity(content, 99, [10, 20])).toBeNull();
+    expect(madeOf(content, 0, [10])).toBeNull();
+    expect(madeOf(content, 99, [10, 20])).toBeNull();
   });
 });
