@@ -70,7 +70,10 @@ export function BenchForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
       onSaved(saved);
     },
-    onError: (error) => void showServerFaults(error, setError, fieldOf),
+    onError: (error) => {
+      // Said at the fields, it need not be said under the form.
+      if (showServerFaults(error, setError, fieldOf)) saving.reset();
+    },
   });
   const submit = (revision: number) => (body: CreateBench) => {
     const fault = inputFault(body.inputExpression, lab.convention);
@@ -162,12 +165,14 @@ export function BenchForm(props: {
             }}
           />
         )}
-        <div className="flex flex-wrap gap-3">
-          <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
-            {bench === null ? 'Add the bench' : 'Save the bench'}
-          </Button>
-          <ButtonLink to={`/labs/${lab.id}/bench`}>Leave it as it was</ButtonLink>
-        </div>
+        {theirs === null && (
+          <div className="flex flex-wrap gap-3">
+            <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
+              {bench === null ? 'Add the bench' : 'Save the bench'}
+            </Button>
+            <ButtonLink to={`/labs/${lab.id}/bench`}>Leave it as it was</ButtonLink>
+          </div>
+        )}
       </div>
     </form>
   );

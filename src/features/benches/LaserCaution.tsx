@@ -25,7 +25,7 @@ export function LaserCaution({ laserClass, hazardWavelengthsNm, variant }: Laser
     );
   }
   return (
-    <section aria-label="Laser caution" className="flex items-start gap-4">
+    <div role="note" aria-label="Laser caution" className="flex items-start gap-4">
       <CautionSign />
       <div>
         <p className="font-strong">{words.title}</p>
@@ -38,6 +38,6 @@ export function LaserCaution({ laserClass, hazardWavelengthsNm, variant }: Laser
         </ul>
         <p className="text-ink-2 mt-2">{words.defers}</p>
       </div>
-    </section>
+    </div>
   );
 }

@@ -37,8 +37,11 @@ export function CalibrationForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
     },
-    onError: (error) =>
-      void showServerFaults(error, setError, (path) => (path === 'measuredAt' ? path : null)),
+    onError: (error) => {
+      // Said at the fields, it need not be said under the form.
+      if (showServerFaults(error, setError, (path) => (path === 'measuredAt' ? path : null)))
+        recording.reset();
+    },
   });
   const relying = plate.benches.map(({ name }) => name).join(' and ');
   return (

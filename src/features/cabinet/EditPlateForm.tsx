@@ -43,7 +43,10 @@ export function EditPlateForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
     },
-    onError: (error) => void showServerFaults(error, setError, (path) => (path === 'name' ? path : null)),
+    onError: (error) => {
+      // Said at the fields, it need not be said under the form.
+      if (showServerFaults(error, setError, (path) => (path === 'name' ? path : null))) saving.reset();
+    },
   });
   const submit = (revision: number) => handleSubmit((body) => saving.mutate({ body, revision }));
   const theirs = plateConflict(conflictingState(saving.error));
@@ -76,12 +79,14 @@ export function EditPlateForm(props: {
           }}
         />
       )}
-      <div className="flex flex-wrap gap-3">
-        <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
-          Save {plate.name}
-        </Button>
-        <Button onClick={onDone}>Leave it as it was</Button>
-      </div>
+      {theirs === null && (
+        <div className="flex flex-wrap gap-3">
+          <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
+            Save {plate.name}
+          </Button>
+          <Button onClick={onDone}>Leave it as it was</Button>
+        </div>
+      )}
     </form>
   );
 }

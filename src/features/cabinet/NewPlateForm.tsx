@@ -60,7 +60,10 @@ export function NewPlateForm(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onCreated(plate);
     },
-    onError: (error) => void showServerFaults(error, setError, fieldOf),
+    onError: (error) => {
+      // Said at the fields, it need not be said under the form.
+      if (showServerFaults(error, setError, fieldOf)) creating.reset();
+    },
   });
   const { errors } = formState;
   return (

@@ -47,7 +47,7 @@ export function PlateFacts(props: { readonly plate: Plate; readonly dueDays: num
           kind={plate.kind}
           scale={{ offsetDeg: calibration.offsetDeg, direction: mount.direction }}
           readingDeg={calibration.offsetDeg}
-          className="-my-3 max-w-full"
+          className="max-w-full"
         />
         <figcaption className="text-ink-2 text-center">
           reads <b className="text-ink font-mono">{formatDial(calibration.offsetDeg, 0.01)}</b> when its fast

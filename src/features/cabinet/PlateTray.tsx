@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { Link } from 'react-router-dom';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { AgeRing } from '../../components/AgeRing';
@@ -14,14 +15,24 @@ export function PlateTray(props: {
   readonly now: Date;
 }) {
   const { plates, openId, base, dueDays, now } = props;
+  const tray = useRef<HTMLElement>(null);
+  const opened = useRef<HTMLLIElement>(null);
+
+  // On a narrow window the tray is longer than the page: the open plate is brought to its middle.
+  useEffect(() => {
+    const [frame, item] = [tray.current, opened.current];
+    if (frame === null || item === null) return;
+    frame.scrollLeft = item.offsetLeft - (frame.clientWidth - item.offsetWidth) / 2;
+  }, [openId]);
+
   return (
-    <nav aria-label="Plates" className="relative overflow-x-auto">
+    <nav ref={tray} aria-label="Plates" className="relative overflow-x-auto">
       <ul className="flex min-w-full">
         {plates.map((plate) => {
           const age = calibrationAge(plate.calibration.measuredAt, dueDays, now);
           const open = plate.id === openId;
           return (
-            <li key={plate.id} className="flex min-w-28 flex-1 flex-col">
+            <li key={plate.id} ref={open ? opened : undefined} className="flex min-w-28 flex-1 flex-col">
               <Link
                 to={`${base}/${plate.id}`}
                 preventScrollReset

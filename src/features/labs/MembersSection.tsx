@@ -90,7 +90,11 @@ export function MembersSection() {
               <th scope="col" className="py-2 pr-4 font-words max-sm:hidden">
                 since
               </th>
-              {manages && <th scope="col" aria-label="way out" />}
+              {manages && (
+                <th scope="col">
+                  <span className="sr-only">take out</span>
+                </th>
+              )}
             </tr>
           </thead>
           <tbody>

@@ -38,7 +38,7 @@ export function StateRead(props: {
   const sense: Sense = letter === null ? 'none' : reading.stokes[2] > 0 ? 'counter-clockwise' : 'clockwise';
   const words = letter === null ? 'linear' : `${sense} to the receiver`;
   return (
-    <div className="flex items-center gap-5">
+    <div className="flex flex-wrap items-center gap-x-5 gap-y-2">
       <EllipseGlyph
         radius={46}
         psiDeg={toDegrees(azimuthRad)}
@@ -47,8 +47,8 @@ export function StateRead(props: {
         framed
         className="shrink-0"
       />
-      <div className="min-w-0">
-        <p className="overflow-x-auto text-[1.125rem]">
+      <div className="flex-1">
+        <p className="text-body sm:text-[1.125rem]">
           <Formula latex={shortLatex(reading.jones, convention)} source={reading.canonical} />
         </p>
         <p className="text-ink-2 mt-1">

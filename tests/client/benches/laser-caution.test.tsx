@@ -9,7 +9,7 @@ afterEach(cleanup);
 describe('the laser caution', () => {
   it.each(['3R', '3B', '4', null] as const)('stands in full for class %s', (laserClass) => {
     render(<LaserCaution laserClass={laserClass} hazardWavelengthsNm={[405, 810]} variant="full" />);
-    const caution = screen.getByRole('region', { name: 'Laser caution' });
+    const caution = screen.getByRole('note', { name: 'Laser caution' });
     for (const words of [
       'eyewear made for 405 and 810nm',
       'table height',
