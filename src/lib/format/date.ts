@@ -21,6 +21,11 @@ export function formatDate(date: Date): string {
   return `${date.getDate()} ${months[date.getMonth()] ?? ''} ${date.getFullYear()}`;
 }
 
+/** `16 Jun`, where the year is plain from the place. */
+export function formatShortDate(date: Date): string {
+  return `${date.getDate()} ${(months[date.getMonth()] ?? '').slice(0, 3)}`;
+}
+
 /** `Tuesday 16 June 2026`. */
 export function formatLongDate(date: Date): string {
   return `${weekdays[date.getDay()] ?? ''} ${formatDate(date)}`;

@@ -1,5 +1,13 @@
 export { formatAngle, formatChange, formatDial, formatTheta } from './angle';
-export { daysBetween, formatDate, formatLongDate, formatMoment, formatTime, formatTimeExact } from './date';
+export {
+  daysBetween,
+  formatDate,
+  formatLongDate,
+  formatMoment,
+  formatShortDate,
+  formatTime,
+  formatTimeExact,
+} from './date';
 export { formatFidelity, formatInfidelity, infidelityAscii } from './fidelity';
 export { parseTypedNumber, type TypedNumber } from './parse-number';
 export { groupDigits, minusSign, missingSign, thinGap, toPlainAscii, withTrueMinus } from './signs';

@@ -15,13 +15,16 @@ export function toPlainAscii(text: string): string {
   return text.replaceAll(minusSign, '-').replace(/[\u202F\u2009\u00A0]/g, '');
 }
 
-/** Groups of three from 1 000 on, on both sides of the point: `12 345.678 9`. Takes plain digits with an optional sign and point. */
+/**
+ * Groups of three from 1 000 on, `12 345`, and after the point where there are more than four digits, `0.999 975`: four may stay
+ * together (NIST SP 811, 10.5.3, from memory). Takes plain digits with an optional sign and point.
+ */
 export function groupDigits(text: string): string {
   const match = /^([-\u2212+]?)(\d+)(?:\.(\d+))?$/.exec(text);
   if (match === null) return text;
   const [, sign = '', whole = '', fraction] = match;
   const left = whole.length > 3 ? whole.replace(/\B(?=(?:\d{3})+$)/g, thinGap) : whole;
   if (fraction === undefined) return sign + left;
-  const right = fraction.length > 3 ? (fraction.match(/\d{1,3}/g) ?? []).join(thinGap) : fraction;
+  const right = fraction.length > 4 ? (fraction.match(/\d{1,3}/g) ?? []).join(thinGap) : fraction;
   return `${sign}${left}.${right}`;
 }
