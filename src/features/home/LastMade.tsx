@@ -3,9 +3,9 @@ import { FidelityChip } from '../../components/FidelityChip';
 import { fidelityVerdict } from '../../components/fidelity-verdict';
 import { Scientific } from '../../components/Scientific';
 import { TextLink } from '../../components/TextLink';
+import { formatShortDate } from '../../lib/format';
 import { useLab } from '../labs';
 import { sharedAxis } from './shared-axis';
-import { shortDate } from './short-date';
 
 const axisWidth = 234;
 
@@ -64,7 +64,7 @@ export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] })
                   </TextLink>
                 </p>
                 <p className="text-s text-ink-2">
-                  {item.benchName}, run {item.runNumber}, {shortDate(new Date(item.recordedAt))}
+                  {item.benchName}, run {item.runNumber}, {formatShortDate(new Date(item.recordedAt))}
                 </p>
               </div>
               <div className="shrink-0">

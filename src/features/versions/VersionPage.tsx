@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
-import { useParams } from 'react-router-dom';
+import { Link, useParams } from 'react-router-dom';
 import { describeConvention } from '../../../shared/optics/convention';
 import type { Version } from '../../../shared/schemas/versions';
 import { BeamWorking, BeamWrong } from '../../components/BeamState';
@@ -9,13 +9,14 @@ import { Scientific } from '../../components/Scientific';
 import { SectionHead } from '../../components/SectionHead';
 import { TextButton, TextLink } from '../../components/TextLink';
 import { VersionSeal } from '../../components/VersionSeal';
-import { formatMoment } from '../../lib/format';
+import { formatMoment, formatShortDate } from '../../lib/format';
 import { useTitle } from '../../lib/use-title';
 import { useLab } from '../labs';
 import { FrozenPlates } from './FrozenPlates';
 import { FrozenTargets } from './FrozenTargets';
 import { HashCheck } from './HashCheck';
 import { protocolVersionsQuery, versionQuery } from './queries';
+import './versions.css';
 
 /** One version: all that was frozen, and what it hangs on. */
 export function Component() {
@@ -65,17 +66,19 @@ function VersionSheet({ version, protocolId }: VersionSheetProps) {
             <p className="mt-1 mb-0 text-s text-ink-2">{content.protocol.purpose}</p>
           )}
         </div>
-        <div className="flex flex-wrap items-center gap-6">
-          <TextLink to={href}>Open the draft</TextLink>
-          <SaveCanonical version={version} />
-          {may('runs.record') && (
-            <ButtonLink kind="filled" to={`/labs/${lab.id}/bench/start?versionId=${summary.id}`}>
-              Run version {summary.number}
-            </ButtonLink>
-          )}
+        <div>
+          <div className="flex flex-wrap items-center justify-end gap-6">
+            <TextLink to={href}>Open the draft</TextLink>
+            <SaveCanonical version={version} />
+            {may('runs.record') && (
+              <ButtonLink kind="filled" to={`/labs/${lab.id}/bench/start?versionId=${summary.id}`}>
+                Run version {summary.number}
+              </ButtonLink>
+            )}
+          </div>
+          <VersionChain protocolId={protocolId} current={summary.number} />
         </div>
       </header>
-      <VersionChain protocolId={protocolId} current={summary.number} />
       <SectionHead className="mt-8">Targets and dials</SectionHead>
       <FrozenTargets content={content} />
       <SectionHead className="mt-10">Plates as they were known</SectionHead>
@@ -92,17 +95,17 @@ function VersionChain({ protocolId, current }: { readonly protocolId: string; re
   const chain = [...(data?.items ?? [])].sort((one, other) => one.number - other.number);
   if (chain.length < 2) return null;
   return (
-    <nav aria-label="Versions of this protocol" className="mt-5 overflow-x-auto">
+    <nav aria-label="Versions of this protocol" className="mt-4 overflow-x-auto">
       <ol className="version-chain">
-        {chain.map(({ number }) => (
+        {chain.map(({ number, savedAt }) => (
           <li key={number}>
-            <TextLink
+            <Link
               to={`/labs/${lab.id}/plan/${protocolId}/versions/${number}`}
               aria-current={number === current ? 'page' : undefined}
-              className="version-chain-seal"
             >
               <VersionSeal state="saved" number={number} />
-            </TextLink>
+              {formatShortDate(new Date(savedAt))}
+            </Link>
           </li>
         ))}
       </ol>
