@@ -16,6 +16,11 @@ import './sign-in-drawing.css';
 
 const STATE_RADIUS = 25.5;
 const FAR_RIGHT = 4200;
+/**
+ * The box ends where the words begin and the beam hangs out of it: a drawing under the words, however empty there, leaves
+ * their contrast undecided for a checker.
+ */
+const BOX_WIDTH = 870;
 
 const FINE_TICKS = ticks(0.2, ARC.radius, (at) => (at % 1 === 0 ? 0 : 9.5));
 const DEGREE_TICKS = ticks(1, ARC.radius, (at) => (at % 5 === 0 ? 0 : 19));
@@ -55,7 +60,7 @@ export function SignInDrawing() {
   const indexTip = ARC.outer + 1;
   return (
     <div className="sign-in-drawing" aria-hidden="true">
-      <svg viewBox="0 0 1440 900" focusable="false">
+      <svg viewBox={`0 0 ${BOX_WIDTH} 900`} focusable="false">
         <g fill="none" stroke="var(--rule)" strokeWidth={0.8}>
           <path d={quarter(ARC.outer)} />
           {ARC.plate.map((radius) => (

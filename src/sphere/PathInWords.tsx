@@ -16,15 +16,8 @@ export function PathInWords({ input }: { readonly input: SphereInput }) {
           <th scope="col">plate</th>
           <th scope="col">fast axis</th>
           <th scope="col">turn</th>
-          <th scope="col">state after it</th>
-          <th scope="col" className="path-number">
-            S<sub>1</sub>
-          </th>
-          <th scope="col" className="path-number">
-            S<sub>2</sub>
-          </th>
-          <th scope="col" className="path-number">
-            S<sub>3</sub>
+          <th scope="col">
+            state after it, with S<sub>1</sub>, S<sub>2</sub>, S<sub>3</sub>
           </th>
         </tr>
       </thead>
@@ -33,7 +26,7 @@ export function PathInWords({ input }: { readonly input: SphereInput }) {
           <th scope="row">before the plates</th>
           <td>—</td>
           <td>—</td>
-          <StateCells state={words.start} />
+          <StateCell state={words.start} />
         </tr>
         {words.turns.map((turn, index) => (
           <tr key={index}>
@@ -43,7 +36,7 @@ export function PathInWords({ input }: { readonly input: SphereInput }) {
               {formatAngle(turn.amountDeg)} {turn.sense}
               {turn.moves ? '' : '; the light lies along the axis and stays'}
             </td>
-            <StateCells state={turn.after} />
+            <StateCell state={turn.after} />
           </tr>
         ))}
         {words.target !== undefined && (
@@ -55,7 +48,7 @@ export function PathInWords({ input }: { readonly input: SphereInput }) {
                 ? '—'
                 : `the end is ${missInWords(words.target.label, words.target.missDeg)}`}
             </td>
-            <StateCells state={words.target} />
+            <StateCell state={words.target} />
           </tr>
         )}
       </tbody>
@@ -63,16 +56,12 @@ export function PathInWords({ input }: { readonly input: SphereInput }) {
   );
 }
 
-function StateCells({ state }: { readonly state: StateWords }) {
+function StateCell({ state }: { readonly state: StateWords }) {
   return (
-    <>
-      <td>{state.text}</td>
-      {state.shown.map((value, index) => (
-        <td key={index} className="path-number">
-          {formatStokes(value)}
-        </td>
-      ))}
-    </>
+    <td>
+      {state.text}
+      <span className="path-stokes">{state.shown.map(formatStokes).join(', ')}</span>
+    </td>
   );
 }
 

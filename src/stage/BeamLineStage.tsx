@@ -6,7 +6,7 @@ import { OutputLight } from './OutputLight';
 import { PlateOnBeam } from './PlateOnBeam';
 import { Source, StagePolariser } from './SourceAndPolariser';
 import { type StageData, turnedByHand } from './stage-data';
-import { fittingStage } from './stage-layout';
+import { arrangeStage } from './stage-layout';
 import { StateBetween } from './StateBetween';
 import './stage.css';
 
@@ -21,19 +21,17 @@ interface Props {
   readonly children?: ReactNode;
 }
 
-const WIDTH_BEFORE = 1140;
+const WIDTH_BEFORE = 1360;
 
 /** The bench in a line, as the hand meets it: source, polariser, plates in beam order with the light between them, output. */
 export function BeamLineStage({ stage, onDial, onBackToSolution, viewedFrom = 'receiver', children }: Props) {
-  const line = useRef<HTMLDivElement>(null);
-  const width = useBoxWidth(line, WIDTH_BEFORE);
-  const sizes = fittingStage(width, stage.plates.length);
+  const box = useRef<HTMLDivElement>(null);
+  const width = useBoxWidth(box, WIDTH_BEFORE);
+  const { sizes, readoutBeside, scrolls } = arrangeStage(width, stage.plates.length, children !== undefined);
   const turned = turnedByHand(stage.plates);
-  const scrolls = sizes.leastWidth > width;
   return (
-    <div className="stage">
+    <div ref={box} className={classNames('stage', !readoutBeside && 'stage-stacked')}>
       <div
-        ref={line}
         className={classNames(
           'stage-line',
           scrolls && 'stage-line-scrolls',

@@ -50,3 +50,23 @@ export function fittingStage(width: number, plateCount: number): StageSizes {
   }
   return stageSizes(RING_RADIUS.least, plateCount);
 }
+
+/** The readout's column beside the beam line, with its gap. */
+const READOUT_WIDTH = 220;
+/** On a narrower page the readout always stands under the beam line. */
+const BESIDE_FROM = 940;
+
+export interface StageArrangement {
+  readonly sizes: StageSizes;
+  readonly readoutBeside: boolean;
+  readonly scrolls: boolean;
+}
+
+/** The readout stands beside the beam line as long as that doesn't make it scroll. */
+export function arrangeStage(width: number, plateCount: number, hasReadout: boolean): StageArrangement {
+  const beside = width - READOUT_WIDTH;
+  const smallest = stageSizes(RING_RADIUS.least, plateCount).leastWidth;
+  const readoutBeside = hasReadout && width >= BESIDE_FROM && smallest <= beside;
+  const lineWidth = readoutBeside ? beside : width;
+  return { sizes: fittingStage(lineWidth, plateCount), readoutBeside, scrolls: smallest > lineWidth };
+}

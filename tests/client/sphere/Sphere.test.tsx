@@ -114,8 +114,8 @@ describe('the sphere without WebGL', () => {
     await user.click(screen.getByRole('button', { name: 'in words' }));
     const rows = within(screen.getByRole('table')).getAllByRole('row');
     expect(rows.map((row) => row.textContent)).toEqual([
-      'platefast axisturnstate after itS1S2S3',
-      'before the plates——H1.00000.00000.0000',
+      'platefast axisturnstate after it, with S1, S2, S3',
+      'before the plates——H1.0000, 0.0000, 0.0000',
       expect.stringMatching(/^H-371\.10°179\.2° counter-clockwiseellipse at −37\.8°, ellipticity 0\.2°/),
       expect.stringMatching(/^Q-B114\.73°86\.9° counter-clockwiseellipse at −62\.6°/),
       expect.stringMatching(/^target t2—the end is 0\.04° from t2 on the sphere/),
