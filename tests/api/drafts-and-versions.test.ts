@@ -12,7 +12,7 @@ import {
 } from '../../shared/schemas';
 import { answered, call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
-import { makeLab, saveVersion, shownFor, target, type TestLab } from './support/lab';
+import { makeLab, quarterBody, saveVersion, shownFor, target, type TestLab } from './support/lab';
 
 let harness: Harness;
 let lead: Agent;
@@ -108,10 +108,10 @@ test('versions chain by their hashes and never change, whatever happens to the p
   protocol = await get(at, protocolSchema);
   await saveVersion(harness, lead, lab.labId, protocol, 'Second.');
   const plate = await get(`/labs/${lab.labId}/plates/${lab.plateIds[1]}`, plateDetailSchema);
-  const { id: _id, recordedBy: _by, ...calibration } = plate.plate.calibration;
+  const measured = plate.plate.calibration;
   await answered(
     call(harness, lead, 'post', `/labs/${lab.labId}/plates/${lab.plateIds[1]}/calibrations`, {
-      body: { ...calibration, retardanceDeg: calibration.retardanceDeg + 0.5 },
+      body: { ...quarterBody('any').calibration, retardanceDeg: measured.retardanceDeg + 0.5 },
     }),
     z.unknown(),
   );

@@ -1,3 +1,4 @@
+import { createHmac } from 'node:crypto';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { z } from 'zod';
 import { call } from './support/calls';
@@ -52,7 +53,6 @@ async function copyOfSession(template: Awaited<ReturnType<Harness['signIn']>>) {
   await call(harness, template, 'get', '/session');
   const found: unknown = await harness.database('sessions').whereNotNull('user_id').select('sess');
   const [row] = rows.parse(found);
-  const { default: signature } = await import('cookie-signature');
   return {
     sess: row?.sess,
     cookie: async (sid: string, data: unknown) => {
@@ -61,7 +61,12 @@ async function copyOfSession(template: Awaited<ReturnType<Harness['signIn']>>) {
         sess: JSON.stringify(data),
         expire: harness.database.raw(`now() + interval '1 hour'`),
       });
-      return `qt=${encodeURIComponent(`s:${signature.sign(sid, harness.config.sessionSecret)}`)}`;
+      // As express-session signs it: HMAC-SHA256 in base64 without its padding.
+      const mac = createHmac('sha256', harness.config.sessionSecret)
+        .update(sid)
+        .digest('base64')
+        .replace(/=+$/, '');
+      return `qt=${encodeURIComponent(`s:${sid}.${mac}`)}`;
     },
   };
 }

@@ -1,6 +1,6 @@
 import { type Request, type RequestHandler, type Response, Router } from 'express';
 import type { Knex } from 'knex';
-import passport, { type Authenticator } from 'passport';
+import passport from 'passport';
 import type { Logger } from 'pino';
 import { z } from 'zod';
 import { recordAccountEvent } from '../../audit/record-account-event';
@@ -101,7 +101,7 @@ type Outcome =
   | { readonly kind: 'broken'; readonly reason: string };
 
 function askProvider(
-  authenticator: Authenticator,
+  authenticator: InstanceType<typeof passport.Passport>,
   request: Request,
   response: Response,
   next: (error?: unknown) => void,

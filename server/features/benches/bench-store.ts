@@ -23,8 +23,19 @@ const holderRow = z.object({ plate_id: z.string(), plate_name: z.string(), bench
 export type StoredBench = Bench & Thing;
 
 /** What the API shows of a bench. */
-export function asBench({ labId: _labId, ...bench }: StoredBench): Bench {
-  return bench;
+export function asBench(stored: StoredBench): Bench {
+  return {
+    id: stored.id,
+    name: stored.name,
+    wavelengthNm: stored.wavelengthNm,
+    inputExpression: stored.inputExpression,
+    polariserSigmaDeg: stored.polariserSigmaDeg,
+    laserClass: stored.laserClass,
+    hazardWavelengthsNm: stored.hazardWavelengthsNm,
+    plates: stored.plates,
+    retiredAt: stored.retiredAt,
+    revision: stored.revision,
+  };
 }
 
 async function withPlates(

@@ -90,8 +90,20 @@ function mapRow(unread: unknown): StoredPlate {
 }
 
 /** What the API shows of a plate. */
-export function asPlate({ labId: _labId, seatId: _seatId, mountId: _mountId, ...plate }: StoredPlate): Plate {
-  return plate;
+export function asPlate(stored: StoredPlate): Plate {
+  return {
+    id: stored.id,
+    name: stored.name,
+    kind: stored.kind,
+    designWavelengthNm: stored.designWavelengthNm,
+    note: stored.note,
+    mount: stored.mount,
+    seatedAt: stored.seatedAt,
+    calibration: stored.calibration,
+    retiredAt: stored.retiredAt,
+    benches: stored.benches,
+    revision: stored.revision,
+  };
 }
 
 const calibrationColumns = `c.id as calibration_id, c.wavelength_nm, c.retardance_deg, c.retardance_sigma_deg,

@@ -13,8 +13,9 @@ const readingRow = z.object({
 const rowsOf = z.object({ rows: z.array(readingRow) });
 
 /** The worst setting of a protocol's last run that has any, from what its dials really said. */
-export interface WorstSetting extends LastMade {
+export interface WorstSetting {
   readonly run: RunSummary;
+  readonly made: LastMade;
 }
 
 /** So many of the newest runs are looked at: a page that says what waits is not the history. */
@@ -57,23 +58,21 @@ function worstSetting(run: RunSummary, row: z.infer<typeof readingRow>): WorstSe
   return [
     {
       run,
-      protocolId: run.protocolId,
-      protocolName: run.protocolName,
-      versionNumber: run.versionNumber,
-      benchName: run.benchName,
-      runId: run.id,
-      runNumber: run.number,
-      recordedAt: row.recorded_at.toISOString(),
-      label: target.label,
-      dialledInfidelity: row.dialled_infidelity,
-      expectedInfidelity: solution.expectedInfidelity,
-      expectedLow: solution.expectedLow,
-      expectedHigh: solution.expectedHigh,
-      toleranceInfidelity: content.toleranceInfidelity,
+      made: {
+        protocolId: run.protocolId,
+        protocolName: run.protocolName,
+        versionNumber: run.versionNumber,
+        benchName: run.benchName,
+        runId: run.id,
+        runNumber: run.number,
+        recordedAt: row.recorded_at.toISOString(),
+        label: target.label,
+        dialledInfidelity: row.dialled_infidelity,
+        expectedInfidelity: solution.expectedInfidelity,
+        expectedLow: solution.expectedLow,
+        expectedHigh: solution.expectedHigh,
+        toleranceInfidelity: content.toleranceInfidelity,
+      },
     },
   ];
-}
-
-export function lastMadeOf(worst: readonly WorstSetting[]): LastMade[] {
-  return worst.map(({ run: _run, ...made }) => made);
 }

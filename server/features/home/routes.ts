@@ -4,7 +4,7 @@ import { noBody, nothing, type Route, route } from '../../http/route';
 import { asPlate, listPlates } from '../cabinet';
 import { listBenches } from '../benches';
 import { findLab } from '../labs';
-import { lastMadeOf, lastRuns } from './last-made';
+import { lastRuns } from './last-made';
 import { draftsAhead } from './drafts-ahead';
 import { waitingFor } from './waiting';
 
@@ -28,7 +28,7 @@ export function homeRoutes(): readonly Route[] {
         return {
           body: {
             waiting: waitingFor({ lab: thing, member, plates, benches, ...runs, ...drafts, now }),
-            lastMade: lastMadeOf(runs.worst),
+            lastMade: runs.worst.map(({ made }) => made),
             cabinet: plates.map(asPlate),
           },
         };

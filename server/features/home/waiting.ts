@@ -41,8 +41,8 @@ export function waitingFor(facts: HomeFacts): WaitingItem[] {
 
 function notWithin(worst: readonly WorstSetting[]): WaitingItem[] {
   return worst
-    .filter((made) => made.dialledInfidelity > made.toleranceInfidelity)
-    .map(({ run, label, dialledInfidelity, toleranceInfidelity }) => ({
+    .filter(({ made }) => made.dialledInfidelity > made.toleranceInfidelity)
+    .map(({ run, made: { label, dialledInfidelity, toleranceInfidelity } }) => ({
       kind: 'dialled-not-within',
       run,
       label,

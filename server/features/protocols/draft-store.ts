@@ -30,8 +30,8 @@ const summaryRow = z.object({
 
 export type StoredProtocol = Protocol & Thing;
 
-export function asProtocol({ labId: _labId, ...protocol }: StoredProtocol): Protocol {
-  return protocol;
+export function asProtocol({ id, draft, latestVersion }: StoredProtocol): Protocol {
+  return { id, draft, latestVersion };
 }
 
 /** Every protocol of a lab, the latest saved first. */

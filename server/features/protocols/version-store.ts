@@ -35,8 +35,8 @@ function mapSummary(row: z.infer<typeof summaryRow>): VersionSummary {
   };
 }
 
-export function asVersion({ labId: _labId, ...version }: StoredVersion): Version {
-  return version;
+export function asVersion({ summary, content, canonicalJson, parentHash }: StoredVersion): Version {
+  return { summary, content, canonicalJson, parentHash };
 }
 
 const summaryColumns = [

@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import type supertest from 'supertest';
-import { z } from 'zod';
+import type { z } from 'zod';
 import type { Agent, Harness } from './harness';
 
 type Method = 'get' | 'post' | 'put' | 'patch' | 'delete';

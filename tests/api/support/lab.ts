@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { z } from 'zod';
+import type { z } from 'zod';
 import type { Role } from '../../../shared/permissions';
 import {
   acceptedInvitationSchema,
