@@ -42,7 +42,10 @@ export const createBenchSchema = z.strictObject({
   plateIds: z
     .array(idSchema)
     .length(2, 'A bench has two plates: the one that light meets first, then the second.')
-    .refine((ids) => new Set(ids).size === ids.length, 'One plate cannot stand in two places. Choose another.'),
+    .refine(
+      (ids) => new Set(ids).size === ids.length,
+      'One plate cannot stand in two places. Choose another.',
+    ),
 });
 export type CreateBench = z.infer<typeof createBenchSchema>;
 /** Needs If-Match. */

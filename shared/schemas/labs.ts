@@ -20,7 +20,9 @@ export const labSchema = z.strictObject({
 export type Lab = z.infer<typeof labSchema>;
 
 export const sessionSchema = z.strictObject({
-  user: z.strictObject({ id: idSchema, name: z.string(), login: z.string(), email: z.string().nullable() }).nullable(),
+  user: z
+    .strictObject({ id: idSchema, name: z.string(), login: z.string(), email: z.string().nullable() })
+    .nullable(),
   labs: z.array(z.strictObject({ id: idSchema, name: z.string(), role: roleSchema })),
 });
 export type Session = z.infer<typeof sessionSchema>;
@@ -56,7 +58,10 @@ export const invitationSchema = z.strictObject({
 });
 export type Invitation = z.infer<typeof invitationSchema>;
 export const invitationListSchema = z.strictObject({ items: z.array(invitationSchema) });
-export const createInvitationSchema = z.strictObject({ role: roleSchema, note: lineSchema(80, 'name or address') });
+export const createInvitationSchema = z.strictObject({
+  role: roleSchema,
+  note: lineSchema(80, 'name or address'),
+});
 /** The link is shown once: only a hash of its token is kept. */
 export const createdInvitationSchema = z.strictObject({ invitation: invitationSchema, token: z.string() });
 export const invitationPreviewSchema = z.strictObject({

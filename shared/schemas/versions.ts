@@ -72,7 +72,11 @@ export const versionContentSchema = z.strictObject({
     wavelengthNm: z.number(),
     laserClass: laserClassSchema,
     hazardWavelengthsNm: z.array(z.number()),
-    input: z.strictObject({ expression: z.string(), stokes: canonicalStokesSchema, polariserSigmaDeg: z.number() }),
+    input: z.strictObject({
+      expression: z.string(),
+      stokes: canonicalStokesSchema,
+      polariserSigmaDeg: z.number(),
+    }),
     /** In beam order. */
     plates: z.array(frozenPlateSchema),
   }),

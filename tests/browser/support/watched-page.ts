@@ -11,8 +11,8 @@ const flags = [
   '--disable-sync',
 ];
 
-/** three.js warns of its own coming change at every start; react-three-fiber follows in its next major version. */
-const expectedNoise = /THREE\.Clock: This module has been deprecated/u;
+/** three.js warns of its own coming change at every start, and software GL of being slow: neither is ours to mend. */
+const expectedNoise = [/THREE\.Clock: This module has been deprecated/u, /GL Driver Message/u];
 
 export function launchBrowser({ webgl }: { webgl: boolean }): Promise<Browser> {
   return chromium.launch({
@@ -45,7 +45,12 @@ export async function openPage(
   page.on('console', (message) => {
     const text = message.text();
     const isRefusal = text.startsWith('Failed to load resource');
-    if (!['error', 'warning'].includes(message.type()) || isRefusal || expectedNoise.test(text)) return;
+    if (
+      !['error', 'warning'].includes(message.type()) ||
+      isRefusal ||
+      expectedNoise.some((noise) => noise.test(text))
+    )
+      return;
     faults.push(`console: ${text}`);
   });
   page.on('pageerror', (error) => faults.push(`error: ${error.message}`));
