@@ -71,8 +71,9 @@ export function ConventionSection() {
       {changes && !same && (
         <div className="mt-4 space-y-3">
           <p>
-            Drafts keep what was typed, and it will be read in the new convention: an R that was typed may
-            become the other hand. Read the drafts again after this.
+            Every row of a draft and every bench’s input state that can be read is rewritten, so that the
+            light stays the same: an R may then be written as L. What cannot be read stays as it was typed.
+            Versions keep their words and their convention.
           </p>
           <FormProblem error={saving.error} />
           <div className="flex flex-wrap gap-3">

@@ -99,6 +99,7 @@ describe('the lab page', () => {
     expect(example()).toMatch(/turns counter-clockwise.*called L.*S3 is written \+1/);
     await press.click(screen.getByRole('radio', { name: 'ωt − kz' }));
     expect(example()).toMatch(/turns clockwise.*called R.*S3 is written \u22121/);
+    expect(screen.getByText(/can be read is rewritten, so that the light stays the same/)).toBeDefined();
     expect(calls.some(({ method }) => method === 'PATCH')).toBe(false);
     await press.click(screen.getByRole('button', { name: 'Save the convention' }));
     expect(calls.find(({ method }) => method === 'PATCH')?.body).toBe(
