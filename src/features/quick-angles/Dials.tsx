@@ -86,7 +86,8 @@ export function Dials(props: {
             {idealInfidelityHere !== null && (
               <>
                 {' '}
-                The angles for ideal plates would give <Scientific value={idealInfidelityHere} /> here.
+                The angles for exact plates of these kinds would give{' '}
+                <Scientific value={idealInfidelityHere} /> here.
               </>
             )}
           </>

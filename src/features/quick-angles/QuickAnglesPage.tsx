@@ -39,8 +39,11 @@ function useOwnLab(): { readonly convention: Convention | null; readonly benches
   });
   return {
     convention: lab.data?.convention ?? null,
+    // Not before the lab: without its convention nothing says what light goes into its benches.
     benches:
-      benches.data?.items.filter(({ retiredAt, plates }) => retiredAt === null && plates.length === 2) ?? [],
+      (lab.data === undefined ? undefined : benches.data)?.items.filter(
+        ({ retiredAt, plates }) => retiredAt === null && plates.length === 2,
+      ) ?? [],
   };
 }
 
@@ -57,11 +60,21 @@ export function Component() {
     benchId === 'ideal' ? undefined : (own.benches.find(({ id }) => id === benchId) ?? own.benches[0]);
   const written = useDeferredValue(expression);
   const reading = useMemo(() => parseState(written, convention), [written, convention]);
-  const settings = useMemo(
-    () => quickSettings(written, bench ?? idealBench, convention),
-    [written, bench, convention],
-  );
   const plates = bench === undefined ? idealPlates : namedPlates(bench);
+  // The bench's input was written in its lab's convention, whichever one the state is written in here.
+  const benchConvention = own.convention ?? DEFAULT_CONVENTION;
+  const settings = useMemo(
+    () =>
+      quickSettings(
+        { expression: written, convention },
+        {
+          bench: bench ?? idealBench,
+          kinds: (bench?.plates ?? idealPlates).map(({ kind }) => kind),
+          convention: benchConvention,
+        },
+      ),
+    [written, convention, bench, benchConvention],
+  );
   const empty = expression.trim() === '';
   return (
     <div className="pt-4 pb-10">

@@ -1,0 +1,139 @@
+// @vitest-environment jsdom
+import { QueryClientProvider } from '@tanstack/react-query';
+import { cleanup, render, screen } from '@testing-library/react';
+import userEvent from '@testing-library/user-event';
+import { MemoryRouter } from 'react-router-dom';
+import { afterEach, describe, expect, it, vi } from 'vitest';
+import { DEFAULT_CONVENTION } from '../../../shared/optics';
+import type { SolvingBench } from '../../../shared/protocol/solve-row';
+import type { Bench } from '../../../shared/schemas/benches';
+import type { Plate } from '../../../shared/schemas/cabinet';
+import { quickSettings } from '../../../src/features/quick-angles/quick-settings';
+import { Component as QuickAnglesPage } from '../../../src/features/quick-angles/QuickAnglesPage';
+import { createQueryClient } from '../../../src/lib/query-client';
+
+afterEach(() => {
+  cleanup();
+  vi.unstubAllGlobals();
+});
+
+const id = (number: number) => `0197c3a0-0000-7000-8000-${String(number).padStart(12, '0')}`;
+const at = '2026-11-01T09:00:00.000Z';
+
+function plate(number: number, name: string, kind: Plate['kind'], retardanceDeg: number): Plate {
+  return {
+    id: id(number),
+    name,
+    kind,
+    designWavelengthNm: 810,
+    note: '',
+    mount: { name: `M-${number}`, direction: 1, resolutionDeg: 0.1, repeatabilityDeg: 0.02 },
+    seatedAt: at,
+    calibration: {
+      id: id(number + 100),
+      wavelengthNm: 810,
+      retardanceDeg,
+      retardanceSigmaDeg: 0.2,
+      offsetDeg: 0,
+      offsetSigmaDeg: 0.05,
+      method: 'scan between crossed polarisers',
+      note: '',
+      measuredAt: at,
+      recordedBy: 'Ines Okafor',
+    },
+    retiredAt: null,
+    benches: [],
+    revision: 1,
+  };
+}
+
+const bench: Bench = {
+  id: id(7),
+  name: 'idler arm',
+  wavelengthNm: 810,
+  // An ellipse with a hand, so that who names the hands matters.
+  inputExpression: '(2 H + i V)/sqrt(5)',
+  polariserSigmaDeg: 0.05,
+  laserClass: '3B',
+  hazardWavelengthsNm: [810],
+  plates: [plate(1, 'Q-A', 'quarter', 90), plate(2, 'H-A', 'half', 180)],
+  retiredAt: null,
+  revision: 1,
+};
+
+/** A server with one lab and one bench, or with nobody signed in. */
+function serve(signedIn: boolean) {
+  const lab = { id: id(1), name: 'Harbour Street', convention: DEFAULT_CONVENTION, calibrationDueDays: 90 };
+  vi.stubGlobal('fetch', (url: string) => {
+    const answer = url.endsWith('/session')
+      ? {
+          user: signedIn ? { id: id(3), name: 'Jonas Brandt', login: 'jonas', email: null } : null,
+          labs: signedIn ? [{ id: lab.id, name: lab.name, role: 'lead' }] : [],
+        }
+      : url.endsWith('/benches')
+        ? { items: [bench] }
+        : lab;
+    return Promise.resolve(new Response(JSON.stringify(answer), { status: 200 }));
+  });
+}
+
+function open(state: string) {
+  render(
+    <QueryClientProvider client={createQueryClient()}>
+      <MemoryRouter initialEntries={[`/quick-angles?state=${encodeURIComponent(state)}`]}>
+        <QuickAnglesPage />
+      </MemoryRouter>
+    </QueryClientProvider>,
+  );
+  return userEvent.setup();
+}
+
+/** What the section of the dials says. */
+const dials = () => screen.getByRole('region', { name: /^(?:Dials|Angles)$/u }).textContent;
+
+describe('the page of quick angles', () => {
+  it('gives a stranger angles for exact plates, and says of a state that cannot be read where it stops', async () => {
+    serve(false);
+    const user = open('H');
+    expect(screen.getByText(/Exact plates make it exactly/u)).toBeDefined();
+    const field = screen.getByRole('textbox', { name: /^state/u });
+    await user.clear(field);
+    await user.type(field, 'H + ');
+    expect(await screen.findByText(/^Column \d+:/u)).toBeDefined();
+    expect(screen.getByText('They stand here as soon as the state can be read.')).toBeDefined();
+  });
+
+  it('reads the bench’s input in its lab’s convention, whichever one the state is written in', async () => {
+    serve(true);
+    const user = open('D');
+    await screen.findByRole('heading', { name: 'Dials' });
+    const before = dials();
+    // D is the same light in every convention, so nothing about its dials may change.
+    await user.selectOptions(
+      screen.getByRole('combobox', { name: /^written in the convention of/u }),
+      'receiver-optics-wt',
+    );
+    expect(dials()).toBe(before);
+  });
+});
+
+// |S3| = sin 30° = 0.5: a quarter-wave plate reaches up to 0.6 from this bench's input, and a half-wave plate keeps |S3|.
+const written = { expression: 'ellipse(30deg, 15deg)', convention: DEFAULT_CONVENTION };
+const solved = (of: SolvingBench, kinds: readonly Plate['kind'][]) => {
+  const settings = quickSettings(written, { bench: of, kinds, convention: DEFAULT_CONVENTION });
+  if (settings?.ok !== true) throw new Error('not solved');
+  return settings;
+};
+
+describe('what the angles for exact plates would give', () => {
+  it('is next to nothing where the bench’s plates are exact, in any order and with any light in', () => {
+    const settings = solved(bench, ['quarter', 'half']);
+    // Only the rounding of two dials to 0.1° is left: each is off by at most 0.05°, a few 1e-6 in 1 − F.
+    expect(settings.idealInfidelityHere).toBeLessThan(2e-5);
+    expect(settings.idealInfidelityHere).toBeGreaterThanOrEqual(0);
+  });
+
+  it('is not said where a plate’s kind does not tell what an exact one would be', () => {
+    expect(solved(bench, ['quarter', 'other']).idealInfidelityHere).toBeNull();
+  });
+});
