@@ -22,6 +22,8 @@ interface RequestOptions {
   /** Names a creating call, so that a retry of it creates nothing twice. */
   readonly idempotencyKey?: string;
   readonly signal?: AbortSignal;
+  /** Lets the call outlive the page that made it. */
+  readonly keepalive?: boolean;
 }
 
 /** A key for one creating call, kept through its retries. `crypto.randomUUID` is absent on plain http. */
@@ -37,7 +39,7 @@ export function newIdempotencyKey(): string {
  * @throws ApiError with the problem document, or with status 0 when the network failed.
  */
 export async function request<Response>(path: string, options: RequestOptions = {}): Promise<Response> {
-  const { method = 'GET', body, ifMatch, idempotencyKey, signal } = options;
+  const { method = 'GET', body, ifMatch, idempotencyKey, signal, keepalive = false } = options;
   const headers: Record<string, string> = { accept: 'application/json' };
   if (body !== undefined) headers['content-type'] = 'application/json';
   if (ifMatch !== undefined) headers['if-match'] = `"r${ifMatch}"`;
@@ -48,6 +50,7 @@ export async function request<Response>(path: string, options: RequestOptions = 
       method,
       headers,
       credentials: 'same-origin',
+      keepalive,
       ...(body === undefined ? {} : { body: JSON.stringify(body) }),
       ...(signal === undefined ? {} : { signal }),
     });

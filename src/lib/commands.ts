@@ -30,6 +30,14 @@ function isField(target: EventTarget | null): boolean {
   );
 }
 
+/** What Enter and Space already press. */
+function isPressable(target: EventTarget | null): boolean {
+  return target instanceof HTMLElement && target.closest('button, a, summary, [role="button"]') !== null;
+}
+
+// The letter after `g` goes to a station (use-go-keys.ts): it is no command of the page.
+const goPrefixMs = 1500;
+
 /** "Ctrl+z" stands for the command key of a Mac as well. */
 function nameOf(event: KeyboardEvent): string {
   const single = event.key.length === 1;
@@ -50,11 +58,18 @@ export function useCommands(commands: readonly Command[]): void {
     current.current = commands;
   });
   useEffect(() => {
+    let goPressedAt = Number.NEGATIVE_INFINITY;
     const listen = (event: KeyboardEvent) => {
       if (event.defaultPrevented || document.querySelector('dialog[open]') !== null) return;
       const name = nameOf(event);
       if (isField(event.target) && !name.startsWith('Ctrl+')) return;
+      if ((name === 'Enter' || name === ' ') && isPressable(event.target)) return;
       if (name.length === 1 && !singleLettersAreOn()) return;
+      if (name.length === 1) {
+        const goes = event.timeStamp - goPressedAt < goPrefixMs;
+        goPressedAt = name === 'g' ? event.timeStamp : Number.NEGATIVE_INFINITY;
+        if (goes) return;
+      }
       const command = current.current.find(({ keys, when }) => keys.includes(name) && (when?.() ?? true));
       if (command === undefined) return;
       event.preventDefault();

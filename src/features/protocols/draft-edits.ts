@@ -28,6 +28,9 @@ export const writeExpression = (id: string, expression: string): DraftEdit =>
 export const writeLabel = (id: string, label: string): DraftEdit =>
   changeTarget(`label ${id}`, id, { label });
 
+/** Puts a row back as it was before its source was opened. */
+export const restoreTarget = (target: DraftTarget): DraftEdit => changeTarget(null, target.id, target);
+
 export const holdSolution = (id: string, fastAxesDeg: readonly number[] | null): DraftEdit =>
   changeTarget(null, id, { heldFastAxesDeg: fastAxesDeg === null ? null : [...fastAxesDeg] });
 
@@ -77,7 +80,12 @@ export const setTolerance = (toleranceInfidelity: number): DraftEdit => ({
   apply: (content) => ({ ...content, toleranceInfidelity }),
 });
 
+/** Solutions are held for the plates of one bench: on another they mean nothing. */
 export const chooseBench = (benchId: string): DraftEdit => ({
   typing: null,
-  apply: (content) => ({ ...content, benchId }),
+  apply: (content) => ({
+    ...content,
+    benchId,
+    targets: content.targets.map((target) => ({ ...target, heldFastAxesDeg: null })),
+  }),
 });

@@ -38,11 +38,13 @@ export function saveDraft(
   protocolId: string,
   content: DraftContent,
   revision: number,
+  keepalive: boolean,
 ): Promise<Draft> {
   return request<Draft>(`/labs/${labId}/protocols/${protocolId}/draft`, {
     method: 'PUT',
     body: content,
     ifMatch: revision,
+    keepalive,
   });
 }
 

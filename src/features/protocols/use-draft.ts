@@ -2,11 +2,13 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
 import {
   type Draft,
+  type DraftContent,
   draftContentSchema,
   draftSchema,
   type Protocol,
 } from '../../../shared/schemas/protocols';
 import { ApiError } from '../../lib/api';
+import { labQuery } from '../labs';
 import type { DraftEdit } from './draft-edits';
 import { applyEdit, type DraftHistory, redo, startHistory, undo } from './draft-history';
 import { forgetDraft, keepDraft, keptDraft } from './kept-draft';
@@ -19,12 +21,11 @@ export type Saving =
   | { readonly state: 'kept'; readonly reason: string };
 
 export interface DraftControl {
-  readonly content: DraftHistory['content'];
+  readonly content: DraftContent;
   readonly revision: number;
   readonly saving: Saving;
   /** What somebody else has saved meanwhile; until the person decides nothing is overwritten. */
   readonly conflict: Draft | null;
-  readonly canUndo: boolean;
   readonly edit: (edit: DraftEdit) => void;
   readonly undo: () => void;
   readonly redo: () => void;
@@ -52,9 +53,24 @@ function open(protocol: Protocol, userId: string): State {
     conflict: null,
     keptReason: null,
   };
-  if (kept === null || JSON.stringify(kept.content) === JSON.stringify(draft.content)) return state;
+  if (kept === null || same(kept.content, draft.content)) return state;
   const history = { ...startHistory(draft.content), content: kept.content, past: [draft.content] };
   return { ...state, history, conflict: kept.revision === draft.revision ? null : draft };
+}
+
+function same(one: DraftContent, other: DraftContent): boolean {
+  return JSON.stringify(one) === JSON.stringify(other);
+}
+
+/** As the server will keep it: trimmed, for one, so that a space after a name is not a change for ever. */
+function asKept(content: DraftContent): DraftContent | null {
+  const parsed = draftContentSchema.safeParse(content);
+  return parsed.success ? parsed.data : null;
+}
+
+/** A refusal is final until something else is typed; what is worth another try is a server or a network that failed. */
+function mayPass(error: unknown): boolean {
+  return !(error instanceof ApiError) || [0, 408, 429].includes(error.status) || error.status >= 500;
 }
 
 /** A draft under edit: saves itself a moment after the last key, keeps what could not be saved, and never overwrites somebody else's save. */
@@ -64,55 +80,69 @@ export function useDraft(labId: string, userId: string, protocol: Protocol, mayW
   const [state, setState] = useState(() => open(protocol, userId));
   const [attempt, setAttempt] = useState(0);
   const inFlight = useRef(false);
+  const leaving = useRef<() => void>(() => undefined);
   const { history, base, conflict, keptReason } = state;
-  const changed = JSON.stringify(history.content) !== JSON.stringify(base.content);
+  const { content } = history;
+  const unsaved = !same(asKept(content) ?? content, base.content);
 
   useEffect(() => {
+    leaving.current = () => undefined;
     if (!mayWrite) return;
-    if (!changed) {
+    if (!unsaved) {
       forgetDraft(userId, protocolId);
       return;
     }
-    const kept = keepDraft(userId, protocolId, { revision: base.revision, content: history.content });
-    if (conflict !== null || !draftContentSchema.safeParse(history.content).success) return;
-    const save = async () => {
+    const kept = keepDraft(userId, protocolId, { revision: base.revision, content });
+    const sent = asKept(content);
+    if (conflict !== null || sent === null) return;
+    const acknowledge = (saved: Draft) => {
+      setState((now) => ({ ...now, base: saved, keptReason: null }));
+      queryClient.setQueryData(protocolQuery(labId, protocolId).queryKey, (old: Protocol | undefined) =>
+        old === undefined ? old : { ...old, draft: saved },
+      );
+      void queryClient.invalidateQueries({ queryKey: protocolsQuery(labId).queryKey, exact: true });
+    };
+    const save = async (keepalive: boolean) => {
       // One at a time: a second save of the same revision would meet the first as a stranger's.
       if (inFlight.current) return;
       inFlight.current = true;
       try {
-        const saved = await saveDraft(labId, protocolId, history.content, base.revision);
-        setState((now) => ({ ...now, base: saved, keptReason: null }));
-        queryClient.setQueryData(protocolQuery(labId, protocolId).queryKey, (old: Protocol | undefined) =>
-          old === undefined ? old : { ...old, draft: saved },
-        );
-        void queryClient.invalidateQueries({ queryKey: protocolsQuery(labId).queryKey, exact: true });
+        acknowledge(await saveDraft(labId, protocolId, sent, base.revision, keepalive));
       } catch (error) {
         const theirs = theirDraft(error);
         if (theirs !== null) {
-          setState((now) => ({ ...now, conflict: theirs }));
+          // Our own save whose answer was lost comes back as theirs.
+          if (same(theirs.content, sent)) acknowledge(theirs);
+          else setState((now) => ({ ...now, conflict: theirs }));
+          // A changed convention raises every draft's revision, and the page has to know of it.
+          void queryClient.invalidateQueries({ queryKey: labQuery(labId).queryKey, exact: true });
           return;
         }
         const reason = error instanceof Error ? error.message : 'It could not be saved.';
         setState((now) => ({ ...now, keptReason: kept ? reason : `${reason} This device keeps no copy.` }));
-        setTimeout(() => setAttempt((count) => count + 1), retryMs);
+        if (mayPass(error)) setTimeout(() => setAttempt((count) => count + 1), retryMs);
       } finally {
         inFlight.current = false;
       }
     };
-    const timer = setTimeout(() => void save(), quietMs);
-    return () => clearTimeout(timer);
-  }, [
-    labId,
-    userId,
-    protocolId,
-    history.content,
-    base.revision,
-    changed,
-    conflict,
-    attempt,
-    mayWrite,
-    queryClient,
-  ]);
+    let waiting = true;
+    const timer = setTimeout(() => {
+      waiting = false;
+      void save(false);
+    }, quietMs);
+    const leave = () => void save(true);
+    window.addEventListener('pagehide', leave);
+    leaving.current = () => {
+      if (waiting) void save(true);
+    };
+    return () => {
+      clearTimeout(timer);
+      window.removeEventListener('pagehide', leave);
+    };
+  }, [labId, userId, protocolId, content, unsaved, base.revision, conflict, attempt, mayWrite, queryClient]);
+
+  // Another page of ours is no reason to leave the last keys behind.
+  useEffect(() => () => leaving.current(), []);
 
   const change = useCallback(
     (next: (history: DraftHistory) => DraftHistory) =>
@@ -121,15 +151,14 @@ export function useDraft(labId: string, userId: string, protocol: Protocol, mayW
   );
 
   return {
-    content: history.content,
+    content,
     revision: base.revision,
-    saving: !changed
+    saving: !unsaved
       ? { state: 'saved', at: base.savedAt, by: base.savedBy }
       : keptReason === null
         ? { state: 'typed' }
         : { state: 'kept', reason: keptReason },
     conflict,
-    canUndo: history.past.length > 0,
     edit: (edit) => change((now) => applyEdit(now, edit)),
     undo: () => change(undo),
     redo: () => change(redo),

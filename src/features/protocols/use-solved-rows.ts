@@ -36,6 +36,13 @@ export function useSolvedRows(
   useEffect(() => {
     const started = startWorker();
     worker.current = started;
+    started.addEventListener('error', () =>
+      setSolved((before) => ({
+        ...before,
+        progress: null,
+        benchFault: 'The solver stopped. Load the page again; what you typed is kept.',
+      })),
+    );
     return () => {
       started.terminate();
       worker.current = null;

@@ -1,5 +1,6 @@
 import { parseState } from '../../../shared/optics/expression';
-import type { FrozenTarget, VersionContent } from '../../../shared/schemas/versions';
+import type { FrozenSolution, FrozenTarget, VersionContent } from '../../../shared/schemas/versions';
+import { fidelityVerdict } from '../../components/fidelity-verdict';
 import { FidelityChip } from '../../components/FidelityChip';
 import { Formula } from '../../components/Formula';
 import { Scientific } from '../../components/Scientific';
@@ -100,6 +101,7 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
               kind="predicted"
             />
             <Scientific value={solution.expectedInfidelity} />
+            <PredictedVerdict solution={solution} toleranceInfidelity={content.toleranceInfidelity} />
           </span>
         )}
       </td>
@@ -111,5 +113,20 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
         {target.reach === 'nearest' && count === 1 ? 'closest' : `${target.chosenSolution + 1} of ${count}`}
       </td>
     </tr>
+  );
+}
+
+interface PredictedVerdictProps {
+  readonly solution: FrozenSolution;
+  readonly toleranceInfidelity: number;
+}
+
+/** In words wherever it isn't within. */
+function PredictedVerdict({ solution, toleranceInfidelity }: PredictedVerdictProps) {
+  const { expectedInfidelity: value, expectedLow: low, expectedHigh: high } = solution;
+  const verdict = fidelityVerdict({ value, low, high }, toleranceInfidelity);
+  if (verdict === 'within') return null;
+  return (
+    <span className={verdict === 'not within' ? 'font-strong text-fault' : 'text-ink-2'}>{verdict}</span>
   );
 }

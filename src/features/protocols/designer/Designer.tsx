@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'react';
+import { sameConvention } from '../../../../shared/optics/convention';
 import { parseState } from '../../../../shared/optics/expression';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
@@ -7,8 +8,10 @@ import { KeyList } from '../../../components/KeyList';
 import { TextLink } from '../../../components/TextLink';
 import { UndoSentence } from '../../../components/UndoSentence';
 import { useLab } from '../../labs';
+import { chooseBench } from '../draft-edits';
 import { useDraft } from '../use-draft';
 import { useSolvedRows } from '../use-solved-rows';
+import { CalibratedElsewhere } from './CalibratedElsewhere';
 import { ConflictDialog } from './ConflictDialog';
 import { DesignerHead } from './DesignerHead';
 import { Limits } from './Limits';
@@ -33,14 +36,15 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const mayWrite = may('protocols.write');
   const draft = useDraft(lab.id, user.id, protocol, mayWrite);
   const [saving, setSaving] = useState(false);
-  const { selectedId, select, listSolutions } = useDesignerView();
+  const [writtenIn, setWrittenIn] = useState(lab.convention);
+  const { selectedId, select, listSolutions, turnByHand } = useDesignerView();
 
   const { content } = draft;
   const bench = benches.find(({ id }) => id === content.benchId);
   const solved = useSolvedRows(content.targets, bench ?? null, lab.convention);
   const views = content.targets.map((target) => viewOf(target, solved.rows.get(target.id)));
   const commands = useDesignerCommands({ draft, views, mayWrite });
-  const removed = useRemovedRow(content.targets);
+  const removed = useRemovedRow(content);
 
   // Some row is always looked at: the first, until a person chooses another.
   const place = content.targets.findIndex(({ id }) => id === selectedId);
@@ -71,6 +75,10 @@ export function Designer({ protocol, benches }: DesignerProps) {
         maySave={may('versions.save')}
         holdUp={whatHoldsUp(content.targets, views)}
         edit={draft.edit}
+        onChooseBench={(benchId) => {
+          turnByHand(null);
+          draft.edit(chooseBench(benchId));
+        }}
         onSaveVersion={() => setSaving(true)}
       />
       {bench === undefined && (
@@ -79,8 +87,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
           <TextLink to={`/labs/${lab.id}/bench`}>See the benches</TextLink>
         </BeamWrong>
       )}
+      {bench !== undefined && <CalibratedElsewhere bench={bench} />}
       {solved.benchFault !== null && (
-        <BeamWrong title="The bench’s input state can’t be read">{solved.benchFault}</BeamWrong>
+        <BeamWrong title="The rows can’t be solved">{solved.benchFault}</BeamWrong>
       )}
       {looked === null && target !== undefined && <div className="stage-waits" />}
       {looked !== null && (
@@ -101,7 +110,6 @@ export function Designer({ protocol, benches }: DesignerProps) {
               toleranceInfidelity={content.toleranceInfidelity}
               mayWrite={mayWrite}
               edit={draft.edit}
-              undo={draft.undo}
             />
           </div>
           {solved.progress !== null && (
@@ -150,8 +158,13 @@ export function Designer({ protocol, benches }: DesignerProps) {
         <ConflictDialog
           mine={content}
           theirs={draft.conflict}
+          benches={benches}
+          conventionChanged={!sameConvention(writtenIn, lab.convention)}
           onKeepMine={draft.keepMine}
-          onTakeTheirs={draft.takeTheirs}
+          onTakeTheirs={() => {
+            draft.takeTheirs();
+            setWrittenIn(lab.convention);
+          }}
         />
       )}
     </>

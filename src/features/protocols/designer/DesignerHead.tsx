@@ -10,7 +10,7 @@ import { Scientific } from '../../../components/Scientific';
 import { TextLink } from '../../../components/TextLink';
 import { VersionSeal } from '../../../components/VersionSeal';
 import { parseTypedNumber } from '../../../lib/format';
-import { chooseBench, type DraftEdit, rename, setTolerance } from '../draft-edits';
+import { type DraftEdit, describePurpose, rename, setTolerance } from '../draft-edits';
 import type { Saving } from '../use-draft';
 import type { HoldUp } from './row-view';
 
@@ -26,6 +26,7 @@ interface DesignerHeadProps {
   readonly maySave: boolean;
   readonly holdUp: HoldUp | null;
   readonly edit: (edit: DraftEdit) => void;
+  readonly onChooseBench: (benchId: string) => void;
   readonly onSaveVersion: () => void;
 }
 
@@ -58,7 +59,7 @@ export function DesignerHead(props: DesignerHeadProps) {
           </p>
         </div>
         <div className="designer-facts">
-          <BenchChoice {...{ bench, benches, mayWrite }} onChoose={(id) => edit(chooseBench(id))} />
+          <BenchChoice {...{ bench, benches, mayWrite }} onChoose={props.onChooseBench} />
           <Tolerance
             value={content.toleranceInfidelity}
             mayWrite={mayWrite}
@@ -69,6 +70,19 @@ export function DesignerHead(props: DesignerHeadProps) {
           </span>
           <span className="fold-first">{describeConvention(lab.convention)}</span>
         </div>
+        {mayWrite ? (
+          <input
+            type="text"
+            aria-label="Purpose, for whoever runs it"
+            placeholder="purpose, for whoever runs it"
+            className="purpose-input"
+            maxLength={1000}
+            value={content.purpose}
+            onChange={(event) => edit(describePurpose(event.target.value))}
+          />
+        ) : (
+          content.purpose !== '' && <p className="m-0 text-s text-ink-2">{content.purpose}</p>
+        )}
       </div>
       {maySave && (
         <div className="text-right">

@@ -16,6 +16,12 @@ interface ReadoutProps {
   readonly onListSolutions: () => void;
 }
 
+const verdictWords = {
+  within: '.',
+  'not decided': ': the tolerance lies between, so it is not decided.',
+  'not within': ': not within the tolerance.',
+} as const;
+
 /** The one number that the page is about, and what it is made of. */
 export function Readout(props: ReadoutProps) {
   const { label, view, plates, toleranceInfidelity, byHandInfidelity, onListSolutions } = props;
@@ -41,7 +47,7 @@ export function Readout(props: ReadoutProps) {
       <p className="mt-2 mb-0">
         expected fidelity, 1 − F <Scientific value={solution.expectedInfidelity} />; nineteen in twenty below{' '}
         <Scientific value={solution.expectedHigh} />
-        {toleranceVerdict(solution, toleranceInfidelity)}
+        {verdictWords[toleranceVerdict(solution, toleranceInfidelity)]}
       </p>
       <p className="mt-2 mb-0">
         {rounding > 0 ? 'Rounding' : 'Rounding, which helps here,'} to the{' '}

@@ -1,30 +1,56 @@
+import type { ReactNode } from 'react';
+import type { SolvedTarget } from '../../../../shared/optics/solve-target';
 import { OutOfReachSign } from '../../../components/SmallSigns';
 import { Scientific } from '../../../components/Scientific';
+import { toleranceVerdict } from './verdict';
 import type { RowView } from './row-view';
 
 interface RowNoteProps {
   readonly view: Extract<RowView, { status: 'solved' }>;
+  readonly toleranceInfidelity: number;
   readonly columns: number;
 }
 
-/** The one thing worth saying about a row, under it and across. */
-export function RowNote({ view, columns }: RowNoteProps) {
-  const { solved, solution, reading } = view;
-  if (solved.kind === 'nearest') {
+const plateWords = ['first', 'second'] as const;
+
+function familyWords({ freePlate, solutions }: SolvedTarget): string {
+  const free = plateWords[freePlate ?? 0] ?? 'first';
+  return `The ${free} plate may stand at any angle here, with the other to match. ${solutions.length} members of the family are listed.`;
+}
+
+/** The one thing most worth saying about a row, under it and across. */
+export function RowNote({ view, toleranceInfidelity, columns }: RowNoteProps) {
+  const { solved, solution, reading, heldIsGone } = view;
+  const verdict = toleranceVerdict(solution, toleranceInfidelity);
+  if (heldIsGone) {
+    return (
+      <NoteLine columns={columns}>
+        The held solution is not there any more: the best one stands. List the solutions to hold another.
+      </NoteLine>
+    );
+  }
+  if (solved.shortfallDeg > 0) {
     return (
       <NoteLine columns={columns} sign={<OutOfReachSign />}>
         Out of reach by {solved.shortfallDeg.toFixed(1)}° on the sphere. The closest setting leaves 1 − F{' '}
-        <Scientific value={solution.infidelity} />.
+        <Scientific value={solution.infidelity} />
+        {verdict === 'within'
+          ? ''
+          : `, which is ${verdict === 'not within' ? 'not within' : 'not decided against'} the tolerance`}
+        .
       </NoteLine>
     );
   }
-  if (solved.kind === 'family') {
+  if (verdict !== 'within') {
     return (
       <NoteLine columns={columns}>
-        Any angle of one plate serves here, if the other follows it. Four members are listed.
+        {verdict === 'not within'
+          ? 'Not within the tolerance, whatever the plates and dials turn out to be within their σ.'
+          : 'Not decided: the tolerance lies between the 5 % and 95 % points of what is expected.'}
       </NoteLine>
     );
   }
+  if (solved.kind === 'family') return <NoteLine columns={columns}>{familyWords(solved)}</NoteLine>;
   if (reading.normalised) {
     return (
       <NoteLine columns={columns}>
@@ -38,8 +64,8 @@ export function RowNote({ view, columns }: RowNoteProps) {
 
 interface NoteLineProps {
   readonly columns: number;
-  readonly sign?: React.ReactNode;
-  readonly children: React.ReactNode;
+  readonly sign?: ReactNode;
+  readonly children: ReactNode;
 }
 
 function NoteLine({ columns, sign, children }: NoteLineProps) {

@@ -156,7 +156,9 @@ export function TargetRow(props: TargetRowProps) {
           </>
         )}
       </tr>
-      {solved !== null && <RowNote view={solved} columns={plates.length + 5} />}
+      {solved !== null && (
+        <RowNote view={solved} toleranceInfidelity={toleranceInfidelity} columns={plates.length + 5} />
+      )}
       {solved !== null && props.solutionsOpen && (
         <SolutionsList {...{ view: solved, plates, mayWrite }} onHold={props.onHold} label={target.label} />
       )}
@@ -202,7 +204,7 @@ interface SolutionCountProps {
 function SolutionCount({ solved, name, open, onOpen }: SolutionCountProps) {
   const count = solved.solved.solutions.length;
   const words =
-    solved.solved.kind === 'nearest' && count === 1 ? 'closest' : `${solved.chosen + 1} of ${count}`;
+    solved.solved.shortfallDeg > 0 && count === 1 ? 'closest' : `${solved.chosen + 1} of ${count}`;
   return (
     <button
       type="button"

@@ -1,11 +1,13 @@
-import { useMemo, useState } from 'react';
+import { useMemo } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
 import {
-  type DraftEdit,
   addTarget,
+  type DraftEdit,
   holdSolution,
   newTarget,
+  removeTarget,
+  restoreTarget,
   writeExpression,
   writeLabel,
 } from '../draft-edits';
@@ -20,8 +22,6 @@ interface TargetsTableProps {
   readonly toleranceInfidelity: number;
   readonly mayWrite: boolean;
   readonly edit: (edit: DraftEdit) => void;
-  /** Takes back what was typed since the row's source was opened. */
-  readonly undo: () => void;
 }
 
 /** The targets in order, and below them an empty row to write the next one in. */
@@ -32,11 +32,18 @@ export function TargetsTable({
   toleranceInfidelity,
   mayWrite,
   edit,
-  undo,
 }: TargetsTableProps) {
-  const { selectedId, editingId, solutionsOfId, select, openSource, listSolutions } = useDesignerView();
+  const {
+    selectedId,
+    editingId,
+    openedTarget,
+    solutionsOfId,
+    select,
+    openSource,
+    closeSource,
+    listSolutions,
+  } = useDesignerView();
   const blank = useBlankTarget(targets);
-  const before = useState(new Map<string, string>())[0];
   const rows = mayWrite ? [...targets, blank] : targets;
 
   return (
@@ -95,26 +102,23 @@ export function TargetsTable({
               onSelect={() => {
                 if (!isBlank) select(target.id);
               }}
-              onOpenSource={() => {
-                before.set(target.id, target.expression);
-                openSource(target.id);
-              }}
+              onOpenSource={() => openSource(target.id, target)}
               onWrite={(expression) => {
                 if (!isBlank) {
                   edit(writeExpression(target.id, expression));
                   return;
                 }
                 if (expression.trim() === '') return;
-                before.set(target.id, '');
                 edit(addTarget({ ...blank, expression }));
-                openSource(target.id);
+                openSource(target.id, null);
               }}
               onLabel={(label) => edit(writeLabel(target.id, label))}
-              onDone={() => openSource(null)}
+              onDone={closeSource}
               onCancel={() => {
-                if (before.get(target.id) !== undefined && before.get(target.id) !== target.expression)
-                  undo();
-                openSource(null);
+                if (target.id === editingId) {
+                  edit(openedTarget === null ? removeTarget(target.id) : restoreTarget(openedTarget));
+                }
+                closeSource();
               }}
               onHold={(fastAxesDeg) => edit(holdSolution(target.id, fastAxesDeg))}
               onListSolutions={(open) => {

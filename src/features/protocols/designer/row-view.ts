@@ -20,6 +20,8 @@ export type RowView =
       /** Place of `solution` among them, from 0. */
       readonly chosen: number;
       readonly held: boolean;
+      /** A solution was held whose branch no longer exists. */
+      readonly heldIsGone: boolean;
       /** The numbers are of the text before the last key. */
       readonly stale: boolean;
     };
@@ -33,7 +35,8 @@ export function viewOf(target: DraftTarget, row: SolvedRow | undefined): RowView
   const { index, held } = chooseSolution(solved, target.heldFastAxesDeg);
   const solution = solved.solutions[index];
   if (solution === undefined) return { status: 'waiting' };
-  return { status: 'solved', reading, solved, solution, chosen: index, held, stale };
+  const heldIsGone = target.heldFastAxesDeg !== null && !held;
+  return { status: 'solved', reading, solved, solution, chosen: index, held, heldIsGone, stale };
 }
 
 /** Why a version can't be saved now. */

@@ -56,7 +56,9 @@ export function useDesignerCommands({ draft, views, mayWrite }: Situation): read
       label: 'Edit the row',
       keys: ['Enter', 'F2'],
       when: onRow,
-      run: () => openSource(selectedId),
+      run: () => {
+        if (selected !== undefined) openSource(selected.id, selected);
+      },
     },
     {
       id: 'move-up',

@@ -1,12 +1,13 @@
+import { fidelityVerdict, type Verdict } from '../../../components/fidelity-verdict';
 import type { SettingSolution } from './row-view';
 
-/** How the prediction stands to the tolerance, where that is worth a word. */
+/** How a prediction stands to the tolerance, by its 5 % and 95 % points. */
 export function toleranceVerdict(
-  { expectedLow, expectedHigh }: SettingSolution,
+  { expectedInfidelity, expectedLow, expectedHigh }: SettingSolution,
   toleranceInfidelity: number,
-): string {
-  if (expectedHigh <= toleranceInfidelity) return '.';
-  return expectedLow > toleranceInfidelity
-    ? ': not within the tolerance.'
-    : ': the tolerance lies among them, so it is not decided.';
+): Verdict {
+  return fidelityVerdict(
+    { value: expectedInfidelity, low: expectedLow, high: expectedHigh },
+    toleranceInfidelity,
+  );
 }

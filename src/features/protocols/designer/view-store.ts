@@ -1,16 +1,20 @@
 import { create } from 'zustand';
+import type { DraftTarget } from '../../../../shared/schemas/protocols';
 
 /** What is only in the page: which row is looked at, and where plates were turned by hand. */
 interface DesignerView {
   readonly selectedId: string | null;
   /** The row whose source text is open. */
   readonly editingId: string | null;
+  /** That row as it was when its source was opened, for Esc; null for a row that was not there yet. */
+  readonly openedTarget: DraftTarget | null;
   /** The row whose other solutions are listed. */
   readonly solutionsOfId: string | null;
   /** Dials turned by hand on the stage, in beam order; null while they stand at the solution. */
   readonly handDialsDeg: readonly number[] | null;
   readonly select: (id: string | null) => void;
-  readonly openSource: (id: string | null) => void;
+  readonly openSource: (id: string, before: DraftTarget | null) => void;
+  readonly closeSource: () => void;
   readonly listSolutions: (id: string | null) => void;
   readonly turnByHand: (dialsDeg: readonly number[] | null) => void;
 }
@@ -18,6 +22,7 @@ interface DesignerView {
 export const useDesignerView = create<DesignerView>((set) => ({
   selectedId: null,
   editingId: null,
+  openedTarget: null,
   solutionsOfId: null,
   handDialsDeg: null,
   select: (id) =>
@@ -31,8 +36,9 @@ export const useDesignerView = create<DesignerView>((set) => ({
             editingId: editingId === id ? id : null,
           },
     ),
-  openSource: (id) =>
-    set(id === null ? { editingId: null } : { editingId: id, selectedId: id, handDialsDeg: null }),
+  openSource: (id, before) =>
+    set({ editingId: id, openedTarget: before, selectedId: id, handDialsDeg: null }),
+  closeSource: () => set({ editingId: null, openedTarget: null }),
   listSolutions: (id) => set({ solutionsOfId: id }),
   turnByHand: (dialsDeg) => set({ handDialsDeg: dialsDeg }),
 }));
