@@ -3,10 +3,13 @@ import type { Plate } from '../../../shared/schemas/cabinet';
 const gap = '\u202f';
 
 /** Calibrated within this is calibrated at the bench's wavelength: a lab writes 810 for 809.6. */
-export const sameWavelengthNm = 0.5;
+const sameWavelengthNm = 0.5;
 
-export function calibratedElsewhere(plate: Plate, benchNm: number): boolean {
-  return Math.abs(plate.calibration.wavelengthNm - benchNm) > sameWavelengthNm;
+export function calibratedElsewhere(
+  { calibration }: { readonly calibration: Pick<Plate['calibration'], 'wavelengthNm'> },
+  benchNm: number,
+): boolean {
+  return Math.abs(calibration.wavelengthNm - benchNm) > sameWavelengthNm;
 }
 
 /** What a person should know before these plates stand in this bench; the server refuses a plate that stands elsewhere. */

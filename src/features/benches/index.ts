@@ -1,3 +1,4 @@
+export { calibratedElsewhere } from './bench-warnings';
 export { LaserCaution, type LaserCautionProps } from './LaserCaution';
 export { needsCaution } from './laser-caution-words';
 export { benchesQuery, benchQuery } from './queries';

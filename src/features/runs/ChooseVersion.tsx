@@ -3,16 +3,19 @@ import { BeamEmpty } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
 import { VersionSeal } from '../../components/VersionSeal';
 import { formatMoment } from '../../lib/format';
+import { startHref } from './start-href';
 
 interface ChooseVersionProps {
   readonly labId: string;
   readonly versions: readonly VersionSummary[];
+  /** The lab has older ones than these. */
+  readonly more: boolean;
   /** An id in the address that is none of the lab's versions. */
   readonly unknownId: string | null;
 }
 
 /** The versions that a run can be made of, newest first. */
-export function ChooseVersion({ labId, versions, unknownId }: ChooseVersionProps) {
+export function ChooseVersion({ labId, versions, more, unknownId }: ChooseVersionProps) {
   const now = new Date();
   if (versions.length === 0) {
     return (
@@ -58,7 +61,7 @@ export function ChooseVersion({ labId, versions, unknownId }: ChooseVersionProps
                   <VersionSeal state="saved" number={version.number} />
                 </td>
                 <td className="py-2 pr-4">
-                  <TextLink to={`/labs/${labId}/bench/start?versionId=${version.id}`}>
+                  <TextLink to={startHref(labId, version)}>
                     {version.protocolName}, version {version.number}
                   </TextLink>
                 </td>
@@ -72,6 +75,12 @@ export function ChooseVersion({ labId, versions, unknownId }: ChooseVersionProps
           </tbody>
         </table>
       </div>
+      {more && (
+        <p className="text-ink-2 mt-3">
+          These are the newest. <TextLink to={`/labs/${labId}/review`}>All versions</TextLink> have their own
+          pages, and each can be run from there.
+        </p>
+      )}
     </>
   );
 }

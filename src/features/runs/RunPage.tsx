@@ -1,12 +1,13 @@
 import { useQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
 import { useLab } from '../labs';
+import { versionQuery } from '../versions';
 import './bench.css';
 import './bench-narrow.css';
 import './bench-sheets.css';
 import { BenchNotice } from './BenchNotice';
 import { BenchScreen } from './BenchScreen';
-import { runQuery, versionQuery } from './queries';
+import { runQuery } from './queries';
 import { RunRecord } from './RunRecord';
 
 /** A run at its own address: the bench while it goes on, its record once it is finished. */
@@ -16,7 +17,7 @@ export function RunPage() {
   const run = useQuery(runQuery(lab.id, runId));
   const summary = run.data?.summary;
   const version = useQuery({
-    ...versionQuery(lab.id, summary?.protocolId ?? '', summary?.versionNumber ?? 0),
+    ...versionQuery(lab.id, summary?.protocolId ?? '', String(summary?.versionNumber ?? '')),
     enabled: summary !== undefined,
   });
   if (run.data !== undefined && version.data !== undefined) {

@@ -1,8 +1,9 @@
 import { useQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
 import { useLab } from '../labs';
+import { versionQuery } from '../versions';
 import { BenchNotice } from './BenchNotice';
-import { runQuery, versionQuery } from './queries';
+import { runQuery } from './queries';
 import { RunRecord } from './RunRecord';
 
 /** The record of a run, finished or not, in the reader's own theme. */
@@ -12,7 +13,7 @@ export function RunRecordPage() {
   const run = useQuery(runQuery(lab.id, runId));
   const summary = run.data?.summary;
   const version = useQuery({
-    ...versionQuery(lab.id, summary?.protocolId ?? '', summary?.versionNumber ?? 0),
+    ...versionQuery(lab.id, summary?.protocolId ?? '', String(summary?.versionNumber ?? '')),
     enabled: summary !== undefined,
   });
   return run.data !== undefined && version.data !== undefined ? (

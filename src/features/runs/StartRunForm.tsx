@@ -27,7 +27,9 @@ export function StartRunForm({ version }: { readonly version: Version }) {
   const navigate = useNavigate();
   const { content, summary } = version;
   const { bench } = content;
-  const live = useQuery(benchQuery(lab.id, bench.id));
+  // As it stands now, not as it stood when this browser last asked: a plate may have been calibrated a minute ago.
+  const live = useQuery({ ...benchQuery(lab.id, bench.id), staleTime: 0 });
+  const asksBench = !live.isFetchedAfterMount;
   const [typed, setTyped] = useState<readonly string[]>(() => bench.plates.map(() => ''));
   const [acknowledged, setAcknowledged] = useState(false);
   const [checked, setChecked] = useState(false);
@@ -40,7 +42,7 @@ export function StartRunForm({ version }: { readonly version: Version }) {
 
   const start = async (): Promise<void> => {
     setChecked(true);
-    if (!acknowledged || starts.some((entry) => entry.fault !== '')) return;
+    if (asksBench || !acknowledged || starts.some((entry) => entry.fault !== '')) return;
     setBusy(true);
     setFault('');
     try {
@@ -85,7 +87,7 @@ export function StartRunForm({ version }: { readonly version: Version }) {
         </div>
       </header>
 
-      <VersionWarnings version={version} live={live.data} unknown={live.isError} />
+      <VersionWarnings version={version} live={asksBench ? undefined : live.data} unknown={live.isError} />
 
       <section aria-labelledby="start-caution" className="border-t-[1.5px] border-ink pt-3">
         <h2 id="start-caution" className="text-section mb-3">
@@ -142,7 +144,11 @@ export function StartRunForm({ version }: { readonly version: Version }) {
       </section>
 
       <div className="flex flex-wrap items-center gap-4">
-        <Button kind="filled" type="submit" waitsFor={busy ? 'the server to answer' : undefined}>
+        <Button
+          kind="filled"
+          type="submit"
+          waitsFor={busy ? 'the server to answer' : asksBench ? 'the bench’s present state' : undefined}
+        >
           Start the run
         </Button>
         {fault !== '' && (

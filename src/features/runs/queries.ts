@@ -1,6 +1,5 @@
 import { queryOptions } from '@tanstack/react-query';
 import type { RecordReading, Run, StartRun } from '../../../shared/schemas/runs';
-import type { Version } from '../../../shared/schemas/versions';
 import type { VersionSummary } from '../../../shared/schemas/protocols';
 import { request } from '../../lib/api';
 
@@ -8,15 +7,6 @@ export const runQuery = (labId: string, runId: string) =>
   queryOptions({
     queryKey: ['labs', labId, 'runs', runId],
     queryFn: ({ signal }) => request<Run>(`/labs/${labId}/runs/${runId}`, { signal }),
-  });
-
-/** A version never changes, so that it is asked for once. */
-export const versionQuery = (labId: string, protocolId: string, number: number) =>
-  queryOptions({
-    queryKey: ['labs', labId, 'protocols', protocolId, 'versions', number],
-    queryFn: ({ signal }) =>
-      request<Version>(`/labs/${labId}/protocols/${protocolId}/versions/${number}`, { signal }),
-    staleTime: Infinity,
   });
 
 export const startableVersionsQuery = (labId: string) =>

@@ -9,6 +9,7 @@ import { RunPage } from '../../../src/features/runs/RunPage';
 import { StartRunPage } from '../../../src/features/runs/StartRunPage';
 import { createQueryClient } from '../../../src/lib/query-client';
 import { pauseRunSchema, type Reading, recordReadingSchema, type Run } from '../../../shared/schemas/runs';
+import type { Bench } from '../../../shared/schemas/benches';
 import type { Version } from '../../../shared/schemas/versions';
 import { id, labId, runId } from './fixture';
 
@@ -28,6 +29,10 @@ export class FakeApi {
   readonly asked: Asked[] = [];
   /** What the next writes meet; null lets them through. */
   failWith: 'network' | { readonly status: number; readonly detail: string } | null = null;
+  /** What became of the bench since the version, besides its second plate's new calibration. */
+  changeBench: (bench: Bench) => Bench = (bench) => bench;
+  /** While it waits for this, the bench is not answered. */
+  benchAfter: Promise<void> = Promise.resolve();
   constructor(
     public run: Run,
     readonly version: Version,
@@ -41,7 +46,8 @@ export class FakeApi {
     const key = new Headers(init.headers).get('idempotency-key');
     const body: unknown = typeof init.body === 'string' ? JSON.parse(init.body) : null;
     this.asked.push({ path, method, key, body });
-    return Promise.resolve().then(() => this.answer(path, method, key, body));
+    const ready = path.includes('/benches/') ? this.benchAfter : Promise.resolve();
+    return ready.then(() => this.answer(path, method, key, body));
   };
 
   posts(ending: string): Asked[] {
@@ -61,7 +67,7 @@ export class FakeApi {
     if (path.includes('/runs/')) return json(this.run);
     if (/\/versions\/\d+$/u.test(path)) return json(this.version);
     if (path.includes('/versions')) return json({ items: [this.version.summary], nextCursor: null });
-    if (path.includes('/benches/')) return json(this.bench());
+    if (path.includes('/benches/')) return json(this.changeBench(this.bench()));
     return json(
       { type: 'about:blank', title: 'Not found', status: 404, detail: 'No such thing.', requestId: 'r2' },
       404,
@@ -69,7 +75,7 @@ export class FakeApi {
   }
 
   /** The bench as it stands now, its second plate calibrated anew since the version. */
-  private bench() {
+  private bench(): Bench {
     const { bench } = this.version.content;
     return {
       id: bench.id,

@@ -2,11 +2,12 @@
 import { cleanup, screen, waitFor } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
 import { startRunSchema } from '../../../shared/schemas/runs';
+import type { Version } from '../../../shared/schemas/versions';
 import { FakeApi, openBench } from './bench-harness';
 import { labId, makeRun, makeVersion } from './fixture';
 
 const version = makeVersion();
-const path = `/labs/${labId}/bench/start?versionId=${version.summary.id}`;
+const path = `/labs/${labId}/bench/start?protocolId=${version.summary.protocolId}&number=${version.summary.number}`;
 
 beforeEach(() => {
   localStorage.clear();
@@ -26,12 +27,85 @@ describe('the start of a run', () => {
     expect(screen.queryByText(/^H-3 has a newer calibration/u)).toBeNull();
   });
 
+  test('finds its version by protocol and number with no list, and by its id among the newest', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    openBench(api, { path });
+    expect(await screen.findByRole('heading', { name: /version 14, at heralded bench/u })).toBeTruthy();
+    expect(api.asked.some(({ path: asked }) => asked.includes('/versions?'))).toBe(false);
+    cleanup();
+    openBench(api, { path: `/labs/${labId}/bench/start?versionId=${version.summary.id}` });
+    expect(await screen.findByRole('heading', { name: /version 14, at heralded bench/u })).toBeTruthy();
+  });
+
+  test('is held back until the bench’s present state is known', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    let answered: () => void = () => undefined;
+    api.benchAfter = new Promise((resolve) => {
+      answered = resolve;
+    });
+    const { user } = openBench(api, { path });
+    await user.click(await screen.findByRole('checkbox'));
+    await user.click(
+      screen.getByRole('button', { name: /^Start the run ?, waits: the bench’s present state$/u }),
+    );
+    await user.type(screen.getByRole('textbox', { name: 'H-3 says, degrees' }), '83.5{Enter}');
+    expect(api.posts('/runs')).toHaveLength(0);
+    answered();
+    await user.click(await screen.findByRole('button', { name: 'Start the run' }));
+    await waitFor(() => expect(api.posts('/runs')).toHaveLength(1));
+  });
+
+  test('names a mount whose numbers now run the other way, a retired bench and another wavelength', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    api.changeBench = (bench) => ({
+      ...bench,
+      wavelengthNm: 808,
+      retiredAt: '2026-11-29T09:00:00.000Z',
+      plates: bench.plates.map((plate) => ({
+        ...plate,
+        mount: { ...plate.mount, direction: -1, resolutionDeg: plate.name === 'H-3' ? 0.5 : 0.1 },
+      })),
+    });
+    openBench(api, { path });
+    expect(
+      await screen.findByText(/^The numbers of H-3’s mount now rise when it is turned clockwise/u),
+    ).toBeTruthy();
+    // Q-B's numbers rose clockwise already.
+    expect(screen.queryByText(/^The numbers of Q-B/u)).toBeNull();
+    expect(screen.getByText(/^The finest step of H-3’s dial is now 0.5°/u)).toBeTruthy();
+    expect(screen.getByText(/^heralded bench was retired on 29 November 2026/u)).toBeTruthy();
+    expect(screen.getByText(/^heralded bench now works at 808/u)).toBeTruthy();
+  });
+
+  test('compares the light that goes in, not how it is written', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    api.changeBench = (bench) => ({ ...bench, inputExpression: 'stokes(1, 0, 0)' });
+    openBench(api, { path });
+    await screen.findByRole('button', { name: 'Start the run' });
+    expect(screen.queryByText(/^The input of/u)).toBeNull();
+    cleanup();
+    api.changeBench = (bench) => ({ ...bench, inputExpression: 'linear(2deg)' });
+    openBench(api, { path });
+    expect(await screen.findByText(/^The input of heralded bench is now linear\(2deg\)/u)).toBeTruthy();
+  });
+
+  test('says which plate was frozen with a calibration of another wavelength', async () => {
+    const elsewhere: Version = {
+      ...version,
+      content: { ...version.content, bench: { ...version.content.bench, wavelengthNm: 780 } },
+    };
+    openBench(new FakeApi(makeRun(elsewhere), elsewhere), { path });
+    expect(
+      await screen.findByText(/^H-3 was calibrated at 810.nm, and this version’s light has 780.nm/u),
+    ).toBeTruthy();
+  });
+
   test('shows the caution in full and starts nothing before it is acknowledged', async () => {
     const api = new FakeApi(makeRun(version), version);
     const { user } = openBench(api, { path });
     expect(await screen.findByText(/Wear eyewear made for 405 and 810/u)).toBeTruthy();
     expect(screen.getByText(/IEC 60825-1/u)).toBeTruthy();
-    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    await user.click(await screen.findByRole('button', { name: 'Start the run' }));
     expect(screen.getByText('Read the caution and acknowledge it before the run starts.')).toBeTruthy();
     expect(api.posts('/runs')).toHaveLength(0);
   });
@@ -42,12 +116,12 @@ describe('the start of a run', () => {
     await user.click(await screen.findByRole('checkbox'));
     const first = screen.getByRole('textbox', { name: 'H-3 says, degrees' });
     await user.type(first, '83,5');
-    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    await user.click(await screen.findByRole('button', { name: 'Start the run' }));
     expect(screen.getByText('Write a point for decimals, as in 83.4.')).toBeTruthy();
     expect(api.posts('/runs')).toHaveLength(0);
     await user.clear(first);
     await user.type(first, '83.5');
-    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    await user.click(await screen.findByRole('button', { name: 'Start the run' }));
     await waitFor(() => expect(api.posts('/runs')).toHaveLength(1));
     const [asked] = api.posts('/runs');
     expect(startRunSchema.parse(asked?.body).startDialsDeg).toEqual([83.5, null]);
@@ -60,9 +134,9 @@ describe('the start of a run', () => {
     const { user } = openBench(api, { path });
     await user.click(await screen.findByRole('checkbox'));
     api.failWith = 'network';
-    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    await user.click(await screen.findByRole('button', { name: 'Start the run' }));
     expect(await screen.findByText(/The run did not start\. The server cannot be reached/u)).toBeTruthy();
-    await user.click(screen.getByRole('button', { name: 'Start the run' }));
+    await user.click(await screen.findByRole('button', { name: 'Start the run' }));
     await waitFor(() => expect(api.posts('/runs')).toHaveLength(2));
     expect(new Set(api.posts('/runs').map(({ key }) => key)).size).toBe(1);
   });
