@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import type { Request } from 'express';
 import { z } from 'zod';
-import { canonicalJson } from '../../shared/protocol/canonical-json';
+import { sortedJson } from '../../shared/protocol/canonical-json';
 import type { Transaction } from '../db/database';
 import { ProblemError } from '../errors';
 import type { Answer } from './route';
@@ -32,7 +32,7 @@ export function idempotencyKey(request: Request): string {
 
 /** What makes two requests the same one: where it went, against what, and what it said. */
 export function requestHash(request: Request, body: unknown): string {
-  const text = canonicalJson({
+  const text = sortedJson({
     method: request.method,
     path: request.originalUrl,
     match: request.get('If-Match') ?? null,
