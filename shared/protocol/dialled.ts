@@ -1,5 +1,6 @@
 import { evaluateDials, type TargetProblem } from '../optics/solve-target';
 import type { VersionContent } from '../schemas/versions';
+import { targetPlates } from './solve-row';
 
 /** The problem that a version froze for one of its targets: its own plates, not what the cabinet says today. */
 export function frozenProblem(content: VersionContent, settingIndex: number): TargetProblem {
@@ -10,17 +11,7 @@ export function frozenProblem(content: VersionContent, settingIndex: number): Ta
     input: content.bench.input.stokes,
     polariserSigmaDeg: content.bench.input.polariserSigmaDeg,
     objective: content.objective,
-    plates: content.bench.plates.map(({ mount, calibration }) => ({
-      retardanceDeg: calibration.retardanceDeg,
-      retardanceSigmaDeg: calibration.retardanceSigmaDeg,
-      offsetSigmaDeg: calibration.offsetSigmaDeg,
-      repeatabilityDeg: mount.repeatabilityDeg,
-      scale: {
-        offsetDeg: calibration.offsetDeg,
-        direction: mount.direction,
-        resolutionDeg: mount.resolutionDeg,
-      },
-    })),
+    plates: targetPlates(content.bench.plates),
   };
 }
 

@@ -1,9 +1,16 @@
+import type { DialScale } from '../optics/dial';
 import type { Convention } from '../optics/convention';
 import { parseState, type StateReading } from '../optics/expression';
 import { type SolvedTarget, solveTarget, type TargetPlate, type TargetProblem } from '../optics/solve-target';
 import type { Stokes } from '../optics/stokes';
 import { wrapSigned } from '../optics/units';
 import type { Calibration } from '../schemas/cabinet';
+
+/** What a dial's scale needs of a plate. */
+export interface DialledPlate {
+  readonly mount: { readonly direction: 1 | -1; readonly resolutionDeg: number };
+  readonly calibration: Pick<Calibration, 'offsetDeg'>;
+}
 
 /** What a solver needs of a plate: its calibration and its mount. */
 export interface SolvingPlate {
@@ -34,18 +41,23 @@ export type RowResult =
       readonly solved: SolvedTarget;
     };
 
+/** How a plate's dial is engraved: its zero as calibrated, its sense and its finest step. */
+export function dialScaleOf({ mount, calibration }: DialledPlate): DialScale {
+  return {
+    offsetDeg: calibration.offsetDeg,
+    direction: mount.direction,
+    resolutionDeg: mount.resolutionDeg,
+  };
+}
+
 /** Plates as the solver takes them, in beam order. */
 export function targetPlates(plates: readonly SolvingPlate[]): TargetPlate[] {
-  return plates.map(({ mount, calibration }) => ({
-    retardanceDeg: calibration.retardanceDeg,
-    retardanceSigmaDeg: calibration.retardanceSigmaDeg,
-    offsetSigmaDeg: calibration.offsetSigmaDeg,
-    repeatabilityDeg: mount.repeatabilityDeg,
-    scale: {
-      offsetDeg: calibration.offsetDeg,
-      direction: mount.direction,
-      resolutionDeg: mount.resolutionDeg,
-    },
+  return plates.map((plate) => ({
+    retardanceDeg: plate.calibration.retardanceDeg,
+    retardanceSigmaDeg: plate.calibration.retardanceSigmaDeg,
+    offsetSigmaDeg: plate.calibration.offsetSigmaDeg,
+    repeatabilityDeg: plate.mount.repeatabilityDeg,
+    scale: dialScaleOf(plate),
   }));
 }
 
