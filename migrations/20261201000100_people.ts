@@ -37,7 +37,7 @@ export async function up(knex: Knex): Promise<void> {
   await knex.raw(`CREATE TABLE sessions (
     sid varchar NOT NULL PRIMARY KEY,
     sess json NOT NULL,
-    expire timestamp(6) NOT NULL,
+    expire timestamptz(6) NOT NULL,
     user_id uuid GENERATED ALWAYS AS ((sess ->> 'userId')::uuid) STORED,
     -- An ended session stays as a stone until it would have expired, so that a slow request cannot bring it back.
     ended_at timestamptz(3),
@@ -52,6 +52,7 @@ export async function up(knex: Knex): Promise<void> {
     points integer NOT NULL DEFAULT 0,
     expire bigint
   )`);
+  await knex.raw('CREATE INDEX rate_limits_by_expire ON rate_limits (expire)');
   await grant(knex, 'rate_limits', ['SELECT', 'INSERT', 'UPDATE', 'DELETE']);
 
   await knex.raw(`CREATE TABLE account_events (

@@ -6,10 +6,12 @@ import type { Logger } from 'pino';
 import type { Config } from './config';
 import { sessionHandler, SessionStore, signInRoutes, toSignIn } from './features/auth';
 import { notFound, ProblemError } from './errors';
+import { bodyLimitMb } from './http/body-limit';
 import { refuseCrossSite } from './http/cross-site';
 import { health, type Readiness } from './http/health';
 import { pages } from './http/pages';
 import { problemHandler } from './http/problems';
+import { pruneRateLimits } from './http/prune-rate-limits';
 import { limitCalls, limitSignIns } from './http/rate-limits';
 import { requestId } from './http/request-id';
 import { requestLog } from './http/request-log';
@@ -25,7 +27,7 @@ export interface AppParts {
   readonly readiness: Readiness;
   /** Where the built client lies. */
   readonly pagesDirectory: string;
-  /** Whether this process removes old sessions from time to time. */
+  /** Whether this process removes old sessions and counts from time to time. */
   readonly prunes: boolean;
 }
 
@@ -33,9 +35,6 @@ export interface App {
   readonly app: Express;
   readonly close: () => void;
 }
-
-/** Room for a protocol of 200 targets at the longest expression. */
-const bodyLimit = '4mb';
 
 /** The whole server but for its socket. */
 export function createApp(parts: AppParts): App {
@@ -57,6 +56,9 @@ export function createApp(parts: AppParts): App {
     parts.prunes,
   );
   const session = sessionHandler(config, store);
+  const stopPruning = parts.prunes
+    ? pruneRateLimits(sidePool, (error) => logger.warn({ err: error }, 'old rate limits stayed'))
+    : () => undefined;
 
   app.use(['/api', '/auth'], (_request, response, next) => {
     response.set('Cache-Control', 'no-store');
@@ -83,7 +85,7 @@ export function createApp(parts: AppParts): App {
     refuseCrossSite(config.publicOrigin),
     session,
     limitCalls(sidePool, config),
-    express.json({ limit: bodyLimit, strict: true, inflate: false }),
+    express.json({ limit: `${bodyLimitMb}mb`, strict: true, inflate: false }),
     apiRouter(allRoutes(config), { database, logger }),
   );
   app.use(['/api', '/auth'], () => {
@@ -91,5 +93,9 @@ export function createApp(parts: AppParts): App {
   });
   app.use(pages(parts.pagesDirectory));
   app.use(problemHandler(logger));
-  return { app, close: () => store.close() };
+  const close = () => {
+    stopPruning();
+    store.close();
+  };
+  return { app, close };
 }

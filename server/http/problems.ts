@@ -4,6 +4,7 @@ import { z } from 'zod';
 import type { Problem } from '../../shared/schemas';
 import { isPassingFailure, sqlState } from '../db/sql-state';
 import { invalid, notFound, ProblemError, unavailable } from '../errors';
+import { bodyLimitMb } from './body-limit';
 import { requestIdOf } from './request-id';
 
 /** Errors of Express's own parsers: they carry a status and a kind, and their text may quote the body. */
@@ -25,7 +26,11 @@ function asProblem(error: unknown): ProblemError | null {
 
 function fromParser(type: string, status: number): ProblemError {
   if (type === 'entity.too.large') {
-    return new ProblemError('too-large', 413, 'The request is larger than 1 MB. Send less at once.');
+    return new ProblemError(
+      'too-large',
+      413,
+      `The request is larger than ${bodyLimitMb} MB. Send less at once.`,
+    );
   }
   if (type === 'entity.parse.failed') {
     return new ProblemError('not-json', 400, 'The body of the request is not JSON.');
