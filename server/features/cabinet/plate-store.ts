@@ -161,22 +161,6 @@ export async function listCalibrations(transaction: Transaction, plate: StoredPl
   return z.array(calibrationRow).parse(rowsOf.parse(found).rows).map(mapCalibration);
 }
 
-/** Is there another plate in use with this name, whatever its capitals? */
-export async function nameTaken(
-  transaction: Transaction,
-  labId: string,
-  name: string,
-  butId: string,
-): Promise<boolean> {
-  const found: unknown = await transaction('plates')
-    .where({ lab_id: labId })
-    .whereNull('retired_at')
-    .whereNot({ id: butId })
-    .whereRaw('lower(name) = lower(?)', [name])
-    .first('id');
-  return found !== undefined;
-}
-
 /** Inserts a plate, its mount, the seat that joins them and what was measured. */
 export async function insertPlate(
   transaction: Transaction,

@@ -1,4 +1,3 @@
-import { z } from 'zod';
 import {
   calibrationInputSchema,
   calibrationSchema,
@@ -12,6 +11,7 @@ import {
 import type { Transaction } from '../../db/database';
 import { brokenUnique } from '../../db/sql-state';
 import { conflict, refused } from '../../errors';
+import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Route, route } from '../../http/route';
 import { findLab } from '../labs';
@@ -23,18 +23,19 @@ import {
   insertPlate,
   listCalibrations,
   listPlates,
-  nameTaken,
   raiseRevision,
   setRetired,
   type StoredPlate,
   updatePlate,
 } from './plate-store';
 
-const labParams = z.strictObject({ labId: idSchema });
-const plateParams = z.strictObject({ labId: idSchema, plateId: idSchema });
+const plateParams = labParams.extend({ plateId: idSchema });
 
 /** A tablet's clock may be ahead of ours by this much. */
 const clockSlackMs = 5 * 60 * 1000;
+
+/** The index that keeps names apart: to look first would leave a moment between. */
+const onePlateOfAName = 'plates_one_of_a_name';
 
 export function plateRoutes(): readonly Route[] {
   return [
@@ -168,10 +169,12 @@ export function plateRoutes(): readonly Route[] {
         requireRevision(expectedRevision, thing.revision, asPlate(thing));
         if (thing.retiredAt === null)
           throw conflict('not-retired', `${thing.name} is in the cabinet already.`);
-        if (await nameTaken(transaction, labId, thing.name, thing.id)) {
+        try {
+          await setRetired(transaction, thing, null);
+        } catch (error) {
+          if (brokenUnique(error) !== onePlateOfAName) throw error;
           throw conflict('name-taken', `Another plate is called ${thing.name} now. Rename that one first.`);
         }
-        await setRetired(transaction, thing, null);
         await audit({ kind: 'plate.returned', subjectId: thing.id, details: { name: thing.name } });
         const plate = await stored(transaction, labId, thing.id);
         return { body: asPlate(plate), revision: plate.revision };
@@ -190,7 +193,7 @@ async function namedOnce<Result>(name: string, work: () => Promise<Result>): Pro
   try {
     return await work();
   } catch (error) {
-    if (brokenUnique(error) !== 'plates_one_of_a_name') throw error;
+    if (brokenUnique(error) !== onePlateOfAName) throw error;
     throw refused([
       { path: 'name', message: `There is a plate called ${name} already. Choose another name.` },
     ]);
