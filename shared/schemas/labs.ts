@@ -37,6 +37,7 @@ export const updateLabSchema = z.strictObject({
     .max(3650, 'A calibration falls due after 1 to 3650 days.')
     .optional(),
 });
+export type UpdateLab = z.infer<typeof updateLabSchema>;
 
 export const memberSchema = z.strictObject({
   userId: idSchema,

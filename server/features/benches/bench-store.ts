@@ -4,6 +4,7 @@ import { type Bench, type CreateBench, laserClassSchema } from '../../../shared/
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { asPlate, listPlates } from '../cabinet';
+import { holdLab } from '../labs';
 
 const benchRow = z.object({
   id: z.string(),
@@ -88,11 +89,12 @@ export async function findBench(
   return bench ?? null;
 }
 
-/** As `findBench`, and nobody else changes the bench until the transaction ends. */
+/** As `findBench`, and nobody else changes the bench or the lab's convention until the transaction ends. */
 export async function findBenchToChange(
   transaction: Transaction,
   key: { readonly labId: string; readonly benchId: string },
 ): Promise<StoredBench | null> {
+  await holdLab(transaction, key);
   await transaction('benches').where({ lab_id: key.labId, id: key.benchId }).forUpdate().select('id');
   return findBench(transaction, key);
 }

@@ -10,9 +10,10 @@ import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { brokenUnique } from '../../db/sql-state';
 import { conflict, notFound, refused } from '../../errors';
+import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Route, route } from '../../http/route';
-import { findLab, type StoredLab } from '../labs';
+import { findLab, holdLab, type StoredLab } from '../labs';
 import {
   asBench,
   findBench,
@@ -26,8 +27,7 @@ import {
 } from './bench-store';
 import { checkBench } from './check-bench';
 
-const labParams = z.strictObject({ labId: idSchema });
-const benchParams = z.strictObject({ labId: idSchema, benchId: idSchema });
+const benchParams = labParams.extend({ benchId: idSchema });
 const runRow = z.object({ number: z.number() });
 
 export function benchRoutes(): readonly Route[] {
@@ -47,7 +47,7 @@ export function benchRoutes(): readonly Route[] {
     route({
       method: 'post',
       path: '/labs/:labId/benches',
-      access: { kind: 'member', action: 'benches.write', thing: findLab },
+      access: { kind: 'member', action: 'benches.write', thing: holdLab },
       params: labParams,
       query: nothing,
       body: createBenchSchema,

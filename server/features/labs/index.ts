@@ -1,2 +1,2 @@
-export { findLab, insertLab, type StoredLab } from './lab-store';
+export { findLab, holdLab, insertLab, type StoredLab } from './lab-store';
 export { labRoutes } from './routes';

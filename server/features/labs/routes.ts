@@ -1,4 +1,3 @@
-import { z } from 'zod';
 import { DEFAULT_CONVENTION } from '../../../shared/optics/convention';
 import {
   createLabSchema,
@@ -12,14 +11,14 @@ import {
 import { seeAs } from '../../db/in-transaction';
 import { newId } from '../../db/new-id';
 import { conflict } from '../../errors';
+import { labParams } from '../../http/lab-params';
 import { noBody, nothing, type Route, route } from '../../http/route';
 import { invitationRoutes } from './invitation-routes';
-import { asLab, findLab, insertLab, updateLab } from './lab-store';
+import { asLab, findLab, findLabToChange, insertLab, updateLab } from './lab-store';
 import { translateLab } from './translate-convention';
 import { addMember, asMember, countOtherLeads, findMember, listMembers } from './member-store';
 
-const labParams = z.strictObject({ labId: idSchema });
-const memberParams = z.strictObject({ labId: idSchema, userId: idSchema });
+const memberParams = labParams.extend({ userId: idSchema });
 
 const firstDueDays = 90;
 
@@ -64,7 +63,7 @@ export function labRoutes(config: { readonly sessionSecret: string }): readonly 
     route({
       method: 'patch',
       path: '/labs/:labId',
-      access: { kind: 'member', action: 'lab.settings', thing: findLab },
+      access: { kind: 'member', action: 'lab.settings', thing: findLabToChange },
       params: labParams,
       query: nothing,
       body: updateLabSchema,
@@ -76,7 +75,7 @@ export function labRoutes(config: { readonly sessionSecret: string }): readonly 
           convention: body.convention ?? thing.convention,
           calibrationDueDays: body.calibrationDueDays ?? thing.calibrationDueDays,
         };
-        await updateLab(transaction, lab);
+        await updateLab(transaction, thing.id, body);
         const change = { labId: thing.id, userId: user.id, now };
         const translated = await translateLab(transaction, change, thing.convention, lab.convention);
         await audit({

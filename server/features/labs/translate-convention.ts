@@ -12,7 +12,7 @@ const benchRow = z.object({ id: z.string(), input_expression: z.string(), revisi
 const sameState = 1e-24;
 
 /** The same light in the words of another convention; what cannot be read stays as it was typed. */
-export function translateExpression(expression: string, from: Convention, to: Convention): string {
+function translateExpression(expression: string, from: Convention, to: Convention): string {
   const before = parseState(expression, from);
   if (!before.ok) return expression;
   const after = parseState(expression, to);
@@ -22,7 +22,9 @@ export function translateExpression(expression: string, from: Convention, to: Co
 
 /**
  * Rewrites what a lab has written so far when it changes its convention: the change is in what is shown, never in what
- * light the plates make. Versions keep the convention they were frozen with.
+ * light the plates make. Versions keep the convention they were frozen with. Every draft and bench gets older by it, so
+ * that a page that was opened under the old convention is refused whatever it saves.
+ * @returns how many had words to translate.
  */
 export async function translateLab(
   transaction: Transaction,
@@ -30,8 +32,24 @@ export async function translateLab(
   from: Convention,
   to: Convention,
 ): Promise<{ readonly drafts: number; readonly benches: number }> {
-  const { labId } = change;
-  const changed = { drafts: 0, benches: 0 };
+  if (sameConvention(from, to)) return { drafts: 0, benches: 0 };
+  return {
+    drafts: await translateDrafts(transaction, change, from, to),
+    benches: await translateBenches(transaction, change.labId, from, to),
+  };
+}
+
+function sameConvention(a: Convention, b: Convention): boolean {
+  return a.phase === b.phase && a.handedness === b.handedness && a.s3Sign === b.s3Sign;
+}
+
+async function translateDrafts(
+  transaction: Transaction,
+  { labId, userId, now }: { readonly labId: string; readonly userId: string; readonly now: Date },
+  from: Convention,
+  to: Convention,
+): Promise<number> {
+  let translated = 0;
   const drafts = z
     .array(draftRow)
     .parse(await transaction('drafts').where({ lab_id: labId }).orderBy('protocol_id').forUpdate().select());
@@ -41,27 +59,34 @@ export async function translateLab(
       ...target,
       expression: translateExpression(target.expression, from, to),
     }));
-    if (targets.every(({ expression }, index) => expression === draft.targets[index]?.expression)) continue;
-    changed.drafts += 1;
+    const same = targets.every(({ expression }, index) => expression === draft.targets[index]?.expression);
+    if (!same) translated += 1;
     await transaction('drafts')
       .where({ lab_id: labId, protocol_id })
       .update({
-        content: JSON.stringify({ ...draft, targets }),
         revision: revision + 1,
-        saved_at: change.now,
-        saved_by: change.userId,
+        ...(same ? {} : { content: JSON.stringify({ ...draft, targets }), saved_at: now, saved_by: userId }),
       });
   }
+  return translated;
+}
+
+async function translateBenches(
+  transaction: Transaction,
+  labId: string,
+  from: Convention,
+  to: Convention,
+): Promise<number> {
+  let translated = 0;
   const benches = z
     .array(benchRow)
     .parse(await transaction('benches').where({ lab_id: labId }).orderBy('id').forUpdate().select());
   for (const { id, input_expression, revision } of benches) {
-    const translated = translateExpression(input_expression, from, to);
-    if (translated === input_expression) continue;
-    changed.benches += 1;
+    const expression = translateExpression(input_expression, from, to);
+    if (expression !== input_expression) translated += 1;
     await transaction('benches')
       .where({ lab_id: labId, id })
-      .update({ input_expression: translated, revision: revision + 1 });
+      .update({ input_expression: expression, revision: revision + 1 });
   }
-  return changed;
+  return translated;
 }

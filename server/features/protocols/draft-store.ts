@@ -8,6 +8,7 @@ import {
   type ProtocolSummary,
 } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
+import { holdLab } from '../labs';
 import { latestVersions } from './version-store';
 
 const draftRow = z.object({
@@ -100,11 +101,12 @@ export async function findProtocol(
   };
 }
 
-/** As `findProtocol`, and nobody else saves its draft or a version until the transaction ends. */
+/** As `findProtocol`, and nobody else saves its draft or a version, or changes the lab's convention, until the transaction ends. */
 export async function findProtocolToChange(
   transaction: Transaction,
   key: { readonly labId: string; readonly protocolId: string },
 ): Promise<StoredProtocol | null> {
+  await holdLab(transaction, key);
   await transaction('drafts')
     .where({ lab_id: key.labId, protocol_id: key.protocolId })
     .forUpdate()

@@ -1,8 +1,6 @@
-import { z } from 'zod';
 import {
   createProtocolSchema,
   draftSchema,
-  idSchema,
   protocolListSchema,
   protocolSchema,
   saveDraftSchema,
@@ -10,10 +8,11 @@ import {
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { refused } from '../../errors';
+import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Route, route } from '../../http/route';
 import { findBench, type StoredBench } from '../benches';
-import { findLab } from '../labs';
+import { findLab, holdLab } from '../labs';
 import {
   asProtocol,
   findProtocol,
@@ -22,10 +21,8 @@ import {
   listProtocols,
   updateDraft,
 } from './draft-store';
+import { protocolParams } from './protocol-params';
 import { versionRoutes } from './version-routes';
-
-const labParams = z.strictObject({ labId: idSchema });
-const protocolParams = z.strictObject({ labId: idSchema, protocolId: idSchema });
 
 export function protocolRoutes(): readonly Route[] {
   return [
@@ -44,7 +41,7 @@ export function protocolRoutes(): readonly Route[] {
     route({
       method: 'post',
       path: '/labs/:labId/protocols',
-      access: { kind: 'member', action: 'protocols.write', thing: findLab },
+      access: { kind: 'member', action: 'protocols.write', thing: holdLab },
       params: labParams,
       query: nothing,
       body: createProtocolSchema,
