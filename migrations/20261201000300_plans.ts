@@ -42,6 +42,8 @@ export async function up(knex: Knex): Promise<void> {
     -- The draft's revision that was frozen.
     draft_revision integer NOT NULL,
     protocol_name text NOT NULL,
+    -- The bench's name in this version: lists show it without reading the content.
+    bench_name text NOT NULL,
     message text NOT NULL CHECK (message <> ''),
     target_count integer NOT NULL CHECK (target_count BETWEEN 1 AND 200),
     tolerance_infidelity double precision NOT NULL ${finite('tolerance_infidelity')},

@@ -169,6 +169,44 @@ test('a row that cannot be read holds a version up, by its label and column', as
   expect(field?.message).toMatch(/^Row 2 \(w3\), column 5: /);
 });
 
+test('a version is refused only when it would hold nothing new: a new calibration is new under an untouched draft', async () => {
+  const protocol = await begin();
+  const at = `/labs/${lab.labId}/protocols/${protocol.id}`;
+  await saveVersion(harness, lead, lab.labId, protocol, 'First.');
+  const shown = await shownFor(harness, lead, lab.labId, protocol.draft.content);
+  const same = await call(harness, lead, 'post', `${at}/versions`, {
+    body: { message: 'Other words, the same numbers', shown },
+    ifMatch: '"r1"',
+  });
+  expect(same.status).toBe(409);
+  expect(problemSchema.parse(JSON.parse(same.text)).type).toContain('nothing-new');
+  const calibrated = await call(
+    harness,
+    lead,
+    'post',
+    `/labs/${lab.labId}/plates/${lab.plateIds[0]}/calibrations`,
+    {
+      body: {
+        ...quarterBody('any').calibration,
+        retardanceDeg: 179.9,
+        offsetDeg: 13,
+        measuredAt: '2026-06-20T10:00:00Z',
+      },
+    },
+  );
+  expect(calibrated.status).toBe(201);
+  expect((await saveVersion(harness, lead, lab.labId, protocol, 'Recalibrated.')).number).toBe(2);
+  // A draft that was saved again word for word brings nothing new either.
+  const again = await answered(
+    call(harness, lead, 'put', `${at}/draft`, { body: protocol.draft.content, ifMatch: '"r1"' }),
+    draftSchema,
+  );
+  expect(again.revision).toBe(2);
+  await expect(
+    saveVersion(harness, lead, lab.labId, { ...protocol, draft: again }, 'Nothing.'),
+  ).rejects.toThrow(/answered 409/);
+});
+
 test("a lab's versions come by page, each once, newest first", async () => {
   const seen: string[] = [];
   for (let cursor: string | null = '', pages = 0; cursor !== null && pages < 20; pages += 1) {

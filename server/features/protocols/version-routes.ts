@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { compareShown } from '../../../shared/protocol/compare-shown';
 import { freeze } from '../../../shared/protocol/freeze';
+import { sameContent } from '../../../shared/protocol/same-content';
 import {
   idSchema,
   pageQuerySchema,
@@ -11,23 +12,17 @@ import {
   versionSummarySchema,
 } from '../../../shared/schemas';
 import { newId } from '../../db/new-id';
-import { conflict, invalid, refused } from '../../errors';
+import { conflict, refused } from '../../errors';
+import { readCursor } from '../../http/cursor';
+import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Route, route } from '../../http/route';
 import { findBench } from '../benches';
 import { findLab } from '../labs';
 import { findProtocol, findProtocolToChange } from './draft-store';
-import {
-  asVersion,
-  findVersion,
-  frozenRevision,
-  insertVersion,
-  listVersions,
-  pageOfVersions,
-} from './version-store';
+import { protocolParams } from './protocol-params';
+import { asVersion, findVersion, insertVersion, listVersions, pageOfVersions } from './version-store';
 
-const labParams = z.strictObject({ labId: idSchema });
-const protocolParams = z.strictObject({ labId: idSchema, protocolId: idSchema });
 const versionParams = protocolParams.extend({
   number: z
     .string()
@@ -50,12 +45,6 @@ export function versionRoutes(): readonly Route[] {
       handler: async ({ body, thing, labId, user, transaction, audit, now, expectedRevision }) => {
         const { draft, latestVersion } = thing;
         requireRevision(expectedRevision, draft.revision, draft);
-        if ((await frozenRevision(transaction, labId, thing.id)) === draft.revision) {
-          throw conflict(
-            'nothing-new',
-            `Nothing changed in the draft since version ${latestVersion?.number ?? 1} was saved.`,
-          );
-        }
         const [lab, bench] = [
           await findLab(transaction, { labId }),
           await findBench(transaction, { labId, benchId: draft.content.benchId }),
@@ -77,6 +66,16 @@ export function versionRoutes(): readonly Route[] {
           savedBy: user,
         });
         if (!frozen.ok) throw refused(frozen.faults);
+        const latest =
+          latestVersion === null
+            ? null
+            : await findVersion(transaction, { labId, protocolId: thing.id, number: latestVersion.number });
+        if (latest !== null && sameContent(frozen.content, latest.content)) {
+          throw conflict(
+            'nothing-new',
+            `Nothing that a version holds has changed since version ${latest.summary.number} was saved: neither the draft nor its bench, its plates or the convention.`,
+          );
+        }
         const differences = compareShown(frozen.content, body.shown);
         if (differences.length > 0) throw refused(differences);
         const summary = await insertVersion(transaction, newId(now), frozen, draft.revision);
@@ -125,19 +124,10 @@ export function versionRoutes(): readonly Route[] {
       response: versionPageSchema,
       handler: async ({ query, labId, transaction }) => ({
         body: await pageOfVersions(transaction, labId, {
-          before: cursorOf(query.cursor),
+          before: readCursor(idSchema, query.cursor),
           limit: query.limit,
         }),
       }),
     }),
   ];
-}
-
-/** @throws ProblemError 400 for a cursor that no page of ours gave. */
-function cursorOf(cursor: string | undefined): string | null {
-  if (cursor === undefined) return null;
-  const parsed = idSchema.safeParse(cursor);
-  if (!parsed.success)
-    throw invalid([{ path: 'cursor', message: 'This is no cursor that a page of this list gave.' }]);
-  return parsed.data;
 }

@@ -17,7 +17,6 @@ const summaryRow = z.object({
   saved_by_name: z.string(),
 });
 const versionRow = summaryRow.extend({ content: z.string(), parent_hash: z.string().nullable() });
-const revisionRow = z.object({ draft_revision: z.number() });
 
 export type StoredVersion = Version & Thing;
 
@@ -142,19 +141,6 @@ export async function findVersionById(
   return found === undefined ? null : mapVersion(found);
 }
 
-/** The draft's revision that the newest version froze; null before the first. */
-export async function frozenRevision(
-  transaction: Transaction,
-  labId: string,
-  protocolId: string,
-): Promise<number | null> {
-  const found: unknown = await transaction('versions')
-    .where({ lab_id: labId, protocol_id: protocolId })
-    .orderBy('number', 'desc')
-    .first('draft_revision');
-  return found === undefined ? null : revisionRow.parse(found).draft_revision;
-}
-
 /** Keeps a frozen draft for ever. */
 export async function insertVersion(
   transaction: Transaction,
@@ -174,6 +160,7 @@ export async function insertVersion(
     content: frozen.canonicalJson,
     draft_revision: draftRevision,
     protocol_name: content.protocol.name,
+    bench_name: content.bench.name,
     message: content.message,
     target_count: content.targets.length,
     tolerance_infidelity: content.toleranceInfidelity,

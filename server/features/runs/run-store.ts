@@ -74,7 +74,7 @@ function mapRow(unread: unknown): RunRow {
 // The last reading of a setting is the one that counts. The bench goes by the name it had in the version.
 const runQuery = `
   select r.id, r.lab_id, r.number, r.state, v.protocol_id, v.protocol_name, r.version_id, v.number as version_number,
-    v.content::json -> 'bench' ->> 'name' as bench_name, r.setting_count, r.pause_note, r.start_dials_deg,
+    v.bench_name, r.setting_count, r.pause_note, r.start_dials_deg,
     r.events_recorded, r.readings_recorded, r.started_at, u.name as started_by_name, r.finished_at,
     coalesce(counted.done, 0) as done_count, coalesce(counted.skipped, 0) as skipped_count
   from runs r
