@@ -8,7 +8,7 @@ import type {
   RecordReading,
   Version,
 } from '../../shared/schemas';
-import { recordEvent } from '../../server/audit/record-event';
+import { type AuditEntry, recordEvent } from '../../server/audit/record-event';
 import type { Transaction } from '../../server/db/database';
 import { newId } from '../../server/db/new-id';
 import { findBench, insertBench } from '../../server/features/benches';
@@ -20,7 +20,16 @@ import {
   insertVersion,
   updateDraft,
 } from '../../server/features/protocols';
-import { changeState, findRun, recordReading, startRun } from '../../server/features/runs';
+import {
+  changeState,
+  findRun,
+  readingEntry,
+  recordReading,
+  startedEntry,
+  startRun,
+  type StateChange,
+  stateEntry,
+} from '../../server/features/runs';
 import type { Person } from './people';
 
 interface Step {
@@ -40,7 +49,13 @@ export class LabStory {
   ) {}
 
   async tell(): Promise<void> {
-    for (const { tell } of this.#steps.toSorted((a, b) => a.at.getTime() - b.at.getTime())) await tell();
+    for (;;) {
+      this.#steps.sort((a, b) => a.at.getTime() - b.at.getTime());
+      const next = this.#steps.shift();
+      if (next === undefined) return;
+      // A run that starts says then what is recorded of it later.
+      await next.tell();
+    }
   }
 
   plate(at: Date, by: Person, plate: CreatePlate): string {
@@ -135,28 +150,34 @@ export class LabStory {
       if (version === null) throw new Error('a run follows its version');
       const dials = version.content.bench.plates.map(() => null);
       const runId = await startRun(this.transaction, this.#doing(at, by), version, { startDialsDeg: dials });
+      const { summary } = await this.#run(runId);
       let time = at.getTime();
       for (const reading of run.readings(version)) {
         time += 4 * 60_000 + 7_000;
-        const row = await this.#run(runId);
-        await recordReading(this.transaction, this.#doing(new Date(time), by), row, version, reading);
+        this.#reading(new Date(time), by, runId, version, reading);
       }
-      const ended = this.#doing(new Date(time + 60_000), by);
       const note = run.end.kind === 'pause' ? run.end.note : '';
-      await changeState(this.transaction, ended, await this.#run(runId), { kind: run.end.kind, note });
-      return {
-        kind: 'run.started',
-        subjectId: runId,
-        details: { versionId: version.summary.id, cautionAcknowledged: true },
-      };
+      this.#stateChange(new Date(time + 60_000), by, runId, { kind: run.end.kind, note });
+      return startedEntry(summary, version);
     });
   }
 
-  #happened(
-    at: Date,
-    by: Person,
-    work: () => Promise<{ kind: string; subjectId: string; details: Record<string, unknown> }>,
-  ): void {
+  #reading(at: Date, by: Person, runId: string, version: Version, reading: RecordReading): void {
+    this.#happened(at, by, async () => {
+      const run = await this.#run(runId);
+      const id = await recordReading(this.transaction, this.#doing(at, by), run, version, reading);
+      return readingEntry(runId, id, reading);
+    });
+  }
+
+  #stateChange(at: Date, by: Person, runId: string, change: StateChange): void {
+    this.#happened(at, by, async () => {
+      await changeState(this.transaction, this.#doing(at, by), await this.#run(runId), change);
+      return stateEntry(runId, change);
+    });
+  }
+
+  #happened(at: Date, by: Person, work: () => Promise<AuditEntry>): void {
     this.#steps.push({
       at,
       tell: async () => {

@@ -20,6 +20,8 @@ export interface Reply {
   readonly body?: unknown;
   /** Becomes the ETag `"r<revision>"`. */
   readonly revision?: number;
+  /** A repeat of what is done already: nothing was changed, so nothing is recorded. */
+  readonly unchanged?: true;
 }
 
 /** Of a route that takes no query, or no body. */

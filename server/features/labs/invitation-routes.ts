@@ -12,9 +12,11 @@ import type { Transaction } from '../../db/database';
 import { seeAs } from '../../db/in-transaction';
 import { newId } from '../../db/new-id';
 import { conflict, notFound } from '../../errors';
+import { labParams } from '../../http/lab-params';
 import { noBody, nothing, type Route, route } from '../../http/route';
 import {
   asInvitation,
+  findAccepted,
   findByToken,
   findOpenInvitation,
   listOpenInvitations,
@@ -25,8 +27,7 @@ import { invitationToken, tokenHash } from './invitation-token';
 import { findLab, type StoredLab } from './lab-store';
 import { addMember, findMember } from './member-store';
 
-const labParams = z.strictObject({ labId: idSchema });
-const invitationParams = z.strictObject({ labId: idSchema, invitationId: idSchema });
+const invitationParams = labParams.extend({ invitationId: idSchema });
 const tokenParams = z.strictObject({ token: z.string().regex(/^[\w-]{43}$/) });
 const days = 24 * 3600 * 1000;
 const validForDays = 7;
@@ -125,17 +126,24 @@ export function invitationRoutes({ sessionSecret }: { readonly sessionSecret: st
       body: noBody,
       response: acceptedInvitationSchema,
       handler: async ({ params, user, transaction, audit, now }) => {
+        const before = await acceptedBefore(transaction, params.token, user.id);
+        if (before !== null) return { body: before };
         const { invitation, lab } = await openInvitation(transaction, params.token, user.id);
-        if ((await findMember(transaction, { labId: lab.id, userId: user.id })) !== null) {
-          throw conflict('already-member', `You belong to ${lab.name} already. A lead can change your role.`);
+        if (!(await markAccepted(transaction, invitation, user.id))) {
+          // Someone was quicker: perhaps this very person, whose first press is answered only now.
+          const meanwhile = await acceptedBefore(transaction, params.token, user.id);
+          if (meanwhile === null) throw notFound();
+          return { body: meanwhile };
         }
-        if (!(await markAccepted(transaction, invitation, user.id))) throw notFound();
-        await addMember(transaction, {
+        const joined = await addMember(transaction, {
           labId: lab.id,
           userId: user.id,
           role: invitation.role,
           joinedAt: now,
         });
+        if (!joined) {
+          throw conflict('already-member', `You belong to ${lab.name} already. A lead can change your role.`);
+        }
         await audit(lab.id, {
           kind: 'invitation.accepted',
           subjectId: invitation.id,
@@ -145,6 +153,15 @@ export function invitationRoutes({ sessionSecret }: { readonly sessionSecret: st
       },
     }),
   ];
+}
+
+/** The membership that this person has by this invitation already; null where they have none. */
+async function acceptedBefore(transaction: Transaction, token: string, userId: string) {
+  const invitation = await findAccepted(transaction, tokenHash(token), userId);
+  if (invitation === null) return null;
+  await seeAs(transaction, { userId, labId: invitation.labId });
+  const member = await findMember(transaction, { labId: invitation.labId, userId });
+  return member === null ? null : { labId: member.labId, role: member.role };
 }
 
 async function openInvitation(

@@ -59,9 +59,27 @@ export async function findOpenInvitation(
 
 /** What the holder of a link may see before they are anything in the lab. */
 export async function findByToken(transaction: Transaction, hash: string): Promise<StoredInvitation | null> {
-  await transaction.raw(`select set_config('app.invitation_hash', ?, true)`, [hash]);
+  await holding(transaction, hash);
   const found: unknown = await open(transaction).where({ token_hash: hash }).first();
   return found === undefined ? null : mapRow(found);
+}
+
+/** One that this person has accepted, found by the link they hold. */
+export async function findAccepted(
+  transaction: Transaction,
+  hash: string,
+  userId: string,
+): Promise<StoredInvitation | null> {
+  await holding(transaction, hash);
+  const found: unknown = await transaction('invitations')
+    .where({ token_hash: hash, accepted_by: userId })
+    .first();
+  return found === undefined ? null : mapRow(found);
+}
+
+/** Lets the rest of the transaction see the one invitation whose link is held. */
+async function holding(transaction: Transaction, hash: string): Promise<void> {
+  await transaction.raw(`select set_config('app.invitation_hash', ?, true)`, [hash]);
 }
 
 /** Marks it used, once: false where someone else was quicker. */

@@ -50,16 +50,22 @@ export async function findMember(
   return rows[0] === undefined ? null : mapRow(rows[0]);
 }
 
+/** Makes someone a member, once: false where they are one already. */
 export async function addMember(
   transaction: Transaction,
   member: { readonly labId: string; readonly userId: string; readonly role: Role; readonly joinedAt: Date },
-): Promise<void> {
-  await transaction('memberships').insert({
-    lab_id: member.labId,
-    user_id: member.userId,
-    role: member.role,
-    joined_at: member.joinedAt,
-  });
+): Promise<boolean> {
+  const added: unknown[] = await transaction('memberships')
+    .insert({
+      lab_id: member.labId,
+      user_id: member.userId,
+      role: member.role,
+      joined_at: member.joinedAt,
+    })
+    .onConflict(['lab_id', 'user_id'])
+    .ignore()
+    .returning('user_id');
+  return added.length === 1;
 }
 
 /** How many leads there are but for one person; the lab's leads hold still until the transaction ends. */

@@ -1,3 +1,4 @@
 export { findRun, listRuns, type RunRow } from './run-store';
-export { changeState, recordReading, startRun } from './run-work';
+export { readingEntry, startedEntry, stateEntry } from './run-record';
+export { changeState, recordReading, startRun, type StateChange } from './run-work';
 export { runRoutes } from './routes';

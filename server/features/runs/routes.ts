@@ -9,16 +9,24 @@ import {
   startRunSchema,
   type Version,
 } from '../../../shared/schemas';
+import type { AuditEntry } from '../../audit/record-event';
 import type { Transaction } from '../../db/database';
-import { invalid, refused } from '../../errors';
-import { noBody, nothing, type Route, route } from '../../http/route';
+import { refused } from '../../errors';
+import { readCursor } from '../../http/cursor';
+import { labParams } from '../../http/lab-params';
+import { noBody, nothing, type Reply, type Route, route, type User } from '../../http/route';
 import { findLab } from '../labs';
 import { findVersionById } from '../protocols';
-import { findRun, findRunToChange, listRuns, runAsItStands } from './run-store';
-import { changeState, recordReading, startRun } from './run-work';
+import { readingEntry, startedEntry, stateEntry } from './run-record';
+import { findRun, findRunToChange, listRuns, type RunRow, runAsItStands } from './run-store';
+import { changeState, isRepeat, recordReading, startRun, type StateChange } from './run-work';
 
-const labParams = z.strictObject({ labId: idSchema });
-const runParams = z.strictObject({ labId: idSchema, runId: idSchema });
+/** Runs are numbered, so the last number of a page is the cursor. */
+const runNumber = z
+  .string()
+  .regex(/^[1-9]\d{0,8}$/)
+  .transform(Number);
+const runParams = labParams.extend({ runId: idSchema });
 
 export function runRoutes(): readonly Route[] {
   return [
@@ -31,7 +39,7 @@ export function runRoutes(): readonly Route[] {
       body: noBody,
       response: runPageSchema,
       handler: async ({ query, labId, transaction }) => {
-        const page = { before: cursorOf(query.cursor), limit: query.limit + 1 };
+        const page = { before: readCursor(runNumber, query.cursor), limit: query.limit + 1 };
         const found = (await listRuns(transaction, labId, page)).map(({ summary }) => summary);
         const items = found.slice(0, query.limit);
         const last = items.at(-1);
@@ -61,11 +69,7 @@ export function runRoutes(): readonly Route[] {
         }
         const runId = await startRun(transaction, { labId, userId: user.id, at: now }, version, body);
         const run = await runAsItStands(transaction, { labId, runId });
-        await audit({
-          kind: 'run.started',
-          subjectId: runId,
-          details: { number: run.summary.number, versionId: body.versionId, cautionAcknowledged: true },
-        });
+        await audit(startedEntry(run.summary, version));
         return { status: 201, body: run };
       },
     }),
@@ -92,11 +96,7 @@ export function runRoutes(): readonly Route[] {
         const version = await versionOf(transaction, labId, thing.summary.versionId);
         const doing = { labId, userId: user.id, at: now };
         const readingId = await recordReading(transaction, doing, thing, version, body);
-        await audit({
-          kind: 'reading.recorded',
-          subjectId: thing.summary.id,
-          details: { readingId, reading: body },
-        });
+        await audit(readingEntry(thing.summary.id, readingId, body));
         return { status: 201, body: await runAsItStands(transaction, params) };
       },
     }),
@@ -108,14 +108,7 @@ export function runRoutes(): readonly Route[] {
       query: nothing,
       body: pauseRunSchema,
       response: runSchema,
-      handler: async ({ body, params, thing, labId, user, transaction, audit, now }) => {
-        await changeState(transaction, { labId, userId: user.id, at: now }, thing, {
-          kind: 'pause',
-          note: body.note,
-        });
-        await audit({ kind: 'run.paused', subjectId: thing.summary.id, details: { note: body.note } });
-        return { body: await runAsItStands(transaction, params) };
-      },
+      handler: (context) => move(context, { kind: 'pause', note: context.body.note }),
     }),
     ...(['resume', 'finish'] as const).map((kind) =>
       route({
@@ -126,14 +119,7 @@ export function runRoutes(): readonly Route[] {
         query: nothing,
         body: noBody,
         response: runSchema,
-        handler: async ({ params, thing, labId, user, transaction, audit, now }) => {
-          await changeState(transaction, { labId, userId: user.id, at: now }, thing, { kind, note: '' });
-          await audit({
-            kind: kind === 'resume' ? 'run.resumed' : 'run.finished',
-            subjectId: thing.summary.id,
-          });
-          return { body: await runAsItStands(transaction, params) };
-        },
+        handler: (context) => move(context, { kind, note: '' }),
       }),
     ),
   ];
@@ -145,9 +131,22 @@ async function versionOf(transaction: Transaction, labId: string, versionId: str
   return version;
 }
 
-/** @throws ProblemError 400 for a cursor that no page of ours gave. */
-function cursorOf(cursor: string | undefined): number | null {
-  if (cursor === undefined) return null;
-  if (/^[1-9]\d{0,8}$/.test(cursor)) return Number(cursor);
-  throw invalid([{ path: 'cursor', message: 'This is no cursor that a page of this list gave.' }]);
+interface Moving {
+  readonly thing: RunRow;
+  readonly user: User;
+  readonly transaction: Transaction;
+  readonly now: Date;
+  readonly audit: (entry: AuditEntry) => Promise<void>;
+}
+
+/** Pauses, resumes or finishes a run, once: who sends it again after a lost answer gets the run as it stands. */
+async function move({ thing, user, transaction, now, audit }: Moving, change: StateChange): Promise<Reply> {
+  const key = { labId: thing.labId, runId: thing.summary.id };
+  const doing = { labId: thing.labId, userId: user.id, at: now };
+  if (await isRepeat(transaction, doing, thing, change)) {
+    return { body: await runAsItStands(transaction, key), unchanged: true };
+  }
+  await changeState(transaction, doing, thing, change);
+  await audit(stateEntry(key.runId, change));
+  return { body: await runAsItStands(transaction, key) };
 }

@@ -15,8 +15,12 @@ export interface Doing {
 }
 
 const numberRow = z.object({ runs_started: z.number() });
+const benchRow = z.object({ name: z.string(), retired_at: z.date().nullable() });
 
-/** Begins a run of a version. @throws ProblemError 422 where the dials do not fit its bench. */
+/**
+ * Begins a run of a version.
+ * @throws ProblemError 422 where the dials do not fit its bench, 409 where that bench is retired.
+ */
 export async function startRun(
   transaction: Transaction,
   { labId, userId, at }: Doing,
@@ -38,6 +42,7 @@ export async function startRun(
       await transaction('labs').where({ id: labId }).increment('runs_started', 1).returning('runs_started'),
     );
   if (counted === undefined) throw new Error('the lab of a run is not there');
+  await requireBenchInUse(transaction, labId, version.content.bench.id);
   const id = newId(at);
   await transaction('runs').insert({
     id,
@@ -53,6 +58,15 @@ export async function startRun(
   });
   await insertEvent(transaction, { labId, userId, at }, id, 1, 'started', '');
   return id;
+}
+
+/** Held, so that the bench is not retired between this look and the run's own row; the lab's row is taken before it. */
+async function requireBenchInUse(transaction: Transaction, labId: string, benchId: string): Promise<void> {
+  const { name, retired_at } = benchRow.parse(
+    await transaction('benches').where({ lab_id: labId, id: benchId }).forShare().first('name', 'retired_at'),
+  );
+  if (retired_at === null) return;
+  throw conflict('bench-retired', `${name} is retired. Return it to use before a run is started there.`);
 }
 
 /** What a transition allows. @throws ProblemError 409 with the reason where it does not. */
@@ -112,12 +126,32 @@ export async function recordReading(
 
 const eventKinds = { pause: 'paused', resume: 'resumed', finish: 'finished' } as const;
 
+/** What is done to a run as a whole; only a pause has words. */
+export interface StateChange {
+  readonly kind: keyof typeof eventKinds;
+  readonly note: string;
+}
+
+/** Is this the very change that the same person made last? Then its answer was lost, and it is sent again. */
+export async function isRepeat(
+  transaction: Transaction,
+  { labId, userId }: Doing,
+  run: RunRow,
+  change: StateChange,
+): Promise<boolean> {
+  const last: unknown = await transaction('run_events')
+    .where({ lab_id: labId, run_id: run.summary.id, sequence: run.eventsRecorded })
+    .where({ kind: eventKinds[change.kind], note: change.note, by_user: userId })
+    .first('id');
+  return last !== undefined;
+}
+
 /** Pauses, resumes or finishes a run. */
 export async function changeState(
   transaction: Transaction,
   doing: Doing,
   run: RunRow,
-  event: { readonly kind: 'pause' | 'resume' | 'finish'; readonly note: string },
+  event: StateChange,
 ): Promise<void> {
   const { settingCount, doneCount, skippedCount, id } = run.summary;
   const state = nextState(
