@@ -5,7 +5,14 @@ import { runSummarySchema } from './runs';
 
 /** One thing that waits for the person who asks; people before data before dates. */
 export const waitingItemSchema = z.discriminatedUnion('kind', [
-  z.strictObject({ kind: z.literal('run-stands'), run: runSummarySchema }),
+  z.strictObject({
+    kind: z.literal('run-stands'),
+    run: runSummarySchema,
+    /** The first setting that is neither done nor skipped, from 1; null when none is left. */
+    nextSetting: z.int().nullable(),
+    /** The setting that was done last, from 1; null when none is done. */
+    lastDoneSetting: z.int().nullable(),
+  }),
   z.strictObject({
     kind: z.literal('draft-ahead'),
     protocolId: idSchema,
@@ -28,7 +35,7 @@ export const waitingItemSchema = z.discriminatedUnion('kind', [
     plateId: idSchema,
     plateName: z.string(),
     measuredAt: timestampSchema,
-    /** Days until it falls due; below 0 when it is overdue. */
+    /** Whole days until it falls due, 0 on the day it does; below 0 when it is overdue. */
     daysLeft: z.int(),
     benchNames: z.array(z.string()),
   }),

@@ -1,14 +1,13 @@
-import { z } from 'zod';
-import { homeSchema, idSchema } from '../../../shared/schemas';
+import { homeSchema } from '../../../shared/schemas';
+import { labParams } from '../../http/lab-params';
 import { noBody, nothing, type Route, route } from '../../http/route';
 import { asPlate, listPlates } from '../cabinet';
 import { listBenches } from '../benches';
 import { findLab } from '../labs';
 import { lastRuns } from './last-made';
 import { draftsAhead } from './drafts-ahead';
+import { standings } from './next-settings';
 import { waitingFor } from './waiting';
-
-const labParams = z.strictObject({ labId: idSchema });
 
 export function homeRoutes(): readonly Route[] {
   return [
@@ -24,10 +23,12 @@ export function homeRoutes(): readonly Route[] {
         const plates = (await listPlates(transaction, labId)).filter(({ retiredAt }) => retiredAt === null);
         const benches = (await listBenches(transaction, labId)).filter(({ retiredAt }) => retiredAt === null);
         const runs = await lastRuns(transaction, labId);
+        const unfinished = runs.unfinished.map(({ id }) => id);
+        const facts = { ...runs, standings: await standings(transaction, labId, unfinished) };
         const drafts = await draftsAhead(transaction, labId);
         return {
           body: {
-            waiting: waitingFor({ lab: thing, member, plates, benches, ...runs, ...drafts, now }),
+            waiting: waitingFor({ lab: thing, member, plates, benches, ...facts, ...drafts, now }),
             lastMade: runs.worst.map(({ made }) => made),
             cabinet: plates.map(asPlate),
           },

@@ -1,9 +1,10 @@
+import { calibrationDue } from '../../../shared/calibration-due';
 import { can, type Member } from '../../../shared/permissions';
 import type { Bench, Lab, Plate, RunSummary, WaitingItem } from '../../../shared/schemas';
 import type { DraftAhead } from './drafts-ahead';
 import type { WorstSetting } from './last-made';
+import type { Standing } from './next-settings';
 
-const dayMs = 24 * 3600 * 1000;
 /** A calibration is named this many days before it falls due. */
 const warnedDays = 7;
 /** A retardance measured this far from the bench's light is another retardance. */
@@ -17,6 +18,8 @@ export interface HomeFacts {
   /** In use. */
   readonly benches: readonly Bench[];
   readonly unfinished: readonly RunSummary[];
+  /** Of each unfinished run, by its id. */
+  readonly standings: ReadonlyMap<string, Standing>;
   readonly worst: readonly WorstSetting[];
   readonly drafts: readonly DraftAhead[];
   readonly protocolCount: number;
@@ -25,10 +28,10 @@ export interface HomeFacts {
 
 /** What waits for this person, and for nobody who could do nothing about it: people before data before dates. */
 export function waitingFor(facts: HomeFacts): WaitingItem[] {
-  const { lab, member, plates, benches, unfinished, worst, drafts, protocolCount } = facts;
+  const { lab, member, plates, benches, worst, drafts, protocolCount } = facts;
   const may = (action: Parameters<typeof can>[1]) => can(member, action, { labId: lab.id });
   const items: WaitingItem[] = [];
-  if (may('runs.record')) items.push(...unfinished.map((run) => ({ kind: 'run-stands' as const, run })));
+  if (may('runs.record')) items.push(...standing(facts));
   if (may('protocols.write'))
     items.push(...drafts.map((draft) => ({ kind: 'draft-ahead' as const, ...draft })));
   if (may('protocols.write') || may('runs.record')) items.push(...notWithin(worst));
@@ -37,6 +40,13 @@ export function waitingFor(facts: HomeFacts): WaitingItem[] {
   if (benches.length === 0 && may('benches.write')) items.push({ kind: 'no-bench' });
   if (protocolCount === 0 && may('protocols.write')) items.push({ kind: 'no-protocol' });
   return items;
+}
+
+function standing({ unfinished, standings }: HomeFacts): WaitingItem[] {
+  return unfinished.flatMap((run) => {
+    const stands = standings.get(run.id);
+    return stands === undefined ? [] : [{ kind: 'run-stands' as const, run, ...stands }];
+  });
 }
 
 function notWithin(worst: readonly WorstSetting[]): WaitingItem[] {
@@ -69,17 +79,14 @@ function elsewhere(benches: readonly Bench[]): WaitingItem[] {
 function due({ lab, plates, now }: HomeFacts): WaitingItem[] {
   return plates
     .filter(({ benches }) => benches.length > 0)
-    .map((plate) => {
-      const dueAt = Date.parse(plate.calibration.measuredAt) + lab.calibrationDueDays * dayMs;
-      return {
-        kind: 'calibration-due' as const,
-        plateId: plate.id,
-        plateName: plate.name,
-        measuredAt: plate.calibration.measuredAt,
-        daysLeft: Math.floor((dueAt - now.getTime()) / dayMs),
-        benchNames: plate.benches.map(({ name }) => name),
-      };
-    })
+    .map((plate) => ({
+      kind: 'calibration-due' as const,
+      plateId: plate.id,
+      plateName: plate.name,
+      measuredAt: plate.calibration.measuredAt,
+      daysLeft: calibrationDue(plate.calibration.measuredAt, lab.calibrationDueDays, now).daysLeft,
+      benchNames: plate.benches.map(({ name }) => name),
+    }))
     .filter(({ daysLeft }) => daysLeft <= warnedDays)
     .sort((a, b) => a.daysLeft - b.daysLeft);
 }
