@@ -11,7 +11,7 @@ import { BenchFoot } from './BenchFoot';
 import { BenchHead } from './BenchHead';
 import { benchTargets } from './bench-targets';
 import { type BenchStore, createBenchStore } from './bench-store';
-import { keepEntry, keptEntry } from './kept-entry';
+import { benchKeeping } from './kept-entry';
 import { LeaveRunDialog } from './LeaveRunDialog';
 import { announcement, dialText } from './move-words';
 import { OtherReadingSheet } from './OtherReadingSheet';
@@ -46,11 +46,10 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
   const { lab, user, may } = useLab();
   const runId = run.summary.id;
   const plates = content.bench.plates;
-  const [store] = useState<BenchStore>(() =>
-    createBenchStore(keptEntry(user.id, runId), plates.length, (entry) => keepEntry(user.id, runId, entry)),
-  );
+  const [keeping] = useState(() => benchKeeping(user.id, runId));
+  const [store] = useState<BenchStore>(() => createBenchStore(keeping, plates.length));
   const bench = useBench(run, content, store);
-  const sending = useSending(lab.id, runId, store);
+  const sending = useSending(lab.id, runId, store, keeping);
   const runState = useRunState(lab.id, runId);
   const shape = useBenchShape();
   const [sheet, setSheet] = useState<Sheet>('none');

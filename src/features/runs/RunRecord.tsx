@@ -7,6 +7,7 @@ import { VersionSeal } from '../../components/VersionSeal';
 import { formatDate, formatTime } from '../../lib/format';
 import { useLab } from '../labs';
 import { benchTargets } from './bench-targets';
+import { LeftReadings } from './LeftReadings';
 import { RecordTable } from './RecordTable';
 
 const states = { running: 'in progress', paused: 'paused', finished: 'finished' } as const;
@@ -53,6 +54,7 @@ export function RunRecord({ run, version }: { readonly run: Run; readonly versio
             </p>
           </div>
         </header>
+        {summary.state === 'finished' && <LeftReadings runId={summary.id} />}
         <RecordTable run={run} content={content} />
       </main>
     </>

@@ -1,7 +1,13 @@
 import { createStore } from 'zustand';
 import type { RecordReading } from '../../../shared/schemas/runs';
 import type { ViewedFrom } from '../../components/dial-words';
-import { emptyEntry, type KeptEntry, type WaitingReading } from './kept-entry';
+import {
+  type BenchCursor,
+  type BenchKeeping,
+  emptyEntry,
+  type KeptEntry,
+  type WaitingReading,
+} from './kept-entry';
 import type { TurnedSince } from './standing-dials';
 
 interface OpenedWith {
@@ -28,18 +34,21 @@ export interface BenchState extends KeptEntry {
   readonly discard: (key: string) => void;
 }
 
-/** The cursor of one bench: setting, plates confirmed, what waits. Every change is kept at once through `keep`. */
-export function createBenchStore(from: KeptEntry, plateCount: number, keep: (entry: KeptEntry) => boolean) {
+/** The cursor of one bench: setting, plates confirmed, what waits. Every change is kept at once. */
+export function createBenchStore(keeping: BenchKeeping, plateCount: number) {
+  const from = keeping.entry();
   const none = Array.from({ length: plateCount }, (): number | null => null);
   return createStore<BenchState>()((set, get) => {
     const change = (part: Partial<KeptEntry>) => {
       const { setting, confirmedDeg, note, turnedSince, side, waiting } = { ...get(), ...part };
-      const entry: KeptEntry = { setting, confirmedDeg, note, turnedSince, side, waiting };
-      set({ ...entry, kept: keep(entry) });
+      const cursor: BenchCursor = { setting, confirmedDeg, note, turnedSince, side };
+      const kept = keeping.keepCursor(cursor) && waiting.every((reading) => keeping.keepReading(reading));
+      set({ ...cursor, waiting, kept });
     };
-    const withoutReading = (key: string) => ({
-      waiting: get().waiting.filter((reading) => reading.key !== key),
-    });
+    const takeOut = (key: string) => {
+      keeping.dropReading(key);
+      change({ waiting: get().waiting.filter((reading) => reading.key !== key) });
+    };
     return {
       ...emptyEntry,
       ...from,
@@ -75,8 +84,8 @@ export function createBenchStore(from: KeptEntry, plateCount: number, keep: (ent
           note: '',
           turnedSince: copied(turnedSince),
         }),
-      acknowledged: (key) => change(withoutReading(key)),
-      discard: (key) => change(withoutReading(key)),
+      acknowledged: takeOut,
+      discard: takeOut,
     };
   });
 }

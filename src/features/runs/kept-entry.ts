@@ -12,7 +12,7 @@ const waitingReadingSchema = z.strictObject({
 /** A reading that the server has not acknowledged. */
 export type WaitingReading = z.infer<typeof waitingReadingSchema>;
 
-const keptEntrySchema = z.strictObject({
+const cursorSchema = z.strictObject({
   /** Place of the open setting, from 0; the number of settings once all are passed; null before one was opened here. */
   setting: z.int().min(0).nullable(),
   /** What has been confirmed at the open setting, in beam order; null for a plate that has not. */
@@ -20,50 +20,109 @@ const keptEntrySchema = z.strictObject({
   note: z.string(),
   turnedSince: z.strictObject({ sequence: z.int(), dialsDeg: dialsSchema }).nullable(),
   side: z.enum(['receiver', 'source']),
-  /** Oldest first: they go out in this order. */
-  waiting: z.array(waitingReadingSchema),
 });
-/** What one person has done at one run and the server has not acknowledged. */
-export type KeptEntry = z.infer<typeof keptEntrySchema>;
+/** Where one person is at one run. */
+export type BenchCursor = z.infer<typeof cursorSchema>;
 
-export const emptyEntry: KeptEntry = {
+/** What one person has done at one run and the server has not acknowledged. */
+export interface KeptEntry extends BenchCursor {
+  /** Oldest first: they go out in this order. */
+  readonly waiting: readonly WaitingReading[];
+}
+
+const emptyCursor: BenchCursor = {
   setting: null,
   confirmedDeg: [],
   note: '',
   turnedSince: null,
   side: 'receiver',
-  waiting: [],
 };
+export const emptyEntry: KeptEntry = { ...emptyCursor, waiting: [] };
 
-// With the person in its name: on a shared tablet nobody sends what somebody else dialled.
-const nameOf = (userId: string, runId: string) => `quarterturn.bench.${userId}.${runId}`;
+/** What this device keeps of one person at one run. */
+export interface BenchKeeping {
+  /** What was kept; anything missing or broken is left out. */
+  readonly entry: () => KeptEntry;
+  /** False where the browser can't keep it: it then lasts as long as the page, and the page says so. */
+  readonly keepCursor: (cursor: BenchCursor) => boolean;
+  readonly keepReading: (reading: WaitingReading) => boolean;
+  readonly dropReading: (key: string) => void;
+  /** Tells the key of a reading that another tab took out, the server having acknowledged it there. Returns how to stop. */
+  readonly watchDropped: (onDropped: (key: string) => void) => () => void;
+  readonly forget: () => void;
+}
 
-/** Keeps an entry on this device. False where the browser can't: it then lasts as long as the page, and the page says so. */
-export function keepEntry(userId: string, runId: string, entry: KeptEntry): boolean {
+function parsed(text: string | null): unknown {
   try {
-    localStorage.setItem(nameOf(userId, runId), JSON.stringify(entry));
+    return JSON.parse(text ?? 'null');
+  } catch {
+    return null;
+  }
+}
+
+function keep(name: string, value: unknown): boolean {
+  try {
+    localStorage.setItem(name, JSON.stringify(value));
     return true;
   } catch {
     return false;
   }
 }
 
-/** What was kept; an entry that is missing or can't be read is an empty one. */
-export function keptEntry(userId: string, runId: string): KeptEntry {
+/** Does nothing where the browser keeps nothing. */
+function drop(name: string): void {
   try {
-    const parsed = keptEntrySchema.safeParse(
-      JSON.parse(localStorage.getItem(nameOf(userId, runId)) ?? 'null'),
-    );
-    return parsed.success ? parsed.data : emptyEntry;
-  } catch {
-    return emptyEntry;
-  }
-}
-
-export function forgetEntry(userId: string, runId: string): void {
-  try {
-    localStorage.removeItem(nameOf(userId, runId));
+    localStorage.removeItem(name);
   } catch {
     // Where nothing can be kept there is nothing to forget.
   }
+}
+
+/** Every name that begins so; none where the browser keeps nothing. */
+function namesFrom(prefix: string): string[] {
+  try {
+    return Array.from({ length: localStorage.length }, (_, index) => localStorage.key(index) ?? '').filter(
+      (name) => name.startsWith(prefix),
+    );
+  } catch {
+    return [];
+  }
+}
+
+/**
+ * The keeping of one person at one run. The person is in its name: on a shared tablet nobody sends what somebody else
+ * dialled. Each reading has a place of its own, so that a second tab of the same person never writes over one.
+ */
+export function benchKeeping(userId: string, runId: string): BenchKeeping {
+  const name = `quarterturn.bench.${userId}.${runId}`;
+  const ofReading = `${name}.reading.`;
+  const waiting = (): WaitingReading[] =>
+    namesFrom(ofReading)
+      .flatMap((slot) => {
+        const reading = waitingReadingSchema.safeParse(parsed(localStorage.getItem(slot)));
+        return reading.success ? [reading.data] : [];
+      })
+      .sort((a, b) => (a.typedAt === b.typedAt ? 0 : a.typedAt < b.typedAt ? -1 : 1));
+  const cursor = (): BenchCursor => {
+    try {
+      const kept = cursorSchema.safeParse(parsed(localStorage.getItem(name)));
+      return kept.success ? kept.data : emptyCursor;
+    } catch {
+      return emptyCursor;
+    }
+  };
+  return {
+    entry: () => ({ ...cursor(), waiting: waiting() }),
+    keepCursor: (value) => keep(name, value),
+    keepReading: (reading) => keep(ofReading + reading.key, reading),
+    dropReading: (key) => drop(ofReading + key),
+    watchDropped: (onDropped) => {
+      const heard = ({ key, newValue }: StorageEvent): void => {
+        if (newValue === null && key?.startsWith(ofReading) === true) onDropped(key.slice(ofReading.length));
+      };
+      window.addEventListener('storage', heard);
+      return () => window.removeEventListener('storage', heard);
+    },
+    forget: () => [name, ...namesFrom(ofReading)].forEach(drop),
+  };
 }

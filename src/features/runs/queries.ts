@@ -22,13 +22,21 @@ export function startRun(labId: string, body: StartRun, idempotencyKey: string):
   return request<Run>(`/labs/${labId}/runs`, { method: 'POST', body, idempotencyKey });
 }
 
+/** A network that is half open says nothing for minutes; the person at the bench hears of it after this long. */
+const recordTimeoutMs = 15_000;
+
 export function recordReading(
   labId: string,
   runId: string,
   body: RecordReading,
   idempotencyKey: string,
 ): Promise<Run> {
-  return request<Run>(`/labs/${labId}/runs/${runId}/readings`, { method: 'POST', body, idempotencyKey });
+  return request<Run>(`/labs/${labId}/runs/${runId}/readings`, {
+    method: 'POST',
+    body,
+    idempotencyKey,
+    signal: AbortSignal.timeout(recordTimeoutMs),
+  });
 }
 
 export function pauseRun(labId: string, runId: string, note: string): Promise<Run> {

@@ -1,6 +1,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { Run } from '../../../shared/schemas/runs';
+import { ApiError } from '../../lib/api';
 import { finishRun, pauseRun, resumeRun, runQuery } from './queries';
 
 export interface RunStateActions {
@@ -27,6 +28,10 @@ export function useRunState(labId: string, runId: string): RunStateActions {
       void queryClient.invalidateQueries({ queryKey: ['labs', labId], refetchType: 'none' });
     } catch (error) {
       setFault(error instanceof Error ? error.message : 'The server gave no reason.');
+      // Somebody else was faster: the page shows what the run has become.
+      if (error instanceof ApiError && error.status === 409) {
+        void queryClient.invalidateQueries({ queryKey: runQuery(labId, runId).queryKey });
+      }
     } finally {
       setBusy(false);
     }

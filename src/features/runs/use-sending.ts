@@ -3,6 +3,7 @@ import { useCallback, useEffect, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { ApiError } from '../../lib/api';
 import type { BenchStore } from './bench-store';
+import type { BenchKeeping } from './kept-entry';
 import { recordReading, runQuery } from './queries';
 
 /** Why the oldest waiting reading is still here. */
@@ -32,7 +33,7 @@ function isPassing(error: unknown): boolean {
  * Sends what waits, oldest first and one at a time, each with the key it was made with, so that a retry records nothing twice.
  * A reading leaves the queue only when the server has acknowledged it, or when the person takes it out.
  */
-export function useSending(labId: string, runId: string, store: BenchStore): Sending {
+export function useSending(labId: string, runId: string, store: BenchStore, keeping: BenchKeeping): Sending {
   const queryClient = useQueryClient();
   const oldest = useStore(store, (state) => state.waiting[0]);
   const [trouble, setTrouble] = useState<SendingTrouble | null>(null);
@@ -59,6 +60,8 @@ export function useSending(labId: string, runId: string, store: BenchStore): Sen
           } else {
             const message = error instanceof Error ? error.message : 'The server gave no reason.';
             setTrouble({ kind: 'refused', key: oldest.key, message });
+            // Somebody else paused or finished the run, or this page is behind in another way.
+            void queryClient.invalidateQueries({ queryKey: runQuery(labId, runId).queryKey });
           }
         },
       )
@@ -78,6 +81,18 @@ export function useSending(labId: string, runId: string, store: BenchStore): Sen
       window.removeEventListener('online', sendAgain);
     };
   }, [trouble, sendAgain]);
+
+  useEffect(
+    () =>
+      keeping.watchDropped((key) => {
+        if (!store.getState().waiting.some((reading) => reading.key === key)) return;
+        // Refetched first, so that what another tab recorded never looks undone here.
+        void queryClient
+          .invalidateQueries({ queryKey: runQuery(labId, runId).queryKey })
+          .finally(() => store.getState().acknowledged(key));
+      }),
+    [keeping, store, queryClient, labId, runId],
+  );
 
   const stale = trouble?.kind === 'refused' && trouble.key !== oldest?.key;
   return { trouble: stale || oldest === undefined ? null : trouble, savedAt, sendAgain };

@@ -28,7 +28,7 @@ const json = (value: unknown, status = 200) =>
 export class FakeApi {
   readonly asked: Asked[] = [];
   /** What the next writes meet; null lets them through. */
-  failWith: 'network' | { readonly status: number; readonly detail: string } | null = null;
+  failWith: 'network' | 'silence' | { readonly status: number; readonly detail: string } | null = null;
   /** What became of the bench since the version, besides its second plate's new calibration. */
   changeBench: (bench: Bench) => Bench = (bench) => bench;
   /** While it waits for this, the bench is not answered. */
@@ -46,6 +46,12 @@ export class FakeApi {
     const key = new Headers(init.headers).get('idempotency-key');
     const body: unknown = typeof init.body === 'string' ? JSON.parse(init.body) : null;
     this.asked.push({ path, method, key, body });
+    const { signal } = init;
+    if (method === 'POST' && this.failWith === 'silence') {
+      return new Promise((_, reject) => {
+        signal?.addEventListener('abort', () => reject(new DOMException('No answer.', 'TimeoutError')));
+      });
+    }
     const ready = path.includes('/benches/') ? this.benchAfter : Promise.resolve();
     return ready.then(() => this.answer(path, method, key, body));
   };
@@ -57,7 +63,7 @@ export class FakeApi {
   private answer(path: string, method: string, key: string | null, body: unknown): Response {
     if (method === 'POST') {
       if (this.failWith === 'network') throw new TypeError('Failed to fetch');
-      if (this.failWith !== null) {
+      if (this.failWith !== null && this.failWith !== 'silence') {
         const { status, detail } = this.failWith;
         return json({ type: 'about:blank', title: 'Refused', status, detail, requestId: 'r1' }, status);
       }

@@ -137,6 +137,71 @@ describe('the bench', () => {
     await waitFor(() => expect(screen.queryByText(/one reading waits/u)).toBeNull());
   });
 
+  test('a network that takes the reading and says nothing is given up after 15 seconds, and said', async () => {
+    const timers: { ms: number; give: () => void }[] = [];
+    vi.spyOn(AbortSignal, 'timeout').mockImplementation((ms) => {
+      const controller = new AbortController();
+      timers.push({ ms, give: () => controller.abort() });
+      return controller.signal;
+    });
+    const api = new FakeApi(makeRun(version), version);
+    const { user } = openBench(api);
+    api.failWith = 'silence';
+    await confirmAll(user, 0);
+    await user.click(await button('Record and go to 2'));
+    expect(screen.queryByText(/No answer from the server/u)).toBeNull();
+    expect(timers.map(({ ms }) => ms)).toEqual([15_000]);
+    timers[0]?.give();
+    expect(await screen.findByText(/No answer from the server since/u)).toBeTruthy();
+    vi.restoreAllMocks();
+  });
+
+  test('a reading that another tab has sent leaves this one’s queue, and the run is fetched again', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    const { user } = openBench(api);
+    api.failWith = 'network';
+    await confirmAll(user, 0);
+    await user.click(await button('Record and go to 2'));
+    await screen.findByText(/one reading waits on this device/u);
+    const slot = Object.keys(localStorage).find((name) => name.includes('.reading.')) ?? '';
+    const fetched = () => api.asked.filter(({ method, path }) => method === 'GET' && path.includes('/runs/'));
+    const before = fetched().length;
+    localStorage.removeItem(slot);
+    window.dispatchEvent(new StorageEvent('storage', { key: slot, newValue: null }));
+    await waitFor(() => expect(screen.queryByText(/one reading waits/u)).toBeNull());
+    expect(fetched().length).toBe(before + 1);
+  });
+
+  test('where somebody else was faster, the page shows what the run has become', async () => {
+    const run = makeRun(version);
+    const api = new FakeApi({ ...run, summary: { ...run.summary, state: 'paused' } }, version);
+    const { user } = openBench(api);
+    await button('Resume at setting 1');
+    api.run = run;
+    api.failWith = { status: 409, detail: 'Run 231 is running already.' };
+    await user.click(await button('Resume at setting 1'));
+    expect(await button(/^H-3 says/u)).toBeTruthy();
+  });
+
+  test('a finished run leaves nothing on the device but what never reached the server, until that is dropped', async () => {
+    const run = makeRun(version);
+    const api = new FakeApi(run, version);
+    const first = openBench(api);
+    api.failWith = 'network';
+    await confirmAll(first.user, 0);
+    await first.user.click(await button('Record and go to 2'));
+    await screen.findByText(/one reading waits on this device/u);
+    first.unmount();
+    api.run = {
+      ...run,
+      summary: { ...run.summary, state: 'finished', finishedAt: '2026-11-30T10:00:00.000Z' },
+    };
+    const { user } = openBench(api);
+    expect(await screen.findByText(/did not reach the server before the run was finished/u)).toBeTruthy();
+    await user.click(await button('Drop it from this device'));
+    expect(Object.keys(localStorage).filter((name) => name.startsWith('quarterturn.bench'))).toEqual([]);
+  });
+
   test('a reading that the server refuses stays, with what the server said', async () => {
     const api = new FakeApi(makeRun(version), version);
     const { user } = openBench(api);

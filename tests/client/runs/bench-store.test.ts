@@ -1,10 +1,15 @@
 // @vitest-environment jsdom
 import { beforeEach, describe, expect, test } from 'vitest';
 import { createBenchStore } from '../../../src/features/runs/bench-store';
-import { emptyEntry, keepEntry, keptEntry } from '../../../src/features/runs/kept-entry';
+import { benchKeeping, emptyEntry, type WaitingReading } from '../../../src/features/runs/kept-entry';
 
 const runId = '0197c3a0-0000-7000-8000-000000000231';
-const open = () => createBenchStore(keptEntry('ines', runId), 2, (entry) => keepEntry('ines', runId, entry));
+const open = () => createBenchStore(benchKeeping('ines', runId), 2);
+const reading = (key: string, settingIndex: number): WaitingReading => ({
+  key,
+  body: { outcome: 'done', settingIndex, dialledDeg: [83.5, 187], note: '' },
+  typedAt: `2026-01-05T09:0${settingIndex}:00.000Z`,
+});
 
 beforeEach(() => {
   localStorage.clear();
@@ -24,15 +29,7 @@ describe('what was confirmed and not yet recorded', () => {
 
   test('a reading stays in the queue, with its key, until the server has acknowledged it', () => {
     const store = open();
-    store.getState().record(
-      {
-        key: 'k1',
-        body: { outcome: 'done', settingIndex: 8, dialledDeg: [83.5, 187], note: '' },
-        typedAt: '2026-01-05T09:00:00Z',
-      },
-      9,
-      null,
-    );
+    store.getState().record(reading('k1', 8), 9, null);
     expect(
       open()
         .getState()
@@ -44,9 +41,32 @@ describe('what was confirmed and not yet recorded', () => {
     expect(open().getState().waiting).toEqual([]);
   });
 
+  test('two tabs of one person never write over each other’s readings', () => {
+    const [one, other] = [open(), open()];
+    one.getState().record(reading('k1', 1), 2, null);
+    other.getState().record(reading('k3', 3), 4, null);
+    one.getState().record(reading('k2', 2), 3, null);
+    const keys = () =>
+      open()
+        .getState()
+        .waiting.map(({ key }) => key);
+    expect(keys()).toEqual(['k1', 'k2', 'k3']);
+    one.getState().acknowledged('k1');
+    expect(keys()).toEqual(['k2', 'k3']);
+  });
+
+  test('nothing of a run is left once it is forgotten, and other runs keep theirs', () => {
+    open().getState().record(reading('k1', 1), 2, null);
+    const elsewhere = createBenchStore(benchKeeping('ines', 'another run'), 2);
+    elsewhere.getState().confirm(0, 4);
+    benchKeeping('ines', runId).forget();
+    expect(benchKeeping('ines', runId).entry()).toEqual(emptyEntry);
+    expect(benchKeeping('ines', 'another run').entry().confirmedDeg).toEqual([4, null]);
+  });
+
   test('belongs to the person: somebody else on the same tablet finds nothing', () => {
     open().getState().confirm(0, 83.5);
-    expect(keptEntry('jonas', runId)).toEqual(emptyEntry);
+    expect(benchKeeping('jonas', runId).entry()).toEqual(emptyEntry);
   });
 
   test('a broken entry is an empty one', () => {
@@ -67,7 +87,7 @@ describe('what was confirmed and not yet recorded', () => {
   });
 
   test('says so where the browser keeps nothing', () => {
-    const store = createBenchStore(emptyEntry, 2, () => false);
+    const store = createBenchStore({ ...benchKeeping('ines', runId), keepCursor: () => false }, 2);
     store.getState().confirm(0, 1);
     expect(store.getState().kept).toBe(false);
   });
