@@ -64,8 +64,8 @@ async function end(child: ChildProcess): Promise<void> {
 export async function startProduct(): Promise<Product> {
   const database = await createTestDatabase();
   const seed = run(['scripts/seed.ts'], { DATABASE_OWNER_URL: database.ownerUrl });
-  const [code] = await once(seed.child, 'exit');
-  if (code !== 0) throw new Error(`Seeding failed.\n${seed.output()}`);
+  await once(seed.child, 'exit');
+  if (seed.child.exitCode !== 0) throw new Error(`Seeding failed.\n${seed.output()}`);
 
   const [port, fakePort] = [await freePort(), await freePort()];
   const url = `http://localhost:${port}`;

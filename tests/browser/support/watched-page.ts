@@ -14,6 +14,8 @@ const flags = [
 /** three.js warns of its own coming change at every start, and software GL of being slow: neither is ours to mend. */
 const expectedNoise = [/THREE\.Clock: This module has been deprecated/u, /GL Driver Message/u];
 
+const stepLimitMs = 20_000;
+
 export function launchBrowser({ webgl }: { webgl: boolean }): Promise<Browser> {
   return chromium.launch({
     executablePath: '/usr/bin/chromium',
@@ -32,8 +34,14 @@ export async function openPage(
   browser: Browser,
   product: Product,
   viewport = { width: 1440, height: 900 },
+  colorScheme: 'light' | 'dark' = 'light',
 ): Promise<WatchedPage> {
-  const context = await browser.newContext({ viewport, baseURL: product.url, reducedMotion: 'reduce' });
+  const context = await browser.newContext({
+    viewport,
+    colorScheme,
+    baseURL: product.url,
+    reducedMotion: 'reduce',
+  });
   const faults: string[] = [];
   await context.exposeBinding('reportViolation', (_source, text: string) => {
     faults.push(`policy: ${text}`);
@@ -41,6 +49,7 @@ export async function openPage(
   await context.addInitScript(`document.addEventListener('securitypolicyviolation', (event) => {
     window.reportViolation(event.violatedDirective + ' ' + event.blockedURI + ' ' + event.sourceFile);
   });`);
+  context.setDefaultTimeout(stepLimitMs);
   const page = await context.newPage();
   page.on('console', (message) => {
     const text = message.text();

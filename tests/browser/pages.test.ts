@@ -1,0 +1,168 @@
+import { gzipSync } from 'node:zlib';
+import type { Browser, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { axeFindings } from './support/axe';
+import { type Product, startProduct } from './support/product';
+import { launchBrowser, openPage, signIn, type WatchedPage } from './support/watched-page';
+
+const firstRouteLimitBytes = 170_000;
+const sphereLimitBytes = 260_000;
+
+const sizes = {
+  desk: { width: 1440, height: 900 },
+  tablet: { width: 1180, height: 820 },
+  phone: { width: 390, height: 844 },
+} as const;
+
+let product: Product;
+let browser: Browser;
+let addresses: Record<string, string>;
+
+beforeAll(async () => {
+  product = await startProduct();
+  browser = await launchBrowser({ webgl: false });
+  addresses = await findAddresses();
+});
+afterAll(async () => {
+  await browser.close();
+  await product.stop();
+});
+
+/** The addresses of the pages of issue and picture, found as a person finds them. */
+async function findAddresses(): Promise<Record<string, string>> {
+  const { page, context } = await openPage(browser, product);
+  await signIn(page, 'Adaeze Holm');
+  const home = new URL(page.url()).pathname;
+  const hrefOf = async (name: RegExp) => {
+    const href = await page.getByRole('link', { name }).first().getAttribute('href');
+    if (href === null) throw new Error(`No link ${String(name)} on ${page.url()}`);
+    return href;
+  };
+  await page.goto(`${home}/plan`);
+  const designer = await hrefOf(/^Tetrahedron/u);
+  await page.goto(`${home}/review`);
+  const version = await hrefOf(/new zero/u);
+  await page.goto(`${home}/results`);
+  const record = await hrefOf(/record|See the run/iu);
+  await page.goto(`${home}/bench`);
+  const run = await hrefOf(/^Go on/u);
+  await context.close();
+  return {
+    home,
+    plan: `${home}/plan`,
+    'new protocol': `${home}/plan/new`,
+    designer,
+    'versions of a protocol': `${designer}/versions`,
+    version,
+    versions: `${home}/review`,
+    benches: `${home}/bench`,
+    'new bench': `${home}/bench/new`,
+    'run start': `${home}/bench/start`,
+    results: `${home}/results`,
+    record,
+    cabinet: `${home}/cabinet`,
+    lab: `${home}/lab`,
+    'quick angles': '/quick-angles',
+    numbers: '/how-numbers-are-made',
+    privacy: '/privacy',
+    parts: '/developer/parts',
+    run,
+  };
+}
+
+/** Waits until a page has said what it has to say: its head is there, and nothing is fetched any more. */
+async function settle(page: Page): Promise<void> {
+  await page.getByRole('heading', { level: 1 }).first().waitFor();
+  await page.waitForLoadState('networkidle');
+}
+
+async function findingsOn(watched: WatchedPage, names: readonly string[]): Promise<string[]> {
+  const findings: string[] = [];
+  for (const name of names) {
+    await watched.page.goto(addresses[name] ?? name);
+    await settle(watched.page);
+    findings.push(...(await axeFindings(watched.page)).map((finding) => `${name}: ${finding}`));
+    const overflow = await watched.page.evaluate(
+      'document.documentElement.scrollWidth - document.documentElement.clientWidth',
+    );
+    if (overflow !== 0) findings.push(`${name}: ${String(overflow)} px wider than the window`);
+  }
+  return [...findings, ...watched.faults()];
+}
+
+const pagesOfALab = [
+  'home',
+  'plan',
+  'new protocol',
+  'designer',
+  'versions of a protocol',
+  'version',
+  'versions',
+  'benches',
+  'new bench',
+  'run start',
+  'results',
+  'cabinet',
+  'lab',
+  'quick angles',
+  'numbers',
+  'privacy',
+  'parts',
+];
+
+describe.each([
+  ['day, at a desk', 'light', 'desk'],
+  ['day, on a tablet', 'light', 'tablet'],
+  ['day, on a phone', 'light', 'phone'],
+  ['evening, at a desk', 'dark', 'desk'],
+] as const)('every page, %s', (_name, colorScheme, size) => {
+  it('has nothing that axe finds or leaves undecided, and is no wider than its window', async () => {
+    const watched = await openPage(browser, product, sizes[size], colorScheme);
+    await signIn(watched.page, 'Adaeze Holm');
+    expect(await findingsOn(watched, pagesOfALab)).toEqual([]);
+    await watched.context.close();
+  });
+});
+
+describe.each([
+  ['a tablet lying down', { width: 1180, height: 820 }],
+  ['a tablet standing up', { width: 820, height: 1180 }],
+])('the bench in the dark room, on %s', (_name, viewport) => {
+  it('has nothing that axe finds or leaves undecided', async () => {
+    const watched = await openPage(browser, product, viewport);
+    await signIn(watched.page, 'Juno Petrak');
+    expect(await findingsOn(watched, ['run', 'record'])).toEqual([]);
+    await watched.context.close();
+  });
+});
+
+describe('the first page', () => {
+  it('fetches at most 170 kB of compressed script, nothing of the sphere, and nothing from elsewhere', async () => {
+    const { page, context, faults } = await openPage(browser, product);
+    const scripts = new Map<string, number>();
+    page.on('response', (response) => {
+      if (!response.url().endsWith('.js')) return;
+      void response.body().then((body) => scripts.set(response.url(), gzipSync(body).length));
+    });
+    await page.goto('/sign-in');
+    await settle(page);
+    const total = [...scripts.values()].reduce((sum, bytes) => sum + bytes, 0);
+    expect(scripts.size).toBeGreaterThan(0);
+    expect(total).toBeLessThanOrEqual(firstRouteLimitBytes);
+    expect([...scripts.keys()].filter((url) => url.includes('Sphere'))).toEqual([]);
+    expect(await axeFindings(page)).toEqual([]);
+    expect(faults()).toEqual([]);
+    await context.close();
+  });
+
+  it('leaves the sphere to the pages that show one, in a script of at most 260 kB compressed', async () => {
+    const withWebGl = await launchBrowser({ webgl: true });
+    const { page } = await openPage(withWebGl, product);
+    await signIn(page, 'Adaeze Holm');
+    const sphere = page.waitForResponse(/SphereThree.*\.js$/u);
+    await page.goto(addresses['designer'] ?? '');
+    const body = await (await sphere).body();
+    expect(gzipSync(body).length).toBeLessThanOrEqual(sphereLimitBytes);
+    await withWebGl.close();
+  });
+});
