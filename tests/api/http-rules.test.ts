@@ -70,6 +70,16 @@ test('every kind of answer carries the whole set of security headers, and a requ
   }
 });
 
+test('a body that is too large is refused with the limit that holds', async () => {
+  const body = (length: number) =>
+    call(harness, lead, 'post', '/labs', { body: { name: 'x'.repeat(length) } });
+  // 4 MB are let in, to be refused for their length only; the words name that limit.
+  expect((await body(4 * 1024 * 1024 - 100)).status).toBe(400);
+  const refused = await body(4 * 1024 * 1024 + 1);
+  expect(refused.status).toBe(413);
+  expect(refused.text).toContain('larger than 4 MB');
+});
+
 test('hashed files are kept for ever, pages are asked for anew, and a missing file is never a page', async () => {
   const browser = harness.browser();
   const asset = await browser.get('/assets/main-abc123.js').set('Accept-Encoding', 'gzip');

@@ -1,3 +1,4 @@
+import pg from 'pg';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import type { z } from 'zod';
 import {
@@ -163,6 +164,48 @@ test('a run is recorded setting by setting, paused, resumed and finished only wh
   expect(items.map(({ number }) => number)).toEqual([1]);
 });
 
+test('the record says which laser class was acknowledged, and with what words', async () => {
+  const client = new pg.Client({ connectionString: harness.testDatabase.adminUrl });
+  await client.connect();
+  const { rows } = await client.query<{ content: string }>(
+    `select content from audit_events where kind = 'run.started' and subject_id = $1`,
+    [lab.runId],
+  );
+  await client.end();
+  expect(JSON.parse(rows[0]?.content ?? '')).toMatchObject({
+    details: {
+      acknowledged: { laserClass: '3B', hazardWavelengthsNm: [405, 810], statement: 'caution-and-officer' },
+    },
+  });
+});
+
+test('no run starts at a bench that is retired, which is named', async () => {
+  const other = await makeLab(harness, lead, 'A lab that clears up');
+  const there = `/labs/${other.labId}`;
+  for (const settingIndex of [0, 1]) {
+    await answered(
+      call(harness, lead, 'post', `${there}/runs/${other.runId}/readings`, {
+        body: { outcome: 'skipped', settingIndex, note: 'no light' },
+      }),
+      runSchema,
+    );
+  }
+  await answered(call(harness, lead, 'post', `${there}/runs/${other.runId}/finish`), runSchema);
+  await answered(
+    call(harness, lead, 'post', `${there}/benches/${other.benchId}/retire`, { ifMatch: '"r1"' }),
+    benchSchema,
+  );
+  const body = { versionId: other.version.id, startDialsDeg: [null, null], cautionAcknowledged: true };
+  const refusal = await faultOf(call(harness, lead, 'post', `${there}/runs`, { body }));
+  expect(refusal.status).toBe(409);
+  expect(refusal.message).toMatch(/^signal arm is retired\./);
+  await answered(
+    call(harness, lead, 'post', `${there}/benches/${other.benchId}/return`, { ifMatch: '"r2"' }),
+    benchSchema,
+  );
+  await answered(call(harness, lead, 'post', `${there}/runs`, { body }), runSchema);
+});
+
 test('a run does not start without the caution acknowledged', async () => {
   const body = { versionId: lab.version.id, startDialsDeg: [null, null], cautionAcknowledged: false };
   const refusal = await faultOf(call(harness, operator, 'post', at('/runs'), { body }));
@@ -206,6 +249,38 @@ test('home shows each person what they could do something about, and to everyone
     expect(home.lastMade[0]).toMatchObject({ label: 't2', runNumber: 1, toleranceInfidelity: 1e-3 });
     expect(home.lastMade[0]?.dialledInfidelity).toBeGreaterThan(1e-3);
   }
+});
+
+test('home says of a run which setting is next and which was done last, whatever was skipped or done twice', async () => {
+  const { summary } = await answered(
+    call(harness, lead, 'post', at('/runs'), {
+      body: { versionId: lab.version.id, startDialsDeg: [null, null], cautionAcknowledged: true },
+    }),
+    runSchema,
+  );
+  const stands = async () => {
+    const { waiting } = await get('/home', homeSchema);
+    const item = waiting.find((one) => one.kind === 'run-stands' && one.run.id === summary.id);
+    return item?.kind === 'run-stands' ? [item.nextSetting, item.lastDoneSetting] : null;
+  };
+  const record = async (reading: unknown) => {
+    await answered(
+      call(harness, lead, 'post', at(`/runs/${summary.id}/readings`), { body: reading }),
+      runSchema,
+    );
+  };
+  const done = (settingIndex: number) => ({ outcome: 'done', settingIndex, dialledDeg: [1, 2], note: '' });
+  expect(await stands()).toEqual([1, null]);
+  await record(done(1));
+  expect(await stands()).toEqual([1, 2]);
+  await record({ outcome: 'skipped', settingIndex: 0, note: 'no light' });
+  expect(await stands()).toEqual([null, 2]);
+  await record({ outcome: 'skipped', settingIndex: 1, note: 'dials slipped' });
+  expect(await stands()).toEqual([null, null]);
+  await record(done(0));
+  expect(await stands()).toEqual([null, 1]);
+  await answered(call(harness, lead, 'post', at(`/runs/${summary.id}/finish`)), runSchema);
+  expect(await stands()).toBeNull();
 });
 
 test('a change of convention rewrites drafts and inputs so that the light stays, and leaves versions alone', async () => {
