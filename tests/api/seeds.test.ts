@@ -1,0 +1,46 @@
+import knex, { type Knex } from 'knex';
+import pg from 'pg';
+import { afterAll, beforeAll, expect, test } from 'vitest';
+import { verifyVersions } from '../../scripts/lib/version-chains';
+import { seed } from '../../seeds/01-demo-labs';
+import { createTestDatabase, type TestDatabase } from '../setup/database';
+
+let testDatabase: TestDatabase;
+let owner: Knex;
+let admin: pg.Client;
+beforeAll(async () => {
+  testDatabase = await createTestDatabase();
+  owner = knex({ client: 'pg', connection: testDatabase.ownerUrl, pool: { min: 0, max: 2 } });
+  admin = new pg.Client({ connectionString: testDatabase.adminUrl });
+  await admin.connect();
+  await seed(owner);
+}, 60_000);
+afterAll(async () => {
+  await admin.end();
+  await owner.destroy();
+  await testDatabase.drop();
+});
+
+test("the demo labs' record holds every reading and every change of a run, in the order of time", async () => {
+  const { rows: counts } = await admin.query<Record<string, string>>(
+    `select (select count(*) from readings) as readings,
+      (select count(*) from audit_events where kind = 'reading.recorded') as recorded,
+      (select count(*) from run_events) as changes,
+      (select count(*) from audit_events where kind like 'run.%') as told`,
+  );
+  const [count] = counts;
+  expect(Number(count?.['readings'])).toBeGreaterThan(20);
+  expect(count?.['recorded']).toBe(count?.['readings']);
+  expect(count?.['told']).toBe(count?.['changes']);
+  const { rows } = await admin.query<{ lab_id: string; at: Date }>(
+    'select lab_id, at from audit_events order by lab_id, sequence',
+  );
+  for (const [index, { lab_id, at }] of rows.entries()) {
+    const before = rows[index - 1];
+    if (before?.lab_id === lab_id) expect(at.getTime()).toBeGreaterThanOrEqual(before.at.getTime());
+  }
+});
+
+test("the demo labs' versions are chained as the server's are", async () => {
+  expect(await verifyVersions(owner)).toMatchObject({ ok: true, labs: 2 });
+});
