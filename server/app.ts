@@ -19,7 +19,7 @@ import { apiRouter } from './http/router';
 import { securityHeaders } from './http/security-headers';
 import { allRoutes } from './routes';
 
-export interface AppParts {
+interface AppParts {
   readonly config: Config;
   readonly database: Knex;
   readonly sidePool: pg.Pool;

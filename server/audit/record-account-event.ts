@@ -1,7 +1,7 @@
 import type { Knex } from 'knex';
 import { newId } from '../db/new-id';
 
-export interface AccountEvent {
+interface AccountEvent {
   readonly kind: 'signed-in' | 'sign-in-failed' | 'signed-out' | 'signed-out-everywhere' | 'refused';
   readonly userId: string | null;
   /** Words of ours, never of a provider or a client. */

@@ -10,7 +10,7 @@ export interface AuditEntry {
   readonly details?: Readonly<Record<string, unknown>>;
 }
 
-export interface AuditOrigin {
+interface AuditOrigin {
   readonly labId: string;
   readonly actor: { readonly id: string; readonly name: string };
   readonly at: Date;

@@ -4,7 +4,7 @@ import { sqlState } from './sql-state';
 import type { Transaction } from './database';
 
 /** Whose eyes a transaction sees with: row-level security reads these two. */
-export interface Viewer {
+interface Viewer {
   readonly userId: string | null;
   readonly labId: string | null;
 }

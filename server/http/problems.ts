@@ -41,7 +41,7 @@ function fromParser(type: string, status: number): ProblemError {
   return new ProblemError('bad-request', 400, 'The request could not be read.');
 }
 
-export function sendProblem(request: Request, response: Response, problem: ProblemError): void {
+function sendProblem(request: Request, response: Response, problem: ProblemError): void {
   const document: Problem = {
     type: problem.type,
     title: problem.title,

@@ -19,7 +19,7 @@ export function makeLogger(level: string): Logger {
 const express = z.object({ originalUrl: z.string() });
 
 /** The address as a log may hold it: no query, since one may hold a code, and no invitation's token. */
-export function maskedUrl(request: IncomingMessage): string {
+function maskedUrl(request: IncomingMessage): string {
   const parsed = express.safeParse(request);
   const url = (parsed.success ? parsed.data.originalUrl : request.url) ?? '';
   const path = url.split('?', 1)[0] ?? '';

@@ -79,7 +79,7 @@ export interface SignedInDefinition<
   readonly afterwards?: (request: Request, response: Response) => Promise<void>;
 }
 
-export interface MemberContext<
+interface MemberContext<
   P extends z.ZodType,
   Q extends z.ZodType,
   B extends z.ZodType,

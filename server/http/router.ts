@@ -4,7 +4,7 @@ import type { Logger } from 'pino';
 import { ProblemError } from '../errors';
 import type { Route } from './route';
 
-export interface RouterParts {
+interface RouterParts {
   readonly database: Knex;
   readonly logger: Logger;
 }

@@ -9,7 +9,7 @@ export type RunEvent =
   /** `open`: settings that are neither done nor skipped. */
   | { readonly kind: 'finish'; readonly open: number };
 
-export type Transition =
+type Transition =
   { readonly ok: true; readonly state: RunState } | { readonly ok: false; readonly reason: string };
 
 const to = (state: RunState): Transition => ({ ok: true, state });

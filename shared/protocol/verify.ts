@@ -2,14 +2,14 @@ import { z } from 'zod';
 import { contentHash } from './canonical-json';
 
 /** One link as it is stored: the text, and the two hashes that are kept beside it. */
-export interface ChainLink {
+interface ChainLink {
   readonly number: number;
   readonly canonicalJson: string;
   readonly contentHash: string;
   readonly parentHash: string | null;
 }
 
-export type ChainVerdict =
+type ChainVerdict =
   | { readonly ok: true; readonly length: number }
   | { readonly ok: false; readonly number: number; readonly reason: string };
 

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { idSchema, lineSchema, noteSchema, numberSchema, timestampSchema } from './common';
 
-export const plateKinds = ['half', 'quarter', 'other'] as const;
+const plateKinds = ['half', 'quarter', 'other'] as const;
 export const plateKindSchema = z.enum(plateKinds);
 export type PlateKind = z.infer<typeof plateKindSchema>;
 

@@ -54,7 +54,7 @@ export const waitingItemSchema = z.discriminatedUnion('kind', [
 export type WaitingItem = z.infer<typeof waitingItemSchema>;
 
 /** The worst target of a protocol's last run, from what its dials really said. */
-export const lastMadeSchema = z.strictObject({
+const lastMadeSchema = z.strictObject({
   protocolId: idSchema,
   protocolName: z.string(),
   versionNumber: z.int(),

@@ -8,7 +8,7 @@ export const conventionSchema = z.strictObject({
   s3Sign: z.enum(['R', 'L']),
 });
 
-export const roleSchema = z.enum(roles);
+const roleSchema = z.enum(roles);
 
 export const labSchema = z.strictObject({
   id: idSchema,

@@ -4,7 +4,7 @@ import { idSchema, lineSchema, noteSchema, numberSchema, timestampSchema } from 
 export const maxTargets = 200;
 
 /** A row of the targets' table. `id` is made by the client and holds through edits and reorderings. */
-export const draftTargetSchema = z.strictObject({
+const draftTargetSchema = z.strictObject({
   id: idSchema,
   /** May be empty, and an expression may not parse: a draft keeps what was typed. */
   label: z.string().max(24, 'A label has at most 24 characters.'),
@@ -46,7 +46,7 @@ export const versionSummarySchema = z.strictObject({
 });
 export type VersionSummary = z.infer<typeof versionSummarySchema>;
 
-export const protocolSummarySchema = z.strictObject({
+const protocolSummarySchema = z.strictObject({
   id: idSchema,
   name: z.string(),
   purpose: z.string(),
@@ -71,7 +71,7 @@ export const createProtocolSchema = draftContentSchema;
 export const saveDraftSchema = draftContentSchema;
 
 /** What the page showed for one target when the person saved; the server solves again and refuses what differs. */
-export const shownSolutionSchema = z.strictObject({
+const shownSolutionSchema = z.strictObject({
   targetId: idSchema,
   fastAxesDeg: z.array(z.number()).max(6),
   dialsDeg: z.array(z.number()).max(6),

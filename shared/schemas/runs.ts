@@ -4,7 +4,7 @@ import { idSchema, lineSchema, noteSchema, pageSchema, timestampSchema } from '.
 export const runStates = ['running', 'paused', 'finished'] as const;
 
 /** One thing that was done at one setting. Never changed: a later one for the same setting takes its place. */
-export const readingSchema = z.strictObject({
+const readingSchema = z.strictObject({
   id: idSchema,
   /** Order of recording within the run, from 1. */
   sequence: z.int(),

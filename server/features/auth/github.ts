@@ -27,7 +27,7 @@ const exchangeMs = 10_000;
 const maxAnswerBytes = 256 * 1024;
 
 /** The provider did not answer as it documents: late, not JSON, a redirect, an error. Its words are never shown. */
-export class ProviderError extends Error {
+class ProviderError extends Error {
   override readonly name = 'ProviderError';
 }
 

@@ -9,7 +9,7 @@ const provider = 'github';
 const personRow = z.object({ id: z.string(), session_epoch: z.number(), disabled_at: z.date().nullable() });
 const nobody = { userId: null, labId: null };
 
-export interface KnownPerson {
+interface KnownPerson {
   readonly userId: string;
   readonly epoch: number;
   readonly disabled: boolean;

@@ -12,7 +12,7 @@ import { returnTo } from './return-to';
 import { regenerateSession, saveSession } from './session';
 
 /** What the sign-in page can be told; never a provider's own words. */
-export type SignInProblem = 'declined' | 'stale' | 'provider' | 'too-many' | 'disabled' | 'failed';
+type SignInProblem = 'declined' | 'stale' | 'provider' | 'too-many' | 'disabled' | 'failed';
 
 const personSchema = z.object({
   subject: z.string(),

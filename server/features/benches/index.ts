@@ -1,2 +1,2 @@
-export { asBench, findBench, insertBench, listBenches, type StoredBench } from './bench-store';
+export { findBench, insertBench, listBenches, type StoredBench } from './bench-store';
 export { benchRoutes } from './routes';

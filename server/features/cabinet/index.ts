@@ -1,9 +1,2 @@
-export {
-  findPlate,
-  insertCalibration,
-  insertPlate,
-  listPlates,
-  asPlate,
-  type StoredPlate,
-} from './plate-store';
+export { findPlate, insertCalibration, insertPlate, listPlates, asPlate } from './plate-store';
 export { plateRoutes } from './routes';

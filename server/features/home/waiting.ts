@@ -10,7 +10,7 @@ const warnedDays = 7;
 /** A retardance measured this far from the bench's light is another retardance. */
 const sameWavelengthNm = 0.5;
 
-export interface HomeFacts {
+interface HomeFacts {
   readonly lab: Lab;
   readonly member: Member;
   /** In use. */

@@ -12,7 +12,7 @@ const memberRow = z.object({
   joined_at: z.date(),
 });
 
-export type StoredMember = LabMember & Thing;
+type StoredMember = LabMember & Thing;
 
 function mapRow(row: unknown): StoredMember {
   const { lab_id, user_id, name, login, role, joined_at } = memberRow.parse(row);

@@ -29,7 +29,7 @@ const summaryRow = z.object({
   saved_by_name: z.string(),
 });
 
-export type StoredProtocol = Protocol & Thing;
+type StoredProtocol = Protocol & Thing;
 
 export function asProtocol({ id, draft, latestVersion }: StoredProtocol): Protocol {
   return { id, draft, latestVersion };

@@ -1,3 +1,3 @@
 export { findProtocol, insertProtocol, updateDraft } from './draft-store';
 export { protocolRoutes } from './routes';
-export { findVersion, findVersionById, insertVersion, type StoredVersion } from './version-store';
+export { findVersion, findVersionById, insertVersion } from './version-store';

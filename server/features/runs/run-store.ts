@@ -119,11 +119,7 @@ export async function findRunToChange(
   return findRun(transaction, key);
 }
 
-export async function listReadings(
-  transaction: Transaction,
-  labId: string,
-  runId: string,
-): Promise<Reading[]> {
+async function listReadings(transaction: Transaction, labId: string, runId: string): Promise<Reading[]> {
   const rows: unknown[] = await transaction('readings')
     .join('users', 'users.id', 'readings.recorded_by')
     .where({ 'readings.lab_id': labId, 'readings.run_id': runId })

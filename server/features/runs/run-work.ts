@@ -8,7 +8,7 @@ import { conflict, refused } from '../../errors';
 import type { RunRow } from './run-store';
 
 /** Who does it and when; the seeds say another time than now. */
-export interface Doing {
+interface Doing {
   readonly labId: string;
   readonly userId: string;
   readonly at: Date;
