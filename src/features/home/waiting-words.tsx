@@ -3,7 +3,7 @@ import type { Action } from '../../../shared/permissions';
 import type { WaitingItem } from '../../../shared/schemas/home';
 import { Quantity } from '../../components/NumberText';
 import { Scientific } from '../../components/Scientific';
-import { daysBetween, formatDate, formatMoment } from '../../lib/format';
+import { daysBetween, formatDate, formatDays, formatMoment, formatWeekday } from '../../lib/format';
 import { type CalibrationAge, calibrationAge } from '../cabinet';
 import { runHref } from '../results';
 
@@ -22,12 +22,6 @@ export interface WaitingContext {
   readonly may: (action: Action) => boolean;
 }
 
-const weekdays = ['Sunday', 'Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday', 'Saturday'] as const;
-
-function days(count: number): string {
-  return count === 1 ? '1 day' : `${count} days`;
-}
-
 /** "signal arm", "signal arm and diode table". */
 function listed(names: readonly string[]): string {
   const last = names.at(-1) ?? '';
@@ -36,10 +30,10 @@ function listed(names: readonly string[]): string {
 
 /** Counted as under the cabinet's rings, so that both name the same day. */
 function dueTitle(plateName: string, { daysLeft, dueAt }: CalibrationAge): string {
-  if (daysLeft < 0) return `${plateName} is ${days(-daysLeft)} past its calibration`;
+  if (daysLeft < 0) return `${plateName} is ${formatDays(-daysLeft)} past its calibration`;
   if (daysLeft === 0) return `${plateName} is due for calibration today`;
-  if (daysLeft >= 7) return `${plateName} is due for calibration in ${days(daysLeft)}`;
-  return `${plateName} is due for calibration on ${weekdays[dueAt.getDay()] ?? ''}`;
+  if (daysLeft >= 7) return `${plateName} is due for calibration in ${formatDays(daysLeft)}`;
+  return `${plateName} is due for calibration on ${formatWeekday(dueAt)}`;
 }
 
 function measuredWhen(measuredAt: string, now: Date): string {
@@ -52,24 +46,26 @@ export function waitingWords(item: WaitingItem, { labId, now, dueDays, may }: Wa
   const base = `/labs/${labId}`;
   switch (item.kind) {
     case 'run-stands': {
-      const { run } = item;
-      const gone = run.doneCount + run.skippedCount;
+      const { run, nextSetting, lastDoneSetting } = item;
       const when = formatMoment(new Date(run.startedAt), now);
       return {
         title: (
           <>
-            Run {run.number} stands {run.state === 'paused' ? 'paused' : 'open'} at setting{' '}
-            {Math.min(gone + 1, run.settingCount)} of {run.settingCount} on the <b>{run.benchName}</b>
+            Run {run.number} stands {run.state === 'paused' ? 'paused' : 'open'}{' '}
+            {nextSetting === null
+              ? 'after its last setting'
+              : `at setting ${nextSetting} of ${run.settingCount}`}{' '}
+            on the <b>{run.benchName}</b>
           </>
         ),
         reason: (
           <>
             {run.protocolName} {run.versionNumber}, started by {run.startedBy} {when}
             {run.pauseNote === '' ? '.' : `: “${run.pauseNote}”.`}
-            {gone > 0 && (
+            {lastDoneSetting !== null && (
               <>
                 <br />
-                The dials stand where setting {gone} left them.
+                The dials stand where setting {lastDoneSetting} left them.
               </>
             )}
           </>

@@ -26,9 +26,19 @@ export function formatShortDate(date: Date): string {
   return `${date.getDate()} ${(months[date.getMonth()] ?? '').slice(0, 3)}`;
 }
 
+/** `Tuesday`, in the reader's own time zone. */
+export function formatWeekday(date: Date): string {
+  return weekdays[date.getDay()] ?? '';
+}
+
+/** `1 day`, `12 days`. */
+export function formatDays(count: number): string {
+  return count === 1 ? '1 day' : `${count} days`;
+}
+
 /** `Tuesday 16 June 2026`. */
 export function formatLongDate(date: Date): string {
-  return `${weekdays[date.getDay()] ?? ''} ${formatDate(date)}`;
+  return `${formatWeekday(date)} ${formatDate(date)}`;
 }
 
 /** `17:20`. */

@@ -2,11 +2,13 @@ export { formatAngle, formatChange, formatDial, formatTheta } from './angle';
 export {
   daysBetween,
   formatDate,
+  formatDays,
   formatLongDate,
   formatMoment,
   formatShortDate,
   formatTime,
   formatTimeExact,
+  formatWeekday,
 } from './date';
 export { formatFidelity, formatInfidelity, infidelityAscii } from './fidelity';
 export { parseTypedNumber, type TypedNumber } from './parse-number';

@@ -45,6 +45,7 @@ const run = {
   startedBy: 'Juno Petrak',
   finishedAt: null,
 };
+const standing = { nextSetting: 9, lastDoneSetting: 8 };
 const due = {
   kind: 'calibration-due',
   plateId: '0190a000-0000-7000-8000-000000000001',
@@ -68,7 +69,7 @@ describe('the title of home', () => {
 
 describe('what waits, in sentences', () => {
   it('says at which setting a run stands, why, and where the dials are', () => {
-    const { title, reason, way } = words({ kind: 'run-stands', run });
+    const { title, reason, way } = words({ kind: 'run-stands', run, ...standing });
     expect(title).toBe('Run 231 stands paused at setting 9 of 24 on the signal arm');
     expect(reason).toBe(
       'Six states 8, started by Juno Petrak yesterday 18:04: “cryostat refill, back at nine”.The dials stand where setting 8 left them.',
@@ -76,8 +77,22 @@ describe('what waits, in sentences', () => {
     expect(way).toEqual({ label: 'Open the run', to: `/labs/${labId}/bench/runs/${run.id}` });
   });
 
+  it('goes by what is open and what was done last, not by how many are gone', () => {
+    const skipped = words({ kind: 'run-stands', run, nextSetting: 4, lastDoneSetting: 11 });
+    expect(skipped.title).toBe('Run 231 stands paused at setting 4 of 24 on the signal arm');
+    expect(skipped.reason).toContain('The dials stand where setting 11 left them.');
+    const passed = words({
+      kind: 'run-stands',
+      run: { ...run, state: 'running' },
+      nextSetting: null,
+      lastDoneSetting: null,
+    });
+    expect(passed.title).toBe('Run 231 stands open after its last setting on the signal arm');
+    expect(passed.reason).not.toContain('The dials stand');
+  });
+
   it('leads a guest to the record of a run, never to the bench', () => {
-    expect(words({ kind: 'run-stands', run }, 'guest').way).toEqual({
+    expect(words({ kind: 'run-stands', run, ...standing }, 'guest').way).toEqual({
       label: 'See the run',
       to: `/labs/${labId}/bench/runs/${run.id}/record`,
     });
