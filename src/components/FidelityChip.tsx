@@ -5,7 +5,7 @@ import { fidelityVerdict, type InfidelityInterval, type Verdict } from './fideli
 export interface FidelityChipProps {
   readonly infidelity: InfidelityInterval;
   readonly tolerance: number;
-  /** Measured points carry the verdict in their shape; a predicted one is a bar with a dot. */
+  /** Both carry the verdict in the point's shape; the bar is the 95 % interval of a measured one, 5 % to 95 % of a predicted one. */
   readonly kind: 'measured' | 'predicted';
   /** The same before a change: thin, above. */
   readonly before?: InfidelityInterval | undefined;
@@ -91,7 +91,7 @@ export function FidelityChip({
         at={x(infidelity.value)}
         to={x(infidelity.low)}
         y={y}
-        verdict={kind === 'predicted' && verdict === 'not decided' ? 'within' : verdict}
+        verdict={verdict}
       />
     </svg>
   );

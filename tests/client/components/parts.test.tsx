@@ -10,7 +10,7 @@ import { BeamWorking } from '../../../src/components/BeamState';
 import { Button } from '../../../src/components/Button';
 import { DataCell, DataRow, DataTable } from '../../../src/components/DataTable';
 import { Dialog } from '../../../src/components/Dialog';
-import { fidelityWords } from '../../../src/components/FidelityChip';
+import { FidelityChip, fidelityWords } from '../../../src/components/FidelityChip';
 import { fidelityVerdict } from '../../../src/components/fidelity-verdict';
 import { NumberField } from '../../../src/components/NumberField';
 import { savingWords } from '../../../src/components/SaveState';
@@ -269,6 +269,20 @@ describe('verdicts and words', () => {
     expect(fidelityWords({ value: 11e-4, low: 9e-4, high: 14e-4 }, 5e-4, 'measured')).toBe(
       '1 − F 1.1e−3, 95 % interval 9.0e−4 to 1.4e−3, tolerance 5.0e−4: not within',
     );
+  });
+
+  it.each(['measured', 'predicted'] as const)('draws the verdict of a %s one in its point', (kind) => {
+    const point = (low: number, high: number) => {
+      const { container, unmount } = render(
+        <FidelityChip kind={kind} tolerance={5e-4} infidelity={{ value: (low + high) / 2, low, high }} />,
+      );
+      const dot = container.querySelector('circle')?.getAttribute('class') ?? 'a cross';
+      unmount();
+      return dot;
+    };
+    expect(point(1e-4, 2e-4)).toContain('fill-ink');
+    expect(point(4e-4, 6e-4)).toContain('fill-paper');
+    expect(point(9e-4, 14e-4)).toBe('a cross');
   });
 
   it('counts an age by its quarter, and says when nothing is known', () => {
