@@ -7,9 +7,9 @@ import { basisStates, type SphereInput, spherePath } from './scene';
 import { angleBetweenDeg } from './vec';
 
 /** A state nearer than this, in degrees of the sphere, is called by the basis state's letter. */
-const NAMED_WITHIN_DEG = 0.1;
+export const NAMED_WITHIN_DEG = 0.1;
 /** An ellipse flatter than this is said to be linear. */
-const LINEAR_WITHIN_DEG = 0.05;
+export const LINEAR_WITHIN_DEG = 0.05;
 
 export type TurnSense = 'counter-clockwise' | 'clockwise' | 'not at all';
 
@@ -37,7 +37,7 @@ export interface StateWords {
   readonly shown: readonly [number, number, number];
 }
 
-/** A state in words: `H`, `linear at −37.8°`, `ellipse at −62.6°, ellipticity 27.4°, counter-clockwise (L)`. */
+/** A state in words: `H`, `linear at −37.8°`, `ellipse at −62.6°, ellipticity 27.4°, counter-clockwise to the receiver (L)`. */
 export function stateInWords(state: Stokes, convention: Convention): string {
   const named = basisStates(convention).find(
     (basis) => angleBetweenDeg(basis.state, state) < NAMED_WITHIN_DEG,
@@ -47,7 +47,7 @@ export function stateInWords(state: Stokes, convention: Convention): string {
   const azimuth = formatAngle(toDegrees(azimuthRad));
   const ellipticityDeg = toDegrees(ellipticityRad);
   if (Math.abs(ellipticityDeg) < LINEAR_WITHIN_DEG) return `linear at ${azimuth}`;
-  const hand = ellipticityDeg > 0 ? 'counter-clockwise' : 'clockwise';
+  const hand = `${ellipticityDeg > 0 ? 'counter-clockwise' : 'clockwise'} to the receiver`;
   const letter = letterOf(state, convention);
   const withLetter = letter === null ? hand : `${hand} (${letter})`;
   return `ellipse at ${azimuth}, ellipticity ${formatAngle(Math.abs(ellipticityDeg))}, ${withLetter}`;

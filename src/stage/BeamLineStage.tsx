@@ -49,7 +49,13 @@ export function BeamLineStage({ stage, onDial, onBackToSolution, viewedFrom = 'r
         >
           <li className="stage-beam" aria-hidden="true" style={{ top: sizes.zoneHeight / 2 - 1.3 }} />
           <Source wavelengthNm={stage.wavelengthNm} zoneHeight={sizes.zoneHeight} />
-          <StagePolariser {...stage.polariser} sizes={sizes} viewedFrom={viewedFrom} />
+          <StagePolariser
+            {...stage.polariser}
+            input={stage.before[0]}
+            convention={stage.convention}
+            sizes={sizes}
+            viewedFrom={viewedFrom}
+          />
           {stage.plates.map((plate, index) => {
             const state = stage.before[index];
             return (

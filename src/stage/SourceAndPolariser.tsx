@@ -1,6 +1,10 @@
+import type { Convention } from '../../shared/optics/convention';
+import type { Stokes } from '../../shared/optics/stokes';
+import { EllipseGlyph } from '../components/EllipseGlyph';
 import { Quantity } from '../components/NumberText';
 import { Polariser } from '../components/Polariser';
 import { formatAngle, formatUncertain } from '../lib/format';
+import { glyphOf } from './glyph';
 import type { StageSizes } from './stage-layout';
 
 export function Source({
@@ -37,14 +41,46 @@ export function axisName(axisDeg: number): string {
   return near === undefined ? formatAngle(axisDeg) : near[1];
 }
 
+/** A polariser makes linear light; an input with more ellipticity than this is made by something else. */
+const LINEAR_INPUT_WITHIN_DEG = 0.01;
+
 interface PolariserProps {
   readonly axisDeg: number;
   readonly axisSigmaDeg: number | null;
+  /** The light that goes into the first plate, canonical; undefined where nobody says. */
+  readonly input: Stokes | undefined;
+  readonly convention: Convention;
   readonly sizes: StageSizes;
   readonly viewedFrom: 'receiver' | 'source';
 }
 
-export function StagePolariser({ axisDeg, axisSigmaDeg, sizes, viewedFrom }: PolariserProps) {
+/** What the plates are fed with: a polariser at its axis, or the ellipse of an input that no polariser alone makes. */
+export function StagePolariser(props: PolariserProps) {
+  const { axisDeg, axisSigmaDeg, input, convention, sizes, viewedFrom } = props;
+  const glyph = input === undefined ? null : glyphOf(input, convention);
+  if (glyph !== null && Math.abs(glyph.chiDeg) > LINEAR_INPUT_WITHIN_DEG) {
+    return (
+      <li className="stage-item">
+        <span className="stage-zone" style={{ height: sizes.zoneHeight }}>
+          <EllipseGlyph
+            radius={sizes.polariserRadius / 1.3}
+            psiDeg={glyph.psiDeg}
+            chiDeg={glyph.chiDeg}
+            sense={glyph.sense}
+            viewedFrom={viewedFrom}
+            framed
+          />
+        </span>
+        <strong className="stage-name">input</strong>
+        <span className="stage-second font-mono">
+          <span className="stage-symbol">ψ</span> {formatAngle(glyph.psiDeg)}
+        </span>{' '}
+        <span className="stage-second font-mono">
+          <span className="stage-symbol">χ</span> {formatAngle(glyph.shownChiDeg)}
+        </span>
+      </li>
+    );
+  }
   return (
     <li className="stage-item">
       <span className="stage-zone" style={{ height: sizes.zoneHeight }}>

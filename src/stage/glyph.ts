@@ -3,12 +3,9 @@ import { ellipseOf } from '../../shared/optics/ellipse';
 import type { Stokes } from '../../shared/optics/stokes';
 import { toDegrees } from '../../shared/optics/units';
 import { formatAngle } from '../lib/format';
+import { LINEAR_WITHIN_DEG, NAMED_WITHIN_DEG } from '../sphere/path-words';
 import { basisStates } from '../sphere/scene';
 import { angleBetweenDeg } from '../sphere/vec';
-
-const NAMED_WITHIN_DEG = 0.1;
-/** Flatter than this the light is called linear and has no hand. */
-const LINEAR_WITHIN_DEG = 0.05;
 
 export interface StateGlyph {
   readonly psiDeg: number;

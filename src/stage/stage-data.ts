@@ -20,6 +20,7 @@ export interface StagePlate {
 /** A bench with one row's angles on it, in beam order. States are canonical. */
 export interface StageData {
   readonly wavelengthNm: number;
+  /** Drawn as long as the light before the first plate is linear; otherwise that light's ellipse stands there. */
   readonly polariser: { readonly axisDeg: number; readonly axisSigmaDeg: number | null };
   readonly plates: readonly StagePlate[];
   /** The light before each plate: as many as there are plates. */

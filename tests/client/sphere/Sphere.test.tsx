@@ -64,7 +64,7 @@ describe('the sphere without WebGL', () => {
     expect(screen.getByRole('img').getAttribute('aria-label')).toBe(
       'Path on the sphere. The light starts at H; H-3 turns it by 179.2° counter-clockwise about 71.1°; ' +
         'Q-B turns it by 86.9° counter-clockwise about 114.7°. It ends at ellipse at −62.6°, ellipticity 27.4°, ' +
-        'counter-clockwise (L), 0.04° from t2 on the sphere.',
+        'counter-clockwise to the receiver (L), 0.04° from t2 on the sphere.',
     );
   });
 

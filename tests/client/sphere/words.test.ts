@@ -58,7 +58,7 @@ describe('the path in words', () => {
     expect(stateInWords([0, 0, 1], { ...CONVENTION, handedness: 'source' })).toBe('R');
     expect(stateInWords([Math.cos(1), Math.sin(1), 0], CONVENTION)).toBe('linear at 28.6°');
     const lower = stateInWords([0.6, 0, -0.8], CONVENTION);
-    expect(lower).toBe('ellipse at 0.0°, ellipticity 26.6°, clockwise (R)');
+    expect(lower).toBe('ellipse at 0.0°, ellipticity 26.6°, clockwise to the receiver (R)');
   });
 
   it('says how far the end is from the target', () => {

@@ -78,6 +78,13 @@ describe('the beam-line stage', () => {
     expect(texts().at(-1)).toContain('χ −27.37°');
   });
 
+  it('draws an elliptical input as an ellipse, since no polariser alone makes it', () => {
+    render(<BeamLineStage stage={{ ...STAGE, before: [[0.6, 0, 0.8], ...STAGE.before.slice(1)] }} />);
+    // S3 = sin 2χ = 0.8.
+    expect(texts()[1]).toBe('inputψ 0.0° χ 26.6°');
+    expect(screen.queryByText(/polariser/)).toBeNull();
+  });
+
   it('only shows where nobody may turn', () => {
     render(<BeamLineStage stage={STAGE} />);
     expect(screen.queryByRole('slider')).toBeNull();
