@@ -58,9 +58,10 @@ export function Component() {
         <p>
           Fidelity near 1 is written as what is missing, <Formula latex="1-F" />, a quarter of the squared
           distance between two pure states on the sphere. What is expected of a setting adds, to first order,
-          the uncertainty of every zero, every retardance, the mounts’ repeatability and the input polariser’s
-          angle. The interval beside it runs from its 5 % to its 95 % point. The bracket on a fidelity axis is
-          the protocol’s tolerance, and right of it is within.
+          the uncertainty of every zero, every retardance, the mounts’ repeatability, the finest step of each
+          dial (a setting lies evenly anywhere within one step, a variance of step²/12) and the input
+          polariser’s angle. The interval beside it runs from its 5 % to its 95 % point. The bracket on a
+          fidelity axis is the protocol’s tolerance, and right of it is within.
         </p>
       </Passage>
 

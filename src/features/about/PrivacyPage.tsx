@@ -17,14 +17,17 @@ export function Component() {
 
       <Passage title="What is kept">
         <p>
-          Your name, login name and address; which labs you belong to and as what; and what you made in them:
-          plates, calibrations, protocols, versions, runs. Versions, calibrations and readings name the person
-          who made them and are not changed afterwards, since a lab has to be able to say which angles a data
-          set was taken with.
+          Your name, login name, account number and address; which labs you belong to and as what; and what
+          you made in them: plates, calibrations, protocols, versions, runs. Versions, calibrations and
+          readings name the person who made them and are not changed afterwards, since a lab has to be able to
+          say which angles a data set was taken with.
         </p>
         <p>
-          Each change is also written to a log of the lab. The server’s own log holds the time, the address
-          asked for and a request number; it holds no password, token or cookie.
+          Each sign-in and sign-out, each sign-in that failed and each request that was refused for want of a
+          right is written down with its time, its kind, a request number and, where it is known, the account.
+          This is kept for good, so that a lab can find out who came in. Each change is also written to a log
+          of the lab, which is kept for good as well. The server’s own log holds the time, the address asked
+          for and a request number; it holds no password, token or cookie.
         </p>
       </Passage>
 
@@ -39,6 +42,15 @@ export function Component() {
         <p>
           One cookie, from this server, keeps you signed in. There is no counting of visitors, and no page
           asks another server for anything: fonts and scripts come from here.
+        </p>
+      </Passage>
+
+      <Passage title="What stays in this browser">
+        <p>
+          How pages look on this device, and whether single-letter keys are on. What you typed in a draft
+          until the server has saved it, and at the bench where you are in a run, what you confirmed and the
+          readings that have not arrived, until that run is finished and opened again here. These are kept
+          under your account, stay when you sign out, and go when you clear this site’s data in the browser.
         </p>
       </Passage>
 

@@ -31,8 +31,8 @@ export function Component() {
           Sign in with GitHub
         </a>
         <p className="text-s text-ink-2 mt-4 max-w-[25.5rem]">
-          Quarterturn reads your GitHub name and e-mail address and nothing else. A lab opens to you when its
-          lead has invited you.
+          Quarterturn reads your GitHub name, login, account number and e-mail address, and nothing else. Make
+          a lab of your own, or accept a lead’s invitation.
         </p>
         <p className="mt-7 text-[1rem]">
           <TextLink to="/quick-angles">Angles for one state, without signing in</TextLink>
