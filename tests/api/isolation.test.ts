@@ -156,8 +156,8 @@ test('a version whose text and hash differ, or that follows no version, cannot e
       rowsOf(
         client,
         `insert into versions (id, lab_id, protocol_id, bench_id, number, parent_hash, content_hash, content,
-            draft_revision, protocol_name, message, target_count, tolerance_infidelity, saved_at, saved_by)
-          select gen_random_uuid(), lab_id, protocol_id, bench_id, ${change}, draft_revision, protocol_name, message,
+            draft_revision, protocol_name, bench_name, message, target_count, tolerance_infidelity, saved_at, saved_by)
+          select gen_random_uuid(), lab_id, protocol_id, bench_id, ${change}, draft_revision, protocol_name, bench_name, message,
             target_count, tolerance_infidelity, saved_at, saved_by from versions limit 1`,
       ),
     );
