@@ -1,7 +1,7 @@
 import { classNames } from './class-names';
 import { arc, polar, polarText, radial } from './polar';
 
-export interface AgeRingProps {
+interface AgeRingProps {
   /** Of the ring in px: 33 in the tray, 11 as a sign. */
   readonly radius?: number;
   /** The fast axis at its table angle, as the mount stands; null when the plate isn't seated. */

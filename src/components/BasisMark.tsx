@@ -18,7 +18,7 @@ const paints = {
 } as const;
 
 /** The mark's outline around 0, 0, for use inside another drawing. */
-export function BasisShape({ letter, size = 13 }: { readonly letter: BasisLetter; readonly size?: number }) {
+function BasisShape({ letter, size = 13 }: { readonly letter: BasisLetter; readonly size?: number }) {
   const { shape, filled } = shapes[letter];
   const { fill, stroke } = paints[shape];
   const half = filled ? size / 2 : size / 2 - 1;
@@ -34,7 +34,7 @@ export function BasisShape({ letter, size = 13 }: { readonly letter: BasisLetter
   return <path d={d} className={look} strokeWidth={width} />;
 }
 
-export interface BasisMarkProps {
+interface BasisMarkProps {
   readonly letter: BasisLetter;
   readonly size?: number;
   /** The letter in ink beside it stands in the text already. */

@@ -1,4 +1,4 @@
-export type BeamLineState =
+type BeamLineState =
   | { readonly kind: 'empty' }
   | { readonly kind: 'working'; readonly share: number | null }
   | { readonly kind: 'wrong'; readonly share?: number | undefined }

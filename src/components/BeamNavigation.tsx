@@ -9,7 +9,7 @@ import type { NavPerson, PersonActions } from './PersonPanel';
 import { SideArm } from './SideArm';
 import { BeamPiece, StationLink } from './StationLink';
 
-export interface BeamNavigationProps {
+interface BeamNavigationProps {
   /** What is lit. `home` lights the mark's origin; null lights nothing, for pages that are no station. */
   readonly current: StationKey | 'home' | null;
   readonly homeHref: string;
@@ -143,7 +143,7 @@ function HomeLink({ href, lit, beamLit, labName }: HomeLinkProps) {
 }
 
 /** The cube that sends the side arm off. */
-export function Splitter({ lit }: { readonly lit: boolean }): ReactNode {
+function Splitter({ lit }: { readonly lit: boolean }): ReactNode {
   return (
     <svg
       aria-hidden="true"

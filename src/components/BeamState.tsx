@@ -46,7 +46,7 @@ export function BeamCutOff({ title, children, className }: Words) {
   );
 }
 
-export interface BeamWorkingProps extends Omit<Words, 'title'> {
+interface BeamWorkingProps extends Omit<Words, 'title'> {
   /** What is being done: "Solving". */
   readonly doing: string;
   /** What is counted: "row". Without done and total only the work itself is named. */

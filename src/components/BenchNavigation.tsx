@@ -4,7 +4,7 @@ import { beamStations, type StationTargets } from './beam-stations';
 import { MarkLines } from './Mark';
 import { BeamPiece, StationLink } from './StationLink';
 
-export interface BenchNavigationProps {
+interface BenchNavigationProps {
   readonly homeHref: string;
   readonly targets: StationTargets;
   /** At the right end: when it was last saved, the lamp. */

@@ -2,7 +2,7 @@ import type { ComponentPropsWithRef, ReactNode } from 'react';
 import { Link, type LinkProps } from 'react-router-dom';
 import { classNames } from './class-names';
 
-export type ButtonKind = 'filled' | 'outlined' | 'danger' | 'quiet';
+type ButtonKind = 'filled' | 'outlined' | 'danger' | 'quiet';
 
 /** Colours of the edge, the face and the words. */
 const kinds: Record<ButtonKind, string> = {
@@ -37,7 +37,7 @@ function coloured(size: ButtonSize, kind: ButtonKind): string {
 
 const shape = 'inline-flex items-center justify-center gap-2 rounded text-center no-underline select-none';
 
-export interface ButtonProps extends Omit<ComponentPropsWithRef<'button'>, 'className'> {
+interface ButtonProps extends Omit<ComponentPropsWithRef<'button'>, 'className'> {
   readonly kind?: ButtonKind;
   readonly size?: ButtonSize;
   /**
@@ -86,7 +86,7 @@ export function Button({
   );
 }
 
-export interface ButtonLinkProps extends Omit<LinkProps, 'className'> {
+interface ButtonLinkProps extends Omit<LinkProps, 'className'> {
   readonly kind?: ButtonKind;
   readonly size?: ButtonSize;
   readonly className?: string;

@@ -4,7 +4,7 @@ import { classNames } from './class-names';
 import { type NavPerson, type PersonActions, PersonPanel } from './PersonPanel';
 import { useDisclosure } from './use-disclosure';
 
-export interface CompactSideArmProps {
+interface CompactSideArmProps {
   readonly current: StationKey | 'home' | null;
   readonly targets: StationTargets;
   readonly person: NavPerson | null;

@@ -2,7 +2,7 @@ import { type ComponentPropsWithRef, type KeyboardEvent, type ReactNode, useEffe
 import { classNames } from './class-names';
 import { nextCell } from './table-keys';
 
-export interface DataTableProps {
+interface DataTableProps {
   /** What the table holds; read out, and shown unless the head above says it. */
   readonly caption: ReactNode;
   readonly showCaption?: boolean;
@@ -96,7 +96,7 @@ export function HeadCell({ numeric = false, className, ...rest }: CellProps & Co
   );
 }
 
-export interface DataRowProps extends ComponentPropsWithRef<'tr'> {
+interface DataRowProps extends ComponentPropsWithRef<'tr'> {
   /** The one that is here, now: glass, and a lit edge with an ink line. */
   readonly selected?: boolean;
 }

@@ -1,6 +1,6 @@
 import { type ReactNode, useEffect, useId, useLayoutEffect, useRef } from 'react';
 
-export interface DialogProps {
+interface DialogProps {
   readonly open: boolean;
   /** The title is the question: "Release version 15?" */
   readonly question: ReactNode;

@@ -2,7 +2,7 @@ import type { ViewedFrom } from './dial-words';
 import { arrowhead } from './polar';
 import { seenAngle } from './ring-geometry';
 
-export interface EllipseGlyphProps {
+interface EllipseGlyphProps {
   /** Half the length of a linear state's bar, in px. */
   readonly radius: number;
   /** The long axis in table degrees. */

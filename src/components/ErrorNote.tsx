@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import { classNames } from './class-names';
 
-export interface ErrorNoteProps {
+interface ErrorNoteProps {
   /** What is wrong, and where. */
   readonly title: ReactNode;
   /** What to do. */

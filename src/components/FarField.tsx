@@ -2,7 +2,7 @@ import { type ComponentPropsWithRef } from 'react';
 import { classNames } from './class-names';
 import { Field, type FieldFrameProps } from './Field';
 
-export interface FarFieldProps
+interface FarFieldProps
   extends
     FieldFrameProps,
     Omit<ComponentPropsWithRef<'input'>, 'className' | 'type' | 'inputMode' | 'required'> {}

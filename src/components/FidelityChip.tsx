@@ -2,7 +2,7 @@ import { infidelityAscii } from '../lib/format/fidelity';
 import { classNames } from './class-names';
 import { fidelityVerdict, type InfidelityInterval, type Verdict } from './fidelity-verdict';
 
-export interface FidelityChipProps {
+interface FidelityChipProps {
   readonly infidelity: InfidelityInterval;
   readonly tolerance: number;
   /** Both carry the verdict in the point's shape; the bar is the 95 % interval of a measured one, 5 % to 95 % of a predicted one. */

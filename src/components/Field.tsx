@@ -2,7 +2,7 @@ import { type ReactNode, useId } from 'react';
 import { classNames } from './class-names';
 
 /** What a control needs to be tied to its label, help and fault. Spread it on the input. */
-export interface FieldControl {
+interface FieldControl {
   readonly id: string;
   readonly 'aria-describedby': string | undefined;
   readonly 'aria-invalid': true | undefined;
@@ -19,7 +19,7 @@ export interface FieldFrameProps {
   readonly className?: string | undefined;
 }
 
-export interface FieldProps extends FieldFrameProps {
+interface FieldProps extends FieldFrameProps {
   readonly id?: string | undefined;
   readonly children: (control: FieldControl) => ReactNode;
 }

@@ -1,7 +1,7 @@
 import { useEffect, useRef, useState } from 'react';
 import { classNames } from './class-names';
 
-export interface FormulaProps {
+interface FormulaProps {
   readonly latex: string;
   /** What stands there until KaTeX has come, and what is copied: the expression as it was typed. */
   readonly source?: string | undefined;

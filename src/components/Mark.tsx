@@ -35,7 +35,7 @@ export function MarkLines({ fine = true }: { readonly fine?: boolean }) {
   );
 }
 
-export interface MarkProps {
+interface MarkProps {
   /** Height in px. Below 20 only the arc and its three long ticks remain. */
   readonly size?: number;
   readonly className?: string | undefined;

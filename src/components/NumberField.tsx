@@ -1,7 +1,7 @@
 import type { ComponentPropsWithRef } from 'react';
 import { controlBox, Field, type FieldFrameProps } from './Field';
 
-export interface NumberFieldProps
+interface NumberFieldProps
   extends
     FieldFrameProps,
     Omit<ComponentPropsWithRef<'input'>, 'className' | 'type' | 'inputMode' | 'required'> {}

@@ -14,7 +14,7 @@ function copyAs(plain: string) {
   };
 }
 
-export interface NumberTextProps {
+interface NumberTextProps {
   /** As the formatters write it, with U+202F between groups. */
   readonly text: string;
   /** What it is copied as; plain ASCII of the text unless given. */
@@ -41,7 +41,7 @@ export function NumberText({ text, plain = toPlainAscii(text), mono = true, clas
   );
 }
 
-export interface QuantityProps extends NumberTextProps {
+interface QuantityProps extends NumberTextProps {
   /** `nm`, `s`, `%`; a degree sign belongs to the text, closed up. */
   readonly unit: string;
 }
@@ -56,7 +56,7 @@ export function Quantity({ unit, ...number }: QuantityProps) {
   );
 }
 
-export interface ScientificTextProps {
+interface ScientificTextProps {
   readonly mantissa: string;
   readonly exponent: number | null;
   readonly mono?: boolean;

@@ -1,7 +1,7 @@
 import { type NavPerson, type PersonActions, PersonPanel } from './PersonPanel';
 import { useDisclosure } from './use-disclosure';
 
-export interface PersonMenuProps extends PersonActions {
+interface PersonMenuProps extends PersonActions {
   readonly person: NavPerson;
 }
 

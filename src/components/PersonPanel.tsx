@@ -2,7 +2,7 @@ import { useTheme } from '../app/theme';
 import { TextButton } from './TextLink';
 import { SegmentedChoice } from './SegmentedChoice';
 
-export interface NavLab {
+interface NavLab {
   readonly id: string;
   readonly name: string;
 }

@@ -6,7 +6,7 @@ export interface RuleDivision {
   readonly state: 'done' | 'skipped' | 'current' | 'ahead';
 }
 
-export interface ProgressRuleProps {
+interface ProgressRuleProps {
   readonly divisions: readonly RuleDivision[];
   /** In words: "setting 9 of 24". */
   readonly label: string;

@@ -33,7 +33,7 @@ export interface RingDialProps {
 }
 
 /** Room around the housing for index, arc and bead, as a share of the radius. */
-export const ringMargin = 0.36;
+const ringMargin = 0.36;
 
 /**
  * A mount as the hand meets it: the housing with its fixed index, the graduated ring turned so that the present reading is under

@@ -8,7 +8,7 @@ import { dialName } from './dial-words';
 import { NumberField } from './NumberField';
 import { type PlateKind, RingDial, type RingDialProps } from './RingDial';
 
-export interface RingDialControlProps extends Omit<RingDialProps, 'scale' | 'label' | 'toDeg'> {
+interface RingDialControlProps extends Omit<RingDialProps, 'scale' | 'label' | 'toDeg'> {
   readonly name: string;
   readonly kind: PlateKind;
   readonly scale: DialScale;
@@ -16,7 +16,7 @@ export interface RingDialControlProps extends Omit<RingDialProps, 'scale' | 'lab
 }
 
 /** How far a key turns the dial, in degrees; null for a key that doesn't. */
-export function keyStep(key: string, shift: boolean): number | null {
+function keyStep(key: string, shift: boolean): number | null {
   switch (key) {
     case 'ArrowUp':
     case 'ArrowRight':

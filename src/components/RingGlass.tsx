@@ -3,7 +3,7 @@ import { arrowhead, polar, radial } from './polar';
 import { seenAngle } from './ring-geometry';
 import type { PlateKind, RingState } from './RingDial';
 
-export interface RingGlassProps {
+interface RingGlassProps {
   readonly radius: number;
   readonly kind: PlateKind;
   readonly seenTurn: number;

@@ -4,7 +4,7 @@ import type { ViewedFrom } from './dial-words';
 import { polar, radial } from './polar';
 import { ringTicks, seenAngle } from './ring-geometry';
 
-export interface RingScaleProps {
+interface RingScaleProps {
   readonly radius: number;
   readonly scale: Pick<DialScale, 'offsetDeg' | 'direction'>;
   readonly viewedFrom: ViewedFrom;

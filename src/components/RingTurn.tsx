@@ -3,7 +3,7 @@ import { seenMove, type ViewedFrom } from './dial-words';
 import { arc, arrowhead, polar, radial } from './polar';
 import { numberAngle } from './ring-geometry';
 
-export interface RingTurnProps {
+interface RingTurnProps {
   readonly radius: number;
   readonly scale: Pick<DialScale, 'offsetDeg' | 'direction'>;
   readonly readingDeg: number;

@@ -21,7 +21,7 @@ export function savingWords(saving: Saving, one = 'change', many = 'changes'): s
   }
 }
 
-export interface SaveStateProps {
+interface SaveStateProps {
   readonly saving: Saving;
   /** What waits, in the singular and the plural. */
   readonly one?: string;

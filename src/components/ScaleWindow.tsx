@@ -3,7 +3,7 @@ import { wrap } from '../../shared/optics/units';
 import { formatDial } from '../lib/format/angle';
 import type { ViewedFrom } from './dial-words';
 
-export interface ScaleWindowProps {
+interface ScaleWindowProps {
   readonly readingDeg: number;
   readonly scale: Pick<DialScale, 'direction' | 'resolutionDeg'>;
   readonly viewedFrom?: ViewedFrom | undefined;

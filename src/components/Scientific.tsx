@@ -2,7 +2,7 @@ import { formatInfidelity } from '../lib/format/fidelity';
 import { uncertainScientific } from '../lib/format/uncertain';
 import { ScientificText } from './NumberText';
 
-export interface ScientificProps {
+interface ScientificProps {
   readonly value: number | null;
   /** Standard uncertainty; its digits go into the bracket. */
   readonly sigma?: number | null | undefined;

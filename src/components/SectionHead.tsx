@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react';
 import { classNames } from './class-names';
 
-export interface SectionHeadProps {
+interface SectionHeadProps {
   readonly children: ReactNode;
   /** Second words beside the head. */
   readonly note?: ReactNode;

@@ -1,12 +1,12 @@
 import { type ReactNode, useId } from 'react';
 import { classNames } from './class-names';
 
-export interface Segment<Value extends string> {
+interface Segment<Value extends string> {
   readonly value: Value;
   readonly label: ReactNode;
 }
 
-export interface SegmentedChoiceProps<Value extends string> {
+interface SegmentedChoiceProps<Value extends string> {
   /** What is chosen between; read out before the choices. */
   readonly label: ReactNode;
   readonly hideLabel?: boolean;

@@ -1,12 +1,12 @@
 import type { ComponentPropsWithRef } from 'react';
 import { controlBox, Field, type FieldFrameProps } from './Field';
 
-export interface SelectOption {
+interface SelectOption {
   readonly value: string;
   readonly label: string;
 }
 
-export interface SelectFieldProps
+interface SelectFieldProps
   extends FieldFrameProps, Omit<ComponentPropsWithRef<'select'>, 'className' | 'children' | 'required'> {
   readonly options: readonly SelectOption[];
   /** What stands there before anything is chosen. */

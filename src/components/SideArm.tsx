@@ -2,7 +2,7 @@ import { Link } from 'react-router-dom';
 import { sideStations, type StationKey, type StationTargets } from './beam-stations';
 import { classNames } from './class-names';
 
-export interface SideArmProps {
+interface SideArmProps {
   readonly current: StationKey | 'home' | null;
   readonly targets: StationTargets;
 }

@@ -2,7 +2,7 @@ import { Link } from 'react-router-dom';
 import type { StationTarget } from './beam-stations';
 import { classNames } from './class-names';
 
-export interface StationLinkProps {
+interface StationLinkProps {
   readonly name: string;
   readonly axisDeg: number;
   readonly goKey: string;

@@ -2,7 +2,7 @@ import type { ComponentPropsWithRef } from 'react';
 import { classNames } from './class-names';
 import { controlBox, Field, type FieldFrameProps } from './Field';
 
-export interface TextAreaProps
+interface TextAreaProps
   extends FieldFrameProps, Omit<ComponentPropsWithRef<'textarea'>, 'className' | 'required'> {
   readonly mono?: boolean;
 }

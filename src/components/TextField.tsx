@@ -2,7 +2,7 @@ import type { ComponentPropsWithRef } from 'react';
 import { classNames } from './class-names';
 import { controlBox, Field, type FieldFrameProps } from './Field';
 
-export interface TextFieldProps
+interface TextFieldProps
   extends FieldFrameProps, Omit<ComponentPropsWithRef<'input'>, 'className' | 'type' | 'required'> {
   readonly type?: 'text' | 'email' | 'url' | 'search' | 'date' | 'datetime-local';
   /** Mono, for what is compared or typed as code: expressions, serial numbers. */

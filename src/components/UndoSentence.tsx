@@ -2,7 +2,7 @@ import { useEffect, useRef, useState } from 'react';
 import { TextButton } from './TextLink';
 import { isTyping } from './use-go-keys';
 
-export interface UndoSentenceProps {
+interface UndoSentenceProps {
   /** What was done: "Row 4 taken out." */
   readonly sentence: string;
   readonly onUndo: () => void;

@@ -15,7 +15,7 @@ export const sealWords: Readonly<Record<SealState, string>> = {
   withdrawn: 'withdrawn',
 };
 
-export interface VersionSealProps {
+interface VersionSealProps {
   /** A draft has no number yet. */
   readonly number: number | null;
   readonly state: SealState;

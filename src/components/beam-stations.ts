@@ -13,8 +13,8 @@ export const sideStations = [
   { key: 'quick', name: 'Quick angles', shortName: 'Angles', goKey: 'q' },
 ] as const;
 
-export type BeamStationKey = (typeof beamStations)[number]['key'];
-export type SideStationKey = (typeof sideStations)[number]['key'];
+type BeamStationKey = (typeof beamStations)[number]['key'];
+type SideStationKey = (typeof sideStations)[number]['key'];
 export type StationKey = BeamStationKey | SideStationKey;
 
 export interface StationTarget {

@@ -30,7 +30,7 @@ export function seenMove(
 }
 
 /** Which way and how far, in the words of the bench. */
-export interface DialWords {
+interface DialWords {
   readonly from: string;
   readonly sense: SeenMove['sense'];
   readonly amount: string;

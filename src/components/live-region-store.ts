@@ -1,6 +1,6 @@
 import { create } from 'zustand';
 
-export type Politeness = 'polite' | 'assertive';
+type Politeness = 'polite' | 'assertive';
 
 interface Announcement {
   readonly text: string;

@@ -17,7 +17,7 @@ export function numberStepDeg(radius: number): 30 | 90 | null {
 }
 
 /** One tick of the graduated ring. */
-export interface Tick {
+interface Tick {
   readonly dialDeg: number;
   readonly rank: 'long' | 'middle' | 'fine';
 }

@@ -1,6 +1,6 @@
 import { type RefObject, useEffect, useId, useRef, useState } from 'react';
 
-export interface Disclosure {
+interface Disclosure {
   readonly open: boolean;
   readonly panelId: string;
   readonly rootRef: RefObject<HTMLDivElement | null>;

@@ -1,6 +1,6 @@
 import { useEffect, useState } from 'react';
 
-export interface WorkClock {
+interface WorkClock {
   /** Work shorter than this is never shown, so that a page doesn't flicker. */
   readonly shown: boolean;
   /** Long enough that the time left and a way out are owed. */

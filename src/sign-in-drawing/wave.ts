@@ -3,7 +3,7 @@ import type { JonesVector } from '../../shared/optics/jones';
 import { radians } from '../../shared/optics/units';
 
 /** The field along the beam at one moment, seen from the side and a little from above. */
-export interface Wave {
+interface Wave {
   /** Curves before and behind the plane of the page, and the field's arrows from the beam to them. */
   readonly front: string;
   readonly back: string;

@@ -21,7 +21,7 @@ export function ViewStatus({ view }: { readonly view: SphereView }) {
   );
 }
 
-export function viewInWords(view: SphereView): string {
+function viewInWords(view: SphereView): string {
   const { azimuthDeg, side } = ellipseAt(view);
   const zoom = view.zoom > 1 ? `, magnified ${view.zoom.toFixed(2)} times` : '';
   return `In the middle: linear light at ${formatAngle(azimuthDeg)}, ${side}${zoom}.`;

@@ -2,7 +2,7 @@ import { ellipseOf } from '../../shared/optics/ellipse';
 import type { Stokes } from '../../shared/optics/stokes';
 
 /** A point as the receiver sees it, in units of the whole amplitude: x along H, y along V, upwards. */
-export interface FieldPoint {
+interface FieldPoint {
   readonly x: number;
   readonly y: number;
 }

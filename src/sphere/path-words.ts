@@ -11,9 +11,9 @@ export const NAMED_WITHIN_DEG = 0.1;
 /** An ellipse flatter than this is said to be linear. */
 export const LINEAR_WITHIN_DEG = 0.05;
 
-export type TurnSense = 'counter-clockwise' | 'clockwise' | 'not at all';
+type TurnSense = 'counter-clockwise' | 'clockwise' | 'not at all';
 
-export interface PathWords {
+interface PathWords {
   /** The figure's name: the whole path in one sentence. */
   readonly summary: string;
   readonly start: StateWords;
@@ -91,7 +91,7 @@ export function pathInWords(input: SphereInput): PathWords {
 }
 
 /** A right-handed turn about a point of the sphere looks counter-clockwise from above that point. */
-export function senseOf(sweepDeg: number): TurnSense {
+function senseOf(sweepDeg: number): TurnSense {
   if (sweepDeg === 0) return 'not at all';
   return sweepDeg > 0 ? 'counter-clockwise' : 'clockwise';
 }

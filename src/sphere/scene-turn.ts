@@ -13,7 +13,7 @@ const FULL_HEAD_ARC = 0.25;
 /** Places of the plate's name along its turn, best first. */
 const NAME_AT = [0.4, 0.72, 0.55, 0.25, 0.85, 0.12];
 
-export interface TurnDrawing {
+interface TurnDrawing {
   readonly line: readonly SceneLine[];
   readonly ticks: readonly SceneTicks[];
   readonly head: readonly SceneHead[];

@@ -1,9 +1,4 @@
-import {
-  circularState,
-  type Convention,
-  counterClockwiseLetter,
-  type Hand,
-} from '../../shared/optics/convention';
+import { circularState, type Convention, type Hand } from '../../shared/optics/convention';
 import { path, type Path } from '../../shared/optics/retarder';
 import type { Stokes } from '../../shared/optics/stokes';
 import { degrees, toRadians } from '../../shared/optics/units';
@@ -169,9 +164,4 @@ const SAME_STATE = 1e-6;
 
 export function sameState(one: Stokes, other: Stokes): boolean {
   return Math.hypot(one[0] - other[0], one[1] - other[1], one[2] - other[2]) < SAME_STATE;
-}
-
-/** The lab's letter at the north of the drawing, where the field turns counter-clockwise to the receiver. */
-export function northLetter(convention: Convention): Hand {
-  return counterClockwiseLetter(convention);
 }

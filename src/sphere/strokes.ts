@@ -5,7 +5,7 @@ export type LineRole =
   'graticule' | 'equator' | 'equator-tick' | 'turn' | 'turn-tick' | 'last-turn' | 'last-turn-tick';
 
 /** How one kind of line is drawn in front of the limb plane and behind it; `null`: not drawn there. */
-export interface Stroke {
+interface Stroke {
   readonly token: SphereToken;
   readonly widthPx: number;
   readonly frontOpacity: number;

@@ -3,7 +3,7 @@ import type { Convention } from '../../shared/optics/convention';
 import { clampLatitude, HOME_VIEW, type SphereView, wrapLongitude } from './view';
 import { applyCommand, type ViewCommand } from './view-keys';
 
-export interface SphereViewState {
+interface SphereViewState {
   readonly view: SphereView;
   readonly apply: (command: ViewCommand, convention: Convention) => void;
   /** Turns the view by angles on the sphere, as a drag does; nothing needs it. */

@@ -38,7 +38,7 @@ export function viewFrame(view: SphereView): ViewFrame {
 }
 
 /** A point on the page: x to the right and y down in radii of the sphere, depth towards the viewer. */
-export interface Projected {
+interface Projected {
   readonly x: number;
   readonly y: number;
   readonly depth: number;

@@ -30,7 +30,7 @@ export function Source({
 const ON_AXIS_WITHIN_DEG = 0.05;
 
 /** `H` for 0°, `V` for 90°, the angle otherwise. */
-export function axisName(axisDeg: number): string {
+function axisName(axisDeg: number): string {
   const letters: readonly (readonly [number, string])[] = [
     [0, 'H'],
     [90, 'V'],

@@ -7,7 +7,7 @@ import { LINEAR_WITHIN_DEG, NAMED_WITHIN_DEG } from '../sphere/path-words';
 import { basisStates } from '../sphere/scene';
 import { angleBetweenDeg } from '../sphere/vec';
 
-export interface StateGlyph {
+interface StateGlyph {
   readonly psiDeg: number;
   readonly chiDeg: number;
   readonly sense: 'clockwise' | 'counter-clockwise' | 'none';

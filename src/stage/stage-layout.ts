@@ -18,7 +18,7 @@ const SOURCE_WIDTH = 62;
 const TAIL_WIDTH = 24;
 const GAP = 14;
 
-export function stageSizes(ringRadius: number, plateCount: number): StageSizes {
+function stageSizes(ringRadius: number, plateCount: number): StageSizes {
   const polariserRadius = ringRadius * 0.475;
   const glyphRadius = ringRadius * 0.31;
   const outputRadius = ringRadius * 0.7;
@@ -56,7 +56,7 @@ const READOUT_WIDTH = 220;
 /** On a narrower page the readout always stands under the beam line. */
 const BESIDE_FROM = 940;
 
-export interface StageArrangement {
+interface StageArrangement {
   readonly sizes: StageSizes;
   readonly readoutBeside: boolean;
   readonly scrolls: boolean;

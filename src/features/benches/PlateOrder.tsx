@@ -1,16 +1,16 @@
 import { Button } from '../../components/Button';
 import { SelectField } from '../../components/SelectField';
 import type { Plate } from '../../../shared/schemas/cabinet';
+import { kindNames } from '../cabinet';
 import type { FieldBinding } from './bench-form-values';
 
-const kindWords = { half: 'half-wave', quarter: 'quarter-wave', other: 'plate' } as const;
 // A list's text can't be drawn with margins, and the faces have this one.
 const gap = '\u00a0';
 
 /** What a list says of a plate: enough to pick the right one of two alike. */
 export function plateChoice(plate: Plate): string {
   const { retardanceDeg, wavelengthNm } = plate.calibration;
-  return `${plate.name}, ${kindWords[plate.kind]}, ${retardanceDeg}° at ${wavelengthNm}${gap}nm`;
+  return `${plate.name}, ${kindNames[plate.kind]}, ${retardanceDeg}° at ${wavelengthNm}${gap}nm`;
 }
 
 /** The two places in the beam, each with its plate, and a way to change them round without a drag. */

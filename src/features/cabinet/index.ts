@@ -1,3 +1,3 @@
 export { type CalibrationAge, calibrationAge } from './calibration-age';
 export { platesQuery } from './queries';
-export { restingAxisDeg } from './plate-words';
+export { kindNames, restingAxisDeg } from './plate-words';

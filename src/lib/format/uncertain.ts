@@ -1,7 +1,7 @@
 import { groupDigits, missingSign, withTrueMinus } from './signs';
 
 /** Where a value and its standard uncertainty are cut: the power of ten of the last digit, and the bracket's digits. */
-export interface UncertainPlace {
+interface UncertainPlace {
   readonly exponent: number;
   readonly bracket: string;
 }
@@ -21,7 +21,7 @@ function unitsOf(value: number, exponent: number): string {
  * One digit of uncertainty, two if its first is 1 (GUM 7.2.6 allows at most two). 0.96 becomes 1.0, and 0.195 becomes 0.2, so
  * the first digit is judged after rounding. Null when sigma isn't a positive finite number.
  */
-export function uncertainPlace(sigma: number): UncertainPlace | null {
+function uncertainPlace(sigma: number): UncertainPlace | null {
   if (!Number.isFinite(sigma) || sigma <= 0) return null;
   const lead = leadingExponent(sigma);
   const two = unitsOf(sigma, lead - 1);
