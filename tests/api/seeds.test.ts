@@ -1,8 +1,9 @@
+import { fileURLToPath } from 'node:url';
 import knex, { type Knex } from 'knex';
 import pg from 'pg';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { verifyVersions } from '../../scripts/lib/version-chains';
-import { seed } from '../../seeds/01-demo-labs';
+import { run } from '../../scripts/lib/run.mjs';
 import { createTestDatabase, type TestDatabase } from '../setup/database';
 
 let testDatabase: TestDatabase;
@@ -13,7 +14,12 @@ beforeAll(async () => {
   owner = knex({ client: 'pg', connection: testDatabase.ownerUrl, pool: { min: 0, max: 2 } });
   admin = new pg.Client({ connectionString: testDatabase.adminUrl });
   await admin.connect();
-  await seed(owner);
+  // As a person would, with tsx to read the seeds.
+  const ran = await run(process.execPath, ['--import', 'tsx', 'scripts/seed.ts'], {
+    cwd: fileURLToPath(new URL('../..', import.meta.url)),
+    env: { ...process.env, DATABASE_OWNER_URL: testDatabase.ownerUrl },
+  });
+  if (ran.code !== 0) throw new Error(ran.output);
 }, 60_000);
 afterAll(async () => {
   await admin.end();
