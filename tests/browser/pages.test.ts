@@ -42,9 +42,8 @@ async function findAddresses(): Promise<Record<string, string>> {
   const designer = await hrefOf(/^Tetrahedron/u);
   await page.goto(`${home}/review`);
   const version = await hrefOf(/new zero/u);
-  await page.goto(`${home}/results`);
-  const record = await hrefOf(/record|See the run/iu);
   await page.goto(`${home}/bench`);
+  const record = await hrefOf(/See the record/u);
   const run = await hrefOf(/^Go on/u);
   await context.close();
   return {

@@ -11,7 +11,7 @@ import { VersionParts } from './VersionParts';
 /** For developers: every component in its states, by day on the left and in the dark room on the right. */
 export default function PartsPage() {
   return (
-    <main>
+    <div>
       <h1 className="sr-only">Parts: every component in its states</h1>
       <div className="grid grid-cols-[minmax(0,1fr)] desk:grid-cols-[minmax(0,1fr)_484px]">
         <div className="flex flex-col gap-5.5 px-5 py-7 sm:px-10">
@@ -28,7 +28,7 @@ export default function PartsPage() {
         <DarkRoomParts />
       </div>
       <MoreParts />
-    </main>
+    </div>
   );
 }
 

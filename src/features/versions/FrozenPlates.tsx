@@ -6,7 +6,12 @@ const kindWords = { half: 'half-wave', quarter: 'quarter-wave', other: 'other' }
 /** The plates in beam order with the calibrations that the angles were worked out from. */
 export function FrozenPlates({ content }: { readonly content: VersionContent }) {
   return (
-    <div className="overflow-x-auto">
+    <div
+      className="relative overflow-x-auto"
+      tabIndex={0}
+      role="region"
+      aria-label="Plates, scrolls sideways"
+    >
       <table className="w-full border-collapse">
         <thead>
           <tr className="border-b border-ink text-left text-s text-ink-2">

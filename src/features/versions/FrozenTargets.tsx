@@ -11,7 +11,12 @@ import { formatDial, formatTheta } from '../../lib/format';
 export function FrozenTargets({ content }: { readonly content: VersionContent }) {
   const { plates } = content.bench;
   return (
-    <div className="overflow-x-auto">
+    <div
+      className="relative overflow-x-auto"
+      tabIndex={0}
+      role="region"
+      aria-label="Targets and dials, scrolls sideways"
+    >
       <table className="w-full border-collapse">
         <thead>
           <tr className="border-b border-ink text-left text-s text-ink-2">

@@ -95,7 +95,7 @@ function VersionChain({ protocolId, current }: { readonly protocolId: string; re
   const chain = [...(data?.items ?? [])].sort((one, other) => one.number - other.number);
   if (chain.length < 2) return null;
   return (
-    <nav aria-label="Versions of this protocol" className="mt-4 overflow-x-auto">
+    <nav aria-label="Versions of this protocol" className="relative mt-4 overflow-x-auto">
       <ol className="version-chain">
         {chain.map(({ number, savedAt }) => (
           <li key={number}>

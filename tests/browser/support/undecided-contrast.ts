@@ -30,6 +30,8 @@ export function measureUndecided(selectors: readonly string[]): readonly Measure
     if (element === null) return { selector, ratio: 0 };
     const style = getComputedStyle(element);
     const colour = element instanceof SVGElement ? style.fill : style.color;
+    // Not painted at all, such as the text that only carries the marks under a field: there is nothing to read.
+    if (/^rgba\(.*, 0\)$/.test(colour)) return { selector, ratio: Infinity };
     const token = (name: string): string => style.getPropertyValue(name);
     const onLit = channels(colour).join() === channels(token('--on-lit')).join();
     const lit = onLit && element.closest('svg')?.querySelector('.fill-lit') !== null;

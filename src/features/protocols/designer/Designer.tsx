@@ -102,7 +102,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
       )}
       <div className="designer-body">
         <div className="min-w-0">
-          <div className="targets-scroll">
+          <div className="targets-scroll" tabIndex={0} role="region" aria-label="Targets, scrolls sideways">
             <TargetsTable
               targets={content.targets}
               views={views}

@@ -183,12 +183,8 @@ function ExpressionText({ target, solved, mayWrite, onOpen }: ExpressionTextProp
     );
   if (!mayWrite) return text;
   return (
-    <button
-      type="button"
-      className="min-h-6 w-full text-left"
-      onClick={onOpen}
-      aria-label={`Edit ${target.label}: ${target.expression}`}
-    >
+    <button type="button" className="min-h-6 w-full text-left" onClick={onOpen}>
+      <span className="sr-only">Edit {target.label}: </span>
       {text}
     </button>
   );
