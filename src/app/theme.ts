@@ -8,7 +8,6 @@ import {
   type LampLevel,
   parseAppearance,
   type ThemeChoice,
-  type ThemeName,
   themeFor,
 } from './appearance';
 
@@ -70,11 +69,6 @@ export const useTheme = create<ThemeState>()((set) => ({
     set({ systemIsDark });
   },
 }));
-
-/** The theme that is on the page now. */
-export function useThemeName(): ThemeName {
-  return useTheme((state) => themeFor(state, state.onBench, state.systemIsDark));
-}
 
 /** Writes the theme to the page and keeps it. Call it once, at the root. */
 export function useThemeOnPage(): void {

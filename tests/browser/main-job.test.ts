@@ -117,7 +117,7 @@ describe.each([
       .first()
       .waitFor();
     await page.getByRole('checkbox').check();
-    await page.getByRole('button', { name: 'Start the run' }).click();
+    await page.getByRole('button', { name: 'Start the run', exact: true }).click();
     await page.waitForURL(/\/bench\/runs\//u);
     await page.locator('html[data-theme="dark-room"]').waitFor();
 

@@ -1,8 +1,10 @@
+import Complex from 'complex.js';
 import {
   type Convention,
   ellipseOf,
   type JonesVector,
   letterOf,
+  radians,
   type StateReading,
   toDegrees,
   translateJones,
@@ -15,11 +17,13 @@ type Sense = 'clockwise' | 'counter-clockwise' | 'none';
 /** a|H⟩ + b e^{iφ}|V⟩ with three figures, as the convention writes it; parts that vanish are left out. */
 export function shortLatex(jones: JonesVector, convention: Convention): string {
   const { aRe, aIm, bRe, bIm } = translateJones(jones, convention);
-  const a = Math.hypot(aRe, aIm);
-  const b = Math.hypot(bRe, bIm);
+  const amplitudeH = new Complex(aRe, aIm);
+  const amplitudeV = new Complex(bRe, bIm);
+  const a = amplitudeH.abs();
+  const b = amplitudeV.abs();
   if (b < 5e-4) return '|H\\rangle';
   if (a < 5e-4) return '|V\\rangle';
-  const phaseDeg = ((Math.atan2(bIm, bRe) - Math.atan2(aIm, aRe)) * 180) / Math.PI;
+  const phaseDeg = toDegrees(radians(amplitudeV.div(amplitudeH).arg()));
   const shown = phaseDeg.toFixed(1);
   const head = `${a.toFixed(3)}\\,|H\\rangle`;
   if (shown === '0.0' || shown === '-0.0') return `${head} + ${b.toFixed(3)}\\,|V\\rangle`;

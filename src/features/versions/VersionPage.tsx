@@ -71,7 +71,10 @@ function VersionSheet({ version, protocolId }: VersionSheetProps) {
             <TextLink to={href}>Open the draft</TextLink>
             <SaveCanonical version={version} />
             {may('runs.record') && (
-              <ButtonLink kind="filled" to={`/labs/${lab.id}/bench/start?versionId=${summary.id}`}>
+              <ButtonLink
+                kind="filled"
+                to={`/labs/${lab.id}/bench/start?protocolId=${protocolId}&number=${summary.number}`}
+              >
                 Run version {summary.number}
               </ButtonLink>
             )}

@@ -1,13 +1,9 @@
 import type { Bench } from '../../../../shared/schemas/benches';
-
-/** Two wavelengths closer than this are one: a retardance moves by less than a calibration's usual σ. */
-const sameWithinNm = 0.5;
+import { calibratedElsewhere } from '../../benches';
 
 /** Says which plates were measured at another wavelength than they are used at here: every angle below relies on that number. */
 export function CalibratedElsewhere({ bench }: { readonly bench: Bench }) {
-  const elsewhere = bench.plates.filter(
-    ({ calibration }) => Math.abs(calibration.wavelengthNm - bench.wavelengthNm) > sameWithinNm,
-  );
+  const elsewhere = bench.plates.filter((plate) => calibratedElsewhere(plate, bench.wavelengthNm));
   if (elsewhere.length === 0) return null;
   const plates = elsewhere
     .map(({ name, calibration }) => `${name} at ${calibration.wavelengthNm} nm`)

@@ -9,10 +9,8 @@ interface LimitsProps {
   readonly plates: readonly Plate[];
 }
 
-const kindWords = { retardance: 'retardance', zero: 'zero', dial: 'dial', polariser: 'polariser' } as const;
-
 function nameOf({ kind, plate }: Contribution, plates: readonly Plate[]): string {
-  return plate === null ? kindWords[kind] : `${plates[plate]?.name ?? ''} ${kindWords[kind]}`;
+  return plate === null ? kind : `${plates[plate]?.name ?? ''} ${kind}`;
 }
 
 /** Two figures, as an uncertainty is written. */

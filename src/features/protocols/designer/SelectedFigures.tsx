@@ -3,6 +3,7 @@ import type { Convention } from '../../../../shared/optics/convention';
 import { fastAxisFromDial } from '../../../../shared/optics/dial';
 import type { Stokes } from '../../../../shared/optics/stokes';
 import { degrees } from '../../../../shared/optics/units';
+import { dialScaleOf } from '../../../../shared/protocol/solve-row';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
 import { createSphereViewStore, FieldPlot, Sphere, type SphereInput } from '../../../sphere';
@@ -29,11 +30,7 @@ export function SelectedFigures({ bench, input, target, view, convention }: Sele
       plates: bench.plates.map((plate, index) => ({
         name: plate.name,
         retardanceDeg: plate.calibration.retardanceDeg,
-        fastAxisDeg: fastAxisFromDial(degrees(dialsDeg[index] ?? 0), {
-          offsetDeg: plate.calibration.offsetDeg,
-          direction: plate.mount.direction,
-          resolutionDeg: plate.mount.resolutionDeg,
-        }),
+        fastAxisDeg: fastAxisFromDial(degrees(dialsDeg[index] ?? 0), dialScaleOf(plate)),
       })),
       target: { label: target.label, state: view.reading.stokes },
       convention,

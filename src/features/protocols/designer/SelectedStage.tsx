@@ -3,6 +3,7 @@ import { fastAxisFromDial } from '../../../../shared/optics/dial';
 import type { Stokes } from '../../../../shared/optics/stokes';
 import { ellipseOf } from '../../../../shared/optics/ellipse';
 import { degrees, toDegrees } from '../../../../shared/optics/units';
+import { dialScaleOf } from '../../../../shared/protocol/solve-row';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
@@ -23,11 +24,7 @@ interface SelectedStageProps {
 }
 
 function stagePlate(plate: Plate, dialDeg: number, solutionDialDeg: number): StagePlate {
-  const scale = {
-    offsetDeg: plate.calibration.offsetDeg,
-    direction: plate.mount.direction,
-    resolutionDeg: plate.mount.resolutionDeg,
-  };
+  const scale = dialScaleOf(plate);
   return {
     id: plate.id,
     name: plate.name,
