@@ -9,14 +9,14 @@ export type LaserClass = z.infer<typeof laserClassSchema>;
 
 const benchFields = {
   name: lineSchema(60, "bench's name"),
-  wavelengthNm: numberSchema('A wavelength', 200, 5000, ' nm'),
+  wavelengthNm: numberSchema('A wavelength', 200, 5000, ' nm', '810'),
   /** The state behind the polariser, as an expression in the lab's convention. */
   inputExpression: lineSchema(200, 'input state'),
-  polariserSigmaDeg: numberSchema("The uncertainty of the polariser's angle", 0, 20, '°'),
+  polariserSigmaDeg: numberSchema("The uncertainty of the polariser's angle", 0, 20, '°', '0.3'),
   laserClass: laserClassSchema,
   /** Every wavelength that can reach an eye at this bench, the pump included. */
   hazardWavelengthsNm: z
-    .array(numberSchema('A wavelength', 150, 20_000, ' nm'))
+    .array(numberSchema('A wavelength', 150, 20_000, ' nm', '810'))
     .min(1, 'Name at least one wavelength that eyewear is for.')
     .max(8, 'Name at most eight wavelengths.'),
 };

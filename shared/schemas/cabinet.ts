@@ -6,9 +6,9 @@ export const plateKindSchema = z.enum(plateKinds);
 export type PlateKind = z.infer<typeof plateKindSchema>;
 
 const directionSchema = z.union([z.literal(1), z.literal(-1)]);
-const retardanceSchema = numberSchema('A retardance', 0.1, 359.9, '°');
-const sigmaSchema = (name: string) => numberSchema(name, 0, 20, '°');
-const wavelengthSchema = numberSchema('A wavelength', 200, 5000, ' nm');
+const retardanceSchema = numberSchema('A retardance', 0.1, 359.9, '°', '180.4');
+const sigmaSchema = (name: string) => numberSchema(name, 0, 20, '°', '0.3');
+const wavelengthSchema = numberSchema('A wavelength', 200, 5000, ' nm', '810');
 
 /** A holder with an engraved ring. */
 export const mountSchema = z.strictObject({
@@ -64,7 +64,7 @@ export const calibrationInputSchema = z.strictObject({
   wavelengthNm: wavelengthSchema,
   retardanceDeg: retardanceSchema,
   retardanceSigmaDeg: sigmaSchema('The uncertainty of the retardance'),
-  offsetDeg: numberSchema('A zero', 0, 359.9999, '°'),
+  offsetDeg: numberSchema('A zero', 0, 359.9999, '°', '301.73'),
   offsetSigmaDeg: sigmaSchema('The uncertainty of the zero'),
   method: lineSchema(80, 'way it was measured'),
   note: noteSchema(500, 'note'),
@@ -80,8 +80,8 @@ const plateFields = {
   mount: z.strictObject({
     name: lineSchema(20, "mount's name"),
     direction: directionSchema,
-    resolutionDeg: numberSchema('The finest step of a dial', 0.001, 10, '°'),
-    repeatabilityDeg: numberSchema('The repeatability of a dial', 0, 5, '°'),
+    resolutionDeg: numberSchema('The finest step of a dial', 0.001, 10, '°', '0.1'),
+    repeatabilityDeg: numberSchema('The repeatability of a dial', 0, 5, '°', '0.05'),
   }),
 };
 

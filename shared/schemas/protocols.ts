@@ -19,7 +19,7 @@ export const draftContentSchema = z.strictObject({
   purpose: noteSchema(1000, 'purpose'),
   benchId: idSchema,
   /** The largest 1 − F that is within. */
-  toleranceInfidelity: numberSchema('A tolerance', 1e-9, 0.5, ''),
+  toleranceInfidelity: numberSchema('A tolerance', 1e-9, 0.5, '', '1e-3'),
   targets: z.array(draftTargetSchema).max(maxTargets, `A protocol has at most ${maxTargets} targets.`),
 });
 export type DraftContent = z.infer<typeof draftContentSchema>;

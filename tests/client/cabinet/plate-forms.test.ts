@@ -32,7 +32,7 @@ describe('a calibration as it is typed', () => {
       wavelengthNm: 810,
     });
     expect(readCalibration({ ...typed, offsetDeg: '\u22121.5' }).offsetDeg).toBe(-1.5);
-    expect(sentences({ retardanceDeg: '86,9' })).toEqual(['A retardance is a number, like 0.1.']);
+    expect(sentences({ retardanceDeg: '86,9' })).toEqual(['A retardance is a number, like 180.4.']);
   });
 
   it('starts from the last wavelength and method, and from no value', () => {
@@ -47,7 +47,7 @@ describe('a calibration as it is typed', () => {
 
   it('is refused with what is right, for a number that is out of range or missing', () => {
     expect(sentences({ retardanceDeg: '400' })).toEqual(['A retardance is from 0.1 to 359.9°.']);
-    expect(sentences({ offsetDeg: '' })).toEqual(['A zero is a number, like 0.']);
+    expect(sentences({ offsetDeg: '' })).toEqual(['A zero is a number, like 301.73.']);
     expect(sentences({ measuredAt: '' })).toEqual(['Say when it was measured: the day and the time.']);
     expect(sentences({ method: '  ' })).toEqual(['Write the way it was measured.']);
   });
