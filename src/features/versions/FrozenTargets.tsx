@@ -1,4 +1,7 @@
+import { fastAxisFromDial } from '../../../shared/optics/dial';
 import { parseState } from '../../../shared/optics/expression';
+import { degrees } from '../../../shared/optics/units';
+import { dialScaleOf } from '../../../shared/protocol/solve-row';
 import type { FrozenSolution, FrozenTarget, VersionContent } from '../../../shared/schemas/versions';
 import { fidelityVerdict } from '../../components/fidelity-verdict';
 import { FidelityChip } from '../../components/FidelityChip';
@@ -89,7 +92,7 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
             {formatDial(solution?.dialsDeg[index] ?? 0, plate.mount.resolutionDeg)}
           </span>
           <span className="inline-block min-w-15 pl-2 text-right font-mono text-xs text-ink-2">
-            {formatTheta(solution?.fastAxesDeg[index] ?? 0)}
+            {formatTheta(fastAxisFromDial(degrees(solution?.dialsDeg[index] ?? 0), dialScaleOf(plate)))}
           </span>
         </td>
       ))}

@@ -57,6 +57,19 @@ export function DesignerHead(props: DesignerHeadProps) {
             )}
             , <SavedWords saving={saving} />
           </p>
+          {mayWrite ? (
+            <input
+              type="text"
+              aria-label="Purpose, for whoever runs it"
+              placeholder="purpose, for whoever runs it"
+              className="purpose-input"
+              maxLength={1000}
+              value={content.purpose}
+              onChange={(event) => edit(describePurpose(event.target.value))}
+            />
+          ) : (
+            content.purpose !== '' && <p className="m-0 text-s text-ink-2">{content.purpose}</p>
+          )}
         </div>
         <div className="designer-facts">
           <BenchChoice {...{ bench, benches, mayWrite }} onChoose={props.onChooseBench} />
@@ -70,19 +83,6 @@ export function DesignerHead(props: DesignerHeadProps) {
           </span>
           <span className="fold-first">{describeConvention(lab.convention)}</span>
         </div>
-        {mayWrite ? (
-          <input
-            type="text"
-            aria-label="Purpose, for whoever runs it"
-            placeholder="purpose, for whoever runs it"
-            className="purpose-input"
-            maxLength={1000}
-            value={content.purpose}
-            onChange={(event) => edit(describePurpose(event.target.value))}
-          />
-        ) : (
-          content.purpose !== '' && <p className="m-0 text-s text-ink-2">{content.purpose}</p>
-        )}
       </div>
       {maySave && (
         <div className="text-right">

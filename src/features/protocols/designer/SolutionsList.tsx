@@ -3,6 +3,7 @@ import { wrapSigned } from '../../../../shared/optics/units';
 import { Scientific } from '../../../components/Scientific';
 import { TextButton } from '../../../components/TextLink';
 import { formatDial, formatTheta } from '../../../lib/format';
+import { dialledAxisDeg } from './dialled-problem';
 import type { RowView, SettingSolution } from './row-view';
 
 interface SolutionsListProps {
@@ -59,7 +60,9 @@ export function SolutionsList({ view, plates, label, mayWrite, onHold }: Solutio
                 {plates.map((plate, place) => (
                   <td key={plate.id} className="text-right font-mono">
                     {formatDial(other.dialsDeg[place] ?? 0, plate.mount.resolutionDeg)}
-                    <span className="theta">{formatTheta(other.fastAxesDeg[place] ?? 0)}</span>
+                    <span className="theta">
+                      {formatTheta(dialledAxisDeg(plate, other.dialsDeg[place] ?? 0))}
+                    </span>
                   </td>
                 ))}
                 <td className="text-right">

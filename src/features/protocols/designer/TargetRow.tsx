@@ -7,6 +7,7 @@ import { Formula } from '../../../components/Formula';
 import { Scientific } from '../../../components/Scientific';
 import { HeldSign } from '../../../components/SmallSigns';
 import { formatDial, formatTheta } from '../../../lib/format';
+import { dialledAxisDeg } from './dialled-problem';
 import { RowNote } from './RowNote';
 import type { RowView } from './row-view';
 import { SolutionsList } from './SolutionsList';
@@ -61,6 +62,7 @@ export function TargetRow(props: TargetRowProps) {
         ref={row}
         tabIndex={selected && !blank ? 0 : -1}
         aria-selected={selected}
+        data-blank={blank ? '' : undefined}
         onClick={props.onSelect}
         onKeyDown={(event: KeyboardEvent) => {
           if (event.key === 'Enter' && event.target === event.currentTarget && mayWrite) {
@@ -122,7 +124,9 @@ export function TargetRow(props: TargetRowProps) {
                     <span className="font-mono text-dial">
                       {formatDial(solved.solution.dialsDeg[index] ?? 0, plate.mount.resolutionDeg)}
                     </span>
-                    <span className="theta">{formatTheta(solved.solution.fastAxesDeg[index] ?? 0)}</span>
+                    <span className="theta">
+                      {formatTheta(dialledAxisDeg(plate, solved.solution.dialsDeg[index] ?? 0))}
+                    </span>
                   </>
                 )}
               </td>

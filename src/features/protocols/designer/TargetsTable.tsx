@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useEffect, useMemo, useRef, useState } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
 import {
@@ -44,10 +44,11 @@ export function TargetsTable({
     listSolutions,
   } = useDesignerView();
   const blank = useBlankTarget(targets);
+  const { table, focusAfter } = useFocusAfter();
   const rows = mayWrite ? [...targets, blank] : targets;
 
   return (
-    <table className="targets-table">
+    <table ref={table} className="targets-table">
       <caption className="sr-only">Targets, the dials that make them, and the expected infidelity</caption>
       <colgroup>
         <col className="w-8" />
@@ -113,10 +114,15 @@ export function TargetsTable({
                 openSource(target.id, null);
               }}
               onLabel={(label) => edit(writeLabel(target.id, label))}
-              onDone={closeSource}
+              onDone={() => {
+                // A row that was just written leads to the next one; a row that was changed keeps the focus.
+                focusAfter(openedTarget === null ? blankField : selectedRow);
+                closeSource();
+              }}
               onCancel={() => {
                 if (target.id === editingId) {
                   edit(openedTarget === null ? removeTarget(target.id) : restoreTarget(openedTarget));
+                  focusAfter(openedTarget === null ? blankField : selectedRow);
                 }
                 closeSource();
               }}
@@ -131,6 +137,21 @@ export function TargetsTable({
       </tbody>
     </table>
   );
+}
+
+const blankField = '[data-blank] input';
+const selectedRow = 'tr[aria-selected="true"]';
+
+/** Moves the focus once the field that had it is gone: left alone it would fall to the page, and the next keys with it. */
+function useFocusAfter() {
+  const table = useRef<HTMLTableElement>(null);
+  const [wanted, setWanted] = useState<string | null>(null);
+  useEffect(() => {
+    if (wanted === null) return;
+    table.current?.querySelector<HTMLElement>(wanted)?.focus();
+    setWanted(null);
+  }, [wanted]);
+  return { table, focusAfter: setWanted };
 }
 
 /** The row to come: the same row, with the same field under the caret, becomes a target with its first letter. */

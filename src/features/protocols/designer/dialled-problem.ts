@@ -1,6 +1,9 @@
 import { type DialledState, evaluateDials } from '../../../../shared/optics/solve-target';
 import type { Stokes } from '../../../../shared/optics/stokes';
-import { targetPlates } from '../../../../shared/protocol/solve-row';
+import { fastAxisFromDial } from '../../../../shared/optics/dial';
+import { degrees } from '../../../../shared/optics/units';
+import { dialScaleOf, targetPlates } from '../../../../shared/protocol/solve-row';
+import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { Bench } from '../../../../shared/schemas/benches';
 
 interface Dialled {
@@ -22,4 +25,9 @@ export function reachedState({ bench, input, target, dialsDeg }: Dialled): Diall
     },
     dialsDeg,
   );
+}
+
+/** Where the fast axis stands when the dial says this: what the table and the stage both show beside a dial. */
+export function dialledAxisDeg(plate: Plate, dialDeg: number): number {
+  return fastAxisFromDial(degrees(dialDeg), dialScaleOf(plate));
 }
