@@ -11,6 +11,6 @@ export {
   formatWeekday,
 } from './date';
 export { formatFidelity, formatInfidelity, infidelityAscii } from './fidelity';
-export { parseTypedNumber, type TypedNumber } from './parse-number';
+export { commaSentence, parseTypedNumber, type TypedNumber } from './parse-number';
 export { groupDigits, minusSign, missingSign, thinGap, toPlainAscii, withTrueMinus } from './signs';
 export { fixed, formatUncertain, type ScientificParts, uncertainScientific } from './uncertain';

@@ -15,3 +15,8 @@ export function parseTypedNumber(text: string): TypedNumber {
   const value = Number(plain);
   return Number.isFinite(value) ? { ok: true, value } : { ok: false, fault: 'too-large' };
 }
+
+/** What to write instead of a number with a decimal comma: the same digits with a point. Points before the comma were gaps between groups. */
+export function commaSentence(text: string): string {
+  return `Write a point in place of the comma: ${text.replace(/[\s.]/g, '').replace(',', '.')}.`;
+}

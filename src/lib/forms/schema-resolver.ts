@@ -1,6 +1,7 @@
 import { toNestErrors } from '@hookform/resolvers';
-import type { FieldError, FieldValues, Path, Resolver } from 'react-hook-form';
+import { type FieldError, type FieldValues, get, type Path, type Resolver } from 'react-hook-form';
 import type { z } from 'zod';
+import { commaSentence, parseTypedNumber } from '../format';
 
 /**
  * Holds a form against a request's schema. The form's values stay the text that was typed;
@@ -18,8 +19,22 @@ export function schemaResolver<Values extends FieldValues, Output extends FieldV
     const errors: Record<string, FieldError> = {};
     for (const issue of parsed.error.issues) {
       const path = issue.path.map(String).join('.');
-      errors[fieldOf(path) ?? path] ??= { type: issue.code, message: issue.message };
+      const field = fieldOf(path) ?? path;
+      const typed: unknown = get(values, field);
+      const message = wantsNumber(issue) && hasComma(typed) ? commaSentence(typed) : issue.message;
+      errors[field] ??= { type: issue.code, message };
     }
     return { values: {}, errors: toNestErrors(errors, options) };
   };
+}
+
+function wantsNumber(issue: z.core.$ZodIssue): boolean {
+  return issue.code === 'invalid_type' && issue.expected === 'number';
+}
+
+/** The schema sees no more than that there was no number; what was typed tells why. */
+function hasComma(typed: unknown): typed is string {
+  if (typeof typed !== 'string') return false;
+  const number = parseTypedNumber(typed);
+  return !number.ok && number.fault === 'comma';
 }
