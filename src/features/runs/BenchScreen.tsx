@@ -1,4 +1,4 @@
-import { useEffect, useRef, useState } from 'react';
+import { useEffect, useLayoutEffect, useRef, useState } from 'react';
 import type { Run } from '../../../shared/schemas/runs';
 import type { Version } from '../../../shared/schemas/versions';
 import { useBenchTheme } from '../../app/theme';
@@ -48,6 +48,8 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
   const plates = content.bench.plates;
   const [keeping] = useState(() => benchKeeping(user.id, runId));
   const [store] = useState<BenchStore>(() => createBenchStore(keeping, plates.length));
+  // Before anything is painted, so that no press meets a confirmation that no longer holds.
+  useLayoutEffect(() => store.getState().meet(run), [store, run]);
   const bench = useBench(run, content, store);
   const sending = useSending(lab.id, runId, store, keeping);
   const runState = useRunState(lab.id, runId);

@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { useEffect } from 'react';
 import { useParams } from 'react-router-dom';
 import { useLab } from '../labs';
 import { versionQuery } from '../versions';
@@ -14,7 +15,19 @@ import { RunRecord } from './RunRecord';
 export function RunPage() {
   const { lab } = useLab();
   const { runId = '' } = useParams();
-  const run = useQuery(runQuery(lab.id, runId));
+  // Another tab or tablet may have recorded: whoever comes back to this one learns of it at once, however fresh it is.
+  const run = useQuery({
+    ...runQuery(lab.id, runId),
+    refetchOnWindowFocus: 'always',
+    refetchOnMount: 'always',
+  });
+  const { refetch } = run;
+  useEffect(() => {
+    // Two windows beside each other are both visible all the time: only the focus changes.
+    const comesBack = (): void => void refetch();
+    window.addEventListener('focus', comesBack);
+    return () => window.removeEventListener('focus', comesBack);
+  }, [refetch]);
   const summary = run.data?.summary;
   const version = useQuery({
     ...versionQuery(lab.id, summary?.protocolId ?? '', String(summary?.versionNumber ?? '')),

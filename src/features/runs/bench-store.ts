@@ -1,5 +1,5 @@
 import { createStore } from 'zustand';
-import type { RecordReading } from '../../../shared/schemas/runs';
+import type { RecordReading, Run } from '../../../shared/schemas/runs';
 import type { ViewedFrom } from '../../components/dial-words';
 import {
   type BenchCursor,
@@ -8,6 +8,7 @@ import {
   type KeptEntry,
   type WaitingReading,
 } from './kept-entry';
+import { lastSequence, onlyOwnSince, overtaken } from './overtaken';
 import type { TurnedSince } from './standing-dials';
 
 interface OpenedWith {
@@ -29,7 +30,10 @@ export interface BenchState extends KeptEntry {
   readonly stand: (side: ViewedFrom) => void;
   /** Puts a reading in the queue to the server and opens the next setting. */
   readonly record: (waiting: WaitingReading, nextSetting: number, turnedSince: TurnedSince | null) => void;
-  readonly acknowledged: (key: string) => void;
+  /** With the run as the server answered it; without, where another tab was answered. */
+  readonly acknowledged: (key: string, run?: Run) => void;
+  /** Takes note of what the server holds: where that is more than the entry was made over, nothing of it is confirmed any more. */
+  readonly meet: (run: Run) => void;
   /** Takes a reading that the server will not have out of the queue: the person decided so. */
   readonly discard: (key: string) => void;
 }
@@ -40,14 +44,14 @@ export function createBenchStore(keeping: BenchKeeping, plateCount: number) {
   const none = Array.from({ length: plateCount }, (): number | null => null);
   return createStore<BenchState>()((set, get) => {
     const change = (part: Partial<KeptEntry>) => {
-      const { setting, confirmedDeg, note, turnedSince, side, waiting } = { ...get(), ...part };
-      const cursor: BenchCursor = { setting, confirmedDeg, note, turnedSince, side };
+      const { setting, confirmedDeg, note, turnedSince, side, madeOver, waiting } = { ...get(), ...part };
+      const cursor: BenchCursor = { setting, confirmedDeg, note, turnedSince, side, madeOver };
       const kept = keeping.keepCursor(cursor) && waiting.every((reading) => keeping.keepReading(reading));
       set({ ...cursor, waiting, kept });
     };
-    const takeOut = (key: string) => {
+    const takeOut = (key: string, madeOver = get().madeOver) => {
       keeping.dropReading(key);
-      change({ waiting: get().waiting.filter((reading) => reading.key !== key) });
+      change({ madeOver, waiting: get().waiting.filter((reading) => reading.key !== key) });
     };
     return {
       ...emptyEntry,
@@ -84,8 +88,16 @@ export function createBenchStore(keeping: BenchKeeping, plateCount: number) {
           note: '',
           turnedSince: copied(turnedSince),
         }),
-      acknowledged: takeOut,
-      discard: takeOut,
+      acknowledged: (key, run) => {
+        const { waiting, madeOver } = get();
+        const own = waiting.find((reading) => reading.key === key);
+        const alone = run !== undefined && own !== undefined && onlyOwnSince(run, madeOver, own);
+        takeOut(key, alone ? lastSequence(run) : madeOver);
+      },
+      meet: (run) => {
+        if (lastSequence(run) > get().madeOver) change(overtaken(get(), run));
+      },
+      discard: (key) => takeOut(key),
     };
   });
 }

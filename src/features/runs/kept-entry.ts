@@ -20,6 +20,8 @@ const cursorSchema = z.strictObject({
   note: z.string(),
   turnedSince: z.strictObject({ sequence: z.int(), dialsDeg: dialsSchema }).nullable(),
   side: z.enum(['receiver', 'source']),
+  /** The number of the server's last reading that this was made over: with more there, it no longer holds. */
+  madeOver: z.int().min(0),
 });
 /** Where one person is at one run. */
 export type BenchCursor = z.infer<typeof cursorSchema>;
@@ -36,6 +38,7 @@ const emptyCursor: BenchCursor = {
   note: '',
   turnedSince: null,
   side: 'receiver',
+  madeOver: 0,
 };
 export const emptyEntry: KeptEntry = { ...emptyCursor, waiting: [] };
 

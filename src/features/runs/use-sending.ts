@@ -46,9 +46,12 @@ export function useSending(labId: string, runId: string, store: BenchStore, keep
     inFlight.current = oldest.key;
     recordReading(labId, runId, oldest.body, oldest.key)
       .then(
-        (run) => {
-          queryClient.setQueryData(runQuery(labId, runId).queryKey, run);
-          store.getState().acknowledged(oldest.key);
+        async (run) => {
+          const { queryKey } = runQuery(labId, runId);
+          // A fetch that began before this answer would put the run back to what it was without this reading.
+          await queryClient.cancelQueries({ queryKey });
+          queryClient.setQueryData(queryKey, run);
+          store.getState().acknowledged(oldest.key, run);
           setSavedAt(new Date());
           setTrouble(null);
         },

@@ -3,7 +3,8 @@ import { cleanup, screen, waitFor } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
 import { wantedDials } from '../../../src/features/runs/dial-cost';
 import { FakeApi, openBench } from './bench-harness';
-import { makeRun, makeVersion } from './fixture';
+import { id, makeRun, makeVersion } from './fixture';
+import type { Run } from '../../../shared/schemas/runs';
 
 const version = makeVersion();
 const dials = version.content.targets.map((_, index) => wantedDials(version.content, index));
@@ -200,6 +201,62 @@ describe('the bench', () => {
     expect(await screen.findByText(/did not reach the server before the run was finished/u)).toBeTruthy();
     await user.click(await button('Drop it from this device'));
     expect(Object.keys(localStorage).filter((name) => name.startsWith('quarterturn.bench'))).toEqual([]);
+  });
+
+  /** What another tablet records: the two first settings, as wanted. */
+  const elsewhere = (settings: readonly number[]): Run['readings'] =>
+    settings.map((settingIndex, index) => ({
+      id: id(800 + index),
+      sequence: index + 1,
+      settingIndex,
+      outcome: 'done',
+      dialledDeg: [...(dials[settingIndex] ?? [])],
+      note: '',
+      recordedAt: '2026-11-30T09:20:00.000Z',
+      recordedBy: 'Ines Okafor',
+    }));
+
+  test('a confirmation kept from before readings that another tablet recorded is dropped, and the first open setting opens', async () => {
+    const run = makeRun(version);
+    const first = openBench(new FakeApi(run, version));
+    await first.user.click(await button(`H-3 says ${said(0, 0)}`));
+    expect(await screen.findByText(`dialled ${said(0, 0)}`)).toBeTruthy();
+    first.unmount();
+    openBench(new FakeApi({ ...run, readings: elsewhere([0, 1]) }, version));
+    expect(await screen.findByRole('heading', { name: /Setting 3 of 4/u })).toBeTruthy();
+    expect(await button(`H-3 says ${said(2, 0)}`)).toBeTruthy();
+    expect(screen.queryByText(/^dialled /u)).toBeNull();
+  });
+
+  test.each([
+    ['focus', () => window.dispatchEvent(new Event('focus'))],
+    ['being seen again', () => document.dispatchEvent(new Event('visibilitychange', { bubbles: true }))],
+  ])('on %s a page learns what was recorded elsewhere and leaves the setting', async (_, comesBack) => {
+    const run = makeRun(version);
+    const api = new FakeApi(run, version);
+    const { user } = openBench(api);
+    await user.click(await button(`H-3 says ${said(0, 0)}`));
+    api.run = { ...run, readings: elsewhere([0]) };
+    comesBack();
+    expect(await screen.findByRole('heading', { name: /Setting 2 of 4/u })).toBeTruthy();
+    expect(screen.queryByText(/^dialled /u)).toBeNull();
+  });
+
+  test('its own reading, once acknowledged, takes no confirmation of the next setting away', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    const first = openBench(api);
+    api.failWith = 'network';
+    await confirmAll(first.user, 0);
+    await first.user.click(await button('Record and go to 2'));
+    await screen.findByText(/one reading waits on this device/u);
+    await handMoves();
+    await first.user.click(await button(`H-3 says ${said(1, 0)}`));
+    api.failWith = null;
+    window.dispatchEvent(new Event('online'));
+    await waitFor(() => expect(screen.queryByText(/one reading waits/u)).toBeNull());
+    first.unmount();
+    openBench(api);
+    expect(await screen.findByText(`dialled ${said(1, 0)}`)).toBeTruthy();
   });
 
   test('a reading that the server refuses stays, with what the server said', async () => {
