@@ -33,7 +33,7 @@ export const calibrationFormSchema = calibrationInputSchema.extend({
   measuredAt: z.iso.datetime({ offset: true, error: 'Say when it was measured: the day and the time.' }),
 });
 
-/** A new calibration starts from what holds from one to the next (wavelength, way of measuring), never from a value. */
+/** A new calibration starts from the wavelength, which holds from one to the next, and never from a value. How it was measured is written each time: a text carried over would be recorded unread. */
 export function emptyCalibration(previous: Calibration | null, now: Date): CalibrationValues {
   return {
     wavelengthNm: previous === null ? '' : typedFromNumber(previous.wavelengthNm),
@@ -41,7 +41,7 @@ export function emptyCalibration(previous: Calibration | null, now: Date): Calib
     retardanceSigmaDeg: '',
     offsetDeg: '',
     offsetSigmaDeg: '',
-    method: previous?.method ?? '',
+    method: '',
     note: '',
     measuredAt: localFieldFromDate(now),
   };

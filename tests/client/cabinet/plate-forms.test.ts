@@ -16,6 +16,7 @@ const typed = {
   retardanceSigmaDeg: '0.4',
   offsetDeg: '301.73',
   offsetSigmaDeg: '9e-2',
+  method: 'between crossed polarisers, 31 points',
 };
 
 function sentences(change: Partial<typeof typed>): readonly string[] {
@@ -35,10 +36,10 @@ describe('a calibration as it is typed', () => {
     expect(sentences({ retardanceDeg: '86,9' })).toEqual(['A retardance is a number, like 180.4.']);
   });
 
-  it('starts from the last wavelength and method, and from no value', () => {
+  it('starts from the last wavelength, and from no value and no way of measuring', () => {
     expect(emptyCalibration(plateFixture().calibration, new Date(2026, 3, 30, 10, 52))).toMatchObject({
       wavelengthNm: '810',
-      method: 'between crossed polarisers, 31 points',
+      method: '',
       retardanceDeg: '',
       offsetDeg: '',
       measuredAt: '2026-04-30T10:52',
