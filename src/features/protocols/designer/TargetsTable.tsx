@@ -1,4 +1,4 @@
-import { useEffect, useMemo, useRef, useState } from 'react';
+import { useEffect, useMemo, useRef } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
 import {
@@ -145,13 +145,19 @@ const selectedRow = 'tr[aria-selected="true"]';
 /** Moves the focus once the field that had it is gone: left alone it would fall to the page, and the next keys with it. */
 function useFocusAfter() {
   const table = useRef<HTMLTableElement>(null);
-  const [wanted, setWanted] = useState<string | null>(null);
+  const wanted = useRef<string | null>(null);
+  // After every drawing, since it is the next one that takes the field away.
   useEffect(() => {
-    if (wanted === null) return;
-    table.current?.querySelector<HTMLElement>(wanted)?.focus();
-    setWanted(null);
-  }, [wanted]);
-  return { table, focusAfter: setWanted };
+    if (wanted.current === null) return;
+    table.current?.querySelector<HTMLElement>(wanted.current)?.focus();
+    wanted.current = null;
+  });
+  return {
+    table,
+    focusAfter: (selector: string) => {
+      wanted.current = selector;
+    },
+  };
 }
 
 /** The row to come: the same row, with the same field under the caret, becomes a target with its first letter. */
