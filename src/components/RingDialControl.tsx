@@ -2,7 +2,7 @@ import { type KeyboardEvent, type PointerEvent, useId, useRef, useState } from '
 import { type DialScale, fastAxisFromDial, roundDial } from '../../shared/optics/dial';
 import { degrees, wrapSigned } from '../../shared/optics/units';
 import { formatDial } from '../lib/format/angle';
-import { parseTypedNumber } from '../lib/format/parse-number';
+import { commaSentence, parseTypedNumber } from '../lib/format/parse-number';
 import { Button } from './Button';
 import { dialName } from './dial-words';
 import { NumberField } from './NumberField';
@@ -32,6 +32,23 @@ function keyStep(key: string, shift: boolean): number | null {
       return null;
   }
 }
+
+/** What is wrong with a reading as it is typed: short, for it stands under a narrow field. */
+function faultOf(typed: string, readingDeg: number, resolutionDeg: number): string | undefined {
+  const parsed = parseTypedNumber(typed);
+  if (!parsed.ok) {
+    return parsed.fault === 'comma'
+      ? commaSentence(typed)
+      : `Write a number, like ${formatDial(readingDeg, resolutionDeg)}.`;
+  }
+  if (parsed.value >= 0 && parsed.value < 360) return undefined;
+  return `Write a number from 0 to ${formatDial(360 - resolutionDeg, resolutionDeg)}.`;
+}
+
+/** The field's label, box and fault as cells of the grid that the two buttons stand in. */
+const fieldCells =
+  'contents [&>label]:col-start-2 [&>label]:row-start-1 [&>input]:col-start-2 [&>input]:row-start-2 ' +
+  '[&>p]:col-span-3 [&>p]:col-start-1 [&>p]:row-start-3 [&>p]:w-0 [&>p]:min-w-full [&>p]:whitespace-normal';
 
 /** A ring that can be turned: by hand, by the arrow keys, by − and + buttons, or by writing the number. */
 export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: RingDialControlProps) {
@@ -71,15 +88,6 @@ export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: 
     const number = parseTypedNumber(text);
     if (number.ok && number.value >= 0 && number.value < 360) turnTo(number.value);
   };
-  const parsed = typed === null ? null : parseTypedNumber(typed);
-  const outside = parsed?.ok === true && (parsed.value < 0 || parsed.value >= 360);
-  const fault =
-    parsed === null || (parsed.ok && !outside)
-      ? undefined
-      : outside
-        ? 'A dial reads from 0 up to 360. Write a number in that range.'
-        : 'This is no number. Write the reading in degrees, like 187.0.';
-
   const fastAxis = fastAxisFromDial(degrees(readingDeg), scale);
   return (
     <div className="inline-flex flex-col items-center gap-2">
@@ -107,7 +115,8 @@ export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: 
       >
         <RingDial {...ring} scale={scale} readingDeg={readingDeg} />
       </div>
-      <div className="flex items-end gap-2">
+      {/* The fault has a row of its own under all three, as wide as they are, so that it wraps and moves none of them. */}
+      <div className="grid grid-cols-[auto_8rem_auto] items-end gap-x-2">
         <Button
           aria-label={`${name} dial ${formatDial(resolution, resolution)}° less`}
           onClick={() => {
@@ -119,9 +128,9 @@ export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: 
         <NumberField
           id={fieldId}
           label={`${name} dial, degrees`}
-          className="w-32"
+          className={fieldCells}
           value={typed ?? formatDial(readingDeg, resolution)}
-          fault={fault}
+          fault={typed === null ? undefined : faultOf(typed, readingDeg, resolution)}
           onChange={(event) => {
             write(event.currentTarget.value);
           }}

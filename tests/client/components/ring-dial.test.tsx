@@ -151,4 +151,19 @@ describe('a ring as a control', () => {
     expect(field.getAttribute('aria-invalid')).toBe('true');
     expect(screen.getByRole('slider').getAttribute('aria-valuenow')).toBe('83.5');
   });
+
+  it.each([
+    ['', 'Write a number, like 187.0.'],
+    ['187,5', 'Write a point in place of the comma: 187.5.'],
+    ['360', 'Write a number from 0 to 359.9.'],
+  ])('says of %j in its field what to write, and keeps the reading', async (text, sentence) => {
+    const user = userEvent.setup();
+    render(<Held from={187} />);
+    const field = screen.getByRole('textbox', { name: 'Q-B dial, degrees' });
+    await user.clear(field);
+    // Pasted whole: a number that is typed turns the dial at each digit.
+    if (text !== '') await user.paste(text);
+    expect(screen.getByText(sentence).id).toBe(field.getAttribute('aria-describedby'));
+    expect(screen.getByRole('slider').getAttribute('aria-valuenow')).toBe('187');
+  });
 });
