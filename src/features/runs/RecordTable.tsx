@@ -36,7 +36,7 @@ export function RecordTable({ run, content }: RecordTableProps) {
               </th>
             ))}
             <th scope="col" className={head}>
-              1 − F of what was dialled, then expected with all σ, 5 % to 95 %
+              1 − F of what was dialled; the bar is 5 % to 95 % with all σ
             </th>
             <th scope="col" className={head}>
               note or reason
@@ -128,9 +128,9 @@ function RecordRow({ content, index, reading, replaced }: RecordRowProps) {
   );
 }
 
-/** 1 − F of the dials with the plates as calibrated, then what every σ makes of it against the tolerance. */
+/** 1 − F of the dials with the plates as calibrated, as a number and at its place on the axis; the bar is what every σ makes of it. */
 function Made({ made, tolerance }: { readonly made: DialledExpectation; readonly tolerance: number }) {
-  const interval = { value: made.expected, low: made.low, high: made.high };
+  const interval = { value: made.infidelity, low: made.low, high: made.high };
   const verdict = fidelityVerdict(interval, tolerance);
   return (
     <div className="flex flex-wrap items-center gap-x-4 gap-y-1">

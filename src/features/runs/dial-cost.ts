@@ -17,13 +17,12 @@ export function madeOf(
 export interface DialledExpectation {
   /** 1 − F of these dials with the plates exactly as calibrated. */
   readonly infidelity: number;
-  /** First-order expectation under every σ that the version froze, with its 5 % and 95 % points. */
-  readonly expected: number;
+  /** 5 % and 95 % points of 1 − F, to first order, under every σ that the version froze. */
   readonly low: number;
   readonly high: number;
 }
 
-/** What these dials are expected to make of one target under the frozen σ; null when that can't be worked out. */
+/** What these dials make of one target, and the range that the frozen σ leave it; null when that can't be worked out. */
 export function dialledExpectation(
   content: VersionContent,
   settingIndex: number,
@@ -48,7 +47,6 @@ export function dialledExpectation(
   );
   return {
     infidelity,
-    expected: budget.expectedInfidelity,
     low: budget.expectedLow,
     high: budget.expectedHigh,
   };

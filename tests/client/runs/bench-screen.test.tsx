@@ -1,9 +1,10 @@
 // @vitest-environment jsdom
-import { cleanup, screen, waitFor } from '@testing-library/react';
+import { cleanup, screen, waitFor, within } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
-import { wantedDials } from '../../../src/features/runs/dial-cost';
+import { madeOf, wantedDials } from '../../../src/features/runs/dial-cost';
 import { FakeApi, openBench } from './bench-harness';
 import { id, makeRun, makeVersion } from './fixture';
+import { infidelityAscii } from '../../../src/lib/format/fidelity';
 import type { Run } from '../../../shared/schemas/runs';
 
 const version = makeVersion();
@@ -305,6 +306,13 @@ describe('the bench', () => {
       await screen.findByRole('heading', { name: /Run 231 of Tetrahedron, signal arm, finished/u }),
     ).toBeTruthy();
     expect(screen.getByText('skipped: “shutter stuck”')).toBeTruthy();
+    // The chip's point stands at the number beside it: 1 − F of what was dialled.
+    const made = infidelityAscii(madeOf(version.content, 1, dials[1] ?? []) ?? NaN).replace('-', '\u2212');
+    expect(
+      within(screen.getByRole('row', { name: /t1/u })).getByRole('img', {
+        name: (words) => words.startsWith(`1 − F ${made},`),
+      }),
+    ).toBeTruthy();
   });
 
   test('leaving a run in progress asks once', async () => {
