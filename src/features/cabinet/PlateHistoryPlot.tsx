@@ -2,7 +2,7 @@ import type { Calibration } from '../../../shared/schemas/cabinet';
 import { wrapSigned } from '../../../shared/optics/units';
 import { formatDate, formatUncertain } from '../../lib/format';
 import { monthMarks, type PlotScale, plotScale } from './plot-scale';
-import { useWidth } from './use-width';
+import { useWidth } from '../../lib/use-width';
 
 interface Point {
   readonly at: number;

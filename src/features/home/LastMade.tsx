@@ -1,17 +1,21 @@
 import type { LastMade } from '../../../shared/schemas/home';
+import { classNames } from '../../components/class-names';
 import { FidelityChip } from '../../components/FidelityChip';
 import { fidelityVerdict } from '../../components/fidelity-verdict';
 import { Scientific } from '../../components/Scientific';
 import { TextLink } from '../../components/TextLink';
 import { formatShortDate } from '../../lib/format';
+import { useWidth } from '../../lib/use-width';
 import { useLab } from '../labs';
 import { sharedAxis } from './shared-axis';
 
-const axisWidth = 234;
+const deskAxisWidth = 234;
 
 /** The worst target of each protocol's last run on one axis, so that the protocols can be compared. */
 export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] }) {
   const { lab } = useLab();
+  // On a phone the axis has the whole column, so its width is what the head's line is given.
+  const [head, axisWidth] = useWidth<HTMLParagraphElement>(deskAxisWidth);
   const axis = sharedAxis(items);
   const [worst, best] = axis;
   // The last mark's place belongs to the word that says which way is better.
@@ -27,14 +31,15 @@ export function LastMadeAxis({ items }: { readonly items: readonly LastMade[] })
           <BracketSign /> is the tolerance
         </p>
         <p
-          className="text-xs text-ink-2 relative h-4 shrink-0"
-          style={{ width: axisWidth }}
+          ref={head}
+          className="text-xs text-ink-2 relative h-4 w-58.5 shrink-0 max-sm:w-full"
           aria-hidden="true"
         >
-          {marks.map((power) => (
+          {marks.map((power, index) => (
             <span
               key={power}
-              className="absolute -translate-x-1/2"
+              // Centred on its tick, the first number would stand half outside the column.
+              className={classNames('absolute -translate-x-1/2', index === 0 && 'max-sm:translate-x-0')}
               style={{ left: ((worst - power) / (worst - best)) * axisWidth }}
             >
               <PowerOfTen power={power} />
