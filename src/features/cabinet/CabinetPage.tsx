@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { useNavigate, useParams, useSearchParams } from 'react-router-dom';
-import { BeamEmpty } from '../../components/BeamState';
+import { BeamEmpty, BeamWrong } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
 import { useCommands } from '../../lib/commands';
 import { formatLongDate } from '../../lib/format';
@@ -12,6 +12,7 @@ import { PlateSheet } from './PlateSheet';
 import { PlateTable } from './PlateTable';
 import { PlateTray } from './PlateTray';
 import { platesQuery } from './queries';
+import { whoMay } from './who-may';
 
 /** "12 plates, two of them retired." */
 function countWords(all: number, retired: number): string {
@@ -30,6 +31,7 @@ export function Component() {
   const items = plates.data?.items ?? [];
   const tray = items.filter(({ id, retiredAt }) => retiredAt === null || id === plateId);
   const adds = search.get('do') === 'add' && may('cabinet.write');
+  const refusal = whoMay(search.get('do'), may);
   const asTable = search.get('view') === 'table';
   const open = adds || asTable ? undefined : (tray.find(({ id }) => id === plateId) ?? tray[0]);
   const base = `/labs/${lab.id}/cabinet`;
@@ -76,6 +78,11 @@ export function Component() {
           )}
         </nav>
       </header>
+      {refusal !== null && (
+        <BeamWrong title={refusal} className="mb-6">
+          Ask the lab’s lead for that role.
+        </BeamWrong>
+      )}
       {adds ? (
         <section aria-labelledby="new-plate" className="border-ink border-t-[1.5px] pt-5">
           <h2 id="new-plate" className="text-title mb-5">
