@@ -11,11 +11,14 @@ import { VersionsTable } from './VersionsTable';
 export function Component() {
   const { lab } = useLab();
   const versions = useInfiniteQuery(labVersionsQuery(lab.id));
-  useTitle('Versions');
+  useTitle('Review');
   const all = versions.data?.pages.flatMap(({ items }) => items) ?? [];
   return (
     <>
-      <h1 className="m-0 pt-3 text-title">Versions</h1>
+      <div className="flex flex-wrap items-baseline gap-x-4 pt-3">
+        <h1 className="m-0 text-title">Review</h1>
+        <p className="m-0 text-ink-2">every version saved in this lab, newest first</p>
+      </div>
       {versions.isPending && <BeamWorking doing="Fetching the versions" />}
       {versions.isError && (
         <BeamWrong title="The versions could not be fetched">{versions.error.message}</BeamWrong>

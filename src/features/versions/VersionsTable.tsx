@@ -50,7 +50,7 @@ export function VersionsTable({ labId, versions, namesProtocol }: VersionsTableP
                 {version.protocolName}
               </th>
             )}
-            <td className="pr-6">
+            <td className="py-3 pr-6">
               <TextLink to={`/labs/${labId}/plan/${version.protocolId}/versions/${version.number}`}>
                 {version.message}
               </TextLink>
