@@ -13,6 +13,8 @@ interface ScaleWindowProps {
 
 const halfDeg = 9;
 const width = 840;
+/** How wide a character of the engraved numbers is. */
+const characterPx = 11.4;
 const perDeg = width / (2 * halfDeg);
 
 /**
@@ -31,6 +33,12 @@ export function ScaleWindow({
   const first = Math.ceil((readingDeg - halfDeg) * 2);
   const last = Math.floor((readingDeg + halfDeg) * 2);
   const marks = Array.from({ length: last - first + 1 }, (_, index) => (first + index) / 2);
+  const numbered = marks.filter((mark) => mark % 5 === 0 && Math.abs(mark - readingDeg) < 8.3);
+  const numberOf = (mark: number): string => String(wrap(mark, 360));
+  // The index line stops above a number and goes on below it, so that none is struck through.
+  const overNumber = numbered.some(
+    (mark) => Math.abs(x(mark) - width / 2) < (numberOf(mark).length * characterPx) / 2 + 4,
+  );
   const tick = (dialDeg: number, height: number): string => `M${x(dialDeg).toFixed(2)} 97V${97 - height}`;
   return (
     <svg
@@ -64,21 +72,16 @@ export function ScaleWindow({
         />
         <path d={`M0 97H${width}`} strokeWidth="1.4" />
       </g>
-      {marks
-        .filter((mark) => mark % 5 === 0 && Math.abs(mark - readingDeg) < 8.3)
-        .map((mark) => (
-          <text
-            key={mark}
-            x={x(mark)}
-            y="62"
-            textAnchor="middle"
-            fontSize="19"
-            className="fill-ink font-mono"
-          >
-            {wrap(mark, 360)}
-          </text>
-        ))}
-      <path d={`M${width / 2} 20V97`} strokeWidth="2.6" className="stroke-act" />
+      {numbered.map((mark) => (
+        <text key={mark} x={x(mark)} y="62" textAnchor="middle" fontSize="19" className="fill-ink font-mono">
+          {numberOf(mark)}
+        </text>
+      ))}
+      <path
+        d={overNumber ? `M${width / 2} 20V43M${width / 2} 68V97` : `M${width / 2} 20V97`}
+        strokeWidth="2.6"
+        className="stroke-act"
+      />
       <path d={`M${width / 2} 28L${width / 2 - 9} 14H${width / 2 + 9}Z`} className="fill-act" />
     </svg>
   );
