@@ -14,6 +14,8 @@ interface BenchFootProps {
   readonly bench: Bench;
   readonly content: VersionContent;
   readonly shape: BenchShape;
+  /** Said in the buttons’ place to somebody who may not record; null to everybody else. */
+  readonly readOnly: string | null;
   /** What the one button says; null when there is nothing to confirm. */
   readonly mainLabel: string | null;
   readonly onMain: () => void;
@@ -28,6 +30,7 @@ export function BenchFoot({
   bench,
   content,
   shape,
+  readOnly,
   mainLabel,
   onMain,
   onOther,
@@ -62,6 +65,7 @@ export function BenchFoot({
           <u>all settings</u>
         </span>
       </button>
+      {readOnly !== null && <p className="bench-read-only">{readOnly}</p>}
       {onTrouble !== null && (
         <Button
           size="far"

@@ -197,6 +197,9 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
           bench={bench}
           content={content}
           shape={shape}
+          readOnly={
+            mayRecord ? null : `You are reading run ${run.summary.number}; nothing can be recorded from here.`
+          }
           mainLabel={mainLabel}
           onMain={onMain}
           onOther={onOther}
