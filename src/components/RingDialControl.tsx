@@ -119,6 +119,7 @@ export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: 
       <div className="grid grid-cols-[auto_8rem_auto] items-end gap-x-2">
         <Button
           aria-label={`${name} dial ${formatDial(resolution, resolution)}° less`}
+          className="col-start-1 row-start-2"
           onClick={() => {
             turnBy(-resolution);
           }}
@@ -140,6 +141,7 @@ export function RingDialControl({ name, scale, readingDeg, onChange, ...ring }: 
         />
         <Button
           aria-label={`${name} dial ${formatDial(resolution, resolution)}° more`}
+          className="col-start-3 row-start-2"
           onClick={() => {
             turnBy(resolution);
           }}
