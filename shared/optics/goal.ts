@@ -1,0 +1,32 @@
+import { compose, conjugate, type Quaternion } from './quaternion';
+import { infidelityBetween, normaliseStokes, type Stokes } from './stokes';
+
+/**
+ * What a stack of plates is asked to do, canonical frame. prepare: take one state to another. apply: be one unitary, up to
+ * its sign. Analysing a state (pass it through a polariser, block its opposite) is preparing the polariser's own state from
+ * it: `analyserGoal`.
+ */
+export type Goal =
+  | { readonly kind: 'prepare'; readonly input: Stokes; readonly target: Stokes }
+  | { readonly kind: 'apply'; readonly target: Quaternion };
+
+/** The goal of a stack before a polariser that passes `polariser`, when `state` is to pass and its opposite to be blocked. */
+export function analyserGoal(state: Stokes, polariser: Stokes): Goal {
+  return { kind: 'prepare', input: state, target: polariser };
+}
+
+/**
+ * 1 − F of a turn of the whole sphere against a goal. For a state 1 − F = ¼|p − t|². For a unitary it is the average gate
+ * infidelity ⅔ sin²(ε/2) of the turn by ε that is left between them (references.md 5; Horodecki³ 1999, Nielsen 2002);
+ * as a sum of squares of the vector part, so that 1e-30 still means something.
+ */
+export function goalInfidelity(goal: Goal, turn: Quaternion, reached: Stokes): number {
+  if (goal.kind === 'prepare') return infidelityBetween(reached, normaliseStokes(goal.target));
+  return (2 / 3) * unitaryShortfall(turn, goal.target);
+}
+
+/** sin²(ε/2) of the turn by ε between two unit quaternions, the same for q and −q. */
+export function unitaryShortfall(achieved: Quaternion, wanted: Quaternion): number {
+  const { x, y, z } = compose(achieved, conjugate(wanted));
+  return Math.min(1, x * x + y * y + z * z);
+}
