@@ -1,0 +1,30 @@
+export { birefringence, birefringenceDispersion, fittedBirefringence } from './birefringence';
+export {
+  compareWithModel,
+  DESIGN_TEMPERATURE_C,
+  type DesignedRetardance,
+  designRetardance,
+  type ModelComparison,
+  type ModelledRetardance,
+  modelRetardance,
+  type PlateDesign,
+} from './design';
+export {
+  type Material,
+  MATERIAL_IDS,
+  type MaterialId,
+  type Ray,
+  type TemperatureCoefficient,
+} from './material';
+export { materialOf, MATERIALS } from './materials';
+export { type Dispersion, indexDispersion, refractiveIndex, WavelengthRangeError } from './refractive-index';
+export {
+  type MeasuredRetardance,
+  type ModelledPlate,
+  type PlateConstruction,
+  retardanceAt,
+  SAME_TEMPERATURE_K,
+  SAME_WAVELENGTH_NM,
+  type Surroundings,
+  type UsedRetardance,
+} from './retardance-model';
