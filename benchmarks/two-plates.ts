@@ -14,7 +14,12 @@ function stream(seed: number): () => number {
 
 const DEGREE = Math.PI / 180;
 
-export function problems(count: number): readonly PrepareProblem[] {
+/** A problem whose plates are two. */
+export interface TwoPlateProblem extends PrepareProblem {
+  readonly retardancesRad: readonly [Radians, Radians];
+}
+
+export function problems(count: number): readonly TwoPlateProblem[] {
   const random = stream(5);
   return Array.from({ length: count }, () => {
     const s3 = 1.9 * random() - 0.95;
@@ -29,7 +34,7 @@ export function problems(count: number): readonly PrepareProblem[] {
 
 /** One forward evaluation: both plates at some angles, from angles in radians to the Stokes vector behind them. */
 export function forward(
-  { input, retardancesRad: [first, second] }: PrepareProblem,
+  { input, retardancesRad: [first, second] }: TwoPlateProblem,
   a: Radians,
   b: Radians,
 ): Stokes {
@@ -40,7 +45,7 @@ export function forward(
 }
 
 /** All settings by least squares from many starts, the way it is done without an elimination. Returns their number. */
-export function multiStart(problem: PrepareProblem, starts: number): number {
+export function multiStart(problem: TwoPlateProblem, starts: number): number {
   const random = stream(9);
   const found: (readonly [number, number])[] = [];
   for (let start = 0; start < starts; start += 1) {
@@ -57,7 +62,7 @@ function same(one: number, other: number): boolean {
 }
 
 // Levenberg–Marquardt with a Jacobian by differences; null where it stops short of the target.
-function leastSquares(problem: PrepareProblem, a0: number, b0: number): readonly [number, number] | null {
+function leastSquares(problem: TwoPlateProblem, a0: number, b0: number): readonly [number, number] | null {
   const { target } = problem;
   const residual = (a: number, b: number): Stokes => {
     const [s1, s2, s3] = forward(problem, radians(a), radians(b));
@@ -86,6 +91,6 @@ function leastSquares(problem: PrepareProblem, a0: number, b0: number): readonly
   return null;
 }
 
-export function solveAll(list: readonly PrepareProblem[]): number {
+export function solveAll(list: readonly TwoPlateProblem[]): number {
   return list.reduce((sum, problem) => sum + prepare(problem).solutions.length, 0);
 }

@@ -28,7 +28,8 @@ export {
 } from './retarder';
 export * from './stokes';
 export * from './units';
-export { prepare, type Preparation, type PreparedSetting, type PrepareProblem } from './solver/prepare';
+export { MOST_PLATES, prepare, type PrepareProblem } from './solver/prepare';
+export type { Family, Setting, Solved } from './solver/setting';
 export {
   type DialledState,
   evaluateDials,

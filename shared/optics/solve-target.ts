@@ -46,7 +46,7 @@ export interface SettingSolution {
 }
 
 export interface SolvedTarget {
-  /** As in `Preparation`. */
+  /** As in `Solved`. */
   readonly kind: 'exact' | 'nearest' | 'family';
   /** Angle on the sphere from the target to the closest reachable state; 0 when it can be reached. */
   readonly shortfallDeg: Degrees;
@@ -74,7 +74,7 @@ export function solveTarget(problem: TargetProblem): SolvedTarget {
   if (first === undefined || second === undefined || third !== undefined) {
     throw new PlateCountError(problem.plates.length);
   }
-  const { kind, shortfallRad, freePlate, solutions } = prepare({
+  const { kind, shortfallRad, family, solutions } = prepare({
     input: problem.input,
     target: problem.target,
     retardancesRad: [toRadians(degrees(first.retardanceDeg)), toRadians(degrees(second.retardanceDeg))],
@@ -82,7 +82,12 @@ export function solveTarget(problem: TargetProblem): SolvedTarget {
   const settings = solutions.map(({ fastAxesRad, infidelity }) =>
     settingSolution(problem, fastAxesRad, infidelity),
   );
-  return { kind, shortfallDeg: toDegrees(shortfallRad), freePlate, solutions: settings.sort(byExpectation) };
+  return {
+    kind,
+    shortfallDeg: toDegrees(shortfallRad),
+    freePlate: family?.freePlates[0] ?? null,
+    solutions: settings.sort(byExpectation),
+  };
 }
 
 function settingSolution(

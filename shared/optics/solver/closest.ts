@@ -1,6 +1,7 @@
 import { type CirclePoint, EIGHTHS } from './trig-quadratic';
-import { innerMaxima, type Meeting, turned, type TwoPlates } from './two-plates';
+import { innerMaxima, type Meeting, type TwoPlates } from './two-plates';
 import { curveAt } from './turn-curve';
+import { turned } from './turned';
 import { sincos } from '../elementary';
 
 /** Every local optimum of the fidelity where the two curves don't meet. */

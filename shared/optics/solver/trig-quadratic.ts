@@ -89,10 +89,22 @@ export function trigZeros(f: TrigQuadratic): TrigZeros {
 // A function this flat, beside values of order 1, has no maximum but rounding.
 const FLAT = 1e-14;
 
+export function trigIsFlat(f: TrigQuadratic): boolean {
+  return trigSize(trigDerivative(f)) < FLAT;
+}
+
 /** Where f is largest in its neighbourhood: one or two points; the point u = 0 stands for a constant. */
 export function trigMaxima(f: TrigQuadratic): readonly CirclePoint[] {
+  if (trigIsFlat(f)) return [{ cos: 1, sin: 0 }];
   const slope = trigDerivative(f);
-  if (trigSize(slope) < FLAT) return [{ cos: 1, sin: 0 }];
   const bend = trigDerivative(slope);
-  return trigZeros(slope).zeros.filter((point) => trigValue(bend, point) < 0);
+  const { zeros, turningPoints } = trigZeros(slope);
+  const maxima = zeros.filter((point) => trigValue(bend, point) < 0);
+  if (maxima.length > 0) return maxima;
+  // A maximum so blunt that its bend is rounding: the highest of what was found.
+  let highest: CirclePoint = { cos: 1, sin: 0 };
+  for (const point of [...turningPoints, ...zeros]) {
+    if (trigValue(f, point) > trigValue(f, highest)) highest = point;
+  }
+  return [highest];
 }

@@ -8,6 +8,7 @@ import {
   trigZeros,
 } from './trig-quadratic';
 import { curveAt, type CurvePoint, newCurvePoint, type TurnCurve, turnCurve } from './turn-curve';
+import { turned } from './turned';
 
 /**
  * Two plates between an input and a target, as R_outer(u) · input = R_inner(v)⁻¹ · target: two closed curves on the
@@ -157,15 +158,4 @@ export function polish(plates: TwoPlates, startU: CirclePoint, startV: CirclePoi
     v = turned(v, -((aa + damping) * gb - ab * ga) / det);
   }
   return best ?? { u, v, infidelity: 1 };
-}
-
-const LONGEST_STEP = 0.3;
-
-/** The point turned by a small angle (its arctangent, exactly: no trigonometry needed on the way to a root). */
-export function turned({ cos, sin }: CirclePoint, angle: number): CirclePoint {
-  const by = angle > LONGEST_STEP ? LONGEST_STEP : angle < -LONGEST_STEP ? -LONGEST_STEP : angle;
-  const c = cos - by * sin;
-  const s = sin + by * cos;
-  const scale = 1 / Math.sqrt(c * c + s * s);
-  return { cos: c * scale, sin: s * scale };
 }
