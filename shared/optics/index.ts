@@ -9,6 +9,7 @@ export {
 export * from './convention';
 export { CONVENTION_SETS, type ConventionSet } from './convention-sets';
 export * from './dial';
+export * from './dispersion';
 export * from './ellipse';
 export * from './expression';
 export { type JonesVector, jonesNorm, normaliseJones, orthogonalJones } from './jones';
@@ -26,6 +27,18 @@ export {
   stackQuaternion,
   type Turn,
 } from './retarder';
+export {
+  flagOf,
+  fullTurnSign,
+  pancharatnamPhase,
+  type PathPhases,
+  pathPhases,
+  phaseAlong,
+  type PhasePoint,
+  type Phases,
+  type PlatePhases,
+  showPhases,
+} from './phase';
 export * from './stokes';
 export * from './units';
 export { MOST_PLATES, prepare, type PrepareProblem } from './solver/prepare';
