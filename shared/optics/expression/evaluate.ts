@@ -1,44 +1,30 @@
-import { type Convention, translateJones } from '../convention';
-import { LARGEST_ANGLE_RAD, cos, sin } from '../elementary';
+import { translateJones } from '../convention';
 import { jonesNorm, type JonesVector } from '../jones';
+import { squareRoot, wholePower } from './complex';
+import { call, exponentiate } from './evaluate-call';
+import { evaluateProduct } from './evaluate-product';
+import { evaluateSum } from './evaluate-sum';
+import { axisVector, gate, shortestTurn } from './gates';
+import { adjoint, fromEntries, type Polar, wholeOperatorPower } from './operator';
+import { ExpressionError } from './span';
+import { ketState, namedState } from './states';
+import type { Node } from './tree';
+import { unitaryPart } from './unitary-text';
 import {
-  add,
-  type Complex,
-  divide,
-  exponential,
-  isFinite,
-  multiply,
-  negative,
-  squareRoot,
-  wholePower,
-} from './complex';
-import { ExpressionError, type Span } from './span';
-import { calledState, ketState, namedState } from './states';
-import type { Factor, Node, Term } from './tree';
-
-/** A number on the way to a state. An angle has a unit; a multiple of pi counts as one, since pi names radians. */
-export interface NumberValue {
-  readonly kind: 'number';
-  readonly value: Complex;
-  readonly unit: 'none' | 'pi' | 'angle';
-}
-
-/** A state in the phase convention in which it is written, not normalised. */
-export interface StateValue {
-  readonly kind: 'state';
-  readonly written: JonesVector;
-}
-
-export type Value = NumberValue | StateValue;
-
-/** What evaluation needs besides the tree. */
-export interface Scope {
-  readonly source: string;
-  readonly convention: Convention;
-}
-
-// A sum of states this small beside its largest term is what rounding leaves of nothing: H + V − H − V.
-const CANCELLED = 1e-13;
+  capital,
+  checkFinite,
+  kindOf,
+  number,
+  operator,
+  type OperatorValue,
+  plainNumber,
+  real,
+  realOf,
+  type Scope,
+  state,
+  textOf,
+  type Value,
+} from './values';
 
 /**
  * The state that a tree describes, in the canonical frame, not normalised.
@@ -46,11 +32,19 @@ const CANCELLED = 1e-13;
  */
 export function evaluateState(tree: Node, scope: Scope): JonesVector {
   const value = evaluate(tree, scope);
-  if (value.kind === 'number') {
-    const shown = value.unit === 'angle' ? 'an angle' : 'a number';
+  if (value.kind === 'operator') {
+    const text = textOf(tree, scope);
+    const acting = tree.kind === 'sum' || tree.kind === 'turn' ? `(${text}) H` : `${text} H`;
     throw new ExpressionError(
       tree.span,
-      `This is ${shown}, not a state. Write the state it belongs to, such as H or |+i>.`,
+      'This is a unitary, not a state. Write the state it acts on behind it, such as hadamard H.',
+      acting,
+    );
+  }
+  if (value.kind !== 'state') {
+    throw new ExpressionError(
+      tree.span,
+      `This is ${kindOf(value)}, not a state. Write the state it belongs to, such as H or |+i>.`,
     );
   }
   const norm = jonesNorm(value.written);
@@ -60,253 +54,174 @@ export function evaluateState(tree: Node, scope: Scope): JonesVector {
   return translateJones(value.written, scope.convention);
 }
 
+/**
+ * The unitary that a tree describes, as written, with the factor that was taken out of it.
+ * @throws ExpressionError at the part that is no unitary, has no unit or overflows.
+ */
+export function evaluateUnitary(tree: Node, scope: Scope): Polar {
+  const value = evaluate(tree, scope);
+  if (value.kind === 'operator') {
+    if (value.unit === 'angle') {
+      throw new ExpressionError(tree.span, 'An angle stands before this unitary. Write exp(-i …) of both.');
+    }
+    return unitaryPart(value.written, tree.span, tree.kind === 'matrix' ? 'This matrix' : 'This');
+  }
+  if (value.kind === 'state') throw notUnitary(tree, scope);
+  throw new ExpressionError(
+    tree.span,
+    `This is ${kindOf(value)}, not a unitary. Write the gate it belongs to, such as X, identity or rotate(z, 45deg).`,
+  );
+}
+
+function notUnitary(tree: Node, scope: Scope): ExpressionError {
+  const text = textOf(tree, scope);
+  if (tree.kind === 'state' && tree.name === 'H') {
+    return new ExpressionError(
+      tree.span,
+      'H is horizontal light here, a state. The gate is written hadamard.',
+      'hadamard',
+    );
+  }
+  return new ExpressionError(
+    tree.span,
+    `This is a state, not a unitary. Write what turns the light, such as X, rotate(D, 90deg) or from H to D.`,
+    `from H to ${text}`,
+  );
+}
+
 export function evaluate(node: Node, scope: Scope): Value {
   const value = evaluateUnchecked(node, scope);
-  const finite = value.kind === 'number' ? isFinite(value.value) : Number.isFinite(jonesNorm(value.written));
-  if (!finite) throw new ExpressionError(node.span, 'This is too large to compute with, or divides by zero.');
+  checkFinite(value, node.span);
   return value;
 }
 
 function evaluateUnchecked(node: Node, scope: Scope): Value {
   switch (node.kind) {
     case 'number':
-      return { kind: 'number', value: { re: node.value, im: 0 }, unit: 'none' };
+      return real(node.value);
     case 'constant':
-      if (node.name === 'i') return { kind: 'number', value: { re: 0, im: 1 }, unit: 'none' };
-      if (node.name === 'pi') return { kind: 'number', value: { re: Math.PI, im: 0 }, unit: 'pi' };
-      return { kind: 'number', value: { re: Math.E, im: 0 }, unit: 'none' };
+      if (node.name === 'i') return number({ re: 0, im: 1 });
+      if (node.name === 'pi') return number({ re: Math.PI, im: 0 }, 'pi');
+      return real(Math.E);
     case 'unit':
-      return { kind: 'number', value: { re: node.name === 'deg' ? Math.PI / 180 : 1, im: 0 }, unit: 'angle' };
+      return number({ re: node.name === 'deg' ? Math.PI / 180 : 1, im: 0 }, 'angle');
     case 'state':
-      return { kind: 'state', written: namedState(node.name, scope.convention) };
+      return state(namedState(node.name, scope.convention));
     case 'ket':
-      return { kind: 'state', written: ketState(node.label, scope.convention) };
+      return state(ketState(node.label, scope.convention));
+    case 'gate':
+      return operator(gate(node.name));
     case 'sum':
-      return evaluateSum(node.terms, scope);
+      return evaluateSum(
+        node.terms.map((term) => ({ ...term, value: evaluate(term.node, scope) })),
+        scope,
+      );
     case 'product':
-      return evaluateProduct(node.factors, scope);
+      return evaluateProduct(
+        node.factors.map((factor) => ({ ...factor, value: evaluate(factor.node, scope) })),
+        scope,
+      );
     case 'power':
       return evaluatePower(node.base, node.exponent, scope);
+    case 'dagger':
+      return operator(adjoint(plainOperator(evaluate(node.base, scope), node.base).written));
+    case 'call': {
+      const args = node.args.map((arg) => ({ node: arg, value: evaluate(arg, scope) }));
+      return call(node.name, args, node.span, scope);
+    }
     case 'column': {
-      const [a, b] = node.entries;
-      const { re: aRe, im: aIm } = plainNumber(a, scope).value;
-      const { re: bRe, im: bIm } = plainNumber(b, scope).value;
-      return { kind: 'state', written: { aRe, aIm, bRe, bIm } };
+      const [a, b] = node.entries.map((entry) => plainNumber(evaluate(entry, scope), entry.span).value);
+      if (a === undefined || b === undefined) throw new ExpressionError(node.span, 'A column has two parts.');
+      return state({ aRe: a.re, aIm: a.im, bRe: b.re, bIm: b.im });
     }
-    case 'call':
-      return evaluateCall(node, scope);
-  }
-}
-
-function evaluateCall(node: Node & { kind: 'call' }, scope: Scope): Value {
-  const [first] = node.args;
-  if (first === undefined) throw new ExpressionError(node.span, `${node.name} needs an argument.`);
-  switch (node.name) {
-    case 'sqrt': {
-      const { value, unit } = numberOf(first, scope);
-      if (unit === 'angle') throw new ExpressionError(first.span, 'An angle has no square root here.');
-      return { kind: 'number', value: squareRoot(value), unit: 'none' };
-    }
-    case 'cos':
-      return { kind: 'number', value: { re: cos(angleOf(first, scope)), im: 0 }, unit: 'none' };
-    case 'sin':
-      return { kind: 'number', value: { re: sin(angleOf(first, scope)), im: 0 }, unit: 'none' };
-    case 'exp':
-      return exponentialOf(first, scope);
-    case 'linear':
-    case 'bloch':
-    case 'ellipse': {
-      const angles = node.args.map((arg) => angleOf(arg, scope));
-      return { kind: 'state', written: calledState(node.name, angles, node.span, scope.convention) };
-    }
-    case 'stokes': {
-      const parts = node.args.map((arg) => realOf(arg, scope));
-      return { kind: 'state', written: calledState('stokes', parts, node.span, scope.convention) };
-    }
-  }
-}
-
-function evaluateSum(terms: readonly Term[], scope: Scope): Value {
-  const [first, ...rest] = terms;
-  if (first === undefined) throw new ExpressionError({ start: 0, end: 1 }, 'An empty sum has no value.');
-  let total = signed(evaluate(first.node, scope), first.negative);
-  let largest = total.kind === 'state' ? jonesNorm(total.written) : 0;
-  for (const { node, negative: minus } of rest) {
-    const next = signed(evaluate(node, scope), minus);
-    if (next.kind === 'state' && total.kind === 'state') {
-      largest = Math.max(largest, jonesNorm(next.written));
-      total = { kind: 'state', written: addStates(total.written, next.written) };
-    } else if (next.kind === 'number' && total.kind === 'number') {
-      const unit = sumUnit(total, next, first.node, node, scope);
-      total = { kind: 'number', value: add(total.value, next.value), unit };
-    } else {
-      const number = next.kind === 'number' ? node : first.node;
-      throw new ExpressionError(
-        number.span,
-        'A number can’t be added to a state. Write which state it weighs, such as 0.5 H.',
+    case 'matrix':
+      return evaluateMatrix(node, scope);
+    case 'turn':
+      return operator(
+        shortestTurn(stateOf(node.from, scope), stateOf(node.to, scope), node.span, scope.convention),
       );
-    }
+    case 'axis':
+      return { kind: 'axis', bloch: axisVector(node.name) };
+    case 'vector':
+      return evaluateVector(node, scope);
   }
-  if (total.kind === 'state' && jonesNorm(total.written) <= CANCELLED * largest) {
-    return { kind: 'state', written: { aRe: 0, aIm: 0, bRe: 0, bIm: 0 } };
-  }
-  return total;
 }
 
-function sumUnit(a: NumberValue, b: NumberValue, left: Node, right: Node, scope: Scope): NumberValue['unit'] {
-  if (a.unit === b.unit) return a.unit;
-  const bare = a.unit === 'none' ? left : b.unit === 'none' ? right : null;
-  if (bare === null) return 'angle';
-  if (a.unit === 'angle' || b.unit === 'angle') throw unitMissing(bare, scope);
-  return 'none';
+function evaluateMatrix(node: Node & { kind: 'matrix' }, scope: Scope): Value {
+  const [a, b, c, d] = node.rows.flat().map((entry) => plainNumber(evaluate(entry, scope), entry.span).value);
+  if (a === undefined || b === undefined || c === undefined || d === undefined) {
+    throw new ExpressionError(node.span, 'A matrix has two rows of two parts.');
+  }
+  const written = fromEntries(a, b, c, d);
+  checkFinite(operator(written), node.span);
+  // Here rather than at the end, so that the error stands at the matrix and not at the product it is part of.
+  unitaryPart(written, node.span, 'This matrix');
+  return operator(written);
 }
 
-function evaluateProduct(factors: readonly Factor[], scope: Scope): Value {
-  let total: Value | null = null;
-  for (const { join, node } of factors) {
-    const next = evaluate(node, scope);
-    total = total === null ? next : joined(total, next, join === '/', node.span);
-    const finite =
-      total.kind === 'number' ? isFinite(total.value) : Number.isFinite(jonesNorm(total.written));
-    if (!finite)
-      throw new ExpressionError(node.span, 'This is too large to compute with, or divides by zero.');
+function evaluateVector(node: Node & { kind: 'vector' }, scope: Scope): Value {
+  const [x = 0, y = 0, z = 0] = node.entries.map((entry) => realOf(evaluate(entry, scope), entry.span));
+  const largest = Math.max(Math.abs(x), Math.abs(y), Math.abs(z));
+  if (largest === 0) {
+    throw new ExpressionError(
+      node.span,
+      'This vector is zero and points nowhere. Write an axis such as [1, 0, 1].',
+    );
   }
-  if (total === null) throw new ExpressionError({ start: 0, end: 1 }, 'An empty product has no value.');
-  return total;
+  const [nx, ny, nz] = [x / largest, y / largest, z / largest];
+  const length = Math.sqrt(nx * nx + ny * ny + nz * nz);
+  return { kind: 'axis', bloch: [nx / length, ny / length, nz / length] };
 }
 
-function joined(left: Value, right: Value, over: boolean, span: Span): Value {
-  if (left.kind === 'number' && right.kind === 'number') {
-    const value = over ? divide(left.value, right.value) : multiply(left.value, right.value);
-    return { kind: 'number', value, unit: productUnit(left.unit, right.unit, over, span) };
+/** A state that isn't zero, where only a state will do. */
+function stateOf(node: Node, scope: Scope): JonesVector {
+  const value = evaluate(node, scope);
+  if (value.kind !== 'state') {
+    throw new ExpressionError(
+      node.span,
+      `${capital(kindOf(value))} stands here where a state is wanted: from … to … takes two states, such as from H to D.`,
+    );
   }
-  if (right.kind === 'state') {
-    if (over) throw new ExpressionError(span, 'A state can’t be divided by. Put it in front of the /.');
-    if (left.kind === 'state') {
-      throw new ExpressionError(span, 'Two states can’t be multiplied. Put + or − between them.');
-    }
-    return { kind: 'state', written: scaled(right.written, weight(left, span)) };
-  }
-  if (left.kind !== 'state') throw new ExpressionError(span, 'This product has no value.');
-  const by = weight(right, span);
-  return { kind: 'state', written: over ? dividedBy(left.written, by) : scaled(left.written, by) };
+  if (jonesNorm(value.written) === 0) throw new ExpressionError(node.span, 'Nothing is left of this state.');
+  return value.written;
 }
 
-function weight(number: NumberValue, span: Span): Complex {
-  if (number.unit === 'angle') {
-    throw new ExpressionError(span, 'An angle can’t weigh a state. Write cos(…), sin(…) or e^(i …) of it.');
+function plainOperator(value: Value, node: Node): OperatorValue {
+  if (value.kind !== 'operator') {
+    throw new ExpressionError(
+      node.span,
+      `A dagger turns a unitary back, and this is ${kindOf(value)}. Write it behind a unitary, such as S†.`,
+    );
   }
-  return number.value;
-}
-
-function productUnit(
-  left: NumberValue['unit'],
-  right: NumberValue['unit'],
-  over: boolean,
-  span: Span,
-): NumberValue['unit'] {
-  if (left === 'angle' && right === 'angle') {
-    if (over) return 'none';
-    throw new ExpressionError(span, 'This angle has a unit twice. Remove one of the units.');
-  }
-  if (right === 'angle' && over) throw new ExpressionError(span, 'An angle can’t be divided by.');
-  if (left === 'angle' || right === 'angle') return 'angle';
-  if (left === 'pi' && right === 'pi') return 'none';
-  if (over) return left === 'pi' ? 'pi' : 'none';
-  return left === 'pi' || right === 'pi' ? 'pi' : 'none';
+  if (value.unit !== 'angle') return value;
+  throw new ExpressionError(node.span, 'An angle stands before this unitary. Write exp(-i …) of both.');
 }
 
 // Above this a power of anything but 1 overflows or vanishes.
 const LARGEST_POWER = 1_000_000;
 
 function evaluatePower(base: Node, exponent: Node, scope: Scope): Value {
-  if (base.kind === 'constant' && base.name === 'e') return exponentialOf(exponent, scope);
-  const { value } = plainNumber(base, scope);
-  const power = realOf(exponent, scope);
-  if (Number.isInteger(power) && Math.abs(power) <= LARGEST_POWER) {
-    return { kind: 'number', value: wholePower(value, power), unit: 'none' };
+  if (base.kind === 'constant' && base.name === 'e') {
+    return exponentiate({ node: exponent, value: evaluate(exponent, scope) }, scope);
   }
+  const based = evaluate(base, scope);
+  const power = realOf(evaluate(exponent, scope), exponent.span);
+  const whole = Number.isInteger(power) && Math.abs(power) <= LARGEST_POWER;
+  if (based.kind === 'operator') {
+    const { written } = plainOperator(based, base);
+    if (whole) return operator(wholeOperatorPower(written, power));
+    throw new ExpressionError(
+      exponent.span,
+      'Powers of a unitary are whole numbers here, such as 2 or −1; roots are sqrtX, sqrtY and sqrtZ.',
+    );
+  }
+  const { value } = plainNumber(based, base.span);
+  if (whole) return number(wholePower(value, power));
   if (Number.isInteger(2 * power) && Math.abs(power) <= LARGEST_POWER) {
-    return { kind: 'number', value: wholePower(squareRoot(value), 2 * power), unit: 'none' };
+    return number(wholePower(squareRoot(value), 2 * power));
   }
   throw new ExpressionError(
     exponent.span,
     'Powers are whole or half numbers here, such as 2, −1 or 1/2; of e they are any number.',
   );
-}
-
-function exponentialOf(node: Node, scope: Scope): Value {
-  const { value, unit } = numberOf(node, scope);
-  if (value.im !== 0 && unit === 'none') throw unitMissing(node, scope);
-  if (value.re !== 0 && unit === 'angle') {
-    throw new ExpressionError(node.span, 'e to an angle needs the i: write e^(i 45deg).');
-  }
-  if (Math.abs(value.im) > LARGEST_ANGLE_RAD) throw tooManyTurns(node.span);
-  return { kind: 'number', value: exponential(value), unit: 'none' };
-}
-
-function numberOf(node: Node, scope: Scope): NumberValue {
-  const value = evaluate(node, scope);
-  if (value.kind === 'number') return value;
-  throw new ExpressionError(node.span, 'A state stands here where a number is wanted.');
-}
-
-function plainNumber(node: Node, scope: Scope): NumberValue {
-  const number = numberOf(node, scope);
-  if (number.unit !== 'angle') return number;
-  throw new ExpressionError(
-    node.span,
-    'An angle stands here where a plain number is wanted. Write cos(…) or sin(…) of it.',
-  );
-}
-
-function realOf(node: Node, scope: Scope): number {
-  const { value } = plainNumber(node, scope);
-  if (value.im === 0) return value.re;
-  throw new ExpressionError(node.span, 'This must be a real number, without i.');
-}
-
-function angleOf(node: Node, scope: Scope): number {
-  const { value, unit } = numberOf(node, scope);
-  if (value.im !== 0) throw new ExpressionError(node.span, 'An angle must be real, without i.');
-  if (unit === 'none') throw unitMissing(node, scope);
-  if (Math.abs(value.re) > LARGEST_ANGLE_RAD) throw tooManyTurns(node.span);
-  return value.re;
-}
-
-function tooManyTurns(span: Span): ExpressionError {
-  return new ExpressionError(span, 'This angle is many thousand turns. Write it within one turn.');
-}
-
-function unitMissing(node: Node, scope: Scope): ExpressionError {
-  const text = scope.source.slice(node.span.start, node.span.end);
-  // Behind a letter the unit needs a space, and a sum needs brackets for the unit to hold all of it.
-  const bracketed = node.kind === 'sum' && !text.startsWith('(') ? `(${text})` : text;
-  const last = bracketed.charAt(bracketed.length - 1);
-  const space = last.toLowerCase() === last.toUpperCase() ? '' : ' ';
-  const inDegrees = `${bracketed}${space}deg`;
-  const message = `${text} of what? Write ${inDegrees} or ${bracketed}${space}rad.`;
-  return new ExpressionError(node.span, message, inDegrees);
-}
-
-function signed(value: Value, minus: boolean): Value {
-  if (!minus) return value;
-  if (value.kind === 'number') return { ...value, value: negative(value.value) };
-  return { kind: 'state', written: scaled(value.written, { re: -1, im: 0 }) };
-}
-
-function addStates(a: JonesVector, b: JonesVector): JonesVector {
-  return { aRe: a.aRe + b.aRe, aIm: a.aIm + b.aIm, bRe: a.bRe + b.bRe, bIm: a.bIm + b.bIm };
-}
-
-function scaled({ aRe, aIm, bRe, bIm }: JonesVector, by: Complex): JonesVector {
-  const a = multiply({ re: aRe, im: aIm }, by);
-  const b = multiply({ re: bRe, im: bIm }, by);
-  return { aRe: a.re, aIm: a.im, bRe: b.re, bIm: b.im };
-}
-
-function dividedBy({ aRe, aIm, bRe, bIm }: JonesVector, by: Complex): JonesVector {
-  const a = divide({ re: aRe, im: aIm }, by);
-  const b = divide({ re: bRe, im: bIm }, by);
-  return { aRe: a.re, aIm: a.im, bRe: b.re, bIm: b.im };
 }

@@ -1,4 +1,12 @@
-import type { Factor, FunctionName, KetLabel, Node, Term } from './tree';
+import {
+  type Factor,
+  type FunctionName,
+  type GateName,
+  isPlate,
+  type KetLabel,
+  type Node,
+  type Term,
+} from './tree';
 
 /** The tree as TeX for the math renderer. Every letter of it comes from here, none from the source. */
 export function toLatex(node: Node): string {
@@ -21,13 +29,46 @@ export function toLatex(node: Node): string {
       return `{${tight(node.base)}}^{${toLatex(node.exponent)}}`;
     case 'call':
       return latexCall(node.name, node.args);
+    case 'gate':
+      return latexGate(node.name);
+    case 'axis':
+      return node.name;
+    case 'dagger':
+      return `{${tight(node.base)}}^{\\dagger}`;
     case 'column':
-      return `\\begin{pmatrix}${toLatex(node.entries[0])}\\\\${toLatex(node.entries[1])}\\end{pmatrix}`;
+      return latexMatrix(node.entries.map((entry) => [entry]));
+    case 'matrix':
+      return latexMatrix(node.rows);
+    case 'vector':
+      return brackets(node.entries.map(toLatex).join(',\\ '));
+    case 'turn':
+      return `${toLatex(node.from)}\\mapsto ${toLatex(node.to)}`;
   }
 }
 
 function ket(label: KetLabel): string {
   return `|${label}\\rangle`;
+}
+
+function latexGate(name: GateName): string {
+  switch (name) {
+    case 'identity':
+      return 'I';
+    case 'hadamard':
+      // H is horizontal light throughout.
+      return '\\mathrm{Had}';
+    case 'sqrtX':
+    case 'sqrtY':
+    case 'sqrtZ':
+      return `\\sqrt{${name.charAt(4)}}`;
+    default:
+      return name;
+  }
+}
+
+function latexMatrix(rows: readonly (readonly Node[])[]): string {
+  const lines = rows.map((row) => row.map(toLatex).join('&'));
+  return `\\begin{pmatrix}${lines.join('\\\\')}\\end{pmatrix}`;
 }
 
 function latexNumber(value: number): string {
@@ -38,7 +79,7 @@ function latexNumber(value: number): string {
 }
 
 function latexTerm({ negative, node }: Term, index: number): string {
-  const body = node.kind === 'sum' ? brackets(toLatex(node)) : toLatex(node);
+  const body = isSum(node) ? brackets(toLatex(node)) : toLatex(node);
   if (index === 0) return negative ? `-${body}` : body;
   return `${negative ? '-' : '+'}${body}`;
 }
@@ -60,32 +101,42 @@ function latexProduct(factors: readonly Factor[]): string {
     : `\\frac{${latexProduct(before)}}{${den}}`;
 }
 
-function latexFactor(left: string, { join, node }: Factor): string {
+function latexFactor(left: string, { join, node }: Factor, index: number, all: readonly Factor[]): string {
   const body = isSum(node) || node.kind === 'product' ? brackets(toLatex(node)) : toLatex(node);
   if (left === '') return body;
   if (join === '/') return `\\frac{${left}}{${toLatex(node)}}`;
   if (join === '*') return `${left}\\cdot ${body}`;
+  const before = all[index - 1]?.node;
+  // A list of plates in beam order must not look like a matrix product.
+  if (before !== undefined && isPlate(before) && isPlate(node)) return `${left}\\rightarrow ${body}`;
   return node.kind === 'unit' ? `${left}${body}` : `${left}\\,${body}`;
 }
 
 function isSum(node: Node): boolean {
-  return node.kind === 'sum';
+  return node.kind === 'sum' || node.kind === 'turn';
 }
 
+const NUMBERS: ReadonlySet<FunctionName> = new Set(['sqrt', 'exp', 'cos', 'sin']);
+
+/** Whether a state or a unitary is in it, rather than numbers only. */
 function holdsState(node: Node): boolean {
   switch (node.kind) {
     case 'state':
     case 'ket':
     case 'column':
+    case 'gate':
+    case 'dagger':
+    case 'matrix':
+    case 'turn':
       return true;
+    case 'power':
+      return holdsState(node.base);
     case 'sum':
       return node.terms.some((term) => holdsState(term.node));
     case 'product':
       return node.factors.some((factor) => holdsState(factor.node));
     case 'call':
-      return (
-        node.name === 'bloch' || node.name === 'stokes' || node.name === 'ellipse' || node.name === 'linear'
-      );
+      return !NUMBERS.has(node.name);
     default:
       return false;
   }
@@ -95,6 +146,9 @@ function latexCall(name: FunctionName, args: readonly Node[]): string {
   const [first] = args;
   if (name === 'sqrt' && first !== undefined) return `\\sqrt{${toLatex(first)}}`;
   if (name === 'exp' && first !== undefined) return `e^{${toLatex(first)}}`;
+  if (name === 'rotate' && first !== undefined) {
+    return `R_{${toLatex(first)}}${brackets(args.slice(1).map(toLatex).join(',\\ '))}`;
+  }
   const inner = args.map(toLatex).join(',\\ ');
   if (name === 'cos' || name === 'sin') {
     // cos 22.5° needs no brackets; cos(a + b) does.
@@ -109,7 +163,7 @@ function brackets(inner: string): string {
 }
 
 function tight(node: Node): string {
-  return node.kind === 'sum' || node.kind === 'product' || node.kind === 'power'
+  return isSum(node) || node.kind === 'product' || node.kind === 'power' || node.kind === 'dagger'
     ? brackets(toLatex(node))
     : toLatex(node);
 }

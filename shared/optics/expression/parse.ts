@@ -1,58 +1,47 @@
-import { MAX_DEPTH, MAX_LENGTH, MAX_NODES } from './limits';
-import { ExpressionError, type Span } from './span';
-import { type Symbol, type Token, tokenise } from './tokens';
-import type { Factor, FunctionName, Node, Term } from './tree';
-
-/** How many arguments each function takes, and how a call of it is written. */
-const SIGNATURES: Readonly<Record<FunctionName, { readonly count: number; readonly form: string }>> = {
-  sqrt: { count: 1, form: 'sqrt(2)' },
-  exp: { count: 1, form: 'exp(i 45deg)' },
-  cos: { count: 1, form: 'cos(22.5deg)' },
-  sin: { count: 1, form: 'sin(22.5deg)' },
-  linear: { count: 1, form: 'linear(22.5deg)' },
-  bloch: { count: 2, form: 'bloch(90deg, 45deg)' },
-  ellipse: { count: 2, form: 'ellipse(20deg, 10deg)' },
-  stokes: { count: 3, form: 'stokes(0.6, 0, 0.8)' },
-};
+import { Cursor } from './cursor';
+import { MAX_LENGTH } from './limits';
+import { around, ExpressionError, type Span } from './span';
+import { SIGNATURES, tooFew, tooMany } from './signatures';
+import { type Token, tokenise } from './tokens';
+import type { Factor, FunctionName, GateName, Node, Row, Term } from './tree';
+import type { Wanted } from './words';
 
 /**
  * The typed tree of a source, by recursive descent in one pass.
  *
  *     sum     = [sign] product { sign product }
  *     product = power { ("*" | "/" | nothing) power }      left to right: 1/2 i is i/2
- *     power   = sign power | primary [ "^" power ]
- *     primary = number | constant | unit | state | ket | "√" primary | function "(" sum {"," sum} ")"
- *             | "(" sum ")" | "[" sum "," sum "]"
+ *     power   = sign power | primary {dagger} [ "^" (power | dagger) {dagger} ]
+ *     primary = number | constant | unit | state | ket | gate | "√" primary | function "(" sum {"," sum} ")"
+ *             | "(" sum ")" | "[" sum "," sum "]" | "dagger" "(" sum ")" | "from" sum "to" sum
+ *             | "matrix" "[" "[" sum "," sum "]" "," "[" sum "," sum "]" "]"
+ *     dagger  = "†" | "dagger"            without a bracket behind it
+ *
+ * The first argument of rotate may also hold x, y, z and columns of three.
  *
  * @throws ExpressionError with the place of the first thing that doesn't fit, and at the limits of limits.ts.
  */
-export function parse(source: string): Node {
+export function parse(source: string, wanted: Wanted = 'state'): Node {
   if (source.length > MAX_LENGTH) {
     throw new ExpressionError(
       { start: MAX_LENGTH, end: source.length },
       `This is ${source.length} characters long. Expressions end at ${MAX_LENGTH}.`,
     );
   }
-  const parser = new Parser(tokenise(source), source.length);
-  return parser.whole();
+  const parser = new Parser(tokenise(source, wanted), source.length);
+  return parser.whole(wanted);
 }
 
-class Parser {
-  private at = 0;
-  private depth = 0;
-  private nodes = 0;
+class Parser extends Cursor {
+  private inAxis = false;
 
-  constructor(
-    private readonly tokens: readonly Token[],
-    private readonly length: number,
-  ) {}
-
-  whole(): Node {
+  whole(wanted: Wanted): Node {
     if (this.tokens.length === 0) {
-      throw new ExpressionError(
-        { start: 0, end: 1 },
-        'Nothing is written here. Write a state, such as H or (H + i V)/sqrt(2).',
-      );
+      const what =
+        wanted === 'state'
+          ? 'a state, such as H or (H + i V)/sqrt(2)'
+          : 'a unitary, such as hadamard or rotate(x, 90deg)';
+      throw new ExpressionError({ start: 0, end: 1 }, `Nothing is written here. Write ${what}.`);
     }
     const node = this.sum();
     const rest = this.tokens[this.at];
@@ -63,6 +52,9 @@ class Parser {
         `This ${rest.symbol} closes nothing. Remove it, or open it further left.`,
       );
     }
+    if (rest.kind === 'word') {
+      throw new ExpressionError(rest.span, `"${rest.name}" belongs behind from: from H to D.`);
+    }
     throw new ExpressionError(
       rest.span,
       'A comma stands only between the parts of a column or of a function.',
@@ -72,6 +64,7 @@ class Parser {
   private sum(): Node {
     this.enter();
     const terms: Term[] = [];
+    const start = this.here().start;
     let negative = this.takeSign() ?? false;
     for (;;) {
       terms.push({ negative, node: this.product() });
@@ -79,10 +72,11 @@ class Parser {
       if (sign === null) break;
       negative = sign;
     }
-    this.depth -= 1;
+    this.leave();
     const [first] = terms;
     if (first !== undefined && terms.length === 1 && !first.negative) return first.node;
-    return this.made({ kind: 'sum', terms, span: around(terms.map((term) => term.node)) });
+    const { end } = around(terms.map((term) => term.node));
+    return this.made({ kind: 'sum', terms, span: { start, end } });
   }
 
   private product(): Node {
@@ -96,7 +90,7 @@ class Parser {
           join: token.kind === 'symbol' && token.symbol === '/' ? '/' : '*',
           node: this.power(),
         });
-      } else if (startsPrimary(token)) {
+      } else if (startsPrimary(token) || (token.kind === 'word' && this.startsUnitary(token.name))) {
         if (token.kind === 'number' && factors.at(-1)?.node.kind === 'number') {
           throw new ExpressionError(token.span, 'Two numbers stand side by side. Put * + or − between them.');
         }
@@ -124,13 +118,18 @@ class Parser {
         : inner;
     } else {
       node = this.primary();
+      // "X^2†" is (X^2)†: a number takes no dagger.
+      if (node.kind !== 'number') node = this.daggers(node);
       if (this.isSymbol('^')) {
         this.at += 1;
-        const exponent = this.power();
-        node = this.made({ kind: 'power', base: node, exponent, span: around([node, exponent]) });
+        if (!this.isDagger()) {
+          const exponent = this.power();
+          node = this.made({ kind: 'power', base: node, exponent, span: around([node, exponent]) });
+        }
+        node = this.daggers(node);
       }
     }
-    this.depth -= 1;
+    this.leave();
     return node;
   }
 
@@ -144,9 +143,19 @@ class Parser {
       case 'unit':
       case 'state':
       case 'ket':
+      case 'gate':
         return this.made(token);
+      case 'axis':
+        if (this.inAxis) return this.made(token);
+        throw new ExpressionError(
+          token.span,
+          `${token.name} is an axis and stands in rotate(${token.name}, 90deg). The gate is ${token.name.toUpperCase()}.`,
+          token.name.toUpperCase(),
+        );
       case 'function':
         return this.call(token.name, token.span);
+      case 'word':
+        return this.unitary(token.name, token.span);
       case 'symbol':
         if (token.symbol === '(') return this.bracketed(token.span);
         if (token.symbol === '[') return this.column(token.span);
@@ -165,12 +174,25 @@ class Parser {
   }
 
   private column(open: Span): Node {
+    if (this.isSymbol('[')) {
+      throw new ExpressionError(
+        open,
+        'A matrix is written with its name in front: matrix [[1, 0], [0, i]].',
+        'matrix [',
+      );
+    }
     const first = this.sum();
     if (!this.isSymbol(',')) {
       throw new ExpressionError(this.here(), 'A column has two parts, of H and of V. Write it as [1, i].');
     }
     this.at += 1;
     const second = this.sum();
+    if (this.inAxis && this.isSymbol(',')) {
+      this.at += 1;
+      const third = this.sum();
+      const end = this.close(']', open);
+      return this.made({ kind: 'vector', entries: [first, second, third], span: { start: open.start, end } });
+    }
     if (this.isSymbol(',')) {
       throw new ExpressionError(this.here(), 'A column has two parts, of H and of V, and this is a third.');
     }
@@ -181,13 +203,15 @@ class Parser {
   private root(sign: Span): Node {
     this.enter();
     const arg = this.primary();
-    this.depth -= 1;
-    return this.made({
-      kind: 'call',
-      name: 'sqrt',
-      args: [arg],
-      span: { start: sign.start, end: arg.span.end },
-    });
+    this.leave();
+    return this.rootOf(arg, { start: sign.start, end: arg.span.end });
+  }
+
+  /** √X and sqrt(X) are the gate sqrtX. */
+  private rootOf(arg: Node, span: Span): Node {
+    const named = arg.kind === 'gate' ? ROOTS.get(arg.name) : undefined;
+    if (named !== undefined) return this.made({ kind: 'gate', name: named, span });
+    return this.made({ kind: 'call', name: 'sqrt', args: [arg], span });
   }
 
   private call(name: FunctionName, span: Span): Node {
@@ -197,86 +221,117 @@ class Parser {
     const open = this.here();
     this.at += 1;
     const args: Node[] = [];
+    const outer = this.inAxis;
+    this.inAxis = name === 'rotate';
     if (!this.isSymbol(')')) {
       args.push(this.sum());
+      this.inAxis = false;
       while (this.isSymbol(',')) {
         const comma = this.here();
         this.at += 1;
-        if (args.length === count) throw new ExpressionError(comma, tooMany(name, count, form));
+        if (args.length === count) throw new ExpressionError(comma, tooMany(name));
         args.push(this.sum());
       }
     }
+    this.inAxis = outer;
     const end = this.close(')', open);
-    if (args.length < count) {
-      const parts = count === 1 ? 'one argument' : `${count} arguments`;
-      throw new ExpressionError(
-        { start: span.start, end },
-        `${name} takes ${parts} and has ${args.length}: ${form}.`,
-      );
+    const [first] = args;
+    if (args.length < count || first === undefined) {
+      throw new ExpressionError({ start: span.start, end }, tooFew(name, args.length));
     }
+    if (name === 'sqrt') return this.rootOf(first, { start: span.start, end });
     return this.made({ kind: 'call', name, args, span: { start: span.start, end } });
   }
 
-  private close(symbol: ')' | ']', open: Span): number {
-    const token = this.tokens[this.at];
-    if (token?.kind === 'symbol' && token.symbol === symbol) {
-      this.at += 1;
-      return token.span.end;
+  /** What one of the words of unitaries begins. */
+  private unitary(name: 'from' | 'to' | 'matrix' | 'dagger' | '†', span: Span): Node {
+    switch (name) {
+      case 'matrix':
+        return this.matrix(span);
+      case 'from': {
+        const from = this.sum();
+        const token = this.tokens[this.at];
+        if (token?.kind !== 'word' || token.name !== 'to') {
+          throw new ExpressionError(
+            token?.span ?? span,
+            'from is followed by a state, to and another: from H to D.',
+          );
+        }
+        this.at += 1;
+        const to = this.sum();
+        return this.made({ kind: 'turn', from, to, span: { start: span.start, end: to.span.end } });
+      }
+      case 'to':
+        throw new ExpressionError(span, '"to" belongs behind from: from H to D.');
+      case '†':
+        throw new ExpressionError(span, 'A dagger stands behind the unitary that it turns back: S†.');
+      case 'dagger': {
+        const open = this.here();
+        if (!this.isSymbol('(')) {
+          throw new ExpressionError(
+            span,
+            'dagger takes a unitary in brackets or stands behind one: dagger(S), S dagger.',
+          );
+        }
+        this.at += 1;
+        const base = this.sum();
+        const end = this.close(')', open);
+        return this.made({ kind: 'dagger', base, span: { start: span.start, end } });
+      }
     }
-    if (token === undefined) throw new ExpressionError(open, `This bracket is not closed. Add ${symbol}.`);
-    throw new ExpressionError(
-      token.span,
-      `Something else stands where ${symbol} should close the bracket at column ${open.start + 1}.`,
-    );
   }
 
-  private takeSign(): boolean | null {
-    const negative = this.isSymbol('-');
-    if (!negative && !this.isSymbol('+')) return null;
+  private matrix(span: Span): Node {
+    const open = this.here();
+    this.open('[', span, MATRIX_FORM);
+    const first = this.row(span);
+    if (!this.isSymbol(',')) throw new ExpressionError(this.here(), MATRIX_FORM);
     this.at += 1;
-    return negative;
+    const second = this.row(span);
+    if (this.isSymbol(',')) throw new ExpressionError(this.here(), MATRIX_FORM);
+    const end = this.close(']', open);
+    return this.made({ kind: 'matrix', rows: [first, second], span: { start: span.start, end } });
   }
 
-  private isSymbol(symbol: Symbol): boolean {
-    const token = this.tokens[this.at];
-    return token?.kind === 'symbol' && token.symbol === symbol;
+  private row(span: Span): Row {
+    const open = this.here();
+    this.open('[', span, MATRIX_FORM);
+    const first = this.sum();
+    if (!this.isSymbol(',')) throw new ExpressionError(this.here(), MATRIX_FORM);
+    this.at += 1;
+    const second = this.sum();
+    if (this.isSymbol(',')) throw new ExpressionError(this.here(), MATRIX_FORM);
+    this.close(']', open);
+    return [first, second];
   }
 
-  private here(): Span {
-    return this.tokens[this.at]?.span ?? { start: this.length, end: this.length + 1 };
-  }
-
-  private endsEarly(): ExpressionError {
-    const last = this.tokens[this.tokens.length - 1];
-    const span = last?.span ?? { start: 0, end: 1 };
-    return new ExpressionError(span, 'The expression ends here before it is complete. Write what follows.');
-  }
-
-  private enter(): void {
-    this.depth += 1;
-    // A bracket costs two levels of ours, its sum and its power; the limit counts what a person nests.
-    if (this.depth > 2 * MAX_DEPTH) {
-      throw new ExpressionError(this.here(), `This is nested deeper than ${MAX_DEPTH} levels.`);
+  /** The daggers behind a unitary; two of them cancel. */
+  private daggers(node: Node): Node {
+    let count = 0;
+    let end = node.span.end;
+    while (this.isDagger()) {
+      end = this.here().end;
+      this.at += 1;
+      count += 1;
     }
+    if (count % 2 === 0) return node;
+    return this.made({ kind: 'dagger', base: node, span: { start: node.span.start, end } });
   }
 
-  private made<T extends Node>(node: T): T {
-    this.nodes += 1;
-    if (this.nodes > MAX_NODES) {
-      throw new ExpressionError(node.span, `This has more than ${MAX_NODES} numbers, names and operations.`);
-    }
-    return node;
+  private startsUnitary(name: string): boolean {
+    return name === 'from' || name === 'matrix' || name === 'dagger';
   }
 }
 
-function tooMany(name: FunctionName, count: number, form: string): string {
-  return `${name} takes ${count === 1 ? 'one argument' : `${count} arguments`}, and this begins one more: ${form}.`;
-}
+const MATRIX_FORM = 'A matrix has two rows of two: matrix [[1, 0], [0, i]].';
+
+const ROOTS = new Map<GateName, GateName>([
+  ['X', 'sqrtX'],
+  ['Y', 'sqrtY'],
+  ['Z', 'sqrtZ'],
+]);
 
 function startsPrimary(token: Token): boolean {
+  if (token.kind === 'word') return false;
   return token.kind !== 'symbol' || token.symbol === '(' || token.symbol === '[' || token.symbol === '√';
-}
-
-function around(nodes: readonly Node[]): Span {
-  return { start: nodes[0]?.span.start ?? 0, end: nodes.at(-1)?.span.end ?? 1 };
 }

@@ -8,6 +8,8 @@ export function print(node: Node): string {
     case 'constant':
     case 'unit':
     case 'state':
+    case 'gate':
+    case 'axis':
       return node.name;
     case 'ket':
       return `|${node.label}>`;
@@ -19,19 +21,31 @@ export function print(node: Node): string {
       return `${printTight(node.base)}^${printTight(node.exponent)}`;
     case 'call':
       return `${node.name}(${node.args.map(print).join(', ')})`;
+    case 'dagger':
+      return `dagger(${print(node.base)})`;
     case 'column':
-      return `[${print(node.entries[0])}, ${print(node.entries[1])}]`;
+    case 'vector':
+      return printRow(node.entries);
+    case 'matrix':
+      return `matrix [${node.rows.map(printRow).join(', ')}]`;
+    case 'turn':
+      return `from ${print(node.from)} to ${print(node.to)}`;
   }
 }
 
+function printRow(entries: readonly Node[]): string {
+  return `[${entries.map(print).join(', ')}]`;
+}
+
 function printTerm({ negative, node }: Term, index: number): string {
-  const body = node.kind === 'sum' ? `(${print(node)})` : print(node);
+  // "from … to" takes all that follows, so it is closed off wherever something may follow.
+  const body = node.kind === 'sum' || node.kind === 'turn' ? `(${print(node)})` : print(node);
   if (index === 0) return negative ? `-${body}` : body;
   return `${negative ? ' - ' : ' + '}${body}`;
 }
 
 function printFactor({ join, node }: Factor, index: number, all: readonly Factor[]): string {
-  const bracketed = node.kind === 'sum' || node.kind === 'product';
+  const bracketed = node.kind === 'sum' || node.kind === 'product' || node.kind === 'turn';
   const body = bracketed ? `(${print(node)})` : print(node);
   if (index === 0) return body;
   if (join !== 'implied') return `${join}${body}`;
@@ -47,7 +61,7 @@ function startsWithDigit(text: string): boolean {
 }
 
 function printTight(node: Node): string {
-  return node.kind === 'sum' || node.kind === 'product' || node.kind === 'power'
+  return node.kind === 'sum' || node.kind === 'product' || node.kind === 'power' || node.kind === 'turn'
     ? `(${print(node)})`
     : print(node);
 }

@@ -2,7 +2,7 @@ import { circularState, type Convention, readStokes, translateJones } from '../c
 import { sincos } from '../elementary';
 import { ellipseToStokes } from '../ellipse';
 import type { JonesVector } from '../jones';
-import { normaliseStokes, stokesLength, stokesToJones } from '../stokes';
+import { normaliseStokes, type Stokes, stokesLength, stokesToJones } from '../stokes';
 import { radians } from '../units';
 import { ExpressionError, type Span } from './span';
 import type { KetLabel, StateName } from './tree';
@@ -101,8 +101,6 @@ function fromTypedStokes(
   convention: Convention,
 ): JonesVector {
   const length = stokesLength([s1, s2, s3]);
-  if (!Number.isFinite(length))
-    throw new ExpressionError(span, 'This Stokes vector is too large to compute with.');
   if (length < 1e-150) {
     throw new ExpressionError(
       span,
@@ -113,20 +111,32 @@ function fromTypedStokes(
     throw new ExpressionError(
       span,
       `This is partly polarised, degree of polarisation ${Number(length.toFixed(4))}. Plates keep that degree, so a target must be fully polarised, of length 1.`,
-      `stokes(${normaliseStokes([s1, s2, s3]).map(short).join(', ')})`,
+      scaledToOne([s1, s2, s3]),
     );
   }
-  if (length > 1 + STOKES_LENGTH_TOLERANCE) {
-    throw new ExpressionError(
-      span,
-      `This Stokes vector is ${Number(length.toPrecision(5))} long; light has at most 1. Divide each part by its length.`,
-      `stokes(${normaliseStokes([s1, s2, s3]).map(short).join(', ')})`,
-    );
-  }
+  const problem = tooLong([s1, s2, s3], length, span);
+  if (problem !== null) throw problem;
   const unit = writtenFromStokes(s1, s2, s3, convention);
   // An intensity of `length` is an amplitude of its root; the norm that is shown is that of the vector as typed.
   const size = Math.sqrt(length);
   return { aRe: unit.aRe * size, aIm: unit.aIm * size, bRe: unit.bRe * size, bIm: unit.bIm * size };
+}
+
+/** What is wrong with a Stokes vector as typed that is longer than light can be, or null. */
+export function tooLong(typed: Stokes, length: number, span: Span): ExpressionError | null {
+  if (!Number.isFinite(length)) {
+    return new ExpressionError(span, 'This Stokes vector is too large to compute with.');
+  }
+  if (length <= 1 + STOKES_LENGTH_TOLERANCE) return null;
+  return new ExpressionError(
+    span,
+    `This Stokes vector is ${Number(length.toPrecision(5))} long; light has at most 1. Divide each part by its length.`,
+    scaledToOne(typed),
+  );
+}
+
+function scaledToOne(typed: Stokes): string {
+  return `stokes(${normaliseStokes(typed).map(short).join(', ')})`;
 }
 
 function short(value: number): string {

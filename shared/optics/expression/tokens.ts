@@ -1,50 +1,14 @@
-import type { ConstantName, FunctionName, KetLabel, StateName, UnitName } from './tree';
 import { ExpressionError, type Span } from './span';
+import type { KetLabel } from './tree';
+import { longestWord, misleadingWord, unknownWord, type Wanted, type Word } from './words';
 
 export type Symbol = '+' | '-' | '*' | '/' | '^' | '(' | ')' | '[' | ']' | ',' | '√';
 
 export type Token = { readonly span: Span } & (
   | { readonly kind: 'number'; readonly value: number }
   | { readonly kind: 'symbol'; readonly symbol: Symbol }
-  | { readonly kind: 'constant'; readonly name: ConstantName }
-  | { readonly kind: 'unit'; readonly name: UnitName }
-  | { readonly kind: 'state'; readonly name: StateName }
   | { readonly kind: 'ket'; readonly label: KetLabel }
-  | { readonly kind: 'function'; readonly name: FunctionName }
-);
-
-type Word =
-  | { readonly kind: 'constant'; readonly name: ConstantName }
-  | { readonly kind: 'unit'; readonly name: UnitName }
-  | { readonly kind: 'state'; readonly name: StateName }
-  | { readonly kind: 'function'; readonly name: FunctionName };
-
-// Longest first, so that "ellipse" is never read as e and then "llipse".
-const WORDS: readonly (readonly [string, Word])[] = [
-  ['ellipse', { kind: 'function', name: 'ellipse' }],
-  ['stokes', { kind: 'function', name: 'stokes' }],
-  ['linear', { kind: 'function', name: 'linear' }],
-  ['bloch', { kind: 'function', name: 'bloch' }],
-  ['sqrt', { kind: 'function', name: 'sqrt' }],
-  ['exp', { kind: 'function', name: 'exp' }],
-  ['cos', { kind: 'function', name: 'cos' }],
-  ['sin', { kind: 'function', name: 'sin' }],
-  ['deg', { kind: 'unit', name: 'deg' }],
-  ['rad', { kind: 'unit', name: 'rad' }],
-  ['pi', { kind: 'constant', name: 'pi' }],
-  ['π', { kind: 'constant', name: 'pi' }],
-  ['i', { kind: 'constant', name: 'i' }],
-  ['e', { kind: 'constant', name: 'e' }],
-  ['H', { kind: 'state', name: 'H' }],
-  ['V', { kind: 'state', name: 'V' }],
-  ['D', { kind: 'state', name: 'D' }],
-  ['A', { kind: 'state', name: 'A' }],
-  ['L', { kind: 'state', name: 'L' }],
-  ['R', { kind: 'state', name: 'R' }],
-];
-
-const WORDS_BY_LETTER = new Map<string, readonly (readonly [string, Word])[]>(
-  WORDS.map(([text]) => [text.charAt(0), WORDS.filter(([other]) => other.startsWith(text.charAt(0)))]),
+  | Word
 );
 
 const SPACES = ' \t\n\r\u00a0\u2002\u2003\u2009\u200a\u202f\u2060\ufeff';
@@ -92,7 +56,7 @@ function isLetter(character: string | undefined): boolean {
 }
 
 /** Splits a source into tokens in one pass. @throws ExpressionError at the first character that isn't of the grammar. */
-export function tokenise(source: string): readonly Token[] {
+export function tokenise(source: string, wanted: Wanted = 'state'): readonly Token[] {
   const tokens: Token[] = [];
   let at = 0;
   while (at < source.length) {
@@ -108,12 +72,15 @@ export function tokenise(source: string): readonly Token[] {
     } else if (character === '°' || character === 'º') {
       tokens.push({ kind: 'unit', name: 'deg', span: { start: at, end: at + 1 } });
       at += 1;
+    } else if (character === '†') {
+      tokens.push({ kind: 'word', name: '†', span: { start: at, end: at + 1 } });
+      at += 1;
     } else if (isDigit(character) || (character === '.' && isDigit(source[at + 1]))) {
       const token = readNumber(source, at);
       tokens.push(token);
       at = token.span.end;
     } else if (isLetter(character)) {
-      at = readWords(source, at, tokens);
+      at = readWords(source, at, tokens, wanted);
     } else if (character === '|') {
       const token = readKet(source, at);
       tokens.push(token);
@@ -133,7 +100,7 @@ function unexpected(source: string, at: number): ExpressionError {
     code < 0x20 || (code >= 0x7f && code < 0xa0) ? 'A control character' : `"${source.slice(at, end)}"`;
   return new ExpressionError(
     span,
-    `${shown} has no meaning here. Write states, numbers, + − * / ^ and brackets.`,
+    `${shown} has no meaning here. Write states, gates, numbers, + − * / ^ and brackets.`,
   );
 }
 
@@ -164,13 +131,15 @@ function readNumber(source: string, start: number): Token & { kind: 'number' } {
 }
 
 // "iV" and "2piH" are products without a space: take the longest word that fits, again and again.
-function readWords(source: string, start: number, tokens: Token[]): number {
+function readWords(source: string, start: number, tokens: Token[], wanted: Wanted): number {
   let end = start;
   while (isLetter(source[end])) end += 1;
+  const misleading = misleadingWord(source.slice(start, end), { start, end });
+  if (misleading !== null) throw misleading;
   let at = start;
   while (at < end) {
     const match = longestWord(source, at, end);
-    if (match === null) throw unknownWord(source, start, end);
+    if (match === null) throw unknownWord(source, { start, end }, wanted);
     const [text, word] = match;
     tokens.push(wordToken(word, { start: at, end: at + text.length }));
     at += text.length;
@@ -187,38 +156,15 @@ function wordToken(word: Word, span: Span): Token {
       return { kind: 'unit', name: word.name, span };
     case 'state':
       return { kind: 'state', name: word.name, span };
+    case 'gate':
+      return { kind: 'gate', name: word.name, span };
+    case 'axis':
+      return { kind: 'axis', name: word.name, span };
     case 'function':
       return { kind: 'function', name: word.name, span };
+    case 'word':
+      return { kind: 'word', name: word.name, span };
   }
-}
-
-function longestWord(source: string, at: number, end: number): readonly [string, Word] | null {
-  for (const entry of WORDS_BY_LETTER.get(source.charAt(at)) ?? []) {
-    if (at + entry[0].length <= end && source.startsWith(entry[0], at)) return entry;
-  }
-  return null;
-}
-
-function unknownWord(source: string, start: number, end: number): ExpressionError {
-  const text = source.slice(start, end);
-  const shown = text.length > 24 ? `${text.slice(0, 24)}…` : text;
-  const span = { start, end };
-  if (text === 'j') return new ExpressionError(span, 'The imaginary unit is written i here.', 'i');
-  const upper = text.toUpperCase();
-  if (text.length === 1 && 'HVDALR'.includes(upper)) {
-    return new ExpressionError(span, `"${text}" is no name here. Write the state as ${upper}.`, upper);
-  }
-  const lower = text.toLowerCase();
-  const known = WORDS.find(([word, { kind }]) => word === lower && kind !== 'state');
-  if (known !== undefined) {
-    return new ExpressionError(span, `"${text}" is no name here. Write ${known[0]}.`, known[0]);
-  }
-  const unit = lower.startsWith('degree') ? 'deg' : lower.startsWith('radian') ? 'rad' : null;
-  if (unit !== null) return new ExpressionError(span, `"${shown}" is written ${unit} here.`, unit);
-  return new ExpressionError(
-    span,
-    `"${shown}" is no name here. Write H, V, D, A, L or R, a ket such as |+i>, or bloch, stokes, ellipse, linear.`,
-  );
 }
 
 const KETS = new Map<string, KetLabel>([
