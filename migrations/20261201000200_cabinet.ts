@@ -8,6 +8,10 @@ export async function up(knex: Knex): Promise<void> {
     name text NOT NULL CHECK (name <> ''),
     kind text NOT NULL CHECK (kind IN ('half', 'quarter', 'other')),
     design_wavelength_nm double precision NOT NULL ${finite('design_wavelength_nm')},
+    construction text NOT NULL
+      CHECK (construction IN ('true-zero-order', 'compound-zero-order', 'multi-order', 'achromatic', 'unknown')),
+    material text CHECK (material IN ('quartz', 'magnesium-fluoride', 'calcite', 'sapphire')),
+    whole_waves smallint NOT NULL CHECK (whole_waves >= 0),
     note text NOT NULL,
     retired_at timestamptz(3),
     revision integer NOT NULL DEFAULT 1,
@@ -26,6 +30,13 @@ export async function up(knex: Knex): Promise<void> {
     direction smallint NOT NULL CHECK (direction IN (1, -1)),
     resolution_deg double precision NOT NULL ${finite('resolution_deg')} CHECK (resolution_deg > 0),
     repeatability_deg double precision NOT NULL ${finite('repeatability_deg')} CHECK (repeatability_deg >= 0),
+    range_from_deg double precision,
+    range_to_deg double precision,
+    speed_deg_per_s double precision CHECK (speed_deg_per_s > 0),
+    backlash_deg double precision NOT NULL ${finite('backlash_deg')} CHECK (backlash_deg >= 0),
+    approach text NOT NULL CHECK (approach IN ('rising', 'falling', 'either')),
+    CHECK ((range_from_deg IS NULL) = (range_to_deg IS NULL)),
+    CHECK (range_to_deg - range_from_deg >= 180),
     UNIQUE (lab_id, id)
   )`);
   await keepInLab(knex, 'mounts', ['SELECT', 'INSERT', 'UPDATE']);
@@ -54,6 +65,7 @@ export async function up(knex: Knex): Promise<void> {
     lab_id uuid NOT NULL REFERENCES labs,
     seat_id uuid NOT NULL,
     wavelength_nm double precision NOT NULL ${finite('wavelength_nm')},
+    temperature_c double precision,
     retardance_deg double precision NOT NULL CHECK (retardance_deg > 0 AND retardance_deg < 360),
     retardance_sigma_deg double precision NOT NULL ${finite('retardance_sigma_deg')} CHECK (retardance_sigma_deg >= 0),
     offset_deg double precision NOT NULL CHECK (offset_deg >= 0 AND offset_deg < 360),
@@ -76,8 +88,12 @@ export async function up(knex: Knex): Promise<void> {
     lab_id uuid NOT NULL REFERENCES labs,
     name text NOT NULL CHECK (name <> ''),
     wavelength_nm double precision NOT NULL ${finite('wavelength_nm')},
+    wavelength_sigma_nm double precision NOT NULL ${finite('wavelength_sigma_nm')} CHECK (wavelength_sigma_nm >= 0),
+    temperature_c double precision,
+    temperature_sigma_k double precision NOT NULL ${finite('temperature_sigma_k')} CHECK (temperature_sigma_k >= 0),
     input_expression text NOT NULL,
     polariser_sigma_deg double precision NOT NULL ${finite('polariser_sigma_deg')} CHECK (polariser_sigma_deg >= 0),
+    polariser_extinction double precision CHECK (polariser_extinction > 0 AND polariser_extinction < 1),
     laser_class text CHECK (laser_class IN ('1', '1M', '2', '2M', '3R', '3B', '4')),
     hazard_wavelengths_nm double precision[] NOT NULL,
     retired_at timestamptz(3),
@@ -93,7 +109,7 @@ export async function up(knex: Knex): Promise<void> {
   await knex.raw(`CREATE TABLE bench_plates (
     lab_id uuid NOT NULL REFERENCES labs,
     bench_id uuid NOT NULL,
-    position smallint NOT NULL CHECK (position >= 0),
+    position smallint NOT NULL CHECK (position BETWEEN 0 AND 5),
     plate_id uuid NOT NULL,
     -- False once the bench is retired: what stood there is remembered, and its plates are free.
     live boolean NOT NULL DEFAULT true,

@@ -19,6 +19,7 @@ export async function up(knex: Knex): Promise<void> {
     content text NOT NULL,
     name text NOT NULL,
     purpose text NOT NULL,
+    kind text NOT NULL CHECK (kind IN ('prepare', 'apply')),
     bench_id uuid NOT NULL,
     target_count integer NOT NULL CHECK (target_count BETWEEN 0 AND 200),
     saved_at timestamptz(3) NOT NULL DEFAULT now(),

@@ -11,19 +11,23 @@ interface PlateFacts {
   readonly name: string;
   readonly kind: PlateKind;
   readonly designWavelengthNm: number;
+  readonly built: Built;
   readonly note: string;
   readonly mount: readonly [name: string, direction: 1 | -1, resolutionDeg: number, repeatabilityDeg: number];
   readonly measured: readonly Measured[];
 }
 
-const quartz = 'Compound zero order, quartz.';
+type Built = Pick<CreatePlate, 'construction' | 'material' | 'order'>;
+const quartz: Built = { construction: 'compound-zero-order', material: 'quartz', order: 0 };
+const unknown: Built = { construction: 'unknown', material: null, order: 0 };
 
 const plates: readonly PlateFacts[] = [
   {
     name: 'H-1',
     kind: 'half',
     designWavelengthNm: 780,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M01', 1, 0.1, 0.05],
     measured: [
       [240, 780, 180.6, 0.3, 77.86, 0.05],
@@ -34,7 +38,8 @@ const plates: readonly PlateFacts[] = [
     name: 'H-2',
     kind: 'half',
     designWavelengthNm: 780,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M02', -1, 0.2, 0.1],
     measured: [[38, 780, 178.8, 0.5, 110.24, 0.09]],
   },
@@ -42,7 +47,8 @@ const plates: readonly PlateFacts[] = [
     name: 'H-3',
     kind: 'half',
     designWavelengthNm: 808,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M03', 1, 0.1, 0.06],
     measured: [
       [300, 810, 179.3, 0.4, 12.31, 0.06],
@@ -54,6 +60,7 @@ const plates: readonly PlateFacts[] = [
     name: 'H-4',
     kind: 'half',
     designWavelengthNm: 808,
+    built: { construction: 'true-zero-order', material: null, order: 0 },
     note: 'Polymer, cemented.',
     mount: ['M04', -1, 0.1, 0.06],
     measured: [[46, 810, 181.7, 0.6, 264.18, 0.07]],
@@ -62,7 +69,8 @@ const plates: readonly PlateFacts[] = [
     name: 'H-5',
     kind: 'half',
     designWavelengthNm: 808,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M07', 1, 0.05, 0.02],
     measured: [[30, 810, 179.6, 0.2, 355.07, 0.03]],
   },
@@ -70,7 +78,8 @@ const plates: readonly PlateFacts[] = [
     name: 'Q-A',
     kind: 'quarter',
     designWavelengthNm: 808,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M06', 1, 0.1, 0.06],
     measured: [[20, 810, 89.8, 0.3, 44.62, 0.06]],
   },
@@ -78,7 +87,8 @@ const plates: readonly PlateFacts[] = [
     name: 'Q-B',
     kind: 'quarter',
     designWavelengthNm: 808,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M05', -1, 0.1, 0.06],
     measured: [
       [310, 810, 88.7, 0.5, 301.78, 0.1],
@@ -90,7 +100,8 @@ const plates: readonly PlateFacts[] = [
     name: 'Q-C',
     kind: 'quarter',
     designWavelengthNm: 780,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M08', -1, 0.1, 0.05],
     measured: [[58, 785, 90.9, 0.4, 151.36, 0.08]],
   },
@@ -98,6 +109,7 @@ const plates: readonly PlateFacts[] = [
     name: 'Q-D',
     kind: 'quarter',
     designWavelengthNm: 808,
+    built: { construction: 'true-zero-order', material: null, order: 0 },
     note: 'Polymer, cemented.',
     mount: ['M09', 1, 0.1, 0.06],
     measured: [[102, 810, 92.3, 0.6, 60.41, 0.1]],
@@ -106,7 +118,8 @@ const plates: readonly PlateFacts[] = [
     name: 'Q-E',
     kind: 'quarter',
     designWavelengthNm: 780,
-    note: quartz,
+    built: quartz,
+    note: '',
     mount: ['M10', 1, 0.2, 0.1],
     measured: [[16, 780, 89.2, 0.5, 8.95, 0.12]],
   },
@@ -114,6 +127,7 @@ const plates: readonly PlateFacts[] = [
     name: 'Q-F',
     kind: 'quarter',
     designWavelengthNm: 780,
+    built: { construction: 'multi-order', material: 'quartz', order: 6 },
     note: 'Spare.',
     mount: ['M11', -1, 0.5, 0.2],
     measured: [[190, 780, 91.6, 0.8, 233.5, 0.3]],
@@ -122,6 +136,7 @@ const plates: readonly PlateFacts[] = [
     name: 'T-1',
     kind: 'other',
     designWavelengthNm: 780,
+    built: unknown,
     note: 'Near a third of a wave, from a broken stack.',
     mount: ['M12', -1, 0.1, 0.06],
     measured: [[63, 780, 118.6, 0.5, 199.27, 0.08]],
@@ -143,8 +158,18 @@ export function tellPlates(
       name: facts.name,
       kind: facts.kind,
       designWavelengthNm: facts.designWavelengthNm,
+      ...facts.built,
       note: facts.note,
-      mount: { name, direction, resolutionDeg, repeatabilityDeg },
+      mount: {
+        name,
+        direction,
+        resolutionDeg,
+        repeatabilityDeg,
+        rangeDeg: null,
+        speedDegPerS: resolutionDeg < 0.1 ? 20 : null,
+        backlashDeg: resolutionDeg < 0.1 ? 0.05 : 0,
+        approach: resolutionDeg < 0.1 ? 'rising' : 'either',
+      },
       calibration: calibration(first, at),
     };
     const id = story.plate(at(first[0], '11:15'), people.designer, plate);
@@ -166,6 +191,7 @@ function calibration(
 ): CalibrationInput {
   return {
     wavelengthNm,
+    temperatureC: 21,
     retardanceDeg,
     retardanceSigmaDeg,
     offsetDeg,

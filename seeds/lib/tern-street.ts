@@ -48,8 +48,12 @@ export async function seedTernStreet(
   const signalArm = story.bench(at(56, '09:40'), tomas, {
     name: 'signal arm',
     wavelengthNm: 810,
+    wavelengthSigmaNm: 0.3,
+    temperatureC: 21,
+    temperatureSigmaK: 0.5,
     inputExpression: 'H',
     polariserSigmaDeg: 0.05,
+    polariserExtinction: 1e-6,
     laserClass: '3B',
     hazardWavelengthsNm: [405, 810],
     plateIds: [plate('H-3'), plate('Q-B')],
@@ -57,11 +61,29 @@ export async function seedTernStreet(
   const diodeTable = story.bench(at(56, '10:05'), tomas, {
     name: 'diode table',
     wavelengthNm: 780,
+    wavelengthSigmaNm: 0.5,
+    temperatureC: null,
+    temperatureSigmaK: 1,
     inputExpression: 'H',
     polariserSigmaDeg: 0.08,
+    polariserExtinction: null,
     laserClass: '3R',
     hazardWavelengthsNm: [780],
     plateIds: [plate('H-1'), plate('Q-C')],
+  });
+
+  const gateBench = story.bench(at(26, '11:20'), tomas, {
+    name: 'gate bench',
+    wavelengthNm: 810,
+    wavelengthSigmaNm: 0.3,
+    temperatureC: 21,
+    temperatureSigmaK: 0.5,
+    inputExpression: 'H',
+    polariserSigmaDeg: 0.05,
+    polariserExtinction: null,
+    laserClass: '3B',
+    hazardWavelengthsNm: [405, 810],
+    plateIds: [plate('Q-A'), plate('H-5'), plate('Q-D')],
   });
 
   const six = rows([
@@ -75,7 +97,10 @@ export async function seedTernStreet(
   const sixStates: DraftContent = {
     name: 'Six states, signal arm',
     purpose: 'The six states of three conjugate bases, to check the arm before each tomography.',
+    kind: 'prepare',
     benchId: signalArm,
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
     toleranceInfidelity: 1e-3,
     targets: six.slice(0, 4),
   };
@@ -104,7 +129,10 @@ export async function seedTernStreet(
   const tetrahedron: DraftContent = {
     name: 'Tetrahedron, signal arm',
     purpose: 'Four states that lie evenly on the sphere, with checks on two axes.',
+    kind: 'prepare',
     benchId: signalArm,
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
     toleranceInfidelity: 2e-3,
     targets: corners.slice(0, 4),
   };
@@ -133,7 +161,10 @@ export async function seedTernStreet(
   const meridian: DraftContent = {
     name: 'Meridian walk, diode table',
     purpose: 'Linear states every 15 degrees: what the diode table does to an angle.',
+    kind: 'prepare',
     benchId: diodeTable,
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
     toleranceInfidelity: 1e-3,
     targets: walk.slice(0, 6),
   };
@@ -145,12 +176,32 @@ export async function seedTernStreet(
   story.protocol(at(2, '17:26'), tomas, {
     name: 'Witness settings, signal arm',
     purpose: 'The analysis settings of the entanglement witness, as states.',
+    kind: 'prepare',
     benchId: signalArm,
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
     toleranceInfidelity: 1e-3,
     targets: rows([
       ['w1', 'linear(22.5deg)'],
       ['w2', 'linear(67.5deg)'],
       ['w5', 'ellipse(45deg, 22.5deg)'],
+    ]),
+  });
+
+  story.protocol(at(3, '11:05'), ines, {
+    name: 'Gates, gate bench',
+    purpose: 'One-qubit gates for the process check: what three real plates make of each.',
+    kind: 'apply',
+    benchId: gateBench,
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
+    toleranceInfidelity: 1e-3,
+    targets: rows([
+      ['had', 'hadamard'],
+      ['T', 'T'],
+      ['rx', 'rotate(x, 50deg)'],
+      ['dv', 'from D to V'],
+      ['g4', 'zyz(30deg, 70deg, 110deg)'],
     ]),
   });
 

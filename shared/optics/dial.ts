@@ -9,24 +9,54 @@ export interface DialScale {
   readonly direction: DialDirection;
   /** The finest step the dial can be set to, in degrees; above 0. */
   readonly resolutionDeg: number;
+  /** Readings that the mount can be turned to, at least half a turn; null for a ring that turns all the way round. */
+  readonly rangeDeg: { readonly from: number; readonly to: number } | null;
 }
 
+type Engraving = Pick<DialScale, 'offsetDeg' | 'direction'>;
+
 /** dial = offset + direction · θ, in [0, 360), unrounded. */
-export function dialFromFastAxis(fastAxisDeg: Degrees, scale: DialScale): Degrees {
+export function dialFromFastAxis(fastAxisDeg: Degrees, scale: Engraving): Degrees {
   return degrees(wrap(scale.offsetDeg + scale.direction * fastAxisDeg, 360));
 }
 
 /** The table angle of the fast axis, in [0, 180), for a reading on the dial. */
-export function fastAxisFromDial(dialDeg: Degrees, scale: DialScale): Degrees {
+export function fastAxisFromDial(dialDeg: Degrees, scale: Engraving): Degrees {
   return degrees(wrap(scale.direction * (dialDeg - scale.offsetDeg), 180));
 }
 
 /** The settable reading nearest to `dialDeg`, in [0, 360). */
 export function roundDial(dialDeg: Degrees, resolutionDeg: number): Degrees {
+  return degrees(wrap(roundReading(dialDeg, resolutionDeg), 360));
+}
+
+function roundReading(dialDeg: number, resolutionDeg: number): number {
   const decimals = dialDecimals(resolutionDeg) + 3;
   const rounded = Math.round(dialDeg / resolutionDeg) * resolutionDeg;
-  // Without this a reading of 83.5 would be stored as 83.50000000000001.
-  return degrees(wrap(Number(rounded.toFixed(decimals)), 360));
+  // Without this a reading of 83.5 would be stored as 83.50000000000001, and one of −0.01 as −0.
+  return Number(rounded.toFixed(decimals)) + 0;
+}
+
+/**
+ * What to dial for a fast axis, at the mount's resolution and within its range. A plate is the same after half a turn, so
+ * there are at least two such readings: the one nearest to `presentDeg`, or without it the first of the range.
+ */
+export function dialFor(fastAxisDeg: Degrees, scale: DialScale, presentDeg: number | null): Degrees {
+  const { rangeDeg, resolutionDeg } = scale;
+  const dialDeg = dialFromFastAxis(fastAxisDeg, scale);
+  if (rangeDeg === null) {
+    const rounded = roundDial(dialDeg, resolutionDeg);
+    if (presentDeg === null || Math.abs(wrapSigned(rounded - presentDeg, 360)) <= 90) return rounded;
+    return roundDial(degrees(dialDeg + 180), resolutionDeg);
+  }
+  // Half a step of rounding may leave the range by as much; the next reading half a turn on does not.
+  let best = roundReading(rangeDeg.from + wrap(dialDeg - rangeDeg.from, 180), resolutionDeg);
+  if (best < rangeDeg.from) best += 180;
+  if (presentDeg === null) return degrees(best);
+  for (let reading = best + 180; reading <= rangeDeg.to; reading += 180) {
+    if (Math.abs(reading - presentDeg) < Math.abs(best - presentDeg)) best = reading;
+  }
+  return degrees(best);
 }
 
 /** How many decimals a reading at this resolution is always written with: 0.1 → 1, 0.25 → 2, 5/60 → 2. */

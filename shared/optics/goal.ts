@@ -1,5 +1,5 @@
 import { compose, conjugate, type Quaternion } from './quaternion';
-import { infidelityBetween, normaliseStokes, type Stokes } from './stokes';
+import type { Stokes } from './stokes';
 
 /**
  * What a stack of plates is asked to do, canonical frame. prepare: take one state to another. apply: be one unitary, up to
@@ -15,18 +15,13 @@ export function analyserGoal(state: Stokes, polariser: Stokes): Goal {
   return { kind: 'prepare', input: state, target: polariser };
 }
 
-/**
- * 1 − F of a turn of the whole sphere against a goal. For a state 1 − F = ¼|p − t|². For a unitary it is the average gate
- * infidelity ⅔ sin²(ε/2) of the turn by ε that is left between them (references.md 5; Horodecki³ 1999, Nielsen 2002);
- * as a sum of squares of the vector part, so that 1e-30 still means something.
- */
-export function goalInfidelity(goal: Goal, turn: Quaternion, reached: Stokes): number {
-  if (goal.kind === 'prepare') return infidelityBetween(reached, normaliseStokes(goal.target));
-  return (2 / 3) * unitaryShortfall(turn, goal.target);
-}
-
-/** sin²(ε/2) of the turn by ε between two unit quaternions, the same for q and −q. */
+/** sin²(ε/2) of the turn by ε between two unit quaternions, the same for q and −q; a sum of squares, so that 1e-30 still means something. */
 export function unitaryShortfall(achieved: Quaternion, wanted: Quaternion): number {
   const { x, y, z } = compose(achieved, conjugate(wanted));
   return Math.min(1, x * x + y * y + z * z);
+}
+
+/** Average gate infidelity ⅔ sin²(ε/2) of the turn by ε between them (Horodecki³ 1999; Nielsen 2002). */
+export function unitaryInfidelity(achieved: Quaternion, wanted: Quaternion): number {
+  return (2 / 3) * unitaryShortfall(achieved, wanted);
 }

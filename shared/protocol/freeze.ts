@@ -1,10 +1,13 @@
 import type { Bench } from '../schemas/benches';
+import type { Plate } from '../schemas/cabinet';
 import type { Lab } from '../schemas/labs';
-import type { DraftContent } from '../schemas/protocols';
-import type { VersionContent } from '../schemas/versions';
+import type { DraftContent, DraftTarget } from '../schemas/protocols';
+import type { FrozenGoal, FrozenPlate, FrozenTarget, VersionContent } from '../schemas/versions';
 import { SOLVER_VERSION } from '../optics/solve-target';
 import { canonicalJson, contentHash } from './canonical-json';
-import { benchProblem, chooseSolution, solveRow } from './solve-row';
+import { chooseSolutions, type RowChoice } from './choose-solutions';
+import { benchProblem, type RowReading, type RowResult, solveRow } from './solve-row';
+import { usedRetardance } from './solving-plates';
 
 /** Everything that a version is made of, as it stands at this moment. */
 export interface FreezeInput {
@@ -53,12 +56,12 @@ export function freeze(input: FreezeInput): Frozen {
       faults: [{ path: 'targets', message: 'The protocol has no target. Write one first.' }],
     };
   }
-  const faced = benchProblem(bench, lab.convention);
+  const faced = benchProblem(bench, lab.convention, draft);
   if (!faced.ok) {
     const message = `The input of ${bench.name} cannot be read. Column ${faced.error.column}: ${faced.error.message}`;
     return { ok: false, faults: [{ path: 'benchId', message }] };
   }
-  const targets: VersionContent['targets'] = [];
+  const solvedRows: { readonly row: DraftTarget; readonly result: SolvedRow }[] = [];
   for (const [index, row] of draft.targets.entries()) {
     const name = rowName(index, row.label);
     if (!row.label.isWellFormed() || !row.expression.isWellFormed()) {
@@ -68,7 +71,7 @@ export function freeze(input: FreezeInput): Frozen {
       });
       continue;
     }
-    const result = solveRow(row.expression, faced.problem, lab.convention);
+    const result = solveRow(row.expression, faced.problem, lab.convention, row.heldFastAxesDeg);
     if (result.status === 'unreadable') {
       faults.push({
         path: `targets.${index}.expression`,
@@ -76,33 +79,23 @@ export function freeze(input: FreezeInput): Frozen {
       });
       continue;
     }
-    const { reading, solved } = result;
-    const chosen = chooseSolution(solved, row.heldFastAxesDeg);
-    targets.push({
-      id: row.id,
-      label: row.label.trim(),
-      expression: row.expression,
-      canonicalExpression: reading.canonical,
-      stokes: [...reading.stokes],
-      reach: solved.kind,
-      shortfallDeg: solved.shortfallDeg,
-      solutions: solved.solutions.map((solution) => ({
-        fastAxesDeg: [...solution.fastAxesDeg],
-        dialsDeg: [...solution.dialsDeg],
-        infidelity: solution.infidelity,
-        dialledInfidelity: solution.dialledInfidelity,
-        expectedInfidelity: solution.expectedInfidelity,
-        expectedLow: solution.expectedLow,
-        expectedHigh: solution.expectedHigh,
-      })),
-      chosenSolution: chosen.index,
-      held: chosen.held,
-    });
+    solvedRows.push({ row, result });
   }
   if (faults.length > 0) return { ok: false, faults };
+  const choices = chooseSolutions(
+    solvedRows.map(({ row, result }) => ({
+      solved: result.solved,
+      heldFastAxesDeg: row.heldFastAxesDeg,
+    })),
+    faced.problem,
+  );
+  const targets = solvedRows.flatMap(({ row, result }, place) => {
+    const choice = choices[place];
+    return choice === undefined ? [] : [frozenTarget(row, result, choice)];
+  });
 
   const content: VersionContent = {
-    format: 'quarterturn.version/1',
+    format: 'quarterturn.version/2',
     lab: { id: lab.id, name: lab.name },
     protocol: { id: input.protocolId, name: draft.name, purpose: draft.purpose },
     number: input.number,
@@ -112,30 +105,73 @@ export function freeze(input: FreezeInput): Frozen {
     savedBy: { id: input.savedBy.id, name: input.savedBy.name },
     convention: lab.convention,
     solverVersion: SOLVER_VERSION,
-    objective: 'least-expected-infidelity',
+    kind: draft.kind,
+    objective: draft.objective,
+    presentDialsDeg: draft.presentDialsDeg,
     toleranceInfidelity: draft.toleranceInfidelity,
     bench: {
       id: bench.id,
       name: bench.name,
       wavelengthNm: bench.wavelengthNm,
+      wavelengthSigmaNm: bench.wavelengthSigmaNm,
+      temperatureC: bench.temperatureC,
+      temperatureSigmaK: bench.temperatureSigmaK,
       laserClass: bench.laserClass,
       hazardWavelengthsNm: [...bench.hazardWavelengthsNm],
       input: {
         expression: bench.inputExpression,
         stokes: [...faced.problem.input],
         polariserSigmaDeg: bench.polariserSigmaDeg,
+        polariserExtinction: bench.polariserExtinction,
       },
-      plates: bench.plates.map(({ id, name, kind, designWavelengthNm, mount, calibration }) => ({
-        id,
-        name,
-        kind,
-        designWavelengthNm,
-        mount,
-        calibration,
-      })),
+      plates: bench.plates.map((plate) => frozenPlate(plate, bench)),
     },
     targets,
   };
   const text = canonicalJson(content);
   return { ok: true, content, canonicalJson: text, contentHash: contentHash(text) };
+}
+
+type SolvedRow = Extract<RowResult, { status: 'solved' }>;
+
+function frozenPlate(plate: Plate, bench: Bench): FrozenPlate {
+  const { id, name, kind, designWavelengthNm, construction, material, order, mount, calibration } = plate;
+  const { retardanceDeg, shiftDeg, source, perNmDeg, perKelvinDeg } = usedRetardance(plate, bench);
+  const used = { retardanceDeg, shiftDeg, source, perNmDeg, perKelvinDeg };
+  return { id, name, kind, designWavelengthNm, construction, material, order, mount, calibration, used };
+}
+
+function frozenGoal(reading: RowReading): FrozenGoal {
+  if (reading.kind === 'state') return { kind: 'state', stokes: [...reading.stokes] };
+  const { w, x, y, z } = reading.quaternion;
+  return { kind: 'unitary', quaternion: [w, x, y, z] };
+}
+
+/** A solved row as a version keeps it, its chosen solution with the readings chosen for it. */
+export function frozenTarget(
+  row: Pick<DraftTarget, 'id' | 'label' | 'expression'>,
+  { reading, solved }: SolvedRow,
+  choice: RowChoice,
+): FrozenTarget {
+  return {
+    id: row.id,
+    label: row.label.trim(),
+    expression: row.expression,
+    canonicalExpression: reading.canonical,
+    goal: frozenGoal(reading),
+    reach: solved.kind,
+    shortfallDeg: solved.shortfallDeg,
+    freePlates: [...solved.freePlates],
+    solutions: solved.solutions.map((solution, index) => ({
+      fastAxesDeg: [...solution.fastAxesDeg],
+      dialsDeg: [...(index === choice.index ? choice.dialsDeg : solution.dialsDeg)],
+      infidelity: solution.infidelity,
+      dialledInfidelity: solution.dialledInfidelity,
+      expectedInfidelity: solution.expectedInfidelity,
+      expectedLow: solution.expectedLow,
+      expectedHigh: solution.expectedHigh,
+    })),
+    chosenSolution: choice.index,
+    held: choice.held,
+  };
 }

@@ -1,115 +1,108 @@
-import type { DialScale } from '../optics/dial';
 import type { Convention } from '../optics/convention';
-import { parseState, type StateReading } from '../optics/expression';
-import { type SolvedTarget, solveTarget, type TargetPlate, type TargetProblem } from '../optics/solve-target';
+import { parseState, parseUnitary, type StateReading, type UnitaryReading } from '../optics/expression';
+import type { Goal } from '../optics/goal';
+import { type SolvedTarget, solveTarget, type TargetProblem } from '../optics/solve-target';
 import type { Stokes } from '../optics/stokes';
-import { wrapSigned } from '../optics/units';
-import type { Calibration } from '../schemas/cabinet';
-
-/** What a dial's scale needs of a plate. */
-export interface DialledPlate {
-  readonly mount: { readonly direction: 1 | -1; readonly resolutionDeg: number };
-  readonly calibration: Pick<Calibration, 'offsetDeg'>;
-}
-
-/** What a solver needs of a plate: its calibration and its mount. */
-export interface SolvingPlate {
-  readonly mount: {
-    readonly direction: 1 | -1;
-    readonly resolutionDeg: number;
-    readonly repeatabilityDeg: number;
-  };
-  readonly calibration: Pick<
-    Calibration,
-    'retardanceDeg' | 'retardanceSigmaDeg' | 'offsetDeg' | 'offsetSigmaDeg'
-  >;
-}
+import type { Objective, ProtocolKind } from '../schemas/protocols';
+import { type PlateSurroundings, type SolvingPlate, targetPlates } from './solving-plates';
 
 /** What a solver needs of a bench. */
-export interface SolvingBench {
+export interface SolvingBench extends PlateSurroundings {
+  readonly wavelengthSigmaNm: number;
+  readonly temperatureSigmaK: number;
   readonly inputExpression: string;
   readonly polariserSigmaDeg: number;
+  readonly polariserExtinction: number | null;
   /** In beam order. */
   readonly plates: readonly SolvingPlate[];
 }
 
+/** What a solver needs of a protocol besides its rows. */
+export interface SolvingTask {
+  readonly kind: ProtocolKind;
+  readonly objective: Objective;
+  /** In beam order; null where nobody said. */
+  readonly presentDialsDeg: readonly number[] | null;
+}
+
+/** All of a row's problem but the row. */
+export interface RowProblem extends Omit<TargetProblem, 'goal' | 'heldFastAxesDeg'> {
+  readonly kind: ProtocolKind;
+  readonly input: Stokes;
+}
+
+/** A row as it was read: a state or a unitary, by the kind of its protocol. */
+export type RowReading =
+  | ({ readonly kind: 'state' } & Extract<StateReading, { ok: true }>)
+  | ({ readonly kind: 'unitary' } & Extract<UnitaryReading, { ok: true }>);
+
+type RowError = Extract<UnitaryReading, { ok: false }>['error'];
+
 export type RowResult =
-  | { readonly status: 'unreadable'; readonly error: Extract<StateReading, { ok: false }>['error'] }
-  | {
-      readonly status: 'solved';
-      readonly reading: Extract<StateReading, { ok: true }>;
-      readonly solved: SolvedTarget;
-    };
-
-/** How a plate's dial is engraved: its zero as calibrated, its sense and its finest step. */
-export function dialScaleOf({ mount, calibration }: DialledPlate): DialScale {
-  return {
-    offsetDeg: calibration.offsetDeg,
-    direction: mount.direction,
-    resolutionDeg: mount.resolutionDeg,
-  };
-}
-
-/** Plates as the solver takes them, in beam order. */
-export function targetPlates(plates: readonly SolvingPlate[]): TargetPlate[] {
-  return plates.map((plate) => ({
-    retardanceDeg: plate.calibration.retardanceDeg,
-    retardanceSigmaDeg: plate.calibration.retardanceSigmaDeg,
-    offsetSigmaDeg: plate.calibration.offsetSigmaDeg,
-    repeatabilityDeg: plate.mount.repeatabilityDeg,
-    scale: dialScaleOf(plate),
-  }));
-}
+  | { readonly status: 'unreadable'; readonly error: RowError }
+  | { readonly status: 'solved'; readonly reading: RowReading; readonly solved: SolvedTarget };
 
 /** The bench's side of a problem, read once for all rows. */
 export function benchProblem(
   bench: SolvingBench,
   convention: Convention,
-):
-  | { readonly ok: true; readonly problem: Omit<TargetProblem, 'target'> }
-  | Extract<StateReading, { ok: false }> {
+  { kind, objective, presentDialsDeg }: SolvingTask,
+): { readonly ok: true; readonly problem: RowProblem } | Extract<StateReading, { ok: false }> {
   const input = parseState(bench.inputExpression, convention);
   if (!input.ok) return input;
+  const standsFor = presentDialsDeg?.length === bench.plates.length ? presentDialsDeg : null;
   return {
     ok: true,
     problem: {
+      kind,
       input: input.stokes,
       polariserSigmaDeg: bench.polariserSigmaDeg,
-      objective: 'least-expected-infidelity',
-      plates: targetPlates(bench.plates),
+      polariserExtinction: bench.polariserExtinction,
+      wavelengthSigmaNm: bench.wavelengthSigmaNm,
+      temperatureSigmaK: bench.temperatureSigmaK,
+      objective,
+      presentDialsDeg: standsFor,
+      plates: targetPlates(bench.plates, bench),
     },
   };
 }
 
-/** One row of a protocol: read, then solved for the bench's plates. The client's worker and the server both call this. */
-export function solveRow(
+export function readRow(
   expression: string,
-  problem: Omit<TargetProblem, 'target'>,
+  kind: ProtocolKind,
   convention: Convention,
-): RowResult {
-  const reading = parseState(expression, convention);
-  if (!reading.ok) return { status: 'unreadable', error: reading.error };
-  const target: Stokes = reading.stokes;
-  return { status: 'solved', reading, solved: solveTarget({ ...problem, target }) };
+): { readonly ok: true; readonly reading: RowReading } | { readonly ok: false; readonly error: RowError } {
+  if (kind === 'prepare') {
+    const reading = parseState(expression, convention);
+    return reading.ok ? { ok: true, reading: { kind: 'state', ...reading } } : reading;
+  }
+  const reading = parseUnitary(expression, convention);
+  return reading.ok ? { ok: true, reading: { kind: 'unitary', ...reading } } : reading;
 }
 
-/** How far a held solution may have moved, in degrees of any one plate, and still count as the same branch. */
-const heldToleranceDeg = 10;
+/** What the plates are asked to do by a row. */
+export function rowGoal(reading: RowReading, input: Stokes): Goal {
+  return reading.kind === 'state'
+    ? { kind: 'prepare', input, target: reading.stokes }
+    : { kind: 'apply', target: reading.quaternion };
+}
 
-/** Which of the solutions stands: the held one where its branch still exists, else the best. */
-export function chooseSolution(
-  solved: SolvedTarget,
+/**
+ * One row of a protocol: read, then solved for the bench's plates. The client's worker and the server both call this.
+ * `heldFastAxesDeg`: the solution that a person holds, which in a family is one of its members.
+ */
+export function solveRow(
+  expression: string,
+  problem: RowProblem,
+  convention: Convention,
   heldFastAxesDeg: readonly number[] | null,
-): { readonly index: number; readonly held: boolean } {
-  if (heldFastAxesDeg === null) return { index: 0, held: false };
-  const distances = solved.solutions.map(({ fastAxesDeg }) =>
-    fastAxesDeg.reduce(
-      (worst, angle, plate) =>
-        Math.max(worst, Math.abs(wrapSigned(angle - (heldFastAxesDeg[plate] ?? Infinity), 180))),
-      0,
-    ),
-  );
-  const nearest = Math.min(...distances);
-  if (!(nearest <= heldToleranceDeg)) return { index: 0, held: false };
-  return { index: distances.indexOf(nearest), held: true };
+): RowResult {
+  const read = readRow(expression, problem.kind, convention);
+  if (!read.ok) return { status: 'unreadable', error: read.error };
+  const goal = rowGoal(read.reading, problem.input);
+  return {
+    status: 'solved',
+    reading: read.reading,
+    solved: solveTarget({ ...problem, goal, heldFastAxesDeg }),
+  };
 }

@@ -5,10 +5,24 @@ const plateKinds = ['half', 'quarter', 'other'] as const;
 export const plateKindSchema = z.enum(plateKinds);
 export type PlateKind = z.infer<typeof plateKindSchema>;
 
+/** How a plate is built, which decides how its retardance follows wavelength and temperature (dispersion/). */
+export const plateConstructionSchema = z.enum([
+  'true-zero-order',
+  'compound-zero-order',
+  'multi-order',
+  'achromatic',
+  'unknown',
+]);
+/** The crystals whose dispersion is known here; null for any other. */
+export const plateMaterialSchema = z.enum(['quartz', 'magnesium-fluoride', 'calcite', 'sapphire']).nullable();
+
 const directionSchema = z.union([z.literal(1), z.literal(-1)]);
 const retardanceSchema = numberSchema('A retardance', 0.1, 359.9, '°', '180.4');
 const sigmaSchema = (name: string) => numberSchema(name, 0, 20, '°', '0.3');
 const wavelengthSchema = numberSchema('A wavelength', 200, 5000, ' nm', '810');
+const temperatureSchema = numberSchema('A temperature', -50, 150, ' °C', '21.5');
+
+const approachSchema = z.enum(['rising', 'falling', 'either']);
 
 /** A holder with an engraved ring. */
 export const mountSchema = z.strictObject({
@@ -18,12 +32,21 @@ export const mountSchema = z.strictObject({
   resolutionDeg: z.number(),
   /** σ of coming back to the same reading. */
   repeatabilityDeg: z.number(),
+  /** Readings it can be turned to; null for a ring that turns all the way round. */
+  rangeDeg: z.strictObject({ from: z.number(), to: z.number() }).nullable(),
+  /** null where it isn't known, as for most mounts turned by hand. */
+  speedDegPerS: z.number().nullable(),
+  backlashDeg: z.number(),
+  /** From which side a reading is always approached, by the sense of the numbers. */
+  approach: approachSchema,
 });
 
 /** What was measured of a plate in its present seat. Never changed: a correction is a new one. */
 export const calibrationSchema = z.strictObject({
   id: idSchema,
   wavelengthNm: z.number(),
+  /** Of the plate while it was measured; null where nobody wrote it down. */
+  temperatureC: z.number().nullable(),
   retardanceDeg: z.number(),
   retardanceSigmaDeg: z.number(),
   /** The reading with the fast axis along H. */
@@ -41,6 +64,10 @@ export const plateSchema = z.strictObject({
   name: z.string(),
   kind: plateKindSchema,
   designWavelengthNm: z.number(),
+  construction: plateConstructionSchema,
+  material: plateMaterialSchema,
+  /** Whole waves beyond the retardance, of a multi-order plate; 0 for every other. */
+  order: z.int(),
   note: z.string(),
   mount: mountSchema,
   seatedAt: timestampSchema,
@@ -62,6 +89,7 @@ export const plateDetailSchema = z.strictObject({
 
 export const calibrationInputSchema = z.strictObject({
   wavelengthNm: wavelengthSchema,
+  temperatureC: temperatureSchema.nullable(),
   retardanceDeg: retardanceSchema,
   retardanceSigmaDeg: sigmaSchema('The uncertainty of the retardance'),
   offsetDeg: numberSchema('A zero', 0, 359.9999, '°', '301.73'),
@@ -76,12 +104,32 @@ const plateFields = {
   name: lineSchema(20, "plate's name"),
   kind: plateKindSchema,
   designWavelengthNm: wavelengthSchema,
+  construction: plateConstructionSchema,
+  material: plateMaterialSchema,
+  order: z
+    .int('An order is a whole number of waves. Write 0 for a zero-order plate.')
+    .min(0, 'An order is a whole number of waves, 0 or more.')
+    .max(200, 'An order is at most 200 waves.'),
   note: noteSchema(500, 'note'),
   mount: z.strictObject({
     name: lineSchema(20, "mount's name"),
     direction: directionSchema,
     resolutionDeg: numberSchema('The finest step of a dial', 0.001, 10, '°', '0.1'),
     repeatabilityDeg: numberSchema('The repeatability of a dial', 0, 5, '°', '0.05'),
+    rangeDeg: z
+      .strictObject({
+        from: numberSchema('The first reading', -720, 720, '°', '0'),
+        to: numberSchema('The last reading', -720, 1440, '°', '350'),
+      })
+      .refine(({ from, to }) => to - from >= 180, {
+        path: ['to'],
+        message:
+          'A plate needs half a turn of its mount: write a last reading at least 180° above the first.',
+      })
+      .nullable(),
+    speedDegPerS: numberSchema('A speed', 0.01, 3600, '°/s', '20').nullable(),
+    backlashDeg: numberSchema('The backlash', 0, 10, '°', '0.1'),
+    approach: approachSchema,
   }),
 };
 

@@ -3,6 +3,20 @@ import { idSchema, lineSchema, noteSchema, numberSchema, timestampSchema } from 
 
 export const maxTargets = 200;
 
+/** prepare: rows are states, made from the bench's input. apply: rows are unitaries, made of any light that comes in. */
+export const protocolKindSchema = z.enum(['prepare', 'apply']);
+export type ProtocolKind = z.infer<typeof protocolKindSchema>;
+
+/** By what a row's solutions are ranked and, unless one is held, chosen. */
+export const objectiveSchema = z.enum([
+  'least-expected-infidelity',
+  /** The whole list's turning, row after row, made least; see shared/optics/sequence. */
+  'least-travel',
+  /** Each row's own distance from the present dials. */
+  'nearest-to-present',
+]);
+export type Objective = z.infer<typeof objectiveSchema>;
+
 /** A row of the targets' table. `id` is made by the client and holds through edits and reorderings. */
 const draftTargetSchema = z.strictObject({
   id: idSchema,
@@ -17,7 +31,11 @@ export type DraftTarget = z.infer<typeof draftTargetSchema>;
 export const draftContentSchema = z.strictObject({
   name: lineSchema(80, "protocol's name"),
   purpose: noteSchema(1000, 'purpose'),
+  kind: protocolKindSchema,
   benchId: idSchema,
+  objective: objectiveSchema,
+  /** Where the dials stand now, one a plate in beam order; null where nobody said. */
+  presentDialsDeg: z.array(z.number().min(-720).max(1440)).max(6).nullable(),
   /** The largest 1 − F that is within. */
   toleranceInfidelity: numberSchema('A tolerance', 1e-9, 0.5, '', '1e-3'),
   targets: z.array(draftTargetSchema).max(maxTargets, `A protocol has at most ${maxTargets} targets.`),
@@ -50,6 +68,7 @@ const protocolSummarySchema = z.strictObject({
   id: idSchema,
   name: z.string(),
   purpose: z.string(),
+  kind: protocolKindSchema,
   benchName: z.string(),
   targetCount: z.int(),
   draftSavedAt: timestampSchema,

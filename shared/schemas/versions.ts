@@ -1,9 +1,15 @@
 import { z } from 'zod';
 import { idSchema, pageSchema, timestampSchema } from './common';
 import { laserClassSchema } from './benches';
-import { calibrationSchema, mountSchema, plateKindSchema } from './cabinet';
+import {
+  calibrationSchema,
+  mountSchema,
+  plateConstructionSchema,
+  plateKindSchema,
+  plateMaterialSchema,
+} from './cabinet';
 import { conventionSchema } from './labs';
-import { versionSummarySchema } from './protocols';
+import { objectiveSchema, protocolKindSchema, versionSummarySchema } from './protocols';
 
 /** S1, S2, S3 in the canonical frame. */
 const canonicalStokesSchema = z.tuple([z.number(), z.number(), z.number()]);
@@ -13,8 +19,21 @@ const frozenPlateSchema = z.strictObject({
   name: z.string(),
   kind: plateKindSchema,
   designWavelengthNm: z.number(),
+  construction: plateConstructionSchema,
+  material: plateMaterialSchema,
+  order: z.int(),
   mount: mountSchema,
   calibration: calibrationSchema,
+  /** The retardance that the solver took, at the bench's wavelength and temperature. */
+  used: z.strictObject({
+    retardanceDeg: z.number(),
+    /** Used minus measured. */
+    shiftDeg: z.number(),
+    /** no-model: calibrated at another wavelength, and nothing is known of how it follows. */
+    source: z.enum(['calibration', 'model', 'no-model']),
+    perNmDeg: z.number(),
+    perKelvinDeg: z.number(),
+  }),
 });
 export type FrozenPlate = z.infer<typeof frozenPlateSchema>;
 
@@ -34,6 +53,16 @@ const frozenSolutionSchema = z.strictObject({
 });
 export type FrozenSolution = z.infer<typeof frozenSolutionSchema>;
 
+/** What a row asks for, canonical frame; a unitary as a unit quaternion (w, x, y, z) in Bloch axes. */
+const frozenGoalSchema = z.discriminatedUnion('kind', [
+  z.strictObject({ kind: z.literal('state'), stokes: canonicalStokesSchema }),
+  z.strictObject({
+    kind: z.literal('unitary'),
+    quaternion: z.tuple([z.number(), z.number(), z.number(), z.number()]),
+  }),
+]);
+export type FrozenGoal = z.infer<typeof frozenGoalSchema>;
+
 const frozenTargetSchema = z.strictObject({
   id: idSchema,
   label: z.string(),
@@ -41,11 +70,13 @@ const frozenTargetSchema = z.strictObject({
   expression: z.string(),
   /** The same value in canonical form. */
   canonicalExpression: z.string(),
-  stokes: canonicalStokesSchema,
+  goal: frozenGoalSchema,
   reach: z.enum(['exact', 'nearest', 'family']),
-  /** Angle on the sphere to the closest state within reach. */
+  /** Angle on the sphere to the closest state within reach, or of the turn that is left of a unitary. */
   shortfallDeg: z.number(),
-  /** Best first. */
+  /** In a family: the plates that may stand anywhere, in beam order. */
+  freePlates: z.array(z.int()),
+  /** As ranked by the objective. */
   solutions: z.array(frozenSolutionSchema).min(1),
   chosenSolution: z.int(),
   held: z.boolean(),
@@ -54,7 +85,7 @@ export type FrozenTarget = z.infer<typeof frozenTargetSchema>;
 
 /** All that a version freezes. Its canonical JSON (RFC 8785) is what the hash covers, its parent's hash included. */
 export const versionContentSchema = z.strictObject({
-  format: z.literal('quarterturn.version/1'),
+  format: z.literal('quarterturn.version/2'),
   lab: z.strictObject({ id: idSchema, name: z.string() }),
   protocol: z.strictObject({ id: idSchema, name: z.string(), purpose: z.string() }),
   number: z.int(),
@@ -64,18 +95,24 @@ export const versionContentSchema = z.strictObject({
   savedBy: z.strictObject({ id: idSchema, name: z.string() }),
   convention: conventionSchema,
   solverVersion: z.string(),
-  objective: z.literal('least-expected-infidelity'),
+  kind: protocolKindSchema,
+  objective: objectiveSchema,
+  presentDialsDeg: z.array(z.number()).nullable(),
   toleranceInfidelity: z.number(),
   bench: z.strictObject({
     id: idSchema,
     name: z.string(),
     wavelengthNm: z.number(),
+    wavelengthSigmaNm: z.number(),
+    temperatureC: z.number().nullable(),
+    temperatureSigmaK: z.number(),
     laserClass: laserClassSchema,
     hazardWavelengthsNm: z.array(z.number()),
     input: z.strictObject({
       expression: z.string(),
       stokes: canonicalStokesSchema,
       polariserSigmaDeg: z.number(),
+      polariserExtinction: z.number().nullable(),
     }),
     /** In beam order. */
     plates: z.array(frozenPlateSchema),

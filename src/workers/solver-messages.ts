@@ -1,12 +1,25 @@
 import type { Convention } from '../../shared/optics/convention';
-import type { RowResult, SolvingBench } from '../../shared/protocol/solve-row';
+import type { RowChoice } from '../../shared/protocol/choose-solutions';
+import type { RowResult, SolvingBench, SolvingTask } from '../../shared/protocol/solve-row';
+
+export interface JobRow {
+  readonly expression: string;
+  readonly heldFastAxesDeg: readonly number[] | null;
+}
 
 /** Rows to solve for one bench. A newer job makes an older one pointless. */
 export interface SolverJob {
   readonly job: number;
   readonly bench: SolvingBench;
   readonly convention: Convention;
-  readonly expressions: readonly string[];
+  readonly task: SolvingTask;
+  readonly rows: readonly JobRow[];
+}
+
+export interface RowAnswer {
+  readonly result: RowResult;
+  /** The solution that stands; null for a row that can't be read. */
+  readonly choice: RowChoice | null;
 }
 
 export type SolverAnswer =
@@ -14,8 +27,10 @@ export type SolverAnswer =
   | {
       readonly kind: 'rows';
       readonly job: number;
-      /** Place of the first of `results` among the job's expressions. */
+      /** Place of the first of `answers` among the job's rows. */
       readonly from: number;
-      readonly results: readonly RowResult[];
+      readonly answers: readonly RowAnswer[];
       readonly done: boolean;
-    };
+    }
+  /** By the least travel the rows depend on one another: their choices come when the last is solved. */
+  | { readonly kind: 'choices'; readonly job: number; readonly choices: readonly (RowChoice | null)[] };

@@ -1,10 +1,18 @@
-import { benchProblem, type RowResult, solveRow } from '../../shared/protocol/solve-row';
-import type { SolverAnswer, SolverJob } from './solver-messages';
+import { chooseSolution, chooseSolutions, type RowChoice } from '../../shared/protocol/choose-solutions';
+import { benchProblem, type RowProblem, type RowResult, solveRow } from '../../shared/protocol/solve-row';
+import type { JobRow, RowAnswer, SolverAnswer, SolverJob } from './solver-messages';
 
 /** So that a long table shows its first rows at once, and that a newer job is heard between two batches. */
 const rowsPerBatch = 10;
 
 let newestJob = 0;
+
+/** What was solved for one bench, convention and task: after a keystroke only the row that was typed in is new. */
+interface Solved {
+  readonly question: string;
+  readonly rows: Map<string, RowResult>;
+}
+let known: Solved = { question: '', rows: new Map() };
 
 function answer(message: SolverAnswer): void {
   self.postMessage(message);
@@ -14,18 +22,60 @@ function pause(): Promise<void> {
   return new Promise((resolve) => setTimeout(resolve, 0));
 }
 
-async function solve({ job, bench, convention, expressions }: SolverJob): Promise<void> {
-  const read = benchProblem(bench, convention);
+function answered(row: JobRow, result: RowResult): RowAnswer {
+  if (result.status === 'unreadable') return { result, choice: null };
+  return {
+    result,
+    choice: chooseSolution({ solved: result.solved, heldFastAxesDeg: row.heldFastAxesDeg }),
+  };
+}
+
+async function solve({ job, bench, convention, task, rows }: SolverJob): Promise<void> {
+  const read = benchProblem(bench, convention, task);
   if (!read.ok) {
     answer({ kind: 'bench-unreadable', job, message: `Column ${read.error.column}: ${read.error.message}` });
     return;
   }
-  for (let from = 0; from < expressions.length && job === newestJob; from += rowsPerBatch) {
-    const batch = expressions.slice(from, from + rowsPerBatch);
-    const results: RowResult[] = batch.map((expression) => solveRow(expression, read.problem, convention));
-    answer({ kind: 'rows', job, from, results, done: from + rowsPerBatch >= expressions.length });
+  const before = known;
+  const question = JSON.stringify([bench, convention, task]);
+  const solved = new Map<string, RowResult>();
+  known = { question, rows: solved };
+  const results: RowResult[] = [];
+  for (let from = 0; from < rows.length; from += rowsPerBatch) {
+    const batch = rows.slice(from, from + rowsPerBatch);
+    const answers = batch.map((row) => {
+      const key = JSON.stringify([row.expression, row.heldFastAxesDeg]);
+      const result =
+        (before.question === question ? before.rows.get(key) : undefined) ??
+        solved.get(key) ??
+        solveRow(row.expression, read.problem, convention, row.heldFastAxesDeg);
+      solved.set(key, result);
+      results.push(result);
+      return answered(row, result);
+    });
+    answer({ kind: 'rows', job, from, answers, done: from + rowsPerBatch >= rows.length });
     await pause();
+    if (job !== newestJob) return;
   }
+  if (task.objective === 'least-travel') {
+    answer({ kind: 'choices', job, choices: planned(rows, results, read.problem) });
+  }
+}
+
+/** The whole list's choices; a row that can't be read is stepped over. */
+function planned(
+  rows: readonly JobRow[],
+  results: readonly RowResult[],
+  problem: RowProblem,
+): readonly (RowChoice | null)[] {
+  const readable = results.flatMap((result, place) =>
+    result.status === 'solved'
+      ? [{ place, solved: result.solved, heldFastAxesDeg: rows[place]?.heldFastAxesDeg ?? null }]
+      : [],
+  );
+  const choices = chooseSolutions(readable, problem);
+  const byPlace = new Map(readable.map(({ place }, index) => [place, choices[index] ?? null]));
+  return rows.map((_, place) => byPlace.get(place) ?? null);
 }
 
 self.addEventListener('message', ({ data }: MessageEvent<SolverJob>) => {

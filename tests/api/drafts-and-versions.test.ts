@@ -31,7 +31,16 @@ const get = <S extends z.ZodType>(path: string, schema: S) =>
 const begin = (targets = [target('t1', 'H'), target('t2', '(H + i V)/sqrt(2)')]) =>
   answered(
     call(harness, lead, 'post', `/labs/${lab.labId}/protocols`, {
-      body: { name: 'A protocol', purpose: '', benchId: lab.benchId, toleranceInfidelity: 1e-3, targets },
+      body: {
+        name: 'A protocol',
+        purpose: '',
+        benchId: lab.benchId,
+        kind: 'prepare',
+        objective: 'least-expected-infidelity',
+        presentDialsDeg: null,
+        toleranceInfidelity: 1e-3,
+        targets,
+      },
     }),
     protocolSchema,
   );

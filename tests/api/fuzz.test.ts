@@ -80,6 +80,9 @@ test('three thousand mutated requests to every writing address: each a clear ans
     name: 'A protocol',
     purpose: '',
     benchId: lab.benchId,
+    kind: 'prepare',
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
     toleranceInfidelity: 1e-3,
     targets: [target('t', 'H'), target('u', '(H + i V)/sqrt(2)')],
   };

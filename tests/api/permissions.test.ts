@@ -31,6 +31,9 @@ const draftBody = (lab: TestLab) => ({
   name: 'Changed',
   purpose: '',
   benchId: lab.benchId,
+  kind: 'prepare',
+  objective: 'least-expected-infidelity',
+  presentDialsDeg: null,
   toleranceInfidelity: 1e-3,
   targets: [target('t1', 'H')],
 });

@@ -5,40 +5,54 @@ import {
   evaluateDials,
   infidelityBetween,
   parseState,
-  PlateCountError,
+  parseUnitary,
+  platesAtDials,
   radians,
   retardStokes,
   roundDial,
   SOLVER_VERSION,
   solveTarget,
+  statesBehind,
   type Stokes,
   type TargetPlate,
   type TargetProblem,
 } from '../../shared/optics';
 import { randomState, randomStream, stokesOf } from './independent';
 
+const motion = { speedDegPerS: null, backlashDeg: 0, approach: 'either' } as const;
+
 const half: TargetPlate = {
   retardanceDeg: 179.2,
   retardanceSigmaDeg: 0.3,
   offsetSigmaDeg: 0.05,
   repeatabilityDeg: 0.06,
-  scale: { offsetDeg: 12.4, direction: 1, resolutionDeg: 0.1 },
+  perNmDeg: -0.22,
+  perKelvinDeg: -0.022,
+  scale: { offsetDeg: 12.4, direction: 1, resolutionDeg: 0.1, rangeDeg: null },
+  motion,
 };
 const quarter: TargetPlate = {
   retardanceDeg: 86.9,
   retardanceSigmaDeg: 0.4,
   offsetSigmaDeg: 0.09,
   repeatabilityDeg: 0.06,
-  scale: { offsetDeg: 301.7, direction: -1, resolutionDeg: 0.1 },
+  perNmDeg: -0.11,
+  perKelvinDeg: -0.011,
+  scale: { offsetDeg: 301.7, direction: -1, resolutionDeg: 0.1, rangeDeg: null },
+  motion,
 };
 
 function problem(target: Stokes, plates: readonly TargetPlate[] = [half, quarter]): TargetProblem {
   return {
-    target,
-    input: [1, 0, 0],
+    goal: { kind: 'prepare', input: [1, 0, 0], target },
     plates,
     polariserSigmaDeg: 0.05,
+    polariserExtinction: null,
+    wavelengthSigmaNm: 0,
+    temperatureSigmaK: 0,
     objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
+    heldFastAxesDeg: null,
   };
 }
 
@@ -77,7 +91,8 @@ test('the dialled infidelity and the states after each plate are those of the ro
   for (let k = 0; k < 100; k += 1) {
     const target = stokesOf(randomState(random));
     const task = problem(target);
-    for (const { dialsDeg, dialledInfidelity, statesAfter } of solveTarget(task).solutions) {
+    for (const { dialsDeg, dialledInfidelity } of solveTarget(task).solutions) {
+      const statesAfter = statesBehind([1, 0, 0], platesAtDials(task.plates, dialsDeg));
       let light: Stokes = [1, 0, 0];
       dialsDeg.forEach((dial, plate) => {
         const { scale, retardanceDeg } = task.plates[plate] ?? half;
@@ -136,8 +151,89 @@ test('the answer survives JSON unchanged and is the same each time', () => {
   expect(SOLVER_VERSION).toMatch(/^\d+\.\d+\.\d+$/);
 });
 
-test('any number of plates but two is refused by name', () => {
-  for (const plates of [[], [half], [quarter, half, quarter]]) {
-    expect(() => solveTarget(problem([0, 1, 0], plates))).toThrow(PlateCountError);
+test('no plate and seven plates are refused', () => {
+  for (const plates of [[], Array.from({ length: 7 }, () => half)]) {
+    expect(() => solveTarget(problem([0, 1, 0], plates))).toThrow(RangeError);
+  }
+});
+
+const unitary = (source: string) => {
+  const reading = parseUnitary(source, DEFAULT_CONVENTION);
+  if (!reading.ok) throw new Error(reading.error.message);
+  return reading.quaternion;
+};
+
+test('a unitary is applied by three calibrated plates, and its dials make it as well as they are rounded', () => {
+  const plates = [quarter, half, { ...quarter, retardanceDeg: 92.3 }];
+  const task: TargetProblem = {
+    ...problem([1, 0, 0], plates),
+    goal: { kind: 'apply', target: unitary('zyz(30deg, 70deg, 110deg)') },
+  };
+  const solved = solveTarget(task);
+  expect(solved.kind).toBe('exact');
+  expect(solved.solutions).toHaveLength(4);
+  for (const { infidelity, dialsDeg, dialledInfidelity, expectedInfidelity } of solved.solutions) {
+    expect(infidelity).toBeLessThan(1e-24);
+    expect(evaluateDials(task, dialsDeg).infidelity).toBe(dialledInfidelity);
+    expect(dialledInfidelity).toBeLessThan(1e-4);
+    expect(expectedInfidelity).toBeGreaterThan(0);
+  }
+});
+
+test('of a family the best member for the budget stands first, and a held member is among the solutions', () => {
+  const plates = [quarter, half, quarter];
+  const target = state('bloch(70deg, 40deg)');
+  const solved = solveTarget(problem(target, plates));
+  expect(solved.kind).toBe('family');
+  expect(solved.freePlates).toHaveLength(1);
+  const [best, ...others] = solved.solutions;
+  for (const other of others) {
+    expect(best?.expectedInfidelity).toBeLessThanOrEqual(other.expectedInfidelity * (1 + 1e-9));
+  }
+  const some = others.at(-1)?.fastAxesDeg ?? [];
+  const [free = 0] = solved.freePlates;
+  const held = some.map((angle, plate) => (plate === free ? (angle + 3.7) % 180 : angle));
+  const holding = solveTarget({ ...problem(target, plates), heldFastAxesDeg: held });
+  expect(
+    holding.solutions.some(
+      ({ fastAxesDeg }) => Math.abs((fastAxesDeg[free] ?? 0) - (held[free] ?? 0)) < 1e-9,
+    ),
+  ).toBe(true);
+});
+
+test('nearest to the present dials comes first when that is the objective, each plate by its nearer reading', () => {
+  const random = randomStream(31);
+  for (let k = 0; k < 50; k += 1) {
+    const presentDialsDeg = [360 * random(), 360 * random()];
+    const task: TargetProblem = {
+      ...problem(stokesOf(randomState(random))),
+      objective: 'nearest-to-present',
+      presentDialsDeg,
+    };
+    const travels = solveTarget(task).solutions.map(({ dialsDeg, travelDeg }) => {
+      const turned = dialsDeg.reduce((sum, dial, plate) => {
+        const apart = Math.abs(dial - (presentDialsDeg[plate] ?? 0)) % 360;
+        expect(Math.min(apart, 360 - apart)).toBeLessThanOrEqual(90.1);
+        return sum + Math.min(apart, 360 - apart);
+      }, 0);
+      expect(travelDeg).toBeCloseTo(turned, 9);
+      return turned;
+    });
+    travels.forEach((travel, index) =>
+      expect(travel).toBeLessThanOrEqual((travels[index + 1] ?? Infinity) + 1e-9),
+    );
+  }
+});
+
+test('a mount that does not turn all the way round is dialled within its range', () => {
+  const random = randomStream(32);
+  const narrow: TargetPlate = { ...half, scale: { ...half.scale, rangeDeg: { from: -20, to: 175 } } };
+  for (let k = 0; k < 100; k += 1) {
+    const task = problem(stokesOf(randomState(random)), [narrow, quarter]);
+    for (const { dialsDeg, dialledInfidelity } of solveTarget(task).solutions) {
+      expect(dialsDeg[0]).toBeGreaterThanOrEqual(-20);
+      expect(dialsDeg[0]).toBeLessThanOrEqual(175);
+      expect(evaluateDials(task, dialsDeg).infidelity).toBe(dialledInfidelity);
+    }
   }
 });

@@ -5,7 +5,9 @@ import {
   type CalibrationInput,
   type CreatePlate,
   type Plate,
+  plateConstructionSchema,
   plateKindSchema,
+  plateMaterialSchema,
   type UpdatePlate,
 } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
@@ -16,6 +18,7 @@ const direction = z.union([z.literal(1), z.literal(-1)]);
 const calibrationRow = z.object({
   calibration_id: z.string(),
   wavelength_nm: z.number(),
+  temperature_c: z.number().nullable(),
   retardance_deg: z.number(),
   retardance_sigma_deg: z.number(),
   offset_deg: z.number(),
@@ -32,6 +35,9 @@ const plateRow = calibrationRow.extend({
   name: z.string(),
   kind: plateKindSchema,
   design_wavelength_nm: z.number(),
+  construction: plateConstructionSchema,
+  material: plateMaterialSchema,
+  whole_waves: z.number(),
   note: z.string(),
   retired_at: z.date().nullable(),
   revision: z.number(),
@@ -42,6 +48,11 @@ const plateRow = calibrationRow.extend({
   direction,
   resolution_deg: z.number(),
   repeatability_deg: z.number(),
+  range_from_deg: z.number().nullable(),
+  range_to_deg: z.number().nullable(),
+  speed_deg_per_s: z.number().nullable(),
+  backlash_deg: z.number(),
+  approach: z.enum(['rising', 'falling', 'either']),
   benches: z.array(z.strictObject({ id: z.string(), name: z.string() })),
 });
 
@@ -53,6 +64,7 @@ function mapCalibration(row: z.infer<typeof calibrationRow>): Calibration {
   return {
     id: row.calibration_id,
     wavelengthNm: row.wavelength_nm,
+    temperatureC: row.temperature_c,
     retardanceDeg: row.retardance_deg,
     retardanceSigmaDeg: row.retardance_sigma_deg,
     offsetDeg: row.offset_deg,
@@ -72,12 +84,22 @@ function mapRow(unread: unknown): StoredPlate {
     name: row.name,
     kind: row.kind,
     designWavelengthNm: row.design_wavelength_nm,
+    construction: row.construction,
+    material: row.material,
+    order: row.whole_waves,
     note: row.note,
     mount: {
       name: row.mount_name,
       direction: row.direction,
       resolutionDeg: row.resolution_deg,
       repeatabilityDeg: row.repeatability_deg,
+      rangeDeg:
+        row.range_from_deg === null || row.range_to_deg === null
+          ? null
+          : { from: row.range_from_deg, to: row.range_to_deg },
+      speedDegPerS: row.speed_deg_per_s,
+      backlashDeg: row.backlash_deg,
+      approach: row.approach,
     },
     seatedAt: row.seated_at.toISOString(),
     calibration: mapCalibration(row),
@@ -96,6 +118,9 @@ export function asPlate(stored: StoredPlate): Plate {
     name: stored.name,
     kind: stored.kind,
     designWavelengthNm: stored.designWavelengthNm,
+    construction: stored.construction,
+    material: stored.material,
+    order: stored.order,
     note: stored.note,
     mount: stored.mount,
     seatedAt: stored.seatedAt,
@@ -106,12 +131,13 @@ export function asPlate(stored: StoredPlate): Plate {
   };
 }
 
-const calibrationColumns = `c.id as calibration_id, c.wavelength_nm, c.retardance_deg, c.retardance_sigma_deg,
+const calibrationColumns = `c.id as calibration_id, c.wavelength_nm, c.temperature_c, c.retardance_deg, c.retardance_sigma_deg,
   c.offset_deg, c.offset_sigma_deg, c.method, c.note as calibration_note, c.measured_at, u.name as recorded_by_name`;
 
 const plateQuery = `
-  select p.id, p.lab_id, p.name, p.kind, p.design_wavelength_nm, p.note, p.retired_at, p.revision,
+  select p.id, p.lab_id, p.name, p.kind, p.design_wavelength_nm, p.construction, p.material, p.whole_waves, p.note, p.retired_at, p.revision,
     s.id as seat_id, s.seated_at, m.id as mount_id, m.name as mount_name, m.direction, m.resolution_deg, m.repeatability_deg,
+    m.range_from_deg, m.range_to_deg, m.speed_deg_per_s, m.backlash_deg, m.approach,
     ${calibrationColumns},
     coalesce((select json_agg(json_build_object('id', b.id, 'name', b.name) order by b.name)
       from bench_plates bp join benches b on b.lab_id = bp.lab_id and b.id = bp.bench_id
@@ -173,10 +199,7 @@ export async function insertPlate(
   await transaction('plates').insert({
     id,
     lab_id: place.labId,
-    name: plate.name,
-    kind: plate.kind,
-    design_wavelength_nm: plate.designWavelengthNm,
-    note: plate.note,
+    ...plateColumns(plate),
     created_at: place.now,
   });
   await transaction('mounts').insert({ id: mountId, lab_id: place.labId, ...mountColumns(plate.mount) });
@@ -203,6 +226,7 @@ export async function insertCalibration(
     lab_id: place.labId,
     seat_id: seatId,
     wavelength_nm: calibration.wavelengthNm,
+    temperature_c: calibration.temperatureC,
     retardance_deg: calibration.retardanceDeg,
     retardance_sigma_deg: calibration.retardanceSigmaDeg,
     offset_deg: calibration.offsetDeg,
@@ -223,13 +247,7 @@ export async function updatePlate(
 ): Promise<void> {
   await transaction('plates')
     .where({ lab_id: stored.labId, id: stored.id })
-    .update({
-      name: plate.name,
-      kind: plate.kind,
-      design_wavelength_nm: plate.designWavelengthNm,
-      note: plate.note,
-      revision: stored.revision + 1,
-    });
+    .update({ ...plateColumns(plate), revision: stored.revision + 1 });
   await transaction('mounts')
     .where({ lab_id: stored.labId, id: stored.mountId })
     .update(mountColumns(plate.mount));
@@ -252,11 +270,28 @@ export async function raiseRevision(transaction: Transaction, stored: StoredPlat
     .update({ revision: stored.revision + 1 });
 }
 
+function plateColumns(plate: UpdatePlate) {
+  return {
+    name: plate.name,
+    kind: plate.kind,
+    design_wavelength_nm: plate.designWavelengthNm,
+    construction: plate.construction,
+    material: plate.material,
+    whole_waves: plate.order,
+    note: plate.note,
+  };
+}
+
 function mountColumns(mount: CreatePlate['mount']) {
   return {
     name: mount.name,
     direction: mount.direction,
     resolution_deg: mount.resolutionDeg,
     repeatability_deg: mount.repeatabilityDeg,
+    range_from_deg: mount.rangeDeg?.from ?? null,
+    range_to_deg: mount.rangeDeg?.to ?? null,
+    speed_deg_per_s: mount.speedDegPerS,
+    backlash_deg: mount.backlashDeg,
+    approach: mount.approach,
   };
 }

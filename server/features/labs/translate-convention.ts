@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import type { Convention } from '../../../shared/optics/convention';
-import { formatState, parseState } from '../../../shared/optics/expression';
+import { formatState, formatUnitary, parseState, parseUnitary } from '../../../shared/optics/expression';
+import { unitaryShortfall } from '../../../shared/optics/goal';
 import { infidelityBetween } from '../../../shared/optics/stokes';
 import { draftContentSchema } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
@@ -18,6 +19,15 @@ function translateExpression(expression: string, from: Convention, to: Conventio
   const after = parseState(expression, to);
   if (after.ok && infidelityBetween(before.stokes, after.stokes) < sameState) return expression;
   return formatState(before.jones, to);
+}
+
+/** As `translateExpression`, for a row that is a unitary. */
+function translateUnitary(expression: string, from: Convention, to: Convention): string {
+  const before = parseUnitary(expression, from);
+  if (!before.ok) return expression;
+  const after = parseUnitary(expression, to);
+  if (after.ok && unitaryShortfall(after.quaternion, before.quaternion) < sameState) return expression;
+  return formatUnitary(before.quaternion, to);
 }
 
 /**
@@ -55,9 +65,10 @@ async function translateDrafts(
     .parse(await transaction('drafts').where({ lab_id: labId }).orderBy('protocol_id').forUpdate().select());
   for (const { protocol_id, content, revision } of drafts) {
     const draft = draftContentSchema.parse(JSON.parse(content));
+    const translate = draft.kind === 'apply' ? translateUnitary : translateExpression;
     const targets = draft.targets.map((target) => ({
       ...target,
-      expression: translateExpression(target.expression, from, to),
+      expression: translate(target.expression, from, to),
     }));
     const same = targets.every(({ expression }, index) => expression === draft.targets[index]?.expression);
     if (!same) translated += 1;

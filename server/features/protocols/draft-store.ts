@@ -5,6 +5,7 @@ import {
   type DraftContent,
   draftContentSchema,
   type Protocol,
+  protocolKindSchema,
   type ProtocolSummary,
 } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
@@ -23,6 +24,7 @@ const summaryRow = z.object({
   protocol_id: z.string(),
   name: z.string(),
   purpose: z.string(),
+  kind: protocolKindSchema,
   bench_name: z.string(),
   target_count: z.number(),
   saved_at: z.date(),
@@ -49,6 +51,7 @@ export async function listProtocols(transaction: Transaction, labId: string): Pr
       'drafts.protocol_id',
       'drafts.name',
       'drafts.purpose',
+      'drafts.kind',
       'drafts.target_count',
       'drafts.saved_at',
       'benches.name as bench_name',
@@ -62,6 +65,7 @@ export async function listProtocols(transaction: Transaction, labId: string): Pr
       id: row.protocol_id,
       name: row.name,
       purpose: row.purpose,
+      kind: row.kind,
       benchName: row.bench_name,
       targetCount: row.target_count,
       draftSavedAt: row.saved_at.toISOString(),
@@ -169,6 +173,7 @@ function columnsOf(content: DraftContent) {
     content: JSON.stringify(content),
     name: content.name,
     purpose: content.purpose,
+    kind: content.kind,
     bench_id: content.benchId,
     target_count: content.targets.length,
   };

@@ -38,8 +38,7 @@ import { PlateOrder } from './PlateOrder';
 function fieldOf(path: string): keyof BenchValues | null {
   if (path === 'name' || path === 'inputExpression') return path;
   if (path.startsWith('hazardWavelengthsNm')) return 'hazardWavelengthsNm';
-  if (path === 'plateIds.1') return 'secondPlateId';
-  return path.startsWith('plateIds') ? 'firstPlateId' : null;
+  return path.startsWith('plateIds') ? 'plates' : null;
 }
 
 /** A new bench, or one that is edited. `save` gets the request and the revision it was made against. */
@@ -54,7 +53,7 @@ export function BenchForm(props: {
   const queryClient = useQueryClient();
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [baseRevision, setBaseRevision] = useState(bench?.revision ?? 0);
-  const { register, control, formState, handleSubmit, setValue, setError, getValues, reset } = useForm<
+  const { register, control, formState, handleSubmit, setError, getValues, reset } = useForm<
     BenchValues,
     unknown,
     CreateBench
@@ -80,13 +79,13 @@ export function BenchForm(props: {
     if (fault === null) saving.mutate({ body, revision });
     else setError('inputExpression', { type: 'expression', message: fault }, { shouldFocus: true });
   };
-  const field = (name: keyof BenchValues): FieldBinding => ({
+  const field = (name: Exclude<keyof BenchValues, 'plates'>): FieldBinding => ({
     ...register(name),
     fault: formState.errors[name]?.message,
   });
   const wavelengthNm = readTypedNumber(values.wavelengthNm ?? '');
-  const chosen = [values.firstPlateId, values.secondPlateId].flatMap(
-    (id) => plates.find((plate) => plate.id === id) ?? [],
+  const chosen = (values.plates ?? []).flatMap(
+    ({ plateId }) => plates.find((plate) => plate.id === plateId) ?? [],
   );
   const warnings = benchWarnings(chosen, wavelengthNm, bench?.id ?? null);
   const theirs = benchConflict(conflictingState(saving.error));
@@ -99,7 +98,21 @@ export function BenchForm(props: {
     >
       <div className="space-y-4">
         <TextField label="bench’s name" {...field('name')} required />
-        <NumberField label="wavelength, nm" {...field('wavelengthNm')} required />
+        <div className="grid gap-4 sm:grid-cols-2">
+          <NumberField label="wavelength, nm" {...field('wavelengthNm')} required />
+          <NumberField
+            label="its σ, nm"
+            help="0 leaves it out of the budget."
+            {...field('wavelengthSigmaNm')}
+            required
+          />
+          <NumberField
+            label="temperature of the plates, °C"
+            help="Empty where nobody watches it."
+            {...field('temperatureC')}
+          />
+          <NumberField label="its σ, K" {...field('temperatureSigmaK')} required />
+        </div>
         <TextField
           label="state behind the polariser"
           mono
@@ -117,15 +130,16 @@ export function BenchForm(props: {
           {...field('polariserSigmaDeg')}
           required
         />
+        <NumberField
+          label="extinction of the polariser"
+          help="Power it lets through crossed over parallel, such as 1e-5. Empty where it is not stated."
+          {...field('polariserExtinction')}
+        />
         <PlateOrder
           plates={plates}
-          first={field('firstPlateId')}
-          second={field('secondPlateId')}
-          onSwap={() => {
-            const { firstPlateId, secondPlateId } = getValues();
-            setValue('firstPlateId', secondPlateId, { shouldDirty: true });
-            setValue('secondPlateId', firstPlateId, { shouldDirty: true });
-          }}
+          control={control}
+          register={register}
+          fault={formState.errors.plates?.message ?? formState.errors.plates?.root?.message}
         />
         <div role="status" className="space-y-2">
           {warnings.map((warning) => (

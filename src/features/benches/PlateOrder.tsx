@@ -1,8 +1,11 @@
+import { type Control, useFieldArray, type UseFormRegister } from 'react-hook-form';
+import { maxBenchPlates } from '../../../shared/schemas/benches';
+import type { Plate } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
 import { SelectField } from '../../components/SelectField';
-import type { Plate } from '../../../shared/schemas/cabinet';
 import { kindNames } from '../cabinet';
-import type { FieldBinding } from './bench-form-values';
+import type { CreateBench } from '../../../shared/schemas/benches';
+import type { BenchValues } from './bench-form-values';
 
 // A list's text can't be drawn with margins, and the faces have this one.
 const gap = '\u00a0';
@@ -13,27 +16,51 @@ export function plateChoice(plate: Plate): string {
   return `${plate.name}, ${kindNames[plate.kind]}, ${retardanceDeg}° at ${wavelengthNm}${gap}nm`;
 }
 
-/** The two places in the beam, each with its plate, and a way to change them round without a drag. */
+/** The places in the beam, one to six, each with its plate; moved, added and taken out by buttons, without a drag. */
 export function PlateOrder(props: {
   readonly plates: readonly Plate[];
-  readonly first: FieldBinding;
-  readonly second: FieldBinding;
-  readonly onSwap: () => void;
+  readonly control: Control<BenchValues, unknown, CreateBench>;
+  readonly register: UseFormRegister<BenchValues>;
+  readonly fault: string | undefined;
 }) {
-  const { plates, first, second, onSwap } = props;
+  const { plates, control, register, fault } = props;
+  const { fields, append, move, remove } = useFieldArray({ control, name: 'plates' });
   const options = plates.map((plate) => ({ value: plate.id, label: plateChoice(plate) }));
   return (
     <fieldset className="space-y-4">
       <legend className="text-section">Plates in beam order</legend>
-      <SelectField
-        label="light meets first"
-        placeholder="choose a plate"
-        options={options}
-        {...first}
-        required
-      />
-      <SelectField label="then" placeholder="choose a plate" options={options} {...second} required />
-      <Button onClick={onSwap}>Change them round</Button>
+      {fields.map(({ id }, place) => (
+        <div key={id} className="flex flex-wrap items-end gap-2">
+          <SelectField
+            className="min-w-0 grow basis-64"
+            label={place === 0 ? 'light meets first' : `then, ${place + 1}`}
+            placeholder="choose a plate"
+            options={options}
+            {...register(`plates.${place}.plateId`)}
+          />
+          {fields.length > 1 && (
+            <>
+              <Button
+                onClick={() => move(place, place === 0 ? place + 1 : place - 1)}
+                aria-label={place === 0 ? 'Move the first plate later' : `Move plate ${place + 1} earlier`}
+              >
+                {place === 0 ? 'Later' : 'Earlier'}
+              </Button>
+              <Button onClick={() => remove(place)} aria-label={`Take plate ${place + 1} out of the beam`}>
+                Take out
+              </Button>
+            </>
+          )}
+        </div>
+      ))}
+      {fault !== undefined && (
+        <p role="alert" className="text-fault font-strong">
+          {fault}
+        </p>
+      )}
+      {fields.length < maxBenchPlates && (
+        <Button onClick={() => append({ plateId: '' })}>Add a plate behind them</Button>
+      )}
     </fieldset>
   );
 }

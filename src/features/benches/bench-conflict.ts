@@ -12,23 +12,29 @@ export function benchConflict(current: unknown): Bench | null {
 const fieldNames: Readonly<Record<keyof BenchValues, string>> = {
   name: 'name',
   wavelengthNm: 'wavelength, nm',
+  wavelengthSigmaNm: 'its σ, nm',
+  temperatureC: 'temperature of the plates, °C',
+  temperatureSigmaK: 'its σ, K',
   inputExpression: 'state behind the polariser',
   polariserSigmaDeg: 'σ of the polariser’s angle, degrees',
+  polariserExtinction: 'extinction of the polariser',
   laserClass: 'laser class',
   hazardWavelengthsNm: 'wavelengths that can reach an eye, nm',
-  firstPlateId: 'light meets first',
-  secondPlateId: 'then',
+  plates: 'plates in beam order',
 };
 
 const fields: readonly (keyof BenchValues)[] = [
   'name',
   'wavelengthNm',
+  'wavelengthSigmaNm',
+  'temperatureC',
+  'temperatureSigmaK',
   'inputExpression',
   'polariserSigmaDeg',
+  'polariserExtinction',
   'laserClass',
   'hazardWavelengthsNm',
-  'firstPlateId',
-  'secondPlateId',
+  'plates',
 ];
 
 /** Where what was typed differs from what the server holds, in words. */
@@ -37,18 +43,22 @@ export function benchDifferences(
   yours: BenchValues,
   plates: readonly Plate[],
 ): readonly EditDifference[] {
-  const stored = valuesOfBench(theirs);
-  const shown = (field: keyof BenchValues, value: string): string => {
-    if (field === 'firstPlateId' || field === 'secondPlateId') {
-      return [...plates, ...theirs.plates].find(({ id }) => id === value)?.name ?? '';
+  const nameOf = (plateId: string): string =>
+    [...plates, ...theirs.plates].find(({ id }) => id === plateId)?.name ?? '';
+  const shown = (field: keyof BenchValues, values: BenchValues): string => {
+    if (field === 'plates') {
+      return values.plates
+        .flatMap(({ plateId }) => (plateId === '' ? [] : [nameOf(plateId)]))
+        .join(', then ');
     }
-    return field === 'laserClass' && value === '' ? 'not stated' : value;
+    return field === 'laserClass' && values[field] === '' ? 'not stated' : values[field];
   };
+  const stored = valuesOfBench(theirs);
   return fields
-    .filter((field) => stored[field] !== yours[field])
     .map((field) => ({
       field: fieldNames[field],
-      theirs: shown(field, stored[field]),
-      yours: shown(field, yours[field]),
-    }));
+      theirs: shown(field, stored),
+      yours: shown(field, yours),
+    }))
+    .filter((difference) => difference.theirs !== difference.yours);
 }

@@ -1,7 +1,7 @@
 import type { UseFormRegisterReturn } from 'react-hook-form';
 import type { Bench, CreateBench, LaserClass } from '../../../shared/schemas/benches';
 import { laserClasses } from '../../../shared/schemas/benches';
-import { readTypedNumber, typedFromNumber } from '../../lib/forms';
+import { readOptionalNumber, readTypedNumber, typedFromNumber, typedFromOptional } from '../../lib/forms';
 
 /** A registered field with the sentence that says what is wrong with it. */
 export type FieldBinding = UseFormRegisterReturn & { readonly fault: string | undefined };
@@ -10,37 +10,49 @@ export type FieldBinding = UseFormRegisterReturn & { readonly fault: string | un
 export interface BenchValues {
   readonly name: string;
   readonly wavelengthNm: string;
+  readonly wavelengthSigmaNm: string;
+  /** '' where nobody watches it. */
+  readonly temperatureC: string;
+  readonly temperatureSigmaK: string;
   readonly inputExpression: string;
   readonly polariserSigmaDeg: string;
+  /** '' where it isn't stated. */
+  readonly polariserExtinction: string;
   /** '' is "not stated". */
   readonly laserClass: string;
   /** Numbers with commas or spaces between them. */
   readonly hazardWavelengthsNm: string;
-  readonly firstPlateId: string;
-  readonly secondPlateId: string;
+  /** In beam order; '' where none is chosen yet. */
+  readonly plates: readonly { readonly plateId: string }[];
 }
 
 export const emptyBench: BenchValues = {
   name: '',
   wavelengthNm: '',
+  wavelengthSigmaNm: '0',
+  temperatureC: '',
+  temperatureSigmaK: '0',
   inputExpression: 'H',
   polariserSigmaDeg: '',
+  polariserExtinction: '',
   laserClass: '',
   hazardWavelengthsNm: '',
-  firstPlateId: '',
-  secondPlateId: '',
+  plates: [{ plateId: '' }, { plateId: '' }],
 };
 
 export function valuesOfBench(bench: Bench): BenchValues {
   return {
     name: bench.name,
     wavelengthNm: typedFromNumber(bench.wavelengthNm),
+    wavelengthSigmaNm: typedFromNumber(bench.wavelengthSigmaNm),
+    temperatureC: typedFromOptional(bench.temperatureC),
+    temperatureSigmaK: typedFromNumber(bench.temperatureSigmaK),
     inputExpression: bench.inputExpression,
     polariserSigmaDeg: typedFromNumber(bench.polariserSigmaDeg),
+    polariserExtinction: typedFromOptional(bench.polariserExtinction),
     laserClass: bench.laserClass ?? '',
     hazardWavelengthsNm: bench.hazardWavelengthsNm.map(typedFromNumber).join(', '),
-    firstPlateId: bench.plates[0]?.id ?? '',
-    secondPlateId: bench.plates[1]?.id ?? '',
+    plates: bench.plates.map(({ id }) => ({ plateId: id })),
   };
 }
 
@@ -56,16 +68,20 @@ export function readWavelengths(text: string): readonly number[] {
     .map(readTypedNumber);
 }
 
-/** What the request's schema is held against. Plates not chosen are left out, so that the schema asks for two. */
+/** What the request's schema is held against. Places where no plate is chosen are left out. */
 export function readBench(values: BenchValues) {
   return {
     name: values.name,
     wavelengthNm: readTypedNumber(values.wavelengthNm),
+    wavelengthSigmaNm: readTypedNumber(values.wavelengthSigmaNm),
+    temperatureC: readOptionalNumber(values.temperatureC),
+    temperatureSigmaK: readTypedNumber(values.temperatureSigmaK),
     inputExpression: values.inputExpression,
     polariserSigmaDeg: readTypedNumber(values.polariserSigmaDeg),
+    polariserExtinction: readOptionalNumber(values.polariserExtinction),
     laserClass: readLaserClass(values.laserClass),
     hazardWavelengthsNm: readWavelengths(values.hazardWavelengthsNm),
-    plateIds: [values.firstPlateId, values.secondPlateId].filter((id) => id !== ''),
+    plateIds: values.plates.map(({ plateId }) => plateId).filter((id) => id !== ''),
   } satisfies Record<keyof CreateBench, unknown>;
 }
 

@@ -26,6 +26,11 @@ export function CalibrationFields({
         required
       />
       <NumberField label="its σ, degrees" {...field('offsetSigmaDeg')} required />
+      <NumberField
+        label="temperature of the plate, °C"
+        help="Empty where nobody wrote it down."
+        {...field('temperatureC')}
+      />
       <TextField
         label="how it was measured"
         help="For instance: between crossed polarisers, 31 points."

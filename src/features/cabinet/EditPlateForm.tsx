@@ -12,7 +12,7 @@ import {
 } from '../../lib/forms';
 import { plateConflict, plateDifferences } from './plate-conflict';
 import { plateFault } from './plate-fault';
-import { type PlateValues, readPlate, valuesOfPlate } from './plate-form-values';
+import { plateFieldOf, type PlateValues, readPlate, valuesOfPlate } from './plate-form-values';
 import { PlateFields } from './PlateFields';
 import { updatePlate } from './queries';
 
@@ -32,7 +32,7 @@ export function EditPlateForm(props: {
     UpdatePlate
   >({
     defaultValues: valuesOfPlate(plate),
-    resolver: schemaResolver(updatePlateSchema, readPlate),
+    resolver: schemaResolver(updatePlateSchema, readPlate, plateFieldOf),
     mode: 'onTouched',
   });
   const direction = useWatch({ control, name: 'mount.direction' });

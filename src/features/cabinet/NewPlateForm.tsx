@@ -10,6 +10,7 @@ import {
   type CalibrationValues,
   emptyCalibration,
   emptyPlate,
+  plateFieldOf,
   type PlateValues,
   readCalibration,
   readPlate,
@@ -47,10 +48,14 @@ export function NewPlateForm(props: {
     CreatePlate
   >({
     defaultValues: { ...emptyPlate, calibration: emptyCalibration(null, now) },
-    resolver: schemaResolver(newPlateSchema, (values) => ({
-      ...readPlate(values),
-      calibration: readCalibration(values.calibration),
-    })),
+    resolver: schemaResolver(
+      newPlateSchema,
+      (values) => ({
+        ...readPlate(values),
+        calibration: readCalibration(values.calibration),
+      }),
+      plateFieldOf,
+    ),
     mode: 'onTouched',
   });
   const direction = useWatch({ control, name: 'mount.direction' });

@@ -4,7 +4,7 @@ import { Quantity } from '../../components/NumberText';
 import { RingDial } from '../../components/RingDial';
 import { formatDate, formatDial, formatUncertain } from '../../lib/format';
 import { type CalibrationAge, calibrationAge } from './calibration-age';
-import { directionWords, kindNames } from './plate-words';
+import { builtWords, directionWords, kindNames, motionWords } from './plate-words';
 
 function Fact({ name, children }: { readonly name: string; readonly children: ReactNode }) {
   return (
@@ -66,9 +66,11 @@ export function PlateFacts(props: { readonly plate: Plate; readonly dueDays: num
         </Fact>
         <Fact name="plate">
           made for <Quantity text={String(plate.designWavelengthNm)} unit="nm" />
+          {builtWords(plate)}
         </Fact>
         <Fact name="dial">
           to {mount.resolutionDeg}°, {repeats}
+          {motionWords(mount)}
         </Fact>
         <Fact name="seat">since {formatDate(new Date(plate.seatedAt))}</Fact>
         <Fact name="due">

@@ -5,6 +5,7 @@ import { TextArea } from '../../components/TextArea';
 import { TextField } from '../../components/TextField';
 import type { FieldBinding } from './CalibrationFields';
 import type { PlateValues } from './plate-form-values';
+import { approachNames, constructionNames, materialNames } from './plate-words';
 
 export type PlateFieldName =
   Exclude<keyof PlateValues, 'mount'> | `mount.${Exclude<keyof PlateValues['mount'], 'direction'>}`;
@@ -14,6 +15,9 @@ const kindOptions = [
   { value: 'quarter', label: 'quarter-wave' },
   { value: 'other', label: 'other' },
 ];
+
+const options = (names: Readonly<Record<string, string>>) =>
+  Object.entries(names).map(([value, label]) => ({ value, label }));
 
 const directions = [
   { value: '1', label: 'counter-clockwise' },
@@ -32,6 +36,19 @@ export function PlateFields(props: {
       <TextField label="plate’s name" help="As it is written on it: H-3, Q-B." {...field('name')} required />
       <SelectField label="kind" options={kindOptions} {...field('kind')} />
       <NumberField label="made for, nm" {...field('designWavelengthNm')} required />
+      <SelectField
+        label="built as"
+        help="Decides how it follows the wavelength."
+        options={options(constructionNames)}
+        {...field('construction')}
+      />
+      <SelectField label="material" options={options(materialNames)} {...field('material')} />
+      <NumberField
+        label="whole waves beyond its retardance"
+        help="The order of a multi-order plate; 0 for any other."
+        {...field('order')}
+        required
+      />
       <TextField label="mount’s name" {...field('mount.name')} required />
       <NumberField
         label="finest step of its dial, degrees"
@@ -51,6 +68,23 @@ export function PlateFields(props: {
         value={direction}
         onChange={onDirection}
         className="sm:col-span-2"
+      />
+      <NumberField
+        label="first reading it reaches, degrees"
+        help="Empty for a ring that turns all the way round."
+        {...field('mount.rangeFromDeg')}
+      />
+      <NumberField label="last reading it reaches, degrees" {...field('mount.rangeToDeg')} />
+      <NumberField
+        label="speed, degrees a second"
+        help="Empty for a mount turned by hand."
+        {...field('mount.speedDegPerS')}
+      />
+      <NumberField label="backlash, degrees" {...field('mount.backlashDeg')} required />
+      <SelectField
+        label="a reading is approached"
+        options={options(approachNames)}
+        {...field('mount.approach')}
       />
       <TextArea label="note" rows={2} className="sm:col-span-2" {...field('note')} />
     </div>

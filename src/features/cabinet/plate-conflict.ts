@@ -1,6 +1,7 @@
 import { type Plate, plateSchema } from '../../../shared/schemas/cabinet';
 import type { EditDifference } from '../../lib/forms';
 import { type PlateValues, valuesOfPlate } from './plate-form-values';
+import { approachNames, constructionNames, materialNames } from './plate-words';
 
 /** The plate as the server holds it, out of a refusal; null when the refusal was another. */
 export function plateConflict(current: unknown): Plate | null {
@@ -12,10 +13,17 @@ const shown = (values: PlateValues): readonly (readonly [field: string, value: s
   ['name', values.name],
   ['kind', values.kind],
   ['made for, nm', values.designWavelengthNm],
+  ['built as', constructionNames[values.construction] ?? values.construction],
+  ['material', materialNames[values.material] ?? values.material],
+  ['whole waves', values.order],
   ['mount', values.mount.name],
   ['numbers rise', values.mount.direction === '1' ? 'counter-clockwise' : 'clockwise'],
   ['finest step, degrees', values.mount.resolutionDeg],
   ['repeats within, degrees', values.mount.repeatabilityDeg],
+  ['range, degrees', `${values.mount.rangeFromDeg} ${values.mount.rangeToDeg}`.trim()],
+  ['speed, degrees a second', values.mount.speedDegPerS],
+  ['backlash, degrees', values.mount.backlashDeg],
+  ['approached', approachNames[values.mount.approach] ?? values.mount.approach],
   ['note', values.note],
 ];
 

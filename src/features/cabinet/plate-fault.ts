@@ -11,6 +11,16 @@ export function plateFault(errors: FieldErrors<PlateValues>, name: PlateFieldNam
       return errors.mount?.resolutionDeg?.message;
     case 'mount.repeatabilityDeg':
       return errors.mount?.repeatabilityDeg?.message;
+    case 'mount.rangeFromDeg':
+      return errors.mount?.rangeFromDeg?.message;
+    case 'mount.rangeToDeg':
+      return errors.mount?.rangeToDeg?.message;
+    case 'mount.speedDegPerS':
+      return errors.mount?.speedDegPerS?.message;
+    case 'mount.backlashDeg':
+      return errors.mount?.backlashDeg?.message;
+    case 'mount.approach':
+      return errors.mount?.approach?.message;
     default:
       return errors[name]?.message;
   }

@@ -23,3 +23,48 @@ export function directionWords(direction: 1 | -1): string {
 export function restingAxisDeg({ mount, calibration }: Plate): number {
   return fastAxisFromDial(degrees(0), { ...mount, offsetDeg: calibration.offsetDeg });
 }
+
+type Names = Readonly<Record<string, string>>;
+
+export const constructionNames: Names = {
+  'true-zero-order': 'true zero order',
+  'compound-zero-order': 'compound zero order',
+  'multi-order': 'multi-order',
+  achromatic: 'achromatic',
+  unknown: 'not known',
+};
+
+export const materialNames: Names = {
+  quartz: 'quartz',
+  'magnesium-fluoride': 'magnesium fluoride',
+  calcite: 'calcite',
+  sapphire: 'sapphire',
+  '': 'another, or not known',
+};
+
+export const approachNames: Names = {
+  either: 'from either side',
+  rising: 'with rising numbers',
+  falling: 'with falling numbers',
+};
+
+/** ", compound zero order, quartz": how it is built, as far as that is known; starts with its comma. */
+export function builtWords({ construction, material, order }: Plate): string {
+  const parts = [
+    construction === 'unknown' ? null : constructionNames[construction],
+    order === 0 ? null : `${order} whole waves`,
+    material === null ? null : materialNames[material],
+  ];
+  return parts.flatMap((part) => (part === null || part === undefined ? [] : [`, ${part}`])).join('');
+}
+
+/** ", 20°/s, 0° to 350°, backlash 0.05°, with rising numbers": what is out of the ordinary of a mount's motion. */
+export function motionWords({ speedDegPerS, rangeDeg, backlashDeg, approach }: Plate['mount']): string {
+  const parts = [
+    speedDegPerS === null ? null : `${speedDegPerS}°/s`,
+    rangeDeg === null ? null : `reaches ${rangeDeg.from}° to ${rangeDeg.to}°`,
+    backlashDeg === 0 ? null : `backlash ${backlashDeg}°`,
+    approach === 'either' ? null : `approached ${approachNames[approach] ?? ''}`,
+  ];
+  return parts.flatMap((part) => (part === null ? [] : [`, ${part}`])).join('');
+}

@@ -34,7 +34,7 @@ import { UndoSentence } from '../../components/UndoSentence';
 import type { ViewedFrom } from '../../components/dial-words';
 import { formatDial, formatFidelity, formatTheta } from '../../lib/format';
 
-const quarter = { offsetDeg: 301.73, direction: -1, resolutionDeg: 0.1 } as const;
+const quarter = { offsetDeg: 301.73, direction: -1, resolutionDeg: 0.1, rangeDeg: null } as const;
 
 const divisions: readonly RuleDivision[] = ['t0', 't1', 't2', 't3', 'd+', 'c+'].flatMap((group, index) =>
   Array.from({ length: 4 }, (_, part): RuleDivision => {

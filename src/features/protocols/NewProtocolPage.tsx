@@ -2,7 +2,11 @@ import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useForm, useWatch } from 'react-hook-form';
 import { useNavigate } from 'react-router-dom';
 import { v7 as newId } from 'uuid';
-import { createProtocolSchema, type DraftContent, type DraftTarget } from '../../../shared/schemas/protocols';
+import {
+  createProtocolSchema,
+  type DraftContent,
+  type ProtocolKind,
+} from '../../../shared/schemas/protocols';
 import { BeamEmpty, BeamWrong } from '../../components/BeamState';
 import { Button } from '../../components/Button';
 import { ErrorNote } from '../../components/ErrorNote';
@@ -23,25 +27,38 @@ interface Typed {
   purpose: string;
   benchId: string;
   tolerance: string;
-  start: 'empty' | 'six-states';
+  kind: ProtocolKind;
+  start: 'empty' | 'filled';
 }
 
-function sixStates(): DraftTarget[] {
-  return ['H', 'V', 'D', 'A', 'R', 'L'].map((label) => ({
-    id: newId(),
-    label,
-    expression: `|${label}>`,
-    heldFastAxesDeg: null,
-  }));
-}
+const firstRows: Readonly<Record<ProtocolKind, readonly (readonly [label: string, expression: string])[]>> = {
+  prepare: ['H', 'V', 'D', 'A', 'R', 'L'].map((letter) => [letter, `|${letter}>`]),
+  apply: [
+    ['X', 'X'],
+    ['Y', 'Y'],
+    ['Z', 'Z'],
+    ['had', 'hadamard'],
+    ['S', 'S'],
+    ['T', 'T'],
+  ],
+};
 
-function read({ name, purpose, benchId, tolerance, start }: Typed): DraftContent {
+function read({ name, purpose, kind, benchId, tolerance, start }: Typed): DraftContent {
+  const rows = start === 'filled' ? firstRows[kind] : [];
   return {
     name,
     purpose,
+    kind,
     benchId,
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
     toleranceInfidelity: readTypedNumber(tolerance),
-    targets: start === 'six-states' ? sixStates() : [],
+    targets: rows.map(([label, expression]) => ({
+      id: newId(),
+      label,
+      expression,
+      heldFastAxesDeg: null,
+    })),
   };
 }
 
@@ -56,8 +73,17 @@ export function Component() {
 
   const live = (benches.data?.items ?? []).filter(({ retiredAt }) => retiredAt === null);
   const form = useForm<Typed, unknown, DraftContent>({
-    defaultValues: { name: '', purpose: '', benchId: '', tolerance: '1e−3', start: 'empty' },
-    resolver: schemaResolver(createProtocolSchema, read),
+    defaultValues: {
+      name: '',
+      purpose: '',
+      kind: 'prepare',
+      benchId: '',
+      tolerance: '1e−3',
+      start: 'empty',
+    },
+    resolver: schemaResolver(createProtocolSchema, read, (path) =>
+      path === 'toleranceInfidelity' ? 'tolerance' : null,
+    ),
   });
   const create = useMutation({
     mutationFn: (content: DraftContent) => createProtocol(lab.id, content, keyFor(content)),
@@ -66,7 +92,7 @@ export function Component() {
       await navigate(`/labs/${lab.id}/plan/${protocol.id}`);
     },
   });
-  const start = useWatch({ control: form.control, name: 'start' });
+  const [kind, start] = useWatch({ control: form.control, name: ['kind', 'start'] });
   const { errors } = form.formState;
 
   if (!may('protocols.write')) {
@@ -98,35 +124,39 @@ export function Component() {
           fault={errors.purpose?.message}
           {...form.register('purpose')}
         />
+        <SegmentedChoice
+          label="what it makes"
+          value={kind}
+          onChange={(chosen) => form.setValue('kind', chosen)}
+          segments={[
+            { value: 'prepare', label: 'states, from the bench’s input' },
+            { value: 'apply', label: 'unitaries, of any light' },
+          ]}
+        />
         <SelectField
           label="bench"
           placeholder="choose a bench"
-          options={live.map(({ id, name, wavelengthNm }) => ({
+          options={live.map(({ id, name, wavelengthNm, plates }) => ({
             value: id,
-            label: `${name}, ${wavelengthNm} nm`,
+            label: `${name}, ${wavelengthNm} nm, ${plates.map((plate) => plate.name).join(' ')}`,
           }))}
-          fault={errors.benchId === undefined ? undefined : 'Choose the bench that makes these states.'}
+          fault={errors.benchId === undefined ? undefined : 'Choose the bench that makes them.'}
           {...form.register('benchId')}
         />
         <NumberField
           label="tolerance, 1 − F"
           help="The largest 1 − F that is within, like 1e−3."
           className="max-w-48"
-          fault={
-            form.formState.errors.tolerance?.message ??
-            (Object.hasOwn(errors, 'toleranceInfidelity')
-              ? 'A tolerance is a number from 1e−9 to 0.5.'
-              : undefined)
-          }
+          fault={errors.tolerance?.message}
           {...form.register('tolerance')}
         />
         <SegmentedChoice
-          label="targets to begin with"
+          label="rows to begin with"
           value={start}
           onChange={(chosen) => form.setValue('start', chosen)}
           segments={[
             { value: 'empty', label: 'none' },
-            { value: 'six-states', label: 'the six Pauli states' },
+            { value: 'filled', label: kind === 'prepare' ? 'the six Pauli states' : 'six usual gates' },
           ]}
         />
       </div>

@@ -1,5 +1,10 @@
 import { v7 as newId } from 'uuid';
-import { type DraftContent, type DraftTarget, maxTargets } from '../../../shared/schemas/protocols';
+import {
+  type DraftContent,
+  type DraftTarget,
+  maxTargets,
+  type Objective,
+} from '../../../shared/schemas/protocols';
 
 /** One change of a draft, as data: what it does to the content, and which typing it continues. */
 export interface DraftEdit {
@@ -86,6 +91,42 @@ export const chooseBench = (benchId: string): DraftEdit => ({
   apply: (content) => ({
     ...content,
     benchId,
+    presentDialsDeg: null,
     targets: content.targets.map((target) => ({ ...target, heldFastAxesDeg: null })),
   }),
 });
+
+export const rankBy = (objective: Objective): DraftEdit => ({
+  typing: null,
+  apply: (content) => ({ ...content, objective }),
+});
+
+export const standAt = (presentDialsDeg: readonly number[] | null): DraftEdit => ({
+  typing: null,
+  apply: (content) => ({
+    ...content,
+    presentDialsDeg: presentDialsDeg === null ? null : [...presentDialsDeg],
+  }),
+});
+
+/** Several rows at once, as from a set or a file; undone as one. What does not fit any more is left out. */
+export const addRows = (rows: readonly DraftTarget[]): DraftEdit =>
+  withTargets(null, (targets) => [...targets, ...rows].slice(0, maxTargets));
+
+/** The rows in another order, by their ids; a row that is not named keeps its place at the end. */
+export const reorder = (ids: readonly string[]): DraftEdit =>
+  withTargets(null, (targets) => {
+    const place = new Map(ids.map((id, index) => [id, index]));
+    return [...targets].sort(
+      (a, b) => (place.get(a.id) ?? targets.length) - (place.get(b.id) ?? targets.length),
+    );
+  });
+
+/** Each row's solution held as a plan chose it. */
+export const holdAll = (held: ReadonlyMap<string, readonly number[]>): DraftEdit =>
+  withTargets(null, (targets) =>
+    targets.map((target) => {
+      const fastAxesDeg = held.get(target.id);
+      return fastAxesDeg === undefined ? target : { ...target, heldFastAxesDeg: [...fastAxesDeg] };
+    }),
+  );

@@ -1,12 +1,11 @@
-import { useEffect, useRef, useState } from 'react';
+import { startTransition, useEffect, useRef, useState } from 'react';
 import type { Convention } from '../../../shared/optics/convention';
-import type { RowResult, SolvingBench } from '../../../shared/protocol/solve-row';
+import type { SolvingBench, SolvingTask } from '../../../shared/protocol/solve-row';
 import type { DraftTarget } from '../../../shared/schemas/protocols';
-import type { SolverAnswer, SolverJob } from '../../workers/solver-messages';
+import type { RowAnswer, SolverAnswer, SolverJob } from '../../workers/solver-messages';
 
 /** What is known of one row: its newest result, and whether it is still that of an older text or bench. */
-export interface SolvedRow {
-  readonly result: RowResult;
+export interface SolvedRow extends RowAnswer {
   readonly stale: boolean;
 }
 
@@ -28,6 +27,7 @@ export function useSolvedRows(
   targets: readonly DraftTarget[],
   bench: SolvingBench | null,
   convention: Convention,
+  task: SolvingTask,
 ): SolvedRows {
   const [solved, setSolved] = useState(nothing);
   const worker = useRef<Worker | null>(null);
@@ -50,7 +50,13 @@ export function useSolvedRows(
   }, []);
 
   const written = targets.filter(({ expression }) => expression.trim() !== '');
-  const question = JSON.stringify([written.map(({ id, expression }) => [id, expression]), bench, convention]);
+  const { kind, objective, presentDialsDeg } = task;
+  const question = JSON.stringify([
+    written.map(({ id, expression, heldFastAxesDeg }) => [id, expression, heldFastAxesDeg]),
+    bench,
+    convention,
+    [kind, objective, presentDialsDeg],
+  ]);
 
   useEffect(() => {
     const current = worker.current;
@@ -67,14 +73,16 @@ export function useSolvedRows(
     }));
     const take = ({ data }: MessageEvent<SolverAnswer>) => {
       if (data.job !== job) return;
-      setSolved((before) => merge(before, data, ids));
+      // A long table is drawn in slices, so that typing is never kept waiting.
+      startTransition(() => setSolved((before) => merge(before, data, ids)));
     };
     current.addEventListener('message', take);
     const question: SolverJob = {
       job,
       bench,
       convention,
-      expressions: written.map(({ expression }) => expression),
+      task: { kind, objective, presentDialsDeg },
+      rows: written.map(({ expression, heldFastAxesDeg }) => ({ expression, heldFastAxesDeg })),
     };
     current.postMessage(question);
     return () => current.removeEventListener('message', take);
@@ -87,13 +95,21 @@ export function useSolvedRows(
 function merge(before: SolvedRows, data: SolverAnswer, ids: readonly string[]): SolvedRows {
   if (data.kind === 'bench-unreadable') return { rows: new Map(), progress: null, benchFault: data.message };
   const rows = new Map(before.rows);
-  data.results.forEach((result, offset) => {
+  if (data.kind === 'choices') {
+    data.choices.forEach((choice, place) => {
+      const id = ids[place];
+      const row = id === undefined ? undefined : rows.get(id);
+      if (id !== undefined && row !== undefined) rows.set(id, { ...row, choice });
+    });
+    return { ...before, rows };
+  }
+  data.answers.forEach((answer, offset) => {
     const id = ids[data.from + offset];
-    if (id !== undefined) rows.set(id, { result, stale: false });
+    if (id !== undefined) rows.set(id, { ...answer, stale: false });
   });
   return {
     rows,
-    progress: data.done ? null : { done: data.from + data.results.length, total: ids.length },
+    progress: data.done ? null : { done: data.from + data.answers.length, total: ids.length },
     benchFault: null,
   };
 }

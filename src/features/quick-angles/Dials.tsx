@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import type { SettingSolution, SolvedTarget } from '../../../shared/optics/solve-target';
-import type { SolvingPlate } from '../../../shared/protocol/solve-row';
+import type { SolvingPlate } from '../../../shared/protocol/solving-plates';
 import { RingDial } from '../../components/RingDial';
 import { Scientific } from '../../components/Scientific';
 import { TextButton } from '../../components/TextLink';
@@ -62,14 +62,14 @@ export function Dials(props: {
   const [chosen, setChosen] = useState(0);
   const [listed, setListed] = useState(false);
   const shown = solved.solutions[chosen] ?? solved.solutions[0];
-  if (shown === undefined) return <p>No setting of these plates was found for this state.</p>;
+  if (shown === undefined) return <p>No setting of these plates was found for this.</p>;
   const others = solved.solutions.length - 1;
   return (
     <>
-      <div className="mt-4 grid grid-cols-2 gap-4">
+      <div className={plates.length === 3 ? 'mt-4 grid grid-cols-3 gap-4' : 'mt-4 grid grid-cols-2 gap-4'}>
         {plates.map((named, k) => (
           <PlateSetting
-            key={named.name}
+            key={`${named.name} ${k}`}
             named={named}
             dialDeg={shown.dialsDeg[k] ?? 0}
             fastAxisDeg={shown.fastAxesDeg[k] ?? 0}
@@ -94,7 +94,7 @@ export function Dials(props: {
         )}{' '}
         {solved.kind === 'family' && 'Here the plates have a whole family of settings; these stand for it. '}
         {solved.kind === 'nearest' &&
-          `Out of reach: the closest state that these plates make is ${solved.shortfallDeg.toFixed(2)}° away on the sphere. `}
+          `Out of reach: the closest that these plates come is ${solved.shortfallDeg.toFixed(2)}° away. `}
         {others > 0 && (
           <TextButton aria-expanded={listed} onClick={() => setListed(!listed)}>
             {countWords[others] ?? String(others)} other {others === 1 ? 'solution' : 'solutions'}
@@ -126,8 +126,8 @@ function OtherSolutions(props: {
     <table className="mt-3 w-full text-right">
       <thead className="text-s text-ink-2">
         <tr className="border-hair border-b">
-          {plates.map(({ name }) => (
-            <th key={name} scope="col" className="py-1 pr-4 font-words">
+          {plates.map(({ name }, k) => (
+            <th key={`${name} ${k}`} scope="col" className="py-1 pr-4 font-words">
               {name}, {ideal ? 'θ' : 'dial'}
             </th>
           ))}
@@ -145,7 +145,7 @@ function OtherSolutions(props: {
         {solutions.map((solution, index) => (
           <tr key={solution.fastAxesDeg.join(' ')} className="border-hair border-b">
             {plates.map(({ name, plate }, k) => (
-              <td key={name} className="text-dial py-1.5 pr-4 font-mono">
+              <td key={`${name} ${k}`} className="text-dial py-1.5 pr-4 font-mono">
                 {ideal
                   ? `${formatTheta(solution.fastAxesDeg[k] ?? 0)}°`
                   : formatDial(solution.dialsDeg[k] ?? 0, plate.mount.resolutionDeg)}

@@ -1,25 +1,62 @@
 import { skipToken, useQuery } from '@tanstack/react-query';
 import { useDeferredValue, useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
-import { type Convention, CONVENTION_SETS, DEFAULT_CONVENTION, parseState } from '../../../shared/optics';
+import { type Convention, CONVENTION_SETS, DEFAULT_CONVENTION } from '../../../shared/optics';
 import type { Bench } from '../../../shared/schemas/benches';
+import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { SelectField } from '../../components/SelectField';
 import { TextField } from '../../components/TextField';
 import { benchesQuery } from '../benches';
 import { labQuery } from '../labs';
 import { sessionQuery } from '../session';
 import { Dials, type NamedPlate } from './Dials';
-import { idealBench } from './ideal-plates';
-import { quickSettings } from './quick-settings';
+import { idealBench, idealGateBench } from './ideal-plates';
+import { type Question, quickSettings, readQuick } from './quick-settings';
 import { flagWords } from './same-light';
 import { SameLight } from './SameLight';
 import { StateRead } from './StateRead';
+import { UnitaryRead } from './UnitaryRead';
 
-const idealPlates: readonly NamedPlate[] = idealBench.plates.map((plate, k) => ({
-  name: k === 0 ? 'half-wave' : 'quarter-wave',
-  kind: k === 0 ? 'half' : 'quarter',
-  plate,
-}));
+function idealPlates(question: Question): readonly NamedPlate[] {
+  const { plates } = question === 'apply' ? idealGateBench : idealBench;
+  return plates.map((plate) => {
+    const half = plate.calibration.retardanceDeg === 180;
+    return { name: half ? 'half-wave' : 'quarter-wave', kind: half ? 'half' : 'quarter', plate };
+  });
+}
+
+const questions: readonly { readonly value: Question; readonly label: string }[] = [
+  { value: 'prepare', label: 'make a state' },
+  { value: 'analyse', label: 'measure a state' },
+  { value: 'apply', label: 'be a unitary' },
+];
+
+const helpWords = {
+  prepare:
+    'A name (H V D A L R), a sum like (H + i V)/sqrt(2), a column [1, i], or bloch, stokes, ellipse, linear.',
+  analyse: 'The state that passes the plates and a polariser at H; its opposite is blocked.',
+  apply:
+    'A gate (X Y Z S T hadamard), rotate(x, 90deg), zyz(…), matrix [[a, b], [c, d]], from A to B, or a product.',
+} as const;
+
+const idealWords = {
+  prepare:
+    'Level light in, a half-wave plate, then a quarter-wave plate, as exact as no plate is. Angles of the fast axes, counter-clockwise from level as the receiver sees them.',
+  analyse:
+    'The light meets a half-wave plate, then a quarter-wave plate, then a polariser that passes level light; the plates as exact as no plate is.',
+  apply: 'A quarter-, a half- and a quarter-wave plate in this order, as exact as no plate is.',
+} as const;
+
+/** Where a first visit begins, for each question. */
+const begins = {
+  prepare: 'ellipse(30deg, 20deg)',
+  analyse: 'ellipse(30deg, 20deg)',
+  apply: 'hadamard',
+} as const;
+
+function questionOf(text: string | null): Question {
+  return questions.find(({ value }) => value === text)?.value ?? 'prepare';
+}
 
 function namedPlates(bench: Bench): readonly NamedPlate[] {
   return bench.plates.map((plate) => ({ name: plate.name, kind: plate.kind, plate }));
@@ -42,7 +79,7 @@ function useOwnLab(): { readonly convention: Convention | null; readonly benches
     // Not before the lab: without its convention nothing says what light goes into its benches.
     benches:
       (lab.data === undefined ? undefined : benches.data)?.items.filter(
-        ({ retiredAt, plates }) => retiredAt === null && plates.length === 2,
+        ({ retiredAt }) => retiredAt === null,
       ) ?? [],
   };
 }
@@ -50,7 +87,12 @@ function useOwnLab(): { readonly convention: Convention | null; readonly benches
 /** Angles for one state, with ideal plates or one's own, and how others write the same light. Nothing here is kept. */
 export function Component() {
   const [search] = useSearchParams();
-  const [expression, setExpression] = useState(search.get('state') ?? 'ellipse(30deg, 20deg)');
+  const [question, setQuestion] = useState(() => questionOf(search.get('for')));
+  const [typed, setTyped] = useState<Readonly<Record<Question, string>>>({
+    ...begins,
+    [questionOf(search.get('for'))]: search.get('state') ?? begins[questionOf(search.get('for'))],
+  });
+  const expression = typed[question];
   const [setId, setSetId] = useState('own');
   const [benchId, setBenchId] = useState<string | null>(null);
   const own = useOwnLab();
@@ -59,23 +101,27 @@ export function Component() {
   const bench =
     benchId === 'ideal' ? undefined : (own.benches.find(({ id }) => id === benchId) ?? own.benches[0]);
   const written = useDeferredValue(expression);
-  const reading = useMemo(() => parseState(written, convention), [written, convention]);
-  const plates = bench === undefined ? idealPlates : namedPlates(bench);
+  const read = useMemo(
+    () => readQuick({ question, expression: written, convention }),
+    [question, written, convention],
+  );
+  const plates = bench === undefined ? idealPlates(question) : namedPlates(bench);
   // The bench's input was written in its lab's convention, whichever one the state is written in here.
   const benchConvention = own.convention ?? DEFAULT_CONVENTION;
   const settings = useMemo(
     () =>
       quickSettings(
-        { expression: written, convention },
+        { question, expression: written, convention },
         {
-          bench: bench ?? idealBench,
-          kinds: (bench?.plates ?? idealPlates).map(({ kind }) => kind),
+          bench: bench ?? (question === 'apply' ? idealGateBench : idealBench),
+          kinds: (bench?.plates ?? []).map(({ kind }) => kind),
           convention: benchConvention,
         },
       ),
-    [written, convention, bench, benchConvention],
+    [question, written, convention, bench, benchConvention],
   );
   const empty = expression.trim() === '';
+  const reading = read.ok ? read.reading : null;
   return (
     <div className="pt-4 pb-10">
       <title>Quick angles · Quarterturn</title>
@@ -85,21 +131,26 @@ export function Component() {
       </header>
       <div className="grid grid-cols-1 gap-x-14 gap-y-8 lg:grid-cols-2">
         <div className="space-y-5">
+          <SegmentedChoice
+            label="the plates are to"
+            value={question}
+            onChange={setQuestion}
+            segments={questions}
+          />
           <TextField
-            label="state"
+            label={question === 'apply' ? 'unitary' : 'state'}
             mono
             autoCapitalize="off"
             autoCorrect="off"
             spellCheck={false}
             autoComplete="off"
             value={expression}
-            onChange={(event) => setExpression(event.target.value)}
-            help="A name (H V D A L R), a sum like (H + i V)/sqrt(2), a column [1, i], or bloch, stokes, ellipse, linear."
-            fault={
-              empty || reading.ok ? undefined : `Column ${reading.error.column}: ${reading.error.message}`
-            }
+            onChange={(event) => setTyped({ ...typed, [question]: event.target.value })}
+            help={helpWords[question]}
+            fault={empty || read.ok ? undefined : `Column ${read.error.column}: ${read.error.message}`}
           />
-          {reading.ok && <StateRead reading={reading} convention={convention} />}
+          {reading?.kind === 'state' && <StateRead reading={reading} convention={convention} />}
+          {reading?.kind === 'unitary' && <UnitaryRead reading={reading} convention={convention} />}
           <SelectField
             label="written in the convention of"
             value={setId}
@@ -127,9 +178,9 @@ export function Component() {
                   value={bench?.id ?? 'ideal'}
                   onChange={(event) => setBenchId(event.target.value)}
                   options={[
-                    ...own.benches.map(({ id, name, plates: two }) => ({
+                    ...own.benches.map(({ id, name, plates: standing }) => ({
                       value: id,
-                      label: `${name}: ${two.map((plate) => plate.name).join(', ')}`,
+                      label: `${name}: ${standing.map((plate) => plate.name).join(', ')}`,
                     })),
                     { value: 'ideal', label: 'ideal half- and quarter-wave plates' },
                   ]}
@@ -137,10 +188,10 @@ export function Component() {
               )}
             </div>
             {settings === null ? (
-              <p className="text-ink-2 mt-3">They stand here as soon as the state can be read.</p>
+              <p className="text-ink-2 mt-3">They stand here as soon as it can be read.</p>
             ) : settings.ok ? (
               <Dials
-                key={`${bench?.id ?? 'ideal'} ${written} ${setId}`}
+                key={`${bench?.id ?? 'ideal'} ${question} ${written} ${setId}`}
                 solved={settings.solved}
                 plates={plates}
                 ideal={bench === undefined}
@@ -149,15 +200,10 @@ export function Component() {
             ) : (
               <p className="mt-3">{settings.sentence}</p>
             )}
-            {bench === undefined && (
-              <p className="text-s text-ink-2 mt-3">
-                Level light in, a half-wave plate, then a quarter-wave plate, as exact as no plate is. Angles
-                of the fast axes, counter-clockwise from level as the receiver sees them.
-              </p>
-            )}
+            {bench === undefined && <p className="text-s text-ink-2 mt-3">{idealWords[question]}</p>}
           </section>
         </div>
-        {reading.ok && <SameLight jones={reading.jones} own={convention} />}
+        {reading?.kind === 'state' && <SameLight jones={reading.jones} own={convention} />}
       </div>
     </div>
   );

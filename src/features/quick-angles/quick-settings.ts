@@ -1,8 +1,27 @@
-import { type Convention, degrees, dialFromFastAxis, roundDial } from '../../../shared/optics';
-import { evaluateDials, type SolvedTarget, type TargetProblem } from '../../../shared/optics/solve-target';
-import { benchProblem, type SolvingBench, solveRow } from '../../../shared/protocol/solve-row';
+import type { Convention } from '../../../shared/optics/convention';
+import { dialFor } from '../../../shared/optics/dial';
+import { analyserGoal, type Goal } from '../../../shared/optics/goal';
+import {
+  evaluateDials,
+  type SolvedTarget,
+  solveTarget,
+  type TargetProblem,
+} from '../../../shared/optics/solve-target';
+import { STOKES_H } from '../../../shared/optics/stokes';
+import { degrees } from '../../../shared/optics/units';
+import {
+  benchProblem,
+  readRow,
+  rowGoal,
+  type RowReading,
+  type SolvingBench,
+  type SolvingTask,
+} from '../../../shared/protocol/solve-row';
 import type { PlateKind } from '../../../shared/schemas/cabinet';
-import { idealBench, idealTwin } from './ideal-plates';
+import { idealBench, idealGateBench, idealTwin } from './ideal-plates';
+
+/** prepare: make this state. analyse: pass it to a polariser at H and block its opposite. apply: be this unitary. */
+export type Question = 'prepare' | 'analyse' | 'apply';
 
 export type QuickSettings =
   | { readonly ok: false; readonly sentence: string }
@@ -24,47 +43,66 @@ export interface QuickBench {
 }
 
 interface Written {
+  readonly question: Question;
   readonly expression: string;
-  /** Of this state alone: a bench's input keeps the lab's. */
+  /** Of this expression alone: a bench's input keeps the lab's. */
   readonly convention: Convention;
+}
+
+/** What is written, as its question wants it: a unitary to apply, else a state. */
+export function readQuick({ question, expression, convention }: Written): ReturnType<typeof readRow> {
+  return readRow(expression, question === 'apply' ? 'apply' : 'prepare', convention);
+}
+
+const task: SolvingTask = {
+  kind: 'prepare',
+  objective: 'least-expected-infidelity',
+  presentDialsDeg: null,
+};
+
+function problemOn(
+  { bench, convention }: Pick<QuickBench, 'bench' | 'convention'>,
+  question: Question,
+  reading: RowReading,
+): TargetProblem | { readonly fault: string } {
+  const read = benchProblem(bench, convention, task);
+  if (!read.ok) return { fault: `Column ${read.error.column}: ${read.error.message}` };
+  const goal: Goal =
+    question === 'analyse' && reading.kind === 'state'
+      ? analyserGoal(reading.stokes, STOKES_H)
+      : rowGoal(reading, read.problem.input);
+  return { ...read.problem, goal, heldFastAxesDeg: null };
 }
 
 function idealInfidelity(
   { bench, kinds, convention }: QuickBench,
-  written: Written,
+  question: Question,
+  reading: RowReading,
   problem: TargetProblem,
 ): number | null {
-  if (bench === idealBench) return null;
+  if (bench === idealBench || bench === idealGateBench) return null;
   const twin = idealTwin(bench, kinds);
-  const read = twin === null ? null : benchProblem(twin, convention);
-  if (read?.ok !== true) return null;
-  const row = solveRow(written.expression, read.problem, written.convention);
-  const ideal = row.status === 'solved' ? row.solved.solutions[0] : undefined;
+  if (twin === null) return null;
+  const exact = problemOn({ bench: twin, convention }, question, reading);
+  const ideal = 'fault' in exact ? undefined : solveTarget(exact).solutions[0];
   if (ideal === undefined) return null;
   const dialsDeg = problem.plates.map(({ scale }, k) =>
-    roundDial(dialFromFastAxis(degrees(ideal.fastAxesDeg[k] ?? 0), scale), scale.resolutionDeg),
+    dialFor(degrees(ideal.fastAxesDeg[k] ?? 0), scale, null),
   );
   return evaluateDials(problem, dialsDeg).infidelity;
 }
 
-/** Every setting of a bench's plates for one written state; null where the state cannot be read, which its field says. */
+/** Every setting of a bench's plates for what is written; null where that cannot be read, which its field says. */
 export function quickSettings(written: Written, quick: QuickBench): QuickSettings | null {
-  const { bench, convention } = quick;
-  if (bench.plates.length !== 2) {
-    return {
-      ok: false,
-      sentence: `This page works with two plates, and this bench has ${bench.plates.length}.`,
-    };
+  const read = readQuick(written);
+  if (!read.ok) return null;
+  const problem = problemOn(quick, written.question, read.reading);
+  if ('fault' in problem) {
+    return { ok: false, sentence: `The bench’s own input state cannot be read. ${problem.fault}` };
   }
-  const read = benchProblem(bench, convention);
-  if (!read.ok) {
-    return {
-      ok: false,
-      sentence: `The bench’s own input state cannot be read. Column ${read.error.column}: ${read.error.message}`,
-    };
-  }
-  const row = solveRow(written.expression, read.problem, written.convention);
-  if (row.status !== 'solved') return null;
-  const problem = { ...read.problem, target: row.reading.stokes };
-  return { ok: true, solved: row.solved, idealInfidelityHere: idealInfidelity(quick, written, problem) };
+  return {
+    ok: true,
+    solved: solveTarget(problem),
+    idealInfidelityHere: idealInfidelity(quick, written.question, read.reading, problem),
+  };
 }

@@ -1,6 +1,6 @@
 import type { RunSummary } from '../../../shared/schemas/runs';
 import type { VersionContent } from '../../../shared/schemas/versions';
-import { StateFormula } from './StateFormula';
+import { WrittenFormula } from '../../components/WrittenFormula';
 import type { BenchReading } from './use-bench';
 import { LaserCaution } from '../benches';
 
@@ -37,7 +37,11 @@ export function BenchHead({ content, summary, setting, before }: BenchHeadProps)
         {target !== undefined && (
           <p className="bench-target">
             <b>{target.label}</b>{' '}
-            <StateFormula expression={target.expression} convention={content.convention} />
+            <WrittenFormula
+              expression={target.expression}
+              kind={content.kind}
+              convention={content.convention}
+            />
           </p>
         )}
         <p className="bench-whose">

@@ -3,7 +3,7 @@ import type { VersionContent } from '../../../shared/schemas/versions';
 import { FidelityChip } from '../../components/FidelityChip';
 import { fidelityVerdict } from '../../components/fidelity-verdict';
 import { Scientific } from '../../components/Scientific';
-import { StateFormula } from './StateFormula';
+import { WrittenFormula } from '../../components/WrittenFormula';
 import { formatDate, formatTime, missingSign } from '../../lib/format';
 import { dialledExpectation, type DialledExpectation, wantedDials } from './dial-cost';
 import { dialText } from './move-words';
@@ -81,7 +81,8 @@ function RecordRow({ content, index, reading, replaced }: RecordRowProps) {
     <tr className="border-t border-hair align-top">
       <td className="py-2 pr-5 font-mono text-ink-3">{index + 1}</td>
       <th scope="row" className="py-2 pr-5 text-start font-words">
-        <b>{target.label}</b> <StateFormula expression={target.expression} convention={content.convention} />
+        <b>{target.label}</b>{' '}
+        <WrittenFormula expression={target.expression} kind={content.kind} convention={content.convention} />
       </th>
       {content.bench.plates.map(({ id, mount }, plate) => {
         const wantedDeg = wanted[plate];

@@ -1,7 +1,6 @@
-import { degrees, toRadians, wrapSigned } from '../../../shared/optics/units';
-import { fastAxisFromDial } from '../../../shared/optics/dial';
+import { wrapSigned } from '../../../shared/optics/units';
 import { errorBudget } from '../../../shared/optics/budget';
-import { dialledInfidelity, frozenProblem } from '../../../shared/protocol/dialled';
+import { dialledInfidelity, frozenBudget } from '../../../shared/protocol/dialled';
 import type { VersionContent } from '../../../shared/schemas/versions';
 
 /** 1 − F that these dials make of one target, with the plates as the version froze them; null where they are no set of dials. */
@@ -30,21 +29,7 @@ export function dialledExpectation(
 ): DialledExpectation | null {
   const infidelity = madeOf(content, settingIndex, dialsDeg);
   if (infidelity === null) return null;
-  const problem = frozenProblem(content, settingIndex);
-  const inRadians = (angleDeg: number) => toRadians(degrees(angleDeg));
-  const budget = errorBudget(
-    problem.input,
-    problem.target,
-    problem.plates.map((plate, index) => ({
-      retardanceRad: inRadians(plate.retardanceDeg),
-      sigmaRetardanceRad: inRadians(plate.retardanceSigmaDeg),
-      fastAxisRad: toRadians(fastAxisFromDial(degrees(dialsDeg[index] ?? 0), plate.scale)),
-      sigmaOffsetRad: inRadians(plate.offsetSigmaDeg),
-      dialResolutionRad: inRadians(plate.scale.resolutionDeg),
-      dialRepeatabilityRad: inRadians(plate.repeatabilityDeg),
-    })),
-    inRadians(problem.polariserSigmaDeg),
-  );
+  const budget = errorBudget(frozenBudget(content, settingIndex, dialsDeg));
   return {
     infidelity,
     low: budget.expectedLow,

@@ -25,6 +25,9 @@ export function FrozenPlates({ content }: { readonly content: VersionContent }) 
               retardance, ° (σ)
             </th>
             <th scope="col" className="text-right font-words">
+              used here, °
+            </th>
+            <th scope="col" className="text-right font-words">
               zero, ° (σ)
             </th>
             <th scope="col" className="pl-8 font-words">
@@ -39,7 +42,7 @@ export function FrozenPlates({ content }: { readonly content: VersionContent }) 
           </tr>
         </thead>
         <tbody>
-          {content.bench.plates.map(({ id, name, kind, mount, calibration }) => (
+          {content.bench.plates.map(({ id, name, kind, mount, calibration, used }) => (
             <tr key={id} className="h-[39px] border-b border-hair">
               <th scope="row" className="text-left font-strong">
                 {name}
@@ -49,6 +52,12 @@ export function FrozenPlates({ content }: { readonly content: VersionContent }) 
               </td>
               <td className="text-right font-mono">
                 {formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}
+              </td>
+              <td className="text-right font-mono">
+                {used.retardanceDeg.toFixed(2)}
+                {used.source === 'no-model' && (
+                  <span className="block font-words text-s text-fault">measured elsewhere, no model</span>
+                )}
               </td>
               <td className="text-right font-mono">
                 {formatUncertain(calibration.offsetDeg, calibration.offsetSigmaDeg)}

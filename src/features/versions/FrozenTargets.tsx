@@ -1,13 +1,12 @@
 import { fastAxisFromDial } from '../../../shared/optics/dial';
-import { parseState } from '../../../shared/optics/expression';
 import { degrees } from '../../../shared/optics/units';
-import { dialScaleOf } from '../../../shared/protocol/solve-row';
+import { dialScaleOf } from '../../../shared/protocol/solving-plates';
 import type { FrozenSolution, FrozenTarget, VersionContent } from '../../../shared/schemas/versions';
 import { fidelityVerdict } from '../../components/fidelity-verdict';
 import { FidelityChip } from '../../components/FidelityChip';
-import { Formula } from '../../components/Formula';
 import { Scientific } from '../../components/Scientific';
 import { HeldSign } from '../../components/SmallSigns';
+import { WrittenFormula } from '../../components/WrittenFormula';
 import { formatDial, formatTheta } from '../../lib/format';
 
 /** Every target as it was frozen: the dials are those that a run dials. */
@@ -30,7 +29,7 @@ export function FrozenTargets({ content }: { readonly content: VersionContent })
               label
             </th>
             <th scope="col" className="font-words">
-              target, after the plates
+              {content.kind === 'prepare' ? 'target, after the plates' : 'unitary, of all the plates'}
             </th>
             {plates.map(({ id, name }) => (
               <th key={id} scope="col" className="text-right font-words whitespace-nowrap">
@@ -66,7 +65,6 @@ interface FrozenRowProps {
 
 function FrozenRow({ target, place, content }: FrozenRowProps) {
   const solution = target.solutions[target.chosenSolution];
-  const reading = parseState(target.expression, content.convention);
   const count = target.solutions.length;
   return (
     <tr className="h-[39px] border-b border-hair">
@@ -75,11 +73,7 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
         {target.label}
       </th>
       <td>
-        {reading.ok ? (
-          <Formula latex={reading.latex} source={target.expression} />
-        ) : (
-          <span className="font-mono text-s">{target.expression}</span>
-        )}
+        <WrittenFormula expression={target.expression} kind={content.kind} convention={content.convention} />
         {target.reach === 'nearest' && (
           <span className="ml-3 text-s text-ink-2">
             closest, out of reach by {target.shortfallDeg.toFixed(1)}°

@@ -37,6 +37,12 @@ export function Component() {
   return <VersionSheet version={version.data} protocolId={protocolId} />;
 }
 
+const objectiveWords = {
+  'least-expected-infidelity': 'least expected infidelity',
+  'least-travel': 'least travel down the list',
+  'nearest-to-present': 'nearest to where the dials stood',
+} as const;
+
 interface VersionSheetProps {
   readonly version: Version;
   readonly protocolId: string;
@@ -58,9 +64,10 @@ function VersionSheet({ version, protocolId }: VersionSheetProps) {
             “{content.message}” {content.savedBy.name}, {formatMoment(new Date(content.savedAt), new Date())}.
           </p>
           <p className="mt-1 mb-0 text-s text-ink-2">
-            {content.bench.name}, {content.bench.wavelengthNm} nm, from {content.bench.input.expression};
-            tolerance 1 − F ≤ <Scientific value={content.toleranceInfidelity} />;{' '}
-            {describeConvention(content.convention)}.
+            {content.bench.name}, {content.bench.wavelengthNm} nm,{' '}
+            {content.kind === 'prepare' ? `from ${content.bench.input.expression}` : 'unitaries'}; ranked by{' '}
+            {objectiveWords[content.objective]}; tolerance 1 − F ≤{' '}
+            <Scientific value={content.toleranceInfidelity} />; {describeConvention(content.convention)}.
           </p>
           {content.protocol.purpose !== '' && (
             <p className="mt-1 mb-0 text-s text-ink-2">{content.protocol.purpose}</p>

@@ -1,6 +1,6 @@
 export { isoFromLocalField, localFieldFromDate } from './local-time';
 export { schemaResolver } from './schema-resolver';
-export { readTypedNumber, typedFromNumber } from './typed-number';
+export { readOptionalNumber, readTypedNumber, typedFromNumber, typedFromOptional } from './typed-number';
 export { useIdempotencyKey } from './use-idempotency-key';
 export { conflictingState, problemSentences } from './form-problem';
 export { FormProblem } from './FormProblem';

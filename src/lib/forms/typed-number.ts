@@ -6,7 +6,16 @@ export function readTypedNumber(text: string): number {
   return typed.ok ? typed.value : NaN;
 }
 
+/** As `readTypedNumber`; an empty field is "not stated". */
+export function readOptionalNumber(text: string): number | null {
+  return text.trim() === '' ? null : readTypedNumber(text);
+}
+
 /** A stored number as it stands in a field to begin with: its shortest digits, a true minus. */
 export function typedFromNumber(value: number): string {
   return withTrueMinus(String(value));
+}
+
+export function typedFromOptional(value: number | null): string {
+  return value === null ? '' : typedFromNumber(value);
 }

@@ -16,7 +16,8 @@ import {
   type VersionSummary,
   versionSummarySchema,
 } from '../../../shared/schemas';
-import { benchProblem, chooseSolution, solveRow } from '../../../shared/protocol/solve-row';
+import { chooseSolutions, chosenSolution } from '../../../shared/protocol/choose-solutions';
+import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
 import { answered, call } from './calls';
 import type { Agent } from './harness';
 
@@ -28,10 +29,23 @@ export function plateBody(name: string, change: Partial<CreatePlate> = {}): Crea
     name,
     kind: 'half',
     designWavelengthNm: 808,
+    construction: 'compound-zero-order',
+    material: 'quartz',
+    order: 0,
     note: '',
-    mount: { name: `M ${name}`, direction: 1, resolutionDeg: 0.1, repeatabilityDeg: 0.06 },
+    mount: {
+      name: `M ${name}`,
+      direction: 1,
+      resolutionDeg: 0.1,
+      repeatabilityDeg: 0.06,
+      rangeDeg: null,
+      speedDegPerS: null,
+      backlashDeg: 0,
+      approach: 'either',
+    },
     calibration: {
       wavelengthNm: 810,
+      temperatureC: null,
       retardanceDeg: 179.2,
       retardanceSigmaDeg: 0.3,
       offsetDeg: 12.4,
@@ -47,7 +61,16 @@ export function plateBody(name: string, change: Partial<CreatePlate> = {}): Crea
 export const quarterBody = (name: string): CreatePlate =>
   plateBody(name, {
     kind: 'quarter',
-    mount: { name: `M ${name}`, direction: -1, resolutionDeg: 0.1, repeatabilityDeg: 0.06 },
+    mount: {
+      name: `M ${name}`,
+      direction: -1,
+      resolutionDeg: 0.1,
+      repeatabilityDeg: 0.06,
+      rangeDeg: null,
+      speedDegPerS: null,
+      backlashDeg: 0,
+      approach: 'either',
+    },
     calibration: { ...plateBody(name).calibration, retardanceDeg: 86.9, offsetDeg: 301.73 },
   });
 
@@ -55,8 +78,12 @@ export function benchBody(plateIds: readonly string[], name = 'signal arm') {
   return {
     name,
     wavelengthNm: 810,
+    wavelengthSigmaNm: 0,
+    temperatureC: null,
+    temperatureSigmaK: 0,
     inputExpression: 'H',
     polariserSigmaDeg: 0.05,
+    polariserExtinction: null,
     laserClass: '3B' as const,
     hazardWavelengthsNm: [405, 810],
     plateIds: [...plateIds],
@@ -96,7 +123,10 @@ export async function makeLab(harness: Us, lead: Agent, name: string): Promise<T
     {
       name: 'Two states',
       purpose: '',
+      kind: 'prepare',
       benchId: bench.id,
+      objective: 'least-expected-infidelity',
+      presentDialsDeg: null,
       toleranceInfidelity: 1e-3,
       targets: [target('t1', 'H'), target('t2', '(H + i V)/sqrt(2)')],
     },
@@ -153,15 +183,20 @@ export async function shownFor(
     call(harness, agent, 'get', `/labs/${labId}/benches/${content.benchId}`),
     benchSchema,
   );
-  const faced = benchProblem(bench, lab.convention);
+  const faced = benchProblem(bench, lab.convention, content);
   if (!faced.ok) throw new Error(faced.error.message);
-  return content.targets.map((row) => {
-    const result = solveRow(row.expression, faced.problem, lab.convention);
+  const rows = content.targets.map((row) => {
+    const result = solveRow(row.expression, faced.problem, lab.convention, row.heldFastAxesDeg);
     if (result.status === 'unreadable') throw new Error(result.error.message);
-    const solution = result.solved.solutions[chooseSolution(result.solved, row.heldFastAxesDeg).index];
+    return { id: row.id, solved: result.solved, heldFastAxesDeg: row.heldFastAxesDeg };
+  });
+  const choices = chooseSolutions(rows, faced.problem);
+  return rows.map(({ id, solved }, place) => {
+    const choice = choices[place];
+    const solution = choice === undefined ? undefined : chosenSolution(solved, choice);
     if (solution === undefined) throw new Error('a solved row has a solution');
     return {
-      targetId: row.id,
+      targetId: id,
       fastAxesDeg: [...solution.fastAxesDeg],
       dialsDeg: [...solution.dialsDeg],
       infidelity: solution.infidelity,

@@ -11,8 +11,10 @@ const typed = {
   wavelengthNm: '810',
   polariserSigmaDeg: '0.05',
   hazardWavelengthsNm: '405 nm, 810',
-  firstPlateId: '0190a000-0000-7000-8000-000000000001',
-  secondPlateId: '0190a000-0000-7000-8000-000000000004',
+  plates: [
+    { plateId: '0190a000-0000-7000-8000-000000000001' },
+    { plateId: '0190a000-0000-7000-8000-000000000004' },
+  ],
 };
 
 function faults(change: Partial<typeof typed>) {
@@ -26,13 +28,27 @@ describe('a bench as it is typed', () => {
     expect(readBench(typed)).toMatchObject({ hazardWavelengthsNm: [405, 810], laserClass: null });
   });
 
-  it('asks for two plates, and for two different ones', () => {
-    expect(faults({ secondPlateId: '' })).toEqual([
-      ['plateIds', 'A bench has two plates: the one that light meets first, then the second.'],
+  it('takes one to six plates, all of them different', () => {
+    expect(faults({ plates: typed.plates.slice(0, 1) })).toEqual([]);
+    expect(faults({ plates: [{ plateId: '' }] })).toEqual([
+      ['plateIds', 'A bench has at least one plate. Choose the one that light meets first.'],
     ]);
-    expect(faults({ secondPlateId: typed.firstPlateId })).toEqual([
+    expect(faults({ plates: [...typed.plates, ...typed.plates.slice(0, 1)] })).toEqual([
       ['plateIds', 'One plate cannot stand in two places. Choose another.'],
     ]);
+    const seven = Array.from({ length: 7 }, (_, k) => ({
+      plateId: `0190a000-0000-7000-8000-00000000001${k}`,
+    }));
+    expect(faults({ plates: seven })).toEqual([['plateIds', 'A bench has at most 6 plates in its beam.']]);
+  });
+
+  it('takes an empty temperature and extinction as not stated', () => {
+    expect(readBench(typed)).toMatchObject({ temperatureC: null, polariserExtinction: null });
+    expect(readBench({ ...typed, temperatureC: '21.5', polariserExtinction: '1e-5' })).toMatchObject({
+      temperatureC: 21.5,
+      polariserExtinction: 1e-5,
+    });
+    expect(faults({ polariserExtinction: '2' })[0]?.[0]).toBe('polariserExtinction');
   });
 
   it('asks what eyewear is for, and points at a wavelength that is none', () => {

@@ -3,6 +3,7 @@ import { plateDifferences } from '../../../src/features/cabinet/plate-conflict';
 import {
   calibrationFormSchema,
   emptyCalibration,
+  plateFieldOf,
   readCalibration,
   readPlate,
   valuesOfPlate,
@@ -62,9 +63,26 @@ describe('a plate that is edited', () => {
       name: plate.name,
       kind: plate.kind,
       designWavelengthNm: plate.designWavelengthNm,
+      construction: plate.construction,
+      material: plate.material,
+      order: plate.order,
       note: plate.note,
       mount: plate.mount,
     });
+  });
+
+  it('says which of the two readings of a range is missing, and takes neither as a full ring', () => {
+    const { mount, ...values } = valuesOfPlate(plateFixture());
+    const ranged = (rangeFromDeg: string, rangeToDeg: string) =>
+      updatePlateSchema.safeParse(readPlate({ ...values, mount: { ...mount, rangeFromDeg, rangeToDeg } }));
+    expect(ranged('', '').data?.mount.rangeDeg).toBeNull();
+    expect(ranged('-20', '175').data?.mount.rangeDeg).toEqual({ from: -20, to: 175 });
+    expect(ranged('0', '').error?.issues.map(({ path }) => plateFieldOf(path.join('.')))).toEqual([
+      'mount.rangeToDeg',
+    ]);
+    expect(ranged('0', '90').error?.issues.map(({ message }) => message)).toEqual([
+      'A plate needs half a turn of its mount: write a last reading at least 180° above the first.',
+    ]);
   });
 
   it('shows both sides of what two people changed, and nothing else', () => {

@@ -13,8 +13,8 @@ import { numberAngle, ringTicks, tickStepDeg } from '../../../src/components/rin
 
 afterEach(cleanup);
 
-const half = { offsetDeg: 12.4, direction: 1, resolutionDeg: 0.1 } as const;
-const quarter = { offsetDeg: 301.73, direction: -1, resolutionDeg: 0.1 } as const;
+const half = { offsetDeg: 12.4, direction: 1, resolutionDeg: 0.1, rangeDeg: null } as const;
+const quarter = { offsetDeg: 301.73, direction: -1, resolutionDeg: 0.1, rangeDeg: null } as const;
 
 /** The signed angle that an SVG arc sweeps, counter-clockwise positive as it is seen, from its own end points and flag. */
 function sweepOf(path: string): number {

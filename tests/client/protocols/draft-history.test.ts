@@ -20,6 +20,9 @@ const draft: DraftContent = {
   name: 'Compass points',
   purpose: '',
   benchId: '0193a000-0000-7000-8000-0000000000b0',
+  kind: 'prepare',
+  objective: 'least-expected-infidelity',
+  presentDialsDeg: null,
   toleranceInfidelity: 1e-3,
   targets: [
     { id: firstId, label: 't0', expression: 'H', heldFastAxesDeg: null },

@@ -1,6 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import { DEFAULT_CONVENTION } from '../../../shared/optics/convention';
-import { benchProblem, solveRow, type SolvingBench } from '../../../shared/protocol/solve-row';
+import { chooseSolution } from '../../../shared/protocol/choose-solutions';
+import {
+  benchProblem,
+  solveRow,
+  type SolvingBench,
+  type SolvingTask,
+} from '../../../shared/protocol/solve-row';
+import type { SolvingPlate } from '../../../shared/protocol/solving-plates';
 import type { DraftTarget } from '../../../shared/schemas/protocols';
 import {
   type RowView,
@@ -9,13 +16,41 @@ import {
   whatHoldsUp,
 } from '../../../src/features/protocols/designer/row-view';
 
-const plate = (retardanceDeg: number) => ({
-  mount: { direction: 1 as const, resolutionDeg: 0.1, repeatabilityDeg: 0.05 },
-  calibration: { retardanceDeg, retardanceSigmaDeg: 0.3, offsetDeg: 12.4, offsetSigmaDeg: 0.05 },
+const plate = (retardanceDeg: number): SolvingPlate => ({
+  construction: 'compound-zero-order',
+  material: 'quartz',
+  order: 0,
+  mount: {
+    direction: 1,
+    resolutionDeg: 0.1,
+    repeatabilityDeg: 0.05,
+    rangeDeg: null,
+    speedDegPerS: null,
+    backlashDeg: 0,
+    approach: 'either',
+  },
+  calibration: {
+    wavelengthNm: 810,
+    temperatureC: null,
+    retardanceDeg,
+    retardanceSigmaDeg: 0.3,
+    offsetDeg: 12.4,
+    offsetSigmaDeg: 0.05,
+  },
 });
+const task: SolvingTask = {
+  kind: 'prepare',
+  objective: 'least-expected-infidelity',
+  presentDialsDeg: null,
+};
 const bench: SolvingBench = {
+  wavelengthNm: 810,
+  wavelengthSigmaNm: 0,
+  temperatureC: null,
+  temperatureSigmaK: 0,
   inputExpression: 'H',
   polariserSigmaDeg: 0.05,
+  polariserExtinction: null,
   plates: [plate(179.2), plate(88.9)],
 };
 
@@ -24,9 +59,13 @@ function target(label: string, expression: string, heldFastAxesDeg: number[] | n
 }
 
 function solvedView(row: DraftTarget): RowView {
-  const read = benchProblem(bench, DEFAULT_CONVENTION);
+  const read = benchProblem(bench, DEFAULT_CONVENTION, task);
   if (!read.ok) throw new Error(read.error.message);
-  return viewOf(row, { result: solveRow(row.expression, read.problem, DEFAULT_CONVENTION), stale: false });
+  const { heldFastAxesDeg } = row;
+  const result = solveRow(row.expression, read.problem, DEFAULT_CONVENTION, heldFastAxesDeg);
+  const choice =
+    result.status === 'solved' ? chooseSolution({ solved: result.solved, heldFastAxesDeg }) : null;
+  return viewOf(row, { result, choice, stale: false });
 }
 
 function holdUp(...rows: readonly DraftTarget[]): string | null {

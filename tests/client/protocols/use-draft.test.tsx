@@ -16,7 +16,10 @@ const draft: Draft = {
   content: {
     name: 'Compass points',
     purpose: '',
+    kind: 'prepare',
     benchId: '0193a000-0000-7000-8000-0000000000b0',
+    objective: 'least-expected-infidelity',
+    presentDialsDeg: null,
     toleranceInfidelity: 1e-3,
     targets: [
       { id: '0193a000-0000-7000-8000-000000000001', label: 't0', expression: 'H', heldFastAxesDeg: null },

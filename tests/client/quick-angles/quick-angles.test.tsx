@@ -26,12 +26,25 @@ function plate(number: number, name: string, kind: Plate['kind'], retardanceDeg:
     name,
     kind,
     designWavelengthNm: 810,
+    construction: 'compound-zero-order',
+    material: 'quartz',
+    order: 0,
     note: '',
-    mount: { name: `M-${number}`, direction: 1, resolutionDeg: 0.1, repeatabilityDeg: 0.02 },
+    mount: {
+      name: `M-${number}`,
+      direction: 1,
+      resolutionDeg: 0.1,
+      repeatabilityDeg: 0.02,
+      rangeDeg: null,
+      speedDegPerS: null,
+      backlashDeg: 0,
+      approach: 'either',
+    },
     seatedAt: at,
     calibration: {
       id: id(number + 100),
       wavelengthNm: 810,
+      temperatureC: null,
       retardanceDeg,
       retardanceSigmaDeg: 0.2,
       offsetDeg: 0,
@@ -51,9 +64,13 @@ const bench: Bench = {
   id: id(7),
   name: 'idler arm',
   wavelengthNm: 810,
+  wavelengthSigmaNm: 0,
+  temperatureC: null,
+  temperatureSigmaK: 0,
   // An ellipse with a hand, so that who names the hands matters.
   inputExpression: '(2 H + i V)/sqrt(5)',
   polariserSigmaDeg: 0.05,
+  polariserExtinction: null,
   laserClass: '3B',
   hazardWavelengthsNm: [810],
   plates: [plate(1, 'Q-A', 'quarter', 90), plate(2, 'H-A', 'half', 180)],
@@ -118,7 +135,11 @@ describe('the page of quick angles', () => {
 });
 
 // |S3| = sin 30° = 0.5: a quarter-wave plate reaches up to 0.6 from this bench's input, and a half-wave plate keeps |S3|.
-const written = { expression: 'ellipse(30deg, 15deg)', convention: DEFAULT_CONVENTION };
+const written = {
+  question: 'prepare' as const,
+  expression: 'ellipse(30deg, 15deg)',
+  convention: DEFAULT_CONVENTION,
+};
 const solved = (of: SolvingBench, kinds: readonly Plate['kind'][]) => {
   const settings = quickSettings(written, { bench: of, kinds, convention: DEFAULT_CONVENTION });
   if (settings?.ok !== true) throw new Error('not solved');

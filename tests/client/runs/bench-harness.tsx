@@ -87,8 +87,12 @@ export class FakeApi {
       id: bench.id,
       name: bench.name,
       wavelengthNm: bench.wavelengthNm,
+      wavelengthSigmaNm: bench.wavelengthSigmaNm,
+      temperatureC: bench.temperatureC,
+      temperatureSigmaK: bench.temperatureSigmaK,
       inputExpression: bench.input.expression,
       polariserSigmaDeg: bench.input.polariserSigmaDeg,
+      polariserExtinction: bench.input.polariserExtinction,
       laserClass: bench.laserClass,
       hazardWavelengthsNm: bench.hazardWavelengthsNm,
       plates: bench.plates.map((plate, index) => ({

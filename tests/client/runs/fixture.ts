@@ -1,3 +1,5 @@
+import { chooseSolution } from '../../../shared/protocol/choose-solutions';
+import { frozenTarget } from '../../../shared/protocol/freeze';
 import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
 import type { Run } from '../../../shared/schemas/runs';
 import { type FrozenPlate, type Version, versionSchema } from '../../../shared/schemas/versions';
@@ -9,6 +11,9 @@ export const labId = id(1);
 export const runId = id(231);
 export const protocolId = id(14);
 const at = '2026-11-30T09:00:00.000Z';
+
+const surroundings = { wavelengthNm: 810, temperatureC: null } as const;
+const task = { kind: 'prepare', objective: 'least-expected-infidelity', presentDialsDeg: null } as const;
 
 const plate = (
   number: number,
@@ -22,10 +27,23 @@ const plate = (
   name,
   kind,
   designWavelengthNm: 810,
-  mount: { name: `M-${number}`, direction, resolutionDeg: 0.1, repeatabilityDeg: 0.05 },
+  construction: 'compound-zero-order',
+  material: 'quartz',
+  order: 0,
+  mount: {
+    name: `M-${number}`,
+    direction,
+    resolutionDeg: 0.1,
+    repeatabilityDeg: 0.05,
+    rangeDeg: null,
+    speedDegPerS: null,
+    backlashDeg: 0,
+    approach: 'either',
+  },
   calibration: {
     id: id(number + 100),
     wavelengthNm: 810,
+    temperatureC: null,
     retardanceDeg,
     retardanceSigmaDeg: 0.4,
     offsetDeg,
@@ -35,6 +53,7 @@ const plate = (
     measuredAt: at,
     recordedBy: 'Ines Okafor',
   },
+  used: { retardanceDeg, shiftDeg: 0, source: 'calibration', perNmDeg: 0, perKelvinDeg: 0 },
 });
 
 const convention = { phase: 'kz-wt', handedness: 'receiver', s3Sign: 'R' } as const;
@@ -48,32 +67,23 @@ const rows = [
 /** A version of two plates and four targets, its dials from the product's own solver. Names are invented. */
 export function makeVersion(repeats = 1): Version {
   const plates = [plate(31, 'H-3', 'half', 179.3, 12.4, 1), plate(32, 'Q-B', 'quarter', 89.2, 301.7, -1)];
-  const read = benchProblem({ inputExpression: 'H', polariserSigmaDeg: 0.1, plates }, convention);
+  const bench = {
+    ...surroundings,
+    wavelengthSigmaNm: 0,
+    temperatureSigmaK: 0,
+    inputExpression: 'H',
+    polariserSigmaDeg: 0.1,
+    polariserExtinction: null,
+    plates,
+  };
+  const read = benchProblem(bench, convention, task);
   if (!read.ok) throw new Error(read.error.message);
   const targets = Array.from({ length: repeats }).flatMap((_, repeat) =>
     rows.map(([label, expression], index) => {
-      const row = solveRow(expression, read.problem, convention);
+      const row = solveRow(expression, read.problem, convention, null);
       if (row.status !== 'solved') throw new Error(`${expression} cannot be read`);
-      return {
-        id: id(500 + repeat * rows.length + index),
-        label,
-        expression,
-        canonicalExpression: expression,
-        stokes: row.reading.stokes,
-        reach: row.solved.kind,
-        shortfallDeg: row.solved.shortfallDeg,
-        solutions: row.solved.solutions.map((solution) => ({
-          fastAxesDeg: [...solution.fastAxesDeg],
-          dialsDeg: [...solution.dialsDeg],
-          infidelity: solution.infidelity,
-          dialledInfidelity: solution.dialledInfidelity,
-          expectedInfidelity: solution.expectedInfidelity,
-          expectedLow: solution.expectedLow,
-          expectedHigh: solution.expectedHigh,
-        })),
-        chosenSolution: 0,
-        held: false,
-      };
+      const choice = chooseSolution({ solved: row.solved, heldFastAxesDeg: null });
+      return frozenTarget({ id: id(500 + repeat * rows.length + index), label, expression }, row, choice);
     }),
   );
   return versionSchema.parse({
@@ -89,7 +99,7 @@ export function makeVersion(repeats = 1): Version {
       savedBy: 'Ines Okafor',
     },
     content: {
-      format: 'quarterturn.version/1',
+      format: 'quarterturn.version/2',
       lab: { id: labId, name: 'Harbour Street photonics' },
       protocol: { id: protocolId, name: 'Tetrahedron, signal arm', purpose: '' },
       number: 14,
@@ -98,16 +108,18 @@ export function makeVersion(repeats = 1): Version {
       savedAt: at,
       savedBy: { id: id(9), name: 'Ines Okafor' },
       convention,
-      solverVersion: '1.0.0',
-      objective: 'least-expected-infidelity',
+      solverVersion: '2.0.0',
+      ...task,
       toleranceInfidelity: 1e-3,
       bench: {
         id: id(7),
         name: 'heralded bench',
-        wavelengthNm: 810,
+        ...surroundings,
+        wavelengthSigmaNm: 0,
+        temperatureSigmaK: 0,
         laserClass: '3B',
         hazardWavelengthsNm: [405, 810],
-        input: { expression: 'H', stokes: [1, 0, 0], polariserSigmaDeg: 0.1 },
+        input: { expression: 'H', stokes: [1, 0, 0], polariserSigmaDeg: 0.1, polariserExtinction: null },
         plates,
       },
       targets,

@@ -14,6 +14,7 @@ import { useSolvedRows } from '../use-solved-rows';
 import { CalibratedElsewhere } from './CalibratedElsewhere';
 import { ConflictDialog } from './ConflictDialog';
 import { DesignerHead } from './DesignerHead';
+import { lightOf } from './followed-light';
 import { Limits } from './Limits';
 import { shownSolutions, viewOf, whatHoldsUp } from './row-view';
 import { SaveVersionDialog } from './SaveVersionDialog';
@@ -24,6 +25,11 @@ import { useDesignerCommands } from './use-designer-commands';
 import { useRemovedRow } from './use-removed-row';
 import { useDesignerView } from './view-store';
 import './designer.css';
+
+const emptyWords = {
+  prepare: 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).',
+  apply: 'Write a unitary in the row above, like hadamard or rotate(x, 90deg).',
+} as const;
 
 interface DesignerProps {
   readonly protocol: Protocol;
@@ -37,11 +43,11 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const draft = useDraft(lab.id, user.id, protocol, mayWrite);
   const [saving, setSaving] = useState(false);
   const [writtenIn, setWrittenIn] = useState(lab.convention);
-  const { selectedId, select, listSolutions, turnByHand } = useDesignerView();
+  const { selectedId, select, listSolutions, turnByHand, followed, handDialsDeg } = useDesignerView();
 
   const { content } = draft;
   const bench = benches.find(({ id }) => id === content.benchId);
-  const solved = useSolvedRows(content.targets, bench ?? null, lab.convention);
+  const solved = useSolvedRows(content.targets, bench ?? null, lab.convention, content);
   const views = content.targets.map((target) => viewOf(target, solved.rows.get(target.id)));
   const commands = useDesignerCommands({ draft, views, mayWrite });
   const removed = useRemovedRow(content);
@@ -58,7 +64,13 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const input = bench === undefined ? null : parseState(bench.inputExpression, lab.convention);
   const looked =
     bench !== undefined && input?.ok === true && target !== undefined && view?.status === 'solved'
-      ? { bench, input: input.stokes, target, view }
+      ? {
+          bench,
+          input: content.kind === 'apply' ? lightOf(followed, lab.convention) : input.stokes,
+          followed: content.kind === 'apply' ? followed : null,
+          target,
+          view,
+        }
       : null;
 
   return (
@@ -75,6 +87,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
         maySave={may('versions.save')}
         holdUp={whatHoldsUp(content.targets, views)}
         edit={draft.edit}
+        standsAtDeg={looked === null ? null : (handDialsDeg ?? looked.view.solution.dialsDeg)}
         onChooseBench={(benchId) => {
           turnByHand(null);
           draft.edit(chooseBench(benchId));
@@ -106,6 +119,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
             <TargetsTable
               targets={content.targets}
               views={views}
+              kind={content.kind}
               plates={bench?.plates ?? []}
               toleranceInfidelity={content.toleranceInfidelity}
               mayWrite={mayWrite}
@@ -119,9 +133,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
           )}
           {content.targets.length === 0 && (
             <BeamEmpty title="No targets yet">
-              {mayWrite
-                ? 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).'
-                : 'Its writer has only begun.'}
+              {mayWrite ? emptyWords[content.kind] : 'Its writer has only begun.'}
             </BeamEmpty>
           )}
           {looked !== null && (

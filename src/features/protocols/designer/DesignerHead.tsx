@@ -1,18 +1,16 @@
-import { useState } from 'react';
 import { describeConvention } from '../../../../shared/optics/convention';
 import type { Bench } from '../../../../shared/schemas/benches';
-import { numberSchema } from '../../../../shared/schemas/common';
 import type { Lab } from '../../../../shared/schemas/labs';
 import type { DraftContent, VersionSummary } from '../../../../shared/schemas/protocols';
 import { Button } from '../../../components/Button';
 import { SaveState } from '../../../components/SaveState';
-import { Scientific } from '../../../components/Scientific';
 import { TextLink } from '../../../components/TextLink';
 import { VersionSeal } from '../../../components/VersionSeal';
-import { parseTypedNumber } from '../../../lib/format';
 import { type DraftEdit, describePurpose, rename, setTolerance } from '../draft-edits';
 import type { Saving } from '../use-draft';
+import { RankedBy } from './RankedBy';
 import type { HoldUp } from './row-view';
+import { Tolerance } from './Tolerance';
 
 interface DesignerHeadProps {
   readonly lab: Lab;
@@ -26,6 +24,8 @@ interface DesignerHeadProps {
   readonly maySave: boolean;
   readonly holdUp: HoldUp | null;
   readonly edit: (edit: DraftEdit) => void;
+  /** What the stage's dials say, for “as on the stage”; null while nothing stands there. */
+  readonly standsAtDeg: readonly number[] | null;
   readonly onChooseBench: (benchId: string) => void;
   readonly onSaveVersion: () => void;
 }
@@ -52,7 +52,8 @@ export function DesignerHead(props: DesignerHeadProps) {
               'draft before the first version'
             ) : (
               <>
-                draft after <TextLink to={versionsHref}>version {latest.number}</TextLink>
+                {content.kind === 'apply' && 'unitaries, '}draft after{' '}
+                <TextLink to={versionsHref}>version {latest.number}</TextLink>
               </>
             )}
             , <SavedWords saving={saving} />
@@ -78,9 +79,13 @@ export function DesignerHead(props: DesignerHeadProps) {
             mayWrite={mayWrite}
             onChange={(value) => edit(setTolerance(value))}
           />
-          <span className="fold-first">
-            ranked by <b>least expected infidelity</b>
-          </span>
+          <RankedBy
+            content={content}
+            bench={bench}
+            mayWrite={mayWrite}
+            standsAtDeg={props.standsAtDeg}
+            edit={edit}
+          />
           <span className="fold-first">{describeConvention(lab.convention)}</span>
         </div>
       </div>
@@ -154,67 +159,4 @@ function BenchChoice({ bench, benches, mayWrite, onChoose }: BenchChoiceProps) {
       {facts}
     </label>
   );
-}
-
-const toleranceSchema = numberSchema('A tolerance', 1e-9, 0.5, '');
-
-interface ToleranceProps {
-  readonly value: number;
-  readonly mayWrite: boolean;
-  readonly onChange: (value: number) => void;
-}
-
-/** A fact until it is pressed, then a field; what can't be read stays in the field with its fault. */
-function Tolerance({ value, mayWrite, onChange }: ToleranceProps) {
-  const [typed, setTyped] = useState<string | null>(null);
-  const fault = typed === null ? null : faultOf(typed);
-  const shown = (
-    <>
-      tolerance 1 − F ≤ <Scientific value={value} />
-    </>
-  );
-  if (!mayWrite) return <span>{shown}</span>;
-  if (typed === null) {
-    return (
-      <button type="button" className="fact-button" onClick={() => setTyped(value.toExponential())}>
-        {shown}
-      </button>
-    );
-  }
-  const done = () => {
-    const read = parseTypedNumber(typed);
-    if (fault !== null || !read.ok) return;
-    onChange(read.value);
-    setTyped(null);
-  };
-  return (
-    <label>
-      tolerance 1 − F ≤{' '}
-      <input
-        type="text"
-        inputMode="decimal"
-        autoFocus
-        className="fact-input font-mono"
-        aria-invalid={fault !== null}
-        aria-describedby="tolerance-fault"
-        value={typed}
-        onChange={(event) => setTyped(event.target.value)}
-        onBlur={done}
-        onKeyDown={(event) => {
-          if (event.key === 'Enter') done();
-          if (event.key === 'Escape') setTyped(null);
-        }}
-      />
-      <span id="tolerance-fault" role="status" className="ml-2 font-strong text-fault">
-        {fault}
-      </span>
-    </label>
-  );
-}
-
-function faultOf(typed: string): string | null {
-  const read = parseTypedNumber(typed);
-  if (!read.ok) return 'A tolerance is a number, like 1e−3.';
-  const parsed = toleranceSchema.safeParse(read.value);
-  return parsed.success ? null : (parsed.error.issues[0]?.message ?? 'A tolerance is from 1e−9 to 0.5.');
 }

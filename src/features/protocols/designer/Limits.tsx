@@ -1,5 +1,5 @@
 import type { Contribution } from '../../../../shared/optics/budget';
-import { toDegrees } from '../../../../shared/optics/units';
+import { radians, toDegrees } from '../../../../shared/optics/units';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { SettingSolution } from './row-view';
 
@@ -13,15 +13,27 @@ function nameOf({ kind, plate }: Contribution, plates: readonly Plate[]): string
   return plate === null ? kind : `${plates[plate]?.name ?? ''} ${kind}`;
 }
 
-/** Two figures, as an uncertainty is written. */
-function sigmaText(contribution: Contribution): string {
-  const sigmaDeg = toDegrees(contribution.sigmaRad);
-  return `${sigmaDeg >= 0.1 ? sigmaDeg.toFixed(1) : Number(sigmaDeg.toPrecision(1)).toString()}°`;
+/** As an uncertainty is written: one decimal from 0.1 on, one figure below. */
+function figures(sigma: number): string {
+  return sigma >= 0.1 ? sigma.toFixed(1) : Number(sigma.toPrecision(1)).toString();
+}
+
+function sigmaText({ sigma, unit }: Contribution): string {
+  switch (unit) {
+    case 'rad':
+      return `${figures(toDegrees(radians(sigma)))}°`;
+    case 'nm':
+    case 'K':
+      return `${figures(sigma)} ${unit}`;
+    case 'ratio':
+      return sigma.toExponential(0);
+  }
 }
 
 function gainText(contribution: Contribution, plates: readonly Plate[]): string {
   const gain = Math.round(contribution.gainIfHalved * 100);
-  return `Half the σ of ${nameOf(contribution, plates)} would gain ${gain} %.`;
+  const what = contribution.kind === 'extinction' ? 'the polariser’s leak' : `the σ of ${nameOf(contribution, plates)}`;
+  return `Half ${what} would gain ${gain} %.`;
 }
 
 /** What makes the selected target worse than perfect, largest first, and what an improvement would gain. */

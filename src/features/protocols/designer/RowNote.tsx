@@ -11,11 +11,12 @@ interface RowNoteProps {
   readonly columns: number;
 }
 
-const plateWords = ['first', 'second'] as const;
+const plateWords = ['first', 'second', 'third', 'fourth', 'fifth', 'sixth'] as const;
 
-function familyWords({ freePlate, solutions }: SolvedTarget): string {
-  const free = plateWords[freePlate ?? 0] ?? 'first';
-  return `The ${free} plate may stand at any angle here, with the other to match. ${solutions.length} members of the family are listed.`;
+function familyWords({ freePlates, solutions }: SolvedTarget): string {
+  const free = freePlates.map((plate) => plateWords[plate] ?? '').join(' and the ');
+  const may = freePlates.length === 1 ? 'plate may stand' : 'plates may each stand';
+  return `The ${free} ${may} at any of many angles here, with the others to match. The best member stands; ${solutions.length} of the family are listed.`;
 }
 
 /** The one thing most worth saying about a row, under it and across. */
@@ -32,7 +33,8 @@ export function RowNote({ view, toleranceInfidelity, columns }: RowNoteProps) {
   if (solved.shortfallDeg > 0) {
     return (
       <NoteLine columns={columns} sign={<OutOfReachSign />}>
-        Out of reach by {solved.shortfallDeg.toFixed(1)}° on the sphere. The closest setting leaves 1 − F{' '}
+        Out of reach by {solved.shortfallDeg.toFixed(1)}°{' '}
+        {reading.kind === 'state' ? 'on the sphere' : 'of turn'}. The closest setting leaves 1 − F{' '}
         <Scientific value={solution.infidelity} />
         {verdict === 'within'
           ? ''
@@ -51,7 +53,14 @@ export function RowNote({ view, toleranceInfidelity, columns }: RowNoteProps) {
     );
   }
   if (solved.kind === 'family') return <NoteLine columns={columns}>{familyWords(solved)}</NoteLine>;
-  if (reading.normalised) {
+  if (reading.normalised && reading.kind === 'unitary') {
+    return (
+      <NoteLine columns={columns}>
+        Written {Number(reading.scale.toPrecision(4))} times a unitary; taken as the unitary.
+      </NoteLine>
+    );
+  }
+  if (reading.normalised && reading.kind === 'state') {
     return (
       <NoteLine columns={columns}>
         Written with length {Number(reading.norm.toPrecision(4))}; taken as the state in that direction,

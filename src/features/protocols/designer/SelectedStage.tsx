@@ -3,19 +3,22 @@ import { fastAxisFromDial } from '../../../../shared/optics/dial';
 import type { Stokes } from '../../../../shared/optics/stokes';
 import { ellipseOf } from '../../../../shared/optics/ellipse';
 import { degrees, toDegrees } from '../../../../shared/optics/units';
-import { dialScaleOf } from '../../../../shared/protocol/solve-row';
+import { dialScaleOf, usedRetardance } from '../../../../shared/protocol/solving-plates';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
 import { BeamLineStage, type StagePlate } from '../../../stage';
-import { reachedState } from './dialled-problem';
+import { standingAt } from './dialled-problem';
 import { Readout } from './Readout';
 import type { RowView } from './row-view';
 import { useDesignerView } from './view-store';
 
 interface SelectedStageProps {
   readonly bench: Bench;
+  /** The light before the first plate: the bench's own, or one that a unitary is followed with. */
   readonly input: Stokes;
+  /** What it is called where it isn't the bench's own. */
+  readonly followed: string | null;
   readonly target: DraftTarget;
   readonly view: Extract<RowView, { status: 'solved' }>;
   readonly toleranceInfidelity: number;
@@ -23,14 +26,14 @@ interface SelectedStageProps {
   readonly onListSolutions: () => void;
 }
 
-function stagePlate(plate: Plate, dialDeg: number, solutionDialDeg: number): StagePlate {
+function stagePlate(plate: Plate, bench: Bench, dialDeg: number, solutionDialDeg: number): StagePlate {
   const scale = dialScaleOf(plate);
   return {
     id: plate.id,
     name: plate.name,
     kind: plate.kind,
     scale,
-    retardanceDeg: plate.calibration.retardanceDeg,
+    retardanceDeg: usedRetardance(plate, bench).retardanceDeg,
     retardanceSigmaDeg: plate.calibration.retardanceSigmaDeg,
     dialDeg,
     fastAxisDeg: fastAxisFromDial(degrees(dialDeg), scale),
@@ -40,24 +43,27 @@ function stagePlate(plate: Plate, dialDeg: number, solutionDialDeg: number): Sta
 
 /** The bench with the selected row's angles on it, or with a plate turned by hand to see what that does. */
 export function SelectedStage(props: SelectedStageProps) {
-  const { bench, input, target, view, toleranceInfidelity, convention, onListSolutions } = props;
+  const { bench, input, followed, target, view, toleranceInfidelity, convention, onListSolutions } = props;
   const { handDialsDeg, turnByHand } = useDesignerView();
   const solutionDials = view.solution.dialsDeg;
   const dialsDeg = handDialsDeg ?? solutionDials;
-  const reached = reachedState({ bench, input, target: view.reading.stokes, dialsDeg });
+  const reached = standingAt({ bench, input, reading: view.reading, dialsDeg });
   return (
     <BeamLineStage
       stage={{
         wavelengthNm: bench.wavelengthNm,
         polariser: {
           axisDeg: toDegrees(ellipseOf(input).azimuthRad),
-          axisSigmaDeg: bench.polariserSigmaDeg,
+          axisSigmaDeg: followed === null ? bench.polariserSigmaDeg : null,
         },
         plates: bench.plates.map((plate, index) =>
-          stagePlate(plate, dialsDeg[index] ?? 0, solutionDials[index] ?? 0),
+          stagePlate(plate, bench, dialsDeg[index] ?? 0, solutionDials[index] ?? 0),
         ),
         before: [input, ...reached.statesAfter.slice(0, -1)],
-        output: { label: target.label, state: reached.stokes },
+        output: {
+          label: followed === null ? target.label : `${target.label} of ${followed}`,
+          state: reached.output,
+        },
         convention,
       }}
       onDial={(index, dialDeg) =>

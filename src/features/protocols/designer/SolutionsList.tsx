@@ -22,7 +22,7 @@ export function travelDeg(from: SettingSolution, to: SettingSolution): number {
   );
 }
 
-/** Every setting that makes the target, best first; one of them can be held. */
+/** Every setting that makes the target, as ranked; one of them can be held. */
 export function SolutionsList({ view, plates, label, mayWrite, onHold }: SolutionsListProps) {
   const { solved, solution, chosen, held } = view;
   return (

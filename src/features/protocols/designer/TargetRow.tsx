@@ -1,6 +1,6 @@
 import { useEffect, useRef, type KeyboardEvent } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
-import type { DraftTarget } from '../../../../shared/schemas/protocols';
+import type { DraftTarget, ProtocolKind } from '../../../../shared/schemas/protocols';
 import { classNames } from '../../../components/class-names';
 import { FidelityChip } from '../../../components/FidelityChip';
 import { Formula } from '../../../components/Formula';
@@ -24,12 +24,18 @@ export interface RowHandlers {
   readonly onListSolutions: (open: boolean) => void;
 }
 
+const placeholders = {
+  prepare: 'write a state, like (H + i V)/sqrt(2)',
+  apply: 'write a unitary, like hadamard or rotate(x, 90deg)',
+} as const;
+
 const chipWidthPx = 100;
 
 interface TargetRowProps extends RowHandlers {
   readonly place: number;
   readonly target: DraftTarget;
   readonly view: RowView;
+  readonly kind: ProtocolKind;
   readonly plates: readonly Plate[];
   readonly toleranceInfidelity: number;
   readonly selected: boolean;
@@ -42,7 +48,8 @@ interface TargetRowProps extends RowHandlers {
 
 /** One target: what it is, where each plate must stand for it, and how well that does. At most one note below. */
 export function TargetRow(props: TargetRowProps) {
-  const { place, target, view, plates, toleranceInfidelity, selected, editing, blank, mayWrite } = props;
+  const { place, target, view, kind, plates, toleranceInfidelity, selected, editing, blank, mayWrite } =
+    props;
   const row = useRef<HTMLTableRowElement>(null);
   const solved = view.status === 'solved' ? view : null;
   const showsSource = mayWrite && (editing || blank || view.status === 'unreadable');
@@ -105,7 +112,7 @@ export function TargetRow(props: TargetRowProps) {
               value={target.expression}
               fault={view.status === 'unreadable' ? view.error : null}
               autoFocus={editing}
-              placeholder={blank ? 'write a state, like (H + i V)/sqrt(2)' : ''}
+              placeholder={blank ? placeholders[kind] : ''}
               onChange={props.onWrite}
               onDone={props.onDone}
               onCancel={props.onCancel}

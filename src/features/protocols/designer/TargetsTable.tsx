@@ -1,6 +1,6 @@
 import { useEffect, useMemo, useRef } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
-import type { DraftTarget } from '../../../../shared/schemas/protocols';
+import type { DraftTarget, ProtocolKind } from '../../../../shared/schemas/protocols';
 import {
   addTarget,
   type DraftEdit,
@@ -18,6 +18,7 @@ import { useDesignerView } from './view-store';
 interface TargetsTableProps {
   readonly targets: readonly DraftTarget[];
   readonly views: readonly RowView[];
+  readonly kind: ProtocolKind;
   readonly plates: readonly Plate[];
   readonly toleranceInfidelity: number;
   readonly mayWrite: boolean;
@@ -28,6 +29,7 @@ interface TargetsTableProps {
 export function TargetsTable({
   targets,
   views,
+  kind,
   plates,
   toleranceInfidelity,
   mayWrite,
@@ -69,7 +71,7 @@ export function TargetsTable({
             label
           </th>
           <th scope="col" className="font-words">
-            target, after the plates
+            {kind === 'prepare' ? 'target, after the plates' : 'unitary, of all the plates'}
           </th>
           {plates.map(({ id, name }) => (
             <th key={id} scope="col" className="text-right font-words whitespace-nowrap">
@@ -93,6 +95,7 @@ export function TargetsTable({
               place={place}
               target={target}
               view={views[place] ?? { status: 'empty' }}
+              kind={kind}
               plates={plates}
               toleranceInfidelity={toleranceInfidelity}
               selected={target.id === selectedId}

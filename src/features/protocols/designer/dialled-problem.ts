@@ -1,30 +1,37 @@
-import { type DialledState, evaluateDials } from '../../../../shared/optics/solve-target';
+import {
+  type Dialled,
+  evaluateDials,
+  platesAtDials,
+  statesBehind,
+  type TargetPlate,
+} from '../../../../shared/optics/solve-target';
 import type { Stokes } from '../../../../shared/optics/stokes';
 import { fastAxisFromDial } from '../../../../shared/optics/dial';
 import { degrees } from '../../../../shared/optics/units';
-import { dialScaleOf, targetPlates } from '../../../../shared/protocol/solve-row';
+import { type RowReading, rowGoal } from '../../../../shared/protocol/solve-row';
+import { dialScaleOf, targetPlates } from '../../../../shared/protocol/solving-plates';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { Bench } from '../../../../shared/schemas/benches';
 
-interface Dialled {
+interface Standing {
   readonly bench: Bench;
+  /** The light before the first plate. */
   readonly input: Stokes;
-  readonly target: Stokes;
+  readonly reading: RowReading;
   readonly dialsDeg: readonly number[];
 }
 
-/** What the bench makes with its dials standing so, and how far that is from the target. */
-export function reachedState({ bench, input, target, dialsDeg }: Dialled): DialledState {
-  return evaluateDials(
-    {
-      target,
-      input,
-      plates: targetPlates(bench.plates),
-      polariserSigmaDeg: bench.polariserSigmaDeg,
-      objective: 'least-expected-infidelity',
-    },
-    dialsDeg,
-  );
+/** What the bench makes with its dials standing so, how far that is from the row's target, and some light on its way. */
+export function standingAt({
+  bench,
+  input,
+  reading,
+  dialsDeg,
+}: Standing): Dialled & { readonly statesAfter: readonly Stokes[]; readonly output: Stokes } {
+  const plates: readonly TargetPlate[] = targetPlates(bench.plates, bench);
+  const statesAfter = statesBehind(input, platesAtDials(plates, dialsDeg));
+  const dialled = evaluateDials({ goal: rowGoal(reading, input), plates }, dialsDeg);
+  return { ...dialled, statesAfter, output: statesAfter.at(-1) ?? input };
 }
 
 /** Where the fast axis stands when the dial says this: what the table and the stage both show beside a dial. */

@@ -1,5 +1,5 @@
 import type { RowResult } from '../../../../shared/protocol/solve-row';
-import { chooseSolution } from '../../../../shared/protocol/solve-row';
+import { chosenSolution } from '../../../../shared/protocol/choose-solutions';
 import type { DraftTarget, ShownSolution } from '../../../../shared/schemas/protocols';
 import type { SolvedRow } from '../use-solved-rows';
 
@@ -29,12 +29,12 @@ export type RowView =
 export function viewOf(target: DraftTarget, row: SolvedRow | undefined): RowView {
   if (target.expression.trim() === '') return { status: 'empty' };
   if (row === undefined) return { status: 'waiting' };
-  const { result, stale } = row;
+  const { result, choice, stale } = row;
   if (result.status === 'unreadable') return { status: 'unreadable', error: result.error };
   const { reading, solved } = result;
-  const { index, held } = chooseSolution(solved, target.heldFastAxesDeg);
-  const solution = solved.solutions[index];
-  if (solution === undefined) return { status: 'waiting' };
+  const solution = choice === null ? undefined : chosenSolution(solved, choice);
+  if (choice === null || solution === undefined) return { status: 'waiting' };
+  const { index, held } = choice;
   const heldIsGone = target.heldFastAxesDeg !== null && !held;
   return { status: 'solved', reading, solved, solution, chosen: index, held, heldIsGone, stale };
 }
@@ -60,7 +60,7 @@ function faultIn(targets: readonly DraftTarget[], views: readonly RowView[]): st
   if (unread.length === 1) return `Row ${unread.join()} can’t be read and holds this up.`;
   if (unread.length > 1) return `Rows ${unread.join(', ')} can’t be read and hold this up.`;
   const empty = views.findIndex(({ status }) => status === 'empty');
-  if (empty >= 0) return `Row ${empty + 1} has no state. Write one, or take the row out.`;
+  if (empty >= 0) return `Row ${empty + 1} is empty. Write what it is to make, or take the row out.`;
   const labels = targets.map(({ label }) => label.trim());
   const unlabelled = labels.indexOf('');
   if (unlabelled >= 0) return `Row ${unlabelled + 1} has no label.`;

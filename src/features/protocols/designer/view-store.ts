@@ -1,6 +1,13 @@
 import { create } from 'zustand';
 import type { DraftTarget } from '../../../../shared/schemas/protocols';
 
+/** The six states that a unitary can be followed with. */
+export const followedLights = ['H', 'V', 'D', 'A', 'R', 'L'] as const;
+export type FollowedLight = (typeof followedLights)[number];
+
+/** images: where the six states go. phase: the state's phase as a flag along its path. reach: what two plates can't make. */
+export type SphereOverlay = 'none' | 'images' | 'phase' | 'reach';
+
 /** What is only in the page: which row is looked at, and where plates were turned by hand. */
 interface DesignerView {
   readonly selectedId: string | null;
@@ -12,11 +19,17 @@ interface DesignerView {
   readonly solutionsOfId: string | null;
   /** Dials turned by hand on the stage, in beam order; null while they stand at the solution. */
   readonly handDialsDeg: readonly number[] | null;
+  /** Of a unitary: which light is followed through the plates. */
+  readonly followed: FollowedLight;
+  /** What the sphere shows besides the path. */
+  readonly overlay: SphereOverlay;
   readonly select: (id: string | null) => void;
   readonly openSource: (id: string, before: DraftTarget | null) => void;
   readonly closeSource: () => void;
   readonly listSolutions: (id: string | null) => void;
   readonly turnByHand: (dialsDeg: readonly number[] | null) => void;
+  readonly follow: (light: FollowedLight) => void;
+  readonly showOverlay: (overlay: SphereOverlay) => void;
 }
 
 export const useDesignerView = create<DesignerView>((set) => ({
@@ -25,6 +38,8 @@ export const useDesignerView = create<DesignerView>((set) => ({
   openedTarget: null,
   solutionsOfId: null,
   handDialsDeg: null,
+  followed: 'H',
+  overlay: 'none',
   select: (id) =>
     set(({ selectedId, solutionsOfId, editingId }) =>
       id === selectedId
@@ -41,4 +56,6 @@ export const useDesignerView = create<DesignerView>((set) => ({
   closeSource: () => set({ editingId: null, openedTarget: null }),
   listSolutions: (id) => set({ solutionsOfId: id }),
   turnByHand: (dialsDeg) => set({ handDialsDeg: dialsDeg }),
+  follow: (followed) => set({ followed }),
+  showOverlay: (overlay) => set({ overlay }),
 }));

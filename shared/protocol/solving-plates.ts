@@ -1,0 +1,66 @@
+import { type DialScale } from '../optics/dial';
+import { retardanceAt, type UsedRetardance } from '../optics/dispersion';
+import type { TargetPlate } from '../optics/solve-target';
+import type { Calibration, Plate } from '../schemas/cabinet';
+
+/** What a dial's scale needs of a plate. */
+export interface DialledPlate {
+  readonly mount: Pick<Plate['mount'], 'direction' | 'resolutionDeg' | 'rangeDeg'>;
+  readonly calibration: Pick<Calibration, 'offsetDeg'>;
+}
+
+/** What a solver needs of a plate: how it is built, its calibration and its mount. */
+export interface SolvingPlate extends Pick<Plate, 'construction' | 'material' | 'order'> {
+  readonly mount: Omit<Plate['mount'], 'name'>;
+  readonly calibration: Pick<
+    Calibration,
+    'wavelengthNm' | 'temperatureC' | 'retardanceDeg' | 'retardanceSigmaDeg' | 'offsetDeg' | 'offsetSigmaDeg'
+  >;
+}
+
+/** Where plates stand: at another wavelength or temperature than their calibration they retard differently. */
+export interface PlateSurroundings {
+  readonly wavelengthNm: number;
+  readonly temperatureC: number | null;
+}
+
+/** How a plate's dial is engraved: its zero as calibrated, its sense, its finest step and how far it turns. */
+export function dialScaleOf({ mount, calibration }: DialledPlate): DialScale {
+  return {
+    offsetDeg: calibration.offsetDeg,
+    direction: mount.direction,
+    resolutionDeg: mount.resolutionDeg,
+    rangeDeg: mount.rangeDeg,
+  };
+}
+
+/** The retardance that a plate has at a bench, and how it came from what was measured. */
+export function usedRetardance(plate: SolvingPlate, surroundings: PlateSurroundings): UsedRetardance {
+  return retardanceAt(plate, plate.calibration, surroundings);
+}
+
+/** A plate as the solver takes it, with the retardance that holds where it stands. */
+export function targetPlate(
+  plate: SolvingPlate,
+  used: Pick<UsedRetardance, 'retardanceDeg' | 'perNmDeg' | 'perKelvinDeg'>,
+): TargetPlate {
+  const { mount, calibration } = plate;
+  return {
+    retardanceDeg: used.retardanceDeg,
+    retardanceSigmaDeg: calibration.retardanceSigmaDeg,
+    perNmDeg: used.perNmDeg,
+    perKelvinDeg: used.perKelvinDeg,
+    offsetSigmaDeg: calibration.offsetSigmaDeg,
+    repeatabilityDeg: mount.repeatabilityDeg,
+    scale: dialScaleOf(plate),
+    motion: { speedDegPerS: mount.speedDegPerS, backlashDeg: mount.backlashDeg, approach: mount.approach },
+  };
+}
+
+/** Plates as the solver takes them, in beam order. */
+export function targetPlates(
+  plates: readonly SolvingPlate[],
+  surroundings: PlateSurroundings,
+): TargetPlate[] {
+  return plates.map((plate) => targetPlate(plate, usedRetardance(plate, surroundings)));
+}

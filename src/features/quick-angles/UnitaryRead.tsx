@@ -1,0 +1,29 @@
+import { type Convention, radians, toDegrees } from '../../../shared/optics';
+import type { RowReading } from '../../../shared/protocol/solve-row';
+import { Formula } from '../../components/Formula';
+import { formatAngle } from '../../lib/format';
+import { turnOf } from './turn-of';
+
+/** A written unitary as it was read: its formula, its turn of the sphere, and what was divided away. */
+export function UnitaryRead(props: {
+  readonly reading: Extract<RowReading, { kind: 'unitary' }>;
+  readonly convention: Convention;
+}) {
+  const { reading, convention } = props;
+  const turn = turnOf(reading.quaternion, convention);
+  return (
+    <div>
+      <p className="text-body sm:text-[1.125rem]">
+        <Formula latex={reading.latex} source={reading.canonical} />
+      </p>
+      <p className="text-ink-2 mt-1">
+        {turn === null
+          ? 'It leaves every state as it is'
+          : `A right-handed turn of the sphere by ${formatAngle(toDegrees(radians(turn.angleRad)))} about (S1, S2, S3) = (${turn.axis
+              .map((part) => part.toFixed(3).replace('-', '\u2212'))
+              .join(', ')})`}
+        {reading.normalised && `. Written ${Number(reading.scale.toPrecision(4))} times that`}.
+      </p>
+    </div>
+  );
+}
