@@ -1,5 +1,6 @@
 import { ellipseOf } from './ellipse';
 import type { JonesVector } from './jones';
+import type { JonesMatrix } from './retarder';
 import type { Stokes } from './stokes';
 import { type Radians, radians } from './units';
 
@@ -34,6 +35,20 @@ export interface ShownEllipse {
 export function translateJones(jones: JonesVector, convention: Convention): JonesVector {
   if (convention.phase === 'kz-wt') return jones;
   return { aRe: jones.aRe, aIm: negate(jones.aIm), bRe: jones.bRe, bIm: negate(jones.bIm) };
+}
+
+/** A Jones matrix, canonical to written and back: complex conjugate under ωt − kz, as for the vectors it acts on. */
+export function translateMatrix(matrix: JonesMatrix, convention: Convention): JonesMatrix {
+  if (convention.phase === 'kz-wt') return matrix;
+  const [[a, b], [c, d]] = matrix;
+  return [
+    [conjugated(a), conjugated(b)],
+    [conjugated(c), conjugated(d)],
+  ];
+}
+
+function conjugated([re, im]: readonly [number, number]): readonly [number, number] {
+  return [re, negate(im)];
 }
 
 // −0 would be shown as "-0" and hashed as something else than 0.
