@@ -27,7 +27,7 @@ function kept(candidates: readonly Candidate[], suspects: readonly Candidate[]):
 const ANYWHERE: CirclePoint = { cos: 1, sin: 0 };
 
 /** The direction of a complex number; `ANYWHERE` for 0. */
-function direction(re: number, im: number): CirclePoint {
+export function direction(re: number, im: number): CirclePoint {
   const length = Math.sqrt(re * re + im * im);
   return length > 0 ? { cos: re / length, sin: im / length } : ANYWHERE;
 }

@@ -2,8 +2,9 @@ import type { Quaternion } from '../quaternion';
 import { type Radians, radians, wrap } from '../units';
 import { exactSettings } from './apply-exact';
 import { nearestSettings } from './apply-nearest';
+import { outerSettings } from './apply-outer';
 import { type Candidate, EXACT_MISS, type Half, pointOf, settingOf, targetWithin } from './apply-stack';
-import { bestFirst, distinctSettings, settingsApart } from './distinct-settings';
+import { distinctSettings, settingsApart } from './distinct-settings';
 import type { Family, Setting } from './setting';
 import { roundAngles, spreadAngles } from './spread-angles';
 
@@ -11,10 +12,6 @@ import { roundAngles, spreadAngles } from './spread-angles';
 export interface Window {
   readonly start: number;
   readonly count: number;
-}
-
-function freePlatesOf(halves: readonly Half[], { start, count }: Window): readonly number[] {
-  return halves.map((_, k) => k).filter((k) => k < start || k >= start + count);
 }
 
 /**
@@ -29,7 +26,7 @@ export function windowFamily(
 ): Family {
   const { start, count } = window;
   const end = start + count;
-  const freePlates = freePlatesOf(halves, window);
+  const freePlates = halves.map((_, k) => k).filter((k) => k < start || k >= end);
   const membersAt = (angles: readonly Radians[]): readonly Setting[] => {
     const chosen = new Map(freePlates.map((plate, k) => [plate, radians(wrap(angles[k] ?? NaN, Math.PI))]));
     const points = halves.map((_, plate) => pointOf(chosen.get(plate) ?? radians(0)));
@@ -87,6 +84,38 @@ export function familiesOf(halves: readonly Half[], target: Quaternion, limit: n
     if (families.length > 0) return families;
   }
   return [];
+}
+
+/**
+ * Of three plates' families, one that holds them all: where the first plate's and the last plate's hold different settings
+ * (two of equal plates crossed, either the first two or the last two), the middle plate's holds both.
+ */
+export function widestOf(
+  families: readonly Family[],
+  halves: readonly Half[],
+  target: Quaternion,
+): readonly Family[] {
+  const [main, ...others] = families;
+  const [first, second, third] = halves;
+  if (main?.freePlates.length !== 1 || first === undefined || second === undefined || third === undefined)
+    return families;
+  const apart = others.some((other) =>
+    spreadAngles(1, TRIED).some((angles) => other.membersAt(angles).some((member) => !holds(main, member))),
+  );
+  if (!apart) return families;
+  const membersAt = ([angle = radians(NaN)]: readonly Radians[]): readonly Setting[] => {
+    const chosen = radians(wrap(angle, Math.PI));
+    const found = outerSettings([first, second, third], pointOf(chosen), target);
+    return distinctSettings(
+      found.map(settingOf).map(({ fastAxesRad: [a, , c], infidelity }) => ({
+        fastAxesRad: [a ?? chosen, chosen, c ?? chosen],
+        infidelity,
+      })),
+    );
+  };
+  const middle: Family = { freePlates: [1], membersAt };
+  const everywhere = spreadAngles(1, TRIED).every((angles) => membersAt(angles).length > 0);
+  return everywhere ? [middle, ...families] : families;
 }
 
 const MOST = 16;
@@ -150,9 +179,4 @@ export function spreadMembers({ freePlates, membersAt }: Family): readonly Setti
   return distinctSettings(
     inTurn(spreadAngles(freePlates.length, COMPARED).map((angles) => membersAt(angles))),
   );
-}
-
-/** A family's solutions, exact ones by angles, nearest ones best first. */
-export function inOrder(settings: readonly Setting[], exact: boolean): readonly Setting[] {
-  return exact ? settings : bestFirst(settings);
 }

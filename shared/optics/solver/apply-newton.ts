@@ -43,29 +43,32 @@ function triple(a: Bloch, b: Bloch, c: Bloch): number {
   );
 }
 
+const STILL: Bloch = [0, 0, 0];
+
 // A residual of rounding: a further step only moves the last bit.
-const ROUNDING = 1e-30;
+const ROUNDING = 4e-30;
 
 /**
  * Gauss–Newton on the vector part of achieved · wanted⁻¹, in the angles of all plates; the best point met. The damping
- * only matters where two solutions meet or a family runs through: there it takes the shortest step.
+ * only matters where two solutions meet or a family runs through: there it takes the shortest step. The plate `held` stays
+ * where it is.
  */
 export function polish(
   halves: readonly Half[],
   start: readonly CirclePoint[],
   target: Quaternion,
+  held: number | null = null,
 ): Candidate {
   let points = start;
   let best = candidateAt(halves, points, target);
   for (let step = 0; step < 24 && best.miss > ROUNDING; step += 1) {
     const { x, y, z } = leftOver(halves, points, target);
     const { omega } = ratesAt(halves, points);
-    const damping = 1e-13 * omega.reduce((sum, rate) => sum + dot(rate, rate), 0) + 1e-300;
-    const move = solveDamped(
-      omega.map((row) => omega.map((column) => dot(row, column))),
-      damping,
-      omega.map((rate) => -dot(rate, [x, y, z])),
-    );
+    const move = shortestStep(held === null ? omega : omega.map((rate, k) => (k === held ? STILL : rate)), [
+      -x,
+      -y,
+      -z,
+    ]);
     if (move === null) return best;
     points = points.map((point, k) => turned(point, move[k] ?? 0));
     const next = candidateAt(halves, points, target);
@@ -73,6 +76,26 @@ export function polish(
     best = next;
   }
   return best;
+}
+
+// Cramer's rule where three rates span the space well.
+const SPANS = 1e-3;
+
+function shortestStep(omega: readonly Bloch[], by: Bloch): readonly number[] | null {
+  const [first, second, third] = omega;
+  if (omega.length === 3 && first !== undefined && second !== undefined && third !== undefined) {
+    const volume = triple(first, second, third);
+    if (Math.abs(volume) > SPANS) {
+      const parts = [triple(by, second, third), triple(first, by, third), triple(first, second, by)];
+      return parts.map((part) => part / volume);
+    }
+  }
+  const damping = 1e-13 * omega.reduce((sum, rate) => sum + dot(rate, rate), 0) + 1e-300;
+  return solveDamped(
+    omega.map((row) => omega.map((column) => dot(row, column))),
+    damping,
+    omega.map((rate) => dot(rate, by)),
+  );
 }
 
 /** The scalar part f = cos(ε/2) ≥ 0 at a point, its gradient and the negative of its Hessian in the u of each plate. */

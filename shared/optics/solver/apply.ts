@@ -2,7 +2,7 @@ import { asin } from '../elementary';
 import type { Quaternion } from '../quaternion';
 import { type Radians, radians, wrap } from '../units';
 import { exactSettings } from './apply-exact';
-import { asNearAs, bestWindow, familiesOf, inOrder, representatives, spreadMembers } from './apply-family';
+import { asNearAs, bestWindow, familiesOf, representatives, spreadMembers, widestOf } from './apply-family';
 import { nearestSettings } from './apply-nearest';
 import { type Candidate, EXACT_MISS, type Half, halfOf, settingOf } from './apply-stack';
 import { bestFirst, distinctSettings } from './distinct-settings';
@@ -19,6 +19,8 @@ const MOST_PLATES = 6;
 const NOTHING = 1e-14;
 // Optima this close are one: on a shallow summit the climb leaves some digits.
 const SAME_OPTIMUM_RAD = 1e-6;
+// Angles that differ by rounding are in no order; the next plate's decide.
+const SAME_ANGLE_RAD = 2e-9;
 
 /**
  * Every setting of a stack for one unitary, up to its phase. Three plates by a closed form (apply-exact.ts), polished; more
@@ -63,9 +65,12 @@ function reached(
   candidates: readonly Candidate[],
   suspects: readonly Candidate[],
 ): Solved {
-  // Three plates in general position have isolated settings; fewer reach a target by chance or design.
-  const families = halves.length === 3 && suspects.length === 0 ? [] : familiesOf(halves, target, EXACT_MISS);
   const isolated = candidates.map(settingOf);
+  // Three plates in general position have isolated settings, none found twice; fewer reach a target by chance or design.
+  if (halves.length === 3 && suspects.length === 0) {
+    return { kind: 'exact', solutions: isolated.sort(byAngles), shortfallRad: radians(0), family: null };
+  }
+  const families = widestOf(familiesOf(halves, target, EXACT_MISS), halves, target);
   const [family] = families;
   if (family !== undefined) {
     const solutions = distinctSettings([...representatives(families), ...isolated]);
@@ -73,6 +78,14 @@ function reached(
   }
   const solutions = distinctSettings([...isolated, ...suspects.map(settingOf)]);
   return { kind: 'exact', solutions, shortfallRad: radians(0), family: null };
+}
+
+function byAngles(one: Setting, other: Setting): number {
+  for (let plate = 0; plate < one.fastAxesRad.length; plate += 1) {
+    const difference = (one.fastAxesRad[plate] ?? 0) - (other.fastAxesRad[plate] ?? 0);
+    if (Math.abs(difference) > SAME_ANGLE_RAD) return difference;
+  }
+  return 0;
 }
 
 function reachedFamily(family: Family, known: readonly Setting[]): Solved {
@@ -93,7 +106,7 @@ function nearest(halves: readonly Half[], target: Quaternion): Solved {
   const families = familiesOf(halves, target, asNearAs(best));
   const [family] = families;
   if (family !== undefined) {
-    return { kind: 'family', solutions: inOrder(representatives(families), false), shortfallRad, family };
+    return { kind: 'family', solutions: bestFirst(representatives(families)), shortfallRad, family };
   }
   const solutions = bestFirst(distinctSettings(optima.map(settingOf), SAME_OPTIMUM_RAD));
   return { kind: 'nearest', solutions, shortfallRad, family: null };
