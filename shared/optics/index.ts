@@ -7,7 +7,8 @@ export {
   type UncertainPlate,
 } from './budget';
 export * from './convention';
-export { CONVENTION_SETS, type ConventionSet } from './convention-sets';
+export { CONVENTION_SETS, type ConventionSet, type ConventionSource, setsOf } from './convention-sets';
+export { type DescribedState, describeState, type WrittenBloch } from './described-state';
 export * from './dial';
 export * from './dispersion';
 export * from './ellipse';
@@ -27,6 +28,16 @@ export {
   stackQuaternion,
   type Turn,
 } from './retarder';
+export {
+  muellerMatrix,
+  type MuellerMatrix,
+  muellerOfJones,
+  polariserMatrix,
+  readMueller,
+  showMueller,
+  type ShownMueller,
+  type StokesRow,
+} from './mueller';
 export {
   flagOf,
   fullTurnSign,
