@@ -1,4 +1,10 @@
-import { type MountMotion, planSequence } from '../optics/sequence';
+import {
+  type MountMotion,
+  planSequence,
+  type SequencePlan,
+  type SequenceProblem,
+  UnreachableRowError,
+} from '../optics/sequence';
 import type { SettingSolution, SolvedTarget, TargetPlate } from '../optics/solve-target';
 import { degrees, type Degrees, wrapSigned } from '../optics/units';
 import type { RowProblem } from './solve-row';
@@ -58,7 +64,7 @@ export function chooseSolutions(
 ): readonly RowChoice[] {
   const alone = rows.map(chooseSolution);
   if (problem.objective !== 'least-travel') return alone;
-  const plan = planSequence({
+  const plan = planOrNothing({
     mounts: problem.plates.map(mountMotion),
     rows: rows.map((row, place) => ({
       branches: row.solved.solutions.map(({ fastAxesDeg }) => fastAxesDeg),
@@ -68,11 +74,22 @@ export function chooseSolutions(
     cost: 'travel',
     moves: 'one-by-one',
   });
+  if (plan === null) return alone;
   return alone.map((choice, place) => ({
     ...choice,
     index: plan.choices[place] ?? choice.index,
     dialsDeg: plan.dialsDeg[place]?.map(degrees) ?? choice.dialsDeg,
   }));
+}
+
+/** Null where the play of a mount leaves it less than half a turn, so that some row has no way to its readings. */
+function planOrNothing(problem: SequenceProblem): SequencePlan | null {
+  try {
+    return planSequence(problem);
+  } catch (error) {
+    if (error instanceof UnreachableRowError) return null;
+    throw error;
+  }
 }
 
 /** The solution of a choice, with the readings that were chosen for it. */

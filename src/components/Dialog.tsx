@@ -1,3 +1,4 @@
+import { classNames } from './class-names';
 import { type ReactNode, useEffect, useId, useLayoutEffect, useRef } from 'react';
 
 interface DialogProps {
@@ -6,6 +7,8 @@ interface DialogProps {
   readonly question: ReactNode;
   /** The consequences, with numbers. */
   readonly children: ReactNode;
+  /** For what has a picture beside its fields. */
+  readonly wide?: boolean;
   /** Buttons that are verbs; the way back among them. */
   readonly actions: ReactNode;
   /** Esc, and whatever closes it. Never the verb. */
@@ -16,7 +19,7 @@ interface DialogProps {
  * For what can't be undone. The browser's own dialog: it keeps the focus inside and everything behind it out of reach, and the
  * focus goes back to where it was. The question gets the focus first, so that no key in flight presses a verb.
  */
-export function Dialog({ open, question, children, actions, onClose }: DialogProps) {
+export function Dialog({ open, question, wide = false, children, actions, onClose }: DialogProps) {
   const dialog = useRef<HTMLDialogElement>(null);
   const head = useRef<HTMLHeadingElement>(null);
   const titleId = useId();
@@ -47,7 +50,10 @@ export function Dialog({ open, question, children, actions, onClose }: DialogPro
         event.preventDefault();
         close.current();
       }}
-      className="m-auto w-full max-w-140 border-[1.5px] border-ink bg-paper p-6 text-body text-ink max-sm:max-w-[calc(100%-2.5rem)]"
+      className={classNames(
+        wide ? 'max-w-240' : 'max-w-140',
+        'm-auto w-full border-[1.5px] border-ink bg-paper p-6 text-body text-ink max-sm:max-w-[calc(100%-2.5rem)]',
+      )}
     >
       <h2 id={titleId} ref={head} tabIndex={-1} className="text-section">
         {question}

@@ -12,6 +12,7 @@ import {
   conflictingState,
   EditConflict,
   FormProblem,
+  readOptionalNumber,
   readTypedNumber,
   schemaResolver,
   showServerFaults,
@@ -84,10 +85,12 @@ export function BenchForm(props: {
     fault: formState.errors[name]?.message,
   });
   const wavelengthNm = readTypedNumber(values.wavelengthNm ?? '');
+  const typedC = readOptionalNumber(values.temperatureC ?? '');
+  const temperatureC = Number.isFinite(typedC) ? typedC : null;
   const chosen = (values.plates ?? []).flatMap(
     ({ plateId }) => plates.find((plate) => plate.id === plateId) ?? [],
   );
-  const warnings = benchWarnings(chosen, wavelengthNm, bench?.id ?? null);
+  const warnings = benchWarnings(chosen, { wavelengthNm, temperatureC }, bench?.id ?? null);
   const theirs = benchConflict(conflictingState(saving.error));
   const hazards = readWavelengths(values.hazardWavelengthsNm ?? '').filter(Number.isFinite);
   return (

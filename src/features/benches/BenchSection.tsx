@@ -69,7 +69,7 @@ export function BenchSection({ bench, now = new Date() }: { readonly bench: Benc
         )}
       </div>
       <PlatesInOrder bench={bench} now={now} />
-      {benchWarnings(bench.plates, bench.wavelengthNm, bench.id).map((warning) => (
+      {benchWarnings(bench.plates, bench, bench.id).map((warning) => (
         <p key={warning}>
           <GapText text={warning} />
         </p>

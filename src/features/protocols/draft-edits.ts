@@ -40,12 +40,29 @@ export const holdSolution = (id: string, fastAxesDeg: readonly number[] | null):
   changeTarget(null, id, { heldFastAxesDeg: fastAxesDeg === null ? null : [...fastAxesDeg] });
 
 export function newTarget(targets: readonly DraftTarget[], expression: string): DraftTarget {
-  return { id: newId(), label: freeLabel(targets), expression, heldFastAxesDeg: null };
+  return {
+    id: newId(),
+    label: freeLabel(new Set(targets.map(({ label }) => label))),
+    expression,
+    heldFastAxesDeg: null,
+  };
+}
+
+/** Rows for several targets at once; a label that is empty or taken gets a free one. */
+export function newTargets(
+  targets: readonly DraftTarget[],
+  rows: readonly { readonly label: string; readonly expression: string }[],
+): readonly DraftTarget[] {
+  const taken = new Set(targets.map(({ label }) => label));
+  return rows.map(({ label, expression }) => {
+    const free = label === '' || taken.has(label) ? freeLabel(taken) : label;
+    taken.add(free);
+    return { id: newId(), label: free, expression, heldFastAxesDeg: null };
+  });
 }
 
 /** t0, t1, … the first that no row has. */
-function freeLabel(targets: readonly DraftTarget[]): string {
-  const taken = new Set(targets.map(({ label }) => label));
+function freeLabel(taken: ReadonlySet<string>): string {
   let number = 0;
   while (taken.has(`t${number}`)) number += 1;
   return `t${number}`;
@@ -114,7 +131,7 @@ export const addRows = (rows: readonly DraftTarget[]): DraftEdit =>
   withTargets(null, (targets) => [...targets, ...rows].slice(0, maxTargets));
 
 /** The rows in another order, by their ids; a row that is not named keeps its place at the end. */
-export const reorder = (ids: readonly string[]): DraftEdit =>
+const reorder = (ids: readonly string[]): DraftEdit =>
   withTargets(null, (targets) => {
     const place = new Map(ids.map((id, index) => [id, index]));
     return [...targets].sort(
@@ -122,11 +139,8 @@ export const reorder = (ids: readonly string[]): DraftEdit =>
     );
   });
 
-/** Each row's solution held as a plan chose it. */
-export const holdAll = (held: ReadonlyMap<string, readonly number[]>): DraftEdit =>
-  withTargets(null, (targets) =>
-    targets.map((target) => {
-      const fastAxesDeg = held.get(target.id);
-      return fastAxesDeg === undefined ? target : { ...target, heldFastAxesDeg: [...fastAxesDeg] };
-    }),
-  );
+/** The rows in a planned order, ranked by the travel that it was planned for; undone as one. */
+export const takeOrder = (ids: readonly string[]): DraftEdit => ({
+  typing: null,
+  apply: (content) => rankBy('least-travel').apply(reorder(ids).apply(content)),
+});

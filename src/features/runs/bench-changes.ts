@@ -3,7 +3,7 @@ import type { Bench } from '../../../shared/schemas/benches';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import type { FrozenPlate, VersionContent } from '../../../shared/schemas/versions';
 import { formatDate } from '../../lib/format';
-import { calibratedElsewhere } from '../benches';
+import { calibratedElsewhere, elsewhereSentence } from '../benches';
 
 const gap = '\u202f';
 
@@ -53,10 +53,7 @@ function inputChange(content: VersionContent, live: Bench, convention: Conventio
 export function frozenElsewhere({ bench }: VersionContent): string[] {
   return bench.plates
     .filter((plate) => calibratedElsewhere(plate, bench.wavelengthNm))
-    .map(
-      ({ name, calibration }) =>
-        `${name} was calibrated at ${calibration.wavelengthNm}${gap}nm, and this version’s light has ${bench.wavelengthNm}${gap}nm. Its retardance there is another one.`,
-    );
+    .map((plate) => elsewhereSentence(plate, bench));
 }
 
 /** What became of the bench since a version froze it, in sentences; its input is written in the lab's convention. */

@@ -67,12 +67,24 @@ describe('a bench as it is typed', () => {
 
 describe('what a person should know before plates stand in a bench', () => {
   it('warns of another wavelength and of another bench, by name', () => {
-    const [elsewhere, taken] = benchWarnings([plateFixture()], 780, null);
-    expect(elsewhere).toMatch(/Q-B is calibrated at 810\u202fnm, not at 780\u202fnm/);
+    const [elsewhere, taken] = benchWarnings(
+      [plateFixture()],
+      { wavelengthNm: 780, temperatureC: null },
+      null,
+    );
+    expect(elsewhere).toMatch(
+      /Q-B was calibrated at 810\u202fnm\. At 780\u202fnm it is taken as 92\.\d\d°, \+3\.\d\d° by the dispersion/,
+    );
     expect(taken).toMatch(/Q-B stands in the beam of signal arm\. Choose another/);
   });
 
   it('is silent about the bench itself at its own wavelength', () => {
-    expect(benchWarnings([plateFixture()], 810, plateFixture().benches[0]?.id ?? '')).toEqual([]);
+    expect(
+      benchWarnings(
+        [plateFixture()],
+        { wavelengthNm: 810, temperatureC: null },
+        plateFixture().benches[0]?.id ?? '',
+      ),
+    ).toEqual([]);
   });
 });

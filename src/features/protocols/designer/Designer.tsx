@@ -5,24 +5,27 @@ import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
 import { BeamEmpty, BeamWorking, BeamWrong } from '../../../components/BeamState';
 import { KeyList } from '../../../components/KeyList';
-import { TextLink } from '../../../components/TextLink';
+import { TextButton, TextLink } from '../../../components/TextLink';
 import { UndoSentence } from '../../../components/UndoSentence';
 import { useLab } from '../../labs';
-import { chooseBench } from '../draft-edits';
+import { addRows, chooseBench, newTargets, writeExpression } from '../draft-edits';
+import { AddRowsDialog } from '../rows/AddRowsDialog';
 import { useDraft } from '../use-draft';
 import { useSolvedRows } from '../use-solved-rows';
+import { BudgetSection } from './BudgetSection';
 import { CalibratedElsewhere } from './CalibratedElsewhere';
 import { ConflictDialog } from './ConflictDialog';
 import { DesignerHead } from './DesignerHead';
 import { lightOf } from './followed-light';
-import { Limits } from './Limits';
 import { shownSolutions, viewOf, whatHoldsUp } from './row-view';
 import { SaveVersionDialog } from './SaveVersionDialog';
 import { SelectedFigures } from './SelectedFigures';
+import { SequencePanel } from './SequencePanel';
 import { SelectedStage } from './SelectedStage';
 import { TargetsTable } from './TargetsTable';
 import { useDesignerCommands } from './use-designer-commands';
 import { useRemovedRow } from './use-removed-row';
+import { VocabularyDialog } from './VocabularyDialog';
 import { useDesignerView } from './view-store';
 import './designer.css';
 
@@ -42,6 +45,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const mayWrite = may('protocols.write');
   const draft = useDraft(lab.id, user.id, protocol, mayWrite);
   const [saving, setSaving] = useState(false);
+  const [asking, setAsking] = useState<'rows' | 'words' | null>(null);
   const [writtenIn, setWrittenIn] = useState(lab.convention);
   const { selectedId, select, listSolutions, turnByHand, followed, handDialsDeg } = useDesignerView();
 
@@ -100,7 +104,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
           <TextLink to={`/labs/${lab.id}/bench`}>See the benches</TextLink>
         </BeamWrong>
       )}
-      {bench !== undefined && <CalibratedElsewhere bench={bench} />}
+      {bench !== undefined && (
+        <CalibratedElsewhere bench={bench} dialsDeg={looked?.view.solution.dialsDeg ?? null} />
+      )}
       {solved.benchFault !== null && (
         <BeamWrong title="The rows can’t be solved">{solved.benchFault}</BeamWrong>
       )}
@@ -124,8 +130,17 @@ export function Designer({ protocol, benches }: DesignerProps) {
               toleranceInfidelity={content.toleranceInfidelity}
               mayWrite={mayWrite}
               edit={draft.edit}
+              onAskWords={() => setAsking('words')}
             />
           </div>
+          {mayWrite && (
+            <p className="mt-2 mb-0 flex flex-wrap gap-x-6 gap-y-1 text-s">
+              <TextButton onClick={() => setAsking('rows')}>
+                Add a set, or rows from text or a file
+              </TextButton>
+              <TextButton onClick={() => setAsking('words')}>What can be written</TextButton>
+            </p>
+          )}
           {solved.progress !== null && (
             <BeamWorking doing="Solving" unit="row" done={solved.progress.done} total={solved.progress.total}>
               The rows done already can be read.
@@ -136,11 +151,16 @@ export function Designer({ protocol, benches }: DesignerProps) {
               {mayWrite ? emptyWords[content.kind] : 'Its writer has only begun.'}
             </BeamEmpty>
           )}
+          {bench !== undefined && (
+            <SequencePanel {...{ content, bench, views, mayWrite }} edit={draft.edit} />
+          )}
           {looked !== null && (
-            <Limits
+            <BudgetSection
               label={looked.target.label}
-              solution={looked.view.solution}
-              plates={looked.bench.plates}
+              bench={looked.bench}
+              content={content}
+              convention={lab.convention}
+              view={looked.view}
             />
           )}
         </div>
@@ -155,6 +175,32 @@ export function Designer({ protocol, benches }: DesignerProps) {
         />
       )}
       <KeyList commands={commands} />
+      {asking === 'rows' && (
+        <AddRowsDialog
+          kind={content.kind}
+          convention={lab.convention}
+          present={content.targets.length}
+          onAdd={(rows) => {
+            draft.edit(addRows(newTargets(content.targets, rows)));
+            setAsking(null);
+          }}
+          onClose={() => setAsking(null)}
+        />
+      )}
+      {asking === 'words' && (
+        <VocabularyDialog
+          mode={content.kind === 'apply' ? 'unitary' : 'state'}
+          onUse={
+            mayWrite && target !== undefined
+              ? (example) => {
+                  draft.edit(writeExpression(target.id, example));
+                  setAsking(null);
+                }
+              : null
+          }
+          onClose={() => setAsking(null)}
+        />
+      )}
       {saving && (
         <SaveVersionDialog
           labId={lab.id}

@@ -1,6 +1,7 @@
 import type { Contribution } from '../../../../shared/optics/budget';
-import { radians, toDegrees } from '../../../../shared/optics/units';
 import type { Plate } from '../../../../shared/schemas/cabinet';
+import { GapText } from '../../../lib/GapText';
+import { contributionName, sigmaText } from './contribution-words';
 import type { SettingSolution } from './row-view';
 
 interface LimitsProps {
@@ -9,36 +10,16 @@ interface LimitsProps {
   readonly plates: readonly Plate[];
 }
 
-function nameOf({ kind, plate }: Contribution, plates: readonly Plate[]): string {
-  return plate === null ? kind : `${plates[plate]?.name ?? ''} ${kind}`;
-}
-
-/** As an uncertainty is written: one decimal from 0.1 on, one figure below. */
-function figures(sigma: number): string {
-  return sigma >= 0.1 ? sigma.toFixed(1) : Number(sigma.toPrecision(1)).toString();
-}
-
-function sigmaText({ sigma, unit }: Contribution): string {
-  switch (unit) {
-    case 'rad':
-      return `${figures(toDegrees(radians(sigma)))}°`;
-    case 'nm':
-    case 'K':
-      return `${figures(sigma)} ${unit}`;
-    case 'ratio':
-      return sigma.toExponential(0);
-  }
-}
-
 function gainText(contribution: Contribution, plates: readonly Plate[]): string {
   const gain = Math.round(contribution.gainIfHalved * 100);
-  const what = contribution.kind === 'extinction' ? 'the polariser’s leak' : `the σ of ${nameOf(contribution, plates)}`;
-  return `Half ${what} would gain ${gain} %.`;
+  const name = contributionName(contribution, plates);
+  const half = contribution.unit === 'ratio' ? `Half of ${name}` : `Half the σ of ${name}`;
+  return `${half} would gain ${gain} %.`;
 }
 
 /** What makes the selected target worse than perfect, largest first, and what an improvement would gain. */
 export function Limits({ label, solution, plates }: LimitsProps) {
-  const { contributions } = solution;
+  const contributions = solution.contributions.filter(({ sigma }) => sigma > 0);
   const [first] = contributions;
   const largest = first?.share ?? 0;
   return (
@@ -63,9 +44,11 @@ export function Limits({ label, solution, plates }: LimitsProps) {
           {contributions.map((contribution) => (
             <tr key={`${contribution.kind} ${String(contribution.plate)}`}>
               <th scope="row" className="text-left text-s font-words">
-                {nameOf(contribution, plates)}
+                {contributionName(contribution, plates)}
               </th>
-              <td className="text-right font-mono text-s text-ink-2">{sigmaText(contribution)}</td>
+              <td className="text-right font-mono text-s text-ink-2">
+                <GapText text={sigmaText(contribution)} />
+              </td>
               <td>
                 <span className="limits-share">
                   <svg

@@ -22,6 +22,7 @@ export interface RowHandlers {
   readonly onCancel: () => void;
   readonly onHold: (fastAxesDeg: readonly number[] | null) => void;
   readonly onListSolutions: (open: boolean) => void;
+  readonly onAskWords: () => void;
 }
 
 const placeholders = {
@@ -110,7 +111,10 @@ export function TargetRow(props: TargetRowProps) {
             <SourceField
               label={blank ? 'New target' : `Expression of ${name}`}
               value={target.expression}
+              mode={kind === 'prepare' ? 'state' : 'unitary'}
               fault={view.status === 'unreadable' ? view.error : null}
+              latex={editing && solved !== null ? solved.reading.latex : null}
+              onAskWords={props.onAskWords}
               autoFocus={editing}
               placeholder={blank ? placeholders[kind] : ''}
               onChange={props.onWrite}

@@ -23,6 +23,7 @@ interface TargetsTableProps {
   readonly toleranceInfidelity: number;
   readonly mayWrite: boolean;
   readonly edit: (edit: DraftEdit) => void;
+  readonly onAskWords: () => void;
 }
 
 /** The targets in order, and below them an empty row to write the next one in. */
@@ -34,6 +35,7 @@ export function TargetsTable({
   toleranceInfidelity,
   mayWrite,
   edit,
+  onAskWords,
 }: TargetsTableProps) {
   const {
     selectedId,
@@ -129,6 +131,7 @@ export function TargetsTable({
                 }
                 closeSource();
               }}
+              onAskWords={onAskWords}
               onHold={(fastAxesDeg) => edit(holdSolution(target.id, fastAxesDeg))}
               onListSolutions={(open) => {
                 select(target.id);

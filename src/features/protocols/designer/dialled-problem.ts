@@ -5,10 +5,18 @@ import {
   statesBehind,
   type TargetPlate,
 } from '../../../../shared/optics/solve-target';
+import { type BudgetProblem } from '../../../../shared/optics/budget';
+import { settingBudget } from '../../../../shared/optics/solve-target';
+import type { Convention } from '../../../../shared/optics/convention';
 import type { Stokes } from '../../../../shared/optics/stokes';
 import { fastAxisFromDial } from '../../../../shared/optics/dial';
 import { degrees } from '../../../../shared/optics/units';
-import { type RowReading, rowGoal } from '../../../../shared/protocol/solve-row';
+import {
+  benchProblem,
+  type RowReading,
+  rowGoal,
+  type SolvingTask,
+} from '../../../../shared/protocol/solve-row';
 import { dialScaleOf, targetPlates } from '../../../../shared/protocol/solving-plates';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { Bench } from '../../../../shared/schemas/benches';
@@ -32,6 +40,20 @@ export function standingAt({
   const statesAfter = statesBehind(input, platesAtDials(plates, dialsDeg));
   const dialled = evaluateDials({ goal: rowGoal(reading, input), plates }, dialsDeg);
   return { ...dialled, statesAfter, output: statesAfter.at(-1) ?? input };
+}
+
+/** The error budget's problem of some table angles of a bench; null where the bench's own input can't be read. */
+export function rowBudget(
+  bench: Bench,
+  convention: Convention,
+  task: SolvingTask,
+  reading: RowReading,
+  fastAxesDeg: readonly number[],
+): BudgetProblem | null {
+  const read = benchProblem(bench, convention, task);
+  if (!read.ok) return null;
+  const goal = rowGoal(reading, read.problem.input);
+  return settingBudget({ ...read.problem, goal, heldFastAxesDeg: null }, fastAxesDeg);
 }
 
 /** Where the fast axis stands when the dial says this: what the table and the stage both show beside a dial. */

@@ -1,0 +1,218 @@
+import { useMemo, useState } from 'react';
+import type { SequencePlan, SequenceProblem } from '../../../../shared/optics/sequence';
+import { mountMotion } from '../../../../shared/protocol/choose-solutions';
+import { targetPlates } from '../../../../shared/protocol/solving-plates';
+import type { Bench } from '../../../../shared/schemas/benches';
+import type { DraftContent } from '../../../../shared/schemas/protocols';
+import { BeamWorking } from '../../../components/BeamState';
+import { Button } from '../../../components/Button';
+import { SegmentedChoice } from '../../../components/SegmentedChoice';
+import { TextButton } from '../../../components/TextLink';
+import { useStudy } from '../../../workers/use-study';
+import { type DraftEdit, rankBy, takeOrder } from '../draft-edits';
+import type { RowView } from './row-view';
+import { durationWords, turnWords } from './turn-words';
+
+interface SequencePanelProps {
+  readonly content: DraftContent;
+  readonly bench: Bench;
+  readonly views: readonly RowView[];
+  readonly mayWrite: boolean;
+  readonly edit: (edit: DraftEdit) => void;
+}
+
+type Solved = Extract<RowView, { status: 'solved' }>;
+
+/** All rows as a list to be turned through; null while one can't be read or is still being solved. */
+function useSequenceProblem(
+  { content, bench, views }: Pick<SequencePanelProps, 'content' | 'bench' | 'views'>,
+  cost: 'travel' | 'time',
+  moves: 'one-by-one' | 'together',
+): SequenceProblem | null {
+  const solved = useMemo(
+    () => views.filter((view): view is Solved => view.status === 'solved' && !view.stale),
+    [views],
+  );
+  return useMemo(() => {
+    if (solved.length < 2 || solved.length !== views.length) return null;
+    return {
+      mounts: targetPlates(bench.plates, bench).map(mountMotion),
+      rows: solved.map((view) => ({
+        branches: view.solved.solutions.map(({ fastAxesDeg }) => fastAxesDeg),
+        held: view.held ? view.chosen : null,
+      })),
+      startDialsDeg: content.presentDialsDeg?.length === bench.plates.length ? content.presentDialsDeg : null,
+      cost,
+      moves,
+    };
+  }, [solved, views.length, bench, content.presentDialsDeg, cost, moves]);
+}
+
+/** How far the plates turn down the whole list, what the best choice of solutions saves, and what another order would. */
+export function SequencePanel(props: SequencePanelProps) {
+  const { content, bench, mayWrite, edit } = props;
+  const [cost, setCost] = useState<'travel' | 'time'>('travel');
+  const [moves, setMoves] = useState<'one-by-one' | 'together'>('one-by-one');
+  const problem = useSequenceProblem(props, cost, moves);
+  const { study, start, cancel } = useStudy('sequence');
+  const speedsKnown = bench.plates.every(({ mount }) => mount.speedDegPerS !== null);
+  if (content.targets.length < 2) return null;
+  const ask = (withOrders: boolean) => {
+    if (problem !== null) start({ kind: 'sequence', problem, reorder: withOrders });
+  };
+  return (
+    <section aria-labelledby="sequence-head" className="mt-6 border-t-[1.5px] border-ink pt-2">
+      <h2 id="sequence-head" className="m-0 text-body font-section">
+        Turning down the list
+      </h2>
+      <div className="mt-2 flex flex-wrap items-end gap-x-6 gap-y-3">
+        <SegmentedChoice
+          label="make least"
+          value={cost}
+          onChange={setCost}
+          disabled={!speedsKnown}
+          segments={[
+            { value: 'travel', label: 'travel' },
+            { value: 'time', label: 'time' },
+          ]}
+        />
+        <SegmentedChoice
+          label="the mounts turn"
+          value={moves}
+          onChange={setMoves}
+          segments={[
+            { value: 'one-by-one', label: 'one by one' },
+            { value: 'together', label: 'together' },
+          ]}
+        />
+        <Button waitsFor={problem === null ? 'every row to be solved' : undefined} onClick={() => ask(false)}>
+          Plan this order
+        </Button>
+        <Button waitsFor={problem === null ? 'every row to be solved' : undefined} onClick={() => ask(true)}>
+          Try other orders too
+        </Button>
+      </div>
+      {!speedsKnown && (
+        <p className="mt-1 mb-0 text-s text-ink-2">
+          Time needs every mount’s speed: write it with the plate in the cabinet.
+        </p>
+      )}
+      {study.state === 'working' && (
+        <div className="mt-3">
+          <BeamWorking doing="Planning" unit="per cent" done={Math.round(study.share * 100)} total={100}>
+            <TextButton onClick={cancel}>Cancel the planning</TextButton>
+          </BeamWorking>
+        </div>
+      )}
+      {study.state === 'failed' && (
+        <p role="alert" className="mt-3 mb-0 font-strong text-fault">
+          {study.sentence}
+        </p>
+      )}
+      {study.state === 'done' && (
+        <SequenceAnswer
+          {...study.result}
+          labels={content.targets.map(({ label }) => label)}
+          mayTake={mayWrite}
+          objective={content.objective}
+          onTakeChoices={() => edit(rankBy('least-travel'))}
+          onTakeOrder={(order) => edit(takeOrder(order.flatMap((place) => content.targets[place]?.id ?? [])))}
+        />
+      )}
+    </section>
+  );
+}
+
+interface SequenceAnswerProps {
+  readonly plan: SequencePlan;
+  readonly order: {
+    readonly order: readonly number[];
+    readonly plan: SequencePlan;
+    readonly method: 'exact' | 'heuristic';
+    readonly boundDeg: number | null;
+    readonly boundSeconds: number | null;
+  } | null;
+  readonly labels: readonly string[];
+  readonly objective: DraftContent['objective'];
+  readonly mayTake: boolean;
+  readonly onTakeChoices: () => void;
+  readonly onTakeOrder: (order: readonly number[]) => void;
+}
+
+/** The saving, before it is taken. */
+function SequenceAnswer(props: SequenceAnswerProps) {
+  const { plan, order, labels, objective, mayTake, onTakeChoices, onTakeOrder } = props;
+  const changes = order !== null && order.order.some((place, index) => place !== index);
+  return (
+    <div role="status" className="mt-3 space-y-2">
+      <table className="w-full max-w-160 text-left">
+        <thead className="text-s text-ink-2">
+          <tr className="border-b border-hair">
+            <th scope="col" className="font-words">
+              way through the list
+            </th>
+            <th scope="col" className="text-right font-words">
+              all plates turn
+            </th>
+            <th scope="col" className="text-right font-words">
+              time
+            </th>
+          </tr>
+        </thead>
+        <tbody>
+          <WayRow name="each row’s first solution" deg={plan.firstTravelDeg} seconds={plan.firstSeconds} />
+          <WayRow name="the best solutions in this order" deg={plan.travelDeg} seconds={plan.seconds} />
+          {order !== null && changes && (
+            <WayRow
+              name="the best solutions in another order"
+              deg={order.plan.travelDeg}
+              seconds={order.plan.seconds}
+            />
+          )}
+        </tbody>
+      </table>
+      <p className="m-0">
+        Choosing the solutions saves {turnWords(plan.firstTravelDeg - plan.travelDeg)}
+        {plan.seconds !== null &&
+          plan.firstSeconds !== null &&
+          ` and ${durationWords(plan.firstSeconds - plan.seconds)}`}{' '}
+        against each row’s first.{' '}
+        {mayTake && objective !== 'least-travel' && (
+          <TextButton onClick={onTakeChoices}>Rank the list by least travel</TextButton>
+        )}
+        {objective === 'least-travel' && 'The list is ranked so.'}
+      </p>
+      {order !== null && (
+        <p className="m-0">
+          {changes ? (
+            <>
+              In the order {order.order.map((place) => labels[place] ?? '').join(', ')} it saves{' '}
+              {turnWords(plan.travelDeg - order.plan.travelDeg)} more.{' '}
+              {order.method === 'exact'
+                ? 'No order turns less.'
+                : order.boundDeg !== null &&
+                  `No order can turn less than ${turnWords(order.boundDeg)} in all.`}{' '}
+              {mayTake && <TextButton onClick={() => onTakeOrder(order.order)}>Take this order</TextButton>}
+            </>
+          ) : (
+            'No better order was found.'
+          )}
+        </p>
+      )}
+    </div>
+  );
+}
+
+function WayRow(props: { readonly name: string; readonly deg: number; readonly seconds: number | null }) {
+  return (
+    <tr className="border-b border-hair">
+      <th scope="row" className="py-1 font-words">
+        {props.name}
+      </th>
+      <td className="py-1 text-right font-mono">{turnWords(props.deg)}</td>
+      <td className="py-1 text-right font-mono">
+        {props.seconds === null ? '—' : durationWords(props.seconds)}
+      </td>
+    </tr>
+  );
+}

@@ -1,0 +1,102 @@
+import { useMemo, useState } from 'react';
+import type { Convention } from '../../../../shared/optics/convention';
+import { maxTargets, type ProtocolKind } from '../../../../shared/schemas/protocols';
+import { Button } from '../../../components/Button';
+import { Dialog } from '../../../components/Dialog';
+import { SegmentedChoice } from '../../../components/SegmentedChoice';
+import { Sphere, type SphereInput } from '../../../sphere';
+import { CsvFields } from './CsvFields';
+import { SetFields } from './SetFields';
+import { firstChoice } from './target-set-choice';
+import { type FoundRow, roomFor, type RowsFrom, useFoundRows } from './use-found-rows';
+
+interface AddRowsDialogProps {
+  readonly kind: ProtocolKind;
+  readonly convention: Convention;
+  /** How many rows the protocol has. */
+  readonly present: number;
+  readonly onAdd: (rows: readonly FoundRow[]) => void;
+  readonly onClose: () => void;
+}
+
+const shownProblems = 8;
+
+/** Many rows at once: a set, or what was pasted or is in a file, looked at on the sphere before it is added. */
+export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: AddRowsDialogProps) {
+  const [from, setFrom] = useState<RowsFrom>('set');
+  const [choice, setChoice] = useState(() => firstChoice(kind));
+  const [text, setText] = useState('');
+  const found = useFoundRows(from, choice, text, kind, convention);
+  const scene = useMemo(
+    (): SphereInput => ({ start: [1, 0, 0], plates: [], points: found.points, convention }),
+    [found.points, convention],
+  );
+  const count = roomFor(found.rows.length, present);
+  const unread = found.rows.length - found.points.length;
+  return (
+    <Dialog
+      open
+      wide
+      question="Add many rows at once?"
+      onClose={onClose}
+      actions={
+        <>
+          <Button
+            kind="filled"
+            waitsFor={count === 0 ? 'rows that can be added' : undefined}
+            onClick={() => onAdd(found.rows.slice(0, count))}
+          >
+            Add {count === 1 ? '1 row' : `${count} rows`}
+          </Button>
+          <Button onClick={onClose}>Leave the table as it is</Button>
+        </>
+      }
+    >
+      <SegmentedChoice
+        label="rows from"
+        value={from}
+        onChange={setFrom}
+        segments={[
+          { value: 'set', label: 'a set' },
+          { value: 'text', label: 'text or a file' },
+        ]}
+      />
+      <div className="grid gap-x-8 gap-y-4 md:grid-cols-2">
+        <div className="min-w-0 space-y-3">
+          {from === 'set' ? (
+            <SetFields kind={kind} choice={choice} chosen={found.chosen} onChange={setChoice} />
+          ) : (
+            <CsvFields text={text} onText={setText} />
+          )}
+          <div role="status" className="space-y-1 text-s">
+            {count < found.rows.length && (
+              <p className="m-0 font-strong">
+                A protocol has at most {maxTargets} rows: the first {count} fit.
+              </p>
+            )}
+            {unread > 0 && (
+              <p className="m-0 font-strong text-fault">
+                {unread === 1 ? 'One row can’t' : `${unread} rows can’t`} be read. Added as typed, to be
+                mended in the table.
+              </p>
+            )}
+            {found.problems.slice(0, shownProblems).map(({ line, message }) => (
+              <p key={`${line} ${message}`} className="m-0">
+                Line {line}. {message}
+              </p>
+            ))}
+            {found.problems.length > shownProblems && (
+              <p className="m-0">And {found.problems.length - shownProblems} more lines like these.</p>
+            )}
+          </div>
+        </div>
+        <div className="min-w-0">
+          <p className="m-0 mb-1 text-s text-ink-2">
+            {kind === 'prepare' ? 'where they lie' : 'where each of them takes H'}
+          </p>
+          <Sphere input={scene} height={280} />
+        </div>
+      </div>
+    </Dialog>
+  );
+}
