@@ -1,33 +1,42 @@
-import { sincos } from './elementary';
+import {
+  addedInfidelity,
+  expectedWithoutLeak,
+  type Linearised,
+  linearise,
+  type UncertainParameter,
+} from './budget-derivatives';
+import {
+  type BudgetProblem,
+  checkBudgetProblem,
+  type ParameterKind,
+  type ParameterUnit,
+} from './budget-problem';
+import { tangentSpread, turnSpread } from './budget-spread';
 import { chiSquareQuantile } from './quantile';
-import { type Retarder, retardStokes } from './retarder';
-import { infidelityBetween, type Stokes } from './stokes';
-import { type Radians, radians } from './units';
+import { quadraticFormQuantile } from './quantile-inversion';
+import { stackQuaternion } from './retarder';
 
-/** A plate at an angle with everything that is known only to a σ. All σ in radians of the table (or of retardance). */
-export interface UncertainPlate extends Retarder {
-  readonly sigmaRetardanceRad: Radians;
-  /** Of the mount's zero (the offset's calibration). */
-  readonly sigmaOffsetRad: Radians;
-  /** Step of the dial; what is set lies evenly anywhere within one step, a variance of step²/12. */
-  readonly dialResolutionRad: Radians;
-  /** σ of setting the same reading again. */
-  readonly dialRepeatabilityRad: Radians;
-}
-
-export type ParameterKind = 'retardance' | 'zero' | 'dial' | 'polariser';
+export {
+  type BudgetProblem,
+  type ParameterKind,
+  type ParameterUnit,
+  type SharedDrift,
+  type UncertainPlate,
+} from './budget-problem';
 
 /** What one parameter adds to the expected infidelity. */
 export interface Contribution {
   readonly kind: ParameterKind;
-  /** Index in beam order; `null` for the polariser. */
+  /** Index in beam order; `null` for what isn't one plate's: the polariser, its leak, what is shared. */
   readonly plate: number | null;
-  readonly sigmaRad: Radians;
-  /** ¼ σ² |∂p/∂parameter|². */
+  /** One standard deviation, in `unit`. Of an extinction: the leak itself, which is there always and not now and then. */
+  readonly sigma: number;
+  readonly unit: ParameterUnit;
+  /** For a state ¼ σ² |∂p/∂parameter|², for a unitary ⅙ σ² |∂ω/∂parameter|². */
   readonly infidelity: number;
   /** Of the expected infidelity, 0 to 1. */
   readonly share: number;
-  /** Share of the expected infidelity that would go if σ were halved: three quarters of `share`. */
+  /** Share of the expected infidelity that would go if σ, or the leak, were halved. */
   readonly gainIfHalved: number;
 }
 
@@ -43,169 +52,148 @@ export interface Budget {
 
 /**
  * First-order error budget of one setting, canonical frame. With p the state reached and J = ∂p/∂parameters by exact
- * derivatives, E[1 − F] = 1 − F(setting) + ¼ tr(J Σ Jᵀ) for independent parameters (a pure state's 1 − F is ¼|δp|²).
- * @throws RangeError for a negative σ.
+ * derivatives, E[1 − F] = 1 − F(setting) + ¼ tr(J Σ Jᵀ) for independent parameters (a pure state's 1 − F is ¼|δp|²); for
+ * a unitary the same with ⅙ and the turn that is left (average gate infidelity ⅔ sin²(ε/2) of a turn by ε).
+ *
+ * A polariser with a leak of ε passes (|in⟩⟨in| + ε|in⊥⟩⟨in⊥|)/(1 + ε), incoherently. The two go to opposite points, so with
+ * q the 1 − F of the first the whole has (q + ε(1 − q))/(1 + ε) = q + ε/(1 + ε) · (1 − 2q), exactly.
+ * @throws RangeError for a negative σ, a leak outside [0, 1] and a drift that doesn't fit the plates.
  */
-export function errorBudget(
-  input: Stokes,
-  target: Stokes,
-  plates: readonly UncertainPlate[],
-  sigmaPolariserRad: Radians,
-): Budget {
-  const parameters = uncertainParameters(input, plates, sigmaPolariserRad);
-  const reached = plates.reduce<Stokes>((state, plate) => retardStokes(plate, state), input);
-  const ownInfidelity = infidelityBetween(reached, target);
-  const contributed = parameters.map(
-    ({ sigmaRad, derivative }) => 0.25 * sigmaRad * sigmaRad * dot(derivative, derivative),
+export function errorBudget(problem: BudgetProblem): Budget {
+  checkBudgetProblem(problem);
+  const { goal, plates } = problem;
+  const linearised = linearise(problem);
+  const { parameters, reached } = linearised;
+  const leak = leakOf(problem);
+  const expectation = expectationOf(linearised, leak, null, 1);
+  const contributions = contributionsOf(linearised, leak, expectation).sort(
+    (a, b) => b.infidelity - a.infidelity,
   );
-  const expectedInfidelity = contributed.reduce((sum, part) => sum + part, ownInfidelity);
-  const share = (part: number): number => (expectedInfidelity > 0 ? part / expectedInfidelity : 0);
-  const contributions = parameters
-    .map(({ kind, plate, sigmaRad }, k): Contribution => {
-      const infidelity = contributed[k] ?? 0;
-      return {
-        kind,
-        plate,
-        sigmaRad,
-        infidelity,
-        share: share(infidelity),
-        gainIfHalved: 0.75 * share(infidelity),
-      };
-    })
-    .sort((a, b) => b.infidelity - a.infidelity);
-  const spread = tangentSpread(reached, target, parameters);
+  const [low, high] =
+    goal.kind === 'prepare'
+      ? bothEnds(chiSquareQuantile, tangentSpread(reached, goal.target, parameters))
+      : bothEnds(quadraticFormQuantile, turnSpread(stackQuaternion(plates), goal.target, parameters));
   return {
-    expectedInfidelity,
-    expectedLow: chiSquareQuantile(spread, 0.05),
-    expectedHigh: chiSquareQuantile(spread, 0.95),
+    expectedInfidelity: expectation.leaked,
+    expectedLow: leaked(low, leak),
+    expectedHigh: leaked(high, leak),
     contributions,
   };
 }
 
+/** The expected infidelity of `errorBudget`, to the bit, without its distribution and ranking: for searches. */
+export function expectedInfidelity(problem: BudgetProblem): number {
+  checkBudgetProblem(problem);
+  return leaked(expectedWithoutLeak(problem), leakOf(problem));
+}
+
 /**
- * Share of the expected infidelity that would go if one parameter were known to `newSigmaRad` instead: the number in "a
- * retardance of Q-B known to 0.1° would gain 31 %". Negative if that is worse than today.
+ * The expected infidelity if the σ (or the leak) of one contribution were `factor` times what it is: ½ for "twice as good".
+ * A dial's step and repeatability both change.
+ * @param index into `errorBudget(problem).contributions`, largest first.
+ * @throws RangeError for an index that isn't there and a negative factor, besides what `errorBudget` refuses.
  */
-export function gainFromSigma({ sigmaRad, share }: Contribution, newSigmaRad: Radians): number {
-  if (sigmaRad === 0) return 0;
-  const ratio = newSigmaRad / sigmaRad;
-  return share * (1 - ratio * ratio);
-}
-
-interface UncertainParameter {
-  readonly kind: ParameterKind;
-  readonly plate: number | null;
-  readonly sigmaRad: Radians;
-  /** ∂p/∂parameter of the state behind the last plate. */
-  readonly derivative: Stokes;
-}
-
-function uncertainParameters(
-  input: Stokes,
-  plates: readonly UncertainPlate[],
-  sigmaPolariserRad: Radians,
-): readonly UncertainParameter[] {
-  const parameters: UncertainParameter[] = [];
-  const add = (kind: ParameterKind, plate: number | null, sigmaRad: Radians, change: Stokes): void => {
-    if (!(sigmaRad >= 0)) throw new RangeError(`the σ of a ${kind} must not be negative, got ${sigmaRad}`);
-    // A small change travels through the plates behind it like a state: they are rotations.
-    const behind = plates.slice(plate === null ? 0 : plate + 1);
-    const derivative = behind.reduce<Stokes>((vector, next) => retardStokes(next, vector), change);
-    parameters.push({ kind, plate, sigmaRad, derivative });
-  };
-  let before = input;
-  plates.forEach((plate, index) => {
-    const after = retardStokes(plate, before);
-    const axis = sincos(2 * plate.fastAxisRad);
-    const byRetardance = cross([axis.cos, axis.sin, 0], after);
-    // Turning the plate by dθ turns the whole picture by 2dθ about S3, except for the light that comes in.
-    const carried = retardStokes(plate, aboutS3(before));
-    const here = aboutS3(after);
-    const byAngle: Stokes = [
-      2 * (here[0] - carried[0]),
-      2 * (here[1] - carried[1]),
-      2 * (here[2] - carried[2]),
-    ];
-    add('retardance', index, plate.sigmaRetardanceRad, byRetardance);
-    add('zero', index, plate.sigmaOffsetRad, byAngle);
-    add('dial', index, dialSigma(plate), byAngle);
-    before = after;
-  });
-  const [t1, t2, t3] = aboutS3(input);
-  add('polariser', null, sigmaPolariserRad, [2 * t1, 2 * t2, 2 * t3]);
-  return parameters;
-}
-
-function dialSigma({ dialResolutionRad, dialRepeatabilityRad }: UncertainPlate): Radians {
-  const variance = (dialResolutionRad * dialResolutionRad) / 12 + dialRepeatabilityRad * dialRepeatabilityRad;
-  return radians(Math.sqrt(variance));
-}
-
-function aboutS3([s1, s2]: Stokes): Stokes {
-  return [-s2, s1, 0];
-}
-
-function cross([a1, a2, a3]: Stokes, [b1, b2, b3]: Stokes): Stokes {
-  return [a2 * b3 - a3 * b2, a3 * b1 - a1 * b3, a1 * b2 - a2 * b1];
-}
-
-function dot([a1, a2, a3]: Stokes, [b1, b2, b3]: Stokes): number {
-  return a1 * b1 + a2 * b2 + a3 * b3;
-}
-
-/** A Gaussian cloud in a plane: ¼|δp|² is the square of the distance from (0, 0). */
-export interface PlaneSpread {
-  /** Standard deviations along the cloud's own axes, and where its centre lies in them. */
-  readonly sigma: readonly [number, number];
-  readonly centre: readonly [number, number];
-}
-
-// Changes of a pure state are tangent to the sphere, so JΣJᵀ has rank 2: its two eigenvalues are all there is.
-function tangentSpread(
-  reached: Stokes,
-  target: Stokes,
-  parameters: readonly UncertainParameter[],
-): PlaneSpread {
-  const [east, north] = tangentAxes(reached);
-  let [ee, en, nn] = [0, 0, 0];
-  for (const { sigmaRad, derivative } of parameters) {
-    const alongEast = (dot(derivative, east) * sigmaRad) / 2;
-    const alongNorth = (dot(derivative, north) * sigmaRad) / 2;
-    ee += alongEast * alongEast;
-    en += alongEast * alongNorth;
-    nn += alongNorth * alongNorth;
+export function whatIf(problem: BudgetProblem, index: number, factor: number): number {
+  if (!(factor >= 0 && factor < Infinity)) throw new RangeError(`a σ can't change by a factor of ${factor}`);
+  const chosen = errorBudget(problem).contributions[index];
+  if (chosen === undefined) throw new RangeError(`there is no contribution ${index}`);
+  const linearised = linearise(problem);
+  if (chosen.kind === 'extinction') {
+    return expectationOf(linearised, Math.min(1, factor * chosen.sigma), null, 1).leaked;
   }
-  const middle = (ee + nn) / 2;
-  const radius = Math.sqrt(((ee - nn) / 2) * ((ee - nn) / 2) + en * en);
-  const sigma: [number, number] = [Math.sqrt(middle + radius), Math.sqrt(Math.max(0, middle - radius))];
-  const miss: Stokes = [reached[0] - target[0], reached[1] - target[1], reached[2] - target[2]];
-  // The chord of the miss, in the plane's axes, keeps its length: half of it squared is the setting's own 1 − F.
-  const [missEast, missNorth] = stretched(dot(miss, east), dot(miss, north), Math.sqrt(dot(miss, miss)));
-  const [c, s] = majorAxis(ee, en, nn, radius);
-  return { sigma, centre: [(c * missEast + s * missNorth) / 2, (c * missNorth - s * missEast) / 2] };
+  // A shared drift of a kind could be there twice: its σ tells which one it is, and equal ones are interchangeable.
+  const parameter =
+    linearised.parameters.find(
+      ({ kind, plate, sigma }) => kind === chosen.kind && plate === chosen.plate && sigma === chosen.sigma,
+    ) ?? null;
+  return expectationOf(linearised, leakOf(problem), parameter, factor).leaked;
 }
 
-function stretched(east: number, north: number, length: number): readonly [number, number] {
-  const own = Math.sqrt(east * east + north * north);
-  if (own === 0) return [length, 0];
-  return [(east * length) / own, (north * length) / own];
+/**
+ * Share of the expected infidelity that would go if one parameter were known to `newSigma` instead: the number in "a
+ * retardance of Q-B known to 0.1° would gain 31 %". In the contribution's own unit. Negative if that is worse than today.
+ */
+export function gainFromSigma(contribution: Contribution, newSigma: number): number {
+  const { kind, sigma, share, gainIfHalved } = contribution;
+  if (sigma === 0) return 0;
+  if (kind === 'extinction') return share * (1 - mixed(newSigma) / mixed(sigma));
+  const ratio = newSigma / sigma;
+  return (gainIfHalved / 0.75) * (1 - ratio * ratio);
 }
 
-function majorAxis(ee: number, en: number, nn: number, radius: number): readonly [number, number] {
-  if (radius === 0) return [1, 0];
-  const cos2 = (ee - nn) / (2 * radius);
-  const sin2 = en / radius;
-  const c = Math.sqrt(Math.max(0, (1 + cos2) / 2));
-  const s = Math.sqrt(Math.max(0, (1 - cos2) / 2));
-  return [c, sin2 < 0 ? -s : s];
+interface Expectation {
+  /** Of the light that the polariser is meant to pass. */
+  readonly pure: number;
+  /** With the polariser's leak. */
+  readonly leaked: number;
 }
 
-function tangentAxes(state: Stokes): readonly [Stokes, Stokes] {
-  const [s1, s2, s3] = state;
-  // Any axis well away from the state will do to start from.
-  const helper: Stokes = Math.abs(s3) < 0.7 ? [0, 0, 1] : Math.abs(s1) < 0.7 ? [1, 0, 0] : [0, 1, 0];
-  const [x, y, z] = cross(helper, [s1, s2, s3]);
-  const length = Math.sqrt(x * x + y * y + z * z);
-  const east: Stokes = [x / length, y / length, z / length];
-  return [east, cross(state, east)];
+function expectationOf(
+  { ownInfidelity, parameters, weight }: Linearised,
+  leak: number,
+  changed: UncertainParameter | null,
+  factor: number,
+): Expectation {
+  let pure = ownInfidelity;
+  for (const parameter of parameters) {
+    const added = addedInfidelity(weight, parameter.sigma, parameter.derivative);
+    pure += parameter === changed ? factor * factor * added : added;
+  }
+  return { pure, leaked: leaked(pure, leak) };
+}
+
+function contributionsOf(
+  { parameters, weight }: Linearised,
+  leak: number,
+  { pure, leaked: whole }: Expectation,
+): Contribution[] {
+  const share = (part: number): number => (whole > 0 ? part / whole : 0);
+  // Less of a σ also leaves the leak more to spoil: (1 − ε)/(1 + ε) of what it gains stays gained.
+  const kept = 1 - 2 * mixed(leak);
+  const contributions = parameters.map((parameter): Contribution => {
+    const { kind, plate, sigma, unit, derivative } = parameter;
+    const infidelity = addedInfidelity(weight, sigma, derivative);
+    return {
+      kind,
+      plate,
+      sigma,
+      unit,
+      infidelity,
+      share: share(infidelity),
+      gainIfHalved: 0.75 * share(infidelity) * kept,
+    };
+  });
+  if (leak > 0) {
+    const infidelity = mixed(leak) * (1 - 2 * pure);
+    contributions.push({
+      kind: 'extinction',
+      plate: null,
+      sigma: leak,
+      unit: 'ratio',
+      infidelity,
+      share: share(infidelity),
+      gainIfHalved: share((mixed(leak) - mixed(leak / 2)) * (1 - 2 * pure)),
+    });
+  }
+  return contributions;
+}
+
+function leakOf({ goal, extinction }: BudgetProblem): number {
+  return goal.kind === 'prepare' ? (extinction ?? 0) : 0;
+}
+
+/** Part of the light behind the polariser that is in the wrong state. */
+function mixed(leak: number): number {
+  return leak / (1 + leak);
+}
+
+function leaked(infidelity: number, leak: number): number {
+  return leak === 0 ? infidelity : infidelity + mixed(leak) * (1 - 2 * infidelity);
+}
+
+function bothEnds<Spread>(
+  quantile: (spread: Spread, probability: number) => number,
+  spread: Spread,
+): readonly [number, number] {
+  return [quantile(spread, 0.05), quantile(spread, 0.95)];
 }

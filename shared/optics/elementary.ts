@@ -1,5 +1,5 @@
 /*
- * Sine, cosine, exponential, arctangent and arccosine with the same bits on every JavaScript engine.
+ * Sine, cosine, exponential, logarithm, arctangent and arccosine with the same bits on every JavaScript engine.
  *
  * Why not Math.sin: ECMAScript leaves its last bits to the engine, and a version's hash must come out the same in the
  * browser and on the server. Everything here is made of + − × ÷ and Math.sqrt, Math.fround, Math.abs, Math.round, which
@@ -247,6 +247,46 @@ export function exp(value: number): number {
             t *
               (6.61375632143793436117e-5 + t * (-1.6533902205465251539e-6 + t * 4.13813679705723846039e-8))));
   return scaleByPowerOfTwo(1 - (low - (x * c) / (2 - c) - high), k);
+}
+
+/** Natural logarithm; −Infinity at 0, NaN below. */
+export function log(value: number): number {
+  if (!(value > 0) || value === Infinity) return value === 0 ? -Infinity : value > 0 ? Infinity : NaN;
+  // value = m · 2^power with m in [√½, √2)
+  let m = value;
+  let power = 0;
+  for (const step of [512, 256, 128, 64, 32, 16, 8, 4, 2, 1]) {
+    const size = powerOfTwo(step);
+    if (m >= size) {
+      m /= size;
+      power += step;
+    } else if (m * size < 2) {
+      m *= size;
+      power -= step;
+    }
+  }
+  // Subnormal numbers reach below the sum of those steps.
+  while (m < 1) {
+    m *= 2;
+    power -= 1;
+  }
+  if (m > Math.SQRT2) {
+    m /= 2;
+    power += 1;
+  }
+  const f = m - 1;
+  const s = f / (2 + f);
+  const z = s * s;
+  const w = z * z;
+  const t1 = w * (3.999999999940941908e-1 + w * (2.222219843214978396e-1 + w * 1.531383769920937332e-1));
+  const t2 =
+    z *
+    (6.66666666666673513e-1 +
+      w * (2.857142874366239149e-1 + w * (1.818357216161805012e-1 + w * 1.479819860511658591e-1)));
+  const half = 0.5 * f * f;
+  const high = power * 6.9314718036912381649e-1;
+  const low = power * 1.90821492927058770002e-10;
+  return high - (half - (s * (half + (t1 + t2)) + low) - f);
 }
 
 // Two exact factors, so that neither overflows nor loses bits before the product does.

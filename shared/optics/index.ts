@@ -1,10 +1,15 @@
 export {
   type Budget,
+  type BudgetProblem,
   type Contribution,
   errorBudget,
+  expectedInfidelity,
   gainFromSigma,
   type ParameterKind,
+  type ParameterUnit,
+  type SharedDrift,
   type UncertainPlate,
+  whatIf,
 } from './budget';
 export * from './convention';
 export { CONVENTION_SETS, type ConventionSet, type ConventionSource, setsOf } from './convention-sets';
@@ -55,13 +60,16 @@ export * from './units';
 export { MOST_PLATES, prepare, type PrepareProblem } from './solver/prepare';
 export type { Family, Setting, Solved } from './solver/setting';
 export {
-  type DialledState,
+  type Dialled,
   evaluateDials,
-  PlateCountError,
+  type Objective,
+  platesAtDials,
+  settingBudget,
   type SettingSolution,
   SOLVER_VERSION,
   type SolvedTarget,
   solveTarget,
+  statesBehind,
   type TargetPlate,
   type TargetProblem,
 } from './solve-target';

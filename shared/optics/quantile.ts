@@ -1,5 +1,5 @@
 import { exp, sincos } from './elementary';
-import type { PlaneSpread } from './budget';
+import type { PlaneSpread } from './budget-spread';
 
 const DIRECTIONS = 128;
 

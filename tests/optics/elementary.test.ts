@@ -1,7 +1,17 @@
 import { readdirSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { expect, test } from 'vitest';
-import { acos, asin, atan2, cos, exp, LARGEST_ANGLE_RAD, sin, sincos } from '../../shared/optics/elementary';
+import {
+  acos,
+  asin,
+  atan2,
+  cos,
+  exp,
+  LARGEST_ANGLE_RAD,
+  log,
+  sin,
+  sincos,
+} from '../../shared/optics/elementary';
 import { randomStream } from './independent';
 
 /** Difference in units of the last place of the reference, with a floor where the reference is far below 1. */
@@ -60,6 +70,33 @@ test('atan2, acos, asin and exp stay within two units in the last place of the e
       return ulps(exp(x), Math.exp(x));
     }),
   ).toBeLessThanOrEqual(1.01);
+});
+
+test('the logarithm stays within one unit in the last place of the engine’s, from the smallest number to the largest', () => {
+  expect(
+    worst(100_000, (random) => {
+      const x = 2 ** (2140 * random() - 1074) * (1 + random());
+      return x < Infinity && x > 0 ? ulps(log(x), Math.log(x)) : 0;
+    }),
+  ).toBeLessThanOrEqual(1.01);
+  expect(
+    worst(100_000, (random) => {
+      const x = 0.5 + 1.5 * random();
+      return ulps(log(x), Math.log(x));
+    }),
+  ).toBeLessThanOrEqual(1.01);
+  for (const x of [
+    5e-324,
+    2.2250738585072014e-308,
+    1 - 2 ** -53,
+    1 + 2 ** -52,
+    Math.SQRT2,
+    Math.SQRT1_2,
+    1e300,
+  ])
+    expect(ulps(log(x), Math.log(x))).toBeLessThanOrEqual(1.01);
+  expect([log(1), log(0), log(-0), log(Infinity)]).toEqual([0, -Infinity, -Infinity, Infinity]);
+  expect([log(-1), log(NaN), log(-Infinity)]).toEqual([NaN, NaN, NaN]);
 });
 
 test('axes, poles and clamped values have their exact answers', () => {
