@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { DEFAULT_CONVENTION, parseState } from '../../shared/optics';
+import { DEFAULT_CONVENTION, parseState, parseStokes, parseUnitary } from '../../shared/optics';
 import { tokenise } from '../../shared/optics/expression/tokens';
 import { ExpressionError } from '../../shared/optics/expression/span';
 import { randomStream } from './independent';
@@ -16,6 +16,27 @@ const PIECES = [
   'stokes(',
   'ellipse(',
   'linear(',
+  'rotate(',
+  'zyz(',
+  'qwp(',
+  'hwp(',
+  'plate(',
+  'dagger',
+  'dagger(',
+  '†',
+  'from ',
+  ' to ',
+  'matrix [[',
+  ']]',
+  'X',
+  'Y',
+  'Z',
+  'S',
+  'T',
+  'hadamard',
+  'identity',
+  'x',
+  'z',
   'deg',
   'rad',
   'pi',
@@ -33,6 +54,20 @@ const PIECES = [
   '9'.repeat(30),
   '((((',
   '))))',
+];
+
+const UNITARY_SEEDS = [
+  'hadamard S† T^-2',
+  'rotate([1, 0, -1], 22.5deg)',
+  'rotate(|+i>, pi/3)',
+  'matrix [[1, i], [i, 1]]/sqrt(2)',
+  'exp(-i 45deg/2 (X + 0.5 Z))',
+  'zyz(10deg, 20deg, 30deg)',
+  'from H to (H + i V)/sqrt(2)',
+  'qwp(45deg) hwp(10deg) plate(100deg, 3deg)',
+  'dagger(qwp(45deg)*X)',
+  '(X + i identity)/√2',
+  'hadamard H',
 ];
 
 const SEEDS = [
@@ -59,8 +94,8 @@ function fromPieces(random: () => number): string {
   return Array.from({ length }, () => pick(PIECES, random)).join('');
 }
 
-function mutated(random: () => number): string {
-  let text = pick(SEEDS, random);
+function mutated(random: () => number, seeds: readonly string[]): string {
+  let text = pick(seeds, random);
   for (let edits = 1 + Math.floor(random() * 4); edits > 0; edits -= 1) {
     const at = Math.floor(random() * (text.length + 1));
     const until = Math.min(text.length, at + Math.floor(random() * 4));
@@ -82,7 +117,7 @@ test(`${CASES} random strings and mutated expressions: a value or an error with 
   const random = randomStream(20_260_101);
   let [values, errors] = [0, 0];
   for (let k = 0; k < CASES; k += 1) {
-    const source = k % 5 === 0 ? fromPieces(random) : k % 5 === 1 ? anyUnits(random) : mutated(random);
+    const source = k % 5 === 0 ? fromPieces(random) : k % 5 === 1 ? anyUnits(random) : mutated(random, SEEDS);
     const reading = parseState(source, DEFAULT_CONVENTION);
     if (reading.ok) {
       values += 1;
@@ -105,6 +140,37 @@ test(`${CASES} random strings and mutated expressions: a value or an error with 
   expect(errors).toBeGreaterThan(CASES / 4);
 }, 60_000);
 
+test(`${CASES} random strings and mutated unitaries: a value or an error with a column, never a throw`, () => {
+  const random = randomStream(20_260_102);
+  let [values, errors] = [0, 0];
+  for (let k = 0; k < CASES; k += 1) {
+    const source = k % 5 === 0 ? fromPieces(random) : mutated(random, k % 5 === 1 ? SEEDS : UNITARY_SEEDS);
+    const reading = parseUnitary(source, DEFAULT_CONVENTION);
+    parseStokes(source, DEFAULT_CONVENTION);
+    if (reading.ok) {
+      values += 1;
+      const { w, x, y, z } = reading.quaternion;
+      const length = w * w + x * x + y * y + z * z;
+      if (!(Math.abs(length - 1) < 1e-12) || !(reading.scale > 0 && reading.scale < Infinity)) {
+        expect.fail(`${JSON.stringify(source)} gave a unitary of length ${length}`);
+      }
+    } else {
+      errors += 1;
+      const { column, length, message, suggestion, nearestUnitary, distanceFromUnitary = 1 } = reading.error;
+      const within = Number.isInteger(column) && column >= 1 && column <= source.length + 1 && length >= 1;
+      if (!within || message.length < 10 || /undefined|^Column/.test(message) || suggestion === '') {
+        expect.fail(`${JSON.stringify(source)} gave column ${column}: ${message}`);
+      }
+      if (!(distanceFromUnitary > 0)) expect.fail(`${JSON.stringify(source)}: ${distanceFromUnitary} away`);
+      if (nearestUnitary !== undefined && !parseUnitary(nearestUnitary, DEFAULT_CONVENTION).ok) {
+        expect.fail(`${JSON.stringify(source)} is offered ${nearestUnitary}, which does not read`);
+      }
+    }
+  }
+  expect(values).toBeGreaterThan(CASES / 20);
+  expect(errors).toBeGreaterThan(CASES / 4);
+}, 60_000);
+
 /** Shapes that drive a careless reader to quadratic or exponential time, at a wanted length. */
 const SHAPES: readonly (readonly [string, (length: number) => string])[] = [
   ['digits', (n) => '1'.repeat(n)],
@@ -120,6 +186,14 @@ const SHAPES: readonly (readonly [string, (length: number) => string])[] = [
   ['signs', (n) => '-'.repeat(n)],
   ['powers', (n) => '2^'.repeat(n / 2)],
   ['spaces', (n) => ' '.repeat(n)],
+  ['daggers', (n) => `X${'†'.repeat(n - 1)}`],
+  ['gates', (n) => 'X'.repeat(n)],
+  ['plates', (n) => 'qwp(1deg)'.repeat(n / 9)],
+  ['turns from', (n) => 'from H to '.repeat(n / 10)],
+  ['matrices', (n) => 'matrix[['.repeat(n / 8)],
+  ['axes', (n) => 'rotate('.repeat(n / 7)],
+  ['matrices in sums', (n) => 'matrix[[1,0],[0,1]]+'.repeat(n / 20)],
+  ['almost words', (n) => 'hadamar'.repeat(n / 7)],
 ];
 
 /** The least time of several: what else runs on the machine only ever adds. */
@@ -147,6 +221,7 @@ test.each(SHAPES)('%s: twice the text takes at most two and a half times as long
   const allowanceMs = 3;
   for (const [work, sizes] of [
     [(text: string) => void parseState(text, DEFAULT_CONVENTION), [1024, 2048, 4096]],
+    [(text: string) => void parseUnitary(text, DEFAULT_CONVENTION), [1024, 2048, 4096]],
     [tokeniseQuietly, [8_000, 16_000, 32_000]],
   ] as const) {
     const texts = sizes.map(shape);
@@ -169,5 +244,7 @@ test.each(SHAPES)('%s: twice the text takes at most two and a half times as long
 test.each(SHAPES)('%s: ten thousand characters are answered within 50 ms', (_, shape) => {
   const text = shape(10_000);
   expect(leastMs(() => void parseState(text, DEFAULT_CONVENTION), 5)).toBeLessThan(50);
+  expect(leastMs(() => void parseUnitary(text, DEFAULT_CONVENTION), 5)).toBeLessThan(50);
+  expect(leastMs(() => void parseUnitary(text.slice(0, 4096), DEFAULT_CONVENTION), 5)).toBeLessThan(50);
   expect(leastMs(() => tokeniseQuietly(text), 5)).toBeLessThan(50);
 });

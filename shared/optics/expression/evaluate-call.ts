@@ -1,4 +1,5 @@
 import { cos, LARGEST_ANGLE_RAD, sin } from '../elementary';
+import { jonesNorm } from '../jones';
 import { exponential, squareRoot } from './complex';
 import { blochOf, exponentialOf, plate, rotateAbout, zyz } from './gates';
 import { ExpressionError } from './span';
@@ -101,7 +102,10 @@ export function exponentiate({ node, value: exponent }: Argument, scope: Scope):
 
 function axisOf({ node, value }: Argument): Bloch {
   if (value.kind === 'axis') return value.bloch;
-  if (value.kind === 'state') return blochOf(value.written);
+  if (value.kind === 'state') {
+    if (jonesNorm(value.written) > 0) return blochOf(value.written);
+    throw new ExpressionError(node.span, 'Nothing is left of this state, so it is no axis.');
+  }
   throw new ExpressionError(
     node.span,
     `${capital(kindOf(value))} is no axis. Write x, y, z, a Bloch vector such as [1, 0, 1], or a state such as D.`,

@@ -9,8 +9,8 @@ import type { GateName } from './tree';
 
 const NAMED: readonly GateName[] = ['identity', 'X', 'Y', 'Z', 'hadamard', 'S', 'T', 'sqrtX', 'sqrtY'];
 
-// sin²(ε/2) below which a unitary is called by its name: a turn of 1e-12 rad.
-const SAME_UNITARY = 2.5e-25;
+// sin²(ε/2) below which a unitary is called by its name: a turn of 4e-13 rad.
+const SAME_UNITARY = 4e-26;
 
 // A part of an axis this small beside the largest is rounding: 1e-13 rad.
 const NO_PART = 1e-13;

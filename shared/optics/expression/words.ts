@@ -88,6 +88,10 @@ const ELSEWHERE = new Map<string, string>([
 
 /** Letters that would split into words and mean something else than was meant. null when they are none of these. */
 export function misleadingWord(text: string, span: Span): ExpressionError | null {
+  if (text === 'sqrtx' || text === 'sqrty' || text === 'sqrtz') {
+    const root = `sqrt${text.charAt(4).toUpperCase()}`;
+    return new ExpressionError(span, `"${text}" is no name here. Write ${root}.`, root);
+  }
   const axis = text.length === 2 && text.startsWith('R') ? text.charAt(1).toLowerCase() : '';
   if (axis !== 'x' && axis !== 'y' && axis !== 'z') return null;
   return new ExpressionError(

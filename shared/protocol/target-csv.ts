@@ -1,0 +1,234 @@
+import Papa from 'papaparse';
+import type { Convention } from '../optics/convention';
+import { MAX_LENGTH, parseState, parseUnitary } from '../optics/expression';
+import { maxTargets } from '../schemas/protocols';
+import { type Delimiter, findDelimiter, joinedCells } from './csv-shape';
+
+/** The longest text that is read, in bytes as UTF-8. */
+export const MAX_CSV_BYTES = 1_000_000;
+
+const LONGEST_LABEL = 24;
+
+export interface CsvRow {
+  /** The line of the text on which the row begins, from 1. */
+  readonly line: number;
+  readonly label: string;
+  readonly expression: string;
+  /** Whether the expression reads as what the protocol holds; when not, a problem says why. */
+  readonly readable: boolean;
+}
+
+export interface CsvProblem {
+  readonly line: number;
+  /** One sentence or two, with the column inside the expression where that is what is wrong. */
+  readonly message: string;
+}
+
+export interface CsvReading {
+  readonly rows: readonly CsvRow[];
+  readonly problems: readonly CsvProblem[];
+}
+
+export interface CsvTarget {
+  readonly kind: 'state' | 'unitary';
+  readonly convention: Convention;
+}
+
+/**
+ * Reads pasted or uploaded targets: a label and an expression a line, or expressions alone. Comma, semicolon or tab between
+ * them, quotes as in RFC 4180, lines that begin with # left out, a header with the word "expression" optional. Commas inside an
+ * expression's brackets need no quotes. Cells are text and nothing else, whatever a spreadsheet would make of them.
+ * Never throws. At most `maxTargets` rows and `MAX_CSV_BYTES`, with a problem that says what was left out.
+ */
+export function readTargetCsv(text: string, target: CsvTarget): CsvReading {
+  if (isLongerThan(text, MAX_CSV_BYTES)) {
+    return { rows: [], problems: [{ line: 1, message: 'This text is longer than 1 MB. Read it in parts.' }] };
+  }
+  const reader = new Reader(target);
+  for (const record of records(text.startsWith('\ufeff') ? text.slice(1) : text)) {
+    if (!reader.take(record)) break;
+  }
+  return reader.reading();
+}
+
+interface CsvRecord {
+  readonly line: number;
+  readonly cells: readonly string[];
+  readonly delimiter: Delimiter;
+  readonly fault: string | null;
+}
+
+function records(text: string): readonly CsvRecord[] {
+  const delimiter = findDelimiter(text);
+  const newline = text.includes('\r\n') ? '\r\n' : text.includes('\n') ? '\n' : '\r';
+  const found: CsvRecord[] = [];
+  let at = 0;
+  let line = 1;
+  Papa.parse<string[]>(text, {
+    delimiter,
+    newline,
+    comments: '#',
+    step: ({ data, errors, meta }, parser) => {
+      const end = meta.cursor;
+      const ended = text.startsWith(newline, end - newline.length) && end > at ? 1 : 0;
+      const before = line;
+      line += occurrences(text, newline, at, end);
+      at = end;
+      const inside = data.reduce((sum, cell) => sum + occurrences(cell, newline, 0, cell.length), 0);
+      const fault = errors.some(({ type }) => type === 'Quotes')
+        ? 'A quote is not closed, or text stands behind one. Double the quotes inside a quoted cell.'
+        : null;
+      found.push({ line: Math.max(before, line - ended - inside), cells: data, delimiter, fault });
+      if (found.length > 50 * maxTargets) parser.abort();
+    },
+  });
+  return found;
+}
+
+function occurrences(text: string, part: string, from: number, to: number): number {
+  let count = 0;
+  for (let at = text.indexOf(part, from); at !== -1 && at < to; at = text.indexOf(part, at + part.length))
+    count += 1;
+  return count;
+}
+
+/** Where the two columns are. */
+interface Layout {
+  readonly label: number | null;
+  readonly expression: number;
+  /** The header that `writeTargetCsv` writes: its cells are taken as they are, to the last space. */
+  readonly isOurs: boolean;
+}
+
+class Reader {
+  private readonly rows: CsvRow[] = [];
+  private readonly problems: CsvProblem[] = [];
+  private layout: Layout | null = null;
+  private isFirst = true;
+
+  constructor(private readonly target: CsvTarget) {}
+
+  reading(): CsvReading {
+    return { rows: this.rows, problems: this.problems };
+  }
+
+  /** @returns whether there is room for more. */
+  take(record: CsvRecord): boolean {
+    const { line, cells, fault } = record;
+    if (cells.every((cell) => cell.trim() === '')) return true;
+    if (this.isFirst) {
+      this.isFirst = false;
+      this.layout = headerOf(cells);
+      if (this.layout !== null) return true;
+    }
+    if (this.rows.length === maxTargets) {
+      this.problem(
+        line,
+        `A protocol has at most ${maxTargets} targets; this row and those below are left out.`,
+      );
+      return false;
+    }
+    if (fault !== null) this.problem(line, fault);
+    else this.row(record);
+    return true;
+  }
+
+  private row({ line, cells, delimiter }: CsvRecord): void {
+    const found = this.layout === null ? bareRow(cells, delimiter) : headedRow(cells, this.layout, delimiter);
+    if (typeof found === 'string') {
+      this.problem(line, found);
+      return;
+    }
+    const exact = this.layout?.isOurs === true;
+    const label = withoutGuard(exact ? found.label : found.label.trim());
+    const expression = withoutGuard(exact ? found.expression : found.expression.trim());
+    if (expression.length > MAX_LENGTH) {
+      this.problem(
+        line,
+        `This expression has ${expression.length} characters; the most is ${MAX_LENGTH}. The row is left out.`,
+      );
+      return;
+    }
+    if (label.length > LONGEST_LABEL) {
+      this.problem(line, `A label has at most ${LONGEST_LABEL} characters. This one was cut.`);
+    }
+    const read = this.target.kind === 'state' ? parseState : parseUnitary;
+    const reading = read(expression, this.target.convention);
+    if (!reading.ok) {
+      this.problem(line, `Column ${reading.error.column} of the expression: ${reading.error.message}`);
+    }
+    this.rows.push({ line, label: label.slice(0, LONGEST_LABEL), expression, readable: reading.ok });
+  }
+
+  private problem(line: number, message: string): void {
+    this.problems.push({ line, message });
+  }
+}
+
+function headerOf(cells: readonly string[]): Layout | null {
+  const names = cells.map((cell) => cell.trim().toLowerCase());
+  const expression = names.indexOf('expression');
+  if (expression === -1) return null;
+  const label = names.indexOf('label');
+  const isOurs = cells.length === 2 && cells[0] === 'label' && cells[1] === 'expression';
+  return { label: label === -1 ? null : label, expression, isOurs };
+}
+
+interface Cells {
+  readonly label: string;
+  readonly expression: string;
+}
+
+function bareRow(cells: readonly string[], delimiter: Delimiter): Cells {
+  const [first = '', ...rest] = cells;
+  if (rest.length === 0) return { label: '', expression: first };
+  const joined = joinedCells(cells, delimiter);
+  return joined.length === 1
+    ? { label: '', expression: joined[0] ?? '' }
+    : { label: joined[0] ?? '', expression: joined.slice(1).join(delimiter) };
+}
+
+function headedRow(
+  cells: readonly string[],
+  { label, expression, isOurs }: Layout,
+  delimiter: Delimiter,
+): Cells | string {
+  const whole = isOurs && cells.length === 2 ? cells : joinedCells(cells, delimiter);
+  const text = whole[expression];
+  if (text === undefined || text.trim() === '') return 'This row has no expression.';
+  return { label: label === null ? '' : (whole[label] ?? ''), expression: text };
+}
+
+/*
+ * A spreadsheet takes a cell that begins with = + − @ for a formula, and a text for one that begins with an apostrophe. A
+ * written file holds the apostrophe, a read one loses it, and cells that have one of their own get a second: exact both ways.
+ */
+const FORMULA_LIKE = /^'*[=+\-@\t\r]/u;
+
+function withGuard(cell: string): string {
+  return FORMULA_LIKE.test(cell) ? `'${cell}` : cell;
+}
+
+function withoutGuard(cell: string): string {
+  return cell.startsWith("'") && FORMULA_LIKE.test(cell) ? cell.slice(1) : cell;
+}
+
+/** Targets as CSV text by RFC 4180 with a header, which `readTargetCsv` reads back exactly. */
+export function writeTargetCsv(rows: readonly Pick<CsvRow, 'label' | 'expression'>[]): string {
+  const cells = rows.map(({ label, expression }) => [withGuard(label), withGuard(expression)]);
+  return `${['label,expression', ...cells.map(quoted)].join('\r\n')}\r\n`;
+}
+
+function quoted(cells: readonly string[]): string {
+  return cells.map((cell) => `"${cell.replaceAll('"', '""')}"`).join(',');
+}
+
+function isLongerThan(text: string, bytes: number): boolean {
+  if (text.length > bytes) return true;
+  let size = 0;
+  for (const character of text) {
+    const code = character.codePointAt(0) ?? 0;
+    size += code < 0x80 ? 1 : code < 0x800 ? 2 : code < 0x1_0000 ? 3 : 4;
+  }
+  return size > bytes;
+}
