@@ -1,15 +1,8 @@
 import type { BudgetProblem } from './budget-problem';
+import { InfidelityBins, type InfidelityHistogram } from './infidelity-bins';
 import { InfidelityDraws } from './monte-carlo-draws';
-import { selectRank } from './order-statistic';
 
-/** Ten bins for each decade of 1 − F, from 1e-12 to 1: the same for every problem, so that two runs can be laid over each other. */
-export interface InfidelityHistogram {
-  /** 121 edges, rising; bin k holds edges[k] ≤ 1 − F < edges[k + 1], the last one its upper edge too. */
-  readonly edges: readonly number[];
-  readonly counts: readonly number[];
-  /** Draws below the first edge. */
-  readonly below: number;
-}
+export type { InfidelityHistogram } from './infidelity-bins';
 
 export interface MonteCarloSummary {
   readonly draws: number;
@@ -61,7 +54,7 @@ export function startMonteCarlo(problem: BudgetProblem, seed: number): MonteCarl
       drawn += draws;
     },
     summary() {
-      return drawn === 0 ? null : summarise(values.slice(0, drawn), seed);
+      return drawn === 0 ? null : summarise(values.subarray(0, drawn), seed);
     },
   };
 }
@@ -78,62 +71,30 @@ export function monteCarlo(
   return summary;
 }
 
-// Rearranges `values`.
 function summarise(values: Float64Array, seed: number): MonteCarloSummary {
   const draws = values.length;
   let [sum, largest] = [0, 0];
-  for (const value of values) {
+  for (let k = 0; k < draws; k += 1) {
+    const value = values[k] ?? 0;
     sum += value;
     largest = Math.max(largest, value);
   }
   const mean = sum / draws;
   let squares = 0;
-  for (const value of values) squares += (value - mean) * (value - mean);
-  const histogram = histogramOf(values);
-  const middle = rankOf(50, draws);
-  const median = selectRank(values, middle);
+  for (let k = 0; k < draws; k += 1) {
+    const off = (values[k] ?? 0) - mean;
+    squares += off * off;
+  }
+  const bins = new InfidelityBins(values);
   return {
     draws,
     seed,
     mean,
     standardError: draws > 1 ? Math.sqrt(squares / (draws - 1) / draws) : 0,
-    median,
-    low: selectRank(values, rankOf(5, draws), 0, middle),
-    high: selectRank(values, rankOf(95, draws), middle, draws - 1),
+    median: bins.percentile(50),
+    low: bins.percentile(5),
+    high: bins.percentile(95),
     largest,
-    histogram,
+    histogram: bins.histogram(),
   };
-}
-
-function rankOf(percent: number, draws: number): number {
-  return Math.ceil((percent * draws) / 100) - 1;
-}
-
-/** 10^(k/10), and the decades as the nearest numbers to them: products have the same bits everywhere. */
-const TENTHS_OF_A_DECADE = [
-  1, 1.2589254117941673, 1.5848931924611136, 1.9952623149688795, 2.51188643150958, 3.1622776601683795,
-  3.9810717055349722, 5.011872336272722, 6.309573444801933, 7.943282347242816,
-] as const;
-const DECADES = [1e-12, 1e-11, 1e-10, 1e-9, 1e-8, 1e-7, 1e-6, 1e-5, 1e-4, 1e-3, 1e-2, 1e-1] as const;
-
-function histogramOf(values: Float64Array): InfidelityHistogram {
-  const edges = Float64Array.from([
-    ...DECADES.flatMap((decade) => TENTHS_OF_A_DECADE.map((tenth) => tenth * decade)),
-    1,
-  ]);
-  const bins = edges.length - 1;
-  // One place more in front for what lies below the first edge.
-  const counts = new Uint32Array(bins + 1);
-  for (const value of values) {
-    let low = -1;
-    let high = bins;
-    // edges[low] ≤ value < edges[high], with −∞ in front and the last edge taken in
-    while (high - low > 1) {
-      const middle = (low + high) >> 1;
-      if (value < (edges[middle] ?? 1)) high = middle;
-      else low = middle;
-    }
-    counts[low + 1] = (counts[low + 1] ?? 0) + 1;
-  }
-  return { edges: Array.from(edges), counts: Array.from(counts.subarray(1)), below: counts[0] ?? 0 };
 }

@@ -62,7 +62,26 @@ export class UniformStream {
 
   /** Fills the first `count` places with numbers in (−½, ½). */
   fillCentred(out: Float64Array, count: number): void {
-    for (let k = 0; k < count; k += 1) out[k] = this.next() - 0.5;
+    const { state } = this;
+    let a = state[0] ?? 0;
+    let b = state[1] ?? 0;
+    let c = state[2] ?? 0;
+    let d = state[3] ?? 0;
+    for (let k = 0; k < count; k += 1) {
+      // The upper half of the words comes out negative: in all the range from −½ to ½, as even.
+      out[k] = (scrambled(b) + 0.5) / TWO_32;
+      const shifted = b << 9;
+      c ^= a;
+      d ^= b;
+      b ^= c;
+      a ^= d;
+      c ^= shifted;
+      d = (d << 11) | (d >>> 21);
+    }
+    state[0] = a;
+    state[1] = b;
+    state[2] = c;
+    state[3] = d;
   }
 
   /**
