@@ -87,10 +87,18 @@ function threePlates(first: Half, second: Half, third: Half, target: Quaternion)
 
 // A triangle this far from closing is left to the search for the nearest setting; Newton closes what is only rounding.
 const CLOSES = 1e-11;
-// Two roots this close are one, in units of the squared sides: rounding alone would part them by 3e-8.
-const GRAZES = 1e-15;
+// Squared sides this small are rounding's, and mirror images that near to each other are then the one of a double root.
+const GRAZES = 4e-15;
+const SAME_POINT = 1e-5;
 // Below this a family may run through the solution.
 const VANISHES = 1e-7;
+
+function areOne(one: Candidate, other: Candidate): boolean {
+  return one.points.every(({ cos, sin }, k) => {
+    const point = other.points[k] ?? ANYWHERE;
+    return Math.abs(sin * point.cos - cos * point.sin) < SAME_POINT && cos * point.cos + sin * point.sin > 0;
+  });
+}
 
 /**
  * V = U J₁(a)⁻¹ must be a product of the other two, and that is so exactly when |C₃C₂ − α_V| = S₃S₂. With
@@ -116,11 +124,12 @@ function fromFirst(first: Half, second: Half, third: Half, target: Quaternion, b
     const twice = 2 * k * side;
     const grazes = upper < GRAZES || lower < GRAZES;
     // cos φ = upper/twice − 1 = 1 − lower/twice; each is exact where it is small.
-    const sin = grazes || !(twice > 0) ? 0 : Math.min(1, Math.sqrt(upper * lower) / twice);
+    const sin = twice > 0 ? Math.min(1, Math.sqrt(Math.max(0, upper * lower)) / twice) : 0;
     const size = Math.sqrt(1 - sin * sin);
     const cos = upper < lower ? -size : size;
     const base = direction(z * kRe + x * kIm, x * kRe - z * kIm);
-    for (const mirror of grazes ? [0] : [1, -1]) {
+    let found: Candidate | null = null;
+    for (const mirror of [1, -1]) {
       const a = {
         cos: base.cos * cos - mirror * base.sin * sin,
         sin: base.sin * cos + mirror * base.cos * sin,
@@ -133,6 +142,8 @@ function fromFirst(first: Half, second: Half, third: Half, target: Quaternion, b
       const planeIm = first.cos * x - first.sin * (y * a.cos + w * a.sin);
       const [b, c] = pairPoints(second, third, apart, planeRe, planeIm);
       const candidate = polish(beam, backwards ? [c, b, a] : [a, b, c], wanted);
+      if (found !== null && grazes && areOne(found, candidate)) continue;
+      found = candidate;
       const family = twice < VANISHES || planeRe * planeRe + planeIm * planeIm < VANISHES * VANISHES;
       (family ? suspects : candidates).push(candidate);
     }

@@ -3,7 +3,16 @@ import { type Radians, radians, wrap } from '../units';
 import { exactSettings } from './apply-exact';
 import { nearestSettings } from './apply-nearest';
 import { outerSettings } from './apply-outer';
-import { type Candidate, EXACT_MISS, type Half, pointOf, settingOf, targetWithin } from './apply-stack';
+import { ridgeFamily } from './apply-ridge';
+import {
+  type Candidate,
+  candidateAt,
+  EXACT_MISS,
+  type Half,
+  pointOf,
+  settingOf,
+  targetWithin,
+} from './apply-stack';
 import { distinctSettings, settingsApart } from './distinct-settings';
 import type { Family, Setting } from './setting';
 import { roundAngles, spreadAngles } from './spread-angles';
@@ -48,12 +57,8 @@ export function windowFamily(
   return { freePlates, membersAt };
 }
 
-// Climbs of a window of four or five plates: its best optimum is wanted, not each.
-const WINDOW_STARTS = 24;
-
 function windowSettings(halves: readonly Half[], rest: Quaternion, limit: number): readonly Candidate[] {
-  if (limit > EXACT_MISS)
-    return nearestSettings(halves, rest, WINDOW_STARTS).filter(({ miss }) => miss < limit);
+  if (limit > EXACT_MISS) return nearestSettings(halves, rest).filter(({ miss }) => miss < limit);
   const { candidates, suspects } = exactSettings(halves, rest);
   return [...candidates, ...suspects];
 }
@@ -66,24 +71,33 @@ export function asNearAs(best: number): number {
 // Positions of the free plates at all of which a family must have members: none is a round angle.
 const TRIED = 5;
 
+function isEverywhere({ freePlates, membersAt }: Family): boolean {
+  return spreadAngles(freePlates.length, TRIED).every((angles) => membersAt(angles).length > 0);
+}
+
 /**
  * The families that run through a stack's settings whatever the free plates' angles, with as few following plates as will do:
- * more than one where different plates may be the free ones. [] where the settings are isolated.
+ * more than one where different plates may be the free ones. Neighbours follow, up to three; of four plates or more any may,
+ * along the ridge on which `best` lies. [] where the settings are isolated.
  */
-export function familiesOf(halves: readonly Half[], target: Quaternion, limit: number): readonly Family[] {
-  for (let count = 0; count < halves.length; count += 1) {
+export function familiesOf(
+  halves: readonly Half[],
+  target: Quaternion,
+  best: Candidate | undefined,
+  limit: number,
+): readonly Family[] {
+  for (let count = 0; count < Math.min(halves.length, 4); count += 1) {
     const families: Family[] = [];
     for (let start = halves.length - count; start >= 0; start -= 1) {
       const family = windowFamily(halves, target, { start, count }, limit);
-      const everywhere = spreadAngles(halves.length - count, TRIED).every(
-        (angles) => family.membersAt(angles).length > 0,
-      );
-      if (everywhere) families.push(family);
+      if (isEverywhere(family)) families.push(family);
       if (count === 0) break;
     }
     if (families.length > 0) return families;
   }
-  return [];
+  if (halves.length <= 3 || best === undefined) return [];
+  const ridge = ridgeFamily(halves, target, best, limit);
+  return ridge !== null && isEverywhere(ridge) ? [ridge] : [];
 }
 
 /**
@@ -114,8 +128,7 @@ export function widestOf(
     );
   };
   const middle: Family = { freePlates: [1], membersAt };
-  const everywhere = spreadAngles(1, TRIED).every((angles) => membersAt(angles).length > 0);
-  return everywhere ? [middle, ...families] : families;
+  return isEverywhere(middle) ? [middle, ...families] : families;
 }
 
 const MOST = 16;
@@ -160,18 +173,24 @@ function inTurn(lists: readonly (readonly Setting[])[]): readonly Setting[] {
 // Positions of the free plates at which windows are compared.
 const COMPARED = 16;
 
-/** Three neighbouring plates that follow all others of four or more; null where none makes the target at any position. */
-export function bestWindow(halves: readonly Half[], target: Quaternion): Family | null {
+/**
+ * The family of four plates or more: three neighbours follow all others. Where the target is one of those for which fewer
+ * follow (half-wave plates side by side), the ridge on which a member lies. Null where there is no member at any position.
+ */
+export function familyOfMany(halves: readonly Half[], target: Quaternion): Family | null {
   let best: Family | null = null;
-  let most = 0;
+  let most: readonly Setting[] = [];
   for (let start = 0; start + 3 <= halves.length; start += 1) {
     const family = windowFamily(halves, target, { start, count: 3 }, EXACT_MISS);
-    const members = spreadAngles(halves.length - 3, COMPARED)
-      .map((angles) => family.membersAt(angles).length)
-      .reduce((sum, count) => sum + count, 0);
-    if (members > most) [most, best] = [members, family];
+    const members = spreadAngles(halves.length - 3, COMPARED).flatMap((angles) => family.membersAt(angles));
+    if (members.length > most.length) [most, best] = [members, family];
   }
-  return best;
+  const [member] = most;
+  if (member === undefined) return null;
+  const found = candidateAt(halves, member.fastAxesRad.map(pointOf), target);
+  const ridge = ridgeFamily(halves, target, found, EXACT_MISS);
+  const wider = ridge !== null && ridge.freePlates.length > halves.length - 3 && isEverywhere(ridge);
+  return wider ? ridge : best;
 }
 
 /** Members at the compared positions, for a family that has none at round angles. */

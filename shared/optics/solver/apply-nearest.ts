@@ -7,11 +7,7 @@ import { spreadAngles } from './spread-angles';
 import type { CirclePoint } from './trig-quadratic';
 
 /** Every local optimum of |cos(ε/2)| of up to three plates; of more, those that a fixed set of starts climbs to. */
-export function nearestSettings(
-  halves: readonly Half[],
-  target: Quaternion,
-  manyStarts: number = MANY_STARTS,
-): readonly Candidate[] {
+export function nearestSettings(halves: readonly Half[], target: Quaternion): readonly Candidate[] {
   const [first, second, third] = halves;
   if (first === undefined) return [candidateAt([], [], target)];
   if (second === undefined) return nearestOne(first, target);
@@ -24,7 +20,7 @@ export function nearestSettings(
     );
   }
   if (halves.length === 3) return climbed(halves, threeStarts(first, second, third, target), target);
-  const starts = spreadAngles(halves.length, manyStarts).map((angles) =>
+  const starts = spreadAngles(halves.length, MANY_STARTS).map((angles) =>
     angles.map((angle) => sincos(2 * angle)),
   );
   return climbed(halves, starts, target);

@@ -1,7 +1,7 @@
 import { type Quaternion, compose, IDENTITY, rotate } from '../quaternion';
 import type { Bloch } from '../stokes';
 import { type Candidate, candidateAt, type Half, leftOver, missOf, stackAt } from './apply-stack';
-import { solveDamped } from './symmetric-matrix';
+import { solveDamped, type SymmetricMatrix } from './symmetric-matrix';
 import type { CirclePoint } from './trig-quadratic';
 import { turned } from './turned';
 
@@ -50,25 +50,24 @@ const ROUNDING = 4e-30;
 
 /**
  * Gauss–Newton on the vector part of achieved · wanted⁻¹, in the angles of all plates; the best point met. The damping
- * only matters where two solutions meet or a family runs through: there it takes the shortest step. The plate `held` stays
- * where it is.
+ * only matters where two solutions meet or a family runs through: there it takes the shortest step. The plates `held` stay
+ * where they are.
  */
 export function polish(
   halves: readonly Half[],
   start: readonly CirclePoint[],
   target: Quaternion,
-  held: number | null = null,
+  held: readonly number[] = [],
 ): Candidate {
   let points = start;
   let best = candidateAt(halves, points, target);
   for (let step = 0; step < 24 && best.miss > ROUNDING; step += 1) {
     const { x, y, z } = leftOver(halves, points, target);
     const { omega } = ratesAt(halves, points);
-    const move = shortestStep(held === null ? omega : omega.map((rate, k) => (k === held ? STILL : rate)), [
-      -x,
-      -y,
-      -z,
-    ]);
+    const move = shortestStep(
+      held.length === 0 ? omega : omega.map((rate, k) => (held.includes(k) ? STILL : rate)),
+      [-x, -y, -z],
+    );
     if (move === null) return best;
     points = points.map((point, k) => turned(point, move[k] ?? 0));
     const next = candidateAt(halves, points, target);
@@ -90,28 +89,36 @@ function shortestStep(omega: readonly Bloch[], by: Bloch): readonly number[] | n
       return parts.map((part) => part / volume);
     }
   }
-  const damping = 1e-13 * omega.reduce((sum, rate) => sum + dot(rate, rate), 0) + 1e-300;
-  return solveDamped(
-    omega.map((row) => omega.map((column) => dot(row, column))),
-    damping,
-    omega.map((rate) => dot(rate, by)),
-  );
+  // Damped by the square of the miss, Gauss–Newton stays quadratic where the rates hardly span.
+  const rows = omega.map((row) => omega.map((column) => dot(row, column)));
+  const right = omega.map((rate) => dot(rate, by));
+  const size = omega.reduce((sum, rate) => sum + dot(rate, rate), 0) + 1e-300;
+  const damping = size * (Math.min(1e-13, dot(by, by)) + 3e-16);
+  return solveDamped(rows, damping, right) ?? solveDamped(rows, 1e-13 * size, right);
 }
 
 /** The scalar part f = cos(ε/2) ≥ 0 at a point, its gradient and the negative of its Hessian in the u of each plate. */
 interface Shape {
   readonly gradient: readonly number[];
-  readonly curvature: readonly (readonly number[])[];
+  readonly curvature: SymmetricMatrix;
 }
 
-function shapeAt(halves: readonly Half[], points: readonly CirclePoint[], target: Quaternion): Shape {
+function shapeAt(
+  halves: readonly Half[],
+  points: readonly CirclePoint[],
+  target: Quaternion,
+  held: readonly number[],
+): Shape {
   const { w, x, y, z } = leftOver(halves, points, target);
   const e: Bloch = [x, y, z];
   const { omega, bend } = ratesAt(halves, points);
-  const gradient = omega.map((rate) => -dot(rate, e));
+  const isHeld = omega.map((_, k) => held.includes(k));
+  const gradient = omega.map((rate, k) => (isHeld[k] === true ? 0 : -dot(rate, e)));
   const curvature = omega.map((row, k) =>
     omega.map((column, l) => {
-      if (k === l) return (halves[k]?.sin ?? 0) ** 2 * w - dot(bend[k] ?? [0, 0, 0], e);
+      // A held plate gets a curvature of its own and no slope: it takes no step.
+      if (isHeld[k] === true || isHeld[l] === true) return k === l ? 1 : 0;
+      if (k === l) return (halves[k]?.sin ?? 0) ** 2 * w - dot(bend[k] ?? STILL, e);
       // The plate further along the beam stands on the left: scalar part of ω_later ω_earlier E.
       return dot(row, column) * w + (k > l ? triple(row, column, e) : triple(column, row, e));
     }),
@@ -119,21 +126,31 @@ function shapeAt(halves: readonly Half[], points: readonly CirclePoint[], target
   return { gradient, curvature };
 }
 
+/** The negative of the Hessian of cos(ε/2) by the u of each plate, rows first. */
+export function curvatureAt(
+  halves: readonly Half[],
+  points: readonly CirclePoint[],
+  target: Quaternion,
+): SymmetricMatrix {
+  return shapeAt(halves, points, target, []).curvature;
+}
+
 const LONGEST_CLIMB = 80;
 
 /**
  * Uphill on cos(ε/2) to a local optimum: Newton with the exact Hessian, its diagonal raised until it is a step uphill.
- * Null where the point it stops at is no maximum (a saddle).
+ * Null where the point it stops at is no maximum (a saddle). The plates `held` stay where they are.
  */
 export function climb(
   halves: readonly Half[],
   start: readonly CirclePoint[],
   target: Quaternion,
+  held: readonly number[] = [],
 ): Candidate | null {
   let best = candidateAt(halves, start, target);
   let damping = 0;
   for (let step = 0; step < LONGEST_CLIMB; step += 1) {
-    const { gradient, curvature } = shapeAt(halves, best.points, target);
+    const { gradient, curvature } = shapeAt(halves, best.points, target, held);
     const move = solveDamped(curvature, damping + 1e-14, gradient);
     if (move === null) {
       damping = Math.max(1e-3, 4 * damping);
@@ -151,7 +168,7 @@ export function climb(
       damping = Math.max(1e-3, 4 * damping);
     }
   }
-  const { curvature } = shapeAt(halves, best.points, target);
+  const { curvature } = shapeAt(halves, best.points, target, held);
   const level = curvature.map(() => 0);
   return solveDamped(curvature, 1e-7, level) === null ? null : best;
 }

@@ -34,7 +34,7 @@ export function outerSettings(
       const re = second.cos * first.cos - third.cos * w - third.sin * (z * c.cos + x * c.sin);
       const im = third.cos * y - third.sin * (x * c.cos - z * c.sin);
       const a = direction(re * middle.cos - im * middle.sin, re * middle.sin + im * middle.cos);
-      const candidate = polish(halves, [a, middle, c], target, 1);
+      const candidate = polish(halves, [a, middle, c], target, [1]);
       if (candidate.miss < EXACT_MISS) found.push(candidate);
     }
   }

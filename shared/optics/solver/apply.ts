@@ -2,8 +2,9 @@ import { asin } from '../elementary';
 import type { Quaternion } from '../quaternion';
 import { type Radians, radians, wrap } from '../units';
 import { exactSettings } from './apply-exact';
-import { asNearAs, bestWindow, familiesOf, representatives, spreadMembers, widestOf } from './apply-family';
+import { asNearAs, familyOfMany, familiesOf, representatives, spreadMembers, widestOf } from './apply-family';
 import { nearestSettings } from './apply-nearest';
+import { polish } from './apply-newton';
 import { type Candidate, EXACT_MISS, type Half, halfOf, settingOf } from './apply-stack';
 import { bestFirst, distinctSettings } from './distinct-settings';
 import type { Family, Setting, Solved } from './setting';
@@ -50,7 +51,7 @@ function normalised({ w, x, y, z }: Quaternion): Quaternion {
 
 function solve(halves: readonly Half[], target: Quaternion): Solved {
   if (halves.length > 3) {
-    const family = bestWindow(halves, target);
+    const family = familyOfMany(halves, target);
     if (family !== null) return reachedFamily(family, []);
     return nearest(halves, target);
   }
@@ -64,19 +65,20 @@ function reached(
   target: Quaternion,
   candidates: readonly Candidate[],
   suspects: readonly Candidate[],
+  sameRad: number = SAME_ANGLE_RAD,
 ): Solved {
   const isolated = candidates.map(settingOf);
   // Three plates in general position have isolated settings, none found twice; fewer reach a target by chance or design.
   if (halves.length === 3 && suspects.length === 0) {
     return { kind: 'exact', solutions: isolated.sort(byAngles), shortfallRad: radians(0), family: null };
   }
-  const families = widestOf(familiesOf(halves, target, EXACT_MISS), halves, target);
+  const families = widestOf(familiesOf(halves, target, suspects[0], EXACT_MISS), halves, target);
   const [family] = families;
   if (family !== undefined) {
     const solutions = distinctSettings([...representatives(families), ...isolated]);
     return { kind: 'family', solutions, shortfallRad: radians(0), family };
   }
-  const solutions = distinctSettings([...isolated, ...suspects.map(settingOf)]);
+  const solutions = distinctSettings([...isolated, ...suspects.map(settingOf)], sameRad);
   return { kind: 'exact', solutions, shortfallRad: radians(0), family: null };
 }
 
@@ -95,15 +97,24 @@ function reachedFamily(family: Family, known: readonly Setting[]): Solved {
   return { kind: 'family', solutions, shortfallRad: radians(0), family };
 }
 
+// Optima this near are polished as solutions: of a stack that hardly reaches its target some do make it.
+const NEARLY_EXACT = 1e-12;
+
 function nearest(halves: readonly Half[], target: Quaternion): Solved {
-  const optima = nearestSettings(halves, target);
-  const best = Math.min(1, ...optima.map(({ miss }) => miss));
-  if (best < EXACT_MISS) {
-    const found = optima.filter(({ miss }) => miss < EXACT_MISS);
-    return reached(halves, target, [], found);
+  const optima = nearestSettings(halves, target).map((found) =>
+    found.miss < NEARLY_EXACT ? polish(halves, found.points, target) : found,
+  );
+  const best = optima.reduce<Candidate | undefined>(
+    (least, found) => (least === undefined || found.miss < least.miss ? found : least),
+    undefined,
+  );
+  const miss = best?.miss ?? 1;
+  if (miss < EXACT_MISS) {
+    const found = optima.filter((each) => each.miss < EXACT_MISS);
+    return reached(halves, target, [], found, SAME_OPTIMUM_RAD);
   }
-  const shortfallRad = radians(2 * asin(Math.sqrt(best)));
-  const families = familiesOf(halves, target, asNearAs(best));
+  const shortfallRad = radians(2 * asin(Math.sqrt(miss)));
+  const families = familiesOf(halves, target, best, asNearAs(miss));
   const [family] = families;
   if (family !== undefined) {
     return { kind: 'family', solutions: bestFirst(representatives(families)), shortfallRad, family };

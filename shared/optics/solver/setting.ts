@@ -12,7 +12,10 @@ export interface Setting {
 export interface Family {
   /** The plates (indices, beam order) that may be chosen freely; the others follow. */
   readonly freePlates: readonly number[];
-  /** Every setting with the free plates at these angles (same order as freePlates); [] where none exists. */
+  /**
+   * Every setting with the free plates at these angles (same order as freePlates); [] where none exists. At angles where the
+   * others have a continuum of their own, one or more of it.
+   */
   readonly membersAt: (freeFastAxesRad: readonly Radians[]) => readonly Setting[];
 }
 
