@@ -57,7 +57,16 @@ export {
 } from './phase';
 export * from './stokes';
 export * from './units';
+export { bestMember, type Cost, memberNear } from './solver/best-member';
 export { MOST_PLATES, prepare, type PrepareProblem } from './solver/prepare';
+export {
+  type ReachCell,
+  reachMap,
+  type ReachMap,
+  type ReachRow,
+  reachRows,
+  type ReachTotals,
+} from './solver/reach-map';
 export type { Family, Setting, Solved } from './solver/setting';
 export {
   type Dialled,

@@ -50,7 +50,8 @@ function closestStack(task: StateTask): Solved {
   return { kind: 'nearest', solutions: optima, shortfallRad, family: null };
 }
 
-const ASIDE_RAD = 1e-3;
+// The fourth power of this is far above the tolerance of a ridge.
+const ASIDE_RAD = 0.03;
 
 // The family of the ridge that an optimum lies on; null where it stands alone.
 function ridgeThrough(task: StateTask, { fastAxesRad }: Setting, limit: number): Family | null {

@@ -10,6 +10,10 @@ export interface StackSlopes {
   readonly slope: readonly number[];
   /** Symmetric, rows first. */
   readonly bend: readonly (readonly number[])[];
+  /** What is left to the target, p − t. */
+  readonly miss: Stokes;
+  /** How p moves with each angle. */
+  readonly moves: readonly Stokes[];
 }
 
 interface Tangent {
@@ -52,7 +56,14 @@ export function stackSlopes(
     }
     state = [point.q1, point.q2, point.q3];
   });
-  return { overlap: dot(state, to), infidelity: missOf(state, to), slope, bend };
+  return {
+    overlap: dot(state, to),
+    infidelity: missOf(state, to),
+    slope,
+    bend,
+    miss: [state[0] - to[0], state[1] - to[1], state[2] - to[2]],
+    moves: tangents.map(({ along }) => along),
+  };
 }
 
 /** The state behind the whole stack, and 1 − F for the target. */
@@ -86,7 +97,7 @@ function setEntry(matrix: readonly number[][], row: number, column: number, valu
   if (entries !== undefined) entries[column] = value;
 }
 
-function dot([a1, a2, a3]: Stokes, [b1, b2, b3]: Stokes): number {
+export function dot([a1, a2, a3]: Stokes, [b1, b2, b3]: Stokes): number {
   return a1 * b1 + a2 * b2 + a3 * b3;
 }
 
