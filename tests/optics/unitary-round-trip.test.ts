@@ -30,7 +30,7 @@ test(`${CASES} generated unitaries print canonically and read back to the same b
   const random = randomStream(20_261_201);
   let [read, refused] = [0, 0];
   for (let k = 0; k < CASES; k += 1) {
-    const source = unitaryText(random, k % 5);
+    const source = unitaryText(random, k % 4);
     const first = parseUnitary(source, lab(k));
     if (!first.ok) {
       refused += 1;
@@ -52,7 +52,7 @@ test(`${CASES} generated states, many with unitaries that act on them, read back
   const random = randomStream(20_261_202);
   let read = 0;
   for (let k = 0; k < CASES; k += 1) {
-    const source = stateText(random, k % 5);
+    const source = stateText(random, k % 4);
     const first = parseState(source, lab(k));
     if (!first.ok) continue;
     read += 1;

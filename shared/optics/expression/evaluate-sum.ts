@@ -28,7 +28,7 @@ function signed(value: Value, minus: boolean): Value {
   if (!minus) return value;
   switch (value.kind) {
     case 'number':
-      return { ...value, value: negative(value.value) };
+      return number(negative(value.value), value.unit);
     case 'state': {
       const { aRe, aIm, bRe, bIm } = value.written;
       return state({ aRe: 0 - aRe, aIm: 0 - aIm, bRe: 0 - bRe, bIm: 0 - bIm });
