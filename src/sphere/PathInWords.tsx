@@ -1,10 +1,30 @@
 import { formatAngle } from '../lib/format';
-import { missInWords, pathInWords, type StateWords } from './path-words';
+import { ImagesTable } from './ImagesTable';
+import { missInWords, pathInWords, type PathWords } from './path-words';
+import { PhaseTable } from './PhaseTable';
+import { PointsList } from './PointsList';
 import type { SphereInput } from './scene';
+import { StateCell } from './StateCell';
 
-/** The path as a table: what the sphere shows, for whoever can't see it or wants the numbers. */
+/** What the sphere shows in words and tables, for whoever can't see it or wants the numbers. */
 export function PathInWords({ input }: { readonly input: SphereInput }) {
   const words = pathInWords(input);
+  const points = input.points ?? [];
+  // Without plates and target there is no path to tell, where something else is shown.
+  const hasPath = input.plates.length > 0 || input.target !== undefined;
+  const hasMore = points.length > 0 || words.images.length > 0 || words.reach !== undefined;
+  return (
+    <>
+      {(hasPath || !hasMore) && <PathTable words={words} />}
+      {words.phase !== undefined && <PhaseTable phase={words.phase} />}
+      {words.images.length > 0 && <ImagesTable images={words.images} />}
+      {words.reach !== undefined && <p className="sphere-words">{words.reach.text}</p>}
+      {points.length > 0 && <PointsList points={points} convention={input.convention} />}
+    </>
+  );
+}
+
+function PathTable({ words }: { readonly words: PathWords }) {
   return (
     <table className="path-in-words">
       <caption>
@@ -54,18 +74,4 @@ export function PathInWords({ input }: { readonly input: SphereInput }) {
       </tbody>
     </table>
   );
-}
-
-function StateCell({ state }: { readonly state: StateWords }) {
-  return (
-    <td>
-      {state.text}
-      <span className="path-stokes">{state.shown.map(formatStokes).join(', ')}</span>
-    </td>
-  );
-}
-
-function formatStokes(value: number): string {
-  const text = Math.abs(value).toFixed(4);
-  return value < 0 && Number(text) !== 0 ? `−${text}` : text;
 }

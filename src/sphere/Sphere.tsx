@@ -1,10 +1,12 @@
 import { Component, lazy, type ReactNode, Suspense, useId, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import { pathInWords } from './path-words';
+import { figureNotes } from './figure-notes';
 import { PathInWords } from './PathInWords';
 import { type SphereInput, sphereScene } from './scene';
 import { SphereSvg } from './SphereSvg';
 import { useBoxWidth } from './use-box-width';
+import { useSmallestType } from './use-smallest-type';
 import { useSphereDrag } from './use-sphere-drag';
 import { useWebGlWhenShown } from './use-webgl-when-shown';
 import { placement, viewFrame } from './view';
@@ -42,8 +44,13 @@ export function Sphere({ input, view: pageView, height = DEFAULT_HEIGHT }: Props
 
   const scene = useMemo(() => sphereScene(input), [input]);
   const words = useMemo(() => pathInWords(input), [input]);
+  const [cornerNote, ...moreNotes] = useMemo(() => figureNotes(input), [input]);
   const frame = useMemo(() => viewFrame(view), [view]);
-  const place = useMemo(() => placement(width, height, view.zoom), [width, height, view.zoom]);
+  const smallestTypePx = useSmallestType(figure);
+  const place = useMemo(
+    () => placement(width, height, view.zoom, smallestTypePx),
+    [width, height, view.zoom, smallestTypePx],
+  );
 
   const webGl = useWebGlWhenShown(figure);
   const [ready, setReady] = useState(false);
@@ -101,9 +108,11 @@ export function Sphere({ input, view: pageView, height = DEFAULT_HEIGHT }: Props
         <p className="sphere-note sphere-note-top" aria-hidden="true">
           equator in table degrees
         </p>
-        <p className="sphere-note sphere-note-bottom" aria-hidden="true">
-          a tick every 10° of turn
-        </p>
+        {cornerNote !== undefined && (
+          <p className="sphere-note sphere-note-bottom" aria-hidden="true">
+            {cornerNote}
+          </p>
+        )}
         <ViewControls
           onCommand={(command) => store.getState().apply(command, input.convention)}
           inWords={inWords}
@@ -112,9 +121,18 @@ export function Sphere({ input, view: pageView, height = DEFAULT_HEIGHT }: Props
       </div>
       <p id={helpId} className="sr-only">
         Arrow keys turn it by 5°, with Shift by 1°. h, d and r face a basis, 0 goes home, plus and minus
-        magnify, Escape leaves. The same path stands in the table behind “in words”.
+        magnify, Escape leaves. The same stands in words behind “in words”.
       </p>
       <ViewStatus view={view} />
+      {moreNotes.length > 0 && (
+        <p className="sphere-words" aria-hidden="true">
+          {moreNotes.map((note) => (
+            <span key={note}>{note}</span>
+          ))}
+        </p>
+      )}
+      {words.phase !== undefined && <p className="sphere-words">{words.phase.text}</p>}
+      {words.reach !== undefined && !inWords && <p className="sphere-words">{words.reach.text}</p>}
       {inWords && <PathInWords input={input} />}
     </div>
   );

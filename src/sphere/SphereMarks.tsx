@@ -1,5 +1,7 @@
-import { LABEL_TYPE, placeLabels, type PlacedLabel } from './labels';
-import type { BasisPair, LabelRole, SceneHead, SceneMark, SphereScene } from './scene';
+import { placeLabels, type PlacedLabel } from './labels';
+import { Flag } from './Flag';
+import { MarkShape } from './MarkShape';
+import type { LabelRole, SceneHead, SphereScene } from './scene';
 import { type Placement, project, type ViewFrame } from './view';
 
 interface Props {
@@ -39,6 +41,9 @@ export function SphereMarks({ scene, frame, place }: Props) {
           </g>
         ),
       )}
+      {scene.flags.map((flag) => (
+        <Flag key={flag.id} flag={flag} frame={frame} place={place} />
+      ))}
       {placeLabels(scene, frame, place).map((label) => (
         <Label key={label.id} label={label} place={place} />
       ))}
@@ -67,61 +72,11 @@ function Head({ head, frame, place }: Omit<Props, 'scene'> & { readonly head: Sc
   );
 }
 
-const BASIS_COLOUR: Readonly<Record<BasisPair, string>> = {
-  hv: 'var(--hv)',
-  da: 'var(--da)',
-  rl: 'var(--rl)',
-};
-
-function MarkShape({ mark, front }: { readonly mark: SceneMark; readonly front: boolean }) {
-  switch (mark.kind) {
-    case 'basis': {
-      const colour = BASIS_COLOUR[mark.pair];
-      // The hollow shapes are drawn smaller by half their edge, so that both of a pair are the same size.
-      const style = mark.filled ? { fill: colour } : { fill: 'var(--glass)', stroke: colour, strokeWidth: 2 };
-      const half = mark.filled ? 5.5 : 4.5;
-      if (mark.pair === 'hv')
-        return <rect x={-half} y={-half} width={2 * half} height={2 * half} {...style} />;
-      if (mark.pair === 'da') {
-        const reach = mark.filled ? 7.2 : 6.2;
-        return <path d={`M0 ${-reach} L${reach} 0 L0 ${reach} L${-reach} 0 Z`} {...style} />;
-      }
-      return <circle r={half} {...style} />;
-    }
-    case 'axis': {
-      const colour = mark.last ? 'var(--beam)' : 'var(--ink-2)';
-      return (
-        <g stroke={colour} fill="none" strokeWidth={1.2}>
-          <circle r={9.2} strokeDasharray="1.6 2" strokeWidth={1} />
-          <path d="M-6 0 H6 M0 -6 V6" />
-        </g>
-      );
-    }
-    case 'between':
-      return <circle r={4} fill="var(--glass)" stroke="var(--ink)" strokeWidth={1.4} />;
-    case 'target':
-      return (
-        <g stroke="var(--ink)" strokeWidth={1.4}>
-          <circle r={10} fill="var(--glass)" />
-          <path d="M0 -9.5 V-14 M0 9.5 V14 M-9.5 0 H-14 M9.5 0 H14" />
-        </g>
-      );
-    case 'reached':
-      return (
-        <circle
-          r={5.6}
-          fill="var(--lit)"
-          stroke="var(--ink)"
-          strokeWidth={1.2}
-          strokeDasharray={front ? undefined : '2 1.6'}
-        />
-      );
-  }
-}
-
 const LABEL_WEIGHT: Readonly<Record<LabelRole, number>> = {
   basis: 650,
   target: 650,
+  image: 650,
+  point: 400,
   turn: 650,
   'last-turn': 650,
   axis: 400,
@@ -129,7 +84,8 @@ const LABEL_WEIGHT: Readonly<Record<LabelRole, number>> = {
 };
 
 function labelColour({ role, front }: PlacedLabel): string {
-  if (role === 'degrees' || role === 'axis') return front ? 'var(--ink-2)' : 'var(--ink-3)';
+  if (role === 'degrees' || role === 'axis' || role === 'point')
+    return front ? 'var(--ink-2)' : 'var(--ink-3)';
   if (role === 'last-turn') return 'var(--beam-text)';
   return front ? 'var(--ink)' : 'var(--ink-3)';
 }
@@ -144,7 +100,7 @@ function Label({ label, place }: { readonly label: PlacedLabel; readonly place: 
       dy="0.35em"
       textAnchor="middle"
       className={label.role === 'degrees' ? 'sphere-label font-mono' : 'sphere-label'}
-      fontSize={LABEL_TYPE[label.role].sizePx}
+      fontSize={label.sizePx}
       fontWeight={LABEL_WEIGHT[label.role]}
       fill={labelColour(label)}
       stroke={onBody ? 'var(--glass)' : 'var(--paper)'}

@@ -3,9 +3,10 @@ import { Canvas, useFrame, useThree } from '@react-three/fiber';
 import { useEffect, useLayoutEffect, useMemo, useRef, useState } from 'react';
 import { Matrix4, Quaternion } from 'three';
 import { type Palette, usePalette } from './palette';
-import type { SceneLine, SphereScene } from './scene';
+import type { SceneLine, SceneTicks, SphereScene } from './scene';
 import { SphereMarks } from './SphereMarks';
-import { FacingParts, SideLines } from './three-parts';
+import { STROKES } from './strokes';
+import { FacingParts, HairSegments, SideLines } from './three-parts';
 import type { Placement, SphereView, ViewFrame } from './view';
 import { scale, type Vec3 } from './vec';
 
@@ -92,18 +93,9 @@ function SphereContent({
         radiusPx={place.radius}
       />
       <SideLines points={body.equator} segments role="equator" palette={palette} radiusPx={place.radius} />
-      {scene.ticks
-        .filter(({ segments }) => segments.length > 0)
-        .map((ticks) => (
-          <SideLines
-            key={`${ticks.id}/${ticks.segments.length}`}
-            points={ticks.segments.flat()}
-            segments
-            role={ticks.role}
-            palette={palette}
-            radiusPx={place.radius}
-          />
-        ))}
+      {scene.ticks.map((ticks) => (
+        <Ticks key={ticks.id} ticks={ticks} palette={palette} radiusPx={place.radius} />
+      ))}
       {turns.map((line) => (
         <SideLines
           key={`${line.id}/${line.points.length}`}
@@ -114,6 +106,30 @@ function SphereContent({
         />
       ))}
     </>
+  );
+}
+
+function Ticks({
+  ticks: { role, segments },
+  palette,
+  radiusPx,
+}: {
+  readonly ticks: SceneTicks;
+  readonly palette: Palette;
+  readonly radiusPx: number;
+}) {
+  const points = useMemo(() => segments.flat(), [segments]);
+  if (points.length === 0) return null;
+  if (STROKES[role].hairline === true) return <HairSegments points={points} role={role} palette={palette} />;
+  return (
+    <SideLines
+      key={points.length}
+      points={points}
+      segments
+      role={role}
+      palette={palette}
+      radiusPx={radiusPx}
+    />
   );
 }
 

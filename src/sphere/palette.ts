@@ -12,28 +12,35 @@ function readPalette(element: Element): Palette {
     glass: read('glass'),
     wash: read('wash'),
     ink: read('ink'),
+    'ink-3': read('ink-3'),
     rule: read('rule'),
     beam: read('beam'),
   };
 }
 
-/** The colours where `element` stands, read again when a theme or the lamp is set on it or on anything around it. */
+/** Calls back when a theme or the lamp is set on the element or on anything around it. Returns how to stop. */
+export function watchTheme(element: Element, update: () => void): () => void {
+  const observer = new MutationObserver(update);
+  for (let node: Element | null = element; node !== null; node = node.parentElement) {
+    observer.observe(node, { attributeFilter: ['data-theme', 'data-lamp', 'data-lamp-ink', 'class'] });
+  }
+  if (typeof window.matchMedia !== 'function') return () => observer.disconnect();
+  const scheme = window.matchMedia('(prefers-color-scheme: dark)');
+  scheme.addEventListener('change', update);
+  return () => {
+    observer.disconnect();
+    scheme.removeEventListener('change', update);
+  };
+}
+
+/** The colours where `element` stands, read again when the theme changes. */
 export function usePalette(element: Element | null): Palette | undefined {
   const [palette, setPalette] = useState<Palette>();
   useEffect(() => {
     if (element === null) return undefined;
     const update = () => setPalette(readPalette(element));
     update();
-    const observer = new MutationObserver(update);
-    for (let node: Element | null = element; node !== null; node = node.parentElement) {
-      observer.observe(node, { attributeFilter: ['data-theme', 'data-lamp', 'data-lamp-ink', 'class'] });
-    }
-    const scheme = window.matchMedia('(prefers-color-scheme: dark)');
-    scheme.addEventListener('change', update);
-    return () => {
-      observer.disconnect();
-      scheme.removeEventListener('change', update);
-    };
+    return watchTheme(element, update);
   }, [element]);
   return palette;
 }

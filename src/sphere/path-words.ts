@@ -1,19 +1,19 @@
-import { type Convention, letterOf, showStokes } from '../../shared/optics/convention';
-import { ellipseOf } from '../../shared/optics/ellipse';
 import type { Stokes } from '../../shared/optics/stokes';
 import { toDegrees, wrap } from '../../shared/optics/units';
 import { formatAngle } from '../lib/format';
-import { basisStates, type SphereInput, spherePath } from './scene';
+import { type ImageWords, imagesInWords, imagesSummary } from './image-words';
+import { phaseInWords, type PhaseWords } from './phase-words';
+import { pointsSummary } from './point-words';
+import { reachInWords, type ReachWords } from './reach-words';
+import { type SphereInput, spherePath } from './scene';
+import { type StateWords, stateWords } from './state-words';
 import { angleBetweenDeg } from './vec';
 
-/** A state nearer than this, in degrees of the sphere, is called by the basis state's letter. */
-export const NAMED_WITHIN_DEG = 0.1;
-/** An ellipse flatter than this is said to be linear. */
-export const LINEAR_WITHIN_DEG = 0.05;
+export { LINEAR_WITHIN_DEG, NAMED_WITHIN_DEG, stateInWords } from './state-words';
 
 type TurnSense = 'counter-clockwise' | 'clockwise' | 'not at all';
 
-interface PathWords {
+export interface PathWords {
   /** The figure's name: the whole path in one sentence. */
   readonly summary: string;
   readonly start: StateWords;
@@ -29,40 +29,18 @@ interface PathWords {
     readonly after: StateWords;
   }[];
   readonly target: (StateWords & { readonly label: string; readonly missDeg: number }) | undefined;
-}
-
-export interface StateWords {
-  readonly text: string;
-  /** Stokes parameters as the lab shows them. */
-  readonly shown: readonly [number, number, number];
-}
-
-/** A state in words: `H`, `linear at −37.8°`, `ellipse at −62.6°, ellipticity 27.4°, counter-clockwise to the receiver (L)`. */
-export function stateInWords(state: Stokes, convention: Convention): string {
-  const named = basisStates(convention).find(
-    (basis) => angleBetweenDeg(basis.state, state) < NAMED_WITHIN_DEG,
-  );
-  if (named !== undefined) return named.letter;
-  const { azimuthRad, ellipticityRad } = ellipseOf(state);
-  const azimuth = formatAngle(toDegrees(azimuthRad));
-  const ellipticityDeg = toDegrees(ellipticityRad);
-  if (Math.abs(ellipticityDeg) < LINEAR_WITHIN_DEG) return `linear at ${azimuth}`;
-  const hand = `${ellipticityDeg > 0 ? 'counter-clockwise' : 'clockwise'} to the receiver`;
-  const letter = letterOf(state, convention);
-  const withLetter = letter === null ? hand : `${hand} (${letter})`;
-  return `ellipse at ${azimuth}, ellipticity ${formatAngle(Math.abs(ellipticityDeg))}, ${withLetter}`;
+  readonly images: readonly ImageWords[];
+  readonly phase: PhaseWords | undefined;
+  readonly reach: ReachWords | undefined;
 }
 
 /** The path as the table and the figure's name tell it; from the same turns that are drawn. */
 export function pathInWords(input: SphereInput): PathWords {
   const { convention, plates, target } = input;
-  const way = spherePath(input);
-  const words = (state: Stokes): StateWords => {
-    const { s1, s2, s3 } = showStokes(state, convention);
-    return { text: stateInWords(state, convention), shown: [s1, s2, s3] };
-  };
+  const drawn = spherePath(input);
+  const words = (state: Stokes): StateWords => stateWords(state, convention);
   const turns = plates.flatMap((plate, index) => {
-    const turn = way.turns[index];
+    const turn = drawn.turns[index];
     if (turn === undefined) return [];
     const sweepDeg = toDegrees(turn.sweepRad);
     return [
@@ -76,18 +54,26 @@ export function pathInWords(input: SphereInput): PathWords {
       },
     ];
   });
-  const end = way.statesAfter.at(-1) ?? input.start;
+  const end = drawn.statesAfter.at(-1) ?? input.start;
   const start = words(input.start);
   const targetWords =
     target === undefined
       ? undefined
       : { ...words(target.state), label: target.label, missDeg: angleBetweenDeg(end, target.state) };
-  return {
-    summary: summary(start, turns, plates.length > 0 ? words(end) : undefined, targetWords),
-    start,
-    turns,
-    target: targetWords,
-  };
+  const images = imagesInWords(input.images ?? [], convention);
+  const phase = input.phase === true && plates.length > 0 ? phaseInWords(input) : undefined;
+  const reach = input.reach === undefined ? undefined : reachInWords(input.reach, convention);
+  const parts = [
+    ...pointsSummary(input.points ?? [], convention),
+    ...(reach === undefined ? [] : [reach.text]),
+    ...imagesSummary(images),
+    ...(phase === undefined ? [] : [phase.text]),
+  ];
+  const way =
+    plates.length > 0 || target !== undefined || parts.length === 0
+      ? summary(start, turns, plates.length > 0 ? words(end) : undefined, targetWords)
+      : 'Sphere of states.';
+  return { summary: [way, ...parts].join(' '), start, turns, target: targetWords, images, phase, reach };
 }
 
 /** A right-handed turn about a point of the sphere looks counter-clockwise from above that point. */

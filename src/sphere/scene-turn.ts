@@ -2,7 +2,7 @@ import { type Turn, retardStokes } from '../../shared/optics/retarder';
 import { degrees, toDegrees, toRadians, wrap } from '../../shared/optics/units';
 import { formatAngle } from '../lib/format';
 import type { SceneHead, SceneLabel, SceneLine, SceneMark, SceneTicks, SpherePlate } from './scene';
-import { add, cross, direction, dot, scale, type Vec3 } from './vec';
+import { add, cross, direction, dot, linearPoint, scale, type Vec3 } from './vec';
 
 const TICK_STEP_DEG = 10;
 const TICK_LENGTH = 0.034;
@@ -32,17 +32,11 @@ export function turnDrawing(plate: SpherePlate, turn: Turn, index: number, last:
       turn.from,
     );
   const sweepDeg = toDegrees(turn.sweepRad);
-  const axisLabel: SceneLabel = {
-    id: `axis-${index}`,
-    role: 'axis',
-    text: `${plate.name} ${formatAngle(wrap(plate.fastAxisDeg, 180))}`,
-    at: [turn.axis],
-  };
   const axisMark: SceneMark = { id: `axis-${index}`, kind: 'axis', last, at: turn.axis };
 
   const circleRadius = Math.sqrt(Math.max(0, 1 - dot(turn.axis, turn.from) ** 2));
   const arcLength = Math.abs(turn.sweepRad) * circleRadius;
-  if (arcLength < 0.01) return { line: [], ticks: [], head: [], axisMark, labels: [axisLabel] };
+  if (arcLength < 0.01) return { line: [], ticks: [], head: [], axisMark, labels: [] };
 
   const role = last ? 'last-turn' : 'turn';
   const tickCount = Math.floor(Math.abs(sweepDeg) / TICK_STEP_DEG + 1e-9);
@@ -62,9 +56,29 @@ export function turnDrawing(plate: SpherePlate, turn: Turn, index: number, last:
     axisMark,
     labels: [
       { id: `turn-${index}`, role, text: plate.name, at: NAME_AT.map((share) => pointAt(sweepDeg * share)) },
-      axisLabel,
     ],
   };
+}
+
+/** Axes nearer than this on the table are drawn at one place. */
+const SAME_AXIS_DEG = 0.05;
+
+/** The names and angles of the plates' axes; plates that stand alike share one label, since they share a place. */
+export function axisLabels(plates: readonly SpherePlate[]): SceneLabel[] {
+  const alike = (one: SpherePlate, other: SpherePlate) =>
+    Math.abs(wrap(one.fastAxisDeg - other.fastAxisDeg + 90, 180) - 90) < SAME_AXIS_DEG;
+  return plates.flatMap((plate, index): SceneLabel[] => {
+    if (plates.findIndex((one) => alike(one, plate)) !== index) return [];
+    const names = plates.filter((one) => alike(one, plate)).map(({ name }) => name);
+    return [
+      {
+        id: `axis-${index}`,
+        role: 'axis',
+        text: `${names.join(', ')} ${formatAngle(wrap(plate.fastAxisDeg, 180))}`,
+        at: [linearPoint(plate.fastAxisDeg)],
+      },
+    ];
+  });
 }
 
 /** A short stroke along the sphere, away from the axis. */

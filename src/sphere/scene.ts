@@ -2,8 +2,14 @@ import { circularState, type Convention, type Hand } from '../../shared/optics/c
 import { path, type Path } from '../../shared/optics/retarder';
 import type { Stokes } from '../../shared/optics/stokes';
 import { degrees, toRadians } from '../../shared/optics/units';
+import { plateRetarder } from './plate-retarder';
+import { sameState } from './same-state';
 import { equatorScale, graticule } from './scene-body';
-import { turnDrawing } from './scene-turn';
+import { phaseFlags } from './scene-flags';
+import { imageMarks } from './scene-images';
+import { pointMarks } from './scene-points';
+import { type ReachInput, reachTicks } from './scene-reach';
+import { axisLabels, turnDrawing } from './scene-turn';
 import type { LineRole } from './strokes';
 import { linearPoint, type Vec3 } from './vec';
 
@@ -14,6 +20,21 @@ export interface SpherePlate {
   readonly retardanceDeg: number;
 }
 
+/** Where a unitary takes one reference state, and where it should. */
+export interface SphereImage {
+  /** The reference state's letter; its image is called by it with a prime. */
+  readonly label: string;
+  readonly from: Stokes;
+  readonly wanted: Stokes;
+  readonly reached: Stokes;
+}
+
+/** One state of a set that is looked at before anything is solved. */
+export interface SpherePointInput {
+  readonly label: string;
+  readonly state: Stokes;
+}
+
 /** What the sphere shows. States are canonical; the convention only letters them. */
 export interface SphereInput {
   /** The light before the first plate. */
@@ -22,6 +43,14 @@ export interface SphereInput {
   readonly plates: readonly SpherePlate[];
   readonly target?: { readonly label: string; readonly state: Stokes } | undefined;
   readonly convention: Convention;
+  /** For plates that are to apply a unitary: where reference states go. */
+  readonly images?: readonly SphereImage[] | undefined;
+  /** Flags along the path that show the state's phase against the start's. */
+  readonly phase?: boolean | undefined;
+  /** What a pair of plates reaches and what it doesn't. */
+  readonly reach?: ReachInput | undefined;
+  /** A set of states, a dot each. */
+  readonly points?: readonly SpherePointInput[] | undefined;
 }
 
 export interface SceneLine {
@@ -48,6 +77,20 @@ export interface SceneHead {
   readonly size: number;
 }
 
+/** A pole along the outward normal with a pennant; what it shows is seen in perspective, so it is projected, not a sign. */
+export interface SceneFlag {
+  readonly id: string;
+  readonly foot: Vec3;
+  readonly top: Vec3;
+  /** Where the pennant's lower edge meets the pole. */
+  readonly hoist: Vec3;
+  /** Where the pennant would point in phase with the start, and where it does; none where no phase is defined. */
+  readonly zero: Vec3 | undefined;
+  readonly tip: Vec3 | undefined;
+  /** The flag of the state that leaves the last plate. */
+  readonly last: boolean;
+}
+
 export type BasisPair = 'hv' | 'da' | 'rl';
 
 /** A mark of a fixed size on the page, standing at a point of the sphere. */
@@ -55,11 +98,14 @@ export type SceneMark = { readonly id: string; readonly at: Vec3 } & (
   | { readonly kind: 'basis'; readonly pair: BasisPair; readonly filled: boolean }
   | { readonly kind: 'axis'; readonly last: boolean }
   | { readonly kind: 'between' }
-  | { readonly kind: 'target' }
+  | { readonly kind: 'target'; readonly onBasis: boolean }
   | { readonly kind: 'reached' }
+  | { readonly kind: 'wanted' }
+  | { readonly kind: 'image' }
+  | { readonly kind: 'point' }
 );
 
-export type LabelRole = 'basis' | 'target' | 'turn' | 'last-turn' | 'axis' | 'degrees';
+export type LabelRole = 'basis' | 'target' | 'image' | 'point' | 'turn' | 'last-turn' | 'axis' | 'degrees';
 
 /** Words that belong to a point; where exactly they stand is found on the page (labels.ts). */
 export interface SceneLabel {
@@ -75,6 +121,7 @@ export interface SphereScene {
   readonly lines: readonly SceneLine[];
   readonly ticks: readonly SceneTicks[];
   readonly heads: readonly SceneHead[];
+  readonly flags: readonly SceneFlag[];
   readonly marks: readonly SceneMark[];
   readonly labels: readonly SceneLabel[];
 }
@@ -98,14 +145,7 @@ export function basisStates(
 
 /** The way of the light through the plates, by the same function as the solver's. */
 export function spherePath({ start, plates }: Pick<SphereInput, 'start' | 'plates'>): Path {
-  return path(
-    start,
-    plates.map((plate) => ({
-      retardanceRad: toRadians(degrees(plate.retardanceDeg)),
-      fastAxisRad: toRadians(degrees(plate.fastAxisDeg)),
-    })),
-    STEP_RAD,
-  );
+  return path(start, plates.map(plateRetarder), STEP_RAD);
 }
 
 /** The whole drawing in Stokes space, before it is looked at from anywhere. Pure. */
@@ -118,7 +158,13 @@ export function sphereScene(input: SphereInput): SphereScene {
   });
   const basis = basisStates(convention);
   const equator = equatorScale();
-  const between = [input.start, ...way.statesAfter].slice(0, -1);
+  const images = imageMarks(input.images ?? []);
+  const points = pointMarks(input.points ?? [], basis);
+  // What a pair reaches depends on the light before it, so that light is marked although no plate stands there yet.
+  const between =
+    plates.length === 0 && input.reach !== undefined
+      ? [input.start]
+      : [input.start, ...way.statesAfter].slice(0, -1);
   const end = way.statesAfter.at(-1);
 
   const marks: SceneMark[] = [
@@ -134,34 +180,50 @@ export function sphereScene(input: SphereInput): SphereScene {
     ...between
       .map((at, index): SceneMark => ({ id: `between-${index}`, kind: 'between', at }))
       .filter(({ at }) => !basis.some(({ state }) => sameState(state, at))),
-    ...(target === undefined ? [] : [{ id: 'target', kind: 'target', at: target.state } as const]),
+    ...points.marks,
+    ...images.marks,
+    ...(target === undefined
+      ? []
+      : [
+          {
+            id: 'target',
+            kind: 'target',
+            onBasis: basis.some(({ state }) => sameState(state, target.state)),
+            at: target.state,
+          } as const,
+        ]),
     ...(end === undefined ? [] : [{ id: 'reached', kind: 'reached', at: end } as const]),
   ];
 
   return {
     path: way,
     lines: [...graticule(), equator.line, ...turns.flatMap(({ line }) => line)],
-    ticks: [equator.ticks, ...turns.flatMap(({ ticks }) => ticks)],
+    ticks: [
+      ...(input.reach === undefined ? [] : reachTicks(input.reach)),
+      equator.ticks,
+      ...turns.flatMap(({ ticks }) => ticks),
+    ],
     heads: turns.flatMap(({ head }) => head),
+    flags: input.phase === true ? phaseFlags(input) : [],
     marks,
     labels: [
-      ...basis.map(({ letter, state }): SceneLabel => ({
-        id: `basis-${letter}`,
-        role: 'basis',
-        text: letter,
-        at: [state],
-      })),
+      ...basis
+        // A target that stands on a basis state and bears its letter says it once.
+        .filter(({ letter, state }) => target?.label !== letter || !sameState(state, target.state))
+        .map(({ letter, state }): SceneLabel => ({
+          id: `basis-${letter}`,
+          role: 'basis',
+          text: letter,
+          at: [state],
+        })),
       ...(target === undefined
         ? []
         : [{ id: 'target', role: 'target', text: target.label, at: [target.state] } as const]),
+      ...images.labels,
+      ...points.labels,
       ...turns.flatMap(({ labels }) => labels),
+      ...axisLabels(plates),
       ...equator.labels,
     ],
   };
-}
-
-const SAME_STATE = 1e-6;
-
-export function sameState(one: Stokes, other: Stokes): boolean {
-  return Math.hypot(one[0] - other[0], one[1] - other[1], one[2] - other[2]) < SAME_STATE;
 }

@@ -1,8 +1,17 @@
 /** The colour tokens of src/styles that the 3D drawing takes over, without their leading dashes. */
-export type SphereToken = 'paper' | 'glass' | 'wash' | 'ink' | 'rule' | 'beam';
+export type SphereToken = 'paper' | 'glass' | 'wash' | 'ink' | 'ink-3' | 'rule' | 'beam';
 
 export type LineRole =
-  'graticule' | 'equator' | 'equator-tick' | 'turn' | 'turn-tick' | 'last-turn' | 'last-turn-tick';
+  | 'graticule'
+  | 'equator'
+  | 'equator-tick'
+  | 'turn'
+  | 'turn-tick'
+  | 'last-turn'
+  | 'last-turn-tick'
+  | 'reach-hatch'
+  | 'reach-edge'
+  | 'reach-dots';
 
 /** How one kind of line is drawn in front of the limb plane and behind it; `null`: not drawn there. */
 interface Stroke {
@@ -14,6 +23,8 @@ interface Stroke {
   readonly backDotted: boolean;
   /** A paper edge that keeps the line apart from what it crosses, each side. */
   readonly haloPx: number;
+  /** Drawn in 3D as the card's own one-pixel lines: a pattern of thousands of strokes costs no triangles then. */
+  readonly hairline?: true;
 }
 
 export const STROKES: Readonly<Record<LineRole, Stroke>> = {
@@ -58,6 +69,33 @@ export const STROKES: Readonly<Record<LineRole, Stroke>> = {
     backOpacity: 0.45,
     backDotted: false,
     haloPx: 0,
+  },
+  'reach-hatch': {
+    token: 'ink-3',
+    widthPx: 0.8,
+    frontOpacity: 0.7,
+    backOpacity: 0.2,
+    backDotted: false,
+    haloPx: 0,
+    hairline: true,
+  },
+  'reach-edge': {
+    token: 'ink-3',
+    widthPx: 1,
+    frontOpacity: 1,
+    backOpacity: 0.35,
+    backDotted: false,
+    haloPx: 0,
+    hairline: true,
+  },
+  'reach-dots': {
+    token: 'ink-3',
+    widthPx: 1.3,
+    frontOpacity: 0.7,
+    backOpacity: null,
+    backDotted: false,
+    haloPx: 0,
+    hairline: true,
   },
 };
 

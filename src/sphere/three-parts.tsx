@@ -1,6 +1,14 @@
 import { Line } from '@react-three/drei';
 import { useLayoutEffect, useMemo } from 'react';
-import { Color, GreaterDepth, LessEqualDepth, ShaderMaterial, Vector2 } from 'three';
+import {
+  BufferGeometry,
+  Color,
+  Float32BufferAttribute,
+  GreaterDepth,
+  LessEqualDepth,
+  ShaderMaterial,
+  Vector2,
+} from 'three';
 import type { Palette } from './palette';
 import { DOTS_PX, LIMB, type LineRole, SHADE, STROKES } from './strokes';
 import { limbTicks } from './limb';
@@ -10,7 +18,7 @@ import type { Vec3 } from './vec';
  * What is hidden: a plane through the middle, facing the viewer, is written to the depth buffer alone. Fragments nearer than
  * it are the front, the others the back; each line is drawn once for either. That cuts exactly at the limb for any view.
  */
-const ORDER = { shade: 0, plane: 1, back: 2, halo: 3, front: 4, ring: 5 } as const;
+const ORDER = { shade: 0, plane: 1, back: 2, under: 3, halo: 4, front: 5, ring: 6 } as const;
 
 /** Opacity as a mixture with the body: where segments of one line overlap, a transparent line would show beads. */
 function mixed(palette: Palette, token: keyof Palette, opacity: number): string {
@@ -35,6 +43,33 @@ interface SideLinesProps {
   readonly role: LineRole;
   readonly palette: Palette;
   readonly radiusPx: number;
+}
+
+/** A pattern of many short strokes: the card's own lines, one thing in front and one behind. */
+export function HairSegments({ points, role, palette }: Pick<SideLinesProps, 'points' | 'role' | 'palette'>) {
+  const stroke = STROKES[role];
+  const geometry = useMemo(
+    () => new BufferGeometry().setAttribute('position', new Float32BufferAttribute(points.flat(), 3)),
+    [points],
+  );
+  useLayoutEffect(() => () => geometry.dispose(), [geometry]);
+  const sides = [
+    { side: 'back', opacity: stroke.backOpacity, depthFunc: GreaterDepth, order: ORDER.back },
+    { side: 'front', opacity: stroke.frontOpacity, depthFunc: LessEqualDepth, order: ORDER.under },
+  ] as const;
+  return sides.map(({ side, opacity, depthFunc, order }) =>
+    opacity === null ? null : (
+      <lineSegments key={side} geometry={geometry} renderOrder={order}>
+        <lineBasicMaterial
+          color={mixed(palette, stroke.token, opacity)}
+          transparent
+          depthWrite={false}
+          depthFunc={depthFunc}
+          toneMapped={false}
+        />
+      </lineSegments>
+    ),
+  );
 }
 
 /** One line, or many segments of one kind, in front of the limb plane and behind it. */

@@ -26,6 +26,12 @@ export function direction(a: Vec3): Vec3 | undefined {
   return length < 1e-9 ? undefined : scale(a, 1 / length);
 }
 
+/** `a` turned right-handed by `angleRad` about the unit vector `axis`. */
+export function turnAbout(a: Vec3, axis: Vec3, angleRad: number): Vec3 {
+  const [sin, cos] = [Math.sin(angleRad), Math.cos(angleRad)];
+  return add(add(scale(a, cos), scale(cross(axis, a), sin)), scale(axis, dot(axis, a) * (1 - cos)));
+}
+
 /** The angle between two directions in degrees; atan2, so that small angles keep their digits. */
 export function angleBetweenDeg(a: Vec3, b: Vec3): number {
   const normal = cross(a, b);

@@ -55,15 +55,17 @@ export interface Placement {
   readonly centreX: number;
   readonly centreY: number;
   readonly radius: number;
+  /** Where the theme allows no smaller type: the dark room. */
+  readonly smallestTypePx?: number;
 }
 
 /** The limb ring's outer edge with its ticks, in radii of the sphere. */
 export const RING_REACH = 1.1;
 
 /** The largest sphere that fits its box with the limb ring and its ticks around it. */
-export function placement(width: number, height: number, zoom: number): Placement {
+export function placement(width: number, height: number, zoom: number, smallestTypePx = 0): Placement {
   const fit = Math.max(20, Math.min(width / 2, height / 2) / RING_REACH - 2);
-  return { width, height, centreX: width / 2, centreY: height / 2, radius: fit * zoom };
+  return { width, height, centreX: width / 2, centreY: height / 2, radius: fit * zoom, smallestTypePx };
 }
 
 /** A stretch of a line that lies wholly on one side of the limb. */

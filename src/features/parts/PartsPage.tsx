@@ -4,6 +4,7 @@ import { FormParts } from './FormParts';
 import { MoreParts } from './MoreParts';
 import { MountParts } from './MountParts';
 import { SignParts } from './SignParts';
+import { SphereParts } from './SphereParts';
 import { StateParts } from './StateParts';
 import { TokenParts } from './TokenParts';
 import { VersionParts } from './VersionParts';
@@ -28,6 +29,7 @@ export default function PartsPage() {
         <DarkRoomParts />
       </div>
       <MoreParts />
+      <SphereParts />
     </div>
   );
 }

@@ -2,7 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { placeLabels } from '../../../src/sphere/labels';
 import { basisStates, sphereScene } from '../../../src/sphere/scene';
-import { placement, viewFrame } from '../../../src/sphere/view';
+import { placement, project, viewFrame } from '../../../src/sphere/view';
 import { angleBetweenDeg, cross, dot } from '../../../src/sphere/vec';
 import { anyInput, anyView, CONVENTION } from './support';
 
@@ -94,6 +94,25 @@ describe('the scene of the sphere', () => {
   });
 });
 
+describe('plates that stand alike', () => {
+  it('share one label at their one axis', () => {
+    const scene = sphereScene({
+      start: [0, 1, 0],
+      plates: [
+        { name: 'Q-A', fastAxisDeg: 22.5, retardanceDeg: 90 },
+        { name: 'H-1', fastAxisDeg: 202.5, retardanceDeg: 180 },
+        { name: 'Q-B', fastAxisDeg: 179.99, retardanceDeg: 90 },
+        { name: 'Q-C', fastAxisDeg: 0, retardanceDeg: 90 },
+      ],
+      convention: CONVENTION,
+    });
+    expect(scene.labels.filter(({ role }) => role === 'axis').map(({ text }) => text)).toEqual([
+      'Q-A, H-1 22.5°',
+      'Q-B, Q-C 180.0°',
+    ]);
+  });
+});
+
 describe('the labels on the page', () => {
   it('names every basis state, axis and target from any side, at finite places', () => {
     fc.assert(
@@ -111,6 +130,49 @@ describe('the labels on the page', () => {
       }),
       { numRuns: 40 },
     );
+  });
+
+  it('keeps the target’s name, its reticle and every basis letter apart where the target stands on a basis state', () => {
+    const onBasis = fc.constantFrom(
+      ...basisStates(CONVENTION).map(({ letter, state }) => ({ letter, state })),
+    );
+    const smallestType = fc.constantFrom(0, 16);
+    fc.assert(
+      fc.property(onBasis, anyView, smallestType, ({ state }, view, smallestTypePx) => {
+        const target = { label: 'out-4', state };
+        const scene = sphereScene({ start: [0.6, 0.8, 0], plates: [], target, convention: CONVENTION });
+        const frame = viewFrame(view);
+        const place = placement(456, 366, 1, smallestTypePx);
+        const placed = placeLabels(scene, frame, place);
+        const named = placed.filter(({ role }) => role === 'basis' || role === 'target');
+        expect(named).toHaveLength(7);
+        const at = project(state, frame);
+        const reticle = {
+          x: place.centreX + at.x * place.radius,
+          y: place.centreY + at.y * place.radius,
+          halfWidth: 10,
+          halfHeight: 10,
+        };
+        const target1 = named.find(({ role }) => role === 'target');
+        if (target1 === undefined) throw new Error('the target has no name');
+        for (const letter of named.filter(({ role }) => role === 'basis')) {
+          expect(boxesOverlap(letter, target1)).toBe(false);
+          expect(boxesOverlap(letter, reticle)).toBe(false);
+        }
+        expect(boxesOverlap(target1, reticle)).toBe(false);
+      }),
+      { numRuns: 300 },
+    );
+  });
+
+  it('says a letter once where the target bears the name of the basis state that it stands on', () => {
+    const scene = sphereScene({
+      start: [1, 0, 0],
+      plates: [],
+      target: { label: 'D', state: [0, 1, 0] },
+      convention: CONVENTION,
+    });
+    expect(scene.labels.filter(({ text }) => text === 'D').map(({ role }) => role)).toEqual(['target']);
   });
 
   it('never prints an engraved number over another label', () => {
@@ -137,3 +199,17 @@ describe('the labels on the page', () => {
     );
   });
 });
+
+interface Box {
+  readonly x: number;
+  readonly y: number;
+  readonly halfWidth: number;
+  readonly halfHeight: number;
+}
+
+function boxesOverlap(one: Box, other: Box): boolean {
+  return (
+    Math.abs(one.x - other.x) < one.halfWidth + other.halfWidth &&
+    Math.abs(one.y - other.y) < one.halfHeight + other.halfHeight
+  );
+}

@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import type { Convention } from '../../../shared/optics/convention';
 import type { Stokes } from '../../../shared/optics/stokes';
-import type { SphereInput } from '../../../src/sphere';
+import type { ReachInput, SphereInput } from '../../../src/sphere';
+import { spherePoint } from '../../../src/sphere/vec';
 import { HOME_VIEW, type SphereView } from '../../../src/sphere/view';
 
 export const CONVENTION: Convention = { phase: 'kz-wt', handedness: 'receiver', s3Sign: 'L' };
@@ -45,3 +46,21 @@ export const anyInput: fc.Arbitrary<SphereInput> = fc.record({
 });
 
 export const HOME = HOME_VIEW;
+
+/** A regular map of the sphere, a cell each `stepDeg` of latitude and longitude. */
+export function mapOf(
+  stepDeg: number,
+  countAt: (latitudeDeg: number, longitudeDeg: number, centre: Stokes) => number,
+): ReachInput {
+  const rows = Array.from({ length: 180 / stepDeg }, (_, row) => -90 + (row + 0.5) * stepDeg);
+  const columns = Array.from({ length: 360 / stepDeg }, (_, column) => (column + 0.5) * stepDeg);
+  return {
+    stepDeg,
+    cells: rows.flatMap((latitudeDeg) =>
+      columns.map((longitudeDeg) => {
+        const centre = spherePoint(longitudeDeg, latitudeDeg);
+        return { centre, latitudeDeg, longitudeDeg, count: countAt(latitudeDeg, longitudeDeg, centre) };
+      }),
+    ),
+  };
+}
