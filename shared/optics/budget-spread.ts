@@ -2,19 +2,15 @@ import type { UncertainParameter } from './budget-derivatives';
 import { compose, conjugate, type Quaternion } from './quaternion';
 import type { Stokes } from './stokes';
 
-/** A Gaussian cloud in a plane: ¼|δp|² is the square of the distance from (0, 0). */
-export interface PlaneSpread {
-  /** Standard deviations along the cloud's own axes, and where its centre lies in them. */
-  readonly sigma: readonly [number, number];
-  readonly centre: readonly [number, number];
-}
-
-/** Changes of a pure state are tangent to the sphere, so JΣJᵀ has rank 2: its two eigenvalues are all there is. */
+/**
+ * For a state, ¼|δp|² is the square of a distance. Changes of a pure state are tangent to the sphere, so JΣJᵀ has rank 2 and
+ * the third variance is 0.
+ */
 export function tangentSpread(
   reached: Stokes,
   target: Stokes,
   parameters: readonly UncertainParameter[],
-): PlaneSpread {
+): SpaceSpread {
   const [east, north] = tangentAxes(reached);
   let [ee, en, nn] = [0, 0, 0];
   for (const { sigma: one, derivative } of parameters) {
@@ -26,12 +22,14 @@ export function tangentSpread(
   }
   const middle = (ee + nn) / 2;
   const radius = Math.sqrt(((ee - nn) / 2) * ((ee - nn) / 2) + en * en);
-  const sigma: [number, number] = [Math.sqrt(middle + radius), Math.sqrt(Math.max(0, middle - radius))];
   const miss: Stokes = [reached[0] - target[0], reached[1] - target[1], reached[2] - target[2]];
   // The chord of the miss, in the plane's axes, keeps its length: half of it squared is the setting's own 1 − F.
   const [missEast, missNorth] = stretched(dot(miss, east), dot(miss, north), Math.sqrt(dot(miss, miss)));
   const [c, s] = majorAxis(ee, en, nn, radius);
-  return { sigma, centre: [(c * missEast + s * missNorth) / 2, (c * missNorth - s * missEast) / 2] };
+  return {
+    variances: [middle + radius, Math.max(0, middle - radius), 0],
+    centre: [(c * missEast + s * missNorth) / 2, (c * missNorth - s * missEast) / 2, 0],
+  };
 }
 
 function stretched(east: number, north: number, length: number): readonly [number, number] {

@@ -12,8 +12,7 @@ import {
   type ParameterUnit,
 } from './budget-problem';
 import { tangentSpread, turnSpread } from './budget-spread';
-import { chiSquareQuantile } from './quantile';
-import { quadraticFormQuantile } from './quantile-inversion';
+import { quadraticFormQuantile } from './quantile';
 import { stackQuaternion } from './retarder';
 
 export {
@@ -69,10 +68,11 @@ export function errorBudget(problem: BudgetProblem): Budget {
   const contributions = contributionsOf(linearised, leak, expectation).sort(
     (a, b) => b.infidelity - a.infidelity,
   );
-  const [low, high] =
+  const spread =
     goal.kind === 'prepare'
-      ? bothEnds(chiSquareQuantile, tangentSpread(reached, goal.target, parameters))
-      : bothEnds(quadraticFormQuantile, turnSpread(stackQuaternion(plates), goal.target, parameters));
+      ? tangentSpread(reached, goal.target, parameters)
+      : turnSpread(stackQuaternion(plates), goal.target, parameters);
+  const [low, high] = [quadraticFormQuantile(spread, 0.05), quadraticFormQuantile(spread, 0.95)];
   return {
     expectedInfidelity: expectation.leaked,
     expectedLow: leaked(low, leak),
@@ -189,11 +189,4 @@ function mixed(leak: number): number {
 
 function leaked(infidelity: number, leak: number): number {
   return leak === 0 ? infidelity : infidelity + mixed(leak) * (1 - 2 * infidelity);
-}
-
-function bothEnds<Spread>(
-  quantile: (spread: Spread, probability: number) => number,
-  spread: Spread,
-): readonly [number, number] {
-  return [quantile(spread, 0.05), quantile(spread, 0.95)];
 }

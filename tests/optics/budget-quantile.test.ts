@@ -1,6 +1,5 @@
 import { expect, test } from 'vitest';
-import { chiSquareQuantile } from '../../shared/optics/quantile';
-import { quadraticFormBelow, quadraticFormQuantile } from '../../shared/optics/quantile-inversion';
+import { quadraticFormBelow, quadraticFormQuantile } from '../../shared/optics/quantile';
 import type { SpaceSpread } from '../../shared/optics/budget-spread';
 import { randomStream } from './independent';
 
@@ -106,19 +105,13 @@ test.each(BY_SCIPY)(
   },
 );
 
-// The mean over 128 directions is exact to a few 1e-5 but for the low end of a cloud that lies beside its target.
-test('in a plane it agrees with the mean over directions that states use', () => {
-  const random = randomStream(3);
-  for (let k = 0; k < 60; k += 1) {
-    const sigma = [1, random()] as const;
-    const centre = k % 2 === 0 ? ([0, 0] as const) : ([3 * random(), 3 * random()] as const);
-    for (const probability of [0.05, 0.95]) {
-      const rays = chiSquareQuantile({ sigma, centre }, probability);
-      const cloud = spread([1, sigma[1] * sigma[1], 0], [centre[0], centre[1], 0]);
-      const limit = k % 2 === 1 && probability < 0.5 ? 0.02 : 1e-4;
-      expect(off(rays, quadraticFormQuantile(cloud, probability))).toBeLessThan(limit);
-    }
+test('a disc has the exponential law, a point its own distance, and a probability of 1 is refused', () => {
+  for (const probability of [0.05, 0.5, 0.95]) {
+    const found = quadraticFormQuantile(spread([9, 9, 0]), probability);
+    expect(off(found, -18 * Math.log(1 - probability))).toBeLessThan(1e-9);
   }
+  expect(quadraticFormQuantile(spread([0, 0, 0], [0.3, 0.4, 0]), 0.95)).toBeCloseTo(0.25, 15);
+  expect(() => quadraticFormQuantile(spread([1, 1, 0]), 1)).toThrow(RangeError);
 });
 
 test('from clouds as thin as needles to points far off, a quantile is found and has its probability', () => {

@@ -11,7 +11,6 @@ import {
   type Stokes,
   type UncertainPlate,
 } from '../../shared/optics';
-import { chiSquareQuantile } from '../../shared/optics/quantile';
 import { randomStream } from './independent';
 
 const DEGREE = Math.PI / 180;
@@ -141,20 +140,6 @@ test('expectation and quantiles agree with drawing every parameter at random', (
 function rotated(x: number, y: number, by: number): readonly [number, number] {
   return [x * Math.cos(by) - y * Math.sin(by), x * Math.sin(by) + y * Math.cos(by)];
 }
-
-// Quantiles of chi-square with one and two degrees of freedom: 0.0039321, 3.8414588 (printed in any table), −2 ln(1 − p).
-test('the quantile is that of chi-square with one or two degrees of freedom where the spread is a line or a disc', () => {
-  const centre = [0, 0] as const;
-  const off = (found: number, printed: number): number => Math.abs(found / printed - 1);
-  expect(off(chiSquareQuantile({ sigma: [1, 0], centre }, 0.05), 0.00393214)).toBeLessThan(1e-4);
-  expect(off(chiSquareQuantile({ sigma: [1, 0], centre }, 0.95), 3.8414588)).toBeLessThan(1e-6);
-  for (const probability of [0.05, 0.5, 0.95]) {
-    const found = chiSquareQuantile({ sigma: [3, 3], centre }, probability);
-    expect(off(found, -18 * Math.log(1 - probability))).toBeLessThan(1e-6);
-  }
-  expect(chiSquareQuantile({ sigma: [0, 0], centre: [0.3, 0.4] }, 0.95)).toBeCloseTo(0.25, 15);
-  expect(() => chiSquareQuantile({ sigma: [1, 1], centre }, 1)).toThrow(RangeError);
-});
 
 test('shares add up to 1 with the setting’s own infidelity, and halving a σ gains three quarters of its share', () => {
   const input: Stokes = [1, 0, 0];

@@ -65,7 +65,8 @@ function windowSettings(halves: readonly Half[], rest: Quaternion, limit: number
 
 /** sin²(ε/2) of what is as near as `best`, but for rounding. */
 export function asNearAs(best: number): number {
-  return (Math.sqrt(best) + 1e-12) ** 2;
+  const root = Math.sqrt(best) + 1e-12;
+  return root * root;
 }
 
 // Positions of the free plates at all of which a family must have members: none is a round angle.

@@ -118,7 +118,10 @@ function shapeAt(
     omega.map((column, l) => {
       // A held plate gets a curvature of its own and no slope: it takes no step.
       if (isHeld[k] === true || isHeld[l] === true) return k === l ? 1 : 0;
-      if (k === l) return (halves[k]?.sin ?? 0) ** 2 * w - dot(bend[k] ?? STILL, e);
+      if (k === l) {
+        const sin = halves[k]?.sin ?? 0;
+        return sin * sin * w - dot(bend[k] ?? STILL, e);
+      }
       // The plate further along the beam stands on the left: scalar part of ω_later ω_earlier E.
       return dot(row, column) * w + (k > l ? triple(row, column, e) : triple(column, row, e));
     }),

@@ -45,7 +45,10 @@ function nearestOf(members: readonly Setting[], fastAxesRad: readonly Radians[])
   let least = Infinity;
   for (const member of members) {
     let sum = 0;
-    member.fastAxesRad.forEach((angle, k) => (sum += turnBetween(angle, fastAxesRad[k] ?? angle) ** 2));
+    member.fastAxesRad.forEach((angle, k) => {
+      const apart = turnBetween(angle, fastAxesRad[k] ?? angle);
+      sum += apart * apart;
+    });
     if (sum < least) [nearest, least] = [member, sum];
   }
   return nearest;
@@ -103,7 +106,7 @@ function followerCost({ setting }: Priced, slice: readonly Priced[] = []): numbe
 function lowestOfParabola(left: number, middle: number, right: number): number {
   if (left === Infinity || right === Infinity) return middle;
   const bend = left - 2 * middle + right;
-  return bend > 0 ? middle - (right - left) ** 2 / (8 * bend) : middle;
+  return bend > 0 ? middle - ((right - left) * (right - left)) / (8 * bend) : middle;
 }
 
 function refineOne(family: Family, cost: Cost, start: Priced): Priced {
