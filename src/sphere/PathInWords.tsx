@@ -7,8 +7,13 @@ import type { SphereInput } from './scene';
 import { StateCell } from './StateCell';
 
 /** What the sphere shows in words and tables, for whoever can't see it or wants the numbers. */
-export function PathInWords({ input }: { readonly input: SphereInput }) {
-  const words = pathInWords(input);
+export function PathInWords({
+  input,
+  words = pathInWords(input),
+}: {
+  readonly input: SphereInput;
+  readonly words?: PathWords;
+}) {
   const points = input.points ?? [];
   // Without plates and target there is no path to tell, where something else is shown.
   const hasPath = input.plates.length > 0 || input.target !== undefined;

@@ -1,9 +1,10 @@
 import { Component, lazy, type ReactNode, Suspense, useId, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
-import { pathInWords } from './path-words';
+import { pathInWords, reachOf } from './path-words';
 import { figureNotes } from './figure-notes';
 import { PathInWords } from './PathInWords';
 import { type SphereInput, sphereScene } from './scene';
+import { reachTicks } from './scene-reach';
 import { SphereSvg } from './SphereSvg';
 import { useBoxWidth } from './use-box-width';
 import { useSmallestType } from './use-smallest-type';
@@ -42,8 +43,11 @@ export function Sphere({ input, view: pageView, height = DEFAULT_HEIGHT }: Props
   const helpId = useId();
   const [inWords, setInWords] = useState(false);
 
-  const scene = useMemo(() => sphereScene(input), [input]);
-  const words = useMemo(() => pathInWords(input), [input]);
+  const { reach, convention } = input;
+  const reachDrawn = useMemo(() => (reach === undefined ? [] : reachTicks(reach)), [reach]);
+  const reachTold = useMemo(() => reachOf({ reach, convention }), [reach, convention]);
+  const scene = useMemo(() => sphereScene(input, reachDrawn), [input, reachDrawn]);
+  const words = useMemo(() => pathInWords(input, reachTold), [input, reachTold]);
   const [cornerNote, ...moreNotes] = useMemo(() => figureNotes(input), [input]);
   const frame = useMemo(() => viewFrame(view), [view]);
   const smallestTypePx = useSmallestType(figure);
@@ -133,7 +137,7 @@ export function Sphere({ input, view: pageView, height = DEFAULT_HEIGHT }: Props
       )}
       {words.phase !== undefined && <p className="sphere-words">{words.phase.text}</p>}
       {words.reach !== undefined && !inWords && <p className="sphere-words">{words.reach.text}</p>}
-      {inWords && <PathInWords input={input} />}
+      {inWords && <PathInWords input={input} words={words} />}
     </div>
   );
 }

@@ -35,7 +35,7 @@ export interface PathWords {
 }
 
 /** The path as the table and the figure's name tell it; from the same turns that are drawn. */
-export function pathInWords(input: SphereInput): PathWords {
+export function pathInWords(input: SphereInput, reach: ReachWords | undefined = reachOf(input)): PathWords {
   const { convention, plates, target } = input;
   const drawn = spherePath(input);
   const words = (state: Stokes): StateWords => stateWords(state, convention);
@@ -62,7 +62,6 @@ export function pathInWords(input: SphereInput): PathWords {
       : { ...words(target.state), label: target.label, missDeg: angleBetweenDeg(end, target.state) };
   const images = imagesInWords(input.images ?? [], convention);
   const phase = input.phase === true && plates.length > 0 ? phaseInWords(input) : undefined;
-  const reach = input.reach === undefined ? undefined : reachInWords(input.reach, convention);
   const parts = [
     ...pointsSummary(input.points ?? [], convention),
     ...(reach === undefined ? [] : [reach.text]),
@@ -74,6 +73,14 @@ export function pathInWords(input: SphereInput): PathWords {
       ? summary(start, turns, plates.length > 0 ? words(end) : undefined, targetWords)
       : 'Sphere of states.';
   return { summary: [way, ...parts].join(' '), start, turns, target: targetWords, images, phase, reach };
+}
+
+/** The map in words; it takes a while, so a caller keeps it while map and convention stay. */
+export function reachOf({
+  reach,
+  convention,
+}: Pick<SphereInput, 'reach' | 'convention'>): ReachWords | undefined {
+  return reach === undefined ? undefined : reachInWords(reach, convention);
 }
 
 /** A right-handed turn about a point of the sphere looks counter-clockwise from above that point. */

@@ -45,14 +45,15 @@ export function countAt(rows: ReachRows, latitudeDeg: number, longitudeDeg: numb
   const row = nearest(rows, (one) => one.latitudeDeg, latitudeDeg);
   if (row === undefined) return undefined;
   const longitude = wrap360(longitudeDeg);
-  const cell = nearest(row.cells, (one) => one.longitudeDeg, longitude);
   const [first, last] = [row.cells[0], row.cells.at(-1)];
+  let best = nearest(row.cells, (one) => one.longitudeDeg, longitude);
   // Across 0° the first and the last cell of a row are neighbours.
-  const around = [cell, first, last].filter((one) => one !== undefined);
-  return around.reduce<{ apart: number; count: number } | undefined>((best, one) => {
-    const apart = Math.abs(wrap180(one.longitudeDeg - longitude));
-    return best === undefined || apart < best.apart ? { apart, count: one.count } : best;
-  }, undefined)?.count;
+  for (const end of [first, last]) {
+    if (end === undefined || best === undefined) continue;
+    const apart = (one: typeof end) => Math.abs(wrap180(one.longitudeDeg - longitude));
+    if (apart(end) < apart(best)) best = end;
+  }
+  return best?.count;
 }
 
 /** The share of the sphere, by area, whose count satisfies `wanted`: each row's belt shared evenly by its cells. */

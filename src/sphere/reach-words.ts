@@ -28,10 +28,10 @@ export function reachInWords(reach: ReachInput, convention: Convention): ReachWo
   const decimals = reach.stepDeg < 1 ? 1 : 0;
   const sentences = [
     outShare === 0
-      ? 'Every state is within reach'
+      ? 'Every cell of the map is within reach'
       : `${percent(outShare)} of the sphere is out of reach: ${placesInWords(regions, decimals, (state) => stateInWords(state, convention))}`,
     ...(twoWaysShare === 0 ? [] : [`${percent(twoWaysShare)} is reached in two ways`]),
-    `Read off a map with a cell each ${formatAngle(reach.stepDeg, Number.isInteger(reach.stepDeg) ? 0 : 1)} of the sphere`,
+    `Read off a map with a cell each ${formatAngle(reach.stepDeg, Number.isInteger(reach.stepDeg) ? 0 : 1)} of the sphere; a gap smaller than that can be missed`,
   ];
   return { outShare, twoWaysShare, regions, text: `${sentences.join('. ')}.` };
 }

@@ -148,8 +148,14 @@ export function spherePath({ start, plates }: Pick<SphereInput, 'start' | 'plate
   return path(start, plates.map(plateRetarder), STEP_RAD);
 }
 
-/** The whole drawing in Stokes space, before it is looked at from anywhere. Pure. */
-export function sphereScene(input: SphereInput): SphereScene {
+/**
+ * The whole drawing in Stokes space, before it is looked at from anywhere. Pure.
+ * @param reachDrawn the drawn map, where the caller has kept it from an input with the same map: it takes a while.
+ */
+export function sphereScene(
+  input: SphereInput,
+  reachDrawn: readonly SceneTicks[] = input.reach === undefined ? [] : reachTicks(input.reach),
+): SphereScene {
   const { plates, target, convention } = input;
   const way = spherePath(input);
   const turns = plates.flatMap((plate, index) => {
@@ -198,11 +204,7 @@ export function sphereScene(input: SphereInput): SphereScene {
   return {
     path: way,
     lines: [...graticule(), equator.line, ...turns.flatMap(({ line }) => line)],
-    ticks: [
-      ...(input.reach === undefined ? [] : reachTicks(input.reach)),
-      equator.ticks,
-      ...turns.flatMap(({ ticks }) => ticks),
-    ],
+    ticks: [...reachDrawn, equator.ticks, ...turns.flatMap(({ ticks }) => ticks)],
     heads: turns.flatMap(({ head }) => head),
     flags: input.phase === true ? phaseFlags(input) : [],
     marks,

@@ -90,7 +90,7 @@ describe('the reach in words', () => {
   it('says where it lies and how far it goes', () => {
     expect(reachInWords(caps(2, 20, 40), CONVENTION).text).toBe(
       '6.0\u202F% of the sphere is out of reach: around both poles to 20°. 17\u202F% is reached in two ways. ' +
-        'Read off a map with a cell each 2° of the sphere.',
+        'Read off a map with a cell each 2° of the sphere; a gap smaller than that can be missed.',
     );
     // Cells of 0.5° whose centres lie within 2.3° of a pole end at 2.5°.
     expect(reachInWords(caps(0.5, 2.3, 0), CONVENTION).text).toContain(
@@ -107,7 +107,7 @@ describe('the reach in words', () => {
         mapOf(6, () => 4),
         CONVENTION,
       ).text,
-    ).toMatch(/^Every state is within reach\./);
+    ).toMatch(/^Every cell of the map is within reach\./);
     expect(reachInWords({ stepDeg: 2, cells: [] }, CONVENTION).text).toContain('no cells');
   });
 });
