@@ -3,6 +3,7 @@ import type { MonteCarloSummary } from '../../shared/optics/monte-carlo';
 import type { ReachMap } from '../../shared/optics/solver/reach-map';
 import type { Stokes } from '../../shared/optics/stokes';
 import type { OrderPlan, SequencePlan, SequenceProblem } from '../../shared/optics/sequence';
+import type { RobustQuestion, RobustStudy } from './robust-study';
 
 /** Work that may take seconds: done aside, with its progress told, and stopped by ending the worker. */
 export type StudyRequest =
@@ -23,12 +24,14 @@ export type StudyRequest =
       readonly input: Stokes;
       readonly retardancesDeg: readonly [number, number];
       readonly stepDeg: number;
-    };
+    }
+  | { readonly kind: 'robust'; readonly question: RobustQuestion };
 
 export type StudyResult =
   | { readonly kind: 'sequence'; readonly plan: SequencePlan; readonly order: OrderPlan | null }
   | { readonly kind: 'monte-carlo'; readonly summary: MonteCarloSummary }
-  | { readonly kind: 'reach'; readonly map: ReachMap; readonly stepDeg: number };
+  | { readonly kind: 'reach'; readonly map: ReachMap; readonly stepDeg: number }
+  | { readonly kind: 'robust'; readonly study: RobustStudy };
 
 /** What a request of some kind is answered with. */
 export type ResultOf<Kind extends StudyRequest['kind']> = Extract<StudyResult, { readonly kind: Kind }>;

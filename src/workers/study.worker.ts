@@ -2,6 +2,7 @@ import { startMonteCarlo } from '../../shared/optics/monte-carlo';
 import { planOrderSteps, planSequenceSteps } from '../../shared/optics/sequence';
 import { reachRows, type ReachMap, type ReachRow } from '../../shared/optics/solver/reach-map';
 import { degrees, toRadians } from '../../shared/optics/units';
+import { robustStudy } from './robust-study';
 import type { StudyAnswer, StudyRequest, StudyResult } from './study-messages';
 
 /** Told no more often than an eye can follow. */
@@ -76,6 +77,8 @@ function study(request: StudyRequest): StudyResult {
       return { kind: 'monte-carlo', summary: runThrough(drawing(request), (share) => share) };
     case 'reach':
       return { kind: 'reach', map: runThrough(mapping(request), (share) => share), stepDeg: request.stepDeg };
+    case 'robust':
+      return { kind: 'robust', study: runThrough(robustStudy(request.question), (share) => share) };
   }
 }
 
