@@ -48,6 +48,15 @@ export function rowName(index: number, label: string): string {
 
 /** A draft solved for its bench and frozen with all that the numbers depend on, or every row that cannot be. */
 export function freeze(input: FreezeInput): Frozen {
+  const steps = freezeSteps(input);
+  for (;;) {
+    const step = steps.next();
+    if (step.done === true) return step.value;
+  }
+}
+
+/** `freeze` a row at a time, for a server that answers others between two rows: many plates take tens of milliseconds each. */
+export function* freezeSteps(input: FreezeInput): Generator<undefined, Frozen> {
   const { lab, draft, bench } = input;
   const faults: FreezeFault[] = [];
   if (draft.targets.length === 0) {
@@ -71,6 +80,7 @@ export function freeze(input: FreezeInput): Frozen {
       });
       continue;
     }
+    yield;
     const result = solveRow(row.expression, faced.problem, lab.convention, row.heldFastAxesDeg);
     if (result.status === 'unreadable') {
       faults.push({

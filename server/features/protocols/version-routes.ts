@@ -1,6 +1,7 @@
 import { z } from 'zod';
+import { setImmediate } from 'node:timers/promises';
 import { compareShown } from '../../../shared/protocol/compare-shown';
-import { freeze } from '../../../shared/protocol/freeze';
+import { freezeSteps } from '../../../shared/protocol/freeze';
 import { sameContent } from '../../../shared/protocol/same-content';
 import {
   idSchema,
@@ -30,6 +31,15 @@ const versionParams = protocolParams.extend({
     .transform(Number),
 });
 
+/** Long work in short pieces, with a turn of the event loop for everybody else between two of them. */
+async function betweenTurns<Result>(steps: Generator<undefined, Result>): Promise<Result> {
+  for (;;) {
+    const step = steps.next();
+    if (step.done === true) return step.value;
+    await setImmediate();
+  }
+}
+
 export function versionRoutes(): readonly Route[] {
   return [
     route({
@@ -54,17 +64,19 @@ export function versionRoutes(): readonly Route[] {
         if (bench.retiredAt !== null) {
           throw refused([{ path: 'benchId', message: `${bench.name} is retired. Choose a bench in use.` }]);
         }
-        const frozen = freeze({
-          lab,
-          protocolId: thing.id,
-          draft: draft.content,
-          bench,
-          number: (latestVersion?.number ?? 0) + 1,
-          parentHash: latestVersion?.contentHash ?? null,
-          message: body.message,
-          savedAt: now,
-          savedBy: user,
-        });
+        const frozen = await betweenTurns(
+          freezeSteps({
+            lab,
+            protocolId: thing.id,
+            draft: draft.content,
+            bench,
+            number: (latestVersion?.number ?? 0) + 1,
+            parentHash: latestVersion?.contentHash ?? null,
+            message: body.message,
+            savedAt: now,
+            savedBy: user,
+          }),
+        );
         if (!frozen.ok) throw refused(frozen.faults);
         const latest =
           latestVersion === null
