@@ -79,6 +79,7 @@ export function createRouter(queryClient: QueryClient) {
           Component: PlainShell,
           children: [
             { path: '/quick-angles', lazy: () => import('../features/quick-angles/QuickAnglesPage') },
+            { path: '/conventions', lazy: () => import('../features/conventions/ConventionsPage') },
             { path: '/how-numbers-are-made', lazy: () => import('../features/about/NumbersPage') },
             { path: '/privacy', lazy: () => import('../features/about/PrivacyPage') },
             { path: '/developer/parts', lazy: () => import('../features/parts/PartsPage') },

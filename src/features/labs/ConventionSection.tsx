@@ -6,6 +6,7 @@ import { SectionHead } from '../../components/SectionHead';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { TextLink } from '../../components/TextLink';
 import { FormProblem } from '../../lib/forms';
+import { conventionsHref } from '../conventions';
 import { ConventionExample } from './ConventionExample';
 import { useLab } from './lab-context';
 import { updateLab } from './queries';
@@ -68,6 +69,11 @@ export function ConventionSection() {
         />
       </div>
       <ConventionExample convention={chosen} />
+      <p className="mt-2">
+        <TextLink to={conventionsHref('state', '(H + i V)/sqrt(2)', chosen)}>
+          The same light in each convention
+        </TextLink>
+      </p>
       {changes && !same && (
         <div className="mt-4 space-y-3">
           <p>

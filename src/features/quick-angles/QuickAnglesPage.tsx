@@ -7,12 +7,12 @@ import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { SelectField } from '../../components/SelectField';
 import { TextField } from '../../components/TextField';
 import { benchesQuery } from '../benches';
+import { flagWords } from '../conventions';
 import { labQuery } from '../labs';
 import { sessionQuery } from '../session';
 import { Dials, type NamedPlate } from './Dials';
 import { idealBench, idealGateBench } from './ideal-plates';
 import { type Question, quickSettings, readQuick } from './quick-settings';
-import { flagWords } from './same-light';
 import { SameLight } from './SameLight';
 import { StateRead } from './StateRead';
 import { UnitaryRead } from './UnitaryRead';
@@ -150,7 +150,9 @@ export function Component() {
             fault={empty || read.ok ? undefined : `Column ${read.error.column}: ${read.error.message}`}
           />
           {reading?.kind === 'state' && <StateRead reading={reading} convention={convention} />}
-          {reading?.kind === 'unitary' && <UnitaryRead reading={reading} convention={convention} />}
+          {reading?.kind === 'unitary' && (
+            <UnitaryRead reading={reading} source={written} convention={convention} />
+          )}
           <SelectField
             label="written in the convention of"
             value={setId}
@@ -203,7 +205,7 @@ export function Component() {
             {bench === undefined && <p className="text-s text-ink-2 mt-3">{idealWords[question]}</p>}
           </section>
         </div>
-        {reading?.kind === 'state' && <SameLight jones={reading.jones} own={convention} />}
+        {reading?.kind === 'state' && <SameLight jones={reading.jones} source={written} own={convention} />}
       </div>
     </div>
   );

@@ -1,8 +1,17 @@
 import type { Convention, JonesVector } from '../../../shared/optics';
+import { TextLink } from '../../components/TextLink';
+import { conventionsHref } from '../conventions';
 import { lightRows } from './same-light';
 
+interface SameLightProps {
+  readonly jones: JonesVector;
+  /** As it was typed, in `own`. */
+  readonly source: string;
+  readonly own: Convention;
+}
+
 /** One state as every published convention writes it, so that two people can find out why their circular light disagrees. */
-export function SameLight({ jones, own }: { readonly jones: JonesVector; readonly own: Convention }) {
+export function SameLight({ jones, source, own }: SameLightProps) {
   return (
     <section aria-labelledby="same-light" className="border-ink border-t-[1.5px] pt-4">
       <h2 id="same-light" className="text-section mb-2">
@@ -41,7 +50,8 @@ export function SameLight({ jones, own }: { readonly jones: JonesVector; readonl
       </table>
       <p className="text-s text-ink-2 mt-2">
         S3 stands under the hand, with the sign that the convention gives it. The field turns the same way in
-        all of them.
+        all of them.{' '}
+        <TextLink to={conventionsHref('state', source, own)}>Side by side, with the field</TextLink>
       </p>
     </section>
   );

@@ -1,15 +1,19 @@
 import { type Convention, radians, toDegrees } from '../../../shared/optics';
 import type { RowReading } from '../../../shared/protocol/solve-row';
 import { Formula } from '../../components/Formula';
+import { TextLink } from '../../components/TextLink';
 import { formatAngle } from '../../lib/format';
+import { conventionsHref } from '../conventions';
 import { turnOf } from './turn-of';
 
 /** A written unitary as it was read: its formula, its turn of the sphere, and what was divided away. */
 export function UnitaryRead(props: {
   readonly reading: Extract<RowReading, { kind: 'unitary' }>;
+  /** As it was typed, in `convention`. */
+  readonly source: string;
   readonly convention: Convention;
 }) {
-  const { reading, convention } = props;
+  const { reading, source, convention } = props;
   const turn = turnOf(reading.quaternion, convention);
   return (
     <div>
@@ -22,7 +26,8 @@ export function UnitaryRead(props: {
           : `A right-handed turn of the sphere by ${formatAngle(toDegrees(radians(turn.angleRad)))} about (S1, S2, S3) = (${turn.axis
               .map((part) => part.toFixed(3).replace('-', '\u2212'))
               .join(', ')})`}
-        {reading.normalised && `. Written ${Number(reading.scale.toPrecision(4))} times that`}.
+        {reading.normalised && `. Written ${Number(reading.scale.toPrecision(4))} times that`}.{' '}
+        <TextLink to={conventionsHref('unitary', source, convention)}>In each convention</TextLink>
       </p>
     </div>
   );

@@ -8,6 +8,7 @@ import {
   translateJones,
 } from '../../../shared/optics';
 import { formatChange } from '../../lib/format';
+import { flagWords, writtenComplex } from '../conventions';
 
 /** One way of writing a state down. */
 export interface LightRow {
@@ -21,19 +22,6 @@ export interface LightRow {
   readonly s3: string;
 }
 
-const fixed = (value: number) => formatChange(value, 3).replace('+', '');
-
-function component(re: number, im: number): string {
-  if (Math.abs(im) < 5e-4) return fixed(re);
-  if (Math.abs(re) < 5e-4) return `${fixed(im)}i`;
-  return `${fixed(re)}${formatChange(im, 3)}i`;
-}
-
-/** The three flags in a line: "kz − ωt, receiver, + is L". */
-export function flagWords({ phase, handedness, s3Sign }: Convention): string {
-  return `${phase === 'kz-wt' ? 'kz − ωt' : 'ωt − kz'}, ${handedness}, + is ${s3Sign}`;
-}
-
 /** How one convention writes a state that is given in the canonical frame. */
 export function lightRow(id: string, name: string, jones: JonesVector, convention: Convention): LightRow {
   const stokes = jonesToStokes(jones);
@@ -43,7 +31,7 @@ export function lightRow(id: string, name: string, jones: JonesVector, conventio
     id,
     name,
     flags: flagWords(convention),
-    jones: `${component(shown.aRe, shown.aIm)}, ${component(shown.bRe, shown.bIm)}`,
+    jones: `${writtenComplex(shown.aRe, shown.aIm)}, ${writtenComplex(shown.bRe, shown.bIm)}`,
     hand: letter === null ? 'linear' : letter === 'L' ? 'left' : 'right',
     s3: formatChange(showStokes(stokes, convention).s3, 3),
   };

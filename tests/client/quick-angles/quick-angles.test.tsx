@@ -117,7 +117,7 @@ describe('the page of quick angles', () => {
     await user.clear(field);
     await user.type(field, 'H + ');
     expect(await screen.findByText(/^Column \d+:/u)).toBeDefined();
-    expect(screen.getByText('They stand here as soon as the state can be read.')).toBeDefined();
+    expect(screen.getByText('They stand here as soon as it can be read.')).toBeDefined();
   });
 
   it('reads the bench’s input in its lab’s convention, whichever one the state is written in', async () => {
