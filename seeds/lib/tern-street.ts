@@ -72,7 +72,7 @@ export async function seedTernStreet(
     plateIds: [plate('H-1'), plate('Q-C')],
   });
 
-  const gateBench = story.bench(at(26, '11:20'), tomas, {
+  const gateBench = story.bench(at(15, '11:20'), tomas, {
     name: 'gate bench',
     wavelengthNm: 810,
     wavelengthSigmaNm: 0.3,

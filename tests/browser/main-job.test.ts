@@ -76,10 +76,10 @@ describe.each([
     await page.getByRole('link', { name: /^Plan/u }).click();
     await page.getByRole('link', { name: 'Write a protocol' }).click();
     await page.getByLabel('name', { exact: true }).fill(protocolName);
-    await page.getByLabel('bench', { exact: true }).selectOption({ label: 'signal arm, 810 nm' });
+    await page.getByLabel('bench', { exact: true }).selectOption({ label: 'signal arm, 810 nm, H-3 Q-B' });
     await page.getByRole('button', { name: 'Write the targets' }).click();
 
-    await page.getByRole('textbox', { name: 'New target' }).focus();
+    await page.getByRole('combobox', { name: 'New target' }).focus();
     for (const expression of written) {
       await writeTarget(page, expression);
       for (const dial of await dialsOfSelected(page)) expect(dial).toMatch(/^\d{1,3}\.\d$/u);
@@ -88,7 +88,7 @@ describe.each([
     await figure.waitFor();
     await page.locator(`[data-renderer="${webgl ? 'webgl' : 'svg'}"]`).waitFor();
 
-    await page.getByRole('textbox', { name: 'New target' }).pressSequentially('cos(22.5) H + sin(22.5deg) V');
+    await page.getByRole('combobox', { name: 'New target' }).pressSequentially('cos(22.5) H + sin(22.5deg) V');
     await page.getByText('Column 5: 22.5 of what? Write 22.5deg or 22.5rad.').waitFor();
     await page.getByText('Row 6 can’t be read and holds this up.', { exact: true }).waitFor();
     await page.keyboard.press('Home');

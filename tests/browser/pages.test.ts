@@ -40,6 +40,7 @@ async function findAddresses(): Promise<Record<string, string>> {
   };
   await page.goto(`${home}/plan`);
   const designer = await hrefOf(/^Tetrahedron/u);
+  const gates = await hrefOf(/^Gates/u);
   await page.goto(`${home}/review`);
   const version = await hrefOf(/new zero/u);
   await page.goto(`${home}/bench`);
@@ -61,7 +62,10 @@ async function findAddresses(): Promise<Record<string, string>> {
     record,
     cabinet: `${home}/cabinet`,
     lab: `${home}/lab`,
+    'robust designs': `${home}/plan/robust`,
+    gates,
     'quick angles': '/quick-angles',
+    conventions: '/conventions',
     numbers: '/how-numbers-are-made',
     privacy: '/privacy',
     parts: '/developer/parts',
@@ -103,7 +107,10 @@ const pagesOfALab = [
   'results',
   'cabinet',
   'lab',
+  'robust designs',
+  'gates',
   'quick angles',
+  'conventions',
   'numbers',
   'privacy',
   'parts',

@@ -1,3 +1,4 @@
+import { usedRetardance } from '../../../shared/protocol/solving-plates';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { calibratedElsewhere, elsewhereSentence } from './elsewhere-words';
 
@@ -10,7 +11,7 @@ export function benchWarnings(
   return plates.flatMap((plate) => {
     const warnings: string[] = [];
     if (Number.isFinite(bench.wavelengthNm) && calibratedElsewhere(plate, bench.wavelengthNm)) {
-      warnings.push(elsewhereSentence(plate, bench));
+      warnings.push(elsewhereSentence(plate, usedRetardance(plate, bench), bench.wavelengthNm));
     }
     const others = plate.benches.filter(({ id }) => id !== benchId).map(({ name }) => name);
     if (others.length > 0) {

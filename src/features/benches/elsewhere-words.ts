@@ -1,4 +1,4 @@
-import { type SolvingPlate, usedRetardance } from '../../../shared/protocol/solving-plates';
+import type { UsedRetardance } from '../../../shared/optics/dispersion';
 import { formatChange } from '../../lib/format';
 
 const gap = '\u202f';
@@ -15,13 +15,16 @@ export function calibratedElsewhere(
 
 /** Where a plate was calibrated, what it is taken to retard at this bench, and why. */
 export function elsewhereSentence(
-  plate: SolvingPlate & { readonly name: string },
-  bench: { readonly wavelengthNm: number; readonly temperatureC: number | null },
+  plate: {
+    readonly name: string;
+    readonly calibration: { readonly wavelengthNm: number; readonly retardanceDeg: number };
+  },
+  used: Pick<UsedRetardance, 'source' | 'retardanceDeg' | 'shiftDeg'>,
+  benchNm: number,
 ): string {
   const { calibration } = plate;
-  const used = usedRetardance(plate, bench);
   const where = `${plate.name} was calibrated at ${calibration.wavelengthNm}${gap}nm`;
-  const here = `${bench.wavelengthNm}${gap}nm`;
+  const here = `${benchNm}${gap}nm`;
   if (used.source === 'model') {
     return `${where}. At ${here} it is taken as ${used.retardanceDeg.toFixed(2)}°, ${formatChange(used.shiftDeg, 2)}° by the dispersion of its material.`;
   }

@@ -53,7 +53,7 @@ function inputChange(content: VersionContent, live: Bench, convention: Conventio
 export function frozenElsewhere({ bench }: VersionContent): string[] {
   return bench.plates
     .filter((plate) => calibratedElsewhere(plate, bench.wavelengthNm))
-    .map((plate) => elsewhereSentence(plate, bench));
+    .map((plate) => elsewhereSentence(plate, plate.used, bench.wavelengthNm));
 }
 
 /** What became of the bench since a version froze it, in sentences; its input is written in the lab's convention. */

@@ -92,11 +92,21 @@ describe('the start of a run', () => {
   test('says which plate was frozen with a calibration of another wavelength', async () => {
     const elsewhere: Version = {
       ...version,
-      content: { ...version.content, bench: { ...version.content.bench, wavelengthNm: 780 } },
+      content: {
+        ...version.content,
+        bench: {
+          ...version.content.bench,
+          wavelengthNm: 780,
+          plates: version.content.bench.plates.map((plate) => ({
+            ...plate,
+            used: { ...plate.used, source: 'model', retardanceDeg: 186.65, shiftDeg: 7.35 },
+          })),
+        },
+      },
     };
     openBench(new FakeApi(makeRun(elsewhere), elsewhere), { path });
     expect(
-      await screen.findByText(/^H-3 was calibrated at 810.nm, and this version’s light has 780.nm/u),
+      await screen.findByText(/^H-3 was calibrated at 810.nm\. At 780.nm it is taken as 186\.65°/u),
     ).toBeTruthy();
   });
 

@@ -35,7 +35,7 @@ export function CalibratedElsewhere({ bench, dialsDeg }: CalibratedElsewhereProp
     <div className={`mb-2 text-s ${unmodelled ? 'font-strong text-fault' : 'text-ink-2'}`}>
       {elsewhere.map((plate) => (
         <p key={plate.id} className="m-0">
-          <GapText text={elsewhereSentence(plate, bench)} />
+          <GapText text={elsewhereSentence(plate, usedRetardance(plate, bench), bench.wavelengthNm)} />
         </p>
       ))}
       {movedDeg !== null && movedDeg > 0.005 && (

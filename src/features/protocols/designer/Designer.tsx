@@ -91,6 +91,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
         maySave={may('versions.save')}
         holdUp={whatHoldsUp(content.targets, views)}
         edit={draft.edit}
+        lookedAt={looked?.target.expression ?? null}
         standsAtDeg={looked === null ? null : (handDialsDeg ?? looked.view.solution.dialsDeg)}
         onChooseBench={(benchId) => {
           turnByHand(null);
@@ -151,9 +152,6 @@ export function Designer({ protocol, benches }: DesignerProps) {
               {mayWrite ? emptyWords[content.kind] : 'Its writer has only begun.'}
             </BeamEmpty>
           )}
-          {bench !== undefined && (
-            <SequencePanel {...{ content, bench, views, mayWrite }} edit={draft.edit} />
-          )}
           {looked !== null && (
             <BudgetSection
               label={looked.target.label}
@@ -162,6 +160,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
               convention={lab.convention}
               view={looked.view}
             />
+          )}
+          {bench !== undefined && content.targets.length > 1 && (
+            <SequencePanel {...{ content, bench, views, mayWrite }} edit={draft.edit} />
           )}
         </div>
         {looked !== null && <SelectedFigures {...looked} convention={lab.convention} />}

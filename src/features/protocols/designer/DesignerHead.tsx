@@ -6,6 +6,7 @@ import { Button } from '../../../components/Button';
 import { SaveState } from '../../../components/SaveState';
 import { TextLink } from '../../../components/TextLink';
 import { VersionSeal } from '../../../components/VersionSeal';
+import { conventionsHref } from '../../conventions';
 import { type DraftEdit, describePurpose, rename, setTolerance } from '../draft-edits';
 import type { Saving } from '../use-draft';
 import { RankedBy } from './RankedBy';
@@ -24,6 +25,8 @@ interface DesignerHeadProps {
   readonly maySave: boolean;
   readonly holdUp: HoldUp | null;
   readonly edit: (edit: DraftEdit) => void;
+  /** The selected row's expression, to be looked at in other conventions; null while none can be read. */
+  readonly lookedAt: string | null;
   /** What the stage's dials say, for “as on the stage”; null while nothing stands there. */
   readonly standsAtDeg: readonly number[] | null;
   readonly onChooseBench: (benchId: string) => void;
@@ -86,7 +89,16 @@ export function DesignerHead(props: DesignerHeadProps) {
             standsAtDeg={props.standsAtDeg}
             edit={edit}
           />
-          <span className="fold-first">{describeConvention(lab.convention)}</span>
+          <TextLink
+            className="fold-first"
+            to={conventionsHref(
+              content.kind === 'apply' ? 'unitary' : 'state',
+              props.lookedAt ?? (content.kind === 'apply' ? 'hadamard' : 'L'),
+              lab.convention,
+            )}
+          >
+            {describeConvention(lab.convention)}
+          </TextLink>
         </div>
       </div>
       {maySave && (

@@ -17,11 +17,44 @@ function gainText(contribution: Contribution, plates: readonly Plate[]): string 
   return `${half} would gain ${gain} %.`;
 }
 
+/** A setting that makes its target leaves far less than this of its own. */
+const negligible = 1e-12;
+
+interface LimitRowProps {
+  readonly name: string;
+  readonly sigma: string;
+  readonly share: number;
+  readonly largest: number;
+}
+
+function LimitRow({ name, sigma, share, largest }: LimitRowProps) {
+  return (
+    <tr>
+      <th scope="row" className="text-left text-s font-words">
+        {name}
+      </th>
+      <td className="text-right font-mono text-s text-ink-2">
+        <GapText text={sigma} />
+      </td>
+      <td>
+        <span className="limits-share">
+          <svg aria-hidden="true" className="limits-bar" viewBox="0 0 100 10" preserveAspectRatio="none">
+            <rect width={largest > 0 ? (100 * share) / largest : 0} height="10" fill="var(--ink)" />
+          </svg>
+          <span className="font-mono text-s">{Math.round(share * 100)} %</span>
+        </span>
+      </td>
+    </tr>
+  );
+}
+
 /** What makes the selected target worse than perfect, largest first, and what an improvement would gain. */
 export function Limits({ label, solution, plates }: LimitsProps) {
   const contributions = solution.contributions.filter(({ sigma }) => sigma > 0);
   const [first] = contributions;
-  const largest = first?.share ?? 0;
+  // What no σ explains: the target lies out of reach, and the setting is the closest there is.
+  const ownShare = solution.infidelity > negligible ? solution.infidelity / solution.expectedInfidelity : 0;
+  const largest = Math.max(ownShare, first?.share ?? 0);
   return (
     <section aria-label={`What limits ${label}`} className="limits">
       <div>
@@ -41,32 +74,17 @@ export function Limits({ label, solution, plates }: LimitsProps) {
           </tr>
         </thead>
         <tbody>
+          {ownShare > 0 && (
+            <LimitRow name="out of reach by itself" sigma="" share={ownShare} largest={largest} />
+          )}
           {contributions.map((contribution) => (
-            <tr key={`${contribution.kind} ${String(contribution.plate)}`}>
-              <th scope="row" className="text-left text-s font-words">
-                {contributionName(contribution, plates)}
-              </th>
-              <td className="text-right font-mono text-s text-ink-2">
-                <GapText text={sigmaText(contribution)} />
-              </td>
-              <td>
-                <span className="limits-share">
-                  <svg
-                    aria-hidden="true"
-                    className="limits-bar"
-                    viewBox="0 0 100 10"
-                    preserveAspectRatio="none"
-                  >
-                    <rect
-                      width={largest > 0 ? (100 * contribution.share) / largest : 0}
-                      height="10"
-                      fill="var(--ink)"
-                    />
-                  </svg>
-                  <span className="font-mono text-s">{Math.round(contribution.share * 100)} %</span>
-                </span>
-              </td>
-            </tr>
+            <LimitRow
+              key={`${contribution.kind} ${String(contribution.plate)}`}
+              name={contributionName(contribution, plates)}
+              sigma={sigmaText(contribution)}
+              share={contribution.share}
+              largest={largest}
+            />
           ))}
         </tbody>
       </table>

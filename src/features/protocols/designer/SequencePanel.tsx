@@ -50,21 +50,37 @@ function useSequenceProblem(
 
 /** How far the plates turn down the whole list, what the best choice of solutions saves, and what another order would. */
 export function SequencePanel(props: SequencePanelProps) {
+  const [open, setOpen] = useState(false);
+  return (
+    <section aria-labelledby="sequence-head" className="mt-6 border-t-[1.5px] border-ink pt-2">
+      <h2 id="sequence-head" className="m-0 text-body font-section">
+        Turning down the list
+      </h2>
+      {open ? (
+        <SequencePlanner {...props} />
+      ) : (
+        <p className="mt-1 mb-0 text-s">
+          <TextButton onClick={() => setOpen(true)}>
+            Plan the least travel or time, or another order
+          </TextButton>
+        </p>
+      )}
+    </section>
+  );
+}
+
+function SequencePlanner(props: SequencePanelProps) {
   const { content, bench, mayWrite, edit } = props;
   const [cost, setCost] = useState<'travel' | 'time'>('travel');
   const [moves, setMoves] = useState<'one-by-one' | 'together'>('one-by-one');
   const problem = useSequenceProblem(props, cost, moves);
   const { study, start, cancel } = useStudy('sequence');
   const speedsKnown = bench.plates.every(({ mount }) => mount.speedDegPerS !== null);
-  if (content.targets.length < 2) return null;
   const ask = (withOrders: boolean) => {
     if (problem !== null) start({ kind: 'sequence', problem, reorder: withOrders });
   };
   return (
-    <section aria-labelledby="sequence-head" className="mt-6 border-t-[1.5px] border-ink pt-2">
-      <h2 id="sequence-head" className="m-0 text-body font-section">
-        Turning down the list
-      </h2>
+    <>
       <div className="mt-2 flex flex-wrap items-end gap-x-6 gap-y-3">
         <SegmentedChoice
           label="make least"
@@ -119,7 +135,7 @@ export function SequencePanel(props: SequencePanelProps) {
           onTakeOrder={(order) => edit(takeOrder(order.flatMap((place) => content.targets[place]?.id ?? [])))}
         />
       )}
-    </section>
+    </>
   );
 }
 
@@ -142,7 +158,7 @@ interface SequenceAnswerProps {
 /** The saving, before it is taken. */
 function SequenceAnswer(props: SequenceAnswerProps) {
   const { plan, order, labels, objective, mayTake, onTakeChoices, onTakeOrder } = props;
-  const changes = order !== null && order.order.some((place, index) => place !== index);
+  const changes = order?.order.some((place, index) => place !== index) ?? false;
   return (
     <div role="status" className="mt-3 space-y-2">
       <table className="w-full max-w-160 text-left">

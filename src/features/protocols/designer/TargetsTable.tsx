@@ -1,4 +1,4 @@
-import { useEffect, useMemo, useRef } from 'react';
+import { type CSSProperties, useEffect, useMemo, useRef } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget, ProtocolKind } from '../../../../shared/schemas/protocols';
 import {
@@ -50,9 +50,15 @@ export function TargetsTable({
   const blank = useBlankTarget(targets);
   const { table, focusAfter } = useFocusAfter();
   const rows = mayWrite ? [...targets, blank] : targets;
+  const style: CSSProperties & Record<'--plates', number> = { '--plates': plates.length };
 
   return (
-    <table ref={table} className="targets-table">
+    <table
+      ref={table}
+      className="targets-table"
+      data-plates={plates.length > 2 ? 'many' : 'few'}
+      style={style}
+    >
       <caption className="sr-only">Targets, the dials that make them, and the expected infidelity</caption>
       <colgroup>
         <col className="w-8" />
