@@ -53,6 +53,8 @@ const labPages: RouteObject[] = [
   { index: true, lazy: () => import('../features/home/HomePage') },
   { path: 'plan', lazy: () => import('../features/protocols/ProtocolsPage') },
   { path: 'plan/new', lazy: () => import('../features/protocols/NewProtocolPage') },
+  // Before the protocols: no protocol is called so.
+  { path: 'plan/robust', lazy: () => import('../features/robust/RobustPage') },
   { path: 'plan/:protocolId', lazy: () => import('../features/protocols/DesignerPage') },
   { path: 'plan/:protocolId/versions', lazy: () => import('../features/versions/ProtocolVersionsPage') },
   { path: 'plan/:protocolId/versions/:number', lazy: () => import('../features/versions/VersionPage') },

@@ -41,6 +41,9 @@ export function Component() {
     <>
       <div className="flex flex-wrap items-baseline justify-between gap-x-8 gap-y-3 pt-3">
         <h1 className="m-0 text-title">Plan</h1>
+        <TextLink className="mr-auto" to={`/labs/${lab.id}/plan/robust`}>
+          Robust designs
+        </TextLink>
         {may('protocols.write') && (
           <ButtonLink kind="filled" to={`/labs/${lab.id}/plan/new`}>
             Write a protocol
