@@ -1,4 +1,4 @@
-import { type Contribution, errorBudget, expectedInfidelity } from './budget';
+import { errorBudget, expectedInfidelity } from './budget';
 import type { BudgetProblem } from './budget-problem';
 import { dialFor, type DialScale, fastAxisFromDial } from './dial';
 import { type Goal, unitaryInfidelity } from './goal';
@@ -64,7 +64,6 @@ export interface SettingSolution {
   /** The 5 % and 95 % points of 1 − F. */
   readonly expectedLow: number;
   readonly expectedHigh: number;
-  readonly contributions: readonly Contribution[];
   /** All plates' turning from the present dials; null where nobody said where they stand. */
   readonly travelDeg: number | null;
 }
@@ -184,7 +183,6 @@ function settingSolution(
     expectedInfidelity: budget.expectedInfidelity,
     expectedLow: budget.expectedLow,
     expectedHigh: budget.expectedHigh,
-    contributions: budget.contributions,
     travelDeg: travelDeg(fastAxesDeg, problem),
   };
 }

@@ -1,5 +1,6 @@
 import { useEffect, useRef, useState } from 'react';
 import { classNames } from './class-names';
+import { drawInTurn } from './draw-in-turn';
 
 interface FormulaProps {
   readonly latex: string;
@@ -18,18 +19,32 @@ export function Formula({ latex, source, className }: FormulaProps) {
 
   useEffect(() => {
     let gone = false;
-    const draw = async (): Promise<void> => {
-      const [{ default: katex }] = await Promise.all([import('katex'), import('katex/dist/katex.min.css')]);
-      if (gone || target.current === null) return;
-      katex.render(latex, target.current, { throwOnError: true, output: 'htmlAndMathml', strict: 'ignore' });
-      setDrawn(latex);
-    };
-    draw().catch(() => {
-      // No network, or an expression KaTeX can't set: the source text says the same.
+    let takeBack: (() => void) | null = null;
+    // No network, or an expression KaTeX can't set: the source text says the same.
+    const keepSource = () => {
       if (!gone) setDrawn(null);
-    });
+    };
+    const load = async (): Promise<void> => {
+      const [{ default: katex }] = await Promise.all([import('katex'), import('katex/dist/katex.min.css')]);
+      if (gone) return;
+      takeBack = drawInTurn(() => {
+        if (target.current === null) return;
+        try {
+          katex.render(latex, target.current, {
+            throwOnError: true,
+            output: 'htmlAndMathml',
+            strict: 'ignore',
+          });
+          setDrawn(latex);
+        } catch {
+          keepSource();
+        }
+      });
+    };
+    load().catch(keepSource);
     return () => {
       gone = true;
+      takeBack?.();
     };
   }, [latex]);
 

@@ -5,6 +5,8 @@ import type { RowResult, SolvingBench, SolvingTask } from '../../shared/protocol
 export interface JobRow {
   readonly expression: string;
   readonly heldFastAxesDeg: readonly number[] | null;
+  /** Whether its answer is wanted; the page has the others already. */
+  readonly wanted: boolean;
 }
 
 /** Rows to solve for one bench. A newer job makes an older one pointless. */
@@ -27,9 +29,9 @@ export type SolverAnswer =
   | {
       readonly kind: 'rows';
       readonly job: number;
-      /** Place of the first of `answers` among the job's rows. */
-      readonly from: number;
-      readonly answers: readonly RowAnswer[];
+      readonly answers: readonly { readonly place: number; readonly answer: RowAnswer }[];
+      /** Of the rows that were wanted. */
+      readonly doneCount: number;
       readonly done: boolean;
     }
   /** By the least travel the rows depend on one another: their choices come when the last is solved. */

@@ -5,6 +5,9 @@ import type { JobRow, RowAnswer, SolverAnswer, SolverJob } from './solver-messag
 /** So that a long table shows its first rows at once, and that a newer job is heard between two batches. */
 const rowsPerBatch = 10;
 
+/** Every keystroke leaves a text behind; past this many the lot is forgotten. */
+const mostKept = 4000;
+
 let newestJob = 0;
 
 /** What was solved for one bench, convention and task: after a keystroke only the row that was typed in is new. */
@@ -36,29 +39,29 @@ async function solve({ job, bench, convention, task, rows }: SolverJob): Promise
     answer({ kind: 'bench-unreadable', job, message: `Column ${read.error.column}: ${read.error.message}` });
     return;
   }
-  const before = known;
   const question = JSON.stringify([bench, convention, task]);
-  const solved = new Map<string, RowResult>();
-  known = { question, rows: solved };
-  const results: RowResult[] = [];
-  for (let from = 0; from < rows.length; from += rowsPerBatch) {
-    const batch = rows.slice(from, from + rowsPerBatch);
-    const answers = batch.map((row) => {
-      const key = JSON.stringify([row.expression, row.heldFastAxesDeg]);
-      const result =
-        (before.question === question ? before.rows.get(key) : undefined) ??
-        solved.get(key) ??
-        solveRow(row.expression, read.problem, convention, row.heldFastAxesDeg);
-      solved.set(key, result);
-      results.push(result);
-      return answered(row, result);
-    });
-    answer({ kind: 'rows', job, from, answers, done: from + rowsPerBatch >= rows.length });
+  if (known.question !== question || known.rows.size > mostKept) known = { question, rows: new Map() };
+  const kept = known.rows;
+  const resultOf = (row: JobRow): RowResult => {
+    const key = JSON.stringify([row.expression, row.heldFastAxesDeg]);
+    const before = kept.get(key);
+    if (before !== undefined) return before;
+    const result = solveRow(row.expression, read.problem, convention, row.heldFastAxesDeg);
+    kept.set(key, result);
+    return result;
+  };
+  const wanted = rows.flatMap((row, place) => (row.wanted ? [{ row, place }] : []));
+  for (let from = 0; from < wanted.length; from += rowsPerBatch) {
+    const answers = wanted
+      .slice(from, from + rowsPerBatch)
+      .map(({ row, place }) => ({ place, answer: answered(row, resultOf(row)) }));
+    const doneCount = from + answers.length;
+    answer({ kind: 'rows', job, answers, doneCount, done: doneCount === wanted.length });
     await pause();
     if (job !== newestJob) return;
   }
   if (task.objective === 'least-travel') {
-    answer({ kind: 'choices', job, choices: planned(rows, results, read.problem) });
+    answer({ kind: 'choices', job, choices: planned(rows, rows.map(resultOf), read.problem) });
   }
 }
 

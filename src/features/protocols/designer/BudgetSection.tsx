@@ -1,4 +1,5 @@
-import { useMemo, useState } from 'react';
+import { memo, useMemo, useState } from 'react';
+import { errorBudget } from '../../../../shared/optics/budget';
 import type { Convention } from '../../../../shared/optics/convention';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { DraftContent } from '../../../../shared/schemas/protocols';
@@ -18,7 +19,13 @@ interface BudgetSectionProps {
 }
 
 /** What limits the selected row: to first order as ranked bars, what an improvement would gain, and drawn. */
-export function BudgetSection({ label, bench, content, convention, view }: BudgetSectionProps) {
+export const BudgetSection = memo(function BudgetSection({
+  label,
+  bench,
+  content,
+  convention,
+  view,
+}: BudgetSectionProps) {
   const { kind, objective, presentDialsDeg } = content;
   const { reading, solution } = view;
   const [drawing, setDrawing] = useState(false);
@@ -26,34 +33,35 @@ export function BudgetSection({ label, bench, content, convention, view }: Budge
     () => rowBudget(bench, convention, { kind, objective, presentDialsDeg }, reading, solution.fastAxesDeg),
     [bench, convention, kind, objective, presentDialsDeg, reading, solution.fastAxesDeg],
   );
+  const contributions = useMemo(
+    () => (problem === null ? [] : errorBudget(problem).contributions),
+    [problem],
+  );
+  if (problem === null) return null;
   return (
     <>
-      <Limits label={label} solution={solution} plates={bench.plates} />
-      {problem !== null && (
-        <>
-          <WhatIf
-            problem={problem}
-            contributions={solution.contributions}
-            plates={bench.plates}
-            expectedInfidelity={solution.expectedInfidelity}
-          />
-          <p className="mt-2 mb-0 text-s">
-            <TextButton aria-expanded={drawing} onClick={() => setDrawing(!drawing)}>
-              {drawing ? 'Put the drawn budget away' : 'Draw the budget by Monte Carlo'}
-            </TextButton>
-          </p>
-          {drawing && (
-            <MonteCarloPanel
-              // Draws of another setting would stand under this one's name.
-              key={solution.fastAxesDeg.join()}
-              label={label}
-              problem={problem}
-              solution={solution}
-              toleranceInfidelity={content.toleranceInfidelity}
-            />
-          )}
-        </>
+      <Limits {...{ label, solution, contributions }} plates={bench.plates} />
+      <WhatIf
+        problem={problem}
+        contributions={contributions}
+        plates={bench.plates}
+        expectedInfidelity={solution.expectedInfidelity}
+      />
+      <p className="mt-2 mb-0 text-s">
+        <TextButton aria-expanded={drawing} onClick={() => setDrawing(!drawing)}>
+          {drawing ? 'Put the drawn budget away' : 'Draw the budget by Monte Carlo'}
+        </TextButton>
+      </p>
+      {drawing && (
+        <MonteCarloPanel
+          // Draws of another setting would stand under this one's name.
+          key={solution.fastAxesDeg.join()}
+          label={label}
+          problem={problem}
+          solution={solution}
+          toleranceInfidelity={content.toleranceInfidelity}
+        />
       )}
     </>
   );
-}
+});

@@ -1,6 +1,5 @@
 import { useEffect, useState } from 'react';
 import { sameConvention } from '../../../../shared/optics/convention';
-import { parseState } from '../../../../shared/optics/expression';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
 import { BeamEmpty, BeamWorking, BeamWrong } from '../../../components/BeamState';
@@ -16,15 +15,16 @@ import { BudgetSection } from './BudgetSection';
 import { CalibratedElsewhere } from './CalibratedElsewhere';
 import { ConflictDialog } from './ConflictDialog';
 import { DesignerHead } from './DesignerHead';
-import { lightOf } from './followed-light';
-import { shownSolutions, viewOf, whatHoldsUp } from './row-view';
+import { shownSolutions, whatHoldsUp } from './row-view';
 import { SaveVersionDialog } from './SaveVersionDialog';
 import { SelectedFigures } from './SelectedFigures';
 import { SequencePanel } from './SequencePanel';
 import { SelectedStage } from './SelectedStage';
 import { TargetsTable } from './TargetsTable';
 import { useDesignerCommands } from './use-designer-commands';
+import { useLooked } from './use-looked';
 import { useRemovedRow } from './use-removed-row';
+import { useRowViews } from './use-row-views';
 import { VocabularyDialog } from './VocabularyDialog';
 import { useDesignerView } from './view-store';
 import './designer.css';
@@ -33,6 +33,8 @@ const emptyWords = {
   prepare: 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).',
   apply: 'Write a unitary in the row above, like hadamard or rotate(x, 90deg).',
 } as const;
+
+const noPlates: Bench['plates'] = [];
 
 interface DesignerProps {
   readonly protocol: Protocol;
@@ -47,12 +49,12 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const [saving, setSaving] = useState(false);
   const [asking, setAsking] = useState<'rows' | 'words' | null>(null);
   const [writtenIn, setWrittenIn] = useState(lab.convention);
-  const { selectedId, select, listSolutions, turnByHand, followed, handDialsDeg } = useDesignerView();
+  const { selectedId, select, turnByHand, handDialsDeg } = useDesignerView();
 
   const { content } = draft;
   const bench = benches.find(({ id }) => id === content.benchId);
   const solved = useSolvedRows(content.targets, bench ?? null, lab.convention, content);
-  const views = content.targets.map((target) => viewOf(target, solved.rows.get(target.id)));
+  const views = useRowViews(content.targets, solved.rows);
   const commands = useDesignerCommands({ draft, views, mayWrite });
   const removed = useRemovedRow(content);
 
@@ -65,17 +67,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
 
   const target = content.targets[place];
   const view = views[place];
-  const input = bench === undefined ? null : parseState(bench.inputExpression, lab.convention);
-  const looked =
-    bench !== undefined && input?.ok === true && target !== undefined && view?.status === 'solved'
-      ? {
-          bench,
-          input: content.kind === 'apply' ? lightOf(followed, lab.convention) : input.stokes,
-          followed: content.kind === 'apply' ? followed : null,
-          target,
-          view,
-        }
-      : null;
+  const looked = useLooked({ content, bench, convention: lab.convention, target, view });
 
   return (
     <>
@@ -117,7 +109,6 @@ export function Designer({ protocol, benches }: DesignerProps) {
           {...looked}
           toleranceInfidelity={content.toleranceInfidelity}
           convention={lab.convention}
-          onListSolutions={() => listSolutions(looked.target.id)}
         />
       )}
       <div className="designer-body">
@@ -127,7 +118,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
               targets={content.targets}
               views={views}
               kind={content.kind}
-              plates={bench?.plates ?? []}
+              plates={bench?.plates ?? noPlates}
               toleranceInfidelity={content.toleranceInfidelity}
               mayWrite={mayWrite}
               edit={draft.edit}

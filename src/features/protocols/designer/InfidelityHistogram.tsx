@@ -68,7 +68,12 @@ export function InfidelityHistogram({ summary, tolerance, firstOrder, asTable }:
         {powers.map((power) => (
           <g key={power} transform={`translate(${x(10 ** power)} ${plot.base})`}>
             <line y2={5} stroke="var(--ink)" />
-            <text y={20} textAnchor="middle" className="histogram-text" fill="var(--ink-2)">
+            <text
+              y={20}
+              textAnchor={x(10 ** power) > plot.right - 16 ? 'end' : 'middle'}
+              className="histogram-text"
+              fill="var(--ink-2)"
+            >
               10
               <tspan dy={-5} className="histogram-power">
                 {String(power).replace('-', '\u2212')}

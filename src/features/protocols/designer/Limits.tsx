@@ -7,6 +7,8 @@ import type { SettingSolution } from './row-view';
 interface LimitsProps {
   readonly label: string;
   readonly solution: SettingSolution;
+  /** Of that setting, largest first. */
+  readonly contributions: readonly Contribution[];
   readonly plates: readonly Plate[];
 }
 
@@ -49,9 +51,9 @@ function LimitRow({ name, sigma, share, largest }: LimitRowProps) {
 }
 
 /** What makes the selected target worse than perfect, largest first, and what an improvement would gain. */
-export function Limits({ label, solution, plates }: LimitsProps) {
-  const contributions = solution.contributions.filter(({ sigma }) => sigma > 0);
-  const [first] = contributions;
+export function Limits({ label, solution, contributions, plates }: LimitsProps) {
+  const uncertain = contributions.filter(({ sigma }) => sigma > 0);
+  const [first] = uncertain;
   // What no σ explains: the target lies out of reach, and the setting is the closest there is.
   const ownShare = solution.infidelity > negligible ? solution.infidelity / solution.expectedInfidelity : 0;
   const largest = Math.max(ownShare, first?.share ?? 0);
@@ -77,7 +79,7 @@ export function Limits({ label, solution, plates }: LimitsProps) {
           {ownShare > 0 && (
             <LimitRow name="out of reach by itself" sigma="" share={ownShare} largest={largest} />
           )}
-          {contributions.map((contribution) => (
+          {uncertain.map((contribution) => (
             <LimitRow
               key={`${contribution.kind} ${String(contribution.plate)}`}
               name={contributionName(contribution, plates)}

@@ -1,4 +1,4 @@
-import { useMemo, useState } from 'react';
+import { memo, useMemo, useState } from 'react';
 import type { Convention } from '../../../../shared/optics/convention';
 import { fastAxisFromDial } from '../../../../shared/optics/dial';
 import type { Stokes } from '../../../../shared/optics/stokes';
@@ -24,7 +24,7 @@ interface SelectedFiguresProps {
 }
 
 /** The path of the light on the sphere, and its field behind the last plate, for the dials as they stand on the stage. */
-export function SelectedFigures(props: SelectedFiguresProps) {
+export const SelectedFigures = memo(function SelectedFigures(props: SelectedFiguresProps) {
   const { bench, input, followed, target, view, convention } = props;
   const { handDialsDeg, overlay } = useDesignerView();
   const dialsDeg = handDialsDeg ?? view.solution.dialsDeg;
@@ -68,4 +68,4 @@ export function SelectedFigures(props: SelectedFiguresProps) {
       </div>
     </div>
   );
-}
+});

@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import type { Convention } from '../../../../shared/optics/convention';
 import { fastAxisFromDial } from '../../../../shared/optics/dial';
 import type { Stokes } from '../../../../shared/optics/stokes';
@@ -23,7 +24,6 @@ interface SelectedStageProps {
   readonly view: Extract<RowView, { status: 'solved' }>;
   readonly toleranceInfidelity: number;
   readonly convention: Convention;
-  readonly onListSolutions: () => void;
 }
 
 function stagePlate(plate: Plate, bench: Bench, dialDeg: number, solutionDialDeg: number): StagePlate {
@@ -42,9 +42,9 @@ function stagePlate(plate: Plate, bench: Bench, dialDeg: number, solutionDialDeg
 }
 
 /** The bench with the selected row's angles on it, or with a plate turned by hand to see what that does. */
-export function SelectedStage(props: SelectedStageProps) {
-  const { bench, input, followed, target, view, toleranceInfidelity, convention, onListSolutions } = props;
-  const { handDialsDeg, turnByHand } = useDesignerView();
+export const SelectedStage = memo(function SelectedStage(props: SelectedStageProps) {
+  const { bench, input, followed, target, view, toleranceInfidelity, convention } = props;
+  const { handDialsDeg, turnByHand, listSolutions } = useDesignerView();
   const solutionDials = view.solution.dialsDeg;
   const dialsDeg = handDialsDeg ?? solutionDials;
   const reached = standingAt({ bench, input, reading: view.reading, dialsDeg });
@@ -77,8 +77,8 @@ export function SelectedStage(props: SelectedStageProps) {
         plates={bench.plates}
         toleranceInfidelity={toleranceInfidelity}
         byHandInfidelity={handDialsDeg === null ? null : reached.infidelity}
-        onListSolutions={onListSolutions}
+        onListSolutions={() => listSolutions(target.id)}
       />
     </BeamLineStage>
   );
-}
+});

@@ -1,4 +1,4 @@
-import { useMemo, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
 import type { SequencePlan, SequenceProblem } from '../../../../shared/optics/sequence';
 import { mountMotion } from '../../../../shared/protocol/choose-solutions';
 import { targetPlates } from '../../../../shared/protocol/solving-plates';
@@ -75,6 +75,8 @@ function SequencePlanner(props: SequencePanelProps) {
   const [moves, setMoves] = useState<'one-by-one' | 'together'>('one-by-one');
   const problem = useSequenceProblem(props, cost, moves);
   const { study, start, cancel } = useStudy('sequence');
+  // A plan of other rows would stand under these.
+  useEffect(() => cancel, [problem, cancel]);
   const speedsKnown = bench.plates.every(({ mount }) => mount.speedDegPerS !== null);
   const ask = (withOrders: boolean) => {
     if (problem !== null) start({ kind: 'sequence', problem, reorder: withOrders });

@@ -1,4 +1,4 @@
-import { useEffect, useRef, type KeyboardEvent } from 'react';
+import { memo, useEffect, useRef, type KeyboardEvent } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget, ProtocolKind } from '../../../../shared/schemas/protocols';
 import { classNames } from '../../../components/class-names';
@@ -12,17 +12,19 @@ import { RowNote } from './RowNote';
 import type { RowView } from './row-view';
 import { SolutionsList } from './SolutionsList';
 import { SourceField } from './SourceField';
+import { useNearScreen } from './use-near-screen';
 
-export interface RowHandlers {
-  readonly onSelect: () => void;
-  readonly onOpenSource: () => void;
-  readonly onWrite: (expression: string) => void;
-  readonly onLabel: (label: string) => void;
-  readonly onDone: () => void;
-  readonly onCancel: () => void;
-  readonly onHold: (fastAxesDeg: readonly number[] | null) => void;
-  readonly onListSolutions: (open: boolean) => void;
-  readonly onAskWords: () => void;
+/** What can be done with a row. The same object for all rows and drawings, so that a row is drawn again only when it changed. */
+export interface RowActions {
+  readonly select: (target: DraftTarget) => void;
+  readonly openSource: (target: DraftTarget) => void;
+  readonly write: (target: DraftTarget, expression: string) => void;
+  readonly label: (target: DraftTarget, label: string) => void;
+  readonly done: () => void;
+  readonly cancel: (target: DraftTarget) => void;
+  readonly hold: (target: DraftTarget, fastAxesDeg: readonly number[] | null) => void;
+  readonly listSolutions: (target: DraftTarget, open: boolean) => void;
+  readonly askWords: () => void;
 }
 
 const placeholders = {
@@ -32,7 +34,8 @@ const placeholders = {
 
 const chipWidthPx = 100;
 
-interface TargetRowProps extends RowHandlers {
+interface TargetRowProps {
+  readonly actions: RowActions;
   readonly place: number;
   readonly target: DraftTarget;
   readonly view: RowView;
@@ -48,11 +51,14 @@ interface TargetRowProps extends RowHandlers {
 }
 
 /** One target: what it is, where each plate must stand for it, and how well that does. At most one note below. */
-export function TargetRow(props: TargetRowProps) {
-  const { place, target, view, kind, plates, toleranceInfidelity, selected, editing, blank, mayWrite } =
-    props;
+export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
+  const { place, target, view, kind, plates, toleranceInfidelity, selected, editing, blank } = props;
+  const { actions, mayWrite } = props;
   const row = useRef<HTMLTableRowElement>(null);
   const solved = view.status === 'solved' ? view : null;
+  const near = useNearScreen(row);
+  // Of two hundred rows a few are on the screen: the others keep their place and their words.
+  const drawn = near || selected || editing ? solved : null;
   const showsSource = mayWrite && (editing || blank || view.status === 'unreadable');
   const name = blank ? 'a new target' : `target ${target.label}`;
 
@@ -71,11 +77,13 @@ export function TargetRow(props: TargetRowProps) {
         tabIndex={selected && !blank ? 0 : -1}
         aria-selected={selected}
         data-blank={blank ? '' : undefined}
-        onClick={props.onSelect}
+        onClick={() => {
+          if (!blank) actions.select(target);
+        }}
         onKeyDown={(event: KeyboardEvent) => {
           if (event.key === 'Enter' && event.target === event.currentTarget && mayWrite) {
             event.preventDefault();
-            props.onOpenSource();
+            actions.openSource(target);
           }
         }}
         className={classNames(
@@ -93,10 +101,10 @@ export function TargetRow(props: TargetRowProps) {
               className="label-input"
               maxLength={24}
               value={target.label}
-              onChange={(event) => props.onLabel(event.target.value)}
+              onChange={(event) => actions.label(target, event.target.value)}
               onKeyDown={(event) => {
-                if (event.key === 'Enter') props.onDone();
-                if (event.key === 'Escape') props.onCancel();
+                if (event.key === 'Enter') actions.done();
+                if (event.key === 'Escape') actions.cancel(target);
               }}
             />
           ) : (
@@ -114,57 +122,62 @@ export function TargetRow(props: TargetRowProps) {
               mode={kind === 'prepare' ? 'state' : 'unitary'}
               fault={view.status === 'unreadable' ? view.error : null}
               latex={editing && solved !== null ? solved.reading.latex : null}
-              onAskWords={props.onAskWords}
+              onAskWords={actions.askWords}
               autoFocus={editing}
               placeholder={blank ? placeholders[kind] : ''}
-              onChange={props.onWrite}
-              onDone={props.onDone}
-              onCancel={props.onCancel}
-              onFocus={blank ? undefined : props.onSelect}
+              onChange={(expression) => actions.write(target, expression)}
+              onDone={actions.done}
+              onCancel={() => actions.cancel(target)}
+              onFocus={blank ? undefined : () => actions.select(target)}
             />
           ) : (
-            <ExpressionText {...{ target, solved, mayWrite }} onOpen={props.onOpenSource} />
+            <ExpressionText
+              {...{ target, mayWrite }}
+              solved={drawn}
+              onOpen={() => actions.openSource(target)}
+            />
           )}
         </td>
         {view.status !== 'unreadable' && !blank && (
           <>
             {plates.map((plate, index) => (
               <td key={plate.id} className={numbers}>
-                {solved !== null && (
+                {drawn !== null && (
                   <>
                     <span className="font-mono text-dial">
-                      {formatDial(solved.solution.dialsDeg[index] ?? 0, plate.mount.resolutionDeg)}
+                      {formatDial(drawn.solution.dialsDeg[index] ?? 0, plate.mount.resolutionDeg)}
                     </span>
                     <span className="theta">
-                      {formatTheta(dialledAxisDeg(plate, solved.solution.dialsDeg[index] ?? 0))}
+                      {formatTheta(dialledAxisDeg(plate, drawn.solution.dialsDeg[index] ?? 0))}
                     </span>
                   </>
                 )}
               </td>
             ))}
             <td className={classNames(numbers, 'chip-cell')}>
-              {solved !== null && (
+              {drawn !== null && (
                 <span className="chip-line">
                   <FidelityChip
                     width={chipWidthPx}
                     infidelity={{
-                      value: solved.solution.expectedInfidelity,
-                      low: solved.solution.expectedLow,
-                      high: solved.solution.expectedHigh,
+                      value: drawn.solution.expectedInfidelity,
+                      low: drawn.solution.expectedLow,
+                      high: drawn.solution.expectedHigh,
                     }}
                     tolerance={toleranceInfidelity}
                     kind="predicted"
                   />
-                  <Scientific value={solved.solution.expectedInfidelity} />
+                  <Scientific value={drawn.solution.expectedInfidelity} />
                 </span>
               )}
             </td>
             <td className={classNames(numbers, 'pr-1 font-mono text-s')}>
-              {solved !== null && (
+              {drawn !== null && (
                 <SolutionCount
-                  {...{ solved, name }}
+                  solved={drawn}
+                  name={name}
                   open={props.solutionsOpen}
-                  onOpen={props.onListSolutions}
+                  onOpen={(open) => actions.listSolutions(target, open)}
                 />
               )}
             </td>
@@ -175,11 +188,15 @@ export function TargetRow(props: TargetRowProps) {
         <RowNote view={solved} toleranceInfidelity={toleranceInfidelity} columns={plates.length + 5} />
       )}
       {solved !== null && props.solutionsOpen && (
-        <SolutionsList {...{ view: solved, plates, mayWrite }} onHold={props.onHold} label={target.label} />
+        <SolutionsList
+          {...{ view: solved, plates, mayWrite }}
+          onHold={(fastAxesDeg) => actions.hold(target, fastAxesDeg)}
+          label={target.label}
+        />
       )}
     </>
   );
-}
+});
 
 interface ExpressionTextProps {
   readonly target: DraftTarget;

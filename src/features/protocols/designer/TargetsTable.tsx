@@ -12,7 +12,7 @@ import {
   writeLabel,
 } from '../draft-edits';
 import type { RowView } from './row-view';
-import { TargetRow } from './TargetRow';
+import { type RowActions, TargetRow } from './TargetRow';
 import { useDesignerView } from './view-store';
 
 interface TargetsTableProps {
@@ -26,6 +26,8 @@ interface TargetsTableProps {
   readonly onAskWords: () => void;
 }
 
+const emptyView: RowView = { status: 'empty' };
+
 /** The targets in order, and below them an empty row to write the next one in. */
 export function TargetsTable({
   targets,
@@ -37,18 +39,10 @@ export function TargetsTable({
   edit,
   onAskWords,
 }: TargetsTableProps) {
-  const {
-    selectedId,
-    editingId,
-    openedTarget,
-    solutionsOfId,
-    select,
-    openSource,
-    closeSource,
-    listSolutions,
-  } = useDesignerView();
+  const { selectedId, editingId, solutionsOfId } = useDesignerView();
   const blank = useBlankTarget(targets);
   const { table, focusAfter } = useFocusAfter();
+  const actions = useRowActions({ blank, edit, focusAfter, onAskWords });
   const rows = mayWrite ? [...targets, blank] : targets;
   const style: CSSProperties & Record<'--plates', number> = { '--plates': plates.length };
 
@@ -102,7 +96,7 @@ export function TargetsTable({
               key={target.id}
               place={place}
               target={target}
-              view={views[place] ?? { status: 'empty' }}
+              view={views[place] ?? emptyView}
               kind={kind}
               plates={plates}
               toleranceInfidelity={toleranceInfidelity}
@@ -111,38 +105,7 @@ export function TargetsTable({
               solutionsOpen={target.id === solutionsOfId}
               blank={isBlank}
               mayWrite={mayWrite}
-              onSelect={() => {
-                if (!isBlank) select(target.id);
-              }}
-              onOpenSource={() => openSource(target.id, target)}
-              onWrite={(expression) => {
-                if (!isBlank) {
-                  edit(writeExpression(target.id, expression));
-                  return;
-                }
-                if (expression.trim() === '') return;
-                edit(addTarget({ ...blank, expression }));
-                openSource(target.id, null);
-              }}
-              onLabel={(label) => edit(writeLabel(target.id, label))}
-              onDone={() => {
-                // A row that was just written leads to the next one; a row that was changed keeps the focus.
-                focusAfter(openedTarget === null ? blankField : selectedRow);
-                closeSource();
-              }}
-              onCancel={() => {
-                if (target.id === editingId) {
-                  edit(openedTarget === null ? removeTarget(target.id) : restoreTarget(openedTarget));
-                  focusAfter(openedTarget === null ? blankField : selectedRow);
-                }
-                closeSource();
-              }}
-              onAskWords={onAskWords}
-              onHold={(fastAxesDeg) => edit(holdSolution(target.id, fastAxesDeg))}
-              onListSolutions={(open) => {
-                select(target.id);
-                listSolutions(open ? target.id : null);
-              }}
+              actions={actions}
             />
           );
         })}
@@ -153,6 +116,59 @@ export function TargetsTable({
 
 const blankField = '[data-blank] input';
 const selectedRow = 'tr[aria-selected="true"]';
+
+interface Newest {
+  readonly blank: DraftTarget;
+  readonly edit: (edit: DraftEdit) => void;
+  readonly focusAfter: (selector: string) => void;
+  readonly onAskWords: () => void;
+}
+
+/** What rows can do, made once: each looks up what is newest when it is done, not when it was drawn. */
+function useRowActions(newest: Newest): RowActions {
+  const latest = useRef(newest);
+  useEffect(() => {
+    latest.current = newest;
+  });
+  return useMemo((): RowActions => {
+    const view = useDesignerView.getState;
+    const edit = (change: DraftEdit) => latest.current.edit(change);
+    return {
+      select: ({ id }) => view().select(id),
+      openSource: (target) => view().openSource(target.id, target),
+      write: (target, expression) => {
+        const { blank } = latest.current;
+        if (target.id !== blank.id) {
+          edit(writeExpression(target.id, expression));
+          return;
+        }
+        if (expression.trim() === '') return;
+        edit(addTarget({ ...blank, expression }));
+        view().openSource(target.id, null);
+      },
+      label: ({ id }, label) => edit(writeLabel(id, label)),
+      done: () => {
+        // A row that was just written leads to the next one; a row that was changed keeps the focus.
+        latest.current.focusAfter(view().openedTarget === null ? blankField : selectedRow);
+        view().closeSource();
+      },
+      cancel: (target) => {
+        const { editingId, openedTarget, closeSource } = view();
+        if (target.id === editingId) {
+          edit(openedTarget === null ? removeTarget(target.id) : restoreTarget(openedTarget));
+          latest.current.focusAfter(openedTarget === null ? blankField : selectedRow);
+        }
+        closeSource();
+      },
+      hold: ({ id }, fastAxesDeg) => edit(holdSolution(id, fastAxesDeg)),
+      listSolutions: ({ id }, open) => {
+        view().select(id);
+        view().listSolutions(open ? id : null);
+      },
+      askWords: () => latest.current.onAskWords(),
+    };
+  }, []);
+}
 
 /** Moves the focus once the field that had it is gone: left alone it would fall to the page, and the next keys with it. */
 function useFocusAfter() {

@@ -36,11 +36,13 @@ export function WhatIf({ problem, contributions, plates, expectedInfidelity }: W
           value={contributions.indexOf(chosen)}
           onChange={(event) => setPlace(Number(event.target.value))}
         >
-          {contributions.map((contribution, index) => (
-            <option key={contributionName(contribution, plates)} value={index}>
-              {contributionName(contribution, plates)}
-            </option>
-          ))}
+          {contributions.map((contribution, index) =>
+            contribution.sigma === 0 ? null : (
+              <option key={contributionName(contribution, plates)} value={index}>
+                {contributionName(contribution, plates)}
+              </option>
+            ),
+          )}
         </select>
       </label>{' '}
       <label>
