@@ -134,7 +134,7 @@ function PowerSentence({ design }: { readonly design: Design }) {
     return (
       <>
         Even at no error 1 − F is <Scientific value={design.robustness.infidelityAtZero} mono={false} />: this
-        setting only keeps it flat.
+        setting misses the goal and only keeps 1 − F low over the range.
       </>
     );
   }
@@ -175,7 +175,9 @@ function HeldSentence({ design, curves, tolerance }: HeldSentenceProps) {
   const range = (held: typeof composite) =>
     held === null
       ? 'not even at no error'
-      : `from ${errorWords(Number(held.from.toPrecision(2)), design.error)} to ${errorWords(Number(held.to.toPrecision(2)), design.error)}`;
+      : held.from <= (curves.errors[0] ?? 0) && held.to >= (curves.errors.at(-1) ?? 0)
+        ? `over all of the ±${errorWords(2 * design.width, design.error)} drawn`
+        : `from ${errorWords(Number(held.from.toPrecision(2)), design.error)} to ${errorWords(Number(held.to.toPrecision(2)), design.error)}`;
   return (
     <>
       It is within <Scientific value={tolerance} mono={false} /> <GapText text={range(composite)} />, the
