@@ -111,8 +111,9 @@ function FoundNote({ asked, study }: Answered) {
   const count = study.found.settings.length;
   return (
     <>
-      {count === 1 ? '1 setting' : `${count} settings`} for {asked.source} with {plates},{' '}
-      <GapText text={rangeWords(asked)} />; {starts === 1 ? '1 start' : `${starts} starts`} from seed {seed}
+      {count === 0 ? 'no setting' : count === 1 ? '1 setting' : `${count} settings`} for {asked.source} with{' '}
+      {plates}, <GapText text={rangeWords(asked)} />; {starts === 1 ? '1 start' : `${starts} starts`} from
+      seed {seed}
     </>
   );
 }

@@ -12,7 +12,7 @@ const LOWEST = -12;
 const MOST_NUMBERS = 6;
 
 /**
- * The axis for these curves: the worst value stands above its foot, and it reaches one power past the tolerance at
+ * The axis for these curves: the worst value stands on its foot or above, and it reaches one power past the tolerance at
  * least, further where the better curve is that good an eighth of the way out. Never past 1e-12: at no error a curve has no foot there.
  */
 export function infidelityAxis(shown: {
@@ -21,7 +21,7 @@ export function infidelityAxis(shown: {
   readonly tolerance: number;
 }): InfidelityAxis {
   const power = (value: number): number => Math.log10(Math.max(value, 1e-300));
-  const worst = Math.min(0, Math.ceil(power(Math.max(shown.worst, shown.tolerance)) + 0.05));
+  const worst = Math.min(0, Math.ceil(power(Math.max(shown.worst, shown.tolerance))));
   const wanted = Math.min(power(shown.better), power(shown.tolerance) - 1);
   const best = Math.min(worst - 2, Math.max(LOWEST, Math.floor(wanted)));
   const step = Math.ceil((worst - best) / MOST_NUMBERS);
