@@ -3,7 +3,7 @@ import { benchProblem, type RowProblem, type RowResult, solveRow } from '../../s
 import type { JobRow, RowAnswer, SolverAnswer, SolverJob } from './solver-messages';
 
 /** So that a long table shows its first rows at once, and that a newer job is heard between two batches. */
-const rowsPerBatch = 10;
+const rowsPerBatch = 5;
 
 /** Every keystroke leaves a text behind; past this many the lot is forgotten. */
 const mostKept = 4000;

@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react';
+import { startTransition, useEffect, useState } from 'react';
 import { sameConvention } from '../../../../shared/optics/convention';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
@@ -173,8 +173,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
           convention={lab.convention}
           present={content.targets.length}
           onAdd={(rows) => {
-            draft.edit(addRows(newTargets(content.targets, rows)));
             setAsking(null);
+            // Two hundred rows are drawn in slices.
+            startTransition(() => draft.edit(addRows(newTargets(content.targets, rows))));
           }}
           onClose={() => setAsking(null)}
         />

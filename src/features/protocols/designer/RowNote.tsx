@@ -9,6 +9,8 @@ interface RowNoteProps {
   readonly view: Extract<RowView, { status: 'solved' }>;
   readonly toleranceInfidelity: number;
   readonly columns: number;
+  /** What is no more than worth knowing is said of the selected row only. */
+  readonly selected: boolean;
 }
 
 const plateWords = ['first', 'second', 'third', 'fourth', 'fifth', 'sixth'] as const;
@@ -20,7 +22,7 @@ function familyWords({ freePlates, solutions }: SolvedTarget): string {
 }
 
 /** The one thing most worth saying about a row, under it and across. */
-export function RowNote({ view, toleranceInfidelity, columns }: RowNoteProps) {
+export function RowNote({ view, toleranceInfidelity, columns, selected }: RowNoteProps) {
   const { solved, solution, reading, heldIsGone } = view;
   const verdict = toleranceVerdict(solution, toleranceInfidelity);
   if (heldIsGone) {
@@ -52,6 +54,7 @@ export function RowNote({ view, toleranceInfidelity, columns }: RowNoteProps) {
       </NoteLine>
     );
   }
+  if (!selected) return null;
   if (solved.kind === 'family') return <NoteLine columns={columns}>{familyWords(solved)}</NoteLine>;
   if (reading.normalised && reading.kind === 'unitary') {
     return (

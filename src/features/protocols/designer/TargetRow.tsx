@@ -68,7 +68,7 @@ export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
     if (selected && !editing && !blank && active instanceof HTMLTableRowElement) row.current?.focus();
   }, [selected, editing, blank]);
 
-  const numbers = classNames('text-right whitespace-nowrap', solved?.stale === true && 'text-ink-3');
+  const numbers = classNames('text-right whitespace-nowrap', drawn?.stale === true && 'text-ink-3');
 
   return (
     <>
@@ -185,7 +185,7 @@ export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
         )}
       </tr>
       {solved !== null && (
-        <RowNote view={solved} toleranceInfidelity={toleranceInfidelity} columns={plates.length + 5} />
+        <RowNote {...{ toleranceInfidelity, selected }} view={solved} columns={plates.length + 5} />
       )}
       {solved !== null && props.solutionsOpen && (
         <SolutionsList

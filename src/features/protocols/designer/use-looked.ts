@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useMemo, useState } from 'react';
 import type { Convention } from '../../../../shared/optics/convention';
 import { parseState } from '../../../../shared/optics/expression';
 import type { Stokes } from '../../../../shared/optics/stokes';
@@ -27,7 +27,10 @@ interface Looking {
   readonly view: RowView | undefined;
 }
 
-/** The same object as long as nothing of it changed, so that drawing two hundred rows does not redraw the sphere; null while the row can't be read. */
+/**
+ * The same object as long as nothing of it changed, so that drawing two hundred rows does not redraw the sphere. While the
+ * selected row can't be read, what was looked at before stays, under its own label; null before anything was.
+ */
 export function useLooked({ content, bench, convention, target, view }: Looking): Looked | null {
   const followed = useDesignerView((state) => state.followed);
   const { kind } = content;
@@ -38,11 +41,14 @@ export function useLooked({ content, bench, convention, target, view }: Looking)
     if (!read.ok) return null;
     return kind === 'apply' ? lightOf(followed, convention) : read.stokes;
   }, [inputExpression, convention, kind, followed]);
-  return useMemo(
+  const now = useMemo(
     () =>
       bench === undefined || input === null || target === undefined || view?.status !== 'solved'
         ? null
         : { bench, input, followed: kind === 'apply' ? followed : null, target, view },
     [bench, input, kind, followed, target, view],
   );
+  const [before, setBefore] = useState<Looked | null>(null);
+  if (now !== null && now !== before) setBefore(now);
+  return now ?? (before?.bench === bench ? before : null);
 }
