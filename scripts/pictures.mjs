@@ -51,6 +51,13 @@ try {
   await desk.getByRole('cell', { name: 't2', exact: true }).click();
   await desk.getByText('expected fidelity').waitFor();
   await take(desk, 'designer');
+  await desk.goto(`${home}/plan`);
+  await desk.getByRole('link', { name: /^Gates/u }).click();
+  await desk.getByRole('radio', { name: 'six states' }).check();
+  await desk.getByText('expected fidelity').waitFor();
+  await take(desk, 'unitaries');
+  await desk.goto('/conventions?state=L');
+  await take(desk, 'conventions');
   await desk.goto(`${home}/cabinet`);
   await desk.getByRole('link', { name: /^Q-B/u }).click();
   await take(desk, 'cabinet');
