@@ -2,7 +2,7 @@ import { type Convention, radians, toDegrees } from '../../../shared/optics';
 import type { RowReading } from '../../../shared/protocol/solve-row';
 import { Formula } from '../../components/Formula';
 import { TextLink } from '../../components/TextLink';
-import { formatAngle } from '../../lib/format';
+import { fixed, formatAngle, withTrueMinus } from '../../lib/format';
 import { conventionsHref } from '../conventions';
 import { turnOf } from './turn-of';
 
@@ -24,7 +24,7 @@ export function UnitaryRead(props: {
         {turn === null
           ? 'It leaves every state as it is'
           : `A right-handed turn of the sphere by ${formatAngle(toDegrees(radians(turn.angleRad)))} about (S1, S2, S3) = (${turn.axis
-              .map((part) => part.toFixed(3).replace('-', '\u2212'))
+              .map((part) => withTrueMinus(fixed(part, 3)))
               .join(', ')})`}
         {reading.normalised && `. Written ${Number(reading.scale.toPrecision(4))} times that`}.{' '}
         <TextLink to={conventionsHref('unitary', source, convention)}>In each convention</TextLink>
