@@ -25,38 +25,88 @@ export function fastAxisFromDial(dialDeg: Degrees, scale: Engraving): Degrees {
   return degrees(wrap(scale.direction * (dialDeg - scale.offsetDeg), 180));
 }
 
-/** The settable reading nearest to `dialDeg`, in [0, 360). */
+/** Readings closer than this are the same: far below any dial's step, far above rounding. */
+export const SAME_READING_DEG = 1e-9;
+
+/**
+ * The settable reading nearest to `dialDeg` on a ring: a multiple of the step in [0, 360). Where the step does not divide
+ * a whole turn, the last mark before 360 is less than a step away from 0.
+ */
 export function roundDial(dialDeg: Degrees, resolutionDeg: number): Degrees {
-  return degrees(wrap(roundReading(dialDeg, resolutionDeg), 360));
+  const once = wrap(dialDeg, 360);
+  const rounded = readingOfStep(Math.round(once / resolutionDeg), resolutionDeg);
+  const isNearerToZero = rounded >= 360 || 360 - once < Math.abs(once - rounded) - SAME_READING_DEG;
+  return degrees(isNearerToZero ? 0 : rounded);
 }
 
-function roundReading(dialDeg: number, resolutionDeg: number): number {
-  const decimals = dialDecimals(resolutionDeg) + 3;
-  const rounded = Math.round(dialDeg / resolutionDeg) * resolutionDeg;
+function readingOfStep(step: number, resolutionDeg: number): number {
   // Without this a reading of 83.5 would be stored as 83.50000000000001, and one of −0.01 as −0.
-  return Number(rounded.toFixed(decimals)) + 0;
+  return Number((step * resolutionDeg).toFixed(dialDecimals(resolutionDeg) + 3)) + 0;
+}
+
+/**
+ * The settable readings, multiples of the step within a range, that stand for `dialDeg`: one for each half turn on which
+ * rounding ends within the range, rising. Where it ends within on none, the one inside that is nearest, less than a step
+ * off; none at all where the range reaches no half turn of `dialDeg`.
+ */
+export function readingsWithin(
+  dialDeg: number,
+  resolutionDeg: number,
+  range: { readonly from: number; readonly to: number },
+): readonly number[] {
+  const from = range.from - SAME_READING_DEG;
+  const to = range.to + SAME_READING_DEG;
+  const first = Math.ceil((from - dialDeg) / 180) - 1;
+  const last = Math.floor((to - dialDeg) / 180) + 1;
+  const readings: number[] = [];
+  let nearest: { readonly step: number; readonly offDeg: number } | null = null;
+  for (let turn = first; turn <= last; turn += 1) {
+    const exact = dialDeg + 180 * turn;
+    const step = Math.round(exact / resolutionDeg);
+    const rounded = step * resolutionDeg;
+    if (rounded >= from && rounded <= to) {
+      readings.push(readingOfStep(step, resolutionDeg));
+      continue;
+    }
+    const inside = rounded < from ? Math.ceil(from / resolutionDeg) : Math.floor(to / resolutionDeg);
+    const offDeg = Math.abs(inside * resolutionDeg - exact);
+    const isInside = inside * resolutionDeg >= from && inside * resolutionDeg <= to;
+    if (isInside && offDeg < resolutionDeg && (nearest === null || offDeg < nearest.offDeg)) {
+      nearest = { step: inside, offDeg };
+    }
+  }
+  if (readings.length > 0 || nearest === null) return readings;
+  return [readingOfStep(nearest.step, resolutionDeg)];
 }
 
 /**
  * What to dial for a fast axis, at the mount's resolution and within its range. A plate is the same after half a turn, so
  * there are at least two such readings: the one nearest to `presentDeg`, or without it the first of the range.
+ * @throws RangeError for a range of less than half a turn that this axis is not within.
  */
 export function dialFor(fastAxisDeg: Degrees, scale: DialScale, presentDeg: number | null): Degrees {
   const { rangeDeg, resolutionDeg } = scale;
   const dialDeg = dialFromFastAxis(fastAxisDeg, scale);
   if (rangeDeg === null) {
     const rounded = roundDial(dialDeg, resolutionDeg);
-    if (presentDeg === null || Math.abs(wrapSigned(rounded - presentDeg, 360)) <= 90) return rounded;
-    return roundDial(degrees(dialDeg + 180), resolutionDeg);
+    if (presentDeg === null) return rounded;
+    const other = roundDial(degrees(dialDeg + 180), resolutionDeg);
+    const apart = (reading: number) => Math.abs(wrapSigned(reading - presentDeg, 360));
+    return apart(other) < apart(rounded) - SAME_READING_DEG ? other : rounded;
   }
-  // Half a step of rounding may leave the range by as much; the next reading half a turn on does not.
-  let best = roundReading(rangeDeg.from + wrap(dialDeg - rangeDeg.from, 180), resolutionDeg);
-  if (best < rangeDeg.from) best += 180;
-  if (presentDeg === null) return degrees(best);
-  for (let reading = best + 180; reading <= rangeDeg.to; reading += 180) {
-    if (Math.abs(reading - presentDeg) < Math.abs(best - presentDeg)) best = reading;
+  const [first, ...others] = readingsWithin(dialDeg, resolutionDeg, rangeDeg);
+  if (first === undefined) {
+    throw new RangeError(
+      `no reading from ${rangeDeg.from} to ${rangeDeg.to} turns the axis to ${fastAxisDeg}°`,
+    );
   }
-  return degrees(best);
+  if (presentDeg === null) return degrees(first);
+  return degrees(
+    others.reduce(
+      (best, reading) => (Math.abs(reading - presentDeg) < Math.abs(best - presentDeg) ? reading : best),
+      first,
+    ),
+  );
 }
 
 /** How many decimals a reading at this resolution is always written with: 0.1 → 1, 0.25 → 2, 5/60 → 2. */

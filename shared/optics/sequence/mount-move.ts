@@ -1,9 +1,6 @@
-import { dialDecimals, dialFromFastAxis, roundDial } from '../dial';
+import { dialFromFastAxis, readingsWithin, roundDial, SAME_READING_DEG } from '../dial';
 import { degrees, wrap } from '../units';
 import type { MountMotion } from './problem';
-
-/** Readings closer than this are the same: far below any dial's step, far above rounding. */
-const SAME_READING_DEG = 1e-9;
 
 /** A move of one mount from one reading to another. */
 export interface MountMove {
@@ -27,28 +24,14 @@ export function readingsFor(mount: MountMotion, fastAxisDeg: number): readonly n
   if (mount.rangeDeg === null) {
     return [roundDial(listed, mount.resolutionDeg), roundDial(degrees(listed + 180), mount.resolutionDeg)];
   }
-  const [min, max] = usableRange(mount, mount.rangeDeg);
-  const readings: number[] = [];
-  const first = Math.ceil((min - listed) / 180) - 1;
-  const last = Math.floor((max - listed) / 180) + 1;
-  for (let turn = first; turn <= last; turn += 1) {
-    const reading = roundReading(listed + 180 * turn, mount.resolutionDeg);
-    if (reading >= min - SAME_READING_DEG && reading <= max + SAME_READING_DEG) readings.push(reading);
-  }
-  return readings;
+  const [from, to] = usableRange(mount, mount.rangeDeg);
+  return readingsWithin(listed, mount.resolutionDeg, { from, to });
 }
 
 function usableRange({ backlashDeg, approach }: MountMotion, [min, max]: readonly [number, number]) {
   if (approach === 'rising') return [min + backlashDeg, max] as const;
   if (approach === 'falling') return [min, max - backlashDeg] as const;
   return [min, max] as const;
-}
-
-// As roundDial, without bringing the reading back into one turn.
-function roundReading(readingDeg: number, resolutionDeg: number): number {
-  const steps = Math.round(readingDeg / resolutionDeg);
-  const rounded = Number((steps * resolutionDeg).toFixed(dialDecimals(resolutionDeg) + 3));
-  return rounded === 0 ? 0 : rounded;
 }
 
 /**
