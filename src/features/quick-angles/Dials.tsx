@@ -51,7 +51,7 @@ function PlateSetting(props: {
   );
 }
 
-/** The settings of two plates for a state: the best one drawn, the others a press away. */
+/** The settings of one to six plates for what is written: the best one drawn, the others a press away. */
 export function Dials(props: {
   readonly solved: SolvedTarget;
   readonly plates: readonly NamedPlate[];
@@ -66,7 +66,7 @@ export function Dials(props: {
   const others = solved.solutions.length - 1;
   return (
     <>
-      <div className={plates.length === 3 ? 'mt-4 grid grid-cols-3 gap-4' : 'mt-4 grid grid-cols-2 gap-4'}>
+      <div className="mt-4 grid grid-cols-[repeat(auto-fit,minmax(min(9.5rem,100%),1fr))] gap-4">
         {plates.map((named, k) => (
           <PlateSetting
             key={`${named.name} ${k}`}
@@ -123,51 +123,53 @@ function OtherSolutions(props: {
 }) {
   const { solutions, plates, ideal, chosen, onChoose } = props;
   return (
-    <table className="mt-3 w-full text-right">
-      <thead className="text-s text-ink-2">
-        <tr className="border-hair border-b">
-          {plates.map(({ name }, k) => (
-            <th key={`${name} ${k}`} scope="col" className="py-1 pr-4 font-words">
-              {name}, {ideal ? 'θ' : 'dial'}
-            </th>
-          ))}
-          {!ideal && (
-            <th scope="col" className="py-1 pr-4 font-words">
-              1 − F expected
-            </th>
-          )}
-          <th scope="col" className="py-1 font-words">
-            <span className="sr-only">show</span>
-          </th>
-        </tr>
-      </thead>
-      <tbody>
-        {solutions.map((solution, index) => (
-          <tr key={solution.fastAxesDeg.join(' ')} className="border-hair border-b">
-            {plates.map(({ name, plate }, k) => (
-              <td key={`${name} ${k}`} className="text-dial py-1.5 pr-4 font-mono">
-                {ideal
-                  ? `${formatTheta(solution.fastAxesDeg[k] ?? 0)}°`
-                  : formatDial(solution.dialsDeg[k] ?? 0, plate.mount.resolutionDeg)}
-              </td>
+    <div className="overflow-x-auto">
+      <table className="mt-3 w-full text-right">
+        <thead className="text-s text-ink-2">
+          <tr className="border-hair border-b">
+            {plates.map(({ name }, k) => (
+              <th key={`${name} ${k}`} scope="col" className="py-1 pr-4 font-words whitespace-nowrap">
+                {name}, {ideal ? 'θ' : 'dial'}
+              </th>
             ))}
             {!ideal && (
-              <td className="py-1.5 pr-4">
-                <Scientific value={solution.expectedInfidelity} />
-              </td>
+              <th scope="col" className="py-1 pr-4 font-words whitespace-nowrap">
+                1 − F expected
+              </th>
             )}
-            <td className="py-1.5">
-              {index === chosen ? (
-                'drawn'
-              ) : (
-                <TextButton onClick={() => onChoose(index)}>
-                  Draw it<span className="sr-only">, solution {index + 1}</span>
-                </TextButton>
-              )}
-            </td>
+            <th scope="col" className="py-1 font-words">
+              <span className="sr-only">show</span>
+            </th>
           </tr>
-        ))}
-      </tbody>
-    </table>
+        </thead>
+        <tbody>
+          {solutions.map((solution, index) => (
+            <tr key={solution.fastAxesDeg.join(' ')} className="border-hair border-b">
+              {plates.map(({ name, plate }, k) => (
+                <td key={`${name} ${k}`} className="text-dial py-1.5 pr-4 font-mono">
+                  {ideal
+                    ? `${formatTheta(solution.fastAxesDeg[k] ?? 0)}°`
+                    : formatDial(solution.dialsDeg[k] ?? 0, plate.mount.resolutionDeg)}
+                </td>
+              ))}
+              {!ideal && (
+                <td className="py-1.5 pr-4">
+                  <Scientific value={solution.expectedInfidelity} />
+                </td>
+              )}
+              <td className="py-1.5">
+                {index === chosen ? (
+                  'drawn'
+                ) : (
+                  <TextButton onClick={() => onChoose(index)}>
+                    Draw it<span className="sr-only">, solution {index + 1}</span>
+                  </TextButton>
+                )}
+              </td>
+            </tr>
+          ))}
+        </tbody>
+      </table>
+    </div>
   );
 }

@@ -11,15 +11,16 @@ import { flagWords } from '../conventions';
 import { labQuery } from '../labs';
 import { sessionQuery } from '../session';
 import { Dials, type NamedPlate } from './Dials';
-import { idealBench, idealGateBench } from './ideal-plates';
-import { type Question, quickSettings, readQuick } from './quick-settings';
+import { idealPlatesFor } from './ideal-plates';
+import type { Question } from './question';
+import { type QuickSettings, readQuick } from './quick-settings';
 import { SameLight } from './SameLight';
 import { StateRead } from './StateRead';
 import { UnitaryRead } from './UnitaryRead';
+import { type QuickJob, useQuickSettings } from './use-quick-settings';
 
 function idealPlates(question: Question): readonly NamedPlate[] {
-  const { plates } = question === 'apply' ? idealGateBench : idealBench;
-  return plates.map((plate) => {
+  return idealPlatesFor(question).plates.map((plate) => {
     const half = plate.calibration.retardanceDeg === 180;
     return { name: half ? 'half-wave' : 'quarter-wave', kind: half ? 'half' : 'quarter', plate };
   });
@@ -84,6 +85,45 @@ function useOwnLab(): { readonly convention: Convention | null; readonly benches
   };
 }
 
+/** A question with what its answer is drawn with, so that it can stand until the next one is there. */
+interface Asked extends QuickJob {
+  readonly plates: readonly NamedPlate[];
+  readonly key: string;
+}
+
+function lateWords(shown: Asked | null): string {
+  return shown === null
+    ? 'They are being worked out.'
+    : `These are still for ${shown.written.expression.trim()}; the new ones are being worked out.`;
+}
+
+function Answer({ asked, settings }: { readonly asked: Asked; readonly settings: QuickSettings }) {
+  const { question } = asked.written;
+  const ideal = asked.quick === null;
+  return (
+    <>
+      {settings.ok ? (
+        <Dials
+          key={asked.key}
+          solved={settings.solved}
+          plates={asked.plates}
+          ideal={ideal}
+          idealInfidelityHere={settings.idealInfidelityHere}
+        />
+      ) : (
+        <p className="mt-3">{settings.sentence}</p>
+      )}
+      {ideal && <p className="text-s text-ink-2 mt-3">{idealWords[question]}</p>}
+      {!ideal && question === 'analyse' && (
+        <p className="text-s text-ink-2 mt-3">
+          The light meets these plates in beam order, then a polariser that passes level light. That polariser
+          is taken as exact: the bench’s own polariser makes its input and has no part in this.
+        </p>
+      )}
+    </>
+  );
+}
+
 /** Angles for one state, with ideal plates or one's own, and how others write the same light. Nothing here is kept. */
 export function Component() {
   const [search] = useSearchParams();
@@ -105,21 +145,24 @@ export function Component() {
     () => readQuick({ question, expression: written, convention }),
     [question, written, convention],
   );
-  const plates = bench === undefined ? idealPlates(question) : namedPlates(bench);
   // The bench's input was written in its lab's convention, whichever one the state is written in here.
   const benchConvention = own.convention ?? DEFAULT_CONVENTION;
-  const settings = useMemo(
-    () =>
-      quickSettings(
-        { question, expression: written, convention },
-        {
-          bench: bench ?? (question === 'apply' ? idealGateBench : idealBench),
-          kinds: (bench?.plates ?? []).map(({ kind }) => kind),
-          convention: benchConvention,
-        },
-      ),
-    [question, written, convention, bench, benchConvention],
+  const asked = useMemo(
+    (): Asked | null =>
+      read.ok
+        ? {
+            written: { question, expression: written, convention },
+            quick:
+              bench === undefined
+                ? null
+                : { bench, kinds: bench.plates.map(({ kind }) => kind), convention: benchConvention },
+            plates: bench === undefined ? idealPlates(question) : namedPlates(bench),
+            key: `${bench?.id ?? 'ideal'} ${question} ${written} ${setId}`,
+          }
+        : null,
+    [read, question, written, convention, bench, benchConvention, setId],
   );
+  const { answered, isLate } = useQuickSettings(asked);
   const empty = expression.trim() === '';
   const reading = read.ok ? read.reading : null;
   return (
@@ -189,20 +232,14 @@ export function Component() {
                 />
               )}
             </div>
-            {settings === null ? (
+            <p role="status" className="text-s text-ink-2 mt-1">
+              {asked !== null && isLate && lateWords(answered?.asked ?? null)}
+            </p>
+            {asked === null ? (
               <p className="text-ink-2 mt-3">They stand here as soon as it can be read.</p>
-            ) : settings.ok ? (
-              <Dials
-                key={`${bench?.id ?? 'ideal'} ${question} ${written} ${setId}`}
-                solved={settings.solved}
-                plates={plates}
-                ideal={bench === undefined}
-                idealInfidelityHere={settings.idealInfidelityHere}
-              />
             ) : (
-              <p className="mt-3">{settings.sentence}</p>
+              answered !== null && <Answer asked={answered.asked} settings={answered.settings} />
             )}
-            {bench === undefined && <p className="text-s text-ink-2 mt-3">{idealWords[question]}</p>}
           </section>
         </div>
         {reading?.kind === 'state' && <SameLight jones={reading.jones} source={written} own={convention} />}

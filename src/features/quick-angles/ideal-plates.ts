@@ -1,6 +1,7 @@
 import type { SolvingBench } from '../../../shared/protocol/solve-row';
 import type { SolvingPlate } from '../../../shared/protocol/solving-plates';
 import type { PlateKind } from '../../../shared/schemas/cabinet';
+import type { Question } from './question';
 
 /** Finer than any page shows, so that an ideal plate's angle is not rounded before it is read. */
 const idealStepDeg = 0.001;
@@ -47,10 +48,14 @@ function exactPlate(retardanceDeg: number): SolvingPlate {
 }
 
 /** Level light, an exact half-wave plate, then an exact quarter-wave plate; the dial reads the table angle. */
-export const idealBench: SolvingBench = exactBench('H', ['half', 'quarter']);
+const idealBench: SolvingBench = exactBench('H', ['half', 'quarter']);
 
 /** Exact quarter-, half- and quarter-wave plates, which together make every unitary. */
-export const idealGateBench: SolvingBench = exactBench('H', ['quarter', 'half', 'quarter']);
+const idealGateBench: SolvingBench = exactBench('H', ['quarter', 'half', 'quarter']);
+
+export function idealPlatesFor(question: Question): SolvingBench {
+  return question === 'apply' ? idealGateBench : idealBench;
+}
 
 /**
  * A bench's twin as nobody owns it: the same light in, the same kinds of plates in the same order, each of them exact.

@@ -1,4 +1,4 @@
-import type { Convention } from '../../../shared/optics/convention';
+import { type Convention, DEFAULT_CONVENTION } from '../../../shared/optics/convention';
 import { dialFor } from '../../../shared/optics/dial';
 import { analyserGoal, type Goal } from '../../../shared/optics/goal';
 import {
@@ -18,10 +18,8 @@ import {
   type SolvingTask,
 } from '../../../shared/protocol/solve-row';
 import type { PlateKind } from '../../../shared/schemas/cabinet';
-import { idealBench, idealGateBench, idealTwin } from './ideal-plates';
-
-/** prepare: make this state. analyse: pass it to a polariser at H and block its opposite. apply: be this unitary. */
-export type Question = 'prepare' | 'analyse' | 'apply';
+import { idealPlatesFor, idealTwin } from './ideal-plates';
+import type { Question } from './question';
 
 export type QuickSettings =
   | { readonly ok: false; readonly sentence: string }
@@ -42,7 +40,8 @@ export interface QuickBench {
   readonly convention: Convention;
 }
 
-interface Written {
+/** What is typed, and what the plates are to do about it. */
+export interface Written {
   readonly question: Question;
   readonly expression: string;
   /** Of this expression alone: a bench's input keeps the lab's. */
@@ -61,11 +60,12 @@ const task: SolvingTask = {
 };
 
 function problemOn(
-  { bench, convention }: Pick<QuickBench, 'bench' | 'convention'>,
+  bench: SolvingBench,
+  convention: Convention,
   question: Question,
   reading: RowReading,
 ): TargetProblem | { readonly fault: string } {
-  const read = benchProblem(bench, convention, task);
+  const read = benchProblem(question === 'analyse' ? beforeAnalyser(bench) : bench, convention, task);
   if (!read.ok) return { fault: `Column ${read.error.column}: ${read.error.message}` };
   const goal: Goal =
     question === 'analyse' && reading.kind === 'state'
@@ -74,16 +74,20 @@ function problemOn(
   return { ...read.problem, goal, heldFastAxesDeg: null };
 }
 
+/** A bench knows the polariser that makes its input and none behind its plates: the analyser is taken as exact. */
+function beforeAnalyser(bench: SolvingBench): SolvingBench {
+  return { ...bench, inputExpression: 'H', polariserSigmaDeg: 0, polariserExtinction: null };
+}
+
 function idealInfidelity(
   { bench, kinds, convention }: QuickBench,
   question: Question,
   reading: RowReading,
   problem: TargetProblem,
 ): number | null {
-  if (bench === idealBench || bench === idealGateBench) return null;
   const twin = idealTwin(bench, kinds);
   if (twin === null) return null;
-  const exact = problemOn({ bench: twin, convention }, question, reading);
+  const exact = problemOn(twin, convention, question, reading);
   const ideal = 'fault' in exact ? undefined : solveTarget(exact).solutions[0];
   if (ideal === undefined) return null;
   const dialsDeg = problem.plates.map(({ scale }, k) =>
@@ -92,17 +96,26 @@ function idealInfidelity(
   return evaluateDials(problem, dialsDeg).infidelity;
 }
 
-/** Every setting of a bench's plates for what is written; null where that cannot be read, which its field says. */
-export function quickSettings(written: Written, quick: QuickBench): QuickSettings | null {
+/**
+ * Every setting of a bench's plates for what is written, of exact plates where `quick` is null; null where what is written
+ * cannot be read, which its field says.
+ */
+export function quickSettings(written: Written, quick: QuickBench | null): QuickSettings | null {
+  const { question } = written;
   const read = readQuick(written);
   if (!read.ok) return null;
-  const problem = problemOn(quick, written.question, read.reading);
+  const problem = problemOn(
+    quick?.bench ?? idealPlatesFor(question),
+    quick?.convention ?? DEFAULT_CONVENTION,
+    question,
+    read.reading,
+  );
   if ('fault' in problem) {
     return { ok: false, sentence: `The bench’s own input state cannot be read. ${problem.fault}` };
   }
   return {
     ok: true,
     solved: solveTarget(problem),
-    idealInfidelityHere: idealInfidelity(quick, written.question, read.reading, problem),
+    idealInfidelityHere: quick === null ? null : idealInfidelity(quick, question, read.reading, problem),
   };
 }

@@ -1,16 +1,58 @@
 // @vitest-environment jsdom
 import { QueryClientProvider } from '@tanstack/react-query';
-import { cleanup, render, screen } from '@testing-library/react';
+import { act, cleanup, render, screen, waitFor } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { MemoryRouter } from 'react-router-dom';
-import { afterEach, describe, expect, it, vi } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { DEFAULT_CONVENTION } from '../../../shared/optics';
 import type { SolvingBench } from '../../../shared/protocol/solve-row';
 import type { Bench } from '../../../shared/schemas/benches';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { quickSettings } from '../../../src/features/quick-angles/quick-settings';
 import { Component as QuickAnglesPage } from '../../../src/features/quick-angles/QuickAnglesPage';
+import type { QuickJob } from '../../../src/features/quick-angles/use-quick-settings';
 import { createQueryClient } from '../../../src/lib/query-client';
+
+/** The worker on this thread; a test may hold it, to look at the page while it works. */
+class NearWorker extends EventTarget {
+  static held = false;
+  static readonly all: NearWorker[] = [];
+  private asked: QuickJob | null = null;
+  answers = 0;
+  constructor() {
+    super();
+    NearWorker.all.push(this);
+  }
+  postMessage(job: QuickJob): void {
+    this.asked = job;
+    if (!NearWorker.held) setTimeout(() => act(() => this.answer()), 0);
+  }
+  terminate(): void {
+    this.asked = null;
+  }
+  answer(): void {
+    if (this.asked === null) return;
+    const { written, quick } = this.asked;
+    this.asked = null;
+    this.answers += 1;
+    this.dispatchEvent(new MessageEvent('message', { data: quickSettings(written, quick) }));
+  }
+  fail(): void {
+    this.dispatchEvent(new Event('error'));
+  }
+}
+
+function worker(): NearWorker {
+  const last = NearWorker.all.at(-1);
+  if (last === undefined) throw new Error('no worker was started');
+  return last;
+}
+
+beforeEach(() => {
+  NearWorker.held = false;
+  NearWorker.all.length = 0;
+  vi.stubGlobal('Worker', NearWorker);
+});
 
 afterEach(() => {
   cleanup();
@@ -112,7 +154,7 @@ describe('the page of quick angles', () => {
   it('gives a stranger angles for exact plates, and says of a state that cannot be read where it stops', async () => {
     serve(false);
     const user = open('H');
-    expect(screen.getByText(/Exact plates make it exactly/u)).toBeDefined();
+    expect(await screen.findByText(/Exact plates make it exactly/u)).toBeDefined();
     const field = screen.getByRole('textbox', { name: /^state/u });
     await user.clear(field);
     await user.type(field, 'H + ');
@@ -124,13 +166,69 @@ describe('the page of quick angles', () => {
     serve(true);
     const user = open('D');
     await screen.findByRole('heading', { name: 'Dials' });
+    await screen.findByText(/1 − F expected/u);
     const before = dials();
+    const { answers } = worker();
     // D is the same light in every convention, so nothing about its dials may change.
     await user.selectOptions(
       screen.getByRole('combobox', { name: /^written in the convention of/u }),
       'receiver-optics-wt',
     );
+    await waitFor(() => expect(worker().answers).toBeGreaterThan(answers));
     expect(dials()).toBe(before);
+  });
+
+  it('keeps the old angles readable, and says what they are for, until the new ones are there', async () => {
+    serve(false);
+    const user = open('H');
+    await screen.findByText(/Exact plates make it exactly/u);
+    NearWorker.held = true;
+    const field = screen.getByRole('textbox', { name: /^state/u });
+    await user.type(field, ' + V');
+    expect(await screen.findByText(/^These are still for H;/u)).toBeDefined();
+    expect(screen.getByText(/Exact plates make it exactly/u)).toBeDefined();
+    const { answers } = worker();
+    // "H " is being worked on; of all that was typed meanwhile only the last is asked.
+    act(() => worker().answer());
+    act(() => worker().answer());
+    expect(worker().answers).toBe(answers + 2);
+    expect(screen.queryByText(/^These are still for/u)).toBeNull();
+    expect(NearWorker.all).toHaveLength(1);
+  });
+
+  it('says that a calculation stopped, and begins the next with another worker', async () => {
+    serve(false);
+    NearWorker.held = true;
+    const user = open('H');
+    act(() => worker().fail());
+    expect(screen.getByText(/The calculation stopped/u)).toBeDefined();
+    NearWorker.held = false;
+    await user.type(screen.getByRole('textbox', { name: /^state/u }), ' + V');
+    expect(await screen.findByText(/Exact plates make it exactly/u)).toBeDefined();
+    expect(NearWorker.all).toHaveLength(2);
+  });
+
+  it('takes the analyser behind a bench as exact, and says so', async () => {
+    serve(true);
+    const user = open('D');
+    await screen.findByRole('heading', { name: 'Dials' });
+    await user.click(screen.getByRole('radio', { name: 'measure a state' }));
+    expect(await screen.findByText(/That polariser is taken as exact/u)).toBeDefined();
+  });
+});
+
+describe('measuring a state on a bench', () => {
+  it('has no part for the polariser that makes the bench’s input', () => {
+    const analysed = (of: SolvingBench) =>
+      quickSettings(
+        { ...written, question: 'analyse' },
+        { bench: of, kinds: ['quarter', 'half'], convention: DEFAULT_CONVENTION },
+      );
+    const settings = analysed(bench);
+    expect(settings?.ok).toBe(true);
+    expect(
+      analysed({ ...bench, polariserSigmaDeg: 5, polariserExtinction: 0.1, inputExpression: 'not a state' }),
+    ).toEqual(settings);
   });
 });
 
