@@ -8,7 +8,7 @@ import { BenchForm } from './BenchForm';
 import { createBench } from './queries';
 import { QueryState } from '../../lib/QueryState';
 
-/** A new bench. It needs two plates of the cabinet. */
+/** A new bench. It needs at least one plate of the cabinet. */
 export function Component() {
   const { lab, may } = useLab();
   const navigate = useNavigate();
@@ -26,9 +26,9 @@ export function Component() {
         </p>
       ) : plates.data === undefined ? (
         <QueryState query={plates} what="the cabinet" />
-      ) : seated.length < 2 ? (
+      ) : seated.length === 0 ? (
         <p>
-          A bench has two plates in its beam, and the cabinet holds {seated.length === 0 ? 'none' : 'one'}.{' '}
+          A bench has one to six plates in its beam, and the cabinet holds none.{' '}
           <TextLink to={`/labs/${lab.id}/cabinet?do=add`}>Add a plate</TextLink>
         </p>
       ) : (

@@ -11,7 +11,7 @@ import type { BenchValues } from './bench-form-values';
 const gap = '\u00a0';
 
 /** What a list says of a plate: enough to pick the right one of two alike. */
-export function plateChoice(plate: Plate): string {
+function plateChoice(plate: Plate): string {
   const { retardanceDeg, wavelengthNm } = plate.calibration;
   return `${plate.name}, ${kindNames[plate.kind]}, ${retardanceDeg}° at ${wavelengthNm}${gap}nm`;
 }

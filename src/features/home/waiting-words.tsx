@@ -154,7 +154,7 @@ export function waitingWords(item: WaitingItem, { labId, now, dueDays, may }: Wa
       return {
         title: 'The cabinet is empty',
         reason: may('cabinet.write')
-          ? 'Angles are worked out for the plates you have. Begin with two, and with what was measured of them.'
+          ? 'Angles are worked out for the plates you have. Begin with one or two, and with what was measured of them.'
           : 'A designer or the lead adds the plates; then angles can be worked out.',
         way: may('cabinet.write') ? { label: 'Add a plate', to: `${base}/cabinet?do=add` } : null,
       };
@@ -162,7 +162,7 @@ export function waitingWords(item: WaitingItem, { labId, now, dueDays, may }: Wa
       return {
         title: 'No bench is set up',
         reason: may('benches.write')
-          ? 'A bench says what light goes in and which two plates it meets, in order.'
+          ? 'A bench says what light goes in and which plates it meets, one to six in order.'
           : 'A designer or the lead sets it up; then there is something to run at.',
         way: may('benches.write') ? { label: 'Add a bench', to: `${base}/bench/new` } : null,
       };
