@@ -24,6 +24,8 @@ export interface MonteCarloRun {
   readonly draws: number;
   /** @throws RangeError unless it is a whole number from 0 on. */
   advance(draws: number): void;
+  /** How many of the draws so far don't exceed a limit. */
+  countWithin(limit: number): number;
   /** Of everything drawn so far; `null` before the first draw. The run can go on afterwards. */
   summary(): MonteCarloSummary | null;
 }
@@ -52,6 +54,11 @@ export function startMonteCarlo(problem: BudgetProblem, seed: number): MonteCarl
       }
       source.fill(values, drawn, draws);
       drawn += draws;
+    },
+    countWithin(limit) {
+      let count = 0;
+      for (let k = 0; k < drawn; k += 1) if ((values[k] ?? Infinity) <= limit) count += 1;
+      return count;
     },
     summary() {
       return drawn === 0 ? null : summarise(values.subarray(0, drawn), seed);

@@ -18,6 +18,7 @@ export type StudyRequest =
       readonly problem: BudgetProblem;
       readonly draws: number;
       readonly seed: number;
+      readonly toleranceInfidelity: number;
     }
   | {
       readonly kind: 'reach';
@@ -29,7 +30,7 @@ export type StudyRequest =
 
 export type StudyResult =
   | { readonly kind: 'sequence'; readonly plan: SequencePlan; readonly order: OrderPlan | null }
-  | { readonly kind: 'monte-carlo'; readonly summary: MonteCarloSummary }
+  | { readonly kind: 'monte-carlo'; readonly summary: MonteCarloSummary; readonly shareWithin: number }
   | { readonly kind: 'reach'; readonly map: ReachMap; readonly stepDeg: number }
   | { readonly kind: 'robust'; readonly study: RobustStudy };
 

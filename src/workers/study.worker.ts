@@ -36,7 +36,7 @@ type Request<Kind extends StudyRequest['kind']> = Extract<StudyRequest, { readon
 /** Few enough that a told share is never long out of date. */
 const drawsAtOnce = 5000;
 
-function* drawing({ problem, draws, seed }: Request<'monte-carlo'>) {
+function* drawing({ problem, draws, seed, toleranceInfidelity }: Request<'monte-carlo'>) {
   const run = startMonteCarlo(problem, seed);
   while (run.draws < draws) {
     run.advance(Math.min(drawsAtOnce, draws - run.draws));
@@ -44,7 +44,7 @@ function* drawing({ problem, draws, seed }: Request<'monte-carlo'>) {
   }
   const summary = run.summary();
   if (summary === null) throw new RangeError('Ask for at least one draw.');
-  return summary;
+  return { summary, shareWithin: run.countWithin(toleranceInfidelity) / run.draws };
 }
 
 function* mapping({ input, retardancesDeg, stepDeg }: Request<'reach'>): Generator<number, ReachMap> {
@@ -74,7 +74,7 @@ function study(request: StudyRequest): StudyResult {
       return { kind: 'sequence', plan, order };
     }
     case 'monte-carlo':
-      return { kind: 'monte-carlo', summary: runThrough(drawing(request), (share) => share) };
+      return { kind: 'monte-carlo', ...runThrough(drawing(request), (share) => share) };
     case 'reach':
       return { kind: 'reach', map: runThrough(mapping(request), (share) => share), stepDeg: request.stepDeg };
     case 'robust':

@@ -155,6 +155,16 @@ test('percentiles are draws of the right rank, whatever the number of draws', ()
   }
 });
 
+test('the draws within a limit are counted one by one, not by bins', () => {
+  const problem = randomProblem(randomStream(44), { kind: 'prepare', plateCount: 3, sigmaDeg: 0.5 });
+  const values = drawn(problem, 3, 5000);
+  const run = startMonteCarlo(problem, 3);
+  run.advance(5000);
+  for (const limit of [0, values[17] ?? NaN, 3e-5, 1e-4, 1]) {
+    expect(run.countWithin(limit)).toBe(values.filter((value) => value <= limit).length);
+  }
+});
+
 test('selecting a rank agrees with sorting, also with many equal values', () => {
   const random = randomStream(9);
   for (let round = 0; round < 300; round += 1) {

@@ -1,6 +1,6 @@
 import { usedRetardance } from '../../../shared/protocol/solving-plates';
 import type { Plate } from '../../../shared/schemas/cabinet';
-import { calibratedElsewhere, elsewhereSentence } from './elsewhere-words';
+import { elsewhereSentence, usedElsewhere } from './elsewhere-words';
 
 /** What a person should know before these plates stand in this bench; the server refuses a plate that stands elsewhere. */
 export function benchWarnings(
@@ -10,8 +10,9 @@ export function benchWarnings(
 ): readonly string[] {
   return plates.flatMap((plate) => {
     const warnings: string[] = [];
-    if (Number.isFinite(bench.wavelengthNm) && calibratedElsewhere(plate, bench.wavelengthNm)) {
-      warnings.push(elsewhereSentence(plate, usedRetardance(plate, bench), bench.wavelengthNm));
+    const used = bench.wavelengthNm > 0 ? usedRetardance(plate, bench) : null;
+    if (used !== null && usedElsewhere(plate, used, bench)) {
+      warnings.push(elsewhereSentence(plate, used, bench));
     }
     const others = plate.benches.filter(({ id }) => id !== benchId).map(({ name }) => name);
     if (others.length > 0) {

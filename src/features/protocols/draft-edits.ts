@@ -144,3 +144,15 @@ export const takeOrder = (ids: readonly string[]): DraftEdit => ({
   typing: null,
   apply: (content) => rankBy('least-travel').apply(reorder(ids).apply(content)),
 });
+
+/** The rows in a planned order with each planned solution held; undone as one. */
+export const takeHeld = (
+  rows: readonly { readonly id: string; readonly fastAxesDeg: readonly number[] | null }[],
+): DraftEdit => ({
+  typing: null,
+  apply: (content) =>
+    rows.reduce(
+      (now, { id, fastAxesDeg }) => holdSolution(id, fastAxesDeg).apply(now),
+      reorder(rows.map(({ id }) => id)).apply(content),
+    ),
+});

@@ -3,7 +3,7 @@ import type { Bench } from '../../../shared/schemas/benches';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import type { FrozenPlate, VersionContent } from '../../../shared/schemas/versions';
 import { formatDate } from '../../lib/format';
-import { calibratedElsewhere, elsewhereSentence } from '../benches';
+import { elsewhereSentence, usedElsewhere } from '../benches';
 
 const gap = '\u202f';
 
@@ -52,8 +52,8 @@ function inputChange(content: VersionContent, live: Bench, convention: Conventio
 /** The plates that a version froze with a calibration of another wavelength than its bench's, in sentences. */
 export function frozenElsewhere({ bench }: VersionContent): string[] {
   return bench.plates
-    .filter((plate) => calibratedElsewhere(plate, bench.wavelengthNm))
-    .map((plate) => elsewhereSentence(plate, plate.used, bench.wavelengthNm));
+    .filter((plate) => usedElsewhere(plate, plate.used, bench))
+    .map((plate) => elsewhereSentence(plate, plate.used, bench));
 }
 
 /** What became of the bench since a version froze it, in sentences; its input is written in the lab's convention. */

@@ -73,9 +73,16 @@ describe('what a person should know before plates stand in a bench', () => {
       null,
     );
     expect(elsewhere).toMatch(
-      /Q-B was calibrated at 810\u202fnm\. At 780\u202fnm it is taken as 92\.\d\d°, \+3\.\d\d° by the dispersion/,
+      /Q-B was calibrated at 810\u202fnm\. At 780\u202fnm it is taken as 92\.\d\d°, \+3\.\d\d° by what is published/,
     );
     expect(taken).toMatch(/Q-B stands in the beam of signal arm\. Choose another/);
+  });
+
+  it('says of a plate whose material nobody knows that it is used as measured', () => {
+    const unknown = plateFixture({ construction: 'unknown', material: null, benches: [] });
+    expect(benchWarnings([unknown], { wavelengthNm: 780, temperatureC: null }, null)).toEqual([
+      'Q-B was calibrated at 810\u202fnm, and this bench runs at 780\u202fnm. How it follows that is not known, so its 88.9° are used as measured: calibrate it at 780\u202fnm.',
+    ]);
   });
 
   it('is silent about the bench itself at its own wavelength', () => {

@@ -6,8 +6,11 @@ import {
   type DraftEdit,
   moveTarget,
   newTarget,
+  newTargets,
   removeTarget,
   rename,
+  takeHeld,
+  takeOrder,
   writeExpression,
   writeLabel,
 } from '../../../src/features/protocols/draft-edits';
@@ -82,5 +85,42 @@ describe('a draft under edit', () => {
 
   it('gives a new row the first label that is free', () => {
     expect(newTarget(draft.targets, '').label).toBe('t2');
+  });
+});
+
+describe('a plan that is taken', () => {
+  it('puts the rows in its order and ranks them by the travel it was planned for, undone as one', () => {
+    const taken = applyEdit(startHistory(draft), takeOrder([secondId, firstId]));
+    expect(taken.content.targets.map(({ id }) => id)).toEqual([secondId, firstId]);
+    expect(taken.content.objective).toBe('least-travel');
+    expect(undo(taken).content).toEqual(draft);
+  });
+
+  it('by time holds the solution of each row that it chose', () => {
+    const taken = applyEdit(
+      startHistory(draft),
+      takeHeld([
+        { id: secondId, fastAxesDeg: [1, 2] },
+        { id: firstId, fastAxesDeg: [3, 4] },
+      ]),
+    );
+    expect(taken.content.targets.map(({ id, heldFastAxesDeg }) => [id, heldFastAxesDeg])).toEqual([
+      [secondId, [1, 2]],
+      [firstId, [3, 4]],
+    ]);
+    expect(taken.content.objective).toBe('least-expected-infidelity');
+    expect(undo(taken).content).toEqual(draft);
+  });
+});
+
+describe('rows that come many at once', () => {
+  it('keep their labels where these are free, and get free ones where they are empty or taken', () => {
+    const rows = newTargets(draft.targets, [
+      { label: 'a', expression: 'H' },
+      { label: 't1', expression: 'V' },
+      { label: '', expression: 'D' },
+      { label: 'a', expression: 'A' },
+    ]);
+    expect(rows.map(({ label }) => label)).toEqual(['a', 't2', 't3', 't4']);
   });
 });

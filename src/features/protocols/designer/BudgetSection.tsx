@@ -54,8 +54,8 @@ export const BudgetSection = memo(function BudgetSection({
       </p>
       {drawing && (
         <MonteCarloPanel
-          // Draws of another setting would stand under this one's name.
-          key={solution.fastAxesDeg.join()}
+          // Draws of another problem would stand under this one's name.
+          key={`${content.toleranceInfidelity} ${JSON.stringify(problem)}`}
           label={label}
           problem={problem}
           solution={solution}

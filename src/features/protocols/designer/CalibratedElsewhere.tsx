@@ -1,48 +1,56 @@
-import { degrees, radians, toDegrees, toRadians } from '../../../../shared/optics/units';
-import { platesAtDials } from '../../../../shared/optics/solve-target';
+import { type Goal, unitaryInfidelity } from '../../../../shared/optics/goal';
 import { stackQuaternion, type Retarder } from '../../../../shared/optics/retarder';
-import { unitaryShortfall } from '../../../../shared/optics/goal';
+import { platesAtDials, statesBehind } from '../../../../shared/optics/solve-target';
+import { infidelityBetween } from '../../../../shared/optics/stokes';
+import { degrees, toRadians } from '../../../../shared/optics/units';
+import { rowGoal } from '../../../../shared/protocol/solve-row';
 import { targetPlates, usedRetardance } from '../../../../shared/protocol/solving-plates';
 import type { Bench } from '../../../../shared/schemas/benches';
 import { Scientific } from '../../../components/Scientific';
 import { GapText } from '../../../lib/GapText';
-import { calibratedElsewhere, elsewhereSentence } from '../../benches';
+import { elsewhereSentence, usedElsewhere } from '../../benches';
+import type { Looked } from './use-looked';
 
-/** The turn, in degrees of the sphere, by which the whole stack differs from what the measured values alone would make. */
-function movedByDeg(bench: Bench, dialsDeg: readonly number[]): number {
+/** 1 − F between what these dials make and what they would if every plate retarded as it was measured. */
+function leftOutCosts(bench: Bench, goal: Goal, dialsDeg: readonly number[]): number {
   const used = platesAtDials(targetPlates(bench.plates, bench), dialsDeg);
   const measured = used.map((retarder, k): Retarder => ({
     ...retarder,
     retardanceRad: toRadians(degrees(bench.plates[k]?.calibration.retardanceDeg ?? 0)),
   }));
-  const left = unitaryShortfall(stackQuaternion(used), stackQuaternion(measured));
-  return toDegrees(radians(2 * Math.asin(Math.sqrt(left))));
+  if (goal.kind === 'apply') return unitaryInfidelity(stackQuaternion(used), stackQuaternion(measured));
+  const behind = (plates: readonly Retarder[]) => statesBehind(goal.input, plates).at(-1) ?? goal.input;
+  return infidelityBetween(behind(used), behind(measured));
 }
 
 interface CalibratedElsewhereProps {
   readonly bench: Bench;
-  /** Of the selected row; null while none is solved. */
-  readonly dialsDeg: readonly number[] | null;
+  /** The selected row; null while none is solved. */
+  readonly looked: Looked | null;
 }
 
-/** Says which plates were measured at another wavelength than they are used at, what is made of that, and how much it moves. */
-export function CalibratedElsewhere({ bench, dialsDeg }: CalibratedElsewhereProps) {
-  const elsewhere = bench.plates.filter((plate) => calibratedElsewhere(plate, bench.wavelengthNm));
+/** Says which plates are used away from where they were measured, what is made of that, and how much it moves. */
+export function CalibratedElsewhere({ bench, looked }: CalibratedElsewhereProps) {
+  const elsewhere = bench.plates
+    .map((plate) => ({ plate, used: usedRetardance(plate, bench) }))
+    .filter(({ plate, used }) => usedElsewhere(plate, used, bench));
   if (elsewhere.length === 0) return null;
-  const unmodelled = elsewhere.some((plate) => usedRetardance(plate, bench).source === 'no-model');
-  const movedDeg = dialsDeg?.length === bench.plates.length ? movedByDeg(bench, dialsDeg) : null;
+  const unmodelled = elsewhere.some(({ used }) => used.source === 'no-model');
+  const costs =
+    looked === null
+      ? 0
+      : leftOutCosts(looked.bench, rowGoal(looked.view.reading, looked.input), looked.view.solution.dialsDeg);
   return (
     <div className={`mb-2 text-s ${unmodelled ? 'font-strong text-fault' : 'text-ink-2'}`}>
-      {elsewhere.map((plate) => (
+      {elsewhere.map(({ plate, used }) => (
         <p key={plate.id} className="m-0">
-          <GapText text={elsewhereSentence(plate, usedRetardance(plate, bench), bench.wavelengthNm)} />
+          <GapText text={elsewhereSentence(plate, used, bench)} />
         </p>
       ))}
-      {movedDeg !== null && movedDeg > 0.005 && (
+      {looked !== null && costs > 1e-9 && (
         <p className="m-0">
-          For the selected row that turns the light by {movedDeg.toFixed(2)}° on the sphere against the values
-          as measured; left out, it could cost 1 − F up to{' '}
-          <Scientific value={Math.sin((movedDeg * Math.PI) / 360) ** 2} />.
+          With the values as measured, {looked.target.label} would be another light by 1 − F{' '}
+          <Scientific value={costs} />.
         </p>
       )}
     </div>

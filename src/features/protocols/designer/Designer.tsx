@@ -55,6 +55,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const bench = benches.find(({ id }) => id === content.benchId);
   const solved = useSolvedRows(content.targets, bench ?? null, lab.convention, content);
   const views = useRowViews(content.targets, solved.rows);
+  // Turned by hand were other plates.
+  const benchPlates = bench?.plates.map(({ id }) => id).join();
+  useEffect(() => turnByHand(null), [benchPlates, turnByHand]);
   const commands = useDesignerCommands({ draft, views, mayWrite });
   const removed = useRemovedRow(content);
 
@@ -97,9 +100,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
           <TextLink to={`/labs/${lab.id}/bench`}>See the benches</TextLink>
         </BeamWrong>
       )}
-      {bench !== undefined && (
-        <CalibratedElsewhere bench={bench} dialsDeg={looked?.view.solution.dialsDeg ?? null} />
-      )}
+      {bench !== undefined && <CalibratedElsewhere bench={bench} looked={looked} />}
       {solved.benchFault !== null && (
         <BeamWrong title="The rows can’t be solved">{solved.benchFault}</BeamWrong>
       )}

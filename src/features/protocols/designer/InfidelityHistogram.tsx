@@ -4,6 +4,8 @@ import { Scientific } from '../../../components/Scientific';
 interface InfidelityHistogramProps {
   readonly summary: MonteCarloSummary;
   readonly tolerance: number;
+  /** Of the draws, those that don't exceed it. */
+  readonly shareWithin: number;
   /** The 5 % and 95 % points of first order. */
   readonly firstOrder: { readonly low: number; readonly high: number };
   readonly asTable: boolean;
@@ -31,7 +33,13 @@ function filledBins({ histogram }: MonteCarloSummary): readonly Bin[] {
 }
 
 /** How the drawn 1 − F lie: better to the right, as on every axis of fidelity; the bracket is the tolerance. */
-export function InfidelityHistogram({ summary, tolerance, firstOrder, asTable }: InfidelityHistogramProps) {
+export function InfidelityHistogram({
+  summary,
+  tolerance,
+  shareWithin,
+  firstOrder,
+  asTable,
+}: InfidelityHistogramProps) {
   const bins = filledBins(summary);
   const worst = Math.log10(Math.max(bins.at(-1)?.to ?? 1, tolerance * 1.2));
   const best = Math.log10(Math.min(bins[0]?.from ?? 1e-12, tolerance / 1.2));
@@ -42,10 +50,7 @@ export function InfidelityHistogram({ summary, tolerance, firstOrder, asTable }:
     { length: Math.max(0, Math.floor(worst) - Math.ceil(best) + 1) },
     (_, k) => Math.ceil(best) + k,
   );
-  const shareWithin =
-    bins.reduce((sum, { to, count }) => sum + (to <= tolerance ? count : 0), summary.histogram.below) /
-    summary.draws;
-  const words = `Histogram of 1 − F over ${summary.draws} draws; about ${Math.round(shareWithin * 100)} per cent lie within the tolerance.`;
+  const words = `Histogram of 1 − F over ${summary.draws} draws; ${(100 * shareWithin).toFixed(1)} per cent lie within the tolerance.`;
   return (
     <figure className="m-0 mt-2">
       <svg role="img" aria-label={words} viewBox={`0 0 ${width} ${height}`} className="w-full max-w-160">
@@ -100,7 +105,7 @@ export function InfidelityHistogram({ summary, tolerance, firstOrder, asTable }:
       </svg>
       <figcaption className="text-s text-ink-2">
         The bracket is the tolerance; the heavy stroke is first order’s 5 % to 95 %.{' '}
-        {Math.round(shareWithin * 100)} % of the draws lie within.
+        {(100 * shareWithin).toFixed(1)} % of the draws lie within.
       </figcaption>
       {asTable && (
         <table className="mt-2 text-right text-s">

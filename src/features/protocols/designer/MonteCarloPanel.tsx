@@ -33,7 +33,13 @@ export function MonteCarloPanel({ label, problem, solution, toleranceInfidelity 
     Number.isSafeInteger(seedNumber) && seedNumber >= 0 ? undefined : 'Write a whole number from 0.';
   const run = () => {
     if (seedFault === undefined) {
-      start({ kind: 'monte-carlo', problem, draws: Number(draws), seed: seedNumber });
+      start({
+        kind: 'monte-carlo',
+        problem,
+        draws: Number(draws),
+        seed: seedNumber,
+        toleranceInfidelity,
+      });
     }
   };
   return (
@@ -73,7 +79,7 @@ export function MonteCarloPanel({ label, problem, solution, toleranceInfidelity 
         </p>
       )}
       {study.state === 'done' && (
-        <Drawn summary={study.result.summary} solution={solution} toleranceInfidelity={toleranceInfidelity} />
+        <Drawn {...study.result} solution={solution} toleranceInfidelity={toleranceInfidelity} />
       )}
     </section>
   );
@@ -81,11 +87,12 @@ export function MonteCarloPanel({ label, problem, solution, toleranceInfidelity 
 
 interface DrawnProps {
   readonly summary: MonteCarloSummary;
+  readonly shareWithin: number;
   readonly solution: SettingSolution;
   readonly toleranceInfidelity: number;
 }
 
-function Drawn({ summary, solution, toleranceInfidelity }: DrawnProps) {
+function Drawn({ summary, shareWithin, solution, toleranceInfidelity }: DrawnProps) {
   const [asTable, setAsTable] = useState(false);
   const { mean, standardError, median, low, high, largest } = summary;
   const apart = Math.abs(mean - solution.expectedInfidelity);
@@ -119,7 +126,7 @@ function Drawn({ summary, solution, toleranceInfidelity }: DrawnProps) {
         ).
       </p>
       <InfidelityHistogram
-        summary={summary}
+        {...{ summary, shareWithin }}
         tolerance={toleranceInfidelity}
         firstOrder={{ low: solution.expectedLow, high: solution.expectedHigh }}
         asTable={asTable}

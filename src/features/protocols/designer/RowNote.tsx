@@ -15,10 +15,10 @@ interface RowNoteProps {
 
 const plateWords = ['first', 'second', 'third', 'fourth', 'fifth', 'sixth'] as const;
 
-function familyWords({ freePlates, solutions }: SolvedTarget): string {
+function familyWords({ freePlates, solutions }: SolvedTarget, held: boolean): string {
   const free = freePlates.map((plate) => plateWords[plate] ?? '').join(' and the ');
   const may = freePlates.length === 1 ? 'plate may stand' : 'plates may each stand';
-  return `The ${free} ${may} at any of many angles here, with the others to match. The best member stands; ${solutions.length} of the family are listed.`;
+  return `The ${free} ${may} at any of many angles here, with the others to match. ${held ? 'The held member stands' : 'The best member stands'}; ${solutions.length} of the family are listed.`;
 }
 
 /** The one thing most worth saying about a row, under it and across. */
@@ -49,13 +49,14 @@ export function RowNote({ view, toleranceInfidelity, columns, selected }: RowNot
     return (
       <NoteLine columns={columns}>
         {verdict === 'not within'
-          ? 'Not within the tolerance, whatever the plates and dials turn out to be within their σ.'
+          ? 'Not within the tolerance: even the 5 % point of what is expected lies beyond it.'
           : 'Not decided: the tolerance lies between the 5 % and 95 % points of what is expected.'}
       </NoteLine>
     );
   }
   if (!selected) return null;
-  if (solved.kind === 'family') return <NoteLine columns={columns}>{familyWords(solved)}</NoteLine>;
+  if (solved.kind === 'family')
+    return <NoteLine columns={columns}>{familyWords(solved, view.held)}</NoteLine>;
   if (reading.normalised && reading.kind === 'unitary') {
     return (
       <NoteLine columns={columns}>

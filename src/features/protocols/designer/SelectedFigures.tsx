@@ -27,7 +27,7 @@ interface SelectedFiguresProps {
 export const SelectedFigures = memo(function SelectedFigures(props: SelectedFiguresProps) {
   const { bench, input, followed, target, view, convention } = props;
   const { handDialsDeg, overlay } = useDesignerView();
-  const dialsDeg = handDialsDeg ?? view.solution.dialsDeg;
+  const dialsDeg = handDialsDeg?.length === bench.plates.length ? handDialsDeg : view.solution.dialsDeg;
   const { reading } = view;
   const [sphereView] = useState(() => createSphereViewStore());
   const plates = useMemo(

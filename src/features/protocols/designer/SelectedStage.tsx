@@ -46,7 +46,7 @@ export const SelectedStage = memo(function SelectedStage(props: SelectedStagePro
   const { bench, input, followed, target, view, toleranceInfidelity, convention } = props;
   const { handDialsDeg, turnByHand, listSolutions } = useDesignerView();
   const solutionDials = view.solution.dialsDeg;
-  const dialsDeg = handDialsDeg ?? solutionDials;
+  const dialsDeg = handDialsDeg?.length === bench.plates.length ? handDialsDeg : solutionDials;
   const reached = standingAt({ bench, input, reading: view.reading, dialsDeg });
   return (
     <BeamLineStage

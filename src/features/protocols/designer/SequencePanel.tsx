@@ -9,9 +9,9 @@ import { Button } from '../../../components/Button';
 import { SegmentedChoice } from '../../../components/SegmentedChoice';
 import { TextButton } from '../../../components/TextLink';
 import { useStudy } from '../../../workers/use-study';
-import { type DraftEdit, rankBy, takeOrder } from '../draft-edits';
+import { type DraftEdit, takeHeld, takeOrder } from '../draft-edits';
 import type { RowView } from './row-view';
-import { durationWords, turnWords } from './turn-words';
+import { SequenceAnswer } from './SequenceAnswer';
 
 interface SequencePanelProps {
   readonly content: DraftContent;
@@ -130,107 +130,31 @@ function SequencePlanner(props: SequencePanelProps) {
       {study.state === 'done' && (
         <SequenceAnswer
           {...study.result}
+          cost={problem?.cost ?? cost}
           labels={content.targets.map(({ label }) => label)}
-          mayTake={mayWrite}
-          objective={content.objective}
-          onTakeChoices={() => edit(rankBy('least-travel'))}
-          onTakeOrder={(order) => edit(takeOrder(order.flatMap((place) => content.targets[place]?.id ?? [])))}
+          ranked={content.objective === 'least-travel'}
+          take={
+            mayWrite && problem !== null ? (order, plan) => edit(taken(content, problem, order, plan)) : null
+          }
         />
       )}
     </>
   );
 }
 
-interface SequenceAnswerProps {
-  readonly plan: SequencePlan;
-  readonly order: {
-    readonly order: readonly number[];
-    readonly plan: SequencePlan;
-    readonly method: 'exact' | 'heuristic';
-    readonly boundDeg: number | null;
-    readonly boundSeconds: number | null;
-  } | null;
-  readonly labels: readonly string[];
-  readonly objective: DraftContent['objective'];
-  readonly mayTake: boolean;
-  readonly onTakeChoices: () => void;
-  readonly onTakeOrder: (order: readonly number[]) => void;
-}
-
-/** The saving, before it is taken. */
-function SequenceAnswer(props: SequenceAnswerProps) {
-  const { plan, order, labels, objective, mayTake, onTakeChoices, onTakeOrder } = props;
-  const changes = order?.order.some((place, index) => place !== index) ?? false;
-  return (
-    <div role="status" className="mt-3 space-y-2">
-      <table className="w-full max-w-160 text-left">
-        <thead className="text-s text-ink-2">
-          <tr className="border-b border-hair">
-            <th scope="col" className="font-words">
-              way through the list
-            </th>
-            <th scope="col" className="text-right font-words">
-              all plates turn
-            </th>
-            <th scope="col" className="text-right font-words">
-              time
-            </th>
-          </tr>
-        </thead>
-        <tbody>
-          <WayRow name="each row’s first solution" deg={plan.firstTravelDeg} seconds={plan.firstSeconds} />
-          <WayRow name="the best solutions in this order" deg={plan.travelDeg} seconds={plan.seconds} />
-          {order !== null && changes && (
-            <WayRow
-              name="the best solutions in another order"
-              deg={order.plan.travelDeg}
-              seconds={order.plan.seconds}
-            />
-          )}
-        </tbody>
-      </table>
-      <p className="m-0">
-        Choosing the solutions saves {turnWords(plan.firstTravelDeg - plan.travelDeg)}
-        {plan.seconds !== null &&
-          plan.firstSeconds !== null &&
-          ` and ${durationWords(plan.firstSeconds - plan.seconds)}`}{' '}
-        against each row’s first.{' '}
-        {mayTake && objective !== 'least-travel' && (
-          <TextButton onClick={onTakeChoices}>Rank the list by least travel</TextButton>
-        )}
-        {objective === 'least-travel' && 'The list is ranked so.'}
-      </p>
-      {order !== null && (
-        <p className="m-0">
-          {changes ? (
-            <>
-              In the order {order.order.map((place) => labels[place] ?? '').join(', ')} it saves{' '}
-              {turnWords(plan.travelDeg - order.plan.travelDeg)} more.{' '}
-              {order.method === 'exact'
-                ? 'No order turns less.'
-                : order.boundDeg !== null &&
-                  `No order can turn less than ${turnWords(order.boundDeg)} in all.`}{' '}
-              {mayTake && <TextButton onClick={() => onTakeOrder(order.order)}>Take this order</TextButton>}
-            </>
-          ) : (
-            'No better order was found.'
-          )}
-        </p>
-      )}
-    </div>
-  );
-}
-
-function WayRow(props: { readonly name: string; readonly deg: number; readonly seconds: number | null }) {
-  return (
-    <tr className="border-b border-hair">
-      <th scope="row" className="py-1 font-words">
-        {props.name}
-      </th>
-      <td className="py-1 text-right font-mono">{turnWords(props.deg)}</td>
-      <td className="py-1 text-right font-mono">
-        {props.seconds === null ? '—' : durationWords(props.seconds)}
-      </td>
-    </tr>
+/** A plan by travel is what the objective makes of the list by itself; one by time has to be held row by row. */
+function taken(
+  content: DraftContent,
+  { cost, rows }: SequenceProblem,
+  order: readonly number[],
+  plan: SequencePlan,
+): DraftEdit {
+  const ids = order.flatMap((place) => content.targets[place]?.id ?? []);
+  if (cost === 'travel') return takeOrder(ids);
+  return takeHeld(
+    ids.map((id, step) => ({
+      id,
+      fastAxesDeg: rows[order[step] ?? 0]?.branches[plan.choices[step] ?? 0] ?? null,
+    })),
   );
 }

@@ -43,7 +43,12 @@ export function useLooked({ content, bench, convention, target, view }: Looking)
   }, [inputExpression, convention, kind, followed]);
   const now = useMemo(
     () =>
-      bench === undefined || input === null || target === undefined || view?.status !== 'solved'
+      bench === undefined ||
+      input === null ||
+      target === undefined ||
+      view?.status !== 'solved' ||
+      // Solved for the bench before this one, with another number of plates.
+      view.solution.dialsDeg.length !== bench.plates.length
         ? null
         : { bench, input, followed: kind === 'apply' ? followed : null, target, view },
     [bench, input, kind, followed, target, view],
