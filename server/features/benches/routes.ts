@@ -26,6 +26,7 @@ import {
   updateBench,
 } from './bench-store';
 import { checkBench } from './check-bench';
+import { unholdDrafts } from './unhold-drafts';
 
 const benchParams = labParams.extend({ benchId: idSchema });
 const runRow = z.object({ number: z.number() });
@@ -88,6 +89,9 @@ export function benchRoutes(): readonly Route[] {
         const { convention } = await theLab(transaction, labId);
         await checkBench(transaction, { labId, benchId: thing.id, convention }, body);
         await uniquely(body.name, () => updateBench(transaction, thing, body));
+        if (thing.plates.map(({ id }) => id).join() !== body.plateIds.join()) {
+          await unholdDrafts(transaction, { labId, benchId: thing.id });
+        }
         await audit({
           kind: 'bench.changed',
           subjectId: thing.id,

@@ -1,0 +1,155 @@
+import type { Browser, Page } from 'playwright-core';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { type Product, startProduct } from './support/product';
+import { launchBrowser, openPage, signIn } from './support/watched-page';
+
+let product: Product;
+let browser: Browser;
+beforeAll(async () => {
+  product = await startProduct();
+  browser = await launchBrowser({ webgl: false });
+});
+afterAll(async () => {
+  await browser.close();
+  await product.stop();
+});
+
+async function writeProtocol(page: Page, name: string, kind: 'states' | 'unitaries', bench: string) {
+  await page.getByRole('link', { name: /^Plan/u }).click();
+  await page.getByRole('link', { name: 'Write a protocol' }).click();
+  await page.getByLabel('name', { exact: true }).fill(name);
+  await page.getByRole('radio', { name: new RegExp(`^${kind}`, 'u') }).check();
+  await page.getByLabel('bench', { exact: true }).selectOption({ label: bench });
+  await page.getByRole('button', { name: 'Write the targets' }).click();
+  await page.getByRole('combobox', { name: 'New target' }).waitFor();
+}
+
+const gateBench = 'gate bench, 810 nm, Q-A H-5 Q-D';
+
+describe('a protocol of unitaries', () => {
+  it('is written, solved for three real plates, looked at, planned, drawn and saved', async () => {
+    const { page, context, faults } = await openPage(browser, product);
+    await signIn(page, 'Ines Varga');
+    await writeProtocol(page, 'Gates of the morning', 'unitaries', gateBench);
+
+    await page.getByRole('combobox', { name: 'New target' }).focus();
+    // Completion: two letters, the way down, Enter.
+    await page.keyboard.type('rot');
+    await page.getByRole('option', { name: /rotate\(axis, angle\)/u }).waitFor();
+    await page.keyboard.press('ArrowDown');
+    await page.keyboard.press('Enter');
+    await page.keyboard.type('x, 50deg)');
+    await page.keyboard.press('Enter');
+    const count = page.getByRole('button', { name: /^Solution 1 of 4 for target t0$/u });
+    await count.waitFor();
+    for (const expression of ['T', 'qwp(10deg) hwp(70deg)', 'from D to L']) {
+      await page.keyboard.type(expression);
+      await page.keyboard.press('Enter');
+      await page
+        .getByRole('row', { selected: true })
+        .getByRole('button', { name: /^Solution/u })
+        .waitFor();
+    }
+    await page.getByRole('combobox', { name: 'New target' }).pressSequentially('matrix [[1, 1], [1, 1]]');
+    await page.getByText(/not unitary/u).waitFor();
+    await page.getByRole('button', { name: /^Write matrix \[\[/u }).click();
+    await page
+      .getByText('Row 5 can’t be read and holds this up.', { exact: true })
+      .waitFor({ state: 'hidden' });
+
+    // Where six states go, in words for whoever can't see the drawing.
+    await page.getByText('T', { exact: true }).first().click();
+    await page.getByRole('radio', { name: 'six states' }).check();
+    await page.getByRole('button', { name: 'in words' }).click();
+    expect(await page.getByRole('row', { name: /^D goes|D\b.*°/u }).count()).toBeGreaterThan(0);
+
+    // The saving is shown before it is taken, and taking it is undone as one.
+    await page.getByRole('button', { name: /^Plan the least travel/u }).click();
+    await page.getByRole('button', { name: 'Try other orders too' }).click();
+    await page.getByText(/^Choosing the solutions saves/u).waitFor();
+    await page.getByRole('button', { name: 'Rank the list by least travel' }).click();
+    await page.getByText('dials stand at').waitFor();
+    await page.getByText(/saved \d\d:\d\d:\d\d/u).waitFor();
+
+    await page.getByRole('button', { name: 'Draw the budget by Monte Carlo' }).click();
+    await page.getByLabel('draws').selectOption('1000000');
+    await page.getByRole('button', { name: 'Draw the budget', exact: true }).click();
+    await page.getByRole('button', { name: 'Cancel the drawing' }).click();
+    await page.getByLabel('draws').selectOption('10000');
+    await page.getByRole('button', { name: 'Draw the budget', exact: true }).click();
+    await page.getByRole('img', { name: /^Histogram of 1 − F over 10000 draws/u }).waitFor();
+
+    await page.getByRole('button', { name: 'Save version 1' }).click();
+    await page.getByLabel('message: what changed, and why').fill('Five gates for the process check');
+    await page.getByRole('dialog').getByRole('button', { name: 'Save version 1' }).click();
+    await page.waitForURL(/\/versions\/1$/u);
+    await page.getByText('Hashed again on this page from the text of the version: it agrees.').waitFor();
+    expect(faults()).toEqual([]);
+    await context.close();
+  });
+});
+
+describe('many rows at once', () => {
+  it('come from a set or a file, bad ones named by line and column, and go again by one undo', async () => {
+    const { page, context, faults } = await openPage(browser, product);
+    await signIn(page, 'Tomas Reuter');
+    await writeProtocol(page, 'Rows at once', 'states', gateBench);
+    await page.getByRole('button', { name: /^Add a set/u }).click();
+    const dialog = page.getByRole('dialog');
+    await dialog.getByLabel('set', { exact: true }).selectOption('tetrahedron');
+    await dialog.getByRole('button', { name: 'Add 4 rows' }).click();
+    // Three plates for a state: a whole family, its best member standing.
+    await page
+      .getByText(/plate may stand at any of many angles here/u)
+      .first()
+      .waitFor();
+
+    await page.getByRole('button', { name: /^Add a set/u }).click();
+    await dialog.getByRole('radio', { name: 'text or a file' }).check();
+    await dialog.getByLabel('A file of rows').setInputFiles({
+      name: 'rows.csv',
+      mimeType: 'text/csv',
+      buffer: Buffer.from('label;expression\na1;linear(30deg)\na2;linear(30)\na3;"=1+1"\n'),
+    });
+    await dialog.getByText(/^Line 3\. Column 8 of the expression: 30 of what\?/u).waitFor();
+    await dialog.getByText(/^2 rows can’t be read/u).waitFor();
+    await dialog.getByRole('button', { name: 'Add 3 rows' }).click();
+    await page.getByText('Rows 6, 7 can’t be read and hold this up.', { exact: true }).waitFor();
+    await page.keyboard.press('Control+z');
+    await page
+      .getByText('Rows 6, 7 can’t be read and hold this up.', { exact: true })
+      .waitFor({ state: 'hidden' });
+
+    await page.getByRole('button', { name: /^Add a set/u }).click();
+    await dialog.getByRole('radio', { name: 'text or a file' }).check();
+    await dialog.getByLabel('A file of rows').setInputFiles({
+      name: 'picture.csv',
+      mimeType: 'text/csv',
+      buffer: Buffer.from([0x89, 0x50, 0x4e, 0x47, 0, 0xff, 0xfe]),
+    });
+    await dialog.getByText(/can’t be read as UTF-8 text|is not text/u).waitFor();
+    await page.keyboard.press('Escape');
+    expect(faults()).toEqual([]);
+    await context.close();
+  });
+});
+
+describe('the pages around the designer', () => {
+  it('answer for a visitor: a gate’s angles as published, and one light in every convention by an address to send', async () => {
+    const { page, context, faults } = await openPage(browser, product);
+    await page.goto('/quick-angles?for=apply&state=T');
+    await page.getByRole('radio', { name: 'be a unitary' }).waitFor();
+    await page.getByText('56.25°').first().waitFor();
+    await page.getByRole('radio', { name: 'measure a state' }).check();
+    await page.getByText(/polariser that passes level light/u).waitFor();
+
+    await page.goto('/conventions?state=L');
+    await page.getByRole('heading', { level: 1 }).waitFor();
+    await page
+      .getByText(/counter-clockwise/u)
+      .first()
+      .waitFor();
+    expect(faults()).toEqual([]);
+    await context.close();
+  });
+});
