@@ -240,6 +240,11 @@ function latexOf(source: string): string {
 
 test('the TeX of an expression carries the factor in front and nothing of the source', () => {
   expect(latexOf('(H + i V)/sqrt(2)')).toBe('\\frac{1}{\\sqrt{2}}\\left(|H\\rangle+i\\,|V\\rangle\\right)');
+  // A long number is cut with dots where it is typeset, never rounded to another one.
+  expect(latexOf('0.6400438558471234 H + 12.345678901234 V')).toContain('0.64004\\ldots');
+  expect(latexOf('0.6400438558471234 H + 12.345678901234 V')).toContain('12.345\\ldots');
+  expect(latexOf('0.00012345678912 H + V')).toContain('0.00012345\\ldots');
+  expect(latexOf('0.3333 H + 109.4712 V')).toContain('109.4712');
   expect(latexOf('bloch(109.47deg, 120deg)')).toBe(
     '\\mathrm{bloch}\\left(109.47^{\\circ},\\ 120^{\\circ}\\right)',
   );

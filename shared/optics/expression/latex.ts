@@ -71,11 +71,23 @@ function latexMatrix(rows: readonly (readonly Node[])[]): string {
   return `\\begin{pmatrix}${lines.join('\\\\')}\\end{pmatrix}`;
 }
 
+/** Longer numbers are typeset with so many figures and dots behind them: the whole of them stands in the source. */
+const MOST_FIGURES = 7;
+const SHOWN_FIGURES = 5;
+
 function latexNumber(value: number): string {
-  const text = String(value);
-  const [mantissa, exponent] = text.split('e');
-  if (mantissa === undefined || exponent === undefined) return text;
-  return `${mantissa}\\times 10^{${exponent.replace('+', '')}}`;
+  const [mantissa = '', exponent] = String(value).split('e');
+  const cut = mantissa.replace(/^0\./u, '').replace('.', '').length > MOST_FIGURES;
+  const shown = cut ? `${cutOff(mantissa)}\\ldots` : mantissa;
+  return exponent === undefined ? shown : `${shown}\\times 10^{${exponent.replace('+', '')}}`;
+}
+
+/** The first figures as they are, not rounded: dots promise that they go on. */
+function cutOff(digits: string): string {
+  const leading = /^0\.0*/u.exec(digits)?.[0].length ?? 0;
+  const withPoint = leading === 0 && digits.indexOf('.') <= SHOWN_FIGURES && digits.includes('.') ? 1 : 0;
+  const whole = digits.includes('.') ? digits.indexOf('.') : digits.length;
+  return digits.slice(0, Math.max(leading + SHOWN_FIGURES + withPoint, whole));
 }
 
 function latexTerm({ negative, node }: Term, index: number): string {
