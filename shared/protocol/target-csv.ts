@@ -1,21 +1,23 @@
 import Papa from 'papaparse';
 import type { Convention } from '../optics/convention';
-import { MAX_LENGTH, parseState, parseUnitary } from '../optics/expression';
-import { maxTargets } from '../schemas/protocols';
+import { MAX_LENGTH } from '../optics/expression';
+import { maxLabelLength, maxTargets } from '../schemas/protocols';
 import { type Delimiter, findDelimiter, joinedCells } from './csv-shape';
+import { readRow, type RowReading } from './solve-row';
 
 /** The longest text that is read, in bytes as UTF-8. */
 export const MAX_CSV_BYTES = 1_000_000;
 
-const LONGEST_LABEL = 24;
+/** A text that goes on being wrong isn't one of targets. */
+const MOST_PROBLEMS = 2 * maxTargets;
 
 export interface CsvRow {
   /** The line of the text on which the row begins, from 1. */
   readonly line: number;
   readonly label: string;
   readonly expression: string;
-  /** Whether the expression reads as what the protocol holds; when not, a problem says why. */
-  readonly readable: boolean;
+  /** The expression read as what the protocol holds; null where it can't be, and a problem says why. */
+  readonly reading: RowReading | null;
 }
 
 export interface CsvProblem {
@@ -38,16 +40,15 @@ export interface CsvTarget {
  * Reads pasted or uploaded targets: a label and an expression a line, or expressions alone. Comma, semicolon or tab between
  * them, quotes as in RFC 4180, lines that begin with # left out, a header with the word "expression" optional. Commas inside an
  * expression's brackets need no quotes. Cells are text and nothing else, whatever a spreadsheet would make of them.
- * Never throws. At most `maxTargets` rows and `MAX_CSV_BYTES`, with a problem that says what was left out.
+ * Never throws. At most `maxTargets` rows, twice as many problems and `MAX_CSV_BYTES`, with a problem that says what was left out;
+ * nothing behind them is read.
  */
 export function readTargetCsv(text: string, target: CsvTarget): CsvReading {
   if (isLongerThan(text, MAX_CSV_BYTES)) {
     return { rows: [], problems: [{ line: 1, message: 'This text is longer than 1 MB. Read it in parts.' }] };
   }
   const reader = new Reader(target);
-  for (const record of records(text.startsWith('\ufeff') ? text.slice(1) : text)) {
-    if (!reader.take(record)) break;
-  }
+  takeRecords(text.startsWith('\ufeff') ? text.slice(1) : text, (record) => reader.take(record));
   return reader.reading();
 }
 
@@ -58,12 +59,13 @@ interface CsvRecord {
   readonly fault: string | null;
 }
 
-function records(text: string): readonly CsvRecord[] {
+/** Gives one record after the other until no more are wanted. */
+function takeRecords(text: string, take: (record: CsvRecord) => boolean): void {
   const delimiter = findDelimiter(text);
   const newline = text.includes('\r\n') ? '\r\n' : text.includes('\n') ? '\n' : '\r';
-  const found: CsvRecord[] = [];
   let at = 0;
   let line = 1;
+  let taken = 0;
   Papa.parse<string[]>(text, {
     delimiter,
     newline,
@@ -78,11 +80,11 @@ function records(text: string): readonly CsvRecord[] {
       const fault = errors.some(({ type }) => type === 'Quotes')
         ? 'A quote is not closed, or text stands behind one. Double the quotes inside a quoted cell.'
         : null;
-      found.push({ line: Math.max(before, line - ended - inside), cells: data, delimiter, fault });
-      if (found.length > 50 * maxTargets) parser.abort();
+      taken += 1;
+      const wanted = take({ line: Math.max(before, line - ended - inside), cells: data, delimiter, fault });
+      if (!wanted || taken > 50 * maxTargets) parser.abort();
     },
   });
-  return found;
 }
 
 function occurrences(text: string, part: string, from: number, to: number): number {
@@ -128,6 +130,10 @@ class Reader {
       );
       return false;
     }
+    if (this.problems.length >= MOST_PROBLEMS) {
+      this.problem(line, 'So many lines can’t be read that this row and those below are left out.');
+      return false;
+    }
     if (fault !== null) this.problem(line, fault);
     else this.row(record);
     return true;
@@ -149,20 +155,30 @@ class Reader {
       );
       return;
     }
-    if (label.length > LONGEST_LABEL) {
-      this.problem(line, `A label has at most ${LONGEST_LABEL} characters. This one was cut.`);
+    if (label.length > maxLabelLength) {
+      this.problem(line, `A label has at most ${maxLabelLength} characters. This one was cut.`);
     }
-    const read = this.target.kind === 'state' ? parseState : parseUnitary;
-    const reading = read(expression, this.target.convention);
-    if (!reading.ok) {
-      this.problem(line, `Column ${reading.error.column} of the expression: ${reading.error.message}`);
+    const { kind, convention } = this.target;
+    const read = readRow(expression, kind === 'state' ? 'prepare' : 'apply', convention);
+    if (!read.ok) {
+      this.problem(line, `Column ${read.error.column} of the expression: ${read.error.message}`);
     }
-    this.rows.push({ line, label: label.slice(0, LONGEST_LABEL), expression, readable: reading.ok });
+    this.rows.push({ line, label: cutLabel(label), expression, reading: read.ok ? read.reading : null });
   }
 
   private problem(line: number, message: string): void {
     this.problems.push({ line, message });
   }
+}
+
+/** No longer than the schema takes, and no character cut in half. */
+function cutLabel(label: string): string {
+  let cut = '';
+  for (const character of label) {
+    if (cut.length + character.length > maxLabelLength) return cut;
+    cut += character;
+  }
+  return cut;
 }
 
 function headerOf(cells: readonly string[]): Layout | null {

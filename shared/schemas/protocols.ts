@@ -3,6 +3,9 @@ import { idSchema, lineSchema, noteSchema, numberSchema, timestampSchema } from 
 
 export const maxTargets = 200;
 
+/** Of a target's label, counted as JavaScript counts: an emoji is two. */
+export const maxLabelLength = 24;
+
 /** prepare: rows are states, made from the bench's input. apply: rows are unitaries, made of any light that comes in. */
 export const protocolKindSchema = z.enum(['prepare', 'apply']);
 export type ProtocolKind = z.infer<typeof protocolKindSchema>;
@@ -21,7 +24,7 @@ export type Objective = z.infer<typeof objectiveSchema>;
 const draftTargetSchema = z.strictObject({
   id: idSchema,
   /** May be empty, and an expression may not parse: a draft keeps what was typed. */
-  label: z.string().max(24, 'A label has at most 24 characters.'),
+  label: z.string().max(maxLabelLength, `A label has at most ${maxLabelLength} characters.`),
   expression: z.string().max(4096, 'An expression has at most 4096 characters.'),
   /** Table angles of a solution that a person holds, one a plate; null follows the ranking. */
   heldFastAxesDeg: z.array(z.number().min(0).max(180)).max(6).nullable(),

@@ -9,7 +9,7 @@ import {
 } from '../../shared/optics';
 import { cliffordTurns, haarStates } from '../../shared/optics/target-sets';
 import { MAX_CSV_BYTES, readTargetCsv, writeTargetCsv } from '../../shared/protocol/target-csv';
-import { maxTargets } from '../../shared/schemas';
+import { maxLabelLength, maxTargets } from '../../shared/schemas';
 
 const STATES = { kind: 'state', convention: DEFAULT_CONVENTION } as const;
 const UNITARIES = { kind: 'unitary', convention: DEFAULT_CONVENTION } as const;
@@ -17,7 +17,7 @@ const UNITARIES = { kind: 'unitary', convention: DEFAULT_CONVENTION } as const;
 /** "line label|expression", with an ! behind what doesn't read. */
 function rows(text: string, target: Parameters<typeof readTargetCsv>[1] = STATES): string[] {
   return readTargetCsv(text, target).rows.map(
-    ({ line, label, expression, readable }) => `${line} ${label}|${expression}${readable ? '' : ' !'}`,
+    ({ line, label, expression, reading }) => `${line} ${label}|${expression}${reading === null ? ' !' : ''}`,
   );
 }
 
@@ -56,7 +56,7 @@ describe('forms of the text', () => {
 
 test('an expression that does not read keeps its row, with the column inside the expression', () => {
   const { rows: found, problems } = readTargetCsv('a,H\nb,bloch(90deg; 3)\nc,V', STATES);
-  expect(found.map(({ readable }) => readable)).toEqual([true, false, true]);
+  expect(found.map(({ reading }) => reading?.kind ?? null)).toEqual(['state', null, 'state']);
   expect(problems).toHaveLength(1);
   expect(problems[0]?.line).toBe(2);
   expect(problems[0]?.message).toMatch(/^Column 12 of the expression: ";"/u);
@@ -80,6 +80,22 @@ test('rows without an expression, open quotes, long labels and long expressions 
     rows: [],
     problems: [{ line: 1 }],
   });
+});
+
+test('a label is cut between two characters, never through one, to what the draft’s schema takes', () => {
+  // An emoji is two units of UTF-16: the twenty-fourth unit is the first half of the twelfth.
+  const [row] = readTargetCsv(`x${'😀'.repeat(20)},H`, STATES).rows;
+  expect(row?.label).toBe(`x${'😀'.repeat(11)}`);
+  expect(row?.label.isWellFormed()).toBe(true);
+  expect(row?.label.length).toBeLessThanOrEqual(maxLabelLength);
+});
+
+test('a text that goes on being wrong is left where it is plain that it holds no targets', () => {
+  const { rows: found, problems } = readTargetCsv(`label,expression\n${'a,\n'.repeat(5000)}`, STATES);
+  expect(found).toEqual([]);
+  expect(problems).toHaveLength(401);
+  expect(problems.at(-1)).toMatchObject({ line: 402 });
+  expect(problems.at(-1)?.message).toMatch(/those below are left out/u);
 });
 
 test('a protocol’s most rows are read, and the text’s most bytes', () => {

@@ -43,7 +43,9 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
         <>
           <Button
             kind="filled"
-            waitsFor={count === 0 ? 'rows that can be added' : undefined}
+            waitsFor={
+              found.isBehind ? 'the text to be read' : count === 0 ? 'rows that can be added' : undefined
+            }
             onClick={() => onAdd(found.rows.slice(0, count))}
           >
             Add {count === 1 ? '1 row' : `${count} rows`}

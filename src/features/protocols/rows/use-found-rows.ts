@@ -1,8 +1,8 @@
-import { useDeferredValue, useMemo } from 'react';
+import { useDeferredValue, useEffect, useMemo, useState } from 'react';
 import type { Convention } from '../../../../shared/optics/convention';
 import type { Stokes } from '../../../../shared/optics/stokes';
 import { type CsvProblem, readTargetCsv } from '../../../../shared/protocol/target-csv';
-import { readRow } from '../../../../shared/protocol/solve-row';
+import { readRow, type RowReading } from '../../../../shared/protocol/solve-row';
 import { maxTargets, type ProtocolKind } from '../../../../shared/schemas/protocols';
 import { imageOf } from '../designer/followed-light';
 import { chosenSet, type ChosenSet, type SetChoice } from './target-set-choice';
@@ -19,7 +19,34 @@ export interface FoundRows {
   readonly problems: readonly CsvProblem[];
   readonly chosen: ChosenSet;
   /** Each readable row on the sphere: the state, or where a unitary takes H. */
-  readonly points: readonly { readonly label: string; readonly state: Stokes }[];
+  readonly points: readonly Point[];
+  /** Whether the rows are still those of an older text. */
+  readonly isBehind: boolean;
+}
+
+interface Point {
+  readonly label: string;
+  readonly state: Stokes;
+}
+
+function pointOf(label: string, reading: RowReading): Point {
+  return { label, state: reading.kind === 'state' ? reading.stokes : imageOf(reading.quaternion, [1, 0, 0]) };
+}
+
+// Reading more than this may take longer than a keystroke.
+const longText = 100_000;
+const settlesAfterMs = 300;
+
+/** The text to be read: a little behind what is typed, and a long one only when it stopped changing. */
+function useReadText(text: string): string {
+  const deferred = useDeferredValue(text);
+  const [settled, settle] = useState(text);
+  useEffect(() => {
+    if (text.length <= longText) return;
+    const timer = setTimeout(() => settle(text), settlesAfterMs);
+    return () => clearTimeout(timer);
+  }, [text]);
+  return deferred.length > longText ? settled : deferred;
 }
 
 /** What would be added: from the chosen set, or from the text. */
@@ -30,21 +57,27 @@ export function useFoundRows(
   kind: ProtocolKind,
   convention: Convention,
 ): FoundRows {
-  const read = useDeferredValue(text);
-  return useMemo(() => {
+  const read = useReadText(text);
+  const set = useMemo(() => {
     const chosen = chosenSet(choice, convention);
-    const csv = readTargetCsv(read, { kind: kind === 'apply' ? 'unitary' : 'state', convention });
-    const rows = from === 'text' ? csv.rows : chosen.ok ? chosen.rows : [];
+    const rows = chosen.ok ? chosen.rows : [];
     const points = rows.flatMap(({ label, expression }) => {
       const row = readRow(expression, kind, convention);
-      if (!row.ok) return [];
-      const { reading } = row;
-      return [
-        { label, state: reading.kind === 'state' ? reading.stokes : imageOf(reading.quaternion, [1, 0, 0]) },
-      ];
+      return row.ok ? [pointOf(label, row.reading)] : [];
     });
-    return { rows, problems: from === 'text' ? csv.problems : [], chosen, points };
-  }, [from, choice, read, kind, convention]);
+    return { chosen, rows, points };
+  }, [choice, kind, convention]);
+  const csv = useMemo(() => {
+    const { rows, problems } = readTargetCsv(read, {
+      kind: kind === 'apply' ? 'unitary' : 'state',
+      convention,
+    });
+    const points = rows.flatMap(({ label, reading }) => (reading === null ? [] : [pointOf(label, reading)]));
+    return { rows, problems, points };
+  }, [read, kind, convention]);
+  return from === 'set'
+    ? { ...set, problems: [], isBehind: false }
+    : { ...csv, chosen: set.chosen, isBehind: text !== read };
 }
 
 /** How many of the found rows still have room in a protocol that holds `present` already. */
