@@ -1,6 +1,7 @@
 import type { Contribution } from '../../../../shared/optics/budget';
 import { radians, toDegrees } from '../../../../shared/optics/units';
 import type { Plate } from '../../../../shared/schemas/cabinet';
+import { withTrueMinus } from '../../../lib/format';
 
 const gap = '\u202f';
 
@@ -21,8 +22,9 @@ export function contributionName({ kind, plate }: Contribution, plates: readonly
 
 /** Its σ, or the leak itself, with two figures at most and its unit. */
 export function sigmaText({ sigma, unit }: Contribution): string {
-  if (unit === 'ratio') return sigma.toExponential(0).replace('-', '\u2212');
   const value = unit === 'rad' ? toDegrees(radians(sigma)) : sigma;
-  const shown = value >= 0.1 ? value.toFixed(1) : String(Number(value.toPrecision(1)));
+  const rounded = Number(value.toPrecision(2));
+  const shown = withTrueMinus(unit === 'ratio' ? rounded.toExponential() : String(rounded));
+  if (unit === 'ratio') return shown;
   return unit === 'rad' ? `${shown}°` : `${shown}${gap}${unit}`;
 }
