@@ -1,6 +1,7 @@
 import type { ShownSolution } from '../schemas/protocols';
 import type { VersionContent } from '../schemas/versions';
-import { type FreezeFault, rowName } from './freeze';
+import type { FreezeFault } from './freeze';
+import { rowName } from './row-name';
 
 const reload =
   'A plate was calibrated, or the page is older than the server: reload it, look at the new numbers, then save.';

@@ -3,9 +3,11 @@ import type { Plate } from '../schemas/cabinet';
 import type { Lab } from '../schemas/labs';
 import type { DraftContent, DraftTarget } from '../schemas/protocols';
 import type { FrozenGoal, FrozenPlate, FrozenTarget, VersionContent } from '../schemas/versions';
+import { finish } from '../optics/sequence';
 import { SOLVER_VERSION } from '../optics/solve-target';
 import { canonicalJson, contentHash } from './canonical-json';
-import { chooseSolutions, type RowChoice } from './choose-solutions';
+import { chooseSolutionsSteps, chosenSolution, type RowChoice, whyUnplanned } from './choose-solutions';
+import { rowName } from './row-name';
 import { benchProblem, type RowReading, type RowResult, solveRow } from './solve-row';
 import { usedRetardance } from './solving-plates';
 
@@ -41,18 +43,9 @@ export type Frozen =
     }
   | { readonly ok: false; readonly faults: readonly FreezeFault[] };
 
-/** A row as a person finds it: its number from 1, and its label if it has one. */
-export function rowName(index: number, label: string): string {
-  return label.trim() === '' ? `Row ${index + 1}` : `Row ${index + 1} (${label.trim()})`;
-}
-
 /** A draft solved for its bench and frozen with all that the numbers depend on, or every row that cannot be. */
 export function freeze(input: FreezeInput): Frozen {
-  const steps = freezeSteps(input);
-  for (;;) {
-    const step = steps.next();
-    if (step.done === true) return step.value;
-  }
+  return finish(freezeSteps(input));
 }
 
 /** `freeze` a row at a time, for a server that answers others between two rows: many plates take tens of milliseconds each. */
@@ -92,13 +85,16 @@ export function* freezeSteps(input: FreezeInput): Generator<undefined, Frozen> {
     solvedRows.push({ row, result });
   }
   if (faults.length > 0) return { ok: false, faults };
-  const choices = chooseSolutions(
-    solvedRows.map(({ row, result }) => ({
-      solved: result.solved,
-      heldFastAxesDeg: row.heldFastAxesDeg,
-    })),
+  const { choices, unplanned } = yield* chooseSolutionsSteps(
+    solvedRows.map(({ row, result }) => ({ ...result, heldFastAxesDeg: row.heldFastAxesDeg })),
     faced.problem,
   );
+  if (unplanned !== null) {
+    const { row, plate } = unplanned;
+    const plateName = plate === null ? null : (bench.plates[plate]?.name ?? `plate ${plate + 1}`);
+    const message = whyUnplanned(rowName(row, draft.targets[row]?.label ?? ''), plateName);
+    return { ok: false, faults: [{ path: `targets.${row}`, message }] };
+  }
   const targets = solvedRows.flatMap(({ row, result }, place) => {
     const choice = choices[place];
     return choice === undefined ? [] : [frozenTarget(row, result, choice)];
@@ -117,7 +113,8 @@ export function* freezeSteps(input: FreezeInput): Generator<undefined, Frozen> {
     solverVersion: SOLVER_VERSION,
     kind: draft.kind,
     objective: draft.objective,
-    presentDialsDeg: draft.presentDialsDeg,
+    // As they were used: dials of other plates than the bench has now stand for nothing.
+    presentDialsDeg: faced.problem.presentDialsDeg === null ? null : [...faced.problem.presentDialsDeg],
     toleranceInfidelity: draft.toleranceInfidelity,
     bench: {
       id: bench.id,
@@ -172,15 +169,18 @@ export function frozenTarget(
     reach: solved.kind,
     shortfallDeg: solved.shortfallDeg,
     freePlates: [...solved.freePlates],
-    solutions: solved.solutions.map((solution, index) => ({
-      fastAxesDeg: [...solution.fastAxesDeg],
-      dialsDeg: [...(index === choice.index ? choice.dialsDeg : solution.dialsDeg)],
-      infidelity: solution.infidelity,
-      dialledInfidelity: solution.dialledInfidelity,
-      expectedInfidelity: solution.expectedInfidelity,
-      expectedLow: solution.expectedLow,
-      expectedHigh: solution.expectedHigh,
-    })),
+    solutions: solved.solutions.map((listed, index) => {
+      const solution = (index === choice.index ? chosenSolution(solved, choice) : undefined) ?? listed;
+      return {
+        fastAxesDeg: [...solution.fastAxesDeg],
+        dialsDeg: [...solution.dialsDeg],
+        infidelity: solution.infidelity,
+        dialledInfidelity: solution.dialledInfidelity,
+        expectedInfidelity: solution.expectedInfidelity,
+        expectedLow: solution.expectedLow,
+        expectedHigh: solution.expectedHigh,
+      };
+    }),
     chosenSolution: choice.index,
     held: choice.held,
   };

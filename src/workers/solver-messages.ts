@@ -1,5 +1,5 @@
 import type { Convention } from '../../shared/optics/convention';
-import type { RowChoice } from '../../shared/protocol/choose-solutions';
+import type { RowChoice, Unplanned } from '../../shared/protocol/choose-solutions';
 import type { RowResult, SolvingBench, SolvingTask } from '../../shared/protocol/solve-row';
 
 export interface JobRow {
@@ -32,7 +32,16 @@ export type SolverAnswer =
       readonly answers: readonly { readonly place: number; readonly answer: RowAnswer }[];
       /** Of the rows that were wanted. */
       readonly doneCount: number;
+      /** Whether nothing more comes: by the least travel the choices do. */
       readonly done: boolean;
     }
-  /** By the least travel the rows depend on one another: their choices come when the last is solved. */
-  | { readonly kind: 'choices'; readonly job: number; readonly choices: readonly (RowChoice | null)[] };
+  /** By the least travel the rows depend on one another: their choices come when the last is solved, and are the last answer. */
+  | {
+      readonly kind: 'choices';
+      readonly job: number;
+      readonly choices: readonly (RowChoice | null)[];
+      /** Why there is no plan; its row is a place among the job's. */
+      readonly unplanned: Unplanned | null;
+    }
+  /** Nothing more comes: the solver met what it was not made for. */
+  | { readonly kind: 'failed'; readonly job: number; readonly sentence: string };

@@ -1,4 +1,4 @@
-import { chooseSolution, chooseSolutions, type RowChoice } from '../../shared/protocol/choose-solutions';
+import { chooseSolution, chooseSolutions } from '../../shared/protocol/choose-solutions';
 import { benchProblem, type RowProblem, type RowResult, solveRow } from '../../shared/protocol/solve-row';
 import type { JobRow, RowAnswer, SolverAnswer, SolverJob } from './solver-messages';
 
@@ -51,18 +51,18 @@ async function solve({ job, bench, convention, task, rows }: SolverJob): Promise
     return result;
   };
   const wanted = rows.flatMap((row, place) => (row.wanted ? [{ row, place }] : []));
+  const isPlanned = task.objective === 'least-travel';
   for (let from = 0; from < wanted.length; from += rowsPerBatch) {
     const answers = wanted
       .slice(from, from + rowsPerBatch)
       .map(({ row, place }) => ({ place, answer: answered(row, resultOf(row)) }));
     const doneCount = from + answers.length;
-    answer({ kind: 'rows', job, answers, doneCount, done: doneCount === wanted.length });
+    const done = doneCount === wanted.length && !isPlanned;
+    answer({ kind: 'rows', job, answers, doneCount, done });
     await pause();
     if (job !== newestJob) return;
   }
-  if (task.objective === 'least-travel') {
-    answer({ kind: 'choices', job, choices: planned(rows, rows.map(resultOf), read.problem) });
-  }
+  if (isPlanned) answer({ kind: 'choices', job, ...planned(rows, rows.map(resultOf), read.problem) });
 }
 
 /** The whole list's choices; a row that can't be read is stepped over. */
@@ -70,18 +70,31 @@ function planned(
   rows: readonly JobRow[],
   results: readonly RowResult[],
   problem: RowProblem,
-): readonly (RowChoice | null)[] {
+): Pick<Extract<SolverAnswer, { kind: 'choices' }>, 'choices' | 'unplanned'> {
   const readable = results.flatMap((result, place) =>
     result.status === 'solved'
-      ? [{ place, solved: result.solved, heldFastAxesDeg: rows[place]?.heldFastAxesDeg ?? null }]
+      ? [{ ...result, place, heldFastAxesDeg: rows[place]?.heldFastAxesDeg ?? null }]
       : [],
   );
-  const choices = chooseSolutions(readable, problem);
+  const { choices, unplanned } = chooseSolutions(readable, problem);
   const byPlace = new Map(readable.map(({ place }, index) => [place, choices[index] ?? null]));
-  return rows.map((_, place) => byPlace.get(place) ?? null);
+  return {
+    choices: rows.map((_, place) => byPlace.get(place) ?? null),
+    unplanned: unplanned === null ? null : { ...unplanned, row: readable[unplanned.row]?.place ?? 0 },
+  };
+}
+
+async function solveOrSay(job: SolverJob): Promise<void> {
+  try {
+    await solve(job);
+  } catch (error) {
+    const said = error instanceof Error ? ` It says: ${error.message}.` : '';
+    const sentence = `The solver stopped at these rows.${said} Change the last thing you wrote, or load the page again; what you typed is kept.`;
+    answer({ kind: 'failed', job: job.job, sentence });
+  }
 }
 
 self.addEventListener('message', ({ data }: MessageEvent<SolverJob>) => {
   newestJob = data.job;
-  void solve(data);
+  void solveOrSay(data);
 });

@@ -9,6 +9,7 @@ import {
   planSequenceSteps,
   readingsFor,
   type SequenceProblem,
+  TooManyStationsError,
   UnreachableRowError,
 } from '../../shared/optics/sequence';
 import { fastAxisFromDial, degrees } from '../../shared/optics';
@@ -379,6 +380,19 @@ describe('the cheapest way in the given order', () => {
     expect(attempt).toThrow(/target 2 .* mount 1/u);
   });
 
+  it('names the target that can be dialled in more ways than it looks through', () => {
+    const stage: MountMotion = { ...ring, rangeDeg: [0, 1440] };
+    const mounts = Array.from({ length: 6 }, () => stage);
+    const rows = [
+      { held: null, branches: [[10, 20, 30, 40, 50, 60]] },
+      { held: null, branches: [[10, 20, 30, 40, 50, 60]] },
+    ];
+    const attempt = () =>
+      planSequence({ mounts, rows, startDialsDeg: null, cost: 'travel', moves: 'together' });
+    expect(attempt).toThrow(TooManyStationsError);
+    expect(attempt).toThrow(/target 1 .* 8192/u);
+  });
+
   it('is nothing for no targets', () => {
     expect(planSequence(random(0, 1))).toMatchObject({ choices: [], travelDeg: 0, seconds: 0, perStep: [] });
     expect(planOrder(random(0, 1))).toMatchObject({ order: [], boundDeg: 0 });
@@ -387,8 +401,12 @@ describe('the cheapest way in the given order', () => {
   it('plans 200 targets of four solutions and three plates in well under a second, a row at a time', () => {
     const problem = random(200, 3, { cost: 'time', moves: 'together' });
     expect(cpuSeconds(() => planSequence(problem))).toBeLessThan(1);
-    const steps = planSequenceSteps(problem);
-    expect(steps.next().value).toEqual({ rowsDone: 1, rows: 200 });
+    const done = [...planSequenceSteps(problem)].map(({ rowsDone }) => rowsDone);
+    // Every row is laid out before the first is done.
+    expect(done).toEqual([
+      ...Array.from({ length: 200 }, () => 0),
+      ...Array.from({ length: 200 }, (_, k) => k + 1),
+    ]);
   });
 });
 

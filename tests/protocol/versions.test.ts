@@ -198,6 +198,48 @@ test('the dials that a version asks for make the infidelity that it froze', () =
   expect(() => dialledInfidelity(content, 9, [1, 2])).toThrow(RangeError);
 });
 
+test('dials chosen for the least travel make the infidelity that is frozen with them, whatever the step', () => {
+  const expressions = ['H', 'bloch(70deg, 20deg)', 'D', 'bloch(110deg, 200deg)', 'A', 'V'];
+  const { draft, bench } = input({}, expressions);
+  const plates = bench.plates.map((one) => ({ ...one, mount: { ...one.mount, resolutionDeg: 0.7 } }));
+  for (const presentDialsDeg of [null, [200, 100], [20, 300]]) {
+    const { content } = frozen(
+      input({
+        bench: { ...bench, plates },
+        draft: { ...draft, objective: 'least-travel', presentDialsDeg },
+      }),
+    );
+    for (const [index, target] of content.targets.entries()) {
+      const solution = target.solutions[target.chosenSolution];
+      expect(dialledInfidelity(content, index, solution?.dialsDeg ?? [])).toBe(solution?.dialledInfidelity);
+    }
+  }
+});
+
+test('a list that cannot be planned by the least travel is refused at its row, never chosen some other way', () => {
+  const { draft, bench } = input();
+  const plates = bench.plates.map((one) => ({
+    ...one,
+    mount: { ...one.mount, rangeDeg: { from: 0, to: 180 }, backlashDeg: 120, approach: 'rising' as const },
+  }));
+  const narrow = { ...bench, plates };
+  const refused = freeze(input({ bench: narrow, draft: { ...draft, objective: 'least-travel' } }));
+  if (refused.ok) throw new Error('it was frozen');
+  expect(refused.faults.map(({ path }) => path)).toEqual(['targets.0']);
+  expect(refused.faults[0]?.message).toMatch(/^Row 1 \(t1\) .* the mount of (H-3|Q-B) does not reach it/);
+  expect(freeze(input({ bench: narrow })).ok).toBe(true);
+});
+
+test('present dials of another number of plates are frozen as what they are to the solver: not known', () => {
+  const { draft } = input();
+  const held = (presentDialsDeg: number[] | null) =>
+    frozen(input({ draft: { ...draft, objective: 'nearest-to-present', presentDialsDeg } })).content;
+  expect(held([10, 20]).presentDialsDeg).toEqual([10, 20]);
+  expect(held([10]).presentDialsDeg).toBeNull();
+  expect(held([10, 20, 30]).presentDialsDeg).toBeNull();
+  expect(held([10]).targets).toEqual(held(null).targets);
+});
+
 test('a chain is verified, and the first version that was touched is named', () => {
   const links: { number: number; canonicalJson: string; contentHash: string; parentHash: string | null }[] =
     [];

@@ -8,4 +8,11 @@ export {
   planOrderSteps,
 } from './plan-order';
 export { planSequence, planSequenceSteps, type SequenceProgress } from './plan-sequence';
-export { type MountMotion, type SequenceProblem, type SequenceRow, UnreachableRowError } from './problem';
+export {
+  type MountMotion,
+  type SequenceProblem,
+  type SequenceRow,
+  TooManyStationsError,
+  UnreachableRowError,
+} from './problem';
+export { finish } from './cheapest-way';

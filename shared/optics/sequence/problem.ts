@@ -56,6 +56,18 @@ export class UnreachableRowError extends RangeError {
   }
 }
 
+/** Thrown when a target can be dialled in more ways than can be looked through. */
+export class TooManyStationsError extends RangeError {
+  override readonly name = 'TooManyStationsError';
+  constructor(
+    /** Index of the target. */
+    readonly row: number,
+    most: number,
+  ) {
+    super(`target ${row + 1} can be dialled in more than ${most} ways`);
+  }
+}
+
 /** @throws RangeError naming the first thing that makes no sense. */
 export function checkSequence({ mounts, rows, startDialsDeg, cost }: SequenceProblem): void {
   const refuse = (what: string): never => {

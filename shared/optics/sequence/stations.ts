@@ -1,7 +1,14 @@
 import { wrap } from '../units';
+import { finish } from './cheapest-way';
 import { type MoveCost, moveCostOf, type Stations } from './move-cost';
 import { nearestReading, readingsFor } from './mount-move';
-import { checkSequence, type MountMotion, type SequenceProblem, UnreachableRowError } from './problem';
+import {
+  checkSequence,
+  type MountMotion,
+  type SequenceProblem,
+  TooManyStationsError,
+  UnreachableRowError,
+} from './problem';
 
 /**
  * More stations than this for one target are refused: a stage that counts on through hundreds of turns. Six rings and
@@ -29,11 +36,23 @@ interface FirstChoice {
   readonly dialsDeg: readonly number[];
 }
 
-/** @throws RangeError for a problem that makes no sense; UnreachableRowError for a target that can't be dialled. */
+/**
+ * @throws RangeError for a problem that makes no sense; UnreachableRowError for a target that can't be dialled,
+ * TooManyStationsError for one that can be in too many ways.
+ */
 export function courseOf(problem: SequenceProblem): Course {
+  return finish(courseSteps(problem));
+}
+
+/** `courseOf` a row at a time. */
+export function* courseSteps(problem: SequenceProblem): Generator<undefined, Course> {
   checkSequence(problem);
   const { mounts, startDialsDeg, cost, moves } = problem;
-  const laid = problem.rows.map((_, row) => layRow(problem, row));
+  const laid: LaidRow[] = [];
+  for (const row of problem.rows.keys()) {
+    laid.push(layRow(problem, row));
+    yield;
+  }
   return {
     problem,
     mountCount: mounts.length,
@@ -77,8 +96,7 @@ function layRow({ mounts, rows }: SequenceProblem, row: number): LaidRow {
       dialsDeg: mounts.map((mount, k) => nearestReading(mount, readings[k] ?? [], axes[k] ?? NaN) ?? NaN),
     };
     count += readings.reduce((product, list) => product * list.length, 1);
-    if (count > MOST_STATIONS)
-      throw new RangeError(`target ${row + 1} can be dialled in more than ${MOST_STATIONS} ways`);
+    if (count > MOST_STATIONS) throw new TooManyStationsError(row, MOST_STATIONS);
     dialled.push(branch);
     lists.push(readings);
   }

@@ -1,6 +1,7 @@
 import { startTransition, useEffect, useRef, useState } from 'react';
 import type { Convention } from '../../../shared/optics/convention';
-import type { RowChoice } from '../../../shared/protocol/choose-solutions';
+import { type RowChoice, whyUnplanned } from '../../../shared/protocol/choose-solutions';
+import { rowName } from '../../../shared/protocol/row-name';
 import type { SolvingBench, SolvingTask } from '../../../shared/protocol/solve-row';
 import type { DraftTarget } from '../../../shared/schemas/protocols';
 import type { RowAnswer, SolverAnswer, SolverJob } from '../../workers/solver-messages';
@@ -15,9 +16,11 @@ export interface SolvedRows {
   /** Rows solved of the job that runs; null when none runs. */
   readonly progress: { readonly done: number; readonly total: number } | null;
   readonly benchFault: string | null;
+  /** Why the rows could not be planned together; each then stands as it would alone, and no version can be saved. */
+  readonly planFault: string | null;
 }
 
-const nothing: SolvedRows = { rows: new Map(), progress: null, benchFault: null };
+const nothing: SolvedRows = { rows: new Map(), progress: null, benchFault: null, planFault: null };
 
 function startWorker(): Worker {
   return new Worker(new URL('../../workers/solver.worker.ts', import.meta.url), { type: 'module' });
@@ -77,12 +80,21 @@ export function useSolvedRows(
     if (answered.current.context !== context) answered.current = { context, keys: new Map() };
     const { keys } = answered.current;
     const wanted = new Set(written.filter((row) => keys.get(row.id) !== keyOf(row)).map(({ id }) => id));
-    const ids = written.map(({ id }) => id);
+    // From here on these rows hold no answer of the text they had: typed back to it, they are asked for again.
+    for (const id of wanted) keys.delete(id);
+    const names = targets.map(({ label }, place) => rowName(place, label));
+    const isPlanned = objective === 'least-travel';
+    const asked: Asked = {
+      rows: written.map((row) => ({ id: row.id, name: names[targets.indexOf(row)] ?? '' })),
+      total: wanted.size,
+      isPlanned,
+    };
     const markStale = () =>
       setSolved((before) => ({
-        rows: staleWhere(before.rows, wanted),
-        progress: wanted.size === 0 ? null : { done: 0, total: wanted.size },
+        rows: staleWhere(before.rows, (id) => wanted.has(id) || (isPlanned && wanted.size === 0)),
+        progress: wanted.size === 0 && !isPlanned ? null : { done: 0, total: wanted.size },
         benchFault: null,
+        planFault: null,
       }));
     // One row is marked at once, as it is typed; a whole table in slices, so that typing is never kept waiting.
     if (wanted.size > 1) startTransition(markStale);
@@ -95,7 +107,7 @@ export function useSolvedRows(
           if (row !== undefined) keys.set(row.id, keyOf(row));
         }
       }
-      startTransition(() => setSolved((before) => merge(before, data, ids, wanted.size)));
+      startTransition(() => setSolved((before) => merge(before, data, asked)));
     };
     current.addEventListener('message', take);
     const request: SolverJob = {
@@ -119,31 +131,68 @@ export function useSolvedRows(
 
 function staleWhere(
   rows: ReadonlyMap<string, SolvedRow>,
-  wanted: ReadonlySet<string>,
+  isStale: (id: string) => boolean,
 ): ReadonlyMap<string, SolvedRow> {
   return new Map(
-    [...rows].map(([id, row]) => [id, wanted.has(id) && !row.stale ? { ...row, stale: true } : row]),
+    [...rows].map(([id, row]) => [id, isStale(id) && !row.stale ? { ...row, stale: true } : row]),
   );
 }
 
-function merge(before: SolvedRows, data: SolverAnswer, ids: readonly string[], total: number): SolvedRows {
-  if (data.kind === 'bench-unreadable') return { rows: new Map(), progress: null, benchFault: data.message };
-  const rows = new Map(before.rows);
-  if (data.kind === 'choices') {
-    data.choices.forEach((choice, place) => {
-      const id = ids[place];
-      const row = id === undefined ? undefined : rows.get(id);
-      if (id !== undefined && row !== undefined && !sameChoice(choice, row.choice)) {
-        rows.set(id, { ...row, choice });
+/** What was asked for, as `merge` has to know it. */
+interface Asked {
+  readonly rows: readonly { readonly id: string; readonly name: string }[];
+  /** Rows whose answer is wanted. */
+  readonly total: number;
+  /** Whether an answer waits for the choices over the whole list. */
+  readonly isPlanned: boolean;
+}
+
+function merge(before: SolvedRows, data: SolverAnswer, asked: Asked): SolvedRows {
+  switch (data.kind) {
+    case 'bench-unreadable':
+      return { ...nothing, benchFault: data.message };
+    case 'failed':
+      return { ...before, progress: null, benchFault: data.sentence };
+    case 'rows': {
+      const rows = new Map(before.rows);
+      for (const { place, answer } of data.answers) {
+        const id = asked.rows[place]?.id;
+        if (id !== undefined) rows.set(id, { ...answer, stale: asked.isPlanned });
       }
-    });
-    return { ...before, rows };
+      const progress = data.done ? null : { done: data.doneCount, total: asked.total };
+      return { rows, progress, benchFault: null, planFault: null };
+    }
+    case 'choices':
+      return {
+        ...before,
+        rows: chosen(before.rows, data, asked),
+        progress: null,
+        planFault: faultOf(data, asked),
+      };
   }
-  for (const { place, answer } of data.answers) {
-    const id = ids[place];
-    if (id !== undefined) rows.set(id, { ...answer, stale: false });
-  }
-  return { rows, progress: data.done ? null : { done: data.doneCount, total }, benchFault: null };
+}
+
+type ChoicesAnswer = Extract<SolverAnswer, { kind: 'choices' }>;
+
+function chosen(
+  before: ReadonlyMap<string, SolvedRow>,
+  { choices }: ChoicesAnswer,
+  asked: Asked,
+): ReadonlyMap<string, SolvedRow> {
+  const rows = new Map(before);
+  choices.forEach((choice, place) => {
+    const id = asked.rows[place]?.id;
+    const row = id === undefined ? undefined : rows.get(id);
+    if (id === undefined || row === undefined) return;
+    if (row.stale || !sameChoice(choice, row.choice)) rows.set(id, { ...row, choice, stale: false });
+  });
+  return rows;
+}
+
+function faultOf({ unplanned }: ChoicesAnswer, asked: Asked): string | null {
+  if (unplanned === null) return null;
+  const name = asked.rows[unplanned.row]?.name ?? `Row ${unplanned.row + 1}`;
+  return whyUnplanned(name, unplanned.plate === null ? null : `plate ${unplanned.plate + 1}`);
 }
 
 function sameChoice(one: RowChoice | null, other: RowChoice | null): boolean {

@@ -188,9 +188,9 @@ export async function shownFor(
   const rows = content.targets.map((row) => {
     const result = solveRow(row.expression, faced.problem, lab.convention, row.heldFastAxesDeg);
     if (result.status === 'unreadable') throw new Error(result.error.message);
-    return { id: row.id, solved: result.solved, heldFastAxesDeg: row.heldFastAxesDeg };
+    return { ...result, id: row.id, heldFastAxesDeg: row.heldFastAxesDeg };
   });
-  const choices = chooseSolutions(rows, faced.problem);
+  const { choices } = chooseSolutions(rows, faced.problem);
   return rows.map(({ id, solved }, place) => {
     const choice = choices[place];
     const solution = choice === undefined ? undefined : chosenSolution(solved, choice);

@@ -84,7 +84,11 @@ export function Designer({ protocol, benches }: DesignerProps) {
         benches={benches}
         mayWrite={mayWrite}
         maySave={may('versions.save')}
-        holdUp={whatHoldsUp(content.targets, views)}
+        holdUp={
+          solved.planFault === null
+            ? whatHoldsUp(content.targets, views)
+            : { text: solved.planFault, isFault: true }
+        }
         edit={draft.edit}
         lookedAt={looked?.target.expression ?? null}
         standsAtDeg={looked === null ? null : (handDialsDeg ?? looked.view.solution.dialsDeg)}
@@ -103,6 +107,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
       {bench !== undefined && <CalibratedElsewhere bench={bench} looked={looked} />}
       {solved.benchFault !== null && (
         <BeamWrong title="The rows can’t be solved">{solved.benchFault}</BeamWrong>
+      )}
+      {solved.planFault !== null && (
+        <BeamWrong title="The least travel can’t be planned">{solved.planFault}</BeamWrong>
       )}
       {looked === null && target !== undefined && <div className="stage-waits" />}
       {looked !== null && (
