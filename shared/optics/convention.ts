@@ -96,6 +96,27 @@ export function circularState(hand: Hand, convention: Convention): Stokes {
   return [0, 0, hand === counterClockwiseLetter(convention) ? 1 : -1];
 }
 
+/** The six states at the ends of the sphere's axes. */
+export const NAMED_STATES = ['H', 'V', 'D', 'A', 'R', 'L'] as const;
+export type NamedState = (typeof NAMED_STATES)[number];
+
+/** The canonical state of a name; R and L by the lab's letters. */
+export function namedStateStokes(name: NamedState, convention: Convention): Stokes {
+  switch (name) {
+    case 'H':
+      return [1, 0, 0];
+    case 'V':
+      return [-1, 0, 0];
+    case 'D':
+      return [0, 1, 0];
+    case 'A':
+      return [0, -1, 0];
+    case 'R':
+    case 'L':
+      return circularState(name, convention);
+  }
+}
+
 /** As the header of a page says it: "phase kz − ωt, hands as the receiver sees them, +S3 is L". */
 export function describeConvention({ phase, handedness, s3Sign }: Convention): string {
   const phaseText = phase === 'kz-wt' ? 'kz − ωt' : 'ωt − kz';

@@ -1,10 +1,10 @@
 import { useMemo, useState } from 'react';
 import { classNames } from '../../components/class-names';
 import { SectionHead } from '../../components/SectionHead';
+import { ExpressionField } from '../../components/ExpressionField';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { AgreementSign } from './AgreementSign';
 import { eliminationSentences, judgedWords } from './colleague-words';
-import { ExpressionField } from './ExpressionField';
 import { flagWords } from './flag-words';
 import { type Elimination, type Evidence, whichConvention } from './which-convention';
 
@@ -76,7 +76,7 @@ export function Colleague() {
             label="the Jones vector of one light, as they write it"
             help="A column like [1, i], or a sum like (H - i V)/sqrt(2). Leave it empty if you do not have it."
             value={evidence.source}
-            fault={found.kind === 'unreadable' ? found.error : null}
+            fault={found.kind === 'unreadable' ? found.error : undefined}
             onChange={(source) => setEvidence({ ...evidence, source })}
           />
           <SegmentedChoice

@@ -1,3 +1,4 @@
+import { CopyText } from '../../components/CopyText';
 import { SectionHead } from '../../components/SectionHead';
 import { useWidth } from '../../lib/use-width';
 import type { ComparedWritten } from './compare-written';
@@ -5,7 +6,6 @@ import { comparisonSentence } from './comparison-sentence';
 import { comparisonText, writtenInWords } from './comparison-text';
 import { ComparisonBlocks } from './ComparisonBlocks';
 import { ComparisonTable } from './ComparisonTable';
-import { CopyComparison } from './CopyComparison';
 import { anchorSentence } from './light-words';
 import { degreeSentence } from './LightFigure';
 import { plateSentence } from './UnitaryFigure';
@@ -55,7 +55,11 @@ export function Comparison({ written, source }: { readonly written: Compared; re
         Read, from memory or filled in: how well each flag of a set is known; the sources stand below.
       </p>
       {typed !== undefined && (
-        <CopyComparison
+        <CopyText
+          action="Copy as text"
+          name="the comparison as text"
+          about="Lines of comma-separated values, each with its convention’s name and flags."
+          copied="Copied, one convention a line."
           text={comparisonText({
             kind,
             source,

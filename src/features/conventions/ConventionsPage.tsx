@@ -2,6 +2,7 @@ import { useDeferredValue, useMemo } from 'react';
 import { DEFAULT_CONVENTION } from '../../../shared/optics';
 import { BeamEmpty } from '../../components/BeamState';
 import { Formula } from '../../components/Formula';
+import { ExpressionField } from '../../components/ExpressionField';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { TextButton, TextLink } from '../../components/TextLink';
 import type { WrittenKind } from './address';
@@ -10,7 +11,6 @@ import { compareWritten } from './compare-written';
 import type { Chosen } from './compared-rows';
 import { Comparison } from './Comparison';
 import { ConventionSelect } from './ConventionSelect';
-import { ExpressionField } from './ExpressionField';
 import { LightFigure } from './LightFigure';
 import { SetSources } from './SetSources';
 import { UnitaryFigure } from './UnitaryFigure';
@@ -59,7 +59,7 @@ export function Component() {
             label={kind}
             help={helpWords[kind]}
             value={source}
-            fault={compared.kind === 'unreadable' && read === source ? compared.error : null}
+            fault={compared.kind === 'unreadable' && read === source ? compared.error : undefined}
             onChange={setSource}
           />
           <ConventionSelect

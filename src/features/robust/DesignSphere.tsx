@@ -1,5 +1,5 @@
 import { useMemo, useState } from 'react';
-import type { Convention } from '../../../shared/optics';
+import { type Convention, NAMED_STATES, type NamedState } from '../../../shared/optics';
 import { NumberField } from '../../components/NumberField';
 import { Scientific } from '../../components/Scientific';
 import { SelectField } from '../../components/SelectField';
@@ -7,7 +7,7 @@ import { TextButton } from '../../components/TextLink';
 import { typedFromNumber, readTypedNumber } from '../../lib/forms';
 import { createSphereViewStore, Sphere } from '../../sphere';
 import type { Design } from './design';
-import { designSphere, followedLights, type FollowedLight } from './design-sphere';
+import { designSphere } from './design-sphere';
 
 interface DesignSphereProps {
   readonly design: Design;
@@ -20,7 +20,7 @@ interface DesignSphereProps {
 /** The path of the light through the composite, at no error and at any other. */
 export function DesignSphere({ design, convention, error, infidelity, onLookAt }: DesignSphereProps) {
   const [view] = useState(() => createSphereViewStore());
-  const [followed, follow] = useState<FollowedLight>('H');
+  const [followed, follow] = useState<NamedState>('H');
   const input = useMemo(
     () => designSphere(design, error, followed, convention),
     [design, error, followed, convention],
@@ -36,9 +36,9 @@ export function DesignSphere({ design, convention, error, infidelity, onLookAt }
             label="follow"
             className="w-20"
             value={followed}
-            options={followedLights.map((value) => ({ value, label: value }))}
+            options={NAMED_STATES.map((value) => ({ value, label: value }))}
             onChange={({ target }) => {
-              const light = followedLights.find((name) => name === target.value);
+              const light = NAMED_STATES.find((name) => name === target.value);
               if (light !== undefined) follow(light);
             }}
           />

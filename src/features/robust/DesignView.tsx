@@ -1,5 +1,6 @@
 import { type Ref, useMemo, useState } from 'react';
 import type { Convention } from '../../../shared/optics';
+import { CopyText } from '../../components/CopyText';
 import { NumberField } from '../../components/NumberField';
 import { Scientific } from '../../components/Scientific';
 import { SectionHead } from '../../components/SectionHead';
@@ -7,15 +8,13 @@ import { TextButton } from '../../components/TextLink';
 import { GapText } from '../../lib/GapText';
 import { infidelityAscii, withTrueMinus } from '../../lib/format';
 import { readTypedNumber } from '../../lib/forms';
-import { CopyAngles } from './CopyAngles';
 import { CurveTable } from './CurveTable';
-import { type Design, dialledInfidelity, dialsOf, infidelitiesAt } from './design';
+import { type Design, dialledInfidelity, infidelitiesAt } from './design';
 import { type DesignCurves, drawnCurves, heldOver, powerOf } from './design-curves';
 import { copiedText, errorName, errorWords, plainWords, ratioWords } from './design-words';
 import { DesignSphere } from './DesignSphere';
 import { wholePower } from './error-power';
 import { InfidelityPlot } from './InfidelityPlot';
-import { toDegrees } from '../../../shared/optics';
 
 interface DesignViewProps {
   readonly design: Design;
@@ -41,7 +40,6 @@ export function DesignView(props: DesignViewProps) {
   const here = Math.max(-2 * design.width, Math.min(2 * design.width, error));
   const infidelity = infidelitiesAt(design.goal, design, [here])[0] ?? 1;
   const dialled = useMemo(() => dialledInfidelity(design), [design]);
-  const fastAxesDeg = design.plates.map(({ fastAxisRad }) => toDegrees(fastAxisRad));
   return (
     <div className="mt-8 grid grid-cols-1 gap-x-12 gap-y-8 desk:grid-cols-[minmax(0,1fr)_28.5rem]">
       <section aria-labelledby="design-head" className="min-w-0">
@@ -97,7 +95,12 @@ export function DesignView(props: DesignViewProps) {
             />
           )}
         </div>
-        <CopyAngles text={copiedText(design, dialsOf(design.named, fastAxesDeg))} />
+        <CopyText
+          text={copiedText(design, convention)}
+          action="Copy the angles"
+          name="the setting as text"
+          copied="Copied, one plate a line."
+        />
       </section>
       <section aria-labelledby="sphere-head" className="min-w-0">
         <SectionHead id="sphere-head" className="mb-3">

@@ -2,11 +2,11 @@ import type { SyntheticEvent } from 'react';
 import type { Bench } from '../../../shared/schemas/benches';
 import { usedRetardance } from '../../../shared/protocol/solving-plates';
 import { Button } from '../../components/Button';
+import { ExpressionField } from '../../components/ExpressionField';
 import { NumberField } from '../../components/NumberField';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { SelectField } from '../../components/SelectField';
 import { TextField } from '../../components/TextField';
-import { ExpressionField } from './ExpressionField';
 import type { RobustForm } from './robust-form';
 import type { QuestionFaults } from './robust-question';
 

@@ -1,9 +1,9 @@
 import {
   blochToStokes,
-  circularState,
   type Convention,
+  type NamedState,
+  namedStateStokes,
   rotate,
-  type Stokes,
   stokesToBloch,
   toDegrees,
   radians,
@@ -11,33 +11,14 @@ import {
 import type { SphereInput } from '../../sphere';
 import type { Design } from './design';
 
-export const followedLights = ['H', 'V', 'D', 'A', 'R', 'L'] as const;
-export type FollowedLight = (typeof followedLights)[number];
-
-/** One of the six states, its letter by the lab's convention. */
-export function lightOf(name: FollowedLight, convention: Convention): Stokes {
-  switch (name) {
-    case 'H':
-      return [1, 0, 0];
-    case 'V':
-      return [-1, 0, 0];
-    case 'D':
-      return [0, 1, 0];
-    case 'A':
-      return [0, -1, 0];
-    default:
-      return circularState(name, convention);
-  }
-}
-
 /** The way of the light through a composite whose plates err by `error`, and where it should end. */
 export function designSphere(
   { goal, plates, errorPerUnitRad, named }: Design,
   error: number,
-  followed: FollowedLight,
+  followed: NamedState,
   convention: Convention,
 ): SphereInput {
-  const start = goal.kind === 'prepare' ? goal.input : lightOf(followed, convention);
+  const start = goal.kind === 'prepare' ? goal.input : namedStateStokes(followed, convention);
   return {
     start,
     plates: plates.map(({ fastAxisRad, retardanceRad }, k) => ({

@@ -1,5 +1,5 @@
 import type { Robustness } from '../../../shared/optics/robust';
-import { toDegrees } from '../../../shared/optics';
+import { type Convention, describeConvention, toDegrees } from '../../../shared/optics';
 import {
   fixed,
   formatDial,
@@ -10,7 +10,7 @@ import {
   toPlainAscii,
   withTrueMinus,
 } from '../../lib/format';
-import type { Design, PlainDesign } from './design';
+import { type Design, dialledInfidelity, dialsOf, type PlainDesign } from './design';
 import type { ErrorKind } from './robust-form';
 
 /** What a setting does about the error. */
@@ -56,14 +56,6 @@ export function errorName(kind: ErrorKind): string {
   return kind === 'retardance' ? 'common relative error ε of the retardances' : 'error ε of the wavelength';
 }
 
-/** A power of the error as words: "4th". */
-export function ordinal(power: number): string {
-  const last = power % 10;
-  const teen = Math.floor(power / 10) % 10 === 1;
-  if (teen || last === 0 || last > 3) return `${power}th`;
-  return `${power}${last === 1 ? 'st' : last === 2 ? 'nd' : 'rd'}`;
-}
-
 function listed(words: readonly string[]): string {
   const last = words.at(-1) ?? '';
   return words.length < 2 ? last : `${words.slice(0, -1).join(', ')} and ${last}`;
@@ -77,10 +69,15 @@ export function plainWords({ kind, names, plates }: PlainDesign, shortfallDeg = 
   return kind === 'bench' ? `what the designer puts first for these plates: ${which}` : which;
 }
 
-/** The setting in plain ASCII, to be pasted into a logbook or a script. */
-export function copiedText(design: Design, dialsDeg: readonly number[] | null): string {
+/** The setting in plain ASCII, to be pasted into a logbook or a script; `convention` is the one that the goal is written in. */
+export function copiedText(design: Design, convention: Convention): string {
   const { named, plates, robustness, error, width, goalWords, title } = design;
   const { infidelityAtZero, averageInfidelity } = robustness;
+  const dialled = dialledInfidelity(design);
+  const dialsDeg = dialsOf(
+    named,
+    plates.map(({ fastAxisRad }) => toDegrees(fastAxisRad)),
+  );
   const lines = named.map(({ name, retardanceDeg, scale }, k) => {
     const fastAxisRad = plates[k]?.fastAxisRad;
     const theta = formatTheta(fastAxisRad === undefined ? null : toDegrees(fastAxisRad));
@@ -91,9 +88,14 @@ export function copiedText(design: Design, dialsDeg: readonly number[] | null): 
     error === 'retardance' ? `${Number((width * 100).toPrecision(6))} % of every retardance` : `${width} nm`;
   const text = [
     `${title}, for ${goalWords}`,
+    `written in: ${describeConvention(convention)}`,
     'plates in beam order; angles counter-clockwise from H as the receiver sees them',
     ...lines,
-    `1 - F at no error ${design.meetsGoal ? '0' : infidelityAscii(infidelityAtZero)}, average over +-${over} ${infidelityAscii(averageInfidelity)}`,
+    design.meetsGoal
+      ? 'these angles meet the goal at no error'
+      : `these angles at no error: 1 - F ${infidelityAscii(infidelityAtZero)}`,
+    ...(dialled === null ? [] : [`these dials at no error: 1 - F ${infidelityAscii(dialled)}`]),
+    `average of 1 - F of these angles over +-${over}: ${infidelityAscii(averageInfidelity)}`,
   ].join('\n');
-  return toPlainAscii(text).replaceAll('°', ' deg').replaceAll('’', "'");
+  return toPlainAscii(text).replaceAll('°', ' deg').replaceAll('’', "'").replaceAll('ω', 'w');
 }

@@ -2,12 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { DEFAULT_CONVENTION, degrees, toRadians } from '../../../shared/optics';
 import { PUBLISHED_COMPOSITES } from '../../../shared/optics/robust';
-import {
-  dialledInfidelity,
-  dialsOf,
-  listedSettings,
-  searchedDesign,
-} from '../../../src/features/robust/design';
+import { dialledInfidelity, listedSettings, searchedDesign } from '../../../src/features/robust/design';
 import { drawnCurves, heldOver, powerOf } from '../../../src/features/robust/design-curves';
 import {
   copiedText,
@@ -24,6 +19,7 @@ import { readQuestion } from '../../../src/features/robust/robust-question';
 import { readTypedPlates } from '../../../src/features/robust/typed-plates';
 import { wavelengthSlopes } from '../../../src/features/robust/wavelength-slopes';
 import { fewestPlates, robustStudy } from '../../../src/workers/robust-study';
+import { infidelityAscii } from '../../../src/lib/format';
 import { bench, id, plate } from './fixture';
 
 function asked(change: Partial<RobustForm>, of?: ReturnType<typeof bench>) {
@@ -212,12 +208,15 @@ describe('a study', () => {
   it('copies as plain ASCII, one plate a line', () => {
     const [first] = settings;
     if (first === undefined) throw new Error('nothing found');
-    const text = copiedText(searchedDesign(question, study, first), null);
+    const text = copiedText(searchedDesign(question, study, first), DEFAULT_CONVENTION);
     expect(text).toMatch(/^[\x20-\x7e\n]+$/u);
     expect(text).toContain(
       `plate 1: retardance 180 deg, fast axis ${first.fastAxesDeg[0]?.toFixed(2) ?? ''} deg`,
     );
-    expect(text.split('\n')).toHaveLength(6);
+    expect(text).toContain('written in: phase kz - wt, hands as the receiver sees them, +S3 is L');
+    expect(text).toContain('these angles meet the goal at no error');
+    expect(text).not.toMatch(/dial/u);
+    expect(text.split('\n')).toHaveLength(8);
   });
 });
 
@@ -236,7 +235,9 @@ describe('a bench’s dials', () => {
     expect(first.dialsDeg).toHaveLength(3);
     const design = searchedDesign(question, study, first);
     expect(dialledInfidelity(design)).toBeLessThan(1e-4);
-    expect(copiedText(design, dialsOf(question.plates, first.fastAxesDeg))).toContain('dial ');
+    const text = copiedText(design, DEFAULT_CONVENTION);
+    expect(text).toContain(', dial ');
+    expect(text).toContain(`these dials at no error: 1 - F ${infidelityAscii(dialledInfidelity(design))}\n`);
   });
 });
 

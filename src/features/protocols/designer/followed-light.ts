@@ -1,26 +1,12 @@
-import { circularState, type Convention } from '../../../../shared/optics/convention';
+import { type Convention, namedStateStokes } from '../../../../shared/optics/convention';
 import { type Quaternion, rotate } from '../../../../shared/optics/quaternion';
 import { statesBehind } from '../../../../shared/optics/solve-target';
 import { blochToStokes, type Stokes, stokesToBloch } from '../../../../shared/optics/stokes';
 import { degrees, toRadians } from '../../../../shared/optics/units';
 import type { SphereInput, SpherePlate } from '../../../sphere';
-import { type FollowedLight, followedLights } from './view-store';
+import { followedLights } from './view-store';
 
-/** One of the six states, its letter by the lab's convention. */
-export function lightOf(name: FollowedLight, convention: Convention): Stokes {
-  switch (name) {
-    case 'H':
-      return [1, 0, 0];
-    case 'V':
-      return [-1, 0, 0];
-    case 'D':
-      return [0, 1, 0];
-    case 'A':
-      return [0, -1, 0];
-    default:
-      return circularState(name, convention);
-  }
-}
+export { namedStateStokes as lightOf };
 
 /** Where a unitary takes a state. */
 export function imageOf(unitary: Quaternion, state: Stokes): Stokes {
@@ -38,7 +24,7 @@ export function sixImages(
     fastAxisRad: toRadians(degrees(fastAxisDeg)),
   }));
   return followedLights.map((label) => {
-    const from = lightOf(label, convention);
+    const from = namedStateStokes(label, convention);
     return {
       label,
       from,

@@ -1,12 +1,12 @@
-import type { ExpressionProblem } from '../../../shared/optics';
-import { TextField } from '../../components/TextField';
-import { TextButton } from '../../components/TextLink';
+import type { ExpressionProblem } from '../../shared/optics';
+import { TextField } from './TextField';
+import { TextButton } from './TextLink';
 
 interface ExpressionFieldProps {
   readonly label: string;
-  readonly help: string;
+  readonly help?: string;
   readonly value: string;
-  readonly fault: ExpressionProblem | null;
+  readonly fault: ExpressionProblem | undefined;
   readonly onChange: (value: string) => void;
 }
 
@@ -24,7 +24,7 @@ export function ExpressionField({ label, help, value, fault, onChange }: Express
       value={value}
       onChange={(event) => onChange(event.target.value)}
       help={help}
-      fault={fault === null ? undefined : <FaultAt source={value} fault={fault} onMend={onChange} />}
+      fault={fault === undefined ? undefined : <FaultAt source={value} fault={fault} onMend={onChange} />}
     />
   );
 }
@@ -48,7 +48,9 @@ function FaultAt({ source, fault, onMend }: FaultAtProps) {
         className="font-words text-ink block overflow-x-auto pb-1.5 font-mono whitespace-pre"
       >
         {source.slice(0, from)}
-        <mark className="conventions-fault">{source.slice(from, until) || '\u00a0'}</mark>
+        <mark className="text-ink bg-[color-mix(in_srgb,var(--fault)_18%,transparent)] underline decoration-fault decoration-wavy decoration-[1.2px] underline-offset-4">
+          {source.slice(from, until) || '\u00a0'}
+        </mark>
         {source.slice(until)}
       </span>
       <span className="block">
