@@ -7,6 +7,7 @@ const of = (sigma: number, unit: Contribution['unit']): Contribution => ({
   plate: null,
   sigma,
   unit,
+  infidelity: 1e-5,
   share: 1,
   gainIfHalved: 0,
 });
