@@ -149,7 +149,7 @@ function derivativesOf({ goal, plates }: BudgetProblem): Derivatives {
 }
 
 /** Of where the dial really stands: evenly within one step, and the mount's repeatability. */
-export function dialSigma({ dialResolutionRad, dialRepeatabilityRad }: UncertainPlate): Radians {
+function dialSigma({ dialResolutionRad, dialRepeatabilityRad }: UncertainPlate): Radians {
   const variance = (dialResolutionRad * dialResolutionRad) / 12 + dialRepeatabilityRad * dialRepeatabilityRad;
   return radians(Math.sqrt(variance));
 }

@@ -109,18 +109,6 @@ export function whatIf(problem: BudgetProblem, index: number, factor: number): n
   return expectationOf(linearised, leakOf(problem), parameter, factor).leaked;
 }
 
-/**
- * Share of the expected infidelity that would go if one parameter were known to `newSigma` instead: the number in "a
- * retardance of Q-B known to 0.1° would gain 31 %". In the contribution's own unit. Negative if that is worse than today.
- */
-export function gainFromSigma(contribution: Contribution, newSigma: number): number {
-  const { kind, sigma, share, gainIfHalved } = contribution;
-  if (sigma === 0) return 0;
-  if (kind === 'extinction') return share * (1 - mixed(newSigma) / mixed(sigma));
-  const ratio = newSigma / sigma;
-  return (gainIfHalved / 0.75) * (1 - ratio * ratio);
-}
-
 interface Expectation {
   /** Of the light that the polariser is meant to pass. */
   readonly pure: number;

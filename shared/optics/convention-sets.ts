@@ -1,4 +1,4 @@
-import { type Convention, sameConvention } from './convention';
+import type { Convention } from './convention';
 
 type Flag = keyof Convention;
 
@@ -204,8 +204,3 @@ export const CONVENTION_SETS: readonly ConventionSet[] = [
     ],
   ),
 ];
-
-/** The sets that write light as this convention does, in their order. */
-export function setsOf(convention: Convention): readonly ConventionSet[] {
-  return CONVENTION_SETS.filter((set) => sameConvention(set.convention, convention));
-}

@@ -4,7 +4,6 @@ export {
   type Contribution,
   errorBudget,
   expectedInfidelity,
-  gainFromSigma,
   type ParameterKind,
   type ParameterUnit,
   type SharedDrift,
@@ -12,13 +11,13 @@ export {
   whatIf,
 } from './budget';
 export * from './convention';
-export { CONVENTION_SETS, type ConventionSet, type ConventionSource, setsOf } from './convention-sets';
+export { CONVENTION_SETS, type ConventionSet, type ConventionSource } from './convention-sets';
 export { type DescribedState, describeState, type WrittenBloch } from './described-state';
 export * from './dial';
 export * from './dispersion';
 export * from './ellipse';
 export * from './expression';
-export { type JonesVector, jonesNorm, normaliseJones, orthogonalJones } from './jones';
+export { type JonesVector, jonesNorm, normaliseJones } from './jones';
 export { compose, conjugate, IDENTITY, type Quaternion, rotate } from './quaternion';
 export {
   type JonesMatrix,
@@ -38,7 +37,6 @@ export {
   type MuellerMatrix,
   muellerOfJones,
   polariserMatrix,
-  readMueller,
   showMueller,
   type ShownMueller,
   type StokesRow,

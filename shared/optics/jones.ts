@@ -47,8 +47,3 @@ export function normaliseJones(jones: JonesVector): JonesVector {
     bIm: (bIm * aRe - bRe * aIm) / scale,
   };
 }
-
-/** The state that the given one never passes: ⟨a, b | a', b'⟩ = 0. */
-export function orthogonalJones({ aRe, aIm, bRe, bIm }: JonesVector): JonesVector {
-  return { aRe: -bRe, aIm: bIm, bRe: aRe, bIm: -aIm };
-}

@@ -74,13 +74,9 @@ export function muellerOfJones(jones: JonesMatrix): MuellerMatrix {
   ];
 }
 
-/** Row and column of S3 in the lab's sign; what is shown and read back are each other's inverse. */
+/** Row and column of S3 in the lab's sign; shown twice it is what it was. */
 export function showMueller(matrix: MuellerMatrix, convention: Convention): ShownMueller {
   return { rows: shownS3Sign(convention) === 1 ? matrix : withOtherS3(matrix) };
-}
-
-export function readMueller({ rows }: ShownMueller, convention: Convention): MuellerMatrix {
-  return shownS3Sign(convention) === 1 ? rows : withOtherS3(rows);
 }
 
 function withOtherS3([intensity, first, second, third]: MuellerMatrix): MuellerMatrix {

@@ -12,7 +12,6 @@ import {
   jonesNorm,
   jonesToStokes,
   normaliseJones,
-  orthogonalJones,
   path,
   quaternionMatrix,
   radians,
@@ -74,15 +73,6 @@ test('a global phase and a length change nothing', () => {
         expect(infidelityBetween(jonesToStokes(other), jonesToStokes(vector))).toBeLessThan(1e-29);
       },
     ),
-  );
-});
-
-test('the orthogonal state is the antipode', () => {
-  fc.assert(
-    fc.property(jones, (vector) => {
-      const [s1, s2, s3] = jonesToStokes(vector);
-      expect(distance(jonesToStokes(orthogonalJones(vector)), [-s1, -s2, -s3])).toBeLessThan(1e-14);
-    }),
   );
 });
 

@@ -13,7 +13,7 @@ import {
 export type PlateDesign = 'half' | 'quarter' | 'other';
 
 /** ISO 1: the temperature at which a made thing's sizes are stated; taken for plates whose maker says nothing else. */
-export const DESIGN_TEMPERATURE_C = 20;
+const DESIGN_TEMPERATURE_C = 20;
 
 const NM_PER_UM = 1e3;
 

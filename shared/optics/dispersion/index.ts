@@ -1,7 +1,6 @@
 export { birefringence, birefringenceDispersion, fittedBirefringence } from './birefringence';
 export {
   compareWithModel,
-  DESIGN_TEMPERATURE_C,
   type DesignedRetardance,
   designRetardance,
   type ModelComparison,
@@ -23,8 +22,6 @@ export {
   type ModelledPlate,
   type PlateConstruction,
   retardanceAt,
-  SAME_TEMPERATURE_K,
-  SAME_WAVELENGTH_NM,
   type Surroundings,
   type UsedRetardance,
 } from './retardance-model';

@@ -49,9 +49,9 @@ export interface UsedRetardance {
 }
 
 /** Without a model a calibration still counts as made here when the wavelengths lie this close. */
-export const SAME_WAVELENGTH_NM = 0.05;
+const SAME_WAVELENGTH_NM = 0.05;
 /** Without a model a calibration still counts as made here when the temperatures lie this close. */
-export const SAME_TEMPERATURE_K = 1;
+const SAME_TEMPERATURE_K = 1;
 
 /** The whole retardance δ + 360° · order. @throws RangeError unless the order is a whole number from 0. */
 export function wholeRetardanceDeg(retardanceDeg: number, order: number): number {

@@ -7,7 +7,7 @@ import { polar } from './operator';
  * How far an operator, brought to size 1, may be from the nearest unitary and still be read as it: rounding of six typed
  * digits. Fewer digits are an error that offers the nearest unitary, so that nothing is changed unseen.
  */
-export const UNITARY_TOLERANCE = 1e-6;
+const UNITARY_TOLERANCE = 1e-6;
 
 /** The polar decomposition of what is a unitary up to a factor. @throws ExpressionError with the nearest one offered. */
 export function unitaryPart(operator: Operator, span: Span, what: string): Polar {

@@ -59,7 +59,7 @@ export function operator(written: Operator, unit: Unit = 'none'): OperatorValue 
   return { kind: 'operator', written, unit };
 }
 
-export function isFiniteValue(value: Value): boolean {
+function isFiniteValue(value: Value): boolean {
   switch (value.kind) {
     case 'number':
       return isFinite(value.value);

@@ -19,7 +19,7 @@ export interface Minimum {
 const LONGEST_STEP = 0.5;
 const GIVE_UP_DAMPING = 1e12;
 
-export function sumOfSquares({ rows, value }: Residuals): number {
+function sumOfSquares({ rows, value }: Residuals): number {
   let sum = 0;
   for (let r = 0; r < rows; r += 1) sum += (value[r] ?? 0) * (value[r] ?? 0);
   return sum;

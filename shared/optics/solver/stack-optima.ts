@@ -43,7 +43,7 @@ const ROUNDING = 4e-16;
 const LEVEL = 1e-10;
 
 /** The summit of the fidelity that a climb from these angles ends on; null where it ends on a saddle. */
-export function climbStack(
+function climbStack(
   task: StateTask,
   start: readonly CirclePoint[],
   moving: readonly number[],

@@ -33,7 +33,7 @@ export function trigValue(f: TrigQuadratic, { cos, sin }: CirclePoint): number {
   return f.k + f.c1 * cos + f.s1 * sin + f.c2 * (cos * cos - sin * sin) + f.s2 * 2 * sin * cos;
 }
 
-export function trigDerivative({ c1, s1, c2, s2 }: TrigQuadratic): TrigQuadratic {
+function trigDerivative({ c1, s1, c2, s2 }: TrigQuadratic): TrigQuadratic {
   return { k: 0, c1: s1, s1: -c1, c2: 2 * s2, s2: -2 * c2 };
 }
 
