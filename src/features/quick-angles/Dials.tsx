@@ -123,7 +123,7 @@ function OtherSolutions(props: {
 }) {
   const { solutions, plates, ideal, chosen, onChoose } = props;
   return (
-    <div className="overflow-x-auto">
+    <div className="relative overflow-x-auto">
       <table className="mt-3 w-full text-right">
         <thead className="text-s text-ink-2">
           <tr className="border-hair border-b">
