@@ -13,6 +13,7 @@ import { etagOf, expectedRevision } from './revision';
 import type {
   Answer,
   Exchange,
+  MemberContext,
   MemberDefinition,
   PublicDefinition,
   Reply,
@@ -97,7 +98,7 @@ export async function answerSignedIn<P extends z.ZodType, Q extends z.ZodType, B
       asAnswer(await definition.handler({ params, query, body, now, user, transaction, request, audit }));
     if (definition.idempotent !== true) return work();
     const claim = { userId: user.id, key: idempotencyKey(request), requestHash: requestHash(request, body) };
-    return once(transaction, claim, work);
+    return once<never>(transaction, claim, work);
   });
   await definition.afterwards?.(request, response);
   return answer;
@@ -112,8 +113,14 @@ export async function answerMember<
   const { request, database } = exchange;
   if (request.session.userId === undefined) throw unauthenticated();
   try {
-    return await inTransaction(database, viewerOf(request, labIdFrom(definition, request)), (transaction) =>
-      answerInside(definition, request, transaction),
+    const viewer = viewerOf(request, labIdFrom(definition, request));
+    const first = await inTransaction(database, viewer, (transaction) =>
+      answerInside(definition, request, transaction, definition.handler),
+    );
+    if (!('outside' in first)) return first;
+    const finish = await first.outside();
+    return await inTransaction(database, viewer, (transaction) =>
+      answerInside<P, Q, B, T, never>(definition, request, transaction, finish),
     );
   } catch (error) {
     // Recorded after the refusal's own transaction is gone, so that it stays.
@@ -143,7 +150,13 @@ async function answerInside<
   Q extends z.ZodType,
   B extends z.ZodType,
   T extends Thing,
->(definition: MemberDefinition<P, Q, B, T>, request: Request, transaction: Transaction): Promise<Answer> {
+  Unfinished extends { readonly outside: unknown },
+>(
+  definition: MemberDefinition<P, Q, B, T>,
+  request: Request,
+  transaction: Transaction,
+  handler: (context: MemberContext<P, Q, B, T>) => Promise<Reply | Unfinished>,
+): Promise<Answer | Unfinished> {
   const now = new Date();
   const person = await whoAsks(transaction, request, labIdFrom(definition, request));
   if (person === null) throw unauthenticated();
@@ -166,8 +179,8 @@ async function answerInside<
       entry,
     );
   };
-  const work = async () => {
-    const reply = await definition.handler({
+  const work = async (): Promise<Answer | Unfinished> => {
+    const reply = await handler({
       params,
       query,
       body,
@@ -180,6 +193,7 @@ async function answerInside<
       expectedRevision: expected,
       audit,
     });
+    if ('outside' in reply) return reply;
     // A change that leaves no trace must not commit.
     if (definition.method !== 'get' && recorded === 0 && reply.unchanged !== true) {
       throw new Error(`${definition.method} ${definition.path} changed something and recorded no event`);

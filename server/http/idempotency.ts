@@ -43,13 +43,13 @@ export function requestHash(request: Request, body: unknown): string {
 
 /**
  * Does the work once for a key: claim, work and stored answer are one transaction, so a repeat either finds the whole
- * or nothing. A repeat in flight gets 409 at once instead of waiting in a queue.
+ * or nothing. Work that only says how it goes on outside claims nothing yet. A repeat in flight gets 409 at once instead of waiting in a queue.
  */
-export async function once(
+export async function once<Unfinished extends { readonly outside: unknown }>(
   transaction: Transaction,
   claim: { readonly userId: string; readonly key: string; readonly requestHash: string },
-  work: () => Promise<Answer>,
-): Promise<Answer> {
+  work: () => Promise<Answer | Unfinished>,
+): Promise<Answer | Unfinished> {
   const lock: unknown = await transaction.raw(
     'select pg_try_advisory_xact_lock(hashtextextended(?, 2)) as free',
     [`${claim.userId} ${claim.key}`],
@@ -80,6 +80,7 @@ export async function once(
     return { status: stored.status, etag: storedHeaders.parse(JSON.parse(stored.headers)).etag, body };
   }
   const answer = await work();
+  if ('outside' in answer) return answer;
   await transaction('idempotency_keys').insert({
     user_id: claim.userId,
     key: claim.key,

@@ -24,6 +24,14 @@ export interface Reply {
   readonly unchanged?: true;
 }
 
+/**
+ * What a handler gives back that has only read: work that takes longer than a transaction may stay open. It runs with none
+ * open and says how to finish in another, where person, access and thing are looked up anew.
+ */
+export interface LongWork<Context> {
+  readonly outside: () => Promise<(context: Context) => Promise<Reply>>;
+}
+
 /** Of a route that takes no query, or no body. */
 export const nothing = z.strictObject({});
 export const noBody = z.undefined();
@@ -79,7 +87,7 @@ export interface SignedInDefinition<
   readonly afterwards?: (request: Request, response: Response) => Promise<void>;
 }
 
-interface MemberContext<
+export interface MemberContext<
   P extends z.ZodType,
   Q extends z.ZodType,
   B extends z.ZodType,
@@ -111,7 +119,9 @@ export interface MemberDefinition<
   };
   /** Needs If-Match: 428 without. */
   readonly needsMatch?: boolean;
-  readonly handler: (context: MemberContext<P, Q, B, T>) => Promise<Reply>;
+  readonly handler: (
+    context: MemberContext<P, Q, B, T>,
+  ) => Promise<Reply | LongWork<MemberContext<P, Q, B, T>>>;
 }
 
 /** One request as the router hands it on. */

@@ -31,7 +31,7 @@ const summaryRow = z.object({
   saved_by_name: z.string(),
 });
 
-type StoredProtocol = Protocol & Thing;
+export type StoredProtocol = Protocol & Thing;
 
 export function asProtocol({ id, draft, latestVersion }: StoredProtocol): Protocol {
   return { id, draft, latestVersion };

@@ -1,8 +1,4 @@
 import { z } from 'zod';
-import { setImmediate } from 'node:timers/promises';
-import { compareShown } from '../../../shared/protocol/compare-shown';
-import { freezeSteps } from '../../../shared/protocol/freeze';
-import { sameContent } from '../../../shared/protocol/same-content';
 import {
   idSchema,
   pageQuerySchema,
@@ -12,17 +8,14 @@ import {
   versionSchema,
   versionSummarySchema,
 } from '../../../shared/schemas';
-import { newId } from '../../db/new-id';
-import { conflict, refused } from '../../errors';
 import { readCursor } from '../../http/cursor';
 import { labParams } from '../../http/lab-params';
-import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Route, route } from '../../http/route';
-import { findBench } from '../benches';
 import { findLab } from '../labs';
 import { findProtocol, findProtocolToChange } from './draft-store';
 import { protocolParams } from './protocol-params';
-import { asVersion, findVersion, insertVersion, listVersions, pageOfVersions } from './version-store';
+import { frozenFor, keepVersion, oneAtATime, readForVersion } from './save-version';
+import { asVersion, findVersion, listVersions, pageOfVersions } from './version-store';
 
 const versionParams = protocolParams.extend({
   number: z
@@ -31,16 +24,8 @@ const versionParams = protocolParams.extend({
     .transform(Number),
 });
 
-/** Long work in short pieces, with a turn of the event loop for everybody else between two of them. */
-async function betweenTurns<Result>(steps: Generator<undefined, Result>): Promise<Result> {
-  for (;;) {
-    const step = steps.next();
-    if (step.done === true) return step.value;
-    await setImmediate();
-  }
-}
-
 export function versionRoutes(): readonly Route[] {
+  const oneEach = oneAtATime();
   return [
     route({
       method: 'post',
@@ -52,56 +37,15 @@ export function versionRoutes(): readonly Route[] {
       response: versionSummarySchema,
       idempotent: true,
       needsMatch: true,
-      handler: async ({ body, thing, labId, user, transaction, audit, now, expectedRevision }) => {
-        const { draft, latestVersion } = thing;
-        requireRevision(expectedRevision, draft.revision, draft);
-        const [lab, bench] = [
-          await findLab(transaction, { labId }),
-          await findBench(transaction, { labId, benchId: draft.content.benchId }),
-        ];
-        if (lab === null || bench === null)
-          throw new Error("a draft's lab and bench are there by foreign key");
-        if (bench.retiredAt !== null) {
-          throw refused([{ path: 'benchId', message: `${bench.name} is retired. Choose a bench in use.` }]);
-        }
-        const frozen = await betweenTurns(
-          freezeSteps({
-            lab,
-            protocolId: thing.id,
-            draft: draft.content,
-            bench,
-            number: (latestVersion?.number ?? 0) + 1,
-            parentHash: latestVersion?.contentHash ?? null,
-            message: body.message,
-            savedAt: now,
-            savedBy: user,
-          }),
-        );
-        if (!frozen.ok) throw refused(frozen.faults);
-        const latest =
-          latestVersion === null
-            ? null
-            : await findVersion(transaction, { labId, protocolId: thing.id, number: latestVersion.number });
-        if (latest !== null && sameContent(frozen.content, latest.content)) {
-          throw conflict(
-            'nothing-new',
-            `Nothing that a version holds has changed since version ${latest.summary.number} was saved: neither the draft nor its bench, its plates or the convention.`,
-          );
-        }
-        const differences = compareShown(frozen.content, body.shown);
-        if (differences.length > 0) throw refused(differences);
-        const summary = await insertVersion(transaction, newId(now), frozen, draft.revision);
-        await audit({
-          kind: 'version.saved',
-          subjectId: summary.id,
-          details: {
-            protocolId: thing.id,
-            number: summary.number,
-            contentHash: summary.contentHash,
-            message: summary.message,
-          },
-        });
-        return { status: 201, body: summary };
+      handler: async (context) => {
+        const asked = await readForVersion(context);
+        return {
+          outside: () =>
+            oneEach(context.user.id, async () => {
+              const frozen = await frozenFor(asked);
+              return (last) => keepVersion(last, asked, frozen);
+            }),
+        };
       },
     }),
     route({
