@@ -127,3 +127,17 @@ export function describeConvention({ phase, handedness, s3Sign }: Convention): s
 export function sameConvention(one: Convention, other: Convention): boolean {
   return one.phase === other.phase && one.handedness === other.handedness && one.s3Sign === other.s3Sign;
 }
+
+/** As a file names it: "kz-wt receiver L". `readConventionTag` reads it back. */
+export function conventionTag({ phase, handedness, s3Sign }: Convention): string {
+  return `${phase} ${handedness} ${s3Sign}`;
+}
+
+/** Null where the words are no convention's. */
+export function readConventionTag(text: string): Convention | null {
+  const [phase, handedness, s3Sign, ...more] = text.trim().split(/\s+/u);
+  if (more.length > 0) return null;
+  if (phase !== 'kz-wt' && phase !== 'wt-kz') return null;
+  if (handedness !== 'receiver' && handedness !== 'source') return null;
+  return s3Sign === 'R' || s3Sign === 'L' ? { phase, handedness, s3Sign } : null;
+}

@@ -1,9 +1,10 @@
 import Papa from 'papaparse';
-import type { Convention } from '../optics/convention';
+import { type Convention, conventionTag, readConventionTag, sameConvention } from '../optics/convention';
 import { MAX_LENGTH } from '../optics/expression';
 import { maxLabelLength, maxTargets } from '../schemas/protocols';
 import { type Delimiter, findDelimiter, joinedCells } from './csv-shape';
 import { readRow, type RowReading } from './solve-row';
+import { translateExpression } from './translate-expression';
 
 /** The longest text that is read, in bytes as UTF-8. */
 export const MAX_CSV_BYTES = 1_000_000;
@@ -27,6 +28,8 @@ export interface CsvProblem {
 }
 
 export interface CsvReading {
+  /** The convention that the file names, where it is another than the lab's: its rows were translated out of it. */
+  readonly translatedFrom: Convention | null;
   readonly rows: readonly CsvRow[];
   readonly problems: readonly CsvProblem[];
 }
@@ -45,11 +48,34 @@ export interface CsvTarget {
  */
 export function readTargetCsv(text: string, target: CsvTarget): CsvReading {
   if (isLongerThan(text, MAX_CSV_BYTES)) {
-    return { rows: [], problems: [{ line: 1, message: 'This text is longer than 1 MB. Read it in parts.' }] };
+    const message = 'This text is longer than 1 MB. Read it in parts.';
+    return { translatedFrom: null, rows: [], problems: [{ line: 1, message }] };
   }
-  const reader = new Reader(target);
-  takeRecords(text.startsWith('\ufeff') ? text.slice(1) : text, (record) => reader.take(record));
+  const plain = text.startsWith('\ufeff') ? text.slice(1) : text;
+  const reader = new Reader(target, namedConvention(plain));
+  takeRecords(plain, (record) => reader.take(record));
   return reader.reading();
+}
+
+interface NamedConvention {
+  readonly line: number;
+  /** Null where the words are no convention's. */
+  readonly convention: Convention | null;
+}
+
+const NAMES_CONVENTION = /^#\s*convention:(?<words>.*)$/iu;
+
+/** What the comment lines at the head of a text say of its convention. */
+function namedConvention(text: string): NamedConvention | null {
+  for (const [index, line] of text
+    .slice(0, 2000)
+    .split(/\r\n|\n|\r/u)
+    .entries()) {
+    if (!line.startsWith('#')) return null;
+    const words = NAMES_CONVENTION.exec(line)?.groups?.['words'];
+    if (words !== undefined) return { line: index + 1, convention: readConventionTag(words) };
+  }
+  return null;
 }
 
 interface CsvRecord {
@@ -108,10 +134,25 @@ class Reader {
   private layout: Layout | null = null;
   private isFirst = true;
 
-  constructor(private readonly target: CsvTarget) {}
+  private readonly translatedFrom: Convention | null;
+
+  constructor(
+    private readonly target: CsvTarget,
+    named: NamedConvention | null,
+  ) {
+    const { convention = null } = named ?? {};
+    this.translatedFrom =
+      convention === null || sameConvention(convention, target.convention) ? null : convention;
+    if (named !== null && convention === null) {
+      this.problem(
+        named.line,
+        'This line names a convention in words that are not known; the rows are read in your lab’s. Write it as kz-wt receiver L.',
+      );
+    }
+  }
 
   reading(): CsvReading {
-    return { rows: this.rows, problems: this.problems };
+    return { translatedFrom: this.translatedFrom, rows: this.rows, problems: this.problems };
   }
 
   /** @returns whether there is room for more. */
@@ -147,7 +188,8 @@ class Reader {
     }
     const exact = this.layout?.isOurs === true;
     const label = withoutGuard(exact ? found.label : found.label.trim());
-    const expression = withoutGuard(exact ? found.expression : found.expression.trim());
+    const written = withoutGuard(exact ? found.expression : found.expression.trim());
+    const expression = this.inOurs(written);
     if (expression.length > MAX_LENGTH) {
       this.problem(
         line,
@@ -164,6 +206,13 @@ class Reader {
       this.problem(line, `Column ${read.error.column} of the expression: ${read.error.message}`);
     }
     this.rows.push({ line, label: cutLabel(label), expression, reading: read.ok ? read.reading : null });
+  }
+
+  private inOurs(expression: string): string {
+    if (this.translatedFrom === null || expression.length > MAX_LENGTH) return expression;
+    const { kind, convention } = this.target;
+    const protocolKind = kind === 'state' ? 'prepare' : 'apply';
+    return translateExpression(expression, protocolKind, this.translatedFrom, convention);
   }
 
   private problem(line: number, message: string): void {
@@ -229,10 +278,14 @@ function withoutGuard(cell: string): string {
   return cell.startsWith("'") && FORMULA_LIKE.test(cell) ? cell.slice(1) : cell;
 }
 
-/** Targets as CSV text by RFC 4180 with a header, which `readTargetCsv` reads back exactly. */
-export function writeTargetCsv(rows: readonly Pick<CsvRow, 'label' | 'expression'>[]): string {
+/** Targets as CSV text by RFC 4180 with a header, their convention named above it; `readTargetCsv` reads it back exactly. */
+export function writeTargetCsv(
+  rows: readonly Pick<CsvRow, 'label' | 'expression'>[],
+  convention: Convention,
+): string {
   const cells = rows.map(({ label, expression }) => [withGuard(label), withGuard(expression)]);
-  return `${['label,expression', ...cells.map(quoted)].join('\r\n')}\r\n`;
+  const lines = [`# convention: ${conventionTag(convention)}`, 'label,expression', ...cells.map(quoted)];
+  return `${lines.join('\r\n')}\r\n`;
 }
 
 function quoted(cells: readonly string[]): string {

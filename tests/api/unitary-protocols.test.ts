@@ -106,7 +106,7 @@ test('plates that change places in a bench make its drafts forget held angles an
   const holding = await begin(content({ targets: [held], presentDialsDeg: [1, 2, 3] }));
   const plain = await begin(content());
   const bench = await call(harness, lead, 'get', `${at}/benches/${benchId}`);
-  const put = (ids: readonly string[], ifMatch: string | undefined) =>
+  const put = (ids: readonly string[], ifMatch = '') =>
     call(harness, lead, 'put', `${at}/benches/${benchId}`, { body: benchBody(ids, 'gate bench'), ifMatch });
   const same = await put(plateIds, bench.headers['etag']);
   expect(same.status).toBe(200);

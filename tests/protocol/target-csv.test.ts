@@ -5,8 +5,11 @@ import {
   DEFAULT_CONVENTION,
   formatState,
   formatUnitary,
+  infidelityBetween,
   parseState,
 } from '../../shared/optics';
+import { unitaryShortfall } from '../../shared/optics/goal';
+import { readRow } from '../../shared/protocol/solve-row';
 import { cliffordTurns, haarStates } from '../../shared/optics/target-sets';
 import { MAX_CSV_BYTES, readTargetCsv, writeTargetCsv } from '../../shared/protocol/target-csv';
 import { maxLabelLength, maxTargets } from '../../shared/schemas';
@@ -112,10 +115,10 @@ test('a protocol’s most rows are read, and the text’s most bytes', () => {
 
 test('a cell that a spreadsheet would take for a formula is text, read and written', () => {
   expect(rows('=1+1,H\n@x,V\n"=HYPERLINK(""a"")",D')).toEqual(['1 =1+1|H', '2 @x|V', '3 =HYPERLINK("a")|D']);
-  const text = writeTargetCsv([{ label: '=cmd()', expression: '-H' }]);
-  expect(text).toBe('label,expression\r\n"\'=cmd()","\'-H"\r\n');
+  const text = writeTargetCsv([{ label: '=cmd()', expression: '-H' }], DEFAULT_CONVENTION);
+  expect(text).toBe('# convention: kz-wt receiver L\r\nlabel,expression\r\n"\'=cmd()","\'-H"\r\n');
   expect(text).not.toMatch(/[,"\n][=+\-@]/u);
-  expect(rows(text)).toEqual(['2 =cmd()|-H']);
+  expect(rows(text)).toEqual(['3 =cmd()|-H']);
 });
 
 const cell = fc.oneof(
@@ -131,7 +134,7 @@ test('what is written is read back exactly, whatever the labels and expressions 
         maxLength: 8,
       }),
       (written) => {
-        const { rows: found } = readTargetCsv(writeTargetCsv(written), STATES);
+        const { rows: found } = readTargetCsv(writeTargetCsv(written, DEFAULT_CONVENTION), STATES);
         expect(found.map(({ label, expression }) => ({ label, expression }))).toEqual(written);
       },
     ),
@@ -145,7 +148,10 @@ test('the sets of targets go through a file unchanged, read as themselves', () =
     [haarStates({ count: 200, seed: 3 }, other), 'state'],
     [cliffordTurns(), 'unitary'],
   ] as const) {
-    const { rows: found, problems } = readTargetCsv(writeTargetCsv(set), { kind, convention: other });
+    const { rows: found, problems } = readTargetCsv(writeTargetCsv(set, other), {
+      kind,
+      convention: other,
+    });
     expect(problems).toEqual([]);
     expect(found.map(({ label, expression }) => ({ label, expression }))).toEqual(set);
   }
@@ -186,4 +192,33 @@ test.each([
   const start = performance.now();
   readTargetCsv(shape(MAX_CSV_BYTES), STATES);
   expect(performance.now() - start).toBeLessThan(2000);
+});
+
+test('a file that names another convention is translated out of it: other words, the same light', () => {
+  const theirs: Convention = { phase: 'wt-kz', handedness: 'source', s3Sign: 'R' };
+  for (const [set, kind] of [
+    [haarStates({ count: 50, seed: 5 }, theirs), 'state'],
+    [[...cliffordTurns(), { label: 'p', expression: 'qwp(20deg) hwp(70deg)' }], 'unitary'],
+  ] as const) {
+    const read = readTargetCsv(writeTargetCsv(set, theirs), { kind, convention: DEFAULT_CONVENTION });
+    expect(read).toMatchObject({ translatedFrom: theirs, problems: [] });
+    for (const [place, { reading }] of read.rows.entries()) {
+      const was = readRow(set[place]?.expression ?? '', kind === 'state' ? 'prepare' : 'apply', theirs);
+      if (reading === null || !was.ok) throw new Error('a row can’t be read');
+      if (reading.kind === 'state' && was.reading.kind === 'state') {
+        expect(infidelityBetween(reading.stokes, was.reading.stokes)).toBeLessThan(1e-20);
+      } else if (reading.kind === 'unitary' && was.reading.kind === 'unitary') {
+        expect(unitaryShortfall(reading.quaternion, was.reading.quaternion)).toBeLessThan(1e-20);
+      } else throw new Error('a row is of another kind');
+    }
+  }
+  // L of a lab that names hands from the source is the field that this one calls R.
+  expect(rows('# convention: kz-wt source R\na,L')).toEqual(['2 a|R']);
+});
+
+test('a convention in unknown words is said at its line, and the rows are read as the lab’s own', () => {
+  const read = readTargetCsv('# convention: ours\na,L', STATES);
+  expect(read.translatedFrom).toBeNull();
+  expect(read.rows[0]?.expression).toBe('L');
+  expect(read.problems).toMatchObject([{ line: 1, message: expect.stringMatching(/kz-wt receiver L/u) }]);
 });

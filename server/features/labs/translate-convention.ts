@@ -1,34 +1,11 @@
 import { z } from 'zod';
-import type { Convention } from '../../../shared/optics/convention';
-import { formatState, formatUnitary, parseState, parseUnitary } from '../../../shared/optics/expression';
-import { unitaryShortfall } from '../../../shared/optics/goal';
-import { infidelityBetween } from '../../../shared/optics/stokes';
+import { type Convention, sameConvention } from '../../../shared/optics/convention';
+import { translateExpression } from '../../../shared/protocol/translate-expression';
 import { draftContentSchema } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 
 const draftRow = z.object({ protocol_id: z.string(), content: z.string(), revision: z.number() });
 const benchRow = z.object({ id: z.string(), input_expression: z.string(), revision: z.number() });
-
-/** Two readings closer than this are one state that a convention does not touch. */
-const sameState = 1e-24;
-
-/** The same light in the words of another convention; what cannot be read stays as it was typed. */
-function translateExpression(expression: string, from: Convention, to: Convention): string {
-  const before = parseState(expression, from);
-  if (!before.ok) return expression;
-  const after = parseState(expression, to);
-  if (after.ok && infidelityBetween(before.stokes, after.stokes) < sameState) return expression;
-  return formatState(before.jones, to);
-}
-
-/** As `translateExpression`, for a row that is a unitary. */
-function translateUnitary(expression: string, from: Convention, to: Convention): string {
-  const before = parseUnitary(expression, from);
-  if (!before.ok) return expression;
-  const after = parseUnitary(expression, to);
-  if (after.ok && unitaryShortfall(after.quaternion, before.quaternion) < sameState) return expression;
-  return formatUnitary(before.quaternion, to);
-}
 
 /**
  * Rewrites what a lab has written so far when it changes its convention: the change is in what is shown, never in what
@@ -49,10 +26,6 @@ export async function translateLab(
   };
 }
 
-function sameConvention(a: Convention, b: Convention): boolean {
-  return a.phase === b.phase && a.handedness === b.handedness && a.s3Sign === b.s3Sign;
-}
-
 async function translateDrafts(
   transaction: Transaction,
   { labId, userId, now }: { readonly labId: string; readonly userId: string; readonly now: Date },
@@ -65,10 +38,9 @@ async function translateDrafts(
     .parse(await transaction('drafts').where({ lab_id: labId }).orderBy('protocol_id').forUpdate().select());
   for (const { protocol_id, content, revision } of drafts) {
     const draft = draftContentSchema.parse(JSON.parse(content));
-    const translate = draft.kind === 'apply' ? translateUnitary : translateExpression;
     const targets = draft.targets.map((target) => ({
       ...target,
-      expression: translate(target.expression, from, to),
+      expression: translateExpression(target.expression, draft.kind, from, to),
     }));
     const same = targets.every(({ expression }, index) => expression === draft.targets[index]?.expression);
     if (!same) translated += 1;
@@ -93,7 +65,7 @@ async function translateBenches(
     .array(benchRow)
     .parse(await transaction('benches').where({ lab_id: labId }).orderBy('id').forUpdate().select());
   for (const { id, input_expression, revision } of benches) {
-    const expression = translateExpression(input_expression, from, to);
+    const expression = translateExpression(input_expression, 'prepare', from, to);
     if (expression !== input_expression) translated += 1;
     await transaction('benches')
       .where({ lab_id: labId, id })

@@ -48,6 +48,9 @@ const idealWords = {
   apply: 'A quarter-, a half- and a quarter-wave plate in this order, as exact as no plate is.',
 } as const;
 
+/** Fewer plates than this reach next to nothing of it: such a bench is there to choose, but not to begin with. */
+const fewest = { prepare: 2, analyse: 2, apply: 3 } as const;
+
 /** Where a first visit begins, for each question. */
 const begins = {
   prepare: 'ellipse(30deg, 20deg)',
@@ -139,7 +142,10 @@ export function Component() {
   const convention =
     CONVENTION_SETS.find(({ id }) => id === setId)?.convention ?? own.convention ?? DEFAULT_CONVENTION;
   const bench =
-    benchId === 'ideal' ? undefined : (own.benches.find(({ id }) => id === benchId) ?? own.benches[0]);
+    benchId === 'ideal'
+      ? undefined
+      : (own.benches.find(({ id }) => id === benchId) ??
+        own.benches.find(({ plates: standing }) => standing.length >= fewest[question]));
   const written = useDeferredValue(expression);
   const read = useMemo(
     () => readQuick({ question, expression: written, convention }),

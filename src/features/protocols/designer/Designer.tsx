@@ -16,6 +16,7 @@ import { CalibratedElsewhere } from './CalibratedElsewhere';
 import { ConflictDialog } from './ConflictDialog';
 import { DesignerHead } from './DesignerHead';
 import { shownSolutions, whatHoldsUp } from './row-view';
+import { SaveRows } from './SaveRows';
 import { SaveVersionDialog } from './SaveVersionDialog';
 import { SelectedFigures } from './SelectedFigures';
 import { SequencePanel } from './SequencePanel';
@@ -133,12 +134,18 @@ export function Designer({ protocol, benches }: DesignerProps) {
               onAskWords={() => setAsking('words')}
             />
           </div>
+          {content.targets.length > 0 && !mayWrite && (
+            <p className="mt-2 mb-0 text-s">
+              <SaveRows content={content} convention={lab.convention} />
+            </p>
+          )}
           {mayWrite && (
             <p className="mt-2 mb-0 flex flex-wrap gap-x-6 gap-y-1 text-s">
               <TextButton onClick={() => setAsking('rows')}>
                 Add a set, or rows from text or a file
               </TextButton>
               <TextButton onClick={() => setAsking('words')}>What can be written</TextButton>
+              {content.targets.length > 0 && <SaveRows content={content} convention={lab.convention} />}
             </p>
           )}
           {solved.progress !== null && (

@@ -1,5 +1,5 @@
 import { useMemo, useState } from 'react';
-import type { Convention } from '../../../../shared/optics/convention';
+import { type Convention, describeConvention } from '../../../../shared/optics/convention';
 import { maxTargets, type ProtocolKind } from '../../../../shared/schemas/protocols';
 import { Button } from '../../../components/Button';
 import { Dialog } from '../../../components/Dialog';
@@ -71,6 +71,12 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
             <CsvFields text={text} onText={setText} />
           )}
           <div role="status" className="space-y-1 text-s">
+            {found.translatedFrom !== null && (
+              <p className="m-0 font-strong">
+                The text names {describeConvention(found.translatedFrom)}. Its rows are translated to your
+                lab’s convention: the same light in your words.
+              </p>
+            )}
             {count < found.rows.length && (
               <p className="m-0 font-strong">
                 A protocol has at most {maxTargets} rows: the first {count} fit.

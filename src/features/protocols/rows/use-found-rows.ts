@@ -17,6 +17,8 @@ export interface FoundRow {
 export interface FoundRows {
   readonly rows: readonly FoundRow[];
   readonly problems: readonly CsvProblem[];
+  /** The convention that a file named, where its rows were translated out of it. */
+  readonly translatedFrom: Convention | null;
   readonly chosen: ChosenSet;
   /** Each readable row on the sphere: the state, or where a unitary takes H. */
   readonly points: readonly Point[];
@@ -68,15 +70,15 @@ export function useFoundRows(
     return { chosen, rows, points };
   }, [choice, kind, convention]);
   const csv = useMemo(() => {
-    const { rows, problems } = readTargetCsv(read, {
+    const { rows, problems, translatedFrom } = readTargetCsv(read, {
       kind: kind === 'apply' ? 'unitary' : 'state',
       convention,
     });
     const points = rows.flatMap(({ label, reading }) => (reading === null ? [] : [pointOf(label, reading)]));
-    return { rows, problems, points };
+    return { rows, problems, points, translatedFrom };
   }, [read, kind, convention]);
   return from === 'set'
-    ? { ...set, problems: [], isBehind: false }
+    ? { ...set, problems: [], translatedFrom: null, isBehind: false }
     : { ...csv, chosen: set.chosen, isBehind: text !== read };
 }
 
