@@ -230,9 +230,12 @@ function cutLabel(label: string): string {
   return cut;
 }
 
+/** What a column of expressions is called in files of others; none of the words is an expression itself. */
+const EXPRESSION_HEADS: readonly string[] = ['expression', 'target', 'state', 'unitary'];
+
 function headerOf(cells: readonly string[]): Layout | null {
   const names = cells.map((cell) => cell.trim().toLowerCase());
-  const expression = names.indexOf('expression');
+  const expression = names.findIndex((name) => EXPRESSION_HEADS.includes(name));
   if (expression === -1) return null;
   const label = names.indexOf('label');
   const isOurs = cells.length === 2 && cells[0] === 'label' && cells[1] === 'expression';

@@ -23,7 +23,11 @@ export function switchSingleLetters(on: boolean): void {
   localStorage.setItem(offKey, on ? 'on' : 'off');
 }
 
-function isField(target: EventTarget | null): boolean {
+/** Whether a key may be meant for the element itself. A choice by radio or checkbox takes arrows and Space, no letters. */
+function keepsKey(target: EventTarget | null, key: string): boolean {
+  if (target instanceof HTMLInputElement && ['radio', 'checkbox'].includes(target.type)) {
+    return key === ' ' || key.startsWith('Arrow');
+  }
   return (
     target instanceof HTMLElement &&
     (target.isContentEditable || ['INPUT', 'TEXTAREA', 'SELECT'].includes(target.tagName))
@@ -62,7 +66,7 @@ export function useCommands(commands: readonly Command[]): void {
     const listen = (event: KeyboardEvent) => {
       if (event.defaultPrevented || document.querySelector('dialog[open]') !== null) return;
       const name = nameOf(event);
-      if (isField(event.target) && !name.startsWith('Ctrl+')) return;
+      if (keepsKey(event.target, event.key) && !name.startsWith('Ctrl+')) return;
       if ((name === 'Enter' || name === ' ') && isPressable(event.target)) return;
       if (name.length === 1 && !singleLettersAreOn()) return;
       if (name.length === 1) {

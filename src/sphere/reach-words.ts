@@ -33,7 +33,11 @@ export function reachInWords(reach: ReachInput, convention: Convention): ReachWo
     ...(twoWaysShare === 0 ? [] : [`${percent(twoWaysShare)} is reached in two ways`]),
     `Read off a map with a cell each ${formatAngle(reach.stepDeg, Number.isInteger(reach.stepDeg) ? 0 : 1)} of the sphere; a gap smaller than that can be missed`,
   ];
-  return { outShare, twoWaysShare, regions, text: `${sentences.join('. ')}.` };
+  return { outShare, twoWaysShare, regions, text: `${sentences.map(capitalised).join('. ')}.` };
+}
+
+function capitalised(sentence: string): string {
+  return sentence.charAt(0).toUpperCase() + sentence.slice(1);
 }
 
 function percent(share: number): string {

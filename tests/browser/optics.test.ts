@@ -68,7 +68,7 @@ describe('a protocol of unitaries', () => {
     await page.getByRole('button', { name: 'Try other orders too' }).click();
     await page.getByText(/^Choosing the solutions saves/u).waitFor();
     await page.getByRole('button', { name: 'Rank the list by least travel' }).click();
-    await page.getByText('dials stand at').waitFor();
+    await page.getByRole('button', { name: 'say where the dials stand' }).waitFor();
     await page.getByText(/saved \d\d:\d\d:\d\d/u).waitFor();
 
     await page.getByRole('button', { name: 'Draw the budget by Monte Carlo' }).click();

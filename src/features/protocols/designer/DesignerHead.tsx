@@ -56,7 +56,7 @@ export function DesignerHead(props: DesignerHeadProps) {
             ) : (
               <>
                 {content.kind === 'apply' && 'unitaries, '}draft after{' '}
-                <TextLink to={versionsHref}>version {latest.number}</TextLink>
+                <TextLink to={`${versionsHref}/${latest.number}`}>version {latest.number}</TextLink>
               </>
             )}
             , <SavedWords saving={saving} />

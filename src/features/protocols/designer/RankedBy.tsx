@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { wrap } from '../../../../shared/optics/units';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { DraftContent, Objective } from '../../../../shared/schemas/protocols';
 import { TextButton } from '../../../components/TextLink';
@@ -87,14 +88,22 @@ function PresentDials(props: {
   if (typed === null) {
     return (
       <span>
-        dials stand at{' '}
-        <button type="button" className="fact-button font-mono" onClick={() => setTyped(shown ?? '')}>
-          {shown ?? 'not said'}
-        </button>
+        {shown === null ? (
+          <button type="button" className="fact-button" onClick={() => setTyped('')}>
+            say where the dials stand
+          </button>
+        ) : (
+          <>
+            dials stand at{' '}
+            <button type="button" className="fact-button font-mono" onClick={() => setTyped(shown)}>
+              {shown}
+            </button>
+          </>
+        )}
         {standsAtDeg !== null && (
           <>
             {' '}
-            <TextButton onClick={() => edit(standAt(standsAtDeg))}>as on the stage</TextButton>
+            <TextButton onClick={() => edit(standAt(standsAtDeg))}>take them from the stage</TextButton>
           </>
         )}
       </span>
@@ -102,9 +111,12 @@ function PresentDials(props: {
   }
   const read = readDials(typed, bench.plates.length);
   const fault = typed.trim() !== '' && read === null;
+  // A ring that turns all the way round says 40 where somebody counts on to 400.
+  const onItsRing = (dialDeg: number, plate: number): number =>
+    (bench.plates[plate]?.mount.rangeDeg ?? null) === null ? wrap(dialDeg, 360) : dialDeg;
   const done = () => {
     if (fault) return;
-    edit(standAt(typed.trim() === '' ? null : read));
+    edit(standAt(typed.trim() === '' || read === null ? null : read.map(onItsRing)));
     setTyped(null);
   };
   return (

@@ -44,7 +44,7 @@ function stagePlate(plate: Plate, bench: Bench, dialDeg: number, solutionDialDeg
 /** The bench with the selected row's angles on it, or with a plate turned by hand to see what that does. */
 export const SelectedStage = memo(function SelectedStage(props: SelectedStageProps) {
   const { bench, input, followed, target, view, toleranceInfidelity, convention } = props;
-  const { handDialsDeg, turnByHand, listSolutions } = useDesignerView();
+  const { handDialsDeg, turnByHand, listSolutions, solutionsOfId } = useDesignerView();
   const solutionDials = view.solution.dialsDeg;
   const dialsDeg = handDialsDeg?.length === bench.plates.length ? handDialsDeg : solutionDials;
   const reached = standingAt({ bench, input, reading: view.reading, dialsDeg });
@@ -77,7 +77,7 @@ export const SelectedStage = memo(function SelectedStage(props: SelectedStagePro
         plates={bench.plates}
         toleranceInfidelity={toleranceInfidelity}
         byHandInfidelity={handDialsDeg === null ? null : reached.infidelity}
-        onListSolutions={() => listSolutions(target.id)}
+        onListSolutions={() => listSolutions(solutionsOfId === target.id ? null : target.id)}
       />
     </BeamLineStage>
   );

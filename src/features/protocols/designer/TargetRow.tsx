@@ -59,7 +59,8 @@ export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
   const near = useNearScreen(row);
   // Of two hundred rows a few are on the screen: the others keep their place and their words.
   const drawn = near || selected || editing ? solved : null;
-  const showsSource = mayWrite && (editing || blank || view.status === 'unreadable');
+  const showsSource =
+    mayWrite && (editing || blank || view.status === 'unreadable' || view.status === 'empty');
   const name = blank ? 'a new target' : `target ${target.label}`;
 
   // The selection moves by keys: the row that has it has the focus, unless somebody types.
@@ -128,7 +129,8 @@ export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
               onChange={(expression) => actions.write(target, expression)}
               onDone={actions.done}
               onCancel={() => actions.cancel(target)}
-              onFocus={blank ? undefined : () => actions.select(target)}
+              // What is mended in a row that can't be read must not close under the caret once it can.
+              onFocus={blank || editing ? undefined : () => actions.openSource(target)}
             />
           ) : (
             <ExpressionText
@@ -238,7 +240,7 @@ function SolutionCount({ solved, name, open, onOpen }: SolutionCountProps) {
       type="button"
       aria-expanded={open}
       aria-label={`Solution ${words} for ${name}${solved.held ? ', held' : ''}`}
-      className="inline-flex min-h-6 items-center gap-2"
+      className="inline-flex min-h-6 items-center gap-2 whitespace-nowrap"
       onClick={(event) => {
         event.stopPropagation();
         onOpen(!open);

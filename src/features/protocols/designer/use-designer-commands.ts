@@ -13,7 +13,7 @@ interface Situation {
 
 /** What the keys of the designer do; the list behind `?` shows the same commands. */
 export function useDesignerCommands({ draft, views, mayWrite }: Situation): readonly Command[] {
-  const { selectedId, editingId, select, openSource, listSolutions } = useDesignerView();
+  const { selectedId, editingId, solutionsOfId, select, openSource, listSolutions } = useDesignerView();
   const { targets } = draft.content;
   const place = targets.findIndex(({ id }) => id === selectedId);
   const selected: DraftTarget | undefined = targets[place];
@@ -97,10 +97,17 @@ export function useDesignerCommands({ draft, views, mayWrite }: Situation): read
     { id: 'hold', label: 'Hold this solution, or let it go', keys: ['p'], when: onRow, run: hold },
     {
       id: 'solutions',
-      label: 'List the other solutions',
+      label: 'List the other solutions, or put the list away',
       keys: ['o'],
       when: () => resting() && selected !== undefined,
-      run: () => listSolutions(selectedId),
+      run: () => listSolutions(solutionsOfId === selectedId ? null : selectedId),
+    },
+    {
+      id: 'close-solutions',
+      label: 'Put the list of solutions away',
+      keys: ['Escape'],
+      when: () => resting() && solutionsOfId !== null,
+      run: () => listSolutions(null),
     },
     { id: 'undo', label: 'Undo', keys: ['Ctrl+z'], when: () => mayWrite, run: draft.undo },
     {

@@ -50,6 +50,11 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
           >
             Add {count === 1 ? '1 row' : `${count} rows`}
           </Button>
+          {unread > 0 && unread < found.rows.length && (
+            <Button onClick={() => onAdd(found.readable.slice(0, roomFor(found.readable.length, present)))}>
+              Add only the {found.readable.length} that can be read
+            </Button>
+          )}
           <Button onClick={onClose}>Leave the table as it is</Button>
         </>
       }

@@ -16,6 +16,8 @@ export interface FoundRow {
 
 export interface FoundRows {
   readonly rows: readonly FoundRow[];
+  /** Those among them that can be read. */
+  readonly readable: readonly FoundRow[];
   readonly problems: readonly CsvProblem[];
   /** The convention that a file named, where its rows were translated out of it. */
   readonly translatedFrom: Convention | null;
@@ -67,7 +69,7 @@ export function useFoundRows(
       const row = readRow(expression, kind, convention);
       return row.ok ? [pointOf(label, row.reading)] : [];
     });
-    return { chosen, rows, points };
+    return { chosen, rows, readable: rows, points };
   }, [choice, kind, convention]);
   const csv = useMemo(() => {
     const { rows, problems, translatedFrom } = readTargetCsv(read, {
@@ -75,7 +77,8 @@ export function useFoundRows(
       convention,
     });
     const points = rows.flatMap(({ label, reading }) => (reading === null ? [] : [pointOf(label, reading)]));
-    return { rows, problems, points, translatedFrom };
+    const readable = rows.filter(({ reading }) => reading !== null);
+    return { rows, readable, problems, points, translatedFrom };
   }, [read, kind, convention]);
   return from === 'set'
     ? { ...set, problems: [], translatedFrom: null, isBehind: false }
