@@ -94,7 +94,7 @@ describe('the reach in words', () => {
     );
     // Cells of 0.5° whose centres lie within 2.3° of a pole end at 2.5°.
     expect(reachInWords(caps(0.5, 2.3, 0), CONVENTION).text).toContain(
-      'less than 0.1\u202F% of the sphere is out of reach: around both poles to 2.5°.',
+      'Less than 0.1\u202F% of the sphere is out of reach: around both poles to 2.5°.',
     );
     const aroundD = mapOf(2, (_lat, _lon, centre) => (angleBetweenDeg(centre, [0, 1, 0]) < 15 ? 0 : 4));
     expect(reachInWords(aroundD, CONVENTION).text).toMatch(
