@@ -1,5 +1,5 @@
 import { type DialScale } from '../optics/dial';
-import { retardanceAt, type UsedRetardance } from '../optics/dispersion';
+import { compareWithModel, NOMINAL_DEG, retardanceAt, type UsedRetardance } from '../optics/dispersion';
 import type { TargetPlate } from '../optics/solve-target';
 import type { Calibration, Plate } from '../schemas/cabinet';
 
@@ -10,7 +10,10 @@ export interface DialledPlate {
 }
 
 /** What a solver needs of a plate: how it is built, its calibration and its mount. */
-export interface SolvingPlate extends Pick<Plate, 'construction' | 'material' | 'order'> {
+export interface SolvingPlate extends Pick<
+  Plate,
+  'kind' | 'designWavelengthNm' | 'construction' | 'material' | 'order'
+> {
   readonly mount: Omit<Plate['mount'], 'name'>;
   readonly calibration: Pick<
     Calibration,
@@ -34,9 +37,20 @@ export function dialScaleOf({ mount, calibration }: DialledPlate): DialScale {
   };
 }
 
-/** The retardance that a plate has at a bench, and how it came from what was measured. */
+/**
+ * The retardance that a plate has at a bench, and how it came from what was measured. The order is its maker's, at the
+ * wavelength that it was made for; where it was measured, it may be in the next one or the one before.
+ */
 export function usedRetardance(plate: SolvingPlate, surroundings: PlateSurroundings): UsedRetardance {
-  return retardanceAt(plate, plate.calibration, surroundings);
+  return retardanceAt({ ...plate, order: orderAtCalibration(plate) }, plate.calibration, surroundings);
+}
+
+/** As stated where there is no model, or where nobody says what the plate was made to retard. */
+function orderAtCalibration(plate: SolvingPlate): number {
+  if (plate.kind === 'other') return plate.order;
+  const nominalDeg = NOMINAL_DEG[plate.kind];
+  const compared = compareWithModel(plate, plate.designWavelengthNm, nominalDeg, plate.calibration);
+  return compared?.orderThere ?? plate.order;
 }
 
 /** A plate as the solver takes it, with the retardance that holds where it stands. */

@@ -66,7 +66,7 @@ export const plateSchema = z.strictObject({
   designWavelengthNm: z.number(),
   construction: plateConstructionSchema,
   material: plateMaterialSchema,
-  /** Whole waves beyond the retardance, of a multi-order plate; 0 for every other. */
+  /** Whole waves beyond the retardance at the design wavelength, as the maker states them; 0 unless multi-order. */
   order: z.int(),
   note: z.string(),
   mount: mountSchema,
@@ -123,8 +123,7 @@ const plateFields = {
       })
       .refine(({ from, to }) => to - from >= 180, {
         path: ['to'],
-        message:
-          'A plate needs half a turn of its mount: write a last reading at least 180° above the first.',
+        error: 'A plate needs half a turn of its mount: write a last reading at least 180° above the first.',
       })
       .nullable(),
     speedDegPerS: numberSchema('A speed', 0.01, 3600, '°/s', '20').nullable(),
@@ -133,8 +132,33 @@ const plateFields = {
   }),
 };
 
-export const createPlateSchema = z.strictObject({ ...plateFields, calibration: calibrationInputSchema });
+/** @returns a sentence where the order is not one that a plate built so has, else null. */
+function orderFault({
+  construction,
+  order,
+}: {
+  readonly construction: z.infer<typeof plateConstructionSchema>;
+  readonly order: number;
+}): string | null {
+  if (construction === 'multi-order') {
+    return order >= 1
+      ? null
+      : 'A multi-order plate has at least one whole wave. Write the order that its maker states, or choose another construction.';
+  }
+  return order === 0
+    ? null
+    : 'Only a multi-order plate has whole waves. Write 0, or say that it is multi-order.';
+}
+
+const orderOfConstruction = z.superRefine<Parameters<typeof orderFault>[0]>((plate, context) => {
+  const message = orderFault(plate);
+  if (message !== null) context.addIssue({ code: 'custom', path: ['order'], message });
+});
+
+export const createPlateSchema = z
+  .strictObject({ ...plateFields, calibration: calibrationInputSchema })
+  .check(orderOfConstruction);
 export type CreatePlate = z.infer<typeof createPlateSchema>;
 /** Everything of a plate but what was measured; needs If-Match. */
-export const updatePlateSchema = z.strictObject(plateFields);
+export const updatePlateSchema = z.strictObject(plateFields).check(orderOfConstruction);
 export type UpdatePlate = z.infer<typeof updatePlateSchema>;

@@ -200,10 +200,53 @@ test("each lab's record is one unbroken chain of hashes over canonical JSON", as
   }
 });
 
-test('numbers that are no numbers are refused by the columns themselves', async () => {
-  for (const value of ['NaN', 'Infinity', '-Infinity']) {
+test('numbers that are no numbers are refused by the columns themselves, every one of them', async () => {
+  const columns = z
+    .array(z.object({ table: z.string(), column: z.string(), checks: z.array(z.string()) }))
+    .parse(
+      await connected(harness.testDatabase.adminUrl, (client) =>
+        rowsOf(
+          client,
+          // The checks of this column alone: what stands beside it in the row does not matter.
+          `select c.table_name as table, c.column_name as column, array(
+              select pg_get_expr(k.conbin, k.conrelid) from pg_constraint k
+                join pg_attribute a on a.attrelid = k.conrelid and k.conkey = array[a.attnum]
+                where k.contype = 'c' and k.conrelid = c.table_name::regclass and a.attname = c.column_name) as checks
+            from information_schema.columns c
+            where c.table_schema = 'public' and c.data_type = 'double precision' order by 1, 2`,
+        ),
+      ),
+    );
+  expect(columns.length).toBeGreaterThan(15);
+  const taken: string[] = [];
+  for (const { table, column, checks } of columns) {
+    for (const value of ['NaN', 'Infinity', '-Infinity']) {
+      const [row] = await connected(harness.testDatabase.adminUrl, (client) =>
+        rowsOf(
+          client,
+          `select ${checks.length === 0 ? 'true' : checks.join(' and ')} as taken
+            from (select '${value}'::double precision as ${column}) as written`,
+        ),
+      );
+      if (row?.['taken'] !== false) taken.push(`${table}.${column} takes ${value}`);
+    }
+  }
+  expect(taken).toEqual([]);
+  await expect(
+    seeing(own.labId, (client) => rowsOf(client, `update plates set design_wavelength_nm = 'NaN'`)),
+  ).rejects.toThrow('violates check constraint');
+});
+
+test('whole waves are those of a multi-order plate, in its row too', async () => {
+  for (const built of [
+    `construction = 'multi-order', whole_waves = 0`,
+    `construction = 'multi-order', whole_waves = -1`,
+    `construction = 'compound-zero-order', whole_waves = 1`,
+    `construction = 'unknown', whole_waves = 6`,
+  ]) {
     await expect(
-      seeing(own.labId, (client) => rowsOf(client, `update plates set design_wavelength_nm = '${value}'`)),
+      seeing(own.labId, (client) => rowsOf(client, `update plates set ${built}`)),
+      built,
     ).rejects.toThrow('violates check constraint');
   }
 });

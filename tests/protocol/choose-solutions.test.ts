@@ -22,6 +22,8 @@ const plate = (
   offsetDeg: number,
   mount: Partial<SolvingPlate['mount']> = {},
 ): SolvingPlate => ({
+  kind: 'other',
+  designWavelengthNm: 810,
   construction: 'compound-zero-order',
   material: 'quartz',
   order: 0,

@@ -17,7 +17,10 @@ const DESIGN_TEMPERATURE_C = 20;
 
 const NM_PER_UM = 1e3;
 
-const NOMINAL_DEG: Readonly<Record<Exclude<PlateDesign, 'other'>, number>> = { half: 180, quarter: 90 };
+export const NOMINAL_DEG: Readonly<Record<Exclude<PlateDesign, 'other'>, number>> = {
+  half: 180,
+  quarter: 90,
+};
 
 export interface DesignedRetardance {
   /** In [0, 360). */

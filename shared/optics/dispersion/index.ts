@@ -6,6 +6,7 @@ export {
   type ModelComparison,
   type ModelledRetardance,
   modelRetardance,
+  NOMINAL_DEG,
   type PlateDesign,
 } from './design';
 export {

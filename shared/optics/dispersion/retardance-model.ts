@@ -14,7 +14,7 @@ export const FULL_TURN_DEG = 360;
 export interface ModelledPlate {
   readonly construction: PlateConstruction;
   readonly material: MaterialId | null;
-  /** Whole waves beyond the zeroth, counted where the retardance beside it was measured; 0 unless multi-order. */
+  /** Whole waves beyond the zeroth, counted where the retardance beside it was measured (or is stated, for a nominal one). */
   readonly order: number;
 }
 

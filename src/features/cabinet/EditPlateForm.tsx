@@ -36,6 +36,7 @@ export function EditPlateForm(props: {
     mode: 'onTouched',
   });
   const direction = useWatch({ control, name: 'mount.direction' });
+  const construction = useWatch({ control, name: 'construction' });
   const saving = useMutation({
     mutationFn: ({ body, revision }: { body: UpdatePlate; revision: number }) =>
       updatePlate(labId, plate.id, body, revision),
@@ -55,6 +56,7 @@ export function EditPlateForm(props: {
     <form noValidate onSubmit={(event) => void submit(baseRevision)(event)} className="space-y-4">
       <PlateFields
         field={(name) => ({ ...register(name), fault: plateFault(formState.errors, name) })}
+        isMultiOrder={construction === 'multi-order'}
         direction={direction}
         onDirection={(chosen) => setValue('mount.direction', chosen, { shouldDirty: true })}
       />

@@ -23,7 +23,7 @@ interface NewPlateValues extends PlateValues {
   readonly calibration: CalibrationValues;
 }
 
-const newPlateSchema: z.ZodType<CreatePlate> = createPlateSchema.extend({
+const newPlateSchema: z.ZodType<CreatePlate> = createPlateSchema.safeExtend({
   calibration: calibrationFormSchema,
 });
 
@@ -59,6 +59,7 @@ export function NewPlateForm(props: {
     mode: 'onTouched',
   });
   const direction = useWatch({ control, name: 'mount.direction' });
+  const construction = useWatch({ control, name: 'construction' });
   const creating = useMutation({
     mutationFn: (body: CreatePlate) => createPlate(labId, body, keyFor(body)),
     onSuccess: async (plate) => {
@@ -78,6 +79,7 @@ export function NewPlateForm(props: {
           <legend className="text-section mb-3">The plate and its mount</legend>
           <PlateFields
             field={(name) => ({ ...register(name), fault: plateFault(errors, name) })}
+            isMultiOrder={construction === 'multi-order'}
             direction={direction}
             onDirection={(chosen) => setValue('mount.direction', chosen, { shouldDirty: true })}
           />

@@ -27,10 +27,12 @@ const directions = [
 /** A plate and the mount it sits in, in a form that brings its own values. */
 export function PlateFields(props: {
   readonly field: (name: PlateFieldName) => FieldBinding;
+  /** Whether it is built so that it has whole waves. */
+  readonly isMultiOrder: boolean;
   readonly direction: PlateValues['mount']['direction'];
   readonly onDirection: (direction: PlateValues['mount']['direction']) => void;
 }) {
-  const { field, direction, onDirection } = props;
+  const { field, isMultiOrder, direction, onDirection } = props;
   return (
     <div className="grid gap-4 sm:grid-cols-2">
       <TextField label="plate’s name" help="As it is written on it: H-3, Q-B." {...field('name')} required />
@@ -43,12 +45,14 @@ export function PlateFields(props: {
         {...field('construction')}
       />
       <SelectField label="material" options={options(materialNames)} {...field('material')} />
-      <NumberField
-        label="whole waves beyond its retardance"
-        help="The order of a multi-order plate; 0 for any other."
-        {...field('order')}
-        required
-      />
+      {isMultiOrder && (
+        <NumberField
+          label="whole waves beyond its retardance"
+          help="The order that its maker states, at the wavelength it was made for."
+          {...field('order')}
+          required
+        />
+      )}
       <TextField label="mount’s name" {...field('mount.name')} required />
       <NumberField
         label="finest step of its dial, degrees"

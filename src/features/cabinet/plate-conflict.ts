@@ -15,7 +15,7 @@ const shown = (values: PlateValues): readonly (readonly [field: string, value: s
   ['made for, nm', values.designWavelengthNm],
   ['built as', constructionNames[values.construction] ?? values.construction],
   ['material', materialNames[values.material] ?? values.material],
-  ['whole waves', values.order],
+  ['whole waves', values.construction === 'multi-order' ? values.order : '0'],
   ['mount', values.mount.name],
   ['numbers rise', values.mount.direction === '1' ? 'counter-clockwise' : 'clockwise'],
   ['finest step, degrees', values.mount.resolutionDeg],

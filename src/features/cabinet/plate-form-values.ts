@@ -133,7 +133,8 @@ export function readPlate(values: PlateValues) {
     designWavelengthNm: readTypedNumber(values.designWavelengthNm),
     construction: values.construction,
     material: values.material === '' ? null : values.material,
-    order: readTypedNumber(values.order),
+    // The field is hidden for every other plate, whatever was written in it before.
+    order: values.construction === 'multi-order' ? readTypedNumber(values.order) : 0,
     note: values.note,
     mount: {
       name: values.mount.name,

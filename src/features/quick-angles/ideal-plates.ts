@@ -24,6 +24,8 @@ function exactBench(inputExpression: string, kinds: readonly ('half' | 'quarter'
 
 function exactPlate(retardanceDeg: number): SolvingPlate {
   return {
+    kind: 'other',
+    designWavelengthNm: idealWavelengthNm,
     construction: 'unknown',
     material: null,
     order: 0,

@@ -71,6 +71,23 @@ describe('a plate that is edited', () => {
     });
   });
 
+  it('has whole waves only where it is multi-order, and then at least one', () => {
+    const values = valuesOfPlate(plateFixture());
+    const read = (construction: string, order: string) =>
+      updatePlateSchema.safeParse(readPlate({ ...values, construction, order }));
+    // Written, then built as another: the field is hidden and counts for nothing.
+    expect(read('compound-zero-order', '7').data?.order).toBe(0);
+    expect(read('multi-order', '7').data?.order).toBe(7);
+    const faultsOf = ({ error }: ReturnType<typeof read>) =>
+      error?.issues.map(({ path, message }) => `${path.join('.')}: ${message}`) ?? [];
+    expect(faultsOf(read('multi-order', '0'))).toEqual([
+      'order: A multi-order plate has at least one whole wave. Write the order that its maker states, or choose another construction.',
+    ]);
+    expect(faultsOf(updatePlateSchema.safeParse({ ...readPlate(values), order: 3 }))).toEqual([
+      'order: Only a multi-order plate has whole waves. Write 0, or say that it is multi-order.',
+    ]);
+  });
+
   it('says which of the two readings of a range is missing, and takes neither as a full ring', () => {
     const { mount, ...values } = valuesOfPlate(plateFixture());
     const ranged = (rangeFromDeg: string, rangeToDeg: string) =>

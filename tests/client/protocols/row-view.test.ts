@@ -17,6 +17,8 @@ import {
 } from '../../../src/features/protocols/designer/row-view';
 
 const plate = (retardanceDeg: number): SolvingPlate => ({
+  kind: 'other',
+  designWavelengthNm: 810,
   construction: 'compound-zero-order',
   material: 'quartz',
   order: 0,

@@ -13,6 +13,8 @@ const mount = {
   approach: 'rising',
 } as const;
 const plate = {
+  kind: 'other',
+  designWavelengthNm: 810,
   construction: 'compound-zero-order',
   material: 'quartz',
   order: 0,

@@ -13,6 +13,8 @@ import { useSolvedRows } from '../../../src/features/protocols/use-solved-rows';
 import type { RowAnswer, SolverAnswer, SolverJob } from '../../../src/workers/solver-messages';
 
 const plate = {
+  kind: 'other',
+  designWavelengthNm: 810,
   construction: 'compound-zero-order',
   material: 'quartz',
   order: 0,
