@@ -29,12 +29,15 @@ export function noteSchema(maxLength: number, name: string) {
     .regex(manyLines, `The ${name} holds a character that cannot be printed. Take it out.`);
 }
 
+/** As a sentence writes it, with the true minus. */
+const bound = (value: number): string => String(value).replaceAll('-', '\u2212');
+
 /**
  * A finite number in an interval, said in words when it is outside. `example` is a value as a person would write it,
  * for whoever wrote no number; a bound is a poor example, so there is none by default.
  */
 export function numberSchema(name: string, min: number, max: number, unit: string, example?: string) {
-  const range = `${name} is from ${min} to ${max}${unit}.`;
+  const range = `${name} is from ${bound(min)} to ${bound(max)}${unit}.`;
   const like = example === undefined ? '' : `, like ${example}`;
   return z.number(`${name} is a number${like}.`).min(min, range).max(max, range);
 }

@@ -24,10 +24,10 @@ import {
   type BenchValues,
   classOptions,
   emptyBench,
+  eyewearWavelengths,
   type FieldBinding,
   readBench,
   readLaserClass,
-  readWavelengths,
   valuesOfBench,
 } from './bench-form-values';
 import { benchWarnings } from './bench-warnings';
@@ -92,7 +92,7 @@ export function BenchForm(props: {
   );
   const warnings = benchWarnings(chosen, { wavelengthNm, temperatureC }, bench?.id ?? null);
   const theirs = benchConflict(conflictingState(saving.error));
-  const hazards = readWavelengths(values.hazardWavelengthsNm ?? '').filter(Number.isFinite);
+  const hazards = eyewearWavelengths(values.hazardWavelengthsNm ?? '');
   return (
     <form
       noValidate
@@ -140,6 +140,7 @@ export function BenchForm(props: {
         />
         <PlateOrder
           plates={plates}
+          benchId={bench?.id ?? null}
           control={control}
           register={register}
           fault={formState.errors.plates?.message ?? formState.errors.plates?.root?.message}

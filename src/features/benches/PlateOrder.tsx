@@ -11,21 +11,25 @@ import type { BenchValues } from './bench-form-values';
 const gap = '\u00a0';
 
 /** What a list says of a plate: enough to pick the right one of two alike. */
-function plateChoice(plate: Plate): string {
+function plateChoice(plate: Plate, benchId: string | null): string {
   const { retardanceDeg, wavelengthNm } = plate.calibration;
-  return `${plate.name}, ${kindNames[plate.kind]}, ${retardanceDeg}° at ${wavelengthNm}${gap}nm`;
+  const others = plate.benches.filter(({ id }) => id !== benchId).map(({ name }) => name);
+  const stands = others.length === 0 ? '' : `, stands in ${others.join(' and ')}`;
+  return `${plate.name}, ${kindNames[plate.kind]}, ${retardanceDeg}° at ${wavelengthNm}${gap}nm${stands}`;
 }
 
 /** The places in the beam, one to six, each with its plate; moved, added and taken out by buttons, without a drag. */
 export function PlateOrder(props: {
   readonly plates: readonly Plate[];
+  /** The bench that is edited, whose own plates are no one else's; null for a new one. */
+  readonly benchId: string | null;
   readonly control: Control<BenchValues, unknown, CreateBench>;
   readonly register: UseFormRegister<BenchValues>;
   readonly fault: string | undefined;
 }) {
-  const { plates, control, register, fault } = props;
+  const { plates, benchId, control, register, fault } = props;
   const { fields, append, move, remove } = useFieldArray({ control, name: 'plates' });
-  const options = plates.map((plate) => ({ value: plate.id, label: plateChoice(plate) }));
+  const options = plates.map((plate) => ({ value: plate.id, label: plateChoice(plate, benchId) }));
   return (
     <fieldset className="space-y-4">
       <legend className="text-section">Plates in beam order</legend>

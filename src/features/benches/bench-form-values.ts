@@ -1,6 +1,6 @@
 import type { UseFormRegisterReturn } from 'react-hook-form';
 import type { Bench, CreateBench, LaserClass } from '../../../shared/schemas/benches';
-import { laserClasses } from '../../../shared/schemas/benches';
+import { createBenchSchema, laserClasses } from '../../../shared/schemas/benches';
 import { readOptionalNumber, readTypedNumber, typedFromNumber, typedFromOptional } from '../../lib/forms';
 
 /** A registered field with the sentence that says what is wrong with it. */
@@ -66,6 +66,12 @@ export function readWavelengths(text: string): readonly number[] {
     .split(/[\s,;]+/)
     .filter((part) => part !== '' && part !== 'and')
     .map(readTypedNumber);
+}
+
+/** Those of the typed wavelengths that a bench would be saved with: eyewear for any other is not to be spoken of. */
+export function eyewearWavelengths(text: string): readonly number[] {
+  const { element } = createBenchSchema.shape.hazardWavelengthsNm;
+  return readWavelengths(text).filter((wavelengthNm) => element.safeParse(wavelengthNm).success);
 }
 
 /** What the request's schema is held against. Places where no plate is chosen are left out. */

@@ -1,4 +1,5 @@
 import { usedRetardance } from '../../../shared/protocol/solving-plates';
+import { createBenchSchema } from '../../../shared/schemas/benches';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { elsewhereSentence, usedElsewhere } from './elsewhere-words';
 
@@ -8,11 +9,16 @@ export function benchWarnings(
   bench: { readonly wavelengthNm: number; readonly temperatureC: number | null },
   benchId: string | null,
 ): readonly string[] {
-  return plates.flatMap((plate) => {
+  const { shape } = createBenchSchema;
+  // Of a wavelength or a temperature that the form refuses nothing follows.
+  const knowsLight = shape.wavelengthNm.safeParse(bench.wavelengthNm).success;
+  const { data: temperatureC = null } = shape.temperatureC.safeParse(bench.temperatureC);
+  const here = { wavelengthNm: bench.wavelengthNm, temperatureC };
+  return [...new Set(plates)].flatMap((plate) => {
     const warnings: string[] = [];
-    const used = bench.wavelengthNm > 0 ? usedRetardance(plate, bench) : null;
-    if (used !== null && usedElsewhere(plate, used, bench)) {
-      warnings.push(elsewhereSentence(plate, used, bench));
+    const used = knowsLight ? usedRetardance(plate, here) : null;
+    if (used !== null && usedElsewhere(plate, used, here)) {
+      warnings.push(elsewhereSentence(plate, used, here));
     }
     const others = plate.benches.filter(({ id }) => id !== benchId).map(({ name }) => name);
     if (others.length > 0) {

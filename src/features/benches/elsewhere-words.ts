@@ -1,5 +1,5 @@
 import type { UsedRetardance } from '../../../shared/optics/dispersion';
-import { formatChange } from '../../lib/format';
+import { formatChange, withTrueMinus } from '../../lib/format';
 
 const gap = '\u202f';
 
@@ -38,7 +38,9 @@ export function usedElsewhere({ calibration }: CalibratedPlate, used: Used, here
 /** "810 nm", or "810 nm and 21 °C" where that is what differs. */
 function place({ wavelengthNm, temperatureC }: Here, withTemperature: boolean): string {
   const wavelength = `${wavelengthNm}${gap}nm`;
-  return withTemperature && temperatureC !== null ? `${wavelength} and ${temperatureC}${gap}°C` : wavelength;
+  return withTemperature && temperatureC !== null
+    ? `${wavelength} and ${withTrueMinus(String(temperatureC))}${gap}°C`
+    : wavelength;
 }
 
 /** Where a plate was calibrated, what it is taken to retard at this bench, and why. */

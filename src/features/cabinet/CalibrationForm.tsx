@@ -1,8 +1,9 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useForm } from 'react-hook-form';
+import { useForm, useWatch } from 'react-hook-form';
 import type { CalibrationInput, Plate } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
 import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
+import { calibrationDoubts } from './calibration-doubts';
 import { CalibrationFields } from './CalibrationFields';
 import {
   calibrationFormSchema,
@@ -22,7 +23,7 @@ export function CalibrationForm(props: {
   const { labId, plate, now, onDone } = props;
   const queryClient = useQueryClient();
   const keyFor = useIdempotencyKey();
-  const { register, formState, handleSubmit, setError } = useForm<
+  const { register, control, formState, handleSubmit, setError } = useForm<
     CalibrationValues,
     unknown,
     CalibrationInput
@@ -43,6 +44,7 @@ export function CalibrationForm(props: {
         recording.reset();
     },
   });
+  const typed = useWatch({ control });
   const relying = plate.benches.map(({ name }) => name).join(' and ');
   return (
     <form
@@ -50,7 +52,10 @@ export function CalibrationForm(props: {
       onSubmit={(event) => void handleSubmit((body) => recording.mutate(body))(event)}
       className="space-y-4"
     >
-      <CalibrationFields field={(name) => ({ ...register(name), fault: formState.errors[name]?.message })} />
+      <CalibrationFields
+        field={(name) => ({ ...register(name), fault: formState.errors[name]?.message })}
+        doubts={calibrationDoubts(typed, plate.calibration)}
+      />
       <p className="text-s text-ink-2">
         It cannot be changed afterwards; a correction is another one.
         {relying === ''

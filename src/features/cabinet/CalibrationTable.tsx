@@ -1,6 +1,7 @@
 import type { Calibration } from '../../../shared/schemas/cabinet';
 import { DataCell, DataRow, DataTable, HeadCell, RowHead } from '../../components/DataTable';
-import { formatMoment, formatUncertain } from '../../lib/format';
+import { formatMoment, formatUncertain, withTrueMinus } from '../../lib/format';
+import { Quantity } from '../../components/NumberText';
 import { OnPoint, widestFraction } from './OnPoint';
 
 const retardance = (calibration: Calibration) =>
@@ -48,6 +49,11 @@ export function CalibrationTable(props: {
               </DataCell>
               <DataCell numeric className="align-top! py-2">
                 {calibration.wavelengthNm}
+                {calibration.temperatureC !== null && (
+                  <span className="text-s text-ink-2 block">
+                    <Quantity text={withTrueMinus(String(calibration.temperatureC))} unit="°C" />
+                  </span>
+                )}
               </DataCell>
             </DataRow>
           ))}

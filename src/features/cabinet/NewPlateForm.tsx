@@ -4,6 +4,7 @@ import type { z } from 'zod';
 import { type CreatePlate, createPlateSchema, type Plate } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
 import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
+import { calibrationDoubts } from './calibration-doubts';
 import { CalibrationFields } from './CalibrationFields';
 import {
   calibrationFormSchema,
@@ -60,6 +61,7 @@ export function NewPlateForm(props: {
   });
   const direction = useWatch({ control, name: 'mount.direction' });
   const construction = useWatch({ control, name: 'construction' });
+  const calibration = useWatch({ control, name: 'calibration' });
   const creating = useMutation({
     mutationFn: (body: CreatePlate) => createPlate(labId, body, keyFor(body)),
     onSuccess: async (plate) => {
@@ -91,6 +93,7 @@ export function NewPlateForm(props: {
               ...register(`calibration.${name}`),
               fault: errors.calibration?.[name]?.message,
             })}
+            doubts={calibrationDoubts(calibration, null)}
           />
         </fieldset>
       </div>

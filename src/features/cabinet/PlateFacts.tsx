@@ -2,7 +2,7 @@ import type { ReactNode } from 'react';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { Quantity } from '../../components/NumberText';
 import { RingDial } from '../../components/RingDial';
-import { formatDate, formatDial, formatUncertain } from '../../lib/format';
+import { formatDate, formatDial, formatUncertain, withTrueMinus } from '../../lib/format';
 import { type CalibrationAge, calibrationAge } from './calibration-age';
 import { builtWords, directionWords, kindNames, motionWords } from './plate-words';
 
@@ -63,6 +63,12 @@ export function PlateFacts(props: { readonly plate: Plate; readonly dueDays: num
             {formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}°
           </span>{' '}
           at <Quantity text={String(calibration.wavelengthNm)} unit="nm" />
+          {calibration.temperatureC !== null && (
+            <>
+              {' '}
+              and <Quantity text={withTrueMinus(String(calibration.temperatureC))} unit="°C" />
+            </>
+          )}
         </Fact>
         <Fact name="plate">
           made for <Quantity text={String(plate.designWavelengthNm)} unit="nm" />

@@ -1,6 +1,7 @@
 import { fastAxisFromDial } from '../../../shared/optics/dial';
 import { degrees } from '../../../shared/optics/units';
 import type { Plate } from '../../../shared/schemas/cabinet';
+import { withTrueMinus } from '../../lib/format';
 
 /** Between a number and its unit in plain text. */
 const gap = '\u202f';
@@ -62,7 +63,7 @@ export function builtWords({ construction, material, order }: Plate): string {
 export function motionWords({ speedDegPerS, rangeDeg, backlashDeg, approach }: Plate['mount']): string {
   const parts = [
     speedDegPerS === null ? null : `${speedDegPerS}°/s`,
-    rangeDeg === null ? null : `reaches ${rangeDeg.from}° to ${rangeDeg.to}°`,
+    rangeDeg === null ? null : withTrueMinus(`reaches ${rangeDeg.from}° to ${rangeDeg.to}°`),
     backlashDeg === 0 ? null : `backlash ${backlashDeg}°`,
     approach === 'either' ? null : `approached ${approachNames[approach] ?? ''}`,
   ];

@@ -50,7 +50,7 @@ export function Comparison({ written, source }: { readonly written: Compared; re
       </div>
       <p className="text-s text-ink-2 mt-2 max-w-[60rem]">
         {kind === 'state'
-          ? 'ψ is the azimuth of the long axis, χ the ellipticity with the sign that the convention gives S3. Bloch x, y, z are those of the Jones vector as written, H at +z. '
+          ? 'ψ is the azimuth of the long axis, χ the ellipticity with the sign that the convention gives S3. Bloch x, y, z are those of the light as the Jones vector is written, H at +z. '
           : 'The matrix stands with determinant 1; a phase of the whole changes no light. '}
         Read, from memory or filled in: how well each flag of a set is known; the sources stand below.
       </p>

@@ -14,7 +14,7 @@ export function degreeSentence(stokes: Stokes): string | null {
   const degree = stokesLength(stokes);
   if (degree < UNPOLARISED) return 'Its degree of polarisation is 0.';
   if (degree > 1 - FULLY_POLARISED_WITHIN) return null;
-  return `Its degree of polarisation is ${degree.toFixed(3)}; field, ellipse and Jones vector are those of its polarised part.`;
+  return `Its degree of polarisation is ${degree.toFixed(3)}; field, ellipse, hand and Jones vector are those of its polarised part, brought to length 1; Stokes and Bloch vectors are those of the whole, and as long as this degree.`;
 }
 
 /** The light itself, before anyone names it: which way its field goes, drawn against time and in numbers. */

@@ -12,12 +12,19 @@ import type { Clash, Elimination, Evidence, JudgedSet } from './which-convention
 
 type Judged = Extract<Elimination, { kind: 'judged' }>;
 
-/** What would settle each flag. */
-const asks: Record<Flag, string> = {
-  phase: 'a Jones vector with a hand and which way its field turns',
-  handedness: 'which way a light turns and what they call it',
-  s3Sign: 'what they call a light and the sign of its S3',
-};
+/** Facts of one light, in the order in which they are asked for, each with the flags that it helps to settle. */
+const asks: readonly { readonly words: string; readonly of: readonly Flag[] }[] = [
+  { words: 'its Jones vector as they write it', of: ['phase'] },
+  { words: 'which way it turns for the receiver', of: ['phase', 'handedness'] },
+  { words: 'what they call it', of: ['handedness', 's3Sign'] },
+  { words: 'the sign of its S3', of: ['s3Sign'] },
+];
+
+/** "Ask of one light that turns: what they call it and the sign of its S3." Each fact once, however many flags it is for. */
+function askSentence(open: readonly Flag[]): string {
+  const facts = asks.filter((ask) => ask.of.some((flag) => open.includes(flag)));
+  return `Ask of one light that turns: ${listWords(facts.map(({ words }) => words))}.`;
+}
 
 /** How many sets fit, what is certain by now, and what would settle the rest. */
 export function eliminationSentences({ remaining, settled, sets }: Judged): readonly string[] {
@@ -40,9 +47,7 @@ export function eliminationSentences({ remaining, settled, sets }: Judged): read
   const asked =
     open.length === 0
       ? []
-      : [
-          `Still open: ${listWords(open.map((flag) => flagNames[flag]))}. Ask for ${listWords(open.map((flag) => asks[flag]))}.`,
-        ];
+      : [`Still open: ${listWords(open.map((flag) => flagNames[flag]))}. ${askSentence(open)}`];
   return [head, ...certain, ...asked];
 }
 

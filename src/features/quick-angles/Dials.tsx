@@ -26,7 +26,7 @@ function PlateSetting(props: {
   const dial = formatDial(dialDeg, mount.resolutionDeg);
   const theta = formatTheta(fastAxisDeg);
   return (
-    <div className="flex min-w-0 flex-col items-center">
+    <div className="row-span-4 grid min-w-0 grid-rows-subgrid justify-items-center pb-4 text-center">
       <RingDial
         radius={70}
         kind={named.kind}
@@ -34,10 +34,8 @@ function PlateSetting(props: {
         readingDeg={dialDeg}
         className="max-w-full"
       />
-      <p className="flex flex-wrap items-baseline justify-center gap-x-3">
-        <span className="font-strong">{named.name}</span>
-        <span className="text-dial-large font-mono">{ideal ? `${theta}°` : dial}</span>
-      </p>
+      <p className="font-strong max-w-full [overflow-wrap:anywhere]">{named.name}</p>
+      <p className="text-dial-large font-mono">{ideal ? `${theta}°` : dial}</p>
       <p className="text-ink-2">
         {ideal ? (
           'its fast axis on the table'
@@ -66,7 +64,8 @@ export function Dials(props: {
   const others = solved.solutions.length - 1;
   return (
     <>
-      <div className="mt-4 grid grid-cols-[repeat(auto-fit,minmax(min(9.5rem,100%),1fr))] gap-4">
+      {/* Name, value and θ of every ring are rows of this one grid, however many lines a name takes. */}
+      <div className="mt-4 grid grid-cols-[repeat(auto-fit,minmax(min(9.5rem,100%),1fr))] gap-x-4">
         {plates.map((named, k) => (
           <PlateSetting
             key={`${named.name} ${k}`}

@@ -3,9 +3,9 @@ import { useDeferredValue, useMemo, useState } from 'react';
 import { useSearchParams } from 'react-router-dom';
 import { type Convention, CONVENTION_SETS, DEFAULT_CONVENTION } from '../../../shared/optics';
 import type { Bench } from '../../../shared/schemas/benches';
+import { ExpressionField } from '../../components/ExpressionField';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { SelectField } from '../../components/SelectField';
-import { TextField } from '../../components/TextField';
 import { benchesQuery } from '../benches';
 import { flagWords } from '../conventions';
 import { labQuery } from '../labs';
@@ -186,17 +186,12 @@ export function Component() {
             onChange={setQuestion}
             segments={questions}
           />
-          <TextField
+          <ExpressionField
             label={question === 'apply' ? 'unitary' : 'state'}
-            mono
-            autoCapitalize="off"
-            autoCorrect="off"
-            spellCheck={false}
-            autoComplete="off"
             value={expression}
-            onChange={(event) => setTyped({ ...typed, [question]: event.target.value })}
+            onChange={(value) => setTyped({ ...typed, [question]: value })}
             help={helpWords[question]}
-            fault={empty || read.ok ? undefined : `Column ${read.error.column}: ${read.error.message}`}
+            fault={empty || read.ok ? undefined : read.error}
           />
           {reading?.kind === 'state' && <StateRead reading={reading} convention={convention} />}
           {reading?.kind === 'unitary' && (

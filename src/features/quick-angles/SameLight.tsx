@@ -31,11 +31,11 @@ export function SameLight({ jones, source, own }: SameLightProps) {
               key={row.id}
               className={
                 row.id === 'own'
-                  ? 'border-hair bg-glass border-b [&>th]:border-l-[6px] [&>th]:border-lit [&>th]:pl-2'
-                  : 'border-hair border-b'
+                  ? 'border-hair bg-glass border-b [&>th]:border-lit'
+                  : 'border-hair border-b [&>th]:border-l-transparent'
               }
             >
-              <th scope="row" className="py-2 pr-3 font-words">
+              <th scope="row" className="border-l-[6px] py-2 pr-3 pl-2 font-words">
                 <span className="font-strong">{row.name}</span>
                 <span className="text-s text-ink-2 block">{row.flags}</span>
               </th>

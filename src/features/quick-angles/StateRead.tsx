@@ -28,7 +28,9 @@ export function shortLatex(jones: JonesVector, convention: Convention): string {
   const head = `${a.toFixed(3)}\\,|H\\rangle`;
   if (shown === '0.0' || shown === '-0.0') return `${head} + ${b.toFixed(3)}\\,|V\\rangle`;
   if (shown === '180.0' || shown === '-180.0') return `${head} - ${b.toFixed(3)}\\,|V\\rangle`;
-  return `${head} + ${b.toFixed(3)}\\,e^{i\\,${shown}^{\\circ}}|V\\rangle`;
+  // e^{−i 90°}, as one says it: the sign stands before the i.
+  const sign = shown.startsWith('-') ? '-' : '';
+  return `${head} + ${b.toFixed(3)}\\,e^{${sign}i\\,${shown.replace('-', '')}^{\\circ}}|V\\rangle`;
 }
 
 /** A written state as it was read: its short form, its ellipse, and which way the field turns. */

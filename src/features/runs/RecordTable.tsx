@@ -14,13 +14,20 @@ interface RecordTableProps {
   readonly content: VersionContent;
 }
 
+/** From so many plates on what was dialled stands under what was wanted. */
+const manyPlates = 3;
 const head = 'py-2 pr-5 text-start align-bottom font-words';
 
 /** One row per setting: what was wanted, what was dialled, and what the frozen plates make of that. */
 export function RecordTable({ run, content }: RecordTableProps) {
   const newest = newestReadings(run.readings, content.targets.length);
   return (
-    <div className="mt-6 overflow-x-auto" role="region" aria-label="Readings" tabIndex={0}>
+    <div
+      className="relative mt-6 overflow-x-auto"
+      role="region"
+      aria-label="Readings, scrolls sideways"
+      tabIndex={0}
+    >
       <table className="w-full border-t-[1.5px] border-ink">
         <thead className="sticky top-0 bg-paper">
           <tr className="text-s text-ink-2">
@@ -28,7 +35,7 @@ export function RecordTable({ run, content }: RecordTableProps) {
               setting
             </th>
             <th scope="col" className={head}>
-              state
+              {content.kind === 'apply' ? 'unitary' : 'state'}
             </th>
             {content.bench.plates.map(({ id, name }) => (
               <th key={id} scope="col" className={`${head} text-end`}>
@@ -73,6 +80,7 @@ interface RecordRowProps {
 
 function RecordRow({ content, index, reading, replaced }: RecordRowProps) {
   const target = content.targets[index];
+  const many = content.bench.plates.length >= manyPlates;
   if (target === undefined) return null;
   const wanted = wantedDials(content, index);
   const dialled = reading?.outcome === 'done' ? reading.dialledDeg : null;
@@ -80,7 +88,7 @@ function RecordRow({ content, index, reading, replaced }: RecordRowProps) {
   return (
     <tr className="border-t border-hair align-top">
       <td className="py-2 pr-5 font-mono text-ink-3">{index + 1}</td>
-      <th scope="row" className="py-2 pr-5 text-start font-words">
+      <th scope="row" className="py-2 pr-5 text-start font-words [&_.whitespace-nowrap]:whitespace-normal">
         <b>{target.label}</b>{' '}
         <WrittenFormula expression={target.expression} kind={content.kind} convention={content.convention} />
       </th>
@@ -89,7 +97,7 @@ function RecordRow({ content, index, reading, replaced }: RecordRowProps) {
         const dialledDeg = dialled?.[plate];
         return (
           <td key={id} className="py-2 pr-5 text-end font-mono whitespace-nowrap">
-            <span className="text-ink-2">
+            <span className={many ? 'block text-ink-2' : 'text-ink-2'}>
               {wantedDeg === undefined ? missingSign : dialText(wantedDeg, mount.resolutionDeg)}
             </span>{' '}
             <b className="text-dial">

@@ -9,9 +9,15 @@ import { HeldSign } from '../../components/SmallSigns';
 import { WrittenFormula } from '../../components/WrittenFormula';
 import { formatDial, formatTheta } from '../../lib/format';
 
+/** From so many plates on θ stands under its dial, or four of them would not fit a page of 1440 px. */
+const manyPlates = 3;
+const cell = 'py-1 pr-5';
+const head = `h-8 ${cell} align-bottom font-words`;
+
 /** Every target as it was frozen: the dials are those that a run dials. */
 export function FrozenTargets({ content }: { readonly content: VersionContent }) {
   const { plates } = content.bench;
+  const many = plates.length >= manyPlates;
   return (
     <div
       className="relative overflow-x-auto"
@@ -22,34 +28,34 @@ export function FrozenTargets({ content }: { readonly content: VersionContent })
       <table className="w-full border-collapse">
         <thead>
           <tr className="border-b border-ink text-left text-s text-ink-2">
-            <th scope="col" className="h-8 w-8">
+            <th scope="col" className={`w-8 ${head}`}>
               <span className="sr-only">row</span>
             </th>
-            <th scope="col" className="w-16 font-words">
+            <th scope="col" className={head}>
               label
             </th>
-            <th scope="col" className="font-words">
+            <th scope="col" className={head}>
               {content.kind === 'prepare' ? 'target, after the plates' : 'unitary, of all the plates'}
             </th>
             {plates.map(({ id, name }) => (
-              <th key={id} scope="col" className="text-right font-words whitespace-nowrap">
+              <th key={id} scope="col" className={`text-right ${head} ${many ? '' : 'whitespace-nowrap'}`}>
                 <b className="text-ink">{name}</b> dial, θ
               </th>
             ))}
-            <th scope="col" className="pl-8 font-words">
+            <th scope="col" className={`pl-3 ${head}`}>
               expected 1 − F
             </th>
-            <th scope="col" className="text-right font-words">
+            <th scope="col" className={`text-right ${head}`}>
               as dialled, 1 − F
             </th>
-            <th scope="col" className="text-right font-words">
+            <th scope="col" className="h-8 py-1 text-right align-bottom font-words">
               solution
             </th>
           </tr>
         </thead>
         <tbody>
           {content.targets.map((target, place) => (
-            <FrozenRow key={target.id} {...{ target, place, content }} />
+            <FrozenRow key={target.id} {...{ target, place, content, many }} />
           ))}
         </tbody>
       </table>
@@ -61,18 +67,19 @@ interface FrozenRowProps {
   readonly target: FrozenTarget;
   readonly place: number;
   readonly content: VersionContent;
+  readonly many: boolean;
 }
 
-function FrozenRow({ target, place, content }: FrozenRowProps) {
+function FrozenRow({ target, place, content, many }: FrozenRowProps) {
   const solution = target.solutions[target.chosenSolution];
   const count = target.solutions.length;
   return (
     <tr className="h-[39px] border-b border-hair">
-      <td className="font-mono text-s text-ink-3">{place + 1}</td>
-      <th scope="row" className="text-left font-strong">
+      <td className={`font-mono text-s text-ink-3 ${cell}`}>{place + 1}</td>
+      <th scope="row" className={`text-left font-strong ${cell}`}>
         {target.label}
       </th>
-      <td>
+      <td className={`${cell} [&_.whitespace-nowrap]:whitespace-normal`}>
         <WrittenFormula expression={target.expression} kind={content.kind} convention={content.convention} />
         {target.reach === 'nearest' && (
           <span className="ml-3 text-s text-ink-2">
@@ -81,18 +88,20 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
         )}
       </td>
       {content.bench.plates.map((plate, index) => (
-        <td key={plate.id} className="text-right whitespace-nowrap">
+        <td key={plate.id} className={`text-right whitespace-nowrap ${cell}`}>
           <span className="font-mono text-dial">
             {formatDial(solution?.dialsDeg[index] ?? 0, plate.mount.resolutionDeg)}
           </span>
-          <span className="inline-block min-w-15 pl-2 text-right font-mono text-xs text-ink-2">
+          <span
+            className={`text-right font-mono text-xs text-ink-2 ${many ? 'block' : 'inline-block min-w-15 pl-2'}`}
+          >
             {formatTheta(fastAxisFromDial(degrees(solution?.dialsDeg[index] ?? 0), dialScaleOf(plate)))}
           </span>
         </td>
       ))}
-      <td className="pl-8 whitespace-nowrap">
+      <td className={`pl-3 whitespace-nowrap ${cell}`}>
         {solution !== undefined && (
-          <span className="inline-flex items-center gap-3">
+          <span className={`gap-x-3 ${many ? 'flex flex-wrap items-center' : 'inline-flex items-center'}`}>
             <FidelityChip
               infidelity={{
                 value: solution.expectedInfidelity,
@@ -101,16 +110,17 @@ function FrozenRow({ target, place, content }: FrozenRowProps) {
               }}
               tolerance={content.toleranceInfidelity}
               kind="predicted"
+              width={many ? 140 : 196}
             />
             <Scientific value={solution.expectedInfidelity} />
             <PredictedVerdict solution={solution} toleranceInfidelity={content.toleranceInfidelity} />
           </span>
         )}
       </td>
-      <td className="text-right whitespace-nowrap">
+      <td className={`text-right whitespace-nowrap ${cell}`}>
         {solution !== undefined && <Scientific value={solution.dialledInfidelity} />}
       </td>
-      <td className="text-right font-mono text-s whitespace-nowrap">
+      <td className="py-1 text-right font-mono text-s whitespace-nowrap">
         {target.held && <HeldSign />}{' '}
         {target.reach === 'nearest' && count === 1 ? 'closest' : `${target.chosenSolution + 1} of ${count}`}
       </td>

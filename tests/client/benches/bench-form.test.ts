@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { createBenchSchema } from '../../../shared/schemas/benches';
-import { emptyBench, readBench } from '../../../src/features/benches/bench-form-values';
+import { emptyBench, eyewearWavelengths, readBench } from '../../../src/features/benches/bench-form-values';
 import { benchWarnings } from '../../../src/features/benches/bench-warnings';
 import { inputFault } from '../../../src/features/benches/InputReading';
 import { plateFixture } from '../cabinet/plate-fixture';
@@ -58,6 +58,11 @@ describe('a bench as it is typed', () => {
     expect(faults({ hazardWavelengthsNm: '405, red' })[0]?.[0]).toBe('hazardWavelengthsNm.1');
   });
 
+  it('names eyewear for no wavelength that the bench would be refused with', () => {
+    expect(eyewearWavelengths('405, red, 810, 149, 99999, -5')).toEqual([405, 810]);
+    expect(eyewearWavelengths('150 and 20000 nm')).toEqual([150, 20_000]);
+  });
+
   it('says at which column an input state stops making sense', () => {
     const convention = { phase: 'kz-wt', handedness: 'receiver', s3Sign: 'L' } as const;
     expect(inputFault('H', convention)).toBeNull();
@@ -83,6 +88,19 @@ describe('what a person should know before plates stand in a bench', () => {
     expect(benchWarnings([unknown], { wavelengthNm: 780, temperatureC: null }, null)).toEqual([
       'Q-B was calibrated at 810\u202fnm, and this bench runs at 780\u202fnm. How it follows that is not known, so its 88.9° are used as measured: calibrate it at 780\u202fnm.',
     ]);
+  });
+
+  it('says each sentence once of a plate that is chosen twice', () => {
+    const plate = plateFixture();
+    const bench = { wavelengthNm: 780, temperatureC: null };
+    expect(benchWarnings([plate, plate], bench, null)).toEqual(benchWarnings([plate], bench, null));
+  });
+
+  it('says nothing of calibrations at a wavelength that the bench would be refused with', () => {
+    const plate = plateFixture({ benches: [] });
+    for (const wavelengthNm of [8.1, 81_000, Number.NaN]) {
+      expect(benchWarnings([plate], { wavelengthNm, temperatureC: null }, null)).toEqual([]);
+    }
   });
 
   it('is silent about the bench itself at its own wavelength', () => {

@@ -139,6 +139,13 @@ describe('which convention a colleague can be using', () => {
     expect(found.sets.some(({ fits }) => fits)).toBe(false);
   });
 
+  it('asks for each fact once, however many flags it would settle', () => {
+    const asked = eliminationSentences(judged({ source: '[1, i]', rotation: 'counter-clockwise' })).at(-1);
+    expect(asked).toMatch(
+      /Ask of one light that turns: which way it turns for the receiver, what they call it and the sign of its S3\.$/u,
+    );
+  });
+
   it('concludes nothing from one fact, from linear light, or from what cannot be read', () => {
     expect(whichConvention({ ...nothingKnown, letter: 'L' }).kind).toBe('nothing');
     expect(whichConvention({ ...nothingKnown, source: '[1, i]' }).kind).toBe('nothing');

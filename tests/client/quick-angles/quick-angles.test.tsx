@@ -4,11 +4,12 @@ import { act, cleanup, render, screen, waitFor } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { MemoryRouter } from 'react-router-dom';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
-import { DEFAULT_CONVENTION } from '../../../shared/optics';
+import { DEFAULT_CONVENTION, parseState } from '../../../shared/optics';
 import type { SolvingBench } from '../../../shared/protocol/solve-row';
 import type { Bench } from '../../../shared/schemas/benches';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { quickSettings } from '../../../src/features/quick-angles/quick-settings';
+import { shortLatex } from '../../../src/features/quick-angles/StateRead';
 import { Component as QuickAnglesPage } from '../../../src/features/quick-angles/QuickAnglesPage';
 import type { QuickJob } from '../../../src/features/quick-angles/use-quick-settings';
 import { createQueryClient } from '../../../src/lib/query-client';
@@ -160,6 +161,28 @@ describe('the page of quick angles', () => {
     await user.type(field, 'H + ');
     expect(await screen.findByText(/^Column \d+:/u)).toBeDefined();
     expect(screen.getByText('They stand here as soon as it can be read.')).toBeDefined();
+  });
+
+  it('offers the nearest unitary for a matrix that is none, and takes it', async () => {
+    serve(false);
+    const user = open('H');
+    await user.click(await screen.findByRole('radio', { name: 'be a unitary' }));
+    const field = screen.getByRole('textbox', { name: /^unitary/u });
+    await user.clear(field);
+    await user.click(field);
+    await user.paste('matrix [[1, 0.1], [0, 1]]');
+    await user.click(await screen.findByRole('button', { name: 'Write the nearest unitary' }));
+    expect(screen.queryByText(/^Column \d+:/u)).toBeNull();
+    expect(field).toHaveProperty('value', expect.stringMatching(/^matrix \[\[0\.99/u));
+    expect(await screen.findByText(/A right-handed turn of the sphere/u)).toBeDefined();
+  });
+
+  it('sets a phase below 0 with its sign before the i', () => {
+    const right = parseState('(H - i V)/sqrt(2)', DEFAULT_CONVENTION);
+    if (!right.ok) throw new Error(right.error.message);
+    expect(shortLatex(right.jones, DEFAULT_CONVENTION)).toBe(
+      '0.707\\,|H\\rangle + 0.707\\,e^{-i\\,90.0^{\\circ}}|V\\rangle',
+    );
   });
 
   it('reads the bench’s input in its lab’s convention, whichever one the state is written in', async () => {
