@@ -16,7 +16,8 @@ interface RecordTableProps {
 
 /** From so many plates on what was dialled stands under what was wanted. */
 const manyPlates = 3;
-const head = 'py-2 pr-5 text-start align-bottom font-words';
+const anyHead = 'py-2 pr-5 align-bottom font-words';
+const head = `${anyHead} text-start`;
 
 /** One row per setting: what was wanted, what was dialled, and what the frozen plates make of that. */
 export function RecordTable({ run, content }: RecordTableProps) {
@@ -38,7 +39,7 @@ export function RecordTable({ run, content }: RecordTableProps) {
               {content.kind === 'apply' ? 'unitary' : 'state'}
             </th>
             {content.bench.plates.map(({ id, name }) => (
-              <th key={id} scope="col" className={`${head} text-end`}>
+              <th key={id} scope="col" className={`${anyHead} text-end`}>
                 {name}, wanted and dialled
               </th>
             ))}
