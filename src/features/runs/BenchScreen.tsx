@@ -164,7 +164,12 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
                   {steps.plates.map((step) => {
                     const plate = plates[step.plateIndex];
                     return plate === undefined ? null : (
-                      <PlateStation key={plate.id} {...{ plate, step, shape }} side={bench.entry.side} />
+                      <PlateStation
+                        key={plate.id}
+                        {...{ plate, step, shape }}
+                        side={bench.entry.side}
+                        plateCount={plates.length}
+                      />
                     );
                   })}
                 </ol>

@@ -5,17 +5,20 @@ import { RingDial } from '../../components/RingDial';
 import type { PlateStep } from './bench-steps';
 import { dialText, moveWords, placeWords } from './move-words';
 import { TurnSign } from './TurnSign';
-import { type BenchShape, ringRadii } from './use-bench-shape';
+import { isSmallTurn, SmallTurn } from './SmallTurn';
+import { type BenchShape, ringRadius } from './use-bench-shape';
 
 interface PlateStationProps {
   readonly plate: FrozenPlate;
   readonly step: PlateStep;
   readonly side: ViewedFrom;
   readonly shape: BenchShape;
+  /** How many share the beam: the more, the smaller each is drawn. */
+  readonly plateCount: number;
 }
 
 /** One plate on the beam: its mount, its name, the number it is about, and what to do with it. */
-export function PlateStation({ plate, step, side, shape }: PlateStationProps) {
+export function PlateStation({ plate, step, side, shape, plateCount }: PlateStationProps) {
   const { resolutionDeg } = plate.mount;
   const isNow = step.state === 'now';
   const shown = dialText(
@@ -33,6 +36,10 @@ export function PlateStation({ plate, step, side, shape }: PlateStationProps) {
         : step.move === null
           ? 'standing'
           : 'to-turn';
+  const radius = ringRadius(shape, plateCount, isNow);
+  // Where nobody has said how it stands, the ring is drawn as it looks when it is right.
+  const readingDeg = step.standsDeg ?? step.wantedDeg;
+  const small = drawn === 'to-turn' && isSmallTurn(scale, readingDeg, step.wantedDeg);
   return (
     <li
       className="bench-plate"
@@ -42,15 +49,15 @@ export function PlateStation({ plate, step, side, shape }: PlateStationProps) {
     >
       <div className="bench-ring">
         <RingDial
-          radius={ringRadii[shape][isNow ? 'now' : 'other']}
+          radius={radius}
           kind={plate.kind}
           scale={scale}
-          // Where nobody has said how it stands, the ring is drawn as it looks when it is right.
-          readingDeg={step.standsDeg ?? step.wantedDeg}
-          toDeg={drawn === 'to-turn' ? step.wantedDeg : undefined}
+          readingDeg={readingDeg}
+          toDeg={drawn === 'to-turn' && !small ? step.wantedDeg : undefined}
           state={drawn}
           viewedFrom={side}
         />
+        {small && <SmallTurn {...{ radius, scale, readingDeg }} toDeg={step.wantedDeg} viewedFrom={side} />}
       </div>
       <p className="bench-name">
         {plate.name}

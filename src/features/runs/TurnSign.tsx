@@ -4,8 +4,8 @@ import type { SeenMove } from '../../components/dial-words';
 export function TurnSign({ sense }: { readonly sense: SeenMove['sense'] }) {
   return (
     <svg
-      viewBox="-22 -20 44 40"
-      width="44"
+      viewBox="-20 -20 45 40"
+      width="45"
       height="40"
       aria-hidden="true"
       // Drawn clockwise; the mirror image is the other way round.

@@ -25,9 +25,35 @@ export function useBenchShape(): BenchShape {
   return useSyncExternalStore(subscribe, shapeNow);
 }
 
-/** Of the housings, in px: the one to turn, and the others. */
-export const ringRadii: Readonly<Record<BenchShape, { readonly now: number; readonly other: number }>> = {
-  landscape: { now: 128, other: 95 },
-  portrait: { now: 138, other: 58 },
-  phone: { now: 58, other: 34 },
+interface RingRadii {
+  readonly now: number;
+  readonly other: number;
+}
+
+/** The housings of one to six plates, in px: with its arc, the one to turn stays in its row, and the row in the window. */
+const radii: Readonly<Record<BenchShape, readonly RingRadii[]>> = {
+  landscape: [
+    { now: 124, other: 95 },
+    { now: 124, other: 95 },
+    { now: 118, other: 90 },
+    { now: 114, other: 78 },
+    { now: 110, other: 66 },
+    { now: 106, other: 54 },
+  ],
+  portrait: [
+    { now: 138, other: 58 },
+    { now: 138, other: 58 },
+    { now: 122, other: 46 },
+    { now: 108, other: 36 },
+    { now: 100, other: 30 },
+    { now: 92, other: 26 },
+  ],
+  phone: [{ now: 58, other: 34 }],
 };
+
+/** Of the housing, in px: the plate to turn now has the larger; the more plates there are, the smaller all are. */
+export function ringRadius(shape: BenchShape, plateCount: number, isNow: boolean): number {
+  const row = radii[shape];
+  const { now, other } = row[plateCount - 1] ?? row.at(-1) ?? { now: 58, other: 34 };
+  return isNow ? now : other;
+}
