@@ -4,6 +4,7 @@ import { useParams } from 'react-router-dom';
 import { useLab } from '../labs';
 import { versionQuery } from '../versions';
 import './bench.css';
+import './bench-landscape.css';
 import './bench-narrow.css';
 import './bench-sheets.css';
 import { BenchNotice } from './BenchNotice';
