@@ -88,7 +88,9 @@ describe.each([
     await figure.waitFor();
     await page.locator(`[data-renderer="${webgl ? 'webgl' : 'svg'}"]`).waitFor();
 
-    await page.getByRole('combobox', { name: 'New target' }).pressSequentially('cos(22.5) H + sin(22.5deg) V');
+    await page
+      .getByRole('combobox', { name: 'New target' })
+      .pressSequentially('cos(22.5) H + sin(22.5deg) V');
     await page.getByText('Column 5: 22.5 of what? Write 22.5deg or 22.5rad.').waitFor();
     await page.getByText('Row 6 can’t be read and holds this up.', { exact: true }).waitFor();
     await page.keyboard.press('Home');
