@@ -50,7 +50,7 @@ export function PlateOrder(props: {
               >
                 {place === 0 ? 'Later' : 'Earlier'}
               </Button>
-              <Button onClick={() => remove(place)} aria-label={`Take plate ${place + 1} out of the beam`}>
+              <Button onClick={() => remove(place)} aria-label={`Take out plate ${place + 1}`}>
                 Take out
               </Button>
             </>
