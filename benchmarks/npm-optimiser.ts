@@ -1,17 +1,9 @@
+import { seededStream } from '../shared/optics/uniform-stream';
 import { levenbergMarquardt } from 'ml-levenberg-marquardt';
 import { apply, type ApplyProblem } from '../shared/optics/solver/apply';
 import { unitaryShortfall } from '../shared/optics/goal';
 import { radians, wrap } from '../shared/optics/units';
 import { forwardThree, type Angles } from './three-plates';
-
-/** A repeatable stream of numbers in [0, 1). */
-function stream(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (Math.imul(state, 1664525) + 1013904223) >>> 0;
-    return state / 2 ** 32;
-  };
-}
 
 const EXACT = 1e-12;
 const MOST_STARTS = 400;
@@ -23,7 +15,7 @@ const MOST_STARTS = 400;
 export function npmOptimiser(problem: ApplyProblem): { readonly wanted: number; readonly found: number } {
   const wanted = apply(problem).solutions.map(({ fastAxesRad }) => fastAxesRad);
   const left = new Set(wanted);
-  const random = stream(11);
+  const random = seededStream(11);
   for (let start = 0; start < MOST_STARTS && left.size > 0; start += 1) {
     const end = fit(problem, [Math.PI * random(), Math.PI * random(), Math.PI * random()], random() < 0.5);
     if (end === null) continue;

@@ -1,3 +1,4 @@
+import { seededStream } from '../shared/optics/uniform-stream';
 import { spawnSync } from 'node:child_process';
 import path from 'node:path';
 import { z } from 'zod';
@@ -12,15 +13,6 @@ export const MOST_FORWARD_EVALUATIONS = 60;
 export const LEAST_SCIPY_FACTOR = 1000;
 
 export type Angles = readonly [Radians, Radians, Radians];
-
-/** A repeatable stream of numbers in [0, 1). */
-function stream(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (Math.imul(state, 1664525) + 1013904223) >>> 0;
-    return state / 2 ** 32;
-  };
-}
 
 const DEGREE = Math.PI / 180;
 
@@ -38,7 +30,7 @@ function unitary(random: () => number): Quaternion {
 
 /** Random unitaries with two quarter- and one half-wave plate, the three orders in turn; calibrated ones are off by up to 2°. */
 export function threePlateProblems(count: number, plates: 'ideal' | 'calibrated'): readonly ApplyProblem[] {
-  const random = stream(plates === 'ideal' ? 5 : 6);
+  const random = seededStream(plates === 'ideal' ? 5 : 6);
   const off = (): number => (plates === 'ideal' ? 0 : 4 * random() - 2);
   return Array.from({ length: count }, (_, k) => {
     const target = unitary(random);
@@ -68,7 +60,7 @@ export function solveThree(list: readonly ApplyProblem[]): number {
 
 /** All settings by least squares from many starts, the way it is done without an elimination. Returns their number. */
 export function multiStartThree(problem: ApplyProblem, starts: number): number {
-  const random = stream(9);
+  const random = seededStream(9);
   const found: Angles[] = [];
   for (let start = 0; start < starts; start += 1) {
     const angle = (): Radians => radians(Math.PI * random());

@@ -1,16 +1,8 @@
+import { seededStream } from '../shared/optics/uniform-stream';
 import { prepare, type PrepareProblem } from '../shared/optics/solver/prepare';
 import { retardStokes } from '../shared/optics/retarder';
 import type { Stokes } from '../shared/optics/stokes';
 import { radians, type Radians } from '../shared/optics/units';
-
-/** A repeatable stream of numbers in [0, 1). */
-function stream(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (Math.imul(state, 1664525) + 1013904223) >>> 0;
-    return state / 2 ** 32;
-  };
-}
 
 const DEGREE = Math.PI / 180;
 
@@ -20,7 +12,7 @@ export interface TwoPlateProblem extends PrepareProblem {
 }
 
 export function problems(count: number): readonly TwoPlateProblem[] {
-  const random = stream(5);
+  const random = seededStream(5);
   return Array.from({ length: count }, () => {
     const s3 = 1.9 * random() - 0.95;
     const azimuth = 2 * Math.PI * random();
@@ -46,7 +38,7 @@ export function forward(
 
 /** All settings by least squares from many starts, the way it is done without an elimination. Returns their number. */
 export function multiStart(problem: TwoPlateProblem, starts: number): number {
-  const random = stream(9);
+  const random = seededStream(9);
   const found: (readonly [number, number])[] = [];
   for (let start = 0; start < starts; start += 1) {
     const end = leastSquares(problem, Math.PI * random(), Math.PI * random());

@@ -1,6 +1,7 @@
 import { type BudgetProblem, checkBudgetProblem, type UncertainPlate } from './budget-problem';
 import { sincos, sincosInto } from './elementary';
-import { checkSeed, NormalStream, splitmixWords, UniformStream } from './normal-stream';
+import { NormalStream } from './normal-stream';
+import { checkSeed, splitmixWords, UniformStream } from './uniform-stream';
 
 const BLOCK = 256;
 /** Up to here the series below are good to the last bit. */

@@ -2,7 +2,7 @@ import { type Convention, shownS3Sign } from './convention';
 import { sincos } from './elementary';
 import { ellipseOf } from './ellipse';
 import { type ExpressionProblem, formatState, formatUnitary, parseState } from './expression';
-import { seededStream } from './seeded-stream';
+import { seededStream } from './uniform-stream';
 import { normaliseStokes, type Stokes, stokesToJones } from './stokes';
 
 /** A row of a table of targets: what a person calls it and what it is, in the lab's convention. */
@@ -163,7 +163,6 @@ export function haarUnitaries({ count, seed }: Drawn, convention: Convention): r
 
 function drawer({ count, seed }: Drawn): () => number {
   checkCount(count, 1);
-  if (!Number.isSafeInteger(seed) || seed < 0) throw new RangeError('a seed is a whole number from 0');
   return seededStream(seed);
 }
 

@@ -12,9 +12,13 @@ interface RingTurnProps {
   readonly indexAt: number;
 }
 
+/** Below this there is no room for an arc and its head between the wanted mark and the index. */
+const roomDeg = 19;
+
 /**
- * A round bead on the wanted mark and an arc from it to the index with one arrowhead. The bead is round so that only one end
- * looks like an arrow. The sweep is the same number that the words are made of.
+ * A round bead on the wanted mark and an arc with one arrowhead, from the bead to the index. The bead is round so that only one
+ * end looks like an arrow. A small turn is drawn as a narrow gap is dimensioned: the arrow comes from outside and pushes the
+ * bead towards the index. The sweep is the same number that the words are made of.
  */
 export function RingTurn({ radius, scale, readingDeg, toDeg, viewedFrom, indexAt }: RingTurnProps) {
   const { turnDeg } = seenMove(readingDeg, toDeg, scale.direction, viewedFrom);
@@ -24,17 +28,20 @@ export function RingTurn({ radius, scale, readingDeg, toDeg, viewedFrom, indexAt
   const orbit = radius * 1.19;
   const beadRadius = Math.max(3.4, radius * 0.06);
   const head = Math.max(7, radius * 0.12);
-  // The arc stops short of the index by the head's length, at most by half its own.
-  const headDeg = Math.min((head / orbit) * (180 / Math.PI), Math.abs(turnDeg) / 2);
+  const inDegrees = (px: number): number => (px / orbit) * (180 / Math.PI);
   const sign = Math.sign(turnDeg);
-  const gapDeg = Math.min((beadRadius / orbit) * (180 / Math.PI), Math.abs(turnDeg) / 2);
-  const tipAt = bead + turnDeg - sign * Math.min(3, Math.abs(turnDeg) / 8);
-  const sweep = tipAt - sign * headDeg - (bead + sign * gapDeg);
+  const headDeg = inDegrees(head);
+  const small = Math.abs(turnDeg) < roomDeg;
+  // Where the arrow's tip stands, and the arc behind its head.
+  const tipAt = small ? bead - sign * inDegrees(beadRadius + width * 1.5) : bead + turnDeg - sign * 3;
+  const from = small ? tipAt - sign * (headDeg + 15) : bead + sign * inDegrees(beadRadius);
+  const sweep = small ? sign * 15.5 : tipAt - sign * headDeg - from;
+  const [beadX, beadY] = polar(orbit, bead);
   return (
     <g fill="none" className="stroke-beam" strokeWidth={width} data-sweep={turnDeg}>
       <path d={radial(radius * 0.85, orbit - beadRadius, bead)} />
-      {Math.abs(sweep) > 0.2 && <path d={arc(orbit, bead + sign * gapDeg, sweep)} />}
-      <circle cx={polar(orbit, bead)[0]} cy={polar(orbit, bead)[1]} r={beadRadius} className="fill-paper" />
+      {sweep * sign > 0.2 && <path d={arc(orbit, from, sweep)} />}
+      <circle cx={beadX} cy={beadY} r={beadRadius} className="fill-paper" />
       <path
         d={arrowhead(polar(orbit, tipAt), tipAt + sign * (90 - headDeg / 2), head, head)}
         className="fill-beam"

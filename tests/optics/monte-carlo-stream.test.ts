@@ -1,6 +1,7 @@
 import { erf } from 'mathjs';
 import { expect, test } from 'vitest';
-import { NormalStream, splitmixWords, UniformStream } from '../../shared/optics/normal-stream';
+import { NormalStream } from '../../shared/optics/normal-stream';
+import { splitmixWords, UniformStream } from '../../shared/optics/uniform-stream';
 
 // Outputs of the authors' C code as many ports print them.
 test('the generator and its seeding give the published outputs', () => {

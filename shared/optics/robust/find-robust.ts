@@ -1,6 +1,6 @@
 import type { Goal } from '../goal';
 import type { Retarder } from '../retarder';
-import { seededStream } from '../seeded-stream';
+import { seededStream } from '../uniform-stream';
 import { type Radians, radians, wrap } from '../units';
 import { conditionsFor } from './conditions';
 import { descendFrom, type Found, isOneOfFamily } from './descend';
@@ -72,7 +72,8 @@ const DEFAULT_LIMIT = 24;
 /**
  * Composite settings that stand a common error of all plates: seeded starts, Levenberg–Marquardt with exact derivatives
  * over all angles. Other starts may find others; nothing says that the list is complete.
- * @throws RangeError for a number of plates other than two to six, slopes that don't match, or a width that isn't above 0.
+ * @throws RangeError for a number of plates other than two to six, slopes that don't match, a width that isn't above 0, or a seed
+ * that isn't a whole number from 0.
  */
 export function findRobust(problem: RobustProblem): RobustResult {
   const steps = findRobustSteps(problem);

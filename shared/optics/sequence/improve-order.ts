@@ -1,4 +1,4 @@
-import { seededStream } from '../seeded-stream';
+import { seededStream } from '../uniform-stream';
 import { cheapestWay, finish, type Way } from './cheapest-way';
 import type { Stations } from './move-cost';
 import type { Course } from './stations';

@@ -5,7 +5,6 @@ import { RingDial } from '../../components/RingDial';
 import type { PlateStep } from './bench-steps';
 import { dialText, moveWords, placeWords } from './move-words';
 import { TurnSign } from './TurnSign';
-import { isSmallTurn, SmallTurn } from './SmallTurn';
 import { type BenchShape, ringRadius } from './use-bench-shape';
 
 interface PlateStationProps {
@@ -39,7 +38,6 @@ export function PlateStation({ plate, step, side, shape, plateCount }: PlateStat
   const radius = ringRadius(shape, plateCount, isNow);
   // Where nobody has said how it stands, the ring is drawn as it looks when it is right.
   const readingDeg = step.standsDeg ?? step.wantedDeg;
-  const small = drawn === 'to-turn' && isSmallTurn(scale, readingDeg, step.wantedDeg);
   return (
     <li
       className="bench-plate"
@@ -53,11 +51,10 @@ export function PlateStation({ plate, step, side, shape, plateCount }: PlateStat
           kind={plate.kind}
           scale={scale}
           readingDeg={readingDeg}
-          toDeg={drawn === 'to-turn' && !small ? step.wantedDeg : undefined}
+          toDeg={drawn === 'to-turn' ? step.wantedDeg : undefined}
           state={drawn}
           viewedFrom={side}
         />
-        {small && <SmallTurn {...{ radius, scale, readingDeg }} toDeg={step.wantedDeg} viewedFrom={side} />}
       </div>
       <p className="bench-name">
         {plate.name}

@@ -10,6 +10,7 @@ import { SectionHead } from '../../components/SectionHead';
 import { TextButton, TextLink } from '../../components/TextLink';
 import { VersionSeal } from '../../components/VersionSeal';
 import { formatMoment, formatShortDate } from '../../lib/format';
+import { saveFile } from '../../lib/save-file';
 import { useTitle } from '../../lib/use-title';
 import { useLab } from '../labs';
 import { FrozenPlates } from './FrozenPlates';
@@ -129,12 +130,7 @@ function SaveCanonical({ version }: { readonly version: Version }) {
   const { summary, content, canonicalJson } = version;
   const save = () => {
     try {
-      const address = URL.createObjectURL(new Blob([canonicalJson], { type: 'application/json' }));
-      const link = document.createElement('a');
-      link.href = address;
-      link.download = `${content.protocol.name} ${summary.number}.json`;
-      link.click();
-      URL.revokeObjectURL(address);
+      saveFile(`${content.protocol.name} ${summary.number}.json`, canonicalJson, 'application/json');
     } catch {
       setFault('This browser keeps no file. Copy the page instead.');
     }

@@ -3,6 +3,7 @@ import type { Convention } from '../../../../shared/optics/convention';
 import { writeTargetCsv } from '../../../../shared/protocol/target-csv';
 import type { DraftContent } from '../../../../shared/schemas/protocols';
 import { TextButton } from '../../../components/TextLink';
+import { saveFile } from '../../../lib/save-file';
 
 interface SaveRowsProps {
   readonly content: DraftContent;
@@ -14,13 +15,7 @@ export function SaveRows({ content, convention }: SaveRowsProps) {
   const [fault, setFault] = useState<string | null>(null);
   const save = () => {
     try {
-      const text = writeTargetCsv(content.targets, convention);
-      const address = URL.createObjectURL(new Blob([text], { type: 'text/csv;charset=utf-8' }));
-      const link = document.createElement('a');
-      link.href = address;
-      link.download = `${content.name} rows.csv`;
-      link.click();
-      URL.revokeObjectURL(address);
+      saveFile(`${content.name} rows.csv`, writeTargetCsv(content.targets, convention), 'text/csv');
     } catch {
       setFault('This browser keeps no file.');
     }
