@@ -8,55 +8,18 @@ import {
   heldIndex,
   whyUnplanned,
 } from '../../shared/protocol/choose-solutions';
-import {
-  benchProblem,
-  rowGoal,
-  solveRow,
-  type SolvingBench,
-  type SolvingTask,
-} from '../../shared/protocol/solve-row';
+import { benchProblem, rowGoal, solveRow, type SolvingTask } from '../../shared/protocol/solve-row';
 import type { SolvingPlate } from '../../shared/protocol/solving-plates';
+import { solvingBench, solvingPlate, solvingTask } from '../support/plates';
 
-const plate = (
-  retardanceDeg: number,
-  offsetDeg: number,
-  mount: Partial<SolvingPlate['mount']> = {},
-): SolvingPlate => ({
-  kind: 'other',
-  designWavelengthNm: 810,
-  construction: 'compound-zero-order',
-  material: 'quartz',
-  order: 0,
-  mount: {
-    direction: 1,
-    resolutionDeg: 0.1,
-    repeatabilityDeg: 0.05,
-    rangeDeg: null,
-    speedDegPerS: null,
-    backlashDeg: 0,
-    approach: 'either',
-    ...mount,
-  },
-  calibration: {
-    wavelengthNm: 810,
-    temperatureC: null,
-    retardanceDeg,
-    retardanceSigmaDeg: 0.3,
-    offsetDeg,
-    offsetSigmaDeg: 0.05,
-  },
-});
+const plate = (retardanceDeg: number, offsetDeg: number, mount: Partial<SolvingPlate['mount']> = {}) =>
+  solvingPlate({ mount, calibration: { retardanceDeg, offsetDeg } });
 
-const bench: SolvingBench = {
-  wavelengthNm: 810,
+const bench = solvingBench({
   wavelengthSigmaNm: 0.2,
-  temperatureC: null,
-  temperatureSigmaK: 0,
-  inputExpression: 'H',
-  polariserSigmaDeg: 0.05,
   polariserExtinction: 1e-5,
   plates: [plate(179.2, 12.4), plate(88.9, 301.7)],
-};
+});
 
 const expressions = ['bloch(70deg, 20deg)', 'bloch(110deg, 200deg)', 'D', 'bloch(40deg, 300deg)', 'A'];
 
@@ -66,11 +29,11 @@ function chosen(
   plates: readonly SolvingPlate[] = bench.plates,
   texts: readonly string[] = expressions,
 ) {
-  const read = benchProblem({ ...bench, plates }, DEFAULT_CONVENTION, {
-    kind: 'prepare',
-    objective,
-    presentDialsDeg: plates.map(() => 100),
-  });
+  const read = benchProblem(
+    { ...bench, plates },
+    DEFAULT_CONVENTION,
+    solvingTask({ objective, presentDialsDeg: plates.map(() => 100) }),
+  );
   if (!read.ok) throw new Error(read.error.message);
   const rows = texts.map((expression, place) => {
     const heldFastAxesDeg = held[place] ?? null;

@@ -1,37 +1,19 @@
 import { expect, test } from 'vitest';
 import { modelRetardance, retardanceAt } from '../../shared/optics/dispersion';
 import { type SolvingPlate, usedRetardance } from '../../shared/protocol/solving-plates';
-
-const mount = {
-  direction: 1,
-  resolutionDeg: 0.1,
-  repeatabilityDeg: 0.05,
-  rangeDeg: null,
-  speedDegPerS: null,
-  backlashDeg: 0,
-  approach: 'either',
-} as const;
+import { type PlateChange, solvingPlate } from '../support/plates';
 
 /** A quartz half-wave plate of the tenth order for 810 nm, calibrated where it says. */
-function plate(wavelengthNm: number, change: Partial<SolvingPlate> = {}): SolvingPlate {
+function plate(wavelengthNm: number, change: PlateChange<SolvingPlate> = {}): SolvingPlate {
   const made = { construction: 'multi-order', material: 'quartz', order: 10 } as const;
   const model = modelRetardance(made, 810, 180, { wavelengthNm, temperatureC: 20 });
   if (!model.ok) throw new Error(model.reason);
-  return {
+  return solvingPlate({
     ...made,
     kind: 'half',
-    designWavelengthNm: 810,
-    mount,
-    calibration: {
-      wavelengthNm,
-      temperatureC: 20,
-      retardanceDeg: model.retardanceDeg,
-      retardanceSigmaDeg: 0.3,
-      offsetDeg: 0,
-      offsetSigmaDeg: 0.05,
-    },
+    calibration: { wavelengthNm, temperatureC: 20, retardanceDeg: model.retardanceDeg, offsetDeg: 0 },
     ...change,
-  };
+  });
 }
 
 test('a plate that is measured orders away from where its maker states the order still comes back to its design', () => {

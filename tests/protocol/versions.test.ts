@@ -6,55 +6,20 @@ import { dialledInfidelity } from '../../shared/protocol/dialled';
 import { freeze, type FreezeInput } from '../../shared/protocol/freeze';
 import { verifyChain } from '../../shared/protocol/verify';
 import { DEFAULT_CONVENTION } from '../../shared/optics/convention';
-import { type Plate, versionContentSchema } from '../../shared/schemas';
+import { versionContentSchema } from '../../shared/schemas';
+import { bench, draft, idsFrom, plate as anyPlate, target } from '../support/plates';
 
-const id = (last: number) => `00000000-0000-7000-8000-${String(last).padStart(12, '0')}`;
+const id = idsFrom('00000000');
 
-function plate(
-  last: number,
-  name: string,
-  retardanceDeg: number,
-  offsetDeg: number,
-  direction: 1 | -1,
-): Plate {
-  return {
+const plate = (last: number, name: string, retardanceDeg: number, offsetDeg: number, direction: 1 | -1) =>
+  anyPlate({
     id: id(last),
     name,
     kind: retardanceDeg > 120 ? 'half' : 'quarter',
     designWavelengthNm: 808,
-    construction: 'compound-zero-order',
-    material: 'quartz',
-    order: 0,
-    note: '',
-    mount: {
-      name: `M ${name}`,
-      direction,
-      resolutionDeg: 0.1,
-      repeatabilityDeg: 0.06,
-      rangeDeg: null,
-      speedDegPerS: null,
-      backlashDeg: 0,
-      approach: 'either',
-    },
-    seatedAt: '2026-01-01T00:00:00.000Z',
-    calibration: {
-      id: id(last + 100),
-      wavelengthNm: 810,
-      temperatureC: null,
-      retardanceDeg,
-      retardanceSigmaDeg: 0.3,
-      offsetDeg,
-      offsetSigmaDeg: 0.05,
-      method: 'Turned between crossed polarisers',
-      note: '',
-      measuredAt: '2026-01-01T00:00:00.000Z',
-      recordedBy: 'Someone',
-    },
-    retiredAt: null,
-    benches: [],
-    revision: 1,
-  };
-}
+    mount: { name: `M ${name}`, direction, repeatabilityDeg: 0.06 },
+    calibration: { id: id(last + 100), retardanceDeg, offsetDeg },
+  });
 
 function input(
   change: Partial<FreezeInput> = {},
@@ -63,37 +28,17 @@ function input(
   return {
     lab: { id: id(1), name: 'A lab', convention: DEFAULT_CONVENTION },
     protocolId: id(2),
-    draft: {
-      name: 'A protocol',
-      purpose: '',
+    draft: draft({
       benchId: id(3),
-      kind: 'prepare',
-      objective: 'least-expected-infidelity',
-      presentDialsDeg: null,
-      toleranceInfidelity: 1e-3,
-      targets: expressions.map((expression, index) => ({
-        id: id(10 + index),
-        label: `t${index + 1}`,
-        expression,
-        heldFastAxesDeg: null,
-      })),
-    },
-    bench: {
+      targets: expressions.map((expression, index) =>
+        target({ id: id(10 + index), label: `t${index + 1}`, expression }),
+      ),
+    }),
+    bench: bench({
       id: id(3),
-      name: 'signal arm',
-      wavelengthNm: 810,
-      wavelengthSigmaNm: 0,
-      temperatureC: null,
-      temperatureSigmaK: 0,
-      inputExpression: 'H',
-      polariserSigmaDeg: 0.05,
-      polariserExtinction: null,
-      laserClass: '3B',
       hazardWavelengthsNm: [405, 810],
       plates: [plate(20, 'H-3', 179.2, 12.4, 1), plate(21, 'Q-B', 86.9, 301.73, -1)],
-      retiredAt: null,
-      revision: 1,
-    },
+    }),
     number: 1,
     parentHash: null,
     message: 'First.',

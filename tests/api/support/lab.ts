@@ -18,84 +18,43 @@ import {
 } from '../../../shared/schemas';
 import { chooseSolutions, chosenSolution } from '../../../shared/protocol/choose-solutions';
 import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
+import { draft, LIGHT, newPlate, type PlateChange, target as anyTarget } from '../../support/plates';
 import { answered, call } from './calls';
 import type { Agent } from './harness';
 
 /** Where our own page would be: all that a call needs to know of the server. */
 type Us = Parameters<typeof call>[0];
 
-export function plateBody(name: string, change: Partial<CreatePlate> = {}): CreatePlate {
-  return {
+export function plateBody(name: string, change: PlateChange<CreatePlate> = {}): CreatePlate {
+  const { mount, calibration, ...other } = change;
+  return newPlate({
     name,
-    kind: 'half',
     designWavelengthNm: 808,
-    construction: 'compound-zero-order',
-    material: 'quartz',
-    order: 0,
-    note: '',
-    mount: {
-      name: `M ${name}`,
-      direction: 1,
-      resolutionDeg: 0.1,
-      repeatabilityDeg: 0.06,
-      rangeDeg: null,
-      speedDegPerS: null,
-      backlashDeg: 0,
-      approach: 'either',
-    },
-    calibration: {
-      wavelengthNm: 810,
-      temperatureC: null,
-      retardanceDeg: 179.2,
-      retardanceSigmaDeg: 0.3,
-      offsetDeg: 12.4,
-      offsetSigmaDeg: 0.05,
-      method: 'Turned between crossed polarisers',
-      note: '',
-      measuredAt: '2026-06-01T10:00:00Z',
-    },
-    ...change,
-  };
+    mount: { name: `M ${name}`, repeatabilityDeg: 0.06, ...mount },
+    calibration: { measuredAt: '2026-06-01T10:00:00Z', ...calibration },
+    ...other,
+  });
 }
 
 export const quarterBody = (name: string): CreatePlate =>
   plateBody(name, {
     kind: 'quarter',
-    mount: {
-      name: `M ${name}`,
-      direction: -1,
-      resolutionDeg: 0.1,
-      repeatabilityDeg: 0.06,
-      rangeDeg: null,
-      speedDegPerS: null,
-      backlashDeg: 0,
-      approach: 'either',
-    },
-    calibration: { ...plateBody(name).calibration, retardanceDeg: 86.9, offsetDeg: 301.73 },
+    mount: { direction: -1 },
+    calibration: { retardanceDeg: 86.9, offsetDeg: 301.73 },
   });
 
 export function benchBody(plateIds: readonly string[], name = 'signal arm') {
   return {
     name,
-    wavelengthNm: 810,
-    wavelengthSigmaNm: 0,
-    temperatureC: null,
-    temperatureSigmaK: 0,
-    inputExpression: 'H',
-    polariserSigmaDeg: 0.05,
-    polariserExtinction: null,
+    ...LIGHT,
     laserClass: '3B' as const,
     hazardWavelengthsNm: [405, 810],
     plateIds: [...plateIds],
   };
 }
 
-export const target = (label: string, expression: string): DraftContent['targets'][number] => ({
-  id: randomUUID(),
-  label,
-  expression,
-  heldFastAxesDeg: null,
-});
+export const target = (label: string, expression: string): DraftContent['targets'][number] =>
+  anyTarget({ id: randomUUID(), label, expression });
 
 /** A lab with something of everything, made through the API. */
 export interface TestLab {
@@ -120,16 +79,11 @@ export async function makeLab(harness: Us, lead: Agent, name: string): Promise<T
   const bench = await post(`/labs/${labId}/benches`, benchBody([first.id, second.id]), benchSchema);
   const protocol = await post(
     `/labs/${labId}/protocols`,
-    {
+    draft({
       name: 'Two states',
-      purpose: '',
-      kind: 'prepare',
       benchId: bench.id,
-      objective: 'least-expected-infidelity',
-      presentDialsDeg: null,
-      toleranceInfidelity: 1e-3,
       targets: [target('t1', 'H'), target('t2', '(H + i V)/sqrt(2)')],
-    },
+    }),
     protocolSchema,
   );
   const version = await saveVersion(harness, lead, labId, protocol);

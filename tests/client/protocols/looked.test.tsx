@@ -5,51 +5,23 @@ import { DEFAULT_CONVENTION } from '../../../shared/optics/convention';
 import { chooseSolution } from '../../../shared/protocol/choose-solutions';
 import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
 import type { Bench } from '../../../shared/schemas/benches';
-import type { DraftContent } from '../../../shared/schemas/protocols';
 import { viewOf } from '../../../src/features/protocols/designer/row-view';
 import { useLooked } from '../../../src/features/protocols/designer/use-looked';
+import { bench as anyBench, draft, idsFrom, target as anyTarget } from '../../support/plates';
 import { plateFixture } from '../cabinet/plate-fixture';
 
 afterEach(cleanup);
 
-const id = (last: number) => `0193a000-0000-7000-8000-${String(last).padStart(12, '0')}`;
-const plate = (last: number, retardanceDeg: number) => {
-  const fixture = plateFixture({ id: id(last), name: `P-${last}` });
-  return { ...fixture, calibration: { ...fixture.calibration, retardanceDeg } };
-};
-
-function bench(last: number, plates: Bench['plates']): Bench {
-  return {
-    id: id(last),
-    name: `bench ${last}`,
-    wavelengthNm: 810,
-    wavelengthSigmaNm: 0,
-    temperatureC: null,
-    temperatureSigmaK: 0,
-    inputExpression: 'H',
-    polariserSigmaDeg: 0.05,
-    polariserExtinction: null,
-    laserClass: '2',
-    hazardWavelengthsNm: [810],
-    plates,
-    retiredAt: null,
-    revision: 1,
-  };
-}
+const id = idsFrom('0193a000');
+const plate = (last: number, retardanceDeg: number) =>
+  plateFixture({ id: id(last), name: `P-${last}`, calibration: { retardanceDeg } });
+const bench = (last: number, plates: Bench['plates']) =>
+  anyBench({ id: id(last), name: `bench ${last}`, laserClass: '2', plates });
 
 const two = bench(7, [plate(1, 179.2), plate(2, 88.9)]);
 const three = bench(8, [plate(3, 89.8), plate(4, 179.6), plate(5, 92.3)]);
-const target = { id: id(20), label: 't0', expression: 'bloch(70deg, 30deg)', heldFastAxesDeg: null };
-const content: DraftContent = {
-  name: 'A protocol',
-  purpose: '',
-  kind: 'prepare',
-  benchId: two.id,
-  objective: 'least-expected-infidelity',
-  presentDialsDeg: null,
-  toleranceInfidelity: 1e-3,
-  targets: [target],
-};
+const target = anyTarget({ id: id(20), label: 't0', expression: 'bloch(70deg, 30deg)' });
+const content = draft({ benchId: two.id, targets: [target] });
 
 function solvedOn(solvedBench: Bench) {
   const read = benchProblem(solvedBench, DEFAULT_CONVENTION, content);

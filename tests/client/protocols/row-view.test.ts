@@ -1,13 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { DEFAULT_CONVENTION } from '../../../shared/optics/convention';
 import { chooseSolution } from '../../../shared/protocol/choose-solutions';
-import {
-  benchProblem,
-  solveRow,
-  type SolvingBench,
-  type SolvingTask,
-} from '../../../shared/protocol/solve-row';
-import type { SolvingPlate } from '../../../shared/protocol/solving-plates';
+import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
 import type { DraftTarget } from '../../../shared/schemas/protocols';
 import {
   type RowView,
@@ -15,49 +9,14 @@ import {
   viewOf,
   whatHoldsUp,
 } from '../../../src/features/protocols/designer/row-view';
+import { idsFrom, solvingBench, solvingTask, target as anyTarget } from '../../support/plates';
 
-const plate = (retardanceDeg: number): SolvingPlate => ({
-  kind: 'other',
-  designWavelengthNm: 810,
-  construction: 'compound-zero-order',
-  material: 'quartz',
-  order: 0,
-  mount: {
-    direction: 1,
-    resolutionDeg: 0.1,
-    repeatabilityDeg: 0.05,
-    rangeDeg: null,
-    speedDegPerS: null,
-    backlashDeg: 0,
-    approach: 'either',
-  },
-  calibration: {
-    wavelengthNm: 810,
-    temperatureC: null,
-    retardanceDeg,
-    retardanceSigmaDeg: 0.3,
-    offsetDeg: 12.4,
-    offsetSigmaDeg: 0.05,
-  },
-});
-const task: SolvingTask = {
-  kind: 'prepare',
-  objective: 'least-expected-infidelity',
-  presentDialsDeg: null,
-};
-const bench: SolvingBench = {
-  wavelengthNm: 810,
-  wavelengthSigmaNm: 0,
-  temperatureC: null,
-  temperatureSigmaK: 0,
-  inputExpression: 'H',
-  polariserSigmaDeg: 0.05,
-  polariserExtinction: null,
-  plates: [plate(179.2), plate(88.9)],
-};
+const id = idsFrom('0193a000');
+const task = solvingTask();
+const bench = solvingBench();
 
 function target(label: string, expression: string, heldFastAxesDeg: number[] | null = null): DraftTarget {
-  return { id: `0193a000-0000-7000-8000-00000000000${label.length}`, label, expression, heldFastAxesDeg };
+  return anyTarget({ id: id(label.length), label, expression, heldFastAxesDeg });
 }
 
 function solvedView(row: DraftTarget): RowView {

@@ -1,44 +1,16 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { DEFAULT_CONVENTION } from '../../../shared/optics/convention';
-import type { SolvingBench } from '../../../shared/protocol/solve-row';
 import type { SolverAnswer, SolverJob } from '../../../src/workers/solver-messages';
+import { solvingBench, solvingPlate, solvingTask } from '../../support/plates';
 
-const mount = {
-  direction: 1,
-  resolutionDeg: 0.1,
-  repeatabilityDeg: 0.05,
-  rangeDeg: { from: 0, to: 180 },
-  speedDegPerS: null,
-  backlashDeg: 175,
-  approach: 'rising',
-} as const;
-const plate = {
-  kind: 'other',
-  designWavelengthNm: 810,
-  construction: 'compound-zero-order',
-  material: 'quartz',
-  order: 0,
-  mount,
-  calibration: {
-    wavelengthNm: 810,
-    temperatureC: null,
-    retardanceDeg: 179.2,
-    retardanceSigmaDeg: 0.3,
-    offsetDeg: 12.4,
-    offsetSigmaDeg: 0.05,
-  },
-} as const;
-const ring = { ...plate, mount: { ...mount, rangeDeg: null, backlashDeg: 0 } };
-const bench: SolvingBench = {
-  wavelengthNm: 810,
-  wavelengthSigmaNm: 0,
-  temperatureC: null,
-  temperatureSigmaK: 0,
-  inputExpression: 'H',
-  polariserSigmaDeg: 0.05,
-  polariserExtinction: null,
-  plates: [ring, { ...ring, calibration: { ...plate.calibration, retardanceDeg: 88.9 } }],
-};
+/** Its mount stops, and its play leaves it less than half a turn. */
+const stiff = solvingPlate({
+  mount: { rangeDeg: { from: 0, to: 180 }, backlashDeg: 175, approach: 'rising' },
+});
+const ring = solvingPlate({ mount: { approach: 'rising' } });
+const bench = solvingBench({
+  plates: [ring, solvingPlate({ mount: { approach: 'rising' }, calibration: { retardanceDeg: 88.9 } })],
+});
 
 const answers: SolverAnswer[] = [];
 beforeEach(async () => {
@@ -57,7 +29,7 @@ async function ask(change: Partial<SolverJob>): Promise<readonly SolverAnswer[]>
     job,
     bench,
     convention: DEFAULT_CONVENTION,
-    task: { kind: 'prepare', objective: 'least-travel', presentDialsDeg: null },
+    task: solvingTask({ objective: 'least-travel' }),
     rows: ['D', 'nonsense', 'bloch(70deg, 20deg)'].map((expression) => ({
       expression,
       heldFastAxesDeg: null,
@@ -80,7 +52,7 @@ describe('the solver beside the page', () => {
   });
 
   it('sends why there is no plan, by the place among the rows that were sent', async () => {
-    const narrow = { ...bench, plates: [ring, plate] };
+    const narrow = { ...bench, plates: [ring, stiff] };
     const sent = await ask({ bench: narrow });
     expect(sent.at(-1)).toMatchObject({ kind: 'choices', unplanned: { plate: 1 } });
     const readableFirst = await ask({

@@ -2,56 +2,15 @@ import { act, cleanup, renderHook } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { DEFAULT_CONVENTION } from '../../../shared/optics/convention';
 import { chooseSolution } from '../../../shared/protocol/choose-solutions';
-import {
-  benchProblem,
-  solveRow,
-  type SolvingBench,
-  type SolvingTask,
-} from '../../../shared/protocol/solve-row';
+import { benchProblem, solveRow, type SolvingTask } from '../../../shared/protocol/solve-row';
 import type { DraftTarget } from '../../../shared/schemas/protocols';
 import { useSolvedRows } from '../../../src/features/protocols/use-solved-rows';
 import type { RowAnswer, SolverAnswer, SolverJob } from '../../../src/workers/solver-messages';
+import { solvingBench, solvingTask, target as anyTarget } from '../../support/plates';
 
-const plate = {
-  kind: 'other',
-  designWavelengthNm: 810,
-  construction: 'compound-zero-order',
-  material: 'quartz',
-  order: 0,
-  mount: {
-    direction: 1,
-    resolutionDeg: 0.1,
-    repeatabilityDeg: 0.05,
-    rangeDeg: null,
-    speedDegPerS: null,
-    backlashDeg: 0,
-    approach: 'either',
-  },
-  calibration: {
-    wavelengthNm: 810,
-    temperatureC: null,
-    retardanceDeg: 179.2,
-    retardanceSigmaDeg: 0.3,
-    offsetDeg: 12.4,
-    offsetSigmaDeg: 0.05,
-  },
-} as const;
-const bench: SolvingBench = {
-  wavelengthNm: 810,
-  wavelengthSigmaNm: 0,
-  temperatureC: null,
-  temperatureSigmaK: 0,
-  inputExpression: 'H',
-  polariserSigmaDeg: 0.05,
-  polariserExtinction: null,
-  plates: [plate, { ...plate, calibration: { ...plate.calibration, retardanceDeg: 88.9 } }],
-};
-const ranked: SolvingTask = {
-  kind: 'prepare',
-  objective: 'least-expected-infidelity',
-  presentDialsDeg: null,
-};
-const planned: SolvingTask = { ...ranked, objective: 'least-travel' };
+const bench = solvingBench();
+const ranked = solvingTask();
+const planned = solvingTask({ objective: 'least-travel' });
 
 /** What a page asks of its worker, and a way to answer it. */
 const jobs: SolverJob[] = [];
@@ -87,12 +46,7 @@ function say(answer: SolverAnswer) {
   });
 }
 
-const target = (id: string, expression: string): DraftTarget => ({
-  id,
-  label: id,
-  expression,
-  heldFastAxesDeg: null,
-});
+const target = (id: string, expression: string) => anyTarget({ id, label: id, expression });
 
 function page(targets: readonly DraftTarget[], task: SolvingTask = ranked) {
   const hook = renderHook(

@@ -6,13 +6,13 @@ import { MemoryRouter } from 'react-router-dom';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { DEFAULT_CONVENTION, parseState } from '../../../shared/optics';
 import type { SolvingBench } from '../../../shared/protocol/solve-row';
-import type { Bench } from '../../../shared/schemas/benches';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { quickSettings } from '../../../src/features/quick-angles/quick-settings';
 import { shortLatex } from '../../../src/features/quick-angles/StateRead';
 import { Component as QuickAnglesPage } from '../../../src/features/quick-angles/QuickAnglesPage';
 import type { QuickJob } from '../../../src/features/quick-angles/use-quick-settings';
 import { createQueryClient } from '../../../src/lib/query-client';
+import { bench as anyBench, idsFrom, plate as anyPlate } from '../../support/plates';
 
 /** The worker on this thread; a test may hold it, to look at the page while it works. */
 class NearWorker extends EventTarget {
@@ -60,66 +60,24 @@ afterEach(() => {
   vi.unstubAllGlobals();
 });
 
-const id = (number: number) => `0197c3a0-0000-7000-8000-${String(number).padStart(12, '0')}`;
-const at = '2026-11-01T09:00:00.000Z';
+const id = idsFrom('0197c3a0');
 
-function plate(number: number, name: string, kind: Plate['kind'], retardanceDeg: number): Plate {
-  return {
+const plate = (number: number, name: string, kind: Plate['kind'], retardanceDeg: number) =>
+  anyPlate({
     id: id(number),
     name,
     kind,
-    designWavelengthNm: 810,
-    construction: 'compound-zero-order',
-    material: 'quartz',
-    order: 0,
-    note: '',
-    mount: {
-      name: `M-${number}`,
-      direction: 1,
-      resolutionDeg: 0.1,
-      repeatabilityDeg: 0.02,
-      rangeDeg: null,
-      speedDegPerS: null,
-      backlashDeg: 0,
-      approach: 'either',
-    },
-    seatedAt: at,
-    calibration: {
-      id: id(number + 100),
-      wavelengthNm: 810,
-      temperatureC: null,
-      retardanceDeg,
-      retardanceSigmaDeg: 0.2,
-      offsetDeg: 0,
-      offsetSigmaDeg: 0.05,
-      method: 'scan between crossed polarisers',
-      note: '',
-      measuredAt: at,
-      recordedBy: 'Ines Okafor',
-    },
-    retiredAt: null,
-    benches: [],
-    revision: 1,
-  };
-}
+    mount: { name: `M-${number}`, repeatabilityDeg: 0.02 },
+    calibration: { id: id(number + 100), retardanceDeg, retardanceSigmaDeg: 0.2, offsetDeg: 0 },
+  });
 
-const bench: Bench = {
+const bench = anyBench({
   id: id(7),
   name: 'idler arm',
-  wavelengthNm: 810,
-  wavelengthSigmaNm: 0,
-  temperatureC: null,
-  temperatureSigmaK: 0,
   // An ellipse with a hand, so that who names the hands matters.
   inputExpression: '(2 H + i V)/sqrt(5)',
-  polariserSigmaDeg: 0.05,
-  polariserExtinction: null,
-  laserClass: '3B',
-  hazardWavelengthsNm: [810],
   plates: [plate(1, 'Q-A', 'quarter', 90), plate(2, 'H-A', 'half', 180)],
-  retiredAt: null,
-  revision: 1,
-};
+});
 
 /** A server with one lab and one bench, or with nobody signed in. */
 function serve(signedIn: boolean) {

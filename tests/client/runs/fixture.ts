@@ -3,17 +3,17 @@ import { frozenTarget } from '../../../shared/protocol/freeze';
 import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
 import type { Run } from '../../../shared/schemas/runs';
 import { type FrozenPlate, type Version, versionSchema } from '../../../shared/schemas/versions';
+import { frozenPlate, idsFrom, LIGHT, solvingTask } from '../../support/plates';
 
-/** Ids in the form of UUIDs, one for each small number. */
-export const id = (number: number): string => `0197c3a0-0000-7000-8000-${String(number).padStart(12, '0')}`;
+export const id = idsFrom('0197c3a0');
 
 export const labId = id(1);
 export const runId = id(231);
 export const protocolId = id(14);
 const at = '2026-11-30T09:00:00.000Z';
 
-const surroundings = { wavelengthNm: 810, temperatureC: null } as const;
-const task = { kind: 'prepare', objective: 'least-expected-infidelity', presentDialsDeg: null } as const;
+const task = solvingTask();
+const light = { ...LIGHT, polariserSigmaDeg: 0.1 } as const;
 
 const plate = (
   number: number,
@@ -22,39 +22,20 @@ const plate = (
   retardanceDeg: number,
   offsetDeg: number,
   direction: 1 | -1,
-): FrozenPlate => ({
-  id: id(number),
-  name,
-  kind,
-  designWavelengthNm: 810,
-  construction: 'compound-zero-order',
-  material: 'quartz',
-  order: 0,
-  mount: {
-    name: `M-${number}`,
-    direction,
-    resolutionDeg: 0.1,
-    repeatabilityDeg: 0.05,
-    rangeDeg: null,
-    speedDegPerS: null,
-    backlashDeg: 0,
-    approach: 'either',
-  },
-  calibration: {
-    id: id(number + 100),
-    wavelengthNm: 810,
-    temperatureC: null,
-    retardanceDeg,
-    retardanceSigmaDeg: 0.4,
-    offsetDeg,
-    offsetSigmaDeg: 0.05,
-    method: 'scan between crossed polarisers',
-    note: '',
-    measuredAt: at,
-    recordedBy: 'Ines Okafor',
-  },
-  used: { retardanceDeg, shiftDeg: 0, source: 'calibration', perNmDeg: 0, perKelvinDeg: 0 },
-});
+): FrozenPlate =>
+  frozenPlate({
+    id: id(number),
+    name,
+    kind,
+    mount: { name: `M-${number}`, direction },
+    calibration: {
+      id: id(number + 100),
+      retardanceDeg,
+      retardanceSigmaDeg: 0.4,
+      offsetDeg,
+      measuredAt: at,
+    },
+  });
 
 const convention = { phase: 'kz-wt', handedness: 'receiver', s3Sign: 'R' } as const;
 const rows = [
@@ -67,16 +48,7 @@ const rows = [
 /** A version of two plates and four targets, its dials from the product's own solver. Names are invented. */
 export function makeVersion(repeats = 1): Version {
   const plates = [plate(31, 'H-3', 'half', 179.3, 12.4, 1), plate(32, 'Q-B', 'quarter', 89.2, 301.7, -1)];
-  const bench = {
-    ...surroundings,
-    wavelengthSigmaNm: 0,
-    temperatureSigmaK: 0,
-    inputExpression: 'H',
-    polariserSigmaDeg: 0.1,
-    polariserExtinction: null,
-    plates,
-  };
-  const read = benchProblem(bench, convention, task);
+  const read = benchProblem({ ...light, plates }, convention, task);
   if (!read.ok) throw new Error(read.error.message);
   const targets = Array.from({ length: repeats }).flatMap((_, repeat) =>
     rows.map(([label, expression], index) => {
@@ -114,12 +86,18 @@ export function makeVersion(repeats = 1): Version {
       bench: {
         id: id(7),
         name: 'heralded bench',
-        ...surroundings,
-        wavelengthSigmaNm: 0,
-        temperatureSigmaK: 0,
+        wavelengthNm: light.wavelengthNm,
+        wavelengthSigmaNm: light.wavelengthSigmaNm,
+        temperatureC: light.temperatureC,
+        temperatureSigmaK: light.temperatureSigmaK,
         laserClass: '3B',
         hazardWavelengthsNm: [405, 810],
-        input: { expression: 'H', stokes: [1, 0, 0], polariserSigmaDeg: 0.1, polariserExtinction: null },
+        input: {
+          expression: light.inputExpression,
+          stokes: [1, 0, 0],
+          polariserSigmaDeg: light.polariserSigmaDeg,
+          polariserExtinction: light.polariserExtinction,
+        },
         plates,
       },
       targets,
