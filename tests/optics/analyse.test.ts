@@ -1,16 +1,8 @@
 import { expect, test } from 'vitest';
 import { analyserGoal } from '../../shared/optics/goal';
 import { prepare, radians } from '../../shared/optics';
-import {
-  apply,
-  complex,
-  infidelity,
-  randomState,
-  randomStream,
-  stack,
-  stokesOf,
-  type Vector,
-} from './independent';
+import { apply, complex, randomState, randomStream, stack, stokesOf, type Vector } from './independent';
+import { missed } from './stack-search';
 
 const DEGREE = Math.PI / 180;
 
@@ -25,7 +17,7 @@ function passed(
   fastAxesRad: readonly number[],
   polariser: Vector,
 ): number {
-  return infidelity(opposite(polariser), apply(stack(retardancesRad, fastAxesRad), state));
+  return missed({ input: state, target: opposite(polariser), retardancesRad }, fastAxesRad);
 }
 
 test('the plates and a polariser at any angle pass the state whole and block its opposite, for one to three plates', () => {

@@ -31,6 +31,20 @@ export const cross = (a: Stokes, b: Stokes): Stokes => [
   a[0] * b[1] - a[1] * b[0],
 ];
 
+// A. Van Oosterom, J. Strackee, IEEE Trans. Biomed. Eng. 30, 125 (1983): tan(Ω/2) = a·(b×c) / (1 + a·b + b·c + c·a).
+export function triangle(a: Stokes, b: Stokes, c: Stokes): number {
+  return 2 * Math.atan2(dot(a, cross(b, c)), 1 + dot(a, b) + dot(b, c) + dot(c, a));
+}
+
+/** The fan from the first point closes the path by the shortest great circle of itself. */
+export function enclosed(points: readonly Stokes[]): number {
+  const [first = H] = points;
+  return points.slice(1).reduce((sum, point, k) => sum + triangle(first, points[k] ?? first, point), 0);
+}
+
+/** The chord between two points. */
+export const chord = (a: Stokes, b: Stokes) => Math.hypot(a[0] - b[0], a[1] - b[1], a[2] - b[2]);
+
 // Evenly spread, which fc.double isn't: it draws most of its numbers close to 0.
 export const evenly = (min: number, max: number) =>
   fc.integer({ min: 0, max: 1_000_003 }).map((k) => min + ((max - min) * k) / 1_000_003);

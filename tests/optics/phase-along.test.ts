@@ -6,6 +6,7 @@ import { jonesToStokes, type Stokes, stokesToJones } from '../../shared/optics/s
 import { radians } from '../../shared/optics/units';
 import {
   anyPlate,
+  chord,
   CLOCKWISE,
   cross,
   D,
@@ -59,9 +60,7 @@ test('the points along the path are those that the sphere draws, and end where t
         expect(points.length).toBe(turn?.points.length);
         points.forEach(({ stokes, flag }, j) => {
           const there = turn?.points[j] ?? [NaN, NaN, NaN];
-          expect(Math.hypot(stokes[0] - there[0], stokes[1] - there[1], stokes[2] - there[2])).toBeLessThan(
-            1e-12,
-          );
+          expect(chord(stokes, there)).toBeLessThan(1e-12);
           expect(Math.abs(dot(flag, stokes))).toBeLessThan(1e-13);
           expect(dot(flag, flag)).toBeCloseTo(1, 12);
         });
@@ -80,8 +79,7 @@ test('a plate carries the flag rigidly with the sphere; a phase turns it twice a
       const jones = phased(stokesToJones(input), 0.7);
       const carried = retardStokes(one, flagOf(jones));
       const found = flagOf(retardJones(one, jones));
-      const miss = Math.hypot(found[0] - carried[0], found[1] - carried[1], found[2] - carried[2]);
-      expect(miss).toBeLessThan(1e-13);
+      expect(chord(found, carried)).toBeLessThan(1e-13);
       const p = jonesToStokes(jones);
       const flag = flagOf(jones);
       const side = cross(p, flag);

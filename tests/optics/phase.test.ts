@@ -9,31 +9,21 @@ import { Deviations } from '../reference/deviations';
 import {
   apart,
   CLOCKWISE,
-  cross,
   D,
   DEGREE,
   direction,
   dot,
+  enclosed,
   evenly,
   H,
   phased,
   plate,
   stack,
+  triangle,
 } from './on-the-sphere';
 
 const deviations = new Deviations();
 afterAll(() => deviations.print('Phases of a path, worst deviation'));
-
-// A. Van Oosterom, J. Strackee, IEEE Trans. Biomed. Eng. 30, 125 (1983): tan(Ω/2) = a·(b×c) / (1 + a·b + b·c + c·a).
-function triangle(a: Stokes, b: Stokes, c: Stokes): number {
-  return 2 * Math.atan2(dot(a, cross(b, c)), 1 + dot(a, b) + dot(b, c) + dot(c, a));
-}
-
-/** The fan from the first point closes the path by the shortest great circle of itself. */
-function enclosed(points: readonly Stokes[]): number {
-  const [first = H] = points;
-  return points.slice(1).reduce((sum, point, k) => sum + triangle(first, points[k] ?? first, point), 0);
-}
 
 const pointsOf = (input: Stokes, plates: readonly Retarder[], step: number): readonly Stokes[] =>
   path(input, plates, radians(step)).turns.flatMap(({ points }) => points);

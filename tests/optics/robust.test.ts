@@ -12,16 +12,8 @@ import {
 } from '../../shared/optics/robust';
 import { gaussLegendre } from '../../shared/optics/robust/gauss-legendre';
 import { missForms, StackJet } from '../../shared/optics/robust/stack-jet';
-import {
-  apply,
-  complex,
-  infidelity,
-  randomState,
-  randomStream,
-  stack,
-  stokesOf,
-  type Vector,
-} from './independent';
+import { complex, randomState, randomStream, stokesOf, type Vector } from './independent';
+import { missed } from './stack-search';
 
 const DEGREE = Math.PI / 180;
 const H: Stokes = [1, 0, 0];
@@ -82,14 +74,9 @@ describe('the miss of a stack', () => {
       }));
       const error = 0.4 * random() - 0.2;
       const [point] = infidelityCurve(goal, plates, retardances, [error]);
-      const reached = apply(
-        stack(
-          retardances.map((retardance) => retardance * (1 + error)),
-          angles,
-        ),
-        from,
-      );
-      expect(Math.abs((point?.infidelity ?? NaN) - infidelity(to, reached))).toBeLessThan(1e-13);
+      const erring = retardances.map((retardance) => retardance * (1 + error));
+      const wanted = missed({ input: from, target: to, retardancesRad: erring }, angles);
+      expect(Math.abs((point?.infidelity ?? NaN) - wanted)).toBeLessThan(1e-13);
     }
   });
 
@@ -245,15 +232,9 @@ describe('the search', () => {
       }
       const retardances = rad([177, 184, 91]);
       const missAt = (error: number) =>
-        infidelity(
-          to,
-          apply(
-            stack(
-              retardances.map((retardance) => retardance * (1 + error)),
-              fastAxesRad,
-            ),
-            from,
-          ),
+        missed(
+          { input: from, target: to, retardancesRad: retardances.map((each) => each * (1 + error)) },
+          fastAxesRad,
         );
       expect(Math.abs(missAt(0) - infidelityAtZero)).toBeLessThan(1e-14);
       for (const point of curve) expect(Math.abs(missAt(point.error) - point.infidelity)).toBeLessThan(1e-13);
