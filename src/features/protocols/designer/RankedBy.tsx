@@ -1,10 +1,10 @@
-import { useState } from 'react';
 import { wrap } from '../../../../shared/optics/units';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { DraftContent, Objective } from '../../../../shared/schemas/protocols';
 import { TextButton } from '../../../components/TextLink';
 import { formatDial, parseTypedNumber } from '../../../lib/format';
 import { type DraftEdit, rankBy, standAt } from '../draft-edits';
+import { FactField } from './FactField';
 
 const objectives: readonly { readonly value: Objective; readonly label: string }[] = [
   { value: 'least-expected-infidelity', label: 'least expected infidelity' },
@@ -77,70 +77,38 @@ function PresentDials(props: {
 }) {
   const { content, bench, standsAtDeg, edit } = props;
   const { presentDialsDeg } = content;
-  const [typed, setTyped] = useState<string | null>(null);
-  const names = bench.plates.map(({ name }) => name).join(', ');
+  const { plates } = bench;
   const shown =
     presentDialsDeg === null
       ? null
-      : bench.plates
+      : plates
           .map(({ mount }, plate) => formatDial(presentDialsDeg[plate] ?? 0, mount.resolutionDeg))
           .join(' ');
-  if (typed === null) {
-    return (
-      <span>
-        {shown === null ? (
-          <button type="button" className="fact-button" onClick={() => setTyped('')}>
-            say where the dials stand
-          </button>
-        ) : (
-          <>
-            dials stand at{' '}
-            <button type="button" className="fact-button font-mono" onClick={() => setTyped(shown)}>
-              {shown}
-            </button>
-          </>
-        )}
-        {standsAtDeg !== null && (
+  // A ring that turns all the way round says 40 where somebody counts on to 400.
+  const onItsRing = (dialDeg: number, plate: number): number =>
+    (plates[plate]?.mount.rangeDeg ?? null) === null ? wrap(dialDeg, 360) : dialDeg;
+  return (
+    <FactField
+      before={shown === null ? null : 'dials stand at '}
+      fact={shown ?? 'say where the dials stand'}
+      isMono={shown !== null}
+      after={
+        standsAtDeg !== null && (
           <>
             {' '}
             <TextButton onClick={() => edit(standAt(standsAtDeg))}>take them from the stage</TextButton>
           </>
-        )}
-      </span>
-    );
-  }
-  const read = readDials(typed, bench.plates.length);
-  const fault = typed.trim() !== '' && read === null;
-  // A ring that turns all the way round says 40 where somebody counts on to 400.
-  const onItsRing = (dialDeg: number, plate: number): number =>
-    (bench.plates[plate]?.mount.rangeDeg ?? null) === null ? wrap(dialDeg, 360) : dialDeg;
-  const done = () => {
-    if (fault) return;
-    edit(standAt(typed.trim() === '' || read === null ? null : read.map(onItsRing)));
-    setTyped(null);
-  };
-  return (
-    <label>
-      dials of {names} stand at{' '}
-      <input
-        type="text"
-        inputMode="decimal"
-        autoFocus
-        className="fact-input font-mono"
-        size={8 * bench.plates.length}
-        aria-invalid={fault}
-        aria-describedby="present-dials-fault"
-        value={typed}
-        onChange={(event) => setTyped(event.target.value)}
-        onBlur={done}
-        onKeyDown={(event) => {
-          if (event.key === 'Enter') done();
-          if (event.key === 'Escape') setTyped(null);
-        }}
-      />
-      <span id="present-dials-fault" role="status" className="ml-2 font-strong text-fault">
-        {fault && `Write ${bench.plates.length} readings with a blank between them, or nothing.`}
-      </span>
-    </label>
+        )
+      }
+      label={`dials of ${plates.map(({ name }) => name).join(', ')} stand at`}
+      start={shown ?? ''}
+      size={8 * plates.length}
+      faultOf={(typed) =>
+        typed.trim() !== '' && readDials(typed, plates.length) === null
+          ? `Write ${plates.length} readings with a blank between them, or nothing.`
+          : null
+      }
+      onDone={(typed) => edit(standAt(readDials(typed, plates.length)?.map(onItsRing) ?? null))}
+    />
   );
 }

@@ -1,7 +1,7 @@
-import { useState } from 'react';
 import { numberSchema } from '../../../../shared/schemas/common';
 import { Scientific } from '../../../components/Scientific';
 import { commaSentence, parseTypedNumber } from '../../../lib/format';
+import { FactField } from './FactField';
 
 const toleranceSchema = numberSchema('A tolerance', 1e-9, 0.5, '');
 
@@ -11,51 +11,24 @@ interface ToleranceProps {
   readonly onChange: (value: number) => void;
 }
 
-/** A fact until it is pressed, then a field; what can't be read stays in the field with its fault. */
 export function Tolerance({ value, mayWrite, onChange }: ToleranceProps) {
-  const [typed, setTyped] = useState<string | null>(null);
-  const fault = typed === null ? null : faultOf(typed);
   const shown = (
     <>
       tolerance 1 − F ≤ <Scientific value={value} />
     </>
   );
   if (!mayWrite) return <span>{shown}</span>;
-  if (typed === null) {
-    return (
-      <button type="button" className="fact-button" onClick={() => setTyped(value.toExponential())}>
-        {shown}
-      </button>
-    );
-  }
-  const done = () => {
-    const read = parseTypedNumber(typed);
-    if (fault !== null || !read.ok) return;
-    onChange(read.value);
-    setTyped(null);
-  };
   return (
-    <label>
-      tolerance 1 − F ≤{' '}
-      <input
-        type="text"
-        inputMode="decimal"
-        autoFocus
-        className="fact-input font-mono"
-        aria-invalid={fault !== null}
-        aria-describedby="tolerance-fault"
-        value={typed}
-        onChange={(event) => setTyped(event.target.value)}
-        onBlur={done}
-        onKeyDown={(event) => {
-          if (event.key === 'Enter') done();
-          if (event.key === 'Escape') setTyped(null);
-        }}
-      />
-      <span id="tolerance-fault" role="status" className="ml-2 font-strong text-fault">
-        {fault}
-      </span>
-    </label>
+    <FactField
+      fact={shown}
+      label="tolerance 1 − F ≤"
+      start={value.toExponential()}
+      faultOf={faultOf}
+      onDone={(typed) => {
+        const read = parseTypedNumber(typed);
+        if (read.ok) onChange(read.value);
+      }}
+    />
   );
 }
 
