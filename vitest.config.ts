@@ -8,7 +8,7 @@ export default defineConfig({
       {
         test: {
           name: 'unit',
-          include: ['tests/{optics,reference,protocol}/**/*.test.ts', 'tests/*.test.ts'],
+          include: ['tests/{optics,reference,protocol,cabinet}/**/*.test.ts', 'tests/*.test.ts'],
           environment: 'node',
           testTimeout: 60 * SECOND_MS,
         },
