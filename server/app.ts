@@ -12,11 +12,12 @@ import { health, type Readiness } from './http/health';
 import { pages } from './http/pages';
 import { problemHandler } from './http/problems';
 import { pruneRateLimits } from './http/prune-rate-limits';
-import { limitCalls, limitSignIns } from './http/rate-limits';
+import { limitCalls, limitSignIns, limitUploads } from './http/rate-limits';
 import { requestId } from './http/request-id';
 import { requestLog } from './http/request-log';
 import { apiRouter } from './http/router';
 import { securityHeaders } from './http/security-headers';
+import { uploads } from './http/uploads';
 import { allRoutes } from './routes';
 
 interface AppParts {
@@ -85,6 +86,7 @@ export function createApp(parts: AppParts): App {
     refuseCrossSite(config.publicOrigin),
     session,
     limitCalls(sidePool, config),
+    uploads(limitUploads(sidePool, config)),
     express.json({ limit: `${bodyLimitMb}mb`, strict: true, inflate: false }),
     apiRouter(allRoutes(config), { database, logger }),
   );

@@ -40,6 +40,7 @@ const environmentSchema = z.object({
   DATABASE_POOL_MAX: wholeNumber('DATABASE_POOL_MAX', 1, 100).default(10),
   SIGN_INS_PER_MINUTE: wholeNumber('SIGN_INS_PER_MINUTE', 1, 1_000_000).default(20),
   API_CALLS_PER_MINUTE: wholeNumber('API_CALLS_PER_MINUTE', 1, 1_000_000).default(600),
+  UPLOADS_PER_MINUTE: wholeNumber('UPLOADS_PER_MINUTE', 1, 1_000_000).default(10),
 });
 
 export interface GitHubEndpoints {
@@ -69,6 +70,7 @@ export interface Config {
   readonly logLevel: string;
   readonly signInsPerMinute: number;
   readonly apiCallsPerMinute: number;
+  readonly uploadsPerMinute: number;
 }
 
 /** A setting that cannot be used; the message has one line for each, saying which and what to write. */
@@ -165,6 +167,7 @@ export function loadConfig(environment: Readonly<Record<string, string | undefin
     },
     logLevel: env.LOG_LEVEL,
     signInsPerMinute: env.SIGN_INS_PER_MINUTE,
+    uploadsPerMinute: env.UPLOADS_PER_MINUTE,
     apiCallsPerMinute: env.API_CALLS_PER_MINUTE,
   };
 }

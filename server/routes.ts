@@ -1,7 +1,8 @@
 import type { Config } from './config';
 import { sessionRoutes } from './features/auth';
 import { benchRoutes } from './features/benches';
-import { plateRoutes } from './features/cabinet';
+import { cabinetRoutes } from './features/cabinet';
+import { fileRoutes } from './features/files';
 import { homeRoutes } from './features/home';
 import { labRoutes } from './features/labs';
 import { protocolRoutes } from './features/protocols';
@@ -13,7 +14,8 @@ export function allRoutes(config: Pick<Config, 'secure' | 'sessionSecret'>): rea
   return [
     ...sessionRoutes(config),
     ...labRoutes(config),
-    ...plateRoutes(),
+    ...cabinetRoutes(),
+    ...fileRoutes(),
     ...benchRoutes(),
     ...protocolRoutes(),
     ...runRoutes(),

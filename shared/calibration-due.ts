@@ -1,5 +1,8 @@
 const dayMs = 86_400_000;
 
+/** A calibration is called due this many days before it is. */
+export const WARNED_DAYS = 7;
+
 /** How old a calibration is, against the lab's own due time. */
 export interface CalibrationDue {
   /** Whole days since it was measured; never below 0. */

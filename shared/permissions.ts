@@ -11,6 +11,7 @@ export const actions = [
   'cabinet.read',
   'cabinet.write',
   'calibrations.record',
+  'files.upload',
   'benches.read',
   'benches.write',
   'protocols.read',
@@ -33,10 +34,11 @@ const readingActions: readonly Action[] = [
 
 const allowed: Readonly<Record<Role, ReadonlySet<Action>>> = {
   guest: new Set(readingActions),
-  operator: new Set<Action>([...readingActions, 'calibrations.record', 'runs.record']),
+  operator: new Set<Action>([...readingActions, 'calibrations.record', 'files.upload', 'runs.record']),
   designer: new Set<Action>([
     ...readingActions,
     'calibrations.record',
+    'files.upload',
     'runs.record',
     'cabinet.write',
     'benches.write',

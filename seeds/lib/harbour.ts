@@ -6,6 +6,19 @@ import { insertLab } from '../../server/features/labs';
 import { LabStory } from './lab-story';
 import { addPeople } from './people';
 import { rows } from './targets';
+import { undescribed } from './undescribed';
+
+const ring = {
+  drive: 'hand',
+  note: '',
+  direction: 1,
+  resolutionDeg: 0.5,
+  repeatabilityDeg: 0.2,
+  rangeDeg: null,
+  speedDegPerS: null,
+  backlashDeg: 0,
+  approach: 'either',
+} as const;
 
 /** A second lab, which is there so that the first can be seen not to see it. Everything in it is invented. */
 export async function seedHarbour(
@@ -31,6 +44,8 @@ export async function seedHarbour(
   const measured = {
     method: 'From the maker’s sheet, zero by hand',
     note: '',
+    openQuestions: [],
+    settlesId: null,
     measuredAt: at(90, '09:00').toISOString(),
   };
   const half = story.plate(at(90, '09:30'), oskar, {
@@ -40,25 +55,19 @@ export async function seedHarbour(
     construction: 'compound-zero-order',
     material: 'quartz',
     order: 0,
-    note: '',
-    mount: {
-      name: 'R1',
-      direction: 1,
-      resolutionDeg: 0.5,
-      repeatabilityDeg: 0.2,
-      rangeDeg: null,
-      speedDegPerS: null,
-      backlashDeg: 0,
-      approach: 'either',
-    },
-    calibration: {
-      wavelengthNm: 1550,
-      temperatureC: null,
-      retardanceDeg: 180.9,
-      retardanceSigmaDeg: 0.8,
-      offsetDeg: 3.5,
-      offsetSigmaDeg: 0.3,
-      ...measured,
+    ...undescribed,
+    seat: {
+      kind: 'new-mount',
+      mount: { ...ring, name: 'R1' },
+      calibration: {
+        wavelengthNm: 1550,
+        temperatureC: null,
+        retardanceDeg: 180.9,
+        retardanceSigmaDeg: 0.8,
+        offsetDeg: 3.5,
+        offsetSigmaDeg: 0.3,
+        ...measured,
+      },
     },
   });
   const quarter = story.plate(at(90, '09:40'), oskar, {
@@ -68,25 +77,19 @@ export async function seedHarbour(
     construction: 'compound-zero-order',
     material: 'quartz',
     order: 0,
-    note: '',
-    mount: {
-      name: 'R2',
-      direction: 1,
-      resolutionDeg: 0.5,
-      repeatabilityDeg: 0.2,
-      rangeDeg: null,
-      speedDegPerS: null,
-      backlashDeg: 0,
-      approach: 'either',
-    },
-    calibration: {
-      wavelengthNm: 1550,
-      temperatureC: null,
-      retardanceDeg: 90.4,
-      retardanceSigmaDeg: 0.8,
-      offsetDeg: 181,
-      offsetSigmaDeg: 0.3,
-      ...measured,
+    ...undescribed,
+    seat: {
+      kind: 'new-mount',
+      mount: { ...ring, name: 'R2' },
+      calibration: {
+        wavelengthNm: 1550,
+        temperatureC: null,
+        retardanceDeg: 90.4,
+        retardanceSigmaDeg: 0.8,
+        offsetDeg: 181,
+        offsetSigmaDeg: 0.3,
+        ...measured,
+      },
     },
   });
   const bench = story.bench(at(80, '10:00'), oskar, {
@@ -101,6 +104,8 @@ export async function seedHarbour(
     laserClass: null,
     hazardWavelengthsNm: [1550],
     plateIds: [half, quarter],
+    analysisPlateIds: [],
+    detectors: { passed: null, rejected: null, efficiencyRatio: null },
   });
   const protocol = story.protocol(at(60, '11:00'), noor, {
     name: 'Link check',

@@ -12,7 +12,14 @@ import { type AuditEntry, recordEvent } from '../../server/audit/record-event';
 import type { Transaction } from '../../server/db/database';
 import { newId } from '../../server/db/new-id';
 import { findBench, insertBench } from '../../server/features/benches';
-import { findPlate, insertCalibration, insertPlate } from '../../server/features/cabinet';
+import {
+  addPlate,
+  findPlate,
+  insertCalibration,
+  seatPlate,
+  type StoredPlate,
+  takeOutPlate,
+} from '../../server/features/cabinet';
 import {
   findProtocol,
   findVersion,
@@ -61,7 +68,7 @@ export class LabStory {
   plate(at: Date, by: Person, plate: CreatePlate): string {
     const id = newId(at);
     this.#happened(at, by, async () => {
-      await insertPlate(this.transaction, this.#place(at, by), plate, id);
+      await addPlate(this.transaction, this.#place(at, by), plate, id);
       return { kind: 'plate.added', subjectId: id, details: { plate } };
     });
     return id;
@@ -69,10 +76,30 @@ export class LabStory {
 
   calibration(at: Date, by: Person, plateId: string, calibration: CalibrationInput): void {
     this.#happened(at, by, async () => {
-      const plate = await findPlate(this.transaction, { labId: this.lab.id, plateId });
-      if (plate === null) throw new Error('a plate is calibrated after it is added');
-      const id = await insertCalibration(this.transaction, this.#place(at, by), plate.seatId, calibration);
+      const { seat } = await this.#plate(plateId);
+      if (seat === null) throw new Error('a plate is calibrated in a seat');
+      const id = await insertCalibration(this.transaction, this.#place(at, by), seat.id, calibration);
       return { kind: 'plate.calibrated', subjectId: plateId, details: { calibrationId: id, calibration } };
+    });
+  }
+
+  /** Takes a plate out and puts it back into the same mount. */
+  reseat(at: Date, by: Person, plateId: string, why: string): void {
+    this.#happened(at, by, async () => {
+      const plate = await this.#plate(plateId);
+      if (plate.seat === null) throw new Error('a plate is seated before it is seated anew');
+      const { mountId } = plate.seat;
+      const seatId = await seatPlate(this.transaction, this.#place(at, by), plate, { mountId, why });
+      const details = { seatId, mountId, endedSeatId: plate.seat.id, why };
+      return { kind: 'plate.seated', subjectId: plateId, details };
+    });
+  }
+
+  takeOut(at: Date, by: Person, plateId: string, why: string): void {
+    this.#happened(at, by, async () => {
+      const plate = await this.#plate(plateId);
+      const details = await takeOutPlate(this.transaction, this.#place(at, by), plate, why);
+      return { kind: 'plate.taken-out', subjectId: plateId, details };
     });
   }
 
@@ -149,7 +176,10 @@ export class LabStory {
       const version = await findVersion(this.transaction, key);
       if (version === null) throw new Error('a run follows its version');
       const dials = version.content.bench.plates.map(() => null);
-      const runId = await startRun(this.transaction, this.#doing(at, by), version, { startDialsDeg: dials });
+      const runId = await startRun(this.transaction, this.#doing(at, by), version, {
+        startDialsDeg: dials,
+        staleAcknowledged: true,
+      });
       const { summary } = await this.#run(runId);
       let time = at.getTime();
       for (const reading of run.readings(version)) {
@@ -197,6 +227,12 @@ export class LabStory {
 
   #doing(at: Date, by: Person) {
     return { labId: this.lab.id, userId: by.id, at };
+  }
+
+  async #plate(plateId: string): Promise<StoredPlate> {
+    const plate = await findPlate(this.transaction, { labId: this.lab.id, plateId });
+    if (plate === null) throw new Error('a plate is added before anything happens to it');
+    return plate;
   }
 
   async #protocol(protocolId: string) {

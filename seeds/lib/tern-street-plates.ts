@@ -1,11 +1,15 @@
 import type { CalibrationInput, CreatePlate, PlateKind } from '../../shared/schemas';
 import type { LabStory } from './lab-story';
 import type { Person } from './people';
+import { undescribed } from './undescribed';
 
 type At = (daysAgo: number, time: string) => Date;
 
 /** [days ago, wavelength nm, retardance °, its σ, zero °, its σ], oldest first. Invented. */
 type Measured = readonly [number, number, number, number, number, number];
+
+/** What happened to a seat: when, and why. The next measurement is of the next seat. */
+type Moved = readonly [daysAgo: number, why: string];
 
 interface PlateFacts {
   readonly name: string;
@@ -15,6 +19,13 @@ interface PlateFacts {
   readonly note: string;
   readonly mount: readonly [name: string, direction: 1 | -1, resolutionDeg: number, repeatabilityDeg: number];
   readonly measured: readonly Measured[];
+  readonly serial?: string;
+  /** Taken out and put back into the same mount. */
+  readonly reseated?: readonly Moved[];
+  /** Taken out for good. */
+  readonly takenOut?: Moved;
+  /** The newest measurement left fast and slow open. */
+  readonly axisOpen?: true;
 }
 
 type Built = Pick<CreatePlate, 'construction' | 'material' | 'order'>;
@@ -93,7 +104,13 @@ const plates: readonly PlateFacts[] = [
     measured: [
       [310, 810, 88.7, 0.5, 301.78, 0.1],
       [170, 810, 88.9, 0.5, 301.7, 0.1],
+      [120, 810, 88.8, 0.5, 12.05, 0.1],
       [47, 810, 86.9, 0.4, 301.73, 0.09],
+    ],
+    serial: 'QW-0418',
+    reseated: [
+      [125, 'Taken out to clean a fingerprint off.'],
+      [48, 'Its retaining ring had worked loose.'],
     ],
   },
   {
@@ -122,6 +139,7 @@ const plates: readonly PlateFacts[] = [
     note: '',
     mount: ['M10', 1, 0.2, 0.1],
     measured: [[16, 780, 89.2, 0.5, 8.95, 0.12]],
+    axisOpen: true,
   },
   {
     name: 'Q-F',
@@ -131,6 +149,7 @@ const plates: readonly PlateFacts[] = [
     note: 'Spare.',
     mount: ['M11', -1, 0.5, 0.2],
     measured: [[190, 780, 91.6, 0.8, 233.5, 0.3]],
+    takenOut: [95, 'M11 went to the diode table.'],
   },
   {
     name: 'T-1',
@@ -153,28 +172,17 @@ export function tellPlates(
   for (const facts of plates) {
     const [first, ...later] = facts.measured;
     if (first === undefined) throw new Error('a plate is measured before it is used');
-    const [name, direction, resolutionDeg, repeatabilityDeg] = facts.mount;
-    const plate: CreatePlate = {
-      name: facts.name,
-      kind: facts.kind,
-      designWavelengthNm: facts.designWavelengthNm,
-      ...facts.built,
-      note: facts.note,
-      mount: {
-        name,
-        direction,
-        resolutionDeg,
-        repeatabilityDeg,
-        rangeDeg: null,
-        speedDegPerS: resolutionDeg < 0.1 ? 20 : null,
-        backlashDeg: resolutionDeg < 0.1 ? 0.05 : 0,
-        approach: resolutionDeg < 0.1 ? 'rising' : 'either',
-      },
-      calibration: calibration(first, at),
-    };
-    const id = story.plate(at(first[0], '11:15'), people.designer, plate);
+    const id = story.plate(at(first[0], '11:15'), people.designer, newPlate(facts, first, at));
+    for (const [daysAgo, why] of facts.reseated ?? []) {
+      story.reseat(at(daysAgo, '10:20'), people.operator, id, why);
+    }
     for (const measured of later) {
-      story.calibration(at(measured[0], '11:15'), people.operator, id, calibration(measured, at));
+      const left = facts.axisOpen === true && measured === later.at(-1);
+      story.calibration(at(measured[0], '11:15'), people.operator, id, calibration(measured, at, left));
+    }
+    if (facts.takenOut !== undefined) {
+      const [daysAgo, why] = facts.takenOut;
+      story.takeOut(at(daysAgo, '16:30'), people.operator, id, why);
     }
     ids.set(facts.name, id);
   }
@@ -185,9 +193,40 @@ export function tellPlates(
   };
 }
 
+function newPlate(facts: PlateFacts, first: Measured, at: At): CreatePlate {
+  const [name, direction, resolutionDeg, repeatabilityDeg] = facts.mount;
+  const motor = resolutionDeg < 0.1;
+  return {
+    ...undescribed,
+    name: facts.name,
+    kind: facts.kind,
+    designWavelengthNm: facts.designWavelengthNm,
+    ...facts.built,
+    serial: facts.serial ?? '',
+    note: facts.note,
+    seat: {
+      kind: 'new-mount',
+      mount: {
+        name,
+        drive: motor ? 'motor' : 'hand',
+        note: '',
+        direction,
+        resolutionDeg,
+        repeatabilityDeg,
+        rangeDeg: null,
+        speedDegPerS: motor ? 20 : null,
+        backlashDeg: motor ? 0.05 : 0,
+        approach: motor ? 'rising' : 'either',
+      },
+      calibration: calibration(first, at, facts.axisOpen === true && facts.measured.length === 1),
+    },
+  };
+}
+
 function calibration(
   [daysAgo, wavelengthNm, retardanceDeg, retardanceSigmaDeg, offsetDeg, offsetSigmaDeg]: Measured,
   at: At,
+  axisOpen: boolean,
 ): CalibrationInput {
   return {
     wavelengthNm,
@@ -198,6 +237,8 @@ function calibration(
     offsetSigmaDeg,
     method: 'Turned between crossed polarisers',
     note: '',
+    openQuestions: axisOpen ? ['axis'] : [],
+    settlesId: null,
     measuredAt: at(daysAgo, '10:52').toISOString(),
   };
 }

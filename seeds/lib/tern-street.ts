@@ -57,6 +57,12 @@ export async function seedTernStreet(
     laserClass: '3B',
     hazardWavelengthsNm: [405, 810],
     plateIds: [plate('H-3'), plate('Q-B')],
+    analysisPlateIds: [plate('H-4')],
+    detectors: {
+      passed: { name: 'counter 1', darkRatePerS: 120 },
+      rejected: { name: 'counter 2', darkRatePerS: 210 },
+      efficiencyRatio: 0.96,
+    },
   });
   const diodeTable = story.bench(at(56, '10:05'), tomas, {
     name: 'diode table',
@@ -70,6 +76,12 @@ export async function seedTernStreet(
     laserClass: '3R',
     hazardWavelengthsNm: [780],
     plateIds: [plate('H-1'), plate('Q-C')],
+    analysisPlateIds: [],
+    detectors: {
+      passed: { name: 'power meter', darkRatePerS: 0 },
+      rejected: null,
+      efficiencyRatio: null,
+    },
   });
 
   const gateBench = story.bench(at(15, '11:20'), tomas, {
@@ -84,6 +96,8 @@ export async function seedTernStreet(
     laserClass: '3B',
     hazardWavelengthsNm: [405, 810],
     plateIds: [plate('Q-A'), plate('H-5'), plate('Q-D')],
+    analysisPlateIds: [],
+    detectors: { passed: null, rejected: null, efficiencyRatio: null },
   });
 
   const six = rows([

@@ -55,9 +55,10 @@ function viewerOf(request: Request, labId: string | null) {
 
 function asAnswer(reply: Reply): Answer {
   return {
-    status: reply.status ?? (reply.body === undefined ? 204 : 200),
+    status: reply.status ?? (reply.body === undefined && reply.file === undefined ? 204 : 200),
     etag: reply.revision === undefined ? null : etagOf(reply.revision),
     body: reply.body,
+    ...(reply.file === undefined ? {} : { file: reply.file }),
   };
 }
 

@@ -1,12 +1,13 @@
 import type { RequestHandler } from 'express';
 import { ProblemError } from '../errors';
+import { isUpload } from './uploads';
 
 const safeMethods = new Set(['GET', 'HEAD', 'OPTIONS']);
 
 /**
  * Refuses a write that another site, or another port of this host, made a browser send with our cookie
  * (Fetch Metadata, w3.org/TR/fetch-metadata; plain http sends no Sec-Fetch-Site, so an exact Origin decides there).
- * A write with a body is JSON, which a form cannot send.
+ * A write with a body is JSON, or the bytes of a file, neither of which a form can send.
  */
 export function refuseCrossSite(publicOrigin: string): RequestHandler {
   return (request, _response, next) => {
@@ -28,10 +29,11 @@ export function refuseCrossSite(publicOrigin: string): RequestHandler {
     }
     const hasBody =
       request.get('Transfer-Encoding') !== undefined || Number(request.get('Content-Length') ?? '0') > 0;
-    if (hasBody && request.is('application/json') === false) {
-      next(
-        new ProblemError('unsupported', 415, 'The body of the request is JSON: send it as application/json.'),
-      );
+    const [type, words] = isUpload(request.method, request.path)
+      ? ['application/octet-stream', 'the file itself']
+      : ['application/json', 'JSON'];
+    if (hasBody && request.is(type) === false) {
+      next(new ProblemError('unsupported', 415, `The body of the request is ${words}: send it as ${type}.`));
       return;
     }
     next();

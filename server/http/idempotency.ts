@@ -36,7 +36,7 @@ export function requestHash(request: Request, body: unknown): string {
     method: request.method,
     path: request.originalUrl,
     match: request.get('If-Match') ?? null,
-    body: body ?? null,
+    body: body instanceof Uint8Array ? createHash('sha256').update(body).digest('hex') : (body ?? null),
   });
   return createHash('sha256').update(text).digest('hex');
 }

@@ -68,6 +68,15 @@ export function limitCalls(pool: pg.Pool, config: Pick<Config, 'apiCallsPerMinut
   };
 }
 
+/** Uploads by person: each is work for the database. */
+export function limitUploads(pool: pg.Pool, config: Pick<Config, 'uploadsPerMinute'>): RequestHandler {
+  const limiter = limiterOf(pool, 'upload', config.uploadsPerMinute);
+  return async (request, _response, next) => {
+    await spend(limiter, callerOf(request), 1);
+    next();
+  };
+}
+
 function callerOf(request: Request): string {
   const { userId } = request.session;
   return userId === undefined ? `ip ${request.ip ?? 'unknown'}` : `user ${userId}`;

@@ -14,10 +14,20 @@ export interface User {
   readonly email: string | null;
 }
 
-/** What a handler gives back; without a body the answer is 204. */
+/** Bytes that someone uploaded, on their way back. */
+export interface SentFile {
+  readonly name: string;
+  /** As the content says; never what could run in a page of ours. */
+  readonly mediaType: string;
+  readonly bytes: Buffer;
+}
+
+/** What a handler gives back; without a body and a file the answer is 204. */
 export interface Reply {
   readonly status?: 200 | 201;
   readonly body?: unknown;
+  /** Sent instead of a body. */
+  readonly file?: SentFile;
   /** Becomes the ETag `"r<revision>"`. */
   readonly revision?: number;
   /** A repeat of what is done already: nothing was changed, so nothing is recorded. */
@@ -137,6 +147,7 @@ export interface Answer {
   readonly status: number;
   readonly etag: string | null;
   readonly body: unknown;
+  readonly file?: SentFile;
 }
 
 /** A route as the router and the permission table see it: access is always part of it. */

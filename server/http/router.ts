@@ -3,6 +3,7 @@ import type { Knex } from 'knex';
 import type { Logger } from 'pino';
 import { ProblemError } from '../errors';
 import type { Route } from './route';
+import { sendFile } from './send-file';
 
 interface RouterParts {
   readonly database: Knex;
@@ -14,10 +15,14 @@ export function apiRouter(routes: readonly Route[], parts: RouterParts): Router 
   const router = Router({ caseSensitive: true, strict: true });
   for (const route of routes) {
     router[route.method](route.path, async (request, response) => {
-      const { status, etag, body } = await route.answer({ request, response, ...parts });
+      const { status, etag, body, file } = await route.answer({ request, response, ...parts });
       if (response.headersSent) return;
       response.status(status);
       if (etag !== null) response.set('ETag', etag);
+      if (file !== undefined) {
+        sendFile(response, file);
+        return;
+      }
       if (route.response === null || status === 204) {
         response.end();
         return;

@@ -1,3 +1,4 @@
+import { notReadySentences } from '../bench-ready';
 import type { Bench } from '../schemas/benches';
 import type { Plate } from '../schemas/cabinet';
 import type { Lab } from '../schemas/labs';
@@ -58,6 +59,8 @@ export function* freezeSteps(input: FreezeInput): Generator<undefined, Frozen> {
       faults: [{ path: 'targets', message: 'The protocol has no target. Write one first.' }],
     };
   }
+  const waits = notReadySentences(bench, 'preparation');
+  if (waits.length > 0) return { ok: false, faults: waits.map((message) => ({ path: 'benchId', message })) };
   const faced = benchProblem(bench, lab.convention, draft);
   if (!faced.ok) {
     const message = `The input of ${bench.name} cannot be read. Column ${faced.error.column}: ${faced.error.message}`;
@@ -101,7 +104,7 @@ export function* freezeSteps(input: FreezeInput): Generator<undefined, Frozen> {
   });
 
   const content: VersionContent = {
-    format: 'quarterturn.version/2',
+    format: 'quarterturn.version/3',
     lab: { id: lab.id, name: lab.name },
     protocol: { id: input.protocolId, name: draft.name, purpose: draft.purpose },
     number: input.number,

@@ -1,7 +1,8 @@
 import { type DialScale } from '../optics/dial';
 import { compareWithModel, NOMINAL_DEG, retardanceAt, type UsedRetardance } from '../optics/dispersion';
 import type { TargetPlate } from '../optics/solve-target';
-import type { Calibration, Plate } from '../schemas/cabinet';
+import type { Plate } from '../schemas/cabinet';
+import type { Calibration } from '../schemas/calibrations';
 
 /** What a dial's scale needs of a plate. */
 export interface DialledPlate {

@@ -9,6 +9,35 @@ export type LaserClass = z.infer<typeof laserClassSchema>;
 
 export const maxBenchPlates = 6;
 
+/** Before the light is used, or before it is detected. */
+export const benchParts = ['preparation', 'analysis'] as const;
+export const benchPartSchema = z.enum(benchParts);
+export type BenchPart = z.infer<typeof benchPartSchema>;
+
+const writtenDetectorSchema = z.strictObject({
+  name: lineSchema(40, "detector's name"),
+  /** Counts without light. */
+  darkRatePerS: numberSchema('A dark rate', 0, 1e9, ' per second', '120'),
+});
+
+/** What counts behind the analysing polariser, or reads its power; null for a port with nothing behind it. */
+const writtenDetectorsSchema = z
+  .strictObject({
+    passed: writtenDetectorSchema.nullable(),
+    rejected: writtenDetectorSchema.nullable(),
+    /** Efficiency of the rejected port over that of the passed one; null where nobody measured it. */
+    efficiencyRatio: numberSchema('An efficiency ratio', 0.001, 1000, '', '0.97').nullable(),
+  })
+  .refine(
+    ({ passed, rejected, efficiencyRatio }) =>
+      efficiencyRatio === null || (passed !== null && rejected !== null),
+    {
+      path: ['efficiencyRatio'],
+      error: 'An efficiency ratio compares two detectors. Name both, or leave it out.',
+    },
+  );
+export type Detectors = z.infer<typeof writtenDetectorsSchema>;
+
 const benchFields = {
   name: lineSchema(60, "bench's name"),
   wavelengthNm: numberSchema('A wavelength', 200, 5000, ' nm', '810'),
@@ -42,25 +71,57 @@ export const benchSchema = z.strictObject({
   polariserExtinction: z.number().nullable(),
   laserClass: laserClassSchema,
   hazardWavelengthsNm: z.array(z.number()),
-  /** In beam order: the first is the one that light meets first. */
+  /**
+   * What prepares the light, in beam order: the first is the one that light meets first. Empty as long as one of them is
+   * not ready, so that nothing is solved for a beam that lacks a plate.
+   */
   plates: z.array(plateSchema),
+  /** What analyses it, in beam order before the analysing polariser; empty as long as one of them is not ready. */
+  analysisPlates: z.array(plateSchema),
+  /** Every plate that belongs into the beam, ready or not, in beam order. */
+  order: z.array(z.strictObject({ plateId: idSchema, name: z.string(), part: benchPartSchema })),
+  /** Plates of the beam that cannot be dialled. */
+  notReady: z.array(
+    z.strictObject({
+      plateId: idSchema,
+      name: z.string(),
+      part: benchPartSchema,
+      why: z.enum(['not-seated', 'not-calibrated']),
+    }),
+  ),
+  detectors: z.strictObject({
+    passed: z.strictObject({ name: z.string(), darkRatePerS: z.number() }).nullable(),
+    rejected: z.strictObject({ name: z.string(), darkRatePerS: z.number() }).nullable(),
+    efficiencyRatio: z.number().nullable(),
+  }),
   retiredAt: timestampSchema.nullable(),
   revision: z.int(),
 });
 export type Bench = z.infer<typeof benchSchema>;
 export const benchListSchema = z.strictObject({ items: z.array(benchSchema) });
 
-export const createBenchSchema = z.strictObject({
-  ...benchFields,
-  plateIds: z
-    .array(idSchema)
-    .min(1, 'A bench has at least one plate. Choose the one that light meets first.')
-    .max(maxBenchPlates, `A bench has at most ${maxBenchPlates} plates in its beam.`)
-    .refine(
-      (ids) => new Set(ids).size === ids.length,
-      'One plate cannot stand in two places. Choose another.',
-    ),
-});
+const platesInBeam = z
+  .array(idSchema)
+  .max(maxBenchPlates, `A part of a bench has at most ${maxBenchPlates} plates in its beam.`);
+const onePlace = 'One plate cannot stand in two places. Choose another.';
+const eachOnce = (ids: readonly string[]) => new Set(ids).size === ids.length;
+
+export const createBenchSchema = z
+  .strictObject({
+    ...benchFields,
+    plateIds: platesInBeam
+      .min(1, 'A bench has at least one plate. Choose the one that light meets first.')
+      .refine(eachOnce, onePlace),
+    analysisPlateIds: platesInBeam.refine(eachOnce, onePlace),
+    detectors: writtenDetectorsSchema,
+  })
+  .refine(
+    ({ plateIds, analysisPlateIds }) => eachOnce([...new Set(plateIds), ...new Set(analysisPlateIds)]),
+    {
+      path: ['analysisPlateIds'],
+      error: onePlace,
+    },
+  );
 export type CreateBench = z.infer<typeof createBenchSchema>;
 /** Needs If-Match. */
 export const updateBenchSchema = createBenchSchema;

@@ -1,5 +1,16 @@
 import { z } from 'zod';
-import { idSchema, lineSchema, noteSchema, numberSchema, timestampSchema } from './common';
+import { calibrationInputSchema, calibrationSchema } from './calibrations';
+import {
+  idSchema,
+  lineSchema,
+  noteSchema,
+  numberSchema,
+  pageQuerySchema,
+  pageSchema,
+  timestampSchema,
+} from './common';
+import { attachedFileSchema } from './files';
+import { mountSchema, seatSchema, writeMountSchema } from './mounts';
 
 const plateKinds = ['half', 'quarter', 'other'] as const;
 export const plateKindSchema = z.enum(plateKinds);
@@ -16,50 +27,10 @@ export const plateConstructionSchema = z.enum([
 /** The crystals whose dispersion is known here; null for any other. */
 export const plateMaterialSchema = z.enum(['quartz', 'magnesium-fluoride', 'calcite', 'sapphire']).nullable();
 
-const directionSchema = z.union([z.literal(1), z.literal(-1)]);
-const retardanceSchema = numberSchema('A retardance', 0.1, 359.9, '°', '180.4');
-const sigmaSchema = (name: string) => numberSchema(name, 0, 20, '°', '0.3');
 const wavelengthSchema = numberSchema('A wavelength', 200, 5000, ' nm', '810');
-const temperatureSchema = numberSchema('A temperature', -50, 150, ' °C', '21.5');
 
-const approachSchema = z.enum(['rising', 'falling', 'either']);
-
-/** A holder with an engraved ring. */
-export const mountSchema = z.strictObject({
-  name: z.string(),
-  /** +1: the engraved numbers rise as the mount is turned counter-clockwise, seen by the receiver. */
-  direction: directionSchema,
-  resolutionDeg: z.number(),
-  /** σ of coming back to the same reading. */
-  repeatabilityDeg: z.number(),
-  /** Readings it can be turned to; null for a ring that turns all the way round. */
-  rangeDeg: z.strictObject({ from: z.number(), to: z.number() }).nullable(),
-  /** null where it isn't known, as for most mounts turned by hand. */
-  speedDegPerS: z.number().nullable(),
-  backlashDeg: z.number(),
-  /** From which side a reading is always approached, by the sense of the numbers. */
-  approach: approachSchema,
-});
-
-/** What was measured of a plate in its present seat. Never changed: a correction is a new one. */
-export const calibrationSchema = z.strictObject({
-  id: idSchema,
-  wavelengthNm: z.number(),
-  /** Of the plate while it was measured; null where nobody wrote it down. */
-  temperatureC: z.number().nullable(),
-  retardanceDeg: z.number(),
-  retardanceSigmaDeg: z.number(),
-  /** The reading with the fast axis along H. */
-  offsetDeg: z.number(),
-  offsetSigmaDeg: z.number(),
-  method: z.string(),
-  note: z.string(),
-  measuredAt: timestampSchema,
-  recordedBy: z.string(),
-});
-export type Calibration = z.infer<typeof calibrationSchema>;
-
-export const plateSchema = z.strictObject({
+/** What a plate is, whatever it sits in. */
+const plateFacts = {
   id: idSchema,
   name: z.string(),
   kind: plateKindSchema,
@@ -69,36 +40,85 @@ export const plateSchema = z.strictObject({
   /** Whole waves beyond the retardance at the design wavelength, as the maker states them; 0 unless multi-order. */
   order: z.int(),
   note: z.string(),
+  retiredAt: timestampSchema.nullable(),
+  /** The benches in use whose beam goes through it. */
+  benches: z.array(z.strictObject({ id: idSchema, name: z.string() })),
+  revision: z.int(),
+};
+
+/** A plate that can be dialled: seated, and measured in that seat. */
+export const plateSchema = z.strictObject({
+  ...plateFacts,
   mount: mountSchema,
   seatedAt: timestampSchema,
   /** The newest one of this seat. */
   calibration: calibrationSchema,
-  retiredAt: timestampSchema.nullable(),
-  /** Names of the benches whose beam goes through it. */
-  benches: z.array(z.strictObject({ id: idSchema, name: z.string() })),
-  revision: z.int(),
 });
 export type Plate = z.infer<typeof plateSchema>;
 
-export const plateListSchema = z.strictObject({ items: z.array(plateSchema) });
-export const plateDetailSchema = z.strictObject({
-  plate: plateSchema,
-  /** Newest first. */
-  calibrations: z.array(calibrationSchema),
-});
+export const plateHealths = [
+  'calibrated',
+  'due',
+  'overdue',
+  'open-question',
+  'not-calibrated',
+  'not-seated',
+  'retired',
+] as const;
+export const plateHealthSchema = z.enum(plateHealths);
+export type PlateHealth = z.infer<typeof plateHealthSchema>;
 
-export const calibrationInputSchema = z.strictObject({
-  wavelengthNm: wavelengthSchema,
-  temperatureC: temperatureSchema.nullable(),
-  retardanceDeg: retardanceSchema,
-  retardanceSigmaDeg: sigmaSchema('The uncertainty of the retardance'),
-  offsetDeg: numberSchema('A zero', 0, 359.9999, '°', '301.73'),
-  offsetSigmaDeg: sigmaSchema('The uncertainty of the zero'),
-  method: lineSchema(80, 'way it was measured'),
-  note: noteSchema(500, 'note'),
-  measuredAt: timestampSchema,
+/** A plate as the cabinet lists it, in whatever state it is. */
+export const cabinetPlateSchema = z.strictObject({
+  ...plateFacts,
+  serial: z.string(),
+  clearApertureMm: z.number().nullable(),
+  /** Wavelengths that its coating is for. */
+  coatingNm: z.strictObject({ from: z.number(), to: z.number() }).nullable(),
+  /** What is known of how much light it stands: the maker's words, or a burn that was seen. */
+  damageNote: z.string(),
+  /** Where it sits now; null once it was taken out. */
+  seat: z
+    .strictObject({ id: idSchema, mountId: idSchema, mount: mountSchema, seatedAt: timestampSchema })
+    .nullable(),
+  /** The newest one of the present seat. Of a seat that has ended nothing is used. */
+  calibration: calibrationSchema.nullable(),
+  health: plateHealthSchema,
 });
-export type CalibrationInput = z.infer<typeof calibrationInputSchema>;
+export type CabinetPlate = z.infer<typeof cabinetPlateSchema>;
+
+export const plateQuerySchema = pageQuerySchema.extend({
+  search: z.string().trim().max(60).default(''),
+  /** in-use: all but the retired ones. */
+  health: z.enum([...plateHealths, 'in-use']).default('in-use'),
+  kind: plateKindSchema.optional(),
+  sort: z.enum(['name', 'age', 'wavelength']).default('name'),
+  order: z.enum(['asc', 'desc']).default('asc'),
+});
+export type PlateQuery = z.infer<typeof plateQuerySchema>;
+export const platePageSchema = pageSchema(cabinetPlateSchema);
+export type PlatePage = z.infer<typeof platePageSchema>;
+
+/** How many plates are in which state. */
+export const cabinetCountsSchema = z.strictObject({
+  plates: z.record(plateHealthSchema, z.int()),
+  mounts: z.int(),
+});
+export type CabinetCounts = z.infer<typeof cabinetCountsSchema>;
+
+/** A calibration with the seat that it was measured in. */
+const seatedCalibrationSchema = calibrationSchema.extend({ seatId: idSchema });
+export type SeatedCalibration = z.infer<typeof seatedCalibrationSchema>;
+
+export const plateDetailSchema = z.strictObject({
+  plate: cabinetPlateSchema,
+  /** Newest first. */
+  seats: z.array(seatSchema),
+  /** Of every seat, newest first. */
+  calibrations: z.array(seatedCalibrationSchema),
+  files: z.array(attachedFileSchema),
+});
+export type PlateDetail = z.infer<typeof plateDetailSchema>;
 
 const plateFields = {
   name: lineSchema(20, "plate's name"),
@@ -110,26 +130,17 @@ const plateFields = {
     .int('An order is a whole number of waves. Write 0 for a zero-order plate.')
     .min(0, 'An order is a whole number of waves, 0 or more.')
     .max(200, 'An order is at most 200 waves.'),
+  serial: noteSchema(60, 'serial number'),
+  clearApertureMm: numberSchema('A clear aperture', 0.1, 500, ' mm', '22.5').nullable(),
+  coatingNm: z
+    .strictObject({ from: wavelengthSchema, to: wavelengthSchema })
+    .refine(({ from, to }) => to > from, {
+      path: ['to'],
+      error: 'A coating range ends above where it begins. Write the longer wavelength here.',
+    })
+    .nullable(),
+  damageNote: noteSchema(500, 'damage note'),
   note: noteSchema(500, 'note'),
-  mount: z.strictObject({
-    name: lineSchema(20, "mount's name"),
-    direction: directionSchema,
-    resolutionDeg: numberSchema('The finest step of a dial', 0.001, 10, '°', '0.1'),
-    repeatabilityDeg: numberSchema('The repeatability of a dial', 0, 5, '°', '0.05'),
-    rangeDeg: z
-      .strictObject({
-        from: numberSchema('The first reading', -720, 720, '°', '0'),
-        to: numberSchema('The last reading', -720, 1440, '°', '350'),
-      })
-      .refine(({ from, to }) => to - from >= 180, {
-        path: ['to'],
-        error: 'A plate needs half a turn of its mount: write a last reading at least 180° above the first.',
-      })
-      .nullable(),
-    speedDegPerS: numberSchema('A speed', 0.01, 3600, '°/s', '20').nullable(),
-    backlashDeg: numberSchema('The backlash', 0, 10, '°', '0.1'),
-    approach: approachSchema,
-  }),
 };
 
 /** @returns a sentence where the order is not one that a plate built so has, else null. */
@@ -155,10 +166,25 @@ const orderOfConstruction = z.superRefine<Parameters<typeof orderFault>[0]>((pla
   if (message !== null) context.addIssue({ code: 'custom', path: ['order'], message });
 });
 
+/** Where a new plate sits from the start: in a mount of the cabinet, in one that comes with it, or nowhere yet. */
+const firstSeatSchema = z.discriminatedUnion('kind', [
+  z.strictObject({ kind: z.literal('none') }),
+  z.strictObject({
+    kind: z.literal('mount'),
+    mountId: idSchema,
+    calibration: calibrationInputSchema.nullable(),
+  }),
+  z.strictObject({
+    kind: z.literal('new-mount'),
+    mount: writeMountSchema,
+    calibration: calibrationInputSchema.nullable(),
+  }),
+]);
+
 export const createPlateSchema = z
-  .strictObject({ ...plateFields, calibration: calibrationInputSchema })
+  .strictObject({ ...plateFields, seat: firstSeatSchema })
   .check(orderOfConstruction);
 export type CreatePlate = z.infer<typeof createPlateSchema>;
-/** Everything of a plate but what was measured; needs If-Match. */
+/** What a plate is; needs If-Match. Where it sits and what was measured have addresses of their own. */
 export const updatePlateSchema = z.strictObject(plateFields).check(orderOfConstruction);
 export type UpdatePlate = z.infer<typeof updatePlateSchema>;

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { idSchema, timestampSchema } from './common';
-import { plateSchema } from './cabinet';
+import { cabinetPlateSchema } from './cabinet';
+import { openQuestionSchema } from './calibrations';
 import { runSummarySchema } from './runs';
 
 /** One thing that waits for the person who asks; people before data before dates. */
@@ -47,6 +48,20 @@ export const waitingItemSchema = z.discriminatedUnion('kind', [
     calibratedAtNm: z.number(),
     benchNm: z.number(),
   }),
+  z.strictObject({
+    kind: z.literal('plate-not-ready'),
+    plateId: idSchema,
+    plateName: z.string(),
+    why: z.enum(['not-seated', 'not-calibrated']),
+    benchNames: z.array(z.string()),
+  }),
+  z.strictObject({
+    kind: z.literal('open-question'),
+    plateId: idSchema,
+    plateName: z.string(),
+    questions: z.array(openQuestionSchema),
+    benchNames: z.array(z.string()),
+  }),
   z.strictObject({ kind: z.literal('no-plates') }),
   z.strictObject({ kind: z.literal('no-bench') }),
   z.strictObject({ kind: z.literal('no-protocol') }),
@@ -74,6 +89,7 @@ export type LastMade = z.infer<typeof lastMadeSchema>;
 export const homeSchema = z.strictObject({
   waiting: z.array(waitingItemSchema),
   lastMade: z.array(lastMadeSchema),
-  cabinet: z.array(plateSchema),
+  /** The plates that stand in some beam. */
+  cabinet: z.array(cabinetPlateSchema),
 });
 export type Home = z.infer<typeof homeSchema>;

@@ -61,6 +61,8 @@ export const startRunSchema = z.strictObject({
   startDialsDeg: z.array(dialSchema.nullable()).max(6),
   /** The person has read and acknowledged the laser caution of the bench. */
   cautionAcknowledged: z.literal(true, 'Read the caution and acknowledge it before the run starts.'),
+  /** The person knows that dials of a plate that was seated anew since are void, and starts all the same. */
+  staleAcknowledged: z.boolean('Say whether dials that are void are known to be so: true or false.'),
 });
 export type StartRun = z.infer<typeof startRunSchema>;
 

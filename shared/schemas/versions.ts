@@ -1,14 +1,10 @@
 import { z } from 'zod';
 import { idSchema, pageSchema, timestampSchema } from './common';
 import { laserClassSchema } from './benches';
-import {
-  calibrationSchema,
-  mountSchema,
-  plateConstructionSchema,
-  plateKindSchema,
-  plateMaterialSchema,
-} from './cabinet';
+import { plateConstructionSchema, plateKindSchema, plateMaterialSchema } from './cabinet';
+import { calibrationSchema } from './calibrations';
 import { conventionSchema } from './labs';
+import { mountSchema } from './mounts';
 import { objectiveSchema, protocolKindSchema, versionSummarySchema } from './protocols';
 
 /** S1, S2, S3 in the canonical frame. */
@@ -85,7 +81,7 @@ export type FrozenTarget = z.infer<typeof frozenTargetSchema>;
 
 /** All that a version freezes. Its canonical JSON (RFC 8785) is what the hash covers, its parent's hash included. */
 export const versionContentSchema = z.strictObject({
-  format: z.literal('quarterturn.version/2'),
+  format: z.literal('quarterturn.version/3'),
   lab: z.strictObject({ id: idSchema, name: z.string() }),
   protocol: z.strictObject({ id: idSchema, name: z.string(), purpose: z.string() }),
   number: z.int(),

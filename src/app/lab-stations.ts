@@ -8,6 +8,8 @@ const stationOf: Readonly<Record<WaitingItem['kind'], StationKey | null>> = {
   'dialled-not-within': 'results',
   'calibration-due': 'cabinet',
   'calibrated-elsewhere': 'cabinet',
+  'plate-not-ready': 'cabinet',
+  'open-question': 'cabinet',
   'no-plates': null,
   'no-bench': null,
   'no-protocol': null,

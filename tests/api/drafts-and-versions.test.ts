@@ -12,7 +12,7 @@ import {
 } from '../../shared/schemas';
 import { answered, call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
-import { makeLab, quarterBody, saveVersion, shownFor, target, type TestLab } from './support/lab';
+import { makeLab, quarterCalibration, saveVersion, shownFor, target, type TestLab } from './support/lab';
 
 let harness: Harness;
 let lead: Agent;
@@ -117,10 +117,10 @@ test('versions chain by their hashes and never change, whatever happens to the p
   protocol = await get(at, protocolSchema);
   await saveVersion(harness, lead, lab.labId, protocol, 'Second.');
   const plate = await get(`/labs/${lab.labId}/plates/${lab.plateIds[1]}`, plateDetailSchema);
-  const measured = plate.plate.calibration;
+  const measured = plate.plate.calibration ?? quarterCalibration();
   await answered(
     call(harness, lead, 'post', `/labs/${lab.labId}/plates/${lab.plateIds[1]}/calibrations`, {
-      body: { ...quarterBody('any').calibration, retardanceDeg: measured.retardanceDeg + 0.5 },
+      body: { ...quarterCalibration(), retardanceDeg: measured.retardanceDeg + 0.5 },
     }),
     z.unknown(),
   );
@@ -196,7 +196,7 @@ test('a version is refused only when it would hold nothing new: a new calibratio
     `/labs/${lab.labId}/plates/${lab.plateIds[0]}/calibrations`,
     {
       body: {
-        ...quarterBody('any').calibration,
+        ...quarterCalibration(),
         retardanceDeg: 179.9,
         offsetDeg: 13,
         measuredAt: '2026-06-20T10:00:00Z',

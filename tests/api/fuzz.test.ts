@@ -2,7 +2,8 @@ import fc from 'fast-check';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
-import { benchBody, makeLab, plateBody, target, type TestLab } from './support/lab';
+import { newMount } from '../support/plates';
+import { benchBody, calibrationBody, makeLab, plateBody, target, type TestLab } from './support/lab';
 
 let harness: Harness;
 let lead: Agent;
@@ -86,7 +87,7 @@ test('three thousand mutated requests to every writing address: each a clear ans
     toleranceInfidelity: 1e-3,
     targets: [target('t', 'H'), target('u', '(H + i V)/sqrt(2)')],
   };
-  const { name, calibration, kind, designWavelengthNm, note, mount } = plateBody('F-1');
+  const { seat: _seat, ...facts } = plateBody('F-1');
   const targets: readonly (readonly ['post' | 'put' | 'patch', string, unknown])[] = [
     ['post', '/labs', { name: 'A lab' }],
     [
@@ -99,9 +100,14 @@ test('three thousand mutated requests to every writing address: each a clear ans
       },
     ],
     ['post', `${at}/invitations`, { role: 'guest', note: 'x' }],
-    ['post', `${at}/plates`, { name, kind, designWavelengthNm, note, mount, calibration }],
-    ['put', `${at}/plates/${lab.sparePlateId}`, { name, kind, designWavelengthNm, note, mount }],
-    ['post', `${at}/plates/${lab.sparePlateId}/calibrations`, calibration],
+    ['post', `${at}/plates`, plateBody('F-1')],
+    ['put', `${at}/plates/${lab.sparePlateId}`, facts],
+    ['post', `${at}/plates/${lab.sparePlateId}/calibrations`, calibrationBody()],
+    ['put', `${at}/plates/${lab.sparePlateId}/seat`, { mountId: lab.spareMountId, why: 'cleaned' }],
+    ['post', `${at}/plates/${lab.sparePlateId}/take-out`, { why: 'cleaned' }],
+    ['post', `${at}/plates/${lab.sparePlateId}/files`, { fileId: lab.fileId, kind: 'data-sheet' }],
+    ['post', `${at}/mounts`, newMount({ name: 'F-M' })],
+    ['put', `${at}/mounts/${lab.spareMountId}`, newMount({ name: 'F-M' })],
     ['post', `${at}/benches`, benchBody(lab.plateIds, 'b')],
     ['put', `${at}/benches/${lab.benchId}`, benchBody(lab.plateIds)],
     ['post', `${at}/protocols`, draft],
@@ -125,7 +131,12 @@ test('three thousand mutated requests to every writing address: each a clear ans
     [
       'post',
       `${at}/runs`,
-      { versionId: lab.version.id, startDialsDeg: [null, 1], cautionAcknowledged: true },
+      {
+        versionId: lab.version.id,
+        startDialsDeg: [null, 1],
+        cautionAcknowledged: true,
+        staleAcknowledged: false,
+      },
     ],
     [
       'post',

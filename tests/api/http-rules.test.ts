@@ -141,9 +141,8 @@ test('what another site, or another port of this host, sends is refused before a
 
 test('a refusal is a problem document with its fields and the request id of its header', async () => {
   const body = {
-    ...plateBody(''),
+    ...plateBody('', { calibration: { retardanceDeg: 400 } }),
     surprise: 1,
-    calibration: { ...plateBody('x').calibration, retardanceDeg: 400 },
   };
   const response = await call(harness, lead, 'post', `/labs/${lab.labId}/plates`, { body });
   expect(response.status).toBe(400);
@@ -151,11 +150,11 @@ test('a refusal is a problem document with its fields and the request id of its 
   const problem = problemSchema.parse(JSON.parse(response.text));
   expect(problem.requestId).toBe(response.headers['x-request-id']);
   expect(problem.fields?.map((field) => field.path).toSorted()).toEqual([
-    'calibration.retardanceDeg',
     'name',
+    'seat.calibration.retardanceDeg',
     'surprise',
   ]);
-  expect(problem.fields?.find((field) => field.path === 'calibration.retardanceDeg')?.message).toBe(
+  expect(problem.fields?.find((field) => field.path === 'seat.calibration.retardanceDeg')?.message).toBe(
     'A retardance is from 0.1 to 359.9°.',
   );
 });

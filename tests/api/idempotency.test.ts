@@ -1,5 +1,10 @@
 import { afterAll, beforeAll, expect, test } from 'vitest';
-import { createdInvitationSchema, plateListSchema, plateSchema, runSchema } from '../../shared/schemas';
+import {
+  createdInvitationSchema,
+  platePageSchema,
+  cabinetPlateSchema,
+  runSchema,
+} from '../../shared/schemas';
 import { answered, call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
 import { makeLab, plateBody, type TestLab } from './support/lab';
@@ -26,13 +31,13 @@ test('ten keys, each sent twenty times at once, make ten plates; a repeat in fli
     );
     const made = answers.filter(({ status }) => status === 201);
     expect(made.length).toBeGreaterThan(0);
-    expect(new Set(made.map(({ text }) => plateSchema.parse(JSON.parse(text)).id)).size).toBe(1);
+    expect(new Set(made.map(({ text }) => cabinetPlateSchema.parse(JSON.parse(text)).id)).size).toBe(1);
     for (const waiting of answers.filter(({ status }) => status !== 201)) {
       expect([409, 503]).toContain(waiting.status);
       expect(waiting.headers['retry-after']).toMatch(/^\d+$/);
     }
   }
-  const { items } = await answered(call(harness, lead, 'get', `/labs/${lab.labId}/plates`), plateListSchema);
+  const { items } = await answered(call(harness, lead, 'get', `/labs/${lab.labId}/plates`), platePageSchema);
   expect(items.filter(({ name }) => name.startsWith('ten-keys')).length).toBe(10);
 }, 60_000);
 
@@ -55,10 +60,7 @@ test('a creating call without a key is refused, and a key used for something els
 
 test('a refused call stores nothing under its key, so that the corrected one goes through', async () => {
   const path = `/labs/${lab.labId}/plates`;
-  const future = {
-    ...plateBody('K-9'),
-    calibration: { ...plateBody('K-9').calibration, measuredAt: '2999-01-01T00:00:00Z' },
-  };
+  const future = plateBody('K-9', { calibration: { measuredAt: '2999-01-01T00:00:00Z' } });
   expect((await call(harness, lead, 'post', path, { body: future, key: 'corrected-later' })).status).toBe(
     422,
   );

@@ -4,7 +4,7 @@ import {
   benchSchema,
   type DraftContent,
   labSchema,
-  plateSchema,
+  cabinetPlateSchema,
   problemSchema,
   type Protocol,
   protocolSchema,
@@ -19,6 +19,7 @@ import {
   makeLab,
   plateBody,
   quarterBody,
+  quarterCalibration,
   shownFor,
   target,
   type TestLab,
@@ -55,7 +56,7 @@ beforeAll(async () => {
   ].entries()) {
     const { id } = await answered(
       call(harness, lead, 'post', at('/plates'), { body: made(`P-${k}`) }),
-      plateSchema,
+      cabinetPlateSchema,
     );
     ids.push(id);
   }
@@ -179,9 +180,8 @@ test.for([
 });
 
 async function calibrated() {
-  const { calibration } = plateBody('x');
   const response = await call(harness, other, 'post', at(`/plates/${plateIds[0] ?? ''}/calibrations`), {
-    body: { ...calibration, retardanceDeg: 86.9, offsetDeg: 301.73, measuredAt: '2026-07-01T10:00:00Z' },
+    body: quarterCalibration({ measuredAt: '2026-07-01T10:00:00Z' }),
   });
   expect(response.status).toBe(201);
 }

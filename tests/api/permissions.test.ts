@@ -4,9 +4,10 @@ import type { Role } from '../../shared/permissions';
 import { problemSchema } from '../../shared/schemas';
 import type { Route } from '../../server/http/route';
 import { allRoutes } from '../../server/routes';
-import { call } from './support/calls';
+import { call, upload } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
-import { benchBody, join, makeLab, plateBody, target, type TestLab } from './support/lab';
+import { newMount } from '../support/plates';
+import { benchBody, calibrationBody, join, makeLab, plateBody, target, type TestLab } from './support/lab';
 
 /** Who may: written here by hand from product.md's table of roles, not from the code that is tested. */
 type Least = 'anyone' | 'signed-in' | 'guest' | 'operator' | 'designer' | 'lead';
@@ -16,11 +17,16 @@ interface Row {
   readonly body?: (lab: TestLab) => unknown;
   /** The lab's own id is in the path anyway; these are the ids of one thing in it. */
   readonly ids?: (lab: TestLab) => Record<string, string>;
+  /** The text of a file that is sent instead of JSON. */
+  readonly upload?: string;
+  /** The first who may leaves nothing for the next. */
+  readonly usedUp?: true;
   /** Nobody is signed in after it, so each signs in for it. */
   readonly spendsSession?: boolean;
 }
 
 const plateId = (lab: TestLab) => ({ plateId: lab.sparePlateId });
+const mountId = (lab: TestLab) => ({ mountId: lab.spareMountId });
 const benchId = (lab: TestLab) => ({ benchId: lab.benchId });
 const protocolId = (lab: TestLab) => ({ protocolId: lab.protocolId });
 const runId = (lab: TestLab) => ({ runId: lab.runId });
@@ -37,7 +43,7 @@ const draftBody = (lab: TestLab) => ({
   toleranceInfidelity: 1e-3,
   targets: [target('t1', 'H')],
 });
-const { calibration, kind, designWavelengthNm, note, mount } = plateBody('x');
+const { seat: _seat, ...plateFacts } = plateBody('H-9');
 
 const table: Readonly<Record<string, Row>> = {
   'GET /session': { least: 'anyone' },
@@ -60,16 +66,52 @@ const table: Readonly<Record<string, Row>> = {
   'GET /labs/:labId/plates/:plateId': { least: 'guest', ids: plateId },
   'PUT /labs/:labId/plates/:plateId': {
     least: 'designer',
-    body: () => ({ name: 'H-9', kind, designWavelengthNm, note, mount }),
+    body: () => plateFacts,
     ids: plateId,
   },
   'POST /labs/:labId/plates/:plateId/calibrations': {
     least: 'operator',
-    body: () => calibration,
+    body: () => calibrationBody(),
     ids: plateId,
   },
   'POST /labs/:labId/plates/:plateId/retire': { least: 'designer', ids: plateId },
   'POST /labs/:labId/plates/:plateId/return': { least: 'designer', ids: plateId },
+  'GET /labs/:labId/cabinet': { least: 'guest' },
+  'PUT /labs/:labId/plates/:plateId/seat': {
+    least: 'designer',
+    body: (lab) => ({ mountId: lab.spareMountId, why: 'cleaned' }),
+    ids: plateId,
+  },
+  'POST /labs/:labId/plates/:plateId/take-out': {
+    least: 'designer',
+    body: () => ({ why: 'cleaned' }),
+    ids: plateId,
+  },
+  'POST /labs/:labId/plates/:plateId/files': {
+    least: 'designer',
+    body: (lab) => ({ fileId: lab.fileId, kind: 'data-sheet' }),
+    ids: plateId,
+  },
+  'DELETE /labs/:labId/plates/:plateId/files/:fileId': {
+    least: 'designer',
+    ids: (lab) => ({ plateId: lab.plateIds[0], fileId: lab.fileId }),
+    usedUp: true,
+  },
+  'GET /labs/:labId/mounts': { least: 'guest' },
+  'POST /labs/:labId/mounts': {
+    least: 'designer',
+    body: () => newMount({ name: randomUUID().slice(0, 8) }),
+  },
+  'GET /labs/:labId/mounts/:mountId': { least: 'guest', ids: mountId },
+  'PUT /labs/:labId/mounts/:mountId': {
+    least: 'designer',
+    body: () => newMount({ name: 'M-S' }),
+    ids: mountId,
+  },
+  'POST /labs/:labId/mounts/:mountId/retire': { least: 'designer', ids: mountId },
+  'POST /labs/:labId/mounts/:mountId/return': { least: 'designer', ids: mountId },
+  'POST /labs/:labId/files': { least: 'operator', upload: 'dial,power\n0,1\n' },
+  'GET /labs/:labId/files/:fileId': { least: 'guest', ids: (lab) => ({ fileId: lab.fileId }) },
   'GET /labs/:labId/benches': { least: 'guest' },
   'POST /labs/:labId/benches': { least: 'designer', body: (lab) => benchBody(lab.plateIds, 'another') },
   'GET /labs/:labId/benches/:benchId': { least: 'guest', ids: benchId },
@@ -101,7 +143,12 @@ const table: Readonly<Record<string, Row>> = {
   'GET /labs/:labId/runs': { least: 'guest' },
   'POST /labs/:labId/runs': {
     least: 'operator',
-    body: (lab) => ({ versionId: lab.version.id, startDialsDeg: [null, null], cautionAcknowledged: true }),
+    body: (lab) => ({
+      versionId: lab.version.id,
+      startDialsDeg: [null, null],
+      cautionAcknowledged: true,
+      staleAcknowledged: false,
+    }),
   },
   'GET /labs/:labId/runs/:runId': { least: 'guest', ids: runId },
   'POST /labs/:labId/runs/:runId/readings': {
@@ -190,6 +237,7 @@ function addressed(route: Route, labId: string, lab: TestLab, ids: Record<string
 
 function ask(route: Route, actor: Actor, path: string) {
   const row = rowOf(route);
+  if (row.upload !== undefined) return upload(harness, agentOf(actor), path, row.upload);
   return call(harness, agentOf(actor), route.method, path, {
     ...(row.body === undefined ? {} : { body: row.body(own) }),
     ifMatch: '"r1"',
@@ -258,7 +306,7 @@ describe.each(ordered.map((route) => [nameOf(route), route] as const))('%s', (_n
 
 /** A second one who may finds the invitation used or the member gone: that is no refusal of the person. */
 function isMissing(route: Route, status: number): boolean {
-  const usedUp = /:(?:token|invitationId|userId)/.test(route.path);
+  const usedUp = rowOf(route).usedUp === true || /:(?:token|invitationId|userId)/.test(route.path);
   return status === 404 && !usedUp;
 }
 

@@ -5,7 +5,7 @@ import {
   createdInvitationSchema,
   memberListSchema,
   memberSchema,
-  plateSchema,
+  cabinetPlateSchema,
   runSchema,
 } from '../../shared/schemas';
 import { answered, call } from './support/calls';
@@ -119,8 +119,14 @@ test('a plate comes back under its name or is refused in words, also when anothe
   const path = at('/plates');
   for (let round = 0; round < 6; round += 1) {
     const name = `T-${round}`;
-    const old = await answered(call(harness, lead, 'post', path, { body: plateBody(name) }), plateSchema);
-    await answered(call(harness, lead, 'post', `${path}/${old.id}/retire`, { ifMatch: '"r1"' }), plateSchema);
+    const old = await answered(
+      call(harness, lead, 'post', path, { body: plateBody(name) }),
+      cabinetPlateSchema,
+    );
+    await answered(
+      call(harness, lead, 'post', `${path}/${old.id}/retire`, { ifMatch: '"r1"' }),
+      cabinetPlateSchema,
+    );
     const [returned, added] = await Promise.all([
       call(harness, lead, 'post', `${path}/${old.id}/return`, { ifMatch: '"r2"' }),
       call(harness, lead, 'post', path, { body: plateBody(name) }),

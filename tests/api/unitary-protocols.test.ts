@@ -6,7 +6,7 @@ import {
   benchSchema,
   type DraftContent,
   labSchema,
-  plateSchema,
+  cabinetPlateSchema,
   protocolSchema,
   runSchema,
   versionSchema,
@@ -26,7 +26,7 @@ beforeAll(async () => {
   const lab = await answered(call(harness, lead, 'post', '/labs', { body: { name: 'Gate lab' } }), labSchema);
   at = `/labs/${lab.id}`;
   const added = [quarterBody('Q-1'), plateBody('H-1'), quarterBody('Q-2')].map((body) =>
-    answered(call(harness, lead, 'post', `${at}/plates`, { body }), plateSchema),
+    answered(call(harness, lead, 'post', `${at}/plates`, { body }), cabinetPlateSchema),
   );
   plateIds = (await Promise.all(added)).map(({ id }) => id);
   const bench = await answered(
@@ -72,7 +72,12 @@ test('unitaries are frozen with the quaternion they ask for, by any objective, a
     }
     const run = await answered(
       call(harness, lead, 'post', `${at}/runs`, {
-        body: { versionId: summary.id, startDialsDeg: [null, null, 12.5], cautionAcknowledged: true },
+        body: {
+          versionId: summary.id,
+          startDialsDeg: [null, null, 12.5],
+          cautionAcknowledged: true,
+          staleAcknowledged: false,
+        },
       }),
       runSchema,
     );

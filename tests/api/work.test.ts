@@ -5,7 +5,7 @@ import {
   benchSchema,
   homeSchema,
   labSchema,
-  plateSchema,
+  cabinetPlateSchema,
   problemSchema,
   protocolSchema,
   runPageSchema,
@@ -63,11 +63,11 @@ test('a plate stands on one bench at a time: the other bench is named, and a sta
 test('a bench is refused at its field: an input that cannot be read, a plate that is retired or not there', async () => {
   const spare = await answered(
     call(harness, lead, 'post', at('/plates'), { body: plateBody('S-1') }),
-    plateSchema,
+    cabinetPlateSchema,
   );
   const other = await answered(
     call(harness, lead, 'post', at('/plates'), { body: plateBody('S-2') }),
-    plateSchema,
+    cabinetPlateSchema,
   );
   const body = benchBody([spare.id, other.id], 'spare bench');
   const input = await faultOf(
@@ -77,13 +77,13 @@ test('a bench is refused at its field: an input that cannot be read, a plate tha
   expect(input.message).toMatch(/^Column 5: /);
   await answered(
     call(harness, lead, 'post', at(`/plates/${other.id}/retire`), { ifMatch: '"r1"' }),
-    plateSchema,
+    cabinetPlateSchema,
   );
   const retired = await faultOf(call(harness, lead, 'post', at('/benches'), { body }));
   expect(retired).toMatchObject({ status: 422, path: 'plateIds.1' });
   await answered(
     call(harness, lead, 'post', at(`/plates/${other.id}/return`), { ifMatch: '"r2"' }),
-    plateSchema,
+    cabinetPlateSchema,
   );
   const bench = await answered(call(harness, lead, 'post', at('/benches'), { body }), benchSchema);
   expect(bench.plates.map(({ name }) => name)).toEqual(['S-1', 'S-2']);
@@ -195,7 +195,12 @@ test('no run starts at a bench that is retired, which is named', async () => {
     call(harness, lead, 'post', `${there}/benches/${other.benchId}/retire`, { ifMatch: '"r1"' }),
     benchSchema,
   );
-  const body = { versionId: other.version.id, startDialsDeg: [null, null], cautionAcknowledged: true };
+  const body = {
+    versionId: other.version.id,
+    startDialsDeg: [null, null],
+    cautionAcknowledged: true,
+    staleAcknowledged: false,
+  };
   const refusal = await faultOf(call(harness, lead, 'post', `${there}/runs`, { body }));
   expect(refusal.status).toBe(409);
   expect(refusal.message).toMatch(/^signal arm is retired\./);
@@ -207,7 +212,12 @@ test('no run starts at a bench that is retired, which is named', async () => {
 });
 
 test('a run does not start without the caution acknowledged', async () => {
-  const body = { versionId: lab.version.id, startDialsDeg: [null, null], cautionAcknowledged: false };
+  const body = {
+    versionId: lab.version.id,
+    startDialsDeg: [null, null],
+    cautionAcknowledged: false,
+    staleAcknowledged: false,
+  };
   const refusal = await faultOf(call(harness, operator, 'post', at('/runs'), { body }));
   expect(refusal).toMatchObject({ status: 400, path: 'cautionAcknowledged' });
 });
@@ -230,7 +240,12 @@ test('home shows each person what they could do something about, and to everyone
   );
   await answered(
     call(harness, operator, 'post', at('/runs'), {
-      body: { versionId: lab.version.id, startDialsDeg: [null, null], cautionAcknowledged: true },
+      body: {
+        versionId: lab.version.id,
+        startDialsDeg: [null, null],
+        cautionAcknowledged: true,
+        staleAcknowledged: false,
+      },
     }),
     runSchema,
   );
@@ -257,7 +272,12 @@ test('home shows each person what they could do something about, and to everyone
 test('home says of a run which setting is next and which was done last, whatever was skipped or done twice', async () => {
   const { summary } = await answered(
     call(harness, lead, 'post', at('/runs'), {
-      body: { versionId: lab.version.id, startDialsDeg: [null, null], cautionAcknowledged: true },
+      body: {
+        versionId: lab.version.id,
+        startDialsDeg: [null, null],
+        cautionAcknowledged: true,
+        staleAcknowledged: false,
+      },
     }),
     runSchema,
   );

@@ -1,4 +1,6 @@
 import type { CreatePlate, Plate } from '../../shared/schemas/cabinet';
+import type { CalibrationInput } from '../../shared/schemas/calibrations';
+import type { WriteMount } from '../../shared/schemas/mounts';
 import type { Bench } from '../../shared/schemas/benches';
 import type { DraftContent, DraftTarget } from '../../shared/schemas/protocols';
 import type { FrozenPlate } from '../../shared/schemas/versions';
@@ -48,7 +50,15 @@ const MEASURED = {
   offsetSigmaDeg: 0.05,
 } as const;
 const WRITTEN_DOWN = { method: 'scan between crossed polarisers', note: '', measuredAt: AT } as const;
-const RECORDED = { id: id(2), ...MEASURED, ...WRITTEN_DOWN, recordedBy: 'Ines Okafor' } as const;
+const NOTHING_OPEN = { openQuestions: [], settlesId: null };
+const RECORDED = {
+  id: id(2),
+  ...MEASURED,
+  ...WRITTEN_DOWN,
+  ...NOTHING_OPEN,
+  fileId: null,
+  recordedBy: 'Ines Okafor',
+};
 const NAMED_RING = { name: 'M-1', ...RING } as const;
 
 /** As much of a plate as a solver takes. */
@@ -84,15 +94,34 @@ export function plate({ mount, calibration, ...change }: PlateChange<Plate> = {}
   };
 }
 
-/** A plate as it is put into a cabinet. */
-export function newPlate({ mount, calibration, ...change }: PlateChange<CreatePlate> = {}): CreatePlate {
+/** A mount as it is put into a cabinet. */
+export function newMount(change: Partial<WriteMount> = {}): WriteMount {
+  return { ...NAMED_RING, drive: 'hand', note: '', ...change };
+}
+
+/** A calibration as a person writes it. */
+export function newCalibration(change: Partial<CalibrationInput> = {}): CalibrationInput {
+  return { ...MEASURED, ...WRITTEN_DOWN, ...NOTHING_OPEN, ...change };
+}
+
+/** What of a new plate may be other; of its mount and its calibration only what is named is. */
+export type NewPlateChange = Partial<Omit<CreatePlate, 'seat'>> & {
+  readonly mount?: Partial<WriteMount>;
+  readonly calibration?: Partial<CalibrationInput>;
+};
+
+/** A plate as it is put into a cabinet, in a mount that comes with it and calibrated there. */
+export function newPlate({ mount, calibration, ...change }: NewPlateChange = {}): CreatePlate {
   return {
     name: 'H-1',
     kind: 'half',
     ...BUILT,
+    serial: '',
+    clearApertureMm: null,
+    coatingNm: null,
+    damageNote: '',
     note: '',
-    mount: { ...NAMED_RING, ...mount },
-    calibration: { ...MEASURED, ...WRITTEN_DOWN, ...calibration },
+    seat: { kind: 'new-mount', mount: newMount(mount), calibration: newCalibration(calibration) },
     ...change,
   };
 }
@@ -147,6 +176,10 @@ export function bench(change: Partial<Bench> = {}): Bench {
     laserClass: '3B',
     hazardWavelengthsNm: [810],
     plates: [],
+    analysisPlates: [],
+    order: [],
+    notReady: [],
+    detectors: { passed: null, rejected: null, efficiencyRatio: null },
     retiredAt: null,
     revision: 1,
     ...change,

@@ -1,9 +1,16 @@
 import { z } from 'zod';
 import type { Thing } from '../../../shared/permissions';
-import { type Bench, type CreateBench, laserClassSchema } from '../../../shared/schemas';
+import {
+  type Bench,
+  type BenchPart,
+  benchPartSchema,
+  benchSchema,
+  type CreateBench,
+  laserClassSchema,
+} from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
-import { asPlate, listPlates } from '../cabinet';
+import { asReadyPlate, findPlates, type StoredPlate } from '../cabinet';
 import { holdLab } from '../labs';
 
 const benchRow = z.object({
@@ -19,32 +26,41 @@ const benchRow = z.object({
   polariser_extinction: z.number().nullable(),
   laser_class: laserClassSchema,
   hazard_wavelengths_nm: z.array(z.number()),
+  detectors: z.string(),
   retired_at: z.date().nullable(),
   revision: z.number(),
 });
-const placeRow = z.object({ bench_id: z.string(), plate_id: z.string() });
+const placeRow = z.object({ bench_id: z.string(), plate_id: z.string(), part: benchPartSchema });
 const holderRow = z.object({ plate_id: z.string(), plate_name: z.string(), bench_name: z.string() });
 
 export type StoredBench = Bench & Thing;
 
 /** What the API shows of a bench. */
-export function asBench(stored: StoredBench): Bench {
-  return {
-    id: stored.id,
-    name: stored.name,
-    wavelengthNm: stored.wavelengthNm,
-    wavelengthSigmaNm: stored.wavelengthSigmaNm,
-    temperatureC: stored.temperatureC,
-    temperatureSigmaK: stored.temperatureSigmaK,
-    inputExpression: stored.inputExpression,
-    polariserSigmaDeg: stored.polariserSigmaDeg,
-    polariserExtinction: stored.polariserExtinction,
-    laserClass: stored.laserClass,
-    hazardWavelengthsNm: stored.hazardWavelengthsNm,
-    plates: stored.plates,
-    retiredAt: stored.retiredAt,
-    revision: stored.revision,
-  };
+export function asBench({ labId: _labId, ...bench }: StoredBench): Bench {
+  return bench;
+}
+
+/** The plates of one part of a bench, or none while one of them cannot be dialled: half a beam is no beam. */
+function readyPlates(inBeam: readonly PlateInBeam[], part: BenchPart): Bench['plates'] {
+  const ready = inBeam.filter((place) => place.part === part).map(({ plate }) => asReadyPlate(plate));
+  const plates = ready.filter((plate) => plate !== null);
+  return plates.length === ready.length ? plates : [];
+}
+
+interface PlateInBeam {
+  readonly part: BenchPart;
+  readonly plate: StoredPlate;
+}
+
+function notReady(inBeam: readonly PlateInBeam[]): Bench['notReady'] {
+  return inBeam
+    .filter(({ plate }) => asReadyPlate(plate) === null)
+    .map(({ part, plate }) => ({
+      plateId: plate.id,
+      name: plate.name,
+      part,
+      why: plate.seat === null ? ('not-seated' as const) : ('not-calibrated' as const),
+    }));
 }
 
 async function withPlates(
@@ -53,34 +69,50 @@ async function withPlates(
   unread: readonly unknown[],
 ): Promise<StoredBench[]> {
   const rows = z.array(benchRow).parse(unread);
-  const plates = new Map((await listPlates(transaction, labId)).map((plate) => [plate.id, asPlate(plate)]));
-  const places = z
-    .array(placeRow)
-    .parse(
-      await transaction('bench_plates')
-        .where({ lab_id: labId })
-        .orderBy('position')
-        .select('bench_id', 'plate_id'),
+  const places = z.array(placeRow).parse(
+    await transaction('bench_plates')
+      .where({ lab_id: labId })
+      .whereIn(
+        'bench_id',
+        rows.map(({ id }) => id),
+      )
+      .orderBy(['part', 'position'])
+      .select('bench_id', 'plate_id', 'part'),
+  );
+  const found = await findPlates(transaction, labId, [...new Set(places.map(({ plate_id }) => plate_id))]);
+  const plates = new Map(found.map((plate) => [plate.id, plate]));
+  return rows.map((row) => {
+    // By name of its part preparation comes after analysis; light meets it first.
+    const inBeam = benchPartSchema.options.flatMap((part) =>
+      places
+        .filter((place) => place.bench_id === row.id && place.part === part)
+        .flatMap(({ plate_id }) => {
+          const plate = plates.get(plate_id);
+          return plate === undefined ? [] : [{ part, plate }];
+        }),
     );
-  return rows.map((row) => ({
-    id: row.id,
-    labId: row.lab_id,
-    name: row.name,
-    wavelengthNm: row.wavelength_nm,
-    wavelengthSigmaNm: row.wavelength_sigma_nm,
-    temperatureC: row.temperature_c,
-    temperatureSigmaK: row.temperature_sigma_k,
-    inputExpression: row.input_expression,
-    polariserSigmaDeg: row.polariser_sigma_deg,
-    polariserExtinction: row.polariser_extinction,
-    laserClass: row.laser_class,
-    hazardWavelengthsNm: row.hazard_wavelengths_nm,
-    plates: places
-      .filter(({ bench_id }) => bench_id === row.id)
-      .flatMap(({ plate_id }) => plates.get(plate_id) ?? []),
-    retiredAt: row.retired_at?.toISOString() ?? null,
-    revision: row.revision,
-  }));
+    return {
+      id: row.id,
+      labId: row.lab_id,
+      name: row.name,
+      wavelengthNm: row.wavelength_nm,
+      wavelengthSigmaNm: row.wavelength_sigma_nm,
+      temperatureC: row.temperature_c,
+      temperatureSigmaK: row.temperature_sigma_k,
+      inputExpression: row.input_expression,
+      polariserSigmaDeg: row.polariser_sigma_deg,
+      polariserExtinction: row.polariser_extinction,
+      laserClass: row.laser_class,
+      hazardWavelengthsNm: row.hazard_wavelengths_nm,
+      plates: readyPlates(inBeam, 'preparation'),
+      analysisPlates: readyPlates(inBeam, 'analysis'),
+      order: inBeam.map(({ part, plate }) => ({ plateId: plate.id, name: plate.name, part })),
+      notReady: notReady(inBeam),
+      detectors: benchSchema.shape.detectors.parse(JSON.parse(row.detectors)),
+      retiredAt: row.retired_at?.toISOString() ?? null,
+      revision: row.revision,
+    };
+  });
 }
 
 /** Every bench of a lab, those in use first, by name. */
@@ -144,7 +176,7 @@ export async function insertBench(
     created_at: place.now,
     ...columnsOf(bench),
   });
-  await placePlates(transaction, place.labId, id, bench.plateIds);
+  await placePlates(transaction, place.labId, id, bench);
   return id;
 }
 
@@ -157,7 +189,7 @@ export async function updateBench(
     .where({ lab_id: stored.labId, id: stored.id })
     .update({ ...columnsOf(bench), revision: stored.revision + 1 });
   await transaction('bench_plates').where({ lab_id: stored.labId, bench_id: stored.id }).delete();
-  await placePlates(transaction, stored.labId, stored.id, bench.plateIds);
+  await placePlates(transaction, stored.labId, stored.id, bench);
 }
 
 export async function setRetired(
@@ -177,11 +209,14 @@ async function placePlates(
   transaction: Transaction,
   labId: string,
   benchId: string,
-  plateIds: readonly string[],
+  { plateIds, analysisPlateIds }: CreateBench,
 ): Promise<void> {
-  await transaction('bench_plates').insert(
-    plateIds.map((plateId, position) => ({ lab_id: labId, bench_id: benchId, position, plate_id: plateId })),
-  );
+  const rowsOf = (part: BenchPart, ids: readonly string[]) =>
+    ids.map((plateId, position) => ({ lab_id: labId, bench_id: benchId, part, position, plate_id: plateId }));
+  await transaction('bench_plates').insert([
+    ...rowsOf('preparation', plateIds),
+    ...rowsOf('analysis', analysisPlateIds),
+  ]);
 }
 
 function columnsOf(bench: CreateBench) {
@@ -196,5 +231,6 @@ function columnsOf(bench: CreateBench) {
     polariser_extinction: bench.polariserExtinction,
     laser_class: bench.laserClass,
     hazard_wavelengths_nm: bench.hazardWavelengthsNm,
+    detectors: JSON.stringify(bench.detectors),
   };
 }

@@ -3,7 +3,7 @@ import { parseState } from '../../../shared/optics/expression';
 import type { CreateBench } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { refused, type FieldFault } from '../../errors';
-import { listPlates } from '../cabinet';
+import { findPlates } from '../cabinet';
 import { findHolders } from './bench-store';
 
 /**
@@ -20,17 +20,22 @@ export async function checkBench(
   if (!input.ok) {
     faults.push({ path: 'inputExpression', message: `Column ${input.error.column}: ${input.error.message}` });
   }
+  const places = [
+    ...bench.plateIds.map((plateId, index) => ({ plateId, path: `plateIds.${index}` })),
+    ...bench.analysisPlateIds.map((plateId, index) => ({ plateId, path: `analysisPlateIds.${index}` })),
+  ];
+  const plateIds = places.map(({ plateId }) => plateId);
   // Held, so that none is retired between this look and the bench's own row.
   await transaction('plates')
     .where({ lab_id: place.labId })
-    .whereIn('id', bench.plateIds)
+    .whereIn('id', plateIds)
     .orderBy('id')
     .forShare()
     .select('id');
-  const plates = new Map((await listPlates(transaction, place.labId)).map((plate) => [plate.id, plate]));
-  const holders = await findHolders(transaction, place.labId, bench.plateIds, place.benchId);
-  for (const [index, plateId] of bench.plateIds.entries()) {
-    const path = `plateIds.${index}`;
+  const found = await findPlates(transaction, place.labId, plateIds);
+  const plates = new Map(found.map((plate) => [plate.id, plate]));
+  const holders = await findHolders(transaction, place.labId, plateIds, place.benchId);
+  for (const { plateId, path } of places) {
     const plate = plates.get(plateId);
     const holder = holders.find(({ plate_id }) => plate_id === plateId);
     if (plate === undefined)

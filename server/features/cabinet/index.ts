@@ -1,2 +1,21 @@
-export { findPlate, insertCalibration, insertPlate, listPlates, asPlate } from './plate-store';
-export { plateRoutes } from './routes';
+import type { Route } from '../../http/route';
+import { attachedFileRoutes } from './attached-file-routes';
+import { calibrationRoutes } from './calibration-routes';
+import { mountRoutes } from './mount-routes';
+import { plateRoutes } from './plate-routes';
+import { seatRoutes } from './seat-routes';
+
+export { insertCalibration } from './calibration-store';
+export { asCabinetPlate, asReadyPlate, type StoredPlate } from './plate-rows';
+export { findPlate, findPlates, findPlatesInBeams, hasAnyPlate } from './plate-store';
+export { addPlate, seatPlate, takeOutPlate } from './plate-work';
+
+export function cabinetRoutes(): readonly Route[] {
+  return [
+    ...plateRoutes(),
+    ...seatRoutes(),
+    ...calibrationRoutes(),
+    ...attachedFileRoutes(),
+    ...mountRoutes(),
+  ];
+}

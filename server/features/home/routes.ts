@@ -1,7 +1,7 @@
 import { homeSchema } from '../../../shared/schemas';
 import { labParams } from '../../http/lab-params';
 import { noBody, nothing, type Route, route } from '../../http/route';
-import { asPlate, listPlates } from '../cabinet';
+import { asCabinetPlate, findPlatesInBeams, hasAnyPlate } from '../cabinet';
 import { listBenches } from '../benches';
 import { findLab } from '../labs';
 import { lastRuns } from './last-made';
@@ -20,7 +20,9 @@ export function homeRoutes(): readonly Route[] {
       body: noBody,
       response: homeSchema,
       handler: async ({ thing, member, labId, transaction, now }) => {
-        const plates = (await listPlates(transaction, labId)).filter(({ retiredAt }) => retiredAt === null);
+        const inBeams = await findPlatesInBeams(transaction, labId);
+        const plates = inBeams.map((plate) => asCabinetPlate(plate, thing, now));
+        const hasPlates = plates.length > 0 || (await hasAnyPlate(transaction, labId));
         const benches = (await listBenches(transaction, labId)).filter(({ retiredAt }) => retiredAt === null);
         const runs = await lastRuns(transaction, labId);
         const unfinished = runs.unfinished.map(({ id }) => id);
@@ -28,9 +30,9 @@ export function homeRoutes(): readonly Route[] {
         const drafts = await draftsAhead(transaction, labId);
         return {
           body: {
-            waiting: waitingFor({ lab: thing, member, plates, benches, ...facts, ...drafts, now }),
+            waiting: waitingFor({ lab: thing, member, plates, hasPlates, benches, ...facts, ...drafts, now }),
             lastMade: runs.worst.map(({ made }) => made),
-            cabinet: plates.map(asPlate),
+            cabinet: plates,
           },
         };
       },

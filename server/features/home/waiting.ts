@@ -1,20 +1,20 @@
-import { calibrationDue } from '../../../shared/calibration-due';
+import { calibrationDue, WARNED_DAYS } from '../../../shared/calibration-due';
 import { can, type Member } from '../../../shared/permissions';
-import type { Bench, Lab, Plate, RunSummary, WaitingItem } from '../../../shared/schemas';
+import type { Bench, CabinetPlate, Lab, RunSummary, WaitingItem } from '../../../shared/schemas';
 import type { DraftAhead } from './drafts-ahead';
 import type { WorstSetting } from './last-made';
 import type { Standing } from './next-settings';
 
-/** A calibration is named this many days before it falls due. */
-const warnedDays = 7;
 /** A retardance measured this far from the bench's light is another retardance. */
 const sameWavelengthNm = 0.5;
 
 interface HomeFacts {
   readonly lab: Lab;
   readonly member: Member;
-  /** In use. */
-  readonly plates: readonly Plate[];
+  /** In the beam of a bench in use. */
+  readonly plates: readonly CabinetPlate[];
+  /** Whether the cabinet holds any plate at all. */
+  readonly hasPlates: boolean;
   /** In use. */
   readonly benches: readonly Bench[];
   readonly unfinished: readonly RunSummary[];
@@ -28,15 +28,16 @@ interface HomeFacts {
 
 /** What waits for this person, and for nobody who could do nothing about it: people before data before dates. */
 export function waitingFor(facts: HomeFacts): WaitingItem[] {
-  const { lab, member, plates, benches, worst, drafts, protocolCount } = facts;
+  const { lab, member, hasPlates, benches, worst, drafts, protocolCount } = facts;
   const may = (action: Parameters<typeof can>[1]) => can(member, action, { labId: lab.id });
   const items: WaitingItem[] = [];
   if (may('runs.record')) items.push(...standing(facts));
   if (may('protocols.write'))
     items.push(...drafts.map((draft) => ({ kind: 'draft-ahead' as const, ...draft })));
   if (may('protocols.write') || may('runs.record')) items.push(...notWithin(worst));
-  if (may('calibrations.record')) items.push(...elsewhere(benches), ...due(facts));
-  if (plates.length === 0 && may('cabinet.write')) items.push({ kind: 'no-plates' });
+  if (may('calibrations.record'))
+    items.push(...notReady(facts), ...open(facts), ...elsewhere(benches), ...due(facts));
+  if (!hasPlates && may('cabinet.write')) items.push({ kind: 'no-plates' });
   if (benches.length === 0 && may('benches.write')) items.push({ kind: 'no-bench' });
   if (protocolCount === 0 && may('protocols.write')) items.push({ kind: 'no-protocol' });
   return items;
@@ -76,17 +77,52 @@ function elsewhere(benches: readonly Bench[]): WaitingItem[] {
   );
 }
 
-function due({ lab, plates, now }: HomeFacts): WaitingItem[] {
+const benchNamesOf = ({ benches }: CabinetPlate) => benches.map(({ name }) => name);
+
+function notReady({ plates }: HomeFacts): WaitingItem[] {
   return plates
-    .filter(({ benches }) => benches.length > 0)
+    .filter(({ calibration }) => calibration === null)
     .map((plate) => ({
-      kind: 'calibration-due' as const,
+      kind: 'plate-not-ready' as const,
       plateId: plate.id,
       plateName: plate.name,
-      measuredAt: plate.calibration.measuredAt,
-      daysLeft: calibrationDue(plate.calibration.measuredAt, lab.calibrationDueDays, now).daysLeft,
-      benchNames: plate.benches.map(({ name }) => name),
-    }))
-    .filter(({ daysLeft }) => daysLeft <= warnedDays)
+      why: plate.seat === null ? ('not-seated' as const) : ('not-calibrated' as const),
+      benchNames: benchNamesOf(plate),
+    }));
+}
+
+function open({ plates }: HomeFacts): WaitingItem[] {
+  return plates.flatMap((plate) =>
+    plate.calibration === null || plate.calibration.openQuestions.length === 0
+      ? []
+      : [
+          {
+            kind: 'open-question' as const,
+            plateId: plate.id,
+            plateName: plate.name,
+            questions: plate.calibration.openQuestions,
+            benchNames: benchNamesOf(plate),
+          },
+        ],
+  );
+}
+
+function due({ lab, plates, now }: HomeFacts): WaitingItem[] {
+  return plates
+    .flatMap((plate) =>
+      plate.calibration === null
+        ? []
+        : [
+            {
+              kind: 'calibration-due' as const,
+              plateId: plate.id,
+              plateName: plate.name,
+              measuredAt: plate.calibration.measuredAt,
+              daysLeft: calibrationDue(plate.calibration.measuredAt, lab.calibrationDueDays, now).daysLeft,
+              benchNames: benchNamesOf(plate),
+            },
+          ],
+    )
+    .filter(({ daysLeft }) => daysLeft <= WARNED_DAYS)
     .sort((a, b) => a.daysLeft - b.daysLeft);
 }

@@ -15,17 +15,19 @@ interface Doing {
 }
 
 const numberRow = z.object({ runs_started: z.number() });
+const endedRow = z.object({ calibration_id: z.string() });
 const benchRow = z.object({ name: z.string(), retired_at: z.date().nullable() });
 
 /**
  * Begins a run of a version.
- * @throws ProblemError 422 where the dials do not fit its bench, 409 where that bench is retired.
+ * @throws ProblemError 422 where the dials do not fit its bench, or are void and nobody said that they know; 409 where that
+ * bench is retired.
  */
 export async function startRun(
   transaction: Transaction,
   { labId, userId, at }: Doing,
   version: Version,
-  input: Pick<StartRun, 'startDialsDeg'>,
+  input: Pick<StartRun, 'startDialsDeg' | 'staleAcknowledged'>,
 ): Promise<string> {
   const plates = version.content.bench.plates.length;
   if (input.startDialsDeg.length !== plates) {
@@ -36,6 +38,7 @@ export async function startRun(
       },
     ]);
   }
+  if (!input.staleAcknowledged) await requireSeats(transaction, labId, version);
   const [counted] = z
     .array(numberRow)
     .parse(
@@ -58,6 +61,32 @@ export async function startRun(
   });
   await insertEvent(transaction, { labId, userId, at }, id, 1, 'started', '');
   return id;
+}
+
+/** A zero holds for one seat: dials that were worked out with a seat that has ended point anywhere. */
+async function requireSeats(transaction: Transaction, labId: string, version: Version): Promise<void> {
+  const { plates } = version.content.bench;
+  const ended = z.array(endedRow).parse(
+    await transaction('calibrations')
+      .join('seats', 'seats.id', 'calibrations.seat_id')
+      .where({ 'calibrations.lab_id': labId })
+      .whereIn(
+        'calibrations.id',
+        plates.map(({ calibration }) => calibration.id),
+      )
+      .whereNotNull('seats.left_at')
+      .select({ calibration_id: 'calibrations.id' }),
+  );
+  const names = plates
+    .filter(({ calibration }) => ended.some(({ calibration_id }) => calibration_id === calibration.id))
+    .map(({ name }) => name);
+  if (names.length === 0) return;
+  throw refused([
+    {
+      path: 'staleAcknowledged',
+      message: `${names.join(' and ')} ${names.length === 1 ? 'has' : 'have'} left the seat that version ${version.summary.number} was worked out for, so ${names.length === 1 ? 'its' : 'their'} dials are void. Save a new version, or say that this is known.`,
+    },
+  ]);
 }
 
 /** Held, so that the bench is not retired between this look and the run's own row; the lab's row is taken before it. */

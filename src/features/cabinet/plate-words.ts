@@ -1,6 +1,6 @@
 import { fastAxisFromDial } from '../../../shared/optics/dial';
 import { degrees } from '../../../shared/optics/units';
-import type { Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate, Plate } from '../../../shared/schemas/cabinet';
 import { withTrueMinus } from '../../lib/format';
 
 /** Between a number and its unit in plain text. */
@@ -20,9 +20,13 @@ export function directionWords(direction: 1 | -1): string {
   return `numbers rise when it is turned ${direction === 1 ? 'counter-clockwise' : 'clockwise'}`;
 }
 
-/** The table angle of the fast axis with the dial at 0: how a plate is drawn where nobody says what its dial reads. */
-export function restingAxisDeg({ mount, calibration }: Plate): number {
-  return fastAxisFromDial(degrees(0), { ...mount, offsetDeg: calibration.offsetDeg });
+/**
+ * The table angle of the fast axis with the dial at 0: how a plate is drawn where nobody says what its dial reads. Null
+ * while nobody knows it.
+ */
+export function restingAxisDeg({ seat, calibration }: CabinetPlate): number | null {
+  if (seat === null || calibration === null) return null;
+  return fastAxisFromDial(degrees(0), { ...seat.mount, offsetDeg: calibration.offsetDeg });
 }
 
 type Names = Readonly<Record<string, string>>;

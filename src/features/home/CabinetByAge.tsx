@@ -1,13 +1,19 @@
 import { Link } from 'react-router-dom';
-import type { Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { AgeRing } from '../../components/AgeRing';
 import { SectionHead } from '../../components/SectionHead';
 import { TextLink } from '../../components/TextLink';
 import { calibrationAge, restingAxisDeg } from '../cabinet';
 import { useLab } from '../labs';
 
-/** The lab's plates with how old each one's calibration is. */
-export function CabinetByAge({ plates, now }: { readonly plates: readonly Plate[]; readonly now: Date }) {
+/** The plates that stand in some beam, with how old each one's calibration is. */
+export function CabinetByAge({
+  plates,
+  now,
+}: {
+  readonly plates: readonly CabinetPlate[];
+  readonly now: Date;
+}) {
   const { lab } = useLab();
   return (
     <section aria-labelledby="cabinet-by-age" className="mt-8">
@@ -21,7 +27,10 @@ export function CabinetByAge({ plates, now }: { readonly plates: readonly Plate[
       </SectionHead>
       <ul className="mt-4 flex flex-wrap gap-y-5">
         {plates.map((plate) => {
-          const age = calibrationAge(plate.calibration.measuredAt, lab.calibrationDueDays, now);
+          const age =
+            plate.calibration === null
+              ? null
+              : calibrationAge(plate.calibration.measuredAt, lab.calibrationDueDays, now);
           return (
             <li key={plate.id} className="min-w-24 max-w-40 flex-1">
               <Link
@@ -31,12 +40,17 @@ export function CabinetByAge({ plates, now }: { readonly plates: readonly Plate[
                 <AgeRing
                   radius={33}
                   fastAxisDeg={restingAxisDeg(plate)}
-                  ageDays={age.ageDays}
+                  ageDays={age?.ageDays ?? null}
+                  unsettled={plate.health === 'open-question'}
                   dueDays={lab.calibrationDueDays}
                 />
                 <span className="font-strong mt-1">{plate.name}</span>
-                <span className={age.overdue ? 'text-s text-fault font-strong' : 'text-s text-ink-2'}>
-                  {age.words}
+                <span
+                  className={
+                    age === null || age.overdue ? 'text-s text-fault font-strong' : 'text-s text-ink-2'
+                  }
+                >
+                  {age?.words ?? (plate.seat === null ? 'in no mount' : 'not calibrated')}
                 </span>
               </Link>
             </li>

@@ -1,4 +1,4 @@
-import type { Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import type { WaitingItem } from '../../../shared/schemas/home';
 import { AgeRing } from '../../components/AgeRing';
 import { RingDial } from '../../components/RingDial';
@@ -20,7 +20,7 @@ function NotWithinSign() {
 /** What a waiting thing is, drawn; the sentence beside it says the same. */
 export function WaitingSign(props: {
   readonly item: WaitingItem;
-  readonly cabinet: readonly Plate[];
+  readonly cabinet: readonly CabinetPlate[];
   readonly dueDays: number;
   readonly now: Date;
 }) {
@@ -40,6 +40,20 @@ export function WaitingSign(props: {
           fastAxisDeg={plate === undefined ? 0 : restingAxisDeg(plate)}
           ageDays={calibrationAge(item.measuredAt, dueDays, now).ageDays}
           dueDays={dueDays}
+        />
+      );
+    }
+    case 'plate-not-ready':
+    case 'open-question': {
+      const plate = cabinet.find(({ id }) => id === item.plateId);
+      const axisDeg = plate === undefined ? null : restingAxisDeg(plate);
+      return (
+        <AgeRing
+          radius={13}
+          fastAxisDeg={axisDeg}
+          ageDays={null}
+          dueDays={dueDays}
+          unsettled={item.kind === 'open-question'}
         />
       );
     }

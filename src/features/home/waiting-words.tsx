@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react';
 import type { Action } from '../../../shared/permissions';
+import type { OpenQuestion } from '../../../shared/schemas/calibrations';
 import type { WaitingItem } from '../../../shared/schemas/home';
 import { Quantity } from '../../components/NumberText';
 import { Scientific } from '../../components/Scientific';
@@ -26,6 +27,28 @@ export interface WaitingContext {
 function listed(names: readonly string[]): string {
   const last = names.at(-1) ?? '';
   return names.length < 2 ? last : `${names.slice(0, -1).join(', ')} and ${last}`;
+}
+
+function openTitle(plateName: string, questions: readonly OpenQuestion[]): string {
+  if (questions.includes('axis')) return `Nobody has settled which axis of ${plateName} is the fast one`;
+  if (questions.includes('branch')) return `The retardance of ${plateName} may be 360° less what is written`;
+  return `The retardance of ${plateName} was measured where a scan is blind to it`;
+}
+
+/** What makes a plate ready again, for whoever may do it. */
+function readyWay(
+  { plateId, plateName, why }: Extract<WaitingItem, { kind: 'plate-not-ready' }>,
+  base: string,
+  may: WaitingContext['may'],
+): WaitingWords['way'] {
+  const to = `${base}/cabinet/${plateId}`;
+  if (why === 'not-seated' && may('cabinet.write')) {
+    return { label: `Seat ${plateName}`, to: `${to}?do=seat` };
+  }
+  if (why === 'not-calibrated' && may('calibrations.record')) {
+    return { label: `Calibrate ${plateName}`, to: `${to}?do=calibrate` };
+  }
+  return { label: `Open ${plateName}`, to };
 }
 
 /** Counted as under the cabinet's rings, so that both name the same day. */
@@ -146,6 +169,30 @@ export function waitingWords(item: WaitingItem, { labId, now, dueDays, may }: Wa
           <>
             Its retardance on the {item.benchName} is another one, so every angle solved there is off by an
             amount that nobody has measured.
+          </>
+        ),
+        way: { label: `Open ${item.plateName}`, to: `${base}/cabinet/${item.plateId}` },
+      };
+    case 'plate-not-ready':
+      return {
+        title: (
+          <>
+            {item.plateName} {item.why === 'not-seated' ? 'sits in no mount' : 'is not calibrated'}, and the{' '}
+            <b>{listed(item.benchNames)}</b> waits for it
+          </>
+        ),
+        reason:
+          item.why === 'not-seated'
+            ? 'Seat it and calibrate it: a zero holds for one seat only.'
+            : 'It was seated and not measured since. Its old zero is void.',
+        way: readyWay(item, base, may),
+      };
+    case 'open-question':
+      return {
+        title: openTitle(item.plateName, item.questions),
+        reason: (
+          <>
+            Its last calibration could not tell, and it stands in the beam of the {listed(item.benchNames)}.
           </>
         ),
         way: { label: `Open ${item.plateName}`, to: `${base}/cabinet/${item.plateId}` },

@@ -6,7 +6,7 @@ import { Button } from '../../components/Button';
 import { NumberField } from '../../components/NumberField';
 import { TextLink } from '../../components/TextLink';
 import { VersionSeal } from '../../components/VersionSeal';
-import { newIdempotencyKey } from '../../lib/api';
+import { ApiError, newIdempotencyKey } from '../../lib/api';
 import { formatMoment } from '../../lib/format';
 import { benchQuery, LaserCaution, needsCaution } from '../benches';
 import { useLab } from '../labs';
@@ -22,6 +22,12 @@ function readStart(text: string): { readonly dialDeg: number | null; readonly fa
   return read.ok ? { dialDeg: read.dialDeg, fault: '' } : { dialDeg: null, fault: read.fault };
 }
 
+/** The sentence of a refusal that a person may overrule, else null. */
+function staleFault(error: unknown): string | null {
+  if (!(error instanceof ApiError)) return null;
+  return error.problem?.fields?.find(({ path }) => path === 'staleAcknowledged')?.message ?? null;
+}
+
 export function StartRunForm({ version }: { readonly version: Version }) {
   const { lab } = useLab();
   const navigate = useNavigate();
@@ -34,6 +40,9 @@ export function StartRunForm({ version }: { readonly version: Version }) {
   const [acknowledged, setAcknowledged] = useState(false);
   const [checked, setChecked] = useState(false);
   const [fault, setFault] = useState('');
+  // What the server says of dials that are void, once it has said so; then a person may start all the same.
+  const [voidDials, setVoidDials] = useState('');
+  const [knowsVoid, setKnowsVoid] = useState(false);
   const [busy, setBusy] = useState(false);
   // One key for one start, so that a second press after a lost answer makes no second run.
   const [key] = useState(newIdempotencyKey);
@@ -52,12 +61,15 @@ export function StartRunForm({ version }: { readonly version: Version }) {
           versionId: summary.id,
           startDialsDeg: starts.map(({ dialDeg }) => dialDeg),
           cautionAcknowledged: true,
+          staleAcknowledged: knowsVoid,
         },
         key,
       );
       await navigate(`/labs/${lab.id}/bench/runs/${run.summary.id}`);
     } catch (error) {
-      setFault(error instanceof Error ? error.message : 'The server gave no reason.');
+      const stale = staleFault(error);
+      if (stale !== null) setVoidDials(stale);
+      else setFault(error instanceof Error ? error.message : 'The server gave no reason.');
       setBusy(false);
     }
   };
@@ -143,11 +155,39 @@ export function StartRunForm({ version }: { readonly version: Version }) {
         </div>
       </section>
 
+      {voidDials !== '' && (
+        <section aria-labelledby="start-void" className="border-t-[1.5px] border-ink pt-3">
+          <h2 id="start-void" className="text-section">
+            Start with dials that are void?
+          </h2>
+          <p role="alert" className="mt-1 font-strong text-fault">
+            {voidDials}
+          </p>
+          <label className="mt-2 flex min-h-11 cursor-pointer items-center gap-3">
+            <input
+              type="checkbox"
+              className="size-5 shrink-0 accent-ink"
+              checked={knowsVoid}
+              onChange={(event) => setKnowsVoid(event.currentTarget.checked)}
+            />
+            I know, and I start all the same.
+          </label>
+        </section>
+      )}
+
       <div className="flex flex-wrap items-center gap-4">
         <Button
           kind="filled"
           type="submit"
-          waitsFor={busy ? 'the server to answer' : asksBench ? 'the bench’s present state' : undefined}
+          waitsFor={
+            busy
+              ? 'the server to answer'
+              : asksBench
+                ? 'the bench’s present state'
+                : voidDials !== '' && !knowsVoid
+                  ? 'your word that the void dials are known'
+                  : undefined
+          }
         >
           Start the run
         </Button>

@@ -1,6 +1,5 @@
 import { type Convention, infidelityBetween, parseState } from '../../../shared/optics';
 import type { Bench } from '../../../shared/schemas/benches';
-import type { Plate } from '../../../shared/schemas/cabinet';
 import type { FrozenPlate, VersionContent } from '../../../shared/schemas/versions';
 import { formatDate } from '../../lib/format';
 import { elsewhereSentence, usedElsewhere } from '../benches';
@@ -10,11 +9,23 @@ const gap = '\u202f';
 /** Two ways of writing one state differ by rounding alone below this 1 − F. */
 const sameStateInfidelity = 1e-12;
 
-function plateChanges(frozen: FrozenPlate, live: Plate | undefined, benchName: string): string[] {
+/** The plate that a version froze at one place of its beam, against the same place now. */
+function plateChanges(frozen: FrozenPlate, index: number, bench: Bench): string[] {
   const { name } = frozen;
-  if (live?.id !== frozen.id) {
-    return [`${name} no longer stands in its place at ${benchName}. This version’s dials are for it.`];
+  if (bench.order[index]?.plateId !== frozen.id) {
+    return [`${name} no longer stands in its place at ${bench.name}. This version’s dials are for it.`];
   }
+  const waits = bench.notReady.find(({ plateId }) => plateId === frozen.id);
+  if (waits !== undefined) {
+    return [
+      waits.why === 'not-seated'
+        ? `${name} was taken out of its mount. This version’s dials are void: a zero holds for one seat.`
+        : `${name} was seated anew and is not calibrated yet. This version’s dials are void.`,
+    ];
+  }
+  const live = bench.plates.find(({ id }) => id === frozen.id);
+  // Not shown as long as another plate of the beam is not ready, which is said of that one.
+  if (live === undefined) return [];
   const changes: string[] = [];
   if (live.calibration.id !== frozen.calibration.id) {
     changes.push(
@@ -63,9 +74,7 @@ export function benchChanges(content: VersionContent, live: Bench, convention: C
   if (live.retiredAt !== null) {
     changes.push(`${bench.name} was retired on ${formatDate(new Date(live.retiredAt))}.`);
   }
-  changes.push(
-    ...bench.plates.flatMap((frozen, index) => plateChanges(frozen, live.plates[index], bench.name)),
-  );
+  changes.push(...bench.plates.flatMap((frozen, index) => plateChanges(frozen, index, live)));
   if (live.wavelengthNm !== bench.wavelengthNm) {
     changes.push(
       `${bench.name} now works at ${live.wavelengthNm}${gap}nm. This version’s dials are for ${bench.wavelengthNm}${gap}nm.`,

@@ -28,6 +28,22 @@ export function call(
   return request.set('Content-Type', 'application/json').send(JSON.stringify(options.body));
 }
 
+/** A file sent as our own page sends it: its bytes as they are, under a name. */
+export function upload(
+  harness: Pick<Harness, 'origin'>,
+  agent: Agent,
+  path: string,
+  content: string | Buffer,
+  name = 'scan.csv',
+): supertest.Test {
+  return agent
+    .post(`/api/v1${path}?name=${encodeURIComponent(name)}`)
+    .set('Origin', harness.origin)
+    .set('Idempotency-Key', randomUUID())
+    .set('Content-Type', 'application/octet-stream')
+    .send(content);
+}
+
 /** The answer's body, read by its schema; anything but success fails with what the server said. */
 export async function answered<S extends z.ZodType>(
   request: supertest.Test,

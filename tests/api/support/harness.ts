@@ -53,6 +53,7 @@ export async function startHarness(options: HarnessOptions = {}): Promise<Harnes
     GITHUB_CLIENT_SECRET: client.clientSecret,
     SIGN_INS_PER_MINUTE: '100000',
     API_CALLS_PER_MINUTE: '1000000',
+    UPLOADS_PER_MINUTE: '1000000',
     ...options.environment,
   });
   const database = openDatabase(config);

@@ -1,14 +1,17 @@
 import { randomUUID } from 'node:crypto';
-import type { z } from 'zod';
+import { z } from 'zod';
 import type { Role } from '../../../shared/permissions';
 import {
   acceptedInvitationSchema,
   benchSchema,
+  type CalibrationInput,
+  cabinetMountSchema,
+  cabinetPlateSchema,
   type CreatePlate,
   createdInvitationSchema,
   type DraftContent,
+  fileSchema,
   labSchema,
-  plateSchema,
   type Protocol,
   protocolSchema,
   runSchema,
@@ -18,30 +21,44 @@ import {
 } from '../../../shared/schemas';
 import { chooseSolutions, chosenSolution } from '../../../shared/protocol/choose-solutions';
 import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
-import { draft, LIGHT, newPlate, type PlateChange, target as anyTarget } from '../../support/plates';
-import { answered, call } from './calls';
+import {
+  draft,
+  LIGHT,
+  newCalibration,
+  newMount,
+  newPlate,
+  type NewPlateChange,
+  target as anyTarget,
+} from '../../support/plates';
+import { answered, call, upload } from './calls';
 import type { Agent } from './harness';
 
 /** Where our own page would be: all that a call needs to know of the server. */
 type Us = Parameters<typeof call>[0];
 
-export function plateBody(name: string, change: PlateChange<CreatePlate> = {}): CreatePlate {
+const measuredAt = '2026-06-01T10:00:00Z';
+
+export function plateBody(name: string, change: NewPlateChange = {}): CreatePlate {
   const { mount, calibration, ...other } = change;
   return newPlate({
     name,
     designWavelengthNm: 808,
     mount: { name: `M ${name}`, repeatabilityDeg: 0.06, ...mount },
-    calibration: { measuredAt: '2026-06-01T10:00:00Z', ...calibration },
+    calibration: { measuredAt, ...calibration },
     ...other,
   });
 }
 
+export const calibrationBody = (change: Partial<CalibrationInput> = {}): CalibrationInput =>
+  newCalibration({ measuredAt, ...change });
+
+const quarter = { retardanceDeg: 86.9, offsetDeg: 301.73 };
+
 export const quarterBody = (name: string): CreatePlate =>
-  plateBody(name, {
-    kind: 'quarter',
-    mount: { direction: -1 },
-    calibration: { retardanceDeg: 86.9, offsetDeg: 301.73 },
-  });
+  plateBody(name, { kind: 'quarter', mount: { direction: -1 }, calibration: quarter });
+
+export const quarterCalibration = (change: Partial<CalibrationInput> = {}): CalibrationInput =>
+  calibrationBody({ ...quarter, ...change });
 
 export function benchBody(plateIds: readonly string[], name = 'signal arm') {
   return {
@@ -50,6 +67,8 @@ export function benchBody(plateIds: readonly string[], name = 'signal arm') {
     laserClass: '3B' as const,
     hazardWavelengthsNm: [405, 810],
     plateIds: [...plateIds],
+    analysisPlateIds: [],
+    detectors: { passed: null, rejected: null, efficiencyRatio: null },
   };
 }
 
@@ -61,6 +80,10 @@ export interface TestLab {
   readonly labId: string;
   readonly plateIds: readonly [string, string];
   readonly sparePlateId: string;
+  /** Empty. */
+  readonly spareMountId: string;
+  /** A text that the first plate has as its data sheet. */
+  readonly fileId: string;
   readonly benchId: string;
   readonly protocolId: string;
   readonly version: VersionSummary;
@@ -73,9 +96,16 @@ export async function makeLab(harness: Us, lead: Agent, name: string): Promise<T
   const post = <S extends z.ZodType>(path: string, body: unknown, schema: S) =>
     answered(call(harness, lead, 'post', path, { body }), schema);
   const { id: labId } = await post('/labs', { name }, labSchema);
-  const first = await post(`/labs/${labId}/plates`, plateBody('H-3'), plateSchema);
-  const second = await post(`/labs/${labId}/plates`, quarterBody('Q-B'), plateSchema);
-  const spare = await post(`/labs/${labId}/plates`, plateBody('H-9'), plateSchema);
+  const first = await post(`/labs/${labId}/plates`, plateBody('H-3'), cabinetPlateSchema);
+  const second = await post(`/labs/${labId}/plates`, quarterBody('Q-B'), cabinetPlateSchema);
+  const spare = await post(`/labs/${labId}/plates`, plateBody('H-9'), cabinetPlateSchema);
+  const spareMount = await post(`/labs/${labId}/mounts`, newMount({ name: 'M-S' }), cabinetMountSchema);
+  const file = await answered(
+    upload(harness, lead, `/labs/${labId}/files`, 'angle,power\n0,1\n'),
+    fileSchema,
+  );
+  const sheet = { fileId: file.id, kind: 'data-sheet' };
+  await post(`/labs/${labId}/plates/${first.id}/files`, sheet, z.unknown());
   const bench = await post(`/labs/${labId}/benches`, benchBody([first.id, second.id]), benchSchema);
   const protocol = await post(
     `/labs/${labId}/protocols`,
@@ -89,7 +119,12 @@ export async function makeLab(harness: Us, lead: Agent, name: string): Promise<T
   const version = await saveVersion(harness, lead, labId, protocol);
   const run = await post(
     `/labs/${labId}/runs`,
-    { versionId: version.id, startDialsDeg: [null, 12.5], cautionAcknowledged: true },
+    {
+      versionId: version.id,
+      startDialsDeg: [null, 12.5],
+      cautionAcknowledged: true,
+      staleAcknowledged: false,
+    },
     runSchema,
   );
   const created = await post(
@@ -101,6 +136,8 @@ export async function makeLab(harness: Us, lead: Agent, name: string): Promise<T
     labId,
     plateIds: [first.id, second.id],
     sparePlateId: spare.id,
+    spareMountId: spareMount.id,
+    fileId: file.id,
     benchId: bench.id,
     protocolId: protocol.id,
     version,

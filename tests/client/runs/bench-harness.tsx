@@ -104,6 +104,10 @@ export class FakeApi {
         revision: 1,
         calibration: { ...plate.calibration, ...(index === 1 ? { id: id(777) } : {}) },
       })),
+      analysisPlates: [],
+      order: bench.plates.map(({ id: plateId, name }) => ({ plateId, name, part: 'preparation' })),
+      notReady: [],
+      detectors: { passed: null, rejected: null, efficiencyRatio: null },
       retiredAt: null,
       revision: 1,
     };

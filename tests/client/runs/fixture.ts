@@ -71,7 +71,7 @@ export function makeVersion(repeats = 1): Version {
       savedBy: 'Ines Okafor',
     },
     content: {
-      format: 'quarterturn.version/2',
+      format: 'quarterturn.version/3',
       lab: { id: labId, name: 'Harbour Street photonics' },
       protocol: { id: protocolId, name: 'Tetrahedron, signal arm', purpose: '' },
       number: 14,

@@ -1,0 +1,83 @@
+import { type CalibrationInput, calibrationInputSchema, calibrationSchema } from '../../../shared/schemas';
+import type { Transaction } from '../../db/database';
+import { conflict, refused } from '../../errors';
+import { nothing, type Route, route } from '../../http/route';
+import { findCalibration, insertCalibration } from './calibration-store';
+import type { StoredPlate } from './plate-rows';
+import { plateParams } from './plate-routes';
+import { findPlateToChange, raiseRevision } from './plate-store';
+import { requirePast, toMilliseconds } from './plate-work';
+
+export function calibrationRoutes(): readonly Route[] {
+  return [
+    route({
+      method: 'post',
+      path: '/labs/:labId/plates/:plateId/calibrations',
+      access: { kind: 'member', action: 'calibrations.record', thing: findPlateToChange },
+      params: plateParams,
+      query: nothing,
+      body: calibrationInputSchema,
+      response: calibrationSchema,
+      idempotent: true,
+      handler: async ({ body, thing, labId, user, transaction, audit, now }) => {
+        requirePast(body.measuredAt, now, 'measuredAt');
+        const seat = seatToCalibrate(thing);
+        await requireSameSeat(transaction, thing, body);
+        const id = await insertCalibration(transaction, { labId, userId: user.id, now }, seat.id, body);
+        await raiseRevision(transaction, thing);
+        await audit({
+          kind: 'plate.calibrated',
+          subjectId: thing.id,
+          details: { calibrationId: id, calibration: body },
+        });
+        return {
+          status: 201,
+          body: {
+            ...body,
+            id,
+            fileId: null,
+            measuredAt: toMilliseconds(body.measuredAt),
+            recordedBy: user.name,
+          },
+        };
+      },
+    }),
+  ];
+}
+
+/** @throws ProblemError 409 where a measurement would hold for nothing. */
+export function seatToCalibrate(plate: StoredPlate): { readonly id: string } {
+  if (plate.retiredAt !== null) {
+    throw conflict(
+      'plate-retired',
+      `${plate.name} is retired. Return it to the cabinet before it is calibrated.`,
+    );
+  }
+  if (plate.seat === null) {
+    throw conflict(
+      'not-seated',
+      `${plate.name} sits in no mount, so a zero would hold for nothing. Seat it before it is calibrated.`,
+    );
+  }
+  return plate.seat;
+}
+
+/** Before a seat began nothing could be measured in it; and what is settled is a question of this plate's own. */
+async function requireSameSeat(
+  transaction: Transaction,
+  plate: StoredPlate,
+  { settlesId }: CalibrationInput,
+): Promise<void> {
+  if (settlesId === null) return;
+  const key = { labId: plate.labId, plateId: plate.id, calibrationId: settlesId };
+  const settled = await findCalibration(transaction, key);
+  const path = 'settlesId';
+  if (settled === null) {
+    throw refused([
+      { path, message: `${plate.name} has no such calibration. Open the plate again and choose.` },
+    ]);
+  }
+  if (settled.calibration.openQuestions.length === 0) {
+    throw refused([{ path, message: 'That calibration left nothing open.' }]);
+  }
+}

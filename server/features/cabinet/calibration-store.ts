@@ -1,0 +1,83 @@
+import { z } from 'zod';
+import type { Calibration, CalibrationInput, SeatedCalibration } from '../../../shared/schemas';
+import type { Transaction } from '../../db/database';
+import { newId } from '../../db/new-id';
+import { calibrationColumns, calibrationRow, mapCalibration } from './plate-rows';
+import { rowsOf } from './plate-store';
+
+/** The most of a plate's history that one page shows. */
+const mostShown = 1000;
+
+const seatedRow = calibrationRow.extend({ seat_id: z.string() });
+const fittedRow = calibrationRow.extend({ fit: z.string().nullable() });
+
+/** What was measured of a plate in all its seats, newest first. */
+export async function listCalibrations(
+  transaction: Transaction,
+  key: { readonly labId: string; readonly plateId: string },
+): Promise<SeatedCalibration[]> {
+  const found: unknown = await transaction.raw(
+    `select ${calibrationColumns}, c.seat_id from seats s
+      join calibrations c on c.lab_id = s.lab_id and c.seat_id = s.id join users u on u.id = c.recorded_by
+      where s.lab_id = ? and s.plate_id = ? order by c.measured_at desc, c.recorded_at desc, c.id desc limit ${mostShown}`,
+    [key.labId, key.plateId],
+  );
+  return z
+    .array(seatedRow)
+    .parse(rowsOf.parse(found).rows)
+    .map((row) => ({ ...mapCalibration(row), seatId: row.seat_id }));
+}
+
+/** One calibration of a plate, with the text of its fit where it came from a scan. */
+export async function findCalibration(
+  transaction: Transaction,
+  key: { readonly labId: string; readonly plateId: string; readonly calibrationId: string },
+): Promise<{ readonly calibration: Calibration; readonly fit: string | null } | null> {
+  const found: unknown = await transaction.raw(
+    `select ${calibrationColumns}, c.fit from calibrations c
+      join seats s on s.lab_id = c.lab_id and s.id = c.seat_id join users u on u.id = c.recorded_by
+      where c.lab_id = ? and s.plate_id = ? and c.id = ?`,
+    [key.labId, key.plateId, key.calibrationId],
+  );
+  const [row] = rowsOf.parse(found).rows;
+  if (row === undefined) return null;
+  const read = fittedRow.parse(row);
+  return { calibration: mapCalibration(read), fit: read.fit };
+}
+
+/** Of a scan: the file as it came and canonical JSON of how it was read and fitted. */
+export interface ScanRecord {
+  readonly fileId: string;
+  readonly fit: string;
+}
+
+export async function insertCalibration(
+  transaction: Transaction,
+  place: { readonly labId: string; readonly userId: string; readonly now: Date },
+  seatId: string,
+  calibration: CalibrationInput,
+  scan: ScanRecord | null = null,
+): Promise<string> {
+  const id = newId();
+  await transaction('calibrations').insert({
+    id,
+    lab_id: place.labId,
+    seat_id: seatId,
+    wavelength_nm: calibration.wavelengthNm,
+    temperature_c: calibration.temperatureC,
+    retardance_deg: calibration.retardanceDeg,
+    retardance_sigma_deg: calibration.retardanceSigmaDeg,
+    offset_deg: calibration.offsetDeg,
+    offset_sigma_deg: calibration.offsetSigmaDeg,
+    method: calibration.method,
+    note: calibration.note,
+    open_questions: calibration.openQuestions,
+    settles_id: calibration.settlesId,
+    file_id: scan?.fileId ?? null,
+    fit: scan?.fit ?? null,
+    measured_at: calibration.measuredAt,
+    recorded_by: place.userId,
+    recorded_at: place.now,
+  });
+  return id;
+}

@@ -1,0 +1,51 @@
+import { cabinetPlateSchema, seatPlateSchema, takeOutSchema } from '../../../shared/schemas';
+import { requireRevision } from '../../http/revision';
+import { nothing, type Route, route } from '../../http/route';
+import { plateParams, plateReply } from './plate-routes';
+import { findPlateToChange, raiseRevision } from './plate-store';
+import { seatPlate, takeOutPlate } from './plate-work';
+
+export function seatRoutes(): readonly Route[] {
+  return [
+    route({
+      method: 'put',
+      path: '/labs/:labId/plates/:plateId/seat',
+      access: { kind: 'member', action: 'cabinet.write', thing: findPlateToChange },
+      params: plateParams,
+      query: nothing,
+      body: seatPlateSchema,
+      response: cabinetPlateSchema,
+      needsMatch: true,
+      handler: async ({ body, thing, labId, user, transaction, audit, expectedRevision, now }) => {
+        const key = { labId, plateId: thing.id };
+        requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
+        const seatId = await seatPlate(transaction, { labId, userId: user.id, now }, thing, body);
+        await raiseRevision(transaction, thing);
+        await audit({
+          kind: 'plate.seated',
+          subjectId: thing.id,
+          details: { seatId, mountId: body.mountId, endedSeatId: thing.seat?.id ?? null, why: body.why },
+        });
+        return plateReply(transaction, key, now);
+      },
+    }),
+    route({
+      method: 'post',
+      path: '/labs/:labId/plates/:plateId/take-out',
+      access: { kind: 'member', action: 'cabinet.write', thing: findPlateToChange },
+      params: plateParams,
+      query: nothing,
+      body: takeOutSchema,
+      response: cabinetPlateSchema,
+      needsMatch: true,
+      handler: async ({ body, thing, labId, transaction, audit, expectedRevision, now }) => {
+        const key = { labId, plateId: thing.id };
+        requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
+        const details = await takeOutPlate(transaction, { labId, now }, thing, body.why);
+        await raiseRevision(transaction, thing);
+        await audit({ kind: 'plate.taken-out', subjectId: thing.id, details });
+        return plateReply(transaction, key, now);
+      },
+    }),
+  ];
+}

@@ -1,0 +1,79 @@
+import { z } from 'zod';
+import type { Seat } from '../../../shared/schemas';
+import type { Transaction } from '../../db/database';
+import { newId } from '../../db/new-id';
+import { rowsOf } from './plate-store';
+
+const seatRow = z.object({
+  id: z.string(),
+  plate_id: z.string(),
+  plate_name: z.string(),
+  mount_id: z.string(),
+  mount_name: z.string(),
+  seated_at: z.date(),
+  seated_by_name: z.string(),
+  left_at: z.date().nullable(),
+  left_why: z.string().nullable(),
+});
+
+const mostShown = 500;
+
+function mapSeat(unread: unknown): Seat {
+  const row = seatRow.parse(unread);
+  return {
+    id: row.id,
+    plate: { id: row.plate_id, name: row.plate_name },
+    mount: { id: row.mount_id, name: row.mount_name },
+    seatedAt: row.seated_at.toISOString(),
+    seatedBy: row.seated_by_name,
+    leftAt: row.left_at?.toISOString() ?? null,
+    leftWhy: row.left_why,
+  };
+}
+
+/** The seats of a plate, or of a mount, newest first. */
+export async function listSeats(
+  transaction: Transaction,
+  labId: string,
+  of: { readonly plateId: string } | { readonly mountId: string },
+): Promise<Seat[]> {
+  const column = 'plateId' in of ? 's.plate_id' : 's.mount_id';
+  const id = 'plateId' in of ? of.plateId : of.mountId;
+  const found: unknown = await transaction.raw(
+    `select s.id, s.plate_id, p.name as plate_name, s.mount_id, m.name as mount_name, s.seated_at, u.name as seated_by_name,
+        s.left_at, s.left_why
+      from seats s join plates p on p.lab_id = s.lab_id and p.id = s.plate_id
+      join mounts m on m.lab_id = s.lab_id and m.id = s.mount_id join users u on u.id = s.seated_by
+      where s.lab_id = ? and ${column} = ? order by s.seated_at desc, s.id desc limit ${mostShown}`,
+    [labId, id],
+  );
+  return rowsOf.parse(found).rows.map(mapSeat);
+}
+
+export async function insertSeat(
+  transaction: Transaction,
+  place: { readonly labId: string; readonly userId: string; readonly now: Date },
+  seat: { readonly plateId: string; readonly mountId: string },
+): Promise<string> {
+  const id = newId();
+  await transaction('seats').insert({
+    id,
+    lab_id: place.labId,
+    plate_id: seat.plateId,
+    mount_id: seat.mountId,
+    seated_at: place.now,
+    seated_by: place.userId,
+  });
+  return id;
+}
+
+/** Ends a seat, and with it the zero that was measured in it. */
+export async function endSeat(
+  transaction: Transaction,
+  key: { readonly labId: string; readonly seatId: string },
+  end: { readonly at: Date; readonly why: string },
+): Promise<void> {
+  await transaction('seats')
+    .where({ lab_id: key.labId, id: key.seatId })
+    .update({ left_at: end.at, left_why: end.why });
+}
