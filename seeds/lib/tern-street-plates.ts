@@ -74,7 +74,10 @@ const plates: readonly PlateFacts[] = [
     built: { construction: 'true-zero-order', material: null, order: 0 },
     note: 'Polymer, cemented.',
     mount: ['M04', -1, 0.1, 0.06],
-    measured: [[46, 810, 181.7, 0.6, 264.18, 0.07]],
+    measured: [
+      [128, 810, 181.9, 0.6, 264.11, 0.08],
+      [46, 810, 181.7, 0.6, 264.18, 0.07],
+    ],
   },
   {
     name: 'H-5',

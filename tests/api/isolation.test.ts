@@ -24,6 +24,9 @@ const labTables = [
   'mounts',
   'seats',
   'calibrations',
+  'files',
+  'plate_files',
+  'scan_columns',
   'benches',
   'bench_plates',
   'protocols',
@@ -37,6 +40,7 @@ const labTables = [
 const foreverTables = [
   'versions',
   'calibrations',
+  'files',
   'readings',
   'run_events',
   'audit_events',
@@ -109,7 +113,7 @@ test("nothing of another lab can be written, moved or referred to by the server'
     // A row of the own lab that points at the other lab's version or plate.
     `insert into runs (id, lab_id, number, version_id, state, setting_count, start_dials_deg, started_at, started_by)
       select gen_random_uuid(), '${own.labId}', 99, '${foreign.version.id}', 'running', 1, '{}', now(), user_id from memberships limit 1`,
-    `insert into bench_plates (lab_id, bench_id, position, plate_id) values ('${own.labId}', '${own.benchId}', 5, '${foreign.plateIds[0]}')`,
+    `insert into bench_plates (lab_id, bench_id, part, position, plate_id) values ('${own.labId}', '${own.benchId}', 'analysis', 5, '${foreign.plateIds[0]}')`,
   ];
   for (const sql of attempts) {
     await expect(
