@@ -1,0 +1,356 @@
+import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import {
+  benchSchema,
+  cabinetCountsSchema,
+  cabinetMountSchema,
+  type CabinetPlate,
+  cabinetPlateSchema,
+  calibrationSchema,
+  mountDetailSchema,
+  mountPageSchema,
+  plateDetailSchema,
+  platePageSchema,
+  problemSchema,
+  protocolSchema,
+  runSchema,
+} from '../../shared/schemas';
+import { newMount, newPlate } from '../support/plates';
+import { answered, call } from './support/calls';
+import { type Agent, type Harness, startHarness } from './support/harness';
+import {
+  calibrationBody,
+  makeLab,
+  plateBody,
+  quarterCalibration,
+  shownFor,
+  type TestLab,
+} from './support/lab';
+
+let harness: Harness;
+let lead: Agent;
+let lab: TestLab;
+beforeAll(async () => {
+  harness = await startHarness();
+  lead = await harness.signIn('adaeze-holm');
+  lab = await makeLab(harness, lead, 'Cabinet lab');
+}, 60_000);
+afterAll(async () => {
+  await harness.close();
+});
+
+const at = (path: string) => `/labs/${lab.labId}${path}`;
+const plateNow = async (plateId: string): Promise<CabinetPlate> =>
+  (await answered(call(harness, lead, 'get', at(`/plates/${plateId}`)), plateDetailSchema)).plate;
+
+async function change(plateId: string, method: 'put' | 'post', path: string, body: unknown) {
+  const { revision } = await plateNow(plateId);
+  return call(harness, lead, method, at(`/plates/${plateId}${path}`), { body, ifMatch: `"r${revision}"` });
+}
+
+function faultOf(text: string) {
+  const problem = problemSchema.parse(JSON.parse(text));
+  return { code: problem.type.split(':').at(-1), path: problem.fields?.[0]?.path, detail: problem.detail };
+}
+
+async function addPlate(name: string): Promise<CabinetPlate> {
+  return answered(call(harness, lead, 'post', at('/plates'), { body: plateBody(name) }), cabinetPlateSchema);
+}
+
+describe('a seat', () => {
+  test('that ends takes its zero with it, even when the plate comes back into the same mount', async () => {
+    const plate = await addPlate('S-1');
+    const first = plate.seat;
+    expect([plate.health, plate.calibration?.offsetDeg]).toEqual(['overdue', 12.4]);
+
+    const out = await change(plate.id, 'post', '/take-out', { why: 'Cleaned.' });
+    expect(out.status).toBe(200);
+    expect(await plateNow(plate.id)).toMatchObject({ seat: null, calibration: null, health: 'not-seated' });
+
+    const seated = await change(plate.id, 'put', '/seat', { mountId: first?.mountId, why: '' });
+    expect(seated.status).toBe(200);
+    const again = await plateNow(plate.id);
+    expect(again).toMatchObject({ calibration: null, health: 'not-calibrated' });
+    expect(again.seat?.mountId).toBe(first?.mountId);
+    expect(again.seat?.id).not.toBe(first?.id);
+
+    const history = await answered(call(harness, lead, 'get', at(`/plates/${plate.id}`)), plateDetailSchema);
+    expect(history.seats.map(({ leftWhy }) => leftWhy)).toEqual([null, 'Cleaned.']);
+    expect(history.calibrations.map(({ seatId }) => seatId)).toEqual([first?.id]);
+  });
+
+  test('is left in one step when a plate is seated anew, and that asks why', async () => {
+    const plate = await addPlate('S-2');
+    const mountId = plate.seat?.mountId;
+    const refused = await change(plate.id, 'put', '/seat', { mountId, why: '' });
+    expect([refused.status, faultOf(refused.text).path]).toEqual([422, 'why']);
+    expect((await plateNow(plate.id)).seat?.id).toBe(plate.seat?.id);
+    expect((await change(plate.id, 'put', '/seat', { mountId, why: 'Knocked.' })).status).toBe(200);
+    expect((await plateNow(plate.id)).calibration).toBeNull();
+  });
+
+  test('is refused in a mount that holds another plate, is retired or is not there, each by name', async () => {
+    const [one, other] = [await addPlate('S-3'), await addPlate('S-4')];
+    await change(one.id, 'post', '/take-out', { why: 'Moved.' });
+    const taken = await change(one.id, 'put', '/seat', { mountId: other.seat?.mountId, why: '' });
+    expect(faultOf(taken.text)).toMatchObject({
+      path: 'mountId',
+      detail: expect.stringContaining('S-4 sits in M S-4'),
+    });
+    const mount = await answered(
+      call(harness, lead, 'post', at('/mounts'), { body: newMount({ name: 'M-old' }) }),
+      cabinetMountSchema,
+    );
+    await call(harness, lead, 'post', at(`/mounts/${mount.id}/retire`), { ifMatch: '"r1"' });
+    const retired = await change(one.id, 'put', '/seat', { mountId: mount.id, why: '' });
+    expect(faultOf(retired.text).detail).toContain('M-old is retired');
+    const missing = await change(one.id, 'put', '/seat', { mountId: one.id, why: '' });
+    expect(faultOf(missing.text).detail).toContain('no such mount');
+  });
+
+  test('goes to one of two that want the same mount at the same moment', async () => {
+    const plates = [await addPlate('S-5'), await addPlate('S-6')];
+    for (const { id } of plates) await change(id, 'post', '/take-out', { why: 'Moved.' });
+    const answers = await Promise.all(
+      plates.map(({ id }) => change(id, 'put', '/seat', { mountId: lab.spareMountId, why: '' })),
+    );
+    expect(answers.map(({ status }) => status).toSorted()).toEqual([200, 422]);
+  });
+
+  test('that has ended is never opened again, not even by the database’s own role', async () => {
+    const plate = await addPlate('S-7');
+    await change(plate.id, 'post', '/take-out', { why: 'Moved.' });
+    await expect(
+      harness.database.transaction(async (transaction) => {
+        await transaction.raw(`select set_config('app.lab_id', ?, true)`, [lab.labId]);
+        await transaction('seats').where({ id: plate.seat?.id }).update({ left_at: null, left_why: null });
+      }),
+    ).rejects.toThrow(/stays so/);
+  });
+});
+
+describe('a bench whose plate was taken out', () => {
+  test('has no beam to solve for until the plate is calibrated in its new seat, and versions are refused by name', async () => {
+    const own = await makeLab(harness, lead, 'Lab of a bench that waits');
+    const path = (rest: string) => `/labs/${own.labId}${rest}`;
+    const quarter = own.plateIds[1];
+    const protocol = await answered(
+      call(harness, lead, 'get', path(`/protocols/${own.protocolId}`)),
+      protocolSchema,
+    );
+    const shown = await shownFor(harness, lead, own.labId, protocol.draft.content);
+    const plate = (await answered(call(harness, lead, 'get', path(`/plates/${quarter}`)), plateDetailSchema))
+      .plate;
+    const bench = () => answered(call(harness, lead, 'get', path(`/benches/${own.benchId}`)), benchSchema);
+    await call(harness, lead, 'post', path(`/plates/${quarter}/take-out`), {
+      body: { why: 'Cleaned.' },
+      ifMatch: `"r${plate.revision}"`,
+    });
+    expect(await bench()).toMatchObject({
+      plates: [],
+      notReady: [{ plateId: quarter, name: 'Q-B', part: 'preparation', why: 'not-seated' }],
+    });
+    const save = await call(harness, lead, 'post', path(`/protocols/${own.protocolId}/versions`), {
+      body: { message: 'Again.', shown },
+      ifMatch: '"r1"',
+    });
+    expect([save.status, faultOf(save.text).detail]).toEqual([
+      422,
+      expect.stringContaining('Q-B was taken out'),
+    ]);
+
+    await call(harness, lead, 'put', path(`/plates/${quarter}/seat`), {
+      body: { mountId: plate.seat?.mountId, why: '' },
+      ifMatch: `"r${plate.revision + 1}"`,
+    });
+    expect((await bench()).notReady.map(({ why }) => why)).toEqual(['not-calibrated']);
+    await answered(
+      call(harness, lead, 'post', path(`/plates/${quarter}/calibrations`), {
+        body: quarterCalibration({ offsetDeg: 12 }),
+      }),
+      calibrationSchema,
+    );
+    expect((await bench()).plates.map(({ calibration }) => calibration.offsetDeg)).toEqual([12.4, 12]);
+
+    const start = { versionId: own.version.id, startDialsDeg: [null, null], cautionAcknowledged: true };
+    const refused = await call(harness, lead, 'post', path('/runs'), {
+      body: { ...start, staleAcknowledged: false },
+    });
+    expect(faultOf(refused.text)).toMatchObject({
+      path: 'staleAcknowledged',
+      detail: expect.stringContaining('Q-B has left the seat that version 1 was worked out for'),
+    });
+    await answered(
+      call(harness, lead, 'post', path('/runs'), { body: { ...start, staleAcknowledged: true } }),
+      runSchema,
+    );
+  });
+});
+
+describe('a calibration', () => {
+  test('of a plate that sits nowhere is refused, since its zero would hold for nothing', async () => {
+    const plate = await addPlate('C-1');
+    await change(plate.id, 'post', '/take-out', { why: 'Moved.' });
+    const refused = await change(plate.id, 'post', '/calibrations', calibrationBody());
+    expect([refused.status, faultOf(refused.text).code]).toEqual([409, 'not-seated']);
+  });
+
+  test('leaves its question open until another one settles it, and answers only what was asked', async () => {
+    const plate = await addPlate('C-2');
+    const record = (body: unknown) =>
+      call(harness, lead, 'post', at(`/plates/${plate.id}/calibrations`), { body });
+    const open = await answered(
+      record(calibrationBody({ openQuestions: ['axis'], measuredAt: '2026-06-02T10:00:00Z' })),
+      calibrationSchema,
+    );
+    expect((await plateNow(plate.id)).health).toBe('open-question');
+    const stranger = await record(calibrationBody({ settlesId: lab.version.id }));
+    expect(faultOf(stranger.text).path).toBe('settlesId');
+    const nothing = await record(calibrationBody({ settlesId: plate.calibration?.id ?? null }));
+    expect(faultOf(nothing.text).detail).toContain('left nothing open');
+    await answered(
+      record(
+        calibrationBody({
+          settlesId: open.id,
+          offsetDeg: 102.4,
+          method: 'mark on the rim',
+          measuredAt: '2026-06-02T11:00:00Z',
+        }),
+      ),
+      calibrationSchema,
+    );
+    expect(await plateNow(plate.id)).toMatchObject({ health: 'overdue', calibration: { offsetDeg: 102.4 } });
+  });
+
+  test('that was measured before the newest one does not take its place', async () => {
+    const plate = await addPlate('C-3');
+    await call(harness, lead, 'post', at(`/plates/${plate.id}/calibrations`), {
+      body: calibrationBody({ offsetDeg: 1, measuredAt: '2025-01-01T10:00:00Z' }),
+    });
+    expect((await plateNow(plate.id)).calibration?.offsetDeg).toBe(12.4);
+  });
+});
+
+describe('lists', () => {
+  let many: TestLab;
+  const page = (query: string) =>
+    answered(call(harness, lead, 'get', `/labs/${many.labId}/plates?${query}`), platePageSchema);
+  beforeAll(async () => {
+    many = await makeLab(harness, lead, 'Lab of lists');
+    const now = new Date().toISOString();
+    const bodies = [
+      ...[10, 2, 1].map((number) => plateBody(`L-${number}`, { serial: `S/N ${number}` })),
+      plateBody('L-fresh', { calibration: { measuredAt: now } }),
+      plateBody('L-open', { calibration: { measuredAt: now, openQuestions: ['axis'] } }),
+      plateBody('50%_off', { kind: 'other', designWavelengthNm: 1550 }),
+      { ...newPlate({ name: 'L-bare' }), seat: { kind: 'none' } },
+      {
+        ...newPlate({ name: 'L-new' }),
+        seat: { kind: 'new-mount', mount: newMount({ name: 'M new' }), calibration: null },
+      },
+    ];
+    for (const body of bodies) {
+      await answered(call(harness, lead, 'post', `/labs/${many.labId}/plates`, { body }), cabinetPlateSchema);
+    }
+  }, 60_000);
+
+  test('go by number within names, page by page, without a plate twice or none', async () => {
+    const names: string[] = [];
+    let cursor: string | null = '';
+    while (cursor !== null) {
+      const part: { items: CabinetPlate[]; nextCursor: string | null } = await page(
+        `limit=3${cursor === '' ? '' : `&cursor=${cursor}`}`,
+      );
+      names.push(...part.items.map(({ name }) => name));
+      cursor = part.nextCursor;
+    }
+    expect(names.filter((name) => /^L-\d/.test(name))).toEqual(['L-1', 'L-2', 'L-10']);
+    expect(names.length).toBe(new Set(names).size);
+    const { items: all } = await page('limit=200');
+    expect(names).toEqual(all.map(({ name }) => name));
+    const { items: back } = await page('limit=200&order=desc');
+    expect(back.map(({ name }) => name)).toEqual(names.toReversed());
+  });
+
+  test.each(['age', 'wavelength'] as const)('sorted by %s page by page as at once', async (sort) => {
+    for (const order of ['asc', 'desc']) {
+      const { items } = await page(`sort=${sort}&order=${order}&limit=200`);
+      const first = await page(`sort=${sort}&order=${order}&limit=4`);
+      const second = await page(`sort=${sort}&order=${order}&limit=200&cursor=${first.nextCursor ?? ''}`);
+      expect([...first.items, ...second.items].map(({ id }) => id)).toEqual(items.map(({ id }) => id));
+    }
+  });
+
+  test('find by name, serial and mount, taking every character as it is', async () => {
+    const names = async (search: string) =>
+      (await page(`search=${encodeURIComponent(search)}`)).items.map(({ name }) => name);
+    expect(await names('l-1')).toEqual(['L-1', 'L-10']);
+    expect(await names('S/N 2')).toEqual(['L-2']);
+    expect(await names('M new')).toEqual(['L-new']);
+    expect(await names('50%_')).toEqual(['50%_off']);
+    expect(await names('%%%')).toEqual([]);
+    expect(await names("' or 1=1 --")).toEqual([]);
+  });
+
+  test('filter by health as each plate says of itself, and the counts agree', async () => {
+    const counts = await answered(
+      call(harness, lead, 'get', `/labs/${many.labId}/cabinet`),
+      cabinetCountsSchema,
+    );
+    const { items: all } = await page('limit=200');
+    for (const [health, count] of Object.entries(counts.plates)) {
+      const { items } = await page(`health=${health}&limit=200`);
+      expect([health, items.length]).toEqual([health, count]);
+      if (health !== 'retired') {
+        expect(items.map(({ id }) => id)).toEqual(
+          all.filter((plate) => plate.health === health).map(({ id }) => id),
+        );
+      }
+    }
+    expect(counts.plates['open-question']).toBe(1);
+    expect(counts.plates['not-seated']).toBe(1);
+    expect(counts.plates['not-calibrated']).toBe(1);
+  });
+
+  test('refuse a cursor that is none of theirs, also one of another sort', async () => {
+    const { nextCursor } = await page('limit=2&sort=wavelength');
+    for (const query of ['cursor=bm9uc2Vuc2U', `sort=age&cursor=${nextCursor ?? ''}`, 'cursor=%00']) {
+      const response = await call(harness, lead, 'get', `/labs/${many.labId}/plates?${query}`);
+      expect(response.status, query).toBe(400);
+    }
+  });
+
+  test('of mounts say what sits where, and where it sat before', async () => {
+    const list = await answered(
+      call(harness, lead, 'get', `/labs/${many.labId}/mounts?state=holding&search=M L-`),
+      mountPageSchema,
+    );
+    expect(list.items.map(({ name, plate }) => [name, plate?.name])).toContainEqual(['M L-1', 'L-1']);
+    const [mount] = list.items;
+    const detail = await answered(
+      call(harness, lead, 'get', `/labs/${many.labId}/mounts/${mount?.id ?? ''}`),
+      mountDetailSchema,
+    );
+    expect(detail.seats.map(({ plate, leftAt }) => [plate.name, leftAt])).toEqual([
+      [mount?.plate?.name, null],
+    ]);
+  });
+});
+
+describe('a mount', () => {
+  test('that holds a plate is not retired, and two of a name are refused', async () => {
+    const plate = await addPlate('M-1');
+    const retire = await call(harness, lead, 'post', at(`/mounts/${plate.seat?.mountId ?? ''}/retire`), {
+      ifMatch: '"r1"',
+    });
+    expect([retire.status, faultOf(retire.text).detail]).toEqual([
+      409,
+      expect.stringContaining('M-1 sits in M M-1'),
+    ]);
+    const twice = await call(harness, lead, 'post', at('/mounts'), { body: newMount({ name: 'm m-1' }) });
+    expect([twice.status, faultOf(twice.text).path]).toEqual([422, 'name']);
+    const withPlate = await call(harness, lead, 'post', at('/plates'), {
+      body: plateBody('M-2', { mount: { name: 'M M-1' } }),
+    });
+    expect([withPlate.status, faultOf(withPlate.text).path]).toEqual([422, 'seat.mount.name']);
+  });
+});
