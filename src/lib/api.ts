@@ -74,7 +74,8 @@ function parse<Response>(text: string): Response {
   return JSON.parse(text === '' ? 'null' : text);
 }
 
-function refusal(status: number, text: string): ApiError {
+/** What an answer that is no success says. */
+export function refusal(status: number, text: string): ApiError {
   const problem = readProblem(text);
   return new ApiError(
     status,
