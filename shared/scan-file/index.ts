@@ -1,0 +1,32 @@
+export { readScanFile } from './read-scan';
+export { describeFault } from './fault-list';
+export { unitLabel } from './units';
+export {
+  ANGLE_UNITS,
+  type AngleUnit,
+  type ColumnChoice,
+  type ColumnMapping,
+  type ColumnProposal,
+  type DecimalSign,
+  type Delimiter,
+  MAX_LINE_LENGTH,
+  MAX_SCAN_BYTES,
+  MAX_SCAN_COLUMNS,
+  MAX_SCAN_ROWS,
+  MOST_FAULTS,
+  POWER_UNITS,
+  type PowerUnit,
+  PREVIEW_ROWS,
+  type PreviewColumn,
+  SCAN_ROLES,
+  type ScanEncoding,
+  type ScanFault,
+  type ScanFaults,
+  type ScanPoint,
+  type ScanPreview,
+  type ScanQuestions,
+  type ScanReading,
+  type ScanRole,
+  type ScanTable,
+  type Understood,
+} from './types';

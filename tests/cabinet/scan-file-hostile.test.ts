@@ -1,0 +1,285 @@
+import { expect, test } from 'vitest';
+import {
+  describeFault,
+  MAX_SCAN_BYTES,
+  MAX_SCAN_ROWS,
+  MOST_FAULTS,
+  readScanFile,
+  type ScanFaults,
+} from '../../shared/scan-file';
+import { encoded } from './scan-file-writer';
+
+const HEAD = 'angle (deg),crossed (mW),parallel (mW)\n';
+const SOUND = `${HEAD}0,1,2\n5,2,3\n`;
+
+function bytesOf(content: string | readonly number[]): Uint8Array {
+  return typeof content === 'string' ? new TextEncoder().encode(content) : Uint8Array.from(content);
+}
+
+const ascii = (text: string): readonly number[] => Array.from(text, (character) => character.charCodeAt(0));
+
+function faultsOf(bytes: Uint8Array): ScanFaults {
+  const reading = readScanFile(bytes);
+  if (reading.kind !== 'faults') throw new Error(`This was read: ${JSON.stringify(reading)}`);
+  return reading;
+}
+
+type Hostile = readonly [name: string, content: string | readonly number[], place: string, words: RegExp];
+
+const OTHER_FILES: readonly Hostile[] = [
+  ['PNG', [0x89, ...ascii('PNG\r\n'), 0x1a, 10, 0, 0], 'Line 1', /a PNG picture/u],
+  ['JPEG', [0xff, 0xd8, 0xff, 0xe0], 'Line 1', /a JPEG picture/u],
+  ['ZIP', [...ascii('PK'), 3, 4, 20, 0, ...ascii('scan.csv')], 'Line 1', /a ZIP archive/u],
+  ['new spreadsheet', [...ascii('PK'), 3, 4, 20, 0, ...ascii('[Content_Types].xml')], 'Line 1', /\.xlsx/u],
+  [
+    'open spreadsheet',
+    [...ascii('PK'), 3, 4, 20, 0, ...ascii('mimetypeapplication/vnd.oasis.opendocument.spreadsheet')],
+    'Line 1',
+    /\.ods/u,
+  ],
+  ['old spreadsheet', [0xd0, 0xcf, 0x11, 0xe0, 0xa1, 0xb1, 0x1a, 0xe1, 0], 'Line 1', /\.xls\)/u],
+  ['PDF, though % begins comments', '%PDF-1.7\n0,1,2\n5,2,3\n', 'Line 1', /a PDF document/u],
+  ['gzip', [0x1f, 0x8b, 8, 0], 'Line 1', /packed with gzip/u],
+  ['HDF5', [0x89, ...ascii('HDF\r\n')], 'Line 1', /an HDF5 file/u],
+  ['web page', '<!DOCTYPE html><table><tr><td>0</td></tr></table>', 'Line 1', /a web page/u],
+  ['JSON', '{"angle": [0, 1]}', 'Line 1', /a JSON document/u],
+];
+
+const ENCODINGS: readonly Hostile[] = [
+  ['NUL bytes', [...ascii(HEAD), ...ascii('0,1,2\n5,'), 0, ...ascii('2,3\n')], 'Line 3', /is zero/u],
+  ['UTF-16 without its mark', [...encoded(SOUND, 'utf-16le').slice(2)], 'Line 1', /is zero/u],
+  ['UTF-16 cut in a character', [...encoded(SOUND, 'utf-16be').slice(0, -1)], 'Line 3', /UTF-16 big-endian/u],
+  ['UTF-16 with half a pair', [0xff, 0xfe, 0x00, 0xd8, 0x0a, 0x00], 'Line 1', /UTF-16 little-endian/u],
+  ['UTF-32', [0xff, 0xfe, 0, 0, 0x30, 0, 0, 0], 'Line 1', /is zero/u],
+  [
+    'UTF-8 and Latin-1 mixed',
+    [...bytesOf('# µW\nangle ('), 0xb0, ...bytesOf(')\n0,1,2\n1,2,3\n')],
+    'Line 2',
+    /0xB0/u,
+  ],
+  [
+    'Windows-1252 quotes',
+    [0x93, ...ascii('angle'), 0x94, ...ascii(',b,c\n0,1,2\n1,2,3\n')],
+    'Line 1',
+    /0x93/u,
+  ],
+  ['a mark of UTF-8 and then Latin-1', [0xef, 0xbb, 0xbf, 0xb0, ...ascii('\n0,1,2\n')], 'Line 1', /0xB0/u],
+  ['control character', `${HEAD}0,1,2\n5,2,3\n\u001a`, 'Line 4', /control character \(0x1A\)/u],
+];
+
+const NAMELESS: readonly Hostile[] = [
+  ['nothing', '', 'Line 1', /is empty/u],
+  ['blank lines', ' \n\r\n\t\n', 'Line 1', /is empty/u],
+  ['a byte order mark alone', '\ufeff', 'Line 1', /is empty/u],
+  ['comments only', '# one\n% two\n// 3, 4, 5\n; six\n', 'Line 4', /comments only/u],
+  ['a header only', HEAD, 'Line 1', /No line of this file is a row/u],
+  ['prose', 'Measured on Monday.\nNothing came out.\n', 'Line 2', /No line of this file is a row/u],
+  ['one row', `${HEAD}0,1,2\n`, 'Line 2', /only one row/u],
+  ['one column', '0\n5\n10\n', 'Line 1', /1 column;/u],
+  ['two columns', 'angle,power\n0,1\n5,2\n', 'Line 2', /2 columns; a scan has at least three/u],
+];
+
+const CELLS: readonly Hostile[] = [
+  ['nan', `${HEAD}0,1,2\n5,nan,3\n`, 'Line 3, column 2 (crossed)', /“nan” is no measured value/u],
+  ['nan in the first row', `${HEAD}0,NaN,2\n5,1,3\n`, 'Line 2, column 2 (crossed)', /“NaN” is no measured/u],
+  ['inf', `${HEAD}0,1,-inf\n5,2,3\n`, 'Line 2, column 3 (parallel)', /“-inf” is no measured value/u],
+  [
+    '#N/A where a comment would begin',
+    `${HEAD}0,1,2\n#N/A,2,3\n`,
+    'Line 3, column 1 (angle)',
+    /spreadsheet’s error/u,
+  ],
+  ['#DIV/0!', `${HEAD}0,1,2\n5,#DIV/0!,3\n`, 'Line 3, column 2 (crossed)', /spreadsheet’s error/u],
+  ['#WERT!', `${HEAD}0,1,2\n5,#WERT!,3\n`, 'Line 3, column 2 (crossed)', /spreadsheet’s error/u],
+  ['empty cell', `${HEAD}0,1,2\n5,,3\n`, 'Line 3, column 2 (crossed)', /is empty/u],
+  ['cell of blanks', `${HEAD}0,1,2\n5,\u00a0 ,3\n`, 'Line 3, column 2 (crossed)', /is empty/u],
+  ['row of delimiters', `${HEAD}0,1,2\n5,2,3\n,,\n`, 'Line 4, column 1 (angle)', /is empty/u],
+  ['=1+1', `${HEAD}0,1,2\n5,=1+1,3\n`, 'Line 3, column 2 (crossed)', /formula/u],
+  ['+cmd', `${HEAD}0,1,2\n5,+cmd|'/C calc'!A0,3\n`, 'Line 3, column 2 (crossed)', /formula/u],
+  ['@SUM', `${HEAD}0,1,2\n@SUM(A1),2,3\n`, 'Line 3, column 1 (angle)', /formula/u],
+  ['1+1', `${HEAD}0,1,2\n5,1+1,3\n`, 'Line 3, column 2 (crossed)', /formula/u],
+  ['Arabic digits', `${HEAD}0,1,2\n٥,2,3\n`, 'Line 3, column 1 (angle)', /digits other than 0 to 9/u],
+  ['full-width digits', `${HEAD}0,1,2\n５,2,3\n`, 'Line 3, column 1 (angle)', /digits other than 0 to 9/u],
+  ['hexadecimal', `${HEAD}0,1,2\n0x10,2,3\n`, 'Line 3, column 1 (angle)', /hexadecimal/u],
+  ['a unit in the cell', `${HEAD}0,1,2\n5,2 mW,3\n`, 'Line 3, column 2 (crossed)', /more than a number/u],
+  ['half an exponent', `${HEAD}0,1,2\n5,2e,3\n`, 'Line 3, column 2 (crossed)', /more than a number/u],
+  ['two points', `${HEAD}0,1,2\n5,2.3.4,3\n`, 'Line 3, column 2 (crossed)', /is not a number/u],
+  ['out of range above', `${HEAD}0,1,2\n5,1e999,3\n`, 'Line 3, column 2 (crossed)', /too large/u],
+  ['out of range below', `${HEAD}0,1,2\n5,1e-999,3\n`, 'Line 3, column 2 (crossed)', /too small/u],
+  [
+    'out of range in degrees',
+    'angle (rad),crossed,parallel\n0,1,2\n1e308,2,3\n',
+    'Line 3, column 1 (angle)',
+    /out of range/u,
+  ],
+  [
+    'a negative σ',
+    'angle (deg),crossed,err crossed,parallel\n0,1,.1,2\n5,1,-.1,2\n',
+    'Line 3, column 3 (err crossed)',
+    /σ is negative/u,
+  ],
+  ['a text among rows', `${HEAD}0,1,2\nend of run,2,3\n`, 'Line 3, column 1 (angle)', /is not a number/u],
+];
+
+const SHAPES: readonly Hostile[] = [
+  ['cut in a row', `${HEAD}0,1,2\n5,2`, 'Line 3', /was cut off here/u],
+  ['cut before the last cell', `${HEAD}0,1,2\n5,2,`, 'Line 3, column 3 (parallel)', /is empty/u],
+  ['a short row', `${HEAD}0,1,2\n5,2\n10,2,3\n`, 'Line 3', /2 columns, the others have 3/u],
+  ['a long row', `${HEAD}0,1,2\n5,2,3,4\n10,2,3\n`, 'Line 3', /4 columns, the others have 3/u],
+  ['a footer', `${HEAD}0,1,2\n5,2,3\nend of run\n`, 'Line 4', /Begin the line with #/u],
+  ['open quote', `${HEAD}0,1,2\n"5,2,3\n6,2,3\n`, 'Line 3', /quote is not closed/u],
+  ['open quote on the last line', `${HEAD}0,1,2\n5,"2,3`, 'Line 3', /may have been cut off/u],
+  ['text behind a quote', `${HEAD}0,1,2\n"5"x,2,3\n6,2,3\n`, 'Line 3', /text stands behind one/u],
+  ['too few names', 'angle,crossed\n0,1,2\n5,2,3\n', 'Line 1', /names 2 columns, and the rows have 3/u],
+  [
+    'decimal commas between commas',
+    `${HEAD}0,5,1,5,2,5\n1,5,1,5,2,5\n`,
+    'Line 1',
+    /names 3 columns, and the rows have 6/u,
+  ],
+  [
+    'decimal commas here and there',
+    `${HEAD}0,1,5,2\n5,2,3\n6,1,3\n`,
+    'Line 2',
+    /4 columns, the others have 3/u,
+  ],
+  [
+    'a line of 5 kB',
+    `${HEAD}0,1,2\n5,2,${'3'.repeat(5000)}\n`,
+    'Line 3',
+    /5004 characters; the most is 4096/u,
+  ],
+  ['65 columns', `${'1,'.repeat(64)}1\n${'2,'.repeat(64)}2\n`, 'Line 1', /65 columns; the most is 64/u],
+];
+
+const THOUSANDS: readonly Hostile[] = [
+  [
+    '1,234.5',
+    'angle;crossed;parallel\n0;1,234.5;2.5\n5;2.5;3.5\n',
+    'Line 2, column 2 (crossed)',
+    /thousands/u,
+  ],
+  [
+    '1.234,5',
+    'angle;crossed;parallel\n0;1.234,5;2,5\n5;2,5;3,5\n',
+    'Line 2, column 2 (crossed)',
+    /thousands/u,
+  ],
+  ['1 234', 'angle;crossed;parallel\n0;1 234;2\n5;2;3\n', 'Line 2, column 2 (crossed)', /thousands/u],
+  [
+    '1 234 between tabs',
+    'angle\tcrossed\tparallel\n0\t1 234\t1 001\n5\t1 100\t1 000\n',
+    'Line 2, column 2 (crossed)',
+    /thousands/u,
+  ],
+  [
+    'no-break space',
+    'angle;crossed;parallel\n0;1\u00a0234;2\n5;2;3\n',
+    'Line 2, column 2 (crossed)',
+    /thousands/u,
+  ],
+  ['apostrophe', "angle;crossed;parallel\n0;1'234;2\n5;2;3\n", 'Line 2, column 2 (crossed)', /thousands/u],
+  ['1,234,567', 'angle;crossed;parallel\n0;1,234,567;2\n5;2;3\n', 'Line 2, column 2 (crossed)', /thousands/u],
+  [
+    'each comma with three digits',
+    'angle;crossed;parallel\n0;1,234;2,345\n5;2,345;3,456\n',
+    'Line 2, column 2 (crossed)',
+    /may be a decimal sign/u,
+  ],
+  [
+    'points with three digits beside small whole numbers',
+    'angle;crossed;parallel\n0;1.234;2\n5;999;3\n',
+    'Line 2, column 2 (crossed)',
+    /may be a decimal sign/u,
+  ],
+  ['commas and blanks in two ways', '0,1 234,2 345\n5,1 300,2 400\n', 'Line 1', /read in two ways/u],
+  [
+    'both decimal signs',
+    'angle;crossed;parallel\n0,5;1,5;2,5\n5,5;2.5;3,5\n',
+    'Line 3, column 2 (crossed)',
+    /“2.5” has a point, while/u,
+  ],
+];
+
+const ALL = [...OTHER_FILES, ...ENCODINGS, ...NAMELESS, ...CELLS, ...SHAPES, ...THOUSANDS];
+
+test.each(ALL)('%s is refused by name and place', (_, content, place, words) => {
+  const { faults, moreFaults } = faultsOf(bytesOf(content));
+  const [first] = faults;
+  if (first === undefined) throw new Error('There is no fault.');
+  expect(describeFault(first).startsWith(`${place}: `)).toBe(true);
+  expect(describeFault(first)).toMatch(words);
+  expect(first.remedy).toMatch(/\.$/u);
+  expect(moreFaults).toBe(0);
+});
+
+test('sixty files and more are held against it', () => {
+  expect(ALL.length).toBeGreaterThanOrEqual(60);
+});
+
+test('a file above 10 MB is refused before anything is read', () => {
+  const { faults } = faultsOf(new Uint8Array(MAX_SCAN_BYTES + 1));
+  expect(faults[0]?.what).toBe('This file has 10.0 MB; the most is 10 MB.');
+});
+
+test('the first fifty faults are listed in order and the others counted', () => {
+  const { faults, moreFaults } = faultsOf(bytesOf(`${HEAD}0,1,2\n${'5,nan,3\n'.repeat(120)}`));
+  expect(faults.map(({ line }) => line)).toEqual(Array.from({ length: MOST_FAULTS }, (_, at) => at + 3));
+  expect(moreFaults).toBe(70);
+});
+
+test('faults in cells come with the file as it was understood, so that another column can be chosen', () => {
+  const { understood } = faultsOf(bytesOf(`${HEAD}0,1,2\n5,nan,3\n`));
+  expect(understood?.preview.rows).toHaveLength(2);
+  expect(understood?.proposal.columns.crossed).toBe(1);
+});
+
+function rowsOf(count: number): Uint8Array {
+  const rows = Array.from({ length: count }, (_, at) => `${at / 8};${at * 1.5};${1e6 - at};0.5;0.25`);
+  return bytesOf(`angle (deg);crossed (mW);parallel (mW);err crossed;err parallel\n${rows.join('\n')}\n`);
+}
+
+test('one row more than the most is refused at its line', () => {
+  const most = readScanFile(rowsOf(MAX_SCAN_ROWS));
+  expect(most.kind === 'table' && most.points.length).toBe(MAX_SCAN_ROWS);
+  const { faults } = faultsOf(rowsOf(MAX_SCAN_ROWS + 1));
+  expect(faults).toMatchObject([{ line: MAX_SCAN_ROWS + 2, what: 'This file has more than 100000 rows.' }]);
+});
+
+/** Of this process, so that what else the machine does doesn't count. */
+function cpuMs(work: () => void): number {
+  const start = process.cpuUsage();
+  work();
+  const { user, system } = process.cpuUsage(start);
+  return (user + system) / 1000;
+}
+
+function fastestMs(count: number): number {
+  const bytes = rowsOf(count);
+  return Math.min(...Array.from({ length: 5 }, () => cpuMs(() => readScanFile(bytes))));
+}
+
+test('ten thousand rows take less than 300 ms, and twice as many at most 2.5 times as long', () => {
+  expect(fastestMs(10_000)).toBeLessThan(300);
+  expect(fastestMs(40_000) / fastestMs(20_000)).toBeLessThan(2.5);
+});
+
+const FILL = 1_000_000;
+const long = (text: string): string => text.repeat(FILL / text.length);
+test.each([
+  ['line breaks', long('\n')],
+  ['one line of digits', long('7')],
+  ['lines of digits', long(`${'7'.repeat(3999)}\n`)],
+  ['lines of commas', long(`${','.repeat(3999)}\n`)],
+  ['lines of quotes', long(`${'"'.repeat(3999)}\n`)],
+  ['lines of brackets above a row', `${long(`${'('.repeat(3997)},(\n`)}1,2\n`],
+  ['lines of blanks and signs', long(`0${' -'.repeat(1999)}\n`)],
+  ['digits and points', long(`${'1.'.repeat(1999)}x\n`)],
+  ['groups of thousands', long(`1${',000'.repeat(999)}x\n`)],
+  ['comments', long('# a crossed (W), b, parallel\n')],
+  ['lines drawn', long('-- -- --\n')],
+  ['bytes that are no text', long('\u0080')],
+])('a megabyte of %s is refused within a second', (_, text) => {
+  const bytes = bytesOf(text);
+  expect(cpuMs(() => faultsOf(bytes))).toBeLessThan(1000);
+});
