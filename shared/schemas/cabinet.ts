@@ -9,7 +9,7 @@ import {
   pageSchema,
   timestampSchema,
 } from './common';
-import { attachedFileSchema } from './files';
+import { attachedFileSchema, fileSchema } from './files';
 import { mountSchema, seatSchema, writeMountSchema } from './mounts';
 
 const plateKinds = ['half', 'quarter', 'other'] as const;
@@ -99,15 +99,27 @@ export type PlateQuery = z.infer<typeof plateQuerySchema>;
 export const platePageSchema = pageSchema(cabinetPlateSchema);
 export type PlatePage = z.infer<typeof platePageSchema>;
 
-/** How many plates are in which state. */
+const healthCountsSchema = z.record(plateHealthSchema, z.int());
+export type HealthCounts = z.infer<typeof healthCountsSchema>;
+
+/** Of what a search finds; without one, of the whole cabinet. */
+export const cabinetCountsQuerySchema = plateQuerySchema.pick({ search: true });
+/** How many plates are in which state, and how many of each kind are. */
 export const cabinetCountsSchema = z.strictObject({
-  plates: z.record(plateHealthSchema, z.int()),
+  plates: healthCountsSchema,
+  kinds: z.record(plateKindSchema, healthCountsSchema),
+  /** Plates in use whose newest calibration left fast and slow open. */
+  openAxes: z.int(),
+  /** Mounts in use, whatever is searched for. */
   mounts: z.int(),
 });
 export type CabinetCounts = z.infer<typeof cabinetCountsSchema>;
 
-/** A calibration with the seat that it was measured in. */
-const seatedCalibrationSchema = calibrationSchema.extend({ seatId: idSchema });
+/** A calibration with the seat that it was measured in, and the scan that it was fitted from. */
+const seatedCalibrationSchema = calibrationSchema.extend({
+  seatId: idSchema,
+  scan: fileSchema.pick({ name: true, sha256: true, sizeBytes: true }).nullable(),
+});
 export type SeatedCalibration = z.infer<typeof seatedCalibrationSchema>;
 
 export const plateDetailSchema = z.strictObject({

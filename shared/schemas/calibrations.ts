@@ -52,6 +52,6 @@ export const calibrationInputSchema = z.strictObject({
     .array(openQuestionSchema)
     .refine((list) => new Set(list).size === list.length, 'Name each open question once.'),
   settlesId: idSchema.nullable(),
-  measuredAt: timestampSchema,
+  measuredAt: z.iso.datetime({ offset: true, error: 'Say when it was measured: the day and the time.' }),
 });
 export type CalibrationInput = z.infer<typeof calibrationInputSchema>;

@@ -309,6 +309,24 @@ describe('lists', () => {
     expect(counts.plates['open-question']).toBe(1);
     expect(counts.plates['not-seated']).toBe(1);
     expect(counts.plates['not-calibrated']).toBe(1);
+    expect(counts.openAxes).toBe(1);
+    for (const kind of ['half', 'quarter', 'other'] as const) {
+      const { items } = await page(`kind=${kind}&limit=200`);
+      const inUse = Object.entries(counts.kinds[kind]).filter(([health]) => health !== 'retired');
+      expect([kind, inUse.reduce((sum, [, count]) => sum + count, 0)]).toEqual([kind, items.length]);
+    }
+  });
+
+  test('are counted by what a search finds', async () => {
+    const counts = await answered(
+      call(harness, lead, 'get', `/labs/${many.labId}/cabinet?search=l-o`),
+      cabinetCountsSchema,
+    );
+    expect(counts.plates).toMatchObject({ 'open-question': 1, calibrated: 0, overdue: 0 });
+    expect([
+      counts.kinds.other['open-question'] + counts.kinds.half['open-question'],
+      counts.openAxes,
+    ]).toEqual([1, 1]);
   });
 
   test('refuse a cursor that is none of theirs, also one of another sort', async () => {

@@ -8,7 +8,12 @@ import { rowsOf } from './plate-store';
 /** The most of a plate's history that one page shows. */
 const mostShown = 1000;
 
-const seatedRow = calibrationRow.extend({ seat_id: z.string() });
+const seatedRow = calibrationRow.extend({
+  seat_id: z.string(),
+  scan_name: z.string().nullable(),
+  sha256: z.string().nullable(),
+  size_bytes: z.number().nullable(),
+});
 const fittedRow = calibrationRow.extend({ fit: z.string().nullable() });
 
 /** What was measured of a plate in all its seats, newest first. */
@@ -17,15 +22,21 @@ export async function listCalibrations(
   key: { readonly labId: string; readonly plateId: string },
 ): Promise<SeatedCalibration[]> {
   const found: unknown = await transaction.raw(
-    `select ${calibrationColumns}, c.seat_id from seats s
+    `select ${calibrationColumns}, c.seat_id, f.name as scan_name, f.sha256, f.size_bytes from seats s
       join calibrations c on c.lab_id = s.lab_id and c.seat_id = s.id join users u on u.id = c.recorded_by
+      left join files f on f.lab_id = c.lab_id and f.id = c.file_id
       where s.lab_id = ? and s.plate_id = ? order by c.measured_at desc, c.recorded_at desc, c.id desc limit ${mostShown}`,
     [key.labId, key.plateId],
   );
   return z
     .array(seatedRow)
     .parse(rowsOf.parse(found).rows)
-    .map((row) => ({ ...mapCalibration(row), seatId: row.seat_id }));
+    .map((row) => ({ ...mapCalibration(row), seatId: row.seat_id, scan: mapScan(row) }));
+}
+
+function mapScan(row: z.infer<typeof seatedRow>): SeatedCalibration['scan'] {
+  if (row.scan_name === null || row.sha256 === null || row.size_bytes === null) return null;
+  return { name: row.scan_name, sha256: row.sha256, sizeBytes: row.size_bytes };
 }
 
 /** One calibration of a plate, with the text of its fit where it came from a scan. */

@@ -1,5 +1,14 @@
 import { z } from 'zod';
-import { type CabinetCounts, type PlateHealth, plateHealths, type PlateQuery } from '../../../shared/schemas';
+import {
+  type CabinetCounts,
+  cabinetCountsSchema,
+  type HealthCounts,
+  type PlateHealth,
+  plateHealths,
+  type PlateKind,
+  plateKindSchema,
+  type PlateQuery,
+} from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { readCursor } from '../../http/cursor';
 import { jsonCursor, writeCursor } from '../../http/json-cursor';
@@ -35,6 +44,12 @@ const cursorSchemas = {
   wavelength: jsonCursor(z.number()),
 };
 
+const searchWhere = `(p.name ilike :like or p.serial ilike :like or m.name ilike :like or p.note ilike :like
+  or p.material ilike :like)`;
+
+/** What is searched for, every character as it is. */
+const likeOf = (search: string): string => `%${search.replaceAll(/[\\%_]/g, '\\$&')}%`;
+
 interface ListFacts {
   readonly labId: string;
   readonly dueDays: number;
@@ -52,9 +67,7 @@ export async function listPlatePage(
   const conditions: string[] = [healthWhere[query.health]];
   if (query.kind !== undefined) conditions.push('p.kind = :kind');
   if (query.search !== '') {
-    conditions.push(
-      `(p.name ilike :like or p.serial ilike :like or m.name ilike :like or p.note ilike :like or p.material ilike :like)`,
-    );
+    conditions.push(searchWhere);
   }
   if (after !== null) {
     const side = query.order === 'asc' ? '>' : '<';
@@ -69,7 +82,7 @@ export async function listPlatePage(
     now,
     dueDays,
     kind: query.kind ?? null,
-    like: `%${query.search.replaceAll(/[\\%_]/g, '\\$&')}%`,
+    like: likeOf(query.search),
     after: after?.value ?? null,
     afterId: after?.id ?? null,
     limit: query.limit + 1,
@@ -81,22 +94,38 @@ export async function listPlatePage(
   return { items, nextCursor: more ? writeCursor({ value: sort.of(last), id: last.id }) : null };
 }
 
-const countsRow = z.object({ rows: z.tuple([z.record(z.string(), z.coerce.number())]) });
+const countsRow = z.object({
+  kind: plateKindSchema,
+  counts: cabinetCountsSchema.shape.plates,
+  open_axes: z.coerce.number(),
+});
+const mountsRow = z.object({ mounts: z.coerce.number() });
 
-/** How many plates are in which state, in one look. */
-export async function countPlates(transaction: Transaction, facts: ListFacts): Promise<CabinetCounts> {
-  const columns = plateHealths.map(
-    (health) => `count(*) filter (where ${healthWhere[health]}) as "${health}"`,
-  );
+/** How many of the plates that a search finds are in which state, in one look. */
+export async function countPlates(
+  transaction: Transaction,
+  facts: ListFacts,
+  search: string,
+): Promise<CabinetCounts> {
+  const columns = plateHealths.map((health) => `'${health}', count(*) filter (where ${healthWhere[health]})`);
   const found: unknown = await transaction.raw(
-    `select ${columns.join(', ')}, (select count(*) from mounts where lab_id = :labId and retired_at is null) as mounts
-      from plates p where p.lab_id = :labId`,
-    { labId: facts.labId, now: facts.now, dueDays: facts.dueDays },
+    `select p.kind, json_build_object(${columns.join(', ')}) as counts,
+        count(*) filter (where ${healthWhere['in-use']} and 'axis' = any(c.open_questions)) as open_axes
+      from plates p
+      left join seats s on s.lab_id = p.lab_id and s.id = p.seat_id
+      left join mounts m on m.lab_id = s.lab_id and m.id = s.mount_id
+      left join calibrations c on c.lab_id = p.lab_id and c.id = p.calibration_id
+      where p.lab_id = :labId ${search === '' ? '' : `and ${searchWhere}`} group by p.kind`,
+    { labId: facts.labId, now: facts.now, dueDays: facts.dueDays, like: likeOf(search) },
   );
-  const [counts] = countsRow.parse(found).rows;
-  const of = (health: PlateHealth): number => counts[health] ?? 0;
-  return {
-    plates: {
+  const rows = z.array(countsRow).parse(rowsOf.parse(found).rows);
+  const mounts: unknown = await transaction('mounts')
+    .where({ lab_id: facts.labId, retired_at: null })
+    .count({ mounts: '*' })
+    .first();
+  const sumOf = (some: typeof rows): HealthCounts => {
+    const of = (health: PlateHealth) => some.reduce((sum, { counts }) => sum + counts[health], 0);
+    return {
       calibrated: of('calibrated'),
       due: of('due'),
       overdue: of('overdue'),
@@ -104,7 +133,13 @@ export async function countPlates(transaction: Transaction, facts: ListFacts): P
       'not-calibrated': of('not-calibrated'),
       'not-seated': of('not-seated'),
       retired: of('retired'),
-    },
-    mounts: counts['mounts'] ?? 0,
+    };
+  };
+  const ofKind = (kind: PlateKind) => sumOf(rows.filter((row) => row.kind === kind));
+  return {
+    plates: sumOf(rows),
+    kinds: { half: ofKind('half'), quarter: ofKind('quarter'), other: ofKind('other') },
+    openAxes: rows.reduce((sum, row) => sum + row.open_axes, 0),
+    mounts: mountsRow.parse(mounts).mounts,
   };
 }

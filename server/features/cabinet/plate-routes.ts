@@ -1,4 +1,5 @@
 import {
+  cabinetCountsQuerySchema,
   cabinetCountsSchema,
   cabinetPlateSchema,
   createPlateSchema,
@@ -47,12 +48,13 @@ export function plateRoutes(): readonly Route[] {
       path: '/labs/:labId/cabinet',
       access: { kind: 'member', action: 'cabinet.read', thing: findLab },
       params: labParams,
-      query: nothing,
+      query: cabinetCountsQuerySchema,
       body: noBody,
       response: cabinetCountsSchema,
-      handler: async ({ labId, transaction, thing, now }) => ({
-        body: await countPlates(transaction, { labId, dueDays: thing.calibrationDueDays, now }),
-      }),
+      handler: async ({ labId, transaction, thing, query, now }) => {
+        const facts = { labId, dueDays: thing.calibrationDueDays, now };
+        return { body: await countPlates(transaction, facts, query.search) };
+      },
     }),
     route({
       method: 'post',
