@@ -7,5 +7,6 @@ export * from './cabinet';
 export * from './benches';
 export * from './protocols';
 export * from './versions';
+export * from './reliance';
 export * from './runs';
 export * from './home';
