@@ -1,6 +1,7 @@
 import type { Bench } from '../../../shared/schemas/benches';
 import type { Version } from '../../../shared/schemas/versions';
 import { useLab } from '../labs';
+import { OpenQuestionWarnings } from '../versions';
 import { benchChanges, frozenElsewhere } from './bench-changes';
 
 interface VersionWarningsProps {
@@ -26,6 +27,7 @@ export function VersionWarnings({ version, live, unknown }: VersionWarningsProps
             {warning}
           </li>
         ))}
+        <OpenQuestionWarnings content={content} />
         {unknown && (
           <li className="font-strong text-fault">
             The bench could not be fetched, so that this page cannot say what was changed at it since.

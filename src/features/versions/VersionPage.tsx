@@ -16,6 +16,7 @@ import { useLab } from '../labs';
 import { FrozenPlates } from './FrozenPlates';
 import { FrozenTargets } from './FrozenTargets';
 import { HashCheck } from './HashCheck';
+import { OpenQuestionWarnings } from './OpenQuestionWarnings';
 import { protocolVersionsQuery, versionQuery } from './queries';
 import './versions.css';
 
@@ -94,6 +95,9 @@ function VersionSheet({ version, protocolId }: VersionSheetProps) {
       <FrozenTargets content={content} />
       <SectionHead className="mt-10">Plates as they were known</SectionHead>
       <FrozenPlates content={content} />
+      <ul className="mt-3 list-none space-y-2 empty:hidden">
+        <OpenQuestionWarnings content={content} />
+      </ul>
       <HashCheck version={version} />
     </article>
   );

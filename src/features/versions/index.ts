@@ -1,2 +1,3 @@
+export { OpenQuestionWarnings } from './OpenQuestionWarnings';
 export { ShortHash } from './ShortHash';
 export { labVersionsQuery, versionQuery } from './queries';
