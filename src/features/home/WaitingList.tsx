@@ -1,6 +1,6 @@
 import { useRef, useState } from 'react';
 import { useNavigate } from 'react-router-dom';
-import type { Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import type { WaitingItem } from '../../../shared/schemas/home';
 import { TextLink } from '../../components/TextLink';
 import { useCommands } from '../../lib/commands';
@@ -28,7 +28,7 @@ function keyOf(item: WaitingItem): string {
 /** What waits for this person, as sentences with a sign, a reason and one way on. `j` and `k` move, Enter opens. */
 export function WaitingList(props: {
   readonly items: readonly WaitingItem[];
-  readonly cabinet: readonly Plate[];
+  readonly cabinet: readonly CabinetPlate[];
   readonly now: Date;
 }) {
   const { items, cabinet, now } = props;
