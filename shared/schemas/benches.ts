@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { idSchema, lineSchema, numberSchema, timestampSchema } from './common';
-import { plateSchema } from './cabinet';
+import { cabinetPlateSchema, plateSchema } from './cabinet';
 
 /** Classes of IEC 60825-1; null where the lab has not stated one, which is treated as one that can hurt. */
 export const laserClasses = ['1', '1M', '2', '2M', '3R', '3B', '4'] as const;
@@ -99,6 +99,9 @@ export const benchSchema = z.strictObject({
 });
 export type Bench = z.infer<typeof benchSchema>;
 export const benchListSchema = z.strictObject({ items: z.array(benchSchema) });
+/** Every plate of a bench's beam in whatever state it is, in the order of `order`. */
+export const benchPlatesSchema = z.strictObject({ items: z.array(cabinetPlateSchema) });
+export type BenchPlates = z.infer<typeof benchPlatesSchema>;
 
 const platesInBeam = z
   .array(idSchema)

@@ -115,6 +115,7 @@ const table: Readonly<Record<string, Row>> = {
   'GET /labs/:labId/benches': { least: 'guest' },
   'POST /labs/:labId/benches': { least: 'designer', body: (lab) => benchBody(lab.plateIds, 'another') },
   'GET /labs/:labId/benches/:benchId': { least: 'guest', ids: benchId },
+  'GET /labs/:labId/benches/:benchId/plates': { least: 'guest', ids: benchId },
   'PUT /labs/:labId/benches/:benchId': {
     least: 'designer',
     body: (lab) => benchBody(lab.plateIds),

@@ -1,6 +1,9 @@
 import { z } from 'zod';
 import {
+  type Bench,
+  type BenchPart,
   benchListSchema,
+  benchPlatesSchema,
   benchSchema,
   createBenchSchema,
   idSchema,
@@ -13,6 +16,7 @@ import { conflict, notFound, refused } from '../../errors';
 import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Route, route } from '../../http/route';
+import { asCabinetPlate, findPlates, type StoredPlate } from '../cabinet';
 import { findLab, holdLab, type StoredLab } from '../labs';
 import {
   asBench,
@@ -73,6 +77,20 @@ export function benchRoutes(): readonly Route[] {
       handler: async ({ thing }) => Promise.resolve(answer(thing)),
     }),
     route({
+      method: 'get',
+      path: '/labs/:labId/benches/:benchId/plates',
+      access: { kind: 'member', action: 'benches.read', thing: findBench },
+      params: benchParams,
+      query: nothing,
+      body: noBody,
+      response: benchPlatesSchema,
+      handler: async ({ thing, labId, transaction, now }) => {
+        const lab = await theLab(transaction, labId);
+        const items = await platesInOrder(transaction, thing);
+        return { body: { items: items.map((plate) => asCabinetPlate(plate, lab, now)) } };
+      },
+    }),
+    route({
       method: 'put',
       path: '/labs/:labId/benches/:benchId',
       access: { kind: 'member', action: 'benches.write', thing: findBenchToChange },
@@ -89,13 +107,21 @@ export function benchRoutes(): readonly Route[] {
         const { convention } = await theLab(transaction, labId);
         await checkBench(transaction, { labId, benchId: thing.id, convention }, body);
         await uniquely(body.name, () => updateBench(transaction, thing, body));
-        if (thing.plates.map(({ id }) => id).join() !== body.plateIds.join()) {
+        // Of the order, since `plates` is empty while one of them is not ready.
+        if (idsOf(thing, 'preparation').join() !== body.plateIds.join()) {
           await unholdDrafts(transaction, { labId, benchId: thing.id });
         }
         await audit({
           kind: 'bench.changed',
           subjectId: thing.id,
-          details: { before: { ...asBench(thing), plates: thing.plates.map(({ id }) => id) }, after: body },
+          details: {
+            before: {
+              ...asBench(thing),
+              plates: idsOf(thing, 'preparation'),
+              analysisPlates: idsOf(thing, 'analysis'),
+            },
+            after: body,
+          },
         });
         return answer(await stored(transaction, labId, thing.id));
       },
@@ -136,11 +162,11 @@ export function benchRoutes(): readonly Route[] {
       handler: async ({ thing, labId, transaction, audit, expectedRevision }) => {
         requireRevision(expectedRevision, thing.revision, asBench(thing));
         if (thing.retiredAt === null) throw conflict('not-retired', `${thing.name} is in use already.`);
-        const gone = thing.plates.find(({ retiredAt }) => retiredAt !== null);
+        const gone = (await platesInOrder(transaction, thing)).find(({ retiredAt }) => retiredAt !== null);
         if (gone !== undefined) {
           throw conflict('plate-retired', `${gone.name} is retired. Return it to the cabinet first.`);
         }
-        const plateIds = thing.plates.map(({ id }) => id);
+        const plateIds = thing.order.map(({ plateId }) => plateId);
         const [holder] = await findHolders(transaction, labId, plateIds, thing.id);
         if (holder !== undefined) {
           throw conflict(
@@ -154,6 +180,24 @@ export function benchRoutes(): readonly Route[] {
       },
     }),
   ];
+}
+
+/** The plates of one part of a beam, ready or not. */
+function idsOf({ order }: Pick<Bench, 'order'>, part: BenchPart): string[] {
+  return order.filter((place) => place.part === part).map(({ plateId }) => plateId);
+}
+
+/** Every plate of a bench's beam as the cabinet has it, in whatever state, as the light meets them. */
+async function platesInOrder(
+  transaction: Transaction,
+  { labId, order }: StoredBench,
+): Promise<StoredPlate[]> {
+  const found = await findPlates(
+    transaction,
+    labId,
+    order.map(({ plateId }) => plateId),
+  );
+  return order.flatMap(({ plateId }) => found.find(({ id }) => id === plateId) ?? []);
 }
 
 function answer(bench: StoredBench, status: 200 | 201 = 200) {
