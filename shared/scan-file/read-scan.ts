@@ -9,7 +9,7 @@ import { CellFaults, type NumberColumns, numberColumns, readPoints } from './poi
 import { previewOf } from './preview';
 import { columnLabel, proposeColumns, type Proposed } from './propose-columns';
 import { stepsOf } from './steps';
-import { type CellTable, findTable, textColumns } from './table';
+import { type CellTable, FEWEST_COLUMNS, findTable, textColumns } from './table';
 import {
   type ColumnMapping,
   SCAN_ROLES,
@@ -100,12 +100,17 @@ class TableReader {
     return { kind: 'table', ...this.understood, points, powerUnit: mapping.crossed.unit, mapping };
   }
 
-  /** Cells are judged before columns are asked about: no answer helps a file with faults in it. */
+  /**
+   * Cells are judged before columns are asked about: no answer helps a file with faults in it. Columns of text are let be where
+   * enough others are left.
+   */
   private asks(questions: readonly string[]): ScanReading {
+    const isTextAllowed = this.numbers.size >= FEWEST_COLUMNS;
     for (const [at, { line, cells }] of this.table.rows.entries()) {
-      for (const [column, values] of this.numbers) {
-        if (!Number.isNaN(values[at])) continue;
-        this.cellFaults.addNoNumber(line, column, cells[column] ?? '', this.isComma);
+      for (const [column, cell] of cells.entries()) {
+        const value = this.numbers.get(column)?.[at];
+        if (value === undefined ? isTextAllowed : !Number.isNaN(value)) continue;
+        this.cellFaults.addNoNumber(line, column, cell, this.isComma);
       }
     }
     if (!this.faults.isEmpty) return refused(this.faults, this.understood);

@@ -22,7 +22,8 @@ export interface CellTable {
 }
 
 const SAY_COMMENT = 'Begin the line with # if it is a comment.';
-const FEWEST_COLUMNS = 3;
+/** The dial and two powers. */
+export const FEWEST_COLUMNS = 3;
 const FEWEST_ROWS = 2;
 
 /** Finds the rows and their header; null, with the faults that say why, where there is no sound table. */

@@ -82,6 +82,8 @@ const NAMELESS: readonly Hostile[] = [
 const CELLS: readonly Hostile[] = [
   ['nan', `${HEAD}0,1,2\n5,nan,3\n`, 'Line 3, column 2 (crossed)', /“nan” is no measured value/u],
   ['nan in the first row', `${HEAD}0,NaN,2\n5,1,3\n`, 'Line 2, column 2 (crossed)', /“NaN” is no measured/u],
+  ['a column of nan', '0,nan,2\n5,nan,3\n', 'Line 1, column 2', /“nan” is no measured value/u],
+  ['exponents with D', `${HEAD}0,1,2\n5,2.0D0,3\n`, 'Line 3, column 2 (crossed)', /more than a number/u],
   ['inf', `${HEAD}0,1,-inf\n5,2,3\n`, 'Line 2, column 3 (parallel)', /“-inf” is no measured value/u],
   [
     '#N/A where a comment would begin',

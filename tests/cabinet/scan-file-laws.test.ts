@@ -119,7 +119,7 @@ test('a table in any dialect reads back: exactly, or to one unit in the last pla
       const hasNote = reading.notes.some((note) => note.includes('no line break behind it'));
       expect(hasNote).toBe(!dialect.isEnded);
     }),
-    { numRuns: 1000 },
+    { numRuns: 600 },
   );
 });
 
@@ -150,7 +150,7 @@ test('a file cut off at any byte reads whole rows exactly, or is refused with a 
         expect(last?.dialDeg).toBe(whole.points[cut.points.length - 1]?.dialDeg);
       }
     }),
-    { numRuns: 150 },
+    { numRuns: 100 },
   );
 });
 
