@@ -80,3 +80,4 @@ export {
   type TargetPlate,
   type TargetProblem,
 } from './solve-target';
+export * from './tomography';
