@@ -10,6 +10,7 @@ export {
   type UncertainPlate,
   whatIf,
 } from './budget';
+export * from './calibration';
 export * from './convention';
 export { CONVENTION_SETS, type ConventionSet, type ConventionSource } from './convention-sets';
 export { type DescribedState, describeState, type WrittenBloch } from './described-state';
