@@ -4,6 +4,7 @@ export * from './files';
 export * from './mounts';
 export * from './calibrations';
 export * from './cabinet';
+export * from './scans';
 export * from './benches';
 export * from './protocols';
 export * from './versions';

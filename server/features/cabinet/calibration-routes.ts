@@ -1,4 +1,4 @@
-import { type CalibrationInput, calibrationInputSchema, calibrationSchema } from '../../../shared/schemas';
+import { calibrationInputSchema, calibrationSchema } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { conflict, refused } from '../../errors';
 import { nothing, type Route, route } from '../../http/route';
@@ -22,7 +22,7 @@ export function calibrationRoutes(): readonly Route[] {
       handler: async ({ body, thing, labId, user, transaction, audit, now }) => {
         requirePast(body.measuredAt, now, 'measuredAt');
         const seat = seatToCalibrate(thing);
-        await requireSameSeat(transaction, thing, body);
+        await requireSettles(transaction, thing, body.settlesId);
         const id = await insertCalibration(transaction, { labId, userId: user.id, now }, seat.id, body);
         await raiseRevision(transaction, thing);
         await audit({
@@ -46,7 +46,7 @@ export function calibrationRoutes(): readonly Route[] {
 }
 
 /** @throws ProblemError 409 where a measurement would hold for nothing. */
-export function seatToCalibrate(plate: StoredPlate): { readonly id: string } {
+export function seatToCalibrate(plate: StoredPlate): NonNullable<StoredPlate['seat']> {
   if (plate.retiredAt !== null) {
     throw conflict(
       'plate-retired',
@@ -62,19 +62,22 @@ export function seatToCalibrate(plate: StoredPlate): { readonly id: string } {
   return plate.seat;
 }
 
-/** Before a seat began nothing could be measured in it; and what is settled is a question of this plate's own. */
-async function requireSameSeat(
+/** What is settled is an open question of this plate in its present seat: of another seat nothing is used any more. */
+export async function requireSettles(
   transaction: Transaction,
   plate: StoredPlate,
-  { settlesId }: CalibrationInput,
+  settlesId: string | null,
 ): Promise<void> {
   if (settlesId === null) return;
   const key = { labId: plate.labId, plateId: plate.id, calibrationId: settlesId };
   const settled = await findCalibration(transaction, key);
   const path = 'settlesId';
-  if (settled === null) {
+  if (settled === null || settled.seatId !== plate.seat?.id) {
     throw refused([
-      { path, message: `${plate.name} has no such calibration. Open the plate again and choose.` },
+      {
+        path,
+        message: `${plate.name} has no such calibration in its present seat. Open the plate again and choose.`,
+      },
     ]);
   }
   if (settled.calibration.openQuestions.length === 0) {

@@ -14,7 +14,7 @@ const seatedRow = calibrationRow.extend({
   sha256: z.string().nullable(),
   size_bytes: z.number().nullable(),
 });
-const fittedRow = calibrationRow.extend({ fit: z.string().nullable() });
+const fittedRow = calibrationRow.extend({ seat_id: z.string(), fit: z.string().nullable() });
 
 /** What was measured of a plate in all its seats, newest first. */
 export async function listCalibrations(
@@ -39,13 +39,20 @@ function mapScan(row: z.infer<typeof seatedRow>): SeatedCalibration['scan'] {
   return { name: row.scan_name, sha256: row.sha256, sizeBytes: row.size_bytes };
 }
 
+/** A calibration, the seat it was measured in, and the text of its fit where it came from a scan. */
+export interface FoundCalibration {
+  readonly calibration: Calibration;
+  readonly seatId: string;
+  readonly fit: string | null;
+}
+
 /** One calibration of a plate, with the text of its fit where it came from a scan. */
 export async function findCalibration(
   transaction: Transaction,
   key: { readonly labId: string; readonly plateId: string; readonly calibrationId: string },
-): Promise<{ readonly calibration: Calibration; readonly fit: string | null } | null> {
+): Promise<FoundCalibration | null> {
   const found: unknown = await transaction.raw(
-    `select ${calibrationColumns}, c.fit from calibrations c
+    `select ${calibrationColumns}, c.seat_id, c.fit from calibrations c
       join seats s on s.lab_id = c.lab_id and s.id = c.seat_id join users u on u.id = c.recorded_by
       where c.lab_id = ? and s.plate_id = ? and c.id = ?`,
     [key.labId, key.plateId, key.calibrationId],
@@ -53,7 +60,7 @@ export async function findCalibration(
   const [row] = rowsOf.parse(found).rows;
   if (row === undefined) return null;
   const read = fittedRow.parse(row);
-  return { calibration: mapCalibration(read), fit: read.fit };
+  return { calibration: mapCalibration(read), seatId: read.seat_id, fit: read.fit };
 }
 
 /** Of a scan: the file as it came and canonical JSON of how it was read and fitted. */

@@ -3,6 +3,7 @@ import { attachedFileRoutes } from './attached-file-routes';
 import { calibrationRoutes } from './calibration-routes';
 import { mountRoutes } from './mount-routes';
 import { plateRoutes } from './plate-routes';
+import { scanRoutes } from './scan-routes';
 import { seatRoutes } from './seat-routes';
 
 export { insertCalibration } from './calibration-store';
@@ -15,6 +16,7 @@ export function cabinetRoutes(): readonly Route[] {
     ...plateRoutes(),
     ...seatRoutes(),
     ...calibrationRoutes(),
+    ...scanRoutes(),
     ...attachedFileRoutes(),
     ...mountRoutes(),
   ];
