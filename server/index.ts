@@ -4,6 +4,8 @@ import { createApp } from './app';
 import { ConfigError, loadConfig, type Config } from './config';
 import { openDatabase, openSidePool } from './db/database';
 import { makeLogger } from './http/request-log';
+import { startJobs } from './jobs';
+import { allWorkers } from './workers';
 
 const shutdownMs = 10_000;
 
@@ -31,6 +33,9 @@ const { app, close } = createApp({
   pagesDirectory: path.join(import.meta.dirname, '..', 'dist'),
   prunes: true,
 });
+
+const jobs = startJobs({ sidePool, database, logger, workers: allWorkers(config, database) });
+if (config.mail === null) logger.warn('no SMTP_URL is set: mail is written and waits');
 
 const server = createServer(app);
 // Node's own limits leave a slow sender five minutes.
@@ -60,7 +65,7 @@ async function shutDown(exitCode: number): Promise<void> {
   // Answers under way are finished; connections that only wait are not waited for.
   const sweeping = setInterval(() => server.closeIdleConnections(), 100);
   server.closeIdleConnections();
-  await closed;
+  await Promise.all([closed, jobs.stop()]);
   clearInterval(sweeping);
   close();
   await Promise.allSettled([database.destroy(), sidePool.end()]);

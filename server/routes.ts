@@ -6,6 +6,7 @@ import { fileRoutes } from './features/files';
 import { homeRoutes } from './features/home';
 import { labRoutes } from './features/labs';
 import { protocolRoutes } from './features/protocols';
+import { relianceRoutes } from './features/reliance';
 import { runRoutes } from './features/runs';
 import type { Route } from './http/route';
 
@@ -18,6 +19,7 @@ export function allRoutes(config: Pick<Config, 'secure' | 'sessionSecret'>): rea
     ...fileRoutes(),
     ...benchRoutes(),
     ...protocolRoutes(),
+    ...relianceRoutes(),
     ...runRoutes(),
     ...homeRoutes(),
   ];

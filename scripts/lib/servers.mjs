@@ -1,5 +1,5 @@
 /**
- * The two servers that `npm start` runs: the product's own and, without a real GitHub, its stand-in.
+ * The servers that `npm start` runs: the product's own and, without the real services, stand-ins for GitHub and for a mail server.
  */
 import path from 'node:path';
 import { freePortFrom, isPortFree } from './ports.mjs';
@@ -9,9 +9,10 @@ import { keepSecret, randomSecret, readPort } from './settings.mjs';
 
 const APP_PORT = 4600;
 const FAKE_PORT = 4610;
+const FAKE_SMTP_PORT = 4620;
 
 /**
- * @typedef {object} Place what both servers share
+ * @typedef {object} Place what all servers share
  * @property {string} root
  * @property {string} dataDirectory
  * @property {import('./settings.mjs').Environment} settings
@@ -21,6 +22,7 @@ const FAKE_PORT = 4610;
  */
 
 /** @typedef {{ url: string, clientId: string, clientSecret: string }} Fake */
+/** @typedef {{ smtpUrl: string, pageUrl: string }} FakeMailbox */
 
 /**
  * The port asked for, which must be free, or the first free one from 4600.
@@ -69,11 +71,35 @@ export async function startFake({ root, dataDirectory, settings, publicUrl, stop
 
 /**
  * @param {Place} place
- * @param {{ port: number, databaseUrl: string, fake: Fake | null }} parts
+ * @returns {Promise<FakeMailbox>}
+ */
+export async function startFakeMailbox({ root, dataDirectory, settings, stoppers, onGivenUp }) {
+  for (let port = await freePortFrom(FAKE_SMTP_PORT); ; port = await freePortFrom(port + 1)) {
+    const smtpPort = await freePortFrom(port + 1);
+    const pageUrl = `http://127.0.0.1:${port}`;
+    try {
+      await startService({
+        ...{ root, stoppers, onGivenUp },
+        name: 'The fake mailbox',
+        entry: 'fake-smtp/index.ts',
+        env: { ...settings, HOST: '127.0.0.1', PORT: String(port), SMTP_PORT: String(smtpPort) },
+        logFile: path.join(dataDirectory, 'fake-smtp.log'),
+        readyUrl: `${pageUrl}/`,
+      });
+      return { smtpUrl: `smtp://127.0.0.1:${smtpPort}`, pageUrl };
+    } catch (error) {
+      if (!(error instanceof PortTaken)) throw error;
+    }
+  }
+}
+
+/**
+ * @param {Place} place
+ * @param {{ port: number, databaseUrl: string, fake: Fake | null, mailbox: FakeMailbox | null }} parts
  */
 export async function startServer(
   { root, dataDirectory, settings, publicUrl, stoppers, onGivenUp },
-  { port, databaseUrl, fake },
+  { port, databaseUrl, fake, mailbox },
 ) {
   const host = settings['HOST'] ?? '127.0.0.1';
   const reach = host === '0.0.0.0' || host === '::' ? '127.0.0.1' : host;
@@ -97,6 +123,7 @@ export async function startServer(
         DATABASE_OWNER_URL: undefined,
         PUBLIC_URL: publicUrl,
         SESSION_SECRET: secret,
+        ...(mailbox === null ? {} : { FAKE_SMTP_URL: mailbox.smtpUrl }),
         ...(fake === null
           ? {}
           : {

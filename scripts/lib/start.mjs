@@ -10,7 +10,7 @@ import { ensurePackages } from './packages.mjs';
 import { run, tail } from './run.mjs';
 import { announce, claim } from './running.mjs';
 import { Failure, say, sayFailure, secondsSince, step } from './say.mjs';
-import { choosePort, startFake, startServer } from './servers.mjs';
+import { choosePort, startFake, startFakeMailbox, startServer } from './servers.mjs';
 import { ensureDataDirectory, readPort, readSettings } from './settings.mjs';
 import { createStoppers } from './stoppers.mjs';
 
@@ -77,10 +77,12 @@ async function bringUp(root, stoppers, giveUp) {
 
   const isProduction = settings['NODE_ENV'] === 'production';
   const usesFake = settings['GITHUB_CLIENT_ID'] === undefined;
+  const usesMailbox = settings['SMTP_URL'] === undefined && settings['FAKE_SMTP_URL'] === undefined;
   const publicUrl = settings['PUBLIC_URL'] ?? `http://localhost:${port}`;
   const place = { root, dataDirectory, settings, publicUrl, stoppers, onGivenUp: giveUp };
-  const [fake] = await Promise.all([
+  const [fake, mailbox] = await Promise.all([
     usesFake ? startFake(place) : null,
+    usesMailbox ? startFakeMailbox(place) : null,
     // The demo labs' people exist only in the stand-in.
     prepareDatabase(root, { ...settings, DATABASE_OWNER_URL: urls.ownerUrl }, usesFake, signal),
     step(
@@ -91,12 +93,16 @@ async function bringUp(root, stoppers, giveUp) {
   ]);
   await step(
     'server',
-    () => startServer(place, { port, databaseUrl: urls.appUrl, fake }),
+    () => startServer(place, { port, databaseUrl: urls.appUrl, fake, mailbox }),
     () => (stoppers.isStopping ? null : 'Server ready.'),
   );
   if (stoppers.isStopping) return true;
   announce(runningFile, publicUrl);
-  await sayWelcome(publicUrl, fake?.url ?? null, isProduction ? null : path.join('.data', 'server.log'));
+  await sayWelcome(publicUrl, {
+    fakeUrl: fake?.url ?? null,
+    mailboxUrl: mailbox?.pageUrl ?? null,
+    log: isProduction ? null : path.join('.data', 'server.log'),
+  });
   say(`Ready after ${secondsSince(began)}. Ctrl-C stops everything.`);
   return true;
 }
@@ -121,6 +127,12 @@ function checkSettings(settings) {
     throw new Failure(
       'FAKE_GITHUB_URL is set without GITHUB_CLIENT_ID and GITHUB_CLIENT_SECRET, by which the stand-in there knows us.',
       'Set those two as well, or leave FAKE_GITHUB_URL out to have a stand-in started.',
+    );
+  }
+  if (settings['NODE_ENV'] === 'production' && !isSet('SMTP_URL')) {
+    throw new Failure(
+      'In production the fake mailbox is refused, because nobody would get their mail.',
+      'Set SMTP_URL, or take NODE_ENV=production away to try things out.',
     );
   }
   if (isSet('DATABASE_URL') !== isSet('DATABASE_OWNER_URL')) {
@@ -187,10 +199,9 @@ async function prepareDatabase(root, env, withDemo, signal) {
 
 /**
  * @param {string} url
- * @param {string | null} fakeUrl
- * @param {string | null} log
+ * @param {{ fakeUrl: string | null, mailboxUrl: string | null, log: string | null }} places
  */
-async function sayWelcome(url, fakeUrl, log) {
+async function sayWelcome(url, { fakeUrl, mailboxUrl, log }) {
   say(`\nQuarterturn is at ${url}\n`);
   if (fakeUrl !== null) {
     const response = await fetch(`${fakeUrl}/demo-people`);
@@ -201,5 +212,6 @@ async function sayWelcome(url, fakeUrl, log) {
     for (const person of people) say(`  ${person.name.padEnd(width)}  ${person.note}`);
     say('');
   }
+  if (mailboxUrl !== null) say(`Mail goes to a local mailbox: ${mailboxUrl}`);
   if (log !== null) say(`The server's log is ${log}.`);
 }

@@ -74,6 +74,7 @@ const table: Readonly<Record<string, Row>> = {
     body: () => calibrationBody(),
     ids: plateId,
   },
+  'GET /labs/:labId/plates/:plateId/reliance': { least: 'guest', ids: plateId },
   'POST /labs/:labId/plates/:plateId/retire': { least: 'designer', ids: plateId },
   'POST /labs/:labId/plates/:plateId/return': { least: 'designer', ids: plateId },
   'GET /labs/:labId/cabinet': { least: 'guest' },
@@ -127,6 +128,11 @@ const table: Readonly<Record<string, Row>> = {
   'POST /labs/:labId/protocols': { least: 'designer', body: draftBody },
   'GET /labs/:labId/protocols/:protocolId': { least: 'guest', ids: protocolId },
   'PUT /labs/:labId/protocols/:protocolId/draft': { least: 'designer', body: draftBody, ids: protocolId },
+  'POST /labs/:labId/protocols/:protocolId/draft/from-version': {
+    least: 'designer',
+    body: () => ({ number: 1 }),
+    ids: protocolId,
+  },
   'POST /labs/:labId/protocols/:protocolId/versions': {
     least: 'designer',
     body: () => ({

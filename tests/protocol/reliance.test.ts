@@ -74,7 +74,7 @@ test('a half-wave plate whose zero moved by a turns linear light by 2a, 4a on th
       const moved = again(H3, { offsetDeg: half.offsetDeg + a });
       const report = reliance(content, now(benchOf([moved])));
       // The dial itself is rounded to 0.001°, which its own infidelity bounds.
-      const expected = Number(sin((2 * a * pi) / 180)) ** 2;
+      const expected = sin((2 * a * pi) / 180) ** 2;
       expect(report.targets[0]?.oldDials).toBeCloseTo(expected, 4);
       expect(report.plates[0]).toMatchObject({ change: 'recalibrated' });
       expect(report.plates[0]?.zeroShiftDeg).toBeCloseTo(a, 9);
@@ -88,9 +88,9 @@ test('a half-wave plate whose zero moved by a turns linear light by 2a, 4a on th
 function jonesRetarder(retardanceDeg: number, fastAxisDeg: number): Complex[][] {
   const theta = (fastAxisDeg * pi) / 180;
   const half = (retardanceDeg * pi) / 360;
-  const [c, s] = [Number(cos(theta)), Number(sin(theta))];
-  const fast = complex(Number(cos(half)), -Number(sin(half)));
-  const slow = complex(Number(cos(half)), Number(sin(half)));
+  const [c, s] = [cos(theta), sin(theta)];
+  const fast = complex(cos(half), -sin(half));
+  const slow = complex(cos(half), sin(half));
   const sum = (x: number, y: number) => complex(fast.re * x + slow.re * y, fast.im * x + slow.im * y);
   const across = complex((fast.re - slow.re) * c * s, (fast.im - slow.im) * c * s);
   return [
@@ -121,7 +121,7 @@ test('what two plates make at old dials with new zeros and retardances agrees wi
         const out = multiply(multiply(second ?? [], first ?? []), [complex(1, 0), complex(0, 0)]);
         const wanted = (Number(axis.toFixed(3)) * pi) / 180;
         const [x, y] = out.map((entry) => complex(entry));
-        const [c, s] = [Number(cos(wanted)), Number(sin(wanted))];
+        const [c, s] = [cos(wanted), sin(wanted)];
         const re = c * (x?.re ?? 0) + s * (y?.re ?? 0);
         const im = c * (x?.im ?? 0) + s * (y?.im ?? 0);
         expect(targets[0]?.oldDials).toBeCloseTo(1 - re * re - im * im, 12);
@@ -235,7 +235,7 @@ test('a target that the plates no longer reach says by how much it falls short',
   const report = reliance(content, now(benchOf([again(QB, { retardanceDeg: 86.9 })])));
   // One plate of 86.9° takes H at best 3.1° from the pole.
   expect(report.targets[0]?.shortfallDeg).toBeCloseTo(3.1, 9);
-  expect(report.targets[0]?.resolved).toBeCloseTo(Number(sin((1.55 * pi) / 180)) ** 2, 9);
+  expect(report.targets[0]?.resolved).toBeCloseTo(sin((1.55 * pi) / 180) ** 2, 9);
 });
 
 test('a version of unitaries is judged by its unitaries', () => {
@@ -256,7 +256,7 @@ test('a version of unitaries is judged by its unitaries', () => {
   const plates = [first, again(H3, { offsetDeg: half.offsetDeg + 1 }), QB];
   const report = reliance(frozen.content, now(benchOf(plates)));
   // A half-wave plate turned by a is the old one followed by a rotation of the sphere by 4a: ⅔ sin²(2a) on average.
-  expect(report.targets[0]?.oldDials).toBeCloseTo((2 / 3) * Number(sin((2 * pi) / 180)) ** 2, 5);
+  expect(report.targets[0]?.oldDials).toBeCloseTo((2 / 3) * sin((2 * pi) / 180) ** 2, 5);
   expect(report.targets[0]?.resolved).toBeLessThan(1e-7);
 });
 

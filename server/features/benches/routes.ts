@@ -16,6 +16,7 @@ import { conflict, notFound, refused } from '../../errors';
 import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Route, route } from '../../http/route';
+import { requestReliance } from '../beam-changes';
 import { asCabinetPlate, findPlates, type StoredPlate } from '../cabinet';
 import { findLab, holdLab, type StoredLab } from '../labs';
 import {
@@ -111,6 +112,7 @@ export function benchRoutes(): readonly Route[] {
         if (idsOf(thing, 'preparation').join() !== body.plateIds.join()) {
           await unholdDrafts(transaction, { labId, benchId: thing.id });
         }
+        await requestReliance(transaction, labId, { benchId: thing.id });
         await audit({
           kind: 'bench.changed',
           subjectId: thing.id,

@@ -12,6 +12,7 @@ import { conflict } from '../../errors';
 import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Reply, type Route, route } from '../../http/route';
+import { requestReliance } from '../beam-changes';
 import { findLab } from '../labs';
 import {
   asMount,
@@ -84,6 +85,7 @@ export function mountRoutes(): readonly Route[] {
       handler: async ({ body, thing, labId, transaction, audit, expectedRevision }) => {
         requireRevision(expectedRevision, thing.revision, asMount(thing));
         await namedOnce({ mount: body.name }, () => updateMount(transaction, thing, body));
+        if (thing.plate !== null) await requestReliance(transaction, labId, { plateId: thing.plate.id });
         const { labId: _labId, plate: _plate, ...before } = thing;
         await audit({ kind: 'mount.changed', subjectId: thing.id, details: { before, after: body } });
         return mountReply(transaction, { labId, mountId: thing.id });

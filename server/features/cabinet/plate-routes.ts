@@ -16,6 +16,7 @@ import { conflict } from '../../errors';
 import { labParams } from '../../http/lab-params';
 import { requireRevision } from '../../http/revision';
 import { noBody, nothing, type Reply, type Route, route } from '../../http/route';
+import { requestReliance } from '../beam-changes';
 import { findLab } from '../labs';
 import { listAttachedFiles } from './attached-files';
 import { listCalibrations } from './calibration-store';
@@ -111,6 +112,7 @@ export function plateRoutes(): readonly Route[] {
         const key = { labId, plateId: thing.id };
         requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
         await namedOnce({ plate: body.name }, () => updatePlate(transaction, thing, body));
+        await requestReliance(transaction, labId, { plateId: thing.id });
         const { labId: _labId, benches: _benches, seat: _seat, calibration: _calibration, ...before } = thing;
         await audit({ kind: 'plate.changed', subjectId: thing.id, details: { before, after: body } });
         return plateReply(transaction, key, now);

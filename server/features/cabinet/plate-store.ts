@@ -2,6 +2,7 @@ import { z } from 'zod';
 import type { UpdatePlate } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
+import { requestReliance } from '../beam-changes';
 import { calibrationColumns, mapPlate, type StoredPlate } from './plate-rows';
 
 export const rowsOf = z.object({ rows: z.array(z.unknown()) });
@@ -101,11 +102,15 @@ export async function setRetired(
     .update({ retired_at: at, revision: stored.revision + 1 });
 }
 
-/** Of a plate whose seat or calibration is another now: what was opened before it is older. */
+/**
+ * Of a plate whose seat or calibration is another now: what was opened before it is older, and what relies on it is looked
+ * at anew.
+ */
 export async function raiseRevision(transaction: Transaction, stored: StoredPlate): Promise<void> {
   await transaction('plates')
     .where({ lab_id: stored.labId, id: stored.id })
     .update({ revision: stored.revision + 1 });
+  await requestReliance(transaction, stored.labId, { plateId: stored.id });
 }
 
 function plateColumns(plate: UpdatePlate) {

@@ -21,6 +21,7 @@ import {
   listProtocols,
   updateDraft,
 } from './draft-store';
+import { draftFromVersionRoute } from './draft-from-version-route';
 import { protocolParams } from './protocol-params';
 import { versionRoutes } from './version-routes';
 
@@ -89,6 +90,7 @@ export function protocolRoutes(): readonly Route[] {
         return { body: draft, revision: draft.revision };
       },
     }),
+    draftFromVersionRoute(),
     ...versionRoutes(),
   ];
 }

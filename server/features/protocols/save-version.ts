@@ -1,4 +1,3 @@
-import { setTimeout as sleep } from 'node:timers/promises';
 import { sortedJson } from '../../../shared/protocol/canonical-json';
 import { compareShown } from '../../../shared/protocol/compare-shown';
 import { type Frozen, freezeSteps } from '../../../shared/protocol/freeze';
@@ -10,6 +9,7 @@ import { newId } from '../../db/new-id';
 import { conflict, ProblemError, refused } from '../../errors';
 import { requireRevision } from '../../http/revision';
 import type { Reply, User } from '../../http/route';
+import { betweenTurns } from '../../jobs';
 import { findBench, type StoredBench } from '../benches';
 import { findLab, type StoredLab } from '../labs';
 import type { StoredProtocol } from './draft-store';
@@ -124,22 +124,6 @@ export async function keepVersion(
     },
   });
   return { status: 201, body: summary };
-}
-
-/** A request of somebody else asks the database a dozen things in turn: one turn of the event loop a row would be no answer. */
-const pauseMs = 30;
-const mostWithoutPauseMs = 60;
-
-/** Long work in short pieces, with time for everybody else between them. */
-async function betweenTurns<Result>(steps: Generator<undefined, Result>): Promise<Result> {
-  let since = performance.now();
-  for (;;) {
-    const step = steps.next();
-    if (step.done === true) return step.value;
-    if (performance.now() - since < mostWithoutPauseMs) continue;
-    await sleep(pauseMs);
-    since = performance.now();
-  }
 }
 
 /** Lets one piece of a person's work run at a time in this process: it holds a processor for as long as it takes. */

@@ -167,6 +167,9 @@ export async function insertVersion(
     saved_at: content.savedAt,
     saved_by: content.savedBy.id,
   });
+  await transaction('version_plates').insert(
+    content.bench.plates.map((plate) => ({ lab_id: content.lab.id, version_id: id, plate_id: plate.id })),
+  );
   return {
     id,
     protocolId: content.protocol.id,

@@ -6,9 +6,12 @@ import { pino } from 'pino';
 import supertest from 'supertest';
 import { z } from 'zod';
 import { type RunningFakeOAuth, startFakeOAuth } from '../../../fake-oauth/listen';
+import { type RunningFakeSmtp, startFakeSmtp } from '../../../fake-smtp/listen';
 import { createApp } from '../../../server/app';
 import { type Config, loadConfig } from '../../../server/config';
 import { openDatabase, openSidePool } from '../../../server/db/database';
+import { startJobs } from '../../../server/jobs';
+import { allWorkers } from '../../../server/workers';
 import { createTestDatabase, type TestDatabase } from '../../setup/database';
 
 export type Agent = ReturnType<typeof supertest.agent>;
@@ -19,6 +22,8 @@ export interface Harness {
   readonly database: Knex;
   readonly testDatabase: TestDatabase;
   readonly fake: RunningFakeOAuth;
+  /** Takes the mail that jobs send. */
+  readonly smtp: RunningFakeSmtp;
   /** Everything that was logged, for tests that look for what must not be there. */
   readonly log: () => string;
   /** A browser of its own, with its own cookies. */
@@ -31,6 +36,8 @@ export interface Harness {
 export interface HarnessOptions {
   readonly environment?: Readonly<Record<string, string>>;
   readonly pagesDirectory?: string;
+  /** Whether the server works on its queue. Without it jobs are queued and wait. */
+  readonly jobs?: true;
 }
 
 /** The whole server on a loopback port, with a database and a provider of its own. */
@@ -41,6 +48,7 @@ export async function startHarness(options: HarnessOptions = {}): Promise<Harnes
   const origin = `http://127.0.0.1:${port}`;
   const client = { clientId: 'test-client', clientSecret: 'test-client-secret' };
   const fake = await startFakeOAuth({ port: 0, ...client, callbackUrl: `${origin}/` });
+  const smtp = await startFakeSmtp({ smtpPort: 0, httpPort: 0 });
   const config = loadConfig({
     NODE_ENV: 'test',
     PORT: String(port),
@@ -51,6 +59,7 @@ export async function startHarness(options: HarnessOptions = {}): Promise<Harnes
     FAKE_GITHUB_URL: fake.url,
     GITHUB_CLIENT_ID: client.clientId,
     GITHUB_CLIENT_SECRET: client.clientSecret,
+    FAKE_SMTP_URL: smtp.smtpUrl,
     SIGN_INS_PER_MINUTE: '100000',
     API_CALLS_PER_MINUTE: '1000000',
     UPLOADS_PER_MINUTE: '1000000',
@@ -65,22 +74,28 @@ export async function startHarness(options: HarnessOptions = {}): Promise<Harnes
       done();
     },
   });
+  const logger = pino({ level: 'info' }, sink);
   const { app, close } = createApp({
     config,
     database,
     sidePool,
-    logger: pino({ level: 'info' }, sink),
+    logger,
     readiness: { accepting: true },
     pagesDirectory: options.pagesDirectory ?? tmpdir(),
     prunes: false,
   });
   server.on('request', app);
+  const jobs =
+    options.jobs === true
+      ? startJobs({ sidePool, database, logger, workers: allWorkers(config, database) })
+      : null;
   return {
     origin,
     config,
     database,
     testDatabase,
     fake,
+    smtp,
     log: () => lines.join(''),
     browser: () => supertest.agent(origin),
     signIn: async (login) => {
@@ -91,7 +106,8 @@ export async function startHarness(options: HarnessOptions = {}): Promise<Harnes
     },
     close: async () => {
       close();
-      await fake.close();
+      await jobs?.stop();
+      await Promise.all([fake.close(), smtp.close()]);
       await new Promise<void>((resolve) => {
         server.close(() => resolve());
         server.closeAllConnections();

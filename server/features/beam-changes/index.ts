@@ -1,0 +1,1 @@
+export { requestReliance } from './request-reliance';

@@ -1,0 +1,3 @@
+export { lookWorkers } from './look-workers';
+export { tellWhatIsDue } from './tell-due';
+export { tellWhoLeftTolerance } from './tell-left';

@@ -1,0 +1,3 @@
+export { relianceWorker } from './reliance-worker';
+export { type StaleVersion, staleVersions } from './reliant-versions';
+export { relianceRoutes } from './routes';
