@@ -1,4 +1,4 @@
-import { startTransition, useEffect, useState } from 'react';
+import { startTransition, useEffect, useRef, useState } from 'react';
 import { sameConvention } from '../../../../shared/optics/convention';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
@@ -21,11 +21,12 @@ import { SaveVersionDialog } from './SaveVersionDialog';
 import { SelectedFigures } from './SelectedFigures';
 import { SequencePanel } from './SequencePanel';
 import { SelectedStage } from './SelectedStage';
-import { TargetsTable } from './TargetsTable';
+import { TargetsSection } from './TargetsSection';
 import { useDesignerCommands } from './use-designer-commands';
+import { useLater } from './use-later';
 import { useLooked } from './use-looked';
-import { useRemovedRow } from './use-removed-row';
 import { useRowViews } from './use-row-views';
+import { useUndoSentence } from './use-undo-sentence';
 import { VocabularyDialog } from './VocabularyDialog';
 import { useDesignerView } from './view-store';
 import './designer.css';
@@ -34,6 +35,9 @@ const emptyWords = {
   prepare: 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).',
   apply: 'Write a unitary in the row above, like hadamard or rotate(x, 90deg).',
 } as const;
+
+const figuresAfterMs = 20;
+const budgetAfterMs = 50;
 
 const noPlates: Bench['plates'] = [];
 
@@ -52,6 +56,8 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const [writtenIn, setWrittenIn] = useState(lab.convention);
   const { selectedId, select, turnByHand, handDialsDeg } = useDesignerView();
 
+  const findField = useRef<HTMLInputElement>(null);
+
   const { content } = draft;
   const bench = benches.find(({ id }) => id === content.benchId);
   const solved = useSolvedRows(content.targets, bench ?? null, lab.convention, content);
@@ -59,8 +65,13 @@ export function Designer({ protocol, benches }: DesignerProps) {
   // Turned by hand were other plates.
   const benchPlates = bench?.plates.map(({ id }) => id).join();
   useEffect(() => turnByHand(null), [benchPlates, turnByHand]);
-  const commands = useDesignerCommands({ draft, views, mayWrite });
-  const removed = useRemovedRow(content);
+  const commands = useDesignerCommands({
+    draft,
+    views,
+    mayWrite,
+    onFind: () => findField.current?.select(),
+  });
+  const undoable = useUndoSentence(content);
 
   // Some row is always looked at: the first, until a person chooses another.
   const place = content.targets.findIndex(({ id }) => id === selectedId);
@@ -72,6 +83,9 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const target = content.targets[place];
   const view = views[place];
   const looked = useLooked({ content, bench, convention: lab.convention, target, view });
+  // The stage follows at once; the figures and the budget each in a task of their own.
+  const drawn = useLater(looked, figuresAfterMs);
+  const weighed = useLater(looked, budgetAfterMs);
 
   return (
     <>
@@ -122,32 +136,27 @@ export function Designer({ protocol, benches }: DesignerProps) {
       )}
       <div className="designer-body">
         <div className="min-w-0">
-          <div className="targets-scroll" tabIndex={0} role="region" aria-label="Targets, scrolls sideways">
-            <TargetsTable
-              targets={content.targets}
-              views={views}
-              kind={content.kind}
-              plates={bench?.plates ?? noPlates}
-              toleranceInfidelity={content.toleranceInfidelity}
-              mayWrite={mayWrite}
-              edit={draft.edit}
-              onAskWords={() => setAsking('words')}
-            />
-          </div>
-          {content.targets.length > 0 && !mayWrite && (
-            <p className="mt-2 mb-0 text-s">
-              <SaveRows content={content} convention={lab.convention} />
-            </p>
-          )}
-          {mayWrite && (
-            <p className="mt-2 mb-0 flex flex-wrap gap-x-6 gap-y-1 text-s">
-              <TextButton onClick={() => setAsking('rows')}>
-                Add a set, or rows from text or a file
-              </TextButton>
-              <TextButton onClick={() => setAsking('words')}>What can be written</TextButton>
-              {content.targets.length > 0 && <SaveRows content={content} convention={lab.convention} />}
-            </p>
-          )}
+          <TargetsSection
+            targets={content.targets}
+            views={views}
+            kind={content.kind}
+            plates={bench?.plates ?? noPlates}
+            toleranceInfidelity={content.toleranceInfidelity}
+            mayWrite={mayWrite}
+            edit={draft.edit}
+            onAskWords={() => setAsking('words')}
+            findField={findField}
+          >
+            {mayWrite && (
+              <>
+                <TextButton onClick={() => setAsking('rows')}>
+                  Add a set, or rows from text or a file
+                </TextButton>
+                <TextButton onClick={() => setAsking('words')}>What can be written</TextButton>
+              </>
+            )}
+            {content.targets.length > 0 && <SaveRows content={content} convention={lab.convention} />}
+          </TargetsSection>
           {solved.progress !== null && (
             <BeamWorking doing="Solving" unit="row" done={solved.progress.done} total={solved.progress.total}>
               The rows done already can be read.
@@ -158,28 +167,29 @@ export function Designer({ protocol, benches }: DesignerProps) {
               {mayWrite ? emptyWords[content.kind] : 'Its writer has only begun.'}
             </BeamEmpty>
           )}
-          {looked !== null && (
+          {weighed !== null && (
             <BudgetSection
-              label={looked.target.label}
-              bench={looked.bench}
+              label={weighed.target.label}
+              bench={weighed.bench}
               content={content}
               convention={lab.convention}
-              view={looked.view}
+              view={weighed.view}
             />
           )}
           {bench !== undefined && content.targets.length > 1 && (
-            <SequencePanel {...{ content, bench, views, mayWrite }} edit={draft.edit} />
+            <SequencePanel
+              {...{ content, bench, views, mayWrite }}
+              onTake={(edit, words) => {
+                undoable.say(words);
+                draft.edit(edit);
+              }}
+            />
           )}
         </div>
-        {looked !== null && <SelectedFigures {...looked} convention={lab.convention} />}
+        {drawn !== null && <SelectedFigures {...drawn} convention={lab.convention} />}
       </div>
-      {removed.row !== null && (
-        <UndoSentence
-          key={removed.row.id}
-          sentence={removed.row.text}
-          onUndo={draft.undo}
-          onGone={removed.forget}
-        />
+      {undoable.done !== null && (
+        <UndoSentence sentence={undoable.done} onUndo={draft.undo} onGone={undoable.forget} />
       )}
       <KeyList commands={commands} />
       {asking === 'rows' && (

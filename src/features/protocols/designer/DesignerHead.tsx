@@ -75,43 +75,45 @@ export function DesignerHead(props: DesignerHeadProps) {
             content.purpose !== '' && <p className="m-0 text-s text-ink-2">{content.purpose}</p>
           )}
         </div>
-        <div className="designer-facts">
-          <BenchChoice {...{ bench, benches, mayWrite }} onChoose={props.onChooseBench} />
-          <Tolerance
-            value={content.toleranceInfidelity}
-            mayWrite={mayWrite}
-            onChange={(value) => edit(setTolerance(value))}
-          />
-          <RankedBy
-            content={content}
-            bench={bench}
-            mayWrite={mayWrite}
-            standsAtDeg={props.standsAtDeg}
-            edit={edit}
-          />
-          <TextLink
-            className="fold-first"
-            to={conventionsHref(
-              content.kind === 'apply' ? 'unitary' : 'state',
-              props.lookedAt ?? (content.kind === 'apply' ? 'hadamard' : 'L'),
-              lab.convention,
-            )}
-          >
-            {describeConvention(lab.convention)}
-          </TextLink>
-        </div>
       </div>
       {maySave && (
-        <div className="text-right">
+        <div className="designer-save">
           <Button kind="filled" waitsFor={holdUp?.text} onClick={props.onSaveVersion}>
             Save version {next}
           </Button>
-          {holdUp !== null && (
-            <p className={`mt-1 mb-0 text-s ${holdUp.isFault ? 'font-strong text-fault' : 'text-ink-2'}`}>
-              {holdUp.text}
-            </p>
-          )}
         </div>
+      )}
+      <div className="designer-facts">
+        <BenchChoice {...{ bench, benches, mayWrite }} onChoose={props.onChooseBench} />
+        <Tolerance
+          value={content.toleranceInfidelity}
+          mayWrite={mayWrite}
+          onChange={(value) => edit(setTolerance(value))}
+        />
+        <RankedBy
+          content={content}
+          bench={bench}
+          mayWrite={mayWrite}
+          standsAtDeg={props.standsAtDeg}
+          edit={edit}
+        />
+        <TextLink
+          className="fact-convention fold-first"
+          to={conventionsHref(
+            content.kind === 'apply' ? 'unitary' : 'state',
+            props.lookedAt ?? (content.kind === 'apply' ? 'hadamard' : 'L'),
+            lab.convention,
+          )}
+        >
+          {describeConvention(lab.convention)}
+        </TextLink>
+      </div>
+      {maySave && (
+        <p
+          className={`designer-hold-up ${holdUp?.isFault === true ? 'font-strong text-fault' : 'text-ink-2'}`}
+        >
+          {holdUp?.text}
+        </p>
       )}
     </header>
   );

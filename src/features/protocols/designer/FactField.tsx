@@ -45,7 +45,7 @@ export function FactField(props: FactFieldProps) {
     setTyped(null);
   };
   return (
-    <label>
+    <label className="fact-field">
       {label}{' '}
       <input
         type="text"
@@ -63,7 +63,7 @@ export function FactField(props: FactFieldProps) {
           if (event.key === 'Escape') setTyped(null);
         }}
       />
-      <span id={faultId} role="status" className="ml-2 font-strong text-fault">
+      <span id={faultId} role="status" className="fact-fault">
         {fault}
       </span>
     </label>

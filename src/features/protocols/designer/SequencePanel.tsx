@@ -18,7 +18,8 @@ interface SequencePanelProps {
   readonly bench: Bench;
   readonly views: readonly RowView[];
   readonly mayWrite: boolean;
-  readonly edit: (edit: DraftEdit) => void;
+  /** Takes a plan, with what is said of it at the foot. */
+  readonly onTake: (edit: DraftEdit, words: string) => void;
 }
 
 type Solved = Extract<RowView, { status: 'solved' }>;
@@ -70,7 +71,7 @@ export function SequencePanel(props: SequencePanelProps) {
 }
 
 function SequencePlanner(props: SequencePanelProps) {
-  const { content, bench, mayWrite, edit } = props;
+  const { content, bench, mayWrite, onTake } = props;
   const [cost, setCost] = useState<'travel' | 'time'>('travel');
   const [moves, setMoves] = useState<'one-by-one' | 'together'>('one-by-one');
   const problem = useSequenceProblem(props, cost, moves);
@@ -134,7 +135,9 @@ function SequencePlanner(props: SequencePanelProps) {
           labels={content.targets.map(({ label }) => label)}
           ranked={content.objective === 'least-travel'}
           take={
-            mayWrite && problem !== null ? (order, plan) => edit(taken(content, problem, order, plan)) : null
+            mayWrite && problem !== null
+              ? (order, plan) => onTake(taken(content, problem, order, plan), takenWords(problem, order))
+              : null
           }
         />
       )}
@@ -157,4 +160,10 @@ function taken(
       fastAxesDeg: rows[order[step] ?? 0]?.branches[plan.choices[step] ?? 0] ?? null,
     })),
   );
+}
+
+function takenWords({ cost }: SequenceProblem, order: readonly number[]): string {
+  const moves = order.some((place, index) => place !== index);
+  const rows = moves ? 'The rows stand in the planned order' : 'The rows keep their order';
+  return cost === 'travel' ? `${rows}, ranked by least travel.` : `${rows}, with the planned solutions held.`;
 }

@@ -11,6 +11,7 @@ interface SolutionsListProps {
   readonly plates: readonly Plate[];
   readonly label: string;
   readonly mayWrite: boolean;
+  readonly rowIndex: number;
   readonly onHold: (fastAxesDeg: readonly number[] | null) => void;
 }
 
@@ -23,10 +24,10 @@ export function travelDeg(from: SettingSolution, to: SettingSolution): number {
 }
 
 /** Every setting that makes the target, as ranked; one of them can be held. */
-export function SolutionsList({ view, plates, label, mayWrite, onHold }: SolutionsListProps) {
+export function SolutionsList({ view, plates, label, mayWrite, rowIndex, onHold }: SolutionsListProps) {
   const { solved, solution, chosen, held } = view;
   return (
-    <tr className="target-note">
+    <tr className="target-note" aria-rowindex={rowIndex}>
       <td colSpan={2} />
       <td colSpan={plates.length + 3}>
         <table className="my-2 w-full" aria-label={`Solutions for ${label}`}>

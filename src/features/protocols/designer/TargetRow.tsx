@@ -2,17 +2,14 @@ import { memo, useEffect, useRef, type KeyboardEvent } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget, ProtocolKind } from '../../../../shared/schemas/protocols';
 import { classNames } from '../../../components/class-names';
-import { FidelityChip } from '../../../components/FidelityChip';
 import { Formula } from '../../../components/Formula';
-import { Scientific } from '../../../components/Scientific';
-import { HeldSign } from '../../../components/SmallSigns';
-import { formatDial, formatTheta } from '../../../lib/format';
-import { dialledAxisDeg } from './dialled-problem';
+import { noteOf } from './row-notes';
 import { RowNote } from './RowNote';
+import { RowNumbers } from './RowNumbers';
 import type { RowView } from './row-view';
 import { SolutionsList } from './SolutionsList';
 import { SourceField } from './SourceField';
-import { useNearScreen } from './use-near-screen';
+import type { RowWindow } from './use-row-window';
 
 /** What can be done with a row. The same object for all rows and drawings, so that a row is drawn again only when it changed. */
 export interface RowActions {
@@ -32,11 +29,11 @@ const placeholders = {
   apply: 'write a unitary, like hadamard or rotate(x, 90deg)',
 } as const;
 
-const chipWidthPx = 100;
-
 interface TargetRowProps {
   readonly actions: RowActions;
   readonly place: number;
+  /** Its place among all rows of the table, in the document or not. */
+  readonly rowIndex: number;
   readonly target: DraftTarget;
   readonly view: RowView;
   readonly kind: ProtocolKind;
@@ -48,33 +45,32 @@ interface TargetRowProps {
   /** The last, empty row: it becomes a target with its first letter. */
   readonly blank: boolean;
   readonly mayWrite: boolean;
+  readonly measure: RowWindow['measure'];
 }
 
 /** One target: what it is, where each plate must stand for it, and how well that does. At most one note below. */
 export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
   const { place, target, view, kind, plates, toleranceInfidelity, selected, editing, blank } = props;
-  const { actions, mayWrite } = props;
+  const { actions, mayWrite, rowIndex, solutionsOpen, measure } = props;
   const row = useRef<HTMLTableRowElement>(null);
   const solved = view.status === 'solved' ? view : null;
-  const near = useNearScreen(row);
-  // Of two hundred rows a few are on the screen: the others keep their place and their words.
-  const drawn = near || selected || editing ? solved : null;
   const showsSource =
     mayWrite && (editing || blank || view.status === 'unreadable' || view.status === 'empty');
+  const note = noteOf(view, toleranceInfidelity, selected);
   const name = blank ? 'a new target' : `target ${target.label}`;
 
   // The selection moves by keys: the row that has it has the focus, unless somebody types.
   useEffect(() => {
     const active = document.activeElement;
-    if (selected && !editing && !blank && active instanceof HTMLTableRowElement) row.current?.focus();
+    if (selected && !editing && !blank && active instanceof HTMLTableRowElement)
+      row.current?.focus({ preventScroll: true });
   }, [selected, editing, blank]);
 
-  const numbers = classNames('text-right whitespace-nowrap', drawn?.stale === true && 'text-ink-3');
-
   return (
-    <>
+    <tbody ref={measure} data-row={target.id}>
       <tr
         ref={row}
+        aria-rowindex={rowIndex}
         tabIndex={selected && !blank ? 0 : -1}
         aria-selected={selected}
         data-blank={blank ? '' : undefined}
@@ -93,7 +89,7 @@ export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
           view.status === 'unreadable' && 'target-row-unread',
         )}
       >
-        <td className="w-8 pl-3 font-mono text-s text-ink-3">{place + 1}</td>
+        <td className="place-cell font-mono text-s text-ink-3">{place + 1}</td>
         <td className="label-cell">
           {showsSource && !blank ? (
             <input
@@ -133,70 +129,33 @@ export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
               onFocus={blank || editing ? undefined : () => actions.openSource(target)}
             />
           ) : (
-            <ExpressionText
-              {...{ target, mayWrite }}
-              solved={drawn}
-              onOpen={() => actions.openSource(target)}
-            />
+            <ExpressionText {...{ target, mayWrite, solved }} onOpen={() => actions.openSource(target)} />
           )}
         </td>
         {view.status !== 'unreadable' && !blank && (
-          <>
-            {plates.map((plate, index) => (
-              <td key={plate.id} className={numbers}>
-                {drawn !== null && (
-                  <>
-                    <span className="font-mono text-dial">
-                      {formatDial(drawn.solution.dialsDeg[index] ?? 0, plate.mount.resolutionDeg)}
-                    </span>
-                    <span className="theta">
-                      {formatTheta(dialledAxisDeg(plate, drawn.solution.dialsDeg[index] ?? 0))}
-                    </span>
-                  </>
-                )}
-              </td>
-            ))}
-            <td className={classNames(numbers, 'chip-cell')}>
-              {drawn !== null && (
-                <span className="chip-line">
-                  <FidelityChip
-                    width={chipWidthPx}
-                    infidelity={{
-                      value: drawn.solution.expectedInfidelity,
-                      low: drawn.solution.expectedLow,
-                      high: drawn.solution.expectedHigh,
-                    }}
-                    tolerance={toleranceInfidelity}
-                    kind="predicted"
-                  />
-                  <Scientific value={drawn.solution.expectedInfidelity} />
-                </span>
-              )}
-            </td>
-            <td className={classNames(numbers, 'pr-1 font-mono text-s')}>
-              {drawn !== null && (
-                <SolutionCount
-                  solved={drawn}
-                  name={name}
-                  open={props.solutionsOpen}
-                  onOpen={(open) => actions.listSolutions(target, open)}
-                />
-              )}
-            </td>
-          </>
+          <RowNumbers
+            {...{ target, plates, toleranceInfidelity, name, actions, solved }}
+            open={solutionsOpen}
+          />
         )}
       </tr>
-      {solved !== null && (
-        <RowNote {...{ toleranceInfidelity, selected }} view={solved} columns={plates.length + 5} />
+      {solved !== null && note !== null && (
+        <RowNote
+          {...{ toleranceInfidelity, kind: note }}
+          view={solved}
+          columns={plates.length + 5}
+          rowIndex={rowIndex + 1}
+        />
       )}
-      {solved !== null && props.solutionsOpen && (
+      {solved !== null && solutionsOpen && (
         <SolutionsList
           {...{ view: solved, plates, mayWrite }}
           onHold={(fastAxesDeg) => actions.hold(target, fastAxesDeg)}
           label={target.label}
+          rowIndex={rowIndex + (note === null ? 1 : 2)}
         />
       )}
-    </>
+    </tbody>
   );
 });
 
@@ -220,34 +179,6 @@ function ExpressionText({ target, solved, mayWrite, onOpen }: ExpressionTextProp
     <button type="button" className="min-h-6 w-full text-left" onClick={onOpen}>
       <span className="sr-only">Edit {target.label}: </span>
       {text}
-    </button>
-  );
-}
-
-interface SolutionCountProps {
-  readonly solved: Extract<RowView, { status: 'solved' }>;
-  readonly name: string;
-  readonly open: boolean;
-  readonly onOpen: (open: boolean) => void;
-}
-
-function SolutionCount({ solved, name, open, onOpen }: SolutionCountProps) {
-  const count = solved.solved.solutions.length;
-  const words =
-    solved.solved.shortfallDeg > 0 && count === 1 ? 'closest' : `${solved.chosen + 1} of ${count}`;
-  return (
-    <button
-      type="button"
-      aria-expanded={open}
-      aria-label={`Solution ${words} for ${name}${solved.held ? ', held' : ''}`}
-      className="inline-flex min-h-6 items-center gap-2 whitespace-nowrap"
-      onClick={(event) => {
-        event.stopPropagation();
-        onOpen(!open);
-      }}
-    >
-      {solved.held && <HeldSign />}
-      {words}
     </button>
   );
 }

@@ -1,21 +1,19 @@
-import { type CSSProperties, useEffect, useMemo, useRef } from 'react';
+import { type CSSProperties, type FocusEvent, useMemo, useState } from 'react';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { DraftTarget, ProtocolKind } from '../../../../shared/schemas/protocols';
-import {
-  addTarget,
-  type DraftEdit,
-  holdSolution,
-  newTarget,
-  removeTarget,
-  restoreTarget,
-  writeExpression,
-  writeLabel,
-} from '../draft-edits';
+import { type DraftEdit, newTarget } from '../draft-edits';
+import { numberRows } from './row-notes';
 import type { RowView } from './row-view';
-import { type RowActions, TargetRow } from './TargetRow';
+import { TargetRow } from './TargetRow';
+import { useFocusAfter } from './use-focus-after';
+import { useRowActions } from './use-row-actions';
+import { useRowWindow } from './use-row-window';
+import { useSelectedInSight } from './use-selected-in-sight';
 import { useDesignerView } from './view-store';
 
 interface TargetsTableProps {
+  /** What the table scrolls in; null until it is in the document. */
+  readonly region: HTMLElement | null;
   readonly targets: readonly DraftTarget[];
   readonly views: readonly RowView[];
   readonly kind: ProtocolKind;
@@ -28,8 +26,12 @@ interface TargetsTableProps {
 
 const emptyView: RowView = { status: 'empty' };
 
-/** The targets in order, and below them an empty row to write the next one in. */
+/**
+ * The targets in order, and below them an empty row to write the next one in. Rows out of sight are not in the document, all
+ * but those that somebody is in: the selected one, the one whose source is open, the one with the focus, and the empty one.
+ */
 export function TargetsTable({
+  region,
   targets,
   views,
   kind,
@@ -41,21 +43,28 @@ export function TargetsTable({
 }: TargetsTableProps) {
   const { selectedId, editingId, solutionsOfId } = useDesignerView();
   const blank = useBlankTarget(targets);
-  const { table, focusAfter } = useFocusAfter();
+  const focusAfter = useFocusAfter(region);
   const actions = useRowActions({ blank, edit, focusAfter, onAskWords });
-  const rows = mayWrite ? [...targets, blank] : targets;
+  const rows = useMemo(() => (mayWrite ? [...targets, blank] : targets), [targets, mayWrite, blank]);
+  const ids = useMemo(() => rows.map(({ id }) => id), [rows]);
+  const { focusedId, watchFocus } = useFocusedRow();
+  const staying = placesOf(ids, [selectedId, editingId, focusedId, mayWrite ? blank.id : null]);
+  const { parts, measure } = useRowWindow(region, ids, staying);
+  useSelectedInSight(region, selectedId);
+  const { indexes, count } = numberRows(rows, views, toleranceInfidelity, { selectedId, solutionsOfId });
   const style: CSSProperties & Record<'--plates', number> = { '--plates': plates.length };
 
   return (
     <table
-      ref={table}
       className="targets-table"
+      aria-rowcount={count}
       data-plates={plates.length > 2 ? 'many' : 'few'}
       style={style}
+      {...watchFocus}
     >
       <caption className="sr-only">Targets, the dials that make them, and the expected infidelity</caption>
       <colgroup>
-        <col className="w-8" />
+        <col className="place-column" />
         <col className="label-column" />
         <col />
         {plates.map(({ id }) => (
@@ -65,8 +74,8 @@ export function TargetsTable({
         <col className="solution-column" />
       </colgroup>
       <thead>
-        <tr className="border-y border-ink text-left text-s text-ink-2">
-          <th scope="col" className="h-8 w-8">
+        <tr aria-rowindex={1} className="text-left text-s text-ink-2">
+          <th scope="col" className="h-8">
             <span className="sr-only">row</span>
           </th>
           <th scope="col" className="font-words">
@@ -88,107 +97,67 @@ export function TargetsTable({
           </th>
         </tr>
       </thead>
-      <tbody>
-        {rows.map((target, place) => {
-          const isBlank = target.id === blank.id;
+      {parts.map((part) => {
+        if (part.kind === 'gap') {
           return (
-            <TargetRow
-              key={target.id}
-              place={place}
-              target={target}
-              view={views[place] ?? emptyView}
-              kind={kind}
-              plates={plates}
-              toleranceInfidelity={toleranceInfidelity}
-              selected={target.id === selectedId}
-              editing={target.id === editingId}
-              solutionsOpen={target.id === solutionsOfId}
-              blank={isBlank}
-              mayWrite={mayWrite}
-              actions={actions}
-            />
+            <tbody key={`gap ${part.from}`} aria-hidden="true">
+              <tr style={{ height: part.heightPx }}>
+                <td colSpan={plates.length + 5} className="p-0" />
+              </tr>
+            </tbody>
           );
-        })}
-      </tbody>
+        }
+        const target = rows[part.place];
+        if (target === undefined) return null;
+        return (
+          <TargetRow
+            key={target.id}
+            place={part.place}
+            rowIndex={indexes[part.place] ?? 0}
+            target={target}
+            view={views[part.place] ?? emptyView}
+            kind={kind}
+            plates={plates}
+            toleranceInfidelity={toleranceInfidelity}
+            selected={target.id === selectedId}
+            editing={target.id === editingId}
+            solutionsOpen={target.id === solutionsOfId}
+            blank={target.id === blank.id}
+            mayWrite={mayWrite}
+            measure={measure}
+            actions={actions}
+          />
+        );
+      })}
     </table>
   );
 }
 
-const blankField = '[data-blank] input';
-const selectedRow = 'tr[aria-selected="true"]';
-
-interface Newest {
-  readonly blank: DraftTarget;
-  readonly edit: (edit: DraftEdit) => void;
-  readonly focusAfter: (selector: string) => void;
-  readonly onAskWords: () => void;
-}
-
-/** What rows can do, made once: each looks up what is newest when it is done, not when it was drawn. */
-function useRowActions(newest: Newest): RowActions {
-  const latest = useRef(newest);
-  useEffect(() => {
-    latest.current = newest;
-  });
-  return useMemo((): RowActions => {
-    const view = useDesignerView.getState;
-    const edit = (change: DraftEdit) => latest.current.edit(change);
-    return {
-      select: ({ id }) => view().select(id),
-      openSource: (target) => view().openSource(target.id, target),
-      write: (target, expression) => {
-        const { blank } = latest.current;
-        if (target.id !== blank.id) {
-          edit(writeExpression(target.id, expression));
-          return;
-        }
-        if (expression.trim() === '') return;
-        edit(addTarget({ ...blank, expression }));
-        view().openSource(target.id, null);
-      },
-      label: ({ id }, label) => edit(writeLabel(id, label)),
-      done: () => {
-        // A row that was just written leads to the next one; a row that was changed keeps the focus.
-        latest.current.focusAfter(view().openedTarget === null ? blankField : selectedRow);
-        view().closeSource();
-      },
-      cancel: (target) => {
-        const { editingId, openedTarget, closeSource } = view();
-        if (target.id === editingId) {
-          edit(openedTarget === null ? removeTarget(target.id) : restoreTarget(openedTarget));
-          latest.current.focusAfter(openedTarget === null ? blankField : selectedRow);
-        }
-        closeSource();
-      },
-      hold: ({ id }, fastAxesDeg) => edit(holdSolution(id, fastAxesDeg)),
-      listSolutions: ({ id }, open) => {
-        view().select(id);
-        view().listSolutions(open ? id : null);
-      },
-      askWords: () => latest.current.onAskWords(),
-    };
-  }, []);
-}
-
-/** Moves the focus once the field that had it is gone: left alone it would fall to the page, and the next keys with it. */
-function useFocusAfter() {
-  const table = useRef<HTMLTableElement>(null);
-  const wanted = useRef<string | null>(null);
-  // After every drawing, since it is the next one that takes the field away.
-  useEffect(() => {
-    if (wanted.current === null) return;
-    table.current?.querySelector<HTMLElement>(wanted.current)?.focus();
-    wanted.current = null;
-  });
-  return {
-    table,
-    focusAfter: (selector: string) => {
-      wanted.current = selector;
-    },
-  };
-}
-
-/** The row to come: the same row, with the same field under the caret, becomes a target with its first letter. */
+/**
+ * The row to come: the same row, with the same field under the caret, becomes a target with its first letter. Until then it
+ * stays the same one, whatever is typed in the others.
+ */
 function useBlankTarget(targets: readonly DraftTarget[]): DraftTarget {
-  return useMemo(() => newTarget(targets, ''), [targets]);
+  const [blank, setBlank] = useState(() => newTarget(targets, ''));
+  const isTaken = targets.some(({ id, label }) => id === blank.id || label === blank.label);
+  const next = isTaken ? newTarget(targets, '') : blank;
+  if (next !== blank) setBlank(next);
+  return next;
+}
+
+/** Where these rows stand; those that are not in the list stand nowhere. */
+function placesOf(ids: readonly string[], wanted: readonly (string | null)[]): ReadonlySet<number> {
+  const present = new Set(wanted);
+  return new Set(ids.flatMap((id, place) => (present.has(id) ? [place] : [])));
+}
+
+/** The row that has the focus: taken out of the document it would lose it. */
+function useFocusedRow() {
+  const [focusedId, setFocusedId] = useState<string | null>(null);
+  const watchFocus = {
+    onFocus: ({ target }: FocusEvent) =>
+      setFocusedId(target.closest<HTMLElement>('[data-row]')?.dataset['row'] ?? null),
+    onBlur: () => setFocusedId(null),
+  };
+  return { focusedId, watchFocus };
 }

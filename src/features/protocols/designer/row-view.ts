@@ -58,7 +58,7 @@ function faultIn(targets: readonly DraftTarget[], views: readonly RowView[]): st
   if (views.every(({ status }) => status === 'empty')) return 'No target is written yet.';
   const unread = views.flatMap(({ status }, place) => (status === 'unreadable' ? [place + 1] : []));
   if (unread.length === 1) return `Row ${unread.join()} can’t be read and holds this up.`;
-  if (unread.length > 1) return `Rows ${unread.join(', ')} can’t be read and hold this up.`;
+  if (unread.length > 1) return `Rows ${someOf(unread)} can’t be read and hold this up.`;
   const empty = views.findIndex(({ status }) => status === 'empty');
   if (empty >= 0) return `Row ${empty + 1} is empty. Write what it is to make, or take the row out.`;
   const labels = targets.map(({ label }) => label.trim());
@@ -66,6 +66,13 @@ function faultIn(targets: readonly DraftTarget[], views: readonly RowView[]): st
   if (unlabelled >= 0) return `Row ${unlabelled + 1} has no label.`;
   const twice = labels.findIndex((label, place) => labels.indexOf(label) !== place);
   return twice < 0 ? null : `Two rows are called ${labels[twice] ?? ''}. Rename row ${twice + 1}.`;
+}
+
+/** The first few: a pasted list may have a fault in every row. */
+function someOf(rows: readonly number[]): string {
+  const named = 4;
+  const more = rows.length - named;
+  return rows.slice(0, named).join(', ') + (more > 0 ? ` and ${more} more` : '');
 }
 
 /** What the page shows, for the server to hold its own solution against. */

@@ -9,10 +9,12 @@ interface Situation {
   readonly draft: DraftControl;
   readonly views: readonly RowView[];
   readonly mayWrite: boolean;
+  /** Goes to the field that finds a target. */
+  readonly onFind: () => void;
 }
 
 /** What the keys of the designer do; the list behind `?` shows the same commands. */
-export function useDesignerCommands({ draft, views, mayWrite }: Situation): readonly Command[] {
+export function useDesignerCommands({ draft, views, mayWrite, onFind }: Situation): readonly Command[] {
   const { selectedId, editingId, solutionsOfId, select, openSource, listSolutions } = useDesignerView();
   const { targets } = draft.content;
   const place = targets.findIndex(({ id }) => id === selectedId);
@@ -21,10 +23,11 @@ export function useDesignerCommands({ draft, views, mayWrite }: Situation): read
   const resting = () => editingId === null;
   const onRow = () => mayWrite && resting() && selected !== undefined;
 
-  const step = (by: number) => {
-    const next = targets[place < 0 ? 0 : Math.min(Math.max(place + by, 0), targets.length - 1)];
+  const goTo = (wanted: number) => {
+    const next = targets[Math.min(Math.max(wanted, 0), targets.length - 1)];
     if (next !== undefined) select(next.id);
   };
+  const step = (by: number) => goTo(place < 0 ? 0 : place + by);
   const otherSolution = (by: number) => {
     if (selected === undefined || view?.status !== 'solved') return;
     const { solutions } = view.solved;
@@ -51,6 +54,15 @@ export function useDesignerCommands({ draft, views, mayWrite }: Situation): read
       when: resting,
       run: () => step(1),
     },
+    { id: 'row-first', label: 'Select the first row', keys: ['Home'], when: resting, run: () => goTo(0) },
+    {
+      id: 'row-last',
+      label: 'Select the last row',
+      keys: ['End'],
+      when: resting,
+      run: () => goTo(targets.length - 1),
+    },
+    { id: 'find', label: 'Find a target', keys: ['/'], when: () => targets.length > 1, run: onFind },
     {
       id: 'edit',
       label: 'Edit the row',
