@@ -65,6 +65,9 @@ const labPages: RouteObject[] = [
   { path: 'bench/start', lazy: () => import('../features/runs/StartRunPage') },
   { path: 'results', lazy: () => import('../features/results/ResultsPage') },
   { path: 'cabinet', lazy: () => import('../features/cabinet/CabinetPage') },
+  // Before the plates: no plate's id is a word.
+  { path: 'cabinet/mounts', lazy: () => import('../features/cabinet/mounts/MountsPage') },
+  { path: 'cabinet/mounts/:mountId', lazy: () => import('../features/cabinet/mounts/MountPage') },
   { path: 'cabinet/:plateId', lazy: () => import('../features/cabinet/CabinetPage') },
   { path: 'lab', lazy: () => import('../features/labs/LabPage') },
 ];

@@ -4,8 +4,10 @@ import { arc, polar, polarText, radial } from './polar';
 interface AgeRingProps {
   /** Of the ring in px: 33 in the tray, 11 as a sign. */
   readonly radius?: number;
-  /** The fast axis at its table angle, as the mount stands; null when the plate isn't seated. */
+  /** The fast axis at its table angle, as the mount stands; null while nobody knows it. */
   readonly fastAxisDeg: number | null;
+  /** No mount holds the plate; unless it is given, so where the axis is not known. */
+  readonly dashed?: boolean;
   /** Days since the calibration and days until it is due again; null when it was never calibrated. */
   readonly ageDays: number | null;
   readonly dueDays: number;
@@ -29,6 +31,7 @@ export function ageWords(ageDays: number | null, dueDays: number): string {
 export function AgeRing({
   radius = 33,
   fastAxisDeg,
+  dashed = fastAxisDeg === null,
   ageDays,
   dueDays,
   unsettled = false,
@@ -43,10 +46,9 @@ export function AgeRing({
   const share = ageDays === null ? 0 : Math.min(1, Math.max(0, ageDays / dueDays));
   const over = ageDays !== null && ageDays > dueDays;
   const width = Math.max(2.2, radius * 0.09);
-  const empty = fastAxisDeg === null;
   const edge = lit ? 'stroke-on-lit' : 'stroke-ink';
   const tickStep = small ? 30 : 22.5;
-  const dash = empty ? { strokeDasharray: '2.4 2.4' } : {};
+  const dash = dashed ? { strokeDasharray: '2.4 2.4' } : {};
   const accessible = label === undefined ? { 'aria-hidden': true } : { role: 'img', 'aria-label': label };
   const [markX, markY] = polar(radius * 0.82, 55);
   return (

@@ -1,20 +1,21 @@
 import type { UseFormRegisterReturn } from 'react-hook-form';
+import { CheckField } from '../../components/CheckField';
 import { NumberField } from '../../components/NumberField';
 import { TextArea } from '../../components/TextArea';
 import { TextField } from '../../components/TextField';
 import { GapText } from '../../lib/GapText';
 import type { CalibrationDoubts } from './calibration-doubts';
-import type { CalibrationValues } from './plate-form-values';
-
-/** A registered field with the sentence that says what is wrong with it. */
-export type FieldBinding = UseFormRegisterReturn & { readonly fault: string | undefined };
+import type { CalibrationTextField, QuestionField } from './calibration-form-values';
+import type { FieldBinding } from './field-binding';
 
 /** The fields of one calibration, in a form that brings its own values. */
 export function CalibrationFields({
   field,
+  question,
   doubts,
 }: {
-  readonly field: (name: keyof CalibrationValues) => FieldBinding;
+  readonly field: (name: CalibrationTextField) => FieldBinding;
+  readonly question: (name: QuestionField) => UseFormRegisterReturn;
   readonly doubts: CalibrationDoubts;
 }) {
   return (
@@ -57,6 +58,19 @@ export function CalibrationFields({
         {...field('method')}
         required
       />
+      <fieldset className="space-y-2 sm:col-span-2">
+        <legend className="text-s text-ink-2 mb-1">what it could not tell</legend>
+        <CheckField
+          label="which axis is the fast one"
+          help="The zero may be the slow axis’s, a quarter turn away. Every scan between polarisers leaves this open."
+          {...question('axisOpen')}
+        />
+        <CheckField
+          label="whether the retardance is the one above or 360° less it"
+          {...question('branchOpen')}
+        />
+        <CheckField label="the retardance to first order, since it is near 180°" {...question('blind')} />
+      </fieldset>
       <TextArea label="note" rows={2} className="sm:col-span-2" {...field('note')} />
     </div>
   );

@@ -1,35 +1,40 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useForm, useWatch } from 'react-hook-form';
-import type { CalibrationInput, Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
+import { type CalibrationInput, calibrationInputSchema } from '../../../shared/schemas/calibrations';
 import { Button } from '../../components/Button';
 import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
 import { calibrationDoubts } from './calibration-doubts';
 import { CalibrationFields } from './CalibrationFields';
 import {
-  calibrationFormSchema,
   type CalibrationValues,
   emptyCalibration,
+  questionFields,
   readCalibration,
-} from './plate-form-values';
+} from './calibration-form-values';
+import { questionWords } from './plate-words';
 import { recordCalibration } from './queries';
 
 /** What was measured of a plate in its present seat. It stands from then on; a correction is another one. */
 export function CalibrationForm(props: {
   readonly labId: string;
-  readonly plate: Plate;
+  readonly plate: CabinetPlate;
   readonly now: Date;
   readonly onDone: () => void;
 }) {
   const { labId, plate, now, onDone } = props;
   const queryClient = useQueryClient();
   const keyFor = useIdempotencyKey();
+  const standing = plate.calibration;
   const { register, control, formState, handleSubmit, setError } = useForm<
     CalibrationValues,
     unknown,
     CalibrationInput
   >({
-    defaultValues: emptyCalibration(plate.calibration, now),
-    resolver: schemaResolver(calibrationFormSchema, readCalibration),
+    defaultValues: emptyCalibration(standing ?? { wavelengthNm: plate.designWavelengthNm }, now),
+    resolver: schemaResolver(calibrationInputSchema, (values: CalibrationValues) =>
+      readCalibration(values, standing),
+    ),
     mode: 'onTouched',
   });
   const recording = useMutation({
@@ -46,6 +51,9 @@ export function CalibrationForm(props: {
   });
   const typed = useWatch({ control });
   const relying = plate.benches.map(({ name }) => name).join(' and ');
+  const settled = (standing?.openQuestions ?? []).filter(
+    (question) => typed[questionFields[question]] !== true,
+  );
   return (
     <form
       noValidate
@@ -54,8 +62,15 @@ export function CalibrationForm(props: {
     >
       <CalibrationFields
         field={(name) => ({ ...register(name), fault: formState.errors[name]?.message })}
-        doubts={calibrationDoubts(typed, plate.calibration)}
+        question={(name) => register(name)}
+        doubts={calibrationDoubts(typed, standing)}
       />
+      {settled.length > 0 && (
+        <p role="status">
+          Recorded so, it settles what the last one left open:{' '}
+          {settled.map((question) => questionWords[question]).join(', ')}. Tick it above if it does not.
+        </p>
+      )}
       <p className="text-s text-ink-2">
         It cannot be changed afterwards; a correction is another one.
         {relying === ''

@@ -1,7 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
-import { type Plate, type UpdatePlate, updatePlateSchema } from '../../../shared/schemas/cabinet';
+import { type CabinetPlate, type UpdatePlate, updatePlateSchema } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
 import {
   conflictingState,
@@ -11,22 +11,21 @@ import {
   showServerFaults,
 } from '../../lib/forms';
 import { plateConflict, plateDifferences } from './plate-conflict';
-import { plateFault } from './plate-fault';
 import { plateFieldOf, type PlateValues, readPlate, valuesOfPlate } from './plate-form-values';
 import { PlateFields } from './PlateFields';
 import { updatePlate } from './queries';
 
-/** A plate's own facts and its mount's. What was measured is not among them: that is another calibration. */
+/** A plate's own facts. Its mount has a page of its own, and what was measured is another calibration. */
 export function EditPlateForm(props: {
   readonly labId: string;
-  readonly plate: Plate;
+  readonly plate: CabinetPlate;
   readonly onDone: () => void;
 }) {
   const { labId, plate, onDone } = props;
   const queryClient = useQueryClient();
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [baseRevision, setBaseRevision] = useState(plate.revision);
-  const { register, control, formState, handleSubmit, setValue, setError, getValues, reset } = useForm<
+  const { register, control, formState, handleSubmit, setError, getValues, reset } = useForm<
     PlateValues,
     unknown,
     UpdatePlate
@@ -35,7 +34,6 @@ export function EditPlateForm(props: {
     resolver: schemaResolver(updatePlateSchema, readPlate, plateFieldOf),
     mode: 'onTouched',
   });
-  const direction = useWatch({ control, name: 'mount.direction' });
   const construction = useWatch({ control, name: 'construction' });
   const saving = useMutation({
     mutationFn: ({ body, revision }: { body: UpdatePlate; revision: number }) =>
@@ -51,21 +49,12 @@ export function EditPlateForm(props: {
   });
   const submit = (revision: number) => handleSubmit((body) => saving.mutate({ body, revision }));
   const theirs = plateConflict(conflictingState(saving.error));
-  const turned = direction !== valuesOfPlate(plate).mount.direction;
   return (
     <form noValidate onSubmit={(event) => void submit(baseRevision)(event)} className="space-y-4">
       <PlateFields
-        field={(name) => ({ ...register(name), fault: plateFault(formState.errors, name) })}
+        field={(name) => ({ ...register(name), fault: formState.errors[name]?.message })}
         isMultiOrder={construction === 'multi-order'}
-        direction={direction}
-        onDirection={(chosen) => setValue('mount.direction', chosen, { shouldDirty: true })}
       />
-      {turned && (
-        <p role="status">
-          Every dial of {plate.name} changes with this: drafts are solved anew, and versions saved before keep
-          what they say.
-        </p>
-      )}
       {theirs === null ? (
         <FormProblem error={saving.error} />
       ) : (

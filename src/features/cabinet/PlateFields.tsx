@@ -1,14 +1,10 @@
 import { NumberField } from '../../components/NumberField';
-import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { SelectField } from '../../components/SelectField';
 import { TextArea } from '../../components/TextArea';
 import { TextField } from '../../components/TextField';
-import type { FieldBinding } from './CalibrationFields';
+import type { FieldBinding } from './field-binding';
 import type { PlateValues } from './plate-form-values';
-import { approachNames, constructionNames, materialNames } from './plate-words';
-
-export type PlateFieldName =
-  Exclude<keyof PlateValues, 'mount'> | `mount.${Exclude<keyof PlateValues['mount'], 'direction'>}`;
+import { constructionNames, materialNames } from './plate-words';
 
 const kindOptions = [
   { value: 'half', label: 'half-wave' },
@@ -19,20 +15,13 @@ const kindOptions = [
 const options = (names: Readonly<Record<string, string>>) =>
   Object.entries(names).map(([value, label]) => ({ value, label }));
 
-const directions = [
-  { value: '1', label: 'counter-clockwise' },
-  { value: '-1', label: 'clockwise' },
-] as const;
-
-/** A plate and the mount it sits in, in a form that brings its own values. */
+/** What a plate is, in a form that brings its own values. */
 export function PlateFields(props: {
-  readonly field: (name: PlateFieldName) => FieldBinding;
+  readonly field: (name: keyof PlateValues) => FieldBinding;
   /** Whether it is built so that it has whole waves. */
   readonly isMultiOrder: boolean;
-  readonly direction: PlateValues['mount']['direction'];
-  readonly onDirection: (direction: PlateValues['mount']['direction']) => void;
 }) {
-  const { field, isMultiOrder, direction, onDirection } = props;
+  const { field, isMultiOrder } = props;
   return (
     <div className="grid gap-4 sm:grid-cols-2">
       <TextField label="plate’s name" help="As it is written on it: H-3, Q-B." {...field('name')} required />
@@ -53,42 +42,24 @@ export function PlateFields(props: {
           required
         />
       )}
-      <TextField label="mount’s name" {...field('mount.name')} required />
+      <TextField label="serial number" mono {...field('serial')} />
       <NumberField
-        label="finest step of its dial, degrees"
-        help="0.1 if you read it to a tenth of a degree."
-        {...field('mount.resolutionDeg')}
-        required
+        label="clear aperture, mm"
+        help="The diameter that light may pass. Empty where nobody knows it."
+        {...field('clearApertureMm')}
       />
       <NumberField
-        label="repeats within (σ), degrees"
-        help="How well the same reading comes back."
-        {...field('mount.repeatabilityDeg')}
-        required
+        label="coated from, nm"
+        help="Empty where nobody knows its coating."
+        {...field('coatingFromNm')}
       />
-      <SegmentedChoice
-        label="as the receiver sees it, the engraved numbers rise when the mount is turned"
-        segments={directions}
-        value={direction}
-        onChange={onDirection}
+      <NumberField label="coated to, nm" {...field('coatingToNm')} />
+      <TextArea
+        label="damage"
+        help="What its maker says that it stands, or a burn that was seen."
+        rows={2}
         className="sm:col-span-2"
-      />
-      <NumberField
-        label="first reading it reaches, degrees"
-        help="Empty for a ring that turns all the way round."
-        {...field('mount.rangeFromDeg')}
-      />
-      <NumberField label="last reading it reaches, degrees" {...field('mount.rangeToDeg')} />
-      <NumberField
-        label="speed, degrees a second"
-        help="Empty for a mount turned by hand."
-        {...field('mount.speedDegPerS')}
-      />
-      <NumberField label="backlash, degrees" {...field('mount.backlashDeg')} required />
-      <SelectField
-        label="a reading is approached"
-        options={options(approachNames)}
-        {...field('mount.approach')}
+        {...field('damageNote')}
       />
       <TextArea label="note" rows={2} className="sm:col-span-2" {...field('note')} />
     </div>

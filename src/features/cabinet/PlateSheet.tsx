@@ -1,90 +1,47 @@
 import { useQuery } from '@tanstack/react-query';
-import { useId } from 'react';
 import { useNavigate, useSearchParams } from 'react-router-dom';
-import type { Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { TextLink } from '../../components/TextLink';
-import { formatDate } from '../../lib/format';
 import { QueryState } from '../../lib/QueryState';
 import { useLab } from '../labs';
 import { CalibrationForm } from './CalibrationForm';
-import { CalibrationTable } from './CalibrationTable';
 import { EditPlateForm } from './EditPlateForm';
+import { PlateFiles } from './files/PlateFiles';
 import { PlateFacts } from './PlateFacts';
-import { PlateHistoryPlot } from './PlateHistoryPlot';
+import { PlateHistory } from './PlateHistory';
 import { plateQuery } from './queries';
-import { ReliesOn } from './ReliesOn';
 import { RetirePlate } from './RetirePlate';
+import { SheetDialogs } from './SheetDialogs';
 
-function Calibrations({
-  plate,
-  now,
-  measures,
-}: {
-  readonly plate: Plate;
-  readonly now: Date;
-  readonly measures: boolean;
-}) {
-  const { lab } = useLab();
-  const detail = useQuery(plateQuery(lab.id, plate.id));
-  const tableId = useId();
-  const calibrations = detail.data?.calibrations;
-  if (calibrations === undefined)
-    return <QueryState query={detail} what={`the calibrations of ${plate.name}`} />;
-  const oldest = calibrations.at(-1);
-  return (
-    <>
-      <section aria-labelledby={`${tableId}-head`}>
-        <div className="mb-2 flex flex-wrap items-baseline justify-between gap-x-5">
-          <h3 id={`${tableId}-head`} className="text-section">
-            Calibrations of this seat
-          </h3>
-          {measures && (
-            <TextLink to={`/labs/${lab.id}/cabinet/${plate.id}?do=calibrate`}>Record a calibration</TextLink>
-          )}
-        </div>
-        <CalibrationTable id={tableId} calibrations={calibrations} now={now} />
-      </section>
-      <section aria-labelledby={`${tableId}-plot`}>
-        <h3 id={`${tableId}-plot`} className="text-section mb-2">
-          {oldest === undefined ? 'Over time' : `Since ${formatDate(new Date(oldest.measuredAt))}`}
-        </h3>
-        {calibrations.length < 2 ? (
-          <p className="text-ink-2">
-            One calibration so far. With a second one this shows how {plate.name} drifts.
-          </p>
-        ) : (
-          <PlateHistoryPlot plateName={plate.name} calibrations={calibrations} tableId={tableId} />
-        )}
-        <ReliesOn plate={plate} />
-      </section>
-    </>
-  );
-}
-
-/** The open plate's sheet: the mount, what was measured of it, and what relies on it. `?do=` opens a form in its place. */
-export function PlateSheet({ plate, now }: { readonly plate: Plate; readonly now: Date }) {
+/** The open plate's sheet: the mount, what was measured of it, and what relies on it. `?do=` opens a form or asks a question. */
+export function PlateSheet({ plate, now }: { readonly plate: CabinetPlate; readonly now: Date }) {
   const { lab, may } = useLab();
   const [search] = useSearchParams();
   const navigate = useNavigate();
+  const detail = useQuery(plateQuery(lab.id, plate.id));
   const task = search.get('do');
+  const base = `/labs/${lab.id}/cabinet`;
+  const page = `${base}/${plate.id}`;
   const retired = plate.retiredAt !== null;
   const edits = may('cabinet.write');
   const measures = may('calibrations.record') && !retired;
-  const leave = () => void navigate(`/labs/${lab.id}/cabinet/${plate.id}`, { preventScrollReset: true });
+  const leave = () => void navigate(page, { preventScrollReset: true });
   return (
     <article
       aria-label={plate.name}
-      className="grid grid-cols-1 gap-x-10 gap-y-8 pt-5 md:grid-cols-2 xl:grid-cols-[19rem_1fr_28.5rem]"
+      className="grid grid-cols-1 gap-x-10 gap-y-8 pt-5 md:grid-cols-2 xl:grid-cols-[18.5rem_minmax(0,1fr)_28.5rem]"
     >
       <div>
-        <PlateFacts plate={plate} dueDays={lab.calibrationDueDays} now={now} />
-        {edits && (
-          <p className="mt-4 flex flex-wrap gap-5">
-            {!retired && (
-              <TextLink to={`/labs/${lab.id}/cabinet/${plate.id}?do=edit`}>Edit {plate.name}</TextLink>
-            )}
-            <RetirePlate plate={plate} />
-          </p>
+        <PlateFacts
+          plate={plate}
+          seats={detail.data?.seats}
+          base={base}
+          dueDays={lab.calibrationDueDays}
+          now={now}
+        />
+        {edits && <SheetActions plate={plate} page={page} />}
+        {detail.data !== undefined && (
+          <PlateFiles labId={lab.id} plate={plate} files={detail.data.files} edits={edits && !retired} />
         )}
       </div>
       {task === 'edit' && edits && !retired ? (
@@ -94,16 +51,50 @@ export function PlateSheet({ plate, now }: { readonly plate: Plate; readonly now
           </h3>
           <EditPlateForm labId={lab.id} plate={plate} onDone={leave} />
         </section>
-      ) : task === 'calibrate' && measures ? (
+      ) : task === 'calibrate' && measures && plate.seat !== null ? (
         <section aria-labelledby="record-calibration" className="xl:col-span-2">
           <h3 id="record-calibration" className="text-section mb-3">
             Record a calibration of {plate.name}
           </h3>
           <CalibrationForm labId={lab.id} plate={plate} now={now} onDone={leave} />
         </section>
+      ) : detail.data === undefined ? (
+        <QueryState query={detail} what={`the history of ${plate.name}`} />
       ) : (
-        <Calibrations plate={plate} now={now} measures={measures} />
+        <PlateHistory {...{ plate, page, now, measures }} detail={detail.data} seats={edits && !retired} />
       )}
+      <SheetDialogs {...{ plate, task, measures }} seats={edits && !retired} onClose={leave} />
     </article>
+  );
+}
+
+/** What can be done with the plate itself. */
+function SheetActions({ plate, page }: { readonly plate: CabinetPlate; readonly page: string }) {
+  const retired = plate.retiredAt !== null;
+  return (
+    <p className="mt-4 flex flex-wrap gap-x-5 gap-y-3">
+      {!retired && (
+        <>
+          <TextLink to={`${page}?do=edit`} preventScrollReset>
+            Edit {plate.name}
+          </TextLink>
+          {plate.seat === null ? (
+            <TextLink to={`${page}?do=seat`} preventScrollReset>
+              Seat {plate.name}
+            </TextLink>
+          ) : (
+            <>
+              <TextLink to={`${page}?do=take-out`} preventScrollReset>
+                Take it out of {plate.seat.mount.name}
+              </TextLink>
+              <TextLink to={`${page}?do=seat-anew`} preventScrollReset>
+                Seat it anew in {plate.seat.mount.name}
+              </TextLink>
+            </>
+          )}
+        </>
+      )}
+      <RetirePlate plate={plate} />
+    </p>
   );
 }

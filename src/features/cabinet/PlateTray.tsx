@@ -1,20 +1,27 @@
-import { useEffect, useRef } from 'react';
+import { type RefObject, useEffect, useRef } from 'react';
 import { Link } from 'react-router-dom';
-import type { Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { AgeRing } from '../../components/AgeRing';
 import { GapText } from '../../lib/GapText';
 import { calibrationAge } from './calibration-age';
-import { restingAxisDeg, shortKind } from './plate-words';
+import { restingAxisDeg, shortKind, trustWords } from './plate-words';
 
-/** The plates as rings with their age; the open one is lit and a notch in the rule below points at it. */
-export function PlateTray(props: {
-  readonly plates: readonly Plate[];
+interface TrayProps {
+  readonly plates: readonly CabinetPlate[];
   readonly openId: string | undefined;
   readonly base: string;
   readonly dueDays: number;
   readonly now: Date;
-}) {
-  const { plates, openId, base, dueDays, now } = props;
+  /** There are more by name, to the right. */
+  readonly hasMore: boolean;
+  readonly onMore: () => void;
+}
+
+/** How far from its right end the tray asks for more, in px. */
+const aheadPx = 600;
+
+/** The plates as rings with their age; the open one is lit and a notch in the rule below points at it. */
+export function PlateTray({ plates, openId, base, dueDays, now, hasMore, onMore }: TrayProps) {
   const tray = useRef<HTMLElement>(null);
   const opened = useRef<HTMLLIElement>(null);
 
@@ -25,38 +32,78 @@ export function PlateTray(props: {
     frame.scrollLeft = item.offsetLeft - (frame.clientWidth - item.offsetWidth) / 2;
   }, [openId]);
 
+  const scrolled = ({ scrollLeft, clientWidth, scrollWidth }: HTMLElement) => {
+    if (hasMore && scrollLeft + clientWidth > scrollWidth - aheadPx) onMore();
+  };
   return (
-    <nav ref={tray} aria-label="Plates" className="relative overflow-x-auto">
+    <nav
+      ref={tray}
+      aria-label="Plates"
+      className="relative overflow-x-auto"
+      onScroll={(event) => scrolled(event.currentTarget)}
+    >
       <ul className="flex min-w-full">
-        {plates.map((plate) => {
-          const age = calibrationAge(plate.calibration.measuredAt, dueDays, now);
-          const open = plate.id === openId;
-          return (
-            <li key={plate.id} ref={open ? opened : undefined} className="flex min-w-28 flex-1 flex-col">
-              <Link
-                to={`${base}/${plate.id}`}
-                preventScrollReset
-                aria-current={open ? 'page' : undefined}
-                className="hover:bg-wash flex flex-1 flex-col items-center px-1 pt-2 pb-3 text-center"
-              >
-                <AgeRing
-                  fastAxisDeg={restingAxisDeg(plate)}
-                  ageDays={age.ageDays}
-                  dueDays={dueDays}
-                  lit={open}
-                />
-                <span className="font-strong">{plate.name}</span>
-                <span className="text-s text-ink-2">
-                  <GapText text={shortKind(plate)} />
-                </span>
-                <span className="sr-only">, calibration {age.words}</span>
-              </Link>
-              <Notch open={open} />
-            </li>
-          );
-        })}
+        {plates.map((plate) => (
+          <TrayPlate
+            key={plate.id}
+            {...{ plate, base, dueDays, now }}
+            open={plate.id === openId}
+            itemRef={plate.id === openId ? opened : undefined}
+          />
+        ))}
+        {hasMore && (
+          <li className="flex min-w-28 flex-1 flex-col">
+            <button
+              type="button"
+              onClick={onMore}
+              className="hover:bg-wash text-ink-2 flex-1 px-2 text-center"
+            >
+              <span className="beam-link">More plates</span>
+            </button>
+            <Notch open={false} />
+          </li>
+        )}
       </ul>
     </nav>
+  );
+}
+
+function TrayPlate(props: {
+  readonly plate: CabinetPlate;
+  readonly open: boolean;
+  readonly itemRef: RefObject<HTMLLIElement | null> | undefined;
+  readonly base: string;
+  readonly dueDays: number;
+  readonly now: Date;
+}) {
+  const { plate, open, itemRef, base, dueDays, now } = props;
+  const { calibration, seat } = plate;
+  const age = calibration === null ? null : calibrationAge(calibration.measuredAt, dueDays, now);
+  const unsettled = seat !== null && (calibration === null || calibration.openQuestions.length > 0);
+  return (
+    <li ref={itemRef} className="flex min-w-28 flex-1 flex-col">
+      <Link
+        to={`${base}/${plate.id}`}
+        preventScrollReset
+        aria-current={open ? 'page' : undefined}
+        className="hover:bg-wash flex flex-1 flex-col items-center px-1 pt-2 pb-3 text-center"
+      >
+        <AgeRing
+          fastAxisDeg={restingAxisDeg(plate)}
+          dashed={seat === null}
+          ageDays={age?.ageDays ?? null}
+          dueDays={dueDays}
+          unsettled={unsettled}
+          lit={open}
+        />
+        <span className="font-strong max-w-full break-words">{plate.name}</span>
+        <span className="text-s text-ink-2">
+          <GapText text={shortKind(plate)} />
+        </span>
+        <span className="sr-only">, {trustWords(plate, dueDays, now)}</span>
+      </Link>
+      <Notch open={open} />
+    </li>
   );
 }
 

@@ -1,9 +1,9 @@
-import type { Plate } from '../../../shared/schemas/cabinet';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { TextLink } from '../../components/TextLink';
 import { useLab } from '../labs';
 
 /** The benches whose beam goes through a plate, and what that means for whoever changes it. */
-export function ReliesOn({ plate }: { readonly plate: Plate }) {
+export function ReliesOn({ plate }: { readonly plate: CabinetPlate }) {
   const { lab } = useLab();
   const headId = `relies-on-${plate.id}`;
   return (

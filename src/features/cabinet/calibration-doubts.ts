@@ -1,6 +1,6 @@
-import type { Calibration } from '../../../shared/schemas/cabinet';
+import type { Calibration } from '../../../shared/schemas/calibrations';
 import { readTypedNumber } from '../../lib/forms';
-import type { CalibrationValues } from './plate-form-values';
+import type { CalibrationValues } from './calibration-form-values';
 
 /** Nearer than this, in degrees, two calibrations of one plate are not worth a question. */
 const farDeg = 5;

@@ -1,3 +1,3 @@
 export { type CalibrationAge, calibrationAge } from './calibration-age';
-export { platesQuery } from './queries';
+export { platePageQuery, type PlateSearch, plateQuery } from './queries';
 export { kindNames, restingAxisDeg } from './plate-words';

@@ -1,23 +1,47 @@
 import { fastAxisFromDial } from '../../../shared/optics/dial';
 import { degrees } from '../../../shared/optics/units';
-import type { CabinetPlate, Plate } from '../../../shared/schemas/cabinet';
-import { withTrueMinus } from '../../lib/format';
+import type { CabinetPlate, PlateHealth } from '../../../shared/schemas/cabinet';
+import type { OpenQuestion } from '../../../shared/schemas/calibrations';
+import { calibrationAge } from './calibration-age';
 
 /** Between a number and its unit in plain text. */
 const gap = '\u202f';
 
 export const kindNames = { half: 'half-wave plate', quarter: 'quarter-wave plate', other: 'plate' } as const;
 
+/** One word or two for how far a plate can be trusted. */
+export const healthWords: Readonly<Record<PlateHealth, string>> = {
+  calibrated: 'calibrated',
+  due: 'due',
+  overdue: 'overdue',
+  'open-question': 'question open',
+  'not-calibrated': 'not calibrated',
+  'not-seated': 'not seated',
+  retired: 'retired',
+};
+
+/** What a calibration left open, as it stands beside its values. */
+export const questionWords: Readonly<Record<OpenQuestion, string>> = {
+  axis: 'fast or slow axis not settled',
+  branch: 'retardance or 360° less not settled',
+  blind: 'retardance not felt to first order',
+};
+
 /** Under a ring of the tray: "½ wave, 780 nm", or the retardance where the plate is neither. */
-export function shortKind(plate: Plate): string {
-  const { wavelengthNm, retardanceDeg } = plate.calibration;
-  const kind = { half: '½ wave', quarter: '¼ wave', other: `${retardanceDeg.toFixed(1)}°` }[plate.kind];
-  return `${kind}, ${wavelengthNm}${gap}nm`;
+export function shortKind({ kind, calibration, designWavelengthNm }: CabinetPlate): string {
+  const own = calibration === null ? 'plate' : `${calibration.retardanceDeg.toFixed(1)}°`;
+  const words = { half: '½ wave', quarter: '¼ wave', other: own }[kind];
+  return `${words}, ${calibration?.wavelengthNm ?? designWavelengthNm}${gap}nm`;
 }
 
-/** Which way the mount's engraving runs. */
-export function directionWords(direction: 1 | -1): string {
-  return `numbers rise when it is turned ${direction === 1 ? 'counter-clockwise' : 'clockwise'}`;
+/** How old a plate's calibration is, or why it has none, as it is read out after its name. */
+export function trustWords(plate: CabinetPlate, dueDays: number, now: Date): string {
+  if (plate.retiredAt !== null) return 'retired';
+  if (plate.seat === null) return 'in no mount';
+  if (plate.calibration === null) return 'not calibrated in this seat';
+  const age = `calibration ${calibrationAge(plate.calibration.measuredAt, dueDays, now).words}`;
+  const open = plate.calibration.openQuestions.map((question) => questionWords[question]);
+  return [age, ...open].join(', ');
 }
 
 /**
@@ -47,14 +71,8 @@ export const materialNames: Names = {
   '': 'another, or not known',
 };
 
-export const approachNames: Names = {
-  either: 'from either side',
-  rising: 'with rising numbers',
-  falling: 'with falling numbers',
-};
-
 /** ", compound zero order, quartz": how it is built, as far as that is known; starts with its comma. */
-export function builtWords({ construction, material, order }: Plate): string {
+export function builtWords({ construction, material, order }: CabinetPlate): string {
   const parts = [
     construction === 'unknown' ? null : constructionNames[construction],
     order === 0 ? null : `${order} whole waves`,
@@ -63,13 +81,28 @@ export function builtWords({ construction, material, order }: Plate): string {
   return parts.flatMap((part) => (part === null || part === undefined ? [] : [`, ${part}`])).join('');
 }
 
-/** ", 20°/s, 0° to 350°, backlash 0.05°, with rising numbers": what is out of the ordinary of a mount's motion. */
-export function motionWords({ speedDegPerS, rangeDeg, backlashDeg, approach }: Plate['mount']): string {
-  const parts = [
-    speedDegPerS === null ? null : `${speedDegPerS}°/s`,
-    rangeDeg === null ? null : withTrueMinus(`reaches ${rangeDeg.from}° to ${rangeDeg.to}°`),
-    backlashDeg === 0 ? null : `backlash ${backlashDeg}°`,
-    approach === 'either' ? null : `approached ${approachNames[approach] ?? ''}`,
+/** "first", "second" up to "tenth", then "11th". */
+export function ordinal(position: number): string {
+  const words = [
+    'first',
+    'second',
+    'third',
+    'fourth',
+    'fifth',
+    'sixth',
+    'seventh',
+    'eighth',
+    'ninth',
+    'tenth',
   ];
-  return parts.flatMap((part) => (part === null ? [] : [`, ${part}`])).join('');
+  const tens = Math.floor(position / 10) % 10;
+  const ending = tens === 1 ? 'th' : (['th', 'st', 'nd', 'rd'][position % 10] ?? 'th');
+  return words[position - 1] ?? `${position}${ending}`;
+}
+
+/** "signal arm waits", "signal arm and idler arm wait": benches that cannot be used without this plate. */
+export function waitingBenches(benches: CabinetPlate['benches']): string | null {
+  if (benches.length === 0) return null;
+  const names = benches.map(({ name }) => name).join(' and ');
+  return `${names} ${benches.length === 1 ? 'waits' : 'wait'}`;
 }

@@ -1,8 +1,8 @@
 import { describe, expect, it } from 'vitest';
-import { calibrationInputSchema } from '../../../shared/schemas/cabinet';
+import { calibrationInputSchema } from '../../../shared/schemas/calibrations';
 import { calibrationDoubts } from '../../../src/features/cabinet/calibration-doubts';
-import { motionWords } from '../../../src/features/cabinet/plate-words';
-import { plateFixture } from './plate-fixture';
+import { motionWords } from '../../../src/features/cabinet/mounts/mount-words';
+import { mountFixture, plateFixture } from './plate-fixture';
 
 // 88.9(4)° at 810 nm.
 const last = plateFixture().calibration;
@@ -45,8 +45,9 @@ describe('what a person should look at again before a calibration stands', () =>
 
 describe('numbers below 0 in sentences', () => {
   it('have the true minus', () => {
-    const { mount } = plateFixture();
-    expect(motionWords({ ...mount, rangeDeg: { from: -180, to: 175 } })).toBe(', reaches \u2212180° to 175°');
+    expect(motionWords({ ...mountFixture(), rangeDeg: { from: -180, to: 175 } })).toBe(
+      ', reaches \u2212180° to 175°',
+    );
     const cold = calibrationInputSchema.shape.temperatureC.safeParse(-200);
     expect(cold.error?.issues.map(({ message }) => message)).toEqual([
       'A temperature is from \u221250 to 150 °C.',

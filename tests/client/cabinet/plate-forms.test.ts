@@ -1,18 +1,22 @@
 import { describe, expect, it } from 'vitest';
-import { plateDifferences } from '../../../src/features/cabinet/plate-conflict';
+import { createPlateSchema, updatePlateSchema } from '../../../shared/schemas/cabinet';
+import { calibrationInputSchema } from '../../../shared/schemas/calibrations';
+import { writeMountSchema } from '../../../shared/schemas/mounts';
+import { emptyCalibration, readCalibration } from '../../../src/features/cabinet/calibration-form-values';
+import { mountDifferences } from '../../../src/features/cabinet/mounts/mount-conflict';
 import {
-  calibrationFormSchema,
-  emptyCalibration,
-  plateFieldOf,
-  readCalibration,
-  readPlate,
-  valuesOfPlate,
-} from '../../../src/features/cabinet/plate-form-values';
-import { updatePlateSchema } from '../../../shared/schemas/cabinet';
-import { plateFixture } from './plate-fixture';
+  mountFieldOf,
+  readMount,
+  valuesOfMount,
+} from '../../../src/features/cabinet/mounts/mount-form-values';
+import { emptyNewPlate, newPlateFieldOf, readNewPlate } from '../../../src/features/cabinet/new-plate-values';
+import { plateDifferences } from '../../../src/features/cabinet/plate-conflict';
+import { plateFieldOf, readPlate, valuesOfPlate } from '../../../src/features/cabinet/plate-form-values';
+import { mountFixture, plateFixture } from './plate-fixture';
 
+const now = new Date(2026, 3, 30, 10, 52);
 const typed = {
-  ...emptyCalibration(plateFixture().calibration, new Date(2026, 3, 30, 10, 52)),
+  ...emptyCalibration(plateFixture().calibration, now),
   retardanceDeg: '86.9',
   retardanceSigmaDeg: '0.4',
   offsetDeg: '301.73',
@@ -21,7 +25,7 @@ const typed = {
 };
 
 function sentences(change: Partial<typeof typed>): readonly string[] {
-  const result = calibrationFormSchema.safeParse(readCalibration({ ...typed, ...change }));
+  const result = calibrationInputSchema.safeParse(readCalibration({ ...typed, ...change }));
   return result.success ? [] : result.error.issues.map(({ message }) => message);
 }
 
@@ -38,12 +42,13 @@ describe('a calibration as it is typed', () => {
   });
 
   it('starts from the last wavelength, and from no value and no way of measuring', () => {
-    expect(emptyCalibration(plateFixture().calibration, new Date(2026, 3, 30, 10, 52))).toMatchObject({
+    expect(emptyCalibration(plateFixture().calibration, now)).toMatchObject({
       wavelengthNm: '810',
       method: '',
       retardanceDeg: '',
       offsetDeg: '',
       measuredAt: '2026-04-30T10:52',
+      axisOpen: false,
     });
   });
 
@@ -53,27 +58,49 @@ describe('a calibration as it is typed', () => {
     expect(sentences({ measuredAt: '' })).toEqual(['Say when it was measured: the day and the time.']);
     expect(sentences({ method: '  ' })).toEqual(['Write the way it was measured.']);
   });
+
+  it('says what it left open, and settles what the one before left open and it does not', () => {
+    const before = { id: 'before', openQuestions: ['axis', 'branch'] } as const;
+    const standing = { ...before, openQuestions: [...before.openQuestions] };
+    const read = (change: Partial<typeof typed>) => readCalibration({ ...typed, ...change }, standing);
+    expect(read({ axisOpen: true, branchOpen: true })).toMatchObject({
+      openQuestions: ['axis', 'branch'],
+      settlesId: null,
+    });
+    expect(read({ branchOpen: true })).toMatchObject({ openQuestions: ['branch'], settlesId: 'before' });
+    expect(readCalibration({ ...typed, blind: true })).toMatchObject({
+      openQuestions: ['blind'],
+      settlesId: null,
+    });
+  });
 });
 
 describe('a plate that is edited', () => {
   it('comes back from its form as it went in', () => {
-    const plate = plateFixture();
-    const read = updatePlateSchema.parse(readPlate(valuesOfPlate(plate)));
-    expect(read).toEqual({
+    const plate = plateFixture({
+      serial: 'QW-0418',
+      clearApertureMm: 22.5,
+      coatingNm: { from: 650, to: 1050 },
+      damageNote: 'A burn at the rim.',
+    });
+    expect(updatePlateSchema.parse(readPlate(valuesOfPlate(plate)))).toEqual({
       name: plate.name,
       kind: plate.kind,
       designWavelengthNm: plate.designWavelengthNm,
       construction: plate.construction,
       material: plate.material,
       order: plate.order,
+      serial: 'QW-0418',
+      clearApertureMm: 22.5,
+      coatingNm: { from: 650, to: 1050 },
+      damageNote: 'A burn at the rim.',
       note: plate.note,
-      mount: plate.mount,
     });
   });
 
   it('has whole waves only where it is multi-order, and then at least one', () => {
     const values = valuesOfPlate(plateFixture());
-    const read = (construction: string, order: string) =>
+    const read = (construction: typeof values.construction, order: string) =>
       updatePlateSchema.safeParse(readPlate({ ...values, construction, order }));
     // Written, then built as another: the field is hidden and counts for nothing.
     expect(read('compound-zero-order', '7').data?.order).toBe(0);
@@ -88,18 +115,15 @@ describe('a plate that is edited', () => {
     ]);
   });
 
-  it('says which of the two readings of a range is missing, and takes neither as a full ring', () => {
-    const { mount, ...values } = valuesOfPlate(plateFixture());
-    const ranged = (rangeFromDeg: string, rangeToDeg: string) =>
-      updatePlateSchema.safeParse(readPlate({ ...values, mount: { ...mount, rangeFromDeg, rangeToDeg } }));
-    expect(ranged('', '').data?.mount.rangeDeg).toBeNull();
-    expect(ranged('-20', '175').data?.mount.rangeDeg).toEqual({ from: -20, to: 175 });
-    expect(ranged('0', '').error?.issues.map(({ path }) => plateFieldOf(path.join('.')))).toEqual([
-      'mount.rangeToDeg',
-    ]);
-    expect(ranged('0', '90').error?.issues.map(({ message }) => message)).toEqual([
-      'A plate needs half a turn of its mount: write a last reading at least 180° above the first.',
-    ]);
+  it('says which end of a coating range is missing or wrong, and takes neither as not known', () => {
+    const values = valuesOfPlate(plateFixture());
+    const coated = (coatingFromNm: string, coatingToNm: string) =>
+      updatePlateSchema.safeParse(readPlate({ ...values, coatingFromNm, coatingToNm }));
+    expect(coated('', '').data?.coatingNm).toBeNull();
+    const fields = (from: string, to: string) =>
+      coated(from, to).error?.issues.map(({ path }) => plateFieldOf(path.join('.')));
+    expect(fields('650', '')).toEqual(['coatingToNm']);
+    expect(fields('1050', '650')).toEqual(['coatingToNm']);
   });
 
   it('shows both sides of what two people changed, and nothing else', () => {
@@ -108,5 +132,80 @@ describe('a plate that is edited', () => {
       { field: 'name', theirs: 'Q-B2', yours: 'Q-B' },
       { field: 'note', theirs: '', yours: 'scratched' },
     ]);
+  });
+});
+
+describe('a mount that is edited', () => {
+  const motor = mountFixture({
+    drive: 'motor',
+    speedDegPerS: 20,
+    backlashDeg: 0.05,
+    approach: 'rising',
+    rangeDeg: { from: -20, to: 340 },
+  });
+
+  it('comes back from its form as it went in, without a speed once it is turned by hand', () => {
+    const { id: _id, plate: _plate, retiredAt: _retiredAt, revision: _revision, ...facts } = motor;
+    expect(writeMountSchema.parse(readMount(valuesOfMount(motor)))).toEqual(facts);
+    expect(readMount({ ...valuesOfMount(motor), drive: 'hand' }).speedDegPerS).toBeNull();
+  });
+
+  it('says which of the two readings of a range is missing, and takes neither as a full ring', () => {
+    const ranged = (rangeFromDeg: string, rangeToDeg: string) =>
+      writeMountSchema.safeParse(readMount({ ...valuesOfMount(motor), rangeFromDeg, rangeToDeg }));
+    expect(ranged('', '').data?.rangeDeg).toBeNull();
+    expect(ranged('-20', '175').data?.rangeDeg).toEqual({ from: -20, to: 175 });
+    expect(ranged('0', '').error?.issues.map(({ path }) => mountFieldOf(path.join('.')))).toEqual([
+      'rangeToDeg',
+    ]);
+    expect(ranged('0', '90').error?.issues.map(({ message }) => message)).toEqual([
+      'A plate needs half a turn of its mount: write a last reading at least 180° above the first.',
+    ]);
+  });
+
+  it('shows both sides of what two people changed', () => {
+    const yours = { ...valuesOfMount(motor), speedDegPerS: '25' };
+    expect(mountDifferences({ ...motor, note: 'oiled' }, yours)).toEqual([
+      { field: 'speed, degrees a second', theirs: '20', yours: '25' },
+      { field: 'note', theirs: 'oiled', yours: '' },
+    ]);
+  });
+});
+
+describe('a plate that comes into the cabinet', () => {
+  const plate = { ...valuesOfPlate(plateFixture()), name: 'Q-G' };
+  const start = { ...emptyNewPlate(now), plate };
+
+  it('may sit nowhere, in a mount that is there, or in one that comes with it, measured or not', () => {
+    const seatOf = (change: Partial<typeof start>) =>
+      createPlateSchema.parse(readNewPlate({ ...start, ...change })).seat;
+    expect(seatOf({ seat: 'none', calibrates: 'now' })).toEqual({ kind: 'none' });
+    const { id } = mountFixture();
+    expect(seatOf({ seat: 'mount', mountId: id })).toEqual({ kind: 'mount', mountId: id, calibration: null });
+    const mount = valuesOfMount(mountFixture());
+    expect(seatOf({ seat: 'new-mount', mount, calibrates: 'now', calibration: typed })).toMatchObject({
+      kind: 'new-mount',
+      mount: { name: 'M13' },
+      calibration: { offsetDeg: 301.73, openQuestions: [], settlesId: null },
+    });
+  });
+
+  it('has every fault at the field that a person sees', () => {
+    const faults = (change: Partial<typeof start>) =>
+      createPlateSchema
+        .safeParse(readNewPlate({ ...start, ...change }))
+        .error?.issues.map(({ path }) => newPlateFieldOf(path.join('.')));
+    expect(faults({ plate: { ...plate, name: '' }, seat: 'none' })).toEqual(['plate.name']);
+    expect(faults({ plate: { ...plate, coatingFromNm: '650' }, seat: 'none' })).toEqual([
+      'plate.coatingToNm',
+    ]);
+    expect(faults({ seat: 'mount' })).toEqual(['mountId']);
+    const mount = { ...valuesOfMount(mountFixture()), name: '', rangeFromDeg: '0' };
+    expect(faults({ mount })).toEqual(['mount.name', 'mount.rangeToDeg']);
+    const calibration = { ...typed, measuredAt: '' };
+    expect(faults({ mount: valuesOfMount(mountFixture()), calibrates: 'now', calibration })).toEqual([
+      'calibration.measuredAt',
+    ]);
+    expect(newPlateFieldOf('seat.kind')).toBeNull();
   });
 });

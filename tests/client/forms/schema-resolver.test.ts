@@ -2,20 +2,27 @@ import type { FieldErrors } from 'react-hook-form';
 import { describe, expect, it } from 'vitest';
 import { createPlateSchema } from '../../../shared/schemas/cabinet';
 import {
-  emptyCalibration,
-  readCalibration,
-  readPlate,
-  valuesOfPlate,
-} from '../../../src/features/cabinet/plate-form-values';
+  emptyNewPlate,
+  newPlateFieldOf,
+  type NewPlateValues,
+  readNewPlate,
+} from '../../../src/features/cabinet/new-plate-values';
+import { valuesOfMount } from '../../../src/features/cabinet/mounts/mount-form-values';
+import { valuesOfPlate } from '../../../src/features/cabinet/plate-form-values';
 import { schemaResolver } from '../../../src/lib/forms';
-import { plateFixture } from '../cabinet/plate-fixture';
+import { mountFixture, plateFixture } from '../cabinet/plate-fixture';
 
-type Values = typeof typed;
-const plate = plateFixture();
-const typed = {
-  ...valuesOfPlate(plate),
+type Values = NewPlateValues;
+const start = emptyNewPlate(new Date(2026, 3, 30, 10, 52));
+const typed: Values = {
+  ...start,
+  plate: valuesOfPlate(plateFixture()),
+  seat: 'new-mount',
+  mount: valuesOfMount(mountFixture()),
+  calibrates: 'now',
   calibration: {
-    ...emptyCalibration(plate.calibration, new Date(2026, 3, 30, 10, 52)),
+    ...start.calibration,
+    wavelengthNm: '810',
     retardanceDeg: '86.9',
     retardanceSigmaDeg: '0.4',
     offsetDeg: '301.73',
@@ -24,10 +31,7 @@ const typed = {
   },
 };
 
-const resolve = schemaResolver(createPlateSchema, (values: Values) => ({
-  ...readPlate(values),
-  calibration: readCalibration(values.calibration),
-}));
+const resolve = schemaResolver(createPlateSchema, readNewPlate, newPlateFieldOf);
 
 async function faults(change: Partial<Values>): Promise<FieldErrors<Values>> {
   const options = { fields: {}, shouldUseNativeValidation: false };
@@ -52,8 +56,10 @@ describe('a form held against its schema', () => {
   });
 
   it('keeps the schema’s sentence for what is no number, and for a name that holds a comma', async () => {
-    const errors = await faults({ name: `1,${'5'.repeat(30)}`, designWavelengthNm: 'red' });
-    expect(errors.name?.message).toMatch(/longer than 20/);
-    expect(errors.designWavelengthNm?.message).toBe('A wavelength is a number, like 810.');
+    const errors = await faults({
+      plate: { ...typed.plate, name: `1,${'5'.repeat(30)}`, designWavelengthNm: 'red' },
+    });
+    expect(errors.plate?.name?.message).toMatch(/longer than 20/);
+    expect(errors.plate?.designWavelengthNm?.message).toBe('A wavelength is a number, like 810.');
   });
 });

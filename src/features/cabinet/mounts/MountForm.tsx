@@ -1,0 +1,96 @@
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useState } from 'react';
+import { useForm, useWatch } from 'react-hook-form';
+import { type CabinetMount, type WriteMount, writeMountSchema } from '../../../../shared/schemas/mounts';
+import { Button } from '../../../components/Button';
+import {
+  conflictingState,
+  EditConflict,
+  FormProblem,
+  schemaResolver,
+  showServerFaults,
+  useIdempotencyKey,
+} from '../../../lib/forms';
+import { mountConflict, mountDifferences } from './mount-conflict';
+import { emptyMount, mountFieldOf, type MountValues, readMount, valuesOfMount } from './mount-form-values';
+import { MountFields } from './MountFields';
+import { createMount, updateMount } from './queries';
+
+/** A mount that comes into the cabinet, or one that is edited. */
+export function MountForm(props: {
+  readonly labId: string;
+  /** Null for a new one. */
+  readonly mount: CabinetMount | null;
+  readonly onDone: (mount: CabinetMount | null) => void;
+}) {
+  const { labId, mount, onDone } = props;
+  const queryClient = useQueryClient();
+  const keyFor = useIdempotencyKey();
+  // What this form was filled from. A refetch behind it must not make an old form look new.
+  const [baseRevision, setBaseRevision] = useState(mount?.revision ?? 0);
+  const { register, control, formState, handleSubmit, setValue, setError, getValues, reset } = useForm<
+    MountValues,
+    unknown,
+    WriteMount
+  >({
+    defaultValues: mount === null ? emptyMount : valuesOfMount(mount),
+    resolver: schemaResolver(writeMountSchema, readMount, mountFieldOf),
+    mode: 'onTouched',
+  });
+  const [drive, direction] = useWatch({ control, name: ['drive', 'direction'] });
+  const saving = useMutation({
+    mutationFn: ({ body, revision }: { body: WriteMount; revision: number }) =>
+      mount === null ? createMount(labId, body, keyFor(body)) : updateMount(labId, mount.id, body, revision),
+    onSuccess: async (saved) => {
+      await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
+      onDone(saved);
+    },
+    onError: (error) => {
+      // Said at the field, it need not be said under the form.
+      if (showServerFaults(error, setError, (path) => (path === 'name' ? path : null))) saving.reset();
+    },
+  });
+  const submit = (revision: number) => handleSubmit((body) => saving.mutate({ body, revision }));
+  const theirs = mountConflict(conflictingState(saving.error));
+  const turned = mount?.plate !== null && mount !== null && Number(direction) !== mount.direction;
+  return (
+    <form noValidate onSubmit={(event) => void submit(baseRevision)(event)} className="max-w-4xl space-y-4">
+      <MountFields
+        field={(name) => ({ ...register(name), fault: formState.errors[name]?.message })}
+        drive={drive}
+        onDrive={(chosen) => setValue('drive', chosen, { shouldDirty: true })}
+        direction={direction}
+        onDirection={(chosen) => setValue('direction', chosen, { shouldDirty: true })}
+      />
+      {turned && (
+        <p role="status">
+          Every dial of {mount.plate?.name} changes with this: drafts are solved anew, and versions saved
+          before keep what they say.
+        </p>
+      )}
+      {theirs === null ? (
+        <FormProblem error={saving.error} />
+      ) : (
+        <EditConflict
+          name={theirs.name}
+          differences={mountDifferences(theirs, getValues())}
+          onKeepYours={() => void submit(theirs.revision)()}
+          onTakeTheirs={() => {
+            reset(valuesOfMount(theirs));
+            setBaseRevision(theirs.revision);
+            saving.reset();
+            void queryClient.invalidateQueries({ queryKey: ['labs', labId] });
+          }}
+        />
+      )}
+      {theirs === null && (
+        <div className="flex flex-wrap gap-3">
+          <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
+            {mount === null ? 'Add the mount' : `Save ${mount.name}`}
+          </Button>
+          <Button onClick={() => onDone(null)}>Leave it as it was</Button>
+        </div>
+      )}
+    </form>
+  );
+}

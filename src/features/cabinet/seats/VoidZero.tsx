@@ -1,0 +1,58 @@
+import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
+import { ButtonLink } from '../../../components/Button';
+import { NewSeatSign } from '../../../components/SmallSigns';
+import { waitingBenches } from '../plate-words';
+
+/** A plate without a zero: what that means, and the two ways on. */
+export function VoidZero(props: {
+  readonly plate: CabinetPlate;
+  /** The address of its page. */
+  readonly page: string;
+  /** It sat somewhere before, so that an older zero is known and void. */
+  readonly hadZero: boolean;
+  readonly measures: boolean;
+  readonly seats: boolean;
+}) {
+  const { plate, page, hadZero, measures, seats } = props;
+  const { name, seat } = plate;
+  const wait = waitingBenches(plate.benches);
+  const place = seat === null ? 'no mount holds it' : `it is seated in ${seat.mount.name}`;
+  return (
+    <section aria-labelledby={`void-${plate.id}`} className="flex gap-5">
+      <NewSeatSign className="mt-1 scale-150" />
+      <div className="min-w-0 flex-1">
+        <h3 id={`void-${plate.id}`} className="text-section">
+          {seat === null
+            ? `${name} sits nowhere, so it has no zero`
+            : hadZero
+              ? `${name}’s zero is void since the new seat`
+              : `${name} has no zero yet`}
+        </h3>
+        <p className="mt-1">
+          {hadZero
+            ? `The old zero ended with its seat, and ${place}. None of the old dials holds.`
+            : `Nothing was measured of it, and ${place}. No angle of it is known.`}
+          {wait !== null && ` ${wait} for it.`}
+        </p>
+        {(seat === null ? seats : measures) && (
+          <p className="mt-4 flex flex-wrap gap-4">
+            {seat === null ? (
+              <ButtonLink kind="filled" to={`${page}?do=seat`} preventScrollReset>
+                Seat {name}
+              </ButtonLink>
+            ) : (
+              <>
+                <ButtonLink kind="filled" to={`${page}/scan`}>
+                  Scan between polarisers
+                </ButtonLink>
+                <ButtonLink to={`${page}?do=calibrate`} preventScrollReset>
+                  Record values by hand
+                </ButtonLink>
+              </>
+            )}
+          </p>
+        )}
+      </div>
+    </section>
+  );
+}

@@ -1,0 +1,20 @@
+import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
+import type { SeatPlate } from '../../../../shared/schemas/mounts';
+import { request } from '../../../lib/api';
+
+/** Puts a plate into a mount; the seat it had ends. */
+export function seatPlate(labId: string, plate: Pick<CabinetPlate, 'id' | 'revision'>, body: SeatPlate) {
+  return request<CabinetPlate>(`/labs/${labId}/plates/${plate.id}/seat`, {
+    method: 'PUT',
+    body,
+    ifMatch: plate.revision,
+  });
+}
+
+export function takePlateOut(labId: string, plate: Pick<CabinetPlate, 'id' | 'revision'>, why: string) {
+  return request<CabinetPlate>(`/labs/${labId}/plates/${plate.id}/take-out`, {
+    method: 'POST',
+    body: { why },
+    ifMatch: plate.revision,
+  });
+}
