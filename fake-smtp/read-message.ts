@@ -39,7 +39,7 @@ function decodeBody(body: string, encoding: string): string {
     case 'base64':
       return Buffer.from(body, 'base64').toString('latin1');
     case 'quoted-printable':
-      return decodeQuoted(body.replace(/[ \t]*=\r?\n/g, ''));
+      return decodeQuoted(body.replace(/=\r?\n/g, ''));
     default:
       return body;
   }

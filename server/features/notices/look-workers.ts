@@ -15,14 +15,14 @@ export function lookWorkers({
   readonly publicOrigin: string;
 }): readonly Worker[] {
   return [
-    worker({ name: 'daily-look', data: jobData['daily-look'], idleMs: 5_000 }, () =>
+    worker({ name: 'daily-look', data: jobData['daily-look'], idleMs: 1_000 }, () =>
       inTransaction(database, { userId: null, labId: null }, async (transaction) => {
         const found: unknown = await transaction.raw('select every_lab_id() as id');
         const labs = labRows.parse(found).rows.map(({ id }) => ({ labId: id }));
         await queueJobs(transaction, 'lab-look', labs);
       }),
     ),
-    worker({ name: 'lab-look', data: jobData['lab-look'], idleMs: 2_000 }, ({ labId }) =>
+    worker({ name: 'lab-look', data: jobData['lab-look'], idleMs: 1_000 }, ({ labId }) =>
       inTransaction(database, { userId: null, labId }, async (transaction) => {
         await tellWhatIsDue(transaction, { labId, publicOrigin, now: new Date() });
         await queueJob(transaction, 'reliance', { labId, versionIds: null });
