@@ -7,10 +7,12 @@ import { areCommensurable, unitLabel, type WrittenUnit } from './units';
 /** A mapping of which every unit is known. */
 export interface UnitMapping extends ColumnMapping {
   readonly dial: Settled<AngleUnit>;
-  readonly crossed: Settled<PowerUnit>;
-  readonly parallel: Settled<PowerUnit>;
+  readonly crossed: Settled<PowerUnit> | null;
+  readonly parallel: Settled<PowerUnit> | null;
   readonly crossedSigma: Settled<PowerUnit> | null;
   readonly parallelSigma: Settled<PowerUnit> | null;
+  /** The one to which all powers are converted. */
+  readonly powerUnit: PowerUnit;
 }
 
 interface Settled<Unit> extends ColumnChoice<Unit> {
@@ -44,13 +46,13 @@ class UnitSettler {
     const crossed = this.orOther(mapping.crossed, written[0], written[1]);
     const parallel = this.orOther(mapping.parallel, written[1], written[0]);
     this.sameUnknown(mapping, written);
-    if (!areCommensurable(crossed.unit, parallel.unit))
-      this.incommensurable(mapping.crossed, crossed, parallel);
+    this.incommensurable(crossed, parallel);
     const crossedSigma = this.sigma(mapping.crossedSigma, crossed);
     const parallelSigma = this.sigma(mapping.parallelSigma, parallel);
     const isSettled = this.questions.length === 0;
+    const powerUnit = crossed?.unit ?? parallel?.unit ?? 'arbitrary';
     return {
-      mapping: isSettled ? { dial, crossed, parallel, crossedSigma, parallelSigma } : null,
+      mapping: isSettled ? { dial, crossed, parallel, crossedSigma, parallelSigma, powerUnit } : null,
       questions: this.questions,
       notes: this.notes,
       isDialAssumed: this.isDialAssumed,
@@ -81,7 +83,9 @@ class UnitSettler {
   }
 
   /** Null where neither the choice nor the header names a unit of power. */
-  private power({ column, unit }: ColumnChoice<PowerUnit>): PowerUnit | null {
+  private power(choice: ColumnChoice<PowerUnit> | null): PowerUnit | null {
+    if (choice === null) return null;
+    const { column, unit } = choice;
     const written = this.writtenUnit(column);
     if (unit !== null) return unit;
     if (written?.kind === 'power') return written.unit;
@@ -98,10 +102,12 @@ class UnitSettler {
   }
 
   private orOther(
-    { column }: ColumnChoice<PowerUnit>,
+    choice: ColumnChoice<PowerUnit> | null,
     own: PowerUnit | null,
     other: PowerUnit | null,
-  ): Settled<PowerUnit> {
+  ): Settled<PowerUnit> | null {
+    if (choice === null) return null;
+    const { column } = choice;
     if (own === null && other !== null && this.writtenUnit(column) === null) {
       this.notes.push(
         `${capital(this.label(column))} names no unit and is read in ${unitLabel(other)}, as the other power is.`,
@@ -110,15 +116,18 @@ class UnitSettler {
     return { column, unit: own ?? (this.writtenUnit(column) === null ? other : null) ?? 'arbitrary' };
   }
 
-  /** One unit that nobody knows is as good as another, as long as both powers have it. */
+  /** One unit that nobody knows is as good as another, as long as all powers have it. */
   private sameUnknown(mapping: ColumnMapping, written: readonly [PowerUnit | null, PowerUnit | null]): void {
-    const units = [mapping.crossed, mapping.parallel].map(({ column }, at) =>
-      written[at] === null ? this.writtenUnit(column) : null,
+    const choices = [mapping.crossed, mapping.parallel];
+    const units = choices.map((choice, at) =>
+      choice === null || written[at] !== null ? null : this.writtenUnit(choice.column),
     );
     const unknown = units.filter((unit) => unit?.kind === 'unknown');
     const [one, other] = unknown;
     if (one === undefined) return;
-    if (one.text === other?.text) {
+    if (choices.includes(null)) {
+      this.notes.push(`The power is in ${shown(one.text)}, a unit that is not known; it is kept as it is.`);
+    } else if (one.text === other?.text) {
       this.notes.push(
         `Both powers are in ${shown(one.text)}, a unit that is not known; they are kept as they are.`,
       );
@@ -129,12 +138,9 @@ class UnitSettler {
     }
   }
 
-  private incommensurable(
-    choice: ColumnChoice<PowerUnit>,
-    crossed: Settled<PowerUnit>,
-    parallel: Settled<PowerUnit>,
-  ): void {
-    if (this.writtenUnit(choice.column)?.kind === 'unknown' || this.questions.length > 0) return;
+  private incommensurable(crossed: Settled<PowerUnit> | null, parallel: Settled<PowerUnit> | null): void {
+    if (crossed === null || parallel === null || areCommensurable(crossed.unit, parallel.unit)) return;
+    if (this.writtenUnit(crossed.column)?.kind === 'unknown' || this.questions.length > 0) return;
     this.questions.push(
       `In which unit are the powers? Crossed is in ${unitLabel(crossed.unit)} and parallel in ${unitLabel(parallel.unit)}, which can’t be compared.`,
     );
@@ -142,9 +148,9 @@ class UnitSettler {
 
   private sigma(
     choice: ColumnChoice<PowerUnit> | null,
-    power: Settled<PowerUnit>,
+    power: Settled<PowerUnit> | null,
   ): Settled<PowerUnit> | null {
-    if (choice === null) return null;
+    if (choice === null || power === null) return null;
     const { column } = choice;
     const written = this.writtenUnit(column);
     const own = choice.unit ?? (written?.kind === 'power' ? written.unit : null);

@@ -4,31 +4,46 @@ import type { Proposed } from './propose-columns';
 import type { CellTable } from './table';
 import { type ColumnMapping, SCAN_ROLES, type ScanRole } from './types';
 
-/** The mapping that a proposal makes; null where it leaves something open. */
+/** The mapping that a proposal makes, of one port where only one is named; null where it leaves something open. */
 export function mappingOf({ proposal, questions }: Proposed): ColumnMapping | null {
   const { dial, crossed, parallel, crossedSigma, parallelSigma } = proposal.columns;
-  if (questions.length > 0 || dial === null || crossed === null || parallel === null) return null;
+  if (questions.length > 0 || dial === null || (crossed === null && parallel === null)) return null;
   return {
     dial: { column: dial, unit: null },
-    crossed: { column: crossed, unit: null },
-    parallel: { column: parallel, unit: null },
-    crossedSigma: crossedSigma === null ? null : { column: crossedSigma, unit: null },
-    parallelSigma: parallelSigma === null ? null : { column: parallelSigma, unit: null },
+    crossed: choiceOf(crossed),
+    parallel: choiceOf(parallel),
+    crossedSigma: choiceOf(crossedSigma),
+    parallelSigma: choiceOf(parallelSigma),
   };
+}
+
+function choiceOf(column: number | null): { readonly column: number; readonly unit: null } | null {
+  return column === null ? null : { column, unit: null };
 }
 
 export interface MappingFault {
   readonly line: number;
-  /** From 0. */
-  readonly column: number;
+  /** From 0; null where no column is named. */
+  readonly column: number | null;
   readonly what: string;
   readonly remedy: string;
 }
 
-/** What is wrong with a mapping from outside: columns that the file doesn't have, or one column twice. */
+/** What is wrong with a mapping from outside: no power, a σ of none, columns that the file doesn't have, or one column twice. */
 export function checkMapping(mapping: ColumnMapping, table: CellTable): readonly MappingFault[] {
   const line = table.header.line ?? table.rows[0]?.line ?? 1;
   const found: MappingFault[] = [];
+  if (mapping.crossed === null && mapping.parallel === null) {
+    const what = 'The mapping names neither the crossed nor the parallel power.';
+    found.push({ line, column: null, what, remedy: 'Choose the column of at least one of them.' });
+  }
+  for (const port of ['crossed', 'parallel'] as const) {
+    const sigma = mapping[`${port}Sigma`];
+    if (sigma === null || mapping[port] !== null) continue;
+    const what = `The mapping names a σ of the ${port} power, and no ${port} power.`;
+    const remedy = 'Choose the column of that power too, or none for its σ.';
+    found.push({ line, column: sigma.column, what, remedy });
+  }
   const seen = new Set<number>();
   for (const role of SCAN_ROLES) {
     const column = mapping[role]?.column ?? null;

@@ -68,6 +68,11 @@ const BOTH_SIGNS = /^[+-]?\d[\d.]*,[\d.,]*$/u;
 const HEXADECIMAL = /^[+-]?0x[\da-f]*$/iu;
 const WITH_WORD = /^[+-]?[\d.,]+ ?[\p{L}°%]/u;
 
+/** Whether a cell says in words that there is no number. */
+export function isNoValue(cell: string): boolean {
+  return NO_VALUE.test(withPlainMinus(cell));
+}
+
 /** Whether a spreadsheet's error stands at the start, which is no comment though it begins with #. */
 export function isSheetError(text: string): boolean {
   return SHEET_ERROR.test(text);
@@ -93,7 +98,7 @@ function notNumber(cell: string): NumberFault {
   const plain = withPlainMinus(cell);
   const dropLine = 'Put the measured number there, or drop the line.';
   if (cell === '') return refused('This cell is empty.', dropLine);
-  if (NO_VALUE.test(plain)) return refused(`${shown(cell)} is no measured value.`, dropLine);
+  if (isNoValue(cell)) return refused(`${shown(cell)} is no measured value.`, dropLine);
   if (SHEET_ERROR.test(plain)) {
     return refused(`${shown(cell)} is a spreadsheet’s error, not a number.`, dropLine);
   }

@@ -31,7 +31,11 @@ export class CellFaults {
     private readonly faults: FaultList,
   ) {}
 
-  add(line: number, column: number, what: string, remedy: string): void {
+  add(line: number, column: number | null, what: string, remedy: string): void {
+    if (column === null) {
+      this.faults.addLine(line, what, remedy);
+      return;
+    }
     const columnName = this.header.columns[column]?.name ?? null;
     this.faults.add({ line, column: column + 1, columnName, what, remedy });
   }
@@ -42,10 +46,10 @@ export class CellFaults {
   }
 }
 
-type Choice = UnitMapping['crossed'];
+type Choice = NonNullable<UnitMapping['crossed']>;
 
 /**
- * The rows as points, powers in the crossed column's unit. Each cell that is no number is a fault; where there is one, the points
+ * The rows as points, powers in the mapping's one unit. Each cell that is no number is a fault; where there is one, the points
  * are not to be used.
  */
 export function readPoints(
@@ -55,7 +59,7 @@ export function readPoints(
   isComma: boolean,
   faults: CellFaults,
 ): readonly ScanPoint[] {
-  const { dial, crossed, parallel, crossedSigma, parallelSigma } = mapping;
+  const { dial, crossed, parallel, crossedSigma, parallelSigma, powerUnit } = mapping;
   const converted = (at: number, column: number, convert: (value: number) => number): number => {
     const value = numbers.get(column)?.[at] ?? Number.NaN;
     const result = convert(value);
@@ -68,12 +72,13 @@ export function readPoints(
     }
     return Number.NaN;
   };
-  const power = (at: number, { column, unit }: Choice): number =>
-    converted(at, column, (value) => inPowerUnit(value, unit, crossed.unit));
+  const power = (at: number, choice: Choice | null): number | null =>
+    choice === null
+      ? null
+      : converted(at, choice.column, (value) => inPowerUnit(value, choice.unit, powerUnit));
   const sigma = (at: number, choice: Choice | null): number | null => {
-    if (choice === null) return null;
     const value = power(at, choice);
-    if (value < 0) {
+    if (choice !== null && value !== null && value < 0) {
       const remedy = 'Write how far the power may be off, 0 or more.';
       faults.add(rows[at]?.line ?? 1, choice.column, 'This σ is negative.', remedy);
     }

@@ -52,13 +52,15 @@ class Proposer {
   ) {}
 
   proposed(): Proposed {
-    for (const role of ['crossed', 'parallel'] as const) this.named(role, role, false, true);
-    this.named('dial', 'dial', false, false);
-    this.named('crossedSigma', 'crossed', true, false);
-    this.named('parallelSigma', 'parallel', true, false);
+    for (const role of ['crossed', 'parallel'] as const) this.named(role, role, false);
+    const arePortsOpen = this.powers().length === 0 && this.questions.length === 0;
+    this.named('dial', 'dial', false);
+    this.named('crossedSigma', 'crossed', true);
+    this.named('parallelSigma', 'parallel', true);
     this.bareSigmas();
     this.nameReason();
     this.dialByNumbers();
+    if (arePortsOpen) this.askPorts();
     this.askWhereHeaderAndNumbersDiffer();
     const isUnclear = this.questions.length > 0;
     const confidence = isUnclear ? 'unclear' : this.isGuess ? 'likely' : 'sure';
@@ -75,12 +77,7 @@ class Proposer {
   }
 
   /** The one column whose name says so. */
-  private named(
-    role: ScanRole,
-    quantity: ColumnSubject['quantity'],
-    isSigma: boolean,
-    isNeeded: boolean,
-  ): void {
+  private named(role: ScanRole, quantity: ColumnSubject['quantity'], isSigma: boolean): void {
     const found = this.subjects((subject) => subject.quantity === quantity && subject.isSigma === isSigma);
     const [only] = found;
     if (only !== undefined && found.length === 1) {
@@ -88,9 +85,23 @@ class Proposer {
     } else if (found.length > 1) {
       const labels = found.map((column) => this.label(column)).join(' and ');
       this.questions.push(`Which column is ${ROLE_WORDS[role]}? By their names, ${labels} could be.`);
-    } else if (isNeeded) {
-      this.questions.push(`Which column is ${ROLE_WORDS[role]}? No name says so, and numbers alone can’t.`);
     }
+  }
+
+  /** No name tells a port. Where one column is left beside the dial, only its port is asked for. */
+  private askPorts(): void {
+    const taken = Object.values(this.columns);
+    const left = [...this.steps.keys()].filter(
+      (column) => !taken.includes(column) && this.header.columns[column]?.subject.isSigma !== true,
+    );
+    const [only] = left;
+    const asked =
+      this.columns.dial !== null && only !== undefined && left.length === 1
+        ? [`Is ${this.label(only)} the power between crossed or between parallel polarisers?`]
+        : [ROLE_WORDS.crossed, ROLE_WORDS.parallel].map((words) => `Which column is ${words}?`);
+    this.questions.unshift(
+      ...asked.map((question) => `${question} No name says so, and numbers alone can’t.`),
+    );
   }
 
   /** "err" alone belongs to the power on its left, where each power has one there. */
@@ -98,16 +109,18 @@ class Proposer {
     const bare = this.subjects(({ quantity, isSigma }) => isSigma && quantity === null);
     if (bare.length === 0) return;
     const { crossed, parallel, crossedSigma, parallelSigma } = this.columns;
-    const isFree = crossedSigma === null && parallelSigma === null && bare.length === 2;
-    if (isFree && crossed !== null && parallel !== null) {
-      const [left, right] = [crossed + 1, parallel + 1];
-      if (bare.includes(left) && bare.includes(right)) {
-        this.columns.crossedSigma = left;
-        this.columns.parallelSigma = right;
-        this.isGuess = true;
-        this.reasons.push('Each column of σ belongs to the power on its left.');
-        return;
-      }
+    const behind = this.powers().map((column) => column + 1);
+    const isFree = crossedSigma === null && parallelSigma === null && bare.length === behind.length;
+    if (isFree && behind.every((column) => bare.includes(column))) {
+      this.columns.crossedSigma = crossed === null ? null : crossed + 1;
+      this.columns.parallelSigma = parallel === null ? null : parallel + 1;
+      this.isGuess = true;
+      this.reasons.push(
+        bare.length === 1
+          ? 'The column of σ belongs to the power on its left.'
+          : 'Each column of σ belongs to the power on its left.',
+      );
+      return;
     }
     const labels = bare.map((column) => this.label(column)).join(' and ');
     this.questions.push(`Whose σ is ${labels}? Say which power it belongs to, or leave it out.`);

@@ -1,10 +1,11 @@
-import { settleUnits, type UnitReading } from './column-units';
+import { settleUnits, type UnitMapping, type UnitReading } from './column-units';
 import { decode } from './decode';
 import { findDecimalSign } from './decimal-sign';
 import { FaultList } from './fault-list';
 import { layoutSignature } from './layout-signature';
 import { splitLines } from './lines';
 import { checkMapping, mappingOf, mappingNotes } from './mapping';
+import { isNoValue } from './number-cell';
 import { CellFaults, type NumberColumns, numberColumns, readPoints } from './points';
 import { previewOf } from './preview';
 import { columnLabel, proposeColumns, type Proposed } from './propose-columns';
@@ -97,19 +98,25 @@ class TableReader {
     if (!this.faults.isEmpty) return refused(this.faults, this.understood);
     if (isDialAssumed) this.noteRadians(points);
     this.noteUnused(mapping);
-    return { kind: 'table', ...this.understood, points, powerUnit: mapping.crossed.unit, mapping };
+    return {
+      kind: 'table',
+      ...this.understood,
+      points,
+      powerUnit: mapping.powerUnit,
+      mapping: columnsOf(mapping),
+    };
   }
 
   /**
    * Cells are judged before columns are asked about: no answer helps a file with faults in it. Columns of text are let be where
-   * enough others are left.
+   * enough others are left, but not one of words that stand where a number is missing.
    */
   private asks(questions: readonly string[]): ScanReading {
     const isTextAllowed = this.numbers.size >= FEWEST_COLUMNS;
     for (const [at, { line, cells }] of this.table.rows.entries()) {
       for (const [column, cell] of cells.entries()) {
         const value = this.numbers.get(column)?.[at];
-        if (value === undefined ? isTextAllowed : !Number.isNaN(value)) continue;
+        if (value === undefined ? isTextAllowed && !isNoValue(cell) : !Number.isNaN(value)) continue;
         this.cellFaults.addNoNumber(line, column, cell, this.isComma);
       }
     }
@@ -129,6 +136,10 @@ class TableReader {
     );
     if (unused.length > 0) this.notes.push(`Not used: ${unused.join(', ')}.`);
   }
+}
+
+function columnsOf({ dial, crossed, parallel, crossedSigma, parallelSigma }: UnitMapping): ColumnMapping {
+  return { dial, crossed, parallel, crossedSigma, parallelSigma };
 }
 
 /** Rounded up, for files that write 6.2832. */

@@ -22,8 +22,8 @@ export interface CellTable {
 }
 
 const SAY_COMMENT = 'Begin the line with # if it is a comment.';
-/** The dial and two powers. */
-export const FEWEST_COLUMNS = 3;
+/** The dial and one power. */
+export const FEWEST_COLUMNS = 2;
 const FEWEST_ROWS = 2;
 
 /** Finds the rows and their header; null, with the faults that say why, where there is no sound table. */
@@ -45,18 +45,17 @@ export function findTable(scan: ScanLines, faults: FaultList): CellTable | null 
   return isSound ? withHeader(split, delimiter, columnCount, faults) : null;
 }
 
+const ROW_WORDS =
+  'Write one row a line: the dial’s reading, then the crossed power, the parallel one, or both.';
+
 function noRows({ lines }: ScanLines, hasText: boolean, faults: FaultList): void {
   const line = lines.at(-1)?.number ?? 1;
   if (lines.length === 0) {
     faults.addLine(1, 'This file is empty.', 'Choose the file that the measurement wrote.');
   } else if (hasText) {
-    faults.addLine(
-      line,
-      'No line of this file is a row of numbers.',
-      'Write one row a line: dial, crossed, parallel.',
-    );
+    faults.addLine(line, 'No line of this file is a row of numbers.', ROW_WORDS);
   } else {
-    faults.addLine(line, 'This file holds comments only.', 'Write one row a line: dial, crossed, parallel.');
+    faults.addLine(line, 'This file holds comments only.', ROW_WORDS);
   }
 }
 
@@ -146,13 +145,13 @@ function checkShape(rows: readonly TableRow[], columnCount: number, faults: Faul
     faults.addLine(
       line,
       `This file has ${columnCount} columns; the most is ${MAX_SCAN_COLUMNS}.`,
-      'Keep the dial and the two powers, with their σ where there are some.',
+      'Keep the dial and the powers, with their σ where there are some.',
     );
   } else if (columnCount < FEWEST_COLUMNS && faults.isEmpty) {
     faults.addLine(
       line,
-      `The rows have ${columnCount === 1 ? '1 column' : `${columnCount} columns`}; a scan has at least three.`,
-      'Write the dial’s reading, the crossed and the parallel power on each line, with semicolons between them.',
+      `The rows have ${columnCount === 1 ? '1 column' : `${columnCount} columns`}; a scan has at least two.`,
+      'Write the dial’s reading and a power on each line, with a semicolon between them.',
     );
   } else if (rows.length < FEWEST_ROWS && faults.isEmpty) {
     faults.addLine(line, 'This file has only one row.', 'A scan has one row for each setting of the dial.');

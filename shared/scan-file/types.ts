@@ -14,9 +14,9 @@ export interface ScanPoint {
   /** The line of the file, from 1. */
   readonly line: number;
   readonly dialDeg: number;
-  readonly crossed: number;
-  readonly parallel: number;
-  /** Null where the file has no such column. */
+  /** Null where the file has no such column; one of the two powers is there at least, in every row the same. */
+  readonly crossed: number | null;
+  readonly parallel: number | null;
   readonly crossedSigma: number | null;
   readonly parallelSigma: number | null;
 }
@@ -51,11 +51,11 @@ export interface ColumnChoice<Unit> {
   readonly unit: Unit | null;
 }
 
-/** Which column is what. */
+/** Which column is what. A scan may have read one port only; a mapping with neither is refused. */
 export interface ColumnMapping {
   readonly dial: ColumnChoice<AngleUnit>;
-  readonly crossed: ColumnChoice<PowerUnit>;
-  readonly parallel: ColumnChoice<PowerUnit>;
+  readonly crossed: ColumnChoice<PowerUnit> | null;
+  readonly parallel: ColumnChoice<PowerUnit> | null;
   readonly crossedSigma: ColumnChoice<PowerUnit> | null;
   readonly parallelSigma: ColumnChoice<PowerUnit> | null;
 }
@@ -128,6 +128,7 @@ export interface Understood {
 export interface ScanTable extends Understood {
   readonly kind: 'table';
   readonly points: readonly ScanPoint[];
+  /** Of the crossed power, or of the parallel one where that alone was read. */
   readonly powerUnit: PowerUnit;
   /** With the units that were used. */
   readonly mapping: ColumnMapping;

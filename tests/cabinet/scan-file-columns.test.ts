@@ -190,6 +190,12 @@ describe('which column is what', () => {
 
   test.each([
     ['a column that is not there', chosen(0, 1, 3), /names column 4, and the file has 3/u],
+    ['no power', chosen(0, null, null), /names neither the crossed nor the parallel power/u],
+    [
+      'a σ of a power that it doesn’t name',
+      { ...chosen(0, 1, null), parallelSigma: { column: 2, unit: null } },
+      /a σ of the parallel power, and no parallel power/u,
+    ],
     ['a column before the first', chosen(-1, 1, 2), /names column 0/u],
     ['half a column', chosen(0.5, 1, 2), /names column 1\.5/u],
     ['one column twice', chosen(0, 1, 1), /names column 2 for two things/u],
@@ -201,5 +207,56 @@ describe('which column is what', () => {
   test('a mapping onto a column of text is refused cell by cell', () => {
     const reading = read('dial,crossed,parallel,room\n0,1,2,a\n5,2,3,b\n', chosen(0, 1, 3));
     expect(reading.kind === 'faults' && reading.faults.map(({ line }) => line)).toEqual([2, 3]);
+  });
+});
+
+describe('files of one port', () => {
+  test.each([
+    ['dial (deg),crossed (mW)\n0,1\n5,2\n', { crossed: 1, parallel: null }, 'mW'],
+    ['dial (deg);P_par (µW)\n0;1,5\n5;2,5\n', { crossed: null, parallel: 1 }, 'uW'],
+    ['dial (deg),crossed (mW),room\n0,1,2\n5,2,3\n', { crossed: 1, parallel: null }, 'mW'],
+    ['dial (deg)\tI_⊥\n0\t1\n5\t2\n', { crossed: 1, parallel: null }, 'arbitrary'],
+  ])('a header that names one port asks nothing about the other: %j', (text, ports, unit) => {
+    const table = tableOf(text);
+    expect(table.proposal.confidence).toBe('sure');
+    expect(table.proposal.columns).toMatchObject({ dial: 0, ...ports });
+    expect(table.powerUnit).toBe(unit);
+    const [point] = table.points;
+    expect([point?.crossed === null, point?.parallel === null]).toEqual([
+      ports.crossed === null,
+      ports.parallel === null,
+    ]);
+  });
+
+  test.each([
+    ['angle (deg),power (mW)\n0,1\n5,2\n', 'column 2 (“power”)'],
+    ['angle (deg),power (mW),err (mW)\n0,1,2\n5,2,3\n', 'column 2 (“power”)'],
+    ['3;0\n1;5\n4;10\n1;15\n', 'column 1'],
+  ])('the port of one power that no word names is asked for: %j', (text, label) => {
+    expect(questionsOf(text).questions[0]).toBe(
+      `Is ${label} the power between crossed or between parallel polarisers? No name says so, and numbers alone can’t.`,
+    );
+  });
+
+  test('a mapping answers which port it is', () => {
+    const text = 'angle (deg),power (mW)\n0,1\n5,2\n';
+    expect(rowsOf(tableOf(text, chosen(0, 1, null)))).toEqual(['0 1', '5 2']);
+    expect(tableOf(text, chosen(0, null, 1)).points[1]).toMatchObject({ crossed: null, parallel: 2 });
+  });
+
+  test('σ on the right of the one power is its own', () => {
+    const table = tableOf('dial (deg),parallel (mW),err\n0,1,0.1\n5,2,0.2\n');
+    expect(table.points[1]).toMatchObject({ parallel: 2, parallelSigma: 0.2, crossedSigma: null });
+    expect(table.proposal.reason).toMatch(/The column of σ belongs to the power on its left/u);
+  });
+
+  test('a unit that nobody knows is kept with a note', () => {
+    const { notes, powerUnit } = tableOf('dial (deg),crossed [LSB]\n0,1\n5,2\n');
+    expect(powerUnit).toBe('arbitrary');
+    expect(notes).toEqual(['The power is in “LSB”, a unit that is not known; it is kept as it is.']);
+  });
+
+  test('no power at all is asked about', () => {
+    expect(questionsOf('dial (deg),x,y\n0,1,3\n5,2,4\n').questions).toHaveLength(2);
   });
 });

@@ -63,14 +63,19 @@ const NAMELESS: readonly Hostile[] = [
   ['a header only', HEAD, 'Line 1', /No line of this file is a row/u],
   ['prose', 'Measured on Monday.\nNothing came out.\n', 'Line 2', /No line of this file is a row/u],
   ['one row', `${HEAD}0,1,2\n`, 'Line 2', /only one row/u],
-  ['one column', '0\n5\n10\n', 'Line 1', /1 column;/u],
-  ['two columns', 'angle,power\n0,1\n5,2\n', 'Line 2', /2 columns; a scan has at least three/u],
+  ['one column', '0\n5\n10\n', 'Line 1', /1 column; a scan has at least two/u],
 ];
 
 const CELLS: readonly Hostile[] = [
   ['nan', `${HEAD}0,1,2\n5,nan,3\n`, 'Line 3, column 2 (crossed)', /“nan” is no measured value/u],
   ['nan in the first row', `${HEAD}0,NaN,2\n5,1,3\n`, 'Line 2, column 2 (crossed)', /“NaN” is no measured/u],
   ['a column of nan', '0,nan,2\n5,nan,3\n', 'Line 1, column 2', /“nan” is no measured value/u],
+  [
+    'a column of nan beside one power',
+    'angle,crossed\n0,nan\n5,nan\n',
+    'Line 2, column 2 (crossed)',
+    /“nan”/u,
+  ],
   ['exponents with D', `${HEAD}0,1,2\n5,2.0D0,3\n`, 'Line 3, column 2 (crossed)', /more than a number/u],
   ['inf', `${HEAD}0,1,-inf\n5,2,3\n`, 'Line 2, column 3 (parallel)', /“-inf” is no measured value/u],
   [
@@ -112,6 +117,7 @@ const CELLS: readonly Hostile[] = [
 ];
 
 const SHAPES: readonly Hostile[] = [
+  ['one port cut before its power', 'angle,crossed\n0,1\n5,2\n10', 'Line 4', /1 column, the others have 2/u],
   ['cut in a row', `${HEAD}0,1,2\n5,2`, 'Line 3', /was cut off here/u],
   ['cut before the last cell', `${HEAD}0,1,2\n5,2,`, 'Line 3, column 3 (parallel)', /is empty/u],
   ['a short row', `${HEAD}0,1,2\n5,2\n10,2,3\n`, 'Line 3', /2 columns, the others have 3/u],

@@ -108,7 +108,8 @@ test('a table in any dialect reads back: exactly, or to one unit in the last pla
         expect(isWithinUlp(point.dialDeg, dial, up, down)).toBe(true);
         if (angle.unit === 'deg') expect(point.dialDeg).toBe(dial);
         expect(point.crossed).toBe(one);
-        expect(isWithinUlp(point.parallel, other, 10n ** to, 10n ** from)).toBe(true);
+        expect(point.parallel).not.toBe(null);
+        expect(isWithinUlp(point.parallel ?? Number.NaN, other, 10n ** to, 10n ** from)).toBe(true);
         if (from === to) expect(point.parallel).toBe(other);
         expect(point.crossedSigma).toBe(hasSigmas ? oneSigma : null);
         if (point.parallelSigma !== null) {
@@ -120,6 +121,31 @@ test('a table in any dialect reads back: exactly, or to one unit in the last pla
       expect(hasNote).toBe(!dialect.isEnded);
     }),
     { numRuns: 600 },
+  );
+});
+
+test('either port of a file read by itself is what it is read beside the other, in its own unit', () => {
+  const whole = fc.record({ rows: fc.array(row, { minLength: 2, maxLength: 6 }), dialect: dialects });
+  fc.assert(
+    fc.property(whole, ({ rows, dialect }) => {
+      const bytes = writeScan(rows, dialect);
+      const both = mappingFor(dialect);
+      const crossed = readScanFile(bytes, { ...both, parallel: null, parallelSigma: null });
+      const parallel = readScanFile(bytes, { ...both, crossed: null, crossedSigma: null });
+      if (crossed.kind !== 'table' || parallel.kind !== 'table') throw new Error(JSON.stringify(crossed));
+      expect([crossed.powerUnit, parallel.powerUnit]).toEqual([dialect.crossed.unit, dialect.parallel.unit]);
+      const { hasSigmas } = dialect;
+      expect(crossed.points.map((point) => [point.crossed, point.crossedSigma, point.parallel])).toEqual(
+        rows.map(([, one, , sigma]) => [one, hasSigmas ? sigma : null, null]),
+      );
+      expect(parallel.points.map((point) => [point.parallel, point.parallelSigma, point.crossed])).toEqual(
+        rows.map(([, , other, , sigma]) => [other, hasSigmas ? sigma : null, null]),
+      );
+      expect(crossed.points.map(({ dialDeg }) => dialDeg)).toEqual(
+        parallel.points.map(({ dialDeg }) => dialDeg),
+      );
+    }),
+    { numRuns: 200 },
   );
 });
 
@@ -166,8 +192,9 @@ function expectSound(reading: ScanReading): void {
     expect(reading.questions.length).toBeGreaterThan(0);
   } else {
     for (const { dialDeg, crossed, parallel, crossedSigma, parallelSigma } of reading.points) {
-      const all = [dialDeg, crossed, parallel, crossedSigma ?? 0, parallelSigma ?? 0];
+      const all = [dialDeg, crossed ?? 0, parallel ?? 0, crossedSigma ?? 0, parallelSigma ?? 0];
       expect(all.every(Number.isFinite)).toBe(true);
+      expect(crossed === null && parallel === null).toBe(false);
     }
   }
 }
@@ -176,8 +203,8 @@ const column = fc.integer({ min: -1, max: 5 });
 const mapping = fc.option(
   fc.record({
     dial: fc.record({ column, unit: fc.constantFrom('rad', null) }),
-    crossed: fc.record({ column, unit: fc.constantFrom('mW', null) }),
-    parallel: fc.record({ column, unit: fc.constantFrom('uW', 'V', null) }),
+    crossed: fc.option(fc.record({ column, unit: fc.constantFrom('mW', null) })),
+    parallel: fc.option(fc.record({ column, unit: fc.constantFrom('uW', 'V', null) })),
     crossedSigma: fc.option(fc.record({ column, unit: fc.constantFrom('%', null) })),
     parallelSigma: fc.constant(null),
   } as const),

@@ -24,17 +24,19 @@ export function questionsOf(text: string, mapping: ColumnMapping | null = null):
   return reading;
 }
 
-/** "dial crossed parallel", with the σ where there are some. */
+/** "dial crossed parallel", without the port that was not read, with the σ where there are some. */
 export function rowsOf({ points }: ScanTable): string[] {
   return points.map(({ dialDeg, crossed, parallel, crossedSigma, parallelSigma }) =>
     [dialDeg, crossed, parallel, crossedSigma, parallelSigma].filter((value) => value !== null).join(' '),
   );
 }
 
-export const chosen = (dial: number, crossed: number, parallel: number): ColumnMapping => ({
+const choice = (column: number | null) => (column === null ? null : { column, unit: null });
+
+export const chosen = (dial: number, crossed: number | null, parallel: number | null): ColumnMapping => ({
   dial: { column: dial, unit: null },
-  crossed: { column: crossed, unit: null },
-  parallel: { column: parallel, unit: null },
+  crossed: choice(crossed),
+  parallel: choice(parallel),
   crossedSigma: null,
   parallelSigma: null,
 });
