@@ -1,11 +1,14 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import { useForm, useWatch } from 'react-hook-form';
-import type { Bench, CreateBench } from '../../../shared/schemas/benches';
-import { createBenchSchema } from '../../../shared/schemas/benches';
-import type { Plate } from '../../../shared/schemas/cabinet';
+import { type FieldErrors, useController, useForm, useWatch } from 'react-hook-form';
+import {
+  type Bench,
+  type BenchPart,
+  type CreateBench,
+  createBenchSchema,
+} from '../../../shared/schemas/benches';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { Button, ButtonLink } from '../../components/Button';
-import { NumberField } from '../../components/NumberField';
 import { SelectField } from '../../components/SelectField';
 import { TextField } from '../../components/TextField';
 import {
@@ -18,42 +21,40 @@ import {
   showServerFaults,
 } from '../../lib/forms';
 import { useLab } from '../labs';
-import { GapText } from '../../lib/GapText';
+import { BeamEditor, type BeamFaults } from './BeamEditor';
 import { benchConflict, benchDifferences } from './bench-conflict';
+import { fieldOf } from './bench-fields';
 import {
+  type BenchFieldOf,
   type BenchValues,
   classOptions,
   emptyBench,
   eyewearWavelengths,
-  type FieldBinding,
+  hasBothDetectors,
   readBench,
   readLaserClass,
   valuesOfBench,
 } from './bench-form-values';
-import { benchWarnings } from './bench-warnings';
-import { inputFault, InputReading } from './InputReading';
+import { DetectorFields } from './DetectorFields';
+import { inputFault } from './InputReading';
 import { LaserCaution } from './LaserCaution';
-import { PlateOrder } from './PlateOrder';
-
-/** A part of the request whose field has another name in the form. */
-function fieldOf(path: string): keyof BenchValues | null {
-  if (path === 'name' || path === 'inputExpression') return path;
-  if (path.startsWith('hazardWavelengthsNm')) return 'hazardWavelengthsNm';
-  return path.startsWith('plateIds') ? 'plates' : null;
-}
+import { LightFields } from './LightFields';
 
 /** A new bench, or one that is edited. `save` gets the request and the revision it was made against. */
 export function BenchForm(props: {
   readonly bench: Bench | null;
-  readonly plates: readonly Plate[];
+  /** Those of its beam. Others come from the cabinet as they are looked for. */
+  readonly plates: readonly CabinetPlate[];
   readonly save: (body: CreateBench, revision: number) => Promise<Bench>;
   readonly onSaved: (bench: Bench) => void;
 }) {
   const { bench, plates, save, onSaved } = props;
   const { lab } = useLab();
   const queryClient = useQueryClient();
+  const [now] = useState(() => new Date());
   // What this form was filled from. A refetch behind it must not make an old form look new.
-  const [baseRevision, setBaseRevision] = useState(bench?.revision ?? 0);
+  const [base, setBase] = useState(bench);
+  const [found, setFound] = useState<readonly CabinetPlate[]>([]);
   const { register, control, formState, handleSubmit, setError, getValues, reset } = useForm<
     BenchValues,
     unknown,
@@ -63,7 +64,8 @@ export function BenchForm(props: {
     resolver: schemaResolver(createBenchSchema, readBench, fieldOf),
     mode: 'onTouched',
   });
-  const values = useWatch({ control });
+  const values = useWatch({ control, compute: (typed: BenchValues) => typed });
+  const beam = useController({ control, name: 'beam' }).field;
   const saving = useMutation({
     mutationFn: ({ body, revision }: { body: CreateBench; revision: number }) => save(body, revision),
     onSuccess: async (saved) => {
@@ -80,104 +82,74 @@ export function BenchForm(props: {
     if (fault === null) saving.mutate({ body, revision });
     else setError('inputExpression', { type: 'expression', message: fault }, { shouldFocus: true });
   };
-  const field = (name: Exclude<keyof BenchValues, 'plates'>): FieldBinding => ({
-    ...register(name),
-    fault: formState.errors[name]?.message,
-  });
-  const wavelengthNm = readTypedNumber(values.wavelengthNm ?? '');
-  const typedC = readOptionalNumber(values.temperatureC ?? '');
-  const temperatureC = Number.isFinite(typedC) ? typedC : null;
-  const chosen = (values.plates ?? []).flatMap(
-    ({ plateId }) => plates.find((plate) => plate.id === plateId) ?? [],
-  );
-  const warnings = benchWarnings(chosen, { wavelengthNm, temperatureC }, bench?.id ?? null);
+  const field: BenchFieldOf = (name) => ({ ...register(name), fault: formState.errors[name]?.message });
+  const known = new Map([...plates, ...found].map((plate) => [plate.id, plate]));
+  const nameOf = (plateId: string) =>
+    known.get(plateId)?.name ?? base?.order.find((place) => place.plateId === plateId)?.name;
   const theirs = benchConflict(conflictingState(saving.error));
-  const hazards = eyewearWavelengths(values.hazardWavelengthsNm ?? '');
   return (
     <form
       noValidate
-      onSubmit={(event) => void handleSubmit(submit(baseRevision))(event)}
-      className="grid grid-cols-1 gap-x-12 gap-y-8 lg:grid-cols-2"
+      onSubmit={(event) => void handleSubmit(submit(base?.revision ?? 0))(event)}
+      className="grid grid-cols-1 gap-x-14 gap-y-8 desk:grid-cols-[minmax(0,1fr)_minmax(0,1.15fr)]"
     >
-      <div className="space-y-4">
-        <TextField label="bench’s name" {...field('name')} required />
-        <div className="grid gap-4 sm:grid-cols-2">
-          <NumberField label="wavelength, nm" {...field('wavelengthNm')} required />
-          <NumberField
-            label="its σ, nm"
-            help="0 leaves it out of the budget."
-            {...field('wavelengthSigmaNm')}
+      <div className="space-y-8">
+        <LightFields field={field} inputExpression={values.inputExpression} convention={lab.convention} />
+        <div className="space-y-4">
+          <SelectField label="laser class (IEC 60825-1)" options={classOptions} {...field('laserClass')} />
+          <TextField
+            label="wavelengths that can reach an eye, nm"
+            help="All of them, the pump included: 405, 810."
+            {...field('hazardWavelengthsNm')}
             required
           />
-          <NumberField
-            label="temperature of the plates, °C"
-            help="Empty where nobody watches it."
-            {...field('temperatureC')}
+          <div role="status">
+            <LaserCaution
+              laserClass={readLaserClass(values.laserClass)}
+              hazardWavelengthsNm={eyewearWavelengths(values.hazardWavelengthsNm)}
+              variant="full"
+            />
+          </div>
+        </div>
+      </div>
+      <div className="space-y-8">
+        <section aria-labelledby="beam-head">
+          <h2 id="beam-head" className="text-section mb-1">
+            Plates in beam order
+          </h2>
+          <p id="bench-grip-help" className="text-s text-ink-2 mb-3">
+            Drag a plate by its handle, or grab it with Space and move it with the arrow keys; Up and Down do
+            the same.
+          </p>
+          <BeamEditor
+            beam={values.beam}
+            onBeam={beam.onChange}
+            plates={known}
+            nameOf={nameOf}
+            onFound={(plate) => setFound([...found, plate])}
+            bench={{
+              id: base?.id ?? null,
+              name: values.name,
+              wavelengthNm: readTypedNumber(values.wavelengthNm),
+              temperatureC: readOptionalNumber(values.temperatureC),
+            }}
+            faults={beamFaults(formState.errors)}
+            now={now}
           />
-          <NumberField label="its σ, K" {...field('temperatureSigmaK')} required />
-        </div>
-        <TextField
-          label="state behind the polariser"
-          mono
-          help={<InputReading expression={values.inputExpression ?? ''} convention={lab.convention} />}
-          {...field('inputExpression')}
-          fault={
-            formState.errors.inputExpression?.message ??
-            inputFault(values.inputExpression ?? '', lab.convention)
-          }
-          required
-        />
-        <NumberField
-          label="σ of the polariser’s angle, degrees"
-          help="0 if it is what every angle is counted from."
-          {...field('polariserSigmaDeg')}
-          required
-        />
-        <NumberField
-          label="extinction of the polariser"
-          help="Power it lets through crossed over parallel, such as 1e-5. Empty where it is not stated."
-          {...field('polariserExtinction')}
-        />
-        <PlateOrder
-          plates={plates}
-          benchId={bench?.id ?? null}
-          control={control}
-          register={register}
-          fault={formState.errors.plates?.message ?? formState.errors.plates?.root?.message}
-        />
-        <div role="status" className="space-y-2">
-          {warnings.map((warning) => (
-            <p key={warning}>
-              <GapText text={warning} />
-            </p>
-          ))}
-        </div>
+        </section>
+        <DetectorFields field={field} hasBoth={hasBothDetectors(values)} />
       </div>
-      <div className="space-y-4">
-        <SelectField label="laser class (IEC 60825-1)" options={classOptions} {...field('laserClass')} />
-        <TextField
-          label="wavelengths that can reach an eye, nm"
-          help="All of them, the pump included: 405, 810."
-          {...field('hazardWavelengthsNm')}
-          required
-        />
-        <LaserCaution
-          laserClass={readLaserClass(values.laserClass ?? '')}
-          hazardWavelengthsNm={hazards}
-          variant="full"
-        />
-      </div>
-      <div className="space-y-4 lg:col-span-2">
+      <div className="space-y-4 desk:col-span-2">
         {theirs === null ? (
           <FormProblem error={saving.error} />
         ) : (
           <EditConflict
             name={theirs.name}
-            differences={benchDifferences(theirs, getValues(), plates)}
+            differences={benchDifferences(theirs, getValues(), nameOf)}
             onKeepYours={() => void handleSubmit(submit(theirs.revision))()}
             onTakeTheirs={() => {
               reset(valuesOfBench(theirs));
-              setBaseRevision(theirs.revision);
+              setBase(theirs);
               saving.reset();
               void queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
             }}
@@ -194,4 +166,15 @@ export function BenchForm(props: {
       </div>
     </form>
   );
+}
+
+function beamFaults({ beam }: FieldErrors<BenchValues>): BeamFaults {
+  const of = (part: BenchPart) => {
+    const error = beam?.[part];
+    return {
+      part: error?.message,
+      places: Array.from({ length: error?.length ?? 0 }, (_, place) => error?.[place]?.message),
+    };
+  };
+  return { preparation: of('preparation'), analysis: of('analysis') };
 }

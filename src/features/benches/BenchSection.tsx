@@ -1,54 +1,34 @@
+import { useQuery } from '@tanstack/react-query';
 import type { Bench } from '../../../shared/schemas/benches';
-import { AgeRing } from '../../components/AgeRing';
 import { Quantity } from '../../components/NumberText';
 import { TextLink } from '../../components/TextLink';
-import { formatUncertain } from '../../lib/format';
-import { calibrationAge, restingAxisDeg } from '../cabinet';
-import { useLab } from '../labs';
 import { GapText } from '../../lib/GapText';
-import { benchWarnings } from './bench-warnings';
+import { useLab } from '../labs';
+import { BeamLineOfBench } from './BeamLineOfBench';
+import { benchConflicts } from './bench-conflicts';
+import { ConflictWords } from './ConflictWords';
 import { InputReading } from './InputReading';
 import { LaserCaution } from './LaserCaution';
+import { benchPlatesQuery } from './queries';
 import { RetireBench } from './RetireBench';
-
-/** The plates as the light meets them, each with its age. */
-function PlatesInOrder({ bench, now }: { readonly bench: Bench; readonly now: Date }) {
-  const { lab } = useLab();
-  return (
-    <ol aria-label="Plates in beam order" className="flex flex-wrap gap-8">
-      {bench.plates.map((plate) => {
-        const age = calibrationAge(plate.calibration.measuredAt, lab.calibrationDueDays, now);
-        return (
-          <li key={plate.id} className="flex items-center gap-3">
-            <AgeRing
-              radius={26}
-              fastAxisDeg={restingAxisDeg(plate)}
-              ageDays={age.ageDays}
-              dueDays={lab.calibrationDueDays}
-            />
-            <div>
-              <TextLink to={`/labs/${lab.id}/cabinet/${plate.id}`} className="font-strong">
-                {plate.name}
-              </TextLink>
-              <p className="text-s text-ink-2 mt-1">
-                {formatUncertain(plate.calibration.retardanceDeg, plate.calibration.retardanceSigmaDeg)}° at{' '}
-                <Quantity text={String(plate.calibration.wavelengthNm)} unit="nm" />
-              </p>
-              <p className={age.overdue ? 'text-s text-fault font-strong' : 'text-s text-ink-2'}>
-                calibration {age.words}
-              </p>
-            </div>
-          </li>
-        );
-      })}
-    </ol>
-  );
-}
+import { WaitsForPlates } from './WaitsForPlates';
 
 /** One optical set-up. */
 export function BenchSection({ bench, now = new Date() }: { readonly bench: Bench; readonly now?: Date }) {
   const { lab, may } = useLab();
+  const plates = useQuery(benchPlatesQuery(lab.id, bench.id)).data?.items;
   const headId = `bench-${bench.id}`;
+  const standing = (plates ?? []).flatMap((plate) => {
+    const place = bench.order.find(({ plateId }) => plateId === plate.id);
+    return place === undefined ? [] : [{ part: place.part, plate }];
+  });
+  const waits = new Set(bench.notReady.map(({ plateId }) => plateId));
+  const conflicts = benchConflicts(
+    // What a bench waits for stands above, with the way to it.
+    standing.filter(({ plate }) => !waits.has(plate.id)),
+    bench,
+    { calibrationDueDays: lab.calibrationDueDays, now },
+  );
   return (
     <section aria-labelledby={headId} className="border-ink space-y-4 border-t-[1.5px] pt-4">
       <div className="flex flex-wrap items-baseline gap-x-4">
@@ -68,12 +48,17 @@ export function BenchSection({ bench, now = new Date() }: { readonly bench: Benc
           </span>
         )}
       </div>
-      <PlatesInOrder bench={bench} now={now} />
-      {benchWarnings(bench.plates, bench, bench.id).map((warning) => (
-        <p key={warning}>
-          <GapText text={warning} />
-        </p>
-      ))}
+      <BeamLineOfBench bench={bench} plates={plates} now={now} />
+      <WaitsForPlates labId={lab.id} bench={bench} />
+      {conflicts.length > 0 && (
+        <div>
+          {conflicts.map(({ kind, sentence }) => (
+            <ConflictWords key={sentence} kind={kind}>
+              <GapText text={sentence} />
+            </ConflictWords>
+          ))}
+        </div>
+      )}
       <LaserCaution
         laserClass={bench.laserClass}
         hazardWavelengthsNm={bench.hazardWavelengthsNm}

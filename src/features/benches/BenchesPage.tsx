@@ -36,8 +36,8 @@ export function Component() {
             <QueryState query={benches} what="the benches" />
           ) : items.length === 0 ? (
             <BeamEmpty title="No bench yet">
-              A bench is one optical set-up: its wavelength, what goes in, and one to six plates in beam
-              order.{' '}
+              A bench is one optical set-up: its wavelength, what goes in, and one to six plates in beam order
+              to prepare it, and what analyses it.{' '}
               {may('benches.write') ? (
                 <TextLink to={`/labs/${lab.id}/bench/new`}>Add a bench</TextLink>
               ) : (

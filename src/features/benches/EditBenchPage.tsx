@@ -1,11 +1,10 @@
 import { useQuery } from '@tanstack/react-query';
 import { useNavigate, useParams } from 'react-router-dom';
 import { TextLink } from '../../components/TextLink';
-import { platesQuery } from '../cabinet';
+import { QueryState } from '../../lib/QueryState';
 import { useLab } from '../labs';
 import { BenchForm } from './BenchForm';
-import { benchQuery, updateBench } from './queries';
-import { QueryState } from '../../lib/QueryState';
+import { benchPlatesQuery, benchQuery, updateBench } from './queries';
 
 /** A bench as it is, to be changed. Drafts solve for the new one; versions and runs keep the bench they were made for. */
 export function Component() {
@@ -13,7 +12,7 @@ export function Component() {
   const { benchId = '' } = useParams();
   const navigate = useNavigate();
   const bench = useQuery(benchQuery(lab.id, benchId));
-  const plates = useQuery(platesQuery(lab.id));
+  const plates = useQuery(benchPlatesQuery(lab.id, benchId));
   const loaded = bench.data;
   return (
     <>
@@ -30,13 +29,11 @@ export function Component() {
       ) : loaded === undefined ? (
         <QueryState query={bench} what="the bench" />
       ) : plates.data === undefined ? (
-        <QueryState query={plates} what="the cabinet" />
+        <QueryState query={plates} what="the plates of its beam" />
       ) : (
         <BenchForm
           bench={loaded}
-          plates={plates.data.items.filter(
-            ({ id, retiredAt }) => retiredAt === null || loaded.plates.some((plate) => plate.id === id),
-          )}
+          plates={plates.data.items}
           save={(body, revision) => updateBench(lab.id, loaded.id, body, revision)}
           onSaved={() => void navigate(`/labs/${lab.id}/bench`)}
         />

@@ -22,7 +22,11 @@ export function RetireBench({ bench }: { readonly bench: Bench }) {
     },
   });
   const verb = retired ? 'Return' : 'Retire';
-  const plates = bench.plates.map(({ name }) => name).join(' and ');
+  const names = bench.order.map(({ name }) => name);
+  const plates = [names.slice(0, -1).join(', '), ...names.slice(-1)]
+    .filter((part) => part !== '')
+    .join(' and ');
+  const one = names.length === 1;
   return (
     <>
       <TextButton onClick={() => setAsks(true)}>
@@ -48,8 +52,8 @@ export function RetireBench({ bench }: { readonly bench: Bench }) {
       >
         <p>
           {retired
-            ? `${plates} have to be free for it. If they were moved since, each needs a new calibration there.`
-            : `No run can start at it, and ${plates} are free for other benches. Protocols, versions and runs stay. It can be returned.`}
+            ? `${plates} ${one ? 'has' : 'have'} to be free for it. What was seated anew since needs a new calibration.`
+            : `No run can start at it, and ${plates} ${one ? 'is' : 'are'} free for other benches. Protocols, versions and runs stay. It can be returned.`}
         </p>
         <FormProblem error={changing.error} />
       </Dialog>

@@ -1,7 +1,7 @@
-import { type Bench, benchSchema } from '../../../shared/schemas/benches';
-import type { Plate } from '../../../shared/schemas/cabinet';
+import { type Bench, type BenchPart, benchSchema } from '../../../shared/schemas/benches';
 import type { EditDifference } from '../../lib/forms';
-import { type BenchValues, valuesOfBench } from './bench-form-values';
+import { fieldNames } from './bench-fields';
+import { type BenchValues, type TypedField, valuesOfBench } from './bench-form-values';
 
 /** The bench as the server holds it, out of a refusal; null when the refusal was another. */
 export function benchConflict(current: unknown): Bench | null {
@@ -9,21 +9,7 @@ export function benchConflict(current: unknown): Bench | null {
   return parsed.success ? parsed.data : null;
 }
 
-const fieldNames: Readonly<Record<keyof BenchValues, string>> = {
-  name: 'name',
-  wavelengthNm: 'wavelength, nm',
-  wavelengthSigmaNm: 'its σ, nm',
-  temperatureC: 'temperature of the plates, °C',
-  temperatureSigmaK: 'its σ, K',
-  inputExpression: 'state behind the polariser',
-  polariserSigmaDeg: 'σ of the polariser’s angle, degrees',
-  polariserExtinction: 'extinction of the polariser',
-  laserClass: 'laser class',
-  hazardWavelengthsNm: 'wavelengths that can reach an eye, nm',
-  plates: 'plates in beam order',
-};
-
-const fields: readonly (keyof BenchValues)[] = [
+const typedFields: readonly TypedField[] = [
   'name',
   'wavelengthNm',
   'wavelengthSigmaNm',
@@ -32,33 +18,45 @@ const fields: readonly (keyof BenchValues)[] = [
   'inputExpression',
   'polariserSigmaDeg',
   'polariserExtinction',
+  'passedName',
+  'passedDarkPerS',
+  'rejectedName',
+  'rejectedDarkPerS',
+  'efficiencyRatio',
   'laserClass',
   'hazardWavelengthsNm',
-  'plates',
 ];
 
-/** Where what was typed differs from what the server holds, in words. */
+const beamNames: Readonly<Record<BenchPart, string>> = {
+  preparation: 'plates of the preparation, in beam order',
+  analysis: 'plates of the analysis, in beam order',
+};
+
+/** Where what was typed differs from what the server holds, in words. `nameOf` knows the plates of this page. */
 export function benchDifferences(
   theirs: Bench,
   yours: BenchValues,
-  plates: readonly Plate[],
+  nameOf: (plateId: string) => string | undefined,
 ): readonly EditDifference[] {
-  const nameOf = (plateId: string): string =>
-    [...plates, ...theirs.plates].find(({ id }) => id === plateId)?.name ?? '';
-  const shown = (field: keyof BenchValues, values: BenchValues): string => {
-    if (field === 'plates') {
-      return values.plates
-        .flatMap(({ plateId }) => (plateId === '' ? [] : [nameOf(plateId)]))
-        .join(', then ');
-    }
-    return field === 'laserClass' && values[field] === '' ? 'not stated' : values[field];
-  };
   const stored = valuesOfBench(theirs);
-  return fields
-    .map((field) => ({
+  const typed = (field: TypedField, values: BenchValues): string =>
+    field === 'laserClass' && values[field] === '' ? 'not stated' : values[field];
+  const plates = (part: BenchPart, { beam }: BenchValues): string =>
+    beam[part]
+      .map(({ plateId }) => nameOf(plateId) ?? theirs.order.find((place) => place.plateId === plateId)?.name)
+      .map((name) => name ?? 'a plate')
+      .join(', then ');
+  const parts: readonly BenchPart[] = ['preparation', 'analysis'];
+  return [
+    ...typedFields.map((field) => ({
       field: fieldNames[field],
-      theirs: shown(field, stored),
-      yours: shown(field, yours),
-    }))
-    .filter((difference) => difference.theirs !== difference.yours);
+      theirs: typed(field, stored),
+      yours: typed(field, yours),
+    })),
+    ...parts.map((part) => ({
+      field: beamNames[part],
+      theirs: plates(part, stored),
+      yours: plates(part, yours),
+    })),
+  ].filter((difference) => difference.theirs !== difference.yours);
 }

@@ -1,10 +1,14 @@
 import type { UseFormRegisterReturn } from 'react-hook-form';
 import type { Bench, CreateBench, LaserClass } from '../../../shared/schemas/benches';
 import { createBenchSchema, laserClasses } from '../../../shared/schemas/benches';
+import { append, type Beam, emptyBeam } from './beam-order';
 import { readOptionalNumber, readTypedNumber, typedFromNumber, typedFromOptional } from '../../lib/forms';
 
 /** A registered field with the sentence that says what is wrong with it. */
 export type FieldBinding = UseFormRegisterReturn & { readonly fault: string | undefined };
+
+/** The binding of a field by its name. */
+export type BenchFieldOf = (name: TypedField) => FieldBinding;
 
 /** A bench as it is typed. */
 export interface BenchValues {
@@ -22,9 +26,18 @@ export interface BenchValues {
   readonly laserClass: string;
   /** Numbers with commas or spaces between them. */
   readonly hazardWavelengthsNm: string;
-  /** In beam order; '' where none is chosen yet. */
-  readonly plates: readonly { readonly plateId: string }[];
+  readonly beam: Beam;
+  /** '' where nothing is behind that port of the analysing polariser. */
+  readonly passedName: string;
+  readonly passedDarkPerS: string;
+  readonly rejectedName: string;
+  readonly rejectedDarkPerS: string;
+  /** '' where nobody measured it. */
+  readonly efficiencyRatio: string;
 }
+
+/** The fields that hold a text: all but the beam. */
+export type TypedField = Exclude<keyof BenchValues, 'beam'>;
 
 export const emptyBench: BenchValues = {
   name: '',
@@ -37,8 +50,18 @@ export const emptyBench: BenchValues = {
   polariserExtinction: '',
   laserClass: '',
   hazardWavelengthsNm: '',
-  plates: [{ plateId: '' }, { plateId: '' }],
+  beam: emptyBeam,
+  passedName: '',
+  passedDarkPerS: '',
+  rejectedName: '',
+  rejectedDarkPerS: '',
+  efficiencyRatio: '',
 };
+
+/** The beam as a bench has it, whether its plates are ready or not. */
+export function beamOf({ order }: Pick<Bench, 'order'>): Beam {
+  return order.reduce((beam, { part, plateId }) => append(beam, part, plateId), emptyBeam);
+}
 
 export function valuesOfBench(bench: Bench): BenchValues {
   return {
@@ -52,7 +75,12 @@ export function valuesOfBench(bench: Bench): BenchValues {
     polariserExtinction: typedFromOptional(bench.polariserExtinction),
     laserClass: bench.laserClass ?? '',
     hazardWavelengthsNm: bench.hazardWavelengthsNm.map(typedFromNumber).join(', '),
-    plates: bench.plates.map(({ id }) => ({ plateId: id })),
+    beam: beamOf(bench),
+    passedName: bench.detectors.passed?.name ?? '',
+    passedDarkPerS: typedFromOptional(bench.detectors.passed?.darkRatePerS ?? null),
+    rejectedName: bench.detectors.rejected?.name ?? '',
+    rejectedDarkPerS: typedFromOptional(bench.detectors.rejected?.darkRatePerS ?? null),
+    efficiencyRatio: typedFromOptional(bench.detectors.efficiencyRatio),
   };
 }
 
@@ -74,7 +102,32 @@ export function eyewearWavelengths(text: string): readonly number[] {
   return readWavelengths(text).filter((wavelengthNm) => element.safeParse(wavelengthNm).success);
 }
 
-/** What the request's schema is held against. Places where no plate is chosen are left out. */
+type TypedDetectors = Pick<
+  BenchValues,
+  'passedName' | 'passedDarkPerS' | 'rejectedName' | 'rejectedDarkPerS' | 'efficiencyRatio'
+>;
+
+/** Whether something is written of each port, so that their efficiencies can be compared. */
+export function hasBothDetectors(values: TypedDetectors): boolean {
+  const { passed, rejected } = readDetectors(values);
+  return passed !== null && rejected !== null;
+}
+
+function readDetectors(values: TypedDetectors) {
+  const detector = (name: string, dark: string) =>
+    name.trim() === '' && dark.trim() === '' ? null : { name, darkRatePerS: readTypedNumber(dark) };
+  const passed = detector(values.passedName, values.passedDarkPerS);
+  const rejected = detector(values.rejectedName, values.rejectedDarkPerS);
+  // With one detector only its field is not shown, and what was typed there compares nothing.
+  const compares = passed !== null && rejected !== null;
+  return {
+    passed,
+    rejected,
+    efficiencyRatio: compares ? readOptionalNumber(values.efficiencyRatio) : null,
+  };
+}
+
+/** What the request's schema is held against. */
 export function readBench(values: BenchValues) {
   return {
     name: values.name,
@@ -87,7 +140,9 @@ export function readBench(values: BenchValues) {
     polariserExtinction: readOptionalNumber(values.polariserExtinction),
     laserClass: readLaserClass(values.laserClass),
     hazardWavelengthsNm: readWavelengths(values.hazardWavelengthsNm),
-    plateIds: values.plates.map(({ plateId }) => plateId).filter((id) => id !== ''),
+    plateIds: values.beam.preparation.map(({ plateId }) => plateId),
+    analysisPlateIds: values.beam.analysis.map(({ plateId }) => plateId),
+    detectors: readDetectors(values),
   } satisfies Record<keyof CreateBench, unknown>;
 }
 

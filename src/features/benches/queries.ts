@@ -1,6 +1,6 @@
 import { queryOptions } from '@tanstack/react-query';
 import type { z } from 'zod';
-import type { Bench, benchListSchema, CreateBench } from '../../../shared/schemas/benches';
+import type { Bench, benchListSchema, BenchPlates, CreateBench } from '../../../shared/schemas/benches';
 import { request } from '../../lib/api';
 
 export const benchesQuery = (labId: string) =>
@@ -13,6 +13,13 @@ export const benchQuery = (labId: string, benchId: string) =>
   queryOptions({
     queryKey: ['labs', labId, 'benches', benchId],
     queryFn: ({ signal }) => request<Bench>(`/labs/${labId}/benches/${benchId}`, { signal }),
+  });
+
+/** Every plate of a bench's beam, ready or not, in the order that light meets them. */
+export const benchPlatesQuery = (labId: string, benchId: string) =>
+  queryOptions({
+    queryKey: ['labs', labId, 'benches', benchId, 'plates'],
+    queryFn: ({ signal }) => request<BenchPlates>(`/labs/${labId}/benches/${benchId}/plates`, { signal }),
   });
 
 export function createBench(labId: string, body: CreateBench, idempotencyKey: string) {

@@ -6,7 +6,7 @@ import type { Bench } from '../../../shared/schemas/benches';
 import { ExpressionField } from '../../components/ExpressionField';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { SelectField } from '../../components/SelectField';
-import { benchesQuery } from '../benches';
+import { benchesQuery, benchLabel, WaitsForPlates, waitsForPlates } from '../benches';
 import { flagWords } from '../conventions';
 import { labQuery } from '../labs';
 import { sessionQuery } from '../session';
@@ -67,7 +67,11 @@ function namedPlates(bench: Bench): readonly NamedPlate[] {
 }
 
 /** What the first of a person's labs brings to this page: its convention and its benches. Nothing for a stranger. */
-function useOwnLab(): { readonly convention: Convention | null; readonly benches: readonly Bench[] } {
+function useOwnLab(): {
+  readonly labId: string | null;
+  readonly convention: Convention | null;
+  readonly benches: readonly Bench[];
+} {
   const { data: session } = useQuery(sessionQuery);
   const labId = session?.labs[0]?.id;
   const lab = useQuery({
@@ -79,6 +83,7 @@ function useOwnLab(): { readonly convention: Convention | null; readonly benches
     ...(labId === undefined ? { queryFn: skipToken } : {}),
   });
   return {
+    labId: labId ?? null,
     convention: lab.data?.convention ?? null,
     // Not before the lab: without its convention nothing says what light goes into its benches.
     benches:
@@ -146,6 +151,8 @@ export function Component() {
       ? undefined
       : (own.benches.find(({ id }) => id === benchId) ??
         own.benches.find(({ plates: standing }) => standing.length >= fewest[question]));
+  // Half a beam is no beam: nothing is worked out for a bench that waits for a plate.
+  const waits = bench !== undefined && waitsForPlates(bench);
   const written = useDeferredValue(expression);
   const read = useMemo(
     () => readQuick({ question, expression: written, convention }),
@@ -155,7 +162,7 @@ export function Component() {
   const benchConvention = own.convention ?? DEFAULT_CONVENTION;
   const asked = useMemo(
     (): Asked | null =>
-      read.ok
+      read.ok && !waits
         ? {
             written: { question, expression: written, convention },
             quick:
@@ -166,7 +173,7 @@ export function Component() {
             key: `${bench?.id ?? 'ideal'} ${question} ${written} ${setId}`,
           }
         : null,
-    [read, question, written, convention, bench, benchConvention, setId],
+    [read, waits, question, written, convention, bench, benchConvention, setId],
   );
   const { answered, isLate } = useQuickSettings(asked);
   const empty = expression.trim() === '';
@@ -224,10 +231,7 @@ export function Component() {
                   value={bench?.id ?? 'ideal'}
                   onChange={(event) => setBenchId(event.target.value)}
                   options={[
-                    ...own.benches.map(({ id, name, plates: standing }) => ({
-                      value: id,
-                      label: `${name}: ${standing.map((plate) => plate.name).join(', ')}`,
-                    })),
+                    ...own.benches.map((one) => ({ value: one.id, label: benchLabel(one) })),
                     { value: 'ideal', label: 'ideal half- and quarter-wave plates' },
                   ]}
                 />
@@ -236,7 +240,11 @@ export function Component() {
             <p role="status" className="text-s text-ink-2 mt-1">
               {asked !== null && isLate && lateWords(answered?.asked ?? null)}
             </p>
-            {asked === null ? (
+            {waits && own.labId !== null ? (
+              <div className="mt-3">
+                <WaitsForPlates labId={own.labId} bench={bench} part="preparation" />
+              </div>
+            ) : asked === null ? (
               <p className="text-ink-2 mt-3">They stand here as soon as it can be read.</p>
             ) : (
               answered !== null && <Answer asked={answered.asked} settings={answered.settings} />

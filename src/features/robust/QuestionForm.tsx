@@ -7,6 +7,7 @@ import { NumberField } from '../../components/NumberField';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { SelectField } from '../../components/SelectField';
 import { TextField } from '../../components/TextField';
+import { benchLabel, waitsForPlates } from '../benches';
 import type { RobustForm } from './robust-form';
 import type { QuestionFaults } from './robust-question';
 
@@ -62,16 +63,13 @@ export function QuestionForm(props: QuestionFormProps) {
             label="with the plates of"
             value={form.benchId ?? typedPlates}
             fault={faults.bench}
-            help={bench === undefined ? undefined : benchHelp(bench, form)}
+            help={bench === undefined || waitsForPlates(bench) ? undefined : benchHelp(bench, form)}
             onChange={({ target }) =>
               onChange({ benchId: target.value === typedPlates ? null : target.value })
             }
             options={[
               { value: typedPlates, label: 'no bench: by retardance' },
-              ...benches.map(({ id, name, plates }) => ({
-                value: id,
-                label: `${name}: ${plates.map((plate) => plate.name).join(', ')}`,
-              })),
+              ...benches.map((one) => ({ value: one.id, label: benchLabel(one) })),
               ...(form.benchId !== null && bench === undefined
                 ? [{ value: form.benchId, label: 'a bench that is not there' }]
                 : []),

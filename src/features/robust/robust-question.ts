@@ -1,3 +1,4 @@
+import { notReadySentences } from '../../../shared/bench-ready';
 import { degrees, parseState, type Stokes, toRadians } from '../../../shared/optics';
 import type { Convention } from '../../../shared/optics/convention';
 import type { DialScale } from '../../../shared/optics/dial';
@@ -152,6 +153,8 @@ function benchStack({ kind, error }: RobustForm, bench: Bench | undefined, conve
       faults: { bench: 'This bench is not among the lab’s, or it is retired. Choose another.' },
     };
   }
+  const waits = notReadySentences(bench, 'preparation');
+  if (waits.length > 0) return { ok: false, faults: { bench: waits.join(' ') } };
   const count = plateCountFault(bench.plates.length);
   if (count !== null) return { ok: false, faults: { bench: `${bench.name}: ${count}` } };
   const read = benchProblem(bench, convention, {

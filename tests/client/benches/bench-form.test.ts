@@ -1,9 +1,15 @@
 import { describe, expect, it } from 'vitest';
 import { createBenchSchema } from '../../../shared/schemas/benches';
-import { emptyBench, eyewearWavelengths, readBench } from '../../../src/features/benches/bench-form-values';
-import { benchWarnings } from '../../../src/features/benches/bench-warnings';
+import { append, type Beam, emptyBeam } from '../../../src/features/benches/beam-order';
+import { fieldOf } from '../../../src/features/benches/bench-fields';
+import {
+  emptyBench,
+  eyewearWavelengths,
+  readBench,
+  valuesOfBench,
+} from '../../../src/features/benches/bench-form-values';
 import { inputFault } from '../../../src/features/benches/InputReading';
-import { plateFixture } from '../cabinet/plate-fixture';
+import { bench, cabinetPlate, id, order } from './fixture';
 
 const typed = {
   ...emptyBench,
@@ -11,11 +17,13 @@ const typed = {
   wavelengthNm: '810',
   polariserSigmaDeg: '0.05',
   hazardWavelengthsNm: '405 nm, 810',
-  plates: [
-    { plateId: '0190a000-0000-7000-8000-000000000001' },
-    { plateId: '0190a000-0000-7000-8000-000000000004' },
-  ],
+  beam: beam([id(1), id(4)]),
 };
+
+function beam(preparation: readonly string[], analysis: readonly string[] = []): Beam {
+  const prepared = preparation.reduce((at, plateId) => append(at, 'preparation', plateId), emptyBeam);
+  return analysis.reduce((at, plateId) => append(at, 'analysis', plateId), prepared);
+}
 
 function faults(change: Partial<typeof typed>) {
   const result = createBenchSchema.safeParse(readBench({ ...typed, ...change }));
@@ -28,18 +36,65 @@ describe('a bench as it is typed', () => {
     expect(readBench(typed)).toMatchObject({ hazardWavelengthsNm: [405, 810], laserClass: null });
   });
 
-  it('takes one to six plates, all of them different', () => {
-    expect(faults({ plates: typed.plates.slice(0, 1) })).toEqual([]);
-    expect(faults({ plates: [{ plateId: '' }] })).toEqual([
+  it('takes one to six plates of preparation and none to six of analysis, all of them different', () => {
+    expect(faults({ beam: beam([id(1)]) })).toEqual([]);
+    expect(faults({ beam: beam([id(1)], [id(2), id(3)]) })).toEqual([]);
+    expect(faults({ beam: beam([], [id(2)]) })).toEqual([
       ['plateIds', 'A bench has at least one plate. Choose the one that light meets first.'],
     ]);
-    expect(faults({ plates: [...typed.plates, ...typed.plates.slice(0, 1)] })).toEqual([
+    expect(faults({ beam: beam([id(1), id(1)]) })).toEqual([
       ['plateIds', 'One plate cannot stand in two places. Choose another.'],
     ]);
-    const seven = Array.from({ length: 7 }, (_, k) => ({
-      plateId: `0190a000-0000-7000-8000-00000000001${k}`,
-    }));
-    expect(faults({ plates: seven })).toEqual([['plateIds', 'A bench has at most 6 plates in its beam.']]);
+    expect(faults({ beam: beam([id(1)], [id(1)]) })).toEqual([
+      ['analysisPlateIds', 'One plate cannot stand in two places. Choose another.'],
+    ]);
+  });
+
+  it('reads a port as empty where neither name nor dark rate is written, and a ratio only where both ports are there', () => {
+    expect(readBench(typed).detectors).toEqual({ passed: null, rejected: null, efficiencyRatio: null });
+    const one = { passedName: 'APD 1', passedDarkPerS: '120', efficiencyRatio: '0.97' };
+    expect(readBench({ ...typed, ...one }).detectors).toEqual({
+      passed: { name: 'APD 1', darkRatePerS: 120 },
+      rejected: null,
+      efficiencyRatio: null,
+    });
+    expect(faults(one)).toEqual([]);
+    const both = { ...one, rejectedName: 'APD 2', rejectedDarkPerS: '95' };
+    expect(readBench({ ...typed, ...both }).detectors.efficiencyRatio).toBe(0.97);
+    expect(faults({ ...one, passedName: '' })[0]).toEqual([
+      'detectors.passed.name',
+      "Write the detector's name.",
+    ]);
+    expect(faults({ ...one, passedDarkPerS: '' })[0]?.[0]).toBe('detectors.passed.darkRatePerS');
+  });
+
+  it('is the same bench again when nothing was typed', () => {
+    const stored = bench({
+      order: [...order('preparation', cabinetPlate(1, 'H-1')), ...order('analysis', cabinetPlate(2, 'Q-1'))],
+      polariserExtinction: 1e-5,
+      detectors: {
+        passed: { name: 'APD 1', darkRatePerS: 120 },
+        rejected: { name: 'APD 2', darkRatePerS: 0 },
+        efficiencyRatio: 0.97,
+      },
+    });
+    expect(readBench(valuesOfBench(stored))).toMatchObject({
+      plateIds: [id(1)],
+      analysisPlateIds: [id(2)],
+      detectors: stored.detectors,
+      polariserExtinction: 1e-5,
+    });
+  });
+
+  it.each([
+    ['plateIds', 'beam.preparation'],
+    ['analysisPlateIds.1', 'beam.analysis.1'],
+    ['detectors.rejected.darkRatePerS', 'rejectedDarkPerS'],
+    ['detectors.efficiencyRatio', 'efficiencyRatio'],
+    ['hazardWavelengthsNm.1', 'hazardWavelengthsNm'],
+    ['nothing.of.it', null],
+  ])('puts what is wrong with %s at %s', (path, field) => {
+    expect(fieldOf(path)).toBe(field);
   });
 
   it('takes an empty temperature and extinction as not stated', () => {
@@ -67,49 +122,5 @@ describe('a bench as it is typed', () => {
     const convention = { phase: 'kz-wt', handedness: 'receiver', s3Sign: 'L' } as const;
     expect(inputFault('H', convention)).toBeNull();
     expect(inputFault('H + ', convention)).toMatch(/^Column \d+: /);
-  });
-});
-
-describe('what a person should know before plates stand in a bench', () => {
-  it('warns of another wavelength and of another bench, by name', () => {
-    const [elsewhere, taken] = benchWarnings(
-      [plateFixture()],
-      { wavelengthNm: 780, temperatureC: null },
-      null,
-    );
-    expect(elsewhere).toMatch(
-      /Q-B was calibrated at 810\u202fnm\. At 780\u202fnm it is taken as 92\.\d\d°, \+3\.\d\d° by what is published/,
-    );
-    expect(taken).toMatch(/Q-B stands in the beam of signal arm\. Choose another/);
-  });
-
-  it('says of a plate whose material nobody knows that it is used as measured', () => {
-    const unknown = plateFixture({ construction: 'unknown', material: null, benches: [] });
-    expect(benchWarnings([unknown], { wavelengthNm: 780, temperatureC: null }, null)).toEqual([
-      'Q-B was calibrated at 810\u202fnm, and this bench runs at 780\u202fnm. How it follows that is not known, so its 88.9° are used as measured: calibrate it at 780\u202fnm.',
-    ]);
-  });
-
-  it('says each sentence once of a plate that is chosen twice', () => {
-    const plate = plateFixture();
-    const bench = { wavelengthNm: 780, temperatureC: null };
-    expect(benchWarnings([plate, plate], bench, null)).toEqual(benchWarnings([plate], bench, null));
-  });
-
-  it('says nothing of calibrations at a wavelength that the bench would be refused with', () => {
-    const plate = plateFixture({ benches: [] });
-    for (const wavelengthNm of [8.1, 81_000, Number.NaN]) {
-      expect(benchWarnings([plate], { wavelengthNm, temperatureC: null }, null)).toEqual([]);
-    }
-  });
-
-  it('is silent about the bench itself at its own wavelength', () => {
-    expect(
-      benchWarnings(
-        [plateFixture()],
-        { wavelengthNm: 810, temperatureC: null },
-        plateFixture().benches[0]?.id ?? '',
-      ),
-    ).toEqual([]);
   });
 });

@@ -5,6 +5,7 @@ import userEvent from '@testing-library/user-event';
 import { MemoryRouter } from 'react-router-dom';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { DEFAULT_CONVENTION, parseState } from '../../../shared/optics';
+import type { Bench } from '../../../shared/schemas/benches';
 import type { SolvingBench } from '../../../shared/protocol/solve-row';
 import type { Plate } from '../../../shared/schemas/cabinet';
 import { quickSettings } from '../../../src/features/quick-angles/quick-settings';
@@ -80,7 +81,7 @@ const bench = anyBench({
 });
 
 /** A server with one lab and one bench, or with nobody signed in. */
-function serve(signedIn: boolean) {
+function serve(signedIn: boolean, benches: readonly Bench[] = [bench]) {
   const lab = { id: id(1), name: 'Harbour Street', convention: DEFAULT_CONVENTION, calibrationDueDays: 90 };
   vi.stubGlobal('fetch', (url: string) => {
     const answer = url.endsWith('/session')
@@ -89,7 +90,7 @@ function serve(signedIn: boolean) {
           labs: signedIn ? [{ id: lab.id, name: lab.name, role: 'lead' }] : [],
         }
       : url.endsWith('/benches')
-        ? { items: [bench] }
+        ? { items: benches }
         : lab;
     return Promise.resolve(new Response(JSON.stringify(answer), { status: 200 }));
   });
@@ -141,6 +142,28 @@ describe('the page of quick angles', () => {
     expect(shortLatex(right.jones, DEFAULT_CONVENTION)).toBe(
       '0.707\\,|H\\rangle + 0.707\\,e^{-i\\,90.0^{\\circ}}|V\\rangle',
     );
+  });
+
+  it('solves nothing for a bench that waits for a plate, and says which and why, with the way to it', async () => {
+    const notReady: Bench['notReady'] = [
+      { plateId: id(2), name: 'H-A', part: 'preparation', why: 'not-seated' },
+    ];
+    const waiting = anyBench({ id: id(8), name: 'signal arm', plates: [], notReady });
+    serve(true, [bench, waiting]);
+    const user = open('D');
+    await screen.findByText(/1 − F expected/u);
+    await user.selectOptions(screen.getByRole('combobox', { name: 'with the plates of' }), [
+      'signal arm: waits for H-A',
+    ]);
+    expect(dials()).toMatch(/H-A was taken out of its mount\. Seat it and calibrate it/u);
+    expect(dials()).not.toMatch(/1 − F expected/u);
+    expect(screen.getByRole('link', { name: 'See H-A' }).getAttribute('href')).toBe(
+      `/labs/${id(1)}/cabinet/${id(2)}`,
+    );
+    await user.selectOptions(screen.getByRole('combobox', { name: 'with the plates of' }), [
+      'idler arm: Q-A, H-A',
+    ]);
+    await waitFor(() => expect(dials()).toMatch(/1 − F expected/u));
   });
 
   it('reads the bench’s input in its lab’s convention, whichever one the state is written in', async () => {

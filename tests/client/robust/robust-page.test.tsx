@@ -53,6 +53,11 @@ const gateBench = bench(7, 'gate bench', [
 ]);
 const singleBench = bench(8, 'lone arm', [plate(4, 'Q-A', 90)]);
 
+const waitingBench = {
+  ...bench(9, 'signal arm', []),
+  notReady: [{ plateId: id(2), name: 'H-B', part: 'preparation', why: 'not-calibrated' }],
+};
+
 const lab: LabContextValue = {
   lab: {
     id: id(1),
@@ -71,7 +76,9 @@ beforeEach(() => {
   // jsdom lays nothing out, so it has nothing to scroll.
   Object.defineProperty(Element.prototype, 'scrollIntoView', { value: () => undefined, configurable: true });
   vi.stubGlobal('fetch', () =>
-    Promise.resolve(new Response(JSON.stringify({ items: [gateBench, singleBench] }), { status: 200 })),
+    Promise.resolve(
+      new Response(JSON.stringify({ items: [gateBench, singleBench, waitingBench] }), { status: 200 }),
+    ),
   );
 });
 
@@ -125,6 +132,19 @@ describe('the page of robust designs', () => {
     expect(screen.getByText('No search yet')).toBeDefined();
     expect(HeldWorker.all).toHaveLength(0);
     expect(screen.getByRole('table', { name: 'Published composites' })).toBeDefined();
+  });
+
+  it('does not search with a bench that waits for a plate, and says which and why', async () => {
+    const { user } = open();
+    await user.selectOptions(
+      await screen.findByRole('combobox', { name: 'with the plates of' }),
+      await screen.findByRole('option', { name: 'signal arm: waits for H-B' }),
+    );
+    expect(
+      await screen.findByText(/^H-B has not been calibrated since it was seated\. Calibrate it/u),
+    ).toBeDefined();
+    await user.click(button(/^Search for settings/));
+    expect(HeldWorker.all).toHaveLength(0);
   });
 
   it('searches, tells how far it is, and can be stopped', async () => {

@@ -1,0 +1,42 @@
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
+import type { OpenQuestion } from '../../../shared/schemas/calibrations';
+import { formatUncertain, thinGap } from '../../lib/format';
+import { calibrationAge, kindNames } from '../cabinet';
+
+/** "half-wave plate, 179.2(3)° at 810 nm, in M05": what tells two plates apart. */
+export function plateSummary({ kind, designWavelengthNm, calibration, seat }: CabinetPlate): string {
+  const measured =
+    calibration === null
+      ? `made for ${designWavelengthNm}${thinGap}nm`
+      : `${formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}° at ${calibration.wavelengthNm}${thinGap}nm`;
+  return `${kindNames[kind]}, ${measured}${seat === null ? '' : `, in ${seat.mount.name}`}`;
+}
+
+const openNames: Readonly<Record<OpenQuestion, string>> = {
+  axis: 'fast or slow axis not settled',
+  branch: 'retardance or 360° less it not settled',
+  blind: 'retardance hardly felt near 180°',
+};
+
+/** How far a plate can be trusted, in a few words: "calibration 12 days over", "not seated". */
+export function plateHealthWords(
+  { health, calibration }: CabinetPlate,
+  { calibrationDueDays, now }: { readonly calibrationDueDays: number; readonly now: Date },
+): string {
+  if (health === 'retired') return 'retired';
+  if (health === 'not-seated') return 'not seated';
+  if (calibration === null) return 'not calibrated in this seat';
+  const { words } = calibrationAge(calibration.measuredAt, calibrationDueDays, now);
+  const open = calibration.openQuestions.map((question) => openNames[question]);
+  return [...open, `calibration ${words}`].join(', ');
+}
+
+/** Where it stands: "stands in signal arm", "in this beam already", or '' where it is free. */
+export function plateWhere(
+  { id, benches }: CabinetPlate,
+  { benchId, inBeam }: { readonly benchId: string | null; readonly inBeam: readonly string[] },
+): string {
+  const others = benches.filter((bench) => bench.id !== benchId).map(({ name }) => name);
+  if (others.length > 0) return `stands in ${others.join(' and ')}`;
+  return inBeam.includes(id) ? 'in this beam already' : '';
+}
