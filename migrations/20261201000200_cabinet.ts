@@ -18,6 +18,8 @@ export async function up(knex: Knex): Promise<void> {
     coating_to_nm double precision ${finite('coating_to_nm')},
     damage_note text NOT NULL,
     note text NOT NULL,
+    search_text text NOT NULL GENERATED ALWAYS AS
+      (lower(name || ' ' || serial || ' ' || coalesce(material, '') || ' ' || note)) STORED,
     retired_at timestamptz(3),
     revision integer NOT NULL DEFAULT 1,
     created_at timestamptz(3) NOT NULL DEFAULT now(),
@@ -39,7 +41,10 @@ export async function up(knex: Knex): Promise<void> {
     `CREATE COLLATION IF NOT EXISTS by_number (provider = icu, locale = 'en-u-kn-true-ks-level2')`,
   );
   await knex.raw('CREATE INDEX plates_by_name ON plates (lab_id, (name COLLATE by_number), id)');
-  await knex.raw('CREATE INDEX plates_by_age ON plates (lab_id, calibrated_at, id)');
+  await knex.raw(
+    `CREATE INDEX plates_by_age ON plates (lab_id, (coalesce(calibrated_at, '-infinity'::timestamptz)), id)`,
+  );
+  await knex.raw('CREATE INDEX plates_by_wavelength ON plates (lab_id, design_wavelength_nm, id)');
   await keepInLab(knex, 'plates', ['SELECT', 'INSERT', 'UPDATE']);
 
   await knex.raw(`CREATE TABLE mounts (
