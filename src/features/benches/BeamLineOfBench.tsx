@@ -9,7 +9,8 @@ import { TextLink } from '../../components/TextLink';
 import { GapText } from '../../lib/GapText';
 import { useLab } from '../labs';
 import { PlateSign } from './PlateSign';
-import { plateHealthWords, plateSummary } from './plate-summary';
+import { PlateSummary } from './PlateSummary';
+import { plateHealthWords } from './plate-state-words';
 import './benches.css';
 
 /** More ellipticity than this no polariser alone makes. */
@@ -67,12 +68,16 @@ export function BeamLineOfBench(props: {
           )),
       )}
       {hasEnd && (
-        <OnLine zone={<Polariser radius={22} axisDeg={0} />}>
+        <OnLine
+          room="much"
+          zone={
+            <>
+              <Polariser radius={22} axisDeg={0} />
+              <span aria-hidden="true" className="bench-line-stop" />
+            </>
+          }
+        >
           <p className="font-strong">analysing polariser</p>
-        </OnLine>
-      )}
-      {hasEnd && (
-        <OnLine room="much" zone={<span aria-hidden="true" className="bench-line-stop" />}>
           <DetectorWords detectors={bench.detectors} />
         </OnLine>
       )}
@@ -143,7 +148,7 @@ function PlateWords(props: {
       {plate !== undefined && (
         <>
           <p className="text-s text-ink-2 mt-1">
-            <GapText text={plateSummary(plate)} />
+            <PlateSummary plate={plate} />
           </p>
           <p className={isBad ? 'text-s text-fault font-strong' : 'text-s text-ink-2'}>
             {plateHealthWords(plate, { calibrationDueDays, now })}

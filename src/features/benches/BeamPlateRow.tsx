@@ -6,7 +6,8 @@ import { GapText } from '../../lib/GapText';
 import { useLab } from '../labs';
 import type { PlateConflict } from './bench-conflicts';
 import { ConflictWords } from './ConflictWords';
-import { plateHealthWords, plateSummary } from './plate-summary';
+import { PlateSummary } from './PlateSummary';
+import { plateHealthWords } from './plate-state-words';
 import { PlateSign } from './PlateSign';
 import type { BeamMoves } from './use-beam-moves';
 
@@ -50,7 +51,7 @@ export function BeamPlateRow(props: {
           <strong>{name}</strong>{' '}
           {plate !== undefined && (
             <span className="text-ink-2">
-              <GapText text={plateSummary(plate)} />
+              <PlateSummary plate={plate} />
             </span>
           )}
         </p>

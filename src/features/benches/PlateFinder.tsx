@@ -7,7 +7,8 @@ import { SelectField } from '../../components/SelectField';
 import { GapText } from '../../lib/GapText';
 import { platePageQuery } from '../cabinet';
 import { useLab } from '../labs';
-import { plateHealthWords, plateSummary, plateWhere } from './plate-summary';
+import { PlateSummary } from './PlateSummary';
+import { plateHealthWords, plateWhere } from './plate-state-words';
 
 /** More would not be read: who sees none that fits writes more of its name. */
 const shownPlates = 8;
@@ -163,7 +164,7 @@ function Suggestion(props: { readonly plate: CabinetPlate; readonly where: strin
     <>
       <strong>{plate.name}</strong>{' '}
       <span className="text-ink-2">
-        <GapText text={plateSummary(plate)} />
+        <PlateSummary plate={plate} />
       </span>
       <span className="text-s text-ink-2 block">
         {plateHealthWords(plate, { calibrationDueDays, now })}

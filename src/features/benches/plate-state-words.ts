@@ -1,16 +1,6 @@
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import type { OpenQuestion } from '../../../shared/schemas/calibrations';
-import { formatUncertain, thinGap } from '../../lib/format';
-import { calibrationAge, kindNames } from '../cabinet';
-
-/** "half-wave plate, 179.2(3)° at 810 nm, in M05": what tells two plates apart. */
-export function plateSummary({ kind, designWavelengthNm, calibration, seat }: CabinetPlate): string {
-  const measured =
-    calibration === null
-      ? `made for ${designWavelengthNm}${thinGap}nm`
-      : `${formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}° at ${calibration.wavelengthNm}${thinGap}nm`;
-  return `${kindNames[kind]}, ${measured}${seat === null ? '' : `, in ${seat.mount.name}`}`;
-}
+import { calibrationAge } from '../cabinet';
 
 const openNames: Readonly<Record<OpenQuestion, string>> = {
   axis: 'fast or slow axis not settled',
