@@ -134,6 +134,84 @@ describe('many rows at once', () => {
   });
 });
 
+/** Targets that are in the document, of however many there are. */
+const mounted = (page: Page) => page.locator('tbody[data-row]').count();
+
+describe('two hundred targets of three plates', () => {
+  it('are solved beside the page, with those in sight in the document; keys, search and undo reach every one', async () => {
+    const { page, context, faults } = await openPage(browser, product);
+    await signIn(page, 'Ines Varga');
+    await writeProtocol(page, 'Two hundred gates', 'unitaries', gateBench);
+    await page.getByRole('button', { name: /^Add a set/u }).click();
+    const dialog = page.getByRole('dialog');
+    await dialog.getByRole('radio', { name: 'text or a file' }).check();
+    const rows = Array.from({ length: 200 }, (_, row) => `g${row};rotate(x, ${row + 10.5}deg)`);
+    await dialog.getByLabel('A file of rows').setInputFiles({
+      name: 'rows.csv',
+      mimeType: 'text/csv',
+      buffer: Buffer.from(`label;expression\n${rows.join('\n')}\n`),
+    });
+    await dialog.getByRole('button', { name: 'Add 200 rows' }).click();
+    await page.getByRole('button', { name: 'Solution 1 of 4 for target g0', exact: true }).waitFor();
+    const mostMounted = 50;
+    expect(await mounted(page)).toBeLessThan(mostMounted);
+    // The head, two hundred targets, the empty row, and whatever notes stand under them.
+    const table = page.getByRole('table', { name: /^Targets/u });
+    expect(Number(await table.getAttribute('aria-rowcount'))).toBeGreaterThanOrEqual(202);
+    // None of the solving is the page's.
+    expect(page.workers().length).toBeGreaterThan(0);
+
+    const selected = page.getByRole('row', { selected: true });
+    const focused = page.locator('tr[aria-selected="true"]:focus');
+    await page.getByRole('cell', { name: 'g1', exact: true }).click();
+    await selected.focus();
+    await page.keyboard.press('End');
+    await page.getByRole('button', { name: 'Solution 1 of 4 for target g199', exact: true }).waitFor();
+    expect(await selected.getByRole('cell', { name: 'g199', exact: true }).isVisible()).toBe(true);
+    expect(await focused.count()).toBe(1);
+    await page.keyboard.press('ArrowUp');
+    await selected.getByRole('cell', { name: 'g198', exact: true }).waitFor();
+    await page.keyboard.press('Alt+ArrowUp');
+    expect(await selected.getByRole('cell').first().textContent()).toBe('198');
+
+    // Scrolled out of sight, the selected row stays in the document with its focus, and so does the row to write in.
+    await page.getByRole('region', { name: 'Targets' }).evaluate((region) => region.scrollTo(0, 0));
+    await page.getByRole('cell', { name: 'g0', exact: true }).waitFor();
+    expect(await mounted(page)).toBeLessThan(mostMounted);
+    expect(await focused.count()).toBe(1);
+    expect(await page.getByRole('combobox', { name: 'New target' }).count()).toBe(1);
+
+    await page.keyboard.press('/');
+    await page.keyboard.type('rotate(x, 130.5deg)');
+    await page.getByText('1 of 1', { exact: true }).waitFor();
+    await selected.getByRole('cell', { name: 'g120', exact: true }).waitFor();
+    await page.keyboard.press('Escape');
+    expect(await focused.count()).toBe(1);
+    const region = await page.getByRole('region', { name: 'Targets' }).boundingBox();
+    const row = await selected.boundingBox();
+    expect(row?.y).toBeGreaterThanOrEqual(region?.y ?? Number.POSITIVE_INFINITY);
+    expect((row?.y ?? 0) + (row?.height ?? 0)).toBeLessThanOrEqual(
+      (region?.y ?? 0) + (region?.height ?? 0) + 1,
+    );
+
+    await page.keyboard.press('Delete');
+    await page.getByText('Row 121, g120, taken out.').waitFor();
+    await page.getByRole('button', { name: 'Undo', exact: true }).click();
+    await page.keyboard.press('/');
+    await page.keyboard.type('g120');
+    await page.getByText('1 of 1', { exact: true }).waitFor();
+
+    // The stage is in sight of the whole list, and nothing is wider than a phone.
+    await page.keyboard.press('Escape');
+    await page.keyboard.press('End');
+    expect(await page.getByText('expected fidelity').isVisible()).toBe(true);
+    await page.setViewportSize({ width: 390, height: 844 });
+    expect(await page.evaluate('document.documentElement.scrollWidth')).toBe(390);
+    expect(faults()).toEqual([]);
+    await context.close();
+  });
+});
+
 describe('the pages around the designer', () => {
   it('answer for a visitor: a gate’s angles as published, and one light in every convention by an address to send', async () => {
     const { page, context, faults } = await openPage(browser, product);

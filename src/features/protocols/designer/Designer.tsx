@@ -83,7 +83,8 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const target = content.targets[place];
   const view = views[place];
   const looked = useLooked({ content, bench, convention: lab.convention, target, view });
-  // The stage follows at once; the figures and the budget each in a task of their own.
+  // The row is lit at once; the stage, the figures and the budget follow, each in a task of its own.
+  const staged = useLater(looked, 0);
   const drawn = useLater(looked, figuresAfterMs);
   const weighed = useLater(looked, budgetAfterMs);
 
@@ -126,10 +127,10 @@ export function Designer({ protocol, benches }: DesignerProps) {
       {solved.planFault !== null && (
         <BeamWrong title="The least travel can’t be planned">{solved.planFault}</BeamWrong>
       )}
-      {looked === null && target !== undefined && <div className="stage-waits" />}
-      {looked !== null && (
+      {staged === null && target !== undefined && <div className="stage-waits" />}
+      {staged !== null && (
         <SelectedStage
-          {...looked}
+          {...staged}
           toleranceInfidelity={content.toleranceInfidelity}
           convention={lab.convention}
         />
