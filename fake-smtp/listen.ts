@@ -1,4 +1,5 @@
-import { createServer, type Server } from 'node:http';
+import { createServer } from 'node:http';
+import type { Server } from 'node:net';
 import { SMTPServer } from 'smtp-server';
 import { Mailbox } from './mailbox';
 import { listPage, messagePage, missingPage } from './page';

@@ -62,6 +62,29 @@ export const waitingItemSchema = z.discriminatedUnion('kind', [
     questions: z.array(openQuestionSchema),
     benchNames: z.array(z.string()),
   }),
+  z.strictObject({
+    kind: z.literal('stale-versions'),
+    /** What changed since these versions were saved: a plate that they name, or their bench. */
+    subject: z.discriminatedUnion('kind', [
+      z.strictObject({
+        kind: z.literal('plate'),
+        id: idSchema,
+        name: z.string(),
+        change: z.enum(['recalibrated', 'seat-ended', 'not-in-beam']),
+        /** As in a reliance report; null unless it was recalibrated in its seat. */
+        zeroShiftDeg: z.number().nullable(),
+        zeroShiftSigmaDeg: z.number().nullable(),
+      }),
+      z.strictObject({ kind: z.literal('bench'), id: idSchema, name: z.string() }),
+    ]),
+    versionCount: z.int(),
+    /** Of those whose dials stand for something: targets not within, and the worst of all; null where none does. */
+    asDialled: z
+      .strictObject({ outCount: z.int(), worstInfidelity: z.number(), worstLabel: z.string() })
+      .nullable(),
+    /** Versions whose old dials stand for nothing. */
+    voidCount: z.int(),
+  }),
   z.strictObject({ kind: z.literal('no-plates') }),
   z.strictObject({ kind: z.literal('no-bench') }),
   z.strictObject({ kind: z.literal('no-protocol') }),

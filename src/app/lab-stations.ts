@@ -10,6 +10,7 @@ const stationOf: Readonly<Record<WaitingItem['kind'], StationKey | null>> = {
   'calibrated-elsewhere': 'cabinet',
   'plate-not-ready': 'cabinet',
   'open-question': 'cabinet',
+  'stale-versions': 'cabinet',
   'no-plates': null,
   'no-bench': null,
   'no-protocol': null,

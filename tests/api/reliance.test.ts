@@ -4,6 +4,7 @@ import {
   benchSchema,
   cabinetPlateSchema,
   calibrationSchema,
+  homeSchema,
   draftSchema,
   problemSchema,
   protocolSchema,
@@ -16,6 +17,7 @@ import { type Agent, type Harness, startHarness } from './support/harness';
 import {
   benchBody,
   calibrationBody,
+  join,
   makeLab,
   quarterCalibration,
   saveVersion,
@@ -87,6 +89,25 @@ test('a new zero is told of every version that used the old one, with the number
   expect(report?.resolved).toMatchObject({ out: report?.frozen.out });
   const other = await settled(second);
   expect(other.report).toEqual(report);
+});
+
+test('home tells designers and leads of versions that were left behind, by the plate that did it', async () => {
+  const [first] = lab.plateIds;
+  const operator = await harness.signIn('juno-petrak');
+  await join(harness, lead, lab.labId, operator, 'operator');
+  const staleFor = async (agent: Agent) =>
+    (await answered(call(harness, agent, 'get', at('/home')), homeSchema)).waiting.filter(
+      ({ kind }) => kind === 'stale-versions',
+    );
+  const [item, ...others] = await staleFor(lead);
+  expect(others).toEqual([]);
+  expect(item).toMatchObject({
+    subject: { kind: 'plate', id: first, name: 'H-3', change: 'recalibrated' },
+    versionCount: 1,
+    voidCount: 0,
+    asDialled: { outCount: 2 },
+  });
+  expect(await staleFor(operator)).toEqual([]);
 });
 
 test('a calibration that changes nothing leaves nothing stale', async () => {

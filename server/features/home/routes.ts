@@ -4,6 +4,7 @@ import { noBody, nothing, type Route, route } from '../../http/route';
 import { asCabinetPlate, findPlatesInBeams, hasAnyPlate } from '../cabinet';
 import { listBenches } from '../benches';
 import { findLab } from '../labs';
+import { staleVersions } from '../reliance';
 import { lastRuns } from './last-made';
 import { draftsAhead } from './drafts-ahead';
 import { standings } from './next-settings';
@@ -28,9 +29,20 @@ export function homeRoutes(): readonly Route[] {
         const unfinished = runs.unfinished.map(({ id }) => id);
         const facts = { ...runs, standings: await standings(transaction, labId, unfinished) };
         const drafts = await draftsAhead(transaction, labId);
+        const stale = await staleVersions(transaction, labId);
         return {
           body: {
-            waiting: waitingFor({ lab: thing, member, plates, hasPlates, benches, ...facts, ...drafts, now }),
+            waiting: waitingFor({
+              lab: thing,
+              member,
+              plates,
+              hasPlates,
+              benches,
+              ...facts,
+              ...drafts,
+              stale,
+              now,
+            }),
             lastMade: runs.worst.map(({ made }) => made),
             cabinet: plates,
           },

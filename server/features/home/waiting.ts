@@ -1,8 +1,10 @@
 import { calibrationDue, WARNED_DAYS } from '../../../shared/calibration-due';
 import { can, type Member } from '../../../shared/permissions';
 import type { Bench, CabinetPlate, Lab, RunSummary, WaitingItem } from '../../../shared/schemas';
+import type { StaleVersion } from '../reliance';
 import type { DraftAhead } from './drafts-ahead';
 import type { WorstSetting } from './last-made';
+import { staleItems } from './stale-items';
 import type { Standing } from './next-settings';
 
 /** A retardance measured this far from the bench's light is another retardance. */
@@ -23,6 +25,7 @@ interface HomeFacts {
   readonly worst: readonly WorstSetting[];
   readonly drafts: readonly DraftAhead[];
   readonly protocolCount: number;
+  readonly stale: readonly StaleVersion[];
   readonly now: Date;
 }
 
@@ -35,6 +38,7 @@ export function waitingFor(facts: HomeFacts): WaitingItem[] {
   if (may('protocols.write'))
     items.push(...drafts.map((draft) => ({ kind: 'draft-ahead' as const, ...draft })));
   if (may('protocols.write') || may('runs.record')) items.push(...notWithin(worst));
+  if (may('protocols.write')) items.push(...staleItems(facts.stale));
   if (may('calibrations.record'))
     items.push(...notReady(facts), ...open(facts), ...elsewhere(benches), ...due(facts));
   if (!hasPlates && may('cabinet.write')) items.push({ kind: 'no-plates' });

@@ -15,7 +15,7 @@ const versionRow = z.object({
   total: z.number().nullable(),
   report: z.string().nullable(),
 });
-const staleRow = z.object({ protocol_name: z.string(), number: z.number(), report: z.string() });
+const staleRow = z.object({ bench_id: z.string(), bench_name: z.string(), report: z.string() });
 const draftRow = z.object({
   protocol_id: z.string(),
   name: z.string(),
@@ -84,14 +84,13 @@ export async function reliantDrafts(transaction: Transaction, labId: string, pla
 
 /** A newest version that something it relies on has left behind. */
 export interface StaleVersion {
-  readonly protocolName: string;
-  readonly number: number;
+  readonly bench: { readonly id: string; readonly name: string };
   readonly report: RelianceReport;
 }
 
 export async function staleVersions(transaction: Transaction, labId: string): Promise<StaleVersion[]> {
   const found: unknown = await transaction.raw(
-    `select v.protocol_name, v.number, r.report from reliance_reports r
+    `select v.bench_id, v.bench_name, r.report from reliance_reports r
       join versions v on v.lab_id = r.lab_id and v.id = r.version_id
       where r.lab_id = ? and r.stale and ${isNewest} order by v.protocol_name, v.id limit ${mostShown}`,
     [labId],
@@ -99,8 +98,8 @@ export async function staleVersions(transaction: Transaction, labId: string): Pr
   return z
     .array(staleRow)
     .parse(rowsOf.parse(found).rows)
-    .flatMap(({ protocol_name, number, report }) => {
+    .flatMap(({ bench_id, bench_name, report }) => {
       const read = readReport(report);
-      return read === null ? [] : [{ protocolName: protocol_name, number, report: read }];
+      return read === null ? [] : [{ bench: { id: bench_id, name: bench_name }, report: read }];
     });
 }

@@ -19,7 +19,11 @@ function keyOf(item: WaitingItem): string {
       return `${item.kind} ${item.protocolId}`;
     case 'calibration-due':
     case 'calibrated-elsewhere':
+    case 'plate-not-ready':
+    case 'open-question':
       return `${item.kind} ${item.plateId}`;
+    case 'stale-versions':
+      return `${item.kind} ${item.subject.id}`;
     default:
       return item.kind;
   }

@@ -58,6 +58,7 @@ export function WaitingSign(props: {
       );
     }
     case 'calibrated-elsewhere':
+    case 'stale-versions':
       return <VernierStale />;
     case 'no-plates':
     case 'no-bench':

@@ -5,6 +5,7 @@ import type { WaitingItem } from '../../../shared/schemas/home';
 import { Quantity } from '../../components/NumberText';
 import { Scientific } from '../../components/Scientific';
 import { daysBetween, formatDate, formatDays, formatMoment, formatWeekday } from '../../lib/format';
+import { staleWords } from './stale-words';
 import { type CalibrationAge, calibrationAge } from '../cabinet';
 import { runHref } from '../results';
 
@@ -197,6 +198,8 @@ export function waitingWords(item: WaitingItem, { labId, now, dueDays, may }: Wa
         ),
         way: { label: `Open ${item.plateName}`, to: `${base}/cabinet/${item.plateId}` },
       };
+    case 'stale-versions':
+      return staleWords(item, base);
     case 'no-plates':
       return {
         title: 'The cabinet is empty',

@@ -153,3 +153,43 @@ describe('one axis for all protocols', () => {
     expect(sharedAxis([{ dialledInfidelity: 0, toleranceInfidelity: 1e-3 }])).toEqual([0, -3]);
   });
 });
+
+describe('versions that a change left behind', () => {
+  const stale = {
+    kind: 'stale-versions',
+    subject: {
+      kind: 'plate',
+      id: '0190a000-0000-7000-8000-000000000001',
+      name: 'H-3',
+      change: 'recalibrated',
+      zeroShiftDeg: 0.06,
+      zeroShiftSigmaDeg: 0.04,
+    },
+    versionCount: 3,
+    asDialled: { outCount: 0, worstInfidelity: 7e-6, worstLabel: 'c+' },
+    voidCount: 0,
+  };
+
+  it('says what moved, and what the dials make now', () => {
+    const { title, reason, way } = words(stale);
+    expect(title).toBe('Three versions hold angles from before H-3’s new zero');
+    expect(reason).toMatch(
+      /^H-3’s zero moved by \+0\.06\(4\)°\. As dialled now the worst target, c\+, has 1 − F 7\.0×10−6.*; all stay within tolerance\.\s*$/,
+    );
+    expect(way).toEqual({
+      label: 'See what a re-solve gives',
+      to: `/labs/${labId}/cabinet/0190a000-0000-7000-8000-000000000001`,
+    });
+  });
+
+  it('calls dials void where a seat ended, and counts what is not within', () => {
+    const subject = { ...stale.subject, change: 'seat-ended', zeroShiftDeg: null, zeroShiftSigmaDeg: null };
+    const unseated = words({ ...stale, subject, versionCount: 1, asDialled: null, voidCount: 1 });
+    expect(unseated.title).toBe('One version holds angles from before H-3’s new seat');
+    expect(unseated.reason).toBe('Its dials are void until it is re-solved.');
+    const out = words({ ...stale, asDialled: { ...stale.asDialled, outCount: 2 }, voidCount: 1 });
+    expect(out.reason).toMatch(
+      /2 targets are not within tolerance\. The dials of one are void until re-solved\./,
+    );
+  });
+});

@@ -1,0 +1,1 @@
+export { ReliesOnPlate } from './ReliesOnPlate';
