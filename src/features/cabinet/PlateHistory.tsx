@@ -3,10 +3,10 @@ import type { CabinetPlate, PlateDetail } from '../../../shared/schemas/cabinet'
 import { TextLink } from '../../components/TextLink';
 import { formatDate } from '../../lib/format';
 import { useLab } from '../labs';
+import { ReliesOnPlate } from '../reliance';
 import { HistoryTable } from './history/HistoryTable';
 import { PlateHistoryPlot } from './history/PlateHistoryPlot';
 import { OpenQuestions } from './questions/OpenQuestions';
-import { ReliesOn } from './ReliesOn';
 import { VoidZero } from './seats/VoidZero';
 
 /** What was measured of a plate, what that leaves open, and what relies on it. */
@@ -68,7 +68,7 @@ export function PlateHistory(props: {
             <PlateHistoryPlot plate={plate} detail={detail} tableId={tableId} />
           )}
         </section>
-        <ReliesOn plate={plate} />
+        <ReliesOnPlate plate={plate} />
       </div>
     </>
   );

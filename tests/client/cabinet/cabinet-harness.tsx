@@ -67,6 +67,7 @@ function usual(served: Served, { path }: Call): unknown {
   if (where === '/cabinet') return served.counts;
   if (where === '/plates') return { items: served.plates, nextCursor: null };
   if (where === '/mounts') return { items: served.mounts, nextCursor: null };
+  if (where.endsWith('/reliance')) return { benches: [], drafts: [], versions: [] };
   if (where.startsWith('/mounts/')) return { mount: served.mounts[0], seats: [] };
   return served.detail;
 }
