@@ -6,7 +6,6 @@ import { EllipseGlyph } from '../../components/EllipseGlyph';
 import { Quantity, ScientificText } from '../../components/NumberText';
 import { Polariser } from '../../components/Polariser';
 import { TextLink } from '../../components/TextLink';
-import { GapText } from '../../lib/GapText';
 import { useLab } from '../labs';
 import { PlateSign } from './PlateSign';
 import { PlateSummary } from './PlateSummary';

@@ -4,7 +4,6 @@ import { type CabinetPlate, type PlateKind, plateKindSchema } from '../../../sha
 import { classNames } from '../../components/class-names';
 import { controlBox, Field } from '../../components/Field';
 import { SelectField } from '../../components/SelectField';
-import { GapText } from '../../lib/GapText';
 import { platePageQuery } from '../cabinet';
 import { useLab } from '../labs';
 import { PlateSummary } from './PlateSummary';
