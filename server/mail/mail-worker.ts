@@ -1,3 +1,5 @@
+import { once } from 'node:events';
+import { setTimeout as sleep } from 'node:timers/promises';
 import type { Knex } from 'knex';
 import { createTransport } from 'nodemailer';
 import type { Config } from '../config';
@@ -6,6 +8,8 @@ import { jobData, type Worker, worker } from '../jobs';
 import { findUnsent, type OutgoingMail, setSent } from './outbox';
 
 const waitMs = 5_000;
+/** A server that stops gives a mail under way this long, which is less than it gives itself. */
+const graceMs = 3_000;
 const loopback = /^smtps?:\/\/(?:[^@/]*@)?(?:localhost|127\.0\.0\.1|\[::1\])(?:[:/?]|$)/;
 
 /**
@@ -31,14 +35,28 @@ export function mailWorker({
     disableUrlAccess: true,
   });
   const kind = { name: 'mail', data: jobData.mail, idleMs: 1_000 } as const;
-  return worker(kind, async (key) => {
+  return worker(kind, async (key, signal) => {
     const within = <Result>(work: Parameters<typeof inTransaction<Result>>[2]) =>
       inTransaction(database, { userId: null, labId: key.labId }, work);
     const unsent = await within((transaction) => findUnsent(transaction, key));
     if (unsent === null) return;
-    await transport.sendMail(message(unsent, mail.from));
+    await unlessStopping(transport.sendMail(message(unsent, mail.from)), signal);
     await within((transaction) => setSent(transaction, key, new Date()));
   });
+}
+
+/** @throws Error when the signal has said stop and the work is not done soon after. */
+async function unlessStopping(work: Promise<unknown>, signal: AbortSignal): Promise<void> {
+  const over = new AbortController();
+  const untilOver = { signal: over.signal };
+  const stopping = once(signal, 'abort', untilOver)
+    .then(() => sleep(graceMs, undefined, untilOver))
+    .then(() => Promise.reject(new Error('the server stops while a mail is under way')));
+  try {
+    await Promise.race([work, stopping]);
+  } finally {
+    over.abort();
+  }
 }
 
 function message({ id, to, subject, text, queuedAt }: OutgoingMail, from: string) {

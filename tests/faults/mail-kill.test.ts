@@ -64,7 +64,7 @@ function startServer(smtpUrl: string): ChildProcess {
 
 async function queueOne(): Promise<void> {
   const [userId, labId] = [newId(), newId()];
-  await owners('users').insert({ id: userId, name: 'Adaeze Holm', login: 'aholm' });
+  await owners('users').insert({ id: userId, name: 'Adaeze Holm', login: userId });
   await owners('labs').insert({
     id: labId,
     name: 'A lab',
@@ -124,4 +124,20 @@ test('a server killed between the commit of a mail and its sending loses nothing
   expect(await stopped).toEqual([0, null]);
   expect(performance.now() - began).toBeLessThan(10_000);
   expect(await owners('mails').whereNull('sent_at').select('id')).toEqual([]);
+}, 240_000);
+
+test('a mail server that says nothing keeps no server from stopping in time, and its mail is tried again', async () => {
+  await queueOne();
+  const { port } = portOf.parse(silent.address());
+  const caught = once(silent, 'connection');
+  const server = startServer(`smtp://127.0.0.1:${port}`);
+  await caught;
+  const stopped = once(server, 'exit');
+  server.kill('SIGTERM');
+  expect(await stopped).toEqual([0, null]);
+  const left: unknown = await owners('pgboss.job')
+    .where({ name: 'mail' })
+    .whereNot({ state: 'completed' })
+    .first('state');
+  expect(left).toEqual({ state: 'retry' });
 }, 240_000);
