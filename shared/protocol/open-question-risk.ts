@@ -1,5 +1,5 @@
 import { evaluateDials, type TargetProblem } from '../optics/solve-target';
-import type { OpenQuestion } from '../schemas/calibrations';
+import type { Calibration, OpenQuestion } from '../schemas/calibrations';
 import type { VersionContent } from '../schemas/versions';
 import { frozenProblem } from './dialled';
 
@@ -16,31 +16,56 @@ export interface OpenQuestionRisk {
 /** A blind retardance is tried this many σ away to either side. */
 const BLIND_SIGMAS = 2;
 
+/** A row with the dials that are to be turned for it. */
+export interface DialledRow {
+  readonly label: string;
+  readonly problem: TargetProblem;
+  readonly dialsDeg: readonly number[];
+}
+
+/** What of a plate says which of its questions are open; in beam order, as the rows' problems have them. */
+export interface QuestionedPlate {
+  readonly name: string;
+  readonly calibration: Pick<Calibration, 'openQuestions' | 'retardanceSigmaDeg'>;
+}
+
 /**
- * The open questions that a version's result depends on: those whose other answer would take a target out of tolerance.
+ * The open questions that a result depends on: those whose other answer would take a row out of tolerance.
  * Fast or slow, and δ or 360° − δ, are physically one question (a slow axis at θ is a fast one at θ + 90°, and a plate
  * of 360° − δ is one of δ turned by 90°), so that one plate is named once for both.
  */
-export function openQuestionRisks(content: VersionContent): OpenQuestionRisk[] {
-  return content.bench.plates.flatMap((plate, index) => {
-    const question = asked(plate.calibration.openQuestions);
+export function risksOf(
+  rows: readonly DialledRow[],
+  plates: readonly QuestionedPlate[],
+  toleranceInfidelity: number,
+): OpenQuestionRisk[] {
+  return plates.flatMap(({ name, calibration }, index) => {
+    const question = asked(calibration.openQuestions);
     if (question === null) return [];
     const others =
       question === 'blind'
-        ? [-1, 1].map((side) => side * BLIND_SIGMAS * plate.calibration.retardanceSigmaDeg)
+        ? [-1, 1].map((side) => side * BLIND_SIGMAS * calibration.retardanceSigmaDeg)
         : [null];
-    const costs = content.targets.map((target, row) => {
-      const { dialsDeg = [] } = target.solutions[target.chosenSolution] ?? {};
-      const problem = frozenProblem(content, row);
+    const costs = rows.map(({ label, problem, dialsDeg }) => {
       const tried = others.map((shiftDeg) => evaluateDials(otherwise(problem, index, shiftDeg), dialsDeg));
-      return { label: target.label, infidelity: Math.max(...tried.map(({ infidelity }) => infidelity)) };
+      return { label, infidelity: Math.max(...tried.map(({ infidelity }) => infidelity)) };
     });
-    const lost = costs.filter(({ infidelity }) => infidelity > content.toleranceInfidelity);
+    const lost = costs.filter(({ infidelity }) => infidelity > toleranceInfidelity);
     const [first, ...rest] = lost;
     if (first === undefined) return [];
     const worst = rest.reduce((most, cost) => (cost.infidelity > most.infidelity ? cost : most), first);
-    return [{ plateName: plate.name, question, worst, lostCount: lost.length }];
+    return [{ plateName: name, question, worst, lostCount: lost.length }];
   });
+}
+
+/** The same of a version, with its chosen solutions. */
+export function openQuestionRisks(content: VersionContent): OpenQuestionRisk[] {
+  const rows = content.targets.map((target, row) => ({
+    label: target.label,
+    problem: frozenProblem(content, row),
+    dialsDeg: target.solutions[target.chosenSolution]?.dialsDeg ?? [],
+  }));
+  return risksOf(rows, content.bench.plates, content.toleranceInfidelity);
 }
 
 function asked(questions: readonly OpenQuestion[]): OpenQuestion | null {

@@ -15,13 +15,25 @@ function lostWords({ lostCount }: OpenQuestionRisk, count: number): string {
   return `${lostCount} of ${count} targets ${lostCount === 1 ? 'is' : 'are'}`;
 }
 
-/** List items: each open question of a plate that a version's result depends on, and what the other answer would cost. */
-export function OpenQuestionWarnings({ content }: { readonly content: VersionContent }) {
-  const risks = useMemo(() => openQuestionRisks(content), [content]);
+/** List items: each open question that a result depends on, and what the other answer would cost. */
+export function OpenQuestionRisks({
+  risks,
+  count,
+}: {
+  readonly risks: readonly OpenQuestionRisk[];
+  /** Of all rows. */
+  readonly count: number;
+}) {
   return risks.map((risk) => (
     <li key={risk.plateName} className="font-strong text-fault">
-      {left[risk.question](risk.plateName)} If it is the other way, {lostWords(risk, content.targets.length)}{' '}
-      out of tolerance: {risk.worst.label} at 1 − F <Scientific value={risk.worst.infidelity} />.
+      {left[risk.question](risk.plateName)} If it is the other way, {lostWords(risk, count)} out of tolerance:{' '}
+      {risk.worst.label} at 1 − F <Scientific value={risk.worst.infidelity} />.
     </li>
   ));
+}
+
+/** The same of a version as it is kept. */
+export function OpenQuestionWarnings({ content }: { readonly content: VersionContent }) {
+  const risks = useMemo(() => openQuestionRisks(content), [content]);
+  return <OpenQuestionRisks risks={risks} count={content.targets.length} />;
 }

@@ -1,3 +1,3 @@
-export { OpenQuestionWarnings } from './OpenQuestionWarnings';
+export { OpenQuestionRisks, OpenQuestionWarnings } from './OpenQuestionWarnings';
 export { ShortHash } from './ShortHash';
 export { labVersionsQuery, versionQuery } from './queries';

@@ -1,4 +1,5 @@
 import { startTransition, useEffect, useRef, useState } from 'react';
+import { notReadySentences } from '../../../../shared/bench-ready';
 import { sameConvention } from '../../../../shared/optics/convention';
 import type { Bench } from '../../../../shared/schemas/benches';
 import type { Protocol } from '../../../../shared/schemas/protocols';
@@ -11,10 +12,12 @@ import { addRows, chooseBench, newTargets, writeExpression } from '../draft-edit
 import { AddRowsDialog } from '../rows/AddRowsDialog';
 import { useDraft } from '../use-draft';
 import { useSolvedRows } from '../use-solved-rows';
+import { BenchWaits } from './BenchWaits';
 import { BudgetSection } from './BudgetSection';
 import { CalibratedElsewhere } from './CalibratedElsewhere';
 import { ConflictDialog } from './ConflictDialog';
 import { DesignerHead } from './DesignerHead';
+import { rowRisks } from './dialled-problem';
 import { shownSolutions, whatHoldsUp } from './row-view';
 import { SaveRows } from './SaveRows';
 import { SaveVersionDialog } from './SaveVersionDialog';
@@ -60,7 +63,10 @@ export function Designer({ protocol, benches }: DesignerProps) {
 
   const { content } = draft;
   const bench = benches.find(({ id }) => id === content.benchId);
-  const solved = useSolvedRows(content.targets, bench ?? null, lab.convention, content);
+  // A beam that lacks a plate is not solved for: half of it would make other light.
+  const waits = bench === undefined ? [] : notReadySentences(bench, 'preparation');
+  const solvable = bench === undefined || waits.length > 0 ? null : bench;
+  const solved = useSolvedRows(content.targets, solvable, lab.convention, content);
   const views = useRowViews(content.targets, solved.rows);
   // Turned by hand were other plates.
   const benchPlates = bench?.plates.map(({ id }) => id).join();
@@ -101,9 +107,11 @@ export function Designer({ protocol, benches }: DesignerProps) {
         mayWrite={mayWrite}
         maySave={may('versions.save')}
         holdUp={
-          solved.planFault === null
-            ? whatHoldsUp(content.targets, views)
-            : { text: solved.planFault, isFault: true }
+          waits[0] !== undefined
+            ? { text: `${bench?.name ?? 'The bench'} waits for a plate.`, isFault: true }
+            : solved.planFault === null
+              ? whatHoldsUp(content.targets, views)
+              : { text: solved.planFault, isFault: true }
         }
         edit={draft.edit}
         lookedAt={looked?.target.expression ?? null}
@@ -120,6 +128,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
           <TextLink to={`/labs/${lab.id}/bench`}>See the benches</TextLink>
         </BeamWrong>
       )}
+      {bench !== undefined && waits.length > 0 && <BenchWaits bench={bench} sentences={waits} />}
       {bench !== undefined && <CalibratedElsewhere bench={bench} looked={looked} />}
       {solved.benchFault !== null && (
         <BeamWrong title="The rows can’t be solved">{solved.benchFault}</BeamWrong>
@@ -228,6 +237,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
           revision={draft.revision}
           draftIsSaved={draft.saving.state === 'saved'}
           shown={shownSolutions(content.targets, views)}
+          risks={bench === undefined ? [] : rowRisks(bench, lab.convention, content, views)}
           onClose={() => setSaving(false)}
         />
       )}

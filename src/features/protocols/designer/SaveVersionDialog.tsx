@@ -1,6 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { useNavigate } from 'react-router-dom';
+import type { OpenQuestionRisk } from '../../../../shared/protocol/open-question-risk';
 import type { ShownSolution } from '../../../../shared/schemas/protocols';
 import { Button } from '../../../components/Button';
 import { Dialog } from '../../../components/Dialog';
@@ -8,6 +9,7 @@ import { ErrorNote } from '../../../components/ErrorNote';
 import { TextField } from '../../../components/TextField';
 import { ApiError } from '../../../lib/api';
 import { useIdempotencyKey } from '../../../lib/forms';
+import { OpenQuestionRisks } from '../../versions';
 import { saveVersion } from '../queries';
 
 interface SaveVersionDialogProps {
@@ -18,12 +20,14 @@ interface SaveVersionDialogProps {
   /** The draft's last keys are still on their way to the server. */
   readonly draftIsSaved: boolean;
   readonly shown: readonly ShownSolution[];
+  /** What of it hangs on a question that nobody has settled. */
+  readonly risks: readonly OpenQuestionRisk[];
   readonly onClose: () => void;
 }
 
 /** Freezes the draft. The server solves every row again and refuses what differs from what this page shows. */
 export function SaveVersionDialog(props: SaveVersionDialogProps) {
-  const { labId, protocolId, number, revision, draftIsSaved, shown, onClose } = props;
+  const { labId, protocolId, number, revision, draftIsSaved, shown, risks, onClose } = props;
   const [message, setMessage] = useState('');
   const navigate = useNavigate();
   const queryClient = useQueryClient();
@@ -72,6 +76,11 @@ export function SaveVersionDialog(props: SaveVersionDialogProps) {
         the plates with their calibrations, the convention, the tolerance, and every solution with its dials,
         under a hash that covers the version before it.
       </p>
+      {risks.length > 0 && (
+        <ul className="mt-3 list-none space-y-2">
+          <OpenQuestionRisks risks={risks} count={shown.length} />
+        </ul>
+      )}
       <form
         className="mt-4"
         onSubmit={(event) => {

@@ -17,9 +17,12 @@ import {
   rowGoal,
   type SolvingTask,
 } from '../../../../shared/protocol/solve-row';
+import { type OpenQuestionRisk, risksOf } from '../../../../shared/protocol/open-question-risk';
 import { dialScaleOf, targetPlates } from '../../../../shared/protocol/solving-plates';
 import type { Plate } from '../../../../shared/schemas/cabinet';
 import type { Bench } from '../../../../shared/schemas/benches';
+import type { DraftContent } from '../../../../shared/schemas/protocols';
+import type { RowView } from './row-view';
 
 interface Standing {
   readonly bench: Bench;
@@ -40,6 +43,33 @@ export function standingAt({
   const statesAfter = statesBehind(input, platesAtDials(plates, dialsDeg));
   const dialled = evaluateDials({ goal: rowGoal(reading, input), plates }, dialsDeg);
   return { ...dialled, statesAfter, output: statesAfter.at(-1) ?? input };
+}
+
+/** The open questions of the bench's plates that the rows shown depend on; none where the bench's own input can't be read. */
+export function rowRisks(
+  bench: Bench,
+  convention: Convention,
+  content: DraftContent,
+  views: readonly RowView[],
+): OpenQuestionRisk[] {
+  const read = benchProblem(bench, convention, content);
+  if (!read.ok) return [];
+  const rows = views.flatMap((view, place) =>
+    view.status !== 'solved' || view.solution.dialsDeg.length !== bench.plates.length
+      ? []
+      : [
+          {
+            label: content.targets[place]?.label ?? '',
+            problem: {
+              ...read.problem,
+              goal: rowGoal(view.reading, read.problem.input),
+              heldFastAxesDeg: null,
+            },
+            dialsDeg: view.solution.dialsDeg,
+          },
+        ],
+  );
+  return risksOf(rows, bench.plates, content.toleranceInfidelity);
 }
 
 /** The error budget's problem of some table angles of a bench; null where the bench's own input can't be read. */
