@@ -46,7 +46,7 @@ function decodeBody(body: string, encoding: string): string {
 }
 
 function decodeQuoted(text: string): string {
-  return text.replace(/=([0-9A-Fa-f]{2})/g, (_whole, hex: string) => String.fromCharCode(parseInt(hex, 16)));
+  return text.replace(/=([0-9A-F]{2})/gi, (_whole, hex: string) => String.fromCharCode(parseInt(hex, 16)));
 }
 
 /** `=?utf-8?Q?…?=` and `=?utf-8?B?…?=`; white space between two of them is theirs. */
