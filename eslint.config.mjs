@@ -24,6 +24,8 @@ export default defineConfig([
         { considerDefaultExhaustiveForUnions: true },
       ],
       '@typescript-eslint/no-confusing-void-expression': ['error', { ignoreArrowShorthand: true }],
+      // What a rest pattern names is left out of the rest: that is its use.
+      '@typescript-eslint/no-unused-vars': ['error', { ignoreRestSiblings: true }],
       'no-console': 'error',
       eqeqeq: 'error',
     },

@@ -9,7 +9,7 @@ import {
   type ScanAnswer,
   type ScanLight,
 } from '../../../shared/scan-calibration';
-import { describeFault } from '../../../shared/scan-file';
+import { describeFault, type ScanTable } from '../../../shared/scan-file';
 import {
   type CalibrationInput,
   type Lab,
@@ -96,7 +96,12 @@ async function earlierScan(
 ): Promise<LinearScanFit> {
   const path = 'light.beforeId';
   const found = await findCalibration(transaction, { labId: lab.id, plateId: plate.id, calibrationId });
-  if (found?.fit == null || found.calibration.fileId === null || found.seatId !== plate.seat.id) {
+  if (
+    found === null ||
+    found.fit === null ||
+    found.calibration.fileId === null ||
+    found.seatId !== plate.seat.id
+  ) {
     throw refused([
       { path, message: 'This is no scan of the present seat. Choose one, or take this scan by itself.' },
     ]);
@@ -148,6 +153,7 @@ export function calibrationOfScan(read: ReadScan, scan: RecordScan): FittedCalib
     measuredBefore: measuredBefore(before),
   });
   if (answer.kind !== 'fitted') throw unreadable(answer);
+  requireLines(answer.table, scan.leftOut);
   const problem = recordProblem(answer);
   if (problem !== null) throw refused([{ path: 'light', message: problem }]);
   const { values, found } = answer;
@@ -206,6 +212,22 @@ export function calibrationOfScan(read: ReadScan, scan: RecordScan): FittedCalib
     record: canonicalJson(record),
     signature: answer.table.signature,
   };
+}
+
+/** A record of lines left out is about lines that are there, each once. */
+function requireLines({ points }: ScanTable, leftOut: RecordScan['leftOut']): void {
+  const lines = new Set(points.map(({ line }) => line));
+  const faults = leftOut.flatMap(({ line }, place) =>
+    lines.delete(line)
+      ? []
+      : [
+          {
+            path: `leftOut.${place}.line`,
+            message: `Line ${line} is no row of this scan, or is left out twice. Look at the lines left out again.`,
+          },
+        ],
+  );
+  if (faults.length > 0) throw refused(faults);
 }
 
 function measuredBefore(before: SeatedCalibration | null): MeasuredBefore | null {

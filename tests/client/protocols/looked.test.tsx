@@ -7,14 +7,19 @@ import { benchProblem, solveRow } from '../../../shared/protocol/solve-row';
 import type { Bench } from '../../../shared/schemas/benches';
 import { viewOf } from '../../../src/features/protocols/designer/row-view';
 import { useLooked } from '../../../src/features/protocols/designer/use-looked';
-import { bench as anyBench, draft, idsFrom, target as anyTarget } from '../../support/plates';
-import { plateFixture } from '../cabinet/plate-fixture';
+import {
+  bench as anyBench,
+  draft,
+  idsFrom,
+  plate as anyPlate,
+  target as anyTarget,
+} from '../../support/plates';
 
 afterEach(cleanup);
 
 const id = idsFrom('0193a000');
 const plate = (last: number, retardanceDeg: number) =>
-  plateFixture({ id: id(last), name: `P-${last}`, calibration: { retardanceDeg } });
+  anyPlate({ id: id(last), name: `P-${last}`, calibration: { retardanceDeg } });
 const bench = (last: number, plates: Bench['plates']) =>
   anyBench({ id: id(last), name: `bench ${last}`, laserClass: '2', plates });
 
