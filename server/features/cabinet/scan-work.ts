@@ -96,12 +96,7 @@ async function earlierScan(
 ): Promise<LinearScanFit> {
   const path = 'light.beforeId';
   const found = await findCalibration(transaction, { labId: lab.id, plateId: plate.id, calibrationId });
-  if (
-    found === null ||
-    found.fit === null ||
-    found.calibration.fileId === null ||
-    found.seatId !== plate.seat.id
-  ) {
+  if (found?.seatId !== plate.seat.id || found.fit === null || found.calibration.fileId === null) {
     throw refused([
       { path, message: 'This is no scan of the present seat. Choose one, or take this scan by itself.' },
     ]);
