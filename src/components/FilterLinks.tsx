@@ -23,7 +23,7 @@ interface FilterLinksProps {
 export function FilterLinks({ label, links, currentId, className }: FilterLinksProps) {
   return (
     <nav aria-label={label} className={className}>
-      <ul className="-mx-2 flex flex-wrap">
+      <ul className="flex flex-wrap gap-x-5">
         {links.map(({ id, to, label: words, count, sign }) => {
           const current = id === currentId;
           return (
@@ -33,7 +33,7 @@ export function FilterLinks({ label, links, currentId, className }: FilterLinksP
                 preventScrollReset
                 aria-current={current ? 'true' : undefined}
                 className={classNames(
-                  'flex min-h-9 items-center gap-1.5 border-b-2 px-2 no-underline hover:bg-wash max-sm:min-h-11',
+                  'flex min-h-9 items-center gap-1.5 border-b-2 no-underline hover:bg-wash max-sm:min-h-11',
                   current ? 'border-beam font-strong text-ink' : 'border-transparent text-ink-2',
                 )}
               >

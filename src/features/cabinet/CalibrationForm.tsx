@@ -1,4 +1,5 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { type CalibrationInput, calibrationInputSchema } from '../../../shared/schemas/calibrations';
@@ -19,10 +20,10 @@ import { recordCalibration } from './queries';
 export function CalibrationForm(props: {
   readonly labId: string;
   readonly plate: CabinetPlate;
-  readonly now: Date;
   readonly onDone: () => void;
 }) {
-  const { labId, plate, now, onDone } = props;
+  const { labId, plate, onDone } = props;
+  const [opened] = useState(() => new Date());
   const queryClient = useQueryClient();
   const keyFor = useIdempotencyKey();
   const standing = plate.calibration;
@@ -31,7 +32,7 @@ export function CalibrationForm(props: {
     unknown,
     CalibrationInput
   >({
-    defaultValues: emptyCalibration(standing ?? { wavelengthNm: plate.designWavelengthNm }, now),
+    defaultValues: emptyCalibration(standing ?? { wavelengthNm: plate.designWavelengthNm }, opened),
     resolver: schemaResolver(calibrationInputSchema, (values: CalibrationValues) =>
       readCalibration(values, standing),
     ),
@@ -63,7 +64,7 @@ export function CalibrationForm(props: {
       <CalibrationFields
         field={(name) => ({ ...register(name), fault: formState.errors[name]?.message })}
         question={(name) => register(name)}
-        doubts={calibrationDoubts(typed, standing)}
+        doubts={calibrationDoubts(typed, standing, plate.seat?.seatedAt ?? null)}
       />
       {settled.length > 0 && (
         <p role="status">

@@ -79,7 +79,7 @@ export function NewPlateSeat({
                 fault: errors.calibration?.[name]?.message,
               })}
               question={(name) => register(`calibration.${name}`)}
-              doubts={calibrationDoubts(calibration, null)}
+              doubts={calibrationDoubts(calibration, null, null)}
             />
           ) : (
             <p className="text-ink-2">

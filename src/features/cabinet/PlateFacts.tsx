@@ -78,7 +78,7 @@ function Measured({ plate }: { readonly plate: CabinetPlate }) {
           </>
         )}
         {beside !== null && (
-          <span className={`text-s block ${far ? 'text-ink font-strong' : 'text-ink-2'}`}>
+          <span className={`text-s block ${far ? 'text-ink' : 'text-ink-2'}`}>
             {besideModelWords(beside)}
           </span>
         )}

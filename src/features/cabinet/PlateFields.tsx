@@ -48,12 +48,14 @@ export function PlateFields(props: {
         help="The diameter that light may pass. Empty where nobody knows it."
         {...field('clearApertureMm')}
       />
-      <NumberField
-        label="coated from, nm"
-        help="Empty where nobody knows its coating."
-        {...field('coatingFromNm')}
-      />
-      <NumberField label="coated to, nm" {...field('coatingToNm')} />
+      <div className="grid gap-4 sm:col-span-2 sm:grid-cols-2">
+        <NumberField
+          label="coated from, nm"
+          help="Empty where nobody knows its coating."
+          {...field('coatingFromNm')}
+        />
+        <NumberField label="coated to, nm" {...field('coatingToNm')} />
+      </div>
       <TextArea
         label="damage"
         help="What its maker says that it stands, or a burn that was seen."

@@ -24,19 +24,23 @@ export function PlateHistory(props: {
   const tableId = useId();
   const { calibration, seat } = plate;
   const oldest = detail.calibrations.at(-1);
+  const asks = calibration === null || calibration.openQuestions.length > 0;
   const inSeat = detail.calibrations.filter(({ seatId }) => seatId === seat?.id);
   return (
     <>
       <div className="space-y-6">
         {calibration === null ? (
-          <VoidZero {...{ plate, page, measures, seats }} hadZero={detail.calibrations.length > 0} />
+          <VoidZero {...{ plate, page, now, measures, seats }} hadZero={detail.calibrations.length > 0} />
         ) : (
           <OpenQuestions
             {...{ plate, calibration, page, measures }}
             sinceSeat={detail.seats.length > 1 && inSeat.length === 1}
           />
         )}
-        <section aria-labelledby={`${tableId}-head`}>
+        <section
+          aria-labelledby={`${tableId}-head`}
+          className={asks ? 'border-ink border-t-[1.5px] pt-3' : undefined}
+        >
           <div className="mb-2 flex flex-wrap items-baseline justify-between gap-x-5 gap-y-2">
             <h3 id={`${tableId}-head`} className="text-section">
               Seats and calibrations

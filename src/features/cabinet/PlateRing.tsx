@@ -30,7 +30,7 @@ export function PlateRing({ plate }: { readonly plate: CabinetPlate }) {
   const open = calibration.openQuestions.includes('axis');
   return (
     <figure className="flex flex-col items-center">
-      <div className="relative">
+      <div className="relative -mt-3 -mb-5">
         <RingDial
           radius={radius}
           kind={kind}

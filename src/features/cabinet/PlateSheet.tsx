@@ -29,9 +29,9 @@ export function PlateSheet({ plate, now }: { readonly plate: CabinetPlate; reado
   return (
     <article
       aria-label={plate.name}
-      className="grid grid-cols-1 gap-x-10 gap-y-8 pt-5 md:grid-cols-2 xl:grid-cols-[18.5rem_minmax(0,1fr)_28.5rem]"
+      className="grid grid-cols-1 gap-x-10 gap-y-8 pt-5 md:grid-cols-2 md:grid-rows-[auto_1fr] xl:grid-rows-1 xl:grid-cols-[18.5rem_minmax(0,1fr)_28.5rem]"
     >
-      <div>
+      <div className="md:max-xl:row-span-2">
         <PlateFacts
           plate={plate}
           seats={detail.data?.seats}
@@ -56,7 +56,7 @@ export function PlateSheet({ plate, now }: { readonly plate: CabinetPlate; reado
           <h3 id="record-calibration" className="text-section mb-3">
             Record a calibration of {plate.name}
           </h3>
-          <CalibrationForm labId={lab.id} plate={plate} now={now} onDone={leave} />
+          <CalibrationForm labId={lab.id} plate={plate} onDone={leave} />
         </section>
       ) : detail.data === undefined ? (
         <QueryState query={detail} what={`the history of ${plate.name}`} />

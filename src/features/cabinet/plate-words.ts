@@ -100,9 +100,9 @@ export function ordinal(position: number): string {
   return words[position - 1] ?? `${position}${ending}`;
 }
 
-/** "signal arm waits", "signal arm and idler arm wait": benches that cannot be used without this plate. */
+/** "The bench signal arm waits": those that cannot be used without this plate; null where there are none. */
 export function waitingBenches(benches: CabinetPlate['benches']): string | null {
   if (benches.length === 0) return null;
   const names = benches.map(({ name }) => name).join(' and ');
-  return `${names} ${benches.length === 1 ? 'waits' : 'wait'}`;
+  return benches.length === 1 ? `The bench ${names} waits` : `The benches ${names} wait`;
 }

@@ -1,6 +1,7 @@
 import { DarkRoomParts } from './DarkRoomParts';
 import { FidelityParts } from './FidelityParts';
 import { FormParts } from './FormParts';
+import { ListParts } from './ListParts';
 import { MoreParts } from './MoreParts';
 import { MountParts } from './MountParts';
 import { SignParts } from './SignParts';
@@ -29,6 +30,7 @@ export default function PartsPage() {
         <DarkRoomParts />
       </div>
       <MoreParts />
+      <ListParts />
       <SphereParts />
     </div>
   );

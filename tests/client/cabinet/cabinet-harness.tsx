@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { render, screen } from '@testing-library/react';
+import { configure, render, screen } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { MemoryRouter, Route, Routes, useLocation } from 'react-router-dom';
 import { vi } from 'vitest';
@@ -10,6 +10,9 @@ import { Component as CabinetPage } from '../../../src/features/cabinet/CabinetP
 import { Component as MountPage } from '../../../src/features/cabinet/mounts/MountPage';
 import { Component as MountsPage } from '../../../src/features/cabinet/mounts/MountsPage';
 import { LabContext } from '../../../src/features/labs';
+
+// A whole page is drawn: on a busy machine that takes longer than the usual second.
+configure({ asyncUtilTimeout: 5000 });
 
 export const lab = {
   id: '0190a000-0000-7000-8000-0000000000aa',

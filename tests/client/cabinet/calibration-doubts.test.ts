@@ -7,7 +7,7 @@ import { mountFixture, plateFixture } from './plate-fixture';
 // 88.9(4)° at 810 nm.
 const last = plateFixture().calibration;
 const retardance = (typed: Parameters<typeof calibrationDoubts>[0]) =>
-  calibrationDoubts({ wavelengthNm: '810', ...typed }, last).retardance;
+  calibrationDoubts({ wavelengthNm: '810', ...typed }, last, null).retardance;
 
 describe('what a person should look at again before a calibration stands', () => {
   it('is a retardance that is far from the last one, by σ and by degrees', () => {
@@ -27,19 +27,30 @@ describe('what a person should look at again before a calibration stands', () =>
   });
 
   it('is a σ of 0, and nothing while a field is empty or a plate has no calibration yet', () => {
-    expect(calibrationDoubts({ retardanceSigmaDeg: '0' }, null)).toEqual({
+    expect(calibrationDoubts({ retardanceSigmaDeg: '0' }, null, null)).toEqual({
+      measuredAt: null,
       retardance: null,
       retardanceSigma: 'With a σ of 0 the retardance counts as exact: nothing of it is in the budget.',
       offsetSigma: null,
     });
-    expect(calibrationDoubts({ offsetSigmaDeg: '0.0' }, last).offsetSigma).toMatch(
+    expect(calibrationDoubts({ offsetSigmaDeg: '0.0' }, last, null).offsetSigma).toMatch(
       /^With a σ of 0 the zero/u,
     );
-    expect(Object.values(calibrationDoubts({ retardanceDeg: '', retardanceSigmaDeg: '' }, last))).toEqual([
-      null,
-      null,
-      null,
-    ]);
+    expect(
+      Object.values(calibrationDoubts({ retardanceDeg: '', retardanceSigmaDeg: '' }, last, null)),
+    ).toEqual([null, null, null, null]);
+  });
+});
+
+describe('a calibration that was measured before the plate was seated', () => {
+  // In the reader's own time zone, as the field has it.
+  const seatedAt = new Date(2026, 3, 30, 10, 20, 40).toISOString();
+  const doubt = (measuredAt: string) => calibrationDoubts({ measuredAt }, null, seatedAt).measuredAt;
+
+  it('is doubted, since a zero of an earlier seat does not hold', () => {
+    expect(doubt('2026-04-30T10:19')).toMatch(/^This is before it was seated/);
+    expect(doubt('2026-04-30T10:20')).toBeNull();
+    expect(doubt('')).toBeNull();
   });
 });
 

@@ -32,8 +32,12 @@ export function HistoryTable(props: {
         <thead>
           <tr>
             <HeadCell>measured</HeadCell>
-            <HeadCell numeric>retardance(σ), °</HeadCell>
-            <HeadCell numeric>zero(σ), °</HeadCell>
+            <HeadCell numeric className="whitespace-nowrap">
+              retardance(σ), °
+            </HeadCell>
+            <HeadCell numeric className="whitespace-nowrap">
+              zero(σ), °
+            </HeadCell>
             <HeadCell numeric className="whitespace-nowrap">
               at, nm
             </HeadCell>
@@ -93,7 +97,7 @@ function CalibrationRow(props: {
   const cell = `align-top! py-2 ${ended ? 'text-ink-3' : ''}`;
   return (
     <DataRow>
-      <RowHead className="py-2">
+      <RowHead className="min-w-44 py-2">
         {formatMoment(new Date(calibration.measuredAt), now)}
         <span className="text-s text-ink-2 font-words block">
           {calibration.method}; {calibration.recordedBy}

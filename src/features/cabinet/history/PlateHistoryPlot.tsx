@@ -38,6 +38,7 @@ export function PlateHistoryPlot(props: {
         {points.predicted !== null && (
           <Prediction
             points={points.predicted}
+            obstacles={[...points.retardances, ...points.moves].map(({ at }) => at)}
             frame={frame}
             label={`dispersion of ${materialNames[plate.material ?? ''] ?? ''}, ${newest?.value.toFixed(1) ?? ''}`}
           />

@@ -1,5 +1,6 @@
+import { formatShortDate } from '../../../lib/format';
 import { type HistoryFrame, interval95 } from './history-frame';
-import { monthMarks, type PlotScale } from './plot-scale';
+import { monthMarks, type PlotScale, type TimeMark } from './plot-scale';
 import type { HistoryPoint, HistoryPoints } from './seat-history';
 
 /** The grid of one part with its numbers. */
@@ -67,8 +68,10 @@ export function Prediction(props: {
   readonly points: readonly { readonly at: number; readonly value: number }[];
   readonly frame: HistoryFrame;
   readonly label: string;
+  /** Moments at which something stands that the label is to keep clear of. */
+  readonly obstacles: readonly number[];
 }) {
-  const { points, frame, label } = props;
+  const { points, frame, label, obstacles } = props;
   const { retardance, time, left, right, width } = frame;
   const path = points
     .map(({ at, value }, index) => {
@@ -79,14 +82,16 @@ export function Prediction(props: {
       return `${index === 0 ? 'M' : 'L'}${start.toFixed(1)} ${retardance.place(value).toFixed(1)}H${end.toFixed(1)}`;
     })
     .join('');
-  const [first] = points;
   // Over the line where there is room, under it where the line lies at the top.
-  const y = retardance.place(first?.value ?? 0);
+  const y = retardance.place(points.at(-1)?.value ?? 0);
   return (
     <>
       <path d={path} fill="none" className="stroke-ink" strokeWidth={1.2} strokeDasharray="5 3.5" />
       <text
-        x={left + 6}
+        x={freeX(
+          obstacles.map((at) => time(at)),
+          frame,
+        )}
         y={y - 6 < frame.top + 10 ? y + 15 : y - 6}
         className="fill-ink-2 text-s"
         stroke="var(--paper)"
@@ -100,12 +105,32 @@ export function Prediction(props: {
   );
 }
 
+/** About what a label takes, in px. */
+const labelWidth = 190;
+
+/** Where a label begins so that it lies between two obstacles: the first gap that is wide enough, or else the widest. */
+function freeX(obstacles: readonly number[], { left, right, width }: HistoryFrame): number {
+  const edges = [left, ...obstacles.toSorted((a, b) => a - b), width - right];
+  const gaps = edges.slice(1).map((end, index) => ({ start: edges[index] ?? left, end }));
+  const size = ({ start, end }: (typeof gaps)[number]) => end - start;
+  const roomy = gaps.find((gap) => size(gap) >= labelWidth + 16);
+  const widest = gaps.reduce((best, gap) => (size(gap) > size(best) ? gap : best));
+  return Math.min((roomy ?? widest).start + 8, width - right - labelWidth);
+}
+
+/** Months; between two firsts of a month, the day in the middle. */
+function timeMarks(from: number, to: number, count: number): readonly TimeMark[] {
+  const months = monthMarks(from, to, count);
+  const middle = (from + to) / 2;
+  return months.length > 0 ? months : [{ at: middle, label: formatShortDate(new Date(middle)) }];
+}
+
 export function TimeAxis({ frame }: { readonly frame: HistoryFrame }) {
   const { from, to, foot, left, right, width } = frame;
   return (
     <>
       <line x1={left} x2={width - right} y1={foot} y2={foot} className="stroke-ink" />
-      {monthMarks(from, to, Math.max(2, Math.floor(width / 76))).map(({ at, label }) => (
+      {timeMarks(from, to, Math.max(2, Math.floor(width / 76))).map(({ at, label }) => (
         <g key={at}>
           <line x1={frame.time(at)} x2={frame.time(at)} y1={foot} y2={foot + 6} className="stroke-ink" />
           <text x={frame.time(at)} y={foot + 22} textAnchor="middle" className="fill-ink-2 text-xs font-mono">

@@ -34,7 +34,10 @@ export interface HistoryPoint {
 /** What of a plate's history a plot draws, oldest first. Angles in degrees, moments in milliseconds. */
 export interface HistoryPoints {
   readonly retardances: readonly HistoryPoint[];
-  /** Each zero as its change since the first of its seat, the short way round the dial. */
+  /**
+   * Each zero as its change since the first of its seat, the short way round the dial; by quarter turns where one of the
+   * two left fast and slow open, since either may then be the other axis's.
+   */
   readonly zeros: readonly HistoryPoint[];
   /** What the material's dispersion gives where each was measured; null where there is no model. */
   readonly predicted: readonly { readonly at: number; readonly value: number }[] | null;
@@ -47,9 +50,9 @@ export function historyPoints(
   detail: Pick<PlateDetail, 'seats' | 'calibrations'>,
 ): HistoryPoints {
   const oldestFirst = detail.calibrations.toReversed();
-  const firstOf = new Map<string, number>();
-  for (const { seatId, offsetDeg } of oldestFirst) {
-    if (!firstOf.has(seatId)) firstOf.set(seatId, offsetDeg);
+  const firstOf = new Map<string, SeatedCalibration>();
+  for (const calibration of oldestFirst) {
+    if (!firstOf.has(calibration.seatId)) firstOf.set(calibration.seatId, calibration);
   }
   const at = ({ measuredAt }: SeatedCalibration) => Date.parse(measuredAt);
   const predicted = oldestFirst.flatMap((calibration) => {
@@ -64,12 +67,17 @@ export function historyPoints(
     })),
     zeros: oldestFirst.map((calibration) => ({
       at: at(calibration),
-      value: wrapSigned(calibration.offsetDeg - (firstOf.get(calibration.seatId) ?? 0), 360),
+      value: changeSince(firstOf.get(calibration.seatId) ?? calibration, calibration),
       sigma: calibration.offsetSigmaDeg,
     })),
     predicted: predicted.length === 0 ? null : predicted,
     moves: movesOf(detail.seats),
   };
+}
+
+function changeSince(first: SeatedCalibration, calibration: SeatedCalibration): number {
+  const axisOpen = [first, calibration].some(({ openQuestions }) => openQuestions.includes('axis'));
+  return wrapSigned(calibration.offsetDeg - first.offsetDeg, axisOpen ? 90 : 360);
 }
 
 function movesOf(seats: readonly Seat[]): HistoryPoints['moves'] {

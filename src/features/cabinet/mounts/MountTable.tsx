@@ -76,7 +76,7 @@ export function MountTable({ cabinet, base }: { readonly cabinet: string; readon
                 <SortHead {...sorted('repeatability')} numeric>
                   repeats within (σ), °
                 </SortHead>
-                <HeadCell>motion</HeadCell>
+                <HeadCell className="pl-6!">motion</HeadCell>
                 <HeadCell>note</HeadCell>
               </tr>
             </TableHead>
@@ -122,7 +122,7 @@ function MountRow(props: { readonly mount: CabinetMount; readonly cabinet: strin
       <DataCell>{driveNames[mount.drive]}</DataCell>
       <DataCell numeric>{mount.resolutionDeg}</DataCell>
       <DataCell numeric>{mount.repeatabilityDeg}</DataCell>
-      <DataCell>{motionSummary(mount)}</DataCell>
+      <DataCell className="pl-6!">{motionSummary(mount)}</DataCell>
       <DataCell className="max-w-80 truncate text-ink-2">{mount.note === '' ? '—' : mount.note}</DataCell>
     </DataRow>
   );

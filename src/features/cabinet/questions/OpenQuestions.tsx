@@ -1,7 +1,7 @@
 import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import type { Calibration, OpenQuestion } from '../../../../shared/schemas/calibrations';
 import { ButtonLink } from '../../../components/Button';
-import { RingDial } from '../../../components/RingDial';
+import { UnsettledSign } from '../../../components/SmallSigns';
 import { TextLink } from '../../../components/TextLink';
 import { openQuestionWords } from './question-words';
 
@@ -19,17 +19,13 @@ export function OpenQuestions(props: {
     const { head, meaning } = openQuestionWords(plate, calibration, question, sinceSeat);
     const headId = `${plate.id}-${question}`;
     return (
-      <section key={question} aria-labelledby={headId} className="border-ink border-t-[1.5px] pt-4">
+      <section
+        key={question}
+        aria-labelledby={headId}
+        className={index > 0 ? 'border-ink border-t-[1.5px] pt-4' : undefined}
+      >
         <div className="flex items-start gap-5">
-          <RingDial
-            radius={22}
-            kind={plate.kind}
-            scale={{ offsetDeg: 0, direction: 1 }}
-            readingDeg={0}
-            state="unsettled"
-            numbersEveryDeg={null}
-            className="shrink-0"
-          />
+          <UnsettledSign className="my-2 h-12 w-18" />
           <div className="min-w-0">
             <h3 id={headId} className="text-section">
               {head}

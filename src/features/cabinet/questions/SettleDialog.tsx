@@ -45,7 +45,7 @@ export function SettleDialog(props: {
     onSuccess: () => {
       onClose();
       announce(`Settled: ${plate.name} has a new calibration.`);
-      return queryClient.invalidateQueries({ queryKey: ['labs', labId] });
+      void queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
   });
   const press = () => {
@@ -53,6 +53,7 @@ export function SettleDialog(props: {
     if (reading === null || method.trim() === '') return;
     settling.mutate(settledCalibration(calibration, { question, reading, method, note }));
   };
+  if (settling.isSuccess) return null;
   return (
     <Dialog
       open
@@ -125,7 +126,7 @@ function Readings(props: {
         {choices.map(({ value, degrees, words }) => (
           <label
             key={value}
-            className="border-rule hover:bg-wash has-checked:border-ink has-checked:bg-glass has-focus-visible:outline-beam flex flex-1 cursor-pointer items-center gap-3 border p-3 has-focus-visible:outline-3 has-focus-visible:outline-offset-2"
+            className="border-rule hover:bg-wash has-checked:border-ink has-checked:bg-glass has-focus-visible:outline-beam flex flex-1 cursor-pointer items-center gap-2 border p-3 has-focus-visible:outline-3 has-focus-visible:outline-offset-2"
           >
             <input
               type="radio"
@@ -137,7 +138,7 @@ function Readings(props: {
             />
             {question === 'axis' && plate.seat !== null && (
               <RingDial
-                radius={30}
+                radius={26}
                 kind={plate.kind}
                 scale={{ offsetDeg: degrees, direction: plate.seat.mount.direction }}
                 readingDeg={keptDeg}
@@ -146,7 +147,9 @@ function Readings(props: {
               />
             )}
             <span>
-              <span className="font-strong block font-mono">{formatUncertain(degrees, sigmaDeg)}°</span>
+              <span className="font-strong block font-mono whitespace-nowrap">
+                {formatUncertain(degrees, sigmaDeg)}°
+              </span>
               <span className="text-s text-ink-2">{words}</span>
             </span>
           </label>

@@ -68,10 +68,9 @@ export function SeatDialog(props: {
       return seatPlate(labId, plate, { mountId, why });
     },
     onSuccess: () => {
-      // Closed first: what the page then fetches is another question than the one that was asked.
       onClose();
       announce(words.done);
-      return queryClient.invalidateQueries({ queryKey: ['labs', labId] });
+      void queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
     onError: async (error) => {
       if (showServerFaults(error, setError, (path) => (path === 'name' ? path : null))) moving.reset();
@@ -88,6 +87,8 @@ export function SeatDialog(props: {
     else if (place === 'new') void handleSubmit((mount) => moving.mutate({ kind: 'new', mount }))();
     else if (chosen !== null) moving.mutate({ kind: 'id', id: chosen.id });
   };
+  // Done: for the plate as it is now this would be another question.
+  if (moving.isSuccess) return null;
   return (
     <Dialog
       open

@@ -1,6 +1,7 @@
 import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import { ButtonLink } from '../../../components/Button';
 import { NewSeatSign } from '../../../components/SmallSigns';
+import { formatMoment } from '../../../lib/format';
 import { waitingBenches } from '../plate-words';
 
 /** A plate without a zero: what that means, and the two ways on. */
@@ -10,13 +11,14 @@ export function VoidZero(props: {
   readonly page: string;
   /** It sat somewhere before, so that an older zero is known and void. */
   readonly hadZero: boolean;
+  readonly now: Date;
   readonly measures: boolean;
   readonly seats: boolean;
 }) {
-  const { plate, page, hadZero, measures, seats } = props;
+  const { plate, page, hadZero, now, measures, seats } = props;
   const { name, seat } = plate;
   const wait = waitingBenches(plate.benches);
-  const place = seat === null ? 'no mount holds it' : `it is seated in ${seat.mount.name}`;
+  const since = seat === null ? '' : formatMoment(new Date(seat.seatedAt), now);
   return (
     <section aria-labelledby={`void-${plate.id}`} className="flex gap-5">
       <NewSeatSign className="mt-1 scale-150" />
@@ -29,9 +31,10 @@ export function VoidZero(props: {
               : `${name} has no zero yet`}
         </h3>
         <p className="mt-1">
+          {seat === null ? 'No mount holds it. ' : `${name} sits in ${seat.mount.name} since ${since}. `}
           {hadZero
-            ? `The old zero ended with its seat, and ${place}. None of the old dials holds.`
-            : `Nothing was measured of it, and ${place}. No angle of it is known.`}
+            ? 'The zero of its last seat ended with that seat, and no dial that was solved with it holds.'
+            : 'Nothing was measured of it there, so no angle of it is known.'}
           {wait !== null && ` ${wait} for it.`}
         </p>
         {(seat === null ? seats : measures) && (

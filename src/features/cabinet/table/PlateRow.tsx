@@ -40,7 +40,7 @@ export function PlateRow(props: {
         <TextLink to={`${base}/${plate.id}`}>{plate.name}</TextLink>
       </RowHead>
       <DataCell className="whitespace-nowrap">
-        <span className="inline-flex items-center gap-1.5">
+        <span className="flex items-center gap-1.5">
           <HealthSign health={health} />
           <span className={health === 'overdue' ? 'text-fault font-strong' : ''}>{healthWords[health]}</span>
         </span>
@@ -57,7 +57,7 @@ export function PlateRow(props: {
       <DataCell numeric>
         <OnPoint text={zero(plate)} widest={widest.zero} />
       </DataCell>
-      <DataCell>
+      <DataCell className="pl-6!">
         {seat === null ? (
           missingSign
         ) : (

@@ -53,7 +53,7 @@ export function PlateTable({ base, now }: { readonly base: string; readonly now:
                 <HeadCell numeric>retardance(σ), °</HeadCell>
                 <HeadCell numeric>at, nm</HeadCell>
                 <HeadCell numeric>zero(σ), °</HeadCell>
-                <HeadCell>mount</HeadCell>
+                <HeadCell className="pl-6!">mount</HeadCell>
                 <HeadCell>stands at</HeadCell>
               </tr>
             </TableHead>
