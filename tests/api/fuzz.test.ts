@@ -3,7 +3,15 @@ import { afterAll, beforeAll, expect, test } from 'vitest';
 import { call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
 import { newMount } from '../support/plates';
-import { benchBody, calibrationBody, makeLab, plateBody, target, type TestLab } from './support/lab';
+import {
+  benchBody,
+  calibrationBody,
+  makeLab,
+  plateBody,
+  scanBody,
+  target,
+  type TestLab,
+} from './support/lab';
 
 let harness: Harness;
 let lead: Agent;
@@ -75,6 +83,12 @@ function collect(value: unknown, places: { holder: Record<string, unknown>; key:
   }
 }
 
+const knownLightBody = (fileId: string) => ({
+  ...scanBody(fileId),
+  light: { kind: 'known', inputExpression: 'L', analyserDeg: 0, extinction: null, beforeId: null },
+  leftOut: [{ line: 2, why: 'wild' }],
+});
+
 test('three thousand mutated requests to every writing address: each a clear answer, none a failure', async () => {
   const at = `/labs/${lab.labId}`;
   const draft = {
@@ -103,6 +117,8 @@ test('three thousand mutated requests to every writing address: each a clear ans
     ['post', `${at}/plates`, plateBody('F-1')],
     ['put', `${at}/plates/${lab.sparePlateId}`, facts],
     ['post', `${at}/plates/${lab.sparePlateId}/calibrations`, calibrationBody()],
+    ['post', `${at}/plates/${lab.sparePlateId}/scans`, scanBody(lab.fileId)],
+    ['post', `${at}/plates/${lab.sparePlateId}/scans`, knownLightBody(lab.fileId)],
     ['put', `${at}/plates/${lab.sparePlateId}/seat`, { mountId: lab.spareMountId, why: 'cleaned' }],
     ['post', `${at}/plates/${lab.sparePlateId}/take-out`, { why: 'cleaned' }],
     ['post', `${at}/plates/${lab.sparePlateId}/files`, { fileId: lab.fileId, kind: 'data-sheet' }],

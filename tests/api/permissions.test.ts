@@ -7,7 +7,16 @@ import { allRoutes } from '../../server/routes';
 import { call, upload } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
 import { newMount } from '../support/plates';
-import { benchBody, calibrationBody, join, makeLab, plateBody, target, type TestLab } from './support/lab';
+import {
+  benchBody,
+  calibrationBody,
+  join,
+  makeLab,
+  plateBody,
+  scanBody,
+  target,
+  type TestLab,
+} from './support/lab';
 
 /** Who may: written here by hand from product.md's table of roles, not from the code that is tested. */
 type Least = 'anyone' | 'signed-in' | 'guest' | 'operator' | 'designer' | 'lead';
@@ -72,6 +81,16 @@ const table: Readonly<Record<string, Row>> = {
   'POST /labs/:labId/plates/:plateId/calibrations': {
     least: 'operator',
     body: () => calibrationBody(),
+    ids: plateId,
+  },
+  'GET /labs/:labId/plates/:plateId/calibrations/:calibrationId': {
+    least: 'guest',
+    ids: (lab) => ({ ...plateId(lab), calibrationId: lab.calibrationId }),
+  },
+  'GET /labs/:labId/scan-columns': { least: 'guest' },
+  'POST /labs/:labId/plates/:plateId/scans': {
+    least: 'operator',
+    body: (lab) => scanBody(lab.fileId),
     ids: plateId,
   },
   'GET /labs/:labId/plates/:plateId/reliance': { least: 'guest', ids: plateId },

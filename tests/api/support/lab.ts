@@ -14,6 +14,7 @@ import {
   labSchema,
   type Protocol,
   protocolSchema,
+  type RecordScan,
   runSchema,
   type ShownSolution,
   type VersionSummary,
@@ -60,6 +61,28 @@ export const quarterBody = (name: string): CreatePlate =>
 export const quarterCalibration = (change: Partial<CalibrationInput> = {}): CalibrationInput =>
   calibrationBody({ ...quarter, ...change });
 
+/** A scan as the page records it; of which file and with which numbers is the lab's and the fit's. */
+export function scanBody(fileId: string): RecordScan {
+  return {
+    fileId,
+    columns: {
+      dial: { column: 0, unit: null },
+      crossed: { column: 1, unit: null },
+      parallel: null,
+      crossedSigma: null,
+      parallelSigma: null,
+    },
+    light: { kind: 'linear', extinction: null, power: null },
+    leftOut: [],
+    wavelengthNm: 810,
+    temperatureC: null,
+    measuredAt,
+    note: '',
+    settlesId: null,
+    shown: { offsetDeg: 12.4, retardanceDeg: null },
+  };
+}
+
 export function benchBody(plateIds: readonly string[], name = 'signal arm') {
   return {
     name,
@@ -80,6 +103,8 @@ export interface TestLab {
   readonly labId: string;
   readonly plateIds: readonly [string, string];
   readonly sparePlateId: string;
+  /** Of the spare plate, written by hand. */
+  readonly calibrationId: string;
   /** Empty. */
   readonly spareMountId: string;
   /** A text that the first plate has as its data sheet. */
@@ -136,6 +161,7 @@ export async function makeLab(harness: Us, lead: Agent, name: string): Promise<T
     labId,
     plateIds: [first.id, second.id],
     sparePlateId: spare.id,
+    calibrationId: spare.calibration?.id ?? '',
     spareMountId: spareMount.id,
     fileId: file.id,
     benchId: bench.id,
