@@ -69,6 +69,7 @@ const labPages: RouteObject[] = [
   { path: 'cabinet/mounts', lazy: () => import('../features/cabinet/mounts/MountsPage') },
   { path: 'cabinet/mounts/:mountId', lazy: () => import('../features/cabinet/mounts/MountPage') },
   { path: 'cabinet/:plateId', lazy: () => import('../features/cabinet/CabinetPage') },
+  { path: 'cabinet/:plateId/scan', lazy: () => import('../features/scan/ScanPage') },
   { path: 'lab', lazy: () => import('../features/labs/LabPage') },
 ];
 

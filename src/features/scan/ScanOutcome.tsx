@@ -1,0 +1,186 @@
+import type { ReactNode } from 'react';
+import { describeFault } from '../../../shared/scan-file';
+import { recordProblem } from '../../../shared/scan-calibration';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
+import { BeamEmpty, BeamWorking } from '../../components/BeamState';
+import { Button } from '../../components/Button';
+import { ErrorNote } from '../../components/ErrorNote';
+import { TextButton } from '../../components/TextLink';
+import { FormProblem } from '../../lib/forms';
+import { LeftOutLines } from './LeftOutLines';
+import { PointsTable } from './PointsTable';
+import { reopenedBy } from './record-rules';
+import { ScanPlot } from './ScanPlot';
+import { ScanResults } from './ScanResults';
+import type { NewScanState } from './use-new-scan';
+
+/** What came of the file: its faults, what has to be said first, or the fit with its plot. */
+export function ScanOutcome({
+  state,
+  plate,
+}: {
+  readonly state: NewScanState;
+  readonly plate: CabinetPlate;
+}) {
+  const { file, work, scan } = state;
+  if (file === null) {
+    return (
+      <BeamEmpty title="No scan yet" className="max-w-md">
+        Choose the file that the measurement wrote. It stays on this page until the calibration is recorded.
+      </BeamEmpty>
+    );
+  }
+  return (
+    <div aria-busy={work.state === 'working'}>
+      {work.state === 'working' && (
+        <BeamWorking doing={workWords(state)} className="mb-4 max-w-md">
+          <TextButton onClick={work.stop}>Stop</TextButton>
+        </BeamWorking>
+      )}
+      {work.state === 'stopped' && (
+        <p className="mb-4">
+          The fit was stopped. <TextButton onClick={work.again}>Fit again</TextButton>
+        </p>
+      )}
+      <Refused state={state} />
+      {scan !== null && state.columnProblem === null && (
+        <>
+          <ScanPlot scan={scan} plateName={plate.name} />
+          <PointsTable scan={scan} />
+          <LeftOutLines scan={scan} leftOut={state.leftOut} onChange={state.setLeftOut} />
+          <div className="mt-6">
+            <ScanResults scan={scan} plate={plate} before={plate.calibration} />
+          </div>
+        </>
+      )}
+      <RecordPart state={state} plate={plate} />
+    </div>
+  );
+}
+
+function workWords({ table }: NewScanState): string {
+  return table === null ? 'Reading the file' : `Fitting ${table.points.length} rows`;
+}
+
+/** Why there is no fit, and what to do. */
+function Refused({ state }: { readonly state: NewScanState }) {
+  const { reply, columnProblem } = state;
+  if (columnProblem !== null) return <Note title="The columns are not all told">{columnProblem}</Note>;
+  switch (reply?.kind) {
+    case 'faults': {
+      const { faults, moreFaults } = reply;
+      return (
+        <Note
+          title={
+            faults.length + moreFaults === 1
+              ? 'This file has a fault'
+              : `This file has ${faults.length + moreFaults} faults`
+          }
+        >
+          <ul
+            className="max-h-96 space-y-1 overflow-y-auto"
+            tabIndex={0}
+            role="region"
+            aria-label="Faults of the file"
+          >
+            {faults.map((fault, place) => (
+              <li key={`${fault.line} ${fault.column ?? ''} ${place}`}>{describeFault(fault)}</li>
+            ))}
+          </ul>
+          {moreFaults > 0 && <p className="mt-2">And {moreFaults} more faults like these.</p>}
+          <p className="mt-2">Mend the file, save it, and choose it again.</p>
+        </Note>
+      );
+    }
+    case 'asks':
+      return (
+        <Note title="The file doesn’t say everything">
+          <ul className="space-y-1">
+            {reply.questions.map((question) => (
+              <li key={question}>{question}</li>
+            ))}
+          </ul>
+          <p className="mt-2">Choose what each column is in the head of the rows.</p>
+        </Note>
+      );
+    case 'refused':
+      return (
+        <Note title="These points can’t be fitted">
+          {reply.message}
+          {reply.line !== null && ` The row can be left out below, with a reason.`}
+          {reply.line !== null && <LeaveRefused state={state} line={reply.line} />}
+        </Note>
+      );
+    case 'failed':
+      return <Note title="There is no fit">{reply.sentence}</Note>;
+    case 'table':
+      return state.work.state === 'done' && !state.isBeforePending ? (
+        <Note title="The fit waits">{waitWords(state)}</Note>
+      ) : null;
+    case 'fitted':
+    case undefined:
+      return null;
+  }
+}
+
+function waitWords({ light, before }: NewScanState): string {
+  if (light.light === null) return 'Say how the light went: a field is empty or can’t be read.';
+  if (before.detail.isError || before.bytes.isError)
+    return 'The scan that is to be taken together with it did not come. Take this one by itself, or load the page again.';
+  return 'Say the wavelength at which it was measured.';
+}
+
+/** A row that can't be fitted has no place in the plot: it is left out here. */
+function LeaveRefused({ state, line }: { readonly state: NewScanState; readonly line: number }) {
+  const why = `Line ${line} can’t be fitted.`;
+  return (
+    <p className="mt-2">
+      <TextButton
+        onClick={() =>
+          state.setLeftOut([...state.leftOut, { line, why }].toSorted((a, b) => a.line - b.line))
+        }
+      >
+        Leave line {line} out, since it can’t be fitted
+      </TextButton>
+    </p>
+  );
+}
+
+function Note({ title, children }: { readonly title: string; readonly children: ReactNode }) {
+  return (
+    <ErrorNote title={title} className="mb-4">
+      {children}
+    </ErrorNote>
+  );
+}
+
+function RecordPart({ state, plate }: { readonly state: NewScanState; readonly plate: CabinetPlate }) {
+  const { scan, recording, waitsFor } = state;
+  const problem = scan === null ? null : recordProblem(scan);
+  const relying = plate.benches.map(({ name }) => name).join(' and ');
+  return (
+    <div className="border-ink mt-6 space-y-3 border-t-[1.5px] pt-4">
+      {problem !== null && <p>{problem}</p>}
+      {scan !== null && state.settlesId !== null && (
+        <p>Recorded so, it settles what the calibration before left open.</p>
+      )}
+      {scan !== null && reopenedBy(scan, plate.calibration) && (
+        <p>
+          What this scan leaves open was settled before: recorded, it is open again. A scan behind known light
+          taken together with it keeps it settled.
+        </p>
+      )}
+      <p className="text-s text-ink-2">
+        The file is kept as it is, with how it was read. It cannot be changed afterwards; a correction is
+        another one.
+        {relying === ''
+          ? ''
+          : ` Drafts for ${relying} solve with it at once; versions keep the one they were saved with.`}
+      </p>
+      <FormProblem error={recording.error} />
+      <Button kind="filled" waitsFor={waitsFor} onClick={state.record}>
+        Record this calibration
+      </Button>
+    </div>
+  );
+}

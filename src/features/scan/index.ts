@@ -1,0 +1,1 @@
+export { ScanFigure } from './ScanFigure';

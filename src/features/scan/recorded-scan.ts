@@ -1,0 +1,82 @@
+import { useQuery } from '@tanstack/react-query';
+import { useMemo } from 'react';
+import type { DescribedPlate, ScanLight, ScanToFit } from '../../../shared/scan-calibration';
+import type { CalibrationDetail } from '../../../shared/schemas/scans';
+import type { ScanRequest } from './answer-scan';
+import { calibrationQuery, scanBytesQuery } from './queries';
+
+type Scanned = CalibrationDetail & { readonly scan: NonNullable<CalibrationDetail['scan']> };
+
+function lightOf({ light, inputStokes }: Scanned['scan']['record']): ScanLight {
+  if (light.kind === 'linear') return light;
+  const { analyserDeg, extinction } = light;
+  return { kind: 'known', input: inputStokes ?? [0, 0, 0], analyserDeg, extinction, before: null };
+}
+
+/** A recorded scan as it was fitted: of what it left open, the branch that was recorded is taken. */
+function scanToFit(
+  { calibration, scan: { record } }: Scanned,
+  bytes: Uint8Array,
+  plate: DescribedPlate,
+): ScanToFit {
+  const { wavelengthNm, temperatureC, retardanceDeg, retardanceSigmaDeg, openQuestions } = calibration;
+  return {
+    bytes,
+    columns: record.columns,
+    light: lightOf(record),
+    leftOutLines: record.leftOut.map(({ line }) => line),
+    plate,
+    direction: record.direction,
+    wavelengthNm,
+    temperatureC,
+    measuredBefore: {
+      wavelengthNm,
+      retardanceDeg,
+      retardanceSigmaDeg,
+      isBranchOpen: openQuestions.includes('branch'),
+    },
+  };
+}
+
+/** One recorded scan with its file; null ids ask for nothing. */
+export function useStoredScan(
+  labId: string,
+  plateId: string,
+  plate: DescribedPlate,
+  calibrationId: string | null,
+) {
+  const detail = useQuery({
+    ...calibrationQuery(labId, plateId, calibrationId ?? ''),
+    enabled: calibrationId !== null,
+  });
+  const fileId = detail.data?.scan?.file.id ?? null;
+  const bytes = useQuery({ ...scanBytesQuery(labId, fileId ?? ''), enabled: fileId !== null });
+  const { kind, designWavelengthNm, construction, material, order } = plate;
+  const stored = useMemo(() => {
+    const { data } = detail;
+    if (data === undefined || data.scan === null || bytes.data === undefined) return null;
+    const described = { kind, designWavelengthNm, construction, material, order };
+    return scanToFit({ ...data, scan: data.scan }, bytes.data, described);
+  }, [detail, bytes.data, kind, designWavelengthNm, construction, material, order]);
+  return { detail, bytes, stored };
+}
+
+/** A recorded scan to be fitted again from its file, together with the one it was taken together with. */
+export function useRecordedScan(
+  labId: string,
+  plateId: string,
+  plate: DescribedPlate,
+  calibrationId: string,
+) {
+  const own = useStoredScan(labId, plateId, plate, calibrationId);
+  const light = own.detail.data?.scan?.record.light;
+  const beforeId = light?.kind === 'known' ? light.beforeId : null;
+  const before = useStoredScan(labId, plateId, plate, beforeId);
+  const request = useMemo((): ScanRequest | null => {
+    if (own.stored === null || (beforeId !== null && before.stored === null)) return null;
+    const { bytes, columns, ...fit } = own.stored;
+    return { bytes, columns, fit, earlier: before.stored };
+  }, [own.stored, before.stored, beforeId]);
+  const queries = [own.detail, own.bytes, before.detail, before.bytes];
+  return { detail: own.detail, request, failed: queries.find(({ isError }) => isError) ?? null };
+}
