@@ -1,5 +1,6 @@
 import { BeamLine } from './BeamLine';
 import { controlBox, Field, type FieldFrameProps } from './Field';
+import { Quantity } from './NumberText';
 import { TextButton } from './TextLink';
 
 /** A file on its way. */
@@ -61,7 +62,7 @@ export function FileField({
           </div>
           <p className="flex flex-wrap gap-x-4 text-s">
             <span className="min-w-0 break-words">
-              Sending {sending.name}, {Math.round(sending.share * 100)} of 100 parts
+              Sending {sending.name}, <Quantity text={String(Math.round(sending.share * 100))} unit="%" />
             </span>
             {onCancel !== undefined && <TextButton onClick={onCancel}>Cancel</TextButton>}
           </p>
