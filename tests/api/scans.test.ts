@@ -335,7 +335,7 @@ describe('what is refused', () => {
     [
       'powers below zero',
       `${HEAD}0;1;2\n5;-1;2\n10;1;2\n15;1;3\n20;2;1\n25;2;1\n`,
-      'Line 3: the power -1 is below 0',
+      'Line 3: the power −1 is below 0',
     ],
     ['prose', 'Nothing came out on Monday.\n', 'No line of this file is a row of numbers.'],
   ])('a file with faults, by their lines: %s', async (_, text, words) => {

@@ -48,7 +48,7 @@ function detector(dice: Dice, truth: Truth): (power: number) => PowerReading {
       return { power: counts * unit, sigma: Math.sqrt(Math.max(counts, 1)) * unit };
     }
     const shown = power + level * dice.normal();
-    // Without a σ a reading below 0 is refused, so such a meter shows 0.
+    // A meter that states no σ shows 0 below it, as many do.
     return kind === 'noise' ? { power: shown, sigma: level } : { power: Math.max(0, shown), sigma: null };
   };
 }

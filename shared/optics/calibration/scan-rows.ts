@@ -45,13 +45,19 @@ export const MOST_ROWS = 10_000;
 const LARGEST_DIAL_DEG = 1e6;
 /** A dark reading may scatter below 0 by this many of its own σ; farther below, the dark level is wrong. */
 const MOST_SIGMA_BELOW_ZERO = 5;
+/** Where no σ is stated, by this share of the scan's largest power: our choice, a hundredth. */
+const MOST_SHARE_BELOW_ZERO = 0.01;
 /** Stated σ lie within these many times the largest power, or they were meant in another unit. */
 const SIGMA_SPAN = 1e12;
 
 /** Largest leak that still lets crossed polarisers be told from parallel ones. */
 export const LARGEST_LEAK = 0.45;
 
-function readingProblem({ power, sigma }: PowerReading, row: number): ScanRefusal | null {
+function readingProblem(
+  { power, sigma }: PowerReading,
+  row: number,
+  largest: number,
+): ScanRefusal | null {
   if (!Number.isFinite(power))
     return refuseRow(
       'power',
@@ -62,8 +68,10 @@ function readingProblem({ power, sigma }: PowerReading, row: number): ScanRefusa
     const what = `a σ is a finite number above 0, got ${sigma}. State what one reading scatters by (for counts at`;
     return refuseRow('sigma', row, `${what} least 1), or give no σ in any row.`);
   }
-  if (power < -MOST_SIGMA_BELOW_ZERO * (sigma ?? 0)) {
-    const what = `the power ${power} is below 0 by more than its σ explains.`;
+  const mostBelow = sigma === null ? MOST_SHARE_BELOW_ZERO * largest : MOST_SIGMA_BELOW_ZERO * sigma;
+  if (power < -mostBelow) {
+    const shown = String(power).replace('-', '−');
+    const what = `the power ${shown} is below 0 by more than ${sigma === null ? 'scatter' : 'its σ'} explains.`;
     return refuseRow('power', row, `${what} Subtract the right dark level or leave the row out.`);
   }
   return null;
@@ -90,6 +98,7 @@ function rowProblem(
   { dialDeg, readings }: ReadRow,
   row: number,
   areSigmasStated: boolean,
+  largest: number,
 ): ScanRefusal | null {
   if (!(Math.abs(dialDeg) <= LARGEST_DIAL_DEG))
     return refuseRow(
@@ -98,7 +107,7 @@ function rowProblem(
       `a dial angle is a number of degrees, got ${dialDeg}. Correct it or leave the row out.`,
     );
   for (const reading of readings) {
-    const problem = readingProblem(reading, row);
+    const problem = readingProblem(reading, row, largest);
     if (problem !== null) return problem;
     if ((reading.sigma !== null) !== areSigmasStated)
       return refuseRow(
@@ -122,13 +131,13 @@ function gather(
   const without = new Set(leftOut);
   const kept = rows.flatMap((row, index) => (without.has(index) ? [] : [{ row, index }]));
   const areSigmasStated = typeof kept[0]?.row.readings[0]?.sigma === 'number';
+  let scale = 0;
+  for (const { row } of kept) for (const { power } of row.readings) scale = Math.max(scale, Math.abs(power));
   for (const { row, index } of kept) {
-    const wrong = rowProblem(row, index, areSigmasStated);
+    const wrong = rowProblem(row, index, areSigmasStated, scale);
     if (wrong !== null) return wrong;
   }
   const count = kept.length;
-  let scale = 0;
-  for (const { row } of kept) for (const { power } of row.readings) scale = Math.max(scale, Math.abs(power));
   if (count > 0 && scale === 0)
     return refuse(
       'flat',
