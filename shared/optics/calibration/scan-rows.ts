@@ -53,11 +53,7 @@ const SIGMA_SPAN = 1e12;
 /** Largest leak that still lets crossed polarisers be told from parallel ones. */
 export const LARGEST_LEAK = 0.45;
 
-function readingProblem(
-  { power, sigma }: PowerReading,
-  row: number,
-  largest: number,
-): ScanRefusal | null {
+function readingProblem({ power, sigma }: PowerReading, row: number, largest: number): ScanRefusal | null {
   if (!Number.isFinite(power))
     return refuseRow(
       'power',
