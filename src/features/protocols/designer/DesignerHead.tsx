@@ -76,13 +76,6 @@ export function DesignerHead(props: DesignerHeadProps) {
           )}
         </div>
       </div>
-      {maySave && (
-        <div className="designer-save">
-          <Button kind="filled" waitsFor={holdUp?.text} onClick={props.onSaveVersion}>
-            Save version {next}
-          </Button>
-        </div>
-      )}
       <div className="designer-facts">
         <BenchChoice {...{ bench, benches, mayWrite }} onChoose={props.onChooseBench} />
         <Tolerance
@@ -108,6 +101,13 @@ export function DesignerHead(props: DesignerHeadProps) {
           {describeConvention(lab.convention)}
         </TextLink>
       </div>
+      {maySave && (
+        <div className="designer-save">
+          <Button kind="filled" waitsFor={holdUp?.text} onClick={props.onSaveVersion}>
+            Save version {next}
+          </Button>
+        </div>
+      )}
       {maySave && (
         <p
           className={`designer-hold-up ${holdUp?.isFault === true ? 'font-strong text-fault' : 'text-ink-2'}`}

@@ -8,6 +8,7 @@ import { Sphere, type SphereInput } from '../../../sphere';
 import { CsvFields } from './CsvFields';
 import { SetFields } from './SetFields';
 import { firstChoice } from './target-set-choice';
+import { useLater } from '../use-later';
 import { type FoundRow, roomFor, type RowsFrom, useFoundRows } from './use-found-rows';
 
 interface AddRowsDialogProps {
@@ -20,6 +21,7 @@ interface AddRowsDialogProps {
 }
 
 const shownProblems = 8;
+const sphereHeightPx = 280;
 
 /** Many rows at once: a set, or what was pasted or is in a file, looked at on the sphere before it is added. */
 export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: AddRowsDialogProps) {
@@ -31,6 +33,8 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
     (): SphereInput => ({ start: [1, 0, 0], plates: [], points: found.points, convention }),
     [found.points, convention],
   );
+  // The dialog is there first; the drawing is a task of its own.
+  const drawn = useLater<SphereInput | null>(scene, 0, null);
   const count = roomFor(found.rows.length, present);
   const unread = found.rows.length - found.points.length;
   return (
@@ -107,7 +111,11 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
           <p className="m-0 mb-1 text-s text-ink-2">
             {kind === 'prepare' ? 'where they lie' : 'where each of them takes H'}
           </p>
-          <Sphere input={scene} height={280} />
+          {drawn === null ? (
+            <div style={{ height: sphereHeightPx }} />
+          ) : (
+            <Sphere input={drawn} height={sphereHeightPx} />
+          )}
         </div>
       </div>
     </Dialog>
