@@ -4,6 +4,7 @@ import { TextLink } from '../../components/TextLink';
 import { formatDate } from '../../lib/format';
 import { useLab } from '../labs';
 import { ReliesOnPlate } from '../reliance';
+import { ScanFigure } from '../scan';
 import { HistoryTable } from './history/HistoryTable';
 import { PlateHistoryPlot } from './history/PlateHistoryPlot';
 import { OpenQuestions } from './questions/OpenQuestions';
@@ -29,6 +30,9 @@ export function PlateHistory(props: {
   return (
     <>
       <div className="space-y-6">
+        {typeof calibration?.fileId === 'string' && (
+          <ScanFigure plateId={plate.id} calibrationId={calibration.id} now={now} />
+        )}
         {calibration === null ? (
           <VoidZero {...{ plate, page, now, measures, seats }} hadZero={detail.calibrations.length > 0} />
         ) : (
@@ -57,7 +61,7 @@ export function PlateHistory(props: {
           {detail.seats.length === 0 ? (
             <p className="text-ink-2">It has sat in no mount yet.</p>
           ) : (
-            <HistoryTable id={tableId} labId={lab.id} detail={detail} now={now} />
+            <HistoryTable id={tableId} labId={lab.id} page={page} detail={detail} now={now} />
           )}
         </section>
       </div>

@@ -45,7 +45,7 @@ export function FilePreview({ understood, roles, isKnownLight, onRoles }: FilePr
                 line
               </th>
               {preview.columns.map(({ number, name, unit }) => (
-                <th key={number} scope="col" className="min-w-30 px-1.5 text-left">
+                <th key={number} scope="col" className="min-w-34 px-1.5 text-left">
                   <span className="text-s font-words block max-w-40 truncate">
                     {name ?? `column ${number}`}
                     {unit === null ? '' : `, ${unit}`}

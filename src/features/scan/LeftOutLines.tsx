@@ -1,9 +1,8 @@
 import { useState } from 'react';
 import type { LeftOut } from '../../../shared/schemas/scans';
-import { Button } from '../../components/Button';
-import { NumberField } from '../../components/NumberField';
-import { TextField } from '../../components/TextField';
+import { announce } from '../../components/live-region-store';
 import { TextButton } from '../../components/TextLink';
+import { LeaveOutReason, withLine } from './LeaveOutReason';
 import { type FittedScan, plottedPoints } from './scan-points';
 import { sigmaWords } from './scan-words';
 
@@ -23,7 +22,8 @@ export function LeftOutLines({ scan, leftOut, onChange }: LeftOutLinesProps) {
   const lines = new Set(scan.table.points.map(({ line }) => line));
   const leave = (row: LeftOut) => {
     setAsked(null);
-    onChange([...leftOut, row].toSorted((a, b) => a.line - b.line));
+    announce(`Line ${row.line} is left out.`);
+    onChange(withLine(leftOut, row));
   };
   const problemOf = (line: number): string | null => {
     if (!lines.has(line)) return `Line ${line} holds no row of the scan. Look at the lines in the table.`;
@@ -50,7 +50,12 @@ export function LeftOutLines({ scan, leftOut, onChange }: LeftOutLinesProps) {
                   </TextButton>
                 </span>
                 {asked === line && (
-                  <Reason line={line} onLeave={leave} onKeep={() => setAsked(null)} problemOf={problemOf} />
+                  <LeaveOutReason
+                    line={line}
+                    onLeave={leave}
+                    onKeep={() => setAsked(null)}
+                    problemOf={problemOf}
+                  />
                 )}
               </li>
             ))}
@@ -60,23 +65,7 @@ export function LeftOutLines({ scan, leftOut, onChange }: LeftOutLinesProps) {
           )}
         </>
       )}
-      {leftOut.length > 0 && (
-        <>
-          <p className="font-strong mt-3">Left out</p>
-          <ul>
-            {leftOut.map(({ line, why }) => (
-              <li key={line} className="border-hair flex flex-wrap justify-between gap-x-4 border-b py-1.5">
-                <span className="min-w-0 break-words">
-                  Line {line}: {why}
-                </span>
-                <TextButton onClick={() => onChange(leftOut.filter((one) => one.line !== line))}>
-                  Put line {line} back
-                </TextButton>
-              </li>
-            ))}
-          </ul>
-        </>
-      )}
+      <LeftOutList leftOut={leftOut} onChange={onChange} />
       <p className="mt-2">
         <TextButton
           aria-expanded={asked === 'other'}
@@ -86,59 +75,30 @@ export function LeftOutLines({ scan, leftOut, onChange }: LeftOutLinesProps) {
         </TextButton>
       </p>
       {asked === 'other' && (
-        <Reason line={null} onLeave={leave} onKeep={() => setAsked(null)} problemOf={problemOf} />
+        <LeaveOutReason line={null} onLeave={leave} onKeep={() => setAsked(null)} problemOf={problemOf} />
       )}
     </section>
   );
 }
 
-function Reason(props: {
-  readonly line: number | null;
-  readonly onLeave: (row: LeftOut) => void;
-  readonly onKeep: () => void;
-  readonly problemOf: (line: number) => string | null;
-}) {
-  const { line, onLeave, onKeep, problemOf } = props;
-  const [typedLine, setTypedLine] = useState('');
-  const [why, setWhy] = useState('');
-  const [isTried, setIsTried] = useState(false);
-  const chosen = line ?? Number(typedLine.trim());
-  const lineFault =
-    line !== null || !isTried
-      ? null
-      : typedLine.trim() === '' || !Number.isInteger(chosen)
-        ? 'Write the number of a line of the file.'
-        : problemOf(chosen);
-  const whyFault = why.trim() === '' ? 'Write why: the reason stands in the record.' : null;
-  const leave = () => {
-    setIsTried(true);
-    if (why.trim() === '' || !Number.isInteger(chosen) || problemOf(chosen) !== null) return;
-    onLeave({ line: chosen, why: why.trim() });
-  };
+/** What is left out and why, each to be put back. */
+export function LeftOutList({ leftOut, onChange }: Omit<LeftOutLinesProps, 'scan'>) {
+  if (leftOut.length === 0) return null;
   return (
-    <div className="my-2 grid items-start gap-3 sm:grid-cols-[6rem_minmax(0,1fr)]">
-      {line === null && (
-        <NumberField
-          label="line"
-          value={typedLine}
-          onChange={({ target }) => setTypedLine(target.value)}
-          fault={lineFault}
-        />
-      )}
-      <TextField
-        label={line === null ? 'why it is left out' : `why line ${line} is left out`}
-        className={line === null ? undefined : 'sm:col-span-2'}
-        maxLength={200}
-        value={why}
-        onChange={({ target }) => setWhy(target.value)}
-        fault={isTried ? whyFault : null}
-      />
-      <div className="flex flex-wrap gap-3 sm:col-span-2">
-        <Button onClick={leave}>Leave {line === null ? 'it' : `line ${line}`} out</Button>
-        <Button kind="quiet" onClick={onKeep}>
-          Keep it
-        </Button>
-      </div>
-    </div>
+    <>
+      <p className="font-strong mt-3">Left out</p>
+      <ul>
+        {leftOut.map(({ line, why }) => (
+          <li key={line} className="border-hair flex flex-wrap justify-between gap-x-4 border-b py-1.5">
+            <span className="min-w-0 break-words">
+              Line {line}: {why}
+            </span>
+            <TextButton onClick={() => onChange(leftOut.filter((one) => one.line !== line))}>
+              Put line {line} back
+            </TextButton>
+          </li>
+        ))}
+      </ul>
+    </>
   );
 }

@@ -39,7 +39,12 @@ export function ScanFilePart({ chosen, fault, sending, onCancel, onFile }: ScanF
       }}
       onDragLeave={() => setIsOver(false)}
       onDrop={drop}
-      className={classNames('border border-dashed p-3', isOver ? 'border-ink bg-wash' : 'border-rule')}
+      className={classNames(
+        'border border-dashed p-3',
+        isOver ? 'border-ink bg-wash' : 'border-rule',
+        // The browser's own words beside its button would say that no file is chosen: it is let go once it is read.
+        chosen !== null && '[&_input]:text-transparent',
+      )}
     >
       <FileField
         label={chosen === null ? 'the scan’s file' : `the scan’s file: ${chosen}`}

@@ -1,4 +1,4 @@
-import type { ReactNode } from 'react';
+import { type ReactNode, useState } from 'react';
 import { describeFault } from '../../../shared/scan-file';
 import { recordProblem } from '../../../shared/scan-calibration';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
@@ -7,7 +7,8 @@ import { Button } from '../../components/Button';
 import { ErrorNote } from '../../components/ErrorNote';
 import { TextButton } from '../../components/TextLink';
 import { FormProblem } from '../../lib/forms';
-import { LeftOutLines } from './LeftOutLines';
+import { LeaveOutReason, withLine } from './LeaveOutReason';
+import { LeftOutLines, LeftOutList } from './LeftOutLines';
 import { PointsTable } from './PointsTable';
 import { reopenedBy } from './record-rules';
 import { ScanPlot } from './ScanPlot';
@@ -65,7 +66,7 @@ function workWords({ table }: NewScanState): string {
 /** Why there is no fit, and what to do. */
 function Refused({ state }: { readonly state: NewScanState }) {
   const { reply, columnProblem } = state;
-  if (columnProblem !== null) return <Note title="The columns are not all told">{columnProblem}</Note>;
+  if (columnProblem !== null) return <Asks title="The columns are not all told">{columnProblem}</Asks>;
   switch (reply?.kind) {
     case 'faults': {
       const { faults, moreFaults } = reply;
@@ -77,16 +78,18 @@ function Refused({ state }: { readonly state: NewScanState }) {
               : `This file has ${faults.length + moreFaults} faults`
           }
         >
-          <ul
-            className="max-h-96 space-y-1 overflow-y-auto"
+          <div
+            className="max-h-96 overflow-y-auto"
             tabIndex={0}
             role="region"
             aria-label="Faults of the file"
           >
-            {faults.map((fault, place) => (
-              <li key={`${fault.line} ${fault.column ?? ''} ${place}`}>{describeFault(fault)}</li>
-            ))}
-          </ul>
+            <ul className="space-y-1">
+              {faults.map((fault, place) => (
+                <li key={`${fault.line} ${fault.column ?? ''} ${place}`}>{describeFault(fault)}</li>
+              ))}
+            </ul>
+          </div>
           {moreFaults > 0 && <p className="mt-2">And {moreFaults} more faults like these.</p>}
           <p className="mt-2">Mend the file, save it, and choose it again.</p>
         </Note>
@@ -94,28 +97,27 @@ function Refused({ state }: { readonly state: NewScanState }) {
     }
     case 'asks':
       return (
-        <Note title="The file doesn’t say everything">
+        <Asks title="The file doesn’t say everything">
           <ul className="space-y-1">
             {reply.questions.map((question) => (
               <li key={question}>{question}</li>
             ))}
           </ul>
           <p className="mt-2">Choose what each column is in the head of the rows.</p>
-        </Note>
+        </Asks>
       );
     case 'refused':
       return (
         <Note title="These points can’t be fitted">
           {reply.message}
-          {reply.line !== null && ` The row can be left out below, with a reason.`}
-          {reply.line !== null && <LeaveRefused state={state} line={reply.line} />}
+          {reply.line !== null && <LeaveRefused key={reply.line} state={state} line={reply.line} />}
         </Note>
       );
     case 'failed':
       return <Note title="There is no fit">{reply.sentence}</Note>;
     case 'table':
       return state.work.state === 'done' && !state.isBeforePending ? (
-        <Note title="The fit waits">{waitWords(state)}</Note>
+        <Asks title="The fit waits">{waitWords(state)}</Asks>
       ) : null;
     case 'fitted':
     case undefined:
@@ -130,19 +132,34 @@ function waitWords({ light, before }: NewScanState): string {
   return 'Say the wavelength at which it was measured.';
 }
 
-/** A row that can't be fitted has no place in the plot: it is left out here. */
+/** A row that can't be fitted has no place in the plot: it is left out here, with a reason as any other. */
 function LeaveRefused({ state, line }: { readonly state: NewScanState; readonly line: number }) {
-  const why = `Line ${line} can’t be fitted.`;
+  const [isAsked, setIsAsked] = useState(false);
   return (
-    <p className="mt-2">
-      <TextButton
-        onClick={() =>
-          state.setLeftOut([...state.leftOut, { line, why }].toSorted((a, b) => a.line - b.line))
-        }
-      >
-        Leave line {line} out, since it can’t be fitted
+    <div className="mt-2">
+      <TextButton aria-expanded={isAsked} onClick={() => setIsAsked(!isAsked)}>
+        Leave line {line} out…
       </TextButton>
-    </p>
+      {isAsked && (
+        <LeaveOutReason
+          line={line}
+          onLeave={(row) => state.setLeftOut(withLine(state.leftOut, row))}
+          onKeep={() => setIsAsked(false)}
+        />
+      )}
+      <LeftOutList leftOut={state.leftOut} onChange={state.setLeftOut} />
+    </div>
+  );
+}
+
+/** Nothing is wrong: a person has to say something first. */
+function Asks({ title, children }: { readonly title: string; readonly children: ReactNode }) {
+  return (
+    <div role="status">
+      <BeamEmpty title={title} className="mb-4 max-w-140">
+        {children}
+      </BeamEmpty>
+    </div>
   );
 }
 

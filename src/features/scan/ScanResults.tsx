@@ -25,7 +25,9 @@ export function ScanResults({ scan, plate, before, isRecorded = false }: ScanRes
       <dl className="border-hair border-t">
         <Fact name="zero">
           <Value value={values.offsetDeg} sigma={values.offsetSigmaDeg} />{' '}
-          <span className="text-ink-2">what the dial reads with the fast axis along H</span>
+          <span className="text-ink-2">
+            what the dial reads with the fast axis along H, or half a turn from it
+          </span>
         </Fact>
         <Fact name="retardance">
           {retardance === null ? (

@@ -12,6 +12,8 @@ export interface ScanRequest {
   readonly bytes: Uint8Array;
   /** Null: as the file itself says. */
   readonly columns: ColumnMapping | null;
+  /** Then a power has no port, and the one column beside the dial is it. */
+  readonly isKnownLight: boolean;
   /** Null: to be read only. */
   readonly fit: Omit<ScanToFit, 'bytes' | 'columns'> | null;
   /** A recorded scan between polarisers that is taken together with this one. */
@@ -21,7 +23,8 @@ export interface ScanRequest {
 export type ScanReply = ScanReading | ScanAnswer | { readonly kind: 'failed'; readonly sentence: string };
 
 /** What the worker answers. */
-export function answerScan({ bytes, columns, fit, earlier }: ScanRequest): ScanReply {
+export function answerScan({ bytes, isKnownLight, fit, earlier, ...request }: ScanRequest): ScanReply {
+  const columns = request.columns ?? (isKnownLight ? onePower(bytes) : null);
   if (fit === null) return readScanFile(bytes, columns);
   const { light } = fit;
   if (light.kind === 'linear') return fitScan({ ...fit, bytes, columns });
@@ -32,7 +35,7 @@ export function answerScan({ bytes, columns, fit, earlier }: ScanRequest): ScanR
       sentence: 'The scan of before can’t be fitted as one between polarisers. Take this scan by itself.',
     };
   }
-  return fitScan({ ...fit, bytes, columns: columns ?? onePower(bytes), light: { ...light, before } });
+  return fitScan({ ...fit, bytes, columns, light: { ...light, before } });
 }
 
 function earlierFit(earlier: ScanToFit): LinearScanFit | undefined {
@@ -40,7 +43,7 @@ function earlierFit(earlier: ScanToFit): LinearScanFit | undefined {
   return answer.kind === 'fitted' && answer.found.kind === 'linear' ? answer.found.fit : undefined;
 }
 
-/** Behind known light a power has no port: the one column beside the dial is it. Null: as the file itself says. */
+/** The one column beside the dial as the power. Null where there is none, or several: as the file itself says. */
 function onePower(bytes: Uint8Array): ColumnMapping | null {
   const reading = readScanFile(bytes);
   return reading.kind === 'asks' ? onePowerOf(reading) : null;

@@ -75,7 +75,7 @@ export function useRecordedScan(
   const request = useMemo((): ScanRequest | null => {
     if (own.stored === null || (beforeId !== null && before.stored === null)) return null;
     const { bytes, columns, ...fit } = own.stored;
-    return { bytes, columns, fit, earlier: before.stored };
+    return { bytes, columns, isKnownLight: fit.light.kind === 'known', fit, earlier: before.stored };
   }, [own.stored, before.stored, beforeId]);
   const queries = [own.detail, own.bytes, before.detail, before.bytes];
   return { detail: own.detail, request, failed: queries.find(({ isError }) => isError) ?? null };

@@ -128,7 +128,9 @@ export function useNewScan({ plate, detail, lightKind, now, onRecorded }: NewSca
 
   const file = scanFile.chosen;
   const [measuredBefore = null] = detail.calibrations;
+  const isKnownLight = values.lightKind === 'known';
   const question = JSON.stringify([
+    isKnownLight,
     columns,
     canFit ? [light.light, light.input, around.forFit] : null,
     leftOut,
@@ -139,7 +141,7 @@ export function useNewScan({ plate, detail, lightKind, now, onRecorded }: NewSca
       const { forFit } = around;
       const read = light.light;
       if (!canFit || forFit === null || read === null)
-        return { bytes: file.bytes, columns, fit: null, earlier: null };
+        return { bytes: file.bytes, columns, isKnownLight, fit: null, earlier: null };
       const fitLight =
         read.kind === 'linear'
           ? read
@@ -153,6 +155,7 @@ export function useNewScan({ plate, detail, lightKind, now, onRecorded }: NewSca
       return {
         bytes: file.bytes,
         columns,
+        isKnownLight,
         earlier: read.kind === 'known' ? before.stored : null,
         fit: {
           light: fitLight,

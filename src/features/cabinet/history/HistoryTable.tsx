@@ -2,6 +2,7 @@ import type { PlateDetail, SeatedCalibration } from '../../../../shared/schemas/
 import type { Seat } from '../../../../shared/schemas/mounts';
 import { DataCell, DataRow, DataTable, HeadCell, RowHead } from '../../../components/DataTable';
 import { Quantity } from '../../../components/NumberText';
+import { TextLink } from '../../../components/TextLink';
 import { formatDate, formatMoment, formatUncertain, withTrueMinus } from '../../../lib/format';
 import { fileAddress } from '../../../lib/upload';
 import { sizeWords } from '../files/size-words';
@@ -18,10 +19,12 @@ const zero = (calibration: SeatedCalibration) =>
 export function HistoryTable(props: {
   readonly id: string;
   readonly labId: string;
+  /** The address of the plate's page. */
+  readonly page: string;
   readonly detail: Pick<PlateDetail, 'seats' | 'calibrations'>;
   readonly now: Date;
 }) {
-  const { id, labId, detail, now } = props;
+  const { id, labId, page, detail, now } = props;
   const widest = {
     retardance: widestFraction(detail.calibrations.map(retardance)),
     zero: widestFraction(detail.calibrations.map(zero)),
@@ -49,7 +52,7 @@ export function HistoryTable(props: {
             {history.calibrations.map((calibration) => (
               <CalibrationRow
                 key={calibration.id}
-                {...{ labId, calibration, widest, now }}
+                {...{ labId, page, calibration, widest, now }}
                 settled={detail.calibrations.find(({ id: other }) => other === calibration.settlesId)}
                 ended={history.seat.leftAt !== null}
               />
@@ -87,13 +90,14 @@ function SeatRow({ history, now }: { readonly history: SeatHistory; readonly now
 
 function CalibrationRow(props: {
   readonly labId: string;
+  readonly page: string;
   readonly calibration: SeatedCalibration;
   readonly settled: SeatedCalibration | undefined;
   readonly ended: boolean;
   readonly widest: { readonly retardance: number; readonly zero: number };
   readonly now: Date;
 }) {
-  const { labId, calibration, settled, ended, widest, now } = props;
+  const { labId, page, calibration, settled, ended, widest, now } = props;
   const cell = `align-top! py-2 ${ended ? 'text-ink-3' : ''}`;
   return (
     <DataRow>
@@ -115,6 +119,7 @@ function CalibrationRow(props: {
         ))}
         {calibration.scan !== null && calibration.fileId !== null && (
           <span className="text-s text-ink-2 font-words block">
+            <TextLink to={`${page}/scan?calibration=${calibration.id}`}>See the scan</TextLink>,{' '}
             <a className="beam-link" href={fileAddress(labId, calibration.fileId)} download>
               Download {calibration.scan.name}
             </a>
