@@ -19,7 +19,7 @@ interface ScanResultsProps {
 export function ScanResults({ scan, plate, before, isRecorded = false }: ScanResultsProps) {
   const { values, found } = scan;
   const { retardance } = values;
-  const distance = distanceWords(scan, plate.material ?? 'the model');
+  const distance = distanceWords(scan, plate.material?.replace('-', ' ') ?? 'the model');
   return (
     <>
       <dl className="border-hair border-t">

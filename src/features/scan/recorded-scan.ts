@@ -52,12 +52,13 @@ export function useStoredScan(
   const fileId = detail.data?.scan?.file.id ?? null;
   const bytes = useQuery({ ...scanBytesQuery(labId, fileId ?? ''), enabled: fileId !== null });
   const { kind, designWavelengthNm, construction, material, order } = plate;
+  // A query's result is a new object at every stroke; its data is not.
+  const { data } = detail;
   const stored = useMemo(() => {
-    const { data } = detail;
     if (data === undefined || data.scan === null || bytes.data === undefined) return null;
     const described = { kind, designWavelengthNm, construction, material, order };
     return scanToFit({ ...data, scan: data.scan }, bytes.data, described);
-  }, [detail, bytes.data, kind, designWavelengthNm, construction, material, order]);
+  }, [data, bytes.data, kind, designWavelengthNm, construction, material, order]);
   return { detail, bytes, stored };
 }
 

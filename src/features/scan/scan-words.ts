@@ -49,24 +49,26 @@ export function scanSummary(scan: FittedScan, plateName: string): string {
   return `Scan of ${plateName}: ${used} points ${lightWords(scan)}, readings from ${low} to ${high} degrees${left === 0 ? '' : `, ${left} more left out`}. ${zero}, ${retardance}. The farthest point lies ${sigmaWords(worst)} from the fitted curve.`;
 }
 
-/** "2.9° below quartz, 7.1σ" and what follows from it; or why there is no prediction. */
+/** How far the retardance lies from what material and construction give, or why nothing is known; null without a retardance. */
 export function distanceWords(
-  { distance, prediction, values }: FittedScan,
+  { distance, prediction, values: { retardance } }: FittedScan,
   materialName: string,
 ): string | null {
-  if (values.retardance === null) return null;
+  if (retardance === null) return null;
   if (distance === null) return prediction.ok ? null : `Nothing to compare with: ${prediction.reason}.`;
   const { deviationDeg, sigmas, larger, verdict, predictedDeg, branch } = distance;
   const size = formatAngle(Math.abs(deviationDeg), 1);
   const side = larger === 'neither' ? 'exactly' : `${size} ${larger === 'measured' ? 'above' : 'below'}`;
-  const far = sigmas === null ? '' : `, ${sigmaWords(sigmas)}`;
-  const read = branch === 'other' ? ' read as 360° less' : '';
+  const read = branch === 'other' ? ', read as 360° less' : '';
+  const measured = retardance.sigmaDeg > 0 ? Math.abs(deviationDeg) / retardance.sigmaDeg : null;
+  const far = measured === null ? '' : `: ${sigmaWords(measured)} of the measurement`;
+  const allowed = sigmas === null ? '' : `, ${sigmaWords(sigmas)} with what makers allow`;
   const end = {
-    agrees: 'It agrees.',
-    'in-between': 'That is more than chance likes and less than proof.',
-    apart: 'Look whether it is tilted, or not the plate that its facts say.',
+    agrees: '',
+    'in-between': ' That is much for chance and little for proof.',
+    apart: ' Look whether it is tilted, or not the plate that its facts say.',
   }[verdict];
-  return `${side} what ${materialName} gives (${formatAngle(predictedDeg, 1)})${read}${far}. ${end}`;
+  return `${side} what ${materialName} gives (${formatAngle(predictedDeg, 1)})${read}${far}${allowed}.${end}`;
 }
 
 export interface Said {

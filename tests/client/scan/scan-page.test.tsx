@@ -3,7 +3,7 @@ import { cleanup, screen, waitFor, within } from '@testing-library/react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import type { CalibrationDetail } from '../../../shared/schemas/scans';
 import { linearRows, linearScanText, knownLightText, textOf } from '../../support/scan-text';
-import { csv, detailOf, fileId, openScan, page, plate, type Sent } from './scan-harness';
+import { csv, detailOf, fileId, NearWorker, openScan, page, plate, type Sent } from './scan-harness';
 
 const TRUTH = { offsetDeg: 121.73, retardanceDeg: 86.9, direction: -1 } as const;
 const HEAD = 'dial (deg);crossed (mW);parallel (mW)';
@@ -337,6 +337,12 @@ describe('who and where', () => {
     };
     openScan('guest', { recorded, file: PLAIN }, '?calibration=c1');
     await screen.findByRole('img', { name: /^Scan of Q-B: 30 points .*1 more left out/u });
+    // Fitted once, not at every drawing.
+    const fits = NearWorker.count;
+    await new Promise((resolve) => {
+      setTimeout(resolve, 300);
+    });
+    expect(NearWorker.count).toBe(fits);
     screen.getByText('Line 5: wild');
     screen.getByText(/SHA-256 abc123/u);
   });
