@@ -75,9 +75,10 @@ export function historyPoints(
   };
 }
 
+/** A plate is the same half a turn on, and a quarter turn on while nobody knows which axis is the fast one. */
 function changeSince(first: SeatedCalibration, calibration: SeatedCalibration): number {
   const axisOpen = [first, calibration].some(({ openQuestions }) => openQuestions.includes('axis'));
-  return wrapSigned(calibration.offsetDeg - first.offsetDeg, axisOpen ? 90 : 360);
+  return wrapSigned(calibration.offsetDeg - first.offsetDeg, axisOpen ? 90 : 180);
 }
 
 function movesOf(seats: readonly Seat[]): HistoryPoints['moves'] {
