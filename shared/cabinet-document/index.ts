@@ -1,0 +1,30 @@
+export {
+  type CabinetDocument,
+  cabinetDocumentSchema,
+  cabinetFormat,
+  calibrationsOf,
+  type DocumentCalibration,
+  type DocumentMount,
+  type DocumentPlate,
+  type DocumentPlateHead,
+  type DocumentRef,
+  type DocumentSeat,
+  emptyDocument,
+  maxDocumentBytes,
+  maxDocumentRows,
+  refKey,
+} from './document';
+export { inOrder } from './document-order';
+export { type FileFault, maxFaults } from './faults';
+export { type CabinetFileFormat, cabinetFileFormats, readCabinet, writeCabinet } from './read-document';
+export {
+  countChanges,
+  type FieldChange,
+  type FieldValue,
+  type ImportChange,
+  type ImportPlan,
+  importPlanSchema,
+  type ImportRefusal,
+  planHash,
+} from './import-plan';
+export { planImport } from './plan-import';
