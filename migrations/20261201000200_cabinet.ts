@@ -132,10 +132,13 @@ export async function up(knex: Knex): Promise<void> {
     fit text,
     measured_at timestamptz(3) NOT NULL,
     recorded_by uuid NOT NULL REFERENCES users,
+    -- Who recorded it in the cabinet that it was imported from, by name; recorded_by is then who imported it.
+    recorded_as text CHECK (recorded_as <> ''),
     recorded_at timestamptz(3) NOT NULL DEFAULT now(),
     UNIQUE (lab_id, id),
     FOREIGN KEY (lab_id, seat_id) REFERENCES seats (lab_id, id),
-    FOREIGN KEY (lab_id, settles_id) REFERENCES calibrations (lab_id, id),
+    -- Many at once come in the order in which they were measured, which need not be that in which they settle each other.
+    FOREIGN KEY (lab_id, settles_id) REFERENCES calibrations (lab_id, id) DEFERRABLE INITIALLY IMMEDIATE,
     FOREIGN KEY (lab_id, file_id) REFERENCES files (lab_id, id)
   )`);
   await knex.raw(
@@ -230,16 +233,19 @@ async function plateFollowsItsSeat(knex: Knex): Promise<void> {
   await knex.raw(
     'CREATE TRIGGER plate_follows AFTER INSERT OR UPDATE ON seats FOR EACH ROW EXECUTE FUNCTION plate_takes_seat()',
   );
+  // Once for all rows of a statement: an import brings thousands, and each change of a plate leaves a dead row behind.
   await knex.raw(`CREATE FUNCTION plate_takes_calibration() RETURNS trigger LANGUAGE plpgsql AS $$ BEGIN
-    UPDATE plates p SET calibration_id = c.id, calibrated_at = c.measured_at,
-      has_open_question = cardinality(c.open_questions) > 0
-    FROM (SELECT id, measured_at, open_questions FROM calibrations
-      WHERE lab_id = NEW.lab_id AND seat_id = NEW.seat_id
-      ORDER BY measured_at DESC, recorded_at DESC, id DESC LIMIT 1) c
-    WHERE p.lab_id = NEW.lab_id AND p.seat_id = NEW.seat_id;
+    UPDATE plates p SET calibration_id = newest.id, calibrated_at = newest.measured_at,
+      has_open_question = cardinality(newest.open_questions) > 0
+    FROM (SELECT DISTINCT lab_id, seat_id FROM added) measured
+    JOIN seats s ON s.lab_id = measured.lab_id AND s.id = measured.seat_id
+    CROSS JOIN LATERAL (SELECT c.id, c.measured_at, c.open_questions FROM calibrations c
+      WHERE c.lab_id = measured.lab_id AND c.seat_id = measured.seat_id
+      ORDER BY c.measured_at DESC, c.recorded_at DESC, c.id DESC LIMIT 1) newest
+    WHERE p.lab_id = s.lab_id AND p.id = s.plate_id AND p.seat_id = s.id;
     RETURN NULL;
   END $$`);
   await knex.raw(
-    'CREATE TRIGGER plate_follows AFTER INSERT ON calibrations FOR EACH ROW EXECUTE FUNCTION plate_takes_calibration()',
+    'CREATE TRIGGER plate_follows AFTER INSERT ON calibrations REFERENCING NEW TABLE AS added FOR EACH STATEMENT EXECUTE FUNCTION plate_takes_calibration()',
   );
 }

@@ -2,6 +2,7 @@ import type { Config } from './config';
 import { sessionRoutes } from './features/auth';
 import { benchRoutes } from './features/benches';
 import { cabinetRoutes } from './features/cabinet';
+import { exchangeRoutes } from './features/exchange';
 import { fileRoutes } from './features/files';
 import { homeRoutes } from './features/home';
 import { labRoutes } from './features/labs';
@@ -16,6 +17,7 @@ export function allRoutes(config: Pick<Config, 'secure' | 'sessionSecret'>): rea
     ...sessionRoutes(config),
     ...labRoutes(config),
     ...cabinetRoutes(),
+    ...exchangeRoutes(),
     ...fileRoutes(),
     ...benchRoutes(),
     ...protocolRoutes(),

@@ -14,7 +14,7 @@ export interface User {
   readonly email: string | null;
 }
 
-/** Bytes that someone uploaded, on their way back. */
+/** A file on its way to whoever asks: what someone uploaded, or an export. */
 export interface SentFile {
   readonly name: string;
   /** As the content says; never what could run in a page of ours. */

@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import { canonicalJson, contentHash } from '../protocol/canonical-json';
 import {
   documentCalibrationSchema,
   documentMountSchema,
@@ -90,11 +89,6 @@ export const importPlanSchema = z.strictObject({
   unchanged: countsSchema,
 });
 export type ImportPlan = z.infer<typeof importPlanSchema>;
-
-/** The plan that was shown, as one text: an import that would do anything else is another one. */
-export function planHash(plan: ImportPlan): string {
-  return contentHash(canonicalJson(plan));
-}
 
 /** How many changes of each kind there are. */
 export function countChanges(plan: ImportPlan): Readonly<Record<ImportChange['kind'], number>> {

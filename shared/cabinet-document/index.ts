@@ -25,6 +25,12 @@ export {
   type ImportPlan,
   importPlanSchema,
   type ImportRefusal,
-  planHash,
 } from './import-plan';
 export { planImport } from './plan-import';
+export {
+  exportQuerySchema,
+  type ImportRequest,
+  importRequestSchema,
+  type ImportResult,
+  importResultSchema,
+} from './exchange';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { countChanges, emptyDocument, planHash, planImport } from '../../shared/cabinet-document';
+import { countChanges, emptyDocument, planImport } from '../../shared/cabinet-document';
 import { cabinet, calibration, day, mount, plate, seat } from './document-fixture';
 
 const here = cabinet(
@@ -175,11 +175,4 @@ describe('what is not taken is said with its reason', () => {
     const plan = planImport(here, cabinet([mount('M-9')], [plate('H-0', [seat('M-9', 30, null)])]));
     expect([kinds(plan), reasons(plan)]).toEqual([['mount-added', 'plate-added', 'seat-added'], []]);
   });
-});
-
-it('a plan has one hash, and any other plan another', () => {
-  const one = planImport(emptyDocument, here);
-  expect(planHash(one)).toMatch(/^[0-9a-f]{64}$/u);
-  expect(planHash(planImport(emptyDocument, structuredClone(here)))).toBe(planHash(one));
-  expect(planHash(planImport(here, here))).not.toBe(planHash(one));
 });

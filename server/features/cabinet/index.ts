@@ -7,8 +7,18 @@ import { scanRoutes } from './scan-routes';
 import { seatRoutes } from './seat-routes';
 
 export { insertCalibration } from './calibration-store';
-export { asCabinetPlate, asReadyPlate, type StoredPlate } from './plate-rows';
-export { findPlate, findPlates, findPlatesInBeams, hasAnyPlate } from './plate-store';
+export { mountColumns } from './mount-store';
+export {
+  asCabinetPlate,
+  asReadyPlate,
+  calibrationColumns,
+  calibrationRow,
+  mapCalibration,
+  mapMountColumns,
+  mountColumnsRow,
+  type StoredPlate,
+} from './plate-rows';
+export { findPlate, findPlates, findPlatesInBeams, hasAnyPlate, plateColumns, rowsOf } from './plate-store';
 export { addPlate, seatPlate, takeOutPlate } from './plate-work';
 
 export function cabinetRoutes(): readonly Route[] {

@@ -165,7 +165,8 @@ export async function setMountRetired(
     .update({ retired_at: at, revision: stored.revision + 1 });
 }
 
-function mountColumns(mount: WriteMount) {
+/** Everything of a mount, as its columns hold it. */
+export function mountColumns(mount: WriteMount) {
   return {
     name: mount.name,
     drive: mount.drive,

@@ -62,7 +62,7 @@ export const calibrationRow = z.object({
 
 export const calibrationColumns = `c.id as calibration_id, c.wavelength_nm, c.temperature_c, c.retardance_deg, c.retardance_sigma_deg,
   c.offset_deg, c.offset_sigma_deg, c.method, c.note as calibration_note, c.open_questions, c.settles_id, c.file_id, c.measured_at,
-  u.name as recorded_by_name`;
+  coalesce(c.recorded_as, u.name) as recorded_by_name`;
 
 export function mapCalibration(row: z.infer<typeof calibrationRow>): Calibration {
   return {

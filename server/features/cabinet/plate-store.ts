@@ -113,7 +113,8 @@ export async function raiseRevision(transaction: Transaction, stored: StoredPlat
   await requestReliance(transaction, stored.labId, { plateId: stored.id });
 }
 
-function plateColumns(plate: UpdatePlate) {
+/** What a plate is, as its columns hold it. */
+export function plateColumns(plate: UpdatePlate) {
   return {
     name: plate.name,
     kind: plate.kind,
