@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { afterAll, beforeAll, expect, test } from 'vitest';
+import { emptyDocument, writeCabinet } from '../../shared/cabinet-document';
 import { call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
 import { newMount } from '../support/plates';
@@ -122,6 +123,11 @@ test('three thousand mutated requests to every writing address: each a clear ans
     ['put', `${at}/plates/${lab.sparePlateId}/seat`, { mountId: lab.spareMountId, why: 'cleaned' }],
     ['post', `${at}/plates/${lab.sparePlateId}/take-out`, { why: 'cleaned' }],
     ['post', `${at}/plates/${lab.sparePlateId}/files`, { fileId: lab.fileId, kind: 'data-sheet' }],
+    [
+      'post',
+      `${at}/cabinet/import`,
+      { fileText: writeCabinet(emptyDocument, 'csv'), format: 'csv', dryRun: true, planHash: null },
+    ],
     ['post', `${at}/mounts`, newMount({ name: 'F-M' })],
     ['put', `${at}/mounts/${lab.spareMountId}`, newMount({ name: 'F-M' })],
     ['post', `${at}/benches`, benchBody(lab.plateIds, 'b')],

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { emptyDocument, writeCabinet } from '../../shared/cabinet-document';
 import type { Role } from '../../shared/permissions';
 import { problemSchema } from '../../shared/schemas';
 import type { Route } from '../../server/http/route';
@@ -52,6 +53,7 @@ const draftBody = (lab: TestLab) => ({
   toleranceInfidelity: 1e-3,
   targets: [target('t1', 'H')],
 });
+const emptyCabinet = writeCabinet(emptyDocument, 'json');
 const { seat: _seat, ...plateFacts } = plateBody('H-9');
 
 const table: Readonly<Record<string, Row>> = {
@@ -97,6 +99,11 @@ const table: Readonly<Record<string, Row>> = {
   'POST /labs/:labId/plates/:plateId/retire': { least: 'designer', ids: plateId },
   'POST /labs/:labId/plates/:plateId/return': { least: 'designer', ids: plateId },
   'GET /labs/:labId/cabinet': { least: 'guest' },
+  'GET /labs/:labId/cabinet/export': { least: 'guest' },
+  'POST /labs/:labId/cabinet/import': {
+    least: 'designer',
+    body: () => ({ fileText: emptyCabinet, format: 'json', dryRun: true, planHash: null }),
+  },
   'PUT /labs/:labId/plates/:plateId/seat': {
     least: 'designer',
     body: (lab) => ({ mountId: lab.spareMountId, why: 'cleaned' }),
