@@ -4,11 +4,6 @@ import { calibrationInputSchema, lineSchema, updatePlateSchema, writeMountSchema
 /** Names the layout below, and is the first thing that a reader looks for. */
 export const cabinetFormat = 'quarterturn.cabinet/1';
 
-/** The most rows that a file may have: one a calibration, a seat without one, a plate without a seat, an empty mount. */
-export const maxDocumentRows = 10_000;
-/** The most that a file may be, in bytes as UTF-8. */
-export const maxDocumentBytes = 4 * 1024 * 1024;
-
 /** A moment, kept as the database keeps it: UTC, to the millisecond. */
 function momentSchema(what: string) {
   return z.iso

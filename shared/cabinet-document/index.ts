@@ -10,15 +10,12 @@ export {
   type DocumentRef,
   type DocumentSeat,
   emptyDocument,
-  maxDocumentBytes,
-  maxDocumentRows,
   refKey,
 } from './document';
 export { inOrder } from './document-order';
 export { type FileFault, maxFaults } from './faults';
 export { type CabinetFileFormat, cabinetFileFormats, readCabinet, writeCabinet } from './read-document';
 export {
-  countChanges,
   type FieldChange,
   type FieldValue,
   type ImportChange,
@@ -34,3 +31,5 @@ export {
   type ImportResult,
   importResultSchema,
 } from './exchange';
+export { countChanges } from './count-changes';
+export { maxDocumentBytes, maxDocumentRows } from './limits';

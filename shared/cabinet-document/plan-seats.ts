@@ -91,11 +91,11 @@ function againstAdding(
   { open, lastEnd }: { readonly open: DocumentSeat | null; readonly lastEnd: string },
 ): string | null {
   const what = `The seat of ${name} in ${seat.mount.name} ${spanWords(seat)} is not taken`;
+  if (seat.seatedAt < lastEnd || (open !== null && seat.seatedAt < open.seatedAt)) {
+    return `${what}: it is an earlier one that this lab does not have, and only later seats are added.`;
+  }
   if (open !== null) {
     return `${what}: here it sits in ${open.mount.name} since ${open.seatedAt}, and the file does not say when that ended.`;
-  }
-  if (seat.seatedAt < lastEnd) {
-    return `${what}: it is an earlier one that this lab does not have, and only later seats are added.`;
   }
   if (seat.leftAt === null && ref.mount.retiredAt !== null) {
     return `${what}: ${seat.mount.name} is retired here. Return it to the cabinet first.`;

@@ -1,7 +1,8 @@
 import { type CellValue, type CsvColumn, csvColumns, type CsvPart, readCell } from './csv-columns';
 import { CsvParts, type CsvRow } from './csv-parts';
 import { csvRecords } from './csv-records';
-import { type CabinetDocument, maxDocumentRows } from './document';
+import type { CabinetDocument } from './document';
+import { maxDocumentRows } from './limits';
 import type { FaultList } from './faults';
 import { readParts } from './read-parts';
 import { checkDocument } from './check-document';

@@ -1,6 +1,7 @@
 import { canonicalJson } from '../protocol/canonical-json';
 import { checkDocument } from './check-document';
-import { type CabinetDocument, cabinetFormat, maxDocumentBytes, maxDocumentRows } from './document';
+import { type CabinetDocument, cabinetFormat } from './document';
+import { maxDocumentBytes, maxDocumentRows } from './limits';
 import { inOrder } from './document-order';
 import { FaultList, type FileFault } from './faults';
 import { readCsv } from './read-csv';

@@ -68,6 +68,7 @@ const labPages: RouteObject[] = [
   // Before the plates: no plate's id is a word.
   { path: 'cabinet/mounts', lazy: () => import('../features/cabinet/mounts/MountsPage') },
   { path: 'cabinet/mounts/:mountId', lazy: () => import('../features/cabinet/mounts/MountPage') },
+  { path: 'cabinet/exchange', lazy: () => import('../features/exchange/ExchangePage') },
   { path: 'cabinet/:plateId', lazy: () => import('../features/cabinet/CabinetPage') },
   { path: 'cabinet/:plateId/scan', lazy: () => import('../features/scan/ScanPage') },
   { path: 'lab', lazy: () => import('../features/labs/LabPage') },

@@ -116,6 +116,11 @@ describe('what is not taken is said with its reason', () => {
     ]);
   });
 
+  it('an earlier seat is called one, even where the file says nothing of how the present one ended', () => {
+    const plan = planImport(here, file([seat('M-2', -30, -20)], [seat('M-1', 9, null)]));
+    expect(reasons(plan)).toEqual([expect.stringContaining('an earlier one that this lab does not have')]);
+  });
+
   it('a later seat where the file does not say how the present one ended', () => {
     expect(reasons(planImport(here, file([seat('M-2', 31, null)])))).toEqual([
       expect.stringContaining('sits in M-1 since'),
