@@ -82,9 +82,18 @@ function checkSeatTimes({ seat, path }: PlacedSeat, latest: string, report: Repo
   }
 }
 
-/** From when to when, in words. */
-export function spanWords({ seatedAt, leftAt }: Pick<DocumentSeatHead, 'seatedAt' | 'leftAt'>): string {
+/** From when to when, as the file itself writes it. */
+function spanWords({ seatedAt, leftAt }: Pick<DocumentSeatHead, 'seatedAt' | 'leftAt'>): string {
   return leftAt === null ? `since ${seatedAt}` : `from ${seatedAt} to ${leftAt}`;
+}
+
+/** A moment as a sentence says it to a person of any time zone. */
+export const saidMoment = (moment: string): string => `${moment.slice(0, 16).replace('T', ' ')} UTC`;
+
+export function saidSpan({ seatedAt, leftAt }: Pick<DocumentSeatHead, 'seatedAt' | 'leftAt'>): string {
+  return leftAt === null
+    ? `since ${saidMoment(seatedAt)}`
+    : `from ${saidMoment(seatedAt)} to ${saidMoment(leftAt)}`;
 }
 
 function checkOneAtATime(seats: readonly PlacedSeat[], what: string, report: Report): void {

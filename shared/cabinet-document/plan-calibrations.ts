@@ -1,4 +1,4 @@
-import { clockSlackMs, later } from './check-document';
+import { clockSlackMs, later, saidMoment } from './check-document';
 import { calibrationsOf, type DocumentCalibration } from './document';
 import type { ImportChange, ImportRefusal } from './import-plan';
 import type { PlannedPlate, PlannedSeat } from './plan-seats';
@@ -37,8 +37,12 @@ export function planCalibrations(plate: PlannedPlate): Planned {
     if (seat.state === 'refused') {
       position += seat.wanted.calibrations.length;
       const count = seat.wanted.calibrations.length;
-      if (count > 0)
-        refuse(`${count} of ${plate.wanted.name} in ${seat.wanted.mount.name} fall with their seat.`);
+      const [fall, whose] = count === 1 ? ['calibration falls', 'its'] : ['calibrations fall', 'their'];
+      if (count > 0) {
+        refuse(
+          `${count} of the file’s ${fall} with ${whose} seat of ${plate.wanted.name} in ${seat.wanted.mount.name}.`,
+        );
+      }
       continue;
     }
     for (const calibration of seat.wanted.calibrations) {
@@ -105,7 +109,7 @@ function fallsWith(
 }
 
 const said = ({ measuredAt }: DocumentCalibration, name: string): string =>
-  `The calibration of ${name} of ${measuredAt}`;
+  `The calibration of ${name} of ${saidMoment(measuredAt)}`;
 
 /** Whether two are the same measurement. Who recorded it is a name, and a person may have changed theirs. */
 function sameMeasurement(one: DocumentCalibration, other: DocumentCalibration): boolean {
@@ -145,7 +149,7 @@ function againstAdding(
     return `${what} differs from the one of that moment here. What was measured is never changed: record a new one.`;
   }
   if (known !== null && known.leftAt !== null && calibration.measuredAt > later(known.leftAt, clockSlackMs)) {
-    return `${what} was measured after the seat in ${known.mount.name} ended here, at ${known.leftAt}.`;
+    return `${what} was measured after the seat in ${known.mount.name} ended here, at ${saidMoment(known.leftAt)}.`;
   }
   return null;
 }

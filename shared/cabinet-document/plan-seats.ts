@@ -1,4 +1,4 @@
-import { clockSlackMs, later, spanWords } from './check-document';
+import { clockSlackMs, later, saidMoment, saidSpan } from './check-document';
 import {
   type CabinetDocument,
   type DocumentPlate,
@@ -65,11 +65,12 @@ function endOf(
   if (here.leftAt === leftAt && here.leftWhy === leftWhy) return { end: null, reason: null };
   const seat = `The seat of ${name} in ${here.mount.name}`;
   if (here.leftAt !== null || leftAt === null || leftWhy === null) {
-    const ends = here.leftAt === null ? 'goes on' : `ended at ${here.leftAt} (${here.leftWhy ?? ''})`;
-    const other = leftAt === null ? 'goes on' : `ended at ${leftAt} (${leftWhy ?? ''})`;
+    const ends =
+      here.leftAt === null ? 'goes on' : `ended at ${saidMoment(here.leftAt)} (${here.leftWhy ?? ''})`;
+    const other = leftAt === null ? 'goes on' : `ended at ${saidMoment(leftAt)} (${leftWhy ?? ''})`;
     return {
       end: null,
-      reason: `${seat} from ${here.seatedAt} ${ends} here and ${other} in the file. How a seat ended is never changed.`,
+      reason: `${seat} from ${saidMoment(here.seatedAt)} ${ends} here and ${other} in the file. How a seat ended is never changed.`,
     };
   }
   const newest = here.calibrations.reduce(
@@ -79,7 +80,7 @@ function endOf(
   if (newest > later(leftAt, clockSlackMs)) {
     return {
       end: null,
-      reason: `${seat} ended at ${leftAt} in the file, but it was measured there at ${newest} here.`,
+      reason: `${seat} ended at ${saidMoment(leftAt)} in the file, but it was measured there at ${saidMoment(newest)} here.`,
     };
   }
   return { end: { leftAt, leftWhy }, reason: null };
@@ -90,12 +91,12 @@ function againstAdding(
   name: string,
   { open, lastEnd }: { readonly open: DocumentSeat | null; readonly lastEnd: string },
 ): string | null {
-  const what = `The seat of ${name} in ${seat.mount.name} ${spanWords(seat)} is not taken`;
+  const what = `The seat of ${name} in ${seat.mount.name} ${saidSpan(seat)} stays out`;
   if (seat.seatedAt < lastEnd || (open !== null && seat.seatedAt < open.seatedAt)) {
     return `${what}: it is an earlier one that this lab does not have, and only later seats are added.`;
   }
   if (open !== null) {
-    return `${what}: here it sits in ${open.mount.name} since ${open.seatedAt}, and the file does not say when that ended.`;
+    return `${what}: here it sits in ${open.mount.name} since ${saidMoment(open.seatedAt)}, and the file does not say when that ended.`;
   }
   if (seat.leftAt === null && ref.mount.retiredAt !== null) {
     return `${what}: ${seat.mount.name} is retired here. Return it to the cabinet first.`;
@@ -139,7 +140,7 @@ export function refuseTakenMounts(present: CabinetDocument, planned: readonly Pl
         continue;
       }
       seat.state = 'refused';
-      seat.reason = `The seat of ${plate.name} in ${seat.wanted.mount.name} ${spanWords(seat.wanted)} is not taken: ${other.plate} sits there ${spanWords(other)}.`;
+      seat.reason = `The seat of ${plate.name} in ${seat.wanted.mount.name} ${saidSpan(seat.wanted)} stays out: ${other.plate} sits there ${saidSpan(other)}.`;
     }
   }
 }

@@ -112,7 +112,7 @@ describe('what is not taken is said with its reason', () => {
     expect(kinds(plan)).toEqual(['seat-ended']);
     expect(reasons(plan)).toEqual([
       expect.stringContaining('an earlier one that this lab does not have'),
-      expect.stringContaining('fall with their seat'),
+      expect.stringContaining('falls with its seat'),
     ]);
   });
 

@@ -24,7 +24,7 @@ export function ChooseFile({ onFile }: { readonly onFile: (file: CabinetFile) =>
     if (dropped !== undefined) void take(dropped);
   };
   return (
-    <div className="grid gap-5 lg:grid-cols-2 lg:gap-10">
+    <div className="grid grid-cols-1 items-start gap-5 lg:grid-cols-2 lg:gap-10">
       <div
         onDragOver={(event) => {
           event.preventDefault();

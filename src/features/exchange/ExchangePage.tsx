@@ -18,13 +18,13 @@ export function Component() {
           <TextLink to={`/labs/${lab.id}/cabinet/mounts`}>Mounts</TextLink>
         </nav>
       </header>
-      <div className="grid gap-10">
+      <div className="grid grid-cols-1 gap-10">
         <ExportSection labId={lab.id} />
         <section aria-labelledby="import">
           <SectionHead id="import">Import</SectionHead>
           {may('cabinet.write') ? (
             <>
-              <p className="mt-2 mb-5 max-w-[70ch]">
+              <p className="mt-2 mb-5 max-w-[90ch]">
                 A file is looked at first, and what it would change is shown before anything is. Plates and
                 mounts are matched by name. An import adds and corrects; it removes nothing, and changes
                 nothing that was measured.
@@ -32,7 +32,7 @@ export function Component() {
               <ImportSection labId={lab.id} />
             </>
           ) : (
-            <p className="mt-2 max-w-[70ch]">
+            <p className="mt-2 max-w-[90ch]">
               Designers and leads import plates. Ask the lab’s lead for that role.
             </p>
           )}

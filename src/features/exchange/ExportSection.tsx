@@ -7,7 +7,7 @@ export function ExportSection({ labId }: { readonly labId: string }) {
   return (
     <section aria-labelledby="export">
       <SectionHead id="export">Export</SectionHead>
-      <p className="mt-2 max-w-[70ch]">
+      <p className="mt-2 max-w-[90ch]">
         Every mount and plate with its seats and calibrations, the retired ones too. CSV opens in a
         spreadsheet, JSON is for programs; either can be imported again, exactly. Scans, fits, photos and data
         sheets are not in it.

@@ -23,7 +23,7 @@ export function FaultTable({
         {places.map(({ row, column, message }, index) => (
           <DataRow key={index}>
             {inRows && <DataCell numeric>{row === '' ? missingSign : row}</DataCell>}
-            <DataCell className="font-mono break-all">
+            <DataCell className={column === '' ? undefined : 'min-w-38 font-mono break-all'}>
               {column === '' ? (row === '' ? 'the whole file' : 'the whole row') : column}
             </DataCell>
             <DataCell>{message}</DataCell>

@@ -30,10 +30,8 @@ export function PlanView({ plan, onImport, onLeave }: PlanViewProps) {
           <ul className="mt-1">
             {plan.refused.map(({ what, name, reason }, index) => (
               <li key={index} className="border-b border-hair py-2">
-                <span className="font-strong">
-                  {what} {what === 'seat' || what === 'calibration' ? `of ${name}` : name}
-                </span>{' '}
-                <span className="text-fault font-strong">not taken.</span> {reason}
+                <span className="font-strong">{name}</span>{' '}
+                <span className="font-strong text-fault">{what} not taken.</span> {reason}
               </li>
             ))}
           </ul>

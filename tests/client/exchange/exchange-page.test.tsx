@@ -86,6 +86,15 @@ const csvFile = (text = writeCabinet(wanted, 'csv'), name = 'cabinet.csv') =>
 const choose = (person: ReturnType<typeof open>, file = csvFile()) =>
   person.upload(screen.getByLabelText(/A file to choose/u), file);
 
+/** The words of a row as a wide window shows them; what only a phone has is left out. */
+const shownCells = (row: HTMLElement): readonly string[] =>
+  [...row.children].map((cell) => {
+    const copy = cell.cloneNode(true);
+    if (copy instanceof HTMLElement)
+      for (const extra of copy.querySelectorAll('.sm\\:hidden')) extra.remove();
+    return copy.textContent ?? '';
+  });
+
 describe('export', () => {
   it('is there for a guest as CSV and JSON and says what is not in it; import is not', () => {
     open('guest');
@@ -106,20 +115,27 @@ describe('import', () => {
     expect(sent).toMatchObject([
       { dryRun: true, planHash: null, format: 'csv', fileText: writeCabinet(wanted, 'csv') },
     ]);
-    const rows = within(table)
-      .getAllByRole('row')
-      .slice(1)
-      .map(({ textContent }) => textContent);
+    const rows = within(table).getAllByRole('row').slice(1).map(shownCells);
     expect(rows).toEqual([
-      'mount M-1 changesbacklash, degrees00.2',
-      'mount M-2 new' + 'mount—by hand, steps of 0.1°',
-      expect.stringMatching(/^H-1 in M-1 endsseatsince .*ends .*: Cleaned\.$/u),
-      'plate Q-1 new' + 'plate—half-wave plate for 810 nm',
-      expect.stringMatching(/^Q-1 in M-2 newseat—since /u),
-      expect.stringMatching(
-        /^Q-1 in M-2 newcalibration of .*—179\.2\(3\)°, zero 12\.40\(5\)° at 810 nm, by Ines Okafor$/u,
-      ),
-      expect.stringMatching(/^Q-1 in M-2 newcalibration of /u),
+      ['mount M-1', 'changes', 'backlash, degrees', '0', '0.2'],
+      ['mount M-2', 'new', 'mount', '—', 'by hand, steps of 0.1°'],
+      [
+        'H-1 in M-1',
+        'ends',
+        'seat',
+        expect.stringMatching(/^since /u),
+        expect.stringMatching(/^ends .*: Cleaned\.$/u),
+      ],
+      ['plate Q-1', 'new', 'plate', '—', 'half-wave plate for 810 nm'],
+      ['Q-1 in M-2', 'new', 'seat', '—', expect.stringMatching(/^since /u)],
+      [
+        'Q-1 in M-2',
+        'new',
+        expect.stringMatching(/^calibration of /u),
+        '—',
+        '179.2(3)°, zero 12.40(5)° at 810 nm, by Ines Okafor',
+      ],
+      ['Q-1 in M-2', 'new', expect.stringMatching(/^calibration of /u), '—', expect.any(String)],
     ]);
     expect(
       screen.getByText(/New: 1 mount, 1 plate, 1 seat and 2 calibrations\. Changed: 1 mount\. 1 seat ends/u),
