@@ -39,7 +39,7 @@ function scanFile(zeroDeg: number): string {
   return ['# bench log', 'dial (deg);crossed (uW);parallel (uW)', ...rows, ''].join('\n');
 }
 
-async function labOf(page: Page): Promise<string> {
+function labOf(page: Page): string {
   return /\/labs\/([^/]+)/u.exec(page.url())?.[1] ?? '';
 }
 
@@ -76,7 +76,7 @@ async function dialOf(page: Page): Promise<string> {
 it('takes a plate from unknown to calibrated, seats it anew, shows what went stale, and makes the new draft', async () => {
   const { page, context, faults } = await openPage(browser, product);
   await signIn(page, 'Ines Varga');
-  const labId = await labOf(page);
+  const labId = labOf(page);
 
   // Unknown: it comes into the cabinet in a mount, and nothing was measured of it.
   await page.goto(`/labs/${labId}/cabinet?do=add`);
