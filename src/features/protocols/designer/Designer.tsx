@@ -11,7 +11,7 @@ import { useLab } from '../../labs';
 import { addRows, chooseBench, newTargets, writeExpression } from '../draft-edits';
 import { AddRowsDialog } from '../rows/AddRowsDialog';
 import { useDraft } from '../use-draft';
-import { useLater } from '../use-later';
+import { useLater } from '../../../lib/use-later';
 import { useSolvedRows } from '../use-solved-rows';
 import { BenchWaits } from './BenchWaits';
 import { BudgetSection } from './BudgetSection';

@@ -67,7 +67,7 @@ export const TargetRow = memo(function TargetRow(props: TargetRowProps) {
   }, [selected, editing, blank]);
 
   return (
-    <tbody ref={measure} data-row={target.id}>
+    <tbody ref={measure} data-row={target.id} data-index={place}>
       <tr
         ref={row}
         aria-rowindex={rowIndex}
