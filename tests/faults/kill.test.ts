@@ -330,7 +330,10 @@ async function checkRecord(protocolId: string, versions: number, readings: numbe
   const [counts] = await rows(`select (select count(*)::integer from idempotency_keys) as keys,
     (select count(*)::integer from versions) + (select count(*)::integer from readings) + (select count(*)::integer from runs)
     + (select count(*)::integer from protocols) + (select count(*)::integer from plates) + (select count(*)::integer from benches)
-    + (select count(*)::integer from labs) + (select count(*)::integer from invitations) as made`);
+    + (select count(*)::integer from labs) + (select count(*)::integer from invitations)
+    + (select count(*)::integer from files) + (select count(*)::integer from plate_files)
+    -- The others came with a plate, under its key.
+    + (select count(*)::integer from mounts m where not exists (select from seats s where s.mount_id = m.id)) as made`);
   const { keys, made } = z.object({ keys: z.number(), made: z.number() }).parse(counts);
   expect(keys).toBe(made);
   await client.end();
