@@ -2,11 +2,11 @@ import type { Knex } from 'knex';
 import PgBoss from 'pg-boss';
 import { z } from 'zod';
 import type { Transaction } from '../db/database';
+import { rowsOf } from '../db/rows';
 import type { JobData, JobKind } from './queues';
 
 /** What the package's statements are given. */
 const bindable = z.union([z.string(), z.number(), z.boolean(), z.null()]);
-const answer = z.object({ rows: z.array(z.unknown()) });
 
 /** Writes a job's row and keeps nothing: each job goes through the transaction that it is given. */
 const sender = new PgBoss({
@@ -57,8 +57,7 @@ function overTransaction(transaction: Transaction): PgBoss.Db {
         bindings.push(bindable.parse(values[Number(number) - 1] ?? null));
         return '?';
       });
-      const { rows } = answer.parse(await transaction.raw(sql, bindings));
-      return { rows };
+      return { rows: [...rowsOf(await transaction.raw(sql, bindings))] };
     },
   };
 }

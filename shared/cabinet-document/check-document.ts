@@ -1,3 +1,4 @@
+import { clockSlackMs } from '../clock-slack';
 import {
   type CabinetDocument,
   calibrationsOf,
@@ -8,9 +9,6 @@ import {
 } from './document';
 import type { PartPath } from './faults';
 import type { Report } from './read-parts';
-
-/** Clocks differ by this much, and a field takes whole minutes. */
-export const clockSlackMs = 5 * 60 * 1000;
 
 /** A moment later by `ms`, written as moments are. */
 export const later = (moment: string, ms: number): string => new Date(Date.parse(moment) + ms).toISOString();

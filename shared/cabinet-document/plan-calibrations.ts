@@ -1,4 +1,5 @@
-import { clockSlackMs, later, saidMoment } from './check-document';
+import { clockSlackMs } from '../clock-slack';
+import { later, saidMoment } from './check-document';
 import { calibrationsOf, type DocumentCalibration } from './document';
 import type { ImportChange, ImportRefusal } from './import-plan';
 import type { PlannedPlate, PlannedSeat } from './plan-seats';

@@ -1,4 +1,5 @@
-import { clockSlackMs, later, saidMoment, saidSpan } from './check-document';
+import { clockSlackMs } from '../clock-slack';
+import { later, saidMoment, saidSpan } from './check-document';
 import {
   type CabinetDocument,
   type DocumentPlate,

@@ -12,3 +12,4 @@ export {
   type ScanValues,
 } from './fit-scan';
 export { type DescribedPlate, type MeasuredBefore, nominalRetardance, predictedRetardance } from './nominal';
+export { asMeasuredBefore, recordedScan } from './recorded';

@@ -11,6 +11,7 @@ import {
 } from './common';
 import { attachedFileSchema, fileSchema } from './files';
 import { mountSchema, seatSchema, writeMountSchema } from './mounts';
+import { scanLightKindSchema } from './scans';
 
 const plateKinds = ['half', 'quarter', 'other'] as const;
 export const plateKindSchema = z.enum(plateKinds);
@@ -118,7 +119,10 @@ export type CabinetCounts = z.infer<typeof cabinetCountsSchema>;
 /** A calibration with the seat that it was measured in, and the scan that it was fitted from. */
 const seatedCalibrationSchema = calibrationSchema.extend({
   seatId: idSchema,
-  scan: fileSchema.pick({ name: true, sha256: true, sizeBytes: true }).nullable(),
+  scan: fileSchema
+    .pick({ name: true, sha256: true, sizeBytes: true })
+    .extend({ light: scanLightKindSchema })
+    .nullable(),
 });
 export type SeatedCalibration = z.infer<typeof seatedCalibrationSchema>;
 

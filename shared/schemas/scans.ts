@@ -28,6 +28,9 @@ const extinctionSchema = z
   })
   .nullable();
 
+/** Between linear polarisers, or behind light whose state is known. */
+export const scanLightKindSchema = z.enum(['linear', 'known']);
+
 /** How the light went. Expressions are in the lab's convention. */
 export const scanLightSchema = z.discriminatedUnion('kind', [
   z.strictObject({

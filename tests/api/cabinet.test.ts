@@ -163,7 +163,7 @@ describe('a bench whose plate was taken out', () => {
     expect((await bench()).notReady.map(({ why }) => why)).toEqual(['not-calibrated']);
     await answered(
       call(harness, lead, 'post', path(`/plates/${quarter}/calibrations`), {
-        body: quarterCalibration({ offsetDeg: 12 }),
+        body: quarterCalibration({ offsetDeg: 12, measuredAt: new Date().toISOString() }),
       }),
       calibrationSchema,
     );
@@ -188,6 +188,18 @@ describe('a calibration', () => {
     await change(plate.id, 'post', '/take-out', { why: 'Moved.' });
     const refused = await change(plate.id, 'post', '/calibrations', calibrationBody());
     expect([refused.status, faultOf(refused.text).code]).toEqual([409, 'not-seated']);
+  });
+
+  test('from before the plate was last taken out is refused, since that zero is void', async () => {
+    const plate = await addPlate('C-0');
+    await change(plate.id, 'put', '/seat', { mountId: plate.seat?.mountId, why: 'Knocked.' });
+    const record = (measuredAt: string) =>
+      change(plate.id, 'post', '/calibrations', calibrationBody({ measuredAt }));
+    const old = await record('2026-06-01T10:00:00Z');
+    expect([old.status, faultOf(old.text).path]).toEqual([422, 'measuredAt']);
+    expect(faultOf(old.text).detail).toContain('C-0 was taken out of its mount after this');
+    expect((await plateNow(plate.id)).calibration).toBeNull();
+    expect((await record(new Date().toISOString())).status).toBe(201);
   });
 
   test('leaves its question open until another one settles it, and answers only what was asked', async () => {

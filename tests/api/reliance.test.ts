@@ -137,7 +137,7 @@ test('a plate taken out voids the dials; seated and calibrated anew they stay vo
     }),
     cabinetPlateSchema,
   );
-  await calibrate(second, quarterCalibration({ measuredAt: '2026-06-03T10:00:00Z', offsetDeg: 11 }));
+  await calibrate(second, quarterCalibration({ measuredAt: new Date().toISOString(), offsetDeg: 11 }));
   const { report } = await settled(second);
   expect(report?.voids).toEqual([{ why: 'seat-ended', plateId: second, plateName: 'Q-B' }]);
   expect(report).toMatchObject({ oldDials: null, waits: [], resolved: { within: report?.frozen.within } });

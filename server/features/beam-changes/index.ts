@@ -1,1 +1,2 @@
+export { isNewestVersion } from './newest-version';
 export { requestReliance } from './request-reliance';

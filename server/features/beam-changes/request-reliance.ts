@@ -1,8 +1,10 @@
 import { z } from 'zod';
 import type { Transaction } from '../../db/database';
+import { rowsOf } from '../../db/rows';
 import { queueJob } from '../../jobs';
+import { isNewestVersion } from './newest-version';
 
-const rowsOf = z.object({ rows: z.array(z.object({ version_id: z.string() })) });
+const reportRows = z.array(z.object({ version_id: z.string() }));
 
 /** What was changed: a plate (calibrated, seated, taken out), a mount, or a bench. */
 type Changed = { readonly plateId: string } | { readonly benchId: string };
@@ -28,13 +30,12 @@ export async function requestReliance(
   const found: unknown = await transaction.raw(
     `insert into reliance_reports as r (lab_id, version_id, waiting, done, total)
       select v.lab_id, v.id, true, 0, v.target_count from versions v
-      where v.lab_id = ? and ${where} and not exists
-        (select 1 from versions w where w.lab_id = v.lab_id and w.protocol_id = v.protocol_id and w.number > v.number)
+      where v.lab_id = ? and ${where} and ${isNewestVersion}
       order by v.id
       on conflict (version_id) do update set waiting = true, done = 0
       returning version_id`,
     [labId, id],
   );
-  const versionIds = rowsOf.parse(found).rows.map(({ version_id }) => version_id);
+  const versionIds = reportRows.parse(rowsOf(found)).map(({ version_id }) => version_id);
   if (versionIds.length > 0) await queueJob(transaction, 'reliance', { labId, versionIds });
 }

@@ -2,8 +2,8 @@ import { z } from 'zod';
 import { attachmentKindSchema, type AttachedFile } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
+import { rowsOf } from '../../db/rows';
 import { fileColumns, fileRow, mapFile } from '../files';
-import { rowsOf } from './plate-store';
 
 const attachedRow = fileRow.extend({ kind: attachmentKindSchema });
 
@@ -25,7 +25,7 @@ export async function listAttachedFiles(
   );
   return z
     .array(attachedRow)
-    .parse(rowsOf.parse(found).rows)
+    .parse(rowsOf(found))
     .map((row) => ({ ...mapFile(row), kind: row.kind }));
 }
 

@@ -6,7 +6,7 @@ import { plateRoutes } from './plate-routes';
 import { scanRoutes } from './scan-routes';
 import { seatRoutes } from './seat-routes';
 
-export { insertCalibration } from './calibration-store';
+export { insertCalibration, measuredColumns } from './calibration-store';
 export { mountColumns } from './mount-store';
 export {
   asCabinetPlate,
@@ -15,10 +15,12 @@ export {
   calibrationRow,
   mapCalibration,
   mapMountColumns,
+  mapPlateColumns,
   mountColumnsRow,
+  plateColumnsRow,
   type StoredPlate,
 } from './plate-rows';
-export { findPlate, findPlates, findPlatesInBeams, hasAnyPlate, plateColumns, rowsOf } from './plate-store';
+export { findPlate, findPlates, findPlatesInBeams, hasAnyPlate, plateColumns } from './plate-store';
 export { addPlate, seatPlate, takeOutPlate } from './plate-work';
 
 export function cabinetRoutes(): readonly Route[] {

@@ -3,10 +3,10 @@ import type { Thing } from '../../../shared/permissions';
 import type { CabinetMount, MountQuery, WriteMount } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
+import { rowsOf } from '../../db/rows';
 import { readCursor } from '../../http/cursor';
 import { jsonCursor, writeCursor } from '../../http/json-cursor';
 import { mapMountColumns, mountColumnsRow } from './plate-rows';
-import { rowsOf } from './plate-store';
 
 const mountRow = mountColumnsRow.extend({
   id: z.string(),
@@ -105,7 +105,7 @@ export async function listMountPage(
       limit: query.limit + 1,
     },
   );
-  const mounts = rowsOf.parse(found).rows.map(mapMount);
+  const mounts = rowsOf(found).map(mapMount);
   const items = mounts.slice(0, query.limit);
   const last = items.at(-1);
   const more = mounts.length > query.limit && last !== undefined;
@@ -117,7 +117,7 @@ export async function findMount(
   { labId, mountId }: { readonly labId: string; readonly mountId: string },
 ): Promise<StoredMount | null> {
   const found: unknown = await transaction.raw(`${mountQuery} and m.id = :mountId`, { labId, mountId });
-  const [row] = rowsOf.parse(found).rows;
+  const [row] = rowsOf(found);
   return row === undefined ? null : mapMount(row);
 }
 

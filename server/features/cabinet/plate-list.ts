@@ -10,11 +10,12 @@ import {
   type PlateQuery,
 } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
+import { rowsOf } from '../../db/rows';
 import { readCursor } from '../../http/cursor';
 import { jsonCursor, writeCursor } from '../../http/json-cursor';
 import { healthWhere } from './health-where';
 import { mapPlate, type StoredPlate } from './plate-rows';
-import { plateQuery, rowsOf } from './plate-store';
+import { plateQuery } from './plate-store';
 
 /** What a list is sorted by, as SQL and as a cursor keeps it; the plate's id decides between equals. */
 const sorts = {
@@ -89,7 +90,7 @@ export async function listPlatePage(
     afterId: after?.id ?? null,
     limit: query.limit + 1,
   });
-  const plates = rowsOf.parse(found).rows.map(mapPlate);
+  const plates = rowsOf(found).map(mapPlate);
   const items = plates.slice(0, query.limit);
   const last = items.at(-1);
   const more = plates.length > query.limit && last !== undefined;
@@ -118,7 +119,7 @@ export async function countPlates(
       where p.lab_id = :labId ${search === '' ? '' : `and ${searchWhere}`} group by p.kind`,
     { labId: facts.labId, now: facts.now, dueDays: facts.dueDays, search },
   );
-  const rows = z.array(countsRow).parse(rowsOf.parse(found).rows);
+  const rows = z.array(countsRow).parse(rowsOf(found));
   const mounts: unknown = await transaction('mounts')
     .where({ lab_id: facts.labId, retired_at: null })
     .count({ mounts: '*' })

@@ -21,7 +21,7 @@ import { findLab } from '../labs';
 import { listAttachedFiles } from './attached-files';
 import { listCalibrations } from './calibration-store';
 import { countPlates, listPlatePage } from './plate-list';
-import { asCabinetPlate } from './plate-rows';
+import { asCabinetPlate, type StoredPlate } from './plate-rows';
 import { findPlate, findPlateToChange, setRetired, updatePlate } from './plate-store';
 import { addPlate, namedOnce } from './plate-work';
 import { listSeats } from './seat-store';
@@ -110,7 +110,7 @@ export function plateRoutes(): readonly Route[] {
       needsMatch: true,
       handler: async ({ body, thing, labId, transaction, audit, expectedRevision, now }) => {
         const key = { labId, plateId: thing.id };
-        requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
+        await requireNewest(transaction, thing, expectedRevision, now);
         await namedOnce({ plate: body.name }, () => updatePlate(transaction, thing, body));
         await requestReliance(transaction, labId, { plateId: thing.id });
         const { labId: _labId, benches: _benches, seat: _seat, calibration: _calibration, ...before } = thing;
@@ -129,7 +129,7 @@ export function plateRoutes(): readonly Route[] {
       needsMatch: true,
       handler: async ({ thing, labId, transaction, audit, expectedRevision, now }) => {
         const key = { labId, plateId: thing.id };
-        requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
+        await requireNewest(transaction, thing, expectedRevision, now);
         if (thing.retiredAt !== null) throw conflict('already-retired', `${thing.name} is retired already.`);
         const [bench] = thing.benches;
         if (bench !== undefined) {
@@ -154,7 +154,7 @@ export function plateRoutes(): readonly Route[] {
       needsMatch: true,
       handler: async ({ thing, labId, transaction, audit, expectedRevision, now }) => {
         const key = { labId, plateId: thing.id };
-        requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
+        await requireNewest(transaction, thing, expectedRevision, now);
         if (thing.retiredAt === null) {
           throw conflict('not-retired', `${thing.name} is in the cabinet already.`);
         }
@@ -169,6 +169,18 @@ export function plateRoutes(): readonly Route[] {
       },
     }),
   ];
+}
+
+/** @throws ProblemError 412 with the plate as it is, where it was changed since it was looked at. */
+export async function requireNewest(
+  transaction: Transaction,
+  plate: StoredPlate,
+  expectedRevision: number | null,
+  now: Date,
+): Promise<void> {
+  if (expectedRevision === plate.revision) return;
+  const { body } = await plateReply(transaction, { labId: plate.labId, plateId: plate.id }, now);
+  requireRevision(expectedRevision, plate.revision, body);
 }
 
 /** A plate as it stands now, under its revision. */

@@ -83,9 +83,8 @@ export function mapCalibration(row: z.infer<typeof calibrationRow>): Calibration
   };
 }
 
-const plateRow = z.object({
-  id: z.string(),
-  lab_id: z.string(),
+/** What a plate is, as its columns. */
+export const plateColumnsRow = z.object({
   name: z.string(),
   kind: plateKindSchema,
   design_wavelength_nm: z.number(),
@@ -99,6 +98,30 @@ const plateRow = z.object({
   damage_note: z.string(),
   note: z.string(),
   retired_at: z.date().nullable(),
+});
+
+/** What a plate is from its columns. */
+export function mapPlateColumns(row: z.infer<typeof plateColumnsRow>) {
+  const { coating_from_nm: from, coating_to_nm: to } = row;
+  return {
+    name: row.name,
+    kind: row.kind,
+    designWavelengthNm: row.design_wavelength_nm,
+    construction: row.construction,
+    material: row.material,
+    order: row.whole_waves,
+    serial: row.serial,
+    clearApertureMm: row.clear_aperture_mm,
+    coatingNm: from === null || to === null ? null : { from, to },
+    damageNote: row.damage_note,
+    note: row.note,
+    retiredAt: row.retired_at?.toISOString() ?? null,
+  };
+}
+
+const plateRow = plateColumnsRow.extend({
+  id: z.string(),
+  lab_id: z.string(),
   revision: z.number(),
   benches: z.array(z.strictObject({ id: z.string(), name: z.string() })),
 });
@@ -121,20 +144,7 @@ export function mapPlate(unread: unknown): StoredPlate {
   return {
     id: row.id,
     labId: row.lab_id,
-    name: row.name,
-    kind: row.kind,
-    designWavelengthNm: row.design_wavelength_nm,
-    construction: row.construction,
-    material: row.material,
-    order: row.whole_waves,
-    serial: row.serial,
-    clearApertureMm: row.clear_aperture_mm,
-    coatingNm:
-      row.coating_from_nm === null || row.coating_to_nm === null
-        ? null
-        : { from: row.coating_from_nm, to: row.coating_to_nm },
-    damageNote: row.damage_note,
-    note: row.note,
+    ...mapPlateColumns(row),
     seat:
       seat.seat_id === null
         ? null
@@ -145,7 +155,6 @@ export function mapPlate(unread: unknown): StoredPlate {
             seatedAt: seat.seated_at.toISOString(),
           },
     calibration: calibration.calibration_id === null ? null : mapCalibration(calibration),
-    retiredAt: row.retired_at?.toISOString() ?? null,
     benches: row.benches,
     revision: row.revision,
   };

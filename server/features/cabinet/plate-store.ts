@@ -1,11 +1,9 @@
-import { z } from 'zod';
 import type { UpdatePlate } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
+import { rowsOf } from '../../db/rows';
 import { requestReliance } from '../beam-changes';
 import { calibrationColumns, mapPlate, type StoredPlate } from './plate-rows';
-
-export const rowsOf = z.object({ rows: z.array(z.unknown()) });
 
 /** Plates with their present seat and its newest calibration, as the database's own triggers keep them. */
 export const plateQuery = `
@@ -32,7 +30,7 @@ export async function findPlates(
 ): Promise<StoredPlate[]> {
   if (plateIds.length === 0) return [];
   const found: unknown = await transaction.raw(`${plateQuery} and p.id = any(?)`, [labId, [...plateIds]]);
-  return rowsOf.parse(found).rows.map(mapPlate);
+  return rowsOf(found).map(mapPlate);
 }
 
 /** The plates that some bench in use has in its beam, by name. */
@@ -42,7 +40,7 @@ export async function findPlatesInBeams(transaction: Transaction, labId: string)
       order by p.name collate by_number, p.id`,
     [labId, labId],
   );
-  return rowsOf.parse(found).rows.map(mapPlate);
+  return rowsOf(found).map(mapPlate);
 }
 
 export async function hasAnyPlate(transaction: Transaction, labId: string): Promise<boolean> {

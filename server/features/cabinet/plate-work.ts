@@ -1,3 +1,4 @@
+import { clockSlackMs } from '../../../shared/clock-slack';
 import type { CreatePlate, SeatPlate } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
@@ -7,7 +8,7 @@ import { insertCalibration } from './calibration-store';
 import { findMountToChange, insertMount, type StoredMount } from './mount-store';
 import type { StoredPlate } from './plate-rows';
 import { insertPlate } from './plate-store';
-import { endSeat, insertSeat } from './seat-store';
+import { endSeat, insertSeat, lastTakenOut } from './seat-store';
 
 /** Where and by whom something of a cabinet is written. */
 export interface CabinetPlace {
@@ -15,9 +16,6 @@ export interface CabinetPlace {
   readonly userId: string;
   readonly now: Date;
 }
-
-/** A tablet's clock may be ahead of ours by this much. */
-const clockSlackMs = 5 * 60 * 1000;
 
 /** The indexes that keep names apart: to look first would leave a moment between. */
 const named: Readonly<Record<string, { readonly what: string; readonly path: string }>> = {
@@ -50,6 +48,25 @@ export async function namedOnce<Result>(
 export function requirePast(measuredAt: string, now: Date, path: string): void {
   if (Date.parse(measuredAt) <= now.getTime() + clockSlackMs) return;
   throw refused([{ path, message: 'This is in the future. Write when it was measured.' }]);
+}
+
+/**
+ * A zero that was measured before the plate was last taken out is void, whoever writes it down later. Of a first seat
+ * nothing is asked: a plate may have stood in its mount for years before it came into the cabinet.
+ */
+export async function requireInSeat(
+  transaction: Transaction,
+  plate: StoredPlate,
+  measuredAt: string,
+): Promise<void> {
+  const out = await lastTakenOut(transaction, { labId: plate.labId, plateId: plate.id });
+  if (out === null || Date.parse(measuredAt) >= out.getTime() - clockSlackMs) return;
+  throw refused([
+    {
+      path: 'measuredAt',
+      message: `${plate.name} was taken out of its mount after this, so what was measured then is void. Write when it was measured in its present seat.`,
+    },
+  ]);
 }
 
 /** As the database keeps it, so that this answer and the next are the same text. */

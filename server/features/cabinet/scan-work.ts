@@ -3,8 +3,9 @@ import { parseState } from '../../../shared/optics/expression';
 import type { LinearScanFit } from '../../../shared/optics/calibration';
 import type { Stokes } from '../../../shared/optics/stokes';
 import {
+  asMeasuredBefore,
   fitScan,
-  type MeasuredBefore,
+  recordedScan,
   recordProblem,
   type ScanAnswer,
   type ScanLight,
@@ -105,17 +106,8 @@ async function earlierScan(
   if (record.light.kind !== 'linear') {
     throw refused([{ path, message: 'The scan before has to be one between polarisers. Choose another.' }]);
   }
-  const answer = fitScan({
-    bytes: await readBytes(transaction, { labId: lab.id, fileId: found.calibration.fileId }),
-    columns: record.columns,
-    light: record.light,
-    leftOutLines: record.leftOut.map(({ line }) => line),
-    plate,
-    direction: record.direction,
-    wavelengthNm: found.calibration.wavelengthNm,
-    temperatureC: found.calibration.temperatureC,
-    measuredBefore: null,
-  });
+  const bytes = await readBytes(transaction, { labId: lab.id, fileId: found.calibration.fileId });
+  const answer = fitScan(recordedScan(found.calibration, record, bytes, plate));
   if (answer.kind !== 'fitted' || answer.found.kind !== 'linear') {
     throw new Error('a scan that was recorded can no longer be fitted');
   }
@@ -145,7 +137,7 @@ export function calibrationOfScan(read: ReadScan, scan: RecordScan): FittedCalib
     direction: read.direction,
     wavelengthNm: scan.wavelengthNm,
     temperatureC: scan.temperatureC,
-    measuredBefore: measuredBefore(before),
+    measuredBefore: before === null ? null : asMeasuredBefore(before),
   });
   if (answer.kind !== 'fitted') throw unreadable(answer);
   requireLines(answer.table, scan.leftOut);
@@ -223,12 +215,6 @@ function requireLines({ points }: ScanTable, leftOut: RecordScan['leftOut']): vo
         ],
   );
   if (faults.length > 0) throw refused(faults);
-}
-
-function measuredBefore(before: SeatedCalibration | null): MeasuredBefore | null {
-  if (before === null) return null;
-  const { wavelengthNm, retardanceDeg, retardanceSigmaDeg, openQuestions } = before;
-  return { wavelengthNm, retardanceDeg, retardanceSigmaDeg, isBranchOpen: openQuestions.includes('branch') };
 }
 
 function unreadable(answer: Exclude<ScanAnswer, { kind: 'fitted' }>) {

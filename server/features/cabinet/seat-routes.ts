@@ -1,7 +1,6 @@
 import { cabinetPlateSchema, seatPlateSchema, takeOutSchema } from '../../../shared/schemas';
-import { requireRevision } from '../../http/revision';
 import { nothing, type Route, route } from '../../http/route';
-import { plateParams, plateReply } from './plate-routes';
+import { plateParams, plateReply, requireNewest } from './plate-routes';
 import { findPlateToChange, raiseRevision } from './plate-store';
 import { seatPlate, takeOutPlate } from './plate-work';
 
@@ -18,7 +17,7 @@ export function seatRoutes(): readonly Route[] {
       needsMatch: true,
       handler: async ({ body, thing, labId, user, transaction, audit, expectedRevision, now }) => {
         const key = { labId, plateId: thing.id };
-        requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
+        await requireNewest(transaction, thing, expectedRevision, now);
         const seatId = await seatPlate(transaction, { labId, userId: user.id, now }, thing, body);
         await raiseRevision(transaction, thing);
         await audit({
@@ -40,7 +39,7 @@ export function seatRoutes(): readonly Route[] {
       needsMatch: true,
       handler: async ({ body, thing, labId, transaction, audit, expectedRevision, now }) => {
         const key = { labId, plateId: thing.id };
-        requireRevision(expectedRevision, thing.revision, (await plateReply(transaction, key, now)).body);
+        await requireNewest(transaction, thing, expectedRevision, now);
         const details = await takeOutPlate(transaction, { labId, now }, thing, body.why);
         await raiseRevision(transaction, thing);
         await audit({ kind: 'plate.taken-out', subjectId: thing.id, details });

@@ -2,7 +2,7 @@ import { z } from 'zod';
 import type { Seat } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
-import { rowsOf } from './plate-store';
+import { rowsOf } from '../../db/rows';
 
 const seatRow = z.object({
   id: z.string(),
@@ -47,7 +47,21 @@ export async function listSeats(
       where s.lab_id = ? and ${column} = ? order by s.seated_at desc, s.id desc limit ${mostShown}`,
     [labId, id],
   );
-  return rowsOf.parse(found).rows.map(mapSeat);
+  return rowsOf(found).map(mapSeat);
+}
+
+const endRow = z.object({ left_at: z.date().nullable() });
+
+/** When a plate was last taken out of a mount; null where it never was. */
+export async function lastTakenOut(
+  transaction: Transaction,
+  key: { readonly labId: string; readonly plateId: string },
+): Promise<Date | null> {
+  const found: unknown = await transaction('seats')
+    .where({ lab_id: key.labId, plate_id: key.plateId })
+    .max({ left_at: 'left_at' })
+    .first();
+  return endRow.parse(found).left_at;
 }
 
 export async function insertSeat(

@@ -6,7 +6,7 @@ import {
 } from '../../../shared/cabinet-document';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
-import { mountColumns, plateColumns } from '../cabinet';
+import { measuredColumns, mountColumns, plateColumns } from '../cabinet';
 import { seatKey, type StoredCabinet } from './stored-cabinet';
 
 /** Where, by whom and when. */
@@ -138,22 +138,13 @@ class ImportWriter {
     const rows = added.map(({ plate, seat, position, calibration, settles }) => ({
       ...this.own(idOf(ids, placeOf(plate, position))),
       seat_id: idOf(this.seatIds, seatKey(plate, seat)),
-      wavelength_nm: calibration.wavelengthNm,
-      temperature_c: calibration.temperatureC,
-      retardance_deg: calibration.retardanceDeg,
-      retardance_sigma_deg: calibration.retardanceSigmaDeg,
-      offset_deg: calibration.offsetDeg,
-      offset_sigma_deg: calibration.offsetSigmaDeg,
-      method: calibration.method,
-      note: calibration.note,
-      open_questions: calibration.openQuestions,
+      ...measuredColumns(calibration),
       settles_id:
         settles === null
           ? null
           : settles.isStored
             ? this.storedCalibration(plate, settles.position)
             : idOf(ids, placeOf(plate, settles.position)),
-      measured_at: calibration.measuredAt,
       recorded_by: this.place.userId,
       recorded_as: calibration.recordedBy,
       recorded_at: this.place.now,

@@ -9,15 +9,16 @@ import {
   inOrder,
   refKey,
 } from '../../../shared/cabinet-document';
-import { plateConstructionSchema, plateKindSchema, plateMaterialSchema } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
+import { rowsOf } from '../../db/rows';
 import {
   calibrationColumns,
   calibrationRow,
   mapCalibration,
   mapMountColumns,
+  mapPlateColumns,
   mountColumnsRow,
-  rowsOf,
+  plateColumnsRow,
 } from '../cabinet';
 
 /** A lab's cabinet as a document, and which row each part of it is. */
@@ -49,22 +50,7 @@ const mountRow = mountColumnsRow.extend({
   retired_at: z.date().nullable(),
 });
 
-const plateRow = z.object({
-  id: z.string(),
-  name: z.string(),
-  kind: plateKindSchema,
-  design_wavelength_nm: z.number(),
-  construction: plateConstructionSchema,
-  material: plateMaterialSchema,
-  whole_waves: z.number(),
-  serial: z.string(),
-  clear_aperture_mm: z.number().nullable(),
-  coating_from_nm: z.number().nullable(),
-  coating_to_nm: z.number().nullable(),
-  damage_note: z.string(),
-  note: z.string(),
-  retired_at: z.date().nullable(),
-});
+const plateRow = plateColumnsRow.extend({ id: z.string() });
 
 const seatRow = z.object({
   id: z.string(),
@@ -83,7 +69,7 @@ type SeatedCalibrationRow = z.infer<typeof seatedCalibrationRow>;
 export async function readStoredCabinet(transaction: Transaction, labId: string): Promise<StoredCabinet> {
   const rows = async <S extends z.ZodType>(schema: S, sql: string): Promise<z.output<S>[]> => {
     const found: unknown = await transaction.raw(sql, [labId]);
-    return z.array(schema).parse(rowsOf.parse(found).rows);
+    return z.array(schema).parse(rowsOf(found));
   };
   const mounts = await rows(mountRow, 'select * from mounts where lab_id = ?');
   const plates = await rows(plateRow, 'select * from plates where lab_id = ?');
@@ -112,7 +98,7 @@ function assembled(
   const seatIds = new Map<string, string>();
   const calibrationIds = new Map<string, readonly string[]>();
   const plates = plateRows.map((row): DocumentPlate => {
-    const head = plateHead(row);
+    const head = mapPlateColumns(row);
     const seats = seatsOf.get(row.id) ?? [];
     const ids = seats
       .flatMap(({ id }) => calibrationsOf.get(id) ?? [])
@@ -151,24 +137,6 @@ function documentMount(row: z.infer<typeof mountRow>): DocumentMount {
   return {
     ...mapMountColumns(row, row.name),
     drive: row.drive,
-    note: row.note,
-    retiredAt: iso(row.retired_at),
-  };
-}
-
-function plateHead(row: z.infer<typeof plateRow>): Omit<DocumentPlate, 'seats'> {
-  const { coating_from_nm: from, coating_to_nm: to } = row;
-  return {
-    name: row.name,
-    kind: row.kind,
-    designWavelengthNm: row.design_wavelength_nm,
-    construction: row.construction,
-    material: row.material,
-    order: row.whole_waves,
-    serial: row.serial,
-    clearApertureMm: row.clear_aperture_mm,
-    coatingNm: from === null || to === null ? null : { from, to },
-    damageNote: row.damage_note,
     note: row.note,
     retiredAt: iso(row.retired_at),
   };

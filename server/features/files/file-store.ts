@@ -4,6 +4,7 @@ import type { Thing } from '../../../shared/permissions';
 import { type MediaType, mediaTypeSchema, type StoredFile } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
+import { rowsOf } from '../../db/rows';
 
 export const fileRow = z.object({
   file_id: z.string(),
@@ -18,7 +19,6 @@ export const fileRow = z.object({
 export const fileColumns = `f.id as file_id, f.name as file_name, f.media_type, f.sha256, f.size_bytes, u.name as uploaded_by_name,
   f.uploaded_at`;
 
-const rowsOf = z.object({ rows: z.array(z.unknown()) });
 const bytesRow = z.object({ content: z.instanceof(Buffer) });
 /** A sum over no rows is null. */
 const sumRow = z.object({ total: z.coerce.number().nullable() });
@@ -49,7 +49,7 @@ export async function findFile(
     `select ${fileColumns} from files f join users u on u.id = f.uploaded_by where f.lab_id = ? and f.id = ?`,
     [labId, fileId],
   );
-  const [row] = rowsOf.parse(found).rows;
+  const [row] = rowsOf(found);
   return row === undefined ? null : { ...mapFile(fileRow.parse(row)), labId };
 }
 

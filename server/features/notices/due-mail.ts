@@ -1,5 +1,6 @@
+import { listed } from '../../../shared/words';
 import type { Mailbox } from '../../mail';
-import { countOf, dateWords, greeting, listed } from './words';
+import { countOf, dateWords, greeting } from './words';
 
 /** A plate that falls due or is overdue, as a mail tells of it. */
 export interface DuePlate {

@@ -2,7 +2,7 @@ import type { Knex } from 'knex';
 import { inTransaction } from '../../db/in-transaction';
 import { jobData, queueJob, type Worker, worker } from '../../jobs';
 import { tellWhoLeftTolerance } from '../notices';
-import { newestVersionIds, stillNewest } from './report-store';
+import { newestVersionIds } from './report-store';
 import { workOut } from './work-out';
 
 /** Well below the time after which a job counts as lost: what is left then is another job. */
@@ -20,9 +20,7 @@ export function relianceWorker({
   return worker(kind, async ({ labId, versionIds: asked }, signal) => {
     const within = <Result>(work: Parameters<typeof inTransaction<Result>>[2]) =>
       inTransaction(database, { userId: null, labId }, work);
-    const versionIds = await within((transaction) =>
-      asked === null ? newestVersionIds(transaction, labId) : stillNewest(transaction, labId, asked),
-    );
+    const versionIds = await within((transaction) => newestVersionIds(transaction, labId, asked));
     const began = performance.now();
     for (const [place, versionId] of versionIds.entries()) {
       signal.throwIfAborted();

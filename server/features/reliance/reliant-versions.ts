@@ -1,6 +1,8 @@
 import { z } from 'zod';
 import type { RelianceReport, ReliantVersion } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
+import { rowsOf } from '../../db/rows';
+import { isNewestVersion } from '../beam-changes';
 import { readReport } from './report-store';
 
 const versionRow = z.object({
@@ -22,12 +24,8 @@ const draftRow = z.object({
   bench_name: z.string(),
   target_count: z.number(),
 });
-const rowsOf = z.object({ rows: z.array(z.unknown()) });
-
 /** Most that one page shows of a plate. */
 const mostShown = 200;
-const isNewest = `not exists
-  (select 1 from versions w where w.lab_id = v.lab_id and w.protocol_id = v.protocol_id and w.number > v.number)`;
 
 /** The newest versions that name a plate, the stale ones first. */
 export async function reliantVersions(
@@ -42,13 +40,13 @@ export async function reliantVersions(
       join versions v on v.lab_id = vp.lab_id and v.id = vp.version_id
       join drafts d on d.lab_id = v.lab_id and d.protocol_id = v.protocol_id
       left join reliance_reports r on r.lab_id = v.lab_id and r.version_id = v.id
-      where vp.lab_id = ? and vp.plate_id = ? and ${isNewest}
+      where vp.lab_id = ? and vp.plate_id = ? and ${isNewestVersion}
       order by coalesce(r.stale, false) desc, v.protocol_name, v.id limit ${mostShown}`,
     [labId, plateId],
   );
   return z
     .array(versionRow)
-    .parse(rowsOf.parse(found).rows)
+    .parse(rowsOf(found))
     .map((row) => ({
       versionId: row.id,
       protocolId: row.protocol_id,
@@ -73,7 +71,7 @@ export async function reliantDrafts(transaction: Transaction, labId: string, pla
   );
   return z
     .array(draftRow)
-    .parse(rowsOf.parse(found).rows)
+    .parse(rowsOf(found))
     .map((row) => ({
       protocolId: row.protocol_id,
       protocolName: row.name,
@@ -92,12 +90,12 @@ export async function staleVersions(transaction: Transaction, labId: string): Pr
   const found: unknown = await transaction.raw(
     `select v.bench_id, v.bench_name, r.report from reliance_reports r
       join versions v on v.lab_id = r.lab_id and v.id = r.version_id
-      where r.lab_id = ? and r.stale and ${isNewest} order by v.protocol_name, v.id limit ${mostShown}`,
+      where r.lab_id = ? and r.stale and ${isNewestVersion} order by v.protocol_name, v.id limit ${mostShown}`,
     [labId],
   );
   return z
     .array(staleRow)
-    .parse(rowsOf.parse(found).rows)
+    .parse(rowsOf(found))
     .flatMap(({ bench_id, bench_name, report }) => {
       const read = readReport(report);
       return read === null ? [] : [{ bench: { id: bench_id, name: bench_name }, report: read }];

@@ -1,9 +1,11 @@
 import { z } from 'zod';
 import { type RelianceReport, relianceReportSchema } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
+import { rowsOf } from '../../db/rows';
+import { isNewestVersion } from '../beam-changes';
 
 const reportRow = z.object({ signature: z.string().nullable(), report: z.string().nullable() });
-const idRows = z.object({ rows: z.array(z.object({ id: z.string() })) });
+const idRows = z.array(z.object({ id: z.string() }));
 
 interface ReportKey {
   readonly labId: string;
@@ -23,23 +25,18 @@ function rowOf(transaction: Transaction, { labId, versionId }: ReportKey) {
   return transaction('reliance_reports').where({ lab_id: labId, version_id: versionId });
 }
 
-/** The newest version of each protocol of a lab. */
-export async function newestVersionIds(transaction: Transaction, labId: string): Promise<string[]> {
-  const found: unknown = await transaction.raw(
-    `select distinct on (protocol_id) id from versions where lab_id = ? order by protocol_id, number desc`,
-    [labId],
-  );
-  return idRows.parse(found).rows.map(({ id }) => id);
-}
-
-/** Of these versions, those that nobody has saved another after. */
-export async function stillNewest(
+/** The newest version of each protocol of a lab, or those of the versions asked for that nobody has saved another after. */
+export async function newestVersionIds(
   transaction: Transaction,
   labId: string,
-  versionIds: readonly string[],
+  among: readonly string[] | null,
 ): Promise<string[]> {
-  const newest = new Set(await newestVersionIds(transaction, labId));
-  return versionIds.filter((id) => newest.has(id));
+  const found: unknown = await transaction.raw(
+    `select v.id from versions v where v.lab_id = :labId and ${isNewestVersion}
+      ${among === null ? '' : 'and v.id = any(:among)'} order by v.id`,
+    { labId, among: among === null ? null : [...among] },
+  );
+  return idRows.parse(rowsOf(found)).map(({ id }) => id);
 }
 
 /** The report as it is, and nobody else writes it until the transaction ends; makes its row where there is none. */

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import type { Thing } from '../../../shared/permissions';
 import { type Reading, type Run, runStates, type RunSummary } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
+import { rowsOf } from '../../db/rows';
 
 const runRow = z.object({
   id: z.string(),
@@ -34,8 +35,6 @@ const readingRow = z.object({
   recorded_at: z.date(),
   recorded_by_name: z.string(),
 });
-const rowsOf = z.object({ rows: z.array(z.unknown()) });
-
 /** A run with what its next event or reading is numbered after. */
 export interface RunRow extends Thing {
   readonly summary: RunSummary;
@@ -98,7 +97,7 @@ export async function listRuns(
     `${runQuery} and r.number < ? order by r.number desc limit ?`,
     [labId, page.before ?? 2_147_483_647, page.limit],
   );
-  return rowsOf.parse(found).rows.map(mapRow);
+  return rowsOf(found).map(mapRow);
 }
 
 export async function findRun(
@@ -106,7 +105,7 @@ export async function findRun(
   { labId, runId }: { readonly labId: string; readonly runId: string },
 ): Promise<RunRow | null> {
   const found: unknown = await transaction.raw(`${runQuery} and r.id = ?`, [labId, runId]);
-  const [row] = rowsOf.parse(found).rows;
+  const [row] = rowsOf(found);
   return row === undefined ? null : mapRow(row);
 }
 

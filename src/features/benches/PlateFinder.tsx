@@ -1,17 +1,17 @@
 import { keepPreviousData, useQuery } from '@tanstack/react-query';
-import { type KeyboardEvent, useEffect, useId, useState } from 'react';
+import { type KeyboardEvent, useId, useState } from 'react';
 import { type CabinetPlate, type PlateKind, plateKindSchema } from '../../../shared/schemas/cabinet';
 import { classNames } from '../../components/class-names';
 import { controlBox, Field } from '../../components/Field';
 import { SelectField } from '../../components/SelectField';
 import { platePageQuery } from '../cabinet';
+import { usePaused } from '../../lib/use-paused';
 import { useLab } from '../labs';
 import { PlateSummary } from './PlateSummary';
 import { plateHealthWords, plateWhere } from './plate-state-words';
 
 /** More would not be read: who sees none that fits writes more of its name. */
 const shownPlates = 8;
-const typingPauseMs = 150;
 
 const kindOptions = [
   { value: '', label: 'any kind' },
@@ -19,15 +19,6 @@ const kindOptions = [
   { value: 'quarter', label: 'quarter-wave' },
   { value: 'other', label: 'other' },
 ] as const;
-
-function usePaused(text: string): string {
-  const [paused, setPaused] = useState(text);
-  useEffect(() => {
-    const timer = window.setTimeout(() => setPaused(text), typingPauseMs);
-    return () => window.clearTimeout(timer);
-  }, [text]);
-  return paused;
-}
 
 /** A plate of the cabinet, found by its name, serial, mount or note: a text field whose suggestions take the arrow keys. */
 export function PlateFinder(props: {

@@ -26,13 +26,15 @@ export function PlateHistory(props: {
   const { calibration, seat } = plate;
   const oldest = detail.calibrations.at(-1);
   const asks = calibration === null || calibration.openQuestions.length > 0;
+  // What a person settled is still the measurement of the scan that left it open.
+  const scanned = detail.calibrations.find(
+    ({ id, scan }) => scan !== null && (id === calibration?.id || id === calibration?.settlesId),
+  );
   const inSeat = detail.calibrations.filter(({ seatId }) => seatId === seat?.id);
   return (
     <>
       <div className="space-y-6">
-        {typeof calibration?.fileId === 'string' && (
-          <ScanFigure plateId={plate.id} calibrationId={calibration.id} now={now} />
-        )}
+        {scanned !== undefined && <ScanFigure plateId={plate.id} calibrationId={scanned.id} now={now} />}
         {calibration === null ? (
           <VoidZero {...{ plate, page, now, measures, seats }} hadZero={detail.calibrations.length > 0} />
         ) : (

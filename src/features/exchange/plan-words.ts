@@ -1,15 +1,10 @@
+import { listed } from '../../../shared/words';
 import type { ImportPlan } from '../../../shared/cabinet-document';
 import { countChanges } from '../../../shared/cabinet-document/count-changes';
 
 /** "1 plate", "12 plates". */
 export function counted(count: number, one: string, many = `${one}s`): string {
   return `${count} ${count === 1 ? one : many}`;
-}
-
-/** "a, b and c". */
-export function listed(parts: readonly string[]): string {
-  const last = parts.at(-1) ?? '';
-  return parts.length < 2 ? last : `${parts.slice(0, -1).join(', ')} and ${last}`;
 }
 
 const some = (count: number, one: string): string[] => (count === 0 ? [] : [counted(count, one)]);

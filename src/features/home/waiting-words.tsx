@@ -1,3 +1,4 @@
+import { listed } from '../../../shared/words';
 import type { ReactNode } from 'react';
 import type { Action } from '../../../shared/permissions';
 import type { OpenQuestion } from '../../../shared/schemas/calibrations';
@@ -22,12 +23,6 @@ export interface WaitingContext {
   /** The lab's own: a calibration falls due this many days after it was measured. */
   readonly dueDays: number;
   readonly may: (action: Action) => boolean;
-}
-
-/** "signal arm", "signal arm and diode table". */
-function listed(names: readonly string[]): string {
-  const last = names.at(-1) ?? '';
-  return names.length < 2 ? last : `${names.slice(0, -1).join(', ')} and ${last}`;
 }
 
 function openTitle(plateName: string, questions: readonly OpenQuestion[]): string {

@@ -1,3 +1,4 @@
+import { listed } from '../../../shared/words';
 import type { ReactNode } from 'react';
 import type { RelianceReport, RelianceTarget } from '../../../shared/schemas/reliance';
 import { Scientific } from '../../components/Scientific';
@@ -21,11 +22,6 @@ export function reportWords(report: RelianceReport): ReportWords {
     resolved: resolvedWords(report),
     wrong: report.voids.length > 0 || (report.oldDials?.out ?? 0) > report.frozen.out,
   };
-}
-
-function listed(names: readonly string[]): string {
-  const last = names.at(-1) ?? '';
-  return names.length < 2 ? last : `${names.slice(0, -1).join(', ')} and ${last}`;
 }
 
 /** "R and L", or "5 targets" where there are more than one reads at a glance. */

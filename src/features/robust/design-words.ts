@@ -1,3 +1,4 @@
+import { listed } from '../../../shared/words';
 import type { Robustness } from '../../../shared/optics/robust';
 import { type Convention, describeConvention, toDegrees } from '../../../shared/optics';
 import {
@@ -54,11 +55,6 @@ export function errorWords(error: number, kind: ErrorKind): string {
 
 export function errorName(kind: ErrorKind): string {
   return kind === 'retardance' ? 'common relative error ε of the retardances' : 'error ε of the wavelength';
-}
-
-function listed(words: readonly string[]): string {
-  const last = words.at(-1) ?? '';
-  return words.length < 2 ? last : `${words.slice(0, -1).join(', ')} and ${last}`;
 }
 
 /** What the plain solution is: whose plates, at which angles. */

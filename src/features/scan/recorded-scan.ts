@@ -1,42 +1,8 @@
 import { useQuery } from '@tanstack/react-query';
 import { useMemo } from 'react';
-import type { DescribedPlate, ScanLight, ScanToFit } from '../../../shared/scan-calibration';
-import type { CalibrationDetail } from '../../../shared/schemas/scans';
+import { type DescribedPlate, recordedScan } from '../../../shared/scan-calibration';
 import type { ScanRequest } from './answer-scan';
 import { calibrationQuery, scanBytesQuery } from './queries';
-
-type Scanned = CalibrationDetail & { readonly scan: NonNullable<CalibrationDetail['scan']> };
-
-function lightOf({ light, inputStokes }: Scanned['scan']['record']): ScanLight {
-  if (light.kind === 'linear') return light;
-  const { analyserDeg, extinction } = light;
-  return { kind: 'known', input: inputStokes ?? [0, 0, 0], analyserDeg, extinction, before: null };
-}
-
-/** A recorded scan as it was fitted: of what it left open, the branch that was recorded is taken. */
-function scanToFit(
-  { calibration, scan: { record } }: Scanned,
-  bytes: Uint8Array,
-  plate: DescribedPlate,
-): ScanToFit {
-  const { wavelengthNm, temperatureC, retardanceDeg, retardanceSigmaDeg, openQuestions } = calibration;
-  return {
-    bytes,
-    columns: record.columns,
-    light: lightOf(record),
-    leftOutLines: record.leftOut.map(({ line }) => line),
-    plate,
-    direction: record.direction,
-    wavelengthNm,
-    temperatureC,
-    measuredBefore: {
-      wavelengthNm,
-      retardanceDeg,
-      retardanceSigmaDeg,
-      isBranchOpen: openQuestions.includes('branch'),
-    },
-  };
-}
 
 /** One recorded scan with its file; null ids ask for nothing. */
 export function useStoredScan(
@@ -57,7 +23,7 @@ export function useStoredScan(
   const stored = useMemo(() => {
     if (data === undefined || data.scan === null || bytes.data === undefined) return null;
     const described = { kind, designWavelengthNm, construction, material, order };
-    return scanToFit({ ...data, scan: data.scan }, bytes.data, described);
+    return recordedScan(data.calibration, data.scan.record, bytes.data, described);
   }, [data, bytes.data, kind, designWavelengthNm, construction, material, order]);
   return { detail, bytes, stored };
 }

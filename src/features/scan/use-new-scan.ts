@@ -1,5 +1,6 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useMemo, useRef, useState } from 'react';
+import { asMeasuredBefore } from '../../../shared/scan-calibration';
 import type { ColumnMapping, Understood } from '../../../shared/scan-file';
 import type { CabinetPlate, PlateDetail } from '../../../shared/schemas/cabinet';
 import type { LeftOut, RecordScan } from '../../../shared/schemas/scans';
@@ -84,8 +85,7 @@ export function useNewScan({ plate, detail, lightKind, now, onRecorded }: NewSca
   const bench = useQuery({ ...scanBenchQuery(lab.id, benchId ?? ''), enabled: benchId !== null });
   const stated = bench.data?.polariserExtinction ?? null;
   const earlier = detail.calibrations.filter(
-    ({ seatId, scan, method }) =>
-      seatId === plate.seat.id && scan !== null && method.startsWith('scan between'),
+    ({ seatId, scan }) => seatId === plate.seat.id && scan?.light === 'linear',
   );
   const values: ScanFormValues = {
     ...emptyScanForm({
@@ -169,15 +169,7 @@ export function useNewScan({ plate, detail, lightKind, now, onRecorded }: NewSca
           },
           direction: plate.seat.mount.direction,
           ...forFit,
-          measuredBefore:
-            measuredBefore === null
-              ? null
-              : {
-                  wavelengthNm: measuredBefore.wavelengthNm,
-                  retardanceDeg: measuredBefore.retardanceDeg,
-                  retardanceSigmaDeg: measuredBefore.retardanceSigmaDeg,
-                  isBranchOpen: measuredBefore.openQuestions.includes('branch'),
-                },
+          measuredBefore: measuredBefore === null ? null : asMeasuredBefore(measuredBefore),
         },
       };
     },

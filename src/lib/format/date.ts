@@ -1,29 +1,17 @@
-const months = [
-  'January',
-  'February',
-  'March',
-  'April',
-  'May',
-  'June',
-  'July',
-  'August',
-  'September',
-  'October',
-  'November',
-  'December',
-] as const;
+import { monthNames } from '../../../shared/words';
+
 const weekdays = ['Sunday', 'Monday', 'Tuesday', 'Wednesday', 'Thursday', 'Friday', 'Saturday'] as const;
 
 const two = (value: number): string => String(value).padStart(2, '0');
 
 /** `16 June 2026`, in the reader's own time zone. */
 export function formatDate(date: Date): string {
-  return `${date.getDate()} ${months[date.getMonth()] ?? ''} ${date.getFullYear()}`;
+  return `${date.getDate()} ${monthNames[date.getMonth()] ?? ''} ${date.getFullYear()}`;
 }
 
 /** `16 Jun`, where the year is plain from the place. */
 export function formatShortDate(date: Date): string {
-  return `${date.getDate()} ${(months[date.getMonth()] ?? '').slice(0, 3)}`;
+  return `${date.getDate()} ${(monthNames[date.getMonth()] ?? '').slice(0, 3)}`;
 }
 
 /** `Tuesday`, in the reader's own time zone. */
@@ -65,5 +53,5 @@ export function formatMoment(date: Date, now: Date): string {
   if (days === 0) return `today ${formatTime(date)}`;
   if (days === 1) return `yesterday ${formatTime(date)}`;
   if (date.getFullYear() !== now.getFullYear()) return formatDate(date);
-  return `${date.getDate()} ${months[date.getMonth()] ?? ''} ${formatTime(date)}`;
+  return `${date.getDate()} ${monthNames[date.getMonth()] ?? ''} ${formatTime(date)}`;
 }

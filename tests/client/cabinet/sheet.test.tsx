@@ -73,7 +73,7 @@ describe('a plate’s sheet', () => {
           }),
         ],
         calibrations: [
-          { ...newest, fileId, scan: { name: 'scan.csv', sha256: hash, sizeBytes: 4120 } },
+          { ...newest, fileId, scan: { name: 'scan.csv', sha256: hash, sizeBytes: 4120, light: 'linear' } },
           { ...newest, id: idOf(8), seatId: seatFixture(5).id, offsetDeg: 12.05 },
         ],
       }),

@@ -8,7 +8,7 @@ import { Sphere, type SphereInput } from '../../../sphere';
 import { CsvFields } from './CsvFields';
 import { SetFields } from './SetFields';
 import { firstChoice } from './target-set-choice';
-import { useLater } from '../use-later';
+import { useLater } from '../../../lib/use-later';
 import { type FoundRow, roomFor, type RowsFrom, useFoundRows } from './use-found-rows';
 
 interface AddRowsDialogProps {
