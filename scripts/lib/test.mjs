@@ -109,27 +109,32 @@ async function runAll(root, filters, stoppers) {
 }
 
 /**
- * Two lanes for two cores: the checks of the text, and the client's build with the tests that need no browser; the browser has the machine for itself.
+ * Two lanes for two cores, each taking the next part that is left, the longest first; the browser has the machine for itself.
  * @param {Surroundings} surroundings
  * @param {string} dataDirectory
  * @param {Promise<Outcome | null>} browser
  */
 async function everything(surroundings, dataDirectory, browser) {
-  const text = async () => [
-    await check(
-      'format',
-      ['node_modules/prettier/bin/prettier.cjs', '--check', '--log-level=warn', '.'],
-      surroundings,
-    ),
-    await check('types', ['node_modules/typescript/bin/tsc', '--noEmit'], surroundings),
-    await check('lint', ['node_modules/eslint/bin/eslint.js', '--max-warnings=0', '.'], surroundings),
+  const parts = [
+    // First, because the tests of the start command take the client that is built.
+    () => buildClient(surroundings, dataDirectory),
+    () => vitest('unit and client tests', ['--project=unit', '--project=client'], surroundings),
+    () => vitest('API and fault tests', ['--project=api'], surroundings),
+    () => check('lint', ['node_modules/eslint/bin/eslint.js', '--max-warnings=0', '.'], surroundings),
+    () => check('types', ['node_modules/typescript/bin/tsc', '--noEmit'], surroundings),
+    () =>
+      check(
+        'format',
+        ['node_modules/prettier/bin/prettier.cjs', '--check', '--log-level=warn', '.'],
+        surroundings,
+      ),
   ];
-  const tests = async () => [
-    await buildClient(surroundings, dataDirectory),
-    await vitest('unit and client tests', ['--project=unit', '--project=client'], surroundings),
-    await vitest('API and fault tests', ['--project=api'], surroundings),
-  ];
-  const outcomes = (await Promise.all([text(), tests(), browser])).flat();
+  const lane = async () => {
+    const outcomes = [];
+    for (let part = parts.shift(); part !== undefined; part = parts.shift()) outcomes.push(await part());
+    return outcomes;
+  };
+  const outcomes = (await Promise.all([lane(), lane(), browser])).flat();
   return [...withoutNull(outcomes), await vitest('browser tests', ['--project=browser'], surroundings)];
 }
 

@@ -46,6 +46,11 @@ async function findAddresses(): Promise<Record<string, string>> {
   await page.goto(`${home}/bench`);
   const record = await hrefOf(/See the record/u);
   const run = await hrefOf(/^Go on/u);
+  const edited = await hrefOf(/^Edit /u);
+  await page.goto(`${home}/cabinet`);
+  const plate = await hrefOf(/^H-3/u);
+  await page.goto(`${home}/cabinet/mounts`);
+  const mount = await hrefOf(/^M01/u);
   await context.close();
   return {
     home,
@@ -57,10 +62,16 @@ async function findAddresses(): Promise<Record<string, string>> {
     versions: `${home}/review`,
     benches: `${home}/bench`,
     'new bench': `${home}/bench/new`,
+    'a bench changed': edited,
     'run start': `${home}/bench/start`,
     results: `${home}/results`,
     record,
     cabinet: `${home}/cabinet`,
+    plate,
+    'a scan of a plate': `${plate}/scan`,
+    mounts: `${home}/cabinet/mounts`,
+    mount,
+    'in and out': `${home}/cabinet/exchange`,
     lab: `${home}/lab`,
     'robust designs': `${home}/plan/robust`,
     gates,
@@ -103,9 +114,15 @@ const pagesOfALab = [
   'versions',
   'benches',
   'new bench',
+  'a bench changed',
   'run start',
   'results',
   'cabinet',
+  'plate',
+  'a scan of a plate',
+  'mounts',
+  'mount',
+  'in and out',
   'lab',
   'robust designs',
   'gates',
@@ -126,6 +143,8 @@ const pagesOfATablet = [
   'new bench',
   'run start',
   'cabinet',
+  'plate',
+  'a scan of a plate',
   'robust designs',
   'conventions',
 ];

@@ -79,7 +79,9 @@ function open(role: Role = 'designer') {
 
 /** jsdom's own bytes are none that Node's decoder takes. */
 function fileOf(bytes: Uint8Array<ArrayBuffer>, name: string): File {
-  return Object.assign(new File([bytes], name), { arrayBuffer: () => Promise.resolve(bytes.buffer) });
+  return Object.defineProperty(new File([bytes], name), 'arrayBuffer', {
+    value: () => Promise.resolve(bytes.buffer),
+  });
 }
 const csvFile = (text = writeCabinet(wanted, 'csv'), name = 'cabinet.csv') =>
   fileOf(new TextEncoder().encode(text), name);
