@@ -1,3 +1,4 @@
+import { fitScan } from '../../shared/scan-calibration';
 import { freeze } from '../../shared/protocol/freeze';
 import type {
   CalibrationInput,
@@ -6,6 +7,8 @@ import type {
   DraftContent,
   Lab,
   RecordReading,
+  RecordScan,
+  ScanColumns,
   Version,
 } from '../../shared/schemas';
 import { type AuditEntry, recordEvent } from '../../server/audit/record-event';
@@ -14,12 +17,16 @@ import { newId } from '../../server/db/new-id';
 import { findBench, insertBench } from '../../server/features/benches';
 import {
   addPlate,
+  calibrationOfScan,
   findPlate,
   insertCalibration,
+  readScan,
+  rememberColumns,
   seatPlate,
   type StoredPlate,
   takeOutPlate,
 } from '../../server/features/cabinet';
+import { findFile, insertFile } from '../../server/features/files';
 import {
   findProtocol,
   findVersion,
@@ -80,6 +87,66 @@ export class LabStory {
       if (seat === null) throw new Error('a plate is calibrated in a seat');
       const id = await insertCalibration(this.transaction, this.#place(at, by), seat.id, calibration);
       return { kind: 'plate.calibrated', subjectId: plateId, details: { calibrationId: id, calibration } };
+    });
+  }
+
+  /** Uploads a scan between polarisers and records what the fit says. */
+  scan(
+    at: Date,
+    by: Person,
+    plateId: string,
+    scan: {
+      readonly name: string;
+      readonly text: string;
+      readonly columns: ScanColumns;
+      readonly wavelengthNm: number;
+      readonly temperatureC: number;
+      readonly measuredAt: Date;
+    },
+  ): void {
+    const bytes = Buffer.from(scan.text, 'utf8');
+    let fileId = '';
+    this.#happened(at, by, async () => {
+      const file = { name: scan.name, mediaType: 'text/plain' as const, bytes };
+      fileId = await insertFile(this.transaction, this.#place(at, by), file);
+      const stored = await findFile(this.transaction, { labId: this.lab.id, fileId });
+      if (stored === null) throw new Error('a file that was just stored is not there');
+      const { labId: _labId, ...shown } = stored;
+      return { kind: 'file.uploaded', subjectId: fileId, details: { file: shown } };
+    });
+    this.#happened(at, by, async () => {
+      const plate = await this.#plate(plateId);
+      if (plate.seat === null) throw new Error('a plate is scanned in a seat');
+      const light = { kind: 'linear', extinction: null, power: null } as const;
+      const { wavelengthNm, temperatureC } = scan;
+      const answer = fitScan({
+        ...{ bytes, plate, light, wavelengthNm, temperatureC },
+        columns: scan.columns,
+        leftOutLines: [],
+        direction: plate.seat.mount.direction,
+        measuredBefore: null,
+      });
+      if (answer.kind !== 'fitted') throw new Error(`${scan.name} cannot be fitted`);
+      const { offsetDeg, retardance } = answer.values;
+      const request: RecordScan = {
+        ...{ fileId, light, wavelengthNm, temperatureC },
+        columns: scan.columns,
+        leftOut: [],
+        measuredAt: scan.measuredAt.toISOString(),
+        note: '',
+        settlesId: null,
+        shown: { offsetDeg, retardanceDeg: retardance?.deg ?? null },
+      };
+      const read = await readScan(this.transaction, this.lab, { ...plate, seat: plate.seat }, request);
+      const { calibration, record, signature } = calibrationOfScan(read, request);
+      const place = this.#place(at, by);
+      const id = await insertCalibration(this.transaction, place, plate.seat.id, calibration, {
+        fileId,
+        fit: record,
+      });
+      await rememberColumns(this.transaction, place, signature, request.columns);
+      const details = { calibrationId: id, calibration, fileId, leftOut: [] };
+      return { kind: 'plate.scanned', subjectId: plateId, details };
     });
   }
 

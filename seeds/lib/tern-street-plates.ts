@@ -1,6 +1,7 @@
 import type { CalibrationInput, CreatePlate, PlateKind } from '../../shared/schemas';
 import type { LabStory } from './lab-story';
 import type { Person } from './people';
+import { scanOfQE } from './scan-of-q-e';
 import { undescribed } from './undescribed';
 
 type At = (daysAgo: number, time: string) => Date;
@@ -24,8 +25,12 @@ interface PlateFacts {
   readonly reseated?: readonly Moved[];
   /** Taken out for good. */
   readonly takenOut?: Moved;
-  /** The newest measurement left fast and slow open. */
-  readonly axisOpen?: true;
+  /** Scanned between polarisers after all that was measured by hand; that leaves fast and slow open. */
+  readonly scanned?: {
+    readonly daysAgo: number;
+    readonly wavelengthNm: number;
+    readonly file: typeof scanOfQE;
+  };
 }
 
 type Built = Pick<CreatePlate, 'construction' | 'material' | 'order'>;
@@ -141,8 +146,9 @@ const plates: readonly PlateFacts[] = [
     built: quartz,
     note: '',
     mount: ['M10', 1, 0.2, 0.1],
-    measured: [[16, 780, 89.2, 0.5, 8.95, 0.12]],
-    axisOpen: true,
+    measured: [[140, 780, 89.4, 0.5, 214.31, 0.12]],
+    reseated: [[17, 'Turned in its ring to clear the engraving.']],
+    scanned: { daysAgo: 16, wavelengthNm: 780, file: scanOfQE },
   },
   {
     name: 'Q-F',
@@ -180,8 +186,16 @@ export function tellPlates(
       story.reseat(at(daysAgo, '10:20'), people.operator, id, why);
     }
     for (const measured of later) {
-      const left = facts.axisOpen === true && measured === later.at(-1);
-      story.calibration(at(measured[0], '11:15'), people.operator, id, calibration(measured, at, left));
+      story.calibration(at(measured[0], '11:15'), people.operator, id, calibration(measured, at));
+    }
+    if (facts.scanned !== undefined) {
+      const { daysAgo, wavelengthNm, file } = facts.scanned;
+      story.scan(at(daysAgo, '11:15'), people.operator, id, {
+        ...file,
+        wavelengthNm,
+        temperatureC: 21,
+        measuredAt: at(daysAgo, '10:52'),
+      });
     }
     if (facts.takenOut !== undefined) {
       const [daysAgo, why] = facts.takenOut;
@@ -221,7 +235,7 @@ function newPlate(facts: PlateFacts, first: Measured, at: At): CreatePlate {
         backlashDeg: motor ? 0.05 : 0,
         approach: motor ? 'rising' : 'either',
       },
-      calibration: calibration(first, at, facts.axisOpen === true && facts.measured.length === 1),
+      calibration: calibration(first, at),
     },
   };
 }
@@ -229,7 +243,6 @@ function newPlate(facts: PlateFacts, first: Measured, at: At): CreatePlate {
 function calibration(
   [daysAgo, wavelengthNm, retardanceDeg, retardanceSigmaDeg, offsetDeg, offsetSigmaDeg]: Measured,
   at: At,
-  axisOpen: boolean,
 ): CalibrationInput {
   return {
     wavelengthNm,
@@ -240,7 +253,7 @@ function calibration(
     offsetSigmaDeg,
     method: 'Turned between crossed polarisers',
     note: '',
-    openQuestions: axisOpen ? ['axis'] : [],
+    openQuestions: [],
     settlesId: null,
     measuredAt: at(daysAgo, '10:52').toISOString(),
   };

@@ -20,8 +20,10 @@ export {
   plateColumnsRow,
   type StoredPlate,
 } from './plate-rows';
-export { findPlate, findPlates, findPlatesInBeams, hasAnyPlate, plateColumns } from './plate-store';
+export { findPlate, findPlates, findPlatesAtHand, findPlatesInBeams, plateColumns } from './plate-store';
 export { addPlate, seatPlate, takeOutPlate } from './plate-work';
+export { rememberColumns } from './scan-store';
+export { calibrationOfScan, readScan } from './scan-work';
 
 export function cabinetRoutes(): readonly Route[] {
   return [

@@ -33,19 +33,26 @@ export async function findPlates(
   return rowsOf(found).map(mapPlate);
 }
 
-/** The plates that some bench in use has in its beam, by name. */
-export async function findPlatesInBeams(transaction: Transaction, labId: string): Promise<StoredPlate[]> {
+/** The plates that some bench in use has in its beam, and as many of the others in use as make `atLeast`; by name. */
+export async function findPlatesAtHand(
+  transaction: Transaction,
+  labId: string,
+  atLeast: number,
+): Promise<StoredPlate[]> {
   const found: unknown = await transaction.raw(
-    `${plateQuery} and p.id in (select plate_id from bench_plates where lab_id = ? and live)
+    `with beams as (select distinct plate_id from bench_plates where lab_id = ? and live),
+      others as (select id from plates where lab_id = ? and retired_at is null and id not in (select plate_id from beams)
+        order by name collate by_number, id limit greatest(0, ? - (select count(*) from beams)))
+      ${plateQuery} and p.id in (select plate_id from beams union all select id from others)
       order by p.name collate by_number, p.id`,
-    [labId, labId],
+    [labId, labId, atLeast, labId],
   );
   return rowsOf(found).map(mapPlate);
 }
 
-export async function hasAnyPlate(transaction: Transaction, labId: string): Promise<boolean> {
-  const found: unknown = await transaction('plates').where({ lab_id: labId, retired_at: null }).first('id');
-  return found !== undefined;
+/** The plates that some bench in use has in its beam, by name. */
+export function findPlatesInBeams(transaction: Transaction, labId: string): Promise<StoredPlate[]> {
+  return findPlatesAtHand(transaction, labId, 0);
 }
 
 export async function findPlate(

@@ -1,2 +1,2 @@
-export { fileColumns, fileRow, findFile, mapFile, readBytes } from './file-store';
+export { fileColumns, fileRow, findFile, insertFile, mapFile, readBytes } from './file-store';
 export { fileRoutes } from './routes';

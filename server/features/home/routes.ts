@@ -1,7 +1,7 @@
 import { homeSchema } from '../../../shared/schemas';
 import { labParams } from '../../http/lab-params';
 import { noBody, nothing, type Route, route } from '../../http/route';
-import { asCabinetPlate, findPlatesInBeams, hasAnyPlate } from '../cabinet';
+import { asCabinetPlate, findPlatesAtHand } from '../cabinet';
 import { listBenches } from '../benches';
 import { findLab } from '../labs';
 import { staleVersions } from '../reliance';
@@ -9,6 +9,9 @@ import { lastRuns } from './last-made';
 import { draftsAhead } from './drafts-ahead';
 import { standings } from './next-settings';
 import { waitingFor } from './waiting';
+
+/** As many as one row of a desk's window holds; more only where more stand in beams. */
+const PLATES_SHOWN = 12;
 
 export function homeRoutes(): readonly Route[] {
   return [
@@ -21,9 +24,8 @@ export function homeRoutes(): readonly Route[] {
       body: noBody,
       response: homeSchema,
       handler: async ({ thing, member, labId, transaction, now }) => {
-        const inBeams = await findPlatesInBeams(transaction, labId);
-        const plates = inBeams.map((plate) => asCabinetPlate(plate, thing, now));
-        const hasPlates = plates.length > 0 || (await hasAnyPlate(transaction, labId));
+        const atHand = await findPlatesAtHand(transaction, labId, PLATES_SHOWN);
+        const cabinet = atHand.map((plate) => asCabinetPlate(plate, thing, now));
         const benches = (await listBenches(transaction, labId)).filter(({ retiredAt }) => retiredAt === null);
         const runs = await lastRuns(transaction, labId);
         const unfinished = runs.unfinished.map(({ id }) => id);
@@ -35,8 +37,8 @@ export function homeRoutes(): readonly Route[] {
             waiting: waitingFor({
               lab: thing,
               member,
-              plates,
-              hasPlates,
+              plates: cabinet.filter(({ benches: theirs }) => theirs.length > 0),
+              hasPlates: cabinet.length > 0,
               benches,
               ...facts,
               ...drafts,
@@ -44,7 +46,7 @@ export function homeRoutes(): readonly Route[] {
               now,
             }),
             lastMade: runs.worst.map(({ made }) => made),
-            cabinet: plates,
+            cabinet,
           },
         };
       },

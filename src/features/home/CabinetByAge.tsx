@@ -6,7 +6,12 @@ import { TextLink } from '../../components/TextLink';
 import { calibrationAge, restingAxisDeg } from '../cabinet';
 import { useLab } from '../labs';
 
-/** The plates that stand in some beam, with how old each one's calibration is. */
+/** A plate without a zero is nothing to worry about while no bench has it in its beam. */
+function isWrong({ benches }: CabinetPlate, age: ReturnType<typeof calibrationAge> | null): boolean {
+  return age === null ? benches.length > 0 : age.overdue;
+}
+
+/** The plates at hand, with how old each one's calibration is. */
 export function CabinetByAge({
   plates,
   now,
@@ -45,11 +50,7 @@ export function CabinetByAge({
                   dueDays={lab.calibrationDueDays}
                 />
                 <span className="font-strong mt-1">{plate.name}</span>
-                <span
-                  className={
-                    age === null || age.overdue ? 'text-s text-fault font-strong' : 'text-s text-ink-2'
-                  }
-                >
+                <span className={isWrong(plate, age) ? 'text-s text-fault font-strong' : 'text-s text-ink-2'}>
                   {age?.words ?? (plate.seat === null ? 'in no mount' : 'not calibrated')}
                 </span>
               </Link>

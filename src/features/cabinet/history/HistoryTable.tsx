@@ -35,13 +35,13 @@ export function HistoryTable(props: {
         <thead>
           <tr>
             <HeadCell>measured</HeadCell>
-            <HeadCell numeric className="whitespace-nowrap">
+            <HeadCell numeric className="sm:whitespace-nowrap">
               retardance(σ), °
             </HeadCell>
-            <HeadCell numeric className="whitespace-nowrap">
+            <HeadCell numeric className="sm:whitespace-nowrap">
               zero(σ), °
             </HeadCell>
-            <HeadCell numeric className="whitespace-nowrap">
+            <HeadCell numeric className="hidden whitespace-nowrap sm:table-cell">
               at, nm
             </HeadCell>
           </tr>
@@ -101,8 +101,16 @@ function CalibrationRow(props: {
   const cell = `align-top! py-2 ${ended ? 'text-ink-3' : ''}`;
   return (
     <DataRow>
-      <RowHead className="min-w-44 py-2">
+      <RowHead className="min-w-28 py-2 sm:min-w-44">
         {formatMoment(new Date(calibration.measuredAt), now)}
+        <span className="text-s text-ink-2 font-words block sm:hidden">
+          <Quantity text={String(calibration.wavelengthNm)} unit="nm" />
+          {calibration.temperatureC !== null && (
+            <>
+              , <Quantity text={withTrueMinus(String(calibration.temperatureC))} unit="°C" />
+            </>
+          )}
+        </span>
         <span className="text-s text-ink-2 font-words block">
           {calibration.method}; {calibration.recordedBy}
           {calibration.note !== '' && `. ${calibration.note}`}
@@ -134,7 +142,7 @@ function CalibrationRow(props: {
       <DataCell numeric className={cell}>
         <OnPoint text={zero(calibration)} widest={widest.zero} />
       </DataCell>
-      <DataCell numeric className={cell}>
+      <DataCell numeric className={`hidden sm:table-cell ${cell}`}>
         {calibration.wavelengthNm}
         {calibration.temperatureC !== null && (
           <span className="text-s text-ink-2 block">

@@ -35,7 +35,8 @@ export function historyFrame(points: HistoryPoints, width: number): HistoryFrame
   const span = Math.max(last - first, dayMs);
   const [from, to] = [first - span * 0.05, last + span * 0.05];
   const [left, right] = [44, 8];
-  const foot = lower.from + 10;
+  // Room for the name of the lower part under its lowest point.
+  const foot = lower.from + 24;
   return {
     width,
     height: foot + 32,
@@ -53,7 +54,7 @@ export function historyFrame(points: HistoryPoints, width: number): HistoryFrame
       1,
     ),
     zero: bandScale(zeros, [0], lower, 0.5),
-    names: { retardance: upper.from + 20, zero: lower.from - 2 },
+    names: { retardance: upper.from + 20, zero: lower.from + 16 },
   };
 }
 

@@ -1,3 +1,5 @@
+import { monthNames } from '../../../../shared/words';
+
 /** A linear scale for one band of a plot, with round marks. */
 export interface PlotScale {
   readonly marks: readonly number[];
@@ -43,21 +45,6 @@ export interface TimeMark {
   readonly label: string;
 }
 
-const monthNames = [
-  'Jan',
-  'Feb',
-  'Mar',
-  'Apr',
-  'May',
-  'Jun',
-  'Jul',
-  'Aug',
-  'Sep',
-  'Oct',
-  'Nov',
-  'Dec',
-] as const;
-
 /** The first days of months between two moments, thinned to about `count`; January is written as its year. */
 export function monthMarks(fromMs: number, toMs: number, count: number): readonly TimeMark[] {
   const from = new Date(fromMs);
@@ -74,6 +61,9 @@ export function monthMarks(fromMs: number, toMs: number, count: number): readonl
     .filter((month) => (month.getFullYear() * 12 + month.getMonth()) % gap === 0)
     .map((month) => ({
       at: month.getTime(),
-      label: month.getMonth() === 0 ? String(month.getFullYear()) : (monthNames[month.getMonth()] ?? ''),
+      label:
+        month.getMonth() === 0
+          ? String(month.getFullYear())
+          : (monthNames[month.getMonth()]?.slice(0, 3) ?? ''),
     }));
 }
