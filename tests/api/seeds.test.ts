@@ -50,3 +50,14 @@ test("the demo labs' record holds every reading and every change of a run, in th
 test("the demo labs' versions are chained as the server's are", async () => {
   expect(await verifyVersions(owner)).toMatchObject({ ok: true, labs: 2 });
 });
+
+test("the demo lab's scan is kept with its file, and leaves fast and slow open", async () => {
+  const { rows } = await admin.query<Record<string, unknown>>(
+    `select p.name, c.open_questions, c.offset_deg, c.retardance_deg, f.name as file_name
+      from calibrations c join seats s on s.id = c.seat_id join plates p on p.id = s.plate_id join files f on f.id = c.file_id`,
+  );
+  expect(rows).toMatchObject([{ name: 'Q-E', open_questions: ['axis'], file_name: 'q-e-780nm.csv' }]);
+  // The plate that the file was made up from has 89.2° with its zero at 8.95.
+  expect(Math.abs(Number(rows[0]?.['retardance_deg']) - 89.2)).toBeLessThan(0.5);
+  expect(Math.abs(Number(rows[0]?.['offset_deg']) - 8.95)).toBeLessThan(0.2);
+});

@@ -263,6 +263,8 @@ test('home shows each person what they could do something about, and to everyone
     expect.objectContaining({ kind: 'draft-ahead', protocolId: protocol.id, afterVersion: null }),
   );
   for (const home of [forLead, forOperator, forGuest]) {
+    // H-9 stands in no beam, so nothing about it waits.
+    expect(home.cabinet.map(({ name }) => name)).toEqual(expect.arrayContaining(['H-3', 'H-9', 'Q-B']));
     expect(home.lastMade).toHaveLength(1);
     expect(home.lastMade[0]).toMatchObject({ label: 't2', runNumber: 1, toleranceInfidelity: 1e-3 });
     expect(home.lastMade[0]?.dialledInfidelity).toBeGreaterThan(1e-3);
