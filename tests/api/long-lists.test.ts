@@ -76,9 +76,10 @@ test.each([
   ['the first page by name', '/plates?limit=50'],
   ['the oldest calibrations', '/plates?limit=50&sort=age'],
   ['by wavelength, from the longest', '/plates?limit=50&sort=wavelength&order=desc'],
-  ['those overdue', '/plates?limit=50&health=overdue'],
-  ['half-wave plates', '/plates?limit=50&kind=half'],
-  ['what a search finds', '/plates?limit=50&search=P-12'],
+  // As many as the short list has of these, so that the pages are of one length.
+  ['those overdue', '/plates?limit=3&health=overdue'],
+  ['half-wave plates', '/plates?limit=16&kind=half'],
+  ['what a search finds', '/plates?limit=11&search=P-4'],
   ['mounts by name', '/mounts?limit=50'],
 ] as const)('a page of %s takes no longer among 5 000 plates than among 50', async (what, path) => {
   let [many, few] = [Infinity, Infinity];
