@@ -23,7 +23,7 @@ interface DueMail {
 function standing({ plateName, daysLeft, dueAt }: DuePlate): string {
   if (daysLeft < 0) return `${plateName} is ${days(-daysLeft)} past its calibration`;
   if (daysLeft === 0) return `${plateName} is due for calibration today`;
-  return `${plateName} is due for calibration in ${days(daysLeft)}, on ${dateWords(dueAt)}`;
+  return `${plateName} is due for calibration on ${dateWords(dueAt)}`;
 }
 
 const days = (count: number) => (count === 1 ? 'one day' : `${count} days`);

@@ -163,8 +163,8 @@ export function waitingWords(item: WaitingItem, { labId, now, dueDays, may }: Wa
         ),
         reason: (
           <>
-            Its retardance on the {item.benchName} is another one, so every angle solved there is off by an
-            amount that nobody has measured.
+            Nobody has measured it in the light of the {item.benchName}: its retardance there is predicted
+            where its material is known, and else taken as measured.
           </>
         ),
         way: { label: `Open ${item.plateName}`, to: `${base}/cabinet/${item.plateId}` },
