@@ -30,6 +30,7 @@ export default defineConfig({
           include: ['tests/{api,faults}/**/*.test.ts'],
           environment: 'node',
           globalSetup: ['tests/setup/cluster.ts'],
+          isolate: false,
           testTimeout: 60 * SECOND_MS,
           hookTimeout: 60 * SECOND_MS,
         },

@@ -46,7 +46,7 @@ export async function seedHarbour(
     note: '',
     openQuestions: [],
     settlesId: null,
-    measuredAt: at(90, '09:00').toISOString(),
+    measuredAt: at(90, '09:30').toISOString(),
   };
   const half = story.plate(at(90, '09:30'), oskar, {
     name: 'HWP 1',
@@ -70,7 +70,7 @@ export async function seedHarbour(
       },
     },
   });
-  const quarter = story.plate(at(90, '09:40'), oskar, {
+  const quarter = story.plate(at(90, '09:30'), oskar, {
     name: 'QWP 1',
     kind: 'quarter',
     designWavelengthNm: 1550,

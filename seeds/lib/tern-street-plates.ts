@@ -179,14 +179,15 @@ export function tellPlates(
 ): (name: string) => string {
   const ids = new Map<string, string>();
   for (const facts of plates) {
-    const [first, ...later] = facts.measured;
+    const [first] = facts.measured;
     if (first === undefined) throw new Error('a plate is measured before it is used');
-    const id = story.plate(at(first[0], '11:15'), people.designer, newPlate(facts, first, at));
+    const id = story.plate(at(first[0], '10:20'), people.designer, newPlate(facts));
     for (const [daysAgo, why] of facts.reseated ?? []) {
       story.reseat(at(daysAgo, '10:20'), people.operator, id, why);
     }
-    for (const measured of later) {
-      story.calibration(at(measured[0], '11:15'), people.operator, id, calibration(measured, at));
+    for (const measured of facts.measured) {
+      const by = measured === first ? people.designer : people.operator;
+      story.calibration(at(measured[0], '11:15'), by, id, calibration(measured, at));
     }
     if (facts.scanned !== undefined) {
       const { daysAgo, wavelengthNm, file } = facts.scanned;
@@ -210,7 +211,7 @@ export function tellPlates(
   };
 }
 
-function newPlate(facts: PlateFacts, first: Measured, at: At): CreatePlate {
+function newPlate(facts: PlateFacts): CreatePlate {
   const [name, direction, resolutionDeg, repeatabilityDeg] = facts.mount;
   const motor = resolutionDeg < 0.1;
   return {
@@ -235,7 +236,7 @@ function newPlate(facts: PlateFacts, first: Measured, at: At): CreatePlate {
         backlashDeg: motor ? 0.05 : 0,
         approach: motor ? 'rising' : 'either',
       },
-      calibration: calibration(first, at),
+      calibration: null,
     },
   };
 }

@@ -39,7 +39,7 @@ export function PlateTray({ plates, openId, base, dueDays, now, hasMore, onMore 
     <nav
       ref={tray}
       aria-label="Plates"
-      className="relative overflow-x-auto"
+      className="relative -mt-1.5 overflow-x-auto pt-1.5"
       onScroll={(event) => scrolled(event.currentTarget)}
     >
       <ul className="flex min-w-full">

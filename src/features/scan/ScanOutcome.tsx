@@ -69,7 +69,7 @@ function Refused({ state }: { readonly state: NewScanState }) {
   if (columnProblem !== null) return <Asks title="The columns are not all told">{columnProblem}</Asks>;
   switch (reply?.kind) {
     case 'faults': {
-      const { faults, moreFaults } = reply;
+      const { faults, moreFaults, understood } = reply;
       return (
         <Note
           title={
@@ -91,7 +91,7 @@ function Refused({ state }: { readonly state: NewScanState }) {
             </ul>
           </div>
           {moreFaults > 0 && <p className="mt-2">And {moreFaults} more faults like these.</p>}
-          <p className="mt-2">Mend the file, save it, and choose it again.</p>
+          {understood !== null && <p className="mt-2">Mend the file, save it, and choose it again.</p>}
         </Note>
       );
     }

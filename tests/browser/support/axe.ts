@@ -12,14 +12,16 @@ const nodesSchema = z.array(
 const resultSchema = z.object({ violations: nodesSchema, incomplete: nodesSchema });
 
 /**
- * What axe-core has against the page as it stands: its violations, and every text whose contrast it leaves undecided and that does
+ * What axe-core has against the page as it stands, or against its contrast alone: its violations, and every text whose contrast it leaves undecided and that does
  * not reach 4.5:1 when it is measured on each ground of its theme. Empty when there is nothing.
  */
-export async function axeFindings(page: Page): Promise<string[]> {
+export async function axeFindings(page: Page, what: 'all' | 'contrast' = 'all'): Promise<string[]> {
+  const runOnly =
+    what === 'all' ? { type: 'tag', values: tags } : { type: 'rule', values: ['color-contrast'] };
   // By the debugger's evaluation: the content security policy of the page forbids a script of another origin, and that is right.
   await page.evaluate(axe.source);
   const result = resultSchema.parse(
-    await page.evaluate(`axe.run(document, { runOnly: { type: 'tag', values: ${JSON.stringify(tags)} } })`),
+    await page.evaluate(`axe.run(document, { runOnly: ${JSON.stringify(runOnly)} })`),
   );
   const violations = result.violations.flatMap(({ id, nodes }) =>
     nodes.map(({ html }) => `${id}: ${html.slice(0, 160)}`),
