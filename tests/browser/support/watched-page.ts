@@ -34,11 +34,10 @@ export async function openPage(
   browser: Browser,
   product: Product,
   viewport = { width: 1440, height: 900 },
-  colorScheme: 'light' | 'dark' = 'light',
 ): Promise<WatchedPage> {
   const context = await browser.newContext({
     viewport,
-    colorScheme,
+    colorScheme: 'light',
     baseURL: product.url,
     reducedMotion: 'reduce',
   });
