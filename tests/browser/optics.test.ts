@@ -207,7 +207,9 @@ describe('two hundred targets of three plates', () => {
     expect(await page.getByText('expected fidelity').isVisible()).toBe(true);
     await page.setViewportSize({ width: 390, height: 844 });
     // What is drawn as wide as its place is drawn again after the window has its new width.
-    await page.waitForFunction('document.documentElement.scrollWidth === 390');
+    await expect
+      .poll(() => page.evaluate('document.documentElement.scrollWidth'), { timeout: 10_000 })
+      .toBe(390);
     expect(faults()).toEqual([]);
     await context.close();
   });
