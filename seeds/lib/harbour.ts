@@ -58,6 +58,7 @@ export async function seedHarbour(
     ...undescribed,
     seat: {
       kind: 'new-mount',
+      since: null,
       mount: { ...ring, name: 'R1' },
       calibration: {
         wavelengthNm: 1550,
@@ -80,6 +81,7 @@ export async function seedHarbour(
     ...undescribed,
     seat: {
       kind: 'new-mount',
+      since: null,
       mount: { ...ring, name: 'R2' },
       calibration: {
         wavelengthNm: 1550,

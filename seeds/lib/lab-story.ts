@@ -156,7 +156,11 @@ export class LabStory {
       const plate = await this.#plate(plateId);
       if (plate.seat === null) throw new Error('a plate is seated before it is seated anew');
       const { mountId } = plate.seat;
-      const seatId = await seatPlate(this.transaction, this.#place(at, by), plate, { mountId, why });
+      const seatId = await seatPlate(this.transaction, this.#place(at, by), plate, {
+        mountId,
+        why,
+        at: null,
+      });
       const details = { seatId, mountId, endedSeatId: plate.seat.id, why };
       return { kind: 'plate.seated', subjectId: plateId, details };
     });
@@ -165,7 +169,7 @@ export class LabStory {
   takeOut(at: Date, by: Person, plateId: string, why: string): void {
     this.#happened(at, by, async () => {
       const plate = await this.#plate(plateId);
-      const details = await takeOutPlate(this.transaction, this.#place(at, by), plate, why);
+      const details = await takeOutPlate(this.transaction, this.#place(at, by), plate, { why, at: null });
       return { kind: 'plate.taken-out', subjectId: plateId, details };
     });
   }

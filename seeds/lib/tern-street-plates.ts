@@ -224,6 +224,7 @@ function newPlate(facts: PlateFacts): CreatePlate {
     note: facts.note,
     seat: {
       kind: 'new-mount',
+      since: null,
       mount: {
         name,
         drive: motor ? 'motor' : 'hand',

@@ -127,31 +127,19 @@ function overlaps(earlier: DocumentSeatHead, seat: DocumentSeatHead): boolean {
   return earlier.seatedAt === seat.seatedAt && refKey(earlier.mount) === refKey(seat.mount);
 }
 
-/**
- * What was measured in a seat was measured before it ended, and after the plate's seat before it did. Not after it began:
- * the cabinet dates a plate's first seat by when it was entered, which may be after it was measured there.
- */
+/** What was measured in a seat was measured after it began and before it ended. */
 function checkCalibrationTimes(plate: DocumentPlate, path: PartPath, latest: string, report: Report): void {
-  let endedBefore = '';
-  const byStart = [...plate.seats.entries()].toSorted(([, one], [, other]) =>
-    one.seatedAt < other.seatedAt ? -1 : one.seatedAt > other.seatedAt ? 1 : 0,
-  );
-  for (const [place, seat] of byStart) {
-    const earliest = endedBefore === '' ? '' : later(endedBefore, -clockSlackMs);
+  for (const [place, seat] of plate.seats.entries()) {
     for (const [nth, { measuredAt }] of seat.calibrations.entries()) {
       const at = [...path, 'seats', place, 'calibrations', nth, 'measuredAt'];
       checkPast(measuredAt, latest, at, report);
       if (seat.leftAt !== null && measuredAt > later(seat.leftAt, clockSlackMs)) {
         report(at, `This was measured after the seat in ${seat.mount.name} ended at ${seat.leftAt}.`);
       }
-      if (measuredAt < earliest) {
-        report(
-          at,
-          `This was measured before ${plate.name} left the mount that it sat in before, at ${endedBefore}.`,
-        );
+      if (measuredAt < later(seat.seatedAt, -clockSlackMs)) {
+        report(at, `This was measured before the seat in ${seat.mount.name} began at ${seat.seatedAt}.`);
       }
     }
-    if (seat.leftAt !== null && seat.leftAt > endedBefore) endedBefore = seat.leftAt;
   }
 }
 

@@ -2,9 +2,10 @@ import { type CellValue, type CsvColumn, csvColumns, type CsvPart } from './csv-
 import type { FaultList, PartPath } from './faults';
 import type { Report } from './read-parts';
 
-/** A row of a cabinet's CSV, every cell read. */
+/** A row of a cabinet's CSV. */
 export interface CsvRow {
   readonly row: number;
+  /** A cell at fault has none. */
   readonly values: ReadonlyMap<CsvColumn, CellValue>;
   /** The parts that the row says anything of. */
   readonly filled: ReadonlySet<CsvPart>;
@@ -111,6 +112,7 @@ export class CsvParts {
   /** What is repeated must be the same in each row. */
   private agree(known: RowsOf, row: CsvRow, part: CsvPart): void {
     for (const column of columns[part]) {
+      if (!row.values.has(column) || !known.first.values.has(column)) continue;
       const [here, there] = [row.values.get(column) ?? null, known.first.values.get(column) ?? null];
       if (here === there) continue;
       this.fault(
@@ -125,15 +127,15 @@ export class CsvParts {
     this.faults.add({ row: row.row, column: column?.header ?? null, message });
   }
 
-  /** Plates and mounts as a JSON document would have them, nothing of them checked. */
-  raw(): { readonly mounts: readonly unknown[]; readonly plates: readonly unknown[] } {
+  /** Plates and mounts as a JSON document would have them, nothing of them checked. `isWhole`: no row was left out. */
+  raw(isWhole: boolean): { readonly mounts: readonly unknown[]; readonly plates: readonly unknown[] } {
     return {
       mounts: [...this.mounts.values()].map(({ first }) => partOf(first, 'mount')),
-      plates: [...this.plates.values()].map((plate) => this.rawPlate(plate)),
+      plates: [...this.plates.values()].map((plate) => this.rawPlate(plate, isWhole)),
     };
   }
 
-  private rawPlate({ first, seats, numbers }: RawPlate): unknown {
+  private rawPlate({ first, seats, numbers }: RawPlate, isWhole: boolean): unknown {
     const rows = [...seats.values()].flatMap(({ calibrations }) => calibrations);
     const places = new Map(rows.map((row, place) => [row, place + 1]));
     const calibration = (row: CsvRow): unknown => {
@@ -142,7 +144,7 @@ export class CsvParts {
       if (settled === null) return part;
       const target = numbers.get(settled);
       const place = target === undefined ? undefined : places.get(target);
-      if (place === undefined) {
+      if (place === undefined && isWhole) {
         this.fault(row, settlesNumber, `No calibration of this plate has the number ${said(settled)}.`);
       }
       return { ...part, settles: place ?? null };

@@ -16,8 +16,15 @@ export const maxFaults = 100;
 /** Faults as they are found, up to a number that a person can work through. */
 export class FaultList {
   private readonly found: FileFault[] = [];
+  private readonly cells = new Set<string>();
 
+  /** Of a cell of a table the first fault is kept: what follows from it says nothing new. */
   add(fault: FileFault): void {
+    if (fault.row !== null && fault.column !== null) {
+      const cell = `${fault.row} ${fault.column}`;
+      if (this.cells.has(cell)) return;
+      this.cells.add(cell);
+    }
     if (this.found.length < maxFaults) this.found.push(fault);
     else if (this.found.length === maxFaults) {
       const message = `There are more than ${maxFaults} faults. Mend these first; the rest of the file was not read.`;

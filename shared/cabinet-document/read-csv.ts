@@ -35,10 +35,12 @@ export function readCsv(text: string, now: Date, faults: FaultList): CabinetDocu
     }
     if (faults.isFull()) break;
   }
-  if (!faults.isEmpty()) return null;
+  if (faults.isFull()) return null;
+  // Rows that can't be read hide no fault of the others; only what holds between rows is left until all are there.
+  const isWhole = faults.isEmpty();
   const report = parts.report;
-  const document = readParts(parts.raw(), report);
-  if (document !== null) checkDocument(document, now, report);
+  const document = readParts(parts.raw(isWhole), report);
+  if (document !== null && isWhole) checkDocument(document, now, report);
   return faults.isEmpty() ? document : null;
 }
 
@@ -92,16 +94,12 @@ function readRow(
   }
   const values = new Map<CsvColumn, CellValue>();
   const filled = new Set<CsvPart>();
-  let isWhole = true;
   for (const [place, column] of columns.entries()) {
     const cell = cells[place] ?? '';
     if (cell.trim() !== '') filled.add(column.part);
     const read = readCell(column, cell);
     if (read.ok) values.set(column, read.value);
-    else {
-      isWhole = false;
-      faults.add({ row, column: column.header, message: read.fault });
-    }
+    else faults.add({ row, column: column.header, message: read.fault });
   }
-  return isWhole ? { row, values, filled } : null;
+  return { row, values, filled };
 }

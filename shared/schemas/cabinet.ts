@@ -182,17 +182,22 @@ const orderOfConstruction = z.superRefine<Parameters<typeof orderFault>[0]>((pla
   if (message !== null) context.addIssue({ code: 'custom', path: ['order'], message });
 });
 
+/** Since when a plate sits where it does: since it was measured there, or now, where nobody says. */
+const sinceSchema = timestampSchema.nullable().default(null);
+
 /** Where a new plate sits from the start: in a mount of the cabinet, in one that comes with it, or nowhere yet. */
 const firstSeatSchema = z.discriminatedUnion('kind', [
   z.strictObject({ kind: z.literal('none') }),
   z.strictObject({
     kind: z.literal('mount'),
     mountId: idSchema,
+    since: sinceSchema,
     calibration: calibrationInputSchema.nullable(),
   }),
   z.strictObject({
     kind: z.literal('new-mount'),
     mount: writeMountSchema,
+    since: sinceSchema,
     calibration: calibrationInputSchema.nullable(),
   }),
 ]);

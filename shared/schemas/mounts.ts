@@ -98,11 +98,16 @@ export const writeMountSchema = z.strictObject({
 });
 export type WriteMount = z.infer<typeof writeMountSchema>;
 
+/** When it was done, where that was not just now. */
+const doneAtSchema = timestampSchema.nullable().default(null);
+
 /** Puts a plate into a mount; where it sits in another, or in this one, that seat ends with it. */
 export const seatPlateSchema = z.strictObject({
   mountId: idSchema,
   /** Why the seat before ends: asked for where there is one. */
   why: noteSchema(200, 'reason'),
+  at: doneAtSchema,
 });
 export type SeatPlate = z.infer<typeof seatPlateSchema>;
-export const takeOutSchema = z.strictObject({ why: lineSchema(200, 'reason') });
+export const takeOutSchema = z.strictObject({ why: lineSchema(200, 'reason'), at: doneAtSchema });
+export type TakeOut = z.infer<typeof takeOutSchema>;

@@ -88,6 +88,67 @@ describe('a seat', () => {
     expect((await plateNow(plate.id)).calibration).toBeNull();
   });
 
+  test('begins and ends when a person says, as far as what is known of plate and mount allows', async () => {
+    const [plate, other] = [await addPlate('S-10'), await addPlate('S-11')];
+    const mountId = plate.seat?.mountId;
+    // It was measured at 10:00 on that day, so it sat by then.
+    expect(plate.seat?.seatedAt).toBe('2026-06-01T10:00:00.000Z');
+    const measured = (measuredAt: string) =>
+      change(plate.id, 'post', '/calibrations', calibrationBody({ measuredAt }));
+    expect((await measured('2026-06-03T10:00:00Z')).status).toBe(201);
+    const out = (why: string, when: string) => change(plate.id, 'post', '/take-out', { why, at: when });
+    const refusals = [
+      await out('Moved.', '2099-01-01T00:00:00Z'),
+      await out('Moved.', '2026-05-30T10:00:00Z'),
+      await change(plate.id, 'put', '/seat', { mountId, why: 'Knocked.', at: '2026-06-02T10:00:00Z' }),
+    ];
+    expect(refusals.map(({ status, text }) => [status, faultOf(text).path])).toEqual([
+      [422, 'at'],
+      [422, 'at'],
+      [422, 'at'],
+    ]);
+    expect(refusals.map(({ text }) => faultOf(text).detail)).toEqual([
+      expect.stringContaining('in the future'),
+      expect.stringContaining('S-10 was seated in M S-10 at 2026-06-01 10:00 UTC, after this'),
+      expect.stringContaining('was measured in M S-10 at 2026-06-03 10:00 UTC, so it still sat there'),
+    ]);
+    expect((await out('Moved.', '2026-06-05T10:00:00Z')).status).toBe(200);
+    const seat = (plateId: string, when: string) =>
+      change(plateId, 'put', '/seat', { mountId, why: 'Moved.', at: when });
+    expect(faultOf((await seat(plate.id, '2026-06-04T10:00:00Z')).text).detail).toContain(
+      'It sat in its last mount until 2026-06-05 10:00 UTC',
+    );
+    expect(faultOf((await seat(other.id, '2026-06-04T10:00:00Z')).text).detail).toContain(
+      'Another plate sat in this mount until 2026-06-05 10:00 UTC',
+    );
+    expect((await seat(plate.id, '2026-06-06T10:00:00Z')).status).toBe(200);
+    const { seats } = await answered(
+      call(harness, lead, 'get', at(`/plates/${plate.id}`)),
+      plateDetailSchema,
+    );
+    expect(seats.map(({ seatedAt, leftAt }) => [seatedAt, leftAt])).toEqual([
+      ['2026-06-06T10:00:00.000Z', null],
+      ['2026-06-01T10:00:00.000Z', '2026-06-05T10:00:00.000Z'],
+    ]);
+    expect((await measured('2026-06-06T11:00:00Z')).status).toBe(201);
+  });
+
+  test('of a new plate begins when a person says, or by when it was measured', async () => {
+    const add = async (name: string, since: string | null, measuredAt: string) => {
+      const body = plateBody(name, { calibration: { measuredAt } });
+      const added = call(harness, lead, 'post', at('/plates'), {
+        body: { ...body, seat: { ...body.seat, since } },
+      });
+      return (await answered(added, cabinetPlateSchema)).seat?.seatedAt;
+    };
+    expect(await add('S-12', '2026-04-01T08:00:00Z', '2026-06-01T10:00:00Z')).toBe(
+      '2026-04-01T08:00:00.000Z',
+    );
+    expect(await add('S-13', '2026-06-02T08:00:00Z', '2026-06-01T10:00:00Z')).toBe(
+      '2026-06-01T10:00:00.000Z',
+    );
+  });
+
   test('is refused in a mount that holds another plate, is retired or is not there, each by name', async () => {
     const [one, other] = [await addPlate('S-3'), await addPlate('S-4')];
     await change(one.id, 'post', '/take-out', { why: 'Moved.' });
@@ -190,14 +251,18 @@ describe('a calibration', () => {
     expect([refused.status, faultOf(refused.text).code]).toEqual([409, 'not-seated']);
   });
 
-  test('from before the plate was last taken out is refused, since that zero is void', async () => {
+  test('from before the plate was seated as it is now is refused, in a first seat as in a later one', async () => {
     const plate = await addPlate('C-0');
-    await change(plate.id, 'put', '/seat', { mountId: plate.seat?.mountId, why: 'Knocked.' });
     const record = (measuredAt: string) =>
       change(plate.id, 'post', '/calibrations', calibrationBody({ measuredAt }));
+    const older = await record('2026-05-31T10:00:00Z');
+    expect(faultOf(older.text).path).toBe('measuredAt');
+    expect(faultOf(older.text).detail).toContain(
+      'C-0 sits in M C-0 since 2026-06-01 10:00 UTC, and this is before that',
+    );
+    await change(plate.id, 'put', '/seat', { mountId: plate.seat?.mountId, why: 'Knocked.' });
     const old = await record('2026-06-01T10:00:00Z');
     expect([old.status, faultOf(old.text).path]).toEqual([422, 'measuredAt']);
-    expect(faultOf(old.text).detail).toContain('C-0 was taken out of its mount after this');
     expect((await plateNow(plate.id)).calibration).toBeNull();
     expect((await record(new Date().toISOString())).status).toBe(201);
   });
@@ -232,9 +297,12 @@ describe('a calibration', () => {
   test('that was measured before the newest one does not take its place', async () => {
     const plate = await addPlate('C-3');
     await call(harness, lead, 'post', at(`/plates/${plate.id}/calibrations`), {
-      body: calibrationBody({ offsetDeg: 1, measuredAt: '2025-01-01T10:00:00Z' }),
+      body: calibrationBody({ offsetDeg: 2, measuredAt: '2026-06-03T10:00:00Z' }),
     });
-    expect((await plateNow(plate.id)).calibration?.offsetDeg).toBe(12.4);
+    await call(harness, lead, 'post', at(`/plates/${plate.id}/calibrations`), {
+      body: calibrationBody({ offsetDeg: 1, measuredAt: '2026-06-02T10:00:00Z' }),
+    });
+    expect((await plateNow(plate.id)).calibration?.offsetDeg).toBe(2);
   });
 });
 

@@ -227,7 +227,7 @@ describe('from the file to the calibration', () => {
       mount: { name: 'M-bare', direction: -1 },
     });
     if (seat.kind !== 'new-mount') throw new Error('the plate has a mount');
-    const body = { ...facts, seat: { ...seat, calibration: null } };
+    const body = { ...facts, seat: { ...seat, since: '2026-06-01T10:00:00Z', calibration: null } };
     const plate = await answered(call(harness, lead, 'post', at('/plates'), { body }), cabinetPlateSchema);
     const text = linearScanText({ truth: TRUTH, seed: 34, ports: 'crossed' });
     const refused = await send(plate, await scanBody(plate, text, { columns: ONE }));

@@ -35,14 +35,19 @@ const good = cabinet(
 );
 const csv = (document: CabinetDocument = good): string => writeCabinet(document, 'csv');
 const lines = csv().trimEnd().split('\r\n');
-/** The text with one cell changed: rows as a spreadsheet counts, columns by name. */
-function withCell(row: number, column: string, cell: string): string {
-  const place = (lines[0] ?? '').split(',').indexOf(column);
-  expect(place).toBeGreaterThanOrEqual(0);
-  return lines
-    .map((line, index) => (index === row - 1 ? line.split(',').with(place, cell).join(',') : line))
-    .join('\r\n');
+/** The text with some cells changed: rows as a spreadsheet counts, columns by name. */
+function withCells(changes: readonly (readonly [row: number, column: string, cell: string])[]): string {
+  const header = (lines[0] ?? '').split(',');
+  const cells = lines.map((line) => line.split(','));
+  for (const [row, column, cell] of changes) {
+    const place = header.indexOf(column);
+    expect(place).toBeGreaterThanOrEqual(0);
+    cells[row - 1] = (cells[row - 1] ?? []).with(place, cell);
+  }
+  return cells.map((row) => row.join(',')).join('\r\n');
 }
+
+const withCell = (row: number, column: string, cell: string): string => withCells([[row, column, cell]]);
 
 it('a file of these tests is well as it stands', () => {
   expect(faultsOf(csv())).toEqual([]);
@@ -68,12 +73,29 @@ describe('a cell at fault is named by row and column', () => {
     ['settles_number', '2', 'left nothing open'],
     ['measured_at', '2026-03-10', 'a day and a time like'],
     ['measured_at', day(90), 'in the future'],
-    ['measured_at', day(1), 'before H-1 left the mount'],
+    ['measured_at', day(1), 'before the seat in'],
     ['measured_at', '1850-01-01T00:00:00Z', 'before 1900'],
     ['calibration_number', '1', 'Row 2 has this number already'],
     ['recorded_by', '', 'Write the name of who recorded it.'],
   ])('%s: %s', (column, cell, words) => {
     expectFault(withCell(3, column, cell), 3, column, words);
+  });
+
+  it('beside every other, in its own row and in others', () => {
+    const text = withCells([
+      [2, 'retardance_deg', '361'],
+      [3, 'retardance_deg', 'NaN'],
+      [3, 'method', '=1'],
+      [4, 'method', ''],
+      [5, 'drive', 'hand,'],
+    ]);
+    expect(faultsOf(text).map(({ row, column }) => [row, column])).toEqual([
+      [2, 'retardance_deg'],
+      [3, 'retardance_deg'],
+      [3, 'method'],
+      [4, 'method'],
+      [5, null],
+    ]);
   });
 
   it('with both rows where what is repeated disagrees', () => {
@@ -161,10 +183,9 @@ describe('what no cell shows by itself is found', () => {
     expect(faultsOf(csv(document))).toEqual([]);
   });
 
-  it('nor is a first seat refused that was entered after its plate was measured in it', () => {
-    expect(
-      faultsOf(csv(cabinet([mount('M-1')], [plate('H-1', [seat('M-1', 9, null, [calibration(2)])])]))),
-    ).toEqual([]);
+  it('and a first seat begins before its plate was measured in it, like a later one', () => {
+    const early = csv(cabinet([mount('M-1')], [plate('H-1', [seat('M-1', 9, null, [calibration(2)])])]));
+    expectFault(early, 2, 'measured_at', 'before the seat in M-1 began');
   });
 });
 

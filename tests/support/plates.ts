@@ -121,7 +121,12 @@ export function newPlate({ mount, calibration, ...change }: NewPlateChange = {})
     coatingNm: null,
     damageNote: '',
     note: '',
-    seat: { kind: 'new-mount', mount: newMount(mount), calibration: newCalibration(calibration) },
+    seat: {
+      kind: 'new-mount',
+      since: null,
+      mount: newMount(mount),
+      calibration: newCalibration(calibration),
+    },
     ...change,
   };
 }

@@ -6,7 +6,7 @@ import { findCalibration, insertCalibration } from './calibration-store';
 import type { StoredPlate } from './plate-rows';
 import { plateParams } from './plate-routes';
 import { findPlateToChange, raiseRevision } from './plate-store';
-import { requireInSeat, requirePast, toMilliseconds } from './plate-work';
+import { requireInSeat, requirePast, toMilliseconds } from './seat-times';
 
 export function calibrationRoutes(): readonly Route[] {
   return [
@@ -22,7 +22,7 @@ export function calibrationRoutes(): readonly Route[] {
       handler: async ({ body, thing, labId, user, transaction, audit, now }) => {
         requirePast(body.measuredAt, now, 'measuredAt');
         const seat = seatToCalibrate(thing);
-        await requireInSeat(transaction, thing, body.measuredAt);
+        requireInSeat(thing, seat, body.measuredAt);
         await requireSettles(transaction, thing, body.settlesId);
         const id = await insertCalibration(transaction, { labId, userId: user.id, now }, seat.id, body);
         await raiseRevision(transaction, thing);

@@ -1,5 +1,4 @@
-import { clockSlackMs } from '../../../shared/clock-slack';
-import type { CreatePlate, SeatPlate } from '../../../shared/schemas';
+import type { CreatePlate, SeatPlate, TakeOut } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { brokenUnique } from '../../db/sql-state';
@@ -8,7 +7,8 @@ import { insertCalibration } from './calibration-store';
 import { findMountToChange, insertMount, type StoredMount } from './mount-store';
 import type { StoredPlate } from './plate-rows';
 import { insertPlate } from './plate-store';
-import { endSeat, insertSeat, lastTakenOut } from './seat-store';
+import { endSeat, insertSeat } from './seat-store';
+import { requirePast, whenLeft, whenSeated } from './seat-times';
 
 /** Where and by whom something of a cabinet is written. */
 export interface CabinetPlace {
@@ -45,35 +45,6 @@ export async function namedOnce<Result>(
   }
 }
 
-export function requirePast(measuredAt: string, now: Date, path: string): void {
-  if (Date.parse(measuredAt) <= now.getTime() + clockSlackMs) return;
-  throw refused([{ path, message: 'This is in the future. Write when it was measured.' }]);
-}
-
-/**
- * A zero that was measured before the plate was last taken out is void, whoever writes it down later. Of a first seat
- * nothing is asked: a plate may have stood in its mount for years before it came into the cabinet.
- */
-export async function requireInSeat(
-  transaction: Transaction,
-  plate: StoredPlate,
-  measuredAt: string,
-): Promise<void> {
-  const out = await lastTakenOut(transaction, { labId: plate.labId, plateId: plate.id });
-  if (out === null || Date.parse(measuredAt) >= out.getTime() - clockSlackMs) return;
-  throw refused([
-    {
-      path: 'measuredAt',
-      message: `${plate.name} was taken out of its mount after this, so what was measured then is void. Write when it was measured in its present seat.`,
-    },
-  ]);
-}
-
-/** As the database keeps it, so that this answer and the next are the same text. */
-export function toMilliseconds(timestamp: string): string {
-  return new Date(timestamp).toISOString();
-}
-
 /** A new plate, with the mount it comes in, its seat and what was measured, as far as there is any. */
 export async function addPlate(
   transaction: Transaction,
@@ -91,9 +62,20 @@ export async function addPlate(
     seat.kind === 'new-mount'
       ? await insertMount(transaction, place, seat.mount)
       : (await emptyMount(transaction, { labId: place.labId, mountId: seat.mountId }, 'seat.mountId')).id;
-  const seatId = await insertSeat(transaction, place, { plateId: id, mountId });
+  const seatedAt = await whenSeated(
+    transaction,
+    { labId: place.labId, plateId: id, mountId },
+    { at: earliest(seat.since, seat.calibration?.measuredAt ?? null), now: place.now, path: 'seat.since' },
+  );
+  const seatId = await insertSeat(transaction, place, { plateId: id, mountId, seatedAt });
   if (seat.calibration !== null) await insertCalibration(transaction, place, seatId, seat.calibration);
   return id;
+}
+
+/** A plate sat by the time that it was measured, whenever somebody thinks it was seated. */
+function earliest(since: string | null, measuredAt: string | null): string | null {
+  if (since === null || measuredAt === null) return since ?? measuredAt;
+  return Date.parse(measuredAt) < Date.parse(since) ? measuredAt : since;
 }
 
 /**
@@ -104,7 +86,7 @@ export async function seatPlate(
   transaction: Transaction,
   place: CabinetPlace,
   plate: StoredPlate,
-  { mountId, why }: SeatPlate,
+  { mountId, why, at }: SeatPlate,
 ): Promise<string> {
   if (plate.retiredAt !== null) {
     throw conflict(
@@ -119,10 +101,14 @@ export async function seatPlate(
         { path: 'why', message: `${plate.name} sits in ${plate.seat.mount.name}. Write why that seat ends.` },
       ]);
     }
-    await endSeat(transaction, { labId: place.labId, seatId: plate.seat.id }, { at: place.now, why });
+    const leftAt = await whenLeft(transaction, plate, plate.seat, { at, now: place.now });
+    await endSeat(transaction, { labId: place.labId, seatId: plate.seat.id }, { at: leftAt, why });
   }
   const mount = await emptyMount(transaction, key, 'mountId');
-  return insertSeat(transaction, place, { plateId: plate.id, mountId: mount.id });
+  const seat = { plateId: plate.id, mountId: mount.id };
+  const seating = { at, now: place.now, path: 'at' };
+  const seatedAt = await whenSeated(transaction, { labId: place.labId, ...seat }, seating);
+  return insertSeat(transaction, place, { ...seat, seatedAt });
 }
 
 /** Ends a plate's seat, and with it the zero that was measured in it. @returns what the record says of it. */
@@ -130,11 +116,18 @@ export async function takeOutPlate(
   transaction: Transaction,
   place: Pick<CabinetPlace, 'labId' | 'now'>,
   plate: StoredPlate,
-  why: string,
-): Promise<{ readonly seatId: string; readonly mountId: string; readonly why: string }> {
-  if (plate.seat === null) throw conflict('not-seated', `${plate.name} sits in no mount.`);
-  await endSeat(transaction, { labId: place.labId, seatId: plate.seat.id }, { at: place.now, why });
-  return { seatId: plate.seat.id, mountId: plate.seat.mountId, why };
+  { why, at }: TakeOut,
+): Promise<{
+  readonly seatId: string;
+  readonly mountId: string;
+  readonly leftAt: string;
+  readonly why: string;
+}> {
+  const { seat } = plate;
+  if (seat === null) throw conflict('not-seated', `${plate.name} sits in no mount.`);
+  const leftAt = await whenLeft(transaction, plate, seat, { at, now: place.now });
+  await endSeat(transaction, { labId: place.labId, seatId: seat.id }, { at: leftAt, why });
+  return { seatId: seat.id, mountId: seat.mountId, leftAt: leftAt.toISOString(), why };
 }
 
 /** A calibration answers an open question of one of the same seat, or none. */

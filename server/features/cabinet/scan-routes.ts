@@ -17,7 +17,7 @@ import { requireSettles, seatToCalibrate } from './calibration-routes';
 import { findCalibration, insertCalibration } from './calibration-store';
 import { plateParams } from './plate-routes';
 import { findPlateToChange, raiseRevision } from './plate-store';
-import { requireInSeat, requirePast, toMilliseconds } from './plate-work';
+import { requireInSeat, requirePast, toMilliseconds } from './seat-times';
 import { rememberColumns, rememberedColumns } from './scan-store';
 import { calibrationOfScan, readScan } from './scan-work';
 
@@ -78,7 +78,7 @@ export function scanRoutes(): readonly Route[] {
       handler: async ({ body, thing, labId, transaction, now }) => {
         requirePast(body.measuredAt, now, 'measuredAt');
         const seat = seatToCalibrate(thing);
-        await requireInSeat(transaction, thing, body.measuredAt);
+        requireInSeat(thing, seat, body.measuredAt);
         await requireSettles(transaction, thing, body.settlesId);
         const lab = await findLab(transaction, { labId });
         if (lab === null) throw new Error('the lab of a plate is there by foreign key');

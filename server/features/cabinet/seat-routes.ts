@@ -23,7 +23,7 @@ export function seatRoutes(): readonly Route[] {
         await audit({
           kind: 'plate.seated',
           subjectId: thing.id,
-          details: { seatId, mountId: body.mountId, endedSeatId: thing.seat?.id ?? null, why: body.why },
+          details: { seatId, endedSeatId: thing.seat?.id ?? null, ...body },
         });
         return plateReply(transaction, key, now);
       },
@@ -40,7 +40,7 @@ export function seatRoutes(): readonly Route[] {
       handler: async ({ body, thing, labId, transaction, audit, expectedRevision, now }) => {
         const key = { labId, plateId: thing.id };
         await requireNewest(transaction, thing, expectedRevision, now);
-        const details = await takeOutPlate(transaction, { labId, now }, thing, body.why);
+        const details = await takeOutPlate(transaction, { labId, now }, thing, body);
         await raiseRevision(transaction, thing);
         await audit({ kind: 'plate.taken-out', subjectId: thing.id, details });
         return plateReply(transaction, key, now);

@@ -50,24 +50,38 @@ export async function listSeats(
   return rowsOf(found).map(mapSeat);
 }
 
-const endRow = z.object({ left_at: z.date().nullable() });
+const momentRow = z.object({ moment: z.date().nullable() });
 
-/** When a plate was last taken out of a mount; null where it never was. */
-export async function lastTakenOut(
+/** When a plate was last taken out of a mount, or a mount last became empty; null where neither ever was. */
+export async function lastLeft(
   transaction: Transaction,
-  key: { readonly labId: string; readonly plateId: string },
+  labId: string,
+  of: { readonly plateId: string } | { readonly mountId: string },
 ): Promise<Date | null> {
+  const thing = 'plateId' in of ? { plate_id: of.plateId } : { mount_id: of.mountId };
   const found: unknown = await transaction('seats')
-    .where({ lab_id: key.labId, plate_id: key.plateId })
-    .max({ left_at: 'left_at' })
+    .where({ lab_id: labId, ...thing })
+    .max({ moment: 'left_at' })
     .first();
-  return endRow.parse(found).left_at;
+  return momentRow.parse(found).moment;
+}
+
+/** When a plate was last measured in a seat; null where it never was. */
+export async function newestMeasured(
+  transaction: Transaction,
+  key: { readonly labId: string; readonly seatId: string },
+): Promise<Date | null> {
+  const found: unknown = await transaction('calibrations')
+    .where({ lab_id: key.labId, seat_id: key.seatId })
+    .max({ moment: 'measured_at' })
+    .first();
+  return momentRow.parse(found).moment;
 }
 
 export async function insertSeat(
   transaction: Transaction,
-  place: { readonly labId: string; readonly userId: string; readonly now: Date },
-  seat: { readonly plateId: string; readonly mountId: string },
+  place: { readonly labId: string; readonly userId: string },
+  seat: { readonly plateId: string; readonly mountId: string; readonly seatedAt: Date },
 ): Promise<string> {
   const id = newId();
   await transaction('seats').insert({
@@ -75,7 +89,7 @@ export async function insertSeat(
     lab_id: place.labId,
     plate_id: seat.plateId,
     mount_id: seat.mountId,
-    seated_at: place.now,
+    seated_at: seat.seatedAt,
     seated_by: place.userId,
   });
   return id;

@@ -21,13 +21,7 @@ export function CalibrationFields({
   return (
     <div className="grid gap-4 sm:grid-cols-2">
       <NumberField label="wavelength, nm" {...field('wavelengthNm')} required />
-      <TextField
-        label="measured at (your time)"
-        type="datetime-local"
-        help={<Doubt text={doubts.measuredAt} />}
-        {...field('measuredAt')}
-        required
-      />
+      <TextField label="measured at (your time)" type="datetime-local" {...field('measuredAt')} required />
       <NumberField
         label="retardance, degrees"
         help={<Doubt text={doubts.retardance} />}

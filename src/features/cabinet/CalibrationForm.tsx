@@ -13,6 +13,7 @@ import {
   questionFields,
   readCalibration,
 } from './calibration-form-values';
+import { measuredAtFault } from './measured-at-fault';
 import { questionWords } from './plate-words';
 import { recordCalibration } from './queries';
 
@@ -33,8 +34,14 @@ export function CalibrationForm(props: {
     CalibrationInput
   >({
     defaultValues: emptyCalibration(standing ?? { wavelengthNm: plate.designWavelengthNm }, opened),
-    resolver: schemaResolver(calibrationInputSchema, (values: CalibrationValues) =>
-      readCalibration(values, standing),
+    resolver: schemaResolver(
+      calibrationInputSchema,
+      (values: CalibrationValues) => readCalibration(values, standing),
+      undefined,
+      ({ measuredAt }) => {
+        const message = measuredAtFault(measuredAt, plate.seat?.seatedAt ?? null, new Date());
+        return message === null ? [] : [{ field: 'measuredAt', message }];
+      },
     ),
     mode: 'onTouched',
   });
@@ -64,7 +71,7 @@ export function CalibrationForm(props: {
       <CalibrationFields
         field={(name) => ({ ...register(name), fault: formState.errors[name]?.message })}
         question={(name) => register(name)}
-        doubts={calibrationDoubts(typed, standing, plate.seat?.seatedAt ?? null)}
+        doubts={calibrationDoubts(typed, standing)}
       />
       {settled.length > 0 && (
         <p role="status">

@@ -4,9 +4,19 @@ import { type CabinetPlate, type CreatePlate, createPlateSchema } from '../../..
 import { Button } from '../../components/Button';
 import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
 import { emptyNewPlate, newPlateFieldOf, type NewPlateValues, readNewPlate } from './new-plate-values';
+import { measuredAtFault } from './measured-at-fault';
 import { NewPlateSeat } from './NewPlateSeat';
 import { PlateFields } from './PlateFields';
 import { createPlate } from './queries';
+
+/** What the server will refuse, said beside what the schema does. */
+function futureFaults({ seat, calibrates, calibration }: NewPlateValues) {
+  const message =
+    seat === 'none' || calibrates === 'not-yet'
+      ? null
+      : measuredAtFault(calibration.measuredAt, null, new Date());
+  return message === null ? [] : [{ field: 'calibration.measuredAt' as const, message }];
+}
 
 /** A plate that comes into the cabinet: what it is, where it sits, and what was measured of it there, as far as there is any. */
 export function NewPlateForm(props: {
@@ -20,7 +30,7 @@ export function NewPlateForm(props: {
   const keyFor = useIdempotencyKey();
   const form = useForm<NewPlateValues, unknown, CreatePlate>({
     defaultValues: emptyNewPlate(now),
-    resolver: schemaResolver(createPlateSchema, readNewPlate, newPlateFieldOf),
+    resolver: schemaResolver(createPlateSchema, readNewPlate, newPlateFieldOf, futureFaults),
     mode: 'onTouched',
   });
   const { register, control, formState, handleSubmit, setError } = form;

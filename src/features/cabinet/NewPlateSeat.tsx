@@ -3,6 +3,7 @@ import type { CreatePlate } from '../../../shared/schemas/cabinet';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { calibrationDoubts } from './calibration-doubts';
 import { CalibrationFields } from './CalibrationFields';
+import { TextField } from '../../components/TextField';
 import { EmptyMountChoice } from './mounts/EmptyMountChoice';
 import { MountFields } from './mounts/MountFields';
 import type { NewPlateValues } from './new-plate-values';
@@ -62,6 +63,15 @@ export function NewPlateSeat({
             onDirection={(chosen) => setValue('mount.direction', chosen, { shouldDirty: true })}
           />
         )}
+        {seat !== 'none' && (
+          <TextField
+            label="it sits there since (your time)"
+            type="datetime-local"
+            help="Empty: since it was measured there, or since now."
+            {...register('since')}
+            fault={errors.since?.message}
+          />
+        )}
       </fieldset>
       {seat !== 'none' && (
         <fieldset className="space-y-4">
@@ -79,7 +89,7 @@ export function NewPlateSeat({
                 fault: errors.calibration?.[name]?.message,
               })}
               question={(name) => register(`calibration.${name}`)}
-              doubts={calibrationDoubts(calibration, null, null)}
+              doubts={calibrationDoubts(calibration, null)}
             />
           ) : (
             <p className="text-ink-2">

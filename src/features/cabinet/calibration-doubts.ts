@@ -1,5 +1,5 @@
 import type { Calibration } from '../../../shared/schemas/calibrations';
-import { isoFromLocalField, readTypedNumber } from '../../lib/forms';
+import { readTypedNumber } from '../../lib/forms';
 import type { CalibrationValues } from './calibration-form-values';
 
 /** Nearer than this, in degrees, two calibrations of one plate are not worth a question. */
@@ -11,7 +11,6 @@ const gap = '\u202f';
 
 /** The one part of a calibration that a slip of the hand shows in, with what a person should look at again before it stands. */
 export interface CalibrationDoubts {
-  readonly measuredAt: string | null;
   readonly retardance: string | null;
   readonly retardanceSigma: string | null;
   readonly offsetSigma: string | null;
@@ -21,10 +20,8 @@ export interface CalibrationDoubts {
 export function calibrationDoubts(
   typed: Partial<CalibrationValues>,
   last: Calibration | null,
-  seatedAt: string | null,
 ): CalibrationDoubts {
   return {
-    measuredAt: beforeSeatWords(typed.measuredAt, seatedAt),
     retardance: last === null ? null : farWords(typed, last),
     retardanceSigma: zeroWords(typed.retardanceSigmaDeg, 'retardance'),
     offsetSigma: zeroWords(typed.offsetSigmaDeg, 'zero'),
@@ -42,15 +39,6 @@ function farWords(typed: Partial<CalibrationValues>, last: Calibration): string 
       ? ''
       : `, at ${last.wavelengthNm}${gap}nm`;
   return `${last.retardanceDeg}° last time${elsewhere}: this is ${Number(awayDeg.toFixed(2))}° away.`;
-}
-
-/** A field of time has whole minutes, so the minute of the seating itself is no doubt. */
-const minuteMs = 60_000;
-
-function beforeSeatWords(typed: string | undefined, seatedAt: string | null): string | null {
-  const measured = Date.parse(isoFromLocalField(typed ?? ''));
-  if (seatedAt === null || !(measured < Math.floor(Date.parse(seatedAt) / minuteMs) * minuteMs)) return null;
-  return 'This is before it was seated as it is now. A zero of an earlier seat does not hold in this one.';
 }
 
 function zeroWords(text: string | undefined, name: string): string | null {

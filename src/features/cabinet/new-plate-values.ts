@@ -1,4 +1,5 @@
 import type { Path } from 'react-hook-form';
+import { isoFromOptionalField } from '../../lib/forms';
 import { type CalibrationValues, emptyCalibration, readCalibration } from './calibration-form-values';
 import { emptyMount, mountFieldOf, type MountValues, readMount } from './mounts/mount-form-values';
 import { emptyPlate, plateFieldOf, type PlateValues, readPlate } from './plate-form-values';
@@ -13,6 +14,8 @@ export interface NewPlateValues {
   /** Of the empty mount that was chosen; '' while none is. */
   readonly mountId: string;
   readonly mount: MountValues;
+  /** '' where nobody says. */
+  readonly since: string;
   readonly calibrates: 'not-yet' | 'now';
   readonly calibration: CalibrationValues;
 }
@@ -23,6 +26,7 @@ export function emptyNewPlate(now: Date): NewPlateValues {
     seat: 'new-mount',
     mountId: '',
     mount: emptyMount,
+    since: '',
     calibrates: 'not-yet',
     calibration: emptyCalibration(null, now),
   };
@@ -35,13 +39,14 @@ export function readNewPlate(values: NewPlateValues) {
 
 function readSeat(values: NewPlateValues) {
   const calibration = values.calibrates === 'now' ? readCalibration(values.calibration) : null;
+  const since = isoFromOptionalField(values.since);
   switch (values.seat) {
     case 'none':
       return { kind: 'none' };
     case 'mount':
-      return { kind: 'mount', mountId: values.mountId, calibration };
+      return { kind: 'mount', mountId: values.mountId, since, calibration };
     case 'new-mount':
-      return { kind: 'new-mount', mount: readMount(values.mount), calibration };
+      return { kind: 'new-mount', mount: readMount(values.mount), since, calibration };
   }
 }
 
@@ -56,6 +61,7 @@ const isCalibrationField = (name: string): name is keyof CalibrationValues =>
 /** The form's name of a part of the request; null where the form has none. */
 export function newPlateFieldOf(path: string): Path<NewPlateValues> | null {
   if (path === 'seat.mountId') return 'mountId';
+  if (path === 'seat.since') return 'since';
   const ofMount = /^seat\.mount\.(.+)$/.exec(path)?.[1];
   if (ofMount !== undefined) {
     const field = mountFieldOf(ofMount) ?? ofMount;

@@ -1,8 +1,8 @@
-export { isoFromLocalField, localFieldFromDate } from './local-time';
+export { isoFromLocalField, isoFromOptionalField, localFieldFromDate } from './local-time';
 export { schemaResolver } from './schema-resolver';
 export { readOptionalNumber, readTypedNumber, typedFromNumber, typedFromOptional } from './typed-number';
 export { useIdempotencyKey } from './use-idempotency-key';
 export { conflictingState, problemSentences } from './form-problem';
 export { FormProblem } from './FormProblem';
 export { EditConflict, type EditDifference } from './EditConflict';
-export { showServerFaults } from './server-faults';
+export { serverFaultAt, showServerFaults } from './server-faults';

@@ -11,3 +11,9 @@ export function isoFromLocalField(text: string): string {
   const date = new Date(text);
   return text === '' || Number.isNaN(date.getTime()) ? '' : date.toISOString();
 }
+
+/** The same of a field that may be empty: null where it names no moment. */
+export function isoFromOptionalField(text: string): string | null {
+  const moment = isoFromLocalField(text);
+  return moment === '' ? null : moment;
+}

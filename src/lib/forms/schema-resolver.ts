@@ -3,26 +3,38 @@ import { type FieldError, type FieldValues, get, type Path, type Resolver } from
 import type { z } from 'zod';
 import { commaSentence, parseTypedNumber } from '../format';
 
+interface FieldFault<Values extends FieldValues> {
+  readonly field: Path<Values>;
+  readonly message: string;
+}
+
 /**
  * Holds a form against a request's schema. The form's values stay the text that was typed;
  * `read` makes of them what the schema expects, and the schema's sentence stands at the field it names.
- * Where a part of the request has another field's name in the form, `fieldOf` says which.
+ * Where a part of the request has another field's name in the form, `fieldOf` says which. `alsoWrong` is what the form knows
+ * beside the schema, such as what the server will refuse: it is said at the same time, not once all else is mended.
  */
 export function schemaResolver<Values extends FieldValues, Output extends FieldValues>(
   schema: z.ZodType<Output>,
   read: (values: Values) => unknown,
   fieldOf: (path: string) => Path<Values> | null = () => null,
+  alsoWrong: (values: Values) => readonly FieldFault<Values>[] = () => [],
 ): Resolver<Values, unknown, Output> {
   return (values, _context, options) => {
     const parsed = schema.safeParse(read(values));
-    if (parsed.success) return { values: parsed.data, errors: {} };
+    const others = alsoWrong(values);
+    if (parsed.success && others.length === 0) return { values: parsed.data, errors: {} };
     const errors: Record<string, FieldError> = {};
-    for (const issue of parsed.error.issues) {
+    for (const issue of parsed.error?.issues ?? []) {
       const path = issue.path.map(String).join('.');
       const field = fieldOf(path) ?? path;
       const typed: unknown = get(values, field);
       const message = wantsNumber(issue) && hasComma(typed) ? commaSentence(typed) : issue.message;
       errors[field] ??= { type: issue.code, message };
+    }
+    for (const { field, message } of others) {
+      const name: string = field;
+      errors[name] ??= { type: 'form', message };
     }
     return { values: {}, errors: toNestErrors(errors, options) };
   };

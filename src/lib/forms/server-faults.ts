@@ -1,6 +1,12 @@
 import type { FieldValues, Path, UseFormSetError } from 'react-hook-form';
 import { ApiError } from '../api';
 
+/** What the server found at one part of a request; null where it found nothing there. */
+export function serverFaultAt(error: unknown, path: string): string | null {
+  if (!(error instanceof ApiError)) return null;
+  return error.problem?.fields?.find((fault) => fault.path === path)?.message ?? null;
+}
+
 /**
  * Puts what the server found at the fields it names, for what no schema can see: a name that is taken, a plate that
  * stands elsewhere. `fieldOf` gives the form's name of a part of the request, or null where the form has none.

@@ -1,13 +1,14 @@
 import { describe, expect, it } from 'vitest';
 import { calibrationInputSchema } from '../../../shared/schemas/calibrations';
 import { calibrationDoubts } from '../../../src/features/cabinet/calibration-doubts';
+import { measuredAtFault } from '../../../src/features/cabinet/measured-at-fault';
 import { motionWords } from '../../../src/features/cabinet/mounts/mount-words';
 import { mountFixture, plateFixture } from './plate-fixture';
 
 // 88.9(4)° at 810 nm.
 const last = plateFixture().calibration;
 const retardance = (typed: Parameters<typeof calibrationDoubts>[0]) =>
-  calibrationDoubts({ wavelengthNm: '810', ...typed }, last, null).retardance;
+  calibrationDoubts({ wavelengthNm: '810', ...typed }, last).retardance;
 
 describe('what a person should look at again before a calibration stands', () => {
   it('is a retardance that is far from the last one, by σ and by degrees', () => {
@@ -27,30 +28,43 @@ describe('what a person should look at again before a calibration stands', () =>
   });
 
   it('is a σ of 0, and nothing while a field is empty or a plate has no calibration yet', () => {
-    expect(calibrationDoubts({ retardanceSigmaDeg: '0' }, null, null)).toEqual({
-      measuredAt: null,
+    expect(calibrationDoubts({ retardanceSigmaDeg: '0' }, null)).toEqual({
       retardance: null,
       retardanceSigma: 'With a σ of 0 the retardance counts as exact: nothing of it is in the budget.',
       offsetSigma: null,
     });
-    expect(calibrationDoubts({ offsetSigmaDeg: '0.0' }, last, null).offsetSigma).toMatch(
+    expect(calibrationDoubts({ offsetSigmaDeg: '0.0' }, last).offsetSigma).toMatch(
       /^With a σ of 0 the zero/u,
     );
-    expect(
-      Object.values(calibrationDoubts({ retardanceDeg: '', retardanceSigmaDeg: '' }, last, null)),
-    ).toEqual([null, null, null, null]);
+    expect(Object.values(calibrationDoubts({ retardanceDeg: '', retardanceSigmaDeg: '' }, last))).toEqual([
+      null,
+      null,
+      null,
+    ]);
   });
 });
 
-describe('a calibration that was measured before the plate was seated', () => {
+describe('the moment of a calibration', () => {
   // In the reader's own time zone, as the field has it.
   const seatedAt = new Date(2026, 3, 30, 10, 20, 40).toISOString();
-  const doubt = (measuredAt: string) => calibrationDoubts({ measuredAt }, null, seatedAt).measuredAt;
+  const now = new Date(2026, 3, 30, 11, 0, 0);
+  const fault = (typed: string) => measuredAtFault(typed, seatedAt, now);
 
-  it('is doubted, since a zero of an earlier seat does not hold', () => {
-    expect(doubt('2026-04-30T10:19')).toMatch(/^This is before it was seated/);
-    expect(doubt('2026-04-30T10:20')).toBeNull();
-    expect(doubt('')).toBeNull();
+  it('is not before the plate was seated as it is, since a zero of an earlier seat does not hold', () => {
+    expect(fault('2026-04-30T10:14')).toMatch(
+      /^It sits as it does now since today 10:20, and this is before that/u,
+    );
+    expect(fault('2026-04-30T10:20')).toBeNull();
+    expect(measuredAtFault('2026-04-30T10:14', null, now)).toBeNull();
+  });
+
+  it('is not in the future', () => {
+    expect(fault('2026-04-30T11:06')).toBe('This is in the future. Write when it was measured.');
+    expect(fault('2026-04-30T11:04')).toBeNull();
+  });
+
+  it('is left to the schema while it is empty', () => {
+    expect(fault('')).toBeNull();
   });
 });
 

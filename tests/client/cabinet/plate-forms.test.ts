@@ -182,7 +182,12 @@ describe('a plate that comes into the cabinet', () => {
       createPlateSchema.parse(readNewPlate({ ...start, ...change })).seat;
     expect(seatOf({ seat: 'none', calibrates: 'now' })).toEqual({ kind: 'none' });
     const { id } = mountFixture();
-    expect(seatOf({ seat: 'mount', mountId: id })).toEqual({ kind: 'mount', mountId: id, calibration: null });
+    expect(seatOf({ seat: 'mount', mountId: id, since: '2026-04-29T09:00' })).toEqual({
+      kind: 'mount',
+      mountId: id,
+      since: new Date(2026, 3, 29, 9).toISOString(),
+      calibration: null,
+    });
     const mount = valuesOfMount(mountFixture());
     expect(seatOf({ seat: 'new-mount', mount, calibrates: 'now', calibration: typed })).toMatchObject({
       kind: 'new-mount',

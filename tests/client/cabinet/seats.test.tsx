@@ -1,4 +1,4 @@
-import { cleanup, screen, waitFor, within } from '@testing-library/react';
+import { cleanup, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
 import { address, open, problem, serve, writes } from './cabinet-harness';
 import { detailFixture, mountFixture, plateFixture, seatFixture } from './plate-fixture';
@@ -44,7 +44,7 @@ describe('taking a plate out of its mount', () => {
       {
         method: 'POST',
         path: `/plates/${seated.id}/take-out`,
-        body: { why: 'Cleaned.' },
+        body: { why: 'Cleaned.', at: null },
         ifMatch: '"r3"',
       },
     ]);
@@ -52,6 +52,24 @@ describe('taking a plate out of its mount', () => {
     expect(screen.queryByRole('dialog')).toBeNull();
     await waitFor(() => expect(address()).toBe(`/${seated.id}`));
     expect(screen.getByText(/its zeros are void\. Cleaned\./)).toBeDefined();
+  });
+
+  it('says when it was done, and shows at the time why the server refuses it', async () => {
+    const { served, calls } = serve({ plates: [seated], detail: detailFixture(seated) });
+    const press = open('designer', `/${seated.id}?do=take-out`);
+    const dialog = within(await screen.findByRole('dialog'));
+    await press.type(dialog.getByLabelText('why Q-B is taken out'), 'Cleaned.');
+    const when = dialog.getByLabelText('when (your time)');
+    fireEvent.change(when, { target: { value: '2026-03-01T09:30' } });
+    const sentence = 'Q-B was measured in M05 at 2026-03-01 12:00 UTC, so it still sat there.';
+    served.special = ({ method }) =>
+      method === 'POST' ? problem(422, sentence, { fields: [{ path: 'at', message: sentence }] }) : null;
+    await press.click(dialog.getByRole('button', { name: 'Take Q-B out' }));
+    expect(await dialog.findAllByText(sentence)).toHaveLength(1);
+    expect(when.getAttribute('aria-invalid')).toBe('true');
+    expect(writes(calls)).toMatchObject([{ body: { at: new Date(2026, 2, 1, 9, 30).toISOString() } }]);
+    fireEvent.change(when, { target: { value: '2026-03-02T09:30' } });
+    expect(dialog.queryByText(sentence)).toBeNull();
   });
 
   it('keeps what was typed when somebody moved it first, and goes on from what is', async () => {
@@ -85,7 +103,7 @@ describe('seating a plate', () => {
       {
         method: 'PUT',
         path: `/plates/${seated.id}/seat`,
-        body: { mountId: seated.seat?.mountId, why: 'Its ring was loose.' },
+        body: { mountId: seated.seat?.mountId, why: 'Its ring was loose.', at: null },
       },
     ]);
     const head = await screen.findByRole('region', { name: 'Q-B’s zero is void since the new seat' });
@@ -113,7 +131,7 @@ describe('seating a plate', () => {
     await press.click(await dialog.findByRole('radio', { name: /M13/ }));
     await press.click(dialog.getByRole('button', { name: 'Seat Q-B in M13' }));
     expect(writes(calls)).toMatchObject([
-      { method: 'PUT', body: { mountId: mount.id, why: '' }, ifMatch: '"r4"' },
+      { method: 'PUT', body: { mountId: mount.id, why: '', at: null }, ifMatch: '"r4"' },
     ]);
   });
 

@@ -8,7 +8,14 @@ import { Dialog } from '../../../components/Dialog';
 import { announce } from '../../../components/live-region-store';
 import { SegmentedChoice } from '../../../components/SegmentedChoice';
 import { TextField } from '../../../components/TextField';
-import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../../lib/forms';
+import {
+  FormProblem,
+  isoFromOptionalField,
+  schemaResolver,
+  serverFaultAt,
+  showServerFaults,
+  useIdempotencyKey,
+} from '../../../lib/forms';
 import { EmptyMountChoice } from '../mounts/EmptyMountChoice';
 import { emptyMount, mountFieldOf, type MountValues, readMount } from '../mounts/mount-form-values';
 import { MountFields } from '../mounts/MountFields';
@@ -39,6 +46,7 @@ export function SeatDialog(props: {
   const keyFor = useIdempotencyKey();
   const [move, setMove] = useState(possibleMove(plate, wished));
   const [why, setWhy] = useState('');
+  const [when, setWhen] = useState('');
   const [place, setPlace] = useState<'empty' | 'new'>('empty');
   const [chosen, setChosen] = useState<CabinetMount | null>(null);
   // What is missing is said once somebody has pressed the verb.
@@ -58,14 +66,15 @@ export function SeatDialog(props: {
   const words = moveWords(plate, move, into);
   const moving = useMutation({
     mutationFn: async (target: Target) => {
-      if (target.kind === 'none') return takePlateOut(labId, plate, why);
+      const at = isoFromOptionalField(when);
+      if (target.kind === 'none') return takePlateOut(labId, plate, { why, at });
       const mountId =
         target.kind === 'new'
           ? (await createMount(labId, target.mount, keyFor(target.mount))).id
           : target.kind === 'id'
             ? target.id
             : (seat?.mountId ?? '');
-      return seatPlate(labId, plate, { mountId, why });
+      return seatPlate(labId, plate, { mountId, why, at });
     },
     onSuccess: () => {
       onClose();
@@ -73,11 +82,16 @@ export function SeatDialog(props: {
       void queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
     onError: async (error) => {
-      if (showServerFaults(error, setError, (path) => (path === 'name' ? path : null))) moving.reset();
+      if (
+        serverFaultAt(error, 'at') === null &&
+        showServerFaults(error, setError, (path) => (path === 'name' ? path : null))
+      )
+        moving.reset();
       // Somebody else may have moved it: what stands here is to be what is.
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
   });
+  const whenFault = serverFaultAt(moving.error, 'at');
   const whyFault = seat !== null && why.trim() === '' ? `Write why ${plate.name} is taken out.` : null;
   const press = () => {
     setPressed(true);
@@ -157,7 +171,19 @@ export function SeatDialog(props: {
           )}
         </>
       )}
-      <FormProblem error={moving.error} />
+      <TextField
+        label="when (your time)"
+        type="datetime-local"
+        help="Empty where it is done just now."
+        className="max-w-64"
+        value={when}
+        onChange={(event) => {
+          setWhen(event.target.value);
+          if (whenFault !== null) moving.reset();
+        }}
+        fault={whenFault ?? undefined}
+      />
+      {whenFault === null && <FormProblem error={moving.error} />}
     </Dialog>
   );
 }

@@ -1,5 +1,5 @@
 import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
-import type { SeatPlate } from '../../../../shared/schemas/mounts';
+import type { SeatPlate, TakeOut } from '../../../../shared/schemas/mounts';
 import { request } from '../../../lib/api';
 
 /** Puts a plate into a mount; the seat it had ends. */
@@ -11,10 +11,10 @@ export function seatPlate(labId: string, plate: Pick<CabinetPlate, 'id' | 'revis
   });
 }
 
-export function takePlateOut(labId: string, plate: Pick<CabinetPlate, 'id' | 'revision'>, why: string) {
+export function takePlateOut(labId: string, plate: Pick<CabinetPlate, 'id' | 'revision'>, body: TakeOut) {
   return request<CabinetPlate>(`/labs/${labId}/plates/${plate.id}/take-out`, {
     method: 'POST',
-    body: { why },
+    body,
     ifMatch: plate.revision,
   });
 }
