@@ -1,4 +1,4 @@
-import { formatTimeExact } from '../lib/format/date';
+import { daysBetween, formatMoment, formatTimeExact } from '../lib/format/date';
 
 /** The three honest words of saving. */
 export type Saving =
@@ -6,8 +6,8 @@ export type Saving =
   | { readonly kind: 'kept'; readonly waiting?: number | undefined }
   | { readonly kind: 'saved'; readonly at: Date };
 
-/** `typed`, `kept on this device`, `three readings wait on this device`, `saved 10:42:07`. */
-export function savingWords(saving: Saving, one = 'change', many = 'changes'): string {
+/** `typed`, `kept on this device`, `three readings wait on this device`, `saved 10:42:07`, `saved yesterday 17:20`. */
+export function savingWords(saving: Saving, one = 'change', many = 'changes', now = new Date()): string {
   switch (saving.kind) {
     case 'typed':
       return 'typed';
@@ -17,7 +17,7 @@ export function savingWords(saving: Saving, one = 'change', many = 'changes'): s
       return waiting === 1 ? `1 ${one} waits on this device` : `${waiting} ${many} wait on this device`;
     }
     case 'saved':
-      return `saved ${formatTimeExact(saving.at)}`;
+      return `saved ${daysBetween(saving.at, now) === 0 ? formatTimeExact(saving.at) : formatMoment(saving.at, now)}`;
   }
 }
 

@@ -1,4 +1,5 @@
-import { useEffect, useRef, useState } from 'react';
+import { useEffect, useRef } from 'react';
+import { FootSentence } from './FootSentence';
 import { TextButton } from './TextLink';
 import { isTyping } from './use-go-keys';
 
@@ -10,25 +11,12 @@ interface UndoSentenceProps {
   readonly onGone: () => void;
 }
 
-const shownMs = 10_000;
-
 /** A sentence at the foot with the way back, for ten seconds and for as long as someone is on it. */
 export function UndoSentence({ sentence, onUndo, onGone }: UndoSentenceProps) {
-  const [held, setHeld] = useState(false);
   const latest = useRef({ onUndo, onGone });
   useEffect(() => {
     latest.current = { onUndo, onGone };
   });
-
-  useEffect(() => {
-    if (held) return;
-    const timer = window.setTimeout(() => {
-      latest.current.onGone();
-    }, shownMs);
-    return () => {
-      window.clearTimeout(timer);
-    };
-  }, [held, sentence]);
 
   useEffect(() => {
     const press = (event: KeyboardEvent): void => {
@@ -45,31 +33,19 @@ export function UndoSentence({ sentence, onUndo, onGone }: UndoSentenceProps) {
     };
   }, []);
 
-  const hold = (): void => {
-    setHeld(true);
-  };
-  const letGo = (): void => {
-    setHeld(false);
-  };
   return (
-    <div
-      role="status"
-      className="fixed inset-x-0 bottom-0 z-30 flex flex-wrap gap-x-4 border-t-[1.5px] border-ink bg-paper px-5 py-3 sm:px-10"
-      onPointerEnter={hold}
-      onPointerLeave={letGo}
-      onFocus={hold}
-      onBlur={letGo}
-    >
-      <span>{sentence}</span>
-      <TextButton
-        aria-keyshortcuts="Control+Z"
-        onClick={() => {
-          onUndo();
-          onGone();
-        }}
-      >
-        Undo
-      </TextButton>
+    <div role="status">
+      <FootSentence sentence={sentence} onGone={onGone}>
+        <TextButton
+          aria-keyshortcuts="Control+Z"
+          onClick={() => {
+            onUndo();
+            onGone();
+          }}
+        >
+          Undo
+        </TextButton>
+      </FootSentence>
     </div>
   );
 }

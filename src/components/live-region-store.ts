@@ -11,7 +11,10 @@ interface Announcement {
 interface LiveRegionState {
   readonly polite: Announcement;
   readonly assertive: Announcement;
+  /** What was just done, for everybody to read; '' when it is long enough ago. */
+  readonly done: string;
   readonly announce: (text: string, politeness?: Politeness) => void;
+  readonly sayDone: (sentence: string) => void;
 }
 
 const nothing: Announcement = { text: '', count: 0 };
@@ -19,12 +22,21 @@ const nothing: Announcement = { text: '', count: 0 };
 export const useLiveRegion = create<LiveRegionState>()((set) => ({
   polite: nothing,
   assertive: nothing,
+  done: '',
   announce: (text, politeness = 'polite') => {
     set((state) => ({ [politeness]: { text, count: state[politeness].count + 1 } }));
+  },
+  sayDone: (done) => {
+    set({ done });
   },
 }));
 
 /** Says something to who can't see it happen: saved, three readings wait. Faults are `assertive`. */
 export function announce(text: string, politeness: Politeness = 'polite'): void {
   useLiveRegion.getState().announce(text, politeness);
+}
+
+/** Says at the foot of the page what was just done, where the page itself changes too little or too far away to show it. */
+export function sayDone(sentence: string): void {
+  useLiveRegion.getState().sayDone(sentence);
 }

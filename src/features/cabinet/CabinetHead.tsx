@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { TextLink } from '../../components/TextLink';
 import { formatLongDate } from '../../lib/format';
 import { useLab } from '../labs';
@@ -9,10 +10,9 @@ import { countsQuery } from './queries';
 export function CabinetHead(props: {
   readonly now: Date;
   readonly shows: 'tray' | 'table' | 'form';
-  /** The open plate's id. */
-  readonly openId: string | undefined;
+  readonly open: CabinetPlate | undefined;
 }) {
-  const { now, shows, openId } = props;
+  const { now, shows, open } = props;
   const { lab, may } = useLab();
   const counts = useQuery(countsQuery(lab.id));
   const base = `/labs/${lab.id}/cabinet`;
@@ -26,9 +26,9 @@ export function CabinetHead(props: {
       </p>
       <nav aria-label="Cabinet" className="flex flex-wrap gap-x-5 gap-y-2 xl:ml-auto">
         {edits && shows !== 'form' && <TextLink to={`${base}?do=add`}>Add a plate</TextLink>}
-        {edits && openId !== undefined && (
-          <TextLink to={`${base}/${openId}?do=take-out`} preventScrollReset>
-            Take a plate out or seat it
+        {edits && open?.retiredAt === null && (
+          <TextLink to={`${base}/${open.id}?do=take-out`} preventScrollReset>
+            {open.seat === null ? `Seat ${open.name}` : `Take ${open.name} out or seat it anew`}
           </TextLink>
         )}
         <TextLink to={`${base}/mounts`}>Mounts</TextLink>

@@ -23,7 +23,7 @@ export function Component() {
   return (
     <>
       <title>{`${tray.open?.name ?? 'Cabinet'} · Quarterturn`}</title>
-      <CabinetHead now={now} shows={shows} openId={tray.open?.id} />
+      <CabinetHead now={now} shows={shows} open={tray.open} />
       <RefusedTask refusal={whoMay(search.get('do'), may)} />
       {shows === 'form' && (
         <section aria-labelledby="new-plate" className="border-ink border-t-[1.5px] pt-5">

@@ -4,6 +4,7 @@ import { useForm, useWatch } from 'react-hook-form';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { type CalibrationInput, calibrationInputSchema } from '../../../shared/schemas/calibrations';
 import { Button } from '../../components/Button';
+import { sayDone } from '../../components/live-region-store';
 import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
 import { calibrationDoubts } from './calibration-doubts';
 import { CalibrationFields } from './CalibrationFields';
@@ -48,6 +49,7 @@ export function CalibrationForm(props: {
   const recording = useMutation({
     mutationFn: (body: CalibrationInput) => recordCalibration(labId, plate.id, body, keyFor(body)),
     onSuccess: async () => {
+      sayDone(`The calibration of ${plate.name} is recorded.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
     },

@@ -2,6 +2,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useForm, useWatch } from 'react-hook-form';
 import { type CabinetPlate, type CreatePlate, createPlateSchema } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
+import { sayDone } from '../../components/live-region-store';
 import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
 import { emptyNewPlate, newPlateFieldOf, type NewPlateValues, readNewPlate } from './new-plate-values';
 import { measuredAtFault } from './measured-at-fault';
@@ -38,6 +39,7 @@ export function NewPlateForm(props: {
   const creating = useMutation({
     mutationFn: (body: CreatePlate) => createPlate(labId, body, keyFor(body)),
     onSuccess: async (plate) => {
+      sayDone(`${plate.name} is in the cabinet.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onCreated(plate);
     },

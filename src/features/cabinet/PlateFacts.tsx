@@ -1,4 +1,5 @@
 import type { CabinetPlate, PlateDetail } from '../../../shared/schemas/cabinet';
+import type { Calibration } from '../../../shared/schemas/calibrations';
 import { Quantity } from '../../components/NumberText';
 import { TextLink } from '../../components/TextLink';
 import { formatDate, formatMoment, formatUncertain, withTrueMinus } from '../../lib/format';
@@ -11,8 +12,8 @@ import { PlateRing } from './PlateRing';
 
 interface FactsProps {
   readonly plate: CabinetPlate;
-  /** Every seat it has had, newest first; absent until they have come. */
-  readonly seats: PlateDetail['seats'] | undefined;
+  /** Its history; absent until it has come. */
+  readonly detail: PlateDetail | undefined;
   /** The address of the cabinet. */
   readonly base: string;
   readonly dueDays: number;
@@ -21,7 +22,7 @@ interface FactsProps {
 
 /** A plate as its mount reads with the fast axis along H, and what is known of both. */
 export function PlateFacts(props: FactsProps) {
-  const { plate, base } = props;
+  const { plate, detail, base } = props;
   const { seat } = plate;
   return (
     <div>
@@ -39,7 +40,11 @@ export function PlateFacts(props: FactsProps) {
       </div>
       <PlateRing plate={plate} />
       <dl className="mt-4">
-        <Measured plate={plate} />
+        {plate.calibration === null ? (
+          <Unmeasured plate={plate} last={detail?.calibrations[0]} />
+        ) : (
+          <Measured plate={plate} calibration={plate.calibration} />
+        )}
         <Made plate={plate} />
         <Seated {...props} />
         {plate.damageNote !== '' && <Fact name="damage">{plate.damageNote}</Fact>}
@@ -50,13 +55,42 @@ export function PlateFacts(props: FactsProps) {
   );
 }
 
-function Measured({ plate }: { readonly plate: CabinetPlate }) {
-  const { calibration } = plate;
-  if (calibration === null) {
-    return (
-      <Fact name="zero">{plate.seat === null ? 'none: it sits nowhere' : 'void until it is calibrated'}</Fact>
-    );
-  }
+/** What is left of a plate's measurements in a seat without any: a retardance goes with the plate, a zero with its seat. */
+function Unmeasured(props: { readonly plate: CabinetPlate; readonly last: Calibration | undefined }) {
+  const { plate, last } = props;
+  const none = last === undefined ? 'not measured yet' : 'void until it is calibrated';
+  return (
+    <>
+      <Fact name="zero">{plate.seat === null ? 'none: it sits nowhere' : none}</Fact>
+      {last !== undefined && (
+        <Fact name="retardance">
+          <Retardance of={last} />
+          <span className="text-s text-ink-2 block">measured in an earlier seat</span>
+        </Fact>
+      )}
+    </>
+  );
+}
+
+function Retardance({ of }: { readonly of: Calibration }) {
+  return (
+    <>
+      <span className="font-strong font-mono">
+        {formatUncertain(of.retardanceDeg, of.retardanceSigmaDeg)}°
+      </span>{' '}
+      at <Quantity text={String(of.wavelengthNm)} unit="nm" />
+      {of.temperatureC !== null && (
+        <>
+          {' '}
+          and <Quantity text={withTrueMinus(String(of.temperatureC))} unit="°C" />
+        </>
+      )}
+    </>
+  );
+}
+
+function Measured(props: { readonly plate: CabinetPlate; readonly calibration: Calibration }) {
+  const { plate, calibration } = props;
   const beside = besideModel(plate, calibration);
   const far = beside?.sigmas !== null && beside !== null && beside.sigmas >= farInSigmas;
   return (
@@ -67,16 +101,7 @@ function Measured({ plate }: { readonly plate: CabinetPlate }) {
         </span>
       </Fact>
       <Fact name="retardance">
-        <span className="font-strong font-mono">
-          {formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}°
-        </span>{' '}
-        at <Quantity text={String(calibration.wavelengthNm)} unit="nm" />
-        {calibration.temperatureC !== null && (
-          <>
-            {' '}
-            and <Quantity text={withTrueMinus(String(calibration.temperatureC))} unit="°C" />
-          </>
-        )}
+        <Retardance of={calibration} />
         {beside !== null && (
           <span className={`text-s block ${far ? 'text-ink' : 'text-ink-2'}`}>
             {besideModelWords(beside)}
@@ -113,7 +138,8 @@ function Made({ plate }: { readonly plate: CabinetPlate }) {
   );
 }
 
-function Seated({ plate, seats, dueDays, now }: FactsProps) {
+function Seated({ plate, detail, dueDays, now }: FactsProps) {
+  const seats = detail?.seats;
   const { seat, calibration } = plate;
   const age = calibration === null ? null : calibrationAge(calibration.measuredAt, dueDays, now);
   const last = seats?.[0];

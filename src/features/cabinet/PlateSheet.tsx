@@ -34,7 +34,7 @@ export function PlateSheet({ plate, now }: { readonly plate: CabinetPlate; reado
       <div className="md:max-xl:row-span-2">
         <PlateFacts
           plate={plate}
-          seats={detail.data?.seats}
+          detail={detail.data}
           base={base}
           dueDays={lab.calibrationDueDays}
           now={now}

@@ -1,9 +1,11 @@
-import { type RefObject, useEffect, useRef } from 'react';
+import type { RefObject } from 'react';
 import { Link } from 'react-router-dom';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { AgeRing } from '../../components/AgeRing';
+import { classNames } from '../../components/class-names';
 import { GapText } from '../../lib/GapText';
 import { calibrationAge } from './calibration-age';
+import { type TrayFrame, useTrayFrame } from './use-tray-frame';
 import { restingAxisDeg, shortKind, trustWords } from './plate-words';
 
 interface TrayProps {
@@ -20,26 +22,27 @@ interface TrayProps {
 /** How far from its right end the tray asks for more, in px. */
 const aheadPx = 600;
 
-/** The plates as rings with their age; the open one is lit and a notch in the rule below points at it. */
+/** Where the tray goes on out of sight, it fades out. */
+const fades: Readonly<Record<TrayFrame['cut'], string>> = {
+  none: '',
+  left: 'mask-l-from-[calc(100%-3rem)]',
+  right: 'mask-r-from-[calc(100%-3rem)]',
+  both: 'mask-x-from-[calc(100%-3rem)]',
+};
+
+/** The plates as rings with their age; the open one is lit and a notch in the rule below points at it. Tab comes to that one, and arrows walk. */
 export function PlateTray({ plates, openId, base, dueDays, now, hasMore, onMore }: TrayProps) {
-  const tray = useRef<HTMLElement>(null);
-  const opened = useRef<HTMLLIElement>(null);
-
-  // On a narrow window the tray is longer than the page: the open plate is brought to its middle.
-  useEffect(() => {
-    const [frame, item] = [tray.current, opened.current];
-    if (frame === null || item === null) return;
-    frame.scrollLeft = item.offsetLeft - (frame.clientWidth - item.offsetWidth) / 2;
-  }, [openId]);
-
+  const { frame, opened, cut, looked } = useTrayFrame(openId, plates.length);
   const scrolled = ({ scrollLeft, clientWidth, scrollWidth }: HTMLElement) => {
+    looked();
     if (hasMore && scrollLeft + clientWidth > scrollWidth - aheadPx) onMore();
   };
+  const stopId = plates.some(({ id }) => id === openId) ? openId : plates[0]?.id;
   return (
     <nav
-      ref={tray}
+      ref={frame}
       aria-label="Plates"
-      className="relative -mt-1.5 overflow-x-auto pt-1.5"
+      className={classNames('relative -mt-1.5 overflow-x-auto pt-1.5', fades[cut])}
       onScroll={(event) => scrolled(event.currentTarget)}
     >
       <ul className="flex min-w-full">
@@ -49,6 +52,7 @@ export function PlateTray({ plates, openId, base, dueDays, now, hasMore, onMore 
             {...{ plate, base, dueDays, now }}
             open={plate.id === openId}
             itemRef={plate.id === openId ? opened : undefined}
+            isStop={plate.id === stopId}
           />
         ))}
         {hasMore && (
@@ -72,11 +76,13 @@ function TrayPlate(props: {
   readonly plate: CabinetPlate;
   readonly open: boolean;
   readonly itemRef: RefObject<HTMLLIElement | null> | undefined;
+  /** Whether Tab comes to it; from there the arrows go on. */
+  readonly isStop: boolean;
   readonly base: string;
   readonly dueDays: number;
   readonly now: Date;
 }) {
-  const { plate, open, itemRef, base, dueDays, now } = props;
+  const { plate, open, itemRef, isStop, base, dueDays, now } = props;
   const { calibration, seat } = plate;
   const age = calibration === null ? null : calibrationAge(calibration.measuredAt, dueDays, now);
   const unsettled = seat !== null && (calibration === null || calibration.openQuestions.length > 0);
@@ -86,6 +92,7 @@ function TrayPlate(props: {
         to={`${base}/${plate.id}`}
         preventScrollReset
         aria-current={open ? 'page' : undefined}
+        tabIndex={isStop ? undefined : -1}
         className="hover:bg-wash flex flex-1 flex-col items-center px-1 pt-2 pb-3 text-center"
       >
         <AgeRing

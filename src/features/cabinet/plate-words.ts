@@ -27,11 +27,13 @@ export const questionWords: Readonly<Record<OpenQuestion, string>> = {
   blind: 'retardance not felt to first order',
 };
 
-/** Under a ring of the tray: "½ wave, 780 nm", or the retardance where the plate is neither. */
+/** Under a ring of the tray: "½ wave, 780 nm", what it is made for; where it is neither, the retardance and where it was measured. */
 export function shortKind({ kind, calibration, designWavelengthNm }: CabinetPlate): string {
-  const own = calibration === null ? 'plate' : `${calibration.retardanceDeg.toFixed(1)}°`;
-  const words = { half: '½ wave', quarter: '¼ wave', other: own }[kind];
-  return `${words}, ${calibration?.wavelengthNm ?? designWavelengthNm}${gap}nm`;
+  if (kind === 'other' && calibration !== null) {
+    return `${calibration.retardanceDeg.toFixed(1)}°, ${calibration.wavelengthNm}${gap}nm`;
+  }
+  const words = { half: '½ wave', quarter: '¼ wave', other: 'plate' }[kind];
+  return `${words}, ${designWavelengthNm}${gap}nm`;
 }
 
 /** How old a plate's calibration is, or why it has none, as it is read out after its name. */

@@ -4,7 +4,7 @@ import type { ImportResult } from '../../../shared/cabinet-document';
 import { BeamWorking } from '../../components/BeamState';
 import { Button } from '../../components/Button';
 import { ErrorNote } from '../../components/ErrorNote';
-import { announce } from '../../components/live-region-store';
+import { sayDone } from '../../components/live-region-store';
 import { SectionHead } from '../../components/SectionHead';
 import { TextButton, TextLink } from '../../components/TextLink';
 import { ApiError } from '../../lib/api';
@@ -25,7 +25,7 @@ export function ImportSection({ labId }: { readonly labId: string }) {
     mutationFn: ({ chosen, planHash }: { readonly chosen: CabinetFile; readonly planHash: string }) =>
       sendImport(labId, bare(chosen), planHash),
     onSuccess: async ({ plan }) => {
-      announce(`Imported. ${planSentences(plan).join(' ')}`);
+      sayDone(`Imported. ${planSentences(plan).join(' ')}`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
   });

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useId } from 'react';
+import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import type { Reliance, ReliantVersion } from '../../../shared/schemas/reliance';
 import { BeamWorking } from '../../components/BeamState';
 import { classNames } from '../../components/class-names';
@@ -11,8 +12,10 @@ import { relianceQuery } from './queries';
 import { reportWords } from './report-words';
 import { ResolveInDraft } from './ResolveInDraft';
 
+type RelyingPlate = Pick<CabinetPlate, 'id' | 'name' | 'seat'>;
+
 /** Every bench, draft and newest version that uses a plate, and what its last change does to each. */
-export function ReliesOnPlate({ plate }: { readonly plate: { readonly id: string; readonly name: string } }) {
+export function ReliesOnPlate({ plate }: { readonly plate: RelyingPlate }) {
   const { lab } = useLab();
   const headId = useId();
   const reliance = useQuery(relianceQuery(lab.id, plate.id));
@@ -35,7 +38,7 @@ function Relying({
   plate,
 }: {
   readonly reliance: Reliance;
-  readonly plate: { readonly id: string; readonly name: string };
+  readonly plate: RelyingPlate;
 }) {
   const { lab } = useLab();
   if (benches.length === 0 && versions.length === 0) {
@@ -53,7 +56,8 @@ function Relying({
       )}
       {benches.length > 0 && (
         <p className="text-s text-ink-2 mt-3">
-          It stands in the beam of {benches.map(({ name }) => name).join(' and ')}
+          {plate.seat === null ? 'It has a place, empty now, in' : 'It stands in'} the beam of{' '}
+          {benches.map(({ name }) => name).join(' and ')}
           {drafts.length === 0 ? '.' : '; these drafts solve with its newest calibration by themselves: '}
           {drafts.map(({ protocolId, protocolName }, index) => (
             <span key={protocolId}>
@@ -68,7 +72,7 @@ function Relying({
   );
 }
 
-function summary(versions: readonly ReliantVersion[], plate: { readonly id: string; readonly name: string }) {
+function summary(versions: readonly ReliantVersion[], plate: RelyingPlate) {
   const unseated = versions.some(({ report }) =>
     report?.voids.some(({ why, plateId }) => why === 'seat-ended' && plateId === plate.id),
   );
@@ -110,7 +114,7 @@ function VersionRow({ version }: { readonly version: ReliantVersion }) {
           />
         )}
       </div>
-      {stale && may('protocols.write') && (
+      {stale && report.resolved !== null && may('protocols.write') && (
         <div className="shrink-0">
           <ResolveInDraft labId={lab.id} version={version} />
         </div>

@@ -4,6 +4,7 @@ import type { ReliantVersion } from '../../../shared/schemas/reliance';
 import { Button, ButtonLink } from '../../components/Button';
 import { Dialog } from '../../components/Dialog';
 import { ErrorNote } from '../../components/ErrorNote';
+import { sayDone } from '../../components/live-region-store';
 import { TextButton } from '../../components/TextLink';
 import { ApiError } from '../../lib/api';
 import { draftFromVersion } from './queries';
@@ -20,6 +21,9 @@ export function ResolveInDraft(props: { readonly labId: string; readonly version
     onSuccess: async () => {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId, 'protocols'] });
       await navigate(draftPage);
+      sayDone(
+        `The draft holds the targets of version ${number} again, solved with the calibrations of now. Save it as a new version when it is as you want it.`,
+      );
     },
     // After a refusal, too, the next try is to be made against the draft as it is.
     onSettled: () => queryClient.invalidateQueries({ queryKey: ['labs', labId, 'plates'] }),

@@ -4,7 +4,7 @@ import { asMeasuredBefore } from '../../../shared/scan-calibration';
 import type { ColumnMapping, Understood } from '../../../shared/scan-file';
 import type { CabinetPlate, PlateDetail } from '../../../shared/schemas/cabinet';
 import type { LeftOut, RecordScan } from '../../../shared/schemas/scans';
-import { announce } from '../../components/live-region-store';
+import { sayDone } from '../../components/live-region-store';
 import { typedFromNumber, useIdempotencyKey } from '../../lib/forms';
 import { useLab } from '../labs';
 import type { ScanReply, ScanRequest } from './answer-scan';
@@ -201,7 +201,7 @@ export function useNewScan({ plate, detail, lightKind, now, onRecorded }: NewSca
     },
     onSuccess: async () => {
       isDone.current = true;
-      announce(`The scan of ${plate.name} is recorded.`);
+      sayDone(`The scan of ${plate.name} is recorded.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
       onRecorded();
     },

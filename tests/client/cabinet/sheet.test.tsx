@@ -38,6 +38,27 @@ describe('the tray', () => {
     expect(address()).toBe(`/${idOf(1)}`);
   });
 
+  it('is one stop of the Tab key, and the focus goes along with the arrows', async () => {
+    const [first, second] = others;
+    serve({
+      plates: others,
+      special: ({ path }) => {
+        const shown = others.find(({ id }) => path === `/plates/${id}`);
+        return shown === undefined ? null : { status: 200, body: detailFixture(shown) };
+      },
+    });
+    const press = open('guest', `/${first?.id ?? ''}`);
+    await screen.findByRole('article', { name: 'H-1' });
+    const tray = within(screen.getByRole('navigation', { name: 'Plates' }));
+    expect(tray.getAllByRole('link').map((link) => link.tabIndex)).toEqual([0, -1]);
+    tray.getByRole('link', { current: 'page' }).focus();
+    await press.keyboard('{ArrowRight}');
+    expect(await screen.findByRole('article', { name: 'H-2' })).toBeDefined();
+    expect(address()).toBe(`/${second?.id ?? ''}`);
+    expect(document.activeElement?.textContent).toMatch(/^H-2/u);
+    expect(tray.getAllByRole('link').map((link) => link.tabIndex)).toEqual([-1, 0]);
+  });
+
   it('says that there is no such plate', async () => {
     serve({
       plates: others,
@@ -55,6 +76,23 @@ describe('a plate’s sheet', () => {
     open('guest', `/${plate.id}`);
     // The brief's own figure for this plate: quartz, 808 nm, measured 86.9(4)° at 810 nm.
     expect(await screen.findByText('2.9° below quartz, 7σ: is it tilted?')).toBeDefined();
+  });
+
+  it('keeps the retardance of a plate that was taken out, and no zero', async () => {
+    const out = plateFixture({ mount: null });
+    serve({ plates: [out], detail: detailFixture(out, { calibrations: detailFixture(plate).calibrations }) });
+    open('guest', `/${plate.id}`);
+    expect((await screen.findByText('measured in an earlier seat')).closest('dd')?.textContent).toMatch(
+      /^88\.9\(4\)°/u,
+    );
+    expect(screen.getByText('none: it sits nowhere')).toBeDefined();
+  });
+
+  it('does not call a zero void that nobody has measured', async () => {
+    const bare = plateFixture({ calibration: null });
+    serve({ plates: [bare], detail: detailFixture(bare, { calibrations: [] }) });
+    open('guest', `/${plate.id}`);
+    expect(await screen.findByText('not measured yet')).toBeDefined();
   });
 
   it('has every seat and calibration in one table, with the scan’s hash and a way to the file', async () => {

@@ -297,6 +297,12 @@ describe('verdicts and words', () => {
     expect(savingWords({ kind: 'kept', waiting: 3 }, 'reading', 'readings')).toBe(
       '3 readings wait on this device',
     );
-    expect(savingWords({ kind: 'saved', at: new Date(2026, 5, 16, 10, 42, 7) })).toBe('saved 10:42:07');
+    const saved = { kind: 'saved', at: new Date(2026, 5, 16, 10, 42, 7) } as const;
+    const on = (day: number) => savingWords(saved, 'change', 'changes', new Date(2026, 5, day, 18));
+    expect([on(16), on(17), on(19)]).toEqual([
+      'saved 10:42:07',
+      'saved yesterday 10:42',
+      'saved 16 June 10:42',
+    ]);
   });
 });

@@ -10,6 +10,7 @@ import {
   relianceSchema,
   type ReliantVersion,
 } from '../../../shared/schemas/reliance';
+import { plateFixture } from '../cabinet/plate-fixture';
 import { LabContext } from '../../../src/features/labs';
 import { ReliesOnPlate } from '../../../src/features/reliance';
 
@@ -64,7 +65,12 @@ interface Sent {
   readonly ifMatch: string | null;
 }
 
-function show(reliance: Partial<Reliance>, role: Role = 'designer', refusal: string | null = null) {
+function show(
+  reliance: Partial<Reliance>,
+  role: Role = 'designer',
+  refusal: string | null = null,
+  seat = plateFixture().seat,
+) {
   const body = relianceSchema.parse({
     benches: [{ id: ids(3), name: 'signal arm' }],
     drafts: [],
@@ -86,7 +92,7 @@ function show(reliance: Partial<Reliance>, role: Role = 'designer', refusal: str
       <LabContext value={{ lab, user, member: { userId: user.id, labId: lab.id, role } }}>
         <MemoryRouter initialEntries={['/']}>
           <Routes>
-            <Route path="/" element={<ReliesOnPlate plate={plate} />} />
+            <Route path="/" element={<ReliesOnPlate plate={{ ...plate, seat }} />} />
             <Route path="/labs/:labId/plan/:protocolId" element={<p>The designer</p>} />
           </Routes>
         </MemoryRouter>
@@ -196,4 +202,18 @@ it('asks before it replaces a draft that holds changes of its own, with both nam
 it('says so where nothing relies on a plate', async () => {
   show({ benches: [] });
   expect(await screen.findByText(/No bench has it in its beam/)).toBeDefined();
+});
+
+it('has no way to a draft while nothing can be solved, and no plate in a beam that sits nowhere', async () => {
+  const waits = ['Q-B was taken out of its mount.'];
+  const blocked = report({
+    voids: [{ why: 'seat-ended', plateId: plate.id, plateName: 'Q-B' }],
+    waits,
+    oldDials: null,
+    resolved: null,
+  });
+  show({ versions: [version({ report: blocked })] }, 'designer', null, null);
+  expect(await textOf()).toContain('Q-B was taken out of its mount.');
+  expect(screen.queryByRole('button', { name: /^Re-solve in a draft/ })).toBeNull();
+  expect(screen.getByText(/^It has a place, empty now, in the beam of signal arm/)).toBeDefined();
 });

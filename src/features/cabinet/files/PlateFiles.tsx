@@ -2,7 +2,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import type { AttachedFile } from '../../../../shared/schemas/files';
 import { FileField } from '../../../components/FileField';
-import { announce } from '../../../components/live-region-store';
+import { sayDone } from '../../../components/live-region-store';
 import { TextButton } from '../../../components/TextLink';
 import { formatDate } from '../../../lib/format';
 import { FormProblem } from '../../../lib/forms';
@@ -50,7 +50,7 @@ function FileRow(props: {
     mutationFn: () => takeFileOff(labId, plate.id, file.id),
     onSuccess: async () => {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId, 'plates'] });
-      announce(`${file.name} is taken off.`);
+      sayDone(`${file.name} is taken off.`);
     },
   });
   const address = fileAddress(labId, file.id);

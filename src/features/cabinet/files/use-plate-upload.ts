@@ -1,7 +1,7 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useEffect, useRef, useState } from 'react';
 import type { AttachedFile } from '../../../../shared/schemas/files';
-import { announce } from '../../../components/live-region-store';
+import { sayDone } from '../../../components/live-region-store';
 import { problemSentences } from '../../../lib/forms';
 import { uploadFile } from '../../../lib/upload';
 import { attachFile } from './queries';
@@ -39,7 +39,7 @@ export function usePlateUpload(labId: string, plateId: string): PlateUpload {
       });
       await attachFile(labId, plateId, { fileId: stored.id, kind: kindOf(stored.mediaType) });
       await queryClient.invalidateQueries({ queryKey: ['labs', labId, 'plates'] });
-      announce(`${stored.name} is attached.`);
+      sayDone(`${stored.name} is attached.`);
     } catch (error) {
       if (!controller.signal.aborted) setFault(problemSentences(error).join(' '));
     } finally {

@@ -4,7 +4,7 @@ import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import type { Calibration, CalibrationInput } from '../../../../shared/schemas/calibrations';
 import { Button } from '../../../components/Button';
 import { Dialog } from '../../../components/Dialog';
-import { announce } from '../../../components/live-region-store';
+import { sayDone } from '../../../components/live-region-store';
 import { RingDial } from '../../../components/RingDial';
 import { TextArea } from '../../../components/TextArea';
 import { TextField } from '../../../components/TextField';
@@ -44,7 +44,7 @@ export function SettleDialog(props: {
     mutationFn: (body: CalibrationInput) => recordCalibration(labId, plate.id, body, keyFor(body)),
     onSuccess: () => {
       onClose();
-      announce(`Settled: ${plate.name} has a new calibration.`);
+      sayDone(`Settled: ${plate.name} has a new calibration.`);
       void queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
   });

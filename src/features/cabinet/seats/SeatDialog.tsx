@@ -5,7 +5,7 @@ import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import { type CabinetMount, type WriteMount, writeMountSchema } from '../../../../shared/schemas/mounts';
 import { Button } from '../../../components/Button';
 import { Dialog } from '../../../components/Dialog';
-import { announce } from '../../../components/live-region-store';
+import { sayDone } from '../../../components/live-region-store';
 import { SegmentedChoice } from '../../../components/SegmentedChoice';
 import { TextField } from '../../../components/TextField';
 import {
@@ -78,7 +78,7 @@ export function SeatDialog(props: {
     },
     onSuccess: () => {
       onClose();
-      announce(words.done);
+      sayDone(words.done);
       void queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
     onError: async (error) => {
