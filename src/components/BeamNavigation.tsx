@@ -119,7 +119,7 @@ function HomeLink({ href, lit, beamLit, labName }: HomeLinkProps) {
       <Link
         to={href}
         aria-current={lit ? 'page' : undefined}
-        className="absolute top-2 -left-1 block h-16 min-w-11 pl-[3.0625rem] no-underline max-desk:w-12"
+        className="absolute top-2 -left-1 block h-16 max-w-full min-w-11 pl-[3.0625rem] no-underline max-lg:w-12"
       >
         <svg
           aria-hidden="true"
@@ -131,11 +131,13 @@ function HomeLink({ href, lit, beamLit, labName }: HomeLinkProps) {
           <MarkLines />
           {lit && <circle r="6" strokeWidth="1.5" className="fill-lit stroke-ink" />}
         </svg>
-        <span className="block pt-4 text-[1.125rem] leading-6 font-section text-ink max-desk:sr-only">
+        <span className="block pt-4 text-[1.125rem] leading-6 font-section text-ink max-lg:sr-only">
           Quarterturn
         </span>
         {labName !== undefined && (
-          <span className="block pt-1 text-s whitespace-nowrap text-ink-2 max-desk:sr-only">{labName}</span>
+          <span className="block pt-1 text-s whitespace-nowrap text-ink-2 truncate max-lg:sr-only">
+            {labName}
+          </span>
         )}
       </Link>
     </div>

@@ -1,3 +1,4 @@
+import { classNames } from './class-names';
 import { BeamLine } from './BeamLine';
 import { controlBox, Field, type FieldFrameProps } from './Field';
 import { Quantity } from './NumberText';
@@ -13,6 +14,8 @@ interface Sending {
 interface FileFieldProps extends Pick<FieldFrameProps, 'label' | 'help' | 'fault' | 'className'> {
   /** As the browser's own list filters: ".csv,text/plain". What a file is, its content decides. */
   readonly accept: string;
+  /** The name of the file that was taken, as long as another may be. */
+  readonly chosen?: string | null;
   readonly onFile: (file: File) => void;
   readonly sending?: Sending | null;
   readonly onCancel?: () => void;
@@ -25,6 +28,7 @@ export function FileField({
   fault,
   className,
   accept,
+  chosen = null,
   onFile,
   sending,
   onCancel,
@@ -34,19 +38,40 @@ export function FileField({
     <div className={className}>
       <Field {...{ label, help, fault }}>
         {(control) => (
-          <input
-            {...control}
-            type="file"
-            accept={accept}
-            disabled={sends}
-            onChange={({ currentTarget }) => {
-              const file = currentTarget.files?.[0];
-              // The same file can be chosen again after a refusal.
-              currentTarget.value = '';
-              if (file !== undefined) onFile(file);
-            }}
-            className={`${controlBox} cursor-pointer pl-0 file:mr-3 file:h-full file:cursor-pointer file:border-0 file:border-r file:border-rule file:bg-transparent file:px-3 file:font-title file:text-ink`}
-          />
+          // The browser's own words would say that no file is chosen: it is let go once it is read.
+          <span
+            className={classNames(
+              controlBox,
+              'relative flex items-center pl-0 has-[:focus-visible]:outline-3 has-[:focus-visible]:outline-offset-2 has-[:focus-visible]:outline-beam',
+              fault !== undefined && fault !== null && 'border-fault',
+            )}
+          >
+            <span
+              aria-hidden="true"
+              className="font-title border-rule mr-3 flex h-full items-center border-r px-3"
+            >
+              {chosen === null ? 'Choose a file' : 'Choose another'}
+            </span>
+            <span
+              aria-hidden="true"
+              className={classNames('min-w-0 truncate', chosen === null && 'text-ink-2')}
+            >
+              {chosen ?? 'none chosen'}
+            </span>
+            <input
+              {...control}
+              type="file"
+              accept={accept}
+              disabled={sends}
+              onChange={({ currentTarget }) => {
+                const file = currentTarget.files?.[0];
+                // The same file can be chosen again after a refusal.
+                currentTarget.value = '';
+                if (file !== undefined) onFile(file);
+              }}
+              className="absolute inset-0 cursor-pointer opacity-0 disabled:cursor-default"
+            />
+          </span>
         )}
       </Field>
       {sends && (

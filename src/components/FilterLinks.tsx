@@ -27,7 +27,7 @@ export function FilterLinks({ label, links, currentId, className }: FilterLinksP
         {links.map(({ id, to, label: words, count, sign }) => {
           const current = id === currentId;
           return (
-            <li key={id}>
+            <li key={id} className={count === 0 && !current ? 'max-sm:hidden' : undefined}>
               <Link
                 to={to}
                 preventScrollReset

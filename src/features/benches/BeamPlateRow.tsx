@@ -66,8 +66,7 @@ export function BeamPlateRow(props: {
           type="button"
           data-control="grip"
           className="bench-grip"
-          aria-pressed={isHeld}
-          aria-label={`Grab ${name}`}
+          aria-label={`${isHeld ? 'Drop' : 'Grab'} ${name}`}
           aria-describedby="bench-grip-help"
           onPointerDown={onGrip}
           onClick={() => {
@@ -77,7 +76,7 @@ export function BeamPlateRow(props: {
           onBlur={moves.leave(placeKey)}
         >
           <Knurl />
-          Grab
+          {isHeld ? 'Drop' : 'Grab'}
         </button>
         <Button data-control="up" aria-label={`Move ${name} up`} onClick={() => moves.up(placeKey)}>
           Up

@@ -67,6 +67,7 @@ export function NewPlateSeat({
           <TextField
             label="it sits there since (your time)"
             type="datetime-local"
+            className="max-w-64"
             help="Empty: since it was measured there, or since now."
             {...register('since')}
             fault={errors.since?.message}

@@ -40,9 +40,9 @@ export function SearchField(props: {
       ref={field}
       label={label}
       help={
-        <>
+        <span className="max-sm:hidden pointer-coarse:hidden">
           <kbd className="font-mono">/</kbd> comes here
-        </>
+        </span>
       }
       type="search"
       autoComplete="off"

@@ -116,7 +116,9 @@ export function MembersSection() {
                     member.role
                   )}
                 </td>
-                <td className="py-2 pr-4 max-sm:hidden">{formatDate(new Date(member.joinedAt))}</td>
+                <td className="py-2 pr-4 whitespace-nowrap max-sm:hidden">
+                  {formatDate(new Date(member.joinedAt))}
+                </td>
                 {manages && (
                   <td className="py-2 text-right">
                     {!isLastLead(member, items) && (

@@ -39,17 +39,13 @@ export function ScanFilePart({ chosen, fault, sending, onCancel, onFile }: ScanF
       }}
       onDragLeave={() => setIsOver(false)}
       onDrop={drop}
-      className={classNames(
-        'border border-dashed p-3',
-        isOver ? 'border-ink bg-wash' : 'border-rule',
-        // The browser's own words beside its button would say that no file is chosen: it is let go once it is read.
-        chosen !== null && '[&_input]:text-transparent',
-      )}
+      className={classNames('border border-dashed p-3', isOver ? 'border-ink bg-wash' : 'border-rule')}
     >
       <FileField
         label={chosen === null ? 'the scan’s file' : `the scan’s file: ${chosen}`}
         help={`CSV or other plain text, at most ${maxFileWords}: the dial’s reading and one power or two on each line. Choose it, or drop it here.`}
         fault={dropFault ?? fault}
+        chosen={chosen}
         accept=".csv,.tsv,.txt,.dat,text/plain,text/csv"
         onFile={take}
         sending={sending}

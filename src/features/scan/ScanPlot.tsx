@@ -42,19 +42,11 @@ export function ScanPlot({ scan, plateName, tableId }: ScanPlotProps) {
         <CurveAndPoints frame={frame} points={points} path={curvePath(scan, frame)} />
         <Residuals frame={frame} points={points} />
         <Zeros scan={scan} frame={frame} />
-        <text
-          x={frame.right}
-          y={frame.lower.top - 8}
-          textAnchor="end"
-          className="fill-ink-2 text-s"
-          stroke="var(--paper)"
-          strokeWidth={5}
-          paintOrder="stroke"
-        >
-          {caption}
-        </text>
       </svg>
-      <p className="text-s text-ink-2 text-center">dial, degrees</p>
+      <p className="text-s text-ink-2 flex flex-wrap justify-between gap-x-5 pl-11">
+        <span>dial, degrees</span>
+        <span>below: {caption}</span>
+      </p>
     </div>
   );
 }

@@ -31,7 +31,7 @@ const RIGHT = 10;
 const TOP = 36;
 const UPPER_HEIGHT = 190;
 const LOWER_HEIGHT = 74;
-const BETWEEN = 26;
+const BETWEEN = 18;
 const FOOT = 26;
 const LABEL_WIDTH = 52;
 const DIAL_STEPS = [1, 2, 5, 10, 15, 30, 45, 90];
@@ -61,7 +61,8 @@ export function scanFrame(
   const upperFoot = TOP + UPPER_HEIGHT;
   const lowerTop = upperFoot + BETWEEN;
   const step = DIAL_STEPS.find((one) => ((toDeg - fromDeg) / one) * LABEL_WIDTH <= right - LEFT) ?? 90;
-  const sigmas = Math.ceil(farthest);
+  // To an even σ as long as the marks are 2 σ apart, so that the axis ends in a mark.
+  const sigmas = farthest > 4 ? Math.ceil(farthest) : 2 * Math.ceil(farthest / 2);
   return {
     width,
     height: lowerTop + LOWER_HEIGHT + FOOT,

@@ -66,7 +66,7 @@ export function PlateFilters(props: {
             })),
           ]}
         />
-        <p role="status" className="text-ink-2">
+        <p role="status" className="text-ink-2 sm:ml-auto">
           {shown === undefined ? '' : shown === 1 ? '1 plate' : `${shown} plates`}
         </p>
       </div>
