@@ -4,7 +4,7 @@ import type { Bench, BenchPart } from './schemas/benches';
 export type BenchReadiness = Pick<Bench, 'name' | 'notReady'>;
 
 const whyWords = {
-  'not-seated': 'was taken out of its mount. Seat it and calibrate it',
+  'not-seated': 'sits in no mount. Seat it and calibrate it',
   'not-calibrated': 'has not been calibrated since it was seated. Calibrate it',
 } as const;
 

@@ -214,7 +214,7 @@ describe('a bench whose plate was taken out', () => {
     });
     expect([save.status, faultOf(save.text).detail]).toEqual([
       422,
-      expect.stringContaining('Q-B was taken out'),
+      expect.stringContaining('Q-B sits in no mount'),
     ]);
 
     await call(harness, lead, 'put', path(`/plates/${quarter}/seat`), {

@@ -1,5 +1,6 @@
 import { createHash, randomUUID } from 'node:crypto';
 import pg from 'pg';
+import { spawnSync } from 'node:child_process';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { z } from 'zod';
 import { DEFAULT_CONVENTION, type Stokes } from '../../shared/optics';
@@ -122,6 +123,18 @@ async function scanBody(plate: CabinetPlate, text: string, shown: Shown = {}): P
     leftOut,
     shown: { offsetDeg: values.offsetDeg, retardanceDeg: values.retardance?.deg ?? null },
   });
+}
+
+/** Does to the database what another process would, and gives nothing else a turn until it is done. */
+function atOnce(sql: string): void {
+  const script = `const { Client } = require('pg'); const client = new Client(process.argv[1]);
+    client.connect().then(() => client.query(process.argv[2])).then(() => client.end());`;
+  const { status, stderr } = spawnSync(
+    process.execPath,
+    ['--eval', script, harness.testDatabase.adminUrl, sql],
+    { encoding: 'utf8' },
+  );
+  if (status !== 0) throw new Error(stderr);
 }
 
 const send = (plate: { readonly id: string }, body: unknown) =>
@@ -419,21 +432,19 @@ describe('what is refused', () => {
 
   test('a seat that ended while the scan was fitted', async () => {
     const plate = await addPlate();
-    // Rows enough to fit that the seat's end is there before the second transaction is.
-    const long = linearScanText({ truth: TRUTH, seed: 54, count: 9000, stepDeg: 0.05 });
-    const body = await scanBody(plate, long);
-    let ending: Promise<unknown> | null = null;
-    // As the first transaction commits and before the second begins.
+    const body = await scanBody(plate, linearScanText({ truth: TRUTH, seed: 54 }));
+    const seen: string[] = [];
+    // Behind the first transaction, and while this process waits, before the second has begun.
     const endSeat = ({ sql }: { readonly sql: string }) => {
-      if (ending !== null || !/^commit/iu.test(sql)) return;
-      ending = watcher.query(`update seats set left_at = now(), left_why = 'knocked' where id = $1`, [
-        plate.seat?.id,
-      ]);
+      if (/^commit/iu.test(sql)) seen.push('commit');
+      if (!/^begin/iu.test(sql) || seen.at(-1) !== 'commit') return;
+      seen.push('ended');
+      atOnce(`update seats set left_at = now(), left_why = 'knocked' where id = '${plate.seat?.id ?? ''}'`);
     };
     harness.database.on('query', endSeat);
     const refused = await send(plate, body);
     harness.database.removeListener('query', endSeat);
-    await Promise.resolve(ending);
+    expect(seen).toContain('ended');
     expect([refused.status, problemOf(refused.text).code]).toEqual([409, 'changed-meanwhile']);
     expect((await plateNow(plate)).calibrations).toHaveLength(1);
   });

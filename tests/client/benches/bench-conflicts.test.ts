@@ -32,7 +32,7 @@ describe('what speaks against a plate at its place', () => {
 
   it('warns of a plate that was taken out, or not measured since it was seated, in the words that a waiting bench has', () => {
     expect(said(cabinetPlate(1, 'H-1', { seat: null, calibration: null }))).toEqual([
-      'warning: H-1 was taken out of its mount. Seat it and calibrate it, then signal arm can be used again.',
+      'warning: H-1 sits in no mount. Seat it and calibrate it, then signal arm can be used again.',
     ]);
     expect(said(cabinetPlate(1, 'H-1', { calibration: null }), { name: '' })).toEqual([
       'warning: H-1 has not been calibrated since it was seated. Calibrate it, then this bench can be used again.',

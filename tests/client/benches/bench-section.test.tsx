@@ -73,14 +73,14 @@ describe('a bench that is looked at', () => {
     open(waiting, [h1, out, h4]);
     const waits = screen.getByRole('list', { name: 'What signal arm waits for' });
     expect(waits.textContent).toContain(
-      'Q-1 was taken out of its mount. Seat it and calibrate it, then signal arm can be used again.',
+      'Q-1 sits in no mount. Seat it and calibrate it, then signal arm can be used again.',
     );
     expect(within(waits).getByRole('link', { name: 'See Q-1' }).getAttribute('href')).toBe(
       `/labs/${lab.lab.id}/cabinet/${out.id}`,
     );
     await screen.findAllByText(/179\.2\(3\)°/);
     // Once, not again among what is to be known of its plates.
-    expect(screen.getAllByText(/was taken out of its mount/)).toHaveLength(1);
+    expect(screen.getAllByText(/sits in no mount/)).toHaveLength(1);
   });
 
   it('has no analysing polariser where nothing analyses or counts', () => {

@@ -205,7 +205,7 @@ it('says so where nothing relies on a plate', async () => {
 });
 
 it('has no way to a draft while nothing can be solved, and no plate in a beam that sits nowhere', async () => {
-  const waits = ['Q-B was taken out of its mount.'];
+  const waits = ['Q-B sits in no mount.'];
   const blocked = report({
     voids: [{ why: 'seat-ended', plateId: plate.id, plateName: 'Q-B' }],
     waits,
@@ -213,7 +213,7 @@ it('has no way to a draft while nothing can be solved, and no plate in a beam th
     resolved: null,
   });
   show({ versions: [version({ report: blocked })] }, 'designer', null, null);
-  expect(await textOf()).toContain('Q-B was taken out of its mount.');
+  expect(await textOf()).toContain('Q-B sits in no mount.');
   expect(screen.queryByRole('button', { name: /^Re-solve in a draft/ })).toBeNull();
   expect(screen.getByText(/^It has a place, empty now, in the beam of signal arm/)).toBeDefined();
 });
