@@ -1,4 +1,5 @@
 import { type ComponentPropsWithRef, type KeyboardEvent, type ReactNode, useEffect, useRef } from 'react';
+import { edgeFade } from './edge-fade';
 import { classNames } from './class-names';
 import { nextCell } from './table-keys';
 
@@ -61,7 +62,7 @@ export function DataTable({ caption, showCaption = false, children, className }:
   };
 
   return (
-    <div className={classNames('max-sm:overflow-x-auto', className)}>
+    <div ref={edgeFade} className={classNames('max-sm:overflow-x-auto', className)}>
       <table ref={table} onKeyDown={press} className="w-full border-collapse text-body">
         <caption className={showCaption ? 'pb-2 text-left text-s text-ink-2' : 'sr-only'}>{caption}</caption>
         {children}

@@ -2,10 +2,9 @@ import type { RefObject } from 'react';
 import { Link } from 'react-router-dom';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { AgeRing } from '../../components/AgeRing';
-import { classNames } from '../../components/class-names';
 import { GapText } from '../../lib/GapText';
 import { calibrationAge } from './calibration-age';
-import { type TrayFrame, useTrayFrame } from './use-tray-frame';
+import { useTrayFrame } from './use-tray-frame';
 import { restingAxisDeg, shortKind, trustWords } from './plate-words';
 
 interface TrayProps {
@@ -22,19 +21,10 @@ interface TrayProps {
 /** How far from its right end the tray asks for more, in px. */
 const aheadPx = 600;
 
-/** Where the tray goes on out of sight, it fades out. */
-const fades: Readonly<Record<TrayFrame['cut'], string>> = {
-  none: '',
-  left: 'mask-l-from-[calc(100%-3rem)]',
-  right: 'mask-r-from-[calc(100%-3rem)]',
-  both: 'mask-x-from-[calc(100%-3rem)]',
-};
-
 /** The plates as rings with their age; the open one is lit and a notch in the rule below points at it. Tab comes to that one, and arrows walk. */
 export function PlateTray({ plates, openId, base, dueDays, now, hasMore, onMore }: TrayProps) {
-  const { frame, opened, cut, looked } = useTrayFrame(openId, plates.length);
+  const { frame, opened } = useTrayFrame(openId);
   const scrolled = ({ scrollLeft, clientWidth, scrollWidth }: HTMLElement) => {
-    looked();
     if (hasMore && scrollLeft + clientWidth > scrollWidth - aheadPx) onMore();
   };
   const stopId = plates.some(({ id }) => id === openId) ? openId : plates[0]?.id;
@@ -42,7 +32,7 @@ export function PlateTray({ plates, openId, base, dueDays, now, hasMore, onMore 
     <nav
       ref={frame}
       aria-label="Plates"
-      className={classNames('relative -mt-1.5 overflow-x-auto pt-1.5', fades[cut])}
+      className="relative -mt-1.5 overflow-x-auto pt-1.5"
       onScroll={(event) => scrolled(event.currentTarget)}
     >
       <ul className="flex min-w-full">

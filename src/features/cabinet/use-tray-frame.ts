@@ -1,48 +1,25 @@
-import { type RefObject, useCallback, useEffect, useRef, useState } from 'react';
+import { type RefCallback, type RefObject, useCallback, useEffect, useRef } from 'react';
+import { edgeFade } from '../../components/edge-fade';
 
-/** What a tray longer than the page does with its frame. */
-export interface TrayFrame {
-  readonly frame: RefObject<HTMLElement | null>;
+/** Where a tray that may be longer than the page stands. */
+interface TrayFrame {
+  readonly frame: RefCallback<HTMLElement>;
   readonly opened: RefObject<HTMLLIElement | null>;
-  /** On which sides more of it lies out of sight. */
-  readonly cut: 'none' | 'left' | 'right' | 'both';
-  /** To be called when it was scrolled. */
-  readonly looked: () => void;
 }
 
-/** Less than this out of sight, in px, is a rounding of widths. */
-const seenPx = 2;
-
-function cutOf({ scrollLeft, clientWidth, scrollWidth }: HTMLElement): TrayFrame['cut'] {
-  const [left, right] = [scrollLeft > seenPx, scrollLeft + clientWidth < scrollWidth - seenPx];
-  if (left && right) return 'both';
-  return left ? 'left' : right ? 'right' : 'none';
-}
-
-/** Brings the open plate to the middle of the tray, with the focus where that is in the tray, and tells where it is cut. */
-export function useTrayFrame(openId: string | undefined, count: number): TrayFrame {
-  const frame = useRef<HTMLElement>(null);
+/** Brings the open plate to the middle of the tray, with the focus where that is in the tray. */
+export function useTrayFrame(openId: string | undefined): TrayFrame {
+  const tray = useRef<HTMLElement>(null);
   const opened = useRef<HTMLLIElement>(null);
-  const [cut, setCut] = useState<TrayFrame['cut']>('none');
-  const looked = useCallback(() => {
-    if (frame.current !== null) setCut(cutOf(frame.current));
+  const frame = useCallback((element: HTMLElement | null) => {
+    tray.current = element;
+    return edgeFade(element);
   }, []);
-
   useEffect(() => {
-    const [tray, item] = [frame.current, opened.current];
-    if (tray === null || item === null) return;
-    tray.scrollLeft = item.offsetLeft - (tray.clientWidth - item.offsetWidth) / 2;
-    if (tray.contains(document.activeElement)) item.querySelector('a')?.focus({ preventScroll: true });
+    const [box, item] = [tray.current, opened.current];
+    if (box === null || item === null) return;
+    box.scrollLeft = item.offsetLeft - (box.clientWidth - item.offsetWidth) / 2;
+    if (box.contains(document.activeElement)) item.querySelector('a')?.focus({ preventScroll: true });
   }, [openId]);
-
-  useEffect(() => {
-    const tray = frame.current;
-    looked();
-    if (tray === null || typeof ResizeObserver === 'undefined') return undefined;
-    const observer = new ResizeObserver(looked);
-    observer.observe(tray);
-    return () => observer.disconnect();
-  }, [looked, count]);
-
-  return { frame, opened, cut, looked };
+  return { frame, opened };
 }

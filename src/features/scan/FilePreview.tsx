@@ -6,6 +6,7 @@ import {
   type Understood,
   unitLabel,
 } from '../../../shared/scan-file';
+import { edgeFade } from '../../components/edge-fade';
 import { controlBox } from '../../components/Field';
 import { type ColumnRoles, roleOf, withRole } from './column-roles';
 
@@ -36,7 +37,13 @@ export function FilePreview({ understood, roles, isKnownLight, onRoles }: FilePr
   return (
     <>
       <p className="text-s text-ink-2 mt-3">{factWords(preview)}</p>
-      <div className="mt-2 overflow-x-auto" tabIndex={0} role="region" aria-label="First rows of the file">
+      <div
+        ref={edgeFade}
+        className="mt-2 overflow-x-auto"
+        tabIndex={0}
+        role="region"
+        aria-label="First rows of the file"
+      >
         <table className="text-body border-collapse">
           <caption className="sr-only">First rows of the file, and which column is what</caption>
           <thead>
