@@ -3,6 +3,7 @@ import { createBrowserRouter, type LoaderFunctionArgs, redirect, type RouteObjec
 import { labQuery } from '../features/labs';
 import { sessionQuery } from '../features/session';
 import { ApiError } from '../lib/api';
+import { nextTask } from '../lib/next-task';
 import { LabProvider } from './LabProvider';
 import { LabShell } from './LabShell';
 import { PlainShell } from './PlainShell';
@@ -49,29 +50,42 @@ function inLab(queryClient: QueryClient) {
   };
 }
 
+type LoadPage = Extract<RouteObject['lazy'], () => unknown>;
+
+/** A page's script, asked for in a task of its own: its many parts are asked for in one go. */
+function page(load: LoadPage): LoadPage {
+  return async () => {
+    await nextTask();
+    return load();
+  };
+}
+
 const labPages: RouteObject[] = [
-  { index: true, lazy: () => import('../features/home/HomePage') },
-  { path: 'plan', lazy: () => import('../features/protocols/ProtocolsPage') },
-  { path: 'plan/new', lazy: () => import('../features/protocols/NewProtocolPage') },
+  { index: true, lazy: page(() => import('../features/home/HomePage')) },
+  { path: 'plan', lazy: page(() => import('../features/protocols/ProtocolsPage')) },
+  { path: 'plan/new', lazy: page(() => import('../features/protocols/NewProtocolPage')) },
   // Before the protocols: no protocol is called so.
-  { path: 'plan/robust', lazy: () => import('../features/robust/RobustPage') },
-  { path: 'plan/:protocolId', lazy: () => import('../features/protocols/DesignerPage') },
-  { path: 'plan/:protocolId/versions', lazy: () => import('../features/versions/ProtocolVersionsPage') },
-  { path: 'plan/:protocolId/versions/:number', lazy: () => import('../features/versions/VersionPage') },
-  { path: 'review', lazy: () => import('../features/versions/VersionsPage') },
-  { path: 'bench', lazy: () => import('../features/benches/BenchesPage') },
-  { path: 'bench/new', lazy: () => import('../features/benches/NewBenchPage') },
-  { path: 'bench/:benchId/edit', lazy: () => import('../features/benches/EditBenchPage') },
-  { path: 'bench/start', lazy: () => import('../features/runs/StartRunPage') },
-  { path: 'results', lazy: () => import('../features/results/ResultsPage') },
-  { path: 'cabinet', lazy: () => import('../features/cabinet/CabinetPage') },
+  { path: 'plan/robust', lazy: page(() => import('../features/robust/RobustPage')) },
+  { path: 'plan/:protocolId', lazy: page(() => import('../features/protocols/DesignerPage')) },
+  {
+    path: 'plan/:protocolId/versions',
+    lazy: page(() => import('../features/versions/ProtocolVersionsPage')),
+  },
+  { path: 'plan/:protocolId/versions/:number', lazy: page(() => import('../features/versions/VersionPage')) },
+  { path: 'review', lazy: page(() => import('../features/versions/VersionsPage')) },
+  { path: 'bench', lazy: page(() => import('../features/benches/BenchesPage')) },
+  { path: 'bench/new', lazy: page(() => import('../features/benches/NewBenchPage')) },
+  { path: 'bench/:benchId/edit', lazy: page(() => import('../features/benches/EditBenchPage')) },
+  { path: 'bench/start', lazy: page(() => import('../features/runs/StartRunPage')) },
+  { path: 'results', lazy: page(() => import('../features/results/ResultsPage')) },
+  { path: 'cabinet', lazy: page(() => import('../features/cabinet/CabinetPage')) },
   // Before the plates: no plate's id is a word.
-  { path: 'cabinet/mounts', lazy: () => import('../features/cabinet/mounts/MountsPage') },
-  { path: 'cabinet/mounts/:mountId', lazy: () => import('../features/cabinet/mounts/MountPage') },
-  { path: 'cabinet/exchange', lazy: () => import('../features/exchange/ExchangePage') },
-  { path: 'cabinet/:plateId', lazy: () => import('../features/cabinet/CabinetPage') },
-  { path: 'cabinet/:plateId/scan', lazy: () => import('../features/scan/ScanPage') },
-  { path: 'lab', lazy: () => import('../features/labs/LabPage') },
+  { path: 'cabinet/mounts', lazy: page(() => import('../features/cabinet/mounts/MountsPage')) },
+  { path: 'cabinet/mounts/:mountId', lazy: page(() => import('../features/cabinet/mounts/MountPage')) },
+  { path: 'cabinet/exchange', lazy: page(() => import('../features/exchange/ExchangePage')) },
+  { path: 'cabinet/:plateId', lazy: page(() => import('../features/cabinet/CabinetPage')) },
+  { path: 'cabinet/:plateId/scan', lazy: page(() => import('../features/scan/ScanPage')) },
+  { path: 'lab', lazy: page(() => import('../features/labs/LabPage')) },
 ];
 
 export function createRouter(queryClient: QueryClient) {
@@ -81,20 +95,23 @@ export function createRouter(queryClient: QueryClient) {
       HydrateFallback: Starting,
       children: [
         { path: '/', loader: entry(queryClient), Component: Starting },
-        { path: '/sign-in', lazy: () => import('../features/session/SignInPage') },
+        { path: '/sign-in', lazy: page(() => import('../features/session/SignInPage')) },
         {
           Component: PlainShell,
           children: [
-            { path: '/quick-angles', lazy: () => import('../features/quick-angles/QuickAnglesPage') },
-            { path: '/conventions', lazy: () => import('../features/conventions/ConventionsPage') },
-            { path: '/how-numbers-are-made', lazy: () => import('../features/about/NumbersPage') },
-            { path: '/privacy', lazy: () => import('../features/about/PrivacyPage') },
-            { path: '/developer/parts', lazy: () => import('../features/parts/PartsPage') },
+            { path: '/quick-angles', lazy: page(() => import('../features/quick-angles/QuickAnglesPage')) },
+            { path: '/conventions', lazy: page(() => import('../features/conventions/ConventionsPage')) },
+            { path: '/how-numbers-are-made', lazy: page(() => import('../features/about/NumbersPage')) },
+            { path: '/privacy', lazy: page(() => import('../features/about/PrivacyPage')) },
+            { path: '/developer/parts', lazy: page(() => import('../features/parts/PartsPage')) },
             {
               loader: signedIn(queryClient),
               children: [
-                { path: '/welcome', lazy: () => import('../features/welcome/WelcomePage') },
-                { path: '/invitations/:token', lazy: () => import('../features/welcome/InvitationPage') },
+                { path: '/welcome', lazy: page(() => import('../features/welcome/WelcomePage')) },
+                {
+                  path: '/invitations/:token',
+                  lazy: page(() => import('../features/welcome/InvitationPage')),
+                },
               ],
             },
           ],
@@ -106,8 +123,8 @@ export function createRouter(queryClient: QueryClient) {
           children: [
             { Component: LabShell, children: [{ ErrorBoundary: RouteFault, children: labPages }] },
             // The bench fills the screen and brings its own navigation.
-            { path: 'bench/runs/:runId', lazy: () => import('../features/runs/RunPage') },
-            { path: 'bench/runs/:runId/record', lazy: () => import('../features/runs/RunRecordPage') },
+            { path: 'bench/runs/:runId', lazy: page(() => import('../features/runs/RunPage')) },
+            { path: 'bench/runs/:runId/record', lazy: page(() => import('../features/runs/RunRecordPage')) },
           ],
         },
         {

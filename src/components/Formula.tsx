@@ -1,6 +1,8 @@
 import { useEffect, useRef, useState } from 'react';
 import { classNames } from './class-names';
-import { drawInTurn } from './draw-in-turn';
+import { drawInTurn } from '../lib/draw-in-turn';
+// With the page and not with KaTeX: all that stands on a page is laid out anew when a sheet with fonts comes in.
+import 'katex/dist/katex.min.css';
 
 interface FormulaProps {
   readonly latex: string;
@@ -25,7 +27,7 @@ export function Formula({ latex, source, className }: FormulaProps) {
       if (!gone) setDrawn(null);
     };
     const load = async (): Promise<void> => {
-      const [{ default: katex }] = await Promise.all([import('katex'), import('katex/dist/katex.min.css')]);
+      const { default: katex } = await import('katex');
       if (gone) return;
       takeBack = drawInTurn(() => {
         if (target.current === null) return;

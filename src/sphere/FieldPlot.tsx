@@ -18,9 +18,6 @@ export function FieldPlot({ state, label }: { readonly state: Stokes; readonly l
   const words = fieldInWords(state);
   const traces = useRef<HTMLDivElement>(null);
   const width = useBoxWidth(traces, DEFAULT_WIDTH);
-  const plotWidth = Math.max(60, width - TRACE.left - TRACE.right);
-  const parts = fieldParts(state);
-  const periodEnds = [1, 2].map((period) => TRACE.left + (plotWidth * period) / PERIODS);
   return (
     <div
       className="field-plot"
@@ -44,46 +41,56 @@ export function FieldPlot({ state, label }: { readonly state: Stokes; readonly l
         </g>
       </svg>
       <div ref={traces} className="field-traces">
-        <svg width={width} height={TRACE.height} viewBox={`0 0 ${width} ${TRACE.height}`} aria-hidden="true">
-          {periodEnds.map((x) => (
-            <path key={x} d={`M${x} 4 V${TRACE.height - 4}`} stroke="var(--rule)" strokeDasharray="2 3" />
-          ))}
-          {TRACE.rows.map((y) => (
-            <path
-              key={y}
-              d={`M${TRACE.left} ${y} H${TRACE.left + plotWidth}`}
-              stroke="var(--rule)"
-              strokeWidth={0.8}
-            />
-          ))}
-          <Name y={TRACE.rows[0]} axis="H" />
-          <Name y={TRACE.rows[1]} axis="V" />
-          <path
-            d={tracePath(parts, 'h', plotWidth)}
-            fill="none"
-            stroke="var(--ink)"
-            strokeWidth={1.5}
-            strokeLinejoin="round"
-          />
-          <path
-            d={tracePath(parts, 'v', plotWidth)}
-            fill="none"
-            stroke="var(--ink)"
-            strokeWidth={1.5}
-            strokeLinejoin="round"
-            strokeDasharray="6 3.5"
-          />
-          <g fontSize={11} fill="var(--ink-2)">
-            <text x={TRACE.left + plotWidth + 6} y={TRACE.rows[0] + 4}>
-              at
-            </text>
-            <text x={TRACE.left + plotWidth + 6} y={TRACE.rows[0] + 20}>
-              z = 0
-            </text>
-          </g>
-        </svg>
+        {width !== null && <Traces state={state} width={width} />}
       </div>
     </div>
+  );
+}
+
+/** Both components as they swing at z = 0. */
+function Traces({ state, width }: { readonly state: Stokes; readonly width: number }) {
+  const plotWidth = Math.max(60, width - TRACE.left - TRACE.right);
+  const parts = fieldParts(state);
+  const periodEnds = [1, 2].map((period) => TRACE.left + (plotWidth * period) / PERIODS);
+  return (
+    <svg width={width} height={TRACE.height} viewBox={`0 0 ${width} ${TRACE.height}`} aria-hidden="true">
+      {periodEnds.map((x) => (
+        <path key={x} d={`M${x} 4 V${TRACE.height - 4}`} stroke="var(--rule)" strokeDasharray="2 3" />
+      ))}
+      {TRACE.rows.map((y) => (
+        <path
+          key={y}
+          d={`M${TRACE.left} ${y} H${TRACE.left + plotWidth}`}
+          stroke="var(--rule)"
+          strokeWidth={0.8}
+        />
+      ))}
+      <Name y={TRACE.rows[0]} axis="H" />
+      <Name y={TRACE.rows[1]} axis="V" />
+      <path
+        d={tracePath(parts, 'h', plotWidth)}
+        fill="none"
+        stroke="var(--ink)"
+        strokeWidth={1.5}
+        strokeLinejoin="round"
+      />
+      <path
+        d={tracePath(parts, 'v', plotWidth)}
+        fill="none"
+        stroke="var(--ink)"
+        strokeWidth={1.5}
+        strokeLinejoin="round"
+        strokeDasharray="6 3.5"
+      />
+      <g fontSize={11} fill="var(--ink-2)">
+        <text x={TRACE.left + plotWidth + 6} y={TRACE.rows[0] + 4}>
+          at
+        </text>
+        <text x={TRACE.left + plotWidth + 6} y={TRACE.rows[0] + 20}>
+          z = 0
+        </text>
+      </g>
+    </svg>
   );
 }
 

@@ -39,7 +39,8 @@ export function Sphere({ input, view: pageView, height = DEFAULT_HEIGHT }: Props
   const store = pageView ?? ownView;
   const view = useStore(store, (state) => state.view);
   const figure = useRef<HTMLDivElement>(null);
-  const width = useBoxWidth(figure, DEFAULT_WIDTH);
+  const laidOutWidth = useBoxWidth(figure, DEFAULT_WIDTH);
+  const width = laidOutWidth ?? DEFAULT_WIDTH;
   const helpId = useId();
   const [inWords, setInWords] = useState(false);
 
@@ -90,8 +91,10 @@ export function Sphere({ input, view: pageView, height = DEFAULT_HEIGHT }: Props
           }}
           {...drag}
         >
-          {!(three && ready) && <SphereSvg scene={scene} frame={frame} place={place} />}
-          {three && (
+          {laidOutWidth !== null && !(three && ready) && (
+            <SphereSvg scene={scene} frame={frame} place={place} />
+          )}
+          {laidOutWidth !== null && three && (
             <FallBack onError={() => setFailed(true)}>
               <Suspense fallback={null}>
                 <div className={ready ? 'sphere-layer' : 'sphere-layer sphere-layer-waiting'}>

@@ -1,20 +1,32 @@
-import { type RefObject, useLayoutEffect, useState } from 'react';
+import { type RefObject, startTransition, useLayoutEffect, useState } from 'react';
+import { drawAlone } from '../lib/draw-in-turn';
 
-/** The width of an element in CSS pixels as it changes; `widthBefore` until it has been laid out. */
-export function useBoxWidth(element: RefObject<HTMLElement | null>, widthBefore: number): number {
-  const [width, setWidth] = useState(widthBefore);
+/**
+ * The width of an element in CSS pixels as it changes, null until it has been laid out. It is not asked for before the browser
+ * lays the page out anyway: that would be one more layout of the whole page, in the same task as what is drawn.
+ * @param widthWithoutObserver the width for good where nothing tells it.
+ */
+export function useBoxWidth(
+  element: RefObject<HTMLElement | null>,
+  widthWithoutObserver: number,
+): number | null {
+  const [width, setWidth] = useState(() => ('ResizeObserver' in window ? null : widthWithoutObserver));
   useLayoutEffect(() => {
     const box = element.current;
-    if (box === null) return undefined;
-    const measure = () => {
-      if (box.clientWidth > 0) setWidth(box.clientWidth);
-    };
-    measure();
-    // Without an observer the first width has to do.
-    if (!('ResizeObserver' in window)) return undefined;
-    const resize = new ResizeObserver(measure);
+    if (box === null || !('ResizeObserver' in window)) return undefined;
+    let takeBack: (() => void) | null = null;
+    const resize = new ResizeObserver(() => {
+      const next = box.clientWidth;
+      if (next === 0) return;
+      // What is drawn for the first time is much: in its turn, and in slices. What follows a width that changes is drawn at once.
+      if (takeBack === null) takeBack = drawAlone(() => startTransition(() => setWidth(box.clientWidth)));
+      else setWidth(next);
+    });
     resize.observe(box);
-    return () => resize.disconnect();
+    return () => {
+      resize.disconnect();
+      takeBack?.();
+    };
   }, [element]);
   return width;
 }

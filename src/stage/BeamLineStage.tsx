@@ -21,12 +21,14 @@ interface Props {
   readonly children?: ReactNode;
 }
 
-const WIDTH_BEFORE = 1360;
+/** Where nothing tells the width. */
+const DESK_WIDTH = 1360;
 
 /** The bench in a line, as the hand meets it: source, polariser, plates in beam order with the light between them, output. */
 export function BeamLineStage({ stage, onDial, onBackToSolution, viewedFrom = 'receiver', children }: Props) {
   const box = useRef<HTMLDivElement>(null);
-  const width = useBoxWidth(box, WIDTH_BEFORE);
+  const width = useBoxWidth(box, DESK_WIDTH);
+  if (width === null) return <div ref={box} className="stage-waits" />;
   const { sizes, readoutBeside, scrolls } = arrangeStage(width, stage.plates.length, children !== undefined);
   const turned = turnedByHand(stage.plates);
   return (

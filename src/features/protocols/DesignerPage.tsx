@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { useDeferredValue } from 'react';
 import { useParams } from 'react-router-dom';
 import { BeamWorking, BeamWrong } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
@@ -14,6 +15,11 @@ export function Component() {
   const { protocolId = '' } = useParams();
   const protocol = useQuery({ ...protocolQuery(lab.id, protocolId), staleTime: 0 });
   const benches = useQuery(benchesQuery(lab.id));
+  // A draft that was fetched before may be older than what somebody saved since: wait for the fresh one.
+  const isFresh =
+    protocol.isSuccess && benches.isSuccess && (!protocol.isFetching || protocol.isFetchedAfterMount);
+  // What a query answers is drawn in one go; the designer is too much for that, and follows in slices.
+  const isOpen = useDeferredValue(isFresh, false);
   useTitle(protocol.data?.draft.content.name ?? 'Protocol');
 
   if (protocol.isError) {
@@ -26,8 +32,7 @@ export function Component() {
   if (benches.isError) {
     return <BeamWrong title="The benches could not be fetched">{benches.error.message}</BeamWrong>;
   }
-  // A draft that was fetched before may be older than what somebody saved since: wait for the fresh one.
-  if (protocol.isPending || benches.isPending || (protocol.isFetching && !protocol.isFetchedAfterMount)) {
+  if (protocol.isPending || benches.isPending || !isFresh || !isOpen) {
     return <BeamWorking doing="Fetching the protocol" />;
   }
   return <Designer key={protocolId} protocol={protocol.data} benches={benches.data.items} />;

@@ -1,5 +1,5 @@
 import { useQueryClient } from '@tanstack/react-query';
-import { useCallback, useEffect, useRef, useState } from 'react';
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
 import {
   type Draft,
   type DraftContent,
@@ -68,6 +68,11 @@ function asKept(content: DraftContent): DraftContent | null {
   return parsed.success ? parsed.data : null;
 }
 
+/** Reading two hundred rows takes a while: what is the very same, as on a page just opened, is not read. */
+function isUnsaved(content: DraftContent, saved: DraftContent): boolean {
+  return content !== saved && !same(asKept(content) ?? content, saved);
+}
+
 /** A refusal is final until something else is typed; what is worth another try is a server or a network that failed. */
 function mayPass(error: unknown): boolean {
   return !(error instanceof ApiError) || [0, 408, 429].includes(error.status) || error.status >= 500;
@@ -83,7 +88,7 @@ export function useDraft(labId: string, userId: string, protocol: Protocol, mayW
   const leaving = useRef<() => void>(() => undefined);
   const { history, base, conflict, keptReason } = state;
   const { content } = history;
-  const unsaved = !same(asKept(content) ?? content, base.content);
+  const unsaved = useMemo(() => isUnsaved(content, base.content), [content, base.content]);
 
   useEffect(() => {
     leaving.current = () => undefined;

@@ -4,6 +4,7 @@ import { type RowChoice, whyUnplanned } from '../../../shared/protocol/choose-so
 import { rowName } from '../../../shared/protocol/row-name';
 import type { SolvingBench, SolvingTask } from '../../../shared/protocol/solve-row';
 import type { DraftTarget } from '../../../shared/schemas/protocols';
+import { drawAlone } from '../../lib/draw-in-turn';
 import type { RowAnswer, SolverAnswer, SolverJob } from '../../workers/solver-messages';
 
 /** What is known of one row: its newest result, and whether it is still that of an older text or bench. */
@@ -99,8 +100,9 @@ export function useSolvedRows(
     // One row is marked at once, as it is typed; a whole table in slices, so that typing is never kept waiting.
     if (wanted.size > 1) startTransition(markStale);
     else markStale();
-    const take = ({ data }: MessageEvent<SolverAnswer>) => {
-      if (data.job !== job) return;
+    const take = (data: SolverAnswer) => {
+      // Asked for again meanwhile: the newer job answers those rows too.
+      if (jobNumber.current !== job) return;
       if (data.kind === 'rows') {
         for (const { place } of data.answers) {
           const row = written[place];
@@ -109,7 +111,11 @@ export function useSolvedRows(
       }
       startTransition(() => setSolved((before) => merge(before, data, asked)));
     };
-    current.addEventListener('message', take);
+    // A frame for each few rows: many that are answered at once would be laid out at once.
+    const hear = ({ data }: MessageEvent<SolverAnswer>) => {
+      if (data.job === job) drawAlone(() => take(data));
+    };
+    current.addEventListener('message', hear);
     const request: SolverJob = {
       job,
       bench,
@@ -122,7 +128,7 @@ export function useSolvedRows(
       })),
     };
     current.postMessage(request);
-    return () => current.removeEventListener('message', take);
+    return () => current.removeEventListener('message', hear);
     // eslint-disable-next-line react-hooks/exhaustive-deps -- `question` is the text of all that the job depends on; the arrays are new at every render
   }, [question]);
 

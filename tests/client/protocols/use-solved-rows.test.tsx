@@ -5,6 +5,7 @@ import { chooseSolution } from '../../../shared/protocol/choose-solutions';
 import { benchProblem, solveRow, type SolvingTask } from '../../../shared/protocol/solve-row';
 import type { DraftTarget } from '../../../shared/schemas/protocols';
 import { useSolvedRows } from '../../../src/features/protocols/use-solved-rows';
+import { drawAlone } from '../../../src/lib/draw-in-turn';
 import type { RowAnswer, SolverAnswer, SolverJob } from '../../../src/workers/solver-messages';
 import { solvingBench, solvingTask, target as anyTarget } from '../../support/plates';
 
@@ -40,9 +41,11 @@ afterEach(() => {
   vi.unstubAllGlobals();
 });
 
-function say(answer: SolverAnswer) {
-  act(() => {
+/** Answers, and waits until the page has taken it in its turn. */
+async function say(answer: SolverAnswer) {
+  await act(async () => {
     for (const listen of [...listener]) listen(new MessageEvent('message', { data: answer }));
+    await new Promise<void>((resolve) => drawAlone(resolve));
   });
 }
 
@@ -71,79 +74,84 @@ function solvedAnswer(expression: string, task: SolvingTask): RowAnswer {
 }
 
 /** Answers the rows that are wanted, as the worker does. */
-function answerRows({ job, rows, task }: SolverJob) {
+async function answerRows({ job, rows, task }: SolverJob) {
   const answers = rows.flatMap(({ expression, wanted }, place) =>
     wanted ? [{ place, answer: solvedAnswer(expression, task) }] : [],
   );
   const done = task.objective !== 'least-travel';
-  say({ kind: 'rows', job, answers, doneCount: answers.length, done });
+  await say({ kind: 'rows', job, answers, doneCount: answers.length, done });
 }
 
 const staleOf = (solved: ReturnType<typeof useSolvedRows>) =>
   [...solved.rows.values()].map(({ stale }) => stale);
 
 describe('rows solved beside the page', () => {
-  it('are new again when a text is typed away and back before its worker answered', () => {
+  it('are new again when a text is typed away and back before its worker answered', async () => {
     const { write, now } = page([target('t1', 'D')]);
-    answerRows(newest());
+    await answerRows(newest());
     expect(staleOf(now())).toEqual([false]);
     write(target('t1', 'A'));
     expect(staleOf(now())).toEqual([true]);
     write(target('t1', 'D'));
-    answerRows(newest());
+    await answerRows(newest());
     expect(staleOf(now())).toEqual([false]);
     expect(now().progress).toBeNull();
   });
 
-  it('are asked for once: a row that did not change is not wanted again', () => {
+  it('are asked for once: a row that did not change is not wanted again', async () => {
     const { write } = page([target('t1', 'D'), target('t2', 'A')]);
-    answerRows(newest());
+    await answerRows(newest());
     write(target('t1', 'D'), target('t2', 'V'));
     expect(newest().rows.map(({ wanted }) => wanted)).toEqual([false, true]);
   });
 
-  it('say so when the solver met what it was not made for, and stop waiting', () => {
+  it('say so when the solver met what it was not made for, and stop waiting', async () => {
     const { write, now } = page([target('t1', 'D')]);
-    say({ kind: 'failed', job: newest().job, sentence: 'The solver stopped at these rows.' });
+    await say({ kind: 'failed', job: newest().job, sentence: 'The solver stopped at these rows.' });
     expect(now()).toMatchObject({ benchFault: 'The solver stopped at these rows.', progress: null });
     write(target('t1', 'A'));
     expect(now().benchFault).toBeNull();
-    answerRows(newest());
+    await answerRows(newest());
     expect(staleOf(now())).toEqual([false]);
   });
 });
 
 describe('rows planned together', () => {
-  it('are new only when the choices over the whole list are there', () => {
+  it('are new only when the choices over the whole list are there', async () => {
     const { now } = page([target('t1', 'D'), target('t2', 'A')], planned);
     const job = newest();
-    answerRows(job);
+    await answerRows(job);
     expect(staleOf(now())).toEqual([true, true]);
     expect(now().progress).toEqual({ done: 2, total: 2 });
     const choices = ['D', 'A'].map((text) => solvedAnswer(text, planned).choice);
-    say({ kind: 'choices', job: job.job, choices, unplanned: null });
+    await say({ kind: 'choices', job: job.job, choices, unplanned: null });
     expect(staleOf(now())).toEqual([false, false]);
     expect(now()).toMatchObject({ progress: null, planFault: null });
   });
 
-  it('wait for new choices when one of them is taken out, though nothing has to be solved', () => {
+  it('wait for new choices when one of them is taken out, though nothing has to be solved', async () => {
     const { write, now } = page([target('t1', 'D'), target('t2', 'A')], planned);
-    answerRows(newest());
+    await answerRows(newest());
     const { job } = newest();
     const choice = solvedAnswer('D', planned).choice;
-    say({ kind: 'choices', job, choices: [choice, solvedAnswer('A', planned).choice], unplanned: null });
+    await say({
+      kind: 'choices',
+      job,
+      choices: [choice, solvedAnswer('A', planned).choice],
+      unplanned: null,
+    });
     write(target('t1', 'D'));
     expect(now().rows.get('t1')?.stale).toBe(true);
-    say({ kind: 'choices', job: newest().job, choices: [choice], unplanned: null });
+    await say({ kind: 'choices', job: newest().job, choices: [choice], unplanned: null });
     expect(now().rows.get('t1')?.stale).toBe(false);
   });
 
-  it('name the row and the plate for which there is no plan, counting rows as the page does', () => {
+  it('name the row and the plate for which there is no plan, counting rows as the page does', async () => {
     const { now } = page([target('t1', ' '), target('t2', 'D'), target('t3', 'A')], planned);
     const job = newest();
-    answerRows(job);
+    await answerRows(job);
     const choices = ['D', 'A'].map((text) => solvedAnswer(text, planned).choice);
-    say({ kind: 'choices', job: job.job, choices, unplanned: { row: 1, plate: 0 } });
+    await say({ kind: 'choices', job: job.job, choices, unplanned: { row: 1, plate: 0 } });
     expect(now().planFault).toMatch(/^Row 3 \(t3\) .* the mount of plate 1 does not reach it/);
   });
 });

@@ -11,7 +11,8 @@ import { useLab } from '../../labs';
 import { addRows, chooseBench, newTargets, writeExpression } from '../draft-edits';
 import { AddRowsDialog } from '../rows/AddRowsDialog';
 import { useDraft } from '../use-draft';
-import { useLater } from '../../../lib/use-later';
+import { drawAlone } from '../../../lib/draw-in-turn';
+import { useDrawnAlone } from '../../../lib/use-drawn-alone';
 import { useSolvedRows } from '../use-solved-rows';
 import { BenchWaits } from './BenchWaits';
 import { BudgetSection } from './BudgetSection';
@@ -38,9 +39,6 @@ const emptyWords = {
   prepare: 'Write a state in the row above, like |D> or (H + i V)/sqrt(2).',
   apply: 'Write a unitary in the row above, like hadamard or rotate(x, 90deg).',
 } as const;
-
-const figuresAfterMs = 20;
-const budgetAfterMs = 50;
 
 const noPlates: Bench['plates'] = [];
 
@@ -89,10 +87,10 @@ export function Designer({ protocol, benches }: DesignerProps) {
   const target = content.targets[place];
   const view = views[place];
   const looked = useLooked({ content, bench, convention: lab.convention, target, view });
-  // The row is lit at once; the stage, the figures and the budget follow, each in a task of its own.
-  const staged = useLater(looked, 0);
-  const drawn = useLater(looked, figuresAfterMs);
-  const weighed = useLater(looked, budgetAfterMs);
+  // The row is lit at once; the stage, the figures and the budget follow one after the other, each in a frame of its own.
+  const staged = useDrawnAlone(looked);
+  const drawn = useDrawnAlone(staged);
+  const weighed = useDrawnAlone(drawn);
 
   return (
     <>
@@ -159,7 +157,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
           >
             {mayWrite && (
               <>
-                <TextButton onClick={() => setAsking('rows')}>
+                <TextButton onClick={() => startTransition(() => setAsking('rows'))}>
                   Add a set, or rows from text or a file
                 </TextButton>
                 <TextButton onClick={() => setAsking('words')}>What can be written</TextButton>
@@ -209,8 +207,8 @@ export function Designer({ protocol, benches }: DesignerProps) {
           present={content.targets.length}
           onAdd={(rows) => {
             setAsking(null);
-            // Two hundred rows are drawn in slices.
-            startTransition(() => draft.edit(addRows(newTargets(content.targets, rows))));
+            // The page without the dialog first; two hundred rows follow, in slices.
+            drawAlone(() => startTransition(() => draft.edit(addRows(newTargets(content.targets, rows)))));
           }}
           onClose={() => setAsking(null)}
         />

@@ -1,4 +1,4 @@
-import { defaultRangeExtractor, useVirtualizer } from '@tanstack/react-virtual';
+import { defaultRangeExtractor, measureElement, useVirtualizer } from '@tanstack/react-virtual';
 import { type WindowPart, windowParts } from './row-window';
 
 /** A plain row's height, until one is measured. */
@@ -28,6 +28,11 @@ export function useRowWindow(
     getScrollElement: () => region,
     getItemKey: (place) => ids[place] ?? place,
     estimateSize: () => plainRowPx,
+    // Taken for plain until the browser has laid it out: to ask for its height as it comes in would be one more layout for each.
+    measureElement: (group, laidOut, table) =>
+      laidOut === undefined
+        ? (table.itemSizeCache.get(ids[table.indexFromElement(group)] ?? '') ?? plainRowPx)
+        : measureElement(group, laidOut, table),
     overscan: rowsAhead,
     // Drawn in its turn: a scroll event that waits for the table would keep the wheel waiting.
     useFlushSync: false,

@@ -8,7 +8,7 @@ import { Sphere, type SphereInput } from '../../../sphere';
 import { CsvFields } from './CsvFields';
 import { SetFields } from './SetFields';
 import { firstChoice } from './target-set-choice';
-import { useLater } from '../../../lib/use-later';
+import { useDrawnAlone } from '../../../lib/use-drawn-alone';
 import { type FoundRow, roomFor, type RowsFrom, useFoundRows } from './use-found-rows';
 
 interface AddRowsDialogProps {
@@ -34,7 +34,7 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
     [found.points, convention],
   );
   // The dialog is there first; the drawing is a task of its own.
-  const drawn = useLater<SphereInput | null>(scene, 0, null);
+  const drawn = useDrawnAlone<SphereInput | null>(scene, null);
   const count = roomFor(found.rows.length, present);
   const unread = found.rows.length - found.points.length;
   return (
