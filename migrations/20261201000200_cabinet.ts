@@ -85,7 +85,8 @@ export async function up(knex: Knex): Promise<void> {
     -- Why it was taken out; null as long as it is seated.
     left_why text,
     CHECK ((left_at IS NULL) = (left_why IS NULL)),
-    CHECK (left_at >= seated_at),
+    -- A seat lasts: two that began in one mount at one moment could not be told apart.
+    CHECK (left_at > seated_at),
     UNIQUE (lab_id, id),
     FOREIGN KEY (lab_id, plate_id) REFERENCES plates (lab_id, id),
     FOREIGN KEY (lab_id, mount_id) REFERENCES mounts (lab_id, id)

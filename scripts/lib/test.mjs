@@ -109,17 +109,22 @@ async function runAll(root, filters, stoppers) {
 }
 
 /**
- * Two lanes for two cores, each taking the next part that is left, the longest first; the browser has the machine for itself.
+ * Two lanes for two cores, each taking the next part that is left, after the build the longest first; the browser has the
+ * machine for itself.
  * @param {Surroundings} surroundings
  * @param {string} dataDirectory
  * @param {Promise<Outcome | null>} browser
  */
 async function everything(surroundings, dataDirectory, browser) {
+  const built = buildClient(surroundings, dataDirectory);
   const parts = [
-    // First, because the tests of the start command take the client that is built.
-    () => buildClient(surroundings, dataDirectory),
+    () => built,
     () => vitest('unit and client tests', ['--project=unit', '--project=client'], surroundings),
-    () => vitest('API and fault tests', ['--project=api'], surroundings),
+    async () => {
+      // The tests of the start command take the client that is built.
+      await built;
+      return vitest('API and fault tests', ['--project=api'], surroundings);
+    },
     () => check('lint', ['node_modules/eslint/bin/eslint.js', '--max-warnings=0', '.'], surroundings),
     () => check('types', ['node_modules/typescript/bin/tsc', '--noEmit'], surroundings),
     () =>

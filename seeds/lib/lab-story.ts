@@ -1,4 +1,3 @@
-import { fitScan } from '../../shared/scan-calibration';
 import { freeze } from '../../shared/protocol/freeze';
 import type {
   CalibrationInput,
@@ -7,8 +6,6 @@ import type {
   DraftContent,
   Lab,
   RecordReading,
-  RecordScan,
-  ScanColumns,
   Version,
 } from '../../shared/schemas';
 import { type AuditEntry, recordEvent } from '../../server/audit/record-event';
@@ -17,16 +14,12 @@ import { newId } from '../../server/db/new-id';
 import { findBench, insertBench } from '../../server/features/benches';
 import {
   addPlate,
-  calibrationOfScan,
   findPlate,
   insertCalibration,
-  readScan,
-  rememberColumns,
   seatPlate,
   type StoredPlate,
   takeOutPlate,
 } from '../../server/features/cabinet';
-import { findFile, insertFile } from '../../server/features/files';
 import {
   findProtocol,
   findVersion,
@@ -45,6 +38,7 @@ import {
   stateEntry,
 } from '../../server/features/runs';
 import type { Person } from './people';
+import { recordScan, type ToldScan, uploadScan } from './told-scan';
 
 interface Step {
   readonly at: Date;
@@ -90,63 +84,16 @@ export class LabStory {
     });
   }
 
-  /** Uploads a scan between polarisers and records what the fit says. */
-  scan(
-    at: Date,
-    by: Person,
-    plateId: string,
-    scan: {
-      readonly name: string;
-      readonly text: string;
-      readonly columns: ScanColumns;
-      readonly wavelengthNm: number;
-      readonly temperatureC: number;
-      readonly measuredAt: Date;
-    },
-  ): void {
-    const bytes = Buffer.from(scan.text, 'utf8');
-    let fileId = '';
+  /** Uploads a scan between polarisers and, in the same moment, records what the fit says. */
+  scan(at: Date, by: Person, plateId: string, scan: ToldScan): void {
     this.#happened(at, by, async () => {
-      const file = { name: scan.name, mediaType: 'text/plain' as const, bytes };
-      fileId = await insertFile(this.transaction, this.#place(at, by), file);
-      const stored = await findFile(this.transaction, { labId: this.lab.id, fileId });
-      if (stored === null) throw new Error('a file that was just stored is not there');
-      const { labId: _labId, ...shown } = stored;
-      return { kind: 'file.uploaded', subjectId: fileId, details: { file: shown } };
-    });
-    this.#happened(at, by, async () => {
-      const plate = await this.#plate(plateId);
-      if (plate.seat === null) throw new Error('a plate is scanned in a seat');
-      const light = { kind: 'linear', extinction: null, power: null } as const;
-      const { wavelengthNm, temperatureC } = scan;
-      const answer = fitScan({
-        ...{ bytes, plate, light, wavelengthNm, temperatureC },
-        columns: scan.columns,
-        leftOutLines: [],
-        direction: plate.seat.mount.direction,
-        measuredBefore: null,
-      });
-      if (answer.kind !== 'fitted') throw new Error(`${scan.name} cannot be fitted`);
-      const { offsetDeg, retardance } = answer.values;
-      const request: RecordScan = {
-        ...{ fileId, light, wavelengthNm, temperatureC },
-        columns: scan.columns,
-        leftOut: [],
-        measuredAt: scan.measuredAt.toISOString(),
-        note: '',
-        settlesId: null,
-        shown: { offsetDeg, retardanceDeg: retardance?.deg ?? null },
-      };
-      const read = await readScan(this.transaction, this.lab, { ...plate, seat: plate.seat }, request);
-      const { calibration, record, signature } = calibrationOfScan(read, request);
       const place = this.#place(at, by);
-      const id = await insertCalibration(this.transaction, place, plate.seat.id, calibration, {
-        fileId,
-        fit: record,
+      const uploaded = await uploadScan(this.transaction, place, scan);
+      this.#happened(at, by, async () => {
+        const plate = await this.#plate(plateId);
+        return recordScan(this.transaction, { ...place, lab: this.lab }, plate, uploaded.subjectId, scan);
       });
-      await rememberColumns(this.transaction, place, signature, request.columns);
-      const details = { calibrationId: id, calibration, fileId, leftOut: [] };
-      return { kind: 'plate.scanned', subjectId: plateId, details };
+      return uploaded;
     });
   }
 
@@ -156,13 +103,12 @@ export class LabStory {
       const plate = await this.#plate(plateId);
       if (plate.seat === null) throw new Error('a plate is seated before it is seated anew');
       const { mountId } = plate.seat;
-      const seatId = await seatPlate(this.transaction, this.#place(at, by), plate, {
+      const details = await seatPlate(this.transaction, this.#place(at, by), plate, {
         mountId,
         why,
         at: null,
       });
-      const details = { seatId, mountId, endedSeatId: plate.seat.id, why };
-      return { kind: 'plate.seated', subjectId: plateId, details };
+      return { kind: 'plate.seated', subjectId: plateId, details: { ...details } };
     });
   }
 
@@ -170,7 +116,7 @@ export class LabStory {
     this.#happened(at, by, async () => {
       const plate = await this.#plate(plateId);
       const details = await takeOutPlate(this.transaction, this.#place(at, by), plate, { why, at: null });
-      return { kind: 'plate.taken-out', subjectId: plateId, details };
+      return { kind: 'plate.taken-out', subjectId: plateId, details: { ...details } };
     });
   }
 

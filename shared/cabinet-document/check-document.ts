@@ -1,4 +1,4 @@
-import { clockSlackMs } from '../clock-slack';
+import { clockSlackMs, later, measuringFault, utcWords } from '../moments';
 import {
   type CabinetDocument,
   calibrationsOf,
@@ -9,9 +9,6 @@ import {
 } from './document';
 import type { PartPath } from './faults';
 import type { Report } from './read-parts';
-
-/** A moment later by `ms`, written as moments are. */
-export const later = (moment: string, ms: number): string => new Date(Date.parse(moment) + ms).toISOString();
 
 /** Reports what no single part shows: names twice, seats at one time, calibrations outside their seats, times to come. */
 export function checkDocument(document: CabinetDocument, now: Date, report: Report): void {
@@ -38,7 +35,7 @@ export function checkDocument(document: CabinetDocument, now: Date, report: Repo
         );
     }
     checkOneAtATime(seats, 'sits in two mounts at one time', report);
-    checkCalibrationTimes(plate, path, latest, report);
+    checkCalibrationTimes(plate, path, now, report);
     checkSettled(plate, path, report);
   }
   for (const seats of seatsOfMount.values()) checkOneAtATime(seats, 'holds two plates at one time', report);
@@ -65,8 +62,10 @@ function checkNames(parts: readonly DocumentRef[], list: string, what: string, r
   }
 }
 
+const futureWords = (moment: string): string => `${moment} is in the future. Write when it was.`;
+
 function checkPast(moment: string | null, latest: string, path: PartPath, report: Report): void {
-  if (moment !== null && moment > latest) report(path, `${moment} is in the future. Write when it was.`);
+  if (moment !== null && moment > latest) report(path, futureWords(moment));
 }
 
 function checkSeatTimes({ seat, path }: PlacedSeat, latest: string, report: Report): void {
@@ -85,13 +84,10 @@ function spanWords({ seatedAt, leftAt }: Pick<DocumentSeatHead, 'seatedAt' | 'le
   return leftAt === null ? `since ${seatedAt}` : `from ${seatedAt} to ${leftAt}`;
 }
 
-/** A moment as a sentence says it to a person of any time zone. */
-export const saidMoment = (moment: string): string => `${moment.slice(0, 16).replace('T', ' ')} UTC`;
-
 export function saidSpan({ seatedAt, leftAt }: Pick<DocumentSeatHead, 'seatedAt' | 'leftAt'>): string {
   return leftAt === null
-    ? `since ${saidMoment(seatedAt)}`
-    : `from ${saidMoment(seatedAt)} to ${saidMoment(leftAt)}`;
+    ? `since ${utcWords(seatedAt)}`
+    : `from ${utcWords(seatedAt)} to ${utcWords(leftAt)}`;
 }
 
 function checkOneAtATime(seats: readonly PlacedSeat[], what: string, report: Report): void {
@@ -128,16 +124,17 @@ function overlaps(earlier: DocumentSeatHead, seat: DocumentSeatHead): boolean {
 }
 
 /** What was measured in a seat was measured after it began and before it ended. */
-function checkCalibrationTimes(plate: DocumentPlate, path: PartPath, latest: string, report: Report): void {
+function checkCalibrationTimes(plate: DocumentPlate, path: PartPath, now: Date, report: Report): void {
   for (const [place, seat] of plate.seats.entries()) {
     for (const [nth, { measuredAt }] of seat.calibrations.entries()) {
       const at = [...path, 'seats', place, 'calibrations', nth, 'measuredAt'];
-      checkPast(measuredAt, latest, at, report);
+      const fault = measuringFault(measuredAt, seat.seatedAt, now);
+      if (fault === 'future') report(at, futureWords(measuredAt));
+      if (fault === 'before-seat') {
+        report(at, `This was measured before the seat in ${seat.mount.name} began at ${seat.seatedAt}.`);
+      }
       if (seat.leftAt !== null && measuredAt > later(seat.leftAt, clockSlackMs)) {
         report(at, `This was measured after the seat in ${seat.mount.name} ended at ${seat.leftAt}.`);
-      }
-      if (measuredAt < later(seat.seatedAt, -clockSlackMs)) {
-        report(at, `This was measured before the seat in ${seat.mount.name} began at ${seat.seatedAt}.`);
       }
     }
   }

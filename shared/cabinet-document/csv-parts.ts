@@ -48,8 +48,9 @@ const leftWhy = columnAt('seat', 'leftWhy');
 const calibrationNumber = columnAt('calibration', 'number');
 const settlesNumber = columnAt('calibration', 'settles');
 
+/** What names a part. A cell at fault names none: its row stands for itself, so that rows are not held against each other for it. */
 const keyOf = (row: CsvRow, ...by: readonly CsvColumn[]): string =>
-  JSON.stringify(by.map((column) => row.values.get(column)));
+  JSON.stringify(by.map((column) => (row.values.has(column) ? row.values.get(column) : { row: row.row })));
 
 /** Puts the rows of a CSV together to plates and mounts, and says in which row each of them stands. */
 export class CsvParts {
@@ -127,7 +128,7 @@ export class CsvParts {
     this.faults.add({ row: row.row, column: column?.header ?? null, message });
   }
 
-  /** Plates and mounts as a JSON document would have them, nothing of them checked. `isWhole`: no row was left out. */
+  /** Plates and mounts as a JSON document would have them, nothing of them checked. `isWhole`: nothing was at fault so far. */
   raw(isWhole: boolean): { readonly mounts: readonly unknown[]; readonly plates: readonly unknown[] } {
     return {
       mounts: [...this.mounts.values()].map(({ first }) => partOf(first, 'mount')),

@@ -54,9 +54,9 @@ export const documentSeatHeadSchema = z
     path: ['leftWhy'],
     error: 'A seat that has ended says when and why; one that has not says neither.',
   })
-  .refine(({ seatedAt, leftAt }) => leftAt === null || leftAt >= seatedAt, {
+  .refine(({ seatedAt, leftAt }) => leftAt === null || leftAt > seatedAt, {
     path: ['leftAt'],
-    error: 'This seat ends before it begins.',
+    error: 'This seat ends before it begins, or as it begins.',
   });
 export type DocumentSeatHead = z.infer<typeof documentSeatHeadSchema>;
 const documentSeatSchema = documentSeatHeadSchema.safeExtend({

@@ -1,5 +1,4 @@
-import { clockSlackMs } from '../clock-slack';
-import { later, saidMoment } from './check-document';
+import { clockSlackMs, later, utcWords } from '../moments';
 import { calibrationsOf, type DocumentCalibration } from './document';
 import type { ImportChange, ImportRefusal } from './import-plan';
 import type { PlannedPlate, PlannedSeat } from './plan-seats';
@@ -110,7 +109,7 @@ function fallsWith(
 }
 
 const said = ({ measuredAt }: DocumentCalibration, name: string): string =>
-  `The calibration of ${name} of ${saidMoment(measuredAt)}`;
+  `The calibration of ${name} of ${utcWords(measuredAt)}`;
 
 /** Whether two are the same measurement. Who recorded it is a name, and a person may have changed theirs. */
 function sameMeasurement(one: DocumentCalibration, other: DocumentCalibration): boolean {
@@ -150,7 +149,7 @@ function againstAdding(
     return `${what} differs from the one of that moment here. What was measured is never changed: record a new one.`;
   }
   if (known !== null && known.leftAt !== null && calibration.measuredAt > later(known.leftAt, clockSlackMs)) {
-    return `${what} was measured after the seat in ${known.mount.name} ended here, at ${saidMoment(known.leftAt)}.`;
+    return `${what} was measured after the seat in ${known.mount.name} ended here, at ${utcWords(known.leftAt)}.`;
   }
   return null;
 }

@@ -1,5 +1,5 @@
-import { clockSlackMs } from '../clock-slack';
-import { later, saidMoment, saidSpan } from './check-document';
+import { clockSlackMs, later, utcWords } from '../moments';
+import { saidSpan } from './check-document';
 import {
   type CabinetDocument,
   type DocumentPlate,
@@ -67,11 +67,11 @@ function endOf(
   const seat = `The seat of ${name} in ${here.mount.name}`;
   if (here.leftAt !== null || leftAt === null || leftWhy === null) {
     const ends =
-      here.leftAt === null ? 'goes on' : `ended at ${saidMoment(here.leftAt)} (${here.leftWhy ?? ''})`;
-    const other = leftAt === null ? 'goes on' : `ended at ${saidMoment(leftAt)} (${leftWhy ?? ''})`;
+      here.leftAt === null ? 'goes on' : `ended at ${utcWords(here.leftAt)} (${here.leftWhy ?? ''})`;
+    const other = leftAt === null ? 'goes on' : `ended at ${utcWords(leftAt)} (${leftWhy ?? ''})`;
     return {
       end: null,
-      reason: `${seat} from ${saidMoment(here.seatedAt)} ${ends} here and ${other} in the file. How a seat ended is never changed.`,
+      reason: `${seat} from ${utcWords(here.seatedAt)} ${ends} here and ${other} in the file. How a seat ended is never changed.`,
     };
   }
   const newest = here.calibrations.reduce(
@@ -81,7 +81,7 @@ function endOf(
   if (newest > later(leftAt, clockSlackMs)) {
     return {
       end: null,
-      reason: `${seat} ended at ${saidMoment(leftAt)} in the file, but it was measured there at ${saidMoment(newest)} here.`,
+      reason: `${seat} ended at ${utcWords(leftAt)} in the file, but it was measured there at ${utcWords(newest)} here.`,
     };
   }
   return { end: { leftAt, leftWhy }, reason: null };
@@ -97,7 +97,7 @@ function againstAdding(
     return `${what}: it is an earlier one that this lab does not have, and only later seats are added.`;
   }
   if (open !== null) {
-    return `${what}: here it sits in ${open.mount.name} since ${saidMoment(open.seatedAt)}, and the file does not say when that ended.`;
+    return `${what}: here it sits in ${open.mount.name} since ${utcWords(open.seatedAt)}, and the file does not say when that ended.`;
   }
   if (seat.leftAt === null && ref.mount.retiredAt !== null) {
     return `${what}: ${seat.mount.name} is retired here. Return it to the cabinet first.`;

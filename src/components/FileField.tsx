@@ -11,7 +11,8 @@ interface Sending {
   readonly share: number;
 }
 
-interface FileFieldProps extends Pick<FieldFrameProps, 'label' | 'help' | 'fault' | 'className'> {
+interface FileFieldProps extends Pick<FieldFrameProps, 'help' | 'fault' | 'className'> {
+  readonly label: string;
   /** As the browser's own list filters: ".csv,text/plain". What a file is, its content decides. */
   readonly accept: string;
   /** The name of the file that was taken, as long as another may be. */
@@ -33,6 +34,7 @@ export function FileField({
   sending,
   onCancel,
 }: FileFieldProps) {
+  const verb = chosen === null ? 'Choose a file' : 'Choose another';
   const sends = sending !== null && sending !== undefined;
   return (
     <div className={className}>
@@ -43,14 +45,14 @@ export function FileField({
             className={classNames(
               controlBox,
               'relative flex items-center pl-0 has-[:focus-visible]:outline-3 has-[:focus-visible]:outline-offset-2 has-[:focus-visible]:outline-beam',
-              fault !== undefined && fault !== null && 'border-fault',
+              'has-[[aria-invalid=true]]:border-fault has-[:disabled]:border-dashed has-[:disabled]:text-ink-3',
             )}
           >
             <span
               aria-hidden="true"
               className="font-title border-rule mr-3 flex h-full items-center border-r px-3"
             >
-              {chosen === null ? 'Choose a file' : 'Choose another'}
+              {verb}
             </span>
             <span
               aria-hidden="true"
@@ -61,6 +63,7 @@ export function FileField({
             <input
               {...control}
               type="file"
+              aria-label={chosen === null ? `${label}: ${verb}` : `${label}, ${chosen}: ${verb}`}
               accept={accept}
               disabled={sends}
               onChange={({ currentTarget }) => {

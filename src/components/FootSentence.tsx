@@ -36,7 +36,7 @@ export function FootSentence({
   };
   return (
     <div
-      className="fixed inset-x-0 bottom-0 z-30 flex flex-wrap gap-x-4 border-t-[1.5px] border-ink bg-paper px-5 py-3 sm:px-10"
+      className="flex flex-wrap gap-x-4 border-t-[1.5px] border-ink bg-paper px-5 py-3 sm:px-10"
       onPointerEnter={hold}
       onPointerLeave={letGo}
       onFocus={hold}

@@ -1,3 +1,4 @@
+import { useEffect } from 'react';
 import { FootSentence } from './FootSentence';
 import { sayDone, useLiveRegion } from './live-region-store';
 
@@ -6,6 +7,9 @@ export function LiveRegions() {
   const polite = useLiveRegion((state) => state.polite);
   const assertive = useLiveRegion((state) => state.assertive);
   const done = useLiveRegion((state) => state.done);
+  const stand = useLiveRegion((state) => state.stand);
+  // Of another page nothing was just done.
+  useEffect(() => () => sayDone(''), []);
   return (
     <>
       <div className="sr-only">
@@ -16,8 +20,10 @@ export function LiveRegions() {
           <span key={assertive.count}>{assertive.text}</span>
         </div>
       </div>
-      <div role="status" aria-live="polite">
-        {done !== '' && <FootSentence sentence={done} onGone={() => sayDone('')} />}
+      <div ref={stand} role="status" aria-live="polite" className="fixed inset-x-0 bottom-0 z-30">
+        {done.text !== '' && (
+          <FootSentence key={done.count} sentence={done.text} onGone={() => sayDone('')} />
+        )}
       </div>
     </>
   );

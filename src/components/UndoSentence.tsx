@@ -1,5 +1,7 @@
 import { useEffect, useRef } from 'react';
+import { createPortal } from 'react-dom';
 import { FootSentence } from './FootSentence';
+import { useLiveRegion } from './live-region-store';
 import { TextButton } from './TextLink';
 import { isTyping } from './use-go-keys';
 
@@ -13,6 +15,7 @@ interface UndoSentenceProps {
 
 /** A sentence at the foot with the way back, for ten seconds and for as long as someone is on it. */
 export function UndoSentence({ sentence, onUndo, onGone }: UndoSentenceProps) {
+  const foot = useLiveRegion((state) => state.foot);
   const latest = useRef({ onUndo, onGone });
   useEffect(() => {
     latest.current = { onUndo, onGone };
@@ -33,19 +36,23 @@ export function UndoSentence({ sentence, onUndo, onGone }: UndoSentenceProps) {
     };
   }, []);
 
-  return (
-    <div role="status">
-      <FootSentence sentence={sentence} onGone={onGone}>
-        <TextButton
-          aria-keyshortcuts="Control+Z"
-          onClick={() => {
-            onUndo();
-            onGone();
-          }}
-        >
-          Undo
-        </TextButton>
-      </FootSentence>
-    </div>
+  const said = (
+    <FootSentence sentence={sentence} onGone={onGone}>
+      <TextButton
+        aria-keyshortcuts="Control+Z"
+        onClick={() => {
+          onUndo();
+          onGone();
+        }}
+      >
+        Undo
+      </TextButton>
+    </FootSentence>
+  );
+  // Beside what was just done, and never over it.
+  return foot === null ? (
+    <div className="fixed inset-x-0 bottom-0 z-30">{said}</div>
+  ) : (
+    createPortal(said, foot)
   );
 }

@@ -11,10 +11,13 @@ interface Announcement {
 interface LiveRegionState {
   readonly polite: Announcement;
   readonly assertive: Announcement;
-  /** What was just done, for everybody to read; '' when it is long enough ago. */
-  readonly done: string;
+  /** What was just done, for everybody to read; its text is '' when it is long enough ago. */
+  readonly done: Announcement;
+  /** The foot of the page, where sentences stand for a while; null where a page has none. */
+  readonly foot: HTMLElement | null;
   readonly announce: (text: string, politeness?: Politeness) => void;
   readonly sayDone: (sentence: string) => void;
+  readonly stand: (foot: HTMLElement | null) => void;
 }
 
 const nothing: Announcement = { text: '', count: 0 };
@@ -22,12 +25,16 @@ const nothing: Announcement = { text: '', count: 0 };
 export const useLiveRegion = create<LiveRegionState>()((set) => ({
   polite: nothing,
   assertive: nothing,
-  done: '',
+  done: nothing,
+  foot: null,
   announce: (text, politeness = 'polite') => {
     set((state) => ({ [politeness]: { text, count: state[politeness].count + 1 } }));
   },
-  sayDone: (done) => {
-    set({ done });
+  sayDone: (text) => {
+    set(({ done }) => ({ done: { text, count: done.count + 1 } }));
+  },
+  stand: (foot) => {
+    set({ foot });
   },
 }));
 

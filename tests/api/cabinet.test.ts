@@ -14,6 +14,7 @@ import {
   protocolSchema,
   runSchema,
 } from '../../shared/schemas';
+import { readCabinet } from '../../shared/cabinet-document';
 import { newMount, newPlate } from '../support/plates';
 import { answered, call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
@@ -116,10 +117,10 @@ describe('a seat', () => {
     const seat = (plateId: string, when: string) =>
       change(plateId, 'put', '/seat', { mountId, why: 'Moved.', at: when });
     expect(faultOf((await seat(plate.id, '2026-06-04T10:00:00Z')).text).detail).toContain(
-      'It sat in its last mount until 2026-06-05 10:00 UTC',
+      'S-10 sat in M S-10 until 2026-06-05 10:00 UTC',
     );
     expect(faultOf((await seat(other.id, '2026-06-04T10:00:00Z')).text).detail).toContain(
-      'Another plate sat in this mount until 2026-06-05 10:00 UTC',
+      'S-10 sat in M S-10 until 2026-06-05 10:00 UTC',
     );
     expect((await seat(plate.id, '2026-06-06T10:00:00Z')).status).toBe(200);
     const { seats } = await answered(
@@ -133,20 +134,42 @@ describe('a seat', () => {
     expect((await measured('2026-06-06T11:00:00Z')).status).toBe(201);
   });
 
-  test('of a new plate begins when a person says, or by when it was measured', async () => {
-    const add = async (name: string, since: string | null, measuredAt: string) => {
+  test('of a new plate begins when a person says, or when it was measured, and not after that', async () => {
+    const add = (name: string, since: string | null, measuredAt: string) => {
       const body = plateBody(name, { calibration: { measuredAt } });
-      const added = call(harness, lead, 'post', at('/plates'), {
-        body: { ...body, seat: { ...body.seat, since } },
-      });
-      return (await answered(added, cabinetPlateSchema)).seat?.seatedAt;
+      return call(harness, lead, 'post', at('/plates'), { body: { ...body, seat: { ...body.seat, since } } });
     };
-    expect(await add('S-12', '2026-04-01T08:00:00Z', '2026-06-01T10:00:00Z')).toBe(
+    const begun = async (...plate: Parameters<typeof add>) =>
+      (await answered(add(...plate), cabinetPlateSchema)).seat?.seatedAt;
+    expect(await begun('S-12', '2026-04-01T08:00:00Z', '2026-06-01T10:00:00Z')).toBe(
       '2026-04-01T08:00:00.000Z',
     );
-    expect(await add('S-13', '2026-06-02T08:00:00Z', '2026-06-01T10:00:00Z')).toBe(
-      '2026-06-01T10:00:00.000Z',
+    expect(await begun('S-13', null, '2026-06-01T10:00:00Z')).toBe('2026-06-01T10:00:00.000Z');
+    const late = await add('S-14', '2026-06-02T08:00:00Z', '2026-06-01T10:00:00Z');
+    expect([late.status, faultOf(late.text).path]).toEqual([422, 'seat.calibration.measuredAt']);
+    expect(faultOf(late.text).detail).toContain('S-14 sits in M S-14 since 2026-06-02 08:00 UTC');
+  });
+
+  test('lasts, so that even one that ended in the minute it began is read back from an export', async () => {
+    const own = await makeLab(harness, lead, 'Lab of short seats');
+    const path = (rest: string) => `/labs/${own.labId}${rest}`;
+    const body = plateBody('S-1', { calibration: { measuredAt: '2026-06-01T10:00:00Z' } });
+    const plate = await answered(
+      call(harness, lead, 'post', path('/plates'), {
+        body: { ...body, seat: { ...body.seat, since: '2026-06-01T10:00:00Z', calibration: null } },
+      }),
+      cabinetPlateSchema,
     );
+    const anew = { mountId: plate.seat?.mountId, why: 'Entered wrongly.', at: '2026-06-01T10:00:00Z' };
+    const seated = await call(harness, lead, 'put', path(`/plates/${plate.id}/seat`), {
+      body: anew,
+      ifMatch: `"r${plate.revision}"`,
+    });
+    expect(seated.status).toBe(200);
+    for (const format of ['csv', 'json'] as const) {
+      const { text } = await call(harness, lead, 'get', path(`/cabinet/export?format=${format}`));
+      expect(readCabinet(text, format, new Date())).toMatchObject({ ok: true });
+    }
   });
 
   test('is refused in a mount that holds another plate, is retired or is not there, each by name', async () => {

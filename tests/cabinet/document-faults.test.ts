@@ -98,6 +98,21 @@ describe('a cell at fault is named by row and column', () => {
     ]);
   });
 
+  it('without holding rows against each other whose names cannot be read', () => {
+    const two = cabinet(
+      [mount('M-1'), mount('M-2')],
+      [
+        plate('H-1', [seat('M-1', 1, null)]),
+        plate('H-2', [seat('M-2', 1, null)], { designWavelengthNm: 1550 }),
+      ],
+    );
+    const text = csv(two).replace('H-1,', '+45,').replace('H-2,', '-45,');
+    expect(faultsOf(text).map(({ row, column }) => [row, column])).toEqual([
+      [2, 'plate'],
+      [3, 'plate'],
+    ]);
+  });
+
   it('with both rows where what is repeated disagrees', () => {
     expectFault(
       withCell(3, 'design_wavelength_nm', '808'),

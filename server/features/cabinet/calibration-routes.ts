@@ -6,7 +6,8 @@ import { findCalibration, insertCalibration } from './calibration-store';
 import type { StoredPlate } from './plate-rows';
 import { plateParams } from './plate-routes';
 import { findPlateToChange, raiseRevision } from './plate-store';
-import { requireInSeat, requirePast, toMilliseconds } from './seat-times';
+import { toMilliseconds } from '../../db/to-milliseconds';
+import { requireMeasured } from './seat-times';
 
 export function calibrationRoutes(): readonly Route[] {
   return [
@@ -20,9 +21,8 @@ export function calibrationRoutes(): readonly Route[] {
       response: calibrationSchema,
       idempotent: true,
       handler: async ({ body, thing, labId, user, transaction, audit, now }) => {
-        requirePast(body.measuredAt, now, 'measuredAt');
         const seat = seatToCalibrate(thing);
-        requireInSeat(thing, seat, body.measuredAt);
+        requireMeasured(thing, seat, { at: body.measuredAt, now, path: 'measuredAt' });
         await requireSettles(transaction, thing, body.settlesId);
         const id = await insertCalibration(transaction, { labId, userId: user.id, now }, seat.id, body);
         await raiseRevision(transaction, thing);

@@ -2,13 +2,14 @@ import type { CreatePlate, SeatPlate, TakeOut } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { brokenUnique } from '../../db/sql-state';
+import { toMilliseconds } from '../../db/to-milliseconds';
 import { conflict, refused } from '../../errors';
 import { insertCalibration } from './calibration-store';
 import { findMountToChange, insertMount, type StoredMount } from './mount-store';
 import type { StoredPlate } from './plate-rows';
 import { insertPlate } from './plate-store';
 import { endSeat, insertSeat } from './seat-store';
-import { requirePast, whenLeft, whenSeated } from './seat-times';
+import { requireMeasured, whenLeft, whenSeated } from './seat-times';
 
 /** Where and by whom something of a cabinet is written. */
 export interface CabinetPlace {
@@ -53,62 +54,78 @@ export async function addPlate(
   id = newId(),
 ): Promise<string> {
   if (seat.kind !== 'none' && seat.calibration !== null) {
-    requirePast(seat.calibration.measuredAt, place.now, 'seat.calibration.measuredAt');
     requireNothingToSettle(seat.calibration.settlesId, 'seat.calibration.settlesId');
   }
   await insertPlate(transaction, place, plate, id);
   if (seat.kind === 'none') return id;
-  const mountId =
+  const mount =
     seat.kind === 'new-mount'
-      ? await insertMount(transaction, place, seat.mount)
-      : (await emptyMount(transaction, { labId: place.labId, mountId: seat.mountId }, 'seat.mountId')).id;
+      ? { id: await insertMount(transaction, place, seat.mount), name: seat.mount.name }
+      : await emptyMount(transaction, { labId: place.labId, mountId: seat.mountId }, 'seat.mountId');
+  const measuredAt = seat.calibration?.measuredAt ?? null;
+  if (measuredAt !== null) {
+    const sits = seat.since === null ? null : { seatedAt: toMilliseconds(seat.since), mount };
+    const path = 'seat.calibration.measuredAt';
+    requireMeasured(plate, sits, { at: measuredAt, now: place.now, path });
+  }
   const seatedAt = await whenSeated(
     transaction,
-    { labId: place.labId, plateId: id, mountId },
-    { at: earliest(seat.since, seat.calibration?.measuredAt ?? null), now: place.now, path: 'seat.since' },
+    { labId: place.labId, plateId: id, mountId: mount.id },
+    // Where nobody says since when, it sat by the time that it was measured.
+    seat.since === null && measuredAt !== null
+      ? { at: measuredAt, now: place.now, path: 'seat.calibration.measuredAt' }
+      : { at: seat.since, now: place.now, path: 'seat.since' },
   );
-  const seatId = await insertSeat(transaction, place, { plateId: id, mountId, seatedAt });
+  const seatId = await insertSeat(transaction, place, { plateId: id, mountId: mount.id, seatedAt });
   if (seat.calibration !== null) await insertCalibration(transaction, place, seatId, seat.calibration);
   return id;
 }
 
-/** A plate sat by the time that it was measured, whenever somebody thinks it was seated. */
-function earliest(since: string | null, measuredAt: string | null): string | null {
-  if (since === null || measuredAt === null) return since ?? measuredAt;
-  return Date.parse(measuredAt) < Date.parse(since) ? measuredAt : since;
+/** Of a seat that ended, for the record. */
+interface EndedSeat {
+  readonly seatId: string;
+  readonly mountId: string;
+  readonly leftAt: string;
+  readonly why: string;
+}
+
+/** Of a seat that began, for the record, with the one that ended for it. */
+interface SeatRecord {
+  readonly seatId: string;
+  readonly mountId: string;
+  readonly seatedAt: string;
+  readonly ended: EndedSeat | null;
 }
 
 /**
  * Puts a plate into a mount. Where it sits already, that seat ends: its zero is void from then on, even if the mount is
  * the same, since nobody puts a plate back to a tenth of a degree by eye.
+ * @returns what the record says of it.
  */
 export async function seatPlate(
   transaction: Transaction,
   place: CabinetPlace,
   plate: StoredPlate,
   { mountId, why, at }: SeatPlate,
-): Promise<string> {
+): Promise<SeatRecord> {
   if (plate.retiredAt !== null) {
     throw conflict(
       'plate-retired',
       `${plate.name} is retired. Return it to the cabinet before it is seated.`,
     );
   }
-  const key = { labId: place.labId, mountId };
-  if (plate.seat !== null) {
-    if (why === '') {
-      throw refused([
-        { path: 'why', message: `${plate.name} sits in ${plate.seat.mount.name}. Write why that seat ends.` },
-      ]);
-    }
-    const leftAt = await whenLeft(transaction, plate, plate.seat, { at, now: place.now });
-    await endSeat(transaction, { labId: place.labId, seatId: plate.seat.id }, { at: leftAt, why });
+  if (plate.seat !== null && why === '') {
+    throw refused([
+      { path: 'why', message: `${plate.name} sits in ${plate.seat.mount.name}. Write why that seat ends.` },
+    ]);
   }
-  const mount = await emptyMount(transaction, key, 'mountId');
+  const ended = plate.seat === null ? null : await takeOutPlate(transaction, place, plate, { why, at });
+  const mount = await emptyMount(transaction, { labId: place.labId, mountId }, 'mountId');
   const seat = { plateId: plate.id, mountId: mount.id };
   const seating = { at, now: place.now, path: 'at' };
   const seatedAt = await whenSeated(transaction, { labId: place.labId, ...seat }, seating);
-  return insertSeat(transaction, place, { ...seat, seatedAt });
+  const seatId = await insertSeat(transaction, place, { ...seat, seatedAt });
+  return { seatId, mountId, seatedAt: seatedAt.toISOString(), ended };
 }
 
 /** Ends a plate's seat, and with it the zero that was measured in it. @returns what the record says of it. */
@@ -117,12 +134,7 @@ export async function takeOutPlate(
   place: Pick<CabinetPlace, 'labId' | 'now'>,
   plate: StoredPlate,
   { why, at }: TakeOut,
-): Promise<{
-  readonly seatId: string;
-  readonly mountId: string;
-  readonly leftAt: string;
-  readonly why: string;
-}> {
+): Promise<EndedSeat> {
   const { seat } = plate;
   if (seat === null) throw conflict('not-seated', `${plate.name} sits in no mount.`);
   const leftAt = await whenLeft(transaction, plate, seat, { at, now: place.now });

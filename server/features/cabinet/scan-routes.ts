@@ -17,7 +17,8 @@ import { requireSettles, seatToCalibrate } from './calibration-routes';
 import { findCalibration, insertCalibration } from './calibration-store';
 import { plateParams } from './plate-routes';
 import { findPlateToChange, raiseRevision } from './plate-store';
-import { requireInSeat, requirePast, toMilliseconds } from './seat-times';
+import { toMilliseconds } from '../../db/to-milliseconds';
+import { requireMeasured } from './seat-times';
 import { rememberColumns, rememberedColumns } from './scan-store';
 import { calibrationOfScan, readScan } from './scan-work';
 
@@ -76,9 +77,8 @@ export function scanRoutes(): readonly Route[] {
       response: calibrationSchema,
       idempotent: true,
       handler: async ({ body, thing, labId, transaction, now }) => {
-        requirePast(body.measuredAt, now, 'measuredAt');
         const seat = seatToCalibrate(thing);
-        requireInSeat(thing, seat, body.measuredAt);
+        requireMeasured(thing, seat, { at: body.measuredAt, now, path: 'measuredAt' });
         await requireSettles(transaction, thing, body.settlesId);
         const lab = await findLab(transaction, { labId });
         if (lab === null) throw new Error('the lab of a plate is there by foreign key');

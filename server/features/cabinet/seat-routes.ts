@@ -18,13 +18,9 @@ export function seatRoutes(): readonly Route[] {
       handler: async ({ body, thing, labId, user, transaction, audit, expectedRevision, now }) => {
         const key = { labId, plateId: thing.id };
         await requireNewest(transaction, thing, expectedRevision, now);
-        const seatId = await seatPlate(transaction, { labId, userId: user.id, now }, thing, body);
+        const details = await seatPlate(transaction, { labId, userId: user.id, now }, thing, body);
         await raiseRevision(transaction, thing);
-        await audit({
-          kind: 'plate.seated',
-          subjectId: thing.id,
-          details: { seatId, endedSeatId: thing.seat?.id ?? null, ...body },
-        });
+        await audit({ kind: 'plate.seated', subjectId: thing.id, details: { ...details } });
         return plateReply(transaction, key, now);
       },
     }),
@@ -42,7 +38,7 @@ export function seatRoutes(): readonly Route[] {
         await requireNewest(transaction, thing, expectedRevision, now);
         const details = await takeOutPlate(transaction, { labId, now }, thing, body);
         await raiseRevision(transaction, thing);
-        await audit({ kind: 'plate.taken-out', subjectId: thing.id, details });
+        await audit({ kind: 'plate.taken-out', subjectId: thing.id, details: { ...details } });
         return plateReply(transaction, key, now);
       },
     }),

@@ -50,21 +50,30 @@ export async function listSeats(
   return rowsOf(found).map(mapSeat);
 }
 
-const momentRow = z.object({ moment: z.date().nullable() });
+const endedRow = z.object({ left_at: z.date(), plate_name: z.string(), mount_name: z.string() });
 
-/** When a plate was last taken out of a mount, or a mount last became empty; null where neither ever was. */
-export async function lastLeft(
+/** The seat that a plate last left, or that last left a mount empty; null where there was none. */
+export async function lastSeatOf(
   transaction: Transaction,
   labId: string,
   of: { readonly plateId: string } | { readonly mountId: string },
-): Promise<Date | null> {
-  const thing = 'plateId' in of ? { plate_id: of.plateId } : { mount_id: of.mountId };
-  const found: unknown = await transaction('seats')
-    .where({ lab_id: labId, ...thing })
-    .max({ moment: 'left_at' })
-    .first();
-  return momentRow.parse(found).moment;
+): Promise<{ readonly leftAt: Date; readonly plateName: string; readonly mountName: string } | null> {
+  const column = 'plateId' in of ? 's.plate_id' : 's.mount_id';
+  const id = 'plateId' in of ? of.plateId : of.mountId;
+  const found: unknown = await transaction.raw(
+    `select s.left_at, p.name as plate_name, m.name as mount_name
+      from seats s join plates p on p.lab_id = s.lab_id and p.id = s.plate_id
+      join mounts m on m.lab_id = s.lab_id and m.id = s.mount_id
+      where s.lab_id = ? and ${column} = ? and s.left_at is not null order by s.left_at desc limit 1`,
+    [labId, id],
+  );
+  const [row] = rowsOf(found);
+  if (row === undefined) return null;
+  const { left_at: leftAt, plate_name: plateName, mount_name: mountName } = endedRow.parse(row);
+  return { leftAt, plateName, mountName };
 }
+
+const momentRow = z.object({ moment: z.date().nullable() });
 
 /** When a plate was last measured in a seat; null where it never was. */
 export async function newestMeasured(

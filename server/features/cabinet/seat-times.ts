@@ -1,61 +1,68 @@
-import { clockSlackMs } from '../../../shared/clock-slack';
+import { clockSlackMs, measuringFault, utcWords } from '../../../shared/moments';
 import type { Transaction } from '../../db/database';
 import { refused } from '../../errors';
 import type { StoredPlate } from './plate-rows';
-import { lastLeft, newestMeasured } from './seat-store';
+import { lastSeatOf, newestMeasured } from './seat-store';
 
 type StoredSeat = NonNullable<StoredPlate['seat']>;
 
-/** As the database keeps it, so that this answer and the next are the same text. */
-export function toMilliseconds(timestamp: string): string {
-  return new Date(timestamp).toISOString();
+/** @throws ProblemError 422 where a plate can't have been measured then in the seat it has. */
+export function requireMeasured(
+  plate: Pick<StoredPlate, 'name'>,
+  seat: { readonly seatedAt: string; readonly mount: { readonly name: string } } | null,
+  measured: { readonly at: string; readonly now: Date; readonly path: string },
+): void {
+  const { at, now, path } = measured;
+  switch (measuringFault(at, seat?.seatedAt ?? null, now)) {
+    case 'future':
+      throw refused([{ path, message: 'This is in the future. Write when it was measured.' }]);
+    case 'before-seat': {
+      const where = seat === null ? '' : ` in ${seat.mount.name} since ${utcWords(seat.seatedAt)}`;
+      const message = `${plate.name} sits${where}, and this is before that: its zero was another one. Write when it was measured in this seat.`;
+      throw refused([{ path, message }]);
+    }
+    case null:
+      return;
+  }
 }
 
-/** A moment as a message says it to a person of any time zone. */
-const said = (moment: Date): string => `${moment.toISOString().slice(0, 16).replace('T', ' ')} UTC`;
-
-export function requirePast(moment: string, now: Date, path: string, what = 'it was measured'): void {
-  if (Date.parse(moment) <= now.getTime() + clockSlackMs) return;
-  throw refused([{ path, message: `This is in the future. Write when ${what}.` }]);
+/** What a person says of when something was done; null is now. */
+interface Done {
+  readonly at: string | null;
+  readonly now: Date;
+  readonly path: string;
+  /** "it was seated". */
+  readonly what: string;
 }
 
-/** What was measured before the plate was seated as it is now says nothing of its zero, whoever writes it down later. */
-export function requireInSeat(plate: StoredPlate, seat: StoredSeat, measuredAt: string): void {
-  const seatedAt = new Date(seat.seatedAt);
-  if (Date.parse(measuredAt) >= seatedAt.getTime() - clockSlackMs) return;
-  throw refused([
-    {
-      path: 'measuredAt',
-      message: `${plate.name} sits in ${seat.mount.name} since ${said(seatedAt)}, and this is before that: its zero was another one. Write when it was measured in this seat.`,
-    },
-  ]);
+/** A moment that must have come before. */
+interface Bound {
+  readonly moment: Date | null;
+  readonly because: (moment: string) => string;
 }
 
 /**
- * A moment that a person wrote, or now. Fields of dates take whole minutes: one a little before `bound` is `bound`.
+ * When something was done, not before any of the bounds. Fields of dates take whole minutes: a moment a little before a
+ * bound is that bound.
  * @throws ProblemError 422 where it is earlier, or in the future.
  */
-function momentFrom(
-  written: string | null,
-  now: Date,
-  path: string,
-  what: string,
-  bounds: readonly { readonly moment: Date | null; readonly because: (moment: string) => string }[],
-): Date {
-  const asked = written === null ? now : new Date(written);
-  if (written !== null) requirePast(written, now, path, what);
+function whenDone({ at, now, path, what }: Done, bounds: readonly Bound[]): Date {
+  const asked = at === null ? now : new Date(at);
+  if (asked.getTime() > now.getTime() + clockSlackMs) {
+    throw refused([{ path, message: `This is in the future. Write when ${what}.` }]);
+  }
   let moment = asked > now ? now : asked;
   for (const { moment: bound, because } of bounds) {
     if (bound === null || bound <= moment) continue;
     if (bound.getTime() - moment.getTime() > clockSlackMs) {
-      throw refused([{ path, message: because(said(bound)) }]);
+      throw refused([{ path, message: because(utcWords(bound.toISOString())) }]);
     }
     moment = bound;
   }
   return moment;
 }
 
-/** When a seat ended: not before it began, nor before what was measured in it. */
+/** When a seat ended: after it began, and not before what was measured in it. */
 export async function whenLeft(
   transaction: Transaction,
   plate: StoredPlate,
@@ -63,9 +70,10 @@ export async function whenLeft(
   leaving: { readonly at: string | null; readonly now: Date },
 ): Promise<Date> {
   const measured = await newestMeasured(transaction, { labId: plate.labId, seatId: seat.id });
-  return momentFrom(leaving.at, leaving.now, 'at', 'it was taken out', [
+  return whenDone({ ...leaving, path: 'at', what: 'it was taken out' }, [
     {
-      moment: new Date(seat.seatedAt),
+      // A seat lasts: two that began in one mount at one moment could not be told apart.
+      moment: new Date(Date.parse(seat.seatedAt) + 1),
       because: (moment) =>
         `${plate.name} was seated in ${seat.mount.name} at ${moment}, after this. Write a later time.`,
     },
@@ -81,17 +89,19 @@ export async function whenLeft(
 export async function whenSeated(
   transaction: Transaction,
   seat: { readonly labId: string; readonly plateId: string; readonly mountId: string },
-  seating: { readonly at: string | null; readonly now: Date; readonly path: string },
+  seating: Pick<Done, 'at' | 'now' | 'path'>,
 ): Promise<Date> {
   const { labId, plateId, mountId } = seat;
-  return momentFrom(seating.at, seating.now, seating.path, 'it was seated', [
-    {
-      moment: await lastLeft(transaction, labId, { plateId }),
-      because: (moment) => `It sat in its last mount until ${moment}, by its history. Write a later time.`,
-    },
-    {
-      moment: await lastLeft(transaction, labId, { mountId }),
-      because: (moment) => `Another plate sat in this mount until ${moment}. Write a later time.`,
-    },
-  ]);
+  const last = [
+    await lastSeatOf(transaction, labId, { plateId }),
+    await lastSeatOf(transaction, labId, { mountId }),
+  ];
+  return whenDone(
+    { ...seating, what: 'it was seated' },
+    last.map((before) => ({
+      moment: before?.leftAt ?? null,
+      because: (moment) =>
+        `${before?.plateName ?? ''} sat in ${before?.mountName ?? ''} until ${moment}. Write a later time.`,
+    })),
+  );
 }

@@ -61,7 +61,7 @@ export function BenchForm(props: {
     CreateBench
   >({
     defaultValues: bench === null ? emptyBench : valuesOfBench(bench),
-    resolver: schemaResolver(createBenchSchema, readBench, fieldOf),
+    resolver: schemaResolver(createBenchSchema, readBench, { fieldOf }),
     mode: 'onTouched',
   });
   const values = useWatch({ control, compute: (typed: BenchValues) => typed });

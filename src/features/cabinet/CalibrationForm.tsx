@@ -14,7 +14,7 @@ import {
   questionFields,
   readCalibration,
 } from './calibration-form-values';
-import { measuredAtFault } from './measured-at-fault';
+import { measuredAtFault } from '../../lib/measured-at-fault';
 import { questionWords } from './plate-words';
 import { recordCalibration } from './queries';
 
@@ -38,10 +38,11 @@ export function CalibrationForm(props: {
     resolver: schemaResolver(
       calibrationInputSchema,
       (values: CalibrationValues) => readCalibration(values, standing),
-      undefined,
-      ({ measuredAt }) => {
-        const message = measuredAtFault(measuredAt, plate.seat?.seatedAt ?? null, new Date());
-        return message === null ? [] : [{ field: 'measuredAt', message }];
+      {
+        alsoWrong: ({ measuredAt }) => {
+          const message = measuredAtFault(measuredAt, plate.seat?.seatedAt ?? null, new Date());
+          return message === null ? [] : [{ field: 'measuredAt', message }];
+        },
       },
     ),
     mode: 'onTouched',

@@ -31,7 +31,7 @@ export function EditPlateForm(props: {
     UpdatePlate
   >({
     defaultValues: valuesOfPlate(plate),
-    resolver: schemaResolver(updatePlateSchema, readPlate, plateFieldOf),
+    resolver: schemaResolver(updatePlateSchema, readPlate, { fieldOf: plateFieldOf }),
     mode: 'onTouched',
   });
   const construction = useWatch({ control, name: 'construction' });

@@ -3,19 +3,25 @@ import { useForm, useWatch } from 'react-hook-form';
 import { type CabinetPlate, type CreatePlate, createPlateSchema } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
 import { sayDone } from '../../components/live-region-store';
-import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
+import {
+  FormProblem,
+  isoFromOptionalField,
+  schemaResolver,
+  showServerFaults,
+  useIdempotencyKey,
+} from '../../lib/forms';
 import { emptyNewPlate, newPlateFieldOf, type NewPlateValues, readNewPlate } from './new-plate-values';
-import { measuredAtFault } from './measured-at-fault';
+import { measuredAtFault } from '../../lib/measured-at-fault';
 import { NewPlateSeat } from './NewPlateSeat';
 import { PlateFields } from './PlateFields';
 import { createPlate } from './queries';
 
 /** What the server will refuse, said beside what the schema does. */
-function futureFaults({ seat, calibrates, calibration }: NewPlateValues) {
+function measuredFaults({ seat, since, calibrates, calibration }: NewPlateValues) {
   const message =
     seat === 'none' || calibrates === 'not-yet'
       ? null
-      : measuredAtFault(calibration.measuredAt, null, new Date());
+      : measuredAtFault(calibration.measuredAt, isoFromOptionalField(since), new Date());
   return message === null ? [] : [{ field: 'calibration.measuredAt' as const, message }];
 }
 
@@ -31,7 +37,10 @@ export function NewPlateForm(props: {
   const keyFor = useIdempotencyKey();
   const form = useForm<NewPlateValues, unknown, CreatePlate>({
     defaultValues: emptyNewPlate(now),
-    resolver: schemaResolver(createPlateSchema, readNewPlate, newPlateFieldOf, futureFaults),
+    resolver: schemaResolver(createPlateSchema, readNewPlate, {
+      fieldOf: newPlateFieldOf,
+      alsoWrong: measuredFaults,
+    }),
     mode: 'onTouched',
   });
   const { register, control, formState, handleSubmit, setError } = form;

@@ -41,7 +41,7 @@ export function PlateFacts(props: FactsProps) {
       <PlateRing plate={plate} />
       <dl className="mt-4">
         {plate.calibration === null ? (
-          <Unmeasured plate={plate} last={detail?.calibrations[0]} />
+          <Unmeasured plate={plate} calibrations={detail?.calibrations} />
         ) : (
           <Measured plate={plate} calibration={plate.calibration} />
         )}
@@ -56,9 +56,14 @@ export function PlateFacts(props: FactsProps) {
 }
 
 /** What is left of a plate's measurements in a seat without any: a retardance goes with the plate, a zero with its seat. */
-function Unmeasured(props: { readonly plate: CabinetPlate; readonly last: Calibration | undefined }) {
-  const { plate, last } = props;
-  const none = last === undefined ? 'not measured yet' : 'void until it is calibrated';
+function Unmeasured(props: {
+  readonly plate: CabinetPlate;
+  readonly calibrations: PlateDetail['calibrations'] | undefined;
+}) {
+  const { plate, calibrations } = props;
+  const last = calibrations?.[0];
+  const unknown = calibrations === undefined ? 'not known' : 'not measured yet';
+  const none = last === undefined ? unknown : 'void until it is calibrated';
   return (
     <>
       <Fact name="zero">{plate.seat === null ? 'none: it sits nowhere' : none}</Fact>

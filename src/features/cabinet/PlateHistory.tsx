@@ -8,6 +8,7 @@ import { ScanFigure } from '../scan';
 import { HistoryTable } from './history/HistoryTable';
 import { PlateHistoryPlot } from './history/PlateHistoryPlot';
 import { OpenQuestions } from './questions/OpenQuestions';
+import { scanOf } from './scan-of';
 import { VoidZero } from './seats/VoidZero';
 
 /** What was measured of a plate, what that leaves open, and what relies on it. */
@@ -26,10 +27,7 @@ export function PlateHistory(props: {
   const { calibration, seat } = plate;
   const oldest = detail.calibrations.at(-1);
   const asks = calibration === null || calibration.openQuestions.length > 0;
-  // What a person settled is still the measurement of the scan that left it open.
-  const scanned = detail.calibrations.find(
-    ({ id, scan }) => scan !== null && (id === calibration?.id || id === calibration?.settlesId),
-  );
+  const scanned = calibration === null ? undefined : scanOf(calibration.id, detail.calibrations);
   const inSeat = detail.calibrations.filter(({ seatId }) => seatId === seat?.id);
   return (
     <>

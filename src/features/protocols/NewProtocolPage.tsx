@@ -81,9 +81,9 @@ export function Component() {
       tolerance: '1e−3',
       start: 'empty',
     },
-    resolver: schemaResolver(createProtocolSchema, read, (path) =>
-      path === 'toleranceInfidelity' ? 'tolerance' : null,
-    ),
+    resolver: schemaResolver(createProtocolSchema, read, {
+      fieldOf: (path) => (path === 'toleranceInfidelity' ? 'tolerance' : null),
+    }),
   });
   const create = useMutation({
     mutationFn: (content: DraftContent) => createProtocol(lab.id, content, keyFor(content)),

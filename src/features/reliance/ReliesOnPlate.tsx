@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useId } from 'react';
+import { listed } from '../../../shared/words';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import type { Reliance, ReliantVersion } from '../../../shared/schemas/reliance';
 import { BeamWorking } from '../../components/BeamState';
@@ -57,7 +58,7 @@ function Relying({
       {benches.length > 0 && (
         <p className="text-s text-ink-2 mt-3">
           {plate.seat === null ? 'It has a place, empty now, in' : 'It stands in'} the beam of{' '}
-          {benches.map(({ name }) => name).join(' and ')}
+          {listed(benches.map(({ name }) => name))}
           {drafts.length === 0 ? '.' : '; these drafts solve with its newest calibration by themselves: '}
           {drafts.map(({ protocolId, protocolName }, index) => (
             <span key={protocolId}>

@@ -42,7 +42,7 @@ export function ScanFilePart({ chosen, fault, sending, onCancel, onFile }: ScanF
       className={classNames('border border-dashed p-3', isOver ? 'border-ink bg-wash' : 'border-rule')}
     >
       <FileField
-        label={chosen === null ? 'the scan’s file' : `the scan’s file: ${chosen}`}
+        label="the scan’s file"
         help={`CSV or other plain text, at most ${maxFileWords}: the dial’s reading and one power or two on each line. Choose it, or drop it here.`}
         fault={dropFault ?? fault}
         chosen={chosen}

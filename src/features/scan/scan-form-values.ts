@@ -11,6 +11,7 @@ import {
   typedFromNumber,
   typedFromOptional,
 } from '../../lib/forms';
+import { measuredAtFault } from '../../lib/measured-at-fault';
 
 /** What a person types beside the file; numbers as text. */
 export interface ScanFormValues {
@@ -120,7 +121,8 @@ export interface ReadSurroundings {
   readonly faults: Partial<Record<ScanField, string>>;
 }
 
-export function readSurroundings(values: ScanFormValues): ReadSurroundings {
+/** @param seatedAt since when the plate sits where it is scanned. */
+export function readSurroundings(values: ScanFormValues, seatedAt: string, now: Date): ReadSurroundings {
   const written = {
     wavelengthNm: readTypedNumber(values.wavelengthNm),
     temperatureC: readOptionalNumber(values.temperatureC),
@@ -135,10 +137,12 @@ export function readSurroundings(values: ScanFormValues): ReadSurroundings {
     measuredAt: 'measuredAt',
     note: 'note',
   } as const;
+  const measuredAt = measuredAtFault(values.measuredAt, seatedAt, now);
+  const faults = parsed.success ? {} : faultsOf(parsed.error, fields, values);
   return {
-    surroundings: parsed.success ? parsed.data : null,
+    surroundings: parsed.success && measuredAt === null ? parsed.data : null,
     forFit: fitSurroundingsSchema.safeParse({ wavelengthNm, temperatureC }).data ?? null,
-    faults: parsed.success ? {} : faultsOf(parsed.error, fields, values),
+    faults: measuredAt === null ? faults : { measuredAt, ...faults },
   };
 }
 

@@ -99,7 +99,7 @@ export function useNewScan({ plate, detail, lightKind, now, onRecorded }: NewSca
     ...typed,
   };
   const light = readLight(values, lab.convention);
-  const around = readSurroundings(values);
+  const around = readSurroundings(values, plate.seat.seatedAt, new Date());
   const faults = { ...light.faults, ...around.faults };
   const before = useStoredScan(
     lab.id,

@@ -1,5 +1,5 @@
 export { isoFromLocalField, isoFromOptionalField, localFieldFromDate } from './local-time';
-export { schemaResolver } from './schema-resolver';
+export { halfTypedSentence, schemaResolver } from './schema-resolver';
 export { readOptionalNumber, readTypedNumber, typedFromNumber, typedFromOptional } from './typed-number';
 export { useIdempotencyKey } from './use-idempotency-key';
 export { conflictingState, problemSentences } from './form-problem';

@@ -9,7 +9,7 @@ import {
 } from '../../../src/features/cabinet/new-plate-values';
 import { valuesOfMount } from '../../../src/features/cabinet/mounts/mount-form-values';
 import { valuesOfPlate } from '../../../src/features/cabinet/plate-form-values';
-import { schemaResolver } from '../../../src/lib/forms';
+import { halfTypedSentence, schemaResolver } from '../../../src/lib/forms';
 import { mountFixture, plateFixture } from '../cabinet/plate-fixture';
 
 type Values = NewPlateValues;
@@ -31,7 +31,7 @@ const typed: Values = {
   },
 };
 
-const resolve = schemaResolver(createPlateSchema, readNewPlate, newPlateFieldOf);
+const resolve = schemaResolver(createPlateSchema, readNewPlate, { fieldOf: newPlateFieldOf });
 
 async function faults(change: Partial<Values>): Promise<FieldErrors<Values>> {
   const options = { fields: {}, shouldUseNativeValidation: false };
@@ -53,6 +53,22 @@ describe('a form held against its schema', () => {
     expect(errors.calibration?.retardanceDeg?.message).toBe(
       'Write a point in place of the comma: \u22121.5.',
     );
+  });
+
+  it('takes half a moment for a fault, and no moment for none', async () => {
+    const ref = document.createElement('input');
+    const validity = (badInput: boolean) =>
+      Object.defineProperty(ref, 'validity', { value: { badInput }, configurable: true });
+    const options = {
+      fields: { since: { name: 'since', ref } },
+      names: ['since'] as const,
+      shouldUseNativeValidation: false,
+    };
+    const errors = async () => (await resolve(typed, undefined, { ...options, names: ['since'] })).errors;
+    validity(true);
+    expect((await errors()).since?.message).toBe(halfTypedSentence);
+    validity(false);
+    expect(await errors()).toEqual({});
   });
 
   it('keeps the schema’s sentence for what is no number, and for a name that holds a comma', async () => {

@@ -155,7 +155,7 @@ describe('the page of quick angles', () => {
     await user.selectOptions(screen.getByRole('combobox', { name: 'with the plates of' }), [
       'signal arm: waits for H-A',
     ]);
-    expect(dials()).toMatch(/H-A was taken out of its mount\. Seat it and calibrate it/u);
+    expect(dials()).toMatch(/H-A sits in no mount\. Seat it and calibrate it/u);
     expect(dials()).not.toMatch(/1 − F expected/u);
     expect(screen.getByRole('link', { name: 'See H-A' }).getAttribute('href')).toBe(
       `/labs/${id(1)}/cabinet/${id(2)}`,

@@ -34,7 +34,7 @@ export function MountForm(props: {
     WriteMount
   >({
     defaultValues: mount === null ? emptyMount : valuesOfMount(mount),
-    resolver: schemaResolver(writeMountSchema, readMount, mountFieldOf),
+    resolver: schemaResolver(writeMountSchema, readMount, { fieldOf: mountFieldOf }),
     mode: 'onTouched',
   });
   const [drive, direction] = useWatch({ control, name: ['drive', 'direction'] });

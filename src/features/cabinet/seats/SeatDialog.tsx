@@ -10,6 +10,7 @@ import { SegmentedChoice } from '../../../components/SegmentedChoice';
 import { TextField } from '../../../components/TextField';
 import {
   FormProblem,
+  halfTypedSentence,
   isoFromOptionalField,
   schemaResolver,
   serverFaultAt,
@@ -46,7 +47,7 @@ export function SeatDialog(props: {
   const keyFor = useIdempotencyKey();
   const [move, setMove] = useState(possibleMove(plate, wished));
   const [why, setWhy] = useState('');
-  const [when, setWhen] = useState('');
+  const [when, setWhen] = useState({ text: '', isHalf: false });
   const [place, setPlace] = useState<'empty' | 'new'>('empty');
   const [chosen, setChosen] = useState<CabinetMount | null>(null);
   // What is missing is said once somebody has pressed the verb.
@@ -57,7 +58,7 @@ export function SeatDialog(props: {
     WriteMount
   >({
     defaultValues: emptyMount,
-    resolver: schemaResolver(writeMountSchema, readMount, mountFieldOf),
+    resolver: schemaResolver(writeMountSchema, readMount, { fieldOf: mountFieldOf }),
     mode: 'onTouched',
   });
   const [drive, direction, newName] = useWatch({ control, name: ['drive', 'direction', 'name'] });
@@ -66,7 +67,7 @@ export function SeatDialog(props: {
   const words = moveWords(plate, move, into);
   const moving = useMutation({
     mutationFn: async (target: Target) => {
-      const at = isoFromOptionalField(when);
+      const at = isoFromOptionalField(when.text);
       if (target.kind === 'none') return takePlateOut(labId, plate, { why, at });
       const mountId =
         target.kind === 'new'
@@ -91,11 +92,11 @@ export function SeatDialog(props: {
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
     },
   });
-  const whenFault = serverFaultAt(moving.error, 'at');
+  const whenFault = when.isHalf ? halfTypedSentence : serverFaultAt(moving.error, 'at');
   const whyFault = seat !== null && why.trim() === '' ? `Write why ${plate.name} is taken out.` : null;
   const press = () => {
     setPressed(true);
-    if (whyFault !== null) return;
+    if (whyFault !== null || when.isHalf) return;
     if (move === 'out') moving.mutate({ kind: 'none' });
     else if (move === 'anew') moving.mutate({ kind: 'same' });
     else if (place === 'new') void handleSubmit((mount) => moving.mutate({ kind: 'new', mount }))();
@@ -176,9 +177,10 @@ export function SeatDialog(props: {
         type="datetime-local"
         help="Empty where it is done just now."
         className="max-w-64"
-        value={when}
-        onChange={(event) => {
-          setWhen(event.target.value);
+        value={when.text}
+        onBlur={({ target }) => setWhen({ text: target.value, isHalf: target.validity.badInput })}
+        onChange={({ target }) => {
+          setWhen({ text: target.value, isHalf: false });
           if (whenFault !== null) moving.reset();
         }}
         fault={whenFault ?? undefined}
