@@ -1,6 +1,7 @@
 import { type ReactNode, useRef } from 'react';
 import { Button } from '../components/Button';
 import { classNames } from '../components/class-names';
+import { edgeFade } from '../components/edge-fade';
 import { useBoxWidth } from '../sphere/use-box-width';
 import { OutputLight } from './OutputLight';
 import { PlateOnBeam } from './PlateOnBeam';
@@ -41,7 +42,7 @@ export function BeamLineStage({ stage, onDial, onBackToSolution, viewedFrom = 'r
         )}
         // What scrolls has to take the keys too.
         {...(scrolls
-          ? { tabIndex: 0, role: 'region', 'aria-label': 'Beam line, scrolls along the beam' }
+          ? { ref: edgeFade, tabIndex: 0, role: 'region', 'aria-label': 'Beam line, scrolls along the beam' }
           : {})}
       >
         <ol
