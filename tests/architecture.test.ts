@@ -105,6 +105,20 @@ describe('what may import what', () => {
     expect(wrong.map(say)).toEqual([]);
   });
 
+  it('gives a class of a stylesheet to one folder: what one page brings stays when the next is shown', () => {
+    const owners = new Map<string, Set<string>>();
+    for (const file of readdirSync(path.join(root, 'src'), { recursive: true, encoding: 'utf8' })) {
+      if (!file.endsWith('.css')) continue;
+      const text = readFileSync(path.join(root, 'src', file), 'utf8');
+      for (const [, name = ''] of text.matchAll(/^\s*\.([a-z][\w-]*)/gmu)) {
+        owners.set(name, (owners.get(name) ?? new Set()).add(path.dirname(file)));
+      }
+    }
+    expect(owners.size).toBeGreaterThan(100);
+    const shared = [...owners].filter(([, folders]) => folders.size > 1).map(([name]) => name);
+    expect(shared).toEqual([]);
+  });
+
   it('keeps three.js out of every script but the sphere', () => {
     const wrong = from('src').filter(
       ({ file, target }) => /^(?:three|@react-three\/.*)$/u.test(target) && !file.startsWith('src/sphere/'),

@@ -87,6 +87,27 @@ export async function newestMeasured(
   return momentRow.parse(found).moment;
 }
 
+const dialledRow = z.object({ number: z.number(), recorded_at: z.date() });
+
+/** The newest reading of a plate's dial since a seat of it began, and in which run; null where nobody recorded one. */
+export async function newestDialled(
+  transaction: Transaction,
+  key: { readonly labId: string; readonly plateId: string; readonly since: string },
+): Promise<{ readonly runNumber: number; readonly at: Date } | null> {
+  const found: unknown = await transaction.raw(
+    `select r.number, d.recorded_at from version_plates vp
+      join runs r on r.lab_id = vp.lab_id and r.version_id = vp.version_id
+      join readings d on d.lab_id = r.lab_id and d.run_id = r.id
+      where vp.lab_id = ? and vp.plate_id = ? and d.outcome = 'done' and d.recorded_at >= ?
+      order by d.recorded_at desc limit 1`,
+    [key.labId, key.plateId, key.since],
+  );
+  const [row] = rowsOf(found);
+  if (row === undefined) return null;
+  const { number: runNumber, recorded_at: at } = dialledRow.parse(row);
+  return { runNumber, at };
+}
+
 export async function insertSeat(
   transaction: Transaction,
   place: { readonly labId: string; readonly userId: string },

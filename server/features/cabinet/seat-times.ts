@@ -2,7 +2,7 @@ import { clockSlackMs, measuringFault, utcWords } from '../../../shared/moments'
 import type { Transaction } from '../../db/database';
 import { refused } from '../../errors';
 import type { StoredPlate } from './plate-rows';
-import { lastSeatOf, newestMeasured } from './seat-store';
+import { lastSeatOf, newestDialled, newestMeasured } from './seat-store';
 
 type StoredSeat = NonNullable<StoredPlate['seat']>;
 
@@ -62,7 +62,7 @@ function whenDone({ at, now, path, what }: Done, bounds: readonly Bound[]): Date
   return moment;
 }
 
-/** When a seat ended: after it began, and not before what was measured in it. */
+/** When a seat ended: after it began, and not before what was measured or dialled in it. */
 export async function whenLeft(
   transaction: Transaction,
   plate: StoredPlate,
@@ -70,6 +70,11 @@ export async function whenLeft(
   leaving: { readonly at: string | null; readonly now: Date },
 ): Promise<Date> {
   const measured = await newestMeasured(transaction, { labId: plate.labId, seatId: seat.id });
+  const dialled = await newestDialled(transaction, {
+    labId: plate.labId,
+    plateId: plate.id,
+    since: seat.seatedAt,
+  });
   return whenDone({ ...leaving, path: 'at', what: 'it was taken out' }, [
     {
       // A seat lasts: two that began in one mount at one moment could not be told apart.
@@ -81,6 +86,11 @@ export async function whenLeft(
       moment: measured,
       because: (moment) =>
         `${plate.name} was measured in ${seat.mount.name} at ${moment}, so it still sat there. Write a later time.`,
+    },
+    {
+      moment: dialled?.at ?? null,
+      because: (moment) =>
+        `${plate.name} was dialled in run ${dialled?.runNumber ?? ''} at ${moment}, so it still sat there. Write a later time.`,
     },
   ]);
 }

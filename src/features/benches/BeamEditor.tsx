@@ -48,9 +48,9 @@ export function BeamEditor(props: {
   const moves = useBeamMoves({ beam, onBeam, list, nameOf: nameOfPlace });
   const { dragged, grip, wasDrag } = useBeamDrag(list, moves.drop);
   return (
-    <div ref={setList} className="bench-beam">
-      <p className="bench-beam-end">
-        <span className="bench-beam-source" aria-hidden="true" />
+    <div ref={setList} className="beam-edit">
+      <p className="beam-edit-end">
+        <span className="beam-edit-source" aria-hidden="true" />
         light, through the polariser
       </p>
       {benchParts.map((part) => (
@@ -123,8 +123,8 @@ export function BeamEditor(props: {
           </div>
         </section>
       ))}
-      <p className="bench-beam-end">
-        <span className="bench-beam-stop" aria-hidden="true" />
+      <p className="beam-edit-end">
+        <span className="beam-edit-stop" aria-hidden="true" />
         analysing polariser and detectors
       </p>
       {moves.taken !== null && (

@@ -28,8 +28,8 @@ export function BeamLineOfBench(props: {
   const { passed, rejected } = bench.detectors;
   const hasEnd = analyses || passed !== null || rejected !== null;
   return (
-    <ol aria-label={`The beam of ${bench.name}, as light goes`} className="bench-line">
-      <OnLine room="little" zone={<span aria-hidden="true" className="bench-line-source" />}>
+    <ol aria-label={`The beam of ${bench.name}, as light goes`} className="beam-run">
+      <OnLine room="little" zone={<span aria-hidden="true" className="beam-run-source" />}>
         <p className="font-strong">
           <span className="sr-only">source, </span>
           <Quantity text={String(bench.wavelengthNm)} unit="nm" />
@@ -72,7 +72,7 @@ export function BeamLineOfBench(props: {
           zone={
             <>
               <Polariser radius={22} axisDeg={0} />
-              <span aria-hidden="true" className="bench-line-stop" />
+              <span aria-hidden="true" className="beam-run-stop" />
             </>
           }
         >

@@ -37,16 +37,16 @@ export function BeamPlateRow(props: {
     <li
       data-place={placeKey}
       className={classNames(
-        'bench-place',
-        (isHeld || draggedByPx !== null) && 'bench-place-held',
+        'beam-place',
+        (isHeld || draggedByPx !== null) && 'beam-place-held',
         isDropBefore && 'bench-drop-before',
       )}
       style={draggedByPx === null ? undefined : { translate: `0 ${draggedByPx}px` }}
     >
-      <span className="bench-place-ring">
+      <span className="beam-place-ring">
         <PlateSign plate={plate} radius={21} now={now} />
       </span>
-      <div className="bench-place-words">
+      <div className="beam-place-words">
         <p>
           <strong>{name}</strong>{' '}
           {plate !== undefined && (
@@ -61,7 +61,7 @@ export function BeamPlateRow(props: {
           </p>
         )}
       </div>
-      <div className="bench-place-hands">
+      <div className="beam-place-hands">
         <button
           type="button"
           data-control="grip"
@@ -88,7 +88,7 @@ export function BeamPlateRow(props: {
           Take out
         </Button>
       </div>
-      <div className="bench-place-conflicts" aria-live="polite">
+      <div className="beam-place-conflicts" aria-live="polite">
         {isNew && <ConflictWords kind="fault">{fault}</ConflictWords>}
         {conflicts.map(({ kind, sentence }) => (
           <ConflictWords key={sentence} kind={kind}>

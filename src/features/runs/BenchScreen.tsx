@@ -26,6 +26,8 @@ import { useBenchCommands } from './use-bench-commands';
 import { useBenchShape } from './use-bench-shape';
 import { useRunState } from './use-run-state';
 import { useSending } from './use-sending';
+import { useVoidDials } from './use-void-dials';
+import { VoidBench } from './VoidBench';
 import { WaitingBand } from './WaitingBand';
 
 /** A touch that is felt, where the device has one to give. */
@@ -60,7 +62,9 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
 
   const { steps, setting } = bench;
   const mayRecord = may('runs.record');
-  const running = run.summary.state === 'running' && mayRecord;
+  const { voids, goOn } = useVoidDials(runId, content);
+  const isHeldUp = run.summary.state === 'running' && mayRecord && voids.length > 0;
+  const running = run.summary.state === 'running' && mayRecord && !isHeldUp;
   const now = running ? (steps?.now ?? null) : null;
   const nowPlate = now === null ? undefined : plates[now.plateIndex];
   const ready = running && steps !== null && steps.dialledDeg !== null;
@@ -146,6 +150,13 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
               busy={runState.busy}
               fault={runState.fault}
               onResume={runState.resume}
+            />
+          ) : isHeldUp ? (
+            <VoidBench
+              runNumber={run.summary.number}
+              voids={voids}
+              onPause={() => runState.pause(voids.join(' '))}
+              onGoOn={goOn}
             />
           ) : steps === null ? (
             <PassedBench

@@ -10,7 +10,9 @@ import { ApiError, newIdempotencyKey } from '../../lib/api';
 import { formatMoment } from '../../lib/format';
 import { benchQuery, LaserCaution, needsCaution } from '../benches';
 import { useLab } from '../labs';
+import { voidDials } from './bench-changes';
 import { readDial } from './DialAnswer';
+import { keepKnownVoids } from './known-voids';
 import { placeWords } from './move-words';
 import { startRun } from './queries';
 import { VersionWarnings } from './VersionWarnings';
@@ -41,7 +43,7 @@ export function StartRunForm({ version }: { readonly version: Version }) {
   const [checked, setChecked] = useState(false);
   const [fault, setFault] = useState('');
   // What the server says of dials that are void, once it has said so; then a person may start all the same.
-  const [voidDials, setVoidDials] = useState('');
+  const [voidWords, setVoidWords] = useState('');
   const [knowsVoid, setKnowsVoid] = useState(false);
   const [busy, setBusy] = useState(false);
   // One key for one start, so that a second press after a lost answer makes no second run.
@@ -65,10 +67,12 @@ export function StartRunForm({ version }: { readonly version: Version }) {
         },
         key,
       );
+      // What stands above the button was read before it was pressed.
+      if (live.data !== undefined) keepKnownVoids(run.summary.id, voidDials(content, live.data));
       await navigate(`/labs/${lab.id}/bench/runs/${run.summary.id}`);
     } catch (error) {
       const stale = staleFault(error);
-      if (stale !== null) setVoidDials(stale);
+      if (stale !== null) setVoidWords(stale);
       else setFault(error instanceof Error ? error.message : 'The server gave no reason.');
       setBusy(false);
     }
@@ -155,13 +159,13 @@ export function StartRunForm({ version }: { readonly version: Version }) {
         </div>
       </section>
 
-      {voidDials !== '' && (
+      {voidWords !== '' && (
         <section aria-labelledby="start-void" className="border-t-[1.5px] border-ink pt-3">
           <h2 id="start-void" className="text-section">
             Start with dials that are void?
           </h2>
           <p role="alert" className="mt-1 font-strong text-fault">
-            {voidDials}
+            {voidWords}
           </p>
           <label className="mt-2 flex min-h-11 cursor-pointer items-center gap-3">
             <input
@@ -184,7 +188,7 @@ export function StartRunForm({ version }: { readonly version: Version }) {
               ? 'the server to answer'
               : asksBench
                 ? 'the bench’s present state'
-                : voidDials !== '' && !knowsVoid
+                : voidWords !== '' && !knowsVoid
                   ? 'your word that the void dials are known'
                   : undefined
           }

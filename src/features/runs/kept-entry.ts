@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { recordReadingSchema } from '../../../shared/schemas/runs';
+import { drop, keep, kept } from './kept';
 
 const dialsSchema = z.array(z.number().nullable());
 
@@ -55,32 +56,6 @@ export interface BenchKeeping {
   readonly forget: () => void;
 }
 
-function parsed(text: string | null): unknown {
-  try {
-    return JSON.parse(text ?? 'null');
-  } catch {
-    return null;
-  }
-}
-
-function keep(name: string, value: unknown): boolean {
-  try {
-    localStorage.setItem(name, JSON.stringify(value));
-    return true;
-  } catch {
-    return false;
-  }
-}
-
-/** Does nothing where the browser keeps nothing. */
-function drop(name: string): void {
-  try {
-    localStorage.removeItem(name);
-  } catch {
-    // Where nothing can be kept there is nothing to forget.
-  }
-}
-
 /** Every name that begins so; none where the browser keeps nothing. */
 function namesFrom(prefix: string): string[] {
   try {
@@ -102,18 +77,11 @@ export function benchKeeping(userId: string, runId: string): BenchKeeping {
   const waiting = (): WaitingReading[] =>
     namesFrom(ofReading)
       .flatMap((slot) => {
-        const reading = waitingReadingSchema.safeParse(parsed(localStorage.getItem(slot)));
+        const reading = waitingReadingSchema.safeParse(kept(slot));
         return reading.success ? [reading.data] : [];
       })
       .sort((a, b) => (a.typedAt === b.typedAt ? 0 : a.typedAt < b.typedAt ? -1 : 1));
-  const cursor = (): BenchCursor => {
-    try {
-      const kept = cursorSchema.safeParse(parsed(localStorage.getItem(name)));
-      return kept.success ? kept.data : emptyCursor;
-    } catch {
-      return emptyCursor;
-    }
-  };
+  const cursor = (): BenchCursor => cursorSchema.safeParse(kept(name)).data ?? emptyCursor;
   return {
     entry: () => ({ ...cursor(), waiting: waiting() }),
     keepCursor: (value) => keep(name, value),

@@ -63,9 +63,9 @@ export function MountForm(props: {
         onDirection={(chosen) => setValue('direction', chosen, { shouldDirty: true })}
       />
       {turned && (
-        <p role="status">
-          Every dial of {mount.plate?.name} changes with this: drafts are solved anew, and versions saved
-          before keep what they say.
+        <p role="status" className="font-strong text-fault">
+          {mount.plate?.name} sits in it: every dial that was solved for it so far turns it the other way and
+          is void. Drafts are solved anew by themselves; versions hold wrong dials until they are re-solved.
         </p>
       )}
       {theirs === null ? (
@@ -86,7 +86,11 @@ export function MountForm(props: {
       {theirs === null && (
         <div className="flex flex-wrap gap-3">
           <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
-            {mount === null ? 'Add the mount' : `Save ${mount.name}`}
+            {mount === null
+              ? 'Add the mount'
+              : turned
+                ? `Save ${mount.name}, its numbers the other way`
+                : `Save ${mount.name}`}
           </Button>
           <Button onClick={() => onDone(null)}>Leave it as it was</Button>
         </div>

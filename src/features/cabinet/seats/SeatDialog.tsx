@@ -22,6 +22,7 @@ import { emptyMount, mountFieldOf, type MountValues, readMount } from '../mounts
 import { MountFields } from '../mounts/MountFields';
 import { createMount } from '../mounts/queries';
 import { seatPlate, takePlateOut } from './queries';
+import { useOpenRuns } from './use-open-runs';
 import { moveWords, possibleMove, type SeatMove } from './seat-move';
 
 const places = [
@@ -63,6 +64,7 @@ export function SeatDialog(props: {
   });
   const [drive, direction, newName] = useWatch({ control, name: ['drive', 'direction', 'name'] });
   const { seat } = plate;
+  const runs = useOpenRuns(labId, plate);
   const into = move === 'other' ? (place === 'new' ? newName.trim() || null : (chosen?.name ?? null)) : null;
   const words = moveWords(plate, move, into);
   const moving = useMutation({
@@ -139,6 +141,7 @@ export function SeatDialog(props: {
         {words.consequences.map((sentence) => (
           <li key={sentence}>{sentence}</li>
         ))}
+        {seat !== null && runs !== null && <li className="font-strong">{runs}</li>}
       </ul>
       {seat !== null && (
         <TextField
