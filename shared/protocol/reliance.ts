@@ -10,6 +10,7 @@ import type { FrozenPlate, FrozenTarget, VersionContent } from '../schemas/versi
 import { type ChoosingRow, chooseSolutionsSteps } from './choose-solutions';
 import { benchProblem, type RowProblem, solveRow } from './solve-row';
 import { usedRetardance } from './solving-plates';
+import { voidsOf } from './voids';
 
 /** What a version relies on, as it stands now. */
 export interface RelianceNow {
@@ -82,30 +83,6 @@ export function* relianceSteps(content: VersionContent, now: RelianceNow): Gener
 
 function frozenInfidelity({ solutions, chosenSolution }: FrozenTarget): number {
   return solutions[chosenSolution]?.dialledInfidelity ?? 1;
-}
-
-function voidsOf(content: VersionContent, { bench, unseatedPlateIds }: RelianceNow): RelianceReport['voids'] {
-  const before = content.bench.plates;
-  const after = bench.order.filter(({ part }) => part === 'preparation');
-  const voids: RelianceReport['voids'] = [];
-  for (const { id, name } of before) {
-    const why = !after.some(({ plateId }) => plateId === id)
-      ? 'not-in-beam'
-      : unseatedPlateIds.has(id)
-        ? 'seat-ended'
-        : null;
-    if (why !== null) voids.push({ why, plateId: id, plateName: name });
-  }
-  for (const { plateId, name } of after) {
-    if (!before.some(({ id }) => id === plateId)) {
-      voids.push({ why: 'new-in-beam', plateId, plateName: name });
-    }
-  }
-  if (voids.some(({ why }) => why !== 'seat-ended')) return voids;
-  for (const [place, { id, name }] of before.entries()) {
-    if (after[place]?.plateId !== id) voids.push({ why: 'moved', plateId: id, plateName: name });
-  }
-  return voids;
 }
 
 function dialledNow(

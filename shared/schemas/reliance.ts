@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { idSchema } from './common';
 
 /** Why the dials of a version stand for nothing now. */
-const voidSchema = z.strictObject({
+export const voidDialsSchema = z.strictObject({
   why: z.enum([
     /** The plate left the seat that its zero was measured in. */
     'seat-ended',
@@ -12,10 +12,13 @@ const voidSchema = z.strictObject({
     'new-in-beam',
     /** The same plates stand in another order. */
     'moved',
+    /** The numbers of its mount rise the other way. */
+    'numbers-turned',
   ]),
   plateId: idSchema,
   plateName: z.string(),
 });
+export type VoidDials = z.infer<typeof voidDialsSchema>;
 
 /** How many targets are within the version's tolerance, and the worst of all. */
 const tallySchema = z.strictObject({
@@ -59,7 +62,7 @@ export const relianceReportSchema = z.strictObject({
   /** Whether anything that the version relies on is another now. */
   stale: z.boolean(),
   /** Where there is any, what the old dials make cannot be told. */
-  voids: z.array(voidSchema),
+  voids: z.array(voidDialsSchema),
   /** One sentence for each thing that keeps the bench from being solved for. */
   waits: z.array(z.string()),
   /** Of the version, in its beam order. */

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { idSchema, lineSchema, noteSchema, pageSchema, timestampSchema } from './common';
+import { voidDialsSchema } from './reliance';
 
 export const runStates = ['running', 'paused', 'finished'] as const;
 
@@ -48,6 +49,8 @@ export const runSchema = z.strictObject({
   startDialsDeg: z.array(z.number().nullable()),
   /** Oldest first. */
   readings: z.array(readingSchema),
+  /** What became void of its version's dials; nothing is asked of a run that is finished. */
+  voids: z.array(voidDialsSchema),
 });
 export type Run = z.infer<typeof runSchema>;
 

@@ -135,9 +135,7 @@ function HomeLink({ href, lit, beamLit, labName }: HomeLinkProps) {
           Quarterturn
         </span>
         {labName !== undefined && (
-          <span className="block pt-1 text-s whitespace-nowrap text-ink-2 truncate max-lg:sr-only">
-            {labName}
-          </span>
+          <span className="block truncate pt-1 text-s text-ink-2 max-lg:sr-only">{labName}</span>
         )}
       </Link>
     </div>

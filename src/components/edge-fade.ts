@@ -2,7 +2,7 @@
 const seenPx = 2;
 
 /**
- * A ref for what scrolls sideways: where it goes on out of sight, that edge fades out (`edge-fade` in base.css). Written to the
+ * A ref for what scrolls sideways: where it goes on out of sight, that edge fades out (`data-more-left` and `data-more-right` in base.css). Written to the
  * element itself, so that scrolling draws nothing anew.
  */
 export function edgeFade(element: HTMLElement | null): (() => void) | undefined {

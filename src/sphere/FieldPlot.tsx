@@ -67,21 +67,17 @@ function Traces({ state, width }: { readonly state: Stokes; readonly width: numb
       ))}
       <Name y={TRACE.rows[0]} axis="H" />
       <Name y={TRACE.rows[1]} axis="V" />
-      <path
-        d={tracePath(parts, 'h', plotWidth)}
-        fill="none"
-        stroke="var(--ink)"
-        strokeWidth={1.5}
-        strokeLinejoin="round"
-      />
-      <path
-        d={tracePath(parts, 'v', plotWidth)}
-        fill="none"
-        stroke="var(--ink)"
-        strokeWidth={1.5}
-        strokeLinejoin="round"
-        strokeDasharray="6 3.5"
-      />
+      {(['h', 'v'] as const).map((component) => (
+        <path
+          key={component}
+          d={tracePath(parts, component, plotWidth)}
+          fill="none"
+          stroke="var(--ink)"
+          strokeWidth={1.5}
+          strokeLinejoin="round"
+          strokeDasharray={component === 'v' ? '6 3.5' : undefined}
+        />
+      ))}
       <g fontSize={11} fill="var(--ink-2)">
         <text x={TRACE.left + plotWidth + 6} y={TRACE.rows[0] + 4}>
           at

@@ -213,6 +213,11 @@ test.each([
   ['one plate less', [H3], ['not-in-beam']],
   ['one plate more', [H3, QB, plateOf(22, 'Q-D', quarter)], ['new-in-beam']],
   ['the plates in another order', [QB, H3], ['moved', 'moved']],
+  [
+    'a plate whose numbers rise the other way',
+    [H3, { ...QB, mount: { ...QB.mount, direction: QB.mount.direction === 1 ? -1 : 1 } } as const],
+    ['numbers-turned'],
+  ],
 ])('with %s in the beam the old dials stand for nothing', (_what, plates, whys) => {
   const content = versionOf(benchOf([H3, QB]), ['D']);
   const report = reliance(content, now(benchOf(plates)));

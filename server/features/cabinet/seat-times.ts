@@ -90,7 +90,7 @@ export async function whenLeft(
     {
       moment: dialled?.at ?? null,
       because: (moment) =>
-        `${plate.name} was dialled in run ${dialled?.runNumber ?? ''} at ${moment}, so it still sat there. Write a later time.`,
+        `A dial of ${plate.name} was recorded in run ${dialled?.runNumber ?? ''} at ${moment}, so it still sat there. Write a later time.`,
     },
   ]);
 }

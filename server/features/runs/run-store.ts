@@ -1,8 +1,12 @@
 import { z } from 'zod';
 import type { Thing } from '../../../shared/permissions';
-import { type Reading, type Run, runStates, type RunSummary } from '../../../shared/schemas';
+import { voidsOf } from '../../../shared/protocol/voids';
+import { type Reading, type Run, runStates, type RunSummary, type VoidDials } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { rowsOf } from '../../db/rows';
+import { unseatedPlateIds } from '../beam-changes';
+import { findBench } from '../benches';
+import { findVersionById } from '../protocols';
 
 const runRow = z.object({
   id: z.string(),
@@ -139,7 +143,7 @@ async function listReadings(transaction: Transaction, labId: string, runId: stri
     }));
 }
 
-/** The run as it stands now, with all its readings. */
+/** The run as it stands now, with all its readings and what became void of its dials. */
 export async function runAsItStands(
   transaction: Transaction,
   key: { readonly labId: string; readonly runId: string },
@@ -150,5 +154,16 @@ export async function runAsItStands(
     summary: run.summary,
     startDialsDeg: [...run.startDialsDeg],
     readings: await listReadings(transaction, key.labId, key.runId),
+    voids: run.summary.state === 'finished' ? [] : await voidsOfRun(transaction, run),
   };
+}
+
+async function voidsOfRun(transaction: Transaction, { labId, summary }: RunRow): Promise<VoidDials[]> {
+  const version = await findVersionById(transaction, labId, summary.versionId);
+  const bench =
+    version === null ? null : await findBench(transaction, { labId, benchId: version.content.bench.id });
+  if (version === null || bench === null)
+    throw new Error("a run's version and bench are there by foreign key");
+  const { content } = version;
+  return voidsOf(content, { bench, unseatedPlateIds: await unseatedPlateIds(transaction, labId, content) });
 }

@@ -2,9 +2,11 @@ import { z } from 'zod';
 import { dialledInfidelity } from '../../../shared/protocol/dialled';
 import { type RunEvent, type RunState, transition } from '../../../shared/protocol/run-life';
 import type { RecordReading, StartRun, Version } from '../../../shared/schemas';
+import { listed } from '../../../shared/words';
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { conflict, refused } from '../../errors';
+import { unseatedPlateIds } from '../beam-changes';
 import type { RunRow } from './run-store';
 
 /** Who does it and when; the seeds say another time than now. */
@@ -15,7 +17,6 @@ interface Doing {
 }
 
 const numberRow = z.object({ runs_started: z.number() });
-const endedRow = z.object({ calibration_id: z.string() });
 const benchRow = z.object({ name: z.string(), retired_at: z.date().nullable() });
 
 /**
@@ -65,26 +66,13 @@ export async function startRun(
 
 /** A zero holds for one seat: dials that were worked out with a seat that has ended point anywhere. */
 async function requireSeats(transaction: Transaction, labId: string, version: Version): Promise<void> {
-  const { plates } = version.content.bench;
-  const ended = z.array(endedRow).parse(
-    await transaction('calibrations')
-      .join('seats', 'seats.id', 'calibrations.seat_id')
-      .where({ 'calibrations.lab_id': labId })
-      .whereIn(
-        'calibrations.id',
-        plates.map(({ calibration }) => calibration.id),
-      )
-      .whereNotNull('seats.left_at')
-      .select({ calibration_id: 'calibrations.id' }),
-  );
-  const names = plates
-    .filter(({ calibration }) => ended.some(({ calibration_id }) => calibration_id === calibration.id))
-    .map(({ name }) => name);
+  const unseated = await unseatedPlateIds(transaction, labId, version.content);
+  const names = version.content.bench.plates.filter(({ id }) => unseated.has(id)).map(({ name }) => name);
   if (names.length === 0) return;
   throw refused([
     {
       path: 'staleAcknowledged',
-      message: `${names.join(' and ')} ${names.length === 1 ? 'has' : 'have'} left the seat that version ${version.summary.number} was worked out for, so ${names.length === 1 ? 'its' : 'their'} dials are void. Save a new version, or say that this is known.`,
+      message: `${listed(names)} ${names.length === 1 ? 'has' : 'have'} left the seat that version ${version.summary.number} was worked out for, so ${names.length === 1 ? 'its' : 'their'} dials are void. Save a new version, or say that this is known.`,
     },
   ]);
 }

@@ -1,1 +1,2 @@
 export { ReliesOnPlate } from './ReliesOnPlate';
+export { voidReasons } from './void-reasons';

@@ -3,6 +3,7 @@ import type { ReactNode } from 'react';
 import type { RelianceReport, RelianceTarget } from '../../../shared/schemas/reliance';
 import { Scientific } from '../../components/Scientific';
 import { formatAngle } from '../../lib/format';
+import { voidReasons } from './void-reasons';
 
 /** Targets that fall less short than this are reached, to whoever reads a tenth of a degree. */
 const feltShortDeg = 0.05;
@@ -18,7 +19,10 @@ export interface ReportWords {
 
 export function reportWords(report: RelianceReport): ReportWords {
   return {
-    now: report.voids.length > 0 ? voidWords(report) : dialWords(report),
+    now:
+      report.voids.length > 0
+        ? `Its dials are void: ${listed(voidReasons(report.voids))}.`
+        : dialWords(report),
     resolved: resolvedWords(report),
     wrong: report.voids.length > 0 || (report.oldDials?.out ?? 0) > report.frozen.out,
   };
@@ -34,26 +38,6 @@ function named(report: RelianceReport, which: (target: RelianceTarget) => boolea
     words: names.length <= mostNamed ? listed(names) : `${names.length} targets`,
   };
 }
-
-function voidWords({ voids }: RelianceReport): string {
-  const of = (why: RelianceReport['voids'][number]['why']) =>
-    voids.filter((each) => each.why === why).map(({ plateName }) => plateName);
-  const [unseated, gone, added, moved] = [
-    of('seat-ended'),
-    of('not-in-beam'),
-    of('new-in-beam'),
-    of('moved'),
-  ];
-  const reasons = [
-    ...(unseated.length > 0 ? [`${listed(unseated)} left the seat that they were solved for`] : []),
-    ...(gone.length > 0 ? [`${listed(gone)} ${isOrAre(gone)} not in the beam any more`] : []),
-    ...(added.length > 0 ? [`${listed(added)} ${isOrAre(added)} new in the beam`] : []),
-    ...(moved.length > 0 ? [`${listed(moved)} changed places`] : []),
-  ];
-  return `Its dials are void: ${listed(reasons)}.`;
-}
-
-const isOrAre = (names: readonly string[]) => (names.length === 1 ? 'is' : 'are');
 
 function dialWords(report: RelianceReport): ReactNode {
   const { oldDials, toleranceInfidelity } = report;

@@ -9,9 +9,11 @@ import { BenchAside } from './BenchAside';
 import { BlankScreen } from './BlankScreen';
 import { BenchFoot } from './BenchFoot';
 import { BenchHead } from './BenchHead';
+import { voidReasons } from '../reliance';
 import { benchTargets } from './bench-targets';
 import { type BenchStore, createBenchStore } from './bench-store';
 import { benchKeeping } from './kept-entry';
+import { useUnknownVoids } from './known-voids';
 import { LeaveRunDialog } from './LeaveRunDialog';
 import { announcement, dialText } from './move-words';
 import { OtherReadingSheet } from './OtherReadingSheet';
@@ -26,7 +28,6 @@ import { useBenchCommands } from './use-bench-commands';
 import { useBenchShape } from './use-bench-shape';
 import { useRunState } from './use-run-state';
 import { useSending } from './use-sending';
-import { useVoidDials } from './use-void-dials';
 import { VoidBench } from './VoidBench';
 import { WaitingBand } from './WaitingBand';
 
@@ -62,9 +63,10 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
 
   const { steps, setting } = bench;
   const mayRecord = may('runs.record');
-  const { voids, goOn } = useVoidDials(runId, content);
-  const isHeldUp = run.summary.state === 'running' && mayRecord && voids.length > 0;
-  const running = run.summary.state === 'running' && mayRecord && !isHeldUp;
+  const { voids, goOn } = useUnknownVoids(run);
+  const goesOn = run.summary.state === 'running' && mayRecord;
+  const isHeldUp = goesOn && voids.length > 0;
+  const running = goesOn && !isHeldUp;
   const now = running ? (steps?.now ?? null) : null;
   const nowPlate = now === null ? undefined : plates[now.plateIndex];
   const ready = running && steps !== null && steps.dialledDeg !== null;
@@ -154,8 +156,8 @@ export function BenchScreen({ run, version: { content } }: BenchScreenProps) {
           ) : isHeldUp ? (
             <VoidBench
               runNumber={run.summary.number}
-              voids={voids}
-              onPause={() => runState.pause(voids.join(' '))}
+              reasons={voidReasons(voids)}
+              onPause={(note) => runState.pause(note)}
               onGoOn={goOn}
             />
           ) : steps === null ? (

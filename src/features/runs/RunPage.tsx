@@ -12,6 +12,9 @@ import { BenchScreen } from './BenchScreen';
 import { runQuery } from './queries';
 import { RunRecord } from './RunRecord';
 
+/** So often a run that goes on looks whether its dials still hold. */
+const lookEveryMs = 20_000;
+
 /** A run at its own address: the bench while it goes on, its record once it is finished. */
 export function RunPage() {
   const { lab } = useLab();
@@ -21,6 +24,8 @@ export function RunPage() {
     ...runQuery(lab.id, runId),
     refetchOnWindowFocus: 'always',
     refetchOnMount: 'always',
+    // Nor does somebody at another bench tell when a plate is taken out of its mount.
+    refetchInterval: ({ state }) => (state.data?.summary.state === 'running' ? lookEveryMs : false),
   });
   const { refetch } = run;
   useEffect(() => {

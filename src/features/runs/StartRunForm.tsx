@@ -10,7 +10,6 @@ import { ApiError, newIdempotencyKey } from '../../lib/api';
 import { formatMoment } from '../../lib/format';
 import { benchQuery, LaserCaution, needsCaution } from '../benches';
 import { useLab } from '../labs';
-import { voidDials } from './bench-changes';
 import { readDial } from './DialAnswer';
 import { keepKnownVoids } from './known-voids';
 import { placeWords } from './move-words';
@@ -68,7 +67,7 @@ export function StartRunForm({ version }: { readonly version: Version }) {
         key,
       );
       // What stands above the button was read before it was pressed.
-      if (live.data !== undefined) keepKnownVoids(run.summary.id, voidDials(content, live.data));
+      keepKnownVoids(run);
       await navigate(`/labs/${lab.id}/bench/runs/${run.summary.id}`);
     } catch (error) {
       const stale = staleFault(error);

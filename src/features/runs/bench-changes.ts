@@ -1,5 +1,4 @@
 import { type Convention, infidelityBetween, parseState } from '../../../shared/optics';
-import { measuringFault } from '../../../shared/moments';
 import type { Bench } from '../../../shared/schemas/benches';
 import type { FrozenPlate, VersionContent } from '../../../shared/schemas/versions';
 import { formatDate } from '../../lib/format';
@@ -10,47 +9,33 @@ const gap = '\u202f';
 /** Two ways of writing one state differ by rounding alone below this 1 − F. */
 const sameStateInfidelity = 1e-12;
 
-/** What makes the dials of one place of a version's beam void, in a sentence; null where they may be less good but hold. */
-function voidSentence(frozen: FrozenPlate, index: number, bench: Bench): string | null {
-  const { name } = frozen;
-  if (bench.order[index]?.plateId !== frozen.id) {
-    return `${name} no longer stands in its place at ${bench.name}. This version’s dials are for it.`;
-  }
-  const waits = bench.notReady.find(({ plateId }) => plateId === frozen.id);
-  if (waits !== undefined) {
-    return waits.why === 'not-seated'
-      ? `${name} was taken out of its mount. This version’s dials are void: a zero holds for one seat.`
-      : `${name} was seated anew and is not calibrated yet. This version’s dials are void.`;
-  }
-  const live = bench.plates.find(({ id }) => id === frozen.id);
-  // Not shown as long as another plate of the beam is not ready, which is said of that one.
-  if (live === undefined) return null;
-  if (measuringFault(frozen.calibration.measuredAt, live.seatedAt, new Date()) === 'before-seat') {
-    return `${name} was seated anew since this version’s zero was measured. Its dials are void: save a new version.`;
-  }
-  if (live.mount.direction !== frozen.mount.direction) {
-    const way = live.mount.direction === 1 ? 'counter-clockwise' : 'clockwise';
-    return `The numbers of ${name}’s mount now rise when it is turned ${way}. This version’s dials are for the other way, so that every one of them is another angle: save a new version.`;
-  }
-  return null;
-}
-
-/** What makes dials of a version void at its bench as it stands now, a sentence for each plate. */
-export function voidDials({ bench }: VersionContent, live: Bench): string[] {
-  return bench.plates.flatMap((frozen, index) => voidSentence(frozen, index, live) ?? []);
-}
-
 /** The plate that a version froze at one place of its beam, against the same place now. */
 function plateChanges(frozen: FrozenPlate, index: number, bench: Bench): string[] {
   const { name } = frozen;
-  const changes: string[] = [];
-  const isVoid = voidSentence(frozen, index, bench);
-  if (isVoid !== null) changes.push(isVoid);
+  if (bench.order[index]?.plateId !== frozen.id) {
+    return [`${name} no longer stands in its place at ${bench.name}. This version’s dials are for it.`];
+  }
+  const waits = bench.notReady.find(({ plateId }) => plateId === frozen.id);
+  if (waits !== undefined) {
+    return [
+      waits.why === 'not-seated'
+        ? `${name} was taken out of its mount. This version’s dials are void: a zero holds for one seat.`
+        : `${name} was seated anew and is not calibrated yet. This version’s dials are void.`,
+    ];
+  }
   const live = bench.plates.find(({ id }) => id === frozen.id);
-  if (live === undefined || bench.order[index]?.plateId !== frozen.id) return changes;
-  if (isVoid === null && live.calibration.id !== frozen.calibration.id) {
+  // Not shown as long as another plate of the beam is not ready, which is said of that one.
+  if (live === undefined) return [];
+  const changes: string[] = [];
+  if (live.calibration.id !== frozen.calibration.id) {
     changes.push(
       `${name} has a newer calibration, of ${formatDate(new Date(live.calibration.measuredAt))}. This version’s dials are for the older one: save a new version to use it.`,
+    );
+  }
+  if (live.mount.direction !== frozen.mount.direction) {
+    const way = live.mount.direction === 1 ? 'counter-clockwise' : 'clockwise';
+    changes.push(
+      `The numbers of ${name}’s mount now rise when it is turned ${way}. This version’s dials are for the other way, so that every one of them is another angle: save a new version.`,
     );
   }
   if (live.mount.resolutionDeg !== frozen.mount.resolutionDeg) {

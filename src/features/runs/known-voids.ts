@@ -1,15 +1,31 @@
+import { useState } from 'react';
 import { z } from 'zod';
+import type { VoidDials } from '../../../shared/schemas/reliance';
+import type { Run } from '../../../shared/schemas/runs';
 import { keep, kept } from './kept';
 
 const knownSchema = z.array(z.string());
 
 const nameOf = (runId: string) => `quarterturn.bench-voids.${runId}`;
+const keyOf = ({ why, plateId }: VoidDials) => `${why} ${plateId}`;
 
-/** What a person at this device has read of a run's void dials and goes on with all the same. */
-export function knownVoids(runId: string): readonly string[] {
-  return knownSchema.safeParse(kept(nameOf(runId))).data ?? [];
+/** Somebody at this device has read what is void of a run's dials, and goes on with them. */
+export function keepKnownVoids({ summary, voids }: Run): void {
+  keep(nameOf(summary.id), voids.map(keyOf));
 }
 
-export function keepKnownVoids(runId: string, voids: readonly string[]): void {
-  keep(nameOf(runId), voids);
+/** What became void of a run's dials, as far as nobody here has said that it is known. */
+export function useUnknownVoids(run: Run): {
+  readonly voids: readonly VoidDials[];
+  readonly goOn: () => void;
+} {
+  const read = () => knownSchema.safeParse(kept(nameOf(run.summary.id))).data ?? [];
+  const [known, setKnown] = useState(read);
+  return {
+    voids: run.voids.filter((each) => !known.includes(keyOf(each))),
+    goOn: () => {
+      keepKnownVoids(run);
+      setKnown(run.voids.map(keyOf));
+    },
+  };
 }

@@ -1,4 +1,4 @@
-import { queryOptions } from '@tanstack/react-query';
+import { type QueryClient, queryOptions } from '@tanstack/react-query';
 import type { RecordReading, Run, StartRun } from '../../../shared/schemas/runs';
 import type { VersionSummary } from '../../../shared/schemas/protocols';
 import { request } from '../../lib/api';
@@ -8,6 +8,13 @@ export const runQuery = (labId: string, runId: string) =>
     queryKey: ['labs', labId, 'runs', runId],
     queryFn: ({ signal }) => request<Run>(`/labs/${labId}/runs/${runId}`, { signal }),
   });
+
+/** Shows a run as the server just answered it: a fetch that began before would put it back to what it was. */
+export async function showRun(queryClient: QueryClient, labId: string, run: Run): Promise<void> {
+  const { queryKey } = runQuery(labId, run.summary.id);
+  await queryClient.cancelQueries({ queryKey });
+  queryClient.setQueryData(queryKey, run);
+}
 
 export const startableVersionsQuery = (labId: string) =>
   queryOptions({

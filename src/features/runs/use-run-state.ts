@@ -2,7 +2,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import type { Run } from '../../../shared/schemas/runs';
 import { ApiError } from '../../lib/api';
-import { finishRun, pauseRun, resumeRun, runQuery } from './queries';
+import { finishRun, pauseRun, resumeRun, runQuery, showRun } from './queries';
 
 export interface RunStateActions {
   readonly busy: boolean;
@@ -23,7 +23,7 @@ export function useRunState(labId: string, runId: string): RunStateActions {
     setBusy(true);
     setFault('');
     try {
-      queryClient.setQueryData(runQuery(labId, runId).queryKey, await call());
+      await showRun(queryClient, labId, await call());
       // Home and the lists count runs by their state.
       void queryClient.invalidateQueries({ queryKey: ['labs', labId], refetchType: 'none' });
     } catch (error) {

@@ -4,7 +4,7 @@ import { useStore } from 'zustand';
 import { ApiError } from '../../lib/api';
 import type { BenchStore } from './bench-store';
 import type { BenchKeeping } from './kept-entry';
-import { recordReading, runQuery } from './queries';
+import { recordReading, runQuery, showRun } from './queries';
 
 /** Why the oldest waiting reading is still here. */
 export type SendingTrouble =
@@ -47,10 +47,7 @@ export function useSending(labId: string, runId: string, store: BenchStore, keep
     recordReading(labId, runId, oldest.body, oldest.key)
       .then(
         async (run) => {
-          const { queryKey } = runQuery(labId, runId);
-          // A fetch that began before this answer would put the run back to what it was without this reading.
-          await queryClient.cancelQueries({ queryKey });
-          queryClient.setQueryData(queryKey, run);
+          await showRun(queryClient, labId, run);
           store.getState().acknowledged(oldest.key, run);
           setSavedAt(new Date());
           setTrouble(null);

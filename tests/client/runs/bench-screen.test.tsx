@@ -5,7 +5,6 @@ import { madeOf, wantedDials } from '../../../src/features/runs/dial-cost';
 import { FakeApi, openBench } from './bench-harness';
 import { id, makeRun, makeVersion } from './fixture';
 import { infidelityAscii } from '../../../src/lib/format/fidelity';
-import type { Bench } from '../../../shared/schemas/benches';
 import type { Run } from '../../../shared/schemas/runs';
 
 const version = makeVersion();
@@ -61,40 +60,6 @@ describe('the bench', () => {
     });
     // The next way starts from what was dialled last.
     expect(screen.getByText(new RegExp(`from ${said(0, 0)} `, 'u'))).toBeTruthy();
-  });
-
-  test('confirms nothing once a plate left its seat, before somebody says that this is known', async () => {
-    const api = new FakeApi(makeRun(version), version);
-    const moved = (bench: Bench): Bench => ({
-      ...bench,
-      plates: bench.plates.map((plate, place) =>
-        place === 0 ? { ...plate, seatedAt: '2026-12-01T09:00:00.000Z' } : plate,
-      ),
-    });
-    api.changeBench = moved;
-    const { user } = openBench(api);
-    expect(await screen.findByRole('heading', { name: /^Dials of run \d+ are void$/u })).toBeTruthy();
-    expect(screen.getByRole('alert').textContent).toMatch(/^H-3 was seated anew since this version’s zero/u);
-    expect(screen.queryByRole('button', { name: /^H-3 says/u })).toBeNull();
-    await user.click(await button('Go on with void dials'));
-    expect(await button(/^H-3 says/u)).toBeTruthy();
-    cleanup();
-    // This device knows it now.
-    openBench(api);
-    expect(await button(/^H-3 says/u)).toBeTruthy();
-  });
-
-  test('a run is paused from there with what became void as its note', async () => {
-    const api = new FakeApi(makeRun(version), version);
-    api.changeBench = (bench) => ({
-      ...bench,
-      plates: [],
-      notReady: [{ plateId: bench.plates[0]?.id ?? '', name: 'H-3', part: 'preparation', why: 'not-seated' }],
-    });
-    const { user } = openBench(api);
-    await user.click(await button('Pause the run'));
-    await waitFor(() => expect(api.run.summary.state).toBe('paused'));
-    expect(api.run.summary.pauseNote).toContain('H-3 was taken out of its mount');
   });
 
   test('two presses in one do not confirm the next plate unseen', async () => {

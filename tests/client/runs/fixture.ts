@@ -129,5 +129,6 @@ export function makeRun(version: Version, startDialsDeg: Run['startDialsDeg'] = 
     },
     startDialsDeg,
     readings: [],
+    voids: [],
   };
 }
