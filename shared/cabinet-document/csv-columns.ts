@@ -15,11 +15,29 @@ export interface CsvColumn {
   /** Where the value is in the part. */
   readonly path: readonly [string] | readonly [string, string];
   readonly kind: CellKind;
+  /** What an empty cell says, where that is not "nothing is known". */
+  readonly whenEmpty: number | null;
+  /** What to write, where a number alone doesn't tell. */
+  readonly meaning: string | null;
 }
 
-const column = (part: CsvPart, header: string, path: string, kind: CellKind): CsvColumn => {
+const column = (
+  part: CsvPart,
+  header: string,
+  path: string,
+  kind: CellKind,
+  more: Partial<Pick<CsvColumn, 'whenEmpty' | 'meaning'>> = {},
+): CsvColumn => {
   const [first = '', second] = path.split('.');
-  return { header, part, path: second === undefined ? [first] : [first, second], kind };
+  return {
+    header,
+    part,
+    path: second === undefined ? [first] : [first, second],
+    kind,
+    whenEmpty: null,
+    meaning: null,
+    ...more,
+  };
 };
 
 /** The columns in their order. The last is never empty behind a calibration, so that a file cut off mid-row shows. */
@@ -29,7 +47,7 @@ export const csvColumns: readonly CsvColumn[] = [
   column('plate', 'design_wavelength_nm', 'designWavelengthNm', 'number'),
   column('plate', 'construction', 'construction', 'word'),
   column('plate', 'material', 'material', 'word'),
-  column('plate', 'order_waves', 'order', 'number'),
+  column('plate', 'order_waves', 'order', 'number', { whenEmpty: 0 }),
   column('plate', 'serial', 'serial', 'text'),
   column('plate', 'clear_aperture_mm', 'clearApertureMm', 'number'),
   column('plate', 'coating_from_nm', 'coatingNm.from', 'number'),
@@ -39,7 +57,9 @@ export const csvColumns: readonly CsvColumn[] = [
   column('plate', 'plate_retired_at', 'retiredAt', 'word'),
   column('mount', 'mount', 'name', 'text'),
   column('mount', 'drive', 'drive', 'word'),
-  column('mount', 'direction', 'direction', 'number'),
+  column('mount', 'direction', 'direction', 'number', {
+    meaning: 'Write 1 where its numbers rise counter-clockwise as the receiver sees it, -1 where clockwise.',
+  }),
   column('mount', 'resolution_deg', 'resolutionDeg', 'number'),
   column('mount', 'repeatability_deg', 'repeatabilityDeg', 'number'),
   column('mount', 'range_from_deg', 'rangeDeg.from', 'number'),
@@ -83,7 +103,7 @@ export type ReadCell =
   { readonly ok: true; readonly value: CellValue } | { readonly ok: false; readonly fault: string };
 
 /** What a cell says; what is no value of its column is left for the part's schema to refuse. */
-export function readCell({ header, kind }: CsvColumn, cell: string): ReadCell {
+export function readCell({ header, kind, whenEmpty, meaning }: CsvColumn, cell: string): ReadCell {
   if (kind === 'text') {
     if (isFormulaLike(cell)) {
       return {
@@ -97,13 +117,13 @@ export function readCell({ header, kind }: CsvColumn, cell: string): ReadCell {
   const trimmed = cell.trim();
   if (kind === 'list')
     return { ok: true, value: trimmed === '' ? [] : trimmed.split(/\s+/u, openQuestions.length + 1) };
-  if (trimmed === '') return { ok: true, value: null };
+  if (trimmed === '') return { ok: true, value: whenEmpty };
   if (kind === 'word') return { ok: true, value: trimmed };
   const value = readNumberCell(trimmed);
   if (value !== null) return { ok: true, value };
   const shown = trimmed.length > 30 ? `${trimmed.slice(0, 30)}…` : trimmed;
   return {
     ok: false,
-    fault: `${header} says “${shown}”, which is no number. Write digits with a decimal point, and no unit.`,
+    fault: `${header} says “${shown}”, which is no number. ${meaning ?? 'Write digits with a decimal point, and no unit.'}`,
   };
 }

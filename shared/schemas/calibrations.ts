@@ -8,7 +8,8 @@ const temperatureSchema = numberSchema('A temperature', -50, 150, ' °C', '21.5'
 
 /**
  * What a measurement can leave open (optics.md, 6). axis: the zero may be the slow axis's, a quarter turn away. branch:
- * the retardance may be 360° less the one given. blind: near 180° the retardance was not felt to first order.
+ * the retardance may be 360° less the one given. blind: the retardance was not felt to
+ * first order, near 180° between polarisers or near 90° behind circular light.
  */
 export const openQuestions = ['axis', 'branch', 'blind'] as const;
 export const openQuestionSchema = z.enum(openQuestions);

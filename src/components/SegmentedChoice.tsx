@@ -38,22 +38,33 @@ export function SegmentedChoice<Value extends string>({
       aria-describedby={help === undefined ? undefined : helpId}
     >
       <legend className={hideLabel ? 'sr-only' : 'text-s text-ink-2'}>{label}</legend>
-      <div className={classNames('inline-flex border border-ink', !hideLabel && 'mt-1')}>
+      <div
+        className={classNames(
+          'inline-flex border',
+          disabled ? 'border-rule' : 'border-ink',
+          !hideLabel && 'mt-1',
+        )}
+      >
         {segments.map((segment, index) => (
           <label
             key={segment.value}
             className={classNames(
-              'relative flex min-h-9.5 cursor-pointer items-center justify-center px-4 text-center max-sm:min-h-11',
-              index > 0 && 'border-l border-ink',
-              segment.value === value
-                ? 'bg-ink font-strong text-paper dark-room:bg-transparent dark-room:text-act dark-room:outline-2 dark-room:-outline-offset-2 dark-room:outline-act'
-                : 'text-ink hover:bg-wash',
+              'relative flex min-h-9.5 items-center justify-center px-4 text-center max-sm:min-h-11',
+              index > 0 && (disabled ? 'border-l border-rule' : 'border-l border-ink'),
+              !disabled && 'cursor-pointer',
+              disabled
+                ? segment.value === value
+                  ? 'bg-wash font-strong text-ink'
+                  : 'text-ink-2'
+                : segment.value === value
+                  ? 'bg-ink font-strong text-paper dark-room:bg-transparent dark-room:text-act dark-room:outline-2 dark-room:-outline-offset-2 dark-room:outline-act'
+                  : 'text-ink hover:bg-wash',
               'has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-beam',
             )}
           >
             <input
               type="radio"
-              className="absolute inset-0 m-0 cursor-pointer appearance-none outline-none"
+              className="absolute inset-0 m-0 cursor-[inherit] appearance-none outline-none"
               name={name}
               value={segment.value}
               checked={segment.value === value}

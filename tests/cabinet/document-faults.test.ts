@@ -54,6 +54,11 @@ it('a file of these tests is well as it stands', () => {
   expect(lines).toHaveLength(5);
 });
 
+it('a plate without an order is of order zero', () => {
+  const empty = withCells([2, 3, 4].map((row) => [row, 'order_waves', ''] as const));
+  expect(readCabinet(empty, 'csv', NOW)).toEqual(readCabinet(csv(), 'csv', NOW));
+});
+
 describe('a cell at fault is named by row and column', () => {
   it.each([
     ['retardance_deg', 'NaN', 'no number'],
@@ -130,6 +135,7 @@ describe('a cell at fault is named by row and column', () => {
   });
 
   it('where a plate or a mount is described as none is', () => {
+    expectFault(withCell(5, 'direction', 'ccw'), 5, 'direction', 'Write 1 where its numbers rise');
     expectFault(withCell(5, 'direction', '0'), 5, 'direction', 'Write one of these: 1, -1.');
     expectFault(withCell(5, 'range_from_deg', '0'), 5, 'range_to_deg', 'The last reading is a number');
     expectFault(withCell(5, 'drive', 'hands'), 5, 'drive', 'Write one of these: hand, motor.');

@@ -50,3 +50,23 @@ export function misfitSigmas(chiSquared: number, freedom: number): number {
   const spread = 2 / (9 * freedom);
   return (exp(log(chiSquared / freedom) / 3) - 1 + spread) / Math.sqrt(spread);
 }
+
+/**
+ * The length in σ of a two-component amplitude as unlikely as a sum of squares of `count` normal numbers that reaches
+ * `squares`: for an estimated σ Fisher's law with (count, ν) degrees, otherwise χ²'s, whose tails are finite sums for even
+ * counts. An odd count is taken as one more, which errs to the careful side.
+ */
+export function excessSigmas(squares: number, count: number, freedom: ScatterFreedom): number {
+  if (count <= 0 || !(squares > 0)) return 0;
+  const terms = Math.ceil(count / 2);
+  const spread = freedom === null ? 0 : squares / freedom;
+  const step = squares / (1 + spread) / 2;
+  let sum = 0;
+  for (let i = 0, term = 1; i < terms; i += 1) {
+    sum += term;
+    // Of χ² (h)ⁱ/i! with h = χ²/2; of Fisher's (ν/2)(ν/2 + 1)…/i! times the i-th power of what is left of one.
+    term *= (step + (freedom === null ? 0 : (2 * i * step) / freedom)) / (i + 1);
+  }
+  const lost = freedom === null ? squares / 2 : (freedom / 2) * log(1 + spread);
+  return Math.sqrt(Math.max(0, 2 * (lost - log(sum))));
+}

@@ -183,7 +183,7 @@ export function fitLinearScan(scan: LinearScan): LinearScanFit | ScanRefusal {
     suspected: suspectedRows(samples, basis),
     faults,
     warnings: warningsOf(
-      found.scatter === null ? misfitSigmas(chiSquared, degreesOfFreedom) : 0,
+      { kind: 'misfit', sigmas: found.scatter === null ? misfitSigmas(chiSquared, degreesOfFreedom) : 0 },
       faults ?? [],
       retardance?.overFullSigmas ?? 0,
       isTold && scan.leak === null ? parameters.leak : null,

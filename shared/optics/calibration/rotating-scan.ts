@@ -2,7 +2,7 @@ import type { DialDirection } from '../dial';
 import { type Stokes, stokesLength } from '../stokes';
 import { degrees, radians, toDegrees, toRadians, wrap } from '../units';
 import { type CoefficientFit, type CoefficientProblem, parameterCovariance } from './coefficient-fit';
-import { misfitSigmas } from './evidence';
+import { excessSigmas, misfitSigmas, SETTLED_SIGMA } from './evidence';
 import { faultHarmonics } from './fault-harmonics';
 import type { Basis } from './harmonic-basis';
 import { offsetEstimate, onOtherBranch, type PlateFinding } from './linear-reading';
@@ -160,6 +160,8 @@ export function fitRotatingScan(scan: RotatingScan): RotatingScanFit | ScanRefus
   const offsetDeg = { ...parameter(ROTATED_X0), value: wrap(parameter(ROTATED_X0).value, 180) };
   const chiSquared = found.fit.squares + fit.excess;
   const degreesOfFreedom = samples.count + priorSize(prior) - 4;
+  // What no plate explains although the harmonics do: it counts against the stated light, not against the rows.
+  const unlikeSigmas = excessSigmas(fit.excess, problem.model.size - 4, found.freedom);
   const faults = faultHarmonics(samples, basis, [1]);
   const covered = NAMES.flatMap((name, p) => (isFree(p) ? [{ name, p }] : []));
   const readAlone = (row: number) => {
@@ -207,7 +209,9 @@ export function fitRotatingScan(scan: RotatingScan): RotatingScanFit | ScanRefus
     suspected: suspectedRows(samples, basis),
     faults,
     warnings: warningsOf(
-      found.scatter === null ? misfitSigmas(chiSquared, degreesOfFreedom) : 0,
+      unlikeSigmas >= SETTLED_SIGMA
+        ? { kind: 'other-light', sigmas: unlikeSigmas }
+        : { kind: 'misfit', sigmas: found.scatter === null ? misfitSigmas(chiSquared, degreesOfFreedom) : 0 },
       faults ?? [],
       0,
       null,

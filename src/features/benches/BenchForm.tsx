@@ -9,6 +9,7 @@ import {
 } from '../../../shared/schemas/benches';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { Button, ButtonLink } from '../../components/Button';
+import { sayDone } from '../../components/live-region-store';
 import { SelectField } from '../../components/SelectField';
 import { TextField } from '../../components/TextField';
 import {
@@ -69,6 +70,7 @@ export function BenchForm(props: {
   const saving = useMutation({
     mutationFn: ({ body, revision }: { body: CreateBench; revision: number }) => save(body, revision),
     onSuccess: async (saved) => {
+      sayDone(bench === null ? `${saved.name} is added.` : `${saved.name} is saved.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
       onSaved(saved);
     },

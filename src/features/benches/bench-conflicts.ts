@@ -3,9 +3,9 @@ import { NOMINAL_DEG } from '../../../shared/optics/dispersion';
 import { usedRetardance } from '../../../shared/protocol/solving-plates';
 import { type BenchPart, createBenchSchema } from '../../../shared/schemas/benches';
 import type { CabinetPlate, Plate } from '../../../shared/schemas/cabinet';
-import type { OpenQuestion } from '../../../shared/schemas/calibrations';
-import { thinGap } from '../../lib/format';
-import { calibrationAge } from '../cabinet';
+import type { Calibration, OpenQuestion } from '../../../shared/schemas/calibrations';
+import { formatUncertain, thinGap } from '../../lib/format';
+import { blindNearDeg, calibrationAge } from '../cabinet';
 import { elsewhereSentence, usedElsewhere } from './elsewhere-words';
 
 /** What speaks against a plate where it stands. With a fault the server refuses the bench; a warning is for a person to weigh. */
@@ -89,15 +89,17 @@ function waitWords(plate: CabinetPlate, { part }: ConflictPlace, bench: Conflict
   });
 }
 
-const openQuestionWords: Readonly<
-  Record<OpenQuestion, (name: string, calibration: { readonly retardanceDeg: number }) => string>
-> = {
+type Retardance = Pick<Calibration, 'retardanceDeg' | 'retardanceSigmaDeg'>;
+const known = (deg: number, { retardanceSigmaDeg }: Retardance): string =>
+  `${formatUncertain(deg, retardanceSigmaDeg)}°`;
+
+const openQuestionWords: Readonly<Record<OpenQuestion, (name: string, calibration: Retardance) => string>> = {
   axis: (name) =>
     `Which axis of ${name} is the fast one is not settled. If it is the other, its zero is a quarter turn away and circular states come out with the other hand.`,
-  branch: (name, { retardanceDeg }) =>
-    `${name} retards by ${retardanceDeg}° or by ${Number((360 - retardanceDeg).toFixed(4))}°: its calibration could not tell which.`,
-  blind: (name, { retardanceDeg }) =>
-    `${name}’s calibration hardly felt its retardance, so close to 180°: it may be further from ${retardanceDeg}° than its σ says.`,
+  branch: (name, of) =>
+    `${name} retards by ${known(of.retardanceDeg, of)} or by ${known(360 - of.retardanceDeg, of)}: its calibration could not tell which.`,
+  blind: (name, of) =>
+    `${name}’s calibration hardly felt its retardance, so close to ${blindNearDeg(of.retardanceDeg)}°: it may be further from ${known(of.retardanceDeg, of)} than its σ says.`,
 };
 
 function openWords({ name, calibration }: CabinetPlate): readonly string[] {

@@ -1,5 +1,5 @@
 import type { UsedRetardance } from '../../../shared/optics/dispersion';
-import { formatChange, withTrueMinus } from '../../lib/format';
+import { formatChange, formatUncertain, withTrueMinus } from '../../lib/format';
 
 const gap = '\u202f';
 
@@ -54,5 +54,5 @@ export function elsewhereSentence({ name, calibration }: CalibratedPlate, used: 
   if (used.source === 'model') {
     return `${where}. At ${here} it is taken as ${used.retardanceDeg.toFixed(2)}°, ${formatChange(used.shiftDeg, 2)}° by what is published of its material.`;
   }
-  return `${where}, and this bench runs at ${here}. How it follows that is not known, so its ${calibration.retardanceDeg}° are used as measured: calibrate it at ${here}.`;
+  return `${where}, and this bench runs at ${here}. How it follows that is not known, so its ${formatUncertain(calibration.retardanceDeg, calibration.retardanceSigmaDeg)}° are used as measured: calibrate it at ${here}.`;
 }

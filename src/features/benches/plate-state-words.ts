@@ -1,12 +1,17 @@
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import type { OpenQuestion } from '../../../shared/schemas/calibrations';
-import { calibrationAge } from '../cabinet';
+import { blindNearDeg, calibrationAge } from '../cabinet';
 
-const openNames: Readonly<Record<OpenQuestion, string>> = {
-  axis: 'fast or slow axis not settled',
-  branch: 'retardance or 360° less it not settled',
-  blind: 'retardance hardly felt near 180°',
-};
+function openName(question: OpenQuestion, retardanceDeg: number): string {
+  switch (question) {
+    case 'axis':
+      return 'fast or slow axis not settled';
+    case 'branch':
+      return 'retardance or 360° less it not settled';
+    case 'blind':
+      return `retardance hardly felt near ${blindNearDeg(retardanceDeg)}°`;
+  }
+}
 
 /** How far a plate can be trusted, in a few words: "calibration 12 days over", "not seated". */
 export function plateHealthWords(
@@ -17,7 +22,7 @@ export function plateHealthWords(
   if (health === 'not-seated') return 'not seated';
   if (calibration === null) return 'not calibrated in this seat';
   const { words } = calibrationAge(calibration.measuredAt, calibrationDueDays, now);
-  const open = calibration.openQuestions.map((question) => openNames[question]);
+  const open = calibration.openQuestions.map((question) => openName(question, calibration.retardanceDeg));
   return [...open, `calibration ${words}`].join(', ');
 }
 

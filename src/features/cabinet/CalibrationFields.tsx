@@ -69,7 +69,11 @@ export function CalibrationFields({
           label="whether the retardance is the one above or 360° less it"
           {...question('branchOpen')}
         />
-        <CheckField label="the retardance to first order, since it is near 180°" {...question('blind')} />
+        <CheckField
+          label="the retardance to first order"
+          help="Near 180° between polarisers, near 90° behind circular light: there the power hardly follows it."
+          {...question('blind')}
+        />
       </fieldset>
       <TextArea label="note" rows={2} className="sm:col-span-2" {...field('note')} />
     </div>

@@ -2,6 +2,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { type Convention, sameConvention } from '../../../shared/optics';
 import { Button } from '../../components/Button';
+import { sayDone } from '../../components/live-region-store';
 import { SectionHead } from '../../components/SectionHead';
 import { SegmentedChoice } from '../../components/SegmentedChoice';
 import { TextLink } from '../../components/TextLink';
@@ -31,7 +32,10 @@ export function ConventionSection() {
   const [chosen, setChosen] = useState<Convention>(lab.convention);
   const saving = useMutation({
     mutationFn: (convention: Convention) => updateLab(lab.id, { convention }),
-    onSuccess: () => queryClient.invalidateQueries({ queryKey: ['labs', lab.id] }),
+    onSuccess: async () => {
+      sayDone('The convention is saved; drafts and benches are written in it.');
+      await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
+    },
   });
   const changes = may('lab.settings');
   const same = sameConvention(chosen, lab.convention);

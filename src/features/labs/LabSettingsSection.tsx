@@ -3,6 +3,7 @@ import { useForm } from 'react-hook-form';
 import type { z } from 'zod';
 import { updateLabSchema } from '../../../shared/schemas/labs';
 import { Button } from '../../components/Button';
+import { sayDone } from '../../components/live-region-store';
 import { NumberField } from '../../components/NumberField';
 import { SectionHead } from '../../components/SectionHead';
 import { TextField } from '../../components/TextField';
@@ -32,6 +33,7 @@ export function LabSettingsSection() {
   const saving = useMutation({
     mutationFn: (body: Settings) => updateLab(lab.id, body),
     onSuccess: async (saved) => {
+      sayDone('The settings are saved.');
       reset({ name: saved.name, calibrationDueDays: typedFromNumber(saved.calibrationDueDays) });
       await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
       await queryClient.invalidateQueries({ queryKey: ['session'] });

@@ -4,6 +4,7 @@ import { type Role, roles } from '../../../shared/permissions';
 import type { LabMember } from '../../../shared/schemas/labs';
 import { Button } from '../../components/Button';
 import { Dialog } from '../../components/Dialog';
+import { sayDone } from '../../components/live-region-store';
 import { SectionHead } from '../../components/SectionHead';
 import { TextButton } from '../../components/TextLink';
 import { formatDate } from '../../lib/format';
@@ -55,18 +56,21 @@ export function MembersSection() {
   const queryClient = useQueryClient();
   const members = useQuery(membersQuery(lab.id));
   const [leaving, setLeaving] = useState<LabMember | null>(null);
-  const renew = async () => {
+  const nameOf = (userId: string) =>
+    members.data?.items.find((member) => member.userId === userId)?.name ?? 'This member';
+  const renew = async (sentence: string) => {
     setLeaving(null);
+    sayDone(sentence);
     await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
     await queryClient.invalidateQueries({ queryKey: ['session'] });
   };
   const changing = useMutation({
     mutationFn: ({ userId, role }: { userId: string; role: Role }) => changeRole(lab.id, userId, role),
-    onSuccess: renew,
+    onSuccess: (_, { userId, role }) => renew(`${nameOf(userId)} is ${role} now.`),
   });
   const removing = useMutation({
     mutationFn: (userId: string) => removeMember(lab.id, userId),
-    onSuccess: renew,
+    onSuccess: (_, userId) => renew(`${nameOf(userId)} is out of ${lab.name}.`),
   });
   const items = members.data?.items;
   const manages = may('members.manage');

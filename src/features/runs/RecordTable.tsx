@@ -110,7 +110,7 @@ function RecordRow({ content, index, reading, replaced }: RecordRowProps) {
       <td className="py-2 pr-5">
         {made === null ? missingSign : <Made made={made} tolerance={content.toleranceInfidelity} />}
       </td>
-      <td className="max-w-80 py-2 pr-5">
+      <td className="max-w-80 min-w-40 py-2 pr-5 wrap-anywhere">
         {reading === undefined
           ? 'nothing recorded'
           : reading.outcome === 'skipped'

@@ -126,7 +126,10 @@ function Refused({ state }: { readonly state: NewScanState }) {
 }
 
 function waitWords({ light, before }: NewScanState): string {
-  if (light.light === null) return 'Say how the light went: a field is empty or can’t be read.';
+  if (light.light === null) {
+    const [fault] = Object.values(light.faults);
+    return `Say how the light went. ${fault ?? 'The state that comes in can’t be read yet.'}`;
+  }
   if (before.detail.isError || before.bytes.isError)
     return 'The scan that is to be taken together with it did not come. Take this one by itself, or load the page again.';
   return 'Say the wavelength at which it was measured.';
@@ -183,8 +186,10 @@ function RecordPart({ state, plate }: { readonly state: NewScanState; readonly p
       )}
       {scan !== null && reopenedBy(scan, plate.calibration) && (
         <p>
-          What this scan leaves open was settled before: recorded, it is open again. A scan behind known light
-          taken together with it keeps it settled.
+          What this scan leaves open was settled before: recorded, it is open again.{' '}
+          {scan.found.kind === 'known'
+            ? 'Taken together with a scan between polarisers, or with more light, it may keep it settled.'
+            : 'A scan behind known light taken together with it keeps it settled.'}
         </p>
       )}
       <p className="text-s text-ink-2">

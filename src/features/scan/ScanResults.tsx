@@ -4,7 +4,7 @@ import type { Calibration } from '../../../shared/schemas/calibrations';
 import { UnsettledSign } from '../../components/SmallSigns';
 import { formatDate, formatUncertain } from '../../lib/format';
 import type { FittedScan } from './scan-points';
-import { distanceWords, movedWords, openWords, warningWords } from './scan-words';
+import { distanceWords, movedWarning, movedWords, openWords, warningWords } from './scan-words';
 
 interface ScanResultsProps {
   readonly scan: FittedScan;
@@ -20,6 +20,11 @@ export function ScanResults({ scan, plate, before, isRecorded = false }: ScanRes
   const { values, found } = scan;
   const { retardance } = values;
   const distance = distanceWords(scan, plate.material?.replace('-', ' ') ?? 'the model');
+  const moved = isRecorded || before === null ? null : movedWarning(scan, before);
+  const wrong = [
+    ...found.fit.warnings.map((warning) => warningWords(warning, scan)),
+    ...(moved === null ? [] : [moved]),
+  ];
   return (
     <>
       <dl className="border-hair border-t">
@@ -45,12 +50,12 @@ export function ScanResults({ scan, plate, before, isRecorded = false }: ScanRes
           </Fact>
         )}
       </dl>
-      {found.fit.warnings.length > 0 && (
+      {wrong.length > 0 && (
         <section aria-label="What looks wrong" className="mt-5">
           <h3 className="text-section">What looks wrong</h3>
           <ul className="mt-1 space-y-2">
-            {found.fit.warnings.map((warning, place) => (
-              <li key={`${warning.kind} ${place}`}>{warningWords(warning, scan)}</li>
+            {wrong.map((sentence) => (
+              <li key={sentence}>{sentence}</li>
             ))}
           </ul>
         </section>

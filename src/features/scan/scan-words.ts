@@ -1,4 +1,9 @@
-import type { FaultHarmonic, OpenQuestion, ScanWarning } from '../../../shared/optics/calibration';
+import {
+  type FaultHarmonic,
+  type OpenQuestion,
+  type ScanWarning,
+  SETTLED_SIGMA,
+} from '../../../shared/optics/calibration';
 import { wrapSigned } from '../../../shared/optics/units';
 import type { Calibration } from '../../../shared/schemas/calibrations';
 import { unitLabel } from '../../../shared/scan-file';
@@ -139,6 +144,8 @@ export function warningWords(warning: ScanWarning, { found: { fit } }: FittedSca
   switch (warning.kind) {
     case 'misfit':
       return `The points scatter more than their σ allow: χ² ${fit.chiSquared.toFixed(1)} for ${fit.degreesOfFreedom}, ${far} too much. The σ are too small, or the power follows the plate in another way than a retarder’s.`;
+    case 'other-light':
+      return `No plate makes these powers of the light that is stated: what is left over is ${far} beyond chance, so the zero and the retardance mean nothing yet. Look whether the state, the analyser’s angle, its extinction and the scan that is taken together with it are what stood there.`;
     case 'fault-harmonic':
       return harmonicWords(warning.harmonic, far);
     case 'over-full':
@@ -157,12 +164,27 @@ function harmonicWords({ hint, perTurn }: FaultHarmonic, far: string): string {
   return `The power also changes ${turn} a turn, by ${far}, which no retarder does. ${look}`;
 }
 
+/** What a zero that moved within one seat says; null where it moved no more than chance and the two scans allow. */
+export function movedWarning({ values }: FittedScan, before: Calibration): string | null {
+  const { zero, sigma } = zeroMoved(values, before);
+  const sigmas = Math.abs(zero) / sigma;
+  if (!(sigmas >= SETTLED_SIGMA)) return null;
+  return `The zero moved by ${formatAngle(Math.abs(zero), 2)}, ${sigmaWords(sigmas)}, and a plate that stays in its seat keeps its zero. Look whether it was turned or taken out in between (then seat it anew first), and whether the file is this plate’s.`;
+}
+
+function zeroMoved(values: FittedScan['values'], before: Calibration) {
+  const isQuarter = values.openQuestions.includes('axis') || before.openQuestions.includes('axis');
+  return {
+    isQuarter,
+    zero: wrapSigned(values.offsetDeg - before.offsetDeg, isQuarter ? 90 : 180),
+    sigma: Math.hypot(values.offsetSigmaDeg, before.offsetSigmaDeg),
+  };
+}
+
 /** "zero moved by 0.05(11)°, retardance by −0.3(5)°" since the calibration that stands in this seat. */
 export function movedWords({ values }: FittedScan, before: Calibration): string {
-  const isQuarter = values.openQuestions.includes('axis') || before.openQuestions.includes('axis');
-  const zero = wrapSigned(values.offsetDeg - before.offsetDeg, isQuarter ? 90 : 180);
-  const zeroSigma = Math.hypot(values.offsetSigmaDeg, before.offsetSigmaDeg);
-  const moved = `zero moved by ${angle(zero, zeroSigma)}${isQuarter ? ', if the same axis is meant' : ''}`;
+  const { isQuarter, zero, sigma } = zeroMoved(values, before);
+  const moved = `zero moved by ${angle(zero, sigma)}${isQuarter ? ', if the same axis is meant' : ''}`;
   const { retardance } = values;
   if (retardance === null) return moved;
   const isBranch = values.openQuestions.includes('branch') || before.openQuestions.includes('branch');

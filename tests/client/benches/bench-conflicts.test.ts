@@ -46,10 +46,15 @@ describe('what speaks against a plate at its place', () => {
     });
     expect(said(open)).toEqual([
       expect.stringMatching(/^warning: Which axis of Q-1 is the fast one is not settled\. .*other hand\.$/),
-      'warning: Q-1 retards by 88.9° or by 271.1°: its calibration could not tell which.',
+      'warning: Q-1 retards by 88.9(3)° or by 271.1(3)°: its calibration could not tell which.',
     ]);
     const blind = cabinetPlate(1, 'H-1', { calibration: calibration({ openQuestions: ['blind'] }) });
-    expect(said(blind)).toEqual([expect.stringContaining('hardly felt its retardance')]);
+    expect(said(blind)).toEqual([expect.stringContaining('hardly felt its retardance, so close to 180°')]);
+    const circular = cabinetPlate(1, 'Q-1', {
+      kind: 'quarter',
+      calibration: calibration({ retardanceDeg: 88.9942809823223, openQuestions: ['blind'] }),
+    });
+    expect(said(circular)[0]).toMatch(/so close to 90°: it may be further from 89.0\(3\)° than/);
   });
 
   it('warns of a calibration past its due date by the lab’s own rule', () => {
@@ -65,7 +70,7 @@ describe('what speaks against a plate at its place', () => {
     );
     const unknown = cabinetPlate(1, 'H-1', { construction: 'unknown', material: null });
     expect(said(unknown, { wavelengthNm: 805 })).toEqual([
-      'warning: H-1 was calibrated at 810\u202fnm, and this bench runs at 805\u202fnm. How it follows that is not known, so its 179.2° are used as measured: calibrate it at 805\u202fnm.',
+      'warning: H-1 was calibrated at 810\u202fnm, and this bench runs at 805\u202fnm. How it follows that is not known, so its 179.2(3)° are used as measured: calibrate it at 805\u202fnm.',
     ]);
   });
 

@@ -37,6 +37,19 @@ describe('an open question', () => {
     expect(within(branch).getByRole('link', { name: 'record which of the two it is' })).toBeDefined();
   });
 
+  it.each([
+    [178.6, 'Near 180° the retardance is hardly felt', 'Scan behind circular light', '?light=known'],
+    [88.9, 'Near 90° the retardance is hardly felt', 'Scan between polarisers', ''],
+  ])('of a retardance of %s that was hardly felt leads to the light that feels it', async (...row) => {
+    const [retardanceDeg, head, way, search] = row;
+    const blind = plateFixture({ calibration: { openQuestions: ['blind'], retardanceDeg } });
+    serve({ plates: [blind], detail: detailFixture(blind) });
+    open('operator', `/${blind.id}`);
+    const question = await screen.findByRole('region', { name: head });
+    const link = within(question).getByRole('link', { name: way });
+    expect(link.getAttribute('href')).toMatch(new RegExp(`/scan${search.replace('?', '\\?')}$`));
+  });
+
   it('is settled by a person who says which reading it is and how that is known', async () => {
     const { calls } = serve({ plates: [asked], detail: detailFixture(asked) });
     const press = open('operator', `/${asked.id}?do=settle-axis`);

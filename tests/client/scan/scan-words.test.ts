@@ -9,7 +9,13 @@ import {
 import { reopenedBy, settledBy } from '../../../src/features/scan/record-rules';
 import { engraved, scanFrame } from '../../../src/features/scan/scan-frame';
 import { type FittedScan, plottedPoints, zeroMarks } from '../../../src/features/scan/scan-points';
-import { distanceWords, movedWords, openWords, warningWords } from '../../../src/features/scan/scan-words';
+import {
+  distanceWords,
+  movedWarning,
+  movedWords,
+  openWords,
+  warningWords,
+} from '../../../src/features/scan/scan-words';
 import { linearScanText, type WrittenScan } from '../../support/scan-text';
 import { plateFixture } from '../cabinet/plate-fixture';
 
@@ -89,6 +95,15 @@ describe('what is said', () => {
     },
   );
 
+  it('warns of a zero that moved in one seat, by no more than the two scans are known to', () => {
+    expect(movedWarning(plain, standing(31.7 + 20))).toMatch(
+      /^The zero moved by (19\.\d|20\.\d)\d°, \d+(\.\d)?σ, and a plate that stays in its seat keeps its zero\./u,
+    );
+    expect(movedWarning(plain, standing(31.7))).toBe(null);
+    // A quarter turn on is the other axis, as long as nobody knows which is which.
+    expect(movedWarning(plain, standing(31.7 + 90, ['axis']))).toBe(null);
+  });
+
   it('says of each open question what it is and what settles it', () => {
     const blind = fitted(
       { truth: { retardanceDeg: 179.6 }, seed: 3 },
@@ -109,9 +124,10 @@ describe('what is said', () => {
   });
 
   it('says each warning in a plain sentence', () => {
-    const say = (kind: 'misfit' | 'over-full' | 'negative-leak') =>
+    const say = (kind: 'misfit' | 'other-light' | 'over-full' | 'negative-leak') =>
       warningWords({ kind, sigmas: 6.2 }, plain);
     expect(say('misfit')).toContain('6.2σ too much');
+    expect(say('other-light')).toContain('No plate makes these powers of the light that is stated');
     expect(say('over-full')).toContain('ports are swapped');
     expect(say('negative-leak')).toContain('dark level');
     const harmonic = { perTurn: 1, hint: 'wedge-or-decentre', amplitude: 0.01, sigmas: 12 } as const;

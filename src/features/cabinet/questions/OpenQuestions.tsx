@@ -3,6 +3,7 @@ import type { Calibration, OpenQuestion } from '../../../../shared/schemas/calib
 import { ButtonLink } from '../../../components/Button';
 import { UnsettledSign } from '../../../components/SmallSigns';
 import { TextLink } from '../../../components/TextLink';
+import { feelingScan } from './blind-near';
 import { openQuestionWords } from './question-words';
 
 /** What a plate's calibration could not tell, one question under the other, each with the ways to settle it. */
@@ -33,7 +34,14 @@ export function OpenQuestions(props: {
             <p className="mt-1">{meaning}</p>
           </div>
         </div>
-        {measures && <Ways question={question} page={page} first={index === 0} />}
+        {measures && (
+          <Ways
+            question={question}
+            retardanceDeg={calibration.retardanceDeg}
+            page={page}
+            first={index === 0}
+          />
+        )}
       </section>
     );
   });
@@ -45,14 +53,23 @@ const byHand: Readonly<Record<OpenQuestion, { readonly task: string; readonly wo
   blind: { task: 'calibrate', words: 'record a value measured another way' },
 };
 
-function Ways(props: { readonly question: OpenQuestion; readonly page: string; readonly first: boolean }) {
-  const { question, page, first } = props;
+function Ways(props: {
+  readonly question: OpenQuestion;
+  readonly retardanceDeg: number;
+  readonly page: string;
+  readonly first: boolean;
+}) {
+  const { question, retardanceDeg, page, first } = props;
   const { task, words } = byHand[question];
+  const isLinear = question === 'blind' && feelingScan(retardanceDeg) === 'between-polarisers';
   return (
     <>
       <p className="mt-4">
-        <ButtonLink kind={first ? 'filled' : 'outlined'} to={`${page}/scan?light=known`}>
-          Scan behind circular light
+        <ButtonLink
+          kind={first ? 'filled' : 'outlined'}
+          to={isLinear ? `${page}/scan` : `${page}/scan?light=known`}
+        >
+          {isLinear ? 'Scan between polarisers' : 'Scan behind circular light'}
         </ButtonLink>
       </p>
       <p className="text-ink-2 mt-4">

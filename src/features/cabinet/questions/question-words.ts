@@ -1,6 +1,7 @@
 import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import type { Calibration, OpenQuestion } from '../../../../shared/schemas/calibrations';
 import { formatUncertain } from '../../../lib/format';
+import { blindNearDeg } from './blind-near';
 import { twoReadings } from './settle';
 
 /** One open question of a plate: what it is, and what it would do. */
@@ -41,8 +42,8 @@ export function openQuestionWords(
       };
     case 'blind':
       return {
-        head: `Near 180° the retardance is hardly felt`,
-        meaning: `The power changes with the square of what is missing to 180°, so ${angle(retardanceDeg, retardanceSigmaDeg)} may be off by more than its σ says, to either side.`,
+        head: `Near ${blindNearDeg(retardanceDeg)}° the retardance is hardly felt`,
+        meaning: `The power changes with the square of what is missing to ${blindNearDeg(retardanceDeg)}°, so ${angle(retardanceDeg, retardanceSigmaDeg)} may be off by more than its σ says, to either side.`,
       };
   }
 }
