@@ -42,9 +42,12 @@ export async function up(knex: Knex): Promise<void> {
   );
   await knex.raw('CREATE INDEX plates_by_name ON plates (lab_id, (name COLLATE by_number), id)');
   await knex.raw(
-    `CREATE INDEX plates_by_age ON plates (lab_id, (coalesce(calibrated_at, '-infinity'::timestamptz)), id)`,
+    `CREATE INDEX plates_by_age ON plates
+      (lab_id, (coalesce(calibrated_at, '-infinity'::timestamptz)), (name COLLATE by_number), id)`,
   );
-  await knex.raw('CREATE INDEX plates_by_wavelength ON plates (lab_id, design_wavelength_nm, id)');
+  await knex.raw(
+    'CREATE INDEX plates_by_wavelength ON plates (lab_id, design_wavelength_nm, (name COLLATE by_number), id)',
+  );
   await keepInLab(knex, 'plates', ['SELECT', 'INSERT', 'UPDATE']);
 
   await knex.raw(`CREATE TABLE mounts (

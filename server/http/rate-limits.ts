@@ -24,13 +24,13 @@ async function spend(limiter: RateLimiterPostgres, key: string, points: number):
     await limiter.consume(key, points);
   } catch (error) {
     if (!(error instanceof RateLimiterRes)) throw error;
+    const seconds = Math.max(1, Math.ceil(error.msBeforeNext / 1000));
+    const wait = seconds === 1 ? 'a second' : `${seconds} seconds`;
     throw new ProblemError(
       'too-many-requests',
       429,
-      'Too many requests in one minute. Wait a little, then go on.',
-      {
-        headers: { 'Retry-After': String(Math.max(1, Math.ceil(error.msBeforeNext / 1000))) },
-      },
+      `Too many requests in one minute. Nothing was changed; go on in ${wait}.`,
+      { headers: { 'Retry-After': String(seconds) } },
     );
   }
 }

@@ -74,7 +74,9 @@ function readJson(text: string, now: Date, faults: FaultList): CabinetDocument |
     );
   }
   const report = (path: readonly (string | number)[], message: string): boolean => {
-    faults.add({ row: null, column: path.join('.').slice(0, 120), message });
+    const name = nameAt(raw, path);
+    const named = name === null || message.includes(name) ? message : `${name}: ${message}`;
+    faults.add({ row: null, column: path.join('.').slice(0, 120), message: named });
     return !faults.isFull();
   };
   const document = readParts({ mounts: raw['mounts'], plates: raw['plates'] }, report);
@@ -85,6 +87,17 @@ function readJson(text: string, now: Date, faults: FaultList): CabinetDocument |
 /** JSON can write −0, which no other format keeps apart from 0. */
 function oneZero(_key: string, value: unknown): unknown {
   return value === 0 ? 0 : value;
+}
+
+/** Of the plate or mount that a path is in, for who can't count to it; null where it has none that could be meant. */
+function nameAt(
+  raw: Readonly<Record<string, unknown>>,
+  [list, place, field]: readonly (string | number)[],
+): string | null {
+  if (typeof list !== 'string' || typeof place !== 'number' || field === 'name') return null;
+  const part = listOf(raw[list])[place];
+  const name = isRecord(part) ? part['name'] : null;
+  return typeof name === 'string' && name.trim() !== '' ? name.slice(0, 20) : null;
 }
 
 const listOf = (value: unknown): readonly unknown[] => (Array.isArray(value) ? value : []);

@@ -58,11 +58,12 @@ export const seatSchema = z.strictObject({
 export type Seat = z.infer<typeof seatSchema>;
 
 export const mountStates = ['holding', 'empty', 'retired'] as const;
+export const mountSorts = ['name', 'plate', 'step', 'repeatability'] as const;
 export const mountQuerySchema = pageQuerySchema.extend({
   search: z.string().trim().max(60).default(''),
   state: z.enum([...mountStates, 'in-use']).default('in-use'),
   drive: driveSchema.optional(),
-  sort: z.enum(['name', 'repeatability']).default('name'),
+  sort: z.enum(mountSorts).default('name'),
   order: z.enum(['asc', 'desc']).default('asc'),
 });
 export type MountQuery = z.infer<typeof mountQuerySchema>;

@@ -56,6 +56,13 @@ export function CompactSideArm({ current, targets, person, actions, signInHref }
           )}
         >
           {here?.shortName ?? 'more'}
+          <span
+            aria-hidden="true"
+            className={classNames(
+              'ml-1 inline-block border-x-[3.5px] border-t-[4.5px] border-x-transparent border-t-current align-middle',
+              open && 'rotate-180',
+            )}
+          />
         </span>
       </button>
       <div

@@ -158,6 +158,19 @@ describe('lists', () => {
     }
   });
 
+  test('stand by their names where what they are sorted by is the same', async () => {
+    const { items } = await page('sort=wavelength&limit=200');
+    const byNumber = new Intl.Collator('en', { numeric: true });
+    const inOrder = items.toSorted(
+      (one, other) =>
+        one.designWavelengthNm - other.designWavelengthNm || byNumber.compare(one.name, other.name),
+    );
+    expect(items.map(({ name }) => name)).toEqual(inOrder.map(({ name }) => name));
+    expect(new Set(items.map(({ designWavelengthNm }) => designWavelengthNm)).size).toBeLessThan(
+      items.length,
+    );
+  });
+
   test('find by name, serial and mount, taking every character as it is', async () => {
     const names = async (search: string) =>
       (await page(`search=${encodeURIComponent(search)}`)).items.map(({ name }) => name);
@@ -214,6 +227,25 @@ describe('lists', () => {
       expect(response.status, query).toBe(400);
     }
   });
+
+  test.each(['name', 'plate', 'step', 'repeatability'] as const)(
+    'of mounts, sorted by %s, go on page by page and back from the other end',
+    async (sort) => {
+      const mounts = (query: string) =>
+        answered(
+          call(harness, lead, 'get', `/labs/${many.labId}/mounts?sort=${sort}&${query}`),
+          mountPageSchema,
+        );
+      const { items } = await mounts('limit=200');
+      const names = items.map(({ name }) => name);
+      const first = await mounts('limit=3');
+      const second = await mounts(`limit=200&cursor=${first.nextCursor ?? ''}`);
+      expect([...first.items, ...second.items].map(({ name }) => name)).toEqual(names);
+      const back = await mounts('limit=200&order=desc');
+      expect(back.items.map(({ name }) => name)).toEqual(names.toReversed());
+      expect(names.length).toBeGreaterThan(5);
+    },
+  );
 
   test('of mounts say what sits where, and where it sat before', async () => {
     const list = await answered(

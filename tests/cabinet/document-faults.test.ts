@@ -255,6 +255,8 @@ describe('a file that is no cabinet is refused with its row and reason', () => {
       row: null,
       column: 'plates.0.seats.0.calibrations.0.retardanceDeg',
     });
+    const ofSeat = faultsOf(json.replace('"leftWhy":"Cleaned."', '"leftWhy":7'), 'json');
+    expect(ofSeat.map(({ message }) => message.slice(0, 5))).toEqual(['H-1: ']);
     expect(faultsOf(json.replace('"serial"', '"ID"'), 'json').map(({ column }) => column)).toEqual([
       'plates.0.serial',
       'plates.0.ID',

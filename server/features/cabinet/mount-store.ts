@@ -4,8 +4,7 @@ import type { CabinetMount, MountQuery, WriteMount } from '../../../shared/schem
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { rowsOf } from '../../db/rows';
-import { readCursor } from '../../http/cursor';
-import { jsonCursor, writeCursor } from '../../http/json-cursor';
+import { nameKey, sortedPage, type SortKey } from '../../http/sorted-page';
 import { mapMountColumns, mountColumnsRow } from './plate-rows';
 
 const mountRow = mountColumnsRow.extend({
@@ -60,48 +59,39 @@ const states = {
   retired: 'm.retired_at is not null',
 } as const;
 
-const sorts = {
-  name: {
-    by: 'm.name collate by_number',
-    type: 'text',
-    collated: ' collate by_number',
-    of: (mount: StoredMount) => mount.name,
-  },
-  repeatability: {
-    by: 'm.repeatability_deg',
-    type: 'double precision',
-    collated: '',
-    of: (mount: StoredMount) => mount.repeatabilityDeg,
-  },
-} as const;
-
-const cursorSchemas = { name: jsonCursor(z.string().max(100)), repeatability: jsonCursor(z.number()) };
+const byName = nameKey<StoredMount>('m.name');
+const numberKey = (column: string, of: (mount: StoredMount) => number): SortKey<StoredMount> => ({
+  by: column,
+  read: 'cast(? as double precision)',
+  value: z.number(),
+  of,
+});
+/** What a list is sorted by; names decide between equals. By what it holds: the empty ones first. */
+const sorts: Readonly<Record<MountQuery['sort'], readonly SortKey<StoredMount>[]>> = {
+  name: [byName],
+  plate: [{ ...nameKey(`coalesce(p.name, '')`), of: ({ plate }) => plate?.name ?? '' }, byName],
+  step: [numberKey('m.resolution_deg', ({ resolutionDeg }) => resolutionDeg), byName],
+  repeatability: [numberKey('m.repeatability_deg', ({ repeatabilityDeg }) => repeatabilityDeg), byName],
+};
 
 export async function listMountPage(
   transaction: Transaction,
   labId: string,
   query: MountQuery,
 ): Promise<{ readonly items: StoredMount[]; readonly nextCursor: string | null }> {
-  const sort = sorts[query.sort];
-  const after = readCursor(cursorSchemas[query.sort], query.cursor);
+  const { orderBy, condition, values, cursorAfter } = sortedPage({ sorts, idBy: 'm.id' }, query);
   const conditions: string[] = [states[query.state]];
   if (query.drive !== undefined) conditions.push('m.drive = :drive');
   if (query.search !== '')
     conditions.push('(m.name ilike :like or m.note ilike :like or p.name ilike :like)');
-  if (after !== null) {
-    const side = query.order === 'asc' ? '>' : '<';
-    conditions.push(
-      `(${sort.by}, m.id) ${side} (cast(:after as ${sort.type})${sort.collated}, cast(:afterId as uuid))`,
-    );
-  }
+  if (condition !== null) conditions.push(condition);
   const found: unknown = await transaction.raw(
-    `${mountQuery} and ${conditions.join(' and ')} order by ${sort.by} ${query.order}, m.id ${query.order} limit :limit`,
+    `${mountQuery} and ${conditions.join(' and ')} ${orderBy} limit :limit`,
     {
       labId,
       drive: query.drive ?? null,
       like: `%${query.search.replaceAll(/[\\%_]/g, '\\$&')}%`,
-      after: after?.value ?? null,
-      afterId: after?.id ?? null,
+      ...values,
       limit: query.limit + 1,
     },
   );
@@ -109,7 +99,7 @@ export async function listMountPage(
   const items = mounts.slice(0, query.limit);
   const last = items.at(-1);
   const more = mounts.length > query.limit && last !== undefined;
-  return { items, nextCursor: more ? writeCursor({ value: sort.of(last), id: last.id }) : null };
+  return { items, nextCursor: more ? cursorAfter(last) : null };
 }
 
 export async function findMount(

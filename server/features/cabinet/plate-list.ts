@@ -11,38 +11,33 @@ import {
 } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { rowsOf } from '../../db/rows';
-import { readCursor } from '../../http/cursor';
-import { jsonCursor, writeCursor } from '../../http/json-cursor';
+import { nameKey, sortedPage, type SortKey } from '../../http/sorted-page';
 import { healthWhere } from './health-where';
 import { mapPlate, type StoredPlate } from './plate-rows';
 import { plateQuery } from './plate-store';
 
-/** What a list is sorted by, as SQL and as a cursor keeps it; the plate's id decides between equals. */
-const sorts = {
-  name: {
-    by: 'p.name collate by_number',
-    type: 'text',
-    collated: ' collate by_number',
-    of: (plate: StoredPlate) => plate.name,
-  },
-  age: {
-    by: `coalesce(p.calibrated_at, '-infinity'::timestamptz)`,
-    type: 'timestamptz',
-    collated: '',
-    of: (plate: StoredPlate) => plate.calibration?.measuredAt ?? '-infinity',
-  },
-  wavelength: {
-    by: 'p.design_wavelength_nm',
-    type: 'double precision',
-    collated: '',
-    of: (plate: StoredPlate) => plate.designWavelengthNm,
-  },
-} as const;
-
-const cursorSchemas = {
-  name: jsonCursor(z.string().max(100)),
-  age: jsonCursor(z.union([z.literal('-infinity'), z.iso.datetime()])),
-  wavelength: jsonCursor(z.number()),
+const byName = nameKey<StoredPlate>('p.name');
+/** What a list is sorted by, indexed so; names decide between equals. */
+const sorts: Readonly<Record<PlateQuery['sort'], readonly SortKey<StoredPlate>[]>> = {
+  name: [byName],
+  age: [
+    {
+      by: `coalesce(p.calibrated_at, '-infinity'::timestamptz)`,
+      read: 'cast(? as timestamptz)',
+      value: z.union([z.literal('-infinity'), z.iso.datetime()]),
+      of: ({ calibration }) => calibration?.measuredAt ?? '-infinity',
+    },
+    byName,
+  ],
+  wavelength: [
+    {
+      by: 'p.design_wavelength_nm',
+      read: 'cast(? as double precision)',
+      value: z.number(),
+      of: ({ designWavelengthNm }) => designWavelengthNm,
+    },
+    byName,
+  ],
 };
 
 /** Of the plate itself, or the name of the mount that it sits in; every character as it is. */
@@ -62,39 +57,31 @@ export async function listPlatePage(
   { labId, dueDays, now }: ListFacts,
   query: PlateQuery,
 ): Promise<{ readonly items: StoredPlate[]; readonly nextCursor: string | null }> {
-  const sort = sorts[query.sort];
-  const after = readCursor(cursorSchemas[query.sort], query.cursor);
+  const { orderBy, condition, values, cursorAfter } = sortedPage({ sorts, idBy: 'p.id' }, query);
   const conditions: string[] = [healthWhere[query.health]];
   if (query.kind !== undefined) conditions.push('p.kind = :kind');
   if (query.search !== '') {
     conditions.push(searchWhere);
   }
-  if (after !== null) {
-    const side = query.order === 'asc' ? '>' : '<';
-    conditions.push(
-      `(${sort.by}, p.id) ${side} (cast(:after as ${sort.type})${sort.collated}, cast(:afterId as uuid))`,
-    );
-  }
-  const order = `order by ${sort.by} ${query.order}, p.id ${query.order}`;
+  if (condition !== null) conditions.push(condition);
   // Which plates first, and then what is shown of those few: of thousands nothing is looked up that no one sees.
   const sql = `with page as (
-      select p.id from plates p where p.lab_id = :labId and ${conditions.join(' and ')} ${order} limit :limit
-    ) ${plateQuery.replace('?', ':labId')} and p.id in (select id from page) ${order}`;
+      select p.id from plates p where p.lab_id = :labId and ${conditions.join(' and ')} ${orderBy} limit :limit
+    ) ${plateQuery.replace('?', ':labId')} and p.id in (select id from page) ${orderBy}`;
   const found: unknown = await transaction.raw(sql, {
     labId,
     now,
     dueDays,
     kind: query.kind ?? null,
     search: query.search,
-    after: after?.value ?? null,
-    afterId: after?.id ?? null,
+    ...values,
     limit: query.limit + 1,
   });
   const plates = rowsOf(found).map(mapPlate);
   const items = plates.slice(0, query.limit);
   const last = items.at(-1);
   const more = plates.length > query.limit && last !== undefined;
-  return { items, nextCursor: more ? writeCursor({ value: sort.of(last), id: last.id }) : null };
+  return { items, nextCursor: more ? cursorAfter(last) : null };
 }
 
 const countsRow = z.object({

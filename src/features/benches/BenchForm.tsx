@@ -1,5 +1,5 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import { type FieldErrors, useController, useForm, useWatch } from 'react-hook-form';
 import {
   type Bench,
@@ -16,6 +16,7 @@ import {
   conflictingState,
   EditConflict,
   FormProblem,
+  LeaveForm,
   readOptionalNumber,
   readTypedNumber,
   schemaResolver,
@@ -52,6 +53,7 @@ export function BenchForm(props: {
   const { bench, plates, save, onSaved } = props;
   const { lab } = useLab();
   const queryClient = useQueryClient();
+  const isDone = useRef(false);
   const [now] = useState(() => new Date());
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [base, setBase] = useState(bench);
@@ -70,6 +72,7 @@ export function BenchForm(props: {
   const saving = useMutation({
     mutationFn: ({ body, revision }: { body: CreateBench; revision: number }) => save(body, revision),
     onSuccess: async (saved) => {
+      isDone.current = true;
       sayDone(bench === null ? `${saved.name} is added.` : `${saved.name} is saved.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
       onSaved(saved);
@@ -162,10 +165,13 @@ export function BenchForm(props: {
             <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
               {bench === null ? 'Add the bench' : 'Save the bench'}
             </Button>
-            <ButtonLink to={`/labs/${lab.id}/bench`}>Leave it as it was</ButtonLink>
+            <ButtonLink to={`/labs/${lab.id}/bench`} onClick={() => (isDone.current = true)}>
+              Leave it as it was
+            </ButtonLink>
           </div>
         )}
       </div>
+      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the bench" />
     </form>
   );
 }

@@ -1,11 +1,11 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { type CalibrationInput, calibrationInputSchema } from '../../../shared/schemas/calibrations';
 import { Button } from '../../components/Button';
 import { sayDone } from '../../components/live-region-store';
-import { FormProblem, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
+import { FormProblem, LeaveForm, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
 import { calibrationDoubts } from './calibration-doubts';
 import { CalibrationFields } from './CalibrationFields';
 import {
@@ -27,6 +27,7 @@ export function CalibrationForm(props: {
   const { labId, plate, onDone } = props;
   const [opened] = useState(() => new Date());
   const queryClient = useQueryClient();
+  const isDone = useRef(false);
   const keyFor = useIdempotencyKey();
   const standing = plate.calibration;
   const { register, control, formState, handleSubmit, setError } = useForm<
@@ -50,6 +51,7 @@ export function CalibrationForm(props: {
   const recording = useMutation({
     mutationFn: (body: CalibrationInput) => recordCalibration(labId, plate.id, body, keyFor(body)),
     onSuccess: async () => {
+      isDone.current = true;
       sayDone(`The calibration of ${plate.name} is recorded.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
@@ -93,8 +95,16 @@ export function CalibrationForm(props: {
         <Button kind="filled" type="submit" waitsFor={recording.isPending ? 'the server' : undefined}>
           Record the calibration
         </Button>
-        <Button onClick={onDone}>Leave it as it was</Button>
+        <Button
+          onClick={() => {
+            isDone.current = true;
+            onDone();
+          }}
+        >
+          Leave it as it was
+        </Button>
       </div>
+      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the calibration" />
     </form>
   );
 }

@@ -1,5 +1,5 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { type CabinetPlate, type UpdatePlate, updatePlateSchema } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
@@ -7,6 +7,7 @@ import {
   conflictingState,
   EditConflict,
   FormProblem,
+  LeaveForm,
   schemaResolver,
   showServerFaults,
 } from '../../lib/forms';
@@ -23,6 +24,7 @@ export function EditPlateForm(props: {
 }) {
   const { labId, plate, onDone } = props;
   const queryClient = useQueryClient();
+  const isDone = useRef(false);
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [baseRevision, setBaseRevision] = useState(plate.revision);
   const { register, control, formState, handleSubmit, setError, getValues, reset } = useForm<
@@ -39,6 +41,7 @@ export function EditPlateForm(props: {
     mutationFn: ({ body, revision }: { body: UpdatePlate; revision: number }) =>
       updatePlate(labId, plate.id, body, revision),
     onSuccess: async () => {
+      isDone.current = true;
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
     },
@@ -75,9 +78,17 @@ export function EditPlateForm(props: {
           <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
             Save {plate.name}
           </Button>
-          <Button onClick={onDone}>Leave it as it was</Button>
+          <Button
+            onClick={() => {
+              isDone.current = true;
+              onDone();
+            }}
+          >
+            Leave it as it was
+          </Button>
         </div>
       )}
+      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what={plate.name} />
     </form>
   );
 }

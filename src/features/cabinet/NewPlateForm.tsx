@@ -1,10 +1,12 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useRef } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { type CabinetPlate, type CreatePlate, createPlateSchema } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
 import { sayDone } from '../../components/live-region-store';
 import {
   FormProblem,
+  LeaveForm,
   isoFromOptionalField,
   schemaResolver,
   showServerFaults,
@@ -34,6 +36,7 @@ export function NewPlateForm(props: {
 }) {
   const { labId, now, onCreated, onLeave } = props;
   const queryClient = useQueryClient();
+  const isDone = useRef(false);
   const keyFor = useIdempotencyKey();
   const form = useForm<NewPlateValues, unknown, CreatePlate>({
     defaultValues: emptyNewPlate(now),
@@ -48,6 +51,7 @@ export function NewPlateForm(props: {
   const creating = useMutation({
     mutationFn: (body: CreatePlate) => createPlate(labId, body, keyFor(body)),
     onSuccess: async (plate) => {
+      isDone.current = true;
       sayDone(`${plate.name} is in the cabinet.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onCreated(plate);
@@ -78,9 +82,17 @@ export function NewPlateForm(props: {
           <Button kind="filled" type="submit" waitsFor={creating.isPending ? 'the server' : undefined}>
             Add the plate
           </Button>
-          <Button onClick={onLeave}>Leave it as it was</Button>
+          <Button
+            onClick={() => {
+              isDone.current = true;
+              onLeave();
+            }}
+          >
+            Leave it as it was
+          </Button>
         </div>
       </div>
+      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the new plate" />
     </form>
   );
 }

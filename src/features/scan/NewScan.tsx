@@ -3,9 +3,9 @@ import { NumberField } from '../../components/NumberField';
 import { SectionHead } from '../../components/SectionHead';
 import { TextArea } from '../../components/TextArea';
 import { TextButton } from '../../components/TextLink';
+import { LeaveUnsaved } from '../../components/LeaveUnsaved';
 import { TextField } from '../../components/TextField';
 import { FilePreview } from './FilePreview';
-import { LeaveScanDialog } from './LeaveScanDialog';
 import { LightFields } from './LightFields';
 import { ScanFilePart } from './ScanFilePart';
 import { ScanOutcome } from './ScanOutcome';
@@ -54,7 +54,17 @@ export function NewScan(props: NewScanProps) {
         <SectionHead className="mb-3">What it tells of {plate.name}</SectionHead>
         <ScanOutcome state={state} plate={plate} />
       </section>
-      <LeaveScanDialog isOpen={state.file !== null} isDone={state.isDone} />
+      <LeaveUnsaved
+        isUnsaved={state.file !== null}
+        isDone={state.isDone}
+        question="Leave the scan unrecorded?"
+        stay="Stay with the scan"
+        leave="Leave it unrecorded"
+      >
+        <p>
+          The file, the columns and the lines left out are on this page only. The plate keeps what it had.
+        </p>
+      </LeaveUnsaved>
     </div>
   );
 }

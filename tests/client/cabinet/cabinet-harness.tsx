@@ -1,7 +1,7 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { configure, render, screen } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
-import { MemoryRouter, Route, Routes, useLocation } from 'react-router-dom';
+import { createMemoryRouter, Outlet, RouterProvider, useLocation } from 'react-router-dom';
 import { vi } from 'vitest';
 import type { Role } from '../../../shared/permissions';
 import type { CabinetCounts, CabinetPlate, PlateDetail } from '../../../shared/schemas/cabinet';
@@ -109,18 +109,27 @@ export const address = (): string => screen.getByLabelText('address').textConten
 /** Opens a page of the cabinet as somebody of this role. */
 export function open(role: Role, rest = '') {
   const queryClient = new QueryClient({ defaultOptions: { queries: { retry: false } } });
+  const router = createMemoryRouter(
+    [
+      {
+        element: (
+          <LabContext value={{ lab, user, member: { userId: user.id, labId: lab.id, role } }}>
+            <Outlet />
+            <Address />
+          </LabContext>
+        ),
+        children: [
+          { path: `${cabinet}/mounts`, Component: MountsPage },
+          { path: `${cabinet}/mounts/:mountId`, Component: MountPage },
+          { path: `${cabinet}/:plateId?`, Component: CabinetPage },
+        ],
+      },
+    ],
+    { initialEntries: [`${cabinet}${rest}`] },
+  );
   render(
     <QueryClientProvider client={queryClient}>
-      <MemoryRouter initialEntries={[`${cabinet}${rest}`]}>
-        <LabContext value={{ lab, user, member: { userId: user.id, labId: lab.id, role } }}>
-          <Routes>
-            <Route path={`${cabinet}/mounts`} element={<MountsPage />} />
-            <Route path={`${cabinet}/mounts/:mountId`} element={<MountPage />} />
-            <Route path={`${cabinet}/:plateId?`} element={<CabinetPage />} />
-          </Routes>
-          <Address />
-        </LabContext>
-      </MemoryRouter>
+      <RouterProvider router={router} />
     </QueryClientProvider>,
   );
   return userEvent.setup();

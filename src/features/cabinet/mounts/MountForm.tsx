@@ -1,5 +1,5 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { type CabinetMount, type WriteMount, writeMountSchema } from '../../../../shared/schemas/mounts';
 import { Button } from '../../../components/Button';
@@ -7,6 +7,7 @@ import {
   conflictingState,
   EditConflict,
   FormProblem,
+  LeaveForm,
   schemaResolver,
   showServerFaults,
   useIdempotencyKey,
@@ -25,6 +26,7 @@ export function MountForm(props: {
 }) {
   const { labId, mount, onDone } = props;
   const queryClient = useQueryClient();
+  const isDone = useRef(false);
   const keyFor = useIdempotencyKey();
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [baseRevision, setBaseRevision] = useState(mount?.revision ?? 0);
@@ -42,6 +44,7 @@ export function MountForm(props: {
     mutationFn: ({ body, revision }: { body: WriteMount; revision: number }) =>
       mount === null ? createMount(labId, body, keyFor(body)) : updateMount(labId, mount.id, body, revision),
     onSuccess: async (saved) => {
+      isDone.current = true;
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone(saved);
     },
@@ -92,9 +95,17 @@ export function MountForm(props: {
                 ? `Save ${mount.name}, its numbers the other way`
                 : `Save ${mount.name}`}
           </Button>
-          <Button onClick={() => onDone(null)}>Leave it as it was</Button>
+          <Button
+            onClick={() => {
+              isDone.current = true;
+              onDone(null);
+            }}
+          >
+            Leave it as it was
+          </Button>
         </div>
       )}
+      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the mount" />
     </form>
   );
 }

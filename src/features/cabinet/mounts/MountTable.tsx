@@ -70,9 +70,11 @@ export function MountTable({ cabinet, base }: { readonly cabinet: string; readon
             <TableHead>
               <tr>
                 <SortHead {...sorted('name')}>mount</SortHead>
-                <HeadCell>holds</HeadCell>
+                <SortHead {...sorted('plate')}>holds</SortHead>
                 <HeadCell>drive</HeadCell>
-                <HeadCell numeric>finest step, °</HeadCell>
+                <SortHead {...sorted('step')} numeric>
+                  finest step, °
+                </SortHead>
                 <SortHead {...sorted('repeatability')} numeric>
                   repeats within (σ), °
                 </SortHead>

@@ -1,4 +1,4 @@
-import { type MountQuery, mountStates } from '../../../../shared/schemas/mounts';
+import { type MountQuery, mountSorts, mountStates } from '../../../../shared/schemas/mounts';
 
 /** What the list of mounts shows, as its address says it. */
 export interface MountsView {
@@ -11,12 +11,12 @@ export interface MountsView {
 
 /** Reads an address; what it does not say, or says wrongly, is the usual. */
 export function readMountsView(params: URLSearchParams): MountsView {
-  const [state, drive] = [params.get('state'), params.get('drive')];
+  const [state, drive, sort] = [params.get('state'), params.get('drive'), params.get('sort')];
   return {
     search: (params.get('search') ?? '').slice(0, 60),
     state: mountStates.find((known) => known === state) ?? 'in-use',
     drive: drive === 'hand' || drive === 'motor' ? drive : null,
-    sort: params.get('sort') === 'repeatability' ? 'repeatability' : 'name',
+    sort: mountSorts.find((known) => known === sort) ?? 'name',
     order: params.get('order') === 'desc' ? 'desc' : 'asc',
   };
 }
