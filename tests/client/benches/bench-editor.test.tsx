@@ -1,8 +1,8 @@
 import { QueryClientProvider } from '@tanstack/react-query';
 import { act, cleanup, fireEvent, render, screen, waitFor, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
-import { MemoryRouter } from 'react-router-dom';
-import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { createMemoryRouter, RouterProvider } from 'react-router-dom';
+import { afterEach, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import type { Bench, CreateBench } from '../../../shared/schemas/benches';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { LiveRegions } from '../../../src/components/LiveRegions';
@@ -51,9 +51,10 @@ function open(
 ) {
   const save = vi.fn(options.save ?? (() => Promise.resolve(signalArm)));
   const onSaved = vi.fn();
-  render(
-    <QueryClientProvider client={createQueryClient()}>
-      <MemoryRouter>
+  const router = createMemoryRouter([
+    {
+      path: '/',
+      element: (
         <LabContext value={lab}>
           <LiveRegions />
           <BenchForm
@@ -63,10 +64,16 @@ function open(
             onSaved={onSaved}
           />
         </LabContext>
-      </MemoryRouter>
+      ),
+    },
+    { path: '/elsewhere', element: <p>Elsewhere</p> },
+  ]);
+  render(
+    <QueryClientProvider client={createQueryClient()}>
+      <RouterProvider router={router} />
     </QueryClientProvider>,
   );
-  return { user: userEvent.setup(), save, onSaved };
+  return { user: userEvent.setup(), save, onSaved, router };
 }
 
 const inOrder = (part: 'preparation' | 'analysis') =>
@@ -301,4 +308,31 @@ it('shows both sides where somebody else saved meanwhile, and either can be take
   expect([inOrder('preparation'), inOrder('analysis')]).toEqual([['Q-1', 'Q-9'], []]);
   await user.click(button('Save the bench'));
   await waitFor(() => expect(save.mock.calls.at(-1)?.[1]).toBe(4));
+});
+
+describe('leaving a bench', () => {
+  beforeAll(() => {
+    HTMLDialogElement.prototype.showModal = function showModal() {
+      this.open = true;
+    };
+    HTMLDialogElement.prototype.close = function close() {
+      this.open = false;
+    };
+  });
+
+  it('asks once while something is typed, and not where nothing is', async () => {
+    const { user, router } = open();
+    await user.type(screen.getByLabelText('bench’s name'), ' two');
+    await act(() => router.navigate('/elsewhere'));
+    const asks = within(screen.getByRole('dialog', { name: 'Leave the bench unsaved?' }));
+    await user.click(asks.getByRole('button', { name: 'Stay with the bench' }));
+    expect(screen.getByLabelText<HTMLInputElement>('bench’s name').value).toMatch(/ two$/);
+    await act(() => router.navigate('/elsewhere'));
+    await user.click(screen.getByRole('button', { name: 'Leave it unsaved' }));
+    expect(await screen.findByText('Elsewhere')).toBeDefined();
+    cleanup();
+    const untouched = open();
+    await act(() => untouched.router.navigate('/elsewhere'));
+    expect(await screen.findByText('Elsewhere')).toBeDefined();
+  });
 });
