@@ -109,8 +109,8 @@ async function runAll(root, filters, stoppers) {
 }
 
 /**
- * Two lanes for two cores, each taking the next part that is left, after the build the longest first; the browser has the
- * machine for itself.
+ * Two lanes for two cores, each taking the next part that is left, after the build the longest first. Half of the browser's and
+ * the API's time is waiting, so that each has another part beside it.
  * @param {Surroundings} surroundings
  * @param {string} dataDirectory
  * @param {Promise<Outcome | null>} browser
@@ -119,6 +119,10 @@ async function everything(surroundings, dataDirectory, browser) {
   const built = buildClient(surroundings, dataDirectory);
   const parts = [
     () => built,
+    async () => {
+      await Promise.all([built, browser]);
+      return vitest('browser tests', ['--project=browser'], surroundings);
+    },
     () => vitest('unit and client tests', ['--project=unit', '--project=client'], surroundings),
     async () => {
       // The tests of the start command take the client that is built.
@@ -139,8 +143,7 @@ async function everything(surroundings, dataDirectory, browser) {
     for (let part = parts.shift(); part !== undefined; part = parts.shift()) outcomes.push(await part());
     return outcomes;
   };
-  const outcomes = (await Promise.all([lane(), lane(), browser])).flat();
-  return [...withoutNull(outcomes), await vitest('browser tests', ['--project=browser'], surroundings)];
+  return withoutNull((await Promise.all([lane(), lane(), browser])).flat());
 }
 
 /**
