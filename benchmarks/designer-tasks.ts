@@ -14,6 +14,10 @@ import { findChromium } from '../scripts/lib/chromium.mjs';
 
 const limitMs = 50;
 const rowCount = 200;
+/** Of which the middle one counts: a neighbour on the machine's cores slows a thread too, for seconds at a time. */
+const runs = 3;
+const kinds = ['states', 'unitaries'] as const;
+type Kind = (typeof kinds)[number];
 /** In which two hundred rows are solved and drawn, on two cores with other work. */
 const quietMs = 4000;
 
@@ -127,7 +131,7 @@ async function signIn(page: Page): Promise<void> {
   await page.waitForURL(/\/labs\//u);
 }
 
-async function writeProtocol(page: Page, kind: 'states' | 'unitaries'): Promise<void> {
+async function writeProtocol(page: Page, kind: Kind): Promise<void> {
   await page.getByRole('link', { name: /^Plan/u }).click();
   await page.getByRole('link', { name: 'Write a protocol' }).click();
   await page.getByLabel('name', { exact: true }).fill(`Two hundred ${kind}`);
@@ -137,7 +141,7 @@ async function writeProtocol(page: Page, kind: 'states' | 'unitaries'): Promise<
   await page.getByRole('combobox', { name: 'New target' }).waitFor();
 }
 
-function expressionOf(kind: 'states' | 'unitaries', row: number): string {
+function expressionOf(kind: Kind, row: number): string {
   return kind === 'states'
     ? `bloch(${((row * 37) % 179) + 0.5}deg, ${(row * 73) % 360}deg)`
     : `rotate(${['x', 'y', 'z'][row % 3]}, ${((row * 37) % 350) + 5}deg)`;
@@ -157,7 +161,7 @@ interface Step {
   readonly name: string;
   /** What is not measured. */
   readonly before?: (page: Page) => Promise<void>;
-  readonly run: (page: Page, kind: 'states' | 'unitaries') => Promise<void>;
+  readonly run: (page: Page, kind: Kind) => Promise<void>;
 }
 
 /** Where each page's protocol is, to open it once more. */
@@ -256,12 +260,13 @@ const steps: readonly Step[] = [
   },
 ];
 
+/** Every step once, from signing in on. @returns the longest task of each, in order. */
 async function measure(
   browser: Browser,
   url: string,
-  kind: 'states' | 'unitaries',
+  kind: Kind,
   traceFolder: string | null,
-): Promise<boolean> {
+): Promise<readonly Task[]> {
   const context = await browser.newContext({
     baseURL: url,
     viewport: { width: 1440, height: 900 },
@@ -272,22 +277,31 @@ async function measure(
   const cdp = await context.newCDPSession(page);
   await signIn(page);
   await writeProtocol(page, kind);
-  let holds = true;
-  process.stdout.write(`${kind}\n`);
+  const longest: Task[] = [];
   for (const { name, before, run } of steps) {
     await before?.(page);
     const keepAs = traceFolder === null ? null : path.join(traceFolder, `${kind} ${name}.json`);
-    const tasks = await traced(cdp, () => run(page, kind), keepAs);
-    const over = tasks.filter(({ ranMs }) => ranMs > limitMs);
-    holds &&= over.length === 0;
-    const longest = tasks[0];
-    process.stdout.write(
-      `  ${name.padEnd(38)} ${(longest?.ranMs ?? 0).toFixed(0).padStart(4)} ms longest, ${String(over.length)} over ${limitMs} ms\n`,
-    );
-    for (const { ms, ranMs, made } of over.slice(0, 4))
-      process.stdout.write(`      ${ranMs.toFixed(0)} ms (${ms.toFixed(0)} by the clock): ${made}\n`);
+    const [task = { ms: 0, ranMs: 0, made: 'nothing' }] = await traced(cdp, () => run(page, kind), keepAs);
+    longest.push(task);
   }
   await context.close();
+  return longest;
+}
+
+/** @returns whether each step's middle run holds the limit. */
+function report(kind: Kind, passes: readonly (readonly Task[])[]): boolean {
+  process.stdout.write(`${kind.padEnd(40)} longest task, ms: middle run | each run\n`);
+  let holds = true;
+  steps.forEach(({ name }, place) => {
+    const tasks = passes.flatMap((pass) => pass.slice(place, place + 1));
+    const sizes = tasks.map(({ ranMs }) => ranMs).sort((one, other) => one - other);
+    const middle = sizes[Math.floor(sizes.length / 2)] ?? 0;
+    holds &&= middle <= limitMs;
+    const each = tasks.map(({ ranMs }) => ranMs.toFixed(0).padStart(4)).join(' ');
+    process.stdout.write(`  ${name.padEnd(38)} ${middle.toFixed(0).padStart(4)} |${each}\n`);
+    for (const { ms, ranMs, made } of tasks.filter((task) => task.ranMs > limitMs))
+      process.stdout.write(`      ${ranMs.toFixed(0)} ms (${ms.toFixed(0)} by the clock): ${made}\n`);
+  });
   return holds;
 }
 
@@ -302,10 +316,11 @@ const browser = await chromium.launch({
   args: ['--no-sandbox', '--disable-gpu', '--use-gl=swiftshader', '--disable-3d-apis'],
 });
 try {
-  let holds = true;
-  for (const kind of ['states', 'unitaries'] as const)
-    holds = (await measure(browser, running.url, kind, traceFolder)) && holds;
-  if (!holds) process.exitCode = 1;
+  const passes: Record<Kind, (readonly Task[])[]> = { states: [], unitaries: [] };
+  for (let run = 0; run < runs; run += 1)
+    for (const kind of kinds) passes[kind].push(await measure(browser, running.url, kind, traceFolder));
+  const holds = kinds.map((kind) => report(kind, passes[kind]));
+  if (holds.includes(false)) process.exitCode = 1;
 } finally {
   await browser.close();
 }
