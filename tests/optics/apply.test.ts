@@ -78,7 +78,7 @@ test('100 000 random unitaries and imperfect triples: 4, 2 or no settings, each 
 test('the set is complete: a search from 216 starts finds the same settings and no other', () => {
   const random = randomStream(42);
   let found = 0;
-  for (let k = 0; k < 320; k += 1) {
+  for (let k = 0; k < 200; k += 1) {
     const each = caseOf(randomUnitary(random), imperfectTriple(random));
     const { kind, solutions } = solve(each);
     const ours = kind === 'exact' ? solutions : [];
@@ -88,7 +88,7 @@ test('the set is complete: a search from 216 starts finds the same settings and 
     expect(searched.length, JSON.stringify(each)).toBe(ours.length);
     found += searched.length;
   }
-  expect(found).toBeGreaterThan(1000);
+  expect(found).toBeGreaterThan(600);
 }, 120_000);
 
 test('any retardances: the settings from which a unitary was made are among those found', () => {

@@ -58,7 +58,7 @@ export function LightFields(props: LightFieldsProps) {
               ? isLinear
                 ? 'Without a plate. Empty where nobody measured it: then it is fitted where it can be.'
                 : 'Of the analyser. Empty takes it as ideal.'
-              : `As ${bench.name} states it. Empty it to have it fitted.`
+              : `As ${bench.name} states it. ${isLinear ? 'Empty it to have it fitted.' : 'Empty takes it as ideal.'}`
           }
           {...number('extinction')}
         />
