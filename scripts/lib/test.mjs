@@ -109,7 +109,7 @@ async function runAll(root, filters, stoppers) {
 }
 
 /**
- * Two lanes for two cores, each taking the next part that is left, after the build the longest first. Half of the browser's and
+ * Two lanes for two cores, each taking the next part that is left, after the build the longest first. A part of the browser's and
  * the API's time is waiting, so that each has another part beside it.
  * @param {Surroundings} surroundings
  * @param {string} dataDirectory

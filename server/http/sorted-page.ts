@@ -18,6 +18,13 @@ export const nameKey = <Item extends { readonly name: string }>(column: string):
   of: ({ name }) => name,
 });
 
+export const numberKey = <Item>(column: string, of: (item: Item) => number): SortKey<Item> => ({
+  by: column,
+  read: 'cast(? as double precision)',
+  value: z.number(),
+  of,
+});
+
 interface SortedList<Sort extends string, Item> {
   /** Of each the first key decides, the next between equals. */
   readonly sorts: Readonly<Record<Sort, readonly SortKey<Item>[]>>;

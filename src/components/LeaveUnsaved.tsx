@@ -1,5 +1,5 @@
-import { type ReactNode, type RefObject, useEffect } from 'react';
-import { useBlocker } from 'react-router-dom';
+import type { ReactNode, RefObject } from 'react';
+import { useLeaveAsked } from '../lib/use-leave-asked';
 import { Button } from './Button';
 import { Dialog } from './Dialog';
 
@@ -7,7 +7,7 @@ interface LeaveUnsavedProps {
   /** Something is typed or chosen that no server has. */
   readonly isUnsaved: boolean;
   /** Set once it is saved, or left on purpose, before the page is left. */
-  readonly isDone: RefObject<boolean>;
+  readonly isDoneRef: RefObject<boolean>;
   readonly question: string;
   readonly stay: string;
   readonly leave: string;
@@ -16,27 +16,21 @@ interface LeaveUnsavedProps {
 }
 
 /** What is on this page only is not lost to a link or to Back: leaving asks once. */
-export function LeaveUnsaved({ isUnsaved, isDone, question, stay, leave, children }: LeaveUnsavedProps) {
-  const blocker = useBlocker(
+export function LeaveUnsaved({ isUnsaved, isDoneRef, question, stay, leave, children }: LeaveUnsavedProps) {
+  const leaving = useLeaveAsked(
+    isUnsaved,
     ({ currentLocation: here, nextLocation: next }) =>
-      isUnsaved && !isDone.current && (next.pathname !== here.pathname || next.search !== here.search),
+      !isDoneRef.current && (next.pathname !== here.pathname || next.search !== here.search),
   );
-  useEffect(() => {
-    if (!isUnsaved) return undefined;
-    const ask = (event: BeforeUnloadEvent): void => event.preventDefault();
-    window.addEventListener('beforeunload', ask);
-    return () => window.removeEventListener('beforeunload', ask);
-  }, [isUnsaved]);
-  const onStay = () => blocker.reset?.();
   return (
     <Dialog
-      open={blocker.state === 'blocked'}
+      open={leaving.isAsked}
       question={question}
-      onClose={onStay}
+      onClose={leaving.stay}
       actions={
         <>
-          <Button onClick={onStay}>{stay}</Button>
-          <Button kind="danger" onClick={() => blocker.proceed?.()}>
+          <Button onClick={leaving.stay}>{stay}</Button>
+          <Button kind="danger" onClick={leaving.leave}>
             {leave}
           </Button>
         </>

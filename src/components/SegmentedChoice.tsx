@@ -18,6 +18,14 @@ interface SegmentedChoiceProps<Value extends string> {
   readonly className?: string | undefined;
 }
 
+const face = {
+  chosen:
+    'cursor-pointer bg-ink font-strong text-paper dark-room:bg-transparent dark-room:text-act dark-room:outline-2 dark-room:-outline-offset-2 dark-room:outline-act',
+  other: 'cursor-pointer text-ink hover:bg-wash',
+} as const;
+/** Where it can't be changed. */
+const fixedFace = { chosen: 'bg-wash font-strong text-ink', other: 'text-ink-2' } as const;
+
 /** A choice of two or three as joined cells, the chosen one filled. Radio buttons underneath, so the arrow keys work. */
 export function SegmentedChoice<Value extends string>({
   label,
@@ -51,14 +59,7 @@ export function SegmentedChoice<Value extends string>({
             className={classNames(
               'relative flex min-h-9.5 items-center justify-center px-4 text-center max-sm:min-h-11',
               index > 0 && (disabled ? 'border-l border-rule' : 'border-l border-ink'),
-              !disabled && 'cursor-pointer',
-              disabled
-                ? segment.value === value
-                  ? 'bg-wash font-strong text-ink'
-                  : 'text-ink-2'
-                : segment.value === value
-                  ? 'bg-ink font-strong text-paper dark-room:bg-transparent dark-room:text-act dark-room:outline-2 dark-room:-outline-offset-2 dark-room:outline-act'
-                  : 'text-ink hover:bg-wash',
+              (disabled ? fixedFace : face)[segment.value === value ? 'chosen' : 'other'],
               'has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-beam',
             )}
           >

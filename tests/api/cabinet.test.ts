@@ -6,11 +6,10 @@ import {
   calibrationSchema,
   mountDetailSchema,
   mountPageSchema,
-  plateDetailSchema,
   platePageSchema,
-  problemSchema,
 } from '../../shared/schemas';
 import { newMount, newPlate } from '../support/plates';
+import { CabinetDesk, faultOf } from './support/cabinet-desk';
 import { answered, call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
 import { calibrationBody, makeLab, plateBody, type TestLab } from './support/lab';
@@ -18,66 +17,50 @@ import { calibrationBody, makeLab, plateBody, type TestLab } from './support/lab
 let harness: Harness;
 let lead: Agent;
 let lab: TestLab;
+let desk: CabinetDesk;
 beforeAll(async () => {
   harness = await startHarness();
   lead = await harness.signIn('adaeze-holm');
   lab = await makeLab(harness, lead, 'Cabinet lab');
+  desk = new CabinetDesk(harness, lead, lab.labId);
 }, 60_000);
 afterAll(async () => {
   await harness.close();
 });
 
-const at = (path: string) => `/labs/${lab.labId}${path}`;
-const plateNow = async (plateId: string): Promise<CabinetPlate> =>
-  (await answered(call(harness, lead, 'get', at(`/plates/${plateId}`)), plateDetailSchema)).plate;
-
-async function change(plateId: string, method: 'put' | 'post', path: string, body: unknown) {
-  const { revision } = await plateNow(plateId);
-  return call(harness, lead, method, at(`/plates/${plateId}${path}`), { body, ifMatch: `"r${revision}"` });
-}
-
-function faultOf(text: string) {
-  const problem = problemSchema.parse(JSON.parse(text));
-  return { code: problem.type.split(':').at(-1), path: problem.fields?.[0]?.path, detail: problem.detail };
-}
-
-async function addPlate(name: string): Promise<CabinetPlate> {
-  return answered(call(harness, lead, 'post', at('/plates'), { body: plateBody(name) }), cabinetPlateSchema);
-}
-
 describe('a calibration', () => {
   test('of a plate that sits nowhere is refused, since its zero would hold for nothing', async () => {
-    const plate = await addPlate('C-1');
-    await change(plate.id, 'post', '/take-out', { why: 'Moved.' });
-    const refused = await change(plate.id, 'post', '/calibrations', calibrationBody());
+    const plate = await desk.addPlate('C-1');
+    await desk.change(plate.id, 'post', '/take-out', { why: 'Moved.' });
+    const refused = await desk.change(plate.id, 'post', '/calibrations', calibrationBody());
     expect([refused.status, faultOf(refused.text).code]).toEqual([409, 'not-seated']);
   });
 
   test('from before the plate was seated as it is now is refused, in a first seat as in a later one', async () => {
-    const plate = await addPlate('C-0');
+    const plate = await desk.addPlate('C-0');
     const record = (measuredAt: string) =>
-      change(plate.id, 'post', '/calibrations', calibrationBody({ measuredAt }));
+      desk.change(plate.id, 'post', '/calibrations', calibrationBody({ measuredAt }));
     const older = await record('2026-05-31T10:00:00Z');
     expect(faultOf(older.text).path).toBe('measuredAt');
     expect(faultOf(older.text).detail).toContain(
       'C-0 sits in M C-0 since 2026-06-01 10:00 UTC, and this is before that',
     );
-    await change(plate.id, 'put', '/seat', { mountId: plate.seat?.mountId, why: 'Knocked.' });
+    await desk.change(plate.id, 'put', '/seat', { mountId: plate.seat?.mountId, why: 'Knocked.' });
     const old = await record('2026-06-01T10:00:00Z');
     expect([old.status, faultOf(old.text).path]).toEqual([422, 'measuredAt']);
-    expect((await plateNow(plate.id)).calibration).toBeNull();
+    expect((await desk.plateNow(plate.id)).calibration).toBeNull();
     expect((await record(new Date().toISOString())).status).toBe(201);
   });
 
   test('leaves its question open until another one settles it, and answers only what was asked', async () => {
-    const plate = await addPlate('C-2');
+    const plate = await desk.addPlate('C-2');
     const record = (body: unknown) =>
-      call(harness, lead, 'post', at(`/plates/${plate.id}/calibrations`), { body });
+      call(harness, lead, 'post', desk.at(`/plates/${plate.id}/calibrations`), { body });
     const open = await answered(
       record(calibrationBody({ openQuestions: ['axis'], measuredAt: '2026-06-02T10:00:00Z' })),
       calibrationSchema,
     );
-    expect((await plateNow(plate.id)).health).toBe('open-question');
+    expect((await desk.plateNow(plate.id)).health).toBe('open-question');
     const stranger = await record(calibrationBody({ settlesId: lab.version.id }));
     expect(faultOf(stranger.text).path).toBe('settlesId');
     const nothing = await record(calibrationBody({ settlesId: plate.calibration?.id ?? null }));
@@ -93,18 +76,21 @@ describe('a calibration', () => {
       ),
       calibrationSchema,
     );
-    expect(await plateNow(plate.id)).toMatchObject({ health: 'overdue', calibration: { offsetDeg: 102.4 } });
+    expect(await desk.plateNow(plate.id)).toMatchObject({
+      health: 'overdue',
+      calibration: { offsetDeg: 102.4 },
+    });
   });
 
   test('that was measured before the newest one does not take its place', async () => {
-    const plate = await addPlate('C-3');
-    await call(harness, lead, 'post', at(`/plates/${plate.id}/calibrations`), {
+    const plate = await desk.addPlate('C-3');
+    await call(harness, lead, 'post', desk.at(`/plates/${plate.id}/calibrations`), {
       body: calibrationBody({ offsetDeg: 2, measuredAt: '2026-06-03T10:00:00Z' }),
     });
-    await call(harness, lead, 'post', at(`/plates/${plate.id}/calibrations`), {
+    await call(harness, lead, 'post', desk.at(`/plates/${plate.id}/calibrations`), {
       body: calibrationBody({ offsetDeg: 1, measuredAt: '2026-06-02T10:00:00Z' }),
     });
-    expect((await plateNow(plate.id)).calibration?.offsetDeg).toBe(2);
+    expect((await desk.plateNow(plate.id)).calibration?.offsetDeg).toBe(2);
   });
 });
 
@@ -266,17 +252,19 @@ describe('lists', () => {
 
 describe('a mount', () => {
   test('that holds a plate is not retired, and two of a name are refused', async () => {
-    const plate = await addPlate('M-1');
-    const retire = await call(harness, lead, 'post', at(`/mounts/${plate.seat?.mountId ?? ''}/retire`), {
+    const plate = await desk.addPlate('M-1');
+    const retire = await call(harness, lead, 'post', desk.at(`/mounts/${plate.seat?.mountId ?? ''}/retire`), {
       ifMatch: '"r1"',
     });
     expect([retire.status, faultOf(retire.text).detail]).toEqual([
       409,
       expect.stringContaining('M-1 sits in M M-1'),
     ]);
-    const twice = await call(harness, lead, 'post', at('/mounts'), { body: newMount({ name: 'm m-1' }) });
+    const twice = await call(harness, lead, 'post', desk.at('/mounts'), {
+      body: newMount({ name: 'm m-1' }),
+    });
     expect([twice.status, faultOf(twice.text).path]).toEqual([422, 'name']);
-    const withPlate = await call(harness, lead, 'post', at('/plates'), {
+    const withPlate = await call(harness, lead, 'post', desk.at('/plates'), {
       body: plateBody('M-2', { mount: { name: 'M M-1' } }),
     });
     expect([withPlate.status, faultOf(withPlate.text).path]).toEqual([422, 'seat.mount.name']);

@@ -2,16 +2,15 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import {
   benchSchema,
   cabinetMountSchema,
-  type CabinetPlate,
   cabinetPlateSchema,
   calibrationSchema,
   plateDetailSchema,
-  problemSchema,
   protocolSchema,
   runSchema,
 } from '../../shared/schemas';
 import { readCabinet } from '../../shared/cabinet-document';
 import { newMount } from '../support/plates';
+import { CabinetDesk, faultOf } from './support/cabinet-desk';
 import { answered, call } from './support/calls';
 import { type Agent, type Harness, startHarness } from './support/harness';
 import {
@@ -26,78 +25,69 @@ import {
 let harness: Harness;
 let lead: Agent;
 let lab: TestLab;
+let desk: CabinetDesk;
 beforeAll(async () => {
   harness = await startHarness();
   lead = await harness.signIn('adaeze-holm');
   lab = await makeLab(harness, lead, 'Lab of seats');
+  desk = new CabinetDesk(harness, lead, lab.labId);
 }, 60_000);
 afterAll(async () => {
   await harness.close();
 });
 
-const at = (path: string) => `/labs/${lab.labId}${path}`;
-const plateNow = async (plateId: string): Promise<CabinetPlate> =>
-  (await answered(call(harness, lead, 'get', at(`/plates/${plateId}`)), plateDetailSchema)).plate;
-
-async function change(plateId: string, method: 'put' | 'post', path: string, body: unknown) {
-  const { revision } = await plateNow(plateId);
-  return call(harness, lead, method, at(`/plates/${plateId}${path}`), { body, ifMatch: `"r${revision}"` });
-}
-
-function faultOf(text: string) {
-  const problem = problemSchema.parse(JSON.parse(text));
-  return { code: problem.type.split(':').at(-1), path: problem.fields?.[0]?.path, detail: problem.detail };
-}
-
-async function addPlate(name: string): Promise<CabinetPlate> {
-  return answered(call(harness, lead, 'post', at('/plates'), { body: plateBody(name) }), cabinetPlateSchema);
-}
-
 describe('a seat', () => {
   test('that ends takes its zero with it, even when the plate comes back into the same mount', async () => {
-    const plate = await addPlate('S-1');
+    const plate = await desk.addPlate('S-1');
     const first = plate.seat;
     expect([plate.health, plate.calibration?.offsetDeg]).toEqual(['overdue', 12.4]);
 
-    const out = await change(plate.id, 'post', '/take-out', { why: 'Cleaned.' });
+    const out = await desk.change(plate.id, 'post', '/take-out', { why: 'Cleaned.' });
     expect(out.status).toBe(200);
-    expect(await plateNow(plate.id)).toMatchObject({ seat: null, calibration: null, health: 'not-seated' });
+    expect(await desk.plateNow(plate.id)).toMatchObject({
+      seat: null,
+      calibration: null,
+      health: 'not-seated',
+    });
 
-    const seated = await change(plate.id, 'put', '/seat', { mountId: first?.mountId, why: '' });
+    const seated = await desk.change(plate.id, 'put', '/seat', { mountId: first?.mountId, why: '' });
     expect(seated.status).toBe(200);
-    const again = await plateNow(plate.id);
+    const again = await desk.plateNow(plate.id);
     expect(again).toMatchObject({ calibration: null, health: 'not-calibrated' });
     expect(again.seat?.mountId).toBe(first?.mountId);
     expect(again.seat?.id).not.toBe(first?.id);
 
-    const history = await answered(call(harness, lead, 'get', at(`/plates/${plate.id}`)), plateDetailSchema);
+    const history = await answered(
+      call(harness, lead, 'get', desk.at(`/plates/${plate.id}`)),
+      plateDetailSchema,
+    );
     expect(history.seats.map(({ leftWhy }) => leftWhy)).toEqual([null, 'Cleaned.']);
     expect(history.calibrations.map(({ seatId }) => seatId)).toEqual([first?.id]);
   });
 
   test('is left in one step when a plate is seated anew, and that asks why', async () => {
-    const plate = await addPlate('S-2');
+    const plate = await desk.addPlate('S-2');
     const mountId = plate.seat?.mountId;
-    const refused = await change(plate.id, 'put', '/seat', { mountId, why: '' });
+    const refused = await desk.change(plate.id, 'put', '/seat', { mountId, why: '' });
     expect([refused.status, faultOf(refused.text).path]).toEqual([422, 'why']);
-    expect((await plateNow(plate.id)).seat?.id).toBe(plate.seat?.id);
-    expect((await change(plate.id, 'put', '/seat', { mountId, why: 'Knocked.' })).status).toBe(200);
-    expect((await plateNow(plate.id)).calibration).toBeNull();
+    expect((await desk.plateNow(plate.id)).seat?.id).toBe(plate.seat?.id);
+    expect((await desk.change(plate.id, 'put', '/seat', { mountId, why: 'Knocked.' })).status).toBe(200);
+    expect((await desk.plateNow(plate.id)).calibration).toBeNull();
   });
 
   test('begins and ends when a person says, as far as what is known of plate and mount allows', async () => {
-    const [plate, other] = [await addPlate('S-10'), await addPlate('S-11')];
+    const [plate, other] = [await desk.addPlate('S-10'), await desk.addPlate('S-11')];
     const mountId = plate.seat?.mountId;
     // It was measured at 10:00 on that day, so it sat by then.
     expect(plate.seat?.seatedAt).toBe('2026-06-01T10:00:00.000Z');
     const measured = (measuredAt: string) =>
-      change(plate.id, 'post', '/calibrations', calibrationBody({ measuredAt }));
+      desk.change(plate.id, 'post', '/calibrations', calibrationBody({ measuredAt }));
     expect((await measured('2026-06-03T10:00:00Z')).status).toBe(201);
-    const out = (why: string, when: string) => change(plate.id, 'post', '/take-out', { why, at: when });
+    const out = (why: string, when: string) => desk.change(plate.id, 'post', '/take-out', { why, at: when });
     const refusals = [
       await out('Moved.', '2099-01-01T00:00:00Z'),
       await out('Moved.', '2026-05-30T10:00:00Z'),
-      await change(plate.id, 'put', '/seat', { mountId, why: 'Knocked.', at: '2026-06-02T10:00:00Z' }),
+      await desk.change(plate.id, 'put', '/seat', { mountId, why: 'Knocked.', at: '2026-06-02T10:00:00Z' }),
     ];
     expect(refusals.map(({ status, text }) => [status, faultOf(text).path])).toEqual([
       [422, 'at'],
@@ -111,7 +101,7 @@ describe('a seat', () => {
     ]);
     expect((await out('Moved.', '2026-06-05T10:00:00Z')).status).toBe(200);
     const seat = (plateId: string, when: string) =>
-      change(plateId, 'put', '/seat', { mountId, why: 'Moved.', at: when });
+      desk.change(plateId, 'put', '/seat', { mountId, why: 'Moved.', at: when });
     expect(faultOf((await seat(plate.id, '2026-06-04T10:00:00Z')).text).detail).toContain(
       'S-10 sat in M S-10 until 2026-06-05 10:00 UTC',
     );
@@ -120,7 +110,7 @@ describe('a seat', () => {
     );
     expect((await seat(plate.id, '2026-06-06T10:00:00Z')).status).toBe(200);
     const { seats } = await answered(
-      call(harness, lead, 'get', at(`/plates/${plate.id}`)),
+      call(harness, lead, 'get', desk.at(`/plates/${plate.id}`)),
       plateDetailSchema,
     );
     expect(seats.map(({ seatedAt, leftAt }) => [seatedAt, leftAt])).toEqual([
@@ -133,7 +123,9 @@ describe('a seat', () => {
   test('of a new plate begins when a person says, or when it was measured, and not after that', async () => {
     const add = (name: string, since: string | null, measuredAt: string) => {
       const body = plateBody(name, { calibration: { measuredAt } });
-      return call(harness, lead, 'post', at('/plates'), { body: { ...body, seat: { ...body.seat, since } } });
+      return call(harness, lead, 'post', desk.at('/plates'), {
+        body: { ...body, seat: { ...body.seat, since } },
+      });
     };
     const begun = async (...plate: Parameters<typeof add>) =>
       (await answered(add(...plate), cabinetPlateSchema)).seat?.seatedAt;
@@ -199,34 +191,34 @@ describe('a seat', () => {
   });
 
   test('is refused in a mount that holds another plate, is retired or is not there, each by name', async () => {
-    const [one, other] = [await addPlate('S-3'), await addPlate('S-4')];
-    await change(one.id, 'post', '/take-out', { why: 'Moved.' });
-    const taken = await change(one.id, 'put', '/seat', { mountId: other.seat?.mountId, why: '' });
+    const [one, other] = [await desk.addPlate('S-3'), await desk.addPlate('S-4')];
+    await desk.change(one.id, 'post', '/take-out', { why: 'Moved.' });
+    const taken = await desk.change(one.id, 'put', '/seat', { mountId: other.seat?.mountId, why: '' });
     expect(faultOf(taken.text).path).toBe('mountId');
     expect(faultOf(taken.text).detail).toContain('S-4 sits in M S-4');
     const mount = await answered(
-      call(harness, lead, 'post', at('/mounts'), { body: newMount({ name: 'M-old' }) }),
+      call(harness, lead, 'post', desk.at('/mounts'), { body: newMount({ name: 'M-old' }) }),
       cabinetMountSchema,
     );
-    await call(harness, lead, 'post', at(`/mounts/${mount.id}/retire`), { ifMatch: '"r1"' });
-    const retired = await change(one.id, 'put', '/seat', { mountId: mount.id, why: '' });
+    await call(harness, lead, 'post', desk.at(`/mounts/${mount.id}/retire`), { ifMatch: '"r1"' });
+    const retired = await desk.change(one.id, 'put', '/seat', { mountId: mount.id, why: '' });
     expect(faultOf(retired.text).detail).toContain('M-old is retired');
-    const missing = await change(one.id, 'put', '/seat', { mountId: one.id, why: '' });
+    const missing = await desk.change(one.id, 'put', '/seat', { mountId: one.id, why: '' });
     expect(faultOf(missing.text).detail).toContain('no such mount');
   });
 
   test('goes to one of two that want the same mount at the same moment', async () => {
-    const plates = [await addPlate('S-5'), await addPlate('S-6')];
-    for (const { id } of plates) await change(id, 'post', '/take-out', { why: 'Moved.' });
+    const plates = [await desk.addPlate('S-5'), await desk.addPlate('S-6')];
+    for (const { id } of plates) await desk.change(id, 'post', '/take-out', { why: 'Moved.' });
     const answers = await Promise.all(
-      plates.map(({ id }) => change(id, 'put', '/seat', { mountId: lab.spareMountId, why: '' })),
+      plates.map(({ id }) => desk.change(id, 'put', '/seat', { mountId: lab.spareMountId, why: '' })),
     );
     expect(answers.map(({ status }) => status).toSorted()).toEqual([200, 422]);
   });
 
   test('that has ended is never opened again, not even by the database’s own role', async () => {
-    const plate = await addPlate('S-7');
-    await change(plate.id, 'post', '/take-out', { why: 'Moved.' });
+    const plate = await desk.addPlate('S-7');
+    await desk.change(plate.id, 'post', '/take-out', { why: 'Moved.' });
     await expect(
       harness.database.transaction(async (transaction) => {
         await transaction.raw(`select set_config('app.lab_id', ?, true)`, [lab.labId]);

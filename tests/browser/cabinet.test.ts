@@ -56,6 +56,28 @@ async function scan(page: Page, zeroDeg: number): Promise<void> {
   await page.waitForURL((url) => !url.pathname.endsWith('/scan'));
 }
 
+/** What is below the scan's plot stands where it stays, also while the file is on its way: a press meets what it was meant for. */
+async function expectNoJump(page: Page): Promise<void> {
+  let release = (): void => undefined;
+  const isReleased = new Promise<void>((resolve) => {
+    release = resolve;
+  });
+  const file = /\/files\//u;
+  await page.route(file, async (route) => {
+    await isReleased;
+    await route.continue();
+  });
+  await page.reload();
+  const link = page.getByRole('link', { name: 'record what the mark on its rim says' });
+  const topOf = async () => Math.round((await link.boundingBox())?.y ?? NaN);
+  await page.getByText('Drawing the scan').waitFor();
+  const before = await topOf();
+  release();
+  await page.getByRole('img', { name: /^Scan of Q-X/u }).waitFor();
+  expect(await topOf()).toBe(before);
+  await page.unroute(file);
+}
+
 /** A person says that the mark on the rim is the fast axis. */
 async function settle(page: Page): Promise<void> {
   await page.getByRole('link', { name: 'record what the mark on its rim says' }).click();
@@ -144,6 +166,7 @@ it('takes a plate from unknown to calibrated, seats it anew, shows what went sta
   await page.getByRole('heading', { name: 'Q-X’s zero is void since the new seat' }).waitFor();
   await page.getByRole('link', { name: 'Scan between polarisers' }).first().click();
   await scan(page, 61.8);
+  await expectNoJump(page);
   await settle(page);
 
   // Stale: the version says so by itself, and a run of it would have to be insisted on.

@@ -1,6 +1,5 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
-import { type Stokes, STOKES_H } from '../../shared/optics';
 import {
   fitInputStokes,
   fitLinearScan,
@@ -8,12 +7,9 @@ import {
   type LinearScan,
   type LinearScanFit,
   MOST_ROWS,
-  type RotatingScan,
-  type RotatingScanFit,
   type ScanRow,
   type Stated,
 } from '../../shared/optics/calibration';
-import { excessSigmas } from '../../shared/optics/calibration/evidence';
 import {
   apartBy,
   cleanPowers,
@@ -105,67 +101,6 @@ test('σ that are too small show as a misfit', () => {
     parallel: parallel && { ...parallel, sigma: SIGMA / 3 },
   }));
   expect(linear(scanOf(rows)).warnings.map(({ kind }) => kind)).toContain('misfit');
-});
-
-const CIRCULAR: Stokes = [0, 0, 1];
-
-/** A scan of a plate in circular light, which reads as it should or is taken for horizontal. */
-function behindCircular(
-  seed: number,
-  isSigmaStated: boolean,
-  changes: Partial<RotatingScan> = {},
-): RotatingScanFit {
-  const dice = new Dice(seed);
-  const dials = readings(0, 12, 31);
-  const rows = rotatingPowers(PLAIN, dials, CIRCULAR, 0).map((power, k) => ({
-    dialDeg: dials[k] ?? 0,
-    power: power + 3e-3 * dice.normal(),
-    sigma: isSigmaStated ? 3e-3 : null,
-  }));
-  const leak = { value: PLAIN.leak, sigma: 0 };
-  const fit = fitRotatingScan({
-    rows,
-    direction: 1,
-    input: CIRCULAR,
-    analyserDeg: 0,
-    leak,
-    nominal: null,
-    before: null,
-    leftOut: [],
-    ...changes,
-  });
-  if (!fit.ok) throw new Error(fit.message);
-  return fit;
-}
-
-test.each([true, false])('light that is not what was stated is told (σ stated: %s)', (isSigmaStated) => {
-  const taken = [
-    { input: STOKES_H },
-    { input: [0, 0.3, Math.sqrt(1 - 0.09)] },
-    { input: CIRCULAR, analyserDeg: 20 },
-  ] as const;
-  // The harmonics of light that is wholly circular fit any analyser: only the zero turns with it.
-  const told = taken.map((changes) =>
-    behindCircular(7, isSigmaStated, changes).warnings.map(({ kind }) => kind),
-  );
-  expect(told).toEqual([['other-light'], ['other-light'], []]);
-});
-
-test.each([true, false])('sound scans are told nothing of (σ stated: %s)', (isSigmaStated) => {
-  for (let seed = 0; seed < 100; seed += 1) expect(behindCircular(seed, isSigmaStated).warnings).toEqual([]);
-});
-
-// Upper points of χ² and of Fisher's F in the usual statistical tables, from memory, and as scipy.stats gives them; the tail of a normal pair is e^(−z²/2).
-test.each([
-  { count: 6, freedom: null, squares: 12.592, tail: 0.05 },
-  { count: 6, freedom: null, squares: 16.812, tail: 0.01 },
-  { count: 8, freedom: null, squares: 15.507, tail: 0.05 },
-  { count: 6, freedom: 20, squares: 6 * 2.599, tail: 0.05 },
-  { count: 6, freedom: 20, squares: 6 * 3.871, tail: 0.01 },
-  { count: 8, freedom: 10, squares: 8 * 3.072, tail: 0.05 },
-])('$squares for $count squares and $freedom degrees is as rare as tables have it', (row) => {
-  const sigmas = excessSigmas(row.squares, row.count, row.freedom);
-  expect(Math.exp((-sigmas * sigmas) / 2)).toBeCloseTo(row.tail, 4);
 });
 
 test('a dark level taken off twice shows as a negative leak', () => {

@@ -4,7 +4,7 @@ import type { CabinetMount, MountQuery, WriteMount } from '../../../shared/schem
 import type { Transaction } from '../../db/database';
 import { newId } from '../../db/new-id';
 import { rowsOf } from '../../db/rows';
-import { nameKey, sortedPage, type SortKey } from '../../http/sorted-page';
+import { nameKey, numberKey, sortedPage, type SortKey } from '../../http/sorted-page';
 import { mapMountColumns, mountColumnsRow } from './plate-rows';
 
 const mountRow = mountColumnsRow.extend({
@@ -60,12 +60,6 @@ const states = {
 } as const;
 
 const byName = nameKey<StoredMount>('m.name');
-const numberKey = (column: string, of: (mount: StoredMount) => number): SortKey<StoredMount> => ({
-  by: column,
-  read: 'cast(? as double precision)',
-  value: z.number(),
-  of,
-});
 /** What a list is sorted by; names decide between equals. By what it holds: the empty ones first. */
 const sorts: Readonly<Record<MountQuery['sort'], readonly SortKey<StoredMount>[]>> = {
   name: [byName],

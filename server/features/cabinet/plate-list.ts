@@ -11,7 +11,7 @@ import {
 } from '../../../shared/schemas';
 import type { Transaction } from '../../db/database';
 import { rowsOf } from '../../db/rows';
-import { nameKey, sortedPage, type SortKey } from '../../http/sorted-page';
+import { nameKey, numberKey, sortedPage, type SortKey } from '../../http/sorted-page';
 import { healthWhere } from './health-where';
 import { mapPlate, type StoredPlate } from './plate-rows';
 import { plateQuery } from './plate-store';
@@ -29,15 +29,7 @@ const sorts: Readonly<Record<PlateQuery['sort'], readonly SortKey<StoredPlate>[]
     },
     byName,
   ],
-  wavelength: [
-    {
-      by: 'p.design_wavelength_nm',
-      read: 'cast(? as double precision)',
-      value: z.number(),
-      of: ({ designWavelengthNm }) => designWavelengthNm,
-    },
-    byName,
-  ],
+  wavelength: [numberKey('p.design_wavelength_nm', ({ designWavelengthNm }) => designWavelengthNm), byName],
 };
 
 /** Of the plate itself, or the name of the mount that it sits in; every character as it is. */

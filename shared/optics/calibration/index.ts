@@ -31,6 +31,7 @@ export {
   linearScanCurve,
   type LinearScanFit,
 } from './linear-scan';
+export { blindNearDeg } from './open-questions';
 export type {
   BranchReason,
   CandidatePlate,

@@ -47,6 +47,14 @@ export interface CandidatePlate extends PlateReading {
   readonly alsoNamed: PlateReading;
 }
 
+/**
+ * Where a scan that hardly feels a retardance is blind, in degrees: at whole and half waves between polarisers, where the
+ * power goes with cos δ, and at quarter waves behind circular light, where it goes with sin δ.
+ */
+export function blindNearDeg(retardanceDeg: number): number {
+  return 90 * Math.round(retardanceDeg / 90);
+}
+
 export type BranchReason = 'no-nominal' | 'half-wave' | 'blind' | 'too-close' | 'fits-neither';
 
 export type OpenQuestion =

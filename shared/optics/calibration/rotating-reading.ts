@@ -2,6 +2,7 @@ import { wrap } from '../units';
 import { SETTLED_SIGMA } from './evidence';
 import type { OffsetEstimate, PlateFinding } from './linear-reading';
 import {
+  blindNearDeg,
   type BranchChoice,
   candidatePlates,
   type OpenQuestion,
@@ -52,7 +53,7 @@ export function rotatingFinding({
     const retardancesDeg = [retardanceDeg, 360 - retardanceDeg] as const;
     open.push({ kind: 'branch', retardancesDeg, reason: choice.reason, sigmas: choice.sigmas });
   }
-  if (isBlind) open.push({ kind: 'blind', atDeg: 90 * Math.round(retardanceDeg / 90), fromDeg, toDeg });
+  if (isBlind) open.push({ kind: 'blind', atDeg: blindNearDeg(retardanceDeg), fromDeg, toDeg });
   const [nearest] = rivals.others;
   if (nearest !== undefined)
     open.push({ kind: 'supplement', readings: [reading, ...rivals.others], sigmas: nearest.sigmas });

@@ -53,7 +53,7 @@ export function BenchForm(props: {
   const { bench, plates, save, onSaved } = props;
   const { lab } = useLab();
   const queryClient = useQueryClient();
-  const isDone = useRef(false);
+  const isDoneRef = useRef(false);
   const [now] = useState(() => new Date());
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [base, setBase] = useState(bench);
@@ -72,7 +72,7 @@ export function BenchForm(props: {
   const saving = useMutation({
     mutationFn: ({ body, revision }: { body: CreateBench; revision: number }) => save(body, revision),
     onSuccess: async (saved) => {
-      isDone.current = true;
+      isDoneRef.current = true;
       sayDone(bench === null ? `${saved.name} is added.` : `${saved.name} is saved.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', lab.id] });
       onSaved(saved);
@@ -165,13 +165,13 @@ export function BenchForm(props: {
             <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
               {bench === null ? 'Add the bench' : 'Save the bench'}
             </Button>
-            <ButtonLink to={`/labs/${lab.id}/bench`} onClick={() => (isDone.current = true)}>
+            <ButtonLink to={`/labs/${lab.id}/bench`} onClick={() => (isDoneRef.current = true)}>
               Leave it as it was
             </ButtonLink>
           </div>
         )}
       </div>
-      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the bench" />
+      <LeaveForm isDirty={formState.isDirty} isDoneRef={isDoneRef} what="the bench" />
     </form>
   );
 }

@@ -1,11 +1,12 @@
 import { notReadySentences } from '../../../shared/bench-ready';
+import { blindNearDeg } from '../../../shared/optics/calibration';
 import { NOMINAL_DEG } from '../../../shared/optics/dispersion';
 import { usedRetardance } from '../../../shared/protocol/solving-plates';
 import { type BenchPart, createBenchSchema } from '../../../shared/schemas/benches';
 import type { CabinetPlate, Plate } from '../../../shared/schemas/cabinet';
 import type { Calibration, OpenQuestion } from '../../../shared/schemas/calibrations';
 import { formatUncertain, thinGap } from '../../lib/format';
-import { blindNearDeg, calibrationAge } from '../cabinet';
+import { calibrationAge } from '../cabinet';
 import { elsewhereSentence, usedElsewhere } from './elsewhere-words';
 
 /** What speaks against a plate where it stands. With a fault the server refuses the bench; a warning is for a person to weigh. */

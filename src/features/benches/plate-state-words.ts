@@ -1,6 +1,7 @@
+import { blindNearDeg } from '../../../shared/optics/calibration';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import type { OpenQuestion } from '../../../shared/schemas/calibrations';
-import { blindNearDeg, calibrationAge } from '../cabinet';
+import { calibrationAge } from '../cabinet';
 
 function openName(question: OpenQuestion, retardanceDeg: number): string {
   switch (question) {

@@ -5,7 +5,14 @@ import type { CabinetPlate } from '../../../shared/schemas/cabinet';
 import { type CalibrationInput, calibrationInputSchema } from '../../../shared/schemas/calibrations';
 import { Button } from '../../components/Button';
 import { sayDone } from '../../components/live-region-store';
-import { FormProblem, LeaveForm, schemaResolver, showServerFaults, useIdempotencyKey } from '../../lib/forms';
+import {
+  FormProblem,
+  LeaveAsItWas,
+  LeaveForm,
+  schemaResolver,
+  showServerFaults,
+  useIdempotencyKey,
+} from '../../lib/forms';
 import { calibrationDoubts } from './calibration-doubts';
 import { CalibrationFields } from './CalibrationFields';
 import {
@@ -27,7 +34,7 @@ export function CalibrationForm(props: {
   const { labId, plate, onDone } = props;
   const [opened] = useState(() => new Date());
   const queryClient = useQueryClient();
-  const isDone = useRef(false);
+  const isDoneRef = useRef(false);
   const keyFor = useIdempotencyKey();
   const standing = plate.calibration;
   const { register, control, formState, handleSubmit, setError } = useForm<
@@ -51,7 +58,7 @@ export function CalibrationForm(props: {
   const recording = useMutation({
     mutationFn: (body: CalibrationInput) => recordCalibration(labId, plate.id, body, keyFor(body)),
     onSuccess: async () => {
-      isDone.current = true;
+      isDoneRef.current = true;
       sayDone(`The calibration of ${plate.name} is recorded.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
@@ -95,16 +102,9 @@ export function CalibrationForm(props: {
         <Button kind="filled" type="submit" waitsFor={recording.isPending ? 'the server' : undefined}>
           Record the calibration
         </Button>
-        <Button
-          onClick={() => {
-            isDone.current = true;
-            onDone();
-          }}
-        >
-          Leave it as it was
-        </Button>
+        <LeaveAsItWas isDoneRef={isDoneRef} onLeave={onDone} />
       </div>
-      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the calibration" />
+      <LeaveForm isDirty={formState.isDirty} isDoneRef={isDoneRef} what="the calibration" />
     </form>
   );
 }

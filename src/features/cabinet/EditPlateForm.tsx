@@ -3,10 +3,12 @@ import { useRef, useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { type CabinetPlate, type UpdatePlate, updatePlateSchema } from '../../../shared/schemas/cabinet';
 import { Button } from '../../components/Button';
+import { sayDone } from '../../components/live-region-store';
 import {
   conflictingState,
   EditConflict,
   FormProblem,
+  LeaveAsItWas,
   LeaveForm,
   schemaResolver,
   showServerFaults,
@@ -24,7 +26,7 @@ export function EditPlateForm(props: {
 }) {
   const { labId, plate, onDone } = props;
   const queryClient = useQueryClient();
-  const isDone = useRef(false);
+  const isDoneRef = useRef(false);
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [baseRevision, setBaseRevision] = useState(plate.revision);
   const { register, control, formState, handleSubmit, setError, getValues, reset } = useForm<
@@ -40,8 +42,9 @@ export function EditPlateForm(props: {
   const saving = useMutation({
     mutationFn: ({ body, revision }: { body: UpdatePlate; revision: number }) =>
       updatePlate(labId, plate.id, body, revision),
-    onSuccess: async () => {
-      isDone.current = true;
+    onSuccess: async (saved) => {
+      isDoneRef.current = true;
+      sayDone(`${saved.name} is saved.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone();
     },
@@ -78,17 +81,10 @@ export function EditPlateForm(props: {
           <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
             Save {plate.name}
           </Button>
-          <Button
-            onClick={() => {
-              isDone.current = true;
-              onDone();
-            }}
-          >
-            Leave it as it was
-          </Button>
+          <LeaveAsItWas isDoneRef={isDoneRef} onLeave={onDone} />
         </div>
       )}
-      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what={plate.name} />
+      <LeaveForm isDirty={formState.isDirty} isDoneRef={isDoneRef} what={plate.name} />
     </form>
   );
 }

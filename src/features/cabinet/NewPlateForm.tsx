@@ -6,6 +6,7 @@ import { Button } from '../../components/Button';
 import { sayDone } from '../../components/live-region-store';
 import {
   FormProblem,
+  LeaveAsItWas,
   LeaveForm,
   isoFromOptionalField,
   schemaResolver,
@@ -36,7 +37,7 @@ export function NewPlateForm(props: {
 }) {
   const { labId, now, onCreated, onLeave } = props;
   const queryClient = useQueryClient();
-  const isDone = useRef(false);
+  const isDoneRef = useRef(false);
   const keyFor = useIdempotencyKey();
   const form = useForm<NewPlateValues, unknown, CreatePlate>({
     defaultValues: emptyNewPlate(now),
@@ -51,7 +52,7 @@ export function NewPlateForm(props: {
   const creating = useMutation({
     mutationFn: (body: CreatePlate) => createPlate(labId, body, keyFor(body)),
     onSuccess: async (plate) => {
-      isDone.current = true;
+      isDoneRef.current = true;
       sayDone(`${plate.name} is in the cabinet.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onCreated(plate);
@@ -82,17 +83,10 @@ export function NewPlateForm(props: {
           <Button kind="filled" type="submit" waitsFor={creating.isPending ? 'the server' : undefined}>
             Add the plate
           </Button>
-          <Button
-            onClick={() => {
-              isDone.current = true;
-              onLeave();
-            }}
-          >
-            Leave it as it was
-          </Button>
+          <LeaveAsItWas isDoneRef={isDoneRef} onLeave={onLeave} />
         </div>
       </div>
-      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the new plate" />
+      <LeaveForm isDirty={formState.isDirty} isDoneRef={isDoneRef} what="the new plate" />
     </form>
   );
 }

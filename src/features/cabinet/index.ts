@@ -1,4 +1,3 @@
 export { type CalibrationAge, calibrationAge } from './calibration-age';
-export { blindNearDeg } from './questions/blind-near';
 export { platePageQuery, type PlateSearch, plateQuery } from './queries';
 export { kindNames, restingAxisDeg } from './plate-words';

@@ -56,8 +56,6 @@ export function MembersSection() {
   const queryClient = useQueryClient();
   const members = useQuery(membersQuery(lab.id));
   const [leaving, setLeaving] = useState<LabMember | null>(null);
-  const nameOf = (userId: string) =>
-    members.data?.items.find((member) => member.userId === userId)?.name ?? 'This member';
   const renew = async (sentence: string) => {
     setLeaving(null);
     sayDone(sentence);
@@ -65,12 +63,13 @@ export function MembersSection() {
     await queryClient.invalidateQueries({ queryKey: ['session'] });
   };
   const changing = useMutation({
-    mutationFn: ({ userId, role }: { userId: string; role: Role }) => changeRole(lab.id, userId, role),
-    onSuccess: (_, { userId, role }) => renew(`${nameOf(userId)} is ${role} now.`),
+    mutationFn: ({ member, role }: { member: LabMember; role: Role }) =>
+      changeRole(lab.id, member.userId, role),
+    onSuccess: (_, { member, role }) => renew(`${member.name} is ${role} now.`),
   });
   const removing = useMutation({
-    mutationFn: (userId: string) => removeMember(lab.id, userId),
-    onSuccess: (_, userId) => renew(`${nameOf(userId)} is out of ${lab.name}.`),
+    mutationFn: ({ userId }: LabMember) => removeMember(lab.id, userId),
+    onSuccess: (_, { name }) => renew(`${name} is out of ${lab.name}.`),
   });
   const items = members.data?.items;
   const manages = may('members.manage');
@@ -114,7 +113,7 @@ export function MembersSection() {
                     <RoleCell
                       member={member}
                       lastLead={isLastLead(member, items)}
-                      onChange={(role) => changing.mutate({ userId: member.userId, role })}
+                      onChange={(role) => changing.mutate({ member, role })}
                     />
                   ) : (
                     member.role
@@ -154,7 +153,7 @@ export function MembersSection() {
             <Button
               kind="danger"
               onClick={() => {
-                if (leaving !== null) removing.mutate(leaving.userId);
+                if (leaving !== null) removing.mutate(leaving);
               }}
             >
               Take out {leaving?.name}

@@ -1,7 +1,7 @@
-import { useEffect, useRef } from 'react';
-import { useBlocker } from 'react-router-dom';
+import { useRef } from 'react';
 import { Button } from '../../components/Button';
 import { Dialog } from '../../components/Dialog';
+import { useLeaveAsked } from '../../lib/use-leave-asked';
 
 interface LeaveRunDialogProps {
   readonly running: boolean;
@@ -15,20 +15,14 @@ interface LeaveRunDialogProps {
 /** Leaving a run in progress asks once, so that a sleeve can't end it. */
 export function LeaveRunDialog({ running, runNumber, settingNumber, recordHref }: LeaveRunDialogProps) {
   const answered = useRef(false);
-  const blocker = useBlocker(
-    ({ nextLocation }) => running && !answered.current && !nextLocation.pathname.startsWith(recordHref),
+  const { isAsked, stay, leave } = useLeaveAsked(
+    running,
+    ({ nextLocation }) => !answered.current && !nextLocation.pathname.startsWith(recordHref),
   );
-  useEffect(() => {
-    if (!running) return;
-    const ask = (event: BeforeUnloadEvent): void => event.preventDefault();
-    window.addEventListener('beforeunload', ask);
-    return () => window.removeEventListener('beforeunload', ask);
-  }, [running]);
-  const stay = (): void => blocker.reset?.();
   const at = settingNumber === null ? 'with all its settings passed' : `at setting ${settingNumber}`;
   return (
     <Dialog
-      open={blocker.state === 'blocked'}
+      open={isAsked}
       question={`Leave run ${runNumber} ${at}?`}
       onClose={stay}
       actions={
@@ -41,7 +35,7 @@ export function LeaveRunDialog({ running, runNumber, settingNumber, recordHref }
             kind="filled"
             onClick={() => {
               answered.current = true;
-              blocker.proceed?.();
+              leave();
             }}
           >
             Leave the run standing

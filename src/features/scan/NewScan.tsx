@@ -56,7 +56,7 @@ export function NewScan(props: NewScanProps) {
       </section>
       <LeaveUnsaved
         isUnsaved={state.file !== null}
-        isDone={state.isDone}
+        isDoneRef={state.isDone}
         question="Leave the scan unrecorded?"
         stay="Stay with the scan"
         leave="Leave it unrecorded"

@@ -1,11 +1,11 @@
 import { useQuery } from '@tanstack/react-query';
-import type { ReactNode } from 'react';
 import { BeamWorking, BeamWrong } from '../../components/BeamState';
 import { TextLink } from '../../components/TextLink';
 import { formatMoment } from '../../lib/format';
 import { QueryState } from '../../lib/QueryState';
 import { plateQuery } from '../cabinet';
 import { useLab } from '../labs';
+import { SCAN_FRAME_HEIGHT } from './scan-frame';
 import { useRecordedScan } from './recorded-scan';
 import type { FittedScan } from './scan-points';
 import { lightWords } from './scan-words';
@@ -18,7 +18,10 @@ interface ScanFigureProps {
   readonly now: Date;
 }
 
-/** "Scan of today, 10:52": the plot of a recorded scan, fitted again from its stored file. Nothing where it was no scan. */
+/**
+ * "Scan of today, 10:52": the plot of a recorded scan, fitted again from its stored file. Nothing where it was no scan. Its
+ * place is kept while it is drawn, so that what stands below does not jump from under a press.
+ */
 export function ScanFigure({ plateId, calibrationId, now }: ScanFigureProps) {
   const { lab } = useLab();
   const plate = useQuery(plateQuery(lab.id, plateId));
@@ -50,13 +53,14 @@ function Figure(props: {
           <span className="text-s text-ink-2">{`${recorded.recordedBy}, ${pointWords(scan)}`}</span>
         )}
       </div>
-      <Drawn reply={reply} plateName={plate.name}>
-        <p className="mt-2">
-          <TextLink to={`/labs/${lab.id}/cabinet/${plate.id}/scan?calibration=${calibrationId}`}>
-            See the whole scan
-          </TextLink>
-        </p>
-      </Drawn>
+      <div style={{ minHeight: `calc(${SCAN_FRAME_HEIGHT}px + 2 * var(--type-s-line))` }}>
+        <Drawn reply={reply} plateName={plate.name} />
+      </div>
+      <p className="mt-2">
+        <TextLink to={`/labs/${lab.id}/cabinet/${plate.id}/scan?calibration=${calibrationId}`}>
+          See the whole scan
+        </TextLink>
+      </p>
     </section>
   );
 }
@@ -69,9 +73,8 @@ function pointWords(scan: FittedScan): string {
 function Drawn(props: {
   readonly reply: ReturnType<typeof useScanAnswer>['reply'];
   readonly plateName: string;
-  readonly children: ReactNode;
 }) {
-  const { reply, plateName, children } = props;
+  const { reply, plateName } = props;
   if (reply === null) return <BeamWorking doing="Drawing the scan" className="max-w-md py-4" />;
   if (reply.kind !== 'fitted') {
     return (
@@ -80,10 +83,5 @@ function Drawn(props: {
       </BeamWrong>
     );
   }
-  return (
-    <>
-      <ScanPlot scan={reply} plateName={plateName} />
-      {children}
-    </>
-  );
+  return <ScanPlot scan={reply} plateName={plateName} />;
 }

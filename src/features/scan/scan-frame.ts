@@ -33,6 +33,8 @@ const UPPER_HEIGHT = 190;
 const LOWER_HEIGHT = 74;
 const BETWEEN = 18;
 const FOOT = 26;
+/** Of every plot, whatever it shows: its place can be kept before it is drawn. */
+export const SCAN_FRAME_HEIGHT = TOP + UPPER_HEIGHT + BETWEEN + LOWER_HEIGHT + FOOT;
 const LABEL_WIDTH = 52;
 const DIAL_STEPS = [1, 2, 5, 10, 15, 30, 45, 90];
 const MARGIN_SHARE = 0.02;
@@ -65,7 +67,7 @@ export function scanFrame(
   const sigmas = farthest > 4 ? Math.ceil(farthest) : 2 * Math.ceil(farthest / 2);
   return {
     width,
-    height: lowerTop + LOWER_HEIGHT + FOOT,
+    height: SCAN_FRAME_HEIGHT,
     left: LEFT,
     right,
     upper: band(lowest, lowest + (highest - lowest) * 1.08, TOP, upperFoot, 6),

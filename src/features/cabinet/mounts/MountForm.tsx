@@ -3,10 +3,12 @@ import { useRef, useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { type CabinetMount, type WriteMount, writeMountSchema } from '../../../../shared/schemas/mounts';
 import { Button } from '../../../components/Button';
+import { sayDone } from '../../../components/live-region-store';
 import {
   conflictingState,
   EditConflict,
   FormProblem,
+  LeaveAsItWas,
   LeaveForm,
   schemaResolver,
   showServerFaults,
@@ -26,7 +28,7 @@ export function MountForm(props: {
 }) {
   const { labId, mount, onDone } = props;
   const queryClient = useQueryClient();
-  const isDone = useRef(false);
+  const isDoneRef = useRef(false);
   const keyFor = useIdempotencyKey();
   // What this form was filled from. A refetch behind it must not make an old form look new.
   const [baseRevision, setBaseRevision] = useState(mount?.revision ?? 0);
@@ -44,7 +46,8 @@ export function MountForm(props: {
     mutationFn: ({ body, revision }: { body: WriteMount; revision: number }) =>
       mount === null ? createMount(labId, body, keyFor(body)) : updateMount(labId, mount.id, body, revision),
     onSuccess: async (saved) => {
-      isDone.current = true;
+      isDoneRef.current = true;
+      sayDone(mount === null ? `${saved.name} is in the cabinet.` : `${saved.name} is saved.`);
       await queryClient.invalidateQueries({ queryKey: ['labs', labId] });
       onDone(saved);
     },
@@ -95,17 +98,10 @@ export function MountForm(props: {
                 ? `Save ${mount.name}, its numbers the other way`
                 : `Save ${mount.name}`}
           </Button>
-          <Button
-            onClick={() => {
-              isDone.current = true;
-              onDone(null);
-            }}
-          >
-            Leave it as it was
-          </Button>
+          <LeaveAsItWas isDoneRef={isDoneRef} onLeave={() => onDone(null)} />
         </div>
       )}
-      <LeaveForm isDirty={formState.isDirty} isDone={isDone} what="the mount" />
+      <LeaveForm isDirty={formState.isDirty} isDoneRef={isDoneRef} what="the mount" />
     </form>
   );
 }

@@ -1,9 +1,9 @@
+import { blindNearDeg } from '../../../../shared/optics/calibration';
 import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import type { Calibration, OpenQuestion } from '../../../../shared/schemas/calibrations';
 import { ButtonLink } from '../../../components/Button';
 import { UnsettledSign } from '../../../components/SmallSigns';
 import { TextLink } from '../../../components/TextLink';
-import { feelingScan } from './blind-near';
 import { openQuestionWords } from './question-words';
 
 /** What a plate's calibration could not tell, one question under the other, each with the ways to settle it. */
@@ -61,7 +61,8 @@ function Ways(props: {
 }) {
   const { question, retardanceDeg, page, first } = props;
   const { task, words } = byHand[question];
-  const isLinear = question === 'blind' && feelingScan(retardanceDeg) === 'between-polarisers';
+  // A scan between polarisers feels a retardance just where one behind circular light is blind.
+  const isLinear = question === 'blind' && blindNearDeg(retardanceDeg) % 180 !== 0;
   return (
     <>
       <p className="mt-4">

@@ -1,7 +1,7 @@
+import { blindNearDeg } from '../../../../shared/optics/calibration';
 import type { CabinetPlate } from '../../../../shared/schemas/cabinet';
 import type { Calibration, OpenQuestion } from '../../../../shared/schemas/calibrations';
 import { formatUncertain } from '../../../lib/format';
-import { blindNearDeg } from './blind-near';
 import { twoReadings } from './settle';
 
 /** One open question of a plate: what it is, and what it would do. */
