@@ -58,24 +58,28 @@ async function scan(page: Page, zeroDeg: number): Promise<void> {
 
 /** What is below the scan's plot stands where it stays, also while the file is on its way: a press meets what it was meant for. */
 async function expectNoJump(page: Page): Promise<void> {
-  let release = (): void => undefined;
-  const isReleased = new Promise<void>((resolve) => {
-    release = resolve;
-  });
   const file = /\/files\//u;
-  await page.route(file, async (route) => {
-    await isReleased;
-    await route.continue();
-  });
-  await page.reload();
   const link = page.getByRole('link', { name: 'record what the mark on its rim says' });
   const topOf = async () => Math.round((await link.boundingBox())?.y ?? NaN);
-  await page.getByText('Drawing the scan').waitFor();
-  const before = await topOf();
-  release();
-  await page.getByRole('img', { name: /^Scan of Q-X/u }).waitFor();
-  expect(await topOf()).toBe(before);
-  await page.unroute(file);
+  const desk = page.viewportSize() ?? { width: 1440, height: 900 };
+  for (const width of [390, 800, 1180, 1290, desk.width]) {
+    let release = (): void => undefined;
+    const isReleased = new Promise<void>((resolve) => {
+      release = resolve;
+    });
+    await page.route(file, async (route) => {
+      await isReleased;
+      await route.continue();
+    });
+    await page.setViewportSize({ ...desk, width });
+    await page.reload();
+    await page.getByText('Drawing the scan').waitFor();
+    const before = await topOf();
+    release();
+    await page.getByRole('img', { name: /^Scan of Q-X/u }).waitFor();
+    expect([width, await topOf()]).toEqual([width, before]);
+    await page.unroute(file);
+  }
 }
 
 /** A person says that the mark on the rim is the fast axis. */

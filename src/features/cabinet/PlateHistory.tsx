@@ -32,7 +32,7 @@ export function PlateHistory(props: {
   return (
     <>
       <div className="space-y-6">
-        {scanned !== undefined && <ScanFigure plateId={plate.id} calibrationId={scanned.id} now={now} />}
+        {scanned !== undefined && <ScanFigure plateId={plate.id} calibration={scanned} now={now} />}
         {calibration === null ? (
           <VoidZero {...{ plate, page, now, measures, seats }} hadZero={detail.calibrations.length > 0} />
         ) : (
