@@ -1,10 +1,12 @@
 import { defaultRangeExtractor, measureElement, useVirtualizer } from '@tanstack/react-virtual';
+import { useDrawnAlone } from '../../../lib/use-drawn-alone';
 import { type WindowPart, windowParts } from './row-window';
 
 /** A plain row's height, until one is measured. */
 const plainRowPx = 39;
 /** Rows that are in the document before they come into sight, so that a turn of the wheel meets drawn ones. */
 const rowsAhead = 6;
+const noRowsAhead = 0;
 
 export interface RowWindow {
   readonly parts: readonly WindowPart[];
@@ -22,6 +24,8 @@ export function useRowWindow(
   ids: readonly string[],
   staying: ReadonlySet<number>,
 ): RowWindow {
+  // A table that opens has the rows in sight laid out first, and those ahead in a frame of their own.
+  const ahead = useDrawnAlone(region === null ? noRowsAhead : rowsAhead);
   // eslint-disable-next-line react-hooks/incompatible-library -- it warns of React's compiler, which does not run here
   const rows = useVirtualizer({
     count: ids.length,
@@ -33,7 +37,7 @@ export function useRowWindow(
       laidOut === undefined
         ? (table.itemSizeCache.get(ids[table.indexFromElement(group)] ?? '') ?? plainRowPx)
         : measureElement(group, laidOut, table),
-    overscan: rowsAhead,
+    overscan: ahead,
     // Drawn in its turn: a scroll event that waits for the table would keep the wheel waiting.
     useFlushSync: false,
     rangeExtractor: (range) =>
