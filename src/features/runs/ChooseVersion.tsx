@@ -14,6 +14,11 @@ interface ChooseVersionProps {
   readonly unknownId: string | null;
 }
 
+/** The number of the newest version of the same protocol. The list begins with the newest, so that none newer is off it. */
+function newestOf({ protocolId }: VersionSummary, versions: readonly VersionSummary[]): number {
+  return Math.max(...versions.filter((other) => other.protocolId === protocolId).map(({ number }) => number));
+}
+
 /** The versions that a run can be made of, newest first. */
 export function ChooseVersion({ labId, versions, more, unknownId }: ChooseVersionProps) {
   const now = new Date();
@@ -64,6 +69,11 @@ export function ChooseVersion({ labId, versions, more, unknownId }: ChooseVersio
                   <TextLink to={startHref(labId, version)}>
                     {version.protocolName}, version {version.number}
                   </TextLink>
+                  {newestOf(version, versions) > version.number && (
+                    <span className="block text-s text-ink-2">
+                      version {newestOf(version, versions)} is newer
+                    </span>
+                  )}
                 </td>
                 <td className="py-2 pr-4">{version.message}</td>
                 <td className="py-2 pr-4 text-end font-mono">{version.targetCount}</td>

@@ -1,3 +1,3 @@
 export { OpenQuestionRisks, OpenQuestionWarnings } from './OpenQuestionWarnings';
 export { ShortHash } from './ShortHash';
-export { labVersionsQuery, versionQuery } from './queries';
+export { labVersionsQuery, protocolVersionsQuery, versionQuery } from './queries';

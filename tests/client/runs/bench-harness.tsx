@@ -9,6 +9,7 @@ import { RunPage } from '../../../src/features/runs/RunPage';
 import { StartRunPage } from '../../../src/features/runs/StartRunPage';
 import { createQueryClient } from '../../../src/lib/query-client';
 import { pauseRunSchema, type Reading, recordReadingSchema, type Run } from '../../../shared/schemas/runs';
+import type { VersionSummary } from '../../../shared/schemas/protocols';
 import type { Bench } from '../../../shared/schemas/benches';
 import type { Version } from '../../../shared/schemas/versions';
 import { id, labId, runId } from './fixture';
@@ -31,6 +32,8 @@ export class FakeApi {
   failWith: 'network' | 'silence' | { readonly status: number; readonly detail: string } | null = null;
   /** What became of the bench since the version, besides its second plate's new calibration. */
   changeBench: (bench: Bench) => Bench = (bench) => bench;
+  /** Versions that were saved after the one that is run, newest first. */
+  newer: readonly VersionSummary[] = [];
   /** While it waits for this, the bench is not answered. */
   benchAfter: Promise<void> = Promise.resolve();
   constructor(
@@ -72,7 +75,8 @@ export class FakeApi {
     }
     if (path.includes('/runs/')) return json(this.run);
     if (/\/versions\/\d+$/u.test(path)) return json(this.version);
-    if (path.includes('/versions')) return json({ items: [this.version.summary], nextCursor: null });
+    if (path.includes('/versions'))
+      return json({ items: [...this.newer, this.version.summary], nextCursor: null });
     if (path.includes('/benches/')) return json(this.changeBench(this.bench()));
     return json(
       { type: 'about:blank', title: 'Not found', status: 404, detail: 'No such thing.', requestId: 'r2' },

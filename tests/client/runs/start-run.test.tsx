@@ -4,7 +4,7 @@ import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
 import { startRunSchema } from '../../../shared/schemas/runs';
 import type { Version } from '../../../shared/schemas/versions';
 import { FakeApi, openBench } from './bench-harness';
-import { labId, makeRun, makeVersion } from './fixture';
+import { id, labId, makeRun, makeVersion } from './fixture';
 
 const version = makeVersion();
 const path = `/labs/${labId}/bench/start?protocolId=${version.summary.protocolId}&number=${version.summary.number}`;
@@ -25,6 +25,29 @@ describe('the start of a run', () => {
     ).toBeTruthy();
     expect(await screen.findByText(/^Q-B has a newer calibration/u)).toBeTruthy();
     expect(screen.queryByText(/^H-3 has a newer calibration/u)).toBeNull();
+  });
+
+  test('says which version is the newest where an older one is run, and leads to it', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    api.newer = [{ ...version.summary, id: id(880), number: 16 }];
+    openBench(api, { path });
+    expect(await screen.findByText(/^Version 16 of this protocol is newer/u)).toBeTruthy();
+    const link = screen.getByRole('link', { name: 'Run version 16' });
+    expect(link.getAttribute('href')).toBe(path.replace('number=14', 'number=16'));
+    cleanup();
+    openBench(new FakeApi(makeRun(version), version), { path });
+    await screen.findByText(/^Q-B has a newer calibration/u);
+    expect(screen.queryByRole('link', { name: /^Run version/u })).toBeNull();
+  });
+
+  test('marks the older versions of a protocol in the list', async () => {
+    const api = new FakeApi(makeRun(version), version);
+    api.newer = [{ ...version.summary, id: id(880), number: 16 }];
+    openBench(api, { path: `/labs/${labId}/bench/start` });
+    await screen.findByRole('link', { name: /version 14$/u });
+    const rows = screen.getAllByRole('row').map(({ textContent }) => textContent);
+    expect(rows.filter((row) => row.includes('version 16 is newer'))).toHaveLength(1);
+    expect(rows.at(-1)).toContain('version 14version 16 is newer');
   });
 
   test('finds its version by protocol and number with no list, and by its id among the newest', async () => {
