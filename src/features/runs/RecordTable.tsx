@@ -24,7 +24,7 @@ export function RecordTable({ run, content }: RecordTableProps) {
   const newest = newestReadings(run.readings, content.targets.length);
   return (
     <div
-      className="relative mt-6 overflow-x-auto"
+      className="relative mt-3 overflow-x-auto"
       role="region"
       aria-label="Readings, scrolls sideways"
       tabIndex={0}

@@ -2,6 +2,7 @@ import { useEffect } from 'react';
 import type { Run } from '../../../shared/schemas/runs';
 import type { Version } from '../../../shared/schemas/versions';
 import { BenchNavigation } from '../../components/BenchNavigation';
+import { Scientific } from '../../components/Scientific';
 import { TextLink } from '../../components/TextLink';
 import { VersionSeal } from '../../components/VersionSeal';
 import { formatDate, formatTime } from '../../lib/format';
@@ -55,6 +56,11 @@ export function RunRecord({ run, version }: { readonly run: Run; readonly versio
           </div>
         </header>
         {summary.state === 'finished' && <LeftReadings runId={summary.id} />}
+        <p className="mt-6 mb-0 max-w-prose text-s text-ink-2">
+          The tolerance is 1 − F ≤ <Scientific value={content.toleranceInfidelity} />. <b>Not within</b>: the
+          whole bar lies above it. <b>Not decided</b>: the tolerance lies within the bar, so that the σ of
+          these plates and mounts leave it open.
+        </p>
         <RecordTable run={run} content={content} />
       </main>
     </>

@@ -27,6 +27,12 @@ export function Component() {
             {problem}
           </p>
         )}
+        {returnTo.startsWith('/invitations/') && (
+          <p className="font-strong mt-5 max-w-md">
+            You have an invitation to a lab. Sign in, and it says which lab and what you would be there;
+            nothing is accepted by signing in.
+          </p>
+        )}
         <a href={signInHref(returnTo)} className="sign-in-button">
           Sign in with GitHub
         </a>
