@@ -57,9 +57,9 @@ export function RunRecord({ run, version }: { readonly run: Run; readonly versio
         </header>
         {summary.state === 'finished' && <LeftReadings runId={summary.id} />}
         <p className="mt-6 mb-0 max-w-prose text-s text-ink-2">
-          The tolerance is 1 − F ≤ <Scientific value={content.toleranceInfidelity} />. <b>Not within</b>: the
-          whole bar lies above it. <b>Not decided</b>: the tolerance lies within the bar, so that the σ of
-          these plates and mounts leave it open.
+          The tolerance is 1 − F ≤ <Scientific value={content.toleranceInfidelity} />. <b>Not within</b>: all
+          of the bar is worse than that, left of the bracket. <b>Not decided</b>: the bracket lies within the
+          bar, so that the σ of these plates and mounts leave it open.
         </p>
         <RecordTable run={run} content={content} />
       </main>
