@@ -20,5 +20,7 @@ export function edgeFade(element: HTMLElement | null): (() => void) | undefined 
   return () => {
     element.removeEventListener('scroll', look);
     observer?.disconnect();
+    element.removeAttribute('data-more-left');
+    element.removeAttribute('data-more-right');
   };
 }

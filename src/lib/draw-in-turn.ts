@@ -31,13 +31,17 @@ class Turns {
     const began = performance.now();
     this.#waiting = this.#waiting.filter(({ cancelled }) => !cancelled);
     let next = this.#waiting.shift();
-    while (next !== undefined) {
-      if (!next.cancelled) next.draw();
-      const isOver = next.alone || this.#waiting[0]?.alone === true || performance.now() - began >= sliceMs;
-      next = isOver ? undefined : this.#waiting.shift();
+    try {
+      while (next !== undefined) {
+        if (!next.cancelled) next.draw();
+        const isOver = next.alone || this.#waiting[0]?.alone === true || performance.now() - began >= sliceMs;
+        next = isOver ? undefined : this.#waiting.shift();
+      }
+    } finally {
+      // Also when a piece threw: those behind it are drawn.
+      this.#running = false;
+      if (this.#waiting.length > 0) this.#runBehindFrame();
     }
-    this.#running = false;
-    if (this.#waiting.length > 0) this.#runBehindFrame();
   }
 }
 

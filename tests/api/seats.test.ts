@@ -190,6 +190,21 @@ describe('a seat', () => {
     expect((await out(own.sparePlateId, '2026-06-05T10:00:00Z')).status).toBe(200);
   });
 
+  test('begins a few minutes after what was said at most, however many things it waited for', async () => {
+    const [one, other] = [await desk.addPlate('S-27'), await desk.addPlate('S-28')];
+    const minutesAgo = (minutes: number) => new Date(Date.now() - minutes * 60_000).toISOString();
+    const out = async (id: string, at: string) =>
+      (await desk.change(id, 'post', '/take-out', { why: 'Moved.', at })).status;
+    expect(await out(one.id, minutesAgo(60))).toBe(200);
+    expect(await out(other.id, minutesAgo(56))).toBe(200);
+    const seat = (at: string) =>
+      desk.change(one.id, 'put', '/seat', { mountId: other.seat?.mountId, why: '', at });
+    // Each alone is near enough to the one before it.
+    const early = await seat(minutesAgo(63));
+    expect([early.status, faultOf(early.text).path]).toEqual([422, 'at']);
+    expect((await seat(minutesAgo(59))).status).toBe(200);
+  });
+
   test('is refused in a mount that holds another plate, is retired or is not there, each by name', async () => {
     const [one, other] = [await desk.addPlate('S-3'), await desk.addPlate('S-4')];
     await desk.change(one.id, 'post', '/take-out', { why: 'Moved.' });

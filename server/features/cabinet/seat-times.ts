@@ -51,10 +51,12 @@ function whenDone({ at, now, path, what }: Done, bounds: readonly Bound[]): Date
   if (asked.getTime() > now.getTime() + clockSlackMs) {
     throw refused([{ path, message: `This is in the future. Write when ${what}.` }]);
   }
-  let moment = asked > now ? now : asked;
+  const said = asked > now ? now : asked;
+  let moment = said;
   for (const { moment: bound, because } of bounds) {
     if (bound === null || bound <= moment) continue;
-    if (bound.getTime() - moment.getTime() > clockSlackMs) {
+    // Held against what was said: slack of one bound on top of another's would add up.
+    if (bound.getTime() - said.getTime() > clockSlackMs) {
       throw refused([{ path, message: because(utcWords(bound.toISOString())) }]);
     }
     moment = bound;

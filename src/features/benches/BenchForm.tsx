@@ -1,6 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useRef, useState } from 'react';
 import { type FieldErrors, useController, useForm, useWatch } from 'react-hook-form';
+import { useNavigate } from 'react-router-dom';
 import {
   type Bench,
   type BenchPart,
@@ -8,7 +9,7 @@ import {
   createBenchSchema,
 } from '../../../shared/schemas/benches';
 import type { CabinetPlate } from '../../../shared/schemas/cabinet';
-import { Button, ButtonLink } from '../../components/Button';
+import { Button } from '../../components/Button';
 import { sayDone } from '../../components/live-region-store';
 import { SelectField } from '../../components/SelectField';
 import { TextField } from '../../components/TextField';
@@ -16,6 +17,7 @@ import {
   conflictingState,
   EditConflict,
   FormProblem,
+  LeaveAsItWas,
   LeaveForm,
   readOptionalNumber,
   readTypedNumber,
@@ -53,6 +55,7 @@ export function BenchForm(props: {
   const { bench, plates, save, onSaved } = props;
   const { lab } = useLab();
   const queryClient = useQueryClient();
+  const navigate = useNavigate();
   const isDoneRef = useRef(false);
   const [now] = useState(() => new Date());
   // What this form was filled from. A refetch behind it must not make an old form look new.
@@ -165,9 +168,7 @@ export function BenchForm(props: {
             <Button kind="filled" type="submit" waitsFor={saving.isPending ? 'the server' : undefined}>
               {bench === null ? 'Add the bench' : 'Save the bench'}
             </Button>
-            <ButtonLink to={`/labs/${lab.id}/bench`} onClick={() => (isDoneRef.current = true)}>
-              Leave it as it was
-            </ButtonLink>
+            <LeaveAsItWas isDoneRef={isDoneRef} onLeave={() => void navigate(`/labs/${lab.id}/bench`)} />
           </div>
         )}
       </div>
