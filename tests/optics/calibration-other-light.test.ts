@@ -6,10 +6,10 @@ import { Dice, PLAIN, readings, rotatingPowers } from './calibration-scans';
 
 const CIRCULAR: Stokes = [0, 0, 1];
 
-/** A scan of a plate in circular light, which reads as it should or is taken for horizontal. */
+/** A scan of a plate in circular light, which reads as it should or is taken for horizontal. Its σ is stated truly, too small by a factor, or not at all. */
 function behindCircular(
   seed: number,
-  isSigmaStated: boolean,
+  stated: number | boolean,
   changes: Partial<RotatingScan> = {},
 ): RotatingScanFit {
   const dice = new Dice(seed);
@@ -17,7 +17,7 @@ function behindCircular(
   const rows = rotatingPowers(PLAIN, dials, CIRCULAR, 0).map((power, k) => ({
     dialDeg: dials[k] ?? 0,
     power: power + 3e-3 * dice.normal(),
-    sigma: isSigmaStated ? 3e-3 : null,
+    sigma: stated === false ? null : 3e-3 / Number(stated),
   }));
   const leak = { value: PLAIN.leak, sigma: 0 };
   const fit = fitRotatingScan({
@@ -50,6 +50,21 @@ test.each([true, false])('light that is not what was stated is told (σ stated: 
 
 test.each([true, false])('sound scans are told nothing of (σ stated: %s)', (isSigmaStated) => {
   for (let seed = 0; seed < 100; seed += 1) expect(behindCircular(seed, isSigmaStated).warnings).toEqual([]);
+});
+
+// Much smaller still, and a power a little below zero is refused by its row before anything is fitted.
+test('a σ stated three times too small is a misfit of the rows, not of the light', () => {
+  for (let seed = 0; seed < 40; seed += 1) {
+    const kinds = behindCircular(seed, 3).warnings.map(({ kind }) => kind);
+    expect(kinds).toContain('misfit');
+    expect(kinds).not.toContain('other-light');
+  }
+});
+
+test.each([3, 10])('other light is told also where σ is stated %i times too small', (times) => {
+  expect(behindCircular(7, times, { input: STOKES_H }).warnings.map(({ kind }) => kind)).toContain(
+    'other-light',
+  );
 });
 
 // Upper points of χ² and of Fisher's F in the usual statistical tables, from memory, and as scipy.stats gives them; the tail of a normal pair is e^(−z²/2).

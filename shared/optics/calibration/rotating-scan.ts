@@ -29,7 +29,7 @@ import { inStrip, landscapeOf, polish, valleys } from './rotating-search';
 import { rotatingFinding } from './rotating-reading';
 import { residualsOf } from './row-residuals';
 import { isSigma, leakProblem, type RotatingRow, rotatingSamples, type Stated } from './scan-rows';
-import { flatProblem, spectrum } from './spectrum';
+import { flatProblem, type Spectrum, spectrum } from './spectrum';
 import { warningsOf } from './warnings';
 
 /** A scan of a plate that turns behind known light, in front of a fixed linear analyser. */
@@ -161,7 +161,7 @@ export function fitRotatingScan(scan: RotatingScan): RotatingScanFit | ScanRefus
   const chiSquared = found.fit.squares + fit.excess;
   const degreesOfFreedom = samples.count + priorSize(prior) - 4;
   // What no plate explains although the harmonics do: it counts against the stated light, not against the rows.
-  const unlikeSigmas = excessSigmas(fit.excess, problem.model.size - 4, found.freedom);
+  const unlikeSigmas = unlikeLight(fit.excess, problem.model.size - 4, found);
   const faults = faultHarmonics(samples, basis, [1]);
   const covered = NAMES.flatMap((name, p) => (isFree(p) ? [{ name, p }] : []));
   const readAlone = (row: number) => {
@@ -217,6 +217,17 @@ export function fitRotatingScan(scan: RotatingScan): RotatingScanFit | ScanRefus
       null,
     ),
   };
+}
+
+/**
+ * How far a plate behind the stated light is from making these harmonics, in σ. Rows that scatter more than their σ say are
+ * measured by their scatter: σ stated too small is no fault of the light.
+ */
+function unlikeLight(excess: number, count: number, { fit, freedom }: Spectrum): number {
+  const spread = fit.squares / fit.freedom;
+  return freedom === null && fit.freedom > 0 && spread > 1
+    ? excessSigmas(excess / spread, count, fit.freedom)
+    : excessSigmas(excess, count, freedom);
 }
 
 function steadyValue(
