@@ -120,10 +120,11 @@ function occurrences(text: string, part: string, from: number, to: number): numb
   return count;
 }
 
-/** Where the two columns are. */
+/** Where the two columns are, of how many. */
 interface Layout {
   readonly label: number | null;
   readonly expression: number;
+  readonly count: number;
   /** The header that `writeTargetCsv` writes: its cells are taken as they are, to the last space. */
   readonly isOurs: boolean;
 }
@@ -239,7 +240,7 @@ function headerOf(cells: readonly string[]): Layout | null {
   if (expression === -1) return null;
   const label = names.indexOf('label');
   const isOurs = cells.length === 2 && cells[0] === 'label' && cells[1] === 'expression';
-  return { label: label === -1 ? null : label, expression, isOurs };
+  return { label: label === -1 ? null : label, expression, count: cells.length, isOurs };
 }
 
 interface Cells {
@@ -258,12 +259,14 @@ function bareRow(cells: readonly string[], delimiter: Delimiter): Cells {
 
 function headedRow(
   cells: readonly string[],
-  { label, expression, isOurs }: Layout,
+  { label, expression, count, isOurs }: Layout,
   delimiter: Delimiter,
 ): Cells | string {
   const whole = isOurs && cells.length === 2 ? cells : joinedCells(cells, delimiter);
   const text = whole[expression];
   if (text === undefined || text.trim() === '') return 'This row has no expression.';
+  if (whole.slice(count).some((cell) => cell.trim() !== ''))
+    return `This row has ${whole.length} cells under a header of ${count}. Quote a cell that holds a separator.`;
   return { label: label === null ? '' : (whole[label] ?? ''), expression: text };
 }
 

@@ -177,6 +177,9 @@ describe('two hundred targets of three plates', () => {
     // Scrolled out of sight, the selected row stays in the document with its focus, and so does the row to write in.
     await page.getByRole('region', { name: 'Targets' }).evaluate((region) => region.scrollTo(0, 0));
     await page.getByRole('cell', { name: 'g0', exact: true }).waitFor();
+    // And it stays there, whatever is drawn anew.
+    await page.waitForTimeout(500);
+    expect(await page.getByRole('cell', { name: 'g0', exact: true }).isVisible()).toBe(true);
     expect(await mounted(page)).toBeLessThan(mostMounted);
     expect(await focused.count()).toBe(1);
     expect(await page.getByRole('combobox', { name: 'New target' }).count()).toBe(1);

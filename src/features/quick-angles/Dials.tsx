@@ -81,12 +81,12 @@ export function Dials(props: {
           'Exact plates make it exactly.'
         ) : (
           <>
-            1 − F expected <Scientific value={shown.expectedInfidelity} />.
+            1 − F expected <Scientific value={shown.expectedInfidelity} />, with every σ.
             {idealInfidelityHere !== null && (
               <>
                 {' '}
-                The angles for exact plates of these kinds would give{' '}
-                <Scientific value={idealInfidelityHere} /> here.
+                Without σ these dials give <Scientific value={shown.dialledInfidelity} />, the angles for
+                exact plates of these kinds <Scientific value={idealInfidelityHere} />.
               </>
             )}
           </>

@@ -14,14 +14,11 @@ interface ChooseVersionProps {
   readonly unknownId: string | null;
 }
 
-/** The number of the newest version of the same protocol. The list begins with the newest, so that none newer is off it. */
-function newestOf({ protocolId }: VersionSummary, versions: readonly VersionSummary[]): number {
-  return Math.max(...versions.filter((other) => other.protocolId === protocolId).map(({ number }) => number));
-}
-
 /** The versions that a run can be made of, newest first. */
 export function ChooseVersion({ labId, versions, more, unknownId }: ChooseVersionProps) {
   const now = new Date();
+  // The list begins with the newest, so that of each protocol the first is the one.
+  const newest = new Map(versions.toReversed().map(({ protocolId, number }) => [protocolId, number]));
   if (versions.length === 0) {
     return (
       <BeamEmpty title="No version to run yet">
@@ -69,9 +66,9 @@ export function ChooseVersion({ labId, versions, more, unknownId }: ChooseVersio
                   <TextLink to={startHref(labId, version)}>
                     {version.protocolName}, version {version.number}
                   </TextLink>
-                  {newestOf(version, versions) > version.number && (
+                  {newest.get(version.protocolId) !== version.number && (
                     <span className="block text-s text-ink-2">
-                      version {newestOf(version, versions)} is newer
+                      version {newest.get(version.protocolId)} is newer
                     </span>
                   )}
                 </td>

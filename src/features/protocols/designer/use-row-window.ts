@@ -6,7 +6,6 @@ import { type WindowPart, windowParts } from './row-window';
 const plainRowPx = 39;
 /** Rows that are in the document before they come into sight, so that a turn of the wheel meets drawn ones. */
 const rowsAhead = 6;
-const noRowsAhead = 0;
 
 export interface RowWindow {
   readonly parts: readonly WindowPart[];
@@ -25,7 +24,7 @@ export function useRowWindow(
   staying: ReadonlySet<number>,
 ): RowWindow {
   // A table that opens has the rows in sight laid out first, and those ahead in a frame of their own.
-  const ahead = useDrawnAlone(region === null ? noRowsAhead : rowsAhead);
+  const ahead = useDrawnAlone(region === null ? 0 : rowsAhead);
   // eslint-disable-next-line react-hooks/incompatible-library -- it warns of React's compiler, which does not run here
   const rows = useVirtualizer({
     count: ids.length,

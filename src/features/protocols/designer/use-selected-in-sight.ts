@@ -1,48 +1,70 @@
 import { useEffect, useRef } from 'react';
 import { selectedRow } from './use-row-actions';
 
-/** By these somebody goes elsewhere in the region, and the selected row is no longer followed. */
-const ownWays = ['wheel', 'touchmove', 'pointerdown'] as const;
-const pageKeys = new Set(['PageUp', 'PageDown', ' ']);
+/** Where the selected row was when it was last looked at. */
+interface Looked {
+  readonly scrollTop: number;
+  /** From the region's top. */
+  readonly rowTop: number;
+}
+
+/** Places in px that differ by less are the same. */
+const samePx = 1;
 
 /**
  * Shows the row that was just selected, scrolling no further than it must, and keeps it in sight while rows that come in above it
- * turn out higher than they were guessed. The row that a page opens with stays where it is.
+ * turn out higher than they were guessed, until somebody scrolls elsewhere by whatever means. The row that a page opens with stays
+ * where it is.
  */
 export function useSelectedInSight(region: HTMLElement | null, selectedId: string | null): void {
   const shown = useRef<string | null>(null);
-  const follows = useRef(false);
+  const followed = useRef<Looked | null>(null);
 
   useEffect(() => {
     if (region === null) return;
     const leave = () => {
-      follows.current = false;
+      const row = region.querySelector(selectedRow);
+      const before = followed.current;
+      if (row !== null && before !== null && wentElsewhere(before, lookAt(region, row)))
+        followed.current = null;
     };
-    const press = ({ key }: KeyboardEvent) => {
-      if (pageKeys.has(key)) leave();
-    };
-    for (const way of ownWays) region.addEventListener(way, leave, { passive: true });
-    region.addEventListener('keydown', press);
-    return () => {
-      for (const way of ownWays) region.removeEventListener(way, leave);
-      region.removeEventListener('keydown', press);
-    };
+    region.addEventListener('scroll', leave, { passive: true });
+    return () => region.removeEventListener('scroll', leave);
   }, [region]);
 
   // After every drawing of the table, since any may have moved the row.
   useEffect(() => {
     const row = region?.querySelector(selectedRow) ?? null;
     if (region === null || row === null) return;
-    if (shown.current !== selectedId) {
-      const isFirst = shown.current === null;
-      shown.current = selectedId;
-      follows.current = !isFirst;
-      if (!isFirst) row.scrollIntoView({ block: 'nearest', inline: 'nearest' });
-    } else if (follows.current) {
+    const isFirst = shown.current === null;
+    const isNew = shown.current !== selectedId;
+    const before = followed.current;
+    shown.current = selectedId;
+    if (isFirst) return;
+    if (isNew) {
+      row.scrollIntoView({ block: 'nearest', inline: 'nearest' });
+    } else if (before === null || wentElsewhere(before, lookAt(region, row))) {
+      // The event of a scroll may come behind the drawing that it caused.
+      followed.current = null;
+      return;
+    } else {
       // Only the region: the page may have been scrolled to the sphere meanwhile.
       region.scrollBy({ top: overhangPx(region, row.parentElement ?? row) });
     }
+    followed.current = lookAt(region, row);
   });
+}
+
+function lookAt(region: HTMLElement, row: Element): Looked {
+  const rowTop = row.getBoundingClientRect().top - region.getBoundingClientRect().top;
+  return { scrollTop: region.scrollTop, rowTop };
+}
+
+/** A scroll that makes up for rows that grew above leaves the row where it is seen: by that nobody went elsewhere. */
+function wentElsewhere(before: Looked, now: Looked): boolean {
+  const scrolledPx = now.scrollTop - before.scrollTop;
+  const movedPx = before.rowTop - now.rowTop;
+  return Math.abs(scrolledPx) >= samePx && Math.abs(scrolledPx - movedPx) < samePx;
 }
 
 /** How far the region has to scroll for all of a row's group to be in it, under the head that stays. */
