@@ -32,6 +32,8 @@ export interface CsvReading {
   readonly translatedFrom: Convention | null;
   readonly rows: readonly CsvRow[];
   readonly problems: readonly CsvProblem[];
+  /** Lines that hold something and gave no row; a problem names each. */
+  readonly leftOut: number;
 }
 
 export interface CsvTarget {
@@ -49,7 +51,7 @@ export interface CsvTarget {
 export function readTargetCsv(text: string, target: CsvTarget): CsvReading {
   if (isLongerThan(text, MAX_CSV_BYTES)) {
     const message = 'This text is longer than 1 MB. Read it in parts.';
-    return { translatedFrom: null, rows: [], problems: [{ line: 1, message }] };
+    return { translatedFrom: null, rows: [], problems: [{ line: 1, message }], leftOut: 0 };
   }
   const plain = text.startsWith('\ufeff') ? text.slice(1) : text;
   const reader = new Reader(target, namedConvention(plain));
@@ -134,6 +136,7 @@ class Reader {
   private readonly problems: CsvProblem[] = [];
   private layout: Layout | null = null;
   private isFirst = true;
+  private leftOut = 0;
 
   private readonly translatedFrom: Convention | null;
 
@@ -153,7 +156,12 @@ class Reader {
   }
 
   reading(): CsvReading {
-    return { translatedFrom: this.translatedFrom, rows: this.rows, problems: this.problems };
+    return {
+      translatedFrom: this.translatedFrom,
+      rows: this.rows,
+      problems: this.problems,
+      leftOut: this.leftOut,
+    };
   }
 
   /** @returns whether there is room for more. */
@@ -176,7 +184,7 @@ class Reader {
       this.problem(line, 'So many lines can’t be read that this row and those below are left out.');
       return false;
     }
-    if (fault !== null) this.problem(line, fault);
+    if (fault !== null) this.leave(line, fault);
     else this.row(record);
     return true;
   }
@@ -184,7 +192,7 @@ class Reader {
   private row({ line, cells, delimiter }: CsvRecord): void {
     const found = this.layout === null ? bareRow(cells, delimiter) : headedRow(cells, this.layout, delimiter);
     if (typeof found === 'string') {
-      this.problem(line, found);
+      this.leave(line, found);
       return;
     }
     const exact = this.layout?.isOurs === true;
@@ -192,10 +200,7 @@ class Reader {
     const written = withoutGuard(exact ? found.expression : found.expression.trim());
     const expression = this.inOurs(written);
     if (expression.length > MAX_LENGTH) {
-      this.problem(
-        line,
-        `This expression has ${expression.length} characters; the most is ${MAX_LENGTH}. The row is left out.`,
-      );
+      this.leave(line, `This expression has ${expression.length} characters; the most is ${MAX_LENGTH}.`);
       return;
     }
     if (label.length > maxLabelLength) {
@@ -214,6 +219,11 @@ class Reader {
     const { kind, convention } = this.target;
     const protocolKind = kind === 'state' ? 'prepare' : 'apply';
     return translateExpression(expression, protocolKind, this.translatedFrom, convention);
+  }
+
+  private leave(line: number, message: string): void {
+    this.leftOut += 1;
+    this.problem(line, `${message} The row is left out.`);
   }
 
   private problem(line: number, message: string): void {

@@ -109,10 +109,12 @@ describe('many rows at once', () => {
     await dialog.getByLabel('A file of rows').setInputFiles({
       name: 'rows.csv',
       mimeType: 'text/csv',
-      buffer: Buffer.from('label;expression\na1;linear(30deg)\na2;linear(30)\na3;"=1+1"\n'),
+      buffer: Buffer.from('label;expression\nT1;linear(30deg)\na2;linear(30)\na3;"=1+1"\na4;H;V\n'),
     });
     await dialog.getByText(/^Line 3\. Column 8 of the expression: 30 of what\?/u).waitFor();
     await dialog.getByText(/^2 rows can’t be read/u).waitFor();
+    await dialog.getByText('One line gives no row and will not be added.').waitFor();
+    await dialog.getByText('A label is taken already: T1 becomes t0.').waitFor();
     await dialog.getByRole('button', { name: 'Add 3 rows' }).click();
     await page.getByText('Rows 6, 7 can’t be read and hold this up.', { exact: true }).waitFor();
     await page.keyboard.press('Control+z');

@@ -35,6 +35,18 @@ test('what is not unitary is told its distance and offered the nearest unitary, 
   expect(unitaryShortfall(read(nearestUnitary).quaternion, rotation)).toBeLessThan(1e-24);
 });
 
+test('of a matrix whose determinant is 0 one of many nearest unitaries is offered, and said to be', () => {
+  for (const source of ['matrix [[1, 1], [1, 1]]', 'matrix [[i, i], [i, i]]', 'matrix [[0, i], [0, 0]]']) {
+    const reading = parseUnitary(source, DEFAULT_CONVENTION);
+    if (reading.ok) throw new Error(`${source} was read`);
+    // A matrix of one singular value √2, and a unitary: the other is missing whole.
+    expect(reading.error.distanceFromUnitary).toBeCloseTo(Math.hypot(Math.SQRT2 - 1, 1), 12);
+    expect(reading.error.message).toContain('many are as near');
+    expect(read(reading.error.nearestUnitary ?? '').normalised).toBe(false);
+  }
+  expect(complaint('matrix [[1, 0.1], [0, 1]]')).not.toContain('many are as near');
+});
+
 test('errors say what, where and what to write', () => {
   expect(complaint('')).toMatch(/^1: Nothing is written here\. Write a unitary/);
   expect(complaint('H')).toBe(

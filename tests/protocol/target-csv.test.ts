@@ -70,11 +70,12 @@ test('an expression that does not read keeps its row, with the column inside the
 
 test('rows without an expression, open quotes, long labels and long expressions are told', () => {
   expect(readTargetCsv('label,expression\na,\n', STATES).problems).toEqual([
-    { line: 2, message: 'This row has no expression.' },
+    { line: 2, message: 'This row has no expression. The row is left out.' },
   ]);
   const wide = readTargetCsv('label,state\na,H,extra,stuff\nb,bloch(10deg, 20deg)\nc,V,,', STATES);
   expect(wide.rows.map(({ label }) => label)).toEqual(['b', 'c']);
   expect(wide.problems.map(({ line }) => line)).toEqual([2]);
+  expect(wide.leftOut).toBe(1);
   expect(wide.problems[0]?.message).toMatch(/^This row has 4 cells under a header of 2\./u);
   expect(readTargetCsv('a,H\n"b,V\nc,D', STATES)).toMatchObject({
     rows: [{ label: 'a' }],

@@ -129,6 +129,8 @@ export interface Polar {
   readonly size: number;
   /** Frobenius norm of what is left between the operator divided by `size` and the nearest unitary; 0 for a unitary. */
   readonly distance: number;
+  /** Whether no other unitary is as near: one is, where the determinant vanishes. */
+  readonly isSingle: boolean;
 }
 
 /**
@@ -141,7 +143,8 @@ export function polar(a: Operator): Polar | null {
   const unit = each(a, ({ re, im }) => ({ re: re / size, im: im / size }));
   const root = squareRoot(determinant(unit));
   const length = Math.sqrt(root.re * root.re + root.im * root.im);
-  const phase = length < 1e-8 ? { re: 1, im: 0 } : { re: root.re / length, im: root.im / length };
+  const isSingle = length >= 1e-8;
+  const phase = !isSingle ? { re: 1, im: 0 } : { re: root.re / length, im: root.im / length };
   const turned = scale(unit, { re: phase.re, im: -phase.im });
   const { w, x, y, z } = turned;
   const real = Math.sqrt(w.re * w.re + x.re * x.re + y.re * y.re + z.re * z.re);
@@ -151,6 +154,7 @@ export function polar(a: Operator): Polar | null {
     phase,
     size,
     distance: Math.sqrt(2 * ((1 - real) * (1 - real) + rest)),
+    isSingle,
   };
 }
 

@@ -20,7 +20,11 @@ export function unitaryPart(operator: Operator, span: Span, what: string): Polar
   const distance = Number(found.distance.toPrecision(3));
   throw new ExpressionError(
     span,
-    `${what} is not unitary, not even up to a factor: it is ${distance} away from the nearest unitary, which can be put in its place.`,
+    `${what} is not unitary, not even up to a factor: it is ${distance} away from ${
+      found.isSingle
+        ? 'the nearest unitary, which can be put in its place.'
+        : 'the nearest unitaries. Its determinant is 0, so that many are as near; one of them can be put in its place.'
+    }`,
     nearest,
     { distanceFromUnitary: found.distance, nearestUnitary: nearest },
   );

@@ -53,11 +53,25 @@ export function newTargets(
   targets: readonly DraftTarget[],
   rows: readonly { readonly label: string; readonly expression: string }[],
 ): readonly DraftTarget[] {
+  const labels = labelsFor(targets, rows);
+  return rows.map(({ label, expression }, place) => ({
+    id: newId(),
+    label: labels[place] ?? label,
+    expression,
+    heldFastAxesDeg: null,
+  }));
+}
+
+/** The labels that rows get as they are added: their own, or a free one where it is empty or taken. */
+export function labelsFor(
+  targets: readonly { readonly label: string }[],
+  rows: readonly { readonly label: string }[],
+): readonly string[] {
   const taken = new Set(targets.map(({ label }) => label));
-  return rows.map(({ label, expression }) => {
+  return rows.map(({ label }) => {
     const free = label === '' || taken.has(label) ? freeLabel(taken) : label;
     taken.add(free);
-    return { id: newId(), label: free, expression, heldFastAxesDeg: null };
+    return free;
   });
 }
 

@@ -204,7 +204,7 @@ export function Designer({ protocol, benches }: DesignerProps) {
         <AddRowsDialog
           kind={content.kind}
           convention={lab.convention}
-          present={content.targets.length}
+          targets={content.targets}
           onAdd={(rows) => {
             setAsking(null);
             // The page without the dialog first; two hundred rows follow, in slices.

@@ -5,6 +5,7 @@ import { Button } from '../../../components/Button';
 import { Dialog } from '../../../components/Dialog';
 import { SegmentedChoice } from '../../../components/SegmentedChoice';
 import { Sphere, type SphereInput } from '../../../sphere';
+import { labelsFor } from '../draft-edits';
 import { CsvFields } from './CsvFields';
 import { SetFields } from './SetFields';
 import { firstChoice } from './target-set-choice';
@@ -14,8 +15,8 @@ import { type FoundRow, roomFor, type RowsFrom, useFoundRows } from './use-found
 interface AddRowsDialogProps {
   readonly kind: ProtocolKind;
   readonly convention: Convention;
-  /** How many rows the protocol has. */
-  readonly present: number;
+  /** The rows that the protocol has. */
+  readonly targets: readonly { readonly label: string }[];
   readonly onAdd: (rows: readonly FoundRow[]) => void;
   readonly onClose: () => void;
 }
@@ -24,7 +25,7 @@ const shownProblems = 8;
 const sphereHeightPx = 280;
 
 /** Many rows at once: a set, or what was pasted or is in a file, looked at on the sphere before it is added. */
-export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: AddRowsDialogProps) {
+export function AddRowsDialog({ kind, convention, targets, onAdd, onClose }: AddRowsDialogProps) {
   const [from, setFrom] = useState<RowsFrom>('set');
   const [choice, setChoice] = useState(() => firstChoice(kind));
   const [text, setText] = useState('');
@@ -35,7 +36,9 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
   );
   // The dialog is there first; the drawing is a task of its own.
   const drawn = useDrawnAlone<SphereInput | null>(scene, null);
+  const present = targets.length;
   const count = roomFor(found.rows.length, present);
+  const relabelled = useMemo(() => relabelledWords(targets, found.rows), [targets, found.rows]);
   const unread = found.rows.length - found.points.length;
   return (
     <Dialog
@@ -91,6 +94,13 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
                 A protocol has at most {maxTargets} rows: the first {count} fit.
               </p>
             )}
+            {relabelled !== null && <p className="m-0 font-strong">{relabelled}</p>}
+            {found.leftOut > 0 && (
+              <p className="m-0 font-strong text-fault">
+                {found.leftOut === 1 ? 'One line gives' : `${found.leftOut} lines give`} no row and will not
+                be added.
+              </p>
+            )}
             {unread > 0 && (
               <p className="m-0 font-strong text-fault">
                 {unread === 1 ? 'One row can’t' : `${unread} rows can’t`} be read. Added as typed, to be
@@ -120,4 +130,20 @@ export function AddRowsDialog({ kind, convention, present, onAdd, onClose }: Add
       </div>
     </Dialog>
   );
+}
+
+const namedLabels = 3;
+
+/** Which rows get another label than was written, since it is taken; null where none does. Empty labels are filled as always. */
+function relabelledWords(targets: AddRowsDialogProps['targets'], rows: readonly FoundRow[]): string | null {
+  const labels = labelsFor(targets, rows);
+  const changed = rows.flatMap(({ label }, place) => {
+    const given = labels[place];
+    return label === '' || given === undefined || given === label ? [] : [`${label} becomes ${given}`];
+  });
+  if (changed.length === 0) return null;
+  const more = changed.length - namedLabels;
+  const rest = more > 0 ? ` and ${more} more` : '';
+  const head = changed.length === 1 ? 'A label is' : `${changed.length} labels are`;
+  return `${head} taken already: ${changed.slice(0, namedLabels).join(', ')}${rest}.`;
 }

@@ -19,6 +19,8 @@ export interface FoundRows {
   /** Those among them that can be read. */
   readonly readable: readonly FoundRow[];
   readonly problems: readonly CsvProblem[];
+  /** Lines of a text that gave no row. */
+  readonly leftOut: number;
   /** The convention that a file named, where its rows were translated out of it. */
   readonly translatedFrom: Convention | null;
   readonly chosen: ChosenSet;
@@ -72,16 +74,16 @@ export function useFoundRows(
     return { chosen, rows, readable: rows, points };
   }, [choice, kind, convention]);
   const csv = useMemo(() => {
-    const { rows, problems, translatedFrom } = readTargetCsv(read, {
+    const { rows, problems, leftOut, translatedFrom } = readTargetCsv(read, {
       kind: kind === 'apply' ? 'unitary' : 'state',
       convention,
     });
     const points = rows.flatMap(({ label, reading }) => (reading === null ? [] : [pointOf(label, reading)]));
     const readable = rows.filter(({ reading }) => reading !== null);
-    return { rows, readable, problems, points, translatedFrom };
+    return { rows, readable, problems, leftOut, points, translatedFrom };
   }, [read, kind, convention]);
   return from === 'set'
-    ? { ...set, problems: [], translatedFrom: null, isBehind: false }
+    ? { ...set, problems: [], leftOut: 0, translatedFrom: null, isBehind: false }
     : { ...csv, chosen: set.chosen, isBehind: text !== read };
 }
 
