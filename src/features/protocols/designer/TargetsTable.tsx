@@ -86,7 +86,7 @@ export function TargetsTable({
           </th>
           {plates.map(({ id, name }) => (
             <th key={id} scope="col" className="text-right font-words whitespace-nowrap">
-              <b className="text-ink">{name}</b> dial <i className="theta-head">θ</i>
+              <b className="text-ink">{name}</b> dial <span className="theta-head">θ</span>
             </th>
           ))}
           <th scope="col" className="pl-6 font-words">
