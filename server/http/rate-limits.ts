@@ -53,16 +53,30 @@ export function limitCalls(pool: pg.Pool, config: Pick<Config, 'apiCallsPerMinut
   const limiter = limiterOf(pool, 'api', config.apiCallsPerMinute);
   // What is left of the calls that this process has already spent in the database: a cache that need not agree.
   const prepaid = new Map<string, { left: number; until: number }>();
+  const spending = new Map<string, Promise<void>>();
+
+  const takePrepaid = (key: string): boolean => {
+    const known = prepaid.get(key);
+    if (known === undefined || known.left === 0 || known.until <= Date.now()) return false;
+    known.left -= 1;
+    return true;
+  };
+  const spendAhead = async (key: string): Promise<void> => {
+    try {
+      await spend(limiter, key, step);
+      if (prepaid.size > 10_000) prepaid.clear();
+      prepaid.set(key, { left: step, until: Date.now() + minute * 1000 });
+    } finally {
+      spending.delete(key);
+    }
+  };
   return async (request, _response, next) => {
     const key = callerOf(request);
-    const now = Date.now();
-    const known = prepaid.get(key);
-    if (known !== undefined && known.left > 0 && known.until > now) known.left -= 1;
-    else {
-      if (prepaid.size > 10_000) prepaid.clear();
-      prepaid.delete(key);
-      await spend(limiter, key, step);
-      prepaid.set(key, { left: step - 1, until: now + minute * 1000 });
+    while (!takePrepaid(key)) {
+      // A page asks for many things at once: they wait for one handful, each would else take one of its own.
+      const taking = spending.get(key) ?? spendAhead(key);
+      spending.set(key, taking);
+      await taking;
     }
     next();
   };

@@ -224,6 +224,19 @@ test('calls by one person are limited, whatever address they claim', async () =>
   }
 });
 
+test('calls that come all at once spend no more of the limit than one after the other', async () => {
+  const limited = await startHarness({ environment: { API_CALLS_PER_MINUTE: '60' } });
+  try {
+    const agent = await limited.signIn('ines-varga');
+    const answers = await Promise.all(Array.from({ length: 80 }, () => agent.get('/api/v1/session')));
+    const statuses = answers.map(({ status }) => status);
+    expect(statuses.filter((status) => status === 200)).toHaveLength(60);
+    expect(statuses.filter((status) => status === 429)).toHaveLength(20);
+  } finally {
+    await limited.close();
+  }
+});
+
 test('readiness says whether the database answers; being alive depends on nothing', async () => {
   expect((await harness.browser().get('/healthz')).text).toBe('alive\n');
   expect((await harness.browser().get('/readyz')).status).toBe(200);
