@@ -144,9 +144,9 @@ function ProtocolRow({ labId, protocol }: { readonly labId: string; readonly pro
         </TextLink>
         {protocol.purpose !== '' && <span className="mt-1 block text-s text-ink-2">{protocol.purpose}</span>}
       </th>
-      <td className="max-md:hidden">{protocol.benchName}</td>
+      <td className="min-w-32 py-3 pr-6 max-md:hidden">{protocol.benchName}</td>
       <td className="text-right font-mono max-sm:hidden">{protocol.targetCount}</td>
-      <td className="pl-10">
+      <td className="py-3 pl-10 md:pr-6">
         {latestVersion === null ? (
           <span className="text-ink-2">none yet</span>
         ) : (
